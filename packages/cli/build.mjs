@@ -1,0 +1,75 @@
+// @ts-check
+/**
+ * Bundles the command into bin/kvane.js: one file without runtime dependencies, because loading many small modules
+ * would cost more than the command's own work. `import()` in the source stays lazy inside the one file.
+ */
+import { chmodSync, mkdirSync, readFileSync, writeFileSync } from "node:fs";
+import { dirname, join, resolve } from "node:path";
+import { fileURLToPath } from "node:url";
+import { build } from "esbuild";
+
+const here = dirname(fileURLToPath(import.meta.url));
+const { version } = JSON.parse(readFileSync(join(here, "package.json"), "utf8"));
+
+mkdirSync(join(here, "bin"), { recursive: true });
+const { metafile } = await build({
+  absWorkingDir: here,
+  entryPoints: ["src/main.ts"],
+  outfile: "bin/kvane.js",
+  bundle: true,
+  format: "esm",
+  platform: "node",
+  target: "node20.19",
+  // From the source, so that a bundle never holds a stale build of core.
+  conditions: ["kvane-source"],
+  define: { KVANE_VERSION: JSON.stringify(version) },
+  // Less text to read at each start; names stay, for readable stack traces.
+  minifySyntax: true,
+  minifyWhitespace: true,
+  charset: "utf8",
+  banner: {
+    // commander is CommonJS and asks for Node's modules with `require`, which an ES module does not have.
+    js: '#!/usr/bin/env node\nimport{createRequire}from"node:module";const require=createRequire(import.meta.url);',
+  },
+  metafile: true,
+  legalComments: "none",
+  logLevel: "warning",
+});
+chmodSync(join(here, "bin/kvane.js"), 0o755);
+writeFileSync(join(here, "bin/THIRD-PARTY-LICENSES.txt"), licences(Object.keys(metafile.inputs)));
+
+/**
+ * The licence text of every package that a bundled file comes from.
+ * @param {string[]} inputs paths relative to this folder
+ */
+function licences(inputs) {
+  const folders = new Set();
+  for (const input of inputs) {
+    const folder = /^.*node_modules\/(?:@[^/]+\/)?[^/]+(?=\/)/.exec(input)?.[0];
+    if (folder) folders.add(resolve(here, folder));
+  }
+  const texts = [...folders].map(licence).sort();
+  return `kvane carries parts of these packages.\n\n${texts.join("\n")}`;
+}
+
+/** @param {string} folder of one package */
+function licence(folder) {
+  const about = JSON.parse(readFileSync(join(folder, "package.json"), "utf8"));
+  const text = licenceText(folder, about.name);
+  return `${"-".repeat(80)}\n${about.name} ${about.version} (${about.license})\n\n${text.trim()}\n`;
+}
+
+/**
+ * @param {string} folder
+ * @param {string} name
+ */
+function licenceText(folder, name) {
+  for (const file of ["LICENSE", "LICENSE.md", "LICENSE.txt", "LICENCE", "license"]) {
+    try {
+      return readFileSync(join(folder, file), "utf8");
+    } catch {
+      // The next spelling may be there.
+    }
+  }
+  throw new Error(`${name} is bundled but its folder has no licence text`);
+}

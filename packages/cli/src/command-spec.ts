@@ -1,0 +1,14 @@
+import type { OptionName } from "./options.js";
+
+/** What the first word behind a command is. */
+export type ArgumentKind = "group or study" | "study" | "code" | "topic";
+
+/** A command as the command line shows it. */
+export interface CommandSpec {
+  readonly name: string;
+  readonly summary: string;
+  readonly argument: ArgumentKind;
+  readonly options: readonly OptionName[];
+  /** Commands that work when pasted; a test pastes them. */
+  readonly examples: readonly string[];
+}

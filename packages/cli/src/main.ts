@@ -1,0 +1,38 @@
+import { removeUnfinished } from "./output.js";
+import { runCommand } from "./run-command.js";
+import { processSurroundings } from "./surroundings.js";
+
+/** Set by Ctrl-C; long work looks at it between its steps. */
+const signal = { aborted: false };
+const interrupted = 130;
+
+/** Milliseconds that work has to end by itself after Ctrl-C. */
+const grace = 300;
+
+process.once("SIGINT", () => {
+  signal.aborted = true;
+  process.once("SIGINT", stop);
+  setTimeout(stop, grace).unref();
+});
+
+function stop(): void {
+  removeUnfinished();
+  process.exit(interrupted);
+}
+
+// A reader that has seen enough (`| head`) is no error.
+for (const stream of [process.stdout, process.stderr])
+  stream.on("error", (error: NodeJS.ErrnoException) => {
+    if (error.code !== "EPIPE") throw error;
+    process.exit(process.exitCode ?? 0);
+  });
+
+try {
+  process.exitCode = await runCommand(process.argv.slice(2), processSurroundings(signal));
+} catch (error) {
+  removeUnfinished();
+  process.stderr.write(
+    `error[internal-fault]: kvane met a fault of its own\n  found:    ${String(error)}\n  remedy:   please report it, with the command and the files that led to it\n`,
+  );
+  process.exitCode = 70;
+}

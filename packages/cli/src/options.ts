@@ -1,0 +1,37 @@
+/** One option: how it is written and what it means. */
+export interface OptionSpec {
+  readonly flags: string;
+  readonly about: string;
+  /** May be given more than once, every one counts. */
+  readonly repeatable?: boolean;
+}
+
+/** Every option of every command, by the name that a request or the output uses. */
+export const optionSpecs = {
+  k: { flags: "--k <K>", about: "wave vector: 0,1/2,0 or 0,0.472,0 or u,0,0" },
+  cell: { flags: "--cell <CELL>", about: '"a b c alpha beta gamma" in Å and degrees' },
+  sites: { flags: "--site <SITE>", about: '"LABEL x y z", once for each site', repeatable: true },
+  polar: { flags: "--polar", about: "polar vectors (displacements) instead of moments" },
+  peaks: { flags: "--peaks <FILE>", about: "list of peak positions" },
+  as: { flags: "--as <KIND>", about: "what the positions are: d, q, two-theta or hkl" },
+  wavelength: { flags: "--wavelength <Å>", about: "neutron wavelength" },
+  tolerance: { flags: "--tolerance <T>", about: "half-width of a match, in the unit of the positions" },
+  unmatched: { flags: "--unmatched <N>", about: "peaks that may stay unexplained" },
+  maxDimension: { flags: "--max-dimension <0..3>", about: "kinds of k to search: points, lines, planes, all" },
+  qMax: { flags: "--q-max <Q>", about: "largest Q in Å⁻¹" },
+  zeroShift: { flags: "--zero-shift <MAX>", about: "largest zero shift in degrees 2θ to refine with k" },
+  cellScale: { flags: "--cell-scale <MAX>", about: "largest relative change of the cell to refine with k" },
+  branches: { flags: "--branches <N>", about: "how many tied wave vectors are followed (3)" },
+  example: { flags: "--example", about: "take the bundled example study" },
+  json: { flags: "--json", about: "print the answer as JSON" },
+  csv: { flags: "--csv", about: "print the table as CSV" },
+  out: { flags: "--out <FILE>", about: "write to a new file instead of the terminal" },
+  folder: { flags: "--out <DIR>", about: "write everything to a new folder" },
+  force: { flags: "--force", about: "let --out replace what is there" },
+  quiet: { flags: "--quiet", about: "no progress and no notes on the error output" },
+} as const satisfies { readonly [name: string]: OptionSpec };
+
+export type OptionName = keyof typeof optionSpecs;
+
+/** Options that shape the output of every command. */
+export const outputOptions: readonly OptionName[] = ["json", "out", "force", "quiet"];

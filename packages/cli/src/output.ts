@@ -1,0 +1,84 @@
+import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync, writeFileSync } from "node:fs";
+import { basename, dirname, join } from "node:path";
+import { fail, KvaneError } from "@kvane/core/errors";
+import type { ResultFile } from "@kvane/core/reports";
+
+/** A place for output: as the user wrote it, and in full. */
+export interface OutputPath {
+  readonly shown: string;
+  readonly full: string;
+}
+
+/** Unfinished files and folders of this process; removed when it is interrupted. */
+const unfinished = new Set<string>();
+
+/** Removes what was begun and not finished. */
+export function removeUnfinished(): void {
+  for (const path of unfinished) rmSync(path, { recursive: true, force: true });
+  unfinished.clear();
+}
+
+/** Throws `output-exists` unless the place is free or may be replaced: asked before the work, not after it. */
+export function checkFree({ shown, full }: OutputPath, force: boolean): void {
+  if (force || !existsSync(full)) return;
+  fail("output-exists", `\`${shown}\` exists already`, {
+    where: { argument: "--out" },
+    expected: "a name that is free",
+    found: statSync(full).isDirectory() ? "a folder" : "a file",
+    remedy: "give another name, or --force to replace it",
+  });
+}
+
+/** Writes a file whole or not at all: under another name in the same folder first, then renamed. */
+export function writeWhole(path: OutputPath, text: string, force: boolean): void {
+  checkFree(path, force);
+  const part = partOf(path.full);
+  writing(path, part, () => {
+    writeFileSync(part, text, { flag: "wx" });
+    renameSync(part, path.full);
+  });
+}
+
+/** Writes a folder whole or not at all. In a folder that exists (`force`) only files of these names are replaced. */
+export function writeFolder(path: OutputPath, files: readonly ResultFile[], force: boolean): void {
+  checkFree(path, force);
+  const folder = path.full;
+  const part = partOf(folder);
+  writing(path, part, () => {
+    mkdirSync(part);
+    for (const { name, text } of files) writeFileSync(join(part, name), text, { flag: "wx" });
+    if (!existsSync(folder)) return renameSync(part, folder);
+    for (const name of readdirSync(folder)) if (isStale(name, files)) rmSync(join(folder, name));
+    for (const { name } of files) renameSync(join(part, name), join(folder, name));
+    rmSync(part, { recursive: true });
+  });
+}
+
+/** A table of an earlier run that this one does not have. */
+function isStale(name: string, files: readonly ResultFile[]): boolean {
+  const ours = /^(assignments|branch-\d+-(modes|satellites))\.csv$/.test(name);
+  return ours && !files.some((file) => file.name === name);
+}
+
+/** The name beside it that it has until it is whole. */
+function partOf(path: string): string {
+  return join(dirname(path), `.${basename(path)}.${process.pid}.part`);
+}
+
+function writing({ shown }: OutputPath, part: string, action: () => void): void {
+  unfinished.add(part);
+  try {
+    action();
+  } catch (error) {
+    removeUnfinished();
+    if (error instanceof KvaneError) throw error;
+    const { code } = error as NodeJS.ErrnoException;
+    fail("output-failed", `\`${shown}\` could not be written`, {
+      where: { argument: "--out" },
+      expected: "a place that can be written to",
+      found: code === "ENOENT" ? "a folder that does not exist" : (code ?? String(error)),
+      remedy: code === "ENOENT" ? "make the folder first" : "choose another place",
+    });
+  }
+  unfinished.delete(part);
+}

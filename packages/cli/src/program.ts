@@ -1,0 +1,109 @@
+import { Command, Option } from "commander";
+import type { CommandSpec } from "./command-spec.js";
+import { commandSpecs } from "./commands/index.js";
+import { type OptionName, type OptionSpec, optionSpecs } from "./options.js";
+
+/** Fixed, so that help looks the same everywhere. */
+const helpWidth = 100;
+
+/** What a parsed line holds: the command, its first word and its options, by the attribute names of the options. */
+export interface ParsedLine {
+  readonly spec: CommandSpec;
+  readonly argument: string | null;
+  readonly options: { readonly [attribute: string]: unknown };
+}
+
+/** The program with all commands; `onCommand` gets what was parsed, `write` all help. */
+export function buildProgram(
+  version: string,
+  planned: readonly string[],
+  write: (text: string) => void,
+  onCommand: (line: ParsedLine) => void,
+): Command {
+  const program = new Command("kvane");
+  program
+    .description("Magnetic structures from neutron data: from satellite peaks to the propagation vector and the modes.")
+    .version(version, "--version", "print the version")
+    .helpOption("-h, --help", "show help")
+    .helpCommand(false)
+    .usage("COMMAND [GROUP | STUDY.yaml] [options]")
+    .configureHelp({ helpWidth })
+    .configureOutput({ writeOut: write, writeErr: write, outputError: () => {}, getOutHelpWidth: () => helpWidth })
+    .exitOverride()
+    .addHelpText(
+      "after",
+      `\nPlanned, not part of this version:\n${lines(planned)}\n\nTo begin with:\n  kvane run --example\n  kvane help topics`,
+    );
+  for (const spec of commandSpecs) addCommand(program, spec, onCommand);
+  return program;
+}
+
+/** Names separated by commas, a line no longer than the help. */
+function lines(names: readonly string[]): string {
+  return names
+    .reduce<string[]>((done, name) => {
+      const last = done.at(-1);
+      if (last !== undefined && last.length + name.length + 4 <= helpWidth) return [...done.slice(0, -1), `${last}, ${name}`];
+      return [...done, `  ${name}`];
+    }, [])
+    .join(",\n");
+}
+
+const argumentTexts = {
+  "group or study": ["[GROUP|STUDY]", "space group, or a study file (.yaml, - for standard input)"],
+  study: ["[STUDY]", "study file (.yaml, - for standard input)"],
+  code: ["[CODE]", "code of a problem; without it all are listed"],
+  topic: ["[TOPIC]", "topic or command; without it the topics are listed"],
+} as const;
+
+function addCommand(program: Command, spec: CommandSpec, onCommand: (line: ParsedLine) => void): void {
+  const [argument, about] = argumentTexts[spec.argument];
+  const command = program
+    .command(spec.name)
+    .summary(spec.summary)
+    .description(`${spec.summary[0]?.toUpperCase()}${spec.summary.slice(1)}.`)
+    .argument(argument, about)
+    .addHelpText("after", `\nExample${spec.examples.length > 1 ? "s" : ""}:\n${spec.examples.map((one) => `  ${one}`).join("\n")}`)
+    .action((first: string | undefined, options: { [attribute: string]: unknown }) =>
+      onCommand({ spec, argument: first ?? null, options }),
+    );
+  for (const name of spec.options) command.addOption(buildOption(name));
+}
+
+function buildOption(name: OptionName): Option {
+  const { flags, about, repeatable }: OptionSpec = optionSpecs[name];
+  const option = new Option(flags, repeatable ? `${about} (repeatable)` : about);
+  if (!flags.includes("<")) return option;
+  return option.argParser((value: string, previous: unknown) => {
+    // An option that swallows the next one has lost its own value.
+    if (/^--[a-z]/.test(value)) throw new MissingValue(flags, value);
+    if (repeatable) return [...((previous as readonly string[] | undefined) ?? []), value];
+    if (previous !== undefined) throw new GivenTwice(flags);
+    return value;
+  });
+}
+
+/** An option whose value is the next option. */
+export class MissingValue extends Error {
+  constructor(
+    readonly flags: string,
+    readonly found: string,
+  ) {
+    super(`${flags} came without its value`);
+  }
+}
+
+/** An option that counts once and was given again. */
+export class GivenTwice extends Error {
+  constructor(readonly flags: string) {
+    super(`${flags} was given twice`);
+  }
+}
+
+/** Options that take a value, as written: what follows them is no GROUP. */
+export const valueOptions: ReadonlySet<string> = new Set(
+  Object.values(optionSpecs)
+    .map(({ flags }) => flags)
+    .filter((flags) => flags.includes("<"))
+    .map((flags) => flags.split(" ")[0] as string),
+);

@@ -1,0 +1,80 @@
+import { fail } from "@kvane/core/errors";
+import type { Request } from "@kvane/core/job";
+import { exampleStudy } from "./host.js";
+import { type ParsedLine, valueOptions } from "./program.js";
+
+/** What the command line wants done with the answer. */
+export interface OutputWishes {
+  readonly json: boolean;
+  readonly csv: boolean;
+  readonly out: string | null;
+  readonly force: boolean;
+  readonly quiet: boolean;
+}
+
+/**
+ * Words that begin with `-` and go on with a letter of a Hall symbol or a coordinate are a GROUP, not an option: a blank
+ * in front hides them from the parser.
+ */
+export function hideGroups(words: readonly string[]): string[] {
+  return words.map((word, index) => {
+    const isValue = index > 0 && valueOptions.has(words[index - 1] as string);
+    return !isValue && /^-[PABCIRFHxyz]/.test(word) ? ` ${word}` : word;
+  });
+}
+
+/** The words of the command line as a request. */
+export function requestFrom({ spec, argument, options }: ParsedLine): Request {
+  const text = (name: string) => (typeof options[name] === "string" ? (options[name] as string) : null);
+  const example = options["example"] === true;
+  const first = argument?.trim() ?? null;
+  const isFile = first !== null && (spec.argument === "study" || /\.(ya?ml|cif)$/i.test(first) || first === "-");
+  const topical = spec.argument === "code" || spec.argument === "topic";
+  if (example && isFile)
+    fail("conflicting-arguments", "a study and --example are both given", {
+      where: { argument: "--example" },
+      expected: "one of the two",
+      found: first,
+      remedy: "leave one of them out",
+    });
+  return {
+    command: spec.name,
+    study: example ? exampleStudy : isFile && !topical ? first : null,
+    group: spec.argument === "group or study" && !isFile ? first : null,
+    code: spec.argument === "code" ? first : null,
+    topic: spec.argument === "topic" ? first : null,
+    k: text("k"),
+    cell: text("cell"),
+    sites: (options["site"] as readonly string[] | undefined) ?? null,
+    polar: options["polar"] === true,
+    peaks: text("peaks"),
+    as: text("as"),
+    wavelength: text("wavelength"),
+    tolerance: text("tolerance"),
+    unmatched: text("unmatched"),
+    maxDimension: text("maxDimension"),
+    qMax: text("qMax"),
+    zeroShift: text("zeroShift"),
+    cellScale: text("cellScale"),
+    branches: text("branches"),
+    files: spec.name === "run" && text("out") !== null,
+  };
+}
+
+export function wishesFrom({ options }: ParsedLine): OutputWishes {
+  const wishes = {
+    json: options["json"] === true,
+    csv: options["csv"] === true,
+    out: typeof options["out"] === "string" ? options["out"] : null,
+    force: options["force"] === true,
+    quiet: options["quiet"] === true,
+  };
+  if (wishes.json && wishes.csv)
+    fail("conflicting-arguments", "--json and --csv are both given", {
+      where: { argument: "--csv" },
+      expected: "one form of output",
+      found: "two",
+      remedy: "leave one of them out",
+    });
+  return wishes;
+}

@@ -1,0 +1,94 @@
+import { resolve } from "node:path";
+import { KvaneError, type Problem } from "@kvane/core/errors";
+import { answer, exitStatusOf, plannedCommands, type Request, version } from "@kvane/core/job";
+import { commandSpecs } from "./commands/index.js";
+import { deliver, type RefusedAnswer, refusedAnswer } from "./deliver.js";
+import { problemsText } from "./errors.js";
+import { type CommandHost, commandHost } from "./host.js";
+import { checkFree } from "./output.js";
+import { buildProgram, type ParsedLine } from "./program.js";
+import { progressLine } from "./progress.js";
+import { hideGroups, requestFrom, wishesFrom } from "./request.js";
+import type { Surroundings } from "./surroundings.js";
+import { usageProblem } from "./usage.js";
+
+/** Does what the words ask and gives the exit status. */
+export async function runCommand(words: readonly string[], surroundings: Surroundings): Promise<number> {
+  const [command] = words;
+  const asJson = words.includes("--json");
+  if (command !== undefined && plannedCommands.includes(command)) {
+    const host = commandHost(surroundings, undefined);
+    return refuse(await answer({ command }, host), { command }, asJson, host, surroundings);
+  }
+  try {
+    const line = parse(words, surroundings);
+    return line === null ? 0 : await execute(line, surroundings);
+  } catch (error) {
+    const problems = problemsOf(error);
+    return problems.length === 0 ? 0 : refuse(refusedAnswer(command ?? "", problems), null, asJson, null, surroundings);
+  }
+}
+
+/** Problems of the usage and of the output; none where the parser has only shown help. */
+function problemsOf(error: unknown): readonly Problem[] {
+  if (error instanceof KvaneError) return error.problems;
+  const problem = usageProblem(error);
+  return problem === null ? [] : [problem];
+}
+
+/** The command with its first word and options; null where there is nothing to do but what the parser has printed. */
+function parse(words: readonly string[], { write, writeError }: Surroundings): ParsedLine | null {
+  const found: ParsedLine[] = [];
+  const program = buildProgram(version, plannedCommands, write, (line) => found.push(line));
+  if (words.length === 0) {
+    writeError(program.helpInformation());
+    throw new KvaneError([nothingAsked]);
+  }
+  program.parse(hideGroups(helpOfCommand(words)), { from: "user" });
+  return found[0] ?? null;
+}
+
+const nothingAsked: Problem = {
+  code: "missing-argument",
+  message: "no command was given",
+  where: { file: null, line: null, column: null, path: null, argument: "COMMAND" },
+  expected: "a command of the list above",
+  found: "nothing",
+  remedy: "begin with `kvane run --example`",
+};
+
+/** `kvane help ops` is `kvane ops --help`. */
+function helpOfCommand(words: readonly string[]): readonly string[] {
+  const [first, topic] = words;
+  const named = first === "help" && words.length === 2 && commandSpecs.some(({ name }) => name === topic);
+  return named ? [topic as string, "--help"] : words;
+}
+
+async function execute(line: ParsedLine, surroundings: Surroundings): Promise<number> {
+  const request = requestFrom(line);
+  const wishes = wishesFrom(line);
+  if (wishes.out !== null) checkFree({ shown: wishes.out, full: resolve(surroundings.folder, wishes.out) }, wishes.force);
+  const progress = progressLine(surroundings, wishes.quiet);
+  const host = commandHost(surroundings, progress.show);
+  const answered = await answer(request, host);
+  progress.clear();
+  if (answered.errors.length > 0) return refuse(answered, request, wishes.json, host, surroundings);
+  deliver(answered, wishes, surroundings);
+  // A table has no room for warnings; the report and the JSON hold them.
+  if (wishes.csv && !wishes.quiet && answered.warnings.length > 0)
+    surroundings.writeError(problemsText(answered.warnings, "warning", (place) => host.sourceLine(request, place)));
+  return 0;
+}
+
+/** Says all that is wrong; with `--json` the answer without a result goes to the output too. */
+function refuse(
+  answered: RefusedAnswer,
+  request: Request | null,
+  asJson: boolean,
+  host: CommandHost | null,
+  surroundings: Surroundings,
+): number {
+  if (asJson) deliver(answered, { json: true, csv: false, out: null, force: false, quiet: true }, surroundings);
+  surroundings.writeError(problemsText(answered.errors, "error", (place) => host?.sourceLine(request, place) ?? null));
+  return exitStatusOf(answered.errors[0]?.code ?? "internal-fault");
+}

@@ -1,0 +1,20 @@
+/** The keys of a study file by section; `""` is the top. A test holds the list against the manual. */
+export const studyKeys = {
+  "": ["title", "structure", "group", "cell", "sites", "k", "peaks", "search", "intensities", "exchange", "exclude"],
+  cell: ["a", "b", "c", "alpha", "beta", "gamma"],
+  sites: ["label", "ion", "at", "spin"],
+  peaks: ["file", "as", "wavelength", "tolerance", "unit"],
+  search: ["unmatched", "max-dimension", "tolerance", "zero-shift", "cell-scale", "q-max"],
+  intensities: ["file"],
+  exchange: ["shell", "j"],
+} as const;
+
+export type StudySectionName = keyof typeof studyKeys;
+
+/** The sections that have the key, as a hint where it stands in the wrong one. */
+export function sectionsWithKey(written: string): string[] {
+  const key = written.toLowerCase().replaceAll("_", "-");
+  return Object.entries(studyKeys).flatMap(([section, keys]) =>
+    section !== "" && (keys as readonly string[]).includes(key) ? [section] : [],
+  );
+}

@@ -1,0 +1,74 @@
+import { type Problem, problem } from "../errors/index.js";
+import { note, type ProblemList } from "./problem-list.js";
+import { openSection } from "./study-section.js";
+import { asList, asNumber, asRecord, asText, type NumberLimits } from "./study-values.js";
+import { where } from "./yaml-convert.js";
+import type { TreeNode } from "./yaml-tree.js";
+
+/** `intensities: {file}`. */
+export function readIntensities(node: TreeNode, problems: ProblemList): { readonly file: string } | null {
+  const record = asRecord(problems, node, "a section with `file`", "for example intensities: {file: integrated.csv}");
+  const fileNode = record && openSection("intensities", record, problems).need("file", "the name of a file");
+  const file = fileNode && asText(problems, fileNode, "the name of a file");
+  return file === null ? null : { file };
+}
+
+const finite: NumberLimits = { expected: "a number", allows: () => true };
+
+const shellNumber: NumberLimits = {
+  expected: "the number of a shell, counted from 1",
+  allows: (value) => Number.isSafeInteger(value) && value >= 1,
+};
+
+/** `exchange: [{shell, j}]`. */
+export function readExchange(node: TreeNode, problems: ProblemList): { shell: number; j: number }[] | null {
+  const example = "for example - {shell: 1, j: -1.0}";
+  const list = asList(problems, node, "a list of shells", example);
+  if (!list) return null;
+  return list.items.flatMap((item) => {
+    const record = asRecord(problems, item, "a shell with `shell` and `j`", example);
+    if (!record) return [];
+    const section = openSection("exchange", record, problems);
+    const shellNode = section.need("shell", shellNumber.expected);
+    const jNode = section.need("j", finite.expected);
+    const shell = shellNode && asNumber(problems, shellNode, shellNumber);
+    const j = jNode && asNumber(problems, jNode, finite);
+    return shell === null || j === null ? [] : [{ shell, j }];
+  });
+}
+
+/** `exclude: [[from, to]]`. */
+export function readExclude(node: TreeNode, problems: ProblemList): (readonly [number, number])[] | null {
+  const example = "for example exclude: [[42.1, 42.9]]";
+  const list = asList(problems, node, "a list of ranges [from, to]", example);
+  if (!list) return null;
+  return list.items.flatMap((item) => {
+    const range = asList(problems, item, "a range [from, to]", example);
+    if (!range) return [];
+    const numbers = range.items.map((one) => asNumber(problems, one, finite));
+    const [from, to] = numbers;
+    if (numbers.some((one) => one === null)) return [];
+    if (numbers.length === 2 && from != null && to != null && from < to) return [[from, to] as const];
+    note(problems, "wrong-type", `\`${item.place.path}\` is not a range`, {
+      where: where(item.place),
+      expected: "two numbers, the smaller first",
+      found: `[${numbers.join(", ")}]`,
+      remedy: example,
+    });
+    return [];
+  });
+}
+
+/** What the study has and this version does not use, as warnings with their places. */
+export function laterSections(sections: Readonly<Record<string, TreeNode | null>>, file: string): Problem[] {
+  return Object.entries(sections).flatMap(([key, node]) =>
+    node
+      ? [
+          problem("not-built", `\`${key}\` is read, but this version does nothing with it`, {
+            where: { ...where(node.place), file, path: key },
+            remedy: "the rest of the study is used as if the section were not there",
+          }),
+        ]
+      : [],
+  );
+}

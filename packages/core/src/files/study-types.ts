@@ -1,0 +1,70 @@
+import type { Place, Problem } from "../errors/index.js";
+import type { Rational, RationalVector } from "../numbers/index.js";
+import type { PeakKind } from "../search/index.js";
+import type { Cell, Site } from "../spacegroups/index.js";
+
+/** Place of a value in a study file. */
+export interface StudyPlace extends Place {
+  /** Whether the text of the value stands in one line just as it was read, so that a column inside it can be added. */
+  readonly verbatim: boolean;
+}
+
+/** A site that carries a moment. */
+export interface StudySite extends Site {
+  /** As written, e.g. `Fe3+`. */
+  readonly ion: string | null;
+  readonly position: RationalVector;
+  /** Spin quantum number, a multiple of 1/2. */
+  readonly spin: Rational | null;
+}
+
+/** The list of satellite peaks and how it is to be read; what is null is not said in the study. */
+export interface StudyPeaks {
+  /** As written, relative to the study. */
+  readonly file: string;
+  readonly kind: PeakKind | null;
+  readonly wavelengthAngstrom: number | null;
+  /** Half-width of a match in the unit of the positions. */
+  readonly tolerance: number | null;
+  /** Unit of the positions, e.g. `nm`. */
+  readonly unit: string | null;
+}
+
+/** Wishes for the search; what is null is not said in the study. */
+export interface StudySearch {
+  readonly unmatched: number | null;
+  readonly maxDimension: 0 | 1 | 2 | 3 | null;
+  /** Half-width of a match in Å⁻¹. */
+  readonly tolerance: number | null;
+  /** Degrees 2θ. */
+  readonly zeroShift: number | null;
+  /** Relative. */
+  readonly cellScale: number | null;
+  /** Å⁻¹. */
+  readonly qMax: number | null;
+}
+
+/** A study file as a record: values where they are given, null for sections that are left out. */
+export interface Study {
+  readonly file: string;
+  readonly title: string | null;
+  /** File name of a CIF with cell, group and sites, relative to the study. */
+  readonly structure: string | null;
+  /** GROUP as on the command line. */
+  readonly group: string | null;
+  readonly cell: Cell | null;
+  readonly sites: readonly StudySite[];
+  /** Each wave vector as text for `parseWaveVector`; null when it is to be searched. */
+  readonly k: readonly string[] | null;
+  readonly peaks: StudyPeaks | null;
+  readonly search: StudySearch;
+  readonly intensities: { readonly file: string } | null;
+  /** Exchange constants by shell of neighbours, counted from 1. */
+  readonly exchange: readonly { readonly shell: number; readonly j: number }[] | null;
+  /** Ranges of positions, in the unit of the peaks, that are not to be used. */
+  readonly exclude: readonly (readonly [number, number])[] | null;
+  /** Where each value stands, by its path: `cell.alpha`, `sites[0].at[2]`, `k[1]`. */
+  readonly places: Readonly<Record<string, StudyPlace>>;
+  /** Sections that this version reads but does not use. */
+  readonly warnings: readonly Problem[];
+}

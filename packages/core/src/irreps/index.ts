@@ -1,0 +1,9 @@
+/**
+ * Which irreducible representations has the little group of k? Small irreps for any k of any group in any setting as
+ * exact matrices, by induction and extension along a composition series, with their reality by Herring's test and the
+ * relation to −k. `D({1|T}) = e^{+2πi k·T}` (docs/conventions.md, Moments and phases). Sources: Zak, J. Math. Phys. 1
+ * (1960) 165; Bradley & Cracknell (1972), chapters 3 and 4; Herring, Phys. Rev. 52 (1937) 361.
+ */
+export { translationColumn, waveTimesColumn } from "./setting.js";
+export { smallIrreps } from "./small-irreps.js";
+export type { Reality, SmallIrrep, SmallIrreps } from "./types.js";

@@ -1,0 +1,210 @@
+import {
+  addCyclotomic,
+  addCyclotomicMatrices,
+  adjointCyclotomicMatrix,
+  type Cyclotomic,
+  type CyclotomicMatrix,
+  conjugateCyclotomic,
+  cyclotomicFromRational,
+  cyclotomicOne,
+  cyclotomicToRational,
+  cyclotomicZero,
+  divideCyclotomic,
+  equalCyclotomic,
+  invertCyclotomic,
+  isCyclotomicZero,
+  multiplyCyclotomic,
+  multiplyCyclotomicMatrices,
+  rational,
+  reduceOrder,
+  rootOfUnity,
+  rootTurns,
+  scaleCyclotomicMatrix,
+  squareRootOf,
+  traceCyclotomicMatrix,
+} from "../numbers/index.js";
+import { compositionSeries, type SeriesStep } from "./composition-series.js";
+import type { LittleCoGroup } from "./little-co-group.js";
+
+/** A projective irrep Δ: unitary matrices by element number, `undefined` for elements not reached yet. */
+type Matrices = readonly (CyclotomicMatrix | undefined)[];
+
+/**
+ * All projective irreps of a little co-group for its factor system, as exact unitary matrices by element number.
+ *
+ * Along a composition series each irrep of the normal subgroup H either is inequivalent to its conjugate by the
+ * generator s, and the orbit of p irreps gives one induced irrep; or it is equivalent, and it extends to p irreps that
+ * differ by the p-th roots of unity (Zak, J. Math. Phys. 1 (1960) 165; Bradley & Cracknell, 1972, theorems 4.4.1–4.4.3).
+ */
+export function projectiveIrreps(group: LittleCoGroup): CyclotomicMatrix[][] {
+  const start: (CyclotomicMatrix | undefined)[] = new Array(group.size);
+  start[0] = [[cyclotomicOne]];
+  let irreps: Matrices[] = [start];
+  for (const step of compositionSeries(group)) irreps = ascend(group, step, irreps);
+  return irreps.map((matrices) => matrices.map((matrix) => matrix as CyclotomicMatrix));
+}
+
+function ascend(group: LittleCoGroup, step: SeriesStep, irreps: readonly Matrices[]): Matrices[] {
+  const done = new Set<number>();
+  const characters = irreps.map((matrices) => charactersOn(matrices, step.subgroup));
+  const result: Matrices[] = [];
+  irreps.forEach((matrices, index) => {
+    if (done.has(index)) return;
+    const orbit = [matrices];
+    for (;;) {
+      const next = conjugated(group, step, orbit[orbit.length - 1] as Matrices);
+      const partner = indexOfCharacter(characters, charactersOn(next, step.subgroup));
+      done.add(partner);
+      if (partner === index) {
+        // `next` is equivalent to the first of the orbit, so the orbit is complete: 1 or p irreps.
+        result.push(...(orbit.length === 1 ? extended(group, step, matrices, next) : [induced(group, step, orbit)]));
+        break;
+      }
+      orbit.push(next);
+    }
+    done.add(index);
+  });
+  return result;
+}
+
+function charactersOn(matrices: Matrices, elements: readonly number[]): Cyclotomic[] {
+  return elements.map((element) => traceCyclotomicMatrix(matrices[element] as CyclotomicMatrix));
+}
+
+function indexOfCharacter(list: readonly (readonly Cyclotomic[])[], wanted: readonly Cyclotomic[]): number {
+  const index = list.findIndex((one) => one.every((value, position) => equalCyclotomic(value, wanted[position] as Cyclotomic)));
+  if (index < 0) throw new Error("a conjugated irrep is not among the irreps of the subgroup");
+  return index;
+}
+
+/** The factor e^{2πi·n/factorOrder}. */
+function root(group: LittleCoGroup, exponent: number): Cyclotomic {
+  return rootOfUnity(rational(exponent, group.factorOrder));
+}
+
+/** Δˢ(h) = matrix of e_s⁻¹ e_h e_s = e^{2πi[ω(h,s) − ω(s,h')]} Δ(h'), h' = s⁻¹hs. */
+function conjugated(group: LittleCoGroup, { generator: s, subgroup }: SeriesStep, matrices: Matrices): Matrices {
+  const { product, inverse, factor, size } = group;
+  const result: (CyclotomicMatrix | undefined)[] = new Array(size);
+  for (const h of subgroup) {
+    const image = product[(product[(inverse[s] as number) * size + h] as number) * size + s] as number;
+    const exponent = (factor[h * size + s] as number) - (factor[s * size + image] as number);
+    result[h] = scaledMatrix(root(group, exponent), matrices[image] as CyclotomicMatrix);
+  }
+  return result;
+}
+
+function scaledMatrix(scale: Cyclotomic, matrix: CyclotomicMatrix): CyclotomicMatrix {
+  return equalCyclotomic(scale, cyclotomicOne) ? matrix : scaleCyclotomicMatrix(scale, matrix);
+}
+
+/** e_s^p = e^{2πi·exponent} e_{s^p}: the element s^p of H and the accumulated factor. */
+function generatorPower(group: LittleCoGroup, { generator: s, index }: SeriesStep): { element: number; exponent: number } {
+  let element = s;
+  let exponent = 0;
+  for (let power = 1; power < index; power++) {
+    exponent += group.factor[element * group.size + s] as number;
+    element = group.product[element * group.size + s] as number;
+  }
+  return { element, exponent };
+}
+
+/** The induced irrep on blocks e_s^j ⊗ v: block-diagonal Δ^{s^j} on H, a block shift for s. */
+function induced(group: LittleCoGroup, step: SeriesStep, orbit: readonly Matrices[]): Matrices {
+  const dimension = (orbit[0]?.[0] as CyclotomicMatrix).length;
+  const size = dimension * orbit.length;
+  const blocks = (place: (row: number, column: number) => CyclotomicMatrix | null): CyclotomicMatrix =>
+    Array.from({ length: size }, (_, row) =>
+      Array.from({ length: size }, (_unused, column) => {
+        const block = place(Math.floor(row / dimension), Math.floor(column / dimension));
+        return block === null ? cyclotomicZero : ((block[row % dimension] as readonly Cyclotomic[])[column % dimension] as Cyclotomic);
+      }),
+    );
+  const base: (CyclotomicMatrix | undefined)[] = new Array(group.size);
+  for (const h of step.subgroup) base[h] = blocks((row, column) => (row === column ? (orbit[row]?.[h] as CyclotomicMatrix) : null));
+  const { element, exponent } = generatorPower(group, step);
+  const wrap = scaledMatrix(root(group, exponent), orbit[0]?.[element] as CyclotomicMatrix);
+  const unit = orbit[0]?.[0] as CyclotomicMatrix;
+  const last = orbit.length - 1;
+  const shift = blocks((row, column) => (row === column + 1 ? unit : row === 0 && column === last ? wrap : null));
+  return completed(group, step, base, shift);
+}
+
+/** Fills in the cosets: e_s^j e_h = e^{2πi·c} e_{s^j h}, so Δ(s^j h) = e^{−2πi·c} Δ(s)^j Δ(h). */
+function completed(group: LittleCoGroup, step: SeriesStep, base: Matrices, shift: CyclotomicMatrix): Matrices {
+  const { product, factor, size } = group;
+  const result = [...base];
+  let previous: readonly number[] = step.subgroup;
+  for (let power = 1; power < step.index; power++) {
+    previous = previous.map((element) => {
+      const image = product[step.generator * size + element] as number;
+      const exponent = -(factor[step.generator * size + element] as number);
+      result[image] = scaledMatrix(
+        root(group, exponent),
+        multiplyCyclotomicMatrices(shift, result[element] as CyclotomicMatrix),
+      );
+      return image;
+    });
+  }
+  return result;
+}
+
+/** The p extensions of an irrep that is equivalent to its conjugate. */
+function extended(group: LittleCoGroup, step: SeriesStep, matrices: Matrices, conjugate: Matrices): Matrices[] {
+  const intertwiner = unitaryIntertwiner(step.subgroup, matrices, conjugate);
+  // X^p = λ e^{2πi·exponent} Δ(s^p) with a root of unity λ; each p-th root of 1/λ gives one extension.
+  const { element, exponent } = generatorPower(group, step);
+  const power = Array.from({ length: step.index - 1 }).reduce<CyclotomicMatrix>(
+    (product) => multiplyCyclotomicMatrices(product, intertwiner),
+    intertwiner,
+  );
+  const target = scaledMatrix(root(group, exponent), matrices[element] as CyclotomicMatrix);
+  const turns = rootTurns(ratio(power, target));
+  if (turns === null) throw new Error("an intertwiner's power is no root of unity times the matrix of the power");
+  return Array.from({ length: step.index }, (_, branch) => {
+    const scale = rootOfUnity(rational(branch * turns[1] - turns[0], turns[1] * step.index));
+    return completed(group, step, matrices, scaledMatrix(scale, intertwiner));
+  });
+}
+
+/** λ with `a = λ b` for proportional matrices. */
+function ratio(a: CyclotomicMatrix, b: CyclotomicMatrix): Cyclotomic {
+  for (const [row, entries] of b.entries())
+    for (const [column, entry] of entries.entries())
+      if (!isCyclotomicZero(entry)) return divideCyclotomic((a[row] as readonly Cyclotomic[])[column] as Cyclotomic, entry);
+  throw new Error("a zero matrix has no ratio");
+}
+
+/**
+ * The unitary X with `Δ(h) X = X Δˢ(h)`, unique up to a phase by Schur's lemma: the mean of `Δ(h) E Δˢ(h)⁻¹` over H for
+ * the first elementary matrix E that does not vanish, scaled so that one entry is positive.
+ */
+function unitaryIntertwiner(subgroup: readonly number[], matrices: Matrices, conjugate: Matrices): CyclotomicMatrix {
+  const dimension = (matrices[0] as CyclotomicMatrix).length;
+  for (let seed = 0; seed < dimension * dimension; seed++) {
+    const mean = subgroup
+      .map((h) => outerProduct(matrices[h] as CyclotomicMatrix, conjugate[h] as CyclotomicMatrix, Math.floor(seed / dimension), seed % dimension))
+      .reduce(addCyclotomicMatrices);
+    const entry = mean.flat().find((value) => !isCyclotomicZero(value));
+    if (entry) return normalizedUnitary(scaleCyclotomicMatrix(invertCyclotomic(reduceOrder(entry)), mean));
+  }
+  throw new Error("two equivalent irreps have no intertwiner");
+}
+
+/** Δ E_{ab} Δ'† for an elementary matrix: column a of the first times the conjugated column b of the second. */
+function outerProduct(left: CyclotomicMatrix, right: CyclotomicMatrix, a: number, b: number): CyclotomicMatrix {
+  const adjoint = adjointCyclotomicMatrix(right);
+  return left.map((row) => (adjoint[b] as readonly Cyclotomic[]).map((entry) => multiplyCyclotomic(row[a] as Cyclotomic, entry)));
+}
+
+/** Divides by √m where X X† = m·1; m is rational because one entry of X is 1 and the rest come from roots of unity. */
+function normalizedUnitary(matrix: CyclotomicMatrix): CyclotomicMatrix {
+  const norm = (matrix[0] as readonly Cyclotomic[]).reduce(
+    (sum, entry) => addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(entry))),
+    cyclotomicZero,
+  );
+  const value = cyclotomicToRational(reduceOrder(norm));
+  if (value === null) throw new Error("an intertwiner has no unitary form in a cyclotomic field found by this method");
+  const inverseRoot = multiplyCyclotomic(squareRootOf(value[0] * value[1]), cyclotomicFromRational(rational(1, value[0])));
+  return scaledMatrix(inverseRoot, matrix).map((row) => row.map(reduceOrder));
+}

@@ -1,0 +1,180 @@
+import { canonicalPlacement, littleGroup, star, type WaveVector } from "../kvectors/index.js";
+import {
+  addForms,
+  constantForm,
+  type Cyclotomic,
+  type CyclotomicMatrix,
+  cyclotomicToComplex,
+  dotIntegers,
+  type Phase,
+  rational,
+  type RationalVector,
+  reduceOrder,
+  reducePhase,
+  traceCyclotomicMatrix,
+  unitComplex,
+  vectorFrom,
+} from "../numbers/index.js";
+import { composeOperators, fromPrimitiveColumn, invertOperator, type SpaceGroup, type SymmetryOperator } from "../spacegroups/index.js";
+import { type LittleCoGroup, littleCoGroup } from "./little-co-group.js";
+import { projectiveIrreps } from "./projective-irreps.js";
+import { conjugateCharacter, herringReality, type RealityContext, sameCharacter } from "./reality.js";
+import { aboutPoint, translationColumn, waveTimesColumn } from "./setting.js";
+import type { Reality, SmallIrreps } from "./types.js";
+
+/**
+ * All small irreps of the little group of k, exact, for any k of any group in any setting and without tables.
+ *
+ * They are made at the canonical representative of the kind of k and carried to k by the operator g that takes one to
+ * the other, `D_k(h) = D_canonical(g⁻¹ h g)`, so that numbers and matrices belong together all along a line or plane
+ * and on every arm. `D({R|t}) = e^{2πi(k·t + H·p)} Δ(R)` with Δ about the mean origin p of the little co-group.
+ *
+ * Order and labels: by dimension, then by the characters of Δ at the canonical representative in operator order, larger
+ * real part first, then larger imaginary part. Works with open letters in k.
+ */
+export function smallIrreps(group: SpaceGroup, k: WaveVector): SmallIrreps {
+  const placement = canonicalPlacement(group, k);
+  const canonical = canonicalIrreps(group, placement.canonical);
+  const carrier = group.operators[placement.operator] as SymmetryOperator;
+  const little = littleGroup(group, k);
+  const back = invertOperator(carrier);
+  const images = little.operators.map((index) =>
+    composeOperators(composeOperators(back, group.operators[index] as SymmetryOperator), carrier),
+  );
+  const elements = images.map(canonical.elementOf);
+  const phases = images.map((image, index) => canonical.phaseOf(elements[index] as number, image));
+  const { arms, minusK } = star(group, k);
+  return {
+    k,
+    littleGroup: little,
+    minusK,
+    arms: arms.length,
+    phases,
+    irreps: canonical.irreps.map((irrep, position) => ({
+      label: label(position),
+      dimension: irrep.dimension,
+      reality: irrep.reality,
+      conjugateOf: irrep.conjugate === null ? null : label(irrep.conjugate),
+      physicalDimension: arms.length * irrep.dimension * (irrep.reality === "real" ? 1 : 2),
+      matrices: elements.map((element) => irrep.matrices[element] as CyclotomicMatrix),
+      characters: elements.map((element, index) => ({ phase: phases[index] as Phase, factor: irrep.character[element] as Cyclotomic })),
+    })),
+  };
+}
+
+function label(position: number): string {
+  return `Γ${position + 1}`;
+}
+
+interface CanonicalIrrep {
+  readonly dimension: number;
+  readonly reality: Reality;
+  readonly conjugate: number | null;
+  readonly matrices: readonly CyclotomicMatrix[];
+  readonly character: readonly Cyclotomic[];
+}
+
+interface CanonicalIrreps {
+  readonly irreps: readonly CanonicalIrrep[];
+  /** Element number in the canonical little co-group of an operator of the canonical little group. */
+  readonly elementOf: (operator: SymmetryOperator) => number;
+  /** k·t + H·p of such an operator. */
+  readonly phaseOf: (element: number, operator: SymmetryOperator) => Phase;
+}
+
+function canonicalIrreps(group: SpaceGroup, k: WaveVector): CanonicalIrreps {
+  const coGroup = littleCoGroup(group, k);
+  const { operators, shifts } = coGroup.littleGroup;
+  const elementByRotation = new Map(
+    operators.map((operator, element) => [rotationKey(group.operators[operator] as SymmetryOperator), element]),
+  );
+  const elementOf = (operator: SymmetryOperator): number => {
+    const element = elementByRotation.get(rotationKey(operator));
+    if (element === undefined) throw new Error("an operator is not in the little group");
+    return element;
+  };
+  const gauge = (element: number): Phase =>
+    constantForm(rational(dotIntegers(shifts[element] as readonly number[], coGroup.origin), coGroup.originDenominator));
+  const phaseOf = (element: number, operator: SymmetryOperator): Phase =>
+    reducePhase(addForms(waveTimesColumn(k, translationColumn(operator)), gauge(element)));
+  const context = realityContext(group, k, coGroup, elementOf);
+  const made = projectiveIrreps(coGroup).map((matrices) => ({
+    matrices: matrices.map((matrix) => matrix.map((row) => row.map(reduceOrder))),
+    character: matrices.map((matrix) => reduceOrder(traceCyclotomicMatrix(matrix))),
+  }));
+  const sorted = sortIrreps(made, operators.map((_, element) => gauge(element)));
+  const realities = sorted.map(({ character }) => herringReality(context, character));
+  const irreps = sorted.map(({ matrices, character }, position) => ({
+    dimension: (matrices[0] as CyclotomicMatrix).length,
+    reality: realities[position] as Reality,
+    conjugate:
+      realities[position] === "complex" && context.reversing.length > 0
+        ? findCharacter(sorted, conjugateCharacter(context, character))
+        : null,
+    matrices,
+    character,
+  }));
+  return { irreps, elementOf, phaseOf };
+}
+
+function rotationKey(operator: SymmetryOperator): string {
+  return `${operator.rotation.join(" ")}/${operator.rotationDenominator}`;
+}
+
+function realityContext(
+  group: SpaceGroup,
+  k: WaveVector,
+  coGroup: LittleCoGroup,
+  elementOf: (operator: SymmetryOperator) => number,
+): RealityContext {
+  const origin: RationalVector = fromPrimitiveColumn(group.lattice, vectorFrom(coGroup.origin, coGroup.originDenominator));
+  const moved = (index: number): SymmetryOperator => aboutPoint(group.operators[index] as SymmetryOperator, origin);
+  return {
+    k,
+    elements: coGroup.littleGroup.operators.map(moved),
+    reversing: star(group, k).reversing.map(moved),
+    elementOf,
+  };
+}
+
+interface MadeIrrep {
+  readonly matrices: readonly CyclotomicMatrix[];
+  readonly character: readonly Cyclotomic[];
+}
+
+/** Decimals to which characters are rounded for sorting only; distinct ones differ by far more. */
+const sortingDecimals = 9;
+
+function sortIrreps(irreps: readonly MadeIrrep[], gauges: readonly Phase[]): MadeIrrep[] {
+  const keyed = irreps.map((irrep) => ({
+    irrep,
+    key: [
+      -(irrep.matrices[0] as CyclotomicMatrix).length,
+      ...irrep.character.flatMap((value, element) => {
+        const [real, imaginary] = cyclotomicToComplex(value);
+        const [numerator, denominator] = (gauges[element] as Phase).constant;
+        const [cosine, sine] = unitComplex(numerator / denominator);
+        return [rounded(real * cosine - imaginary * sine), rounded(real * sine + imaginary * cosine)];
+      }),
+    ],
+  }));
+  keyed.sort((a, b) => {
+    for (let index = 0; index < a.key.length; index++) {
+      const difference = (b.key[index] as number) - (a.key[index] as number);
+      if (difference !== 0) return difference;
+    }
+    return 0;
+  });
+  return keyed.map(({ irrep }) => irrep);
+}
+
+function rounded(value: number): number {
+  return Number(value.toFixed(sortingDecimals)) + 0;
+}
+
+function findCharacter(irreps: readonly MadeIrrep[], wanted: readonly Cyclotomic[]): number {
+  const position = irreps.findIndex(({ character }) => sameCharacter(character, wanted));
+  if (position < 0) throw new Error("the conjugate of an irrep is not among the irreps of its little group");
+  return position;
+}
+

@@ -1,0 +1,74 @@
+import { fail, KvaneError, type Problem, problem } from "../errors/index.js";
+import type { Envelope, InputRecord } from "../reports/index.js";
+import { type CommandEntry, commandTable, plannedCommands } from "./commands.js";
+import type { JobHost, Request, RequestField } from "./request.js";
+import { withRemedy } from "./remedies.js";
+import { version } from "./version.js";
+import type { Work } from "./work.js";
+
+/**
+ * Answers a request: does the work and gives the one JSON envelope. Wrong input and interruptions come back as
+ * `errors` beside a null result, a fault of kvane itself as `internal-fault`; it does not throw. The same request and
+ * the same files give the same answer.
+ */
+export async function answer(request: Request, host: JobHost): Promise<Envelope<object>> {
+  const entry = Object.hasOwn(commandTable, request.command) ? commandTable[request.command] : undefined;
+  const work: Work = { request, host, study: null, assumed: [], warnings: [] };
+  const frame = { kvane: version, format: 1, command: request.command, input: inputRecord(request, entry) } as const;
+  try {
+    if (entry === undefined) return refuse(request.command);
+    const study = await readStudy(request, host);
+    const result = await (await entry.load())({ ...work, study });
+    return { ...frame, result, errors: [], warnings: work.warnings, assumed: work.assumed };
+  } catch (error) {
+    return { ...frame, result: null, errors: problemsOf(error), warnings: work.warnings, assumed: work.assumed };
+  }
+}
+
+/** The study is read once, before the command, and its reader is loaded only then. */
+async function readStudy(request: Request, host: JobHost) {
+  const path = request.study ?? null;
+  return path === null ? null : (await import("./inputs/study-input.js")).studyFrom(path, host);
+}
+
+/** What was asked, tidied: blanks collapsed, null for what was not given. */
+function inputRecord(request: Request, entry: CommandEntry | undefined): InputRecord {
+  const fields = entry?.takes ?? [];
+  return Object.fromEntries(fields.map((field) => [field, tidy(request[field])]));
+}
+
+function tidy(value: Request[RequestField]): InputRecord[string] {
+  if (typeof value === "string") return tidyText(value);
+  if (Array.isArray(value)) return value.map(tidyText);
+  return (value as boolean | null | undefined) ?? null;
+}
+
+function tidyText(text: string): string {
+  return text.trim().replace(/\s+/g, " ");
+}
+
+function refuse(command: string): never {
+  if (plannedCommands.includes(command))
+    fail("not-built", `\`kvane ${command}\` is planned but not part of version ${version}`, {
+      expected: `one of ${Object.keys(commandTable).join(", ")}`,
+      found: command,
+      remedy: "see `kvane help commands` for what this version does",
+    });
+  fail("unknown-command", `there is no command \`${command}\``, {
+    where: { argument: "COMMAND" },
+    expected: `one of ${Object.keys(commandTable).join(", ")}`,
+    found: command,
+    remedy: "see `kvane --help`",
+  });
+}
+
+function problemsOf(error: unknown): readonly Problem[] {
+  if (error instanceof KvaneError) return error.problems.map(withRemedy);
+  const found = error instanceof Error ? `${error.name}: ${error.message}` : String(error);
+  return [
+    problem("internal-fault", "kvane met a fault of its own; the input is not to blame", {
+      found,
+      remedy: "please report it, with the command and the files that led to it",
+    }),
+  ];
+}

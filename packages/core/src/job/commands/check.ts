@@ -1,0 +1,47 @@
+import { type CheckRecord, cellRecord, checkedSiteRecord, groupRecord } from "../../reports/index.js";
+import { waveVectorToJson } from "../../kvectors/index.js";
+import { cellFor, cellIfGiven } from "../inputs/cell-input.js";
+import { groupOf } from "../inputs/group-input.js";
+import { placedK, writtenKs } from "../inputs/k-input.js";
+import { peaksIfGiven } from "../inputs/peaks-input.js";
+import { orbitsOf, sitesIfGiven } from "../inputs/site-input.js";
+import { needStudy } from "../inputs/study-input.js";
+import { remember, together, type Work } from "../work.js";
+
+/** `kvane check`: everything that a study says, understood and held against each other; all problems at once. */
+export async function checkCommand(work: Work): Promise<CheckRecord> {
+  const study = needStudy(work.study);
+  remember(work, [], study.warnings);
+  const { group, written, given, peaks, sites } = await together({
+    group: () => (study.group === null ? null : groupOf(work)),
+    written: () => writtenKs(work),
+    given: () => cellIfGiven(work),
+    peaks: () => peaksIfGiven(work),
+    sites: () => sitesIfGiven(work),
+  });
+  const { cell, ks, orbits } = await together({
+    cell: () => (given === null ? null : group === null ? given.cell : cellFor(group, given)),
+    ks: () => (group === null ? [] : written.map((one) => placedK(work, group, one))),
+    orbits: () => (group === null ? [] : orbitsOf(work, group, sites, given?.cell ?? null)),
+  });
+  return {
+    kind: "study",
+    blocks: null,
+    title: study.title,
+    cell: cell && cellRecord(cell),
+    group: group && groupRecord(group),
+    sites: orbits.map((orbit, index) => checkedSiteRecord(orbit, sites[index]?.ion ?? null)),
+    k: ks.map(waveVectorToJson),
+    peaks: peaks && { file: peaks.file, kind: peaks.list.kind, count: peaks.list.peaks.length },
+    missing: missingParts(study, written.length),
+  };
+}
+
+function missingParts(study: NonNullable<Work["study"]>, ks: number): string[] {
+  return [
+    ...(study.group === null ? ["the space group (group)"] : []),
+    ...(study.cell === null && (ks === 0 || study.peaks !== null) ? ["the unit cell (cell)"] : []),
+    ...(study.sites.length === 0 ? ["the magnetic sites (sites)"] : []),
+    ...(study.peaks === null && ks === 0 ? ["a peak list (peaks) or a wave vector (k)"] : []),
+  ];
+}

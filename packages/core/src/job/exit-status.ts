@@ -1,0 +1,14 @@
+import type { ProblemCode } from "../errors/index.js";
+
+/** Codes that are not the fault of the input: valid input on which the job failed, or output that cannot be written. */
+const failedOnValidInput: readonly ProblemCode[] = ["not-built", "number-overflow", "output-exists", "output-failed"];
+
+/**
+ * The exit status that a problem ends the command with: 1 the job failed on valid input or output could not be written,
+ * 2 the input or the usage is wrong, 70 an internal fault, 130 interrupted.
+ */
+export function exitStatusOf(code: ProblemCode): number {
+  if (code === "internal-fault") return 70;
+  if (code === "interrupted") return 130;
+  return failedOnValidInput.includes(code) ? 1 : 2;
+}

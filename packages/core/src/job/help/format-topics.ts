@@ -1,0 +1,49 @@
+import type { HelpTopic } from "./topics.js";
+
+/** Files in and out. */
+export const formatTopics: { readonly [topic: string]: HelpTopic } = {
+  study: {
+    title: "The study file",
+    text: `A YAML file that holds the question. Numbers are read as written: 1/3 and 0.5 are exact.
+  title: Layered ferrite (invented), 1.5 K
+  group: P n m a
+  cell: {a: 10.21, b: 6.05, c: 4.71, alpha: 90, beta: 90, gamma: 90}
+  sites:
+    - {label: Fe1, ion: Fe3+, at: [0, 0, 0]}
+  k: [[0, 1/2, 0]]                    # leave out to search
+  peaks: {file: satellites.csv, as: two-theta, wavelength: 2.41, tolerance: 0.08}
+  search: {unmatched: 1, max-dimension: 0}
+
+File names count from the folder of the study. kvane check STUDY.yaml names all that is wrong or
+missing. Options on the command line win over the study.`,
+  },
+  peaks: {
+    title: "Peak lists",
+    text: `One peak a row: position, then optionally its uncertainty, intensity, uncertainty of the intensity;
+or columns h k l for a single crystal. Columns are separated by comma, semicolon, tab or blanks. A
+header row may name them; # or ! starts a comment.
+
+What the positions are is said by --as d, q, two-theta or hkl, by the study, or by the header; it is
+never guessed. two-theta needs --wavelength in Å. Q is 2π/d in Å⁻¹.
+
+A peak is matched within 3 standard uncertainties of a line, or within --tolerance, which is in the
+unit of the positions.`,
+  },
+  json: {
+    title: "The JSON of --json",
+    text: `One object: kvane (version), format (1), command, input, result, errors, warnings, assumed. The
+result is null exactly when there are errors. Exact numbers are strings ("1/2", "u"), measured ones
+numbers, complex ones [re, im]; what does not apply is null. A schema (JSON Schema 2020-12) of every
+answer: answerSchema(command) from @kvane/core/reports.`,
+  },
+  exit: {
+    title: "Exit statuses",
+    text: `    0  done
+    1  the job failed on valid input, or the output could not be written
+    2  the input or the usage is wrong
+   70  an internal fault: please report it
+  130  interrupted
+
+kvane explain CODE says what a code of an error message means.`,
+  },
+};

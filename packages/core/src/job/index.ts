@@ -1,0 +1,11 @@
+/**
+ * What is the answer to a request? `answer` takes plain records with strings as a user typed them and gives the one JSON
+ * envelope; the command line, and whatever else calls it, has no logic of its own. It touches nothing but
+ * `host.readText`. To see how the whole job goes, read `run-study.ts`.
+ */
+export { answer } from "./answer.js";
+export { type CommandEntry, commandTable, plannedCommands } from "./commands.js";
+export { exitStatusOf } from "./exit-status.js";
+export { argumentNames, type JobHost, type Request, type RequestField } from "./request.js";
+export { version } from "./version.js";
+export type { Work } from "./work.js";

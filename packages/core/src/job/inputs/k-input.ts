@@ -1,0 +1,71 @@
+import { fail, nowhere } from "../../errors/index.js";
+import {
+  formatWaveVector,
+  numericWaveVector,
+  parseWaveVector,
+  placeWaveVector,
+  type WaveVector,
+  type WrittenWaveVector,
+} from "../../kvectors/index.js";
+import type { SpaceGroup } from "../../spacegroups/index.js";
+import { remember, type Work } from "../work.js";
+import { type Given, optionOf, readingGiven, studyText } from "./given.js";
+
+/** A wave vector as it was written, with where. */
+export interface GivenK {
+  readonly given: Given;
+  readonly written: WrittenWaveVector;
+}
+
+/** The wave vectors of the option or of the study; empty when there is none. */
+export function writtenKs({ request, study }: Work): GivenK[] {
+  const option = optionOf(request, "k");
+  const texts = option
+    ? [option]
+    : study === null
+      ? []
+      : (study.k ?? []).map((text, index) => studyText(study, `k[${index}]`, text));
+  return texts.map((given) => ({ given, written: readingGiven(given, () => parseWaveVector(given.text)) }));
+}
+
+/** The one wave vector of a command that needs one; of several in a study the first, and that is said. */
+export function writtenK(work: Work): GivenK {
+  const [first, ...others] = writtenKs(work);
+  if (first === undefined)
+    fail("missing-argument", "no wave vector was given", {
+      where: work.study === null ? { argument: "--k" } : { file: work.study.file, path: "k", argument: "--k" },
+      expected: "three components such as --k 0,1/2,0",
+      found: "nothing",
+      remedy: "give --k",
+    });
+  if (others.length > 0)
+    remember(
+      work,
+      [{ what: "wave vector", value: first.given.text, because: `it is the first of ${others.length + 1} in the study` }],
+      [],
+    );
+  return first;
+}
+
+/** What the written wave vector stands for in this group; where it moved is remembered. */
+export function placedK(work: Work, group: SpaceGroup, { given, written }: GivenK): WaveVector {
+  const { k, assumed, warnings } = readingGiven(given, () => placeWaveVector(group, written));
+  remember(
+    work,
+    assumed,
+    warnings.map((one) => ({ ...one, where: { ...nowhere, ...given.where } })),
+  );
+  return k;
+}
+
+/** The same for a command that needs numbers: throws `k-needs-values` while a letter is open. */
+export function numericK(work: Work, group: SpaceGroup, written: GivenK): WaveVector {
+  const k = placedK(work, group, written);
+  if (numericWaveVector(k) !== null) return k;
+  return fail("k-needs-values", `positions need a number for every letter of ${formatWaveVector(k)}`, {
+    where: written.given.where,
+    expected: "fractions or decimals, such as 0,0.472,0",
+    found: written.given.text,
+    remedy: "give numbers in place of the letters",
+  });
+}

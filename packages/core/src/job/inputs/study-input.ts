@@ -1,0 +1,28 @@
+import { fail } from "../../errors/index.js";
+import { parseStudy, type Study } from "../../files/index.js";
+import type { JobHost } from "../request.js";
+import { readNamed } from "./read-file.js";
+
+/** The study at `path`, read and checked for its form; `-` is standard input. */
+export async function studyFrom(path: string, host: JobHost): Promise<Study> {
+  if (/\.cif$/i.test(path))
+    fail("not-built", "CIF files are not read by this version", {
+      where: { file: path, argument: "STUDY" },
+      expected: "a study file, .yaml or .yml",
+      found: path,
+      remedy: "write cell, group and sites into a study; `kvane help study` shows how",
+    });
+  const text = await readNamed(host, path, { file: path, argument: "STUDY" });
+  return parseStudy(text, path);
+}
+
+/** Throws `missing-argument` where a command can do nothing without a study. */
+export function needStudy(study: Study | null): Study {
+  if (study !== null) return study;
+  return fail("missing-argument", "no study was given", {
+    where: { argument: "STUDY" },
+    expected: "a study file such as study.yaml, or --example",
+    found: "nothing",
+    remedy: "name a study file, or take --example; `kvane help study` shows what is in one",
+  });
+}

@@ -1,0 +1,85 @@
+import { numericWaveVector, waveVectorToJson, type WaveVector } from "../kvectors/index.js";
+import { smallIrreps } from "../irreps/index.js";
+import { siteModes } from "../modes/index.js";
+import {
+  type BranchRecord,
+  cellRecord,
+  groupRecord,
+  irrepsRecord,
+  modesRecord,
+  peaksRecord,
+  resultFileNames,
+  type RunRecord,
+} from "../reports/index.js";
+import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
+import { breathe } from "../algorithms/index.js";
+import { numberOption } from "./inputs/number-input.js";
+import { coincidencesOf } from "./study/coincidences.js";
+import { type FoundK, findK } from "./study/find-k.js";
+import { nextSteps } from "./study/next-steps.js";
+import { readStudy, satelliteLimit, type StudyInputs } from "./study/read-study.js";
+import { satellitesOf } from "./study/satellites-of.js";
+import { starOf } from "./study/star-of.js";
+import type { Work } from "./work.js";
+
+/** How many tied candidates are followed unless the user says otherwise. */
+const usualBranches = 3;
+
+/**
+ * The whole job: read study → k from the peaks (or as given) → for each k that the data allow: little group → irreps →
+ * modes → satellites → what to do next. Configurations and weights are of later versions, null here.
+ */
+export async function runStudy(work: Work): Promise<RunRecord> {
+  const bound = numberOption(work.request, "branches", { from: 1, whole: true }) ?? usualBranches;
+  const inputs = await readStudy(work);
+  const found = await findK(work, inputs, bound);
+  const branches: BranchRecord[] = [];
+  for (const one of found.followed) {
+    work.host.progress?.(branches.length, found.followed.length, "symmetry and modes");
+    await breathe(work.host);
+    branches.push(followBranch(inputs, one));
+  }
+  const { search, notFollowed } = found;
+  const { peaks } = inputs;
+  const record = {
+    title: inputs.title,
+    group: groupRecord(inputs.group),
+    cell: inputs.cell && cellRecord(inputs.cell),
+    peaks: peaks && peaksRecord(peaks.list, peaks.file),
+    coincidences: coincidencesOf(inputs),
+    search,
+    branches,
+    notFollowed,
+    next: nextSteps(inputs, found, branches),
+  };
+  return { ...record, files: work.request.files === true ? resultFileNames(record) : [] };
+}
+
+/** All that follows from one k. */
+function followBranch(inputs: StudyInputs, { k, candidate }: FoundK): BranchRecord {
+  const { group, cell, orbits } = inputs;
+  return {
+    k: waveVectorToJson(k),
+    candidate,
+    star: starOf(group, k),
+    ...representationsOf(group, k, orbits),
+    configurations: null,
+    satellites: satelliteList(inputs, cell, k),
+    weigh: null,
+  };
+}
+
+function representationsOf(group: SpaceGroup, k: WaveVector, orbits: readonly SiteOrbit[]) {
+  const irreps = smallIrreps(group, k);
+  const sites = orbits.map((orbit) => siteModes(group, irreps, orbit));
+  return { irreps: irrepsRecord(group, irreps), modes: modesRecord(group, irreps, sites, { axial: true }) };
+}
+
+/** Positions need a cell and a number for every letter. */
+function satelliteList(inputs: StudyInputs, cell: Cell | null, k: WaveVector) {
+  if (cell === null || numericWaveVector(k) === null) return null;
+  return satellitesOf(inputs.group, cell, k, {
+    qMax: satelliteLimit(inputs),
+    wavelengthAngstrom: inputs.wavelengthAngstrom,
+  });
+}

@@ -1,0 +1,71 @@
+import { fail } from "../../errors/index.js";
+import type { SearchOptions } from "../../search/index.js";
+import { type Cell, lengthInMetric, reciprocalMetric, type SiteOrbit, type SpaceGroup } from "../../spacegroups/index.js";
+import { cellFor, cellIfGiven, writtenCell } from "../inputs/cell-input.js";
+import { groupOf } from "../inputs/group-input.js";
+import { placedK, writtenKs } from "../inputs/k-input.js";
+import { peaksIfGiven, wavelengthOf } from "../inputs/peaks-input.js";
+import { searchOptionsOf } from "../inputs/search-input.js";
+import { orbitsOf, writtenSites } from "../inputs/site-input.js";
+import { needStudy } from "../inputs/study-input.js";
+import type { WaveVector } from "../../kvectors/index.js";
+import { remember, together, type Work } from "../work.js";
+import type { ReadPeaks } from "./search-of.js";
+
+/** A study with everything understood, and held against each other. */
+export interface StudyInputs {
+  readonly title: string | null;
+  readonly group: SpaceGroup;
+  /** Null only where k is given and no positions are asked for. */
+  readonly cell: Cell | null;
+  readonly orbits: readonly SiteOrbit[];
+  /** The wave vectors given; empty when k is to be searched. */
+  readonly given: readonly WaveVector[];
+  readonly peaks: ReadPeaks | null;
+  readonly wavelengthAngstrom: number | null;
+  readonly options: SearchOptions;
+}
+
+/** Reads all that the whole job needs; throws the problems of independent parts at once. */
+export async function readStudy(work: Work): Promise<StudyInputs> {
+  const study = needStudy(work.study);
+  remember(work, [], study.warnings);
+  const hasPeaks = study.peaks !== null || typeof work.request.peaks === "string";
+  const { group, written, givenCell, sites, peaks, wavelengthAngstrom, options } = await together({
+    group: () => groupOf(work),
+    written: () => writtenKs(work),
+    givenCell: () => (hasPeaks ? writtenCell(work) : cellIfGiven(work)),
+    sites: () => writtenSites(work),
+    wavelengthAngstrom: () => wavelengthOf(work),
+    peaks: () => peaksIfGiven(work),
+    options: () => searchOptionsOf(work),
+  });
+  if (peaks === null && written.length === 0)
+    fail("missing-key", "the study has neither peaks nor a wave vector", {
+      where: { file: study.file, path: "peaks" },
+      expected: "`peaks: {file: …, as: …}`, or `k: [[0, 1/2, 0]]`",
+      found: "neither",
+      remedy: "add the peak list, or give --peaks or --k",
+    });
+  const { given, cell, orbits } = await together({
+    given: () => written.map((one) => placedK(work, group, one)),
+    cell: () => givenCell && cellFor(group, givenCell),
+    orbits: () => orbitsOf(work, group, sites, givenCell?.cell ?? null),
+  });
+  return { title: study.title, group, cell, orbits, given, peaks, wavelengthAngstrom, options };
+}
+
+/** Å⁻¹. Where nothing says how far the data go. */
+const usualLimit = 3;
+
+/** How far satellites are listed: a little beyond the last peak, else to the usual limit; never beyond 2θ = 180°. */
+export function satelliteLimit({ cell, peaks, options, wavelengthAngstrom }: StudyInputs): number {
+  const last = Math.max(0, ...(peaks?.list.peaks ?? []).map((peak) => peak.q ?? lengthOf(cell, peak.hkl)));
+  const reach = wavelengthAngstrom === null ? Number.POSITIVE_INFINITY : (4 * Math.PI) / wavelengthAngstrom;
+  return Math.min(options.qMax ?? (last > 0 ? 1.1 * last : usualLimit), reach);
+}
+
+/** Å⁻¹, of fractional indices. */
+function lengthOf(cell: Cell | null, hkl: readonly number[] | null): number {
+  return cell === null || hkl === null ? 0 : 2 * Math.PI * lengthInMetric(reciprocalMetric(cell), hkl);
+}

@@ -1,0 +1,49 @@
+import type { WaveVector } from "../../kvectors/index.js";
+import { peaksRecord, type SearchRecord, searchRecord } from "../../reports/index.js";
+import { type Candidate, indexPeaks, locate, type PeakList, type SearchOptions, setAsidePeaks } from "../../search/index.js";
+import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
+import { remember, type Work } from "../work.js";
+
+/** A peak list and the name of the file that it came from. */
+export interface ReadPeaks {
+  readonly list: PeakList;
+  readonly file: string;
+}
+
+export interface SearchInput {
+  readonly group: SpaceGroup;
+  readonly cell: Cell;
+  readonly peaks: ReadPeaks;
+  readonly options: SearchOptions;
+}
+
+/** Candidates as the search gives them, and the record for the answer, in one order. */
+export interface Found {
+  readonly candidates: readonly Candidate[];
+  readonly record: SearchRecord;
+}
+
+/** The peaks as satellites of each of the given k, in the order given; nothing is searched. */
+export function indexedBy(work: Work, input: SearchInput, ks: readonly WaveVector[]): Found {
+  const { group, cell, peaks, options } = input;
+  const candidates = ks.map((k) => indexPeaks(group, cell, k, peaks.list, options));
+  for (const { warnings } of candidates) remember(work, [], warnings);
+  const record = searchRecord(group, cell, peaksRecord(peaks.list, peaks.file), {
+    candidates,
+    certificate: null,
+    setAside: setAsidePeaks(group, cell, peaks.list, options),
+    unmatched: candidates[0]?.unmatched ?? [],
+    dropped: 0,
+  });
+  return { candidates, record };
+}
+
+/** The search over the kinds of k. */
+export async function searchedFor(work: Work, input: SearchInput): Promise<Found> {
+  const { group, cell, peaks, options } = input;
+  const found = await locate(group, cell, peaks.list, options, work.host);
+  remember(work, [], found.warnings);
+  for (const { warnings } of found.candidates.slice(0, 1)) remember(work, [], warnings);
+  const record = searchRecord(group, cell, peaksRecord(peaks.list, peaks.file), found);
+  return { candidates: found.candidates, record };
+}

@@ -1,0 +1,29 @@
+/**
+ * Which k is it, and what leaves it alone? Exact wave vectors as rows in the reciprocal basis of the setting, modulo
+ * L* (docs/conventions.md, Wave vectors): equivalence, little group, star, the manifold a k lies on, special points.
+ * Sources: Bradley & Cracknell, The Mathematical Theory of Symmetry in Solids (1972), chapter 3; Wintgen, Math. Ann.
+ * 118 (1941) 195.
+ */
+export type { Assumption } from "../errors/index.js";
+export { atlas, kindOf } from "./atlas.js";
+export { type CanonicalPlacement, canonicalPlacement } from "./canonical.js";
+export { firstZoneRepresentative } from "./first-zone.js";
+export { equivalentWaveVectors, isHalfLattice, littleGroup, star } from "./little-group.js";
+export { manifold } from "./manifold.js";
+export { type PlacedWaveVector, placeWaveVector } from "./placing.js";
+export { plainestRepresentative } from "./plainest.js";
+export { specialPoints } from "./special-points.js";
+export type { KindOfK, LittleGroup, Manifold, MinusK, SpecialPoint, Star, WaveVector } from "./types.js";
+export {
+  exactComponents,
+  exactWaveVector,
+  formatWaveVector,
+  isExactWaveVector,
+  isReciprocalLatticeVector,
+  numericWaveVector,
+  parameterValues,
+  usedParameters,
+  type WaveVectorJson,
+  waveVectorToJson,
+} from "./wave-vector.js";
+export { parseWaveVector, type WrittenWaveVector } from "./written.js";

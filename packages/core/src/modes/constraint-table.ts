@@ -1,0 +1,120 @@
+import type { WaveVector } from "../kvectors/index.js";
+import {
+  type Cyclotomic,
+  conjugateCyclotomic,
+  cyclotomicNumbers,
+  cyclotomicZero,
+  equalForms,
+  formatCyclotomic,
+  isCyclotomicZero,
+  multiplyCyclotomic,
+  negateCyclotomic,
+  type Phase,
+  rational,
+  type Rational,
+  reducedEchelon,
+  reduceOrder,
+  reducePhase,
+  rootOfUnity,
+  zeroForm,
+} from "../numbers/index.js";
+import { phaseText } from "./phase-text.js";
+import type { Mode } from "./types.js";
+
+/** One free amplitude and what it puts on each atom. */
+interface Term {
+  readonly letter: string;
+  readonly moments: readonly { readonly phase: Phase; readonly vector: readonly Cyclotomic[] }[];
+}
+
+/**
+ * The general arrangement that an irrep allows, one text per atom: `(u, -v, w)`, `(u, v, w)·e^{2πi·ky/2}`. Letters are
+ * free amplitudes, u v w first; for irreps of dimension above 1 a digit gives the partner (`u1`, `u2`). They are
+ * complex, except with `real`: there 2k ∈ L*, the Fourier components are real, and the table is that of the physically
+ * irreducible representation, made with the modes of the conjugate irrep where the irrep is complex.
+ */
+export function constraintTable(k: WaveVector, modes: readonly Mode[], real: { readonly conjugate: readonly Mode[] } | null): string[] {
+  const terms = real === null ? complexTerms(modes) : realTerms([...modes, ...real.conjugate]);
+  const atoms = modes[0]?.moments.length ?? 0;
+  return Array.from({ length: atoms }, (_, atom) => atomText(k, terms, atom));
+}
+
+const letters = ["u", "v", "w", "p", "q", "r", "s", "t", "f", "g", "h", "l", "m", "n"];
+
+function letterOf(index: number): string {
+  return letters[index] ?? `c${index - letters.length + 1}_`;
+}
+
+function complexTerms(modes: readonly Mode[]): Term[] {
+  const many = modes.some((mode) => mode.partner > 1);
+  return modes.map((mode) => ({ letter: `${letterOf(mode.copy - 1)}${many ? mode.partner : ""}`, moments: mode.moments }));
+}
+
+/**
+ * The span of an irrep's modes together with their conjugates is closed under conjugation, so its reduced echelon form
+ * is real: one real letter per row.
+ */
+function realTerms(modes: readonly Mode[]): Term[] {
+  const rows = modes.flatMap((mode) => {
+    const row = mode.moments.flatMap(({ phase, vector }) => vector.map((entry) => multiplyCyclotomic(rootOfUnity(phase.constant), entry)));
+    return [row, row.map(conjugateCyclotomic)];
+  });
+  return reducedEchelon(rows, cyclotomicNumbers).rows.map((row, index) => ({
+    letter: letterOf(index),
+    moments: Array.from({ length: row.length / 3 }, (_, atom) => ({
+      phase: zeroForm,
+      vector: row.slice(3 * atom, 3 * atom + 3).map(reduceOrder),
+    })),
+  }));
+}
+
+function atomText(k: WaveVector, terms: readonly Term[], atom: number): string {
+  const present = terms.filter((term) => term.moments[atom]?.vector.some((entry) => !isCyclotomicZero(entry)));
+  if (present.length === 0) return "(0, 0, 0)";
+  const phases = present.map((term) => term.moments[atom]?.phase as Phase);
+  const common = phases.every((phase) => equalForms(phase, phases[0] as Phase)) ? outer(phases[0] as Phase) : null;
+  const vector = [0, 1, 2].map((axis) =>
+    sumText(
+      present.flatMap((term, index) => {
+        const entry = term.moments[atom]?.vector[axis] ?? cyclotomicZero;
+        if (isCyclotomicZero(entry)) return [];
+        const phase = common === null ? outer(phases[index] as Phase) : { negative: common.negative, rest: zeroForm };
+        return [coefficientText(k, phase.negative ? negateCyclotomic(entry) : entry, phase.rest, term.letter)];
+      }),
+    ),
+  );
+  const text = `(${vector.join(", ")})`;
+  const factor = common === null ? "1" : phaseText(k, common.rest);
+  return factor === "1" ? text : `${text}·${factor}`;
+}
+
+const half: Rational = [1, 2];
+
+/** Takes a factor −1 out of a phase whose constant is half a turn, so that it can go into the components. */
+function outer(phase: Phase): { negative: boolean; rest: Phase } {
+  const reduced = reducePhase(phase);
+  const negative = reduced.constant[0] * half[1] >= reduced.constant[1] * half[0];
+  if (!negative) return { negative, rest: reduced };
+  const [numerator, denominator] = reduced.constant;
+  return { negative, rest: { ...reduced, constant: rational(2 * numerator - denominator, 2 * denominator) } };
+}
+
+/** `u`, `-u`, `2u`, `-u/2`, `i·u`, `e^{2πi/3}·u`. */
+function coefficientText(k: WaveVector, factor: Cyclotomic, phase: Phase, letter: string): string {
+  const number = formatCyclotomic(factor);
+  const plain = /^(-?)(\d*)(?:\/(\d+))?$/.exec(number);
+  const wave = phaseText(k, phase);
+  const tail = wave === "1" ? "" : `·${wave}`;
+  if (plain) {
+    const size = plain[2] === "1" ? "" : plain[2];
+    return `${plain[1]}${size}${letter}${plain[3] ? `/${plain[3]}` : ""}${tail}`;
+  }
+  const bare = number.replaceAll(/\{[^}]*\}/g, "");
+  const sum = /[+-]/.test(bare.slice(1)) && !bare.startsWith("(");
+  return `${sum ? `(${number})` : number}·${letter}${tail}`;
+}
+
+function sumText(parts: readonly string[]): string {
+  if (parts.length === 0) return "0";
+  return parts.map((part, index) => (index > 0 && !part.startsWith("-") ? `+${part}` : part)).join("");
+}

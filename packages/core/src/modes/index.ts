@@ -1,0 +1,8 @@
+/**
+ * Which arrangements of moments does each irrep allow on a site? The magnetic representation
+ * `Γ(g)_{j'j} = e^{+2πi k·a} det(R) R`, its split under the little group, exact mode vectors (copies × partners) and the
+ * general arrangement in symbols, in lattice components and with phases per lattice translation (docs/conventions.md,
+ * Moments and phases; Modes, amplitudes, real moments). Source: Bertaut, Acta Cryst. A24 (1968) 217.
+ */
+export { siteModes } from "./site-modes.js";
+export type { IrrepModes, Mode, ModeMoment, SiteModes } from "./types.js";

@@ -1,0 +1,39 @@
+/**
+ * Every tolerance that decides something: name, value, unit, reason. Whatever can be decided exactly is not here.
+ */
+
+/** Å. Atoms closer than this cannot be two; a coordinate this near a special position is taken to be on it. */
+export const siteSnapAngstrom = 0.02;
+
+/** Fractional units. The same test where no cell is known: 0.0005 of a 10 Å axis is 0.005 Å, and 0.3333 still means 1/3. */
+export const siteSnapFraction = 0.0005;
+
+/** Reciprocal lattice units per component. A measured k this near a simpler kind is put onto it, and it is said. */
+export const measuredKSnap = 1e-4;
+
+/** Å⁻¹. Two positions this near are one computed line: far below any instrument, far above rounding. */
+export const sameLineInverseAngstrom = 1e-7;
+
+/** Relative. A cell may differ from the metric that the group needs by this much: printed lengths have four digits. */
+export const cellMetricRelative = 2e-3;
+
+/** Standard uncertainties. A peak within this of a line is listed as matched. */
+export const matchStandardUncertainties = 3;
+
+/** Share of Q. The uncertainty of a position where the file gives none: a usual ΔQ/Q of peak positions read by hand. */
+export const defaultRelativeUncertainty = 0.002;
+
+/** Reciprocal lattice units. The uncertainty of h, k, l of a single-crystal satellite where the file gives none. */
+export const defaultIndexUncertainty = 0.005;
+
+/** Reciprocal lattice units per component. A measured k that would be special if it were this near is warned about. */
+export const measuredKWarning = 1e-3;
+
+/** Å⁻¹. Half-width within which a nuclear line is said to overlap a satellite: half of a usual powder line width. */
+export const overlapInverseAngstrom = 0.01;
+
+/** Standard deviations of χ². A list whose χ² lies this far above its degrees of freedom is warned about. */
+export const chiSquaredStandardDeviations = 3;
+
+/** Standard uncertainties. A simple fraction this near a measured component of k is offered. */
+export const nearFractionStandardUncertainties = 2;

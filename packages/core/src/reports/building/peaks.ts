@@ -1,0 +1,159 @@
+import { formatRational, roundNumber } from "../../numbers/index.js";
+import { type WaveVector, waveVectorToJson } from "../../kvectors/index.js";
+import type { Overlap, SatelliteReflection } from "../../reflections/index.js";
+import type { Candidate, Certificate, IndexedLine, PeakList, SetAside } from "../../search/index.js";
+import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
+import type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "../records/satellites.js";
+import type { AssignmentRecord, CandidateRecord, LineRecord, PeaksRecord, SearchRecord } from "../records/search.js";
+import { cellRecord, groupRecord } from "./names.js";
+
+export function satellitesRecord(
+  group: SpaceGroup,
+  cell: Cell,
+  k: WaveVector,
+  found: {
+    readonly wavelengthAngstrom: number | null;
+    readonly qMax: number;
+    readonly overlapWithin: number;
+    readonly reflections: readonly SatelliteReflection[];
+  },
+): SatellitesRecord {
+  return {
+    group: groupRecord(group),
+    cell: cellRecord(cell),
+    k: waveVectorToJson(k),
+    wavelengthAngstrom: found.wavelengthAngstrom,
+    qMax: roundNumber(found.qMax),
+    overlapWithin: roundNumber(found.overlapWithin),
+    reflections: found.reflections.map(satelliteRecord),
+  };
+}
+
+function satelliteRecord(line: SatelliteReflection): SatelliteRecord {
+  return {
+    h: line.h.map((entry) => roundNumber(entry)),
+    sign: line.sign,
+    arm: line.arm,
+    q: roundNumber(line.q),
+    d: roundNumber(line.d),
+    twoThetaDeg: rounded(line.twoThetaDeg),
+    multiplicity: line.multiplicity,
+    multiplicityAllArms: line.multiplicityAllArms,
+    overlaps: line.overlaps.map(overlapRecord),
+    extinctFor: null,
+    intensity: null,
+  };
+}
+
+export function overlapRecord(one: Overlap): OverlapRecord {
+  return {
+    with: one.with,
+    h: one.h.map((entry) => roundNumber(entry)),
+    q: roundNumber(one.q),
+    separation: roundNumber(one.separation),
+    allowed: one.allowed,
+  };
+}
+
+/** The peak list as it was read; `file` as the user named it. */
+export function peaksRecord(peaks: PeakList, file: string | null): PeaksRecord {
+  return {
+    file,
+    kind: peaks.kind,
+    wavelengthAngstrom: peaks.wavelengthAngstrom,
+    uncertaintySource: peaks.uncertaintySource,
+    list: peaks.peaks.map((peak) => ({
+      index: peak.index,
+      position: rounded(peak.position),
+      hkl: peak.hkl && peak.hkl.map((entry) => roundNumber(entry)),
+      q: rounded(peak.q),
+      uncertainty: roundNumber(peak.uncertainty ?? peak.hklUncertainty ?? 0),
+      intensity: rounded(peak.intensity),
+    })),
+  };
+}
+
+export function searchRecord(
+  group: SpaceGroup,
+  cell: Cell,
+  peaks: PeaksRecord,
+  found: {
+    readonly candidates: readonly Candidate[];
+    readonly certificate: Certificate | null;
+    readonly setAside: readonly SetAside[];
+    readonly unmatched: readonly number[];
+    readonly dropped: number;
+  },
+): SearchRecord {
+  return {
+    group: groupRecord(group),
+    cell: cellRecord(cell),
+    peaks,
+    candidates: found.candidates.map(candidateRecord),
+    certificate: found.certificate && { ...found.certificate, smallestBox: roundNumber(found.certificate.smallestBox) },
+    setAside: found.setAside.map(({ peak, because }) => ({ peak, because })),
+    unmatched: [...found.unmatched],
+    dropped: found.dropped,
+  };
+}
+
+function candidateRecord(candidate: Candidate): CandidateRecord {
+  const { evidence, residuals, refinement } = candidate;
+  const { dimensions, kinds, tuning } = evidence.charges;
+  return {
+    k: waveVectorToJson(candidate.k),
+    manifold: waveVectorToJson(candidate.manifold.form),
+    dimension: candidate.manifold.dimension,
+    arms: candidate.arms,
+    onNuclearLines: candidate.onNuclearLines,
+    evidence: {
+      value: roundNumber(evidence.value),
+      reading: evidence.reading,
+      charges: { dimensions: roundNumber(dimensions), kinds: roundNumber(kinds), tuning: roundNumber(tuning) },
+    },
+    matched: candidate.matched,
+    total: candidate.total,
+    deWolff: rounded(candidate.deWolff),
+    smithSnyder: rounded(candidate.smithSnyder),
+    nearFractions: candidate.nearFractions.map(({ parameter, fraction, deviation }) => ({
+      letter: parameter,
+      fraction: formatRational(fraction),
+      deviation: roundNumber(deviation),
+    })),
+    tiedWith: [...candidate.tiedWith],
+    assignments: candidate.assignments.map((one): AssignmentRecord => ({
+      peak: one.peak,
+      ...lineRecord(one),
+      q: roundNumber(one.q),
+      residualHkl: one.residualHkl && one.residualHkl.map((entry) => roundNumber(entry)),
+      alternatives: one.alternatives.map(lineRecord),
+    })),
+    unmatched: [...candidate.unmatched],
+    residuals: {
+      rootMeanSquare: roundNumber(residuals.rootMeanSquare),
+      largest: roundNumber(residuals.largest),
+      chiSquared: roundNumber(residuals.chiSquared),
+      degreesOfFreedom: residuals.degreesOfFreedom,
+      reducedChiSquared: rounded(residuals.reducedChiSquared),
+    },
+    refinement: refinement && {
+      from: waveVectorToJson(refinement.from),
+      determined: refinement.determined,
+      converged: refinement.converged,
+      rescaledSu: refinement.rescaledUncertainties && refinement.rescaledUncertainties.map((su) => roundNumber(su)),
+    },
+  };
+}
+
+function lineRecord(line: IndexedLine): LineRecord {
+  return {
+    h: line.h.map((entry) => roundNumber(entry)),
+    sign: line.sign,
+    arm: line.arm,
+    residual: roundNumber(line.residual),
+  };
+}
+
+function rounded(value: number | null): number | null {
+  return value === null ? null : roundNumber(value);
+}

@@ -1,0 +1,48 @@
+/**
+ * How is a result said? Result records in the shapes of the JSON contract, their JSON Schemas, JSON text, the text
+ * reports of at most 100 columns, CSV tables and the files of a result folder. Text and tables are made from the
+ * records alone, so that nothing is printed that the JSON does not hold. Exact numbers are texts, measured ones numbers
+ * that went through the one formatter, complex ones `[re, im]`. Conventions: docs/conventions.md.
+ */
+export { checkedSiteRecord } from "./building/check.js";
+export { modesRecord } from "./building/modes.js";
+export { cellRecord, groupRecord, littleGroupRecord } from "./building/names.js";
+export { overlapRecord, peaksRecord, satellitesRecord, searchRecord } from "./building/peaks.js";
+export { irrepsRecord, opsRecord, starRecord } from "./building/symmetry.js";
+export { commandsWithTable, reportCsv } from "./csv/report-csv.js";
+export { jsonText } from "./json-text.js";
+export type { CheckedSiteRecord, CheckRecord } from "./records/check.js";
+export type {
+  AssumedRecord,
+  CellRecord,
+  ComplexRecord,
+  Envelope,
+  GroupRecord,
+  InputRecord,
+  KRecord,
+  LittleGroupRecord,
+} from "./records/common.js";
+export type { ExactIrrepRecord, IrrepRecord, IrrepsRecord } from "./records/irreps.js";
+export type { IrrepModesRecord, ModeRecord, ModesRecord, SiteModesRecord } from "./records/modes.js";
+export type { OpsRecord } from "./records/ops.js";
+export type { BranchRecord, RunRecord } from "./records/run.js";
+export type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "./records/satellites.js";
+export type {
+  AssignmentRecord,
+  CandidateRecord,
+  CertificateRecord,
+  EvidenceRecord,
+  LineRecord,
+  NearFractionRecord,
+  PeakRecord,
+  PeaksRecord,
+  RefinementRecord,
+  ResidualsRecord,
+  SearchRecord,
+} from "./records/search.js";
+export type { ExplainRecord, HelpRecord } from "./records/simple.js";
+export type { StarRecord } from "./records/star.js";
+export { type ResultFile, resultFileNames, resultFolder } from "./result-folder.js";
+export type { JsonSchema } from "./schemas/building.js";
+export { answerSchema, describedCommands } from "./schemas/envelope.js";
+export { reportText } from "./text/report-text.js";

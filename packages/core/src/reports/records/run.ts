@@ -1,0 +1,36 @@
+import type { CellRecord, GroupRecord, KRecord } from "./common.js";
+import type { IrrepsRecord } from "./irreps.js";
+import type { ModesRecord } from "./modes.js";
+import type { OverlapRecord, SatellitesRecord } from "./satellites.js";
+import type { PeaksRecord, SearchRecord } from "./search.js";
+import type { StarRecord } from "./star.js";
+
+/** All that follows from one k. What this version does not compute is null. */
+export interface BranchRecord {
+  readonly k: KRecord;
+  /** Index of its candidate in `search`; null when there was no search. */
+  readonly candidate: number | null;
+  readonly star: StarRecord;
+  readonly irreps: IrrepsRecord;
+  readonly modes: ModesRecord;
+  readonly configurations: null;
+  readonly satellites: SatellitesRecord | null;
+  readonly weigh: null;
+}
+
+/** Result of `kvane run`. */
+export interface RunRecord {
+  readonly title: string | null;
+  readonly group: GroupRecord;
+  readonly cell: CellRecord | null;
+  readonly peaks: PeaksRecord | null;
+  /** Peaks that lie on a nuclear line or on the image of one through half the wavelength: flagged, not removed. */
+  readonly coincidences: readonly { readonly peak: number; readonly overlaps: readonly OverlapRecord[] }[];
+  readonly search: SearchRecord | null;
+  readonly branches: readonly BranchRecord[];
+  /** Tied candidates that were not followed because the number of branches is bounded. */
+  readonly notFollowed: readonly number[];
+  readonly next: readonly string[];
+  /** Names of the files of the result folder; empty when none was asked for. */
+  readonly files: readonly string[];
+}

@@ -1,0 +1,125 @@
+import type { CellRecord, GroupRecord, KRecord } from "./common.js";
+
+/** One row of the peak list as it was read. */
+export interface PeakRecord {
+  readonly index: number;
+  /** The position as given, in the list's own kind; null for a single-crystal reflection. */
+  readonly position: number | null;
+  readonly hkl: readonly number[] | null;
+  /** Å⁻¹; null in a list of h k l. */
+  readonly q: number | null;
+  /** Standard uncertainty: Å⁻¹, or reciprocal lattice units for each index of h k l. */
+  readonly uncertainty: number;
+  readonly intensity: number | null;
+}
+
+/** The peak list of a search. */
+export interface PeaksRecord {
+  /** Null when it did not come from a file. */
+  readonly file: string | null;
+  readonly kind: "d" | "q" | "two-theta" | "hkl";
+  readonly wavelengthAngstrom: number | null;
+  readonly uncertaintySource: string;
+  readonly list: readonly PeakRecord[];
+}
+
+/** A satellite by its H, sign and arm, and observed less computed in Å⁻¹ (a length for h k l). */
+export interface LineRecord {
+  readonly h: readonly number[];
+  readonly sign: 1 | -1 | 0;
+  readonly arm: number;
+  readonly residual: number;
+}
+
+/** What a peak was taken for. */
+export interface AssignmentRecord extends LineRecord {
+  readonly peak: number;
+  /** Computed position, Å⁻¹. */
+  readonly q: number;
+  /** Observed less computed, index by index; null for a powder. */
+  readonly residualHkl: readonly number[] | null;
+  /** Other lines within the tolerance, nearest first. */
+  readonly alternatives: readonly LineRecord[];
+}
+
+/** A fraction within 2 standard uncertainties of a free parameter; `deviation` in standard uncertainties. */
+export interface NearFractionRecord {
+  readonly letter: string;
+  readonly fraction: string;
+  readonly deviation: number;
+}
+
+/** How the matched peaks scatter about their lines: Å⁻¹, or reciprocal lattice units for h k l. */
+export interface ResidualsRecord {
+  readonly rootMeanSquare: number;
+  readonly largest: number;
+  readonly chiSquared: number;
+  readonly degreesOfFreedom: number;
+  readonly reducedChiSquared: number | null;
+}
+
+/** What least squares did with the free parameters of k. */
+export interface RefinementRecord {
+  readonly from: KRecord;
+  /** False when the matched peaks do not fix some parameter: then nothing was moved. */
+  readonly determined: boolean;
+  readonly converged: boolean;
+  /** Uncertainties enlarged by √(χ² per degree of freedom), for an understated list; null when that is not above 1. */
+  readonly rescaledSu: readonly number[] | null;
+}
+
+/** Natural log-odds against chance, how to read them, and what was charged for having searched. */
+export interface EvidenceRecord {
+  readonly value: number;
+  readonly reading: "found" | "weak" | "not informative";
+  readonly charges: { readonly dimensions: number; readonly kinds: number; readonly tuning: number };
+}
+
+export interface CandidateRecord {
+  readonly k: KRecord;
+  readonly manifold: KRecord;
+  readonly dimension: number;
+  readonly arms: number;
+  /** k = 0: peaks on nuclear lines fit it whether they are magnetic or not. */
+  readonly onNuclearLines: boolean;
+  readonly evidence: EvidenceRecord;
+  readonly matched: number;
+  readonly total: number;
+  /** Figures of merit of de Wolff (1968) and of Smith & Snyder (1979); null where they do not apply. */
+  readonly deWolff: number | null;
+  readonly smithSnyder: number | null;
+  readonly nearFractions: readonly NearFractionRecord[];
+  /** Indices of candidates that these positions cannot tell from this one. */
+  readonly tiedWith: readonly number[];
+  readonly assignments: readonly AssignmentRecord[];
+  /** Peaks, by index, that no satellite of this k explains. */
+  readonly unmatched: readonly number[];
+  readonly residuals: ResidualsRecord;
+  readonly refinement: RefinementRecord | null;
+}
+
+/** What was searched and how far the answer is complete. */
+export interface CertificateRecord {
+  readonly minimumMatched: number;
+  readonly boxes: number;
+  readonly smallestBox: number;
+  readonly exhaustive: boolean;
+  readonly maxDimension: number;
+  readonly zeroShift: number;
+  readonly cellScale: number;
+}
+
+/** Result of `kvane index` and `kvane locate`. */
+export interface SearchRecord {
+  readonly group: GroupRecord;
+  readonly cell: CellRecord;
+  readonly peaks: PeaksRecord;
+  readonly candidates: readonly CandidateRecord[];
+  /** Null for `index`, which searches nothing. */
+  readonly certificate: CertificateRecord | null;
+  readonly setAside: readonly { readonly peak: number; readonly because: string }[];
+  /** Peaks that the first candidate does not explain. */
+  readonly unmatched: readonly number[];
+  /** How many k were tried and left out because they match too few peaks. */
+  readonly dropped: number;
+}

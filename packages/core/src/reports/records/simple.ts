@@ -1,0 +1,12 @@
+/** Result of `kvane explain`: one code, or all of them when none was named. */
+export interface ExplainRecord {
+  readonly codes: readonly { readonly code: string; readonly meaning: string; readonly exitStatus: number }[];
+}
+
+/** Result of `kvane help TOPIC`. */
+export interface HelpRecord {
+  readonly topic: string;
+  readonly title: string;
+  readonly text: string;
+  readonly topics: readonly string[];
+}

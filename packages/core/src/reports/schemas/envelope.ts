@@ -1,0 +1,56 @@
+import { type JsonSchema, list, nothing, nullable, shared, text } from "./building.js";
+import { commonDefinitions } from "./common.js";
+import { satellitesSchema, searchSchema } from "./peaks.js";
+import { checkSchema, explainSchema, helpSchema, runSchema } from "./study.js";
+import { irrepsSchema, modesSchema, opsSchema, starSchema } from "./symmetry.js";
+
+/** Schema of `result` by command; null for commands that are named but not built in this version. */
+const resultSchemas: { readonly [command: string]: JsonSchema } = {
+  run: runSchema,
+  check: checkSchema,
+  ops: opsSchema,
+  star: starSchema,
+  irreps: irrepsSchema,
+  modes: modesSchema,
+  satellites: satellitesSchema,
+  index: searchSchema,
+  locate: searchSchema,
+  explain: explainSchema,
+  help: helpSchema,
+};
+
+/** The commands whose answers have a schema. */
+export const describedCommands: readonly string[] = Object.keys(resultSchemas);
+
+/**
+ * The JSON Schema (draft 2020-12) of the whole answer to `command`: plain data, without references to other files.
+ * For a command that is not built the result can only be null.
+ */
+export function answerSchema(command: string): JsonSchema {
+  return {
+    $schema: "https://json-schema.org/draft/2020-12/schema",
+    $id: `urn:kvane:format-1:${command}`,
+    title: `answer to kvane ${command}`,
+    type: "object",
+    required: ["kvane", "format", "command", "input", "result", "errors", "warnings", "assumed"],
+    properties: {
+      kvane: text,
+      format: { const: 1 },
+      command: { const: command },
+      input: {
+        type: "object",
+        additionalProperties: { anyOf: [{ type: ["string", "number", "boolean", "null"] }, list(text)] },
+      },
+      result: nullable(resultSchemas[command] ?? nothing),
+      errors: list(shared("problem")),
+      warnings: list(shared("problem")),
+      assumed: list(shared("assumed")),
+    },
+    // A result and errors exclude each other.
+    if: { properties: { result: nothing } },
+    // biome-ignore lint/suspicious/noThenProperty: a keyword of JSON Schema
+    then: { properties: { errors: { minItems: 1 } } },
+    else: { properties: { errors: { maxItems: 0 } } },
+    $defs: commonDefinitions,
+  };
+}

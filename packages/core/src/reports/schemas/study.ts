@@ -1,0 +1,56 @@
+import { count, type JsonSchema, list, nothing, nullable, number, oneOf, record, shared, text, tuple } from "./building.js";
+import { overlapSchema, peaksSchema, satellitesSchema, searchSchema } from "./peaks.js";
+import { irrepsSchema, modesSchema, starSchema } from "./symmetry.js";
+
+export const checkSchema: JsonSchema = record({
+  kind: oneOf("study", "cif"),
+  blocks: nullable(list(text)),
+  title: nullable(text),
+  cell: nullable(shared("cell")),
+  group: nullable(shared("group")),
+  sites: list(
+    record({
+      label: text,
+      ion: nullable(text),
+      position: shared("exactPosition"),
+      multiplicity: count,
+      siteSymmetry: text,
+      freeCoordinates: tuple(3, text),
+      allowedMoment: tuple(3, text),
+      snapped: nullable(record({ from: shared("exactPosition"), distanceAngstrom: nullable(number) })),
+    }),
+  ),
+  k: list(shared("k")),
+  peaks: nullable(record({ file: text, kind: text, count })),
+  missing: list(text),
+});
+
+export const runSchema: JsonSchema = record({
+  title: nullable(text),
+  group: shared("group"),
+  cell: nullable(shared("cell")),
+  peaks: nullable(peaksSchema),
+  coincidences: list(record({ peak: count, overlaps: list(overlapSchema) })),
+  search: nullable(searchSchema),
+  branches: list(
+    record({
+      k: shared("k"),
+      candidate: nullable(count),
+      star: starSchema,
+      irreps: irrepsSchema,
+      modes: modesSchema,
+      configurations: nothing,
+      satellites: nullable(satellitesSchema),
+      weigh: nothing,
+    }),
+  ),
+  notFollowed: list(count),
+  next: list(text),
+  files: list(text),
+});
+
+export const explainSchema: JsonSchema = record({
+  codes: list(record({ code: text, meaning: text, exitStatus: count })),
+});
+
+export const helpSchema: JsonSchema = record({ topic: text, title: text, text, topics: list(text) });

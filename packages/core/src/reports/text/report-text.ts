@@ -1,0 +1,69 @@
+import type { CheckRecord } from "../records/check.js";
+import type { Envelope } from "../records/common.js";
+import type { IrrepsRecord } from "../records/irreps.js";
+import type { ModesRecord } from "../records/modes.js";
+import type { OpsRecord } from "../records/ops.js";
+import type { RunRecord } from "../records/run.js";
+import type { SatellitesRecord } from "../records/satellites.js";
+import type { SearchRecord } from "../records/search.js";
+import type { ExplainRecord, HelpRecord } from "../records/simple.js";
+import type { StarRecord } from "../records/star.js";
+import { checkText } from "./check-text.js";
+import { assumedLines, cautionLines, conventionLines, warningLines } from "./closing-text.js";
+import { irrepsText } from "./irreps-text.js";
+import { modesText } from "./modes-text.js";
+import { opsText } from "./ops-text.js";
+import { runFullText, runShortText } from "./run-text.js";
+import { satellitesText } from "./satellites-text.js";
+import { indexText, locateText } from "./search-text.js";
+import { explainText, helpText } from "./simple-text.js";
+import { starText } from "./star-text.js";
+
+/**
+ * The answer as text of at most 100 columns, ended by a line feed: the result, then warnings, what was assumed, the
+ * conventions and the cautions, each once. Empty when the answer has no result.
+ *
+ * @param options.full for `run` everything that was computed, not only the page that fits a terminal
+ */
+export function reportText(answer: Envelope, options: { readonly full?: boolean } = {}): string {
+  if (answer.result === null) return "";
+  const lines = [
+    ...bodyLines(answer, options.full ?? false),
+    ...warningLines(answer.warnings),
+    ...assumedLines(answer.assumed),
+    ...conventionLines(answer.command),
+    ...cautionLines(answer.command),
+  ];
+  while (lines.at(-1) === "") lines.pop();
+  return `${lines.join("\n")}\n`;
+}
+
+/** The command names the shape of the result. */
+function bodyLines({ command, result }: Envelope, full: boolean): string[] {
+  switch (command) {
+    case "ops":
+      return opsText(result as OpsRecord);
+    case "star":
+      return starText(result as StarRecord);
+    case "irreps":
+      return irrepsText(result as IrrepsRecord);
+    case "modes":
+      return modesText(result as ModesRecord);
+    case "satellites":
+      return satellitesText(result as SatellitesRecord);
+    case "index":
+      return indexText(result as SearchRecord);
+    case "locate":
+      return locateText(result as SearchRecord);
+    case "check":
+      return checkText(result as CheckRecord);
+    case "run":
+      return full ? runFullText(result as RunRecord) : runShortText(result as RunRecord);
+    case "explain":
+      return explainText(result as ExplainRecord);
+    case "help":
+      return helpText(result as HelpRecord);
+    default:
+      return [];
+  }
+}

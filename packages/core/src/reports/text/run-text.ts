@@ -1,0 +1,144 @@
+import type { BranchRecord, RunRecord } from "../records/run.js";
+import type { OverlapRecord } from "../records/satellites.js";
+import type { PeaksRecord } from "../records/search.js";
+import { irrepsText, irrepTable } from "./irreps-text.js";
+import { fields, paragraph, section, table } from "./layout.js";
+import { modesText, parameterText, decompositionText } from "./modes-text.js";
+import { cellText, counted, groupText, kText, positionText } from "./names.js";
+import { satellitesText, satelliteTable } from "./satellites-text.js";
+import { assignmentTable, candidateTable, certificateLines, peakFields } from "./search-text.js";
+import { starFields, starText } from "./star-text.js";
+
+/** Satellites and candidates that the short report shows. */
+const shownSatellites = 8;
+const shownCandidates = 6;
+
+/** The page that the whole job prints, in the order in which a user asks. */
+export function runShortText(record: RunRecord): string[] {
+  return [
+    ...headSection(record),
+    ...peakSection(record),
+    ...searchSection(record),
+    ...record.branches.flatMap((branch, index) => branchText(branch, record.branches.length > 1 ? index + 1 : null)),
+    ...section(
+      "Next",
+      record.next.flatMap((text, index) => paragraph(`${index + 1}. ${text}`, 2, 3)),
+    ),
+    ...section("Files", record.files.flatMap((name) => paragraph(name))),
+  ];
+}
+
+/** The short report and behind it everything that was computed, branch by branch. */
+export function runFullText(record: RunRecord): string[] {
+  const several = record.branches.length > 1;
+  return [
+    ...runShortText(record),
+    ...(record.search ?? { candidates: [] }).candidates.flatMap((candidate, index) =>
+      record.peaks ? section(`Assignment by candidate ${index + 1}, ${kText(candidate.k)}`, assignmentTable(candidate, record.peaks)) : [],
+    ),
+    ...record.branches.flatMap((branch, index) => [
+      ...(several ? [`Branch ${index + 1}: k = ${kText(branch.k)}`, ""] : []),
+      ...starText(branch.star),
+      ...irrepsText(branch.irreps),
+      ...modesText(branch.modes),
+      ...(branch.satellites ? satellitesText(branch.satellites) : []),
+    ]),
+  ];
+}
+
+function headSection(record: RunRecord): string[] {
+  return section(
+    record.title ?? "Study",
+    fields([
+      ["Group", groupText(record.group)],
+      ...(record.cell ? [["Cell", cellText(record.cell)] as const] : []),
+    ]),
+  );
+}
+
+function peakSection({ peaks, search, coincidences }: RunRecord): string[] {
+  if (peaks === null) return [];
+  const aside = search?.setAside ?? [];
+  return section(
+    "Peaks",
+    fields([
+      ...peakFields(peaks),
+      ...(aside.length === 0
+        ? []
+        : [["Set aside", aside.map(({ peak, because }) => `${peak + 1} (${because})`).join(", ")] as [string, string]]),
+      ["Taken as satellites", satelliteCount(peaks, aside.length)],
+      ...coincidenceFields(coincidences),
+    ]),
+  );
+}
+
+/** Peaks that may hold something else too, by what that is; the JSON says which lines. */
+function coincidenceFields(coincidences: RunRecord["coincidences"]): [string, string][] {
+  const peaksOn = (kind: OverlapRecord["with"]) =>
+    coincidences.filter(({ overlaps }) => overlaps.some((one) => one.with === kind)).map(({ peak }) => peak + 1);
+  const fieldFor = (name: string, numbers: readonly number[]): [string, string][] =>
+    numbers.length > 0 ? [[name, `peak ${numbers.join(", ")} (flagged, not removed)`]] : [];
+  return [
+    ...fieldFor("On nuclear lines", peaksOn("nuclear")),
+    ...fieldFor("On λ/2 images", peaksOn("half wavelength")),
+  ];
+}
+
+function satelliteCount(peaks: PeaksRecord, aside: number): string {
+  return `${peaks.list.length - aside} of ${peaks.list.length}`;
+}
+
+function searchSection(record: RunRecord): string[] {
+  const { search } = record;
+  if (search === null) return [];
+  const followed = record.branches.flatMap(({ candidate }) => (candidate === null ? [] : [candidate + 1]));
+  return section(
+    "Wave vector",
+    candidateTable(search.candidates.slice(0, shownCandidates)),
+    moreLine(search.candidates.length - shownCandidates, "candidate"),
+    [""],
+    certificateLines(search),
+    search.certificate && followed.length > 0 ? paragraph(`Followed below: candidate ${followed.join(", ")}.`) : [],
+    record.notFollowed.length > 0
+      ? paragraph(`Tied but not followed: candidate ${record.notFollowed.map((index) => index + 1).join(", ")}.`)
+      : [],
+  );
+}
+
+function moreLine(count: number, what: string): string[] {
+  return count > 0 ? paragraph(`and ${counted(count, `more ${what}`)}`) : [];
+}
+
+function branchText(branch: BranchRecord, number: number | null): string[] {
+  const name = number === null ? "" : `Branch ${number}: `;
+  return [
+    ...section(`${name}Symmetry of k = ${kText(branch.k)}`, starFields(branch.star).slice(2), [""], irrepTable(branch.irreps.irreps)),
+    ...section(`${name}Modes`, modeSummary(branch)),
+    ...satelliteSummary(branch, name),
+  ];
+}
+
+/** For each site the decomposition, and for each irrep the arrangement in symbols. */
+function modeSummary({ modes }: BranchRecord): string[] {
+  return modes.sites.flatMap((site, index) => [
+    ...(index > 0 ? [""] : []),
+    ...fields([[site.label, `${decompositionText(site)}; atoms ${site.orbit.map((one, atom) => `${atom + 1} ${positionText(one)}`).join("  ")}`]]),
+    ...table(
+      [{ title: "irrep" }, { title: "free", align: "right" }, { title: "allowed S on atoms 1, 2, … along a, b, c" }],
+      site.irreps
+        .filter(({ multiplicity }) => multiplicity > 0)
+        .map((irrep) => [irrep.label, parameterText(irrep).split(";")[0] ?? "", irrep.constraint.join("  ")]),
+      4,
+    ),
+  ]);
+}
+
+function satelliteSummary({ satellites }: BranchRecord, name: string): string[] {
+  if (satellites === null) return [];
+  const shown = satellites.reflections.slice(0, shownSatellites);
+  return section(
+    `${name}Satellites`,
+    satelliteTable(shown, satellites),
+    moreLine(satellites.reflections.length - shown.length, "line"),
+  );
+}

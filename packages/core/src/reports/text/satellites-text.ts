@@ -1,0 +1,64 @@
+import type { LineRecord } from "../records/search.js";
+import type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "../records/satellites.js";
+import { fields, paragraph, section, table } from "./layout.js";
+import { cellText, counted, decimals, groupText, kText, plain } from "./names.js";
+
+export function satellitesText(record: SatellitesRecord): string[] {
+  return [
+    ...section(
+      "Wave vector and cell",
+      fields([
+        ["Group", groupText(record.group)],
+        ["Cell", cellText(record.cell)],
+        ["k", kText(record.k)],
+        ["Q up to", `${plain(record.qMax)} Å⁻¹`],
+        ...(record.wavelengthAngstrom === null
+          ? []
+          : [["Wavelength", `${plain(record.wavelengthAngstrom)} Å`] as const]),
+      ]),
+    ),
+    ...section(
+      `Satellites (${counted(record.reflections.length, "line")})`,
+      satelliteTable(record.reflections, record),
+      [""],
+      paragraph(
+        `Lines that symmetry makes equal stand once. n: vectors of one single-k domain; n(star): over all arms. On it: nuclear lines that are not extinct within ${plain(record.overlapWithin)} Å⁻¹, and images of nuclear lines through half the wavelength.`,
+      ),
+    ),
+  ];
+}
+
+/** The table alone, also for a shortened list. */
+export function satelliteTable(reflections: readonly SatelliteRecord[], record: SatellitesRecord): string[] {
+  const angles = record.wavelengthAngstrom !== null;
+  return table(
+    [
+      { title: "H ± k" },
+      { title: "Q / Å⁻¹", align: "right" },
+      { title: "d / Å", align: "right" },
+      ...(angles ? [{ title: "2θ / °", align: "right" as const }] : []),
+      { title: "n", align: "right" },
+      { title: "n(star)", align: "right" },
+      { title: "on it" },
+    ],
+    reflections.map((line) => [
+      lineText(line),
+      decimals(line.q, 5),
+      decimals(line.d, 4),
+      ...(angles ? [decimals(line.twoThetaDeg, 3)] : []),
+      String(line.multiplicity),
+      String(line.multiplicityAllArms),
+      line.overlaps.filter(({ allowed }) => allowed).map(overlapText).join(", "),
+    ]),
+  );
+}
+
+/** `(1 0 -1) + k`; the sign says which satellite of H it is. */
+export function lineText(line: Pick<LineRecord, "h" | "sign">): string {
+  return `(${line.h.join(" ")}) ${line.sign < 0 ? "−" : "+"} k`;
+}
+
+export function overlapText(overlap: OverlapRecord): string {
+  const name = overlap.with === "nuclear" ? "nuclear" : "λ/2 of";
+  return `${name} (${overlap.h.join(" ")})`;
+}

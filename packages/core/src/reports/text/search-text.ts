@@ -1,0 +1,183 @@
+import type { AssignmentRecord, CandidateRecord, PeaksRecord, SearchRecord } from "../records/search.js";
+import { fields, paragraph, section, table } from "./layout.js";
+import { cellText, counted, decimals, dimensionText, groupText, kForm, kText, plain } from "./names.js";
+import { lineText } from "./satellites-text.js";
+
+/** Candidates that the report of `locate` lists; the JSON has all. */
+const shownCandidates = 12;
+
+export function indexText(record: SearchRecord): string[] {
+  return [
+    ...inputSection(record),
+    ...record.candidates.flatMap((candidate) => [
+      ...section(`Wave vector ${kText(candidate.k)}`, fields(candidateFields(candidate))),
+      ...section("Assignment", assignmentTable(candidate, record.peaks)),
+    ]),
+  ];
+}
+
+export function locateText(record: SearchRecord): string[] {
+  const best = record.candidates[0];
+  return [
+    ...inputSection(record),
+    ...section(
+      `Candidates (${shownText(record)})`,
+      candidateTable(record.candidates.slice(0, shownCandidates)),
+      [""],
+      certificateLines(record),
+      setAsideLines(record),
+    ),
+    ...(best ? section(`Assignment by candidate 1, ${kText(best.k)}`, assignmentTable(best, record.peaks)) : []),
+  ];
+}
+
+function shownText(record: SearchRecord): string {
+  const total = record.candidates.length;
+  return total > shownCandidates ? `the best ${shownCandidates} of ${total}` : String(total);
+}
+
+function inputSection(record: SearchRecord): string[] {
+  return section(
+    "Peaks and cell",
+    fields([["Group", groupText(record.group)], ["Cell", cellText(record.cell)], ...peakFields(record.peaks)]),
+  );
+}
+
+const kindNames = { d: "d in Å", q: "Q in Å⁻¹", "two-theta": "2θ in degrees", hkl: "single-crystal h k l" };
+
+/** What was read, in two lines. */
+export function peakFields(peaks: PeaksRecord): [string, string][] {
+  const wavelength = peaks.wavelengthAngstrom === null ? "" : `, wavelength ${plain(peaks.wavelengthAngstrom)} Å`;
+  return [
+    ["Peaks", `${peaks.list.length} as ${kindNames[peaks.kind]}${wavelength}`],
+    ["Uncertainties", peaks.uncertaintySource],
+  ];
+}
+
+/** Ranked by evidence; ties by the numbers of the candidates. */
+export function candidateTable(candidates: readonly CandidateRecord[]): string[] {
+  return table(
+    [
+      { title: "", align: "right" },
+      { title: "k" },
+      { title: "kind" },
+      { title: "arms", align: "right" },
+      { title: "matched", align: "right" },
+      { title: "misfit / s.u.", align: "right" },
+      { title: "evidence", align: "right" },
+      { title: "reading" },
+      { title: "tied with" },
+    ],
+    candidates.map((candidate, index) => [
+      String(index + 1),
+      kText(candidate.k),
+      dimensionText(candidate.dimension),
+      String(candidate.arms),
+      `${candidate.matched} of ${candidate.total}`,
+      decimals(misfitOf(candidate), 2),
+      decimals(candidate.evidence.value, 1),
+      candidate.evidence.reading,
+      candidate.tiedWith.map((other) => other + 1).join(", "),
+    ]),
+  );
+}
+
+/** What the search covered. */
+export function certificateLines(record: SearchRecord): string[] {
+  const certificate = record.certificate;
+  if (certificate === null) return [];
+  const kinds = ["points", "points and lines", "points, lines and planes", "all k"][certificate.maxDimension];
+  const scope =
+    certificate.maxDimension === 0
+      ? "All special points were tried, with k and −k as one; lines, planes and general k were not."
+      : `Searched: ${kinds}, ${counted(certificate.boxes, "box", "boxes")}.`;
+  const complete = certificate.exhaustive
+    ? `Besides those listed none of them matches ${certificate.minimumMatched} or more peaks.`
+    : "The search was stopped before its end: others may match.";
+  return paragraph(`${scope} ${complete}`);
+}
+
+function setAsideLines(record: SearchRecord): string[] {
+  return [
+    ...record.setAside.flatMap(({ peak, because }) => paragraph(`Peak ${peak + 1} set aside: ${because}.`)),
+    ...(record.unmatched.length > 0
+      ? paragraph(`No candidate explains peak ${record.unmatched.map((peak) => peak + 1).join(", ")}.`)
+      : []),
+  ];
+}
+
+function candidateFields(candidate: CandidateRecord): [string, string][] {
+  const { evidence } = candidate;
+  return [
+    ["Kind", `${dimensionText(candidate.dimension)} ${kForm(candidate.manifold)}, ${counted(candidate.arms, "arm")}`],
+    ["Matched", `${candidate.matched} of ${candidate.total}`],
+    ["Misfit", `${decimals(misfitOf(candidate), 2)} standard uncertainties (root mean square)`],
+    ["Evidence", `${decimals(evidence.value, 1)} (natural log-odds against chance): ${evidence.reading}`],
+    ...(candidate.onNuclearLines
+      ? [["k = 0", "its lines are the nuclear ones: peaks that are not magnetic fit it too"] as [string, string]]
+      : []),
+    ...refinementFields(candidate),
+    ["Figures of merit", `de Wolff ${decimals(candidate.deWolff, 1)}, Smith & Snyder ${decimals(candidate.smithSnyder, 1)}`],
+    ...(candidate.nearFractions.length === 0
+      ? []
+      : [["Near fractions", candidate.nearFractions.map(nearText).join(", ")] as [string, string]]),
+  ];
+}
+
+function nearText({ letter, fraction, deviation }: CandidateRecord["nearFractions"][number]): string {
+  return `${letter} = ${fraction} (${decimals(Math.abs(deviation), 1)} s.u. away)`;
+}
+
+function refinementFields({ refinement, k }: CandidateRecord): [string, string][] {
+  if (refinement === null) return [];
+  if (!refinement.determined) return [["Refined", "no: the matched peaks do not fix every parameter"]];
+  const enlarged = refinement.rescaledSu
+    ? `; s.u. enlarged to the scatter of the peaks: ${Object.keys(k.values)
+        .map((letter, index) => `${letter} ±${plain(refinement.rescaledSu?.[index] ?? Number.NaN)}`)
+        .join(", ")}`
+    : "";
+  return [["Refined", `from ${kText(refinement.from)}${refinement.converged ? "" : ", not converged"}${enlarged}`]];
+}
+
+/** Root mean square of the matched peaks' residuals in standard uncertainties. */
+function misfitOf({ residuals, matched }: CandidateRecord): number | null {
+  return matched > 0 ? Math.sqrt(residuals.chiSquared / matched) : null;
+}
+
+/** One row a peak, matched or not. */
+export function assignmentTable(candidate: CandidateRecord, peaks: PeaksRecord): string[] {
+  const vectors = peaks.kind === "hkl";
+  const several = vectors && candidate.arms > 1;
+  const byPeak = new Map(candidate.assignments.map((one) => [one.peak, one]));
+  const places = Math.max(0, ...peaks.list.map(({ position }) => (plain(position ?? 0).split(".")[1] ?? "").length));
+  return table(
+    [
+      { title: "peak", align: "right" },
+      { title: vectors ? "h k l" : "position", align: "right" },
+      ...(vectors ? [] : [{ title: "Q / Å⁻¹", align: "right" as const }, { title: "computed", align: "right" as const }]),
+      { title: "H ± k" },
+      ...(several ? [{ title: "arm", align: "right" as const }] : []),
+      { title: "off / s.u.", align: "right" },
+      { title: "others within", align: "right" },
+    ],
+    peaks.list.map((peak) => {
+      const found = byPeak.get(peak.index);
+      return [
+        String(peak.index + 1),
+        vectors ? (peak.hkl ?? []).map((entry) => decimals(entry, 4)).join(" ") : decimals(peak.position, places),
+        ...(vectors ? [] : [decimals(peak.q, 5), decimals(found?.q ?? null, 5)]),
+        found ? lineText(found) : "not matched",
+        ...(several ? [found ? String(found.arm + 1) : ""] : []),
+        found ? decimals(offsetOf(found, peak.uncertainty), 2) : "",
+        found && found.alternatives.length > 0 ? String(found.alternatives.length) : "",
+      ];
+    }),
+  );
+}
+
+/** Observed less computed in standard uncertainties; of three indices the one that is off most. */
+function offsetOf({ residual, residualHkl }: AssignmentRecord, uncertainty: number): number | null {
+  if (!(uncertainty > 0)) return null;
+  if (residualHkl === null) return residual / uncertainty;
+  return Math.max(...residualHkl.map(Math.abs)) / uncertainty;
+}

@@ -1,0 +1,112 @@
+import { type Problem, problem } from "../errors/index.js";
+import {
+  exactComponents,
+  isReciprocalLatticeVector,
+  manifold,
+  specialPoints,
+  star,
+  type WaveVector,
+} from "../kvectors/index.js";
+import { chiSquaredStandardDeviations, roundNumber } from "../numbers/index.js";
+import type { SpaceGroup } from "../spacegroups/index.js";
+import { evidenceOf } from "./evidence.js";
+import type { Explanation, PeakModel } from "./explanation.js";
+import { nearFractions } from "./near-fractions.js";
+import { type Refined, refineWaveVector } from "./refine.js";
+import { tunedSet } from "./tuned-set.js";
+import { tuningCharge } from "./tuning-charge.js";
+import type { Candidate, EvidenceCharges, ResidualStatistics } from "./types.js";
+
+/** What a candidate is charged for the search that led to it. */
+export type SearchCharges = Pick<EvidenceCharges, "dimensions" | "kinds">;
+
+/** A candidate before it is compared with the others, with what it predicts. */
+export interface Weighed {
+  readonly candidate: Candidate;
+  readonly explanation: Explanation;
+}
+
+/**
+ * Refines a k, weighs it against the peaks and describes it. `charges` are those of the search; null for a k that was
+ * given: then a special point is charged like the search over the points, so that both give one value, and any other k
+ * nothing but the tuning of its letters.
+ */
+export function weigh(group: SpaceGroup, model: PeakModel, start: WaveVector, charges: SearchCharges | null): Weighed {
+  const refined = refineWaveVector(model, start);
+  const { k, explanation, refinement } = refined;
+  const kind = manifold(group, k, { withInversion: true });
+  const tuning = tuningOf(group, model, refined);
+  const residuals = statisticsOf(explanation, refinement?.determined ? (k.values ?? []).length : 0);
+  const candidate: Candidate = {
+    k,
+    manifold: kind,
+    arms: star(group, k).arms.length,
+    onNuclearLines: isNuclear(group, k),
+    evidence: evidenceOf(explanation.logOdds, { ...(charges ?? chargesOfGiven(group, kind.dimension)), tuning }),
+    matched: explanation.assignments.length,
+    total: model.total,
+    deWolff: explanation.deWolff,
+    smithSnyder: explanation.smithSnyder,
+    nearFractions: nearFractions(k),
+    tiedWith: [],
+    assignments: explanation.assignments,
+    unmatched: explanation.unmatched,
+    residuals,
+    refinement,
+    warnings: warningsOf(refined, residuals),
+  };
+  return { candidate, explanation };
+}
+
+function chargesOfGiven(group: SpaceGroup, dimension: number): SearchCharges {
+  return { dimensions: 0, kinds: dimension === 0 ? Math.log(specialPoints(group).length) : 0 };
+}
+
+function isNuclear(group: SpaceGroup, k: WaveVector): boolean {
+  const components = exactComponents(k);
+  return components !== null && isReciprocalLatticeVector(group, components);
+}
+
+function tuningOf(group: SpaceGroup, model: PeakModel, { k, explanation, refinement }: Refined): number {
+  if (!refinement?.determined) return 0;
+  const { jacobian } = model.equations(k, explanation.assignments, Float64Array.from(k.values ?? []));
+  return tuningCharge(tunedSet(group, k, model.metric, 2 * model.tolerance), jacobian);
+}
+
+function statisticsOf(explanation: Explanation, refinedParameters: number): ResidualStatistics {
+  const degreesOfFreedom = explanation.observations - refinedParameters;
+  return {
+    rootMeanSquare: roundNumber(explanation.rootMeanSquare),
+    largest: roundNumber(explanation.largest),
+    chiSquared: roundNumber(explanation.chiSquared),
+    degreesOfFreedom,
+    reducedChiSquared: degreesOfFreedom > 0 ? roundNumber(explanation.chiSquared / degreesOfFreedom) : null,
+  };
+}
+
+function warningsOf({ refinement }: Refined, residuals: ResidualStatistics): readonly Problem[] {
+  const warnings: Problem[] = [];
+  if (refinement !== null && !refinement.determined)
+    warnings.push(
+      problem("k-not-determined", "the matched peaks do not fix the free components of k, which were left as given", {
+        expected: "matched peaks whose positions depend on every free component, at least as many as there are",
+        found: `${residuals.degreesOfFreedom} matched positions`,
+        remedy: "give a wider tolerance, more peaks, or a k closer to the true one",
+      }),
+    );
+  const { degreesOfFreedom: freedom, reducedChiSquared: reduced } = residuals;
+  const limit = 1 + chiSquaredStandardDeviations * Math.sqrt(2 / Math.max(1, freedom));
+  if (reduced !== null && reduced > limit)
+    warnings.push(
+      problem(
+        "uncertainties-understated",
+        `χ² per degree of freedom is ${reduced.toFixed(1)}: the peaks scatter more than their uncertainties say`,
+        {
+          expected: `at most ${limit.toFixed(1)} for ${freedom} degrees of freedom`,
+          found: reduced.toFixed(2),
+          remedy: `multiply the uncertainties by ${Math.sqrt(reduced).toFixed(1)}, or check the zero shift and the cell`,
+        },
+      ),
+    );
+  return warnings;
+}

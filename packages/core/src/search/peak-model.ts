@@ -1,0 +1,33 @@
+import { averagedReciprocalMetric } from "../reflections/index.js";
+import type { Cell, SpaceGroup } from "../spacegroups/index.js";
+import { crystalModel } from "./crystal-model.js";
+import type { PeakModel } from "./explanation.js";
+import { checkOptions } from "./options.js";
+import { powderModel } from "./powder-model.js";
+import type { PeakList, SearchOptions, SetAside } from "./types.js";
+import { usedPeaks } from "./used-peaks.js";
+
+/** The model of a list's peaks, and the peaks that it leaves out. Throws `invalid-argument` for impossible options. */
+export function peakModel(
+  group: SpaceGroup,
+  cell: Cell,
+  list: PeakList,
+  options: SearchOptions,
+): { readonly model: PeakModel; readonly setAside: readonly SetAside[] } {
+  checkOptions(options);
+  const metric = averagedReciprocalMetric(group, cell);
+  const { powder, crystal, setAside } = usedPeaks(list, options, (hkl) => lengthOf(metric, hkl));
+  const model =
+    list.kind === "hkl"
+      ? crystalModel(group, cell, crystal)
+      : powderModel(group, cell, powder, list.wavelengthAngstrom);
+  return { model, setAside };
+}
+
+/** |Q| in Å⁻¹. */
+function lengthOf(metric: readonly number[], hkl: readonly number[]): number {
+  let square = 0;
+  for (let i = 0; i < 3; i++)
+    for (let j = 0; j < 3; j++) square += (hkl[i] as number) * (metric[3 * i + j] as number) * (hkl[j] as number);
+  return 2 * Math.PI * Math.sqrt(Math.max(0, square));
+}

@@ -1,0 +1,145 @@
+import { numericWaveVector, usedParameters, type WaveVector } from "../kvectors/index.js";
+import { roundNumber, toNumber } from "../numbers/index.js";
+import {
+  averagedReciprocalMetric,
+  distinctPositions,
+  type SatelliteLine,
+  satelliteLister,
+} from "../reflections/index.js";
+import type { Cell, SpaceGroup } from "../spacegroups/index.js";
+import { densityHalfWindow, lowerBound, powderLogOdds } from "./evidence.js";
+import type { Explanation, PeakModel } from "./explanation.js";
+import { deWolff, smithSnyder } from "./figures-of-merit.js";
+import type { Assignment, IndexedLine } from "./types.js";
+import type { PowderPeak } from "./used-peaks.js";
+
+/** What powder positions, whatever unit they came in, say about k. */
+export function powderModel(
+  group: SpaceGroup,
+  cell: Cell,
+  peaks: readonly PowderPeak[],
+  wavelengthAngstrom: number | null,
+): PeakModel {
+  const widest = Math.max(...peaks.map((peak) => peak.halfWidth));
+  const highest = Math.max(...peaks.map((peak) => peak.q));
+  // Beyond the last peak as far as its density window and the tolerance of a comparison reach.
+  const qMax = highest + Math.max(densityHalfWindow, 2 * widest);
+  const lister = satelliteLister(group, cell);
+  const metric = averagedReciprocalMetric(group, cell).map((entry) => 4 * Math.PI * Math.PI * entry);
+  const tolerance = median(peaks.map((peak) => peak.halfWidth));
+  return {
+    total: peaks.length,
+    tolerance,
+    metric,
+    explain: (k) => explainPowder(lister(k, { qMax }), peaks, wavelengthAngstrom),
+    equations: (k, assignments, values) => powderEquations(k, assignments, values, peaks, metric),
+    samePositions: ({ predicted: a }, { predicted: b }) =>
+      covers(a, b, highest + tolerance, tolerance) && covers(b, a, highest + tolerance, tolerance),
+  };
+}
+
+function explainPowder(
+  lines: readonly SatelliteLine[],
+  peaks: readonly PowderPeak[],
+  wavelengthAngstrom: number | null,
+): Explanation {
+  const positions = distinctPositions(lines);
+  const all = Float64Array.from(lines, (line) => line.q);
+  const assignments: Assignment[] = [];
+  const unmatched: number[] = [];
+  let logOdds = 0;
+  let chiSquared = 0;
+  for (const peak of peaks) {
+    logOdds += powderLogOdds(peak.q, peak.uncertainty, positions);
+    const assignment = assign(peak, lines, all);
+    if (assignment === null) unmatched.push(peak.index);
+    else {
+      assignments.push(assignment);
+      chiSquared += (assignment.residual / peak.uncertainty) ** 2;
+    }
+  }
+  const matches = assignments.map(({ q, residual }) => ({ observed: q + residual, calculated: q }));
+  return {
+    assignments,
+    unmatched,
+    logOdds,
+    rootMeanSquare: Math.sqrt(mean(assignments.map(({ residual }) => residual * residual))),
+    largest: Math.max(0, ...assignments.map(({ residual }) => Math.abs(residual))),
+    chiSquared,
+    observations: assignments.length,
+    predicted: positions,
+    deWolff: deWolff(matches, positions),
+    smithSnyder: smithSnyder(matches, positions, wavelengthAngstrom),
+  };
+}
+
+/** The nearest line within the half-width, the others there as alternatives; null when there is none. */
+function assign(peak: PowderPeak, lines: readonly SatelliteLine[], all: Float64Array): Assignment | null {
+  const near: (IndexedLine & { readonly q: number })[] = [];
+  for (let index = lowerBound(all, peak.q - peak.halfWidth); index < lines.length; index++) {
+    const { h, sign, arm, q } = lines[index] as SatelliteLine;
+    if (q > peak.q + peak.halfWidth) break;
+    near.push({ h, sign, arm, residual: roundNumber(peak.q - q, peak.q), q });
+  }
+  // Equal distances keep the order of the lines.
+  near.sort((a, b) => Math.abs(a.residual) - Math.abs(b.residual));
+  const [first, ...others] = near;
+  if (!first) return null;
+  return {
+    ...first,
+    peak: peak.index,
+    residualHkl: null,
+    alternatives: others.map(({ h, sign, arm, residual }) => ({ h, sign, arm, residual })),
+  };
+}
+
+/** `q_i = |H_i ± k|` as equations for the letters of k. */
+function powderEquations(
+  k: WaveVector,
+  assignments: readonly Assignment[],
+  values: Float64Array,
+  peaks: readonly PowderPeak[],
+  metric: readonly number[],
+): { residuals: Float64Array; jacobian: Float64Array } {
+  const numeric = numericWaveVector({ ...k, values: [...values] }) as readonly [number, number, number];
+  const directions = usedParameters(k).map((letter) =>
+    k.components.map((form) => toNumber(form.coefficients[letter as 0 | 1 | 2])),
+  );
+  const byIndex = new Map(peaks.map((peak) => [peak.index, peak]));
+  const residuals = new Float64Array(assignments.length);
+  const jacobian = new Float64Array(assignments.length * directions.length);
+  assignments.forEach(({ peak: peakIndex, h, sign }, row) => {
+    const peak = byIndex.get(peakIndex) as PowderPeak;
+    const side = sign === -1 ? -1 : 1;
+    const vector = h.map((entry, axis) => entry + side * (numeric[axis] as number));
+    const covariant = [0, 1, 2].map((axis) =>
+      vector.reduce((sum, entry, other) => sum + entry * (metric[3 * other + axis] as number), 0),
+    );
+    const q = Math.sqrt(covariant.reduce((sum, entry, axis) => sum + entry * (vector[axis] as number), 0));
+    residuals[row] = (peak.q - q) / peak.uncertainty;
+    directions.forEach((direction, column) => {
+      const slope = direction.reduce((sum, entry, axis) => sum + entry * (covariant[axis] as number), 0) / q;
+      jacobian[row * directions.length + column] = (side * slope) / peak.uncertainty;
+    });
+  });
+  return { residuals, jacobian };
+}
+
+/** Whether every position of `a` up to `reach` has one of `b` within the tolerance. */
+function covers(a: Float64Array, b: Float64Array, reach: number, tolerance: number): boolean {
+  for (const q of a) {
+    if (q > reach) break;
+    const index = lowerBound(b, q - tolerance);
+    if (index === b.length || (b[index] as number) > q + tolerance) return false;
+  }
+  return true;
+}
+
+function mean(values: readonly number[]): number {
+  return values.length === 0 ? 0 : values.reduce((sum, value) => sum + value, 0) / values.length;
+}
+
+function median(values: readonly number[]): number {
+  const sorted = [...values].sort((a, b) => a - b);
+  return sorted[sorted.length >> 1] as number;
+}

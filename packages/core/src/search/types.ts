@@ -1,0 +1,191 @@
+import type { Problem } from "../errors/index.js";
+import type { Manifold, WaveVector } from "../kvectors/index.js";
+import type { Rational } from "../numbers/index.js";
+
+/** What the positions of a peak list are. */
+export type PeakKind = "d" | "q" | "two-theta" | "hkl";
+
+/** One observed peak. */
+export interface Peak {
+  /** Place in the list, from 0; results refer to a peak by it. */
+  readonly index: number;
+  /** Å⁻¹; null in a list of fractional h k l. */
+  readonly q: number | null;
+  /** Standard uncertainty of `q` in Å⁻¹, above 0; null in a list of fractional h k l. */
+  readonly uncertainty: number | null;
+  /** Three fractional indices in a*, b*, c* of the setting; null in a powder list. */
+  readonly hkl: readonly number[] | null;
+  /** Standard uncertainty of each of the three indices, above 0; null in a powder list. */
+  readonly hklUncertainty: number | null;
+  readonly intensity: number | null;
+  readonly intensityUncertainty: number | null;
+  /** The position as the list gives it, in the unit of its kind; null in a list of fractional h k l. */
+  readonly position: number | null;
+  /** Line of the source file, from 1. */
+  readonly line: number;
+}
+
+export interface PeakList {
+  readonly kind: PeakKind;
+  readonly wavelengthAngstrom: number | null;
+  readonly peaks: readonly Peak[];
+  /** Where the standard uncertainties come from, in words for the reader. */
+  readonly uncertaintySource: string;
+}
+
+/** What may be asked of `indexPeaks` and `locate`; `defaultSearchOptions` has the defaults. */
+export interface SearchOptions {
+  /**
+   * Half-width of a match in Å⁻¹ (r.l.u. for each index of a list of fractional h k l); null for 3 standard
+   * uncertainties of each peak. It decides which peaks are listed as matched, not the evidence.
+   */
+  readonly tolerance: number | null;
+  /** How many peaks a candidate may leave unmatched. */
+  readonly unmatched: number;
+  /** Largest dimension of the kinds of k to search; see `Certificate.maxDimension` for what was searched. */
+  readonly maxDimension: 0 | 1 | 2 | 3;
+  /** Peaks above this Q in Å⁻¹ are set aside; null for no limit. */
+  readonly qMax: number | null;
+  /** Largest zero shift in degrees 2θ to refine with k. Not built: anything but 0 gives a warning. */
+  readonly zeroShift: number;
+  /** Largest relative change of the cell to refine with k. Not built: anything but 0 gives a warning. */
+  readonly cellScale: number;
+  /** Return also the candidates that match fewer peaks than asked. Default false. */
+  readonly belowMinimum?: boolean;
+}
+
+/** One way of writing a peak as H ± k. */
+export interface IndexedLine {
+  /** H in a*, b*, c*; integers wherever all integer vectors belong to the lattice L. */
+  readonly h: readonly [number, number, number];
+  /** Peak = H + k, H − k, or (0, for 2k ∈ L*) H + k where + and − are the same set. */
+  readonly sign: 1 | -1 | 0;
+  /** Arm of the star that k stands for; always 0 for a powder, where all arms give the same lines. */
+  readonly arm: number;
+  /** Observed minus calculated: of Q in Å⁻¹; of a list of h k l the length of the difference in Å⁻¹. */
+  readonly residual: number;
+}
+
+export interface Assignment extends IndexedLine {
+  readonly peak: number;
+  /** Calculated position: Q in Å⁻¹. */
+  readonly q: number;
+  /** Observed minus calculated index by index; null for a powder. */
+  readonly residualHkl: readonly [number, number, number] | null;
+  /** Other lines within the tolerance, nearest first. */
+  readonly alternatives: readonly IndexedLine[];
+}
+
+/** What was subtracted from the summed log-odds for having searched; natural logarithms, none below 0. */
+export interface EvidenceCharges {
+  /** ln(number of searched dimensions that have a kind). */
+  readonly dimensions: number;
+  /** ln(number of kinds of this dimension); 0 where k was given and is no special point. */
+  readonly kinds: number;
+  /** −ln V for the tuned parameters; 0 for a point. */
+  readonly tuning: number;
+}
+
+export type EvidenceReading = "found" | "weak" | "not informative";
+
+/** Log-odds of the peaks being lines of this k against being chance: above 3 found, 0 to 3 weak, below 0 no news. */
+export interface Evidence {
+  readonly value: number;
+  readonly reading: EvidenceReading;
+  readonly charges: EvidenceCharges;
+}
+
+/** How the matched peaks scatter about their lines. Å⁻¹; r.l.u. for a list of fractional h k l. */
+export interface ResidualStatistics {
+  readonly rootMeanSquare: number;
+  readonly largest: number;
+  /** Σ (residual / s.u.)² over the matched peaks. */
+  readonly chiSquared: number;
+  /** Matched observations minus refined parameters. */
+  readonly degreesOfFreedom: number;
+  /** χ² per degree of freedom; null when none is left. */
+  readonly reducedChiSquared: number | null;
+}
+
+/** The free parameters of k after least squares against the matched peaks. */
+export interface Refinement {
+  /** The k that the refinement started from. */
+  readonly from: WaveVector;
+  /** False when some parameter is not fixed by the matched peaks: then nothing was moved. */
+  readonly determined: boolean;
+  readonly converged: boolean;
+  /** Rounds of assigning and refining until the assignment stayed the same. */
+  readonly rounds: number;
+  /** Uncertainties of the values times √(χ² per degree of freedom), for an understated list; null when not above 1. */
+  readonly rescaledUncertainties: readonly number[] | null;
+}
+
+/** A simple fraction within 2 standard uncertainties of a free parameter. */
+export interface NearFraction {
+  readonly parameter: "u" | "v" | "w";
+  readonly fraction: Rational;
+  /** (value − fraction) / s.u. */
+  readonly deviation: number;
+}
+
+/** A k with what it explains. */
+export interface Candidate {
+  /** Refined, with uncertainties, where it has values and the peaks fix them. */
+  readonly k: WaveVector;
+  /** The kind of k under the point group extended by −1. */
+  readonly manifold: Manifold;
+  /** Arms of the star under the point group. */
+  readonly arms: number;
+  /** k = 0: the lines are the nuclear ones, so that peaks which the list should not hold fit it as well. */
+  readonly onNuclearLines: boolean;
+  readonly evidence: Evidence;
+  readonly matched: number;
+  readonly total: number;
+  /** M_N of de Wolff over the N matched peaks; null for h k l or when the residuals are below any measurement. */
+  readonly deWolff: number | null;
+  /** F_N of Smith and Snyder in 1/°; null also without a wavelength. */
+  readonly smithSnyder: number | null;
+  readonly nearFractions: readonly NearFraction[];
+  /** Indices of the candidates of the same result that predict the same positions within the tolerance. */
+  readonly tiedWith: readonly number[];
+  readonly assignments: readonly Assignment[];
+  /** Peaks (by index) that no line of this k explains. */
+  readonly unmatched: readonly number[];
+  readonly residuals: ResidualStatistics;
+  readonly refinement: Refinement | null;
+  readonly warnings: readonly Problem[];
+}
+
+/** What the search has gone through, so that a reader knows what its silence means. */
+export interface Certificate {
+  /** Every k of the searched kinds that matches at least this many peaks is among the candidates. */
+  readonly minimumMatched: number;
+  /** Regions of k that were tested; for points, how many points. */
+  readonly boxes: number;
+  /** Half-width in Å⁻¹ of the smallest region; 0 for points. */
+  readonly smallestBox: number;
+  /** Whether the search of the kinds up to `maxDimension` went to its end. */
+  readonly exhaustive: boolean;
+  /** Largest dimension of the kinds that were searched, which may be less than was asked for. */
+  readonly maxDimension: 0 | 1 | 2 | 3;
+  readonly zeroShift: number;
+  readonly cellScale: number;
+}
+
+/** A peak that was not used. */
+export interface SetAside {
+  readonly peak: number;
+  readonly because: string;
+}
+
+export interface SearchResult {
+  /** By falling evidence. */
+  readonly candidates: readonly Candidate[];
+  readonly certificate: Certificate;
+  readonly setAside: readonly SetAside[];
+  /** Peaks (by index) that the first candidate does not explain; all used peaks when there is no candidate. */
+  readonly unmatched: readonly number[];
+  /** How many k were tried and left out because they match too few peaks. */
+  readonly dropped: number;
+  readonly warnings: readonly Problem[];
+}

@@ -1,0 +1,79 @@
+import { fail } from "../errors/index.js";
+import { matchStandardUncertainties } from "../numbers/index.js";
+import type { PeakList, SearchOptions, SetAside } from "./types.js";
+
+/** A powder peak in the form that matching needs, Å⁻¹. */
+export interface PowderPeak {
+  readonly index: number;
+  readonly q: number;
+  readonly uncertainty: number;
+  readonly halfWidth: number;
+}
+
+/** A single-crystal peak in the form that matching needs, r.l.u. */
+export interface CrystalPeak {
+  readonly index: number;
+  readonly hkl: readonly [number, number, number];
+  readonly uncertainty: number;
+  readonly halfWidth: number;
+}
+
+/** The peaks that take part, and those that do not. */
+export interface UsedPeaks {
+  readonly powder: readonly PowderPeak[];
+  readonly crystal: readonly CrystalPeak[];
+  readonly setAside: readonly SetAside[];
+}
+
+/**
+ * The peaks of a list that take part in indexing; one of `powder` and `crystal` is empty. Peaks above `qMax` are set
+ * aside (`lengthOf` gives Q of a list of h k l).
+ *
+ * Throws `invalid-peak` for a position or uncertainty that is no number above 0, `too-few-peaks` when none is left.
+ */
+export function usedPeaks(
+  list: PeakList,
+  options: SearchOptions,
+  lengthOf: (hkl: readonly number[]) => number,
+): UsedPeaks {
+  const powder: PowderPeak[] = [];
+  const crystal: CrystalPeak[] = [];
+  const setAside: SetAside[] = [];
+  for (const peak of list.peaks) {
+    const uncertainty = list.kind === "hkl" ? peak.hklUncertainty : peak.uncertainty;
+    const position = list.kind === "hkl" ? peak.hkl : peak.q === null ? null : [peak.q];
+    if (uncertainty === null || !(uncertainty > 0 && Number.isFinite(uncertainty)) || !isPosition(list, position))
+      refusePeak(peak.index, peak.line);
+    const q = list.kind === "hkl" ? lengthOf(position) : (position[0] as number);
+    if (options.qMax !== null && q > options.qMax) {
+      setAside.push({ peak: peak.index, because: `it lies above the limit of Q, ${options.qMax} Å⁻¹` });
+      continue;
+    }
+    const common = {
+      index: peak.index,
+      uncertainty,
+      halfWidth: options.tolerance ?? matchStandardUncertainties * uncertainty,
+    };
+    if (list.kind === "hkl") crystal.push({ ...common, hkl: position as unknown as [number, number, number] });
+    else powder.push({ ...common, q });
+  }
+  if (powder.length + crystal.length === 0)
+    fail("too-few-peaks", "there is no peak to index", {
+      expected: "at least one peak",
+      found: `${list.peaks.length} in the list, ${setAside.length} set aside`,
+      remedy: "give a list of satellite positions, or raise the limit of Q",
+    });
+  return { powder, crystal, setAside };
+}
+
+function isPosition(list: PeakList, position: readonly number[] | null): position is readonly number[] {
+  if (position === null || !position.every(Number.isFinite)) return false;
+  return list.kind === "hkl" ? position.length === 3 : (position[0] as number) > 0;
+}
+
+function refusePeak(index: number, line: number): never {
+  fail("invalid-peak", `peak ${index} has no usable position or uncertainty`, {
+    where: { line },
+    expected: "a position and a standard uncertainty above 0",
+  });
+}

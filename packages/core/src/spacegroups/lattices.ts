@@ -1,0 +1,139 @@
+import {
+  addVectors,
+  determinant,
+  divide,
+  gcdOf,
+  hermiteNormalForm,
+  invert,
+  isInteger,
+  lcm,
+  matrixFrom,
+  overCommonDenominator,
+  type Rational,
+  type RationalMatrix,
+  type RationalVector,
+  rational,
+  reduceModulo,
+  rowTimes,
+  safe,
+  timesColumn,
+  toNumber,
+  transpose,
+  vectorFrom,
+} from "../numbers/index.js";
+import type { Lattice } from "./types.js";
+
+/** All integer vectors. */
+export const integerLattice: Lattice = {
+  vectors: [
+    [1, 0, 0],
+    [0, 1, 0],
+    [0, 0, 1],
+  ],
+  denominator: 1,
+};
+
+/** The lattice spanned by `generators` (they must span space) as its canonical record. */
+export function latticeFrom(generators: readonly RationalVector[]): Lattice {
+  const { numerators, denominator } = overCommonDenominator(generators.flat());
+  const rows = generators.map((_, index) => numerators.slice(3 * index, 3 * index + 3));
+  const hermite = hermiteNormalForm(rows, 3);
+  const common = gcdOf([denominator, ...hermite.flat()]);
+  return {
+    vectors: hermite.map((row) => row.map((entry) => entry / common) as [number, number, number]),
+    denominator: denominator / common,
+  };
+}
+
+/** The basis vectors of L as exact vectors. */
+export function latticeVectors(lattice: Lattice): readonly RationalVector[] {
+  return lattice.vectors.map((vector) => vectorFrom(vector, lattice.denominator));
+}
+
+/** The matrix B whose columns are the basis vectors of L: `x = B ξ`. */
+export function latticeMatrix(lattice: Lattice): RationalMatrix {
+  return transpose(matrixFrom(lattice.vectors.flat(), lattice.denominator));
+}
+
+/** Coordinates ξ in the primitive basis of L, `ξ = B⁻¹ x`. */
+export function toPrimitiveColumn(lattice: Lattice, x: RationalVector): RationalVector {
+  return timesColumn(invert(latticeMatrix(lattice)), x);
+}
+
+/** Coordinates in the axes of the setting, `x = B ξ`. */
+export function fromPrimitiveColumn(lattice: Lattice, xi: RationalVector): RationalVector {
+  return timesColumn(latticeMatrix(lattice), xi);
+}
+
+/** A reciprocal row in the dual of the primitive basis, `κ = k B`; κ is integer exactly when k ∈ L*. */
+export function toPrimitiveRow(lattice: Lattice, k: RationalVector): RationalVector {
+  return rowTimes(k, latticeMatrix(lattice));
+}
+
+/** A reciprocal row in the axes of the setting, `k = κ B⁻¹`. */
+export function fromPrimitiveRow(lattice: Lattice, kappa: RationalVector): RationalVector {
+  return rowTimes(kappa, invert(latticeMatrix(lattice)));
+}
+
+export function isLatticeVector(lattice: Lattice, x: RationalVector): boolean {
+  return toPrimitiveColumn(lattice, x).every(isInteger);
+}
+
+/**
+ * The representative of `x` modulo L whose coordinates are the lexicographically smallest that are not negative.
+ * Where L holds all integer vectors it lies in [0, 1).
+ */
+export function reduceByLattice(lattice: Lattice, x: RationalVector): RationalVector {
+  const { numerators, denominator } = overCommonDenominator(x);
+  const common = lcm(denominator, lattice.denominator);
+  const rows = lattice.vectors.map((row) => row.map((entry) => safe((entry * common) / lattice.denominator)));
+  return vectorFrom(
+    reduceModulo(
+      numerators.map((entry) => safe((entry * common) / denominator)),
+      rows,
+    ),
+    common,
+  );
+}
+
+/** True when every integer vector is a lattice vector, as in all conventional settings. */
+export function holdsIntegers(lattice: Lattice): boolean {
+  return integerLattice.vectors.every((vector) => isLatticeVector(lattice, vectorFrom(vector)));
+}
+
+/** Lattice points per cell of the setting: 1/det B, a fraction where the cell is smaller than a primitive one. */
+export function latticePointsPerCell(lattice: Lattice): Rational {
+  return divide(rational(1), determinant(latticeMatrix(lattice)));
+}
+
+/**
+ * Representatives of L modulo L ∩ Z³, zero first, then by coordinates: in a conventional setting the centring vectors
+ * in [0, 1). Elsewhere each is the lexicographically smallest non-negative one of its class.
+ */
+export function latticeVectorsOfCell(lattice: Lattice): readonly RationalVector[] {
+  const common = integerSublattice(lattice);
+  const steps = latticeVectors(lattice);
+  const found = new Map<string, RationalVector>();
+  const queue: RationalVector[] = [vectorFrom([0, 0, 0])];
+  for (let next = queue.pop(); next !== undefined; next = queue.pop()) {
+    const key = next.join(";");
+    if (found.has(key)) continue;
+    found.set(key, next);
+    for (const step of steps) queue.push(reduceByLattice(common, addVectors(next, step)));
+  }
+  return [...found.values()].sort(
+    (a, b) => toNumber(a[0]) - toNumber(b[0]) || toNumber(a[1]) - toNumber(b[1]) || toNumber(a[2]) - toNumber(b[2]),
+  );
+}
+
+/** L ∩ Z³, by duality: it is the dual of L* + Z³. */
+export function integerSublattice(lattice: Lattice): Lattice {
+  if (holdsIntegers(lattice)) return integerLattice;
+  const sum = latticeFrom([...latticeVectors(dualLattice(lattice)), ...latticeVectors(integerLattice)]);
+  return dualLattice(sum);
+}
+
+/** The rows H with `H·T` integer for every T in L, as a lattice in the reciprocal axes. */
+export function dualLattice(lattice: Lattice): Lattice {
+  return latticeFrom(invert(latticeMatrix(lattice)));
+}

@@ -1,0 +1,89 @@
+import { spawn, spawnSync } from "node:child_process";
+import { readdirSync } from "node:fs";
+import { describe, expect, test } from "vitest";
+import { version } from "@kvane/core/job";
+import { commandFile, kvane, kvaneProcess, scratchFolder } from "./command.js";
+
+/** What only a whole process shows; everything else is tested without one. */
+describe("the built command", () => {
+  const folder = scratchFolder({ "word.txt": "d\nabc\n" });
+
+  test("answers as the tested source does, with its exit statuses", async () => {
+    for (const words of [
+      ["--version"],
+      ["ops", "-P 2ac 2n"],
+      ["run", "--example"],
+      ["modes", "62", "--k", "0,0,0", "--site", "Fe 0 0 1/2", "--json"],
+      ["index", "62", "--cell", "1 2 3 90 90 90", "--k", "0,0,0", "--peaks", "word.txt"],
+      ["atlas", "62"],
+    ])
+      expect(await kvaneProcess(words, { cwd: folder }), words.join(" ")).toEqual(await kvane(words, { cwd: folder }));
+    expect((await kvaneProcess(["--version"])).stdout).toBe(`${version}\n`);
+  });
+
+  test("gives the same bytes in any surroundings", async () => {
+    const words = ["run", "--example", "--json"];
+    const plain = await kvaneProcess(words);
+    const strange = await kvaneProcess(words, {
+      cwd: folder,
+      env: { LANG: "tr_TR.UTF-8", LC_ALL: "de_DE.UTF-8", TZ: "Asia/Kathmandu", COLUMNS: "40", FORCE_COLOR: "1" },
+    });
+    expect(strange.stdout).toBe(plain.stdout);
+  });
+
+  test("colours errors only where that is wanted", async () => {
+    const escape = "\u001b[";
+    expect((await kvaneProcess(["ops", "nonsense"])).stderr).not.toContain(escape);
+    expect((await kvaneProcess(["ops", "nonsense"], { env: { FORCE_COLOR: "1" } })).stderr).toContain(escape);
+    expect((await kvaneProcess(["ops", "nonsense"], { env: { NO_COLOR: "1" } })).stderr).not.toContain(escape);
+  });
+
+  test.skipIf(process.platform === "win32")("a closed pipe is no error", () => {
+    const command = `"${process.execPath}" "${commandFile}" modes 227:2 --k u,v,w --site "A 0.1 0.2 0.3" --json`;
+    const { stdout, stderr } = spawnSync("bash", ["-c", `${command} | head -c 20; echo "|\${PIPESTATUS[0]}"`], {
+      encoding: "utf8",
+    });
+    expect(stderr).toBe("");
+    expect(stdout.endsWith("|0\n"), stdout).toBe(true);
+  });
+
+  test.skipIf(process.platform === "win32")("Ctrl-C ends it with 130 and leaves nothing", async () => {
+    const before = readdirSync(folder);
+    const child = spawn(process.execPath, [commandFile, "run", "-", "--out", "results"], { cwd: folder });
+    const ended = new Promise<number | null>((resolve) => child.on("exit", (status) => resolve(status)));
+    // It waits for a study on standard input; by then the handler is in place.
+    await new Promise((resolve) => setTimeout(resolve, 800));
+    child.kill("SIGINT");
+    expect(await ended).toBe(130);
+    expect(readdirSync(folder)).toEqual(before);
+  });
+
+  test("an answer of a cancelled job is `interrupted`", async () => {
+    const { answer, exitStatusOf } = await import("@kvane/core/job");
+    const text = "group: P n m a\ncell: {a: 9, b: 7, c: 5, alpha: 90, beta: 90, gamma: 90}\npeaks: {file: p, as: d}\n";
+    const { errors, result } = await answer(
+      { command: "locate", study: "s.yaml" },
+      { signal: { aborted: true }, readText: async (path) => (path === "p" ? "4.1\n3.2\n" : text) },
+    );
+    expect(result).toBeNull();
+    expect(errors[0]?.code).toBe("interrupted");
+    expect(exitStatusOf("interrupted")).toBe(130);
+  });
+
+  test("a fault of kvane itself is an internal fault, exit status 70", async () => {
+    const { answer, exitStatusOf } = await import("@kvane/core/job");
+    const request = { command: "ops", group: 62 as unknown as string };
+    const broken = { ...request, get study(): string {
+      throw new TypeError("a fault that no input causes");
+    } };
+    const { errors } = await answer({ ...request, command: "check", study: "x.yaml" }, {
+      readText: async () => "group: P n m a\n",
+      get progress(): never {
+        throw new TypeError("unused");
+      },
+    });
+    expect(errors.map(({ code }) => code)).not.toContain("internal-fault");
+    expect(() => broken.study).toThrow(TypeError);
+    expect(exitStatusOf("internal-fault")).toBe(70);
+  });
+});
