@@ -15,7 +15,9 @@ export function writeReport(units: readonly Unit[], state: State): string {
   const from = page.indexOf(begin);
   const to = page.indexOf(end);
   const written =
-    from >= 0 && to > from ? page.slice(0, from) + text + page.slice(to + end.length) : `${page.trimEnd()}\n\n${text}\n`;
+    from >= 0 && to > from
+      ? page.slice(0, from) + text + page.slice(to + end.length)
+      : `${page.trimEnd()}\n\n${text}\n`;
   writeFileSync(file, written);
   return file;
 }

@@ -9,13 +9,15 @@ import { allUnits, sweeps } from "./units.js";
 
 const wanted = process.argv.slice(2);
 const unknown = wanted.filter((name) => !(name in sweeps));
-if (unknown.length > 0) throw new Error(`no sweep is called ${unknown.join(", ")}; there are ${Object.keys(sweeps).join(", ")}`);
+if (unknown.length > 0)
+  throw new Error(`no sweep is called ${unknown.join(", ")}; there are ${Object.keys(sweeps).join(", ")}`);
 
 const state = openState();
 const units = allUnits();
 const chosen = units.filter((unit) => wanted.length === 0 || wanted.includes(unit.sweep));
 const open = chosen.filter((unit) => !state.done.has(unitName(unit)));
-if (open.length < chosen.length) console.log(`${chosen.length - open.length} of ${chosen.length} units are done already`);
+if (open.length < chosen.length)
+  console.log(`${chosen.length - open.length} of ${chosen.length} units are done already`);
 open.forEach((unit, index) => {
   const counts = unit.run();
   state.keep(unitName(unit), counts);

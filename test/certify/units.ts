@@ -1,5 +1,5 @@
 import { manifold, specialPoints, type WaveVector } from "@kvane/core/kvectors";
-import { changeBasis, groupFromSetting, tabulatedSettings, type Site, type SpaceGroup } from "@kvane/core/spacegroups";
+import { changeBasis, groupFromSetting, type Site, type SpaceGroup, tabulatedSettings } from "@kvane/core/spacegroups";
 import { changedSite, changedWave, randomChange } from "../support/axes.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { type Random, seeded } from "../support/random.js";
@@ -11,7 +11,7 @@ import {
   decompositionCaseProblems,
   readCases,
 } from "../support/reference-cases.js";
-import { type SweepResult, sweepCase } from "../support/sweep-case.js";
+import { type SweepOptions, type SweepResult, sweepCase } from "../support/sweep-case.js";
 
 /** One piece of the sweep: small enough to be lost when the run is broken off, big enough to be worth a line. */
 export interface Unit {
@@ -31,9 +31,18 @@ export interface Counts {
 
 /** What each sweep goes over, and its seed. */
 export const sweeps = {
-  points: { what: "230 standard settings at every special point; a general and a special site, moments and displacements", seed: 101 },
-  random: { what: "230 standard settings at 12 random rational k each, and on their lines and planes with open letters", seed: 102 },
-  axes: { what: "230 groups in 2 random bases each, origin shifted, at a special point and a random rational k", seed: 103 },
+  points: {
+    what: "230 standard settings at every special point; a general and a special site, moments and displacements",
+    seed: 101,
+  },
+  random: {
+    what: "230 standard settings at 12 random rational k each, and on their lines and planes with open letters",
+    seed: 102,
+  },
+  axes: {
+    what: "230 groups in 2 random bases each, origin shifted, at a special point and a random rational k",
+    seed: 103,
+  },
   settings: { what: "530 tabulated settings at a special point and a random rational k", seed: 104 },
   characters: { what: "reference sets of characters (898)", seed: null },
   decompositions: { what: "reference decompositions (153)", seed: null },
@@ -67,7 +76,10 @@ function unit(sweep: SweepName, number: number, run: (random: Random) => readonl
   return { sweep, number, run: () => total(run(seeded(10_000 * (sweeps[sweep].seed ?? 0) + number))) };
 }
 
-function caseUnits<Case>(sweep: "characters" | "decompositions", problemsOf: (entry: Case) => readonly string[]): Unit[] {
+function caseUnits<Case>(
+  sweep: "characters" | "decompositions",
+  problemsOf: (entry: Case) => readonly string[],
+): Unit[] {
   const cases = readCases<Case>(`${sweep}.jsonl`);
   const size = 50;
   return Array.from({ length: Math.ceil(cases.length / size) }, (_, part) => ({
@@ -80,8 +92,8 @@ function caseUnits<Case>(sweep: "characters" | "decompositions", problemsOf: (en
   }));
 }
 
-function options(random: Random): { cells: number; seed: number } {
-  return { cells, seed: random.below(1_000_000) };
+function options(random: Random): SweepOptions {
+  return { cells, seed: random.below(1_000_000), polar: true };
 }
 
 function pick<T>(random: Random, items: readonly T[]): T {

@@ -1,7 +1,7 @@
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
-import { describe, expect, test } from "vitest";
 import { describedCommands } from "@kvane/core/reports";
+import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "./command.js";
 import { schemaErrors } from "./schemas.js";
 
@@ -100,7 +100,8 @@ describe("--json gives the shape of the schema", () => {
 
 /** Values that the contract of the interface spells out. */
 describe("names and forms of the contract", () => {
-  const resultOf = async (...words: string[]) => JSON.parse((await kvane([...words, "--json"], { cwd: folder })).stdout).result;
+  const resultOf = async (...words: string[]) =>
+    JSON.parse((await kvane([...words, "--json"], { cwd: folder })).stdout).result;
 
   test("a group, an exact k and a measured k", async () => {
     const exact = await resultOf("star", "62", "--k", "0,1/2,0");
@@ -143,7 +144,10 @@ describe("names and forms of the contract", () => {
   });
 
   test("the echo of the input holds no path of the machine, only what was typed", async () => {
-    for (const words of [["run", "--example"], ["check", "study.yaml"]]) {
+    for (const words of [
+      ["run", "--example"],
+      ["check", "study.yaml"],
+    ]) {
       const { stdout } = await kvane([...words, "--json"], { cwd: folder });
       expect(stdout).not.toContain(folder);
       expect(stdout).not.toContain(process.cwd());

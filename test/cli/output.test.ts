@@ -51,7 +51,8 @@ describe("run --out DIR", () => {
     // The report begins with the page that was printed, up to its last sections, and goes on with everything else.
     expect(report.slice(0, 200)).toBe(stdout.slice(0, 200));
     expect(report.length).toBeGreaterThan(stdout.length);
-    for (const line of [...report.split("\n"), ...stdout.split("\n")]) expect([...line].length, line).toBeLessThanOrEqual(100);
+    for (const line of [...report.split("\n"), ...stdout.split("\n")])
+      expect([...line].length, line).toBeLessThanOrEqual(100);
   });
 
   test("its tables agree with the JSON", () => {

@@ -1,7 +1,7 @@
 import { spawn, spawnSync } from "node:child_process";
 import { readdirSync } from "node:fs";
-import { describe, expect, test } from "vitest";
 import { version } from "@kvane/core/job";
+import { describe, expect, test } from "vitest";
 import { commandFile, kvane, kvaneProcess, scratchFolder } from "./command.js";
 
 /** What only a whole process shows; everything else is tested without one. */
@@ -32,10 +32,10 @@ describe("the built command", () => {
   });
 
   test("colours errors only where that is wanted", async () => {
-    const escape = "\u001b[";
-    expect((await kvaneProcess(["ops", "nonsense"])).stderr).not.toContain(escape);
-    expect((await kvaneProcess(["ops", "nonsense"], { env: { FORCE_COLOR: "1" } })).stderr).toContain(escape);
-    expect((await kvaneProcess(["ops", "nonsense"], { env: { NO_COLOR: "1" } })).stderr).not.toContain(escape);
+    const colour = "\u001b[";
+    expect((await kvaneProcess(["ops", "nonsense"])).stderr).not.toContain(colour);
+    expect((await kvaneProcess(["ops", "nonsense"], { env: { FORCE_COLOR: "1" } })).stderr).toContain(colour);
+    expect((await kvaneProcess(["ops", "nonsense"], { env: { NO_COLOR: "1" } })).stderr).not.toContain(colour);
   });
 
   test.skipIf(process.platform === "win32")("a closed pipe is no error", () => {
@@ -72,18 +72,16 @@ describe("the built command", () => {
 
   test("a fault of kvane itself is an internal fault, exit status 70", async () => {
     const { answer, exitStatusOf } = await import("@kvane/core/job");
-    const request = { command: "ops", group: 62 as unknown as string };
-    const broken = { ...request, get study(): string {
-      throw new TypeError("a fault that no input causes");
-    } };
-    const { errors } = await answer({ ...request, command: "check", study: "x.yaml" }, {
-      readText: async () => "group: P n m a\n",
-      get progress(): never {
-        throw new TypeError("unused");
+    const request = {
+      command: "ops",
+      get group(): string {
+        throw new TypeError("a fault that no input causes");
       },
-    });
-    expect(errors.map(({ code }) => code)).not.toContain("internal-fault");
-    expect(() => broken.study).toThrow(TypeError);
+    };
+    const { errors, result } = await answer(request, { readText: async () => "" });
+    expect(result).toBeNull();
+    expect(errors).toMatchObject([{ code: "internal-fault", found: "TypeError: a fault that no input causes" }]);
+    expect(errors[0]?.remedy).toContain("report");
     expect(exitStatusOf("internal-fault")).toBe(70);
   });
 });

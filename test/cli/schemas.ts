@@ -1,5 +1,5 @@
-import { Ajv2020, type ValidateFunction } from "ajv/dist/2020.js";
 import { answerSchema } from "@kvane/core/reports";
+import { Ajv2020, type ValidateFunction } from "ajv/dist/2020.js";
 
 const ajv = new Ajv2020({ strict: true, strictTypes: false, allErrors: true });
 const validators = new Map<string, ValidateFunction>();
@@ -12,7 +12,9 @@ export function schemaErrors(command: string, answer: unknown): string[] {
     validators.set(command, validate);
   }
   if (validate(answer)) return [];
-  return (validate.errors ?? []).map(({ instancePath, message, params }) => `${instancePath} ${message} ${JSON.stringify(params)}`);
+  return (validate.errors ?? []).map(
+    ({ instancePath, message, params }) => `${instancePath} ${message} ${JSON.stringify(params)}`,
+  );
 }
 
 /**

@@ -1,13 +1,13 @@
-import { describe, expect, test } from "vitest";
 import { plannedCommands } from "@kvane/core/job";
 import { describedCommands } from "@kvane/core/reports";
+import { describe, expect, test } from "vitest";
 import { kvane, shellWords } from "./command.js";
 
 describe("usage", () => {
   test.each([
     [["strr", "62"], "unknown-command", "star"],
     [["ops", "62", "--kk"], "unknown-option", "--help"],
-    [["star", "62", "--ks", "0,0,0"], "unknown-option", "--k"],
+    [["modes", "62", "--sites", "A 0 0 0"], "unknown-option", "--site"],
     [["ops", "62", "--csv"], "unknown-option", "--help"],
     [["star", "62", "--k"], "missing-argument", "behind the option"],
     [["star", "62", "--k", "--json"], "missing-argument", "behind the option"],
@@ -47,7 +47,17 @@ describe("usage", () => {
   });
 
   test("sites are counted one by one: the option is not greedy", async () => {
-    const { stdout } = await kvane(["modes", "--k", "0,0,0", "--site", "A 0 0 0", "62", "--site", "B 0 0 1/2", "--json"]);
+    const { stdout } = await kvane([
+      "modes",
+      "--k",
+      "0,0,0",
+      "--site",
+      "A 0 0 0",
+      "62",
+      "--site",
+      "B 0 0 1/2",
+      "--json",
+    ]);
     const labels = JSON.parse(stdout).result.sites.map(({ label }: { label: string }) => label);
     expect(labels).toEqual(["A", "B"]);
   });

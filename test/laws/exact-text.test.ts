@@ -2,8 +2,8 @@ import { type SmallIrreps, smallIrreps } from "@kvane/core/irreps";
 import { manifold } from "@kvane/core/kvectors";
 import { siteModes } from "@kvane/core/modes";
 import { siteOrbit } from "@kvane/core/spacegroups";
-import { formatCyclotomic, formatPhased, type Phase } from "#core/numbers/index.js";
 import { describe, expect, test } from "vitest";
+import { formatCyclotomic, formatPhased, type Phase } from "#core/numbers/index.js";
 import { evaluateText } from "../support/evaluate-text.js";
 import { letterValues } from "../support/float-group.js";
 import { cyclotomicValue, phasedValue } from "../support/float-irreps.js";
@@ -74,7 +74,8 @@ describe("exact texts say what the records hold", () => {
           for (const entry of irrep.matrices.flat(2)) {
             const [re, im] = evaluateText(formatCyclotomic(entry));
             const [x, y] = cyclotomicValue(entry);
-            if (!(Math.hypot(re - x, im - y) < tolerance)) problems.push(`${formatCyclotomic(entry)} is not ${x}, ${y}`);
+            if (!(Math.hypot(re - x, im - y) < tolerance))
+              problems.push(`${formatCyclotomic(entry)} is not ${x}, ${y}`);
             texts += 1;
           }
         }

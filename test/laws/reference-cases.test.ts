@@ -11,7 +11,7 @@ import {
  * All cases of the reference tables (test/fixtures/ORIGIN.md), made without kvane. The time that they take in one
  * process is printed and not asserted.
  */
-describe("reference tables", () => {
+describe("reference tables", { timeout: 240_000 }, () => {
   test("898 sets of characters: dimension, reality, −k, arms", () => {
     const cases = readCases<CharacterCase>("characters.jsonl");
     expect(cases).toHaveLength(898);

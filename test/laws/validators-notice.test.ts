@@ -128,7 +128,9 @@ describe("a conjugated phase is noticed", () => {
 
 describe("other faults are noticed", () => {
   const sound = soundOf("P 63 c m", wave("0 0 0"), site("M", "0.333 0 0"));
-  const twoDimensional = sound.modes.irreps.findIndex(({ irrep, multiplicity }) => irrep.dimension === 2 && multiplicity > 0);
+  const twoDimensional = sound.modes.irreps.findIndex(
+    ({ irrep, multiplicity }) => irrep.dimension === 2 && multiplicity > 0,
+  );
   const spoiled = (change: (entry: SiteModes["irreps"][number]) => SiteModes["irreps"][number]): SiteModes => ({
     ...sound.modes,
     irreps: sound.modes.irreps.map((entry, index) => (index === twoDimensional ? change(entry) : entry)),
@@ -144,7 +146,10 @@ describe("other faults are noticed", () => {
   });
 
   test("a character that is not the trace", () => {
-    const [first, second, ...rest] = sound.irreps.irreps as [SmallIrreps["irreps"][number], SmallIrreps["irreps"][number]];
+    const [first, second, ...rest] = sound.irreps.irreps as [
+      SmallIrreps["irreps"][number],
+      SmallIrreps["irreps"][number],
+    ];
     const swapped = [{ ...first, characters: second.characters }, { ...second, characters: first.characters }, ...rest];
     expect(irrepProblems(sound.group, { ...sound.irreps, irreps: swapped }).join()).toContain("is not the trace");
   });
@@ -163,7 +168,10 @@ describe("other faults are noticed", () => {
   test("a copy repeated, a copy left out", () => {
     const repeated = spoiled((entry) => {
       const half = entry.modes.slice(0, 2);
-      return { ...entry, modes: entry.modes.map((mode, index) => ({ ...(half[index % 2] as typeof mode), copy: mode.copy })) };
+      return {
+        ...entry,
+        modes: entry.modes.map((mode, index) => ({ ...(half[index % 2] as typeof mode), copy: mode.copy })),
+      };
     });
     expect(modeProblems(sound.group, repeated)).toContain("the mode vectors are linearly dependent");
     const short = spoiled((entry) => ({ ...entry, multiplicity: entry.multiplicity - 1, modes: entry.modes.slice(2) }));

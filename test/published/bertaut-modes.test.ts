@@ -73,13 +73,17 @@ describe("Bertaut's modes in Pbnm at k = 0", () => {
   });
 
   test("NdMnO3: A-type along b, and Mn and Nd ferro along c are one irrep [read: JPCM 21, 306001 (2009)]", () => {
-    const mn = ["A_y", "F_z"].flatMap((name) => irrepsHolding("P b n m", bModes, bertautVector("P b n m", bModes, bAtoms, name)));
+    const mn = ["A_y", "F_z"].flatMap((name) =>
+      irrepsHolding("P b n m", bModes, bertautVector("P b n m", bModes, bAtoms, name)),
+    );
     const nd = irrepsHolding("P b n m", aModes, bertautVector("P b n m", aModes, aAtoms, "F_z"));
     expect(new Set([...mn, ...nd]).size).toBe(1);
   });
 
   test("LaFeO3: G along a with weak ferromagnetism along c [memory 85: Koehler et al., Phys. Rev. 118, 58 (1960)]", () => {
-    const labels = ["G_x", "F_z"].map((name) => irrepsHolding("P b n m", bModes, bertautVector("P b n m", bModes, bAtoms, name)));
+    const labels = ["G_x", "F_z"].map((name) =>
+      irrepsHolding("P b n m", bModes, bertautVector("P b n m", bModes, bAtoms, name)),
+    );
     expect(labels[0]).toHaveLength(1);
     expect(labels[1]).toEqual(labels[0]);
   });

@@ -288,7 +288,8 @@ const whole: readonly Published[] = [
     expected: "1x1*3",
     source: "Corliss, Elliott & Hastings, Phys. Rev. 104, 924 (1956)",
     mark: "memory 88",
-    counts: "by hand: the little co-group -4 has one-dimensional irreps only, and -4 turns the three components by 1, i, -i",
+    counts:
+      "by hand: the little co-group -4 has one-dimensional irreps only, and -4 turns the three components by 1, i, -i",
   },
   {
     name: "BaCrF5",

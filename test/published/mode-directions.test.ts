@@ -29,7 +29,9 @@ describe("directions of moments in published structures", () => {
   test("MnO, NiO: the two-dimensional irrep is the (111) sheet [read]; FeO: the other is [111] [memory 88]", () => {
     // Goodwin et al., Phys. Rev. Lett. 96, 047209 (2006); Shull, Strauser & Wollan, Phys. Rev. 83, 333 (1951); Roth (1958).
     const modes = modesOf("F m -3 m", "1/2 1/2 1/2", "0 0 0");
-    const sheet = [realVector([[1, 1, -2]]), realVector([[1, -1, 0]])].map((vector) => holding("F m -3 m", modes, vector));
+    const sheet = [realVector([[1, 1, -2]]), realVector([[1, -1, 0]])].map((vector) =>
+      holding("F m -3 m", modes, vector),
+    );
     const axis = holding("F m -3 m", modes, realVector([[1, 1, 1]]));
     expect(sheet.map((entry) => entry.dimension)).toEqual([2, 2]);
     expect(sheet[0]?.label).toBe(sheet[1]?.label);
@@ -44,7 +46,15 @@ describe("directions of moments in published structures", () => {
 
   test("MnF2: + − along c, magnetic group P4_2'/mnm' [memory 93: Erickson, Phys. Rev. 90, 779 (1953)]", () => {
     const modes = modesOf("P 42/m n m", "0 0 0", "0 0 0");
-    const vector = patternVector("P 42/m n m", modes, ["0 0 0", "1/2 1/2 1/2"], [[0, 0, 1], [0, 0, -1]]);
+    const vector = patternVector(
+      "P 42/m n m",
+      modes,
+      ["0 0 0", "1/2 1/2 1/2"],
+      [
+        [0, 0, 1],
+        [0, 0, -1],
+      ],
+    );
     const { characters, dimension } = holding("P 42/m n m", modes, vector);
     expect(dimension).toBe(1);
     // Primed are the operators that exchange x and y: fourfold axes and diagonal twofold axes and mirrors.
@@ -74,7 +84,9 @@ describe("directions of moments in published structures", () => {
   test("hexagonal YMnO3 across [100], ScMnO3 along it: irreps of multiplicity 1 and 2 [read: PRB 62, 9498 (2000)]", () => {
     const modes = modesOf("P 63 c m", "0 0 0", "0.333 0 0");
     const read = floatModes(groupOf("P 63 c m"), modes);
-    const atom = read.positions.findIndex(([x, y]) => Math.abs((x as number) - 0.333) < 1e-9 && Math.abs(y as number) < 1e-9);
+    const atom = read.positions.findIndex(
+      ([x, y]) => Math.abs((x as number) - 0.333) < 1e-9 && Math.abs(y as number) < 1e-9,
+    );
     const onAtom = read.modes.flatMap((list, irrep) =>
       read.irreps.dimensions[irrep] === 1 && list.length > 0
         ? [list.map((mode) => Array.from(mode.real.slice(3 * atom, 3 * atom + 3)))]
@@ -82,7 +94,13 @@ describe("directions of moments in published structures", () => {
     );
     expect(onAtom.map((list) => list.length).sort()).toEqual([1, 1, 2, 2]);
     for (const vectors of onAtom) {
-      const plane = vectors.length === 1 ? [[1, 2, 0]] : [[1, 0, 0], [0, 0, 1]];
+      const plane =
+        vectors.length === 1
+          ? [[1, 2, 0]]
+          : [
+              [1, 0, 0],
+              [0, 0, 1],
+            ];
       const all = [...plane, ...vectors].map((vector) => realVector([vector]));
       expect(rankOf(all, 3)).toBe(vectors.length);
     }
@@ -102,6 +120,8 @@ describe("directions of moments in published structures", () => {
     // A moment along the axis of 4mm is turned over by the mirrors and by nothing else.
     for (const { rotation, character } of longitudinal.characters)
       expect(character).toEqual([Math.round(determinantOf(rotation)), 0]);
-    expect(longitudinal.characters.filter(({ rotation }) => spur(rotation) === 1 && determinantOf(rotation) < 0)).toHaveLength(4);
+    expect(
+      longitudinal.characters.filter(({ rotation }) => spur(rotation) === 1 && determinantOf(rotation) < 0),
+    ).toHaveLength(4);
   });
 });

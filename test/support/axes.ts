@@ -18,7 +18,11 @@ export function randomChange(random: Random): BasisChange {
   const entries = random.pick(matrices).map((entry): Pair => [entry, 1]);
   const shift = (): Pair => reduced(random.below(48), 48);
   return {
-    matrix: [entries.slice(0, 3), entries.slice(3, 6), entries.slice(6, 9)] as unknown as readonly [Triple, Triple, Triple],
+    matrix: [entries.slice(0, 3), entries.slice(3, 6), entries.slice(6, 9)] as unknown as readonly [
+      Triple,
+      Triple,
+      Triple,
+    ],
     shift: [shift(), shift(), shift()],
   };
 }
@@ -50,9 +54,7 @@ function adjugateOf(m: readonly number[]): number[] {
   return Array.from({ length: 9 }, (_, index) => {
     const [row, column] = [Math.floor(index / 3), index % 3];
     // The cofactor of entry (column, row), with its sign through cyclic indices.
-    return (
-      at(column + 1, row + 1) * at(column + 2, row + 2) - at(column + 1, row + 2) * at(column + 2, row + 1)
-    );
+    return at(column + 1, row + 1) * at(column + 2, row + 2) - at(column + 1, row + 2) * at(column + 2, row + 1);
   });
 }
 

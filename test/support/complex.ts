@@ -88,7 +88,9 @@ export function distance(a: ComplexMatrix, b: ComplexMatrix): number {
 /** Rank by elimination with full row pivoting; rows are scaled to length 1 first, a pivot below 1e-7 counts as zero. */
 export function rank(matrix: ComplexMatrix): number {
   const { rows, columns } = matrix;
-  const re: Float64Array[] = Array.from({ length: rows }, (_, row) => matrix.real.slice(row * columns, (row + 1) * columns));
+  const re: Float64Array[] = Array.from({ length: rows }, (_, row) =>
+    matrix.real.slice(row * columns, (row + 1) * columns),
+  );
   const im: Float64Array[] = Array.from({ length: rows }, (_, row) =>
     matrix.imaginary.slice(row * columns, (row + 1) * columns),
   );
@@ -128,7 +130,13 @@ function largestBelow(re: readonly Float64Array[], im: readonly Float64Array[], 
   return pivot;
 }
 
-function clear(re: readonly Float64Array[], im: readonly Float64Array[], column: number, top: number, row: number): void {
+function clear(
+  re: readonly Float64Array[],
+  im: readonly Float64Array[],
+  column: number,
+  top: number,
+  row: number,
+): void {
   const pivotRe = re[top] as Float64Array;
   const pivotIm = im[top] as Float64Array;
   const rowRe = re[row] as Float64Array;

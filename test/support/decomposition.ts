@@ -3,8 +3,8 @@ import type { WaveVector } from "@kvane/core/kvectors";
 import { type SiteModes, siteModes } from "@kvane/core/modes";
 import { siteOrbit } from "@kvane/core/spacegroups";
 import { latticeCoordinates, minus } from "./float-group.js";
-import { type FloatMode, floatModes, rankOf } from "./validate-modes.js";
 import { groupOf } from "./parsed-groups.js";
+import { type FloatMode, floatModes, rankOf } from "./validate-modes.js";
 import { site, wave } from "./written.js";
 
 /** Modes of a site, everything given as text. */
@@ -56,7 +56,11 @@ export function realVector(components: readonly (readonly number[])[]): Pick<Flo
 }
 
 /** Labels of the irreps whose modes span the vector: one label for a vector of a single irrep, else none. */
-export function irrepsHolding(group: string, modes: SiteModes, vector: Pick<FloatMode, "real" | "imaginary">): string[] {
+export function irrepsHolding(
+  group: string,
+  modes: SiteModes,
+  vector: Pick<FloatMode, "real" | "imaginary">,
+): string[] {
   const read = floatModes(groupOf(group), modes);
   const size = 3 * read.positions.length;
   return read.modes.flatMap((own, irrep) =>
@@ -75,9 +79,7 @@ export function patternVector(
   const components = read.positions.map(() => [0, 0, 0] as readonly number[]);
   atoms.forEach((text, at) => {
     const wanted = site("M", text).position.map(([top, bottom]) => top / bottom);
-    const index = read.positions.findIndex(
-      (own) => latticeCoordinates(read.irreps.group, minus(own, wanted)) !== null,
-    );
+    const index = read.positions.findIndex((own) => latticeCoordinates(read.irreps.group, minus(own, wanted)) !== null);
     if (index < 0) throw new Error(`there is no atom at ${text}`);
     components[index] = moments[at] as readonly number[];
   });

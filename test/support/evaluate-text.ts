@@ -88,7 +88,8 @@ function readFactor(reader: Reader): Complex | null {
 function readInside(reader: Reader, opening: number, closing: string): Complex {
   reader.position += opening;
   const value = readSum(reader);
-  if (reader.text[reader.position] !== closing) throw new Error(`expected ${closing} at ${reader.position} in ${reader.text}`);
+  if (reader.text[reader.position] !== closing)
+    throw new Error(`expected ${closing} at ${reader.position} in ${reader.text}`);
   reader.position += 1;
   return value;
 }

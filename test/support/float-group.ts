@@ -53,7 +53,9 @@ function crossProduct(a: readonly number[], b: readonly number[]): number[] {
 }
 
 export function inner(a: readonly number[], b: readonly number[]): number {
-  return (a[0] as number) * (b[0] as number) + (a[1] as number) * (b[1] as number) + (a[2] as number) * (b[2] as number);
+  return (
+    (a[0] as number) * (b[0] as number) + (a[1] as number) * (b[1] as number) + (a[2] as number) * (b[2] as number)
+  );
 }
 
 /** R x on a column. */
@@ -118,7 +120,8 @@ export function latticeCoordinates(group: FloatGroup, x: readonly number[]): num
 export function reduce(group: FloatGroup, operator: FloatOperator): Reduced {
   for (let index = 0; index < group.operators.length; index++) {
     const candidate = group.operators[index] as FloatOperator;
-    if (candidate.rotation.some((entry, at) => Math.abs(entry - (operator.rotation[at] as number)) > tolerance)) continue;
+    if (candidate.rotation.some((entry, at) => Math.abs(entry - (operator.rotation[at] as number)) > tolerance))
+      continue;
     const shift = minus(operator.translation, candidate.translation);
     if (latticeCoordinates(group, shift) !== null) return { index, shift };
   }

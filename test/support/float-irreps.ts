@@ -51,7 +51,11 @@ export function phaseValue(phase: PhaseRecord, letters: readonly number[]): numb
 }
 
 /** `e^{2πi·phase} · factor`. */
-export function phasedValue(phase: PhaseRecord, factor: CyclotomicRecord, letters: readonly number[]): [number, number] {
+export function phasedValue(
+  phase: PhaseRecord,
+  factor: CyclotomicRecord,
+  letters: readonly number[],
+): [number, number] {
   const [re, im] = cyclotomicValue(factor);
   const angle = 2 * Math.PI * phaseValue(phase, letters);
   const [cosine, sine] = [Math.cos(angle), Math.sin(angle)];
@@ -66,21 +70,20 @@ export function floatIrreps(group: SpaceGroup, irreps: SmallIrreps): FloatIrreps
     labels: irreps.irreps.map((irrep) => irrep.label),
     dimensions: irreps.irreps.map((irrep) => irrep.dimension),
     matrices: irreps.irreps.map((irrep) =>
-      irrep.matrices.map((rows, index) => {
-        const matrix = zeroMatrix(rows.length, rows.length);
-        rows.forEach((row, at) =>
-          row.forEach((entry, column) => {
-            const phase = irreps.phases[index] as PhaseRecord;
-            const [re, im] = phasedValue(phase, entry, letterValues);
-            matrix.real[at * rows.length + column] = re;
-            matrix.imaginary[at * rows.length + column] = im;
-          }),
-        );
-        return matrix;
-      }),
+      irrep.matrices.map((rows, index) => floatMatrix(rows, irreps.phases[index] as PhaseRecord)),
     ),
     characters: irreps.irreps.map((irrep) =>
       irrep.characters.map((character) => phasedValue(character.phase, character.factor, letterValues)),
     ),
   };
+}
+
+function floatMatrix(rows: readonly (readonly CyclotomicRecord[])[], phase: PhaseRecord): ComplexMatrix {
+  const matrix = zeroMatrix(rows.length, rows.length);
+  rows.flat().forEach((entry, index) => {
+    const [re, im] = phasedValue(phase, entry, letterValues);
+    matrix.real[index] = re;
+    matrix.imaginary[index] = im;
+  });
+  return matrix;
 }

@@ -29,7 +29,10 @@ export function randomWaveVector(group: SpaceGroup, random: Random): WaveVector 
     const rotation = (random.pick(operators) as FloatOperator).rotation;
     const direction = fixedRow(rotation, random);
     const step = random.pick(steps);
-    k = plus(k, direction.map((entry) => entry * step));
+    k = plus(
+      k,
+      direction.map((entry) => entry * step),
+    );
   }
   const [a, b, c] = k.map((entry) => asFraction(entry, grain)) as [Pair, Pair, Pair];
   return exactWaveVector([a, b, c]);
@@ -97,7 +100,10 @@ function finiteOperator(group: FloatGroup, random: Random): FloatOperator {
   for (let tries = 0; tries < 12; tries++) {
     const operator = random.pick(group.operators);
     const shift = group.basis.map((vector) => vector.map((entry) => entry * (random.below(3) - 1)));
-    const candidate = { ...operator, translation: shift.reduce((sum, vector) => plus(sum, vector), [...operator.translation]) };
+    const candidate = {
+      ...operator,
+      translation: shift.reduce((sum, vector) => plus(sum, vector), [...operator.translation]),
+    };
     let power: FloatOperator = candidate;
     while (!isUnit(power.rotation)) power = compose(power, candidate);
     if (!isUnit(candidate.rotation) && power.translation.every((entry) => Math.abs(entry) < 1e-9)) return candidate;

@@ -19,6 +19,8 @@ export interface SweepOptions {
   /** Cells of the supercell compared one by one. */
   readonly cells: number;
   readonly seed: number;
+  /** Also displacements (polar vectors), on the first site. */
+  readonly polar: boolean;
 }
 
 /** Supercells above this many cells are left to the transformation law, which needs none. */
@@ -27,7 +29,12 @@ export const largestSupercell = 4096;
 /**
  * Small irreps of a group at k, and for every site its modes: all validators. Whatever is thrown counts as a problem.
  */
-export function sweepCase(group: SpaceGroup, k: WaveVector, sites: readonly Site[], options: SweepOptions): SweepResult {
+export function sweepCase(
+  group: SpaceGroup,
+  k: WaveVector,
+  sites: readonly Site[],
+  options: SweepOptions,
+): SweepResult {
   const name = `${group.name.hermannMauguin ?? group.name.hall} ${group.name.choice} ${group.name.basisChange} k ${formatWaveVector(k)}`;
   const problems: string[] = [];
   let fields = 0;
@@ -46,15 +53,18 @@ export function sweepCase(group: SpaceGroup, k: WaveVector, sites: readonly Site
   });
   if (irreps !== null)
     for (const site of sites)
-      for (const axial of site === sites[0] ? [true, false] : [true])
-        guarded(`${name} site ${site.position.map((entry) => entry.join("/")).join(",")}${axial ? "" : " polar"}`, () => {
-          const found = siteModes(group, irreps as SmallIrreps, siteOrbit(group, site, null), { axial });
-          modes += 3 * found.orbit.positions.length;
-          const wrong = modeProblems(group, found);
-          if (!isRational(k) || supercellSize(floatGroup(group), componentsOf(k)) > largestSupercell) return wrong;
-          fields += 1;
-          return [...wrong, ...fieldProblems(group, found, options)];
-        });
+      for (const axial of options.polar && site === sites[0] ? [true, false] : [true])
+        guarded(
+          `${name} site ${site.position.map((entry) => entry.join("/")).join(",")}${axial ? "" : " polar"}`,
+          () => {
+            const found = siteModes(group, irreps as SmallIrreps, siteOrbit(group, site, null), { axial });
+            modes += 3 * found.orbit.positions.length;
+            const wrong = modeProblems(group, found);
+            if (!isRational(k) || supercellSize(floatGroup(group), componentsOf(k)) > largestSupercell) return wrong;
+            fields += 1;
+            return [...wrong, ...fieldProblems(group, found, options)];
+          },
+        );
   return { irreps: (irreps as SmallIrreps | null)?.irreps.length ?? 0, modes, fields, problems };
 }
 

@@ -1,14 +1,7 @@
 import type { SiteModes } from "@kvane/core/modes";
 import type { SpaceGroup } from "@kvane/core/spacegroups";
 import type { ComplexMatrix } from "./complex.js";
-import {
-  type FloatGroup,
-  type FloatOperator,
-  inner,
-  inverse,
-  latticeCoordinates,
-  turnColumn,
-} from "./float-group.js";
+import { type FloatGroup, type FloatOperator, inner, inverse, latticeCoordinates, turnColumn } from "./float-group.js";
 import { type Random, seeded } from "./random.js";
 import { type FloatModes, floatModes, landings, vectorMatrix } from "./validate-modes.js";
 
@@ -127,16 +120,16 @@ function fieldOf(read: FloatModes, supercell: Supercell, amplitudes: Amplitudes,
   const re = new Float64Array(3 * atoms);
   const im = new Float64Array(3 * atoms);
   const side = options.conjugateModes === true ? -1 : 1;
-  read.modes.forEach((list, irrep) =>
+  read.modes.forEach((list, irrep) => {
     list.forEach((mode, at) => {
-      const [x, y] = amplitudes[irrep]?.[at] as readonly [number, number];
+      const [x, y] = (amplitudes[irrep] as Amplitudes[number])[at] as readonly [number, number];
       for (let index = 0; index < re.length; index++) {
         const [u, v] = [mode.real[index] as number, side * (mode.imaginary[index] as number)];
         re[index] = (re[index] as number) + x * u - y * v;
         im[index] = (im[index] as number) + x * v + y * u;
       }
-    }),
-  );
+    });
+  });
   const [first, second, third] = supercell.periods;
   const moments = new Float64Array(first * second * third * 3 * atoms);
   for (let cell = 0; cell < first * second * third; cell++) {

@@ -1,6 +1,6 @@
 import type { SmallIrreps } from "@kvane/core/irreps";
 import type { SpaceGroup } from "@kvane/core/spacegroups";
-import { adjoint, type Complex, distance, product, trace, turned, unitMatrix } from "./complex.js";
+import { adjoint, type Complex, type ComplexMatrix, distance, product, trace, turned, unitMatrix } from "./complex.js";
 import {
   compose,
   countArms,
@@ -39,9 +39,14 @@ function littleGroupProblems(read: FloatIrreps, irreps: SmallIrreps): string[] {
   if (arms !== irreps.arms) problems.push(`${irreps.arms} arms instead of ${arms}`);
   const reversing = operatorsTaking(read.group, read.k, -1);
   const minusK =
-    reversing.length === 0 ? "not in star" : reversing.some((index) => expected.includes(index)) ? "equivalent" : "in star";
+    reversing.length === 0
+      ? "not in star"
+      : reversing.some((index) => expected.includes(index))
+        ? "equivalent"
+        : "in star";
   if (minusK !== irreps.minusK) problems.push(`−k is said to be ${irreps.minusK}, it is ${minusK}`);
-  if (irreps.phases.length !== given.length) problems.push(`${irreps.phases.length} phases for ${given.length} operators`);
+  if (irreps.phases.length !== given.length)
+    problems.push(`${irreps.phases.length} phases for ${given.length} operators`);
   return problems;
 }
 
@@ -60,7 +65,7 @@ export function representationProblems(read: FloatIrreps): string[] {
     const size = read.dimensions[irrep] as number;
     const identity = operators.indexOf(reduce(group, identityOperator).index);
     if (!matrices.every((matrix) => matrix.rows === size)) problems.push(`${name}: a matrix is not ${size} × ${size}`);
-    else if (distance(matrices[identity] as never, unitMatrix(size)) > tolerance)
+    else if (distance(matrices[identity] as ComplexMatrix, unitMatrix(size)) > tolerance)
       problems.push(`${name}: D of the identity is not 1`);
     else {
       const worst = worstProduct(read, matrices, products);
@@ -79,10 +84,10 @@ function worstProduct(
 ): string | null {
   for (let first = 0; first < matrices.length; first++)
     for (let second = 0; second < matrices.length; second++) {
-      const { index, shift } = products[first]?.[second] as Reduced;
+      const { index, shift } = (products[first] as readonly Reduced[])[second] as Reduced;
       const at = read.operators.indexOf(index);
-      const expected = turned(matrices[at] as never, inner(read.k, shift));
-      const error = distance(product(matrices[first] as never, matrices[second] as never), expected);
+      const expected = turned(matrices[at] as ComplexMatrix, inner(read.k, shift));
+      const error = distance(product(matrices[first] as ComplexMatrix, matrices[second] as ComplexMatrix), expected);
       if (error > tolerance)
         return `D(g)D(h) ≠ D(gh) for operators ${read.operators[first]}, ${read.operators[second]} (by ${error.toPrecision(2)})`;
     }
@@ -136,7 +141,8 @@ export function overlap(a: readonly Complex[], b: readonly Complex[]): [number, 
 
 /** χ of any operator of the little group: its representative's character times the phase of the translation. */
 function characterAt(read: FloatIrreps, irrep: number, { index, shift }: Reduced): [number, number] {
-  const [re, im] = read.characters[irrep]?.[read.operators.indexOf(index)] as Complex;
+  const characters = read.characters[irrep] as readonly Complex[];
+  const [re, im] = characters[read.operators.indexOf(index)] as Complex;
   const angle = 2 * Math.PI * inner(read.k, shift);
   return [re * Math.cos(angle) - im * Math.sin(angle), re * Math.sin(angle) + im * Math.cos(angle)];
 }

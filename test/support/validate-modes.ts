@@ -1,4 +1,4 @@
-import type { SiteModes } from "@kvane/core/modes";
+import type { Mode, SiteModes } from "@kvane/core/modes";
 import type { SpaceGroup } from "@kvane/core/spacegroups";
 import { type ComplexMatrix, rank, zeroMatrix } from "./complex.js";
 import {
@@ -10,7 +10,7 @@ import {
   latticeCoordinates,
   letterValues,
   minus,
-  } from "./float-group.js";
+} from "./float-group.js";
 import { type FloatIrreps, floatIrreps, phasedValue } from "./float-irreps.js";
 import { overlap } from "./validate-irreps.js";
 
@@ -49,19 +49,20 @@ export function floatModes(group: SpaceGroup, modes: SiteModes): FloatModes {
     positions,
     suborbits: modes.suborbits,
     multiplicities: modes.irreps.map((entry) => entry.multiplicity),
-    modes: modes.irreps.map((entry) =>
-      entry.modes.map((mode) => {
-        const read = { real: new Float64Array(3 * positions.length), imaginary: new Float64Array(3 * positions.length) };
-        mode.moments.forEach((moment, atom) =>
-          moment.vector.forEach((component, axis) => {
-            const [re, im] = phasedValue(moment.phase, component, letterValues);
-            read.real[3 * atom + axis] = re;
-            read.imaginary[3 * atom + axis] = im;
-          }),
-        );
-        return { ...read, copy: mode.copy, partner: mode.partner, suborbit: mode.suborbit };
-      }),
-    ),
+    modes: modes.irreps.map((entry) => entry.modes.map(floatMode)),
+  };
+}
+
+function floatMode(mode: Mode): FloatMode {
+  const components = mode.moments.flatMap(({ phase, vector }) =>
+    vector.map((component) => phasedValue(phase, component, letterValues)),
+  );
+  return {
+    real: Float64Array.from(components, ([re]) => re),
+    imaginary: Float64Array.from(components, ([, im]) => im),
+    copy: mode.copy,
+    partner: mode.partner,
+    suborbit: mode.suborbit,
   };
 }
 
@@ -146,7 +147,9 @@ function multiplicityProblems(read: FloatModes): string[] {
     const [re, im] = overlap(characters, irrep);
     const expected = re / operators.length;
     const fits = Math.hypot(expected - (read.multiplicities[index] as number), im) < tolerance * 100;
-    return fits ? [] : [`${read.irreps.labels[index]}: multiplicity ${read.multiplicities[index]} instead of ${expected}`];
+    return fits
+      ? []
+      : [`${read.irreps.labels[index]}: multiplicity ${read.multiplicities[index]} instead of ${expected}`];
   });
 }
 
@@ -164,7 +167,9 @@ function suborbitProblems(read: FloatModes): string[] {
         });
       },
     );
-  const expected = [...new Set(parent)].map((root) => parent.flatMap((other, atom) => (other === root ? [atom] : [])).join());
+  const expected = [...new Set(parent)].map((root) =>
+    parent.flatMap((other, atom) => (other === root ? [atom] : [])).join(),
+  );
   const given = read.suborbits.map((atoms) => [...atoms].sort((a, b) => a - b).join());
   if ([...given].sort().join(";") !== [...expected].sort().join(";"))
     problems.push(`suborbits ${given.join(" ; ")} instead of ${expected.join(" ; ")}`);
@@ -204,7 +209,9 @@ export function lawProblems(read: FloatModes): string[] {
         const expected = mixed(list.slice(first, first + size), matrixOfIrrep, mode % size);
         const error = largestDifference(moved, expected) / largestEntry(list[mode] as FloatMode);
         if (!(error < tolerance))
-          problems.push(`${read.irreps.labels[irrep]}: Γ(g) e ≠ Σ D e for operator ${index}, mode ${mode} (by ${error})`);
+          problems.push(
+            `${read.irreps.labels[irrep]}: Γ(g) e ≠ Σ D e for operator ${index}, mode ${mode} (by ${error})`,
+          );
       }
     });
   });
@@ -280,7 +287,9 @@ function parameterProblems(read: FloatModes, modes: SiteModes): string[] {
   read.modes.forEach((list, irrep) => {
     const entry = modes.irreps[irrep];
     if (entry === undefined) return;
-    const vanishing = read.positions.flatMap((_, atom) => (list.every((mode) => sizeOn(mode, atom) < tolerance) ? [atom] : []));
+    const vanishing = read.positions.flatMap((_, atom) =>
+      list.every((mode) => sizeOn(mode, atom) < tolerance) ? [atom] : [],
+    );
     // An irrep that does not occur has no arrangement, so it lists no atoms.
     if (list.length > 0 && entry.vanishingAtoms.join() !== vanishing.join())
       problems.push(`${entry.irrep.label}: vanishing atoms ${entry.vanishingAtoms} instead of ${vanishing}`);
@@ -290,7 +299,9 @@ function parameterProblems(read: FloatModes, modes: SiteModes): string[] {
     if (entry.freeParameters !== expected)
       problems.push(`${entry.irrep.label}: ${entry.freeParameters} free parameters instead of ${expected}`);
     if (entry.constraint.length !== read.positions.length && list.length > 0)
-      problems.push(`${entry.irrep.label}: ${entry.constraint.length} constraint texts for ${read.positions.length} atoms`);
+      problems.push(
+        `${entry.irrep.label}: ${entry.constraint.length} constraint texts for ${read.positions.length} atoms`,
+      );
   });
   return problems;
 }

@@ -20,7 +20,10 @@ type Triple = [[number, number], [number, number], [number, number]];
 
 /** `"1/2 0 u"` without the letters: three fractions. */
 export function triple(text: string): Triple {
-  return text.trim().split(/[\s,]+/).map(fraction) as Triple;
+  return text
+    .trim()
+    .split(/[\s,]+/)
+    .map(fraction) as Triple;
 }
 
 /** The exact k that is written. */

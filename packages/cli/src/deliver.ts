@@ -1,7 +1,7 @@
+import { resolve } from "node:path";
 import type { Problem } from "@kvane/core/errors";
 import { version } from "@kvane/core/job";
-import { type Envelope, jsonText, reportCsv, reportText, type RunRecord, resultFolder } from "@kvane/core/reports";
-import { resolve } from "node:path";
+import { type Envelope, jsonText, type RunRecord, reportCsv, reportText, resultFolder } from "@kvane/core/reports";
 import { writeFolder, writeWhole } from "./output.js";
 import type { OutputWishes } from "./request.js";
 import type { Surroundings } from "./surroundings.js";
@@ -15,9 +15,16 @@ export function refusedAnswer(command: string, errors: readonly Problem[]): Refu
 }
 
 /** Puts an answer where it was wished: the terminal, a file, or for the whole job a folder. */
-export function deliver(answered: Envelope<object>, wishes: OutputWishes, { write, writeError, folder }: Surroundings): void {
+export function deliver(
+  answered: Envelope<object>,
+  wishes: OutputWishes,
+  { write, writeError, folder }: Surroundings,
+): void {
   const text = textOf(answered, wishes);
-  if (wishes.out === null) return write(text);
+  if (wishes.out === null) {
+    write(text);
+    return;
+  }
   const path = { shown: wishes.out, full: resolve(folder, wishes.out) };
   if (answered.command === "run") {
     writeFolder(path, resultFolder(answered as Envelope<RunRecord>), wishes.force);

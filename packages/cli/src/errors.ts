@@ -12,7 +12,8 @@ export function problemsText(problems: readonly Problem[], kind: "error" | "warn
 function problemText(one: Problem, kind: "error" | "warning", lines: SourceLines): string {
   const place = placeText(one.where);
   const source = lines(one.where);
-  const caret = source === null || source.trim() === "" || one.where.column === null ? null : caretLine(source, one.where.column);
+  const caret =
+    source === null || source.trim() === "" || one.where.column === null ? null : caretLine(source, one.where.column);
   const details = [
     ["expected", one.expected],
     ["found", one.found],

@@ -43,7 +43,8 @@ function lines(names: readonly string[]): string {
   return names
     .reduce<string[]>((done, name) => {
       const last = done.at(-1);
-      if (last !== undefined && last.length + name.length + 4 <= helpWidth) return [...done.slice(0, -1), `${last}, ${name}`];
+      if (last !== undefined && last.length + name.length + 4 <= helpWidth)
+        return [...done.slice(0, -1), `${last}, ${name}`];
       return [...done, `  ${name}`];
     }, [])
     .join(",\n");
@@ -63,7 +64,10 @@ function addCommand(program: Command, spec: CommandSpec, onCommand: (line: Parse
     .summary(spec.summary)
     .description(`${spec.summary[0]?.toUpperCase()}${spec.summary.slice(1)}.`)
     .argument(argument, about)
-    .addHelpText("after", `\nExample${spec.examples.length > 1 ? "s" : ""}:\n${spec.examples.map((one) => `  ${one}`).join("\n")}`)
+    .addHelpText(
+      "after",
+      `\nExample${spec.examples.length > 1 ? "s" : ""}:\n${spec.examples.map((one) => `  ${one}`).join("\n")}`,
+    )
     .action((first: string | undefined, options: { [attribute: string]: unknown }) =>
       onCommand({ spec, argument: first ?? null, options }),
     );

@@ -67,7 +67,8 @@ function helpOfCommand(words: readonly string[]): readonly string[] {
 async function execute(line: ParsedLine, surroundings: Surroundings): Promise<number> {
   const request = requestFrom(line);
   const wishes = wishesFrom(line);
-  if (wishes.out !== null) checkFree({ shown: wishes.out, full: resolve(surroundings.folder, wishes.out) }, wishes.force);
+  if (wishes.out !== null)
+    checkFree({ shown: wishes.out, full: resolve(surroundings.folder, wishes.out) }, wishes.force);
   const progress = progressLine(surroundings, wishes.quiet);
   const host = commandHost(surroundings, progress.show);
   const answered = await answer(request, host);

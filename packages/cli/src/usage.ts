@@ -1,5 +1,5 @@
-import { CommanderError } from "commander";
 import { type Problem, problem } from "@kvane/core/errors";
+import { CommanderError } from "commander";
 import { GivenTwice, MissingValue } from "./program.js";
 
 /** A complaint of the parser as a problem, or null when it was no complaint (help and version were asked for). */
@@ -33,9 +33,19 @@ function fromParser({ code, message }: CommanderError): Problem {
   const found = named === null ? {} : { found: named };
   switch (code) {
     case "commander.unknownOption":
-      return problem("unknown-option", text, { where: { argument: named }, expected: "an option of the command", ...found, remedy });
+      return problem("unknown-option", text, {
+        where: { argument: named },
+        expected: "an option of the command",
+        ...found,
+        remedy,
+      });
     case "commander.unknownCommand":
-      return problem("unknown-command", text, { where: { argument: "COMMAND" }, expected: "a command", ...found, remedy });
+      return problem("unknown-command", text, {
+        where: { argument: "COMMAND" },
+        expected: "a command",
+        ...found,
+        remedy,
+      });
     case "commander.optionMissingArgument":
       return problem("missing-argument", text, {
         where: { argument: named?.split(" ")[0] ?? null },

@@ -1,8 +1,8 @@
 import { fail, KvaneError, type Problem, problem } from "../errors/index.js";
 import type { Envelope, InputRecord } from "../reports/index.js";
 import { type CommandEntry, commandTable, plannedCommands } from "./commands.js";
-import type { JobHost, Request, RequestField } from "./request.js";
 import { withRemedy } from "./remedies.js";
+import type { JobHost, Request, RequestField } from "./request.js";
 import { version } from "./version.js";
 import type { Work } from "./work.js";
 
@@ -14,8 +14,9 @@ import type { Work } from "./work.js";
 export async function answer(request: Request, host: JobHost): Promise<Envelope<object>> {
   const entry = Object.hasOwn(commandTable, request.command) ? commandTable[request.command] : undefined;
   const work: Work = { request, host, study: null, assumed: [], warnings: [] };
-  const frame = { kvane: version, format: 1, command: request.command, input: inputRecord(request, entry) } as const;
+  const frame = { kvane: version, format: 1, command: request.command, input: {} as InputRecord } as const;
   try {
+    Object.assign(frame.input, inputRecord(request, entry));
     if (entry === undefined) return refuse(request.command);
     const study = await readStudy(request, host);
     const result = await (await entry.load())({ ...work, study });

@@ -1,5 +1,6 @@
-import { numericWaveVector, waveVectorToJson, type WaveVector } from "../kvectors/index.js";
+import { breathe } from "../algorithms/index.js";
 import { smallIrreps } from "../irreps/index.js";
+import { numericWaveVector, type WaveVector, waveVectorToJson } from "../kvectors/index.js";
 import { siteModes } from "../modes/index.js";
 import {
   type BranchRecord,
@@ -8,16 +9,15 @@ import {
   irrepsRecord,
   modesRecord,
   peaksRecord,
-  resultFileNames,
   type RunRecord,
+  resultFileNames,
 } from "../reports/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
-import { breathe } from "../algorithms/index.js";
 import { numberOption } from "./inputs/number-input.js";
 import { coincidencesOf } from "./study/coincidences.js";
 import { type FoundK, findK } from "./study/find-k.js";
 import { nextSteps } from "./study/next-steps.js";
-import { readStudy, satelliteLimit, type StudyInputs } from "./study/read-study.js";
+import { readStudy, type StudyInputs, satelliteLimit } from "./study/read-study.js";
 import { satellitesOf } from "./study/satellites-of.js";
 import { starOf } from "./study/star-of.js";
 import type { Work } from "./work.js";

@@ -71,6 +71,6 @@ export function mapIndices(
     n1 * (rotation[column] as number) +
     n2 * (rotation[3 + column] as number) +
     n3 * (rotation[6 + column] as number) +
-    0 * (shift[column] as number);
+    (shift[column] as number);
   return [at(0), at(1), at(2)];
 }

@@ -19,7 +19,9 @@ function writeObject(value: object, depth: number): string {
   if (entries.length === 0) return "{}";
   const flat = oneLine(value);
   if (flat !== null && flat.length <= widest - 2 * depth && depth > 1) return flat;
-  const inner = entries.map(([name, entry]) => `${indent(depth + 1)}${JSON.stringify(name)}: ${write(entry, depth + 1)}`);
+  const inner = entries.map(
+    ([name, entry]) => `${indent(depth + 1)}${JSON.stringify(name)}: ${write(entry, depth + 1)}`,
+  );
   return `{\n${inner.join(",\n")}\n${indent(depth)}}`;
 }
 

@@ -1,6 +1,6 @@
 import { fail } from "../errors/index.js";
 import { type SettingRow, settingsOfNumber, settingTable } from "./settings.js";
-import { comparableSymbol, editDistance, isWrittenAs } from "./symbol-text.js";
+import { comparableSymbol, editDistance, isWrittenAs, symbolLetters } from "./symbol-text.js";
 import { displaySymbol, symbolWithCode } from "./symbols.js";
 import type { GroupAssumption } from "./types.js";
 
@@ -52,19 +52,35 @@ interface Match {
 
 function matchingRows(written: string): Match | null {
   const symbol = comparableSymbol(written);
-  const matches: Record<Form, SettingRow[]> = {
-    symbol: [],
-    "former symbol": [],
-    "symbol without the ones": [],
-    "symbol without the bar": [],
-  };
-  for (const row of settingTable()) {
-    if (row.full[0]?.toLowerCase() !== symbol.letters[0]) continue;
-    const form = forms.find((one) => writings(row, one).some((table) => isWrittenAs(symbol, table)));
-    if (form) matches[form].push(row);
-  }
-  const form = forms.find((one) => matches[one].length > 0);
-  return form ? { rows: matches[form], form } : null;
+  const entries = (symbolsByLetters().get(symbol.letters) ?? []).filter(({ table }) => isWrittenAs(symbol, table));
+  const form = forms.find((one) => entries.some((entry) => entry.form === one));
+  if (form === undefined) return null;
+  const rows = entries.filter((entry) => entry.form === form).map((entry) => entry.row);
+  return { rows: [...new Set(rows)], form };
+}
+
+interface SymbolEntry {
+  readonly row: SettingRow;
+  readonly form: Form;
+  readonly table: string;
+}
+
+let index: ReadonlyMap<string, readonly SymbolEntry[]> | null = null;
+
+/** Every symbol of every row by its letters, made at the first look-up by symbol. */
+function symbolsByLetters(): ReadonlyMap<string, readonly SymbolEntry[]> {
+  if (index !== null) return index;
+  const made = new Map<string, SymbolEntry[]>();
+  for (const row of settingTable())
+    for (const form of forms)
+      for (const table of writings(row, form)) {
+        const letters = symbolLetters(table);
+        const known = made.get(letters);
+        if (known) known.push({ row, form, table });
+        else made.set(letters, [{ row, form, table }]);
+      }
+  index = made;
+  return made;
 }
 
 /** The symbols that a row goes by in one form. */
@@ -74,7 +90,7 @@ function writings(row: SettingRow, form: Form): readonly string[] {
   if (form === "symbol without the ones")
     return row.number >= 3 && row.number <= 15 ? [row.full.replaceAll(" 1", "")] : [];
   // Until 1983 International Tables wrote m3 for m-3 in the cubic symbols with inversion.
-  return row.number >= 200 ? [row.short.replace("-3", "3")] : [];
+  return row.number >= 200 && row.short.includes("-3") ? [row.short.replace("-3", "3")] : [];
 }
 
 function formNote({ rows, form }: Match): GroupAssumption[] {

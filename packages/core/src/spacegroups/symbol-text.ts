@@ -22,13 +22,17 @@ export function comparableSymbol(text: string): ComparableSymbol {
   return { letters, blanks, underscores };
 }
 
+/** `letters` of a tabulated symbol. */
+export function symbolLetters(table: string): string {
+  return table.replaceAll(" ", "").replaceAll("_", "").toLowerCase();
+}
+
 /**
  * True when `written` is the tabulated symbol `table` (with its `_`, and all blanks or none), some or all blanks and `_`
  * left out. A blank or `_` in another place is another symbol: `P 3 2` is not `P 3_2`.
  */
 export function isWrittenAs(written: ComparableSymbol, table: string): boolean {
-  // Letters first: nearly all symbols of the table differ in them.
-  if (written.letters !== table.replaceAll(" ", "").replaceAll("_", "").toLowerCase()) return false;
+  if (written.letters !== symbolLetters(table)) return false;
   const { blanks, underscores } = comparableSymbol(spacedSymbol(table));
   return isSubset(written.blanks, blanks) && isSubset(written.underscores, underscores);
 }

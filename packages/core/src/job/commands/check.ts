@@ -1,5 +1,5 @@
-import { type CheckRecord, cellRecord, checkedSiteRecord, groupRecord } from "../../reports/index.js";
 import { waveVectorToJson } from "../../kvectors/index.js";
+import { type CheckRecord, cellRecord, checkedSiteRecord, groupRecord } from "../../reports/index.js";
 import { cellFor, cellIfGiven } from "../inputs/cell-input.js";
 import { groupOf } from "../inputs/group-input.js";
 import { placedK, writtenKs } from "../inputs/k-input.js";

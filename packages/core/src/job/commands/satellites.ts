@@ -31,6 +31,10 @@ function defaultLimit(work: Work, wavelength: number | null): number {
   // No line lies beyond 2θ = 180°.
   const reach = wavelength === null ? usualLimit : (4 * Math.PI) / wavelength;
   const limit = Math.min(usualLimit, reach);
-  remember(work, [{ what: "Q limit", value: `${Number(limit.toPrecision(6))} Å⁻¹`, because: "--q-max was not given" }], []);
+  remember(
+    work,
+    [{ what: "Q limit", value: `${Number(limit.toPrecision(6))} Å⁻¹`, because: "--q-max was not given" }],
+    [],
+  );
   return limit;
 }

@@ -28,8 +28,8 @@ under Assumed. 0.333 is further than that from 1/3 and stays measured: write 1/3
   },
   site: {
     title: "How sites and cells are written",
-    text: `  --site "Fe1 0 0 0"       a label and three coordinates: fractions or decimals; repeat for more sites
-  --site "O 0.305 0.305 0"
+    text: `  --site "Fe1 0 0 1/2"     a label and three coordinates, fractions or decimals;
+                           the option is repeated for more sites
   --cell "10.2 6.0 4.7 90 90 90"   a b c in Å, alpha beta gamma in degrees
 
 A coordinate within 0.02 Å of a special position (0.0005 of the axis where no cell is known) is put

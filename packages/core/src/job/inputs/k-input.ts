@@ -41,7 +41,13 @@ export function writtenK(work: Work): GivenK {
   if (others.length > 0)
     remember(
       work,
-      [{ what: "wave vector", value: first.given.text, because: `it is the first of ${others.length + 1} in the study` }],
+      [
+        {
+          what: "wave vector",
+          value: first.given.text,
+          because: `it is the first of ${others.length + 1} in the study`,
+        },
+      ],
       [],
     );
   return first;

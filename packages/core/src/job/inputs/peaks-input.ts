@@ -17,7 +17,8 @@ export async function peaksOf(work: Work): Promise<ReadPeaks> {
   const peaks = await peaksIfGiven(work);
   if (peaks !== null) return peaks;
   return fail("missing-argument", "no peak list was given", {
-    where: work.study === null ? { argument: "--peaks" } : { file: work.study.file, path: "peaks", argument: "--peaks" },
+    where:
+      work.study === null ? { argument: "--peaks" } : { file: work.study.file, path: "peaks", argument: "--peaks" },
     expected: "--peaks FILE, a list of satellite positions",
     found: "nothing",
     remedy: "give --peaks and what the positions are (--as); `kvane help peaks` shows the format",
@@ -45,7 +46,13 @@ export async function peaksIfGiven(work: Work): Promise<ReadPeaks | null> {
   if (list.uncertaintySource.includes("by default"))
     remember(
       work,
-      [{ what: "uncertainty of the peaks", value: list.uncertaintySource, because: "neither the list nor --tolerance says it" }],
+      [
+        {
+          what: "uncertainty of the peaks",
+          value: list.uncertaintySource,
+          because: "neither the list nor --tolerance says it",
+        },
+      ],
       [],
     );
   return { list, file: named.path };

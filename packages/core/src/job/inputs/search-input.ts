@@ -11,7 +11,13 @@ export function searchOptionsOf(work: Work): SearchOptions {
   if (unmatched === null && request.command !== "index")
     remember(
       work,
-      [{ what: "peaks left unmatched", value: `at most ${defaultSearchOptions.unmatched}`, because: "--unmatched was not given" }],
+      [
+        {
+          what: "peaks left unmatched",
+          value: `at most ${defaultSearchOptions.unmatched}`,
+          because: "--unmatched was not given",
+        },
+      ],
       [],
     );
   return {

@@ -1,6 +1,13 @@
 import { fail, KvaneError, type Problem, problem } from "../../errors/index.js";
 import { formatRational } from "../../numbers/index.js";
-import { type Cell, parseSite, type Site, type SiteOrbit, siteOrbit, type SpaceGroup } from "../../spacegroups/index.js";
+import {
+  type Cell,
+  parseSite,
+  type Site,
+  type SiteOrbit,
+  type SpaceGroup,
+  siteOrbit,
+} from "../../spacegroups/index.js";
 import { remember, type Work } from "../work.js";
 import { type Given, readingGiven, studyText } from "./given.js";
 
@@ -44,7 +51,13 @@ export function sitesIfGiven({ request, study }: Work): GivenSite[] {
 
 /** The orbits of the sites; moves onto special positions are remembered, sites on one orbit are refused. */
 export function orbitsOf(work: Work, group: SpaceGroup, sites: readonly GivenSite[], cell: Cell | null): SiteOrbit[] {
-  const orbits = collected(sites.map(({ given, site }) => () => readingGiven(given, () => siteOrbit(group, site, cell))));
+  const orbits = collected(
+    sites.map(
+      ({ given, site }) =>
+        () =>
+          readingGiven(given, () => siteOrbit(group, site, cell)),
+    ),
+  );
   refuseTwice(sites, orbits);
   for (const orbit of orbits) rememberMove(work, orbit, cell);
   return orbits;

@@ -38,7 +38,9 @@ export async function findK(work: Work, inputs: StudyInputs, bound: number): Pro
   return {
     search: found.record,
     candidates: found.candidates,
-    followed: allowed.slice(0, bound).map((index) => ({ k: (found.candidates[index] as Candidate).k, candidate: index })),
+    followed: allowed
+      .slice(0, bound)
+      .map((index) => ({ k: (found.candidates[index] as Candidate).k, candidate: index })),
     notFollowed: allowed.slice(bound),
     searched: true,
   };

@@ -35,8 +35,7 @@ function tieSteps(inputs: StudyInputs, { candidates, followed }: FoundKs): strin
   if (a === undefined || b === undefined || !a.tiedWith.includes(second)) return [];
   const names = `candidates ${first + 1} and ${second + 1}`;
   const line = separatingLine(inputs, a.k, b.k);
-  if (line === null)
-    return [`No powder line tells ${names} apart: look at a single crystal, or compare intensities.`];
+  if (line === null) return [`No powder line tells ${names} apart: look at a single crystal, or compare intensities.`];
   const { wavelengthAngstrom } = inputs;
   const angle = wavelengthAngstrom === null ? null : qToTwoThetaDeg(line.q, wavelengthAngstrom);
   const other = wavelengthAngstrom === null ? null : qToTwoThetaDeg(line.nearest, wavelengthAngstrom);

@@ -1,6 +1,13 @@
 import { fail } from "../../errors/index.js";
+import type { WaveVector } from "../../kvectors/index.js";
 import type { SearchOptions } from "../../search/index.js";
-import { type Cell, lengthInMetric, reciprocalMetric, type SiteOrbit, type SpaceGroup } from "../../spacegroups/index.js";
+import {
+  type Cell,
+  lengthInMetric,
+  reciprocalMetric,
+  type SiteOrbit,
+  type SpaceGroup,
+} from "../../spacegroups/index.js";
 import { cellFor, cellIfGiven, writtenCell } from "../inputs/cell-input.js";
 import { groupOf } from "../inputs/group-input.js";
 import { placedK, writtenKs } from "../inputs/k-input.js";
@@ -8,7 +15,6 @@ import { peaksIfGiven, wavelengthOf } from "../inputs/peaks-input.js";
 import { searchOptionsOf } from "../inputs/search-input.js";
 import { orbitsOf, writtenSites } from "../inputs/site-input.js";
 import { needStudy } from "../inputs/study-input.js";
-import type { WaveVector } from "../../kvectors/index.js";
 import { remember, together, type Work } from "../work.js";
 import type { ReadPeaks } from "./search-of.js";
 

@@ -1,6 +1,13 @@
 import type { WaveVector } from "../../kvectors/index.js";
 import { peaksRecord, type SearchRecord, searchRecord } from "../../reports/index.js";
-import { type Candidate, indexPeaks, locate, type PeakList, type SearchOptions, setAsidePeaks } from "../../search/index.js";
+import {
+  type Candidate,
+  indexPeaks,
+  locate,
+  type PeakList,
+  type SearchOptions,
+  setAsidePeaks,
+} from "../../search/index.js";
 import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
 import { remember, type Work } from "../work.js";
 

@@ -1,7 +1,7 @@
 import type { WaveVector } from "../../kvectors/index.js";
 import { matchStandardUncertainties, sameLineInverseAngstrom } from "../../numbers/index.js";
 import { distinctPositions, satelliteLines } from "../../reflections/index.js";
-import { satelliteLimit, type StudyInputs } from "./read-study.js";
+import { type StudyInputs, satelliteLimit } from "./read-study.js";
 
 /** A satellite that one of two k has and the other has not. */
 export interface SeparatingLine {
@@ -32,7 +32,8 @@ export function separatingLine(inputs: StudyInputs, a: WaveVector, b: WaveVector
     // Lines of the other k beyond the limit are not known, and may be nearer.
     .filter(({ q, nearest }) => distanceOf({ q, nearest }) <= qMax - q)
     .sort((one, other) => one.q - other.q);
-  const blunt = matchStandardUncertainties * Math.max(...(peaks?.list.peaks ?? []).map((peak) => peak.uncertainty ?? 0));
+  const blunt =
+    matchStandardUncertainties * Math.max(...(peaks?.list.peaks ?? []).map((peak) => peak.uncertainty ?? 0));
   const clear = lines.find((line) => distanceOf(line) > blunt);
   return clear ?? lines.sort((one, other) => distanceOf(other) - distanceOf(one))[0] ?? null;
 }
@@ -48,5 +49,8 @@ function distanceOf({ q, nearest }: Pick<SeparatingLine, "q" | "nearest">): numb
 }
 
 function nearestOf(positions: Float64Array, q: number): number {
-  return positions.reduce((best, one) => (Math.abs(one - q) < Math.abs(best - q) ? one : best), Number.POSITIVE_INFINITY);
+  return positions.reduce(
+    (best, one) => (Math.abs(one - q) < Math.abs(best - q) ? one : best),
+    Number.POSITIVE_INFINITY,
+  );
 }

@@ -58,7 +58,8 @@ function modeRecord(found: SmallIrreps, mode: Mode): ModeRecord {
   const values = parameterValues(found.k);
   const exact = mode.moments.map(({ phase, vector }) => vector.map((factor) => ({ phase, factor })));
   // Rounding noise is judged against the largest component of the whole mode.
-  const scale = values && Math.max(...exact.flat().map((entry) => Math.hypot(...(phasedToComplex(entry, values) ?? []))));
+  const scale =
+    values && Math.max(...exact.flat().map((entry) => Math.hypot(...(phasedToComplex(entry, values) ?? []))));
   return {
     copy: mode.copy,
     partner: mode.partner,

@@ -1,5 +1,5 @@
-import { formatRational, roundNumber } from "../../numbers/index.js";
 import { type WaveVector, waveVectorToJson } from "../../kvectors/index.js";
+import { formatRational, roundNumber } from "../../numbers/index.js";
 import type { Overlap, SatelliteReflection } from "../../reflections/index.js";
 import type { Candidate, Certificate, IndexedLine, PeakList, SetAside } from "../../search/index.js";
 import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
@@ -65,7 +65,7 @@ export function peaksRecord(peaks: PeakList, file: string | null): PeaksRecord {
     list: peaks.peaks.map((peak) => ({
       index: peak.index,
       position: rounded(peak.position),
-      hkl: peak.hkl && peak.hkl.map((entry) => roundNumber(entry)),
+      hkl: peak.hkl?.map((entry) => roundNumber(entry)),
       q: rounded(peak.q),
       uncertainty: roundNumber(peak.uncertainty ?? peak.hklUncertainty ?? 0),
       intensity: rounded(peak.intensity),
@@ -121,13 +121,15 @@ function candidateRecord(candidate: Candidate): CandidateRecord {
       deviation: roundNumber(deviation),
     })),
     tiedWith: [...candidate.tiedWith],
-    assignments: candidate.assignments.map((one): AssignmentRecord => ({
-      peak: one.peak,
-      ...lineRecord(one),
-      q: roundNumber(one.q),
-      residualHkl: one.residualHkl && one.residualHkl.map((entry) => roundNumber(entry)),
-      alternatives: one.alternatives.map(lineRecord),
-    })),
+    assignments: candidate.assignments.map(
+      (one): AssignmentRecord => ({
+        peak: one.peak,
+        ...lineRecord(one),
+        q: roundNumber(one.q),
+        residualHkl: one.residualHkl?.map((entry) => roundNumber(entry)),
+        alternatives: one.alternatives.map(lineRecord),
+      }),
+    ),
     unmatched: [...candidate.unmatched],
     residuals: {
       rootMeanSquare: roundNumber(residuals.rootMeanSquare),
@@ -140,7 +142,7 @@ function candidateRecord(candidate: Candidate): CandidateRecord {
       from: waveVectorToJson(refinement.from),
       determined: refinement.determined,
       converged: refinement.converged,
-      rescaledSu: refinement.rescaledUncertainties && refinement.rescaledUncertainties.map((su) => roundNumber(su)),
+      rescaledSu: refinement.rescaledUncertainties?.map((su) => roundNumber(su)),
     },
   };
 }

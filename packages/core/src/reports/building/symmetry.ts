@@ -7,7 +7,13 @@ import {
   type WaveVector,
   waveVectorToJson,
 } from "../../kvectors/index.js";
-import { formatPhased, modeSignificantDigits, type PhasedNumber, phasedToComplex, roundNumber } from "../../numbers/index.js";
+import {
+  formatPhased,
+  modeSignificantDigits,
+  type PhasedNumber,
+  phasedToComplex,
+  roundNumber,
+} from "../../numbers/index.js";
 import { formatTriplet, operatorsModuloIntegers, type SpaceGroup } from "../../spacegroups/index.js";
 import type { ComplexRecord } from "../records/common.js";
 import type { IrrepRecord, IrrepsRecord } from "../records/irreps.js";
@@ -69,7 +75,10 @@ export function irrepsRecord(group: SpaceGroup, found: SmallIrreps): IrrepsRecor
 }
 
 /** D at the printed operators, `e^{2πi·phase}·Δ`, in numbers (null while a letter of k is open) and exactly. */
-export function irrepNumbers(found: SmallIrreps, irrep: SmallIrrep): Pick<IrrepRecord, "characters" | "matrices" | "exact"> {
+export function irrepNumbers(
+  found: SmallIrreps,
+  irrep: SmallIrrep,
+): Pick<IrrepRecord, "characters" | "matrices" | "exact"> {
   const matrices = irrep.matrices.map((matrix, index) => {
     const phase = found.phases[index];
     if (phase === undefined) throw new RangeError(`operator ${index} has no phase`);

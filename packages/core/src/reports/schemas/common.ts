@@ -40,7 +40,10 @@ export const commonDefinitions: { readonly [name: string]: JsonSchema } = {
     { a: number, b: number, c: number, alpha: number, beta: number, gamma: number },
     "lengths in Å, angles in degrees",
   ),
-  littleGroup: record({ order: count, symbol: text, operators: list(text) }, "order and symbol are of the little co-group"),
+  littleGroup: record(
+    { order: count, symbol: text, operators: list(text) },
+    "order and symbol are of the little co-group",
+  ),
   minusK: oneOf("equivalent", "in star", "not in star"),
   reality: oneOf("real", "pseudoreal", "complex"),
   complex: tuple(2, number),

@@ -1,4 +1,16 @@
-import { count, flag, type JsonSchema, list, nullable, number, oneOf, record, shared, text, tuple } from "./building.js";
+import {
+  count,
+  flag,
+  type JsonSchema,
+  list,
+  nullable,
+  number,
+  oneOf,
+  record,
+  shared,
+  text,
+  tuple,
+} from "./building.js";
 
 /** Integers wherever all integer vectors are lattice vectors; an unusual basis may give fractions. */
 const h = tuple(3, number);

@@ -1,4 +1,16 @@
-import { count, type JsonSchema, list, nothing, nullable, number, oneOf, record, shared, text, tuple } from "./building.js";
+import {
+  count,
+  type JsonSchema,
+  list,
+  nothing,
+  nullable,
+  number,
+  oneOf,
+  record,
+  shared,
+  text,
+  tuple,
+} from "./building.js";
 import { overlapSchema, peaksSchema, satellitesSchema, searchSchema } from "./peaks.js";
 import { irrepsSchema, modesSchema, starSchema } from "./symmetry.js";
 

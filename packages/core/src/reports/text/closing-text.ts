@@ -11,7 +11,10 @@ const momentConventions =
 export function conventionLines(command: string): string[] {
   if (!["star", "irreps", "modes", "run"].includes(command)) return [];
   const moments = command === "modes" || command === "run";
-  return section("Conventions", paragraph(`${conventions.replace("Conventions: o", "O")}${moments ? ` ${momentConventions}` : ""}`));
+  return section(
+    "Conventions",
+    paragraph(`${conventions.replace("Conventions: o", "O")}${moments ? ` ${momentConventions}` : ""}`),
+  );
 }
 
 const cautions: { readonly [command: string]: string } = {

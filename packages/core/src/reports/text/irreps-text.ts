@@ -1,5 +1,5 @@
 import type { ExactIrrepRecord, IrrepRecord, IrrepsRecord } from "../records/irreps.js";
-import { flow, fields, section, table, wideTable } from "./layout.js";
+import { fields, flow, section, table, wideTable } from "./layout.js";
 import { counted, groupText, kText, minusKText } from "./names.js";
 import { littleGroupSection } from "./star-text.js";
 
@@ -58,8 +58,7 @@ export function matrixLines(exact: ExactIrrepRecord): string[] {
   const places = String(exact.matrices.length).length;
   return flow(
     exact.matrices.map(
-      (matrix, index) =>
-        `${String(index + 1).padStart(places)}  (${matrix.map((row) => row.join(", ")).join(" | ")})`,
+      (matrix, index) => `${String(index + 1).padStart(places)}  (${matrix.map((row) => row.join(", ")).join(" | ")})`,
     ),
   );
 }

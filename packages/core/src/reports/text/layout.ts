@@ -89,11 +89,25 @@ export function wideTable(
   by = 2,
 ): string[] {
   const widthAt = (column: Column, cells: readonly string[]) => Math.max(widthOf(column.title), ...cells.map(widthOf));
-  const left = fixed.reduce((sum, column, index) => sum + 2 + widthAt(column, rows.map((row) => row.fixed[index] ?? "")), by);
+  const left = fixed.reduce(
+    (sum, column, index) =>
+      sum +
+      2 +
+      widthAt(
+        column,
+        rows.map((row) => row.fixed[index] ?? ""),
+      ),
+    by,
+  );
   const blocks: number[][] = [];
   let used = pageWidth;
   columns.forEach((column, index) => {
-    const width = 2 + widthAt(column, rows.map((row) => row.cells[index] ?? ""));
+    const width =
+      2 +
+      widthAt(
+        column,
+        rows.map((row) => row.cells[index] ?? ""),
+      );
     if (used + width > pageWidth + 2) {
       blocks.push([]);
       used = left;
@@ -118,7 +132,13 @@ export function flow(texts: readonly string[], by = 2): string[] {
   const lines: string[] = [];
   for (let start = 0; start < texts.length; start += across)
     lines.push(
-      (" ".repeat(by) + texts.slice(start, start + across).map((text) => pad(text, width)).join("")).trimEnd(),
+      (
+        " ".repeat(by) +
+        texts
+          .slice(start, start + across)
+          .map((text) => pad(text, width))
+          .join("")
+      ).trimEnd(),
     );
   return lines;
 }
@@ -126,5 +146,8 @@ export function flow(texts: readonly string[], by = 2): string[] {
 /** The texts with their number from 1 in front, in columns. */
 export function numbered(texts: readonly string[], by = 2): string[] {
   const places = String(texts.length).length;
-  return flow(texts.map((text, index) => `${String(index + 1).padStart(places)}  ${text}`), by);
+  return flow(
+    texts.map((text, index) => `${String(index + 1).padStart(places)}  ${text}`),
+    by,
+  );
 }

@@ -3,7 +3,7 @@ import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
 import { irrepsText, irrepTable } from "./irreps-text.js";
 import { fields, paragraph, section, table } from "./layout.js";
-import { modesText, parameterText, decompositionText } from "./modes-text.js";
+import { decompositionText, modesText, parameterText } from "./modes-text.js";
 import { cellText, counted, groupText, kText, positionText } from "./names.js";
 import { satellitesText, satelliteTable } from "./satellites-text.js";
 import { assignmentTable, candidateTable, certificateLines, peakFields } from "./search-text.js";
@@ -24,7 +24,10 @@ export function runShortText(record: RunRecord): string[] {
       "Next",
       record.next.flatMap((text, index) => paragraph(`${index + 1}. ${text}`, 2, 3)),
     ),
-    ...section("Files", record.files.flatMap((name) => paragraph(name))),
+    ...section(
+      "Files",
+      record.files.flatMap((name) => paragraph(name)),
+    ),
   ];
 }
 
@@ -34,7 +37,12 @@ export function runFullText(record: RunRecord): string[] {
   return [
     ...runShortText(record),
     ...(record.search ?? { candidates: [] }).candidates.flatMap((candidate, index) =>
-      record.peaks ? section(`Assignment by candidate ${index + 1}, ${kText(candidate.k)}`, assignmentTable(candidate, record.peaks)) : [],
+      record.peaks
+        ? section(
+            `Assignment by candidate ${index + 1}, ${kText(candidate.k)}`,
+            assignmentTable(candidate, record.peaks),
+          )
+        : [],
     ),
     ...record.branches.flatMap((branch, index) => [
       ...(several ? [`Branch ${index + 1}: k = ${kText(branch.k)}`, ""] : []),
@@ -49,10 +57,7 @@ export function runFullText(record: RunRecord): string[] {
 function headSection(record: RunRecord): string[] {
   return section(
     record.title ?? "Study",
-    fields([
-      ["Group", groupText(record.group)],
-      ...(record.cell ? [["Cell", cellText(record.cell)] as const] : []),
-    ]),
+    fields([["Group", groupText(record.group)], ...(record.cell ? [["Cell", cellText(record.cell)] as const] : [])]),
   );
 }
 
@@ -112,7 +117,12 @@ function moreLine(count: number, what: string): string[] {
 function branchText(branch: BranchRecord, number: number | null): string[] {
   const name = number === null ? "" : `Branch ${number}: `;
   return [
-    ...section(`${name}Symmetry of k = ${kText(branch.k)}`, starFields(branch.star).slice(2), [""], irrepTable(branch.irreps.irreps)),
+    ...section(
+      `${name}Symmetry of k = ${kText(branch.k)}`,
+      starFields(branch.star).slice(2),
+      [""],
+      irrepTable(branch.irreps.irreps),
+    ),
     ...section(`${name}Modes`, modeSummary(branch)),
     ...satelliteSummary(branch, name),
   ];
@@ -122,7 +132,12 @@ function branchText(branch: BranchRecord, number: number | null): string[] {
 function modeSummary({ modes }: BranchRecord): string[] {
   return modes.sites.flatMap((site, index) => [
     ...(index > 0 ? [""] : []),
-    ...fields([[site.label, `${decompositionText(site)}; atoms ${site.orbit.map((one, atom) => `${atom + 1} ${positionText(one)}`).join("  ")}`]]),
+    ...fields([
+      [
+        site.label,
+        `${decompositionText(site)}; atoms ${site.orbit.map((one, atom) => `${atom + 1} ${positionText(one)}`).join("  ")}`,
+      ],
+    ]),
     ...table(
       [{ title: "irrep" }, { title: "free", align: "right" }, { title: "allowed S on atoms 1, 2, … along a, b, c" }],
       site.irreps

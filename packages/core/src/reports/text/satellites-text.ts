@@ -1,5 +1,5 @@
-import type { LineRecord } from "../records/search.js";
 import type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "../records/satellites.js";
+import type { LineRecord } from "../records/search.js";
 import { fields, paragraph, section, table } from "./layout.js";
 import { cellText, counted, decimals, groupText, kText, plain } from "./names.js";
 
@@ -48,7 +48,10 @@ export function satelliteTable(reflections: readonly SatelliteRecord[], record: 
       ...(angles ? [decimals(line.twoThetaDeg, 3)] : []),
       String(line.multiplicity),
       String(line.multiplicityAllArms),
-      line.overlaps.filter(({ allowed }) => allowed).map(overlapText).join(", "),
+      line.overlaps
+        .filter(({ allowed }) => allowed)
+        .map(overlapText)
+        .join(", "),
     ]),
   );
 }

@@ -117,7 +117,10 @@ function candidateFields(candidate: CandidateRecord): [string, string][] {
       ? [["k = 0", "its lines are the nuclear ones: peaks that are not magnetic fit it too"] as [string, string]]
       : []),
     ...refinementFields(candidate),
-    ["Figures of merit", `de Wolff ${decimals(candidate.deWolff, 1)}, Smith & Snyder ${decimals(candidate.smithSnyder, 1)}`],
+    [
+      "Figures of merit",
+      `de Wolff ${decimals(candidate.deWolff, 1)}, Smith & Snyder ${decimals(candidate.smithSnyder, 1)}`,
+    ],
     ...(candidate.nearFractions.length === 0
       ? []
       : [["Near fractions", candidate.nearFractions.map(nearText).join(", ")] as [string, string]]),
@@ -154,7 +157,12 @@ export function assignmentTable(candidate: CandidateRecord, peaks: PeaksRecord):
     [
       { title: "peak", align: "right" },
       { title: vectors ? "h k l" : "position", align: "right" },
-      ...(vectors ? [] : [{ title: "Q / Å⁻¹", align: "right" as const }, { title: "computed", align: "right" as const }]),
+      ...(vectors
+        ? []
+        : [
+            { title: "Q / Å⁻¹", align: "right" as const },
+            { title: "computed", align: "right" as const },
+          ]),
       { title: "H ± k" },
       ...(several ? [{ title: "arm", align: "right" as const }] : []),
       { title: "off / s.u.", align: "right" },

@@ -13,7 +13,10 @@ export function explainText(record: ExplainRecord): string[] {
     );
   return section(
     "Codes of problems",
-    table([{ title: "code" }, { title: "exit", align: "right" }, { title: "meaning" }], record.codes.map((one) => [one.code, String(one.exitStatus), one.meaning])),
+    table(
+      [{ title: "code" }, { title: "exit", align: "right" }, { title: "meaning" }],
+      record.codes.map((one) => [one.code, String(one.exitStatus), one.meaning]),
+    ),
   );
 }
 

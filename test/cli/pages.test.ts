@@ -1,0 +1,34 @@
+import { readFileSync } from "node:fs";
+import { join } from "node:path";
+import { problemCodes } from "@kvane/core/errors";
+import { describedCommands } from "@kvane/core/reports";
+import { describe, expect, test } from "vitest";
+import { root } from "../tools/paths.mjs";
+import { kvane, shellWords } from "./command.js";
+import { schemaErrors } from "./schemas.js";
+
+const folder = join(root, "docs/examples");
+const commands: Record<string, string> = JSON.parse(readFileSync(join(folder, "commands.json"), "utf8"));
+
+/** A change detector: it says that output has changed, not that it was right. test/cli/write-pages.mjs writes anew. */
+describe("docs/examples (change detector)", () => {
+  test.each(Object.entries(commands))("%s is byte for byte what the command prints, each time", async (file, line) => {
+    const committed = readFileSync(join(folder, file), "utf8");
+    expect((await kvane(shellWords(line).slice(1))).stdout).toBe(committed);
+    expect((await kvane(shellWords(line).slice(1))).stdout).toBe(committed);
+  });
+
+  test("there is one for every described command, and each obeys its schema", () => {
+    for (const command of describedCommands) expect(Object.keys(commands)).toContain(`${command}.json`);
+    for (const file of Object.keys(commands).filter((name) => name.endsWith(".json"))) {
+      const answer = JSON.parse(readFileSync(join(folder, file), "utf8"));
+      expect(schemaErrors(answer.command, answer), file).toEqual([]);
+    }
+  });
+});
+
+test("docs/errors.md has every code with its meaning, and no other", () => {
+  const page = readFileSync(join(root, "docs/errors.md"), "utf8");
+  const rows = [...page.matchAll(/^\| `(.+?)` \| \d+ \| (.*) \|$/gm)].map(([, code, meaning]) => [code, meaning]);
+  expect(rows).toEqual(Object.entries(problemCodes));
+});
