@@ -125,6 +125,13 @@ const cases: readonly Case[] = [
   { line: ["star", "unknown-key.yaml", "--k", "0,0,0"], code: "unknown-key", place: "unknown-key.yaml:2:1" },
 ];
 
+test("a CIF is not read by this version: exit status 1, and it says what to do", async () => {
+  const { status, stderr } = await kvane(["check", "nuclear.cif"], { cwd: folder });
+  expect(status).toBe(1);
+  expect(stderr).toContain("error[not-built]");
+  expect(stderr).toContain("kvane help study");
+});
+
 describe("wrong input", () => {
   const shown = cases.map((one) => [one.line.join(" "), one] as const);
 

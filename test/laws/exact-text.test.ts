@@ -4,7 +4,7 @@ import { siteModes } from "@kvane/core/modes";
 import { siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { formatCyclotomic, formatPhased, type Phase } from "#core/numbers/index.js";
-import { evaluateText } from "../support/evaluate-text.js";
+import { evaluateText, parameters } from "../support/evaluate-text.js";
 import { letterValues } from "../support/float-group.js";
 import { cyclotomicValue, phasedValue } from "../support/float-irreps.js";
 import { groupOf } from "../support/parsed-groups.js";
@@ -28,7 +28,7 @@ describe("the reader of exact texts", () => {
     ["(1-i)·e^{2πi·u}", -1, 1],
     ["2√2", Math.sqrt(8), 0],
   ] as const)("%s", ([text, re, im]) => {
-    const [x, y] = evaluateText(text, [0.5]);
+    const [x, y] = evaluateText(text, parameters([0.5]));
     expect(Math.hypot(x - re, y - im)).toBeLessThan(1e-12);
   });
 
@@ -40,7 +40,7 @@ describe("the reader of exact texts", () => {
 /** Texts of a number with a phase against the sum of the record's roots of unity. */
 function textProblems(phase: Phase, factor: Exact, letters: readonly number[]): string[] {
   const text = formatPhased({ phase, factor });
-  const [re, im] = evaluateText(text, letters);
+  const [re, im] = evaluateText(text, parameters(letters));
   const [x, y] = phasedValue(phase, factor, letters);
   return Math.hypot(re - x, im - y) < tolerance ? [] : [`${text} is ${re}, ${im} and not ${x}, ${y}`];
 }

@@ -16,7 +16,7 @@ import {
 } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { floatGroup, isReciprocalVector, minus, plus, turnRow } from "../support/float-group.ts";
-import { twinLines } from "../support/line-twin.ts";
+import { lengthOf, reciprocalAxes, twinLines } from "../support/line-twin.ts";
 import { type Random, seeded } from "../support/random.ts";
 import { randomCell } from "../support/random-cells.ts";
 import { reduced } from "../support/written.ts";
@@ -94,6 +94,12 @@ describe("satellites against every h k l of a box", () => {
     const qMax = 2.2 + own.next();
     const lines = satelliteLines(group, cell, k, { qMax });
     const what = `${hall} k = ${numeric.join(", ")}`;
+    const axes = reciprocalAxes(cell);
+    for (const { h, sign, q } of lines) {
+      // For sign 0, where both signs are the same set, H + k is meant.
+      const vector = h.map((entry, axis) => entry + (sign === -1 ? -1 : 1) * (numeric[axis] as number));
+      expect(Math.abs(lengthOf(axes, vector) - q), `${what}: ${h.join(" ")}`).toBeLessThan(1e-8);
+    }
     const centring = centringOf(group);
     expectSame(
       shells(lines, (line) => line.multiplicity),

@@ -4,6 +4,7 @@ import { defaultSearchOptions, indexPeaks } from "@kvane/core/search";
 import { type Cell, cellVolume, parseGroup, tabulatedSettings } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { tunedSet } from "#core/search/tuned-set.js";
+import { tuningCharge } from "#core/search/tuning-charge.js";
 import { twinLogOdds } from "../support/evidence-twin.ts";
 import { normal, powderList } from "../support/peak-lists.ts";
 import { seeded } from "../support/random.ts";
@@ -66,6 +67,21 @@ describe("the volume of the set that the letters run over", () => {
     expect(tunedSet(group, at("P m m m", "0.49,0,0"), metric, 0.032).coincidentImages).toBe(2);
     expect(tunedSet(group, at("P m m m", "0.01,0.49,0"), metric, 0.05).coincidentImages).toBe(4);
   });
+});
+
+test("m images that cannot be told apart cost ln m, no observation costs nothing", () => {
+  const set = { dimension: 1, gram: Float64Array.of(4), volume: 2, coincidentImages: 1 };
+  const jacobian = Float64Array.of(300, 500);
+  expect(tuningCharge({ ...set, coincidentImages: 4 }, jacobian) - tuningCharge(set, jacobian)).toBeCloseTo(
+    Math.log(4),
+    12,
+  );
+  // One letter, orthonormal slopes 150 and 250 per unit: V = √2π / (W √(Σ slope² + 2π/W²)).
+  expect(tuningCharge(set, jacobian)).toBeCloseTo(
+    -Math.log(Math.sqrt(2 * Math.PI) / (2 * Math.sqrt(150 ** 2 + 250 ** 2 + Math.PI / 2))),
+    12,
+  );
+  expect(tuningCharge(set, Float64Array.of(0))).toBeCloseTo(0, 12);
 });
 
 describe("the charge for tuning against the integral that it stands for", () => {

@@ -4,6 +4,7 @@ import { type SiteModes, siteModes } from "@kvane/core/modes";
 import { type Site, type SpaceGroup, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { groupOf } from "../support/parsed-groups.js";
+import { constraintProblems } from "../support/validate-constraints.js";
 import { fieldProblems } from "../support/validate-field.js";
 import { irrepProblems } from "../support/validate-irreps.js";
 import { modeProblems } from "../support/validate-modes.js";
@@ -176,6 +177,20 @@ describe("other faults are noticed", () => {
     expect(modeProblems(sound.group, repeated)).toContain("the mode vectors are linearly dependent");
     const short = spoiled((entry) => ({ ...entry, multiplicity: entry.multiplicity - 1, modes: entry.modes.slice(2) }));
     expect(modeProblems(sound.group, short).join()).toContain("multiplicity");
+  });
+
+  test("a sign, a letter and a phase of the constraint table", () => {
+    expect(constraintProblems(sound.group, sound.modes)).toEqual([]);
+    const withText = (change: (texts: readonly string[]) => readonly string[]): string =>
+      constraintProblems(
+        sound.group,
+        spoiled((entry) => ({ ...entry, constraint: change(entry.constraint) })),
+      ).join();
+    const [first = "", second = "", ...rest] = sound.modes.irreps[twoDimensional]?.constraint ?? [];
+    expect(first).toBe("(u, v, w)");
+    expect(withText(() => ["(u, v, -w)", second, ...rest])).toContain("out of the span");
+    expect(withText(() => ["(u, v, x)", second, ...rest])).toContain("letters for");
+    expect(withText(() => [first, `${second}·e^{iπ/3}`, ...rest])).toContain("out of the span");
   });
 
   test("polar vectors taken for moments, and two atoms exchanged", () => {

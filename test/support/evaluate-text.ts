@@ -1,29 +1,29 @@
-/**
- * A tiny reader of exact numbers as kvane prints them (`-1/2`, `√3·e^{iπ/6}/2`, `(1+i)/2`, `e^{2πi·(u/2+1/3)}`), made
- * from the meaning of the signs alone: sums, products written with `·` or side by side, division by an integer, roots,
- * powers of e.
- */
-type Complex = readonly [number, number];
+import type { Complex } from "./complex.js";
 
 interface Reader {
   readonly text: string;
-  readonly letters: Readonly<Record<string, Complex>>;
+  readonly letters: Letters;
   position: number;
 }
 
-/** The value at the given u, v, w; throws on anything it cannot read to the end. */
-export function evaluateText(text: string, [u, v, w]: readonly number[] = []): Complex {
-  const letters = {
-    i: [0, 1],
-    "π": [Math.PI, 0],
-    u: [u ?? Number.NaN, 0],
-    v: [v ?? Number.NaN, 0],
-    w: [w ?? Number.NaN, 0],
-  } as const;
-  const reader: Reader = { text, letters, position: 0 };
+/** Values of letters; a name is a letter with further letters, digits or underscores behind it. */
+export type Letters = Readonly<Record<string, Complex>>;
+
+/**
+ * The value of an exact number as kvane prints it (`-1/2`, `√3·e^{iπ/6}/2`, `(1+i)/2`, `e^{2πi·(u/2+1/3)}`), read from
+ * the meaning of the signs alone: sums, products written with `·` or side by side, division by an integer, roots, powers
+ * of e. Throws on a name without a value and on anything that cannot be read to the end.
+ */
+export function evaluateText(text: string, letters: Letters = {}): Complex {
+  const reader: Reader = { text, letters: { ...letters, i: [0, 1], "π": [Math.PI, 0] }, position: 0 };
   const value = readSum(reader);
   if (reader.position !== text.length) throw new Error(`cannot read on at ${reader.position} in ${text}`);
   return value;
+}
+
+/** Letters u, v, w with real values. */
+export function parameters(values: readonly number[]): Letters {
+  return Object.fromEntries(["u", "v", "w"].map((name, at) => [name, [values[at] ?? Number.NaN, 0] as const]));
 }
 
 function readSum(reader: Reader): Complex {
@@ -79,10 +79,15 @@ function readFactor(reader: Reader): Complex | null {
     const [re, im] = readInside(reader, 3, "}");
     return [Math.exp(re) * Math.cos(im), Math.exp(re) * Math.sin(im)];
   }
-  const letter = reader.letters[character];
-  if (letter === undefined) return null;
-  reader.position += 1;
-  return letter;
+  // The longest name comes first: `iπ` is i times π, `kx` and `c12_` are one name each.
+  const name = /^[a-z][a-z0-9_]*/.exec(text.slice(reader.position))?.[0] ?? character;
+  for (let length = name.length; length > 0; length--) {
+    const letter = reader.letters[name.slice(0, length)];
+    if (letter === undefined) continue;
+    reader.position += length;
+    return letter;
+  }
+  return null;
 }
 
 function readInside(reader: Reader, opening: number, closing: string): Complex {

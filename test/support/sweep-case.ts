@@ -3,6 +3,7 @@ import { formatWaveVector, type WaveVector } from "@kvane/core/kvectors";
 import { siteModes } from "@kvane/core/modes";
 import { type Site, type SpaceGroup, siteOrbit } from "@kvane/core/spacegroups";
 import { componentsOf, floatGroup } from "./float-group.js";
+import { constraintProblems } from "./validate-constraints.js";
 import { fieldProblems, supercellSize } from "./validate-field.js";
 import { irrepProblems } from "./validate-irreps.js";
 import { modeProblems } from "./validate-modes.js";
@@ -59,7 +60,7 @@ export function sweepCase(
           () => {
             const found = siteModes(group, irreps as SmallIrreps, siteOrbit(group, site, null), { axial });
             modes += 3 * found.orbit.positions.length;
-            const wrong = modeProblems(group, found);
+            const wrong = [...modeProblems(group, found), ...constraintProblems(group, found)];
             if (!isRational(k) || supercellSize(floatGroup(group), componentsOf(k)) > largestSupercell) return wrong;
             fields += 1;
             return [...wrong, ...fieldProblems(group, found, options)];

@@ -67,6 +67,7 @@ describe("names", () => {
   test("fractions that were decimals read as decimals, thirds and eighths stay", () => {
     expect(positionText(["137/1000", "1/4", "77/250"])).toBe("(0.137, 1/4, 0.308)");
     expect(positionText(["1/3", "1/24", "-49/50"])).toBe("(1/3, 1/24, -0.98)");
+    expect(positionText(["1/8", "3/10", "2/7"])).toBe("(1/8, 0.3, 2/7)");
   });
 
   test("a measured k shows its value, with the uncertainty where there is one", () => {

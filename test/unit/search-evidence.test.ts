@@ -53,6 +53,17 @@ describe("evidence against the plain sum over brute-force lines", () => {
     expect(values).toEqual([...values].sort((a, b) => b - a));
   });
 
+  test("few lines: a density below 0.5 per Å⁻¹ is not believed", () => {
+    // A cube of 2.5 Å at (1/2,1/2,1/2): the lines are at 2.18 and 4.17 Å⁻¹.
+    const cell = { a: 2.5, b: 2.5, c: 2.5, alpha: 90, beta: 90, gamma: 90 };
+    const lines = twinLines(cell, [], [[0.5, 0.5, 0.5]], 4);
+    expect(lines.length).toBe(1);
+    const peaks = [{ q: 1.3, s: 0.3 }];
+    const group = parseGroup("P m -3 m");
+    const found = indexPeaks(group, cell, wave("1/2 1/2 1/2"), powderList([1.3], 0.3), defaultSearchOptions);
+    expect(found.evidence.value).toBeCloseTo(twinLogOdds(peaks, lines) - Math.log(4), 8);
+  });
+
   test("a special point given to index has the evidence that the search gives it", async () => {
     const group = parseGroup("P n m a");
     const cell = { a: 10.21, b: 6.05, c: 4.71, alpha: 90, beta: 90, gamma: 90 };

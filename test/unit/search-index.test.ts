@@ -256,6 +256,8 @@ describe("fractional h k l of a crystal", () => {
     expect(third?.arm).not.toBe(0);
     expect((third?.sign ?? 0) * (fourth?.sign ?? 0)).toBe(-1);
     expect(found.evidence.reading).toBe("found");
+    // Of the arms (±u,0,1/2) and (0,±u,1/2) only one of each pair is taken: no line appears twice.
+    expect(found.assignments.every(({ alternatives }) => alternatives.length === 0)).toBe(true);
   });
 
   test("one index off by more than the tolerance is no match", () => {

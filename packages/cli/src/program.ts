@@ -1,3 +1,4 @@
+import { fail } from "@kvane/core/errors";
 import { Command, Option } from "commander";
 import type { CommandSpec } from "./command-spec.js";
 import { commandSpecs } from "./commands/index.js";
@@ -40,14 +41,13 @@ export function buildProgram(
 
 /** Names separated by commas, a line no longer than the help. */
 function lines(names: readonly string[]): string {
-  return names
-    .reduce<string[]>((done, name) => {
-      const last = done.at(-1);
-      if (last !== undefined && last.length + name.length + 4 <= helpWidth)
-        return [...done.slice(0, -1), `${last}, ${name}`];
-      return [...done, `  ${name}`];
-    }, [])
-    .join(",\n");
+  const shown: string[] = [];
+  for (const name of names) {
+    const last = shown.at(-1);
+    if (last !== undefined && last.length + name.length + 3 <= helpWidth) shown[shown.length - 1] = `${last}, ${name}`;
+    else shown.push(`  ${name}`);
+  }
+  return shown.join(",\n");
 }
 
 const argumentTexts = {
@@ -79,29 +79,30 @@ function buildOption(name: OptionName): Option {
   const option = new Option(flags, repeatable ? `${about} (repeatable)` : about);
   if (!flags.includes("<")) return option;
   return option.argParser((value: string, previous: unknown) => {
-    // An option that swallows the next one has lost its own value.
-    if (/^--[a-z]/.test(value)) throw new MissingValue(flags, value);
+    if (/^--[a-z]/.test(value)) swallowedOption(flags, value);
     if (repeatable) return [...((previous as readonly string[] | undefined) ?? []), value];
-    if (previous !== undefined) throw new GivenTwice(flags);
+    if (previous !== undefined) givenTwice(flags);
     return value;
   });
 }
 
-/** An option whose value is the next option. */
-export class MissingValue extends Error {
-  constructor(
-    readonly flags: string,
-    readonly found: string,
-  ) {
-    super(`${flags} came without its value`);
-  }
+/** An option that takes the next option for its value has lost its own. */
+function swallowedOption(flags: string, found: string): never {
+  fail("missing-argument", `${flags} came without its value`, {
+    where: { argument: flags.split(" ")[0] ?? null },
+    expected: `a value: ${flags}`,
+    found,
+    remedy: "give the value directly behind the option",
+  });
 }
 
-/** An option that counts once and was given again. */
-export class GivenTwice extends Error {
-  constructor(readonly flags: string) {
-    super(`${flags} was given twice`);
-  }
+function givenTwice(flags: string): never {
+  fail("conflicting-arguments", `${flags} was given twice`, {
+    where: { argument: flags.split(" ")[0] ?? null },
+    expected: "the option once",
+    found: "more than once",
+    remedy: "leave one of them out",
+  });
 }
 
 /** Options that take a value, as written: what follows them is no GROUP. */

@@ -1,23 +1,8 @@
 import { type Problem, problem } from "@kvane/core/errors";
 import { CommanderError } from "commander";
-import { GivenTwice, MissingValue } from "./program.js";
 
 /** A complaint of the parser as a problem, or null when it was no complaint (help and version were asked for). */
 export function usageProblem(error: unknown): Problem | null {
-  if (error instanceof MissingValue)
-    return problem("missing-argument", error.message, {
-      where: { argument: error.flags.split(" ")[0] ?? null },
-      expected: `a value: ${error.flags}`,
-      found: error.found,
-      remedy: "give the value directly behind the option",
-    });
-  if (error instanceof GivenTwice)
-    return problem("conflicting-arguments", error.message, {
-      where: { argument: error.flags.split(" ")[0] ?? null },
-      expected: "the option once",
-      found: "more than once",
-      remedy: "leave one of them out",
-    });
   if (!(error instanceof CommanderError)) throw error;
   if (error.exitCode === 0) return null;
   return fromParser(error);

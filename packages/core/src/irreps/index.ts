@@ -4,6 +4,8 @@
  * relation to −k. `D({1|T}) = e^{+2πi k·T}` (docs/conventions.md, Moments and phases). Sources: Zak, J. Math. Phys. 1
  * (1960) 165; Bradley & Cracknell (1972), chapters 3 and 4; Herring, Phys. Rev. 52 (1937) 361.
  */
+export { littleGroupElement, type LittleGroupElement, smallIrrepMatrix } from "./evaluate.js";
+export { type MinusKLink, type MinusKRelation, minusKRelation } from "./minus-k.js";
 export { translationColumn, waveTimesColumn } from "./setting.js";
 export { smallIrreps } from "./small-irreps.js";
 export type { Reality, SmallIrrep, SmallIrreps } from "./types.js";

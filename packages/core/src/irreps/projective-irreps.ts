@@ -1,29 +1,20 @@
 import {
-  addCyclotomic,
-  addCyclotomicMatrices,
-  adjointCyclotomicMatrix,
   type Cyclotomic,
   type CyclotomicMatrix,
-  conjugateCyclotomic,
-  cyclotomicFromRational,
   cyclotomicOne,
-  cyclotomicToRational,
   cyclotomicZero,
   divideCyclotomic,
   equalCyclotomic,
-  invertCyclotomic,
   isCyclotomicZero,
-  multiplyCyclotomic,
   multiplyCyclotomicMatrices,
   rational,
-  reduceOrder,
   rootOfUnity,
   rootTurns,
   scaleCyclotomicMatrix,
-  squareRootOf,
   traceCyclotomicMatrix,
 } from "../numbers/index.js";
 import { compositionSeries, type SeriesStep } from "./composition-series.js";
+import { unitaryIntertwiner } from "./intertwiner.js";
 import type { LittleCoGroup } from "./little-co-group.js";
 
 /** A projective irrep Δ: unitary matrices by element number, `undefined` for elements not reached yet. */
@@ -151,7 +142,9 @@ function completed(group: LittleCoGroup, step: SeriesStep, base: Matrices, shift
 
 /** The p extensions of an irrep that is equivalent to its conjugate. */
 function extended(group: LittleCoGroup, step: SeriesStep, matrices: Matrices, conjugate: Matrices): Matrices[] {
-  const intertwiner = unitaryIntertwiner(step.subgroup, matrices, conjugate);
+  const intertwiner = unitaryIntertwiner(
+    step.subgroup.map((h) => [matrices[h] as CyclotomicMatrix, conjugate[h] as CyclotomicMatrix]),
+  );
   // X^p = λ e^{2πi·exponent} Δ(s^p) with a root of unity λ; each p-th root of 1/λ gives one extension.
   const { element, exponent } = generatorPower(group, step);
   const power = Array.from({ length: step.index - 1 }).reduce<CyclotomicMatrix>(
@@ -173,38 +166,4 @@ function ratio(a: CyclotomicMatrix, b: CyclotomicMatrix): Cyclotomic {
     for (const [column, entry] of entries.entries())
       if (!isCyclotomicZero(entry)) return divideCyclotomic((a[row] as readonly Cyclotomic[])[column] as Cyclotomic, entry);
   throw new Error("a zero matrix has no ratio");
-}
-
-/**
- * The unitary X with `Δ(h) X = X Δˢ(h)`, unique up to a phase by Schur's lemma: the mean of `Δ(h) E Δˢ(h)⁻¹` over H for
- * the first elementary matrix E that does not vanish, scaled so that one entry is positive.
- */
-function unitaryIntertwiner(subgroup: readonly number[], matrices: Matrices, conjugate: Matrices): CyclotomicMatrix {
-  const dimension = (matrices[0] as CyclotomicMatrix).length;
-  for (let seed = 0; seed < dimension * dimension; seed++) {
-    const mean = subgroup
-      .map((h) => outerProduct(matrices[h] as CyclotomicMatrix, conjugate[h] as CyclotomicMatrix, Math.floor(seed / dimension), seed % dimension))
-      .reduce(addCyclotomicMatrices);
-    const entry = mean.flat().find((value) => !isCyclotomicZero(value));
-    if (entry) return normalizedUnitary(scaleCyclotomicMatrix(invertCyclotomic(reduceOrder(entry)), mean));
-  }
-  throw new Error("two equivalent irreps have no intertwiner");
-}
-
-/** Δ E_{ab} Δ'† for an elementary matrix: column a of the first times the conjugated column b of the second. */
-function outerProduct(left: CyclotomicMatrix, right: CyclotomicMatrix, a: number, b: number): CyclotomicMatrix {
-  const adjoint = adjointCyclotomicMatrix(right);
-  return left.map((row) => (adjoint[b] as readonly Cyclotomic[]).map((entry) => multiplyCyclotomic(row[a] as Cyclotomic, entry)));
-}
-
-/** Divides by √m where X X† = m·1; m is rational because one entry of X is 1 and the rest come from roots of unity. */
-function normalizedUnitary(matrix: CyclotomicMatrix): CyclotomicMatrix {
-  const norm = (matrix[0] as readonly Cyclotomic[]).reduce(
-    (sum, entry) => addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(entry))),
-    cyclotomicZero,
-  );
-  const value = cyclotomicToRational(reduceOrder(norm));
-  if (value === null) throw new Error("an intertwiner has no unitary form in a cyclotomic field found by this method");
-  const inverseRoot = multiplyCyclotomic(squareRootOf(value[0] * value[1]), cyclotomicFromRational(rational(1, value[0])));
-  return scaledMatrix(inverseRoot, matrix).map((row) => row.map(reduceOrder));
 }

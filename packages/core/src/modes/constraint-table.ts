@@ -21,10 +21,10 @@ import {
 import { phaseText } from "./phase-text.js";
 import type { Mode } from "./types.js";
 
-/** One free amplitude and what it puts on each atom. */
-interface Term {
+/** One free amplitude and what it, or its complex conjugate, puts on each atom. */
+export interface Term {
   readonly letter: string;
-  readonly moments: readonly { readonly phase: Phase; readonly vector: readonly Cyclotomic[] }[];
+  readonly moments: readonly { readonly phase: Phase; readonly vector: readonly Cyclotomic[]; readonly conjugate?: boolean }[];
 }
 
 /**
@@ -35,13 +35,18 @@ interface Term {
  */
 export function constraintTable(k: WaveVector, modes: readonly Mode[], real: { readonly conjugate: readonly Mode[] } | null): string[] {
   const terms = real === null ? complexTerms(modes) : realTerms([...modes, ...real.conjugate]);
-  const atoms = modes[0]?.moments.length ?? 0;
+  return termTable(k, terms, modes[0]?.moments.length ?? 0);
+}
+
+/** The sum of all terms on each atom, as text. */
+export function termTable(k: WaveVector, terms: readonly Term[], atoms: number): string[] {
   return Array.from({ length: atoms }, (_, atom) => atomText(k, terms, atom));
 }
 
 const letters = ["u", "v", "w", "p", "q", "r", "s", "t", "f", "g", "h", "l", "m", "n"];
 
-function letterOf(index: number): string {
+/** The letter of the amplitude with that number, u v w first. */
+export function letterOf(index: number): string {
   return letters[index] ?? `c${index - letters.length + 1}_`;
 }
 
@@ -79,7 +84,7 @@ function atomText(k: WaveVector, terms: readonly Term[], atom: number): string {
         const entry = term.moments[atom]?.vector[axis] ?? cyclotomicZero;
         if (isCyclotomicZero(entry)) return [];
         const phase = common === null ? outer(phases[index] as Phase) : { negative: common.negative, rest: zeroForm };
-        return [coefficientText(k, phase.negative ? negateCyclotomic(entry) : entry, phase.rest, term.letter)];
+        return [coefficientText(k, phase.negative ? negateCyclotomic(entry) : entry, phase.rest, `${term.letter}${term.moments[atom]?.conjugate === true ? "*" : ""}`)];
       }),
     ),
   );

@@ -1,4 +1,4 @@
-import type { SmallIrrep, SmallIrreps } from "../irreps/index.js";
+import { type MinusKRelation, minusKRelation, type SmallIrrep, type SmallIrreps } from "../irreps/index.js";
 import { isHalfLattice } from "../kvectors/index.js";
 import {
   adjointCyclotomicMatrix,
@@ -20,8 +20,9 @@ import {
 import type { SiteOrbit, SpaceGroup, SymmetryOperator } from "../spacegroups/index.js";
 import { constraintTable } from "./constraint-table.js";
 import { type MomentOperator, momentMatrix, siteIntertwiners } from "./intertwiners.js";
-import { siteAction, suborbits } from "./site-action.js";
-import type { IrrepModes, Mode, ModeMoment, SiteModes } from "./types.js";
+import { minusKOnModes, type ReversingAction } from "./minus-k-modes.js";
+import { type OperatorAction, siteAction, suborbits } from "./site-action.js";
+import type { IrrepModes, MinusKOnModes, Mode, ModeMoment, SiteModes } from "./types.js";
 
 /**
  * The magnetic modes of one site: the split of its orbit under the little group, and for each irrep the copies and
@@ -59,16 +60,35 @@ export function siteModes(
     copies.sort((a, b) => a.pivot - b.pivot);
     return { irrep, modes: copies.flatMap((copy, number) => modesOfCopy(copy, number + 1)) };
   });
+  const relation = irreps.minusK === "in star" ? minusKRelation(group, irreps) : null;
+  const reversing = relation === null ? null : reversingAction(group, irreps, orbit, relation, axial);
+  const onModes = (irrep: SmallIrrep, modes: readonly Mode[], number: number): MinusKOnModes | null => {
+    const link = relation?.links[number];
+    if (!relation || !reversing || !link || modes.length === 0) return null;
+    const partnerModes = plain.find((other) => other.irrep.label === link.partner)?.modes ?? [];
+    return minusKOnModes(irreps.k, irrep, link, relation, reversing, parts, modes, partnerModes);
+  };
   return {
     orbit,
     suborbits: parts,
     axial,
     representations: irreps,
-    irreps: plain.map(({ irrep, modes }) => {
+    irreps: plain.map(({ irrep, modes }, number) => {
       const partner = plain.find((other) => other.irrep.label === irrep.conjugateOf);
-      return describe(irrep, modes, real, real && partner ? partner.modes : [], irreps);
+      return { ...describe(irrep, modes, real, real && partner ? partner.modes : [], irreps), minusK: onModes(irrep, modes, number) };
     }),
   };
+}
+
+function reversingAction(
+  group: SpaceGroup,
+  irreps: SmallIrreps,
+  orbit: SiteOrbit,
+  relation: MinusKRelation,
+  axial: boolean,
+): ReversingAction {
+  const [action] = siteAction(group, irreps.k, orbit, [relation.operator]);
+  return { ...(action as OperatorAction), matrix: matrixOf(group, relation.operator, axial) };
 }
 
 function matrixOf(group: SpaceGroup, operator: number, axial: boolean): CyclotomicMatrix {
@@ -151,7 +171,13 @@ function modesOfCopy(copy: Copy & { readonly suborbit: number }, number: number)
   }));
 }
 
-function describe(irrep: SmallIrrep, modes: readonly Mode[], real: boolean, conjugate: readonly Mode[], irreps: SmallIrreps): IrrepModes {
+function describe(
+  irrep: SmallIrrep,
+  modes: readonly Mode[],
+  real: boolean,
+  conjugate: readonly Mode[],
+  irreps: SmallIrreps,
+): Omit<IrrepModes, "minusK"> {
   const multiplicity = modes.length / irrep.dimension;
   const doubled = real ? irrep.reality === "complex" : true;
   const freeParameters = modes.length * (doubled ? 2 : 1);
@@ -162,10 +188,22 @@ function describe(irrep: SmallIrrep, modes: readonly Mode[], real: boolean, conj
     modes,
     constraint: modes.length === 0 ? [] : constraintTable(irreps.k, modes, real ? { conjugate } : null),
     freeParameters,
-    // Where k ≡ −k, and where −k is in no arm, nothing further ties the amplitudes of one arm.
-    freeParametersWithMinusK: irreps.minusK === "in star" ? null : freeParameters,
+    freeParametersWithMinusK: irreps.minusK === "in star" ? lockedParameters(irrep, multiplicity) : freeParameters,
     vanishingAtoms: Array.from({ length: atoms }, (_, atom) => atom).filter((atom) =>
       modes.every((mode) => mode.moments[atom]?.vector.every(isCyclotomicZero) ?? true),
     ),
   };
+}
+
+/**
+ * Real parameters of one order parameter ξ (d complex components at k) that drives m copies. The copies' weights form a
+ * space over the commuting field of the physically irreducible representation (reals, complex numbers, quaternions for
+ * the three types; two copies make one physical copy of a pseudoreal irrep), and one scale in that field is common to
+ * ξ and the weights.
+ */
+function lockedParameters({ dimension, reality }: SmallIrrep, multiplicity: number): number {
+  if (multiplicity === 0) return 0;
+  if (reality === "real") return 2 * dimension + multiplicity - 1;
+  if (reality === "complex") return 2 * dimension + 2 * multiplicity - 2;
+  return 4 * dimension + 2 * multiplicity - 4;
 }

@@ -1,5 +1,5 @@
 import type { SmallIrrep, SmallIrreps } from "../irreps/index.js";
-import type { Cyclotomic, Phase } from "../numbers/index.js";
+import type { Cyclotomic, Phase, PhasedNumber } from "../numbers/index.js";
 import type { SiteOrbit } from "../spacegroups/index.js";
 
 /** Fourier component of one atom in lattice components: `S = e^{2πi·phase} · vector`. */
@@ -27,8 +27,10 @@ export interface IrrepModes {
   readonly constraint: readonly string[];
   /** Free real parameters of one arm's Fourier components. */
   readonly freeParameters: number;
-  /** The same with the relation between k and −k of one order parameter; null while it is not derived. */
-  readonly freeParametersWithMinusK: number | null;
+  /** The same when one order parameter drives all copies, with the relation between k and −k where there is one. */
+  readonly freeParametersWithMinusK: number;
+  /** The relation itself; null where k ≡ −k or −k is not in the star. */
+  readonly minusK: MinusKOnModes | null;
   /** Indices of orbit atoms whose component is zero for all amplitudes. */
   readonly vanishingAtoms: readonly number[];
 }
@@ -41,4 +43,20 @@ export interface SiteModes {
   readonly axial: boolean;
   readonly representations: SmallIrreps;
   readonly irreps: readonly IrrepModes[];
+}
+
+/**
+ * How the operator g₀ that takes k to −k acts on the copies of an irrep, `Θ E_c = Σ_c' E'_c' N B_{c'c}` with
+ * `(ΘS)_{j'} = e^{2πi k·a} det(R₀) R₀ S_j*`, `g₀ r_j = r_j' + a` and N of the irrep's relation. E' are the modes of
+ * `partner`, the irrep itself unless it is complex.
+ */
+export interface MinusKOnModes {
+  readonly operator: number;
+  readonly partner: string;
+  /** Suborbit that g₀ takes each suborbit to. */
+  readonly suborbitImages: readonly number[];
+  /** B, rows copies of the partner, columns copies of this irrep. */
+  readonly matrix: readonly (readonly PhasedNumber[])[];
+  /** For real irreps: the arrangement of one order parameter, up to a common phase, in symbols; else null. */
+  readonly constraint: readonly string[] | null;
 }

@@ -9,7 +9,7 @@ export function tiesAmong(model: PeakModel, weighed: readonly Weighed[]): readon
   const ties: number[][] = weighed.map(() => []);
   weighed.forEach((a, i) => {
     weighed.slice(i + 1).forEach((b, step) => {
-      if (model.samePositions(a.explanation, b.explanation)) return;
+      if (!model.samePositions(a.explanation, b.explanation)) return;
       const j = i + 1 + step;
       ties[i]?.push(j);
       ties[j]?.push(i);

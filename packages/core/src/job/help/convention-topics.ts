@@ -8,7 +8,8 @@ export const conventionTopics: { readonly [topic: string]: HelpTopic } = {
     text: `Operators      x' = R x + t on fractional coordinates, written as triplets: -x+1/2,-y,z+1/2
 Wave vectors   rows in a*, b*, c* of the setting's own axes; R takes k to k R⁻¹; 2π is written out
 Phases         a lattice translation T is exp(+2πi k·T) in D; the moment on atom j in the cell
-               at T is M_j(T) = S_j exp(−2πi k·T) + c.c., without a factor 1/2: a wave of amplitude 2|S|.
+               at T is M_j(T) = S_j exp(−2πi k·T) + c.c., without a factor 1/2: a wave of
+               amplitude 2|S|.
                Where 2k is a reciprocal lattice vector: M_j(T) = S_j exp(−2πi k·T) with real S_j.
                The phase runs with T alone, not with the position of the atom in the cell.
 Moments        axial vectors; S along a, b, c (lattice components, no unit)
@@ -22,8 +23,11 @@ Evidence       natural log-odds that the peaks are lines of this k and not chanc
   },
   commands: {
     title: "What this version does",
-    text: `Built:    ${Object.keys(commandTable).join(", ")}
-Planned:  ${plannedCommands.join(", ")}
+    text: `Built:
+  ${Object.keys(commandTable).join(", ")}
+Planned:
+  ${plannedCommands.slice(0, 6).join(", ")},
+  ${plannedCommands.slice(6).join(", ")}
 
 kvane COMMAND --help shows options and an example that works when pasted.`,
   },

@@ -49,7 +49,7 @@ export async function peaksIfGiven(work: Work): Promise<ReadPeaks | null> {
       [
         {
           what: "uncertainty of the peaks",
-          value: list.uncertaintySource,
+          value: list.uncertaintySource.replace(", as the file gives none", ""),
           because: "neither the list nor --tolerance says it",
         },
       ],

@@ -1,8 +1,7 @@
-import { type Problem, problem } from "../../errors/index.js";
 import { numericWaveVector, type WaveVector } from "../../kvectors/index.js";
 import type { SearchRecord } from "../../reports/index.js";
 import type { Candidate } from "../../search/index.js";
-import { remember, type Work } from "../work.js";
+import type { Work } from "../work.js";
 import type { StudyInputs } from "./read-study.js";
 import { type Found, indexedBy, searchedFor } from "./search-of.js";
 
@@ -30,10 +29,8 @@ export async function findK(work: Work, inputs: StudyInputs, bound: number): Pro
   if (inputs.given.length > 0) return withGivenK(work, inputs);
   const found = await searchedFor(work, searchInput(inputs));
   const [best] = found.candidates;
-  if (best === undefined) {
-    remember(work, [], [nothingFound(inputs)]);
+  if (best === undefined)
     return { search: found.record, candidates: [], followed: [], notFollowed: [], searched: true };
-  }
   const allowed = [0, ...best.tiedWith.filter((index) => index > 0)].sort((a, b) => a - b);
   return {
     search: found.record,
@@ -44,14 +41,6 @@ export async function findK(work: Work, inputs: StudyInputs, bound: number): Pro
     notFollowed: allowed.slice(bound),
     searched: true,
   };
-}
-
-function nothingFound({ options }: StudyInputs): Problem {
-  return problem("no-candidate", "no wave vector of those searched explains enough of the peaks", {
-    expected: `a k that leaves at most ${options.unmatched} of the peaks unmatched`,
-    found: "none",
-    remedy: "raise --unmatched or --tolerance, or look for peaks that are not magnetic",
-  });
 }
 
 function withGivenK(work: Work, inputs: StudyInputs): FoundKs {

@@ -1,3 +1,4 @@
+import { type Problem, problem } from "../../errors/index.js";
 import type { WaveVector } from "../../kvectors/index.js";
 import { peaksRecord, type SearchRecord, searchRecord } from "../../reports/index.js";
 import {
@@ -45,12 +46,21 @@ export function indexedBy(work: Work, input: SearchInput, ks: readonly WaveVecto
   return { candidates, record };
 }
 
+function nothingFound({ unmatched }: SearchOptions): Problem {
+  return problem("no-candidate", "no wave vector of those searched explains enough of the peaks", {
+    expected: `a k that leaves at most ${unmatched} of the peaks unmatched`,
+    found: "none",
+    remedy: "raise --unmatched or --tolerance, or look for peaks that are not magnetic",
+  });
+}
+
 /** The search over the kinds of k. */
 export async function searchedFor(work: Work, input: SearchInput): Promise<Found> {
   const { group, cell, peaks, options } = input;
   const found = await locate(group, cell, peaks.list, options, work.host);
   remember(work, [], found.warnings);
   for (const { warnings } of found.candidates.slice(0, 1)) remember(work, [], warnings);
+  if (found.candidates.length === 0) remember(work, [], [nothingFound(options)]);
   const record = searchRecord(group, cell, peaksRecord(peaks.list, peaks.file), found);
   return { candidates: found.candidates, record };
 }

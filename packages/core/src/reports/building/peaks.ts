@@ -65,7 +65,7 @@ export function peaksRecord(peaks: PeakList, file: string | null): PeaksRecord {
     list: peaks.peaks.map((peak) => ({
       index: peak.index,
       position: rounded(peak.position),
-      hkl: peak.hkl?.map((entry) => roundNumber(entry)),
+      hkl: roundedAll(peak.hkl),
       q: rounded(peak.q),
       uncertainty: roundNumber(peak.uncertainty ?? peak.hklUncertainty ?? 0),
       intensity: rounded(peak.intensity),
@@ -126,7 +126,7 @@ function candidateRecord(candidate: Candidate): CandidateRecord {
         peak: one.peak,
         ...lineRecord(one),
         q: roundNumber(one.q),
-        residualHkl: one.residualHkl?.map((entry) => roundNumber(entry)),
+        residualHkl: roundedAll(one.residualHkl),
         alternatives: one.alternatives.map(lineRecord),
       }),
     ),
@@ -142,7 +142,7 @@ function candidateRecord(candidate: Candidate): CandidateRecord {
       from: waveVectorToJson(refinement.from),
       determined: refinement.determined,
       converged: refinement.converged,
-      rescaledSu: refinement.rescaledUncertainties?.map((su) => roundNumber(su)),
+      rescaledSu: roundedAll(refinement.rescaledUncertainties),
     },
   };
 }
@@ -158,4 +158,8 @@ function lineRecord(line: IndexedLine): LineRecord {
 
 function rounded(value: number | null): number | null {
   return value === null ? null : roundNumber(value);
+}
+
+function roundedAll(values: readonly number[] | null): number[] | null {
+  return values === null ? null : values.map((value) => roundNumber(value));
 }

@@ -42,14 +42,14 @@ export function positionText(position: readonly string[]): string {
   return `(${position.map(coordinateText).join(", ")})`;
 }
 
-/** Denominators up to this stay fractions. */
-const usualDenominator = 12;
+/** Denominators of special positions: these stay fractions. */
+const usualDenominators: readonly number[] = [1, 2, 3, 4, 6, 8, 12, 16, 24];
 
 /** A fraction that was written as a decimal reads better as one: 137/1000 is 0.137, exactly. */
 function coordinateText(fraction: string): string {
   const [numerator, denominator = "1"] = fraction.split("/");
   const bottom = Number(denominator);
-  if (bottom <= usualDenominator || !/^2*5*$/.test(factors(bottom))) return fraction;
+  if (usualDenominators.includes(bottom) || !/^2*5*$/.test(factors(bottom))) return fraction;
   return String(Number(numerator) / bottom);
 }
 

@@ -56,6 +56,7 @@ export function peakFields(peaks: PeaksRecord): [string, string][] {
 
 /** Ranked by evidence; ties by the numbers of the candidates. */
 export function candidateTable(candidates: readonly CandidateRecord[]): string[] {
+  if (candidates.length === 0) return ["  none"];
   return table(
     [
       { title: "", align: "right" },

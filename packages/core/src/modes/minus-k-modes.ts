@@ -1,0 +1,234 @@
+import type { MinusKLink, MinusKRelation, SmallIrrep } from "../irreps/index.js";
+import type { WaveVector } from "../kvectors/index.js";
+import {
+  addCyclotomic,
+  addForms,
+  type Cyclotomic,
+  type CyclotomicMatrix,
+  conjugateCyclotomic,
+  cyclotomicNumbers,
+  cyclotomicZero,
+  isConstantForm,
+  isCyclotomicZero,
+  multiplyCyclotomic,
+  negateForm,
+  type Phase,
+  type PhasedNumber,
+  reducedEchelon,
+  reduceOrder,
+  rootOfUnity,
+  scaleForm,
+  subtractForms,
+  zeroForm,
+} from "../numbers/index.js";
+import { letterOf, type Term, termTable } from "./constraint-table.js";
+import type { OperatorAction } from "./site-action.js";
+import type { MinusKOnModes, Mode } from "./types.js";
+
+/** How g₀ acts on the atoms and on one moment. */
+export interface ReversingAction extends OperatorAction {
+  /** det(R₀) R₀ in lattice components. */
+  readonly matrix: CyclotomicMatrix;
+}
+
+/** The modes of one copy: one per partner. */
+type Copy = readonly Mode[];
+
+/**
+ * B of every copy, read off at the leading entries of the partner's copies, which are 1 there and 0 in other copies.
+ */
+export function minusKOnModes(
+  k: WaveVector,
+  irrep: SmallIrrep,
+  link: MinusKLink,
+  relation: MinusKRelation,
+  action: ReversingAction,
+  suborbits: readonly (readonly number[])[],
+  modes: readonly Mode[],
+  partnerModes: readonly Mode[],
+): MinusKOnModes {
+  const copies = groupCopies(modes);
+  const partners = groupCopies(partnerModes);
+  const pivots = partners.map(leadingEntry);
+  const source = action.image.map((_, atom) => action.image.indexOf(atom));
+  const phaseAt = (copy: Copy, atom: number): Phase =>
+    subtractForms(action.phase[atom] as Phase, (copy.find((mode) => hasMoment(mode, atom)) ?? (copy[0] as Mode)).moments[atom]?.phase ?? zeroForm);
+  const matrix = pivots.map(({ atom, axis }) =>
+    copies.map((copy): PhasedNumber => {
+      const from = source[atom] as number;
+      const factor = copy.reduce((sum, mode, partner) => {
+        const vector = mode.moments[from]?.vector ?? [];
+        const rotated = rowTimesConjugate(action.matrix[axis] as readonly Cyclotomic[], vector);
+        return addCyclotomic(sum, multiplyCyclotomic(rotated, conjugateCyclotomic(link.matrix[0]?.[partner] as Cyclotomic)));
+      }, cyclotomicZero);
+      return { phase: phaseAt(copy, from), factor: reduceOrder(factor) };
+    }),
+  );
+  const suborbitImages = suborbits.map((atoms) =>
+    suborbits.findIndex((others) => others.includes(action.image[atoms[0] as number] as number)),
+  );
+  return {
+    operator: relation.operator,
+    partner: link.partner,
+    suborbitImages,
+    matrix,
+    constraint: irrep.reality === "real" && copies.length > 0 ? lockedConstraint(k, copies, matrix, suborbitImages) : null,
+  };
+}
+
+function groupCopies(modes: readonly Mode[]): Copy[] {
+  const copies: Mode[][] = [];
+  for (const mode of modes) {
+    const copy = copies[mode.copy - 1] ?? [];
+    copies[mode.copy - 1] = [...copy, mode];
+  }
+  return copies;
+}
+
+function leadingEntry(copy: Copy): { atom: number; axis: number } {
+  const moments = (copy[0] as Mode).moments;
+  const atom = moments.findIndex((moment) => !moment.vector.every(isCyclotomicZero));
+  return { atom, axis: (moments[atom]?.vector ?? []).findIndex((entry) => !isCyclotomicZero(entry)) };
+}
+
+function hasMoment(mode: Mode, atom: number): boolean {
+  return !(mode.moments[atom]?.vector.every(isCyclotomicZero) ?? true);
+}
+
+function rowTimesConjugate(row: readonly Cyclotomic[], vector: readonly Cyclotomic[]): Cyclotomic {
+  return row.reduce(
+    (sum, entry, index) => addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(vector[index] ?? cyclotomicZero))),
+    cyclotomicZero,
+  );
+}
+
+/**
+ * One order parameter drives all copies with amplitudes that obey `a = B a*` up to a common phase (B B* = 1 for a real
+ * irrep). On a suborbit that g₀ maps to itself they are real behind half the phase of B's diagonal; on two suborbits
+ * that it exchanges they are one complex letter and its conjugate.
+ */
+function lockedConstraint(
+  k: WaveVector,
+  copies: readonly Copy[],
+  matrix: readonly (readonly PhasedNumber[])[],
+  suborbitImages: readonly number[],
+): string[] {
+  const terms: Term[] = [];
+  suborbitImages.forEach((image, suborbit) => {
+    const here = numbersOn(copies, suborbit);
+    if (image === suborbit) terms.push(...selfTerms(copies, matrix, here, terms.length));
+    else if (image > suborbit) terms.push(...pairTerms(copies, matrix, here, numbersOn(copies, image), terms.length));
+  });
+  return termTable(k, terms, (copies[0] as Copy)[0]?.moments.length ?? 0);
+}
+
+function numbersOn(copies: readonly Copy[], suborbit: number): number[] {
+  return copies.flatMap((copy, number) => (copy[0]?.suborbit === suborbit ? [number] : []));
+}
+
+/** Real letters: the fixed space of `a → b a*`, b being B without the half phases of its diagonal. */
+function selfTerms(copies: readonly Copy[], matrix: readonly (readonly PhasedNumber[])[], here: readonly number[], used: number): Term[] {
+  if (here.length === 0) return [];
+  const half = new Map(here.map((number) => [number, scaleForm([1, 2], matrix[number]?.[number]?.phase ?? zeroForm)]));
+  const b = here.map((row) =>
+    here.map((column) => {
+      const { phase, factor } = matrix[row]?.[column] as PhasedNumber;
+      const rest = subtractForms(phase, addForms(half.get(row) as Phase, half.get(column) as Phase));
+      if (!isConstantForm(rest)) throw new Error("a phase between copies on one suborbit depends on a free parameter");
+      return multiplyCyclotomic(rootOfUnity(rest.constant), factor);
+    }),
+  );
+  const i = rootOfUnity([1, 4]);
+  const fixed = here.flatMap((_, column) =>
+    [cyclotomicOneAt(here.length, column), cyclotomicOneAt(here.length, column).map((entry) => multiplyCyclotomic(i, entry))].map((v) =>
+      v.map((entry, row) => addCyclotomic(entry, rowTimesConjugate(b[row] as readonly Cyclotomic[], v))),
+    ),
+  );
+  return realBasis(fixed).flatMap((weights, index) =>
+    partnersOf(copies, here).map(
+      (partner): Term => ({
+        letter: letterFor(copies, used + index, partner),
+        moments: combined(copies, here, weights, partner, half),
+      }),
+    ),
+  );
+}
+
+function cyclotomicOneAt(length: number, position: number): Cyclotomic[] {
+  return Array.from({ length }, (_, index) => (index === position ? rootOfUnity([0, 1]) : cyclotomicZero));
+}
+
+/** A basis with real coefficients of the real span of complex rows: echelon form of (real part, imaginary part). */
+function realBasis(rows: readonly (readonly Cyclotomic[])[]): Cyclotomic[][] {
+  const i = rootOfUnity([1, 4]);
+  const twice = (entry: Cyclotomic): Cyclotomic => addCyclotomic(entry, conjugateCyclotomic(entry));
+  // 2 Re z and 2 Im z = 2 Re(−i z): the common factor 2 does not change the span.
+  const split = rows.map((row) => [...row.map(twice), ...row.map((entry) => twice(multiplyCyclotomic(conjugateCyclotomic(i), entry)))]);
+  const width = rows[0]?.length ?? 0;
+  return reducedEchelon(split, cyclotomicNumbers).rows.map((row) =>
+    Array.from({ length: width }, (_, index) =>
+      reduceOrder(addCyclotomic(row[index] as Cyclotomic, multiplyCyclotomic(i, row[width + index] as Cyclotomic))),
+    ),
+  );
+}
+
+/** Complex letters on the first suborbit, their conjugates behind B on the second. */
+function pairTerms(
+  copies: readonly Copy[],
+  matrix: readonly (readonly PhasedNumber[])[],
+  here: readonly number[],
+  there: readonly number[],
+  used: number,
+): Term[] {
+  return here.flatMap((column, index) =>
+    partnersOf(copies, here).map((partner): Term => {
+      const own = combined(copies, [column], [rootOfUnity([0, 1])], partner, new Map([[column, zeroForm]]));
+      const phases = new Map(there.map((row) => [row, matrix[row]?.[column]?.phase ?? zeroForm]));
+      const weights = there.map((row) => matrix[row]?.[column]?.factor ?? cyclotomicZero);
+      const other = combined(copies, there, weights, partner, phases);
+      return {
+        letter: letterFor(copies, used + index, partner),
+        moments: own.map((moment, atom) =>
+          moment.vector.every(isCyclotomicZero) ? { ...(other[atom] as Term["moments"][number]), conjugate: true } : moment,
+        ),
+      };
+    }),
+  );
+}
+
+function partnersOf(copies: readonly Copy[], numbers: readonly number[]): number[] {
+  return Array.from({ length: copies[numbers[0] as number]?.length ?? 0 }, (_, partner) => partner);
+}
+
+/** `u` for one-dimensional irreps; `u·ξ2` for the second component of an order parameter ξ of several. */
+function letterFor(copies: readonly Copy[], index: number, partner: number): string {
+  return (copies[0] as Copy).length === 1 ? letterOf(index) : `${letterOf(index)}ξ${partner + 1}`;
+}
+
+/** Σ weight_c e^{2πi·phase_c} E_c for one partner; on one suborbit all terms of an atom have one phase. */
+function combined(
+  copies: readonly Copy[],
+  numbers: readonly number[],
+  weights: readonly Cyclotomic[],
+  partner: number,
+  phases: ReadonlyMap<number, Phase>,
+): { phase: Phase; vector: Cyclotomic[] }[] {
+  const atoms = copies[0]?.[0]?.moments.length ?? 0;
+  return Array.from({ length: atoms }, (_, atom) => {
+    let phase: Phase | null = null;
+    const vector: Cyclotomic[] = [cyclotomicZero, cyclotomicZero, cyclotomicZero];
+    numbers.forEach((number, index) => {
+      const moment = copies[number]?.[partner]?.moments[atom];
+      const weight = weights[index] as Cyclotomic;
+      if (!moment || isCyclotomicZero(weight) || moment.vector.every(isCyclotomicZero)) return;
+      const total = addForms(moment.phase, phases.get(number) as Phase);
+      phase ??= total;
+      const step = addForms(total, negateForm(phase));
+      if (!isConstantForm(step)) throw new Error("two copies on one suborbit differ by a phase with a free parameter");
+      moment.vector.forEach((entry, axis) => {
+        vector[axis] = addCyclotomic(vector[axis] as Cyclotomic, multiplyCyclotomic(multiplyCyclotomic(rootOfUnity(step.constant), weight), entry));
+      });
+    });
+    return { phase: phase ?? zeroForm, vector: vector.map(reduceOrder) };
+  });
+}
