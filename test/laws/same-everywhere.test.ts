@@ -31,7 +31,7 @@ function invariants(group: SpaceGroup, k: WaveVector, sites: readonly Site[]): s
     .sort();
 }
 
-const numbers = [5, 15, 19, 62, 70, 80, 88, 122, 161, 167, 176, 198, 220];
+const numbers = [15, 19, 70, 88, 122, 161, 167, 198, 220];
 
 describe("axes and origin change nothing but the text", { timeout: 120_000 }, () => {
   test.for(numbers)(

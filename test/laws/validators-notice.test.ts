@@ -7,6 +7,7 @@ import { groupOf } from "../support/parsed-groups.js";
 import { constraintProblems } from "../support/validate-constraints.js";
 import { fieldProblems } from "../support/validate-field.js";
 import { irrepProblems } from "../support/validate-irreps.js";
+import { relationProblems, reversalProblems } from "../support/validate-minus-k.js";
 import { modeProblems } from "../support/validate-modes.js";
 import { site, wave } from "../support/written.js";
 
@@ -66,6 +67,8 @@ function mirrored(value: Exact): Exact {
   });
   return { ...value, coefficients };
 }
+
+type Coupling = NonNullable<SiteModes["irreps"][number]["minusK"]>["matrix"][number][number];
 
 type Moment = SiteModes["irreps"][number]["modes"][number]["moments"][number];
 
@@ -199,5 +202,26 @@ describe("other faults are noticed", () => {
     const [first, second, ...rest] = sound.modes.orbit.positions;
     const orbit = { ...sound.modes.orbit, positions: [second, first, ...rest] as typeof sound.modes.orbit.positions };
     expect(modeProblems(sound.group, { ...sound.modes, orbit }).join()).toContain("Γ(g) e ≠ Σ D e");
+  });
+
+  test("the relation between k and −k with a conjugated or a missing entry", () => {
+    const { group, irreps, modes } = soundOf("P 63 c m", wave("1/3 1/3 0"), site("M", "0 0 1/3"));
+    expect(relationProblems(group, irreps)).toEqual([]);
+    expect(reversalProblems(group, modes)).toEqual([]);
+    const changed = (change: (number: Coupling) => Coupling): SiteModes => ({
+      ...modes,
+      irreps: modes.irreps.map((entry) => ({
+        ...entry,
+        minusK: entry.minusK && { ...entry.minusK, matrix: entry.minusK.matrix.map((row) => row.map(change)) },
+      })),
+    });
+    const conjugated = changed(({ phase, factor }) => ({ phase: negated(phase), factor: mirrored(factor) }));
+    const turned = changed(({ phase, factor }) => ({ phase: { ...phase, constant: [1, 3] }, factor }));
+    for (const wrong of [conjugated, turned]) {
+      expect(reversalProblems(group, wrong).join()).toContain("ΘE ≠ Σ E' N B");
+      expect(fieldProblems(group, wrong).join()).toContain("takes k to −k");
+    }
+    const missing = { ...modes, irreps: modes.irreps.map((entry) => ({ ...entry, minusK: null })) };
+    expect(reversalProblems(group, missing).join()).toContain("or missing");
   });
 });

@@ -1,4 +1,5 @@
 import { smallIrreps } from "@kvane/core/irreps";
+import { specialPoints } from "@kvane/core/kvectors";
 import { describe, expect, test } from "vitest";
 import { groupOf } from "../support/parsed-groups.js";
 import { wave } from "../support/written.js";
@@ -86,4 +87,16 @@ describe("irreps at special points, dimensions and types", () => {
         written(irreps),
       );
     });
+});
+
+/** The k with 2k ∈ L* are the eight halves of the reciprocal lattice, shared out over the stars (exact). */
+describe("arms of the k with 2k ∈ L* add up to 8", () => {
+  test.for([
+    ["P m -3 m", [1, 1, 3, 3]],
+    ["F m -3 m", [1, 3, 4]],
+    ["I m -3 m", [1, 1, 6]],
+  ] as const)("%s", ([group, arms]) => {
+    const halves = specialPoints(groupOf(group)).filter((point) => point.minusK === "equivalent");
+    expect(halves.map((point) => point.arms).sort()).toEqual(arms);
+  });
 });

@@ -29,6 +29,15 @@ export function turned(matrix: ComplexMatrix, turns: number): ComplexMatrix {
   };
 }
 
+/** A real factor times the matrix. */
+export function scaled(matrix: ComplexMatrix, factor: number): ComplexMatrix {
+  return {
+    ...matrix,
+    real: matrix.real.map((value) => factor * value),
+    imaginary: matrix.imaginary.map((value) => factor * value),
+  };
+}
+
 export function product(a: ComplexMatrix, b: ComplexMatrix): ComplexMatrix {
   const result = zeroMatrix(a.rows, b.columns);
   for (let row = 0; row < a.rows; row++)

@@ -12,7 +12,7 @@ export type Letters = Readonly<Record<string, Complex>>;
 /**
  * The value of an exact number as kvane prints it (`-1/2`, `√3·e^{iπ/6}/2`, `(1+i)/2`, `e^{2πi·(u/2+1/3)}`), read from
  * the meaning of the signs alone: sums, products written with `·` or side by side, division by an integer, roots, powers
- * of e. Throws on a name without a value and on anything that cannot be read to the end.
+ * of e, `*` behind a letter for its conjugate. Throws on a name without a value and on anything that cannot be read to the end.
  */
 export function evaluateText(text: string, letters: Letters = {}): Complex {
   const reader: Reader = { text, letters: { ...letters, i: [0, 1], "π": [Math.PI, 0] }, position: 0 };
@@ -80,12 +80,14 @@ function readFactor(reader: Reader): Complex | null {
     return [Math.exp(re) * Math.cos(im), Math.exp(re) * Math.sin(im)];
   }
   // The longest name comes first: `iπ` is i times π, `kx` and `c12_` are one name each.
-  const name = /^[a-z][a-z0-9_]*/.exec(text.slice(reader.position))?.[0] ?? character;
+  const name = /^[a-zξ][a-z0-9_]*/.exec(text.slice(reader.position))?.[0] ?? character;
   for (let length = name.length; length > 0; length--) {
     const letter = reader.letters[name.slice(0, length)];
     if (letter === undefined) continue;
     reader.position += length;
-    return letter;
+    if (text[reader.position] !== "*") return letter;
+    reader.position += 1;
+    return [letter[0], -letter[1]];
   }
   return null;
 }

@@ -78,10 +78,11 @@ export function floatIrreps(group: SpaceGroup, irreps: SmallIrreps): FloatIrreps
   };
 }
 
-function floatMatrix(rows: readonly (readonly CyclotomicRecord[])[], phase: PhaseRecord): ComplexMatrix {
+/** The matrix in floats, turned by the phase. */
+export function floatMatrix(rows: readonly (readonly CyclotomicRecord[])[], phase: PhaseRecord | null): ComplexMatrix {
   const matrix = zeroMatrix(rows.length, rows.length);
   rows.flat().forEach((entry, index) => {
-    const [re, im] = phasedValue(phase, entry, letterValues);
+    const [re, im] = phase === null ? cyclotomicValue(entry) : phasedValue(phase, entry, letterValues);
     matrix.real[index] = re;
     matrix.imaginary[index] = im;
   });

@@ -6,7 +6,9 @@ import { componentsOf, floatGroup } from "./float-group.js";
 import { constraintProblems } from "./validate-constraints.js";
 import { fieldProblems, supercellSize } from "./validate-field.js";
 import { irrepProblems } from "./validate-irreps.js";
+import { relationProblems, reversalProblems } from "./validate-minus-k.js";
 import { modeProblems } from "./validate-modes.js";
+import { orderParameterProblems } from "./validate-order-parameter.js";
 
 /** What one group at one k with some sites came to. */
 export interface SweepResult {
@@ -50,7 +52,7 @@ export function sweepCase(
   };
   guarded(name, () => {
     irreps = smallIrreps(group, k);
-    return irrepProblems(group, irreps);
+    return [...irrepProblems(group, irreps), ...relationProblems(group, irreps)];
   });
   if (irreps !== null)
     for (const site of sites)
@@ -60,7 +62,12 @@ export function sweepCase(
           () => {
             const found = siteModes(group, irreps as SmallIrreps, siteOrbit(group, site, null), { axial });
             modes += 3 * found.orbit.positions.length;
-            const wrong = [...modeProblems(group, found), ...constraintProblems(group, found)];
+            const wrong = [
+              ...modeProblems(group, found),
+              ...constraintProblems(group, found),
+              ...reversalProblems(group, found),
+              ...orderParameterProblems(group, found),
+            ];
             if (!isRational(k) || supercellSize(floatGroup(group), componentsOf(k)) > largestSupercell) return wrong;
             fields += 1;
             return [...wrong, ...fieldProblems(group, found, options)];

@@ -12,7 +12,7 @@ const reserved = new Set(["e", "i", "kx", "ky", "kz"]);
 /** Constraint tables with more letters than this are not taken apart letter by letter. */
 const mostLetters = 60;
 
-type Vector = Pick<FloatMode, "real" | "imaginary">;
+export type Vector = Pick<FloatMode, "real" | "imaginary">;
 
 /**
  * The general arrangement in symbols, read back as numbers: with any letters it lies in the span of the irrep's modes
@@ -66,18 +66,20 @@ function conjugated(vector: Vector): Vector {
   return { real: vector.real, imaginary: vector.imaginary.map((value) => -value) };
 }
 
-function kLetters(modes: SiteModes): Letters {
+/** kx, ky, kz in the texts. */
+export function kLetters(modes: SiteModes): Letters {
   const [kx, ky, kz] = componentsOf(modes.representations.k) as [number, number, number];
   return { kx: [kx, 0], ky: [ky, 0], kz: [kz, 0] };
 }
 
-function lettersIn(texts: readonly string[]): string[] {
-  const names = texts.flatMap((text) => text.match(/[a-z][a-z0-9_]*/g) ?? []);
+/** Names of amplitudes in the texts, in order of appearance. */
+export function lettersIn(texts: readonly string[]): string[] {
+  const names = texts.flatMap((text) => text.match(/[a-zξ][a-z0-9_]*/g) ?? []);
   return [...new Set(names.filter((name) => !reserved.has(name)))];
 }
 
-/** `(a, b, c)` or `(a, b, c)·phase` for each atom. */
-function vectorOf(texts: readonly string[], letters: Letters): Vector {
+/** The Fourier components of all atoms from `(a, b, c)` or `(a, b, c)·phase` for each of them. */
+export function vectorOf(texts: readonly string[], letters: Letters): Vector {
   const components = texts.flatMap((text) => {
     const parts = /^\((.*), (.*), (.*?)\)(?:·(.*))?$/.exec(text);
     if (!parts) throw new Error(`no three components: ${text}`);

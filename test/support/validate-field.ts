@@ -3,6 +3,7 @@ import type { SpaceGroup } from "@kvane/core/spacegroups";
 import type { ComplexMatrix } from "./complex.js";
 import { type FloatGroup, type FloatOperator, inner, inverse, latticeCoordinates, turnColumn } from "./float-group.js";
 import { type Random, seeded } from "./random.js";
+import { type FloatReversal, floatReversal } from "./validate-minus-k.js";
 import { type FloatModes, floatModes, landings, vectorMatrix } from "./validate-modes.js";
 
 /** How the field is built and compared; the wrong choices serve to show that the check notices them. */
@@ -41,8 +42,8 @@ type Amplitudes = readonly (readonly (readonly [number, number])[])[];
 
 /**
  * Builds the real moments of all atoms in a supercell that is commensurate with k, once for random amplitudes of all
- * modes, moves them atom by atom with `(gM)(r) = det(R) R M(g⁻¹ r)`, g every operator of the little group and the
- * three lattice translations, and compares with the field of the amplitudes `a' = D(g) a`. For k without letters.
+ * modes, moves them atom by atom with `(gM)(r) = det(R) R M(g⁻¹ r)`, g every operator of the little group, the three
+ * lattice translations and the operator that takes k to −k, and compares with the field of the amplitudes `a' = D(g) a`. For k without letters.
  */
 export function fieldProblems(group: SpaceGroup, modes: SiteModes, options: FieldOptions = {}): string[] {
   const read = floatModes(group, modes);
@@ -65,6 +66,13 @@ export function fieldProblems(group: SpaceGroup, modes: SiteModes, options: Fiel
     if (!(error < tolerance))
       problems.push(`translation ${axis} does not act as e^{+2πi k·T} (by ${error.toPrecision(2)})`);
   });
+  const reversal = floatReversal(group, modes);
+  if (reversal !== null) {
+    const expected = fieldOf(read, supercell, reversed(amplitudes, reversal), options);
+    const error = differenceAfter(read, field, expected, reversal.operator, cells);
+    if (!(error < tolerance))
+      problems.push(`the operator that takes k to −k does not act as N and B say (by ${error.toPrecision(2)})`);
+  }
   return problems;
 }
 
@@ -112,6 +120,27 @@ function transformed(read: FloatModes, amplitudes: Amplitudes, at: number, optio
       return [re, im];
     });
   });
+}
+
+/** a'_{c',q} of the partner irrep = Σ_{c,p} N_{qp} B_{c'c} a_{c,p}*. */
+function reversed(amplitudes: Amplitudes, reversal: FloatReversal): Amplitudes {
+  const result = amplitudes.map((list) => list.map((): [number, number] => [0, 0]));
+  reversal.actions.forEach((action, irrep) => {
+    if (action === null) return;
+    const size = action.matrix.rows;
+    (result[action.partner] as [number, number][]).forEach((sum, target) => {
+      (amplitudes[irrep] as Amplitudes[number]).forEach(([a, b], source) => {
+        const copies = Math.floor(target / size) * action.copies.columns + Math.floor(source / size);
+        const partners = (target % size) * size + (source % size);
+        const [x, y] = [action.copies.real[copies] as number, action.copies.imaginary[copies] as number];
+        const [u, v] = [action.matrix.real[partners] as number, action.matrix.imaginary[partners] as number];
+        const [re, im] = [x * u - y * v, x * v + y * u];
+        sum[0] += re * a + im * b;
+        sum[1] += im * a - re * b;
+      });
+    });
+  });
+  return result;
 }
 
 /** `M_j(T) = S_j e^{−2πi k·T} + c.c.` with `S = Σ a e`, for every cell. */

@@ -218,10 +218,11 @@ export function lawProblems(read: FloatModes): string[] {
   return problems.slice(0, 20);
 }
 
-type Field = Pick<FloatMode, "real" | "imaginary">;
+/** 3N complex components. */
+export type Field = Pick<FloatMode, "real" | "imaginary">;
 
 /** Γ(g) on 3N complex components. */
-function actOn(mode: Field, where: readonly Landing[], matrix: readonly number[], k: readonly number[]): Field {
+export function actOn(mode: Field, where: readonly Landing[], matrix: readonly number[], k: readonly number[]): Field {
   const real = new Float64Array(mode.real.length);
   const imaginary = new Float64Array(mode.real.length);
   for (let atom = 0; atom < where.length; atom++) {
@@ -245,12 +246,20 @@ function actOn(mode: Field, where: readonly Landing[], matrix: readonly number[]
 
 /** Σ_q D_{q,partner} e_q. */
 function mixed(partners: readonly Field[], matrix: ComplexMatrix, partner: number): Field {
-  const length = partners[0]?.real.length ?? 0;
+  const factors = partners.map((_, row): [number, number] => {
+    const at = row * matrix.columns + partner;
+    return [matrix.real[at] as number, matrix.imaginary[at] as number];
+  });
+  return combined(partners, factors);
+}
+
+/** Σ factor × field. */
+export function combined(fields: readonly Field[], factors: readonly (readonly [number, number])[]): Field {
+  const length = fields[0]?.real.length ?? 0;
   const real = new Float64Array(length);
   const imaginary = new Float64Array(length);
-  partners.forEach((field, row) => {
-    const re = matrix.real[row * matrix.columns + partner] as number;
-    const im = matrix.imaginary[row * matrix.columns + partner] as number;
+  fields.forEach((field, row) => {
+    const [re, im] = factors[row] as readonly [number, number];
     if (re === 0 && im === 0) return;
     for (let index = 0; index < length; index++) {
       const x = field.real[index] as number;
@@ -262,7 +271,8 @@ function mixed(partners: readonly Field[], matrix: ComplexMatrix, partner: numbe
   return { real, imaginary };
 }
 
-function largestDifference(a: Field, b: Field): number {
+/** The largest difference of two components, as |Re| + |Im|; NaN counts as infinite. */
+export function largestDifference(a: Field, b: Field): number {
   let largest = 0;
   for (let index = 0; index < a.real.length; index++) {
     const size =

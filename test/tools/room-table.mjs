@@ -28,7 +28,8 @@ export const roomTable = {
   reflections: only(positions),
   search: only(searching),
   irreps: only(representations),
-  modes: only(moments),
+  // Least squares for the question whether equal moment sizes are possible.
+  modes: only(["algorithms", ...moments]),
   configurations: only(configurations),
   diffraction: only(scattering),
   weighing: only(weighing),
@@ -47,7 +48,7 @@ export const innerRooms = ["numbers", "algorithms"];
 export const packageImporters = { yaml: "files", mathjs: "numbers", "fraction.js": "numbers" };
 
 /** Packages that may be loaded only by `import()`, off the path of a start. */
-export const lazyPackages = ["mathjs"];
+export const lazyPackages = ["mathjs", "yaml"];
 
 /**
  * @param {readonly string[]} rooms

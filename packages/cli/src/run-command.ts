@@ -39,12 +39,13 @@ function problemsOf(error: unknown): readonly Problem[] {
 /** The command with its first word and options; null where there is nothing to do but what the parser has printed. */
 function parse(words: readonly string[], { write, writeError }: Surroundings): ParsedLine | null {
   const found: ParsedLine[] = [];
-  const program = buildProgram(version, plannedCommands, write, (line) => found.push(line));
+  const asked = helpOfCommand(words);
+  const program = buildProgram(asked[0], version, plannedCommands, write, (line) => found.push(line));
   if (words.length === 0) {
     writeError(program.helpInformation());
     throw new KvaneError([nothingAsked]);
   }
-  program.parse(hideGroups(helpOfCommand(words)), { from: "user" });
+  program.parse(hideGroups(asked), { from: "user" });
   return found[0] ?? null;
 }
 

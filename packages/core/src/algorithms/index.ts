@@ -1,9 +1,11 @@
 /**
  * Numerical methods and the manners of long work; no physics. Cancel and progress for whoever started the work,
- * positive definite systems, non-linear least squares. Sources: Golub & Van Loan, Matrix Computations; Björck,
+ * positive definite systems, non-linear least squares, branch and bound over boxes, convex cells. Sources: Golub & Van Loan, Matrix Computations; Björck,
  * Numerical Methods for Least Squares Problems (1996).
  */
+export { type BoxProblem, type BoxSearch, boxSearch } from "./box-search.js";
 export { breathe, breathMilliseconds } from "./breathe.js";
 export { choleskyFactor, choleskyInverse, choleskyLogDeterminant, choleskySolve } from "./cholesky.js";
 export { gaussNewton, type LeastSquares, type WeightedResiduals } from "./gauss-newton.js";
+export { type HalfSpace, type Polytope, polytope } from "./half-spaces.js";
 export type { CancelSignal, WorkHost } from "./work-host.js";

@@ -18,6 +18,7 @@ export const problemCodes = {
   "duplicate-site": "Two sites have one label, or two sites stand on the same orbit.",
   "invalid-k": "The wave vector is not three fractions, decimals or linear forms in u, v, w.",
   "k-needs-values": "The wave vector has open parameters, and the command needs numbers for them.",
+  "k-not-on-manifold": "The point lies on no arm of the line or plane that was named.",
   "measured-k-ambiguous": "A decimal component is close to a fraction, but not within the tolerance for taking it as one.",
   "file-not-found": "A named file does not exist.",
   "file-unreadable": "A file exists but cannot be read as text.",

@@ -1,21 +1,32 @@
-import {
-  hermiteNormalForm,
-  invertUnimodular,
-  modulo,
-  transposeIntegers,
-} from "../numbers/index.js";
+import { gcdOf, hermiteNormalForm, invertUnimodular, modulo, transposeIntegers } from "../numbers/index.js";
 import { rotateRow } from "./integer-form.js";
 
 /**
- * A flat of the torus of wave vectors modulo L*: a point, line, plane or everything, in primitive coordinates. With
- * `(t, s) = κ C`, t runs along it and s, in [0, 1) over `denominator`, says which one it is. Equal flats are equal
- * records, whatever point of them was given.
+ * Where a flat of a kind lies across its directions, 4 s or 6 s is whole, so 12 s is. A point's little co-group leaves
+ * no vector fixed, so it holds one of the smallest such classes -1, 222, -4, 32, -6. For these `det(R − 1)` or the sum
+ * over the group gives 2k, 4k, 4k, 6k, 6k ∈ L*. Across a line the same holds with a rotation 2, 3, 4, 6 (2, 3, 2, 1),
+ * across a plane with a mirror (2).
+ */
+export const pointDenominator = 12;
+
+/** A saturated lattice of directions in primitive coordinates: all integer rows of a subspace. */
+export interface DirectionLattice {
+  /** The same for equal lattices. */
+  readonly name: string;
+  readonly rows: readonly (readonly number[])[];
+  /** Unimodular C: with `(t, s) = κ C`, t runs along the lattice and s says where κ lies across. */
+  readonly coordinates: readonly number[];
+  /** C⁻¹; its first rows span the lattice. */
+  readonly inverse: readonly number[];
+}
+
+/**
+ * A flat of the torus of wave vectors modulo L*: a point, line, plane or everything. `across` is its s in [0, 12),
+ * numerators over `pointDenominator`.
  */
 export interface Flat {
-  /** Saturated integer lattice of directions, Hermite normal form. */
-  readonly directions: readonly (readonly number[])[];
+  readonly lattice: DirectionLattice;
   readonly across: readonly number[];
-  readonly denominator: number;
 }
 
 /** All integer n with `row · n = 0` for every row: a saturated lattice, in Hermite normal form. */
@@ -45,29 +56,56 @@ export function adaptedCoordinates(lattice: readonly (readonly number[])[]): num
   return transposeIntegers(transformed.flat());
 }
 
-/** The flat through `point / denominator` along a saturated lattice of directions. */
-export function flatThrough(directions: readonly (readonly number[])[], point: readonly number[], denominator: number): Flat {
-  const across = rotateRow(point, adaptedCoordinates(directions)).slice(directions.length);
-  return { directions, across: across.map((entry) => modulo(entry, denominator)), denominator };
+/** Gives the direction lattice of any independent integer rows; equal lattices are made once and are one record. */
+export type DirectionTable = (rows: readonly (readonly number[])[]) => DirectionLattice;
+
+/** A table for the length of one call. */
+export function directionTable(): DirectionTable {
+  const known = new Map<string, DirectionLattice>();
+  return (rows) => {
+    const name = nameOfSpan(rows);
+    const found = known.get(name);
+    if (found) return found;
+    const basis = saturated(rows);
+    const coordinates = adaptedCoordinates(basis);
+    const lattice = { name, rows: basis, coordinates, inverse: invertUnimodular(coordinates) };
+    known.set(name, lattice);
+    return lattice;
+  };
 }
 
-/** One point of the flat, numerators over its denominator. */
-export function pointOfFlat(flat: Flat): [number, number, number] {
-  const padded = [...flat.directions.map(() => 0), ...flat.across];
-  return rotateRow(padded, invertUnimodular(adaptedCoordinates(flat.directions)));
+/** A line by its coprime direction, a plane by its coprime normal, up to sign. */
+function nameOfSpan(rows: readonly (readonly number[])[]): string {
+  if (rows.length === 0) return "point";
+  if (rows.length === 3) return "everything";
+  const [first, second] = rows as [readonly number[], readonly number[] | undefined];
+  return second ? `plane ${coprime(crossProduct(first, second))}` : `line ${coprime(first)}`;
 }
 
-/** The image under `κ → sign·κR`. */
-export function rotateFlat(flat: Flat, rotation: readonly number[], sign: 1 | -1): Flat {
-  const directions = hermiteNormalForm(
-    flat.directions.map((row) => rotateRow(row, rotation)),
-    3,
-  );
-  const point = rotateRow(pointOfFlat(flat), rotation).map((entry) => sign * entry);
-  return flatThrough(directions, point, flat.denominator);
+function coprime(row: readonly number[]): string {
+  const divisor = gcdOf(row) * ((row.find((entry) => entry !== 0) as number) < 0 ? -1 : 1);
+  return row.map((entry) => entry / divisor + 0).join(" ");
 }
 
-/** A text that is the same for equal flats over one denominator. */
-export function flatKey(flat: Flat): string {
-  return `${flat.directions.map((row) => row.join(" ")).join(";")}|${flat.across.join(" ")}`;
+/** The vector product of two integer triples: the normal of the plane that they span. */
+export function crossProduct(a: readonly number[], b: readonly number[]): [number, number, number] {
+  const [a1, a2, a3] = a as [number, number, number];
+  const [b1, b2, b3] = b as [number, number, number];
+  return [a2 * b3 - a3 * b2, a3 * b1 - a1 * b3, a1 * b2 - a2 * b1];
+}
+
+/** The flat along a lattice through `point / pointDenominator`. */
+export function flatThrough(lattice: DirectionLattice, point: readonly number[]): Flat {
+  const across = rotateRow(point, lattice.coordinates).slice(lattice.rows.length);
+  return { lattice, across: across.map((entry) => modulo(entry, pointDenominator)) };
+}
+
+/** One point of the flat, numerators over `pointDenominator`. */
+export function pointOfFlat({ lattice, across }: Flat): [number, number, number] {
+  return rotateRow([...lattice.rows.map(() => 0), ...across], lattice.inverse);
+}
+
+/** The same for equal flats. */
+export function flatName({ lattice, across }: Flat): string {
+  return `${lattice.name} at ${across.join(" ")}`;
 }

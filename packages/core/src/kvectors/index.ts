@@ -5,15 +5,18 @@
  * 118 (1941) 195.
  */
 export type { Assumption } from "../errors/index.js";
-export { atlas, kindOf } from "./atlas.js";
+export { atlas } from "./atlas.js";
 export { type CanonicalPlacement, canonicalPlacement } from "./canonical.js";
 export { firstZoneRepresentative } from "./first-zone.js";
+export { kindOf } from "./kind-of.js";
 export { equivalentWaveVectors, isHalfLattice, littleGroup, star } from "./little-group.js";
 export { manifold } from "./manifold.js";
+export { nearbyKinds } from "./nearby-kinds.js";
 export { type PlacedWaveVector, placeWaveVector } from "./placing.js";
 export { plainestRepresentative } from "./plainest.js";
+export { pointOnManifold } from "./point-on-manifold.js";
 export { specialPoints } from "./special-points.js";
-export type { KindOfK, LittleGroup, Manifold, MinusK, SpecialPoint, Star, WaveVector } from "./types.js";
+export type { KindOfK, LittleGroup, Manifold, MinusK, NearbyKind, SpecialPoint, Star, WaveVector } from "./types.js";
 export {
   exactComponents,
   exactWaveVector,

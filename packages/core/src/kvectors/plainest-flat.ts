@@ -1,109 +1,158 @@
-import { modulo, overCommonDenominator, type Rational, type RationalVector, rational, toNumber } from "../numbers/index.js";
-import { fromPrimitiveColumn, type SpaceGroup } from "../spacegroups/index.js";
-import { type AffineSet, affineForms, type Condition, solveConditions } from "./affine.js";
-import { adaptedCoordinates, type Flat } from "./flats.js";
+import { gcd, gcdOf, lcm, modulo, type RationalVector, safe, vectorFrom } from "../numbers/index.js";
+import { type AffineSet, affineForms } from "./affine.js";
+import { type DirectionLattice, type Flat, pointDenominator } from "./flats.js";
+import { combine, type DualBasis, descend, minusSigns, neighbourSteps, nonZeros, sumOfSquares } from "./plainest.js";
 import type { WaveVector } from "./types.js";
+
+/** How flats along one direction lattice are written in the axes of the setting. */
+export interface SettingFrame {
+  /** Integer directions in reduced echelon form. */
+  readonly directions: readonly (readonly number[])[];
+  readonly pivots: readonly number[];
+  /** The base point is `Σ s_i units[i] / denominator`, s the whole place across, in `pointDenominator` parts. */
+  readonly units: readonly (readonly number[])[];
+  readonly denominator: number;
+  /** Moves of the base by small vectors of L*, in its parts. */
+  readonly steps: readonly (readonly number[])[];
+}
+
+/** Gives the frame of a direction lattice; each is made once. */
+export type SettingFrames = (lattice: DirectionLattice) => SettingFrame;
+
+export function settingFrames(dual: DualBasis): SettingFrames {
+  const known = new Map<DirectionLattice, SettingFrame>();
+  return (lattice) => {
+    const frame = known.get(lattice) ?? frameOf(lattice, dual);
+    known.set(lattice, frame);
+    return frame;
+  };
+}
+
+function frameOf(lattice: DirectionLattice, dual: DualBasis): SettingFrame {
+  const rows = [0, 3, 6].map((row) => combine(lattice.inverse.slice(row, row + 3), dual.rows));
+  const { directions, pivots } = integerEchelon(rows.slice(0, lattice.rows.length));
+  const scale = directions.reduce((common, row, index) => lcm(common, row[pivots[index] as number] as number), 1);
+  // The base vanishes at the pivots, as in tables: (u, u, 1/2), not (u+1/2, u+1/2, 1/2).
+  const units = rows.slice(lattice.rows.length).map((row) =>
+    row.map((entry, axis) =>
+      directions.reduce(
+        (rest, direction, index) => {
+          const pivot = pivots[index] as number;
+          const turns = (scale / (direction[pivot] as number)) * (row[pivot] as number);
+          return safe(rest - safe(turns * (direction[axis] as number)));
+        },
+        safe(scale * entry),
+      ),
+    ),
+  );
+  return {
+    directions,
+    pivots,
+    units,
+    denominator: safe(scale * dual.denominator * pointDenominator),
+    steps: neighbourSteps(units.map((unit) => unit.map((entry) => safe(entry * pointDenominator)))),
+  };
+}
+
+/** Reduced echelon form of independent integer rows, each cleared to coprime integers with a positive pivot. */
+function integerEchelon(rows: readonly (readonly number[])[]): { directions: number[][]; pivots: number[] } {
+  const work = rows.map((row) => [...row]);
+  const pivots: number[] = [];
+  for (let column = 0; column < 3 && pivots.length < work.length; column++) {
+    const top = pivots.length;
+    const found = work.findIndex((row, index) => index >= top && row[column] !== 0);
+    if (found < 0) continue;
+    [work[top], work[found]] = [work[found] as number[], work[top] as number[]];
+    const pivotRow = work[top];
+    const pivot = pivotRow[column] as number;
+    work.forEach((row, index) => {
+      const factor = row[column] as number;
+      if (index === top || factor === 0) return;
+      const common = gcd(pivot, factor);
+      work[index] = row.map((entry, axis) =>
+        safe((pivot / common) * entry - (factor / common) * (pivotRow[axis] as number)),
+      );
+    });
+    pivots.push(column);
+  }
+  const directions = work.map((row, index) => {
+    const divisor = gcdOf(row) * Math.sign(row[pivots[index] as number] as number);
+    return row.map((entry) => entry / divisor + 0);
+  });
+  return { directions, pivots };
+}
+
+/** A flat in its place among the parametric forms: `base / denominator` along the frame's directions. */
+export interface PlacedFlat {
+  readonly flat: Flat;
+  readonly frame: SettingFrame;
+  readonly base: readonly number[];
+}
 
 /**
  * Of the flats of one kind, shifted by L* as needed, the one whose parametric form reads most plainly: directions with
- * fewest non-zero entries, fewest minus signs and smallest numbers, then the base likewise, then lexicographic order.
+ * fewest non-zero entries, fewest minus signs and smallest numbers, then the base as in `plainestRepresentative`, then
+ * component by component (0 before fractions, fractions before letters, u before v before w).
  */
-export function plainestFlat(group: SpaceGroup, orbit: readonly Flat[]): WaveVector {
-  const frames = new Map<string, Frame>();
-  let best: { readonly key: readonly number[]; readonly set: AffineSet } | null = null;
-  for (const flat of orbit) {
-    const name = flat.directions.map((row) => row.join(" ")).join(";");
-    const frame = frames.get(name) ?? frameOf(group, flat.directions);
-    frames.set(name, frame);
-    for (const across of shiftedPlaces(flat)) {
-      const base = baseAt(frame, across, flat.denominator);
-      const key = [...frame.key, ...baseKey(base)];
-      if (best === null || isBefore(key, best.key)) best = { key, set: { ...frame.set, base: asRationals(base) } };
-    }
-  }
-  const { set } = best as unknown as { set: AffineSet };
-  const open = set.directions.length > 0;
-  return { components: affineForms(set), values: open ? null : [], uncertainties: open ? null : [] };
-}
-
-/** The base point of a flat with given directions is linear in its place across: `base = Σ s_i units[i]`. */
-interface Frame {
-  readonly set: AffineSet;
-  readonly units: readonly (readonly number[])[];
-  readonly denominator: number;
-  readonly key: readonly number[];
-}
-
-interface Base {
-  readonly numerators: readonly number[];
-  readonly denominator: number;
-}
-
-function frameOf(group: SpaceGroup, directions: Flat["directions"]): Frame {
-  const coordinates = adaptedCoordinates(directions);
-  const columns = [0, 1, 2].slice(directions.length).map((column) => {
-    const entries = [0, 1, 2].map((row) => rational(coordinates[3 * row + column] as number));
-    return fromPrimitiveColumn(group.lattice, entries as unknown as RationalVector);
+export function plainestFlat(frames: SettingFrames, flats: readonly Flat[]): PlacedFlat {
+  const placed = flats.map((flat) => {
+    const frame = frames(flat.lattice);
+    return { flat, frame, base: descend(startOf(flat, frame), frame.steps) };
   });
-  // κ·n with κ = k B is k·(B n): one condition per coordinate across.
-  const solve = (unit: number): AffineSet =>
-    solveConditions(
-      columns.map((coefficients, index): Condition => ({ coefficients, value: rational(index === unit ? 1 : 0) })),
-    ) as AffineSet;
-  const sets = columns.map((_, unit) => solve(unit));
-  const { numerators, denominator } = overCommonDenominator(sets.flatMap((set) => [...set.base]));
-  const set = sets[0] ?? solve(-1);
-  const entries = set.directions.flat().map(toNumber);
-  return {
-    set,
-    units: sets.map((_, index) => numerators.slice(3 * index, 3 * index + 3)),
-    denominator,
-    key: [
-      entries.filter((entry) => entry !== 0).length,
-      entries.filter((entry) => entry < 0).length,
-      entries.reduce((sum, entry) => sum + entry * entry, 0),
-      ...entries,
-    ],
-  };
+  return plainestOf(placed);
 }
 
-/** The place across moved by whole numbers, −2 … 2 around the centred one. */
-function* shiftedPlaces(flat: Flat): Generator<number[]> {
-  const { denominator } = flat;
-  const centred = flat.across.map((entry) => {
-    const rest = modulo(entry, denominator);
-    return 2 * rest > denominator ? rest - denominator : rest;
-  });
-  for (let code = 0; code < 5 ** centred.length; code++)
-    yield centred.map((entry, index) => entry + denominator * ((Math.floor(code / 5 ** index) % 5) - 2));
+/** The plainest of some flats as they stand. */
+export function plainestOf(placed: readonly PlacedFlat[]): PlacedFlat {
+  const [first, ...others] = placed.map((place) => ({ place, key: plainnessKey(place) }));
+  if (first === undefined) throw new Error("a kind of k without a flat");
+  return others.reduce((best, next) => (isBefore(next.key, best.key) ? next : best), first).place;
 }
 
-function baseAt(frame: Frame, across: readonly number[], denominator: number): Base {
-  return {
-    numerators: [0, 1, 2].map((axis) => across.reduce((sum, entry, index) => sum + entry * (frame.units[index]?.[axis] as number), 0)),
-    denominator: denominator * frame.denominator,
-  };
+/** The base with the place across centred. */
+function startOf(flat: Flat, frame: SettingFrame): readonly number[] {
+  return combine(
+    flat.across.map((entry) => {
+      const rest = modulo(entry, pointDenominator);
+      return 2 * rest > pointDenominator ? rest - pointDenominator : rest;
+    }),
+    frame.units,
+  );
 }
 
-function baseKey({ numerators, denominator }: Base): number[] {
+// Quotients of small integers are equal floats exactly when they are equal fractions.
+function plainnessKey({ frame, base }: PlacedFlat): readonly number[] {
+  const entries = frame.directions.flat();
   return [
-    numerators.filter((entry) => entry !== 0).length,
-    numerators.reduce((sum, entry) => sum + entry * entry, 0) / denominator ** 2,
-    numerators.filter((entry) => entry < 0).length,
-    ...numerators.map((entry) => entry / denominator),
+    nonZeros(entries),
+    minusSigns(entries),
+    sumOfSquares(entries),
+    nonZeros(base),
+    sumOfSquares(base) / frame.denominator ** 2,
+    minusSigns(base),
+    ...[0, 1, 2].flatMap((axis) => [
+      ...[2, 1, 0].map((letter) => frame.directions[letter]?.[axis] ?? 0),
+      (base[axis] as number) / frame.denominator,
+    ]),
   ];
 }
 
-function asRationals({ numerators, denominator }: Base): RationalVector {
-  const [a, b, c] = numerators.map((entry) => rational(entry, denominator)) as [Rational, Rational, Rational];
-  return [a, b, c];
+function isBefore(a: readonly number[], b: readonly number[]): boolean {
+  const index = a.findIndex((entry, position) => entry !== b[position]);
+  return index >= 0 && (a[index] as number) < (b[index] as number);
 }
 
-function isBefore(a: readonly number[], b: readonly number[]): boolean {
-  for (let index = 0; index < a.length; index++) {
-    const difference = (a[index] as number) - (b[index] as number);
-    // Keys are short fractions: differences are either rounding or at least 1/144.
-    if (Math.abs(difference) > 1e-9) return difference < 0;
-  }
-  return false;
+/** The affine set of a placed flat. */
+export function affineSetOf({ frame, base }: PlacedFlat): AffineSet {
+  return {
+    base: vectorFrom(base, frame.denominator),
+    directions: frame.directions.map((direction): RationalVector => vectorFrom(direction)),
+    pivots: frame.pivots,
+  };
+}
+
+/** A placed flat as a wave vector with open letters; a point has none. */
+export function waveVectorOf(placed: PlacedFlat): WaveVector {
+  const open = placed.frame.directions.length > 0;
+  return { components: affineForms(affineSetOf(placed)), values: open ? null : [], uncertainties: open ? null : [] };
 }

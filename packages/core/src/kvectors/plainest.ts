@@ -13,7 +13,7 @@ export function plainestRepresentative(group: SpaceGroup, k: WaveVector): WaveVe
   if (exactComponents(k) === null) throw new TypeError("only an exact k has a plainest representative");
   const form = toIntegerForm(group.lattice, k);
   const dual = dualBasis(group);
-  const steps = neighbourSteps(dual.rows, form.denominator);
+  const steps = neighbourSteps(dual.rows.map((row) => row.map((entry) => safe(entry * form.denominator))));
   const seen = new Set<string>();
   let best: readonly number[] | null = null;
   for (const rotation of group.primitive.rotations)
@@ -25,14 +25,25 @@ export function plainestRepresentative(group: SpaceGroup, k: WaveVector): WaveVe
       const plain = descend(combine(image, dual.rows), steps);
       if (best === null || plainer(plain, best)) best = plain;
     }
-  const [a, b, c] = (best as readonly number[]).map((entry) => rational(entry, safe(form.denominator * dual.denominator)));
+  const [a, b, c] = (best as readonly number[]).map((entry) =>
+    rational(entry, safe(form.denominator * dual.denominator)),
+  );
   return exactWaveVector([a as Rational, b as Rational, c as Rational]);
 }
 
 /** The dual of the primitive basis in the setting's reciprocal axes, as integer rows over one denominator. */
-function dualBasis(group: SpaceGroup): { rows: number[][]; denominator: number } {
+export interface DualBasis {
+  readonly rows: readonly (readonly number[])[];
+  readonly denominator: number;
+}
+
+export function dualBasis(group: SpaceGroup): DualBasis {
   const unit = (index: number): readonly Rational[] =>
-    fromPrimitiveRow(group.lattice, [rational(index === 0 ? 1 : 0), rational(index === 1 ? 1 : 0), rational(index === 2 ? 1 : 0)]);
+    fromPrimitiveRow(group.lattice, [
+      rational(index === 0 ? 1 : 0),
+      rational(index === 1 ? 1 : 0),
+      rational(index === 2 ? 1 : 0),
+    ]);
   const { numerators, denominator } = overCommonDenominator([0, 1, 2].flatMap(unit));
   return { rows: [numerators.slice(0, 3), numerators.slice(3, 6), numerators.slice(6, 9)], denominator };
 }
@@ -43,46 +54,64 @@ function centred(value: number, modulus: number): number {
   return 2 * rest > modulus ? rest - modulus : rest;
 }
 
-function combine(weights: readonly number[], rows: readonly (readonly number[])[]): number[] {
-  return [0, 1, 2].map((axis) => safe(weights.reduce((sum, weight, index) => sum + weight * (rows[index]?.[axis] as number), 0)));
+/** `Σ weights[i] rows[i]`. */
+export function combine(weights: readonly number[], rows: readonly (readonly number[])[]): number[] {
+  return [0, 1, 2].map((axis) =>
+    safe(weights.reduce((sum, weight, index) => sum + weight * (rows[index]?.[axis] as number), 0)),
+  );
 }
 
-/** Vectors of L* with primitive components −2 … 2, in the integer units of the search. */
-function neighbourSteps(rows: readonly (readonly number[])[], denominator: number): number[][] {
-  const range = [-2, -1, 0, 1, 2];
-  return range.flatMap((a) =>
-    range.flatMap((b) => range.map((c) => combine([a * denominator, b * denominator, c * denominator], rows))),
+/** Combinations of the rows with coefficients −2 … 2. */
+export function neighbourSteps(rows: readonly (readonly number[])[]): readonly (readonly number[])[] {
+  return rows.reduce<readonly (readonly number[])[]>(
+    (steps, row) => steps.flatMap((step) => [-2, -1, 0, 1, 2].map((times) => combine([1, times], [step, row]))),
+    [[0, 0, 0]],
   );
 }
 
 /** Goes to the plainest neighbour until there is none. */
-function descend(start: readonly number[], steps: readonly (readonly number[])[]): readonly number[] {
+export function descend(start: readonly number[], steps: readonly (readonly number[])[]): readonly number[] {
   let best = start;
+  // One array for all neighbours; only those that are taken are kept.
+  const next = [0, 0, 0];
   for (;;) {
     const from = best;
     for (const step of steps) {
-      const next = from.map((entry, axis) => entry + (step[axis] as number));
-      if (plainer(next, best)) best = next;
+      for (let axis = 0; axis < 3; axis++) next[axis] = (from[axis] as number) + (step[axis] as number);
+      if (plainer(next, best)) best = [...next];
     }
     if (best === from) return best;
   }
 }
 
-function plainer(a: readonly number[], b: readonly number[]): boolean {
-  const zeros = count(b, (entry) => entry !== 0) - count(a, (entry) => entry !== 0);
+/** Fewer non-zero entries, then smaller sum of squares, then fewer minus signs, then first in lexicographic order. */
+export function plainer(a: readonly number[], b: readonly number[]): boolean {
+  const zeros = nonZeros(b) - nonZeros(a);
   if (zeros !== 0) return zeros > 0;
   const squares = sumOfSquares(b) - sumOfSquares(a);
   if (squares !== 0) return squares > 0;
-  const signs = count(b, (entry) => entry < 0) - count(a, (entry) => entry < 0);
+  const signs = minusSigns(b) - minusSigns(a);
   if (signs !== 0) return signs > 0;
   for (let axis = 0; axis < 3; axis++) if (a[axis] !== b[axis]) return (a[axis] as number) < (b[axis] as number);
   return false;
 }
 
-function count(row: readonly number[], test: (entry: number) => boolean): number {
-  return (test(row[0] as number) ? 1 : 0) + (test(row[1] as number) ? 1 : 0) + (test(row[2] as number) ? 1 : 0);
+/** How many entries are not zero. */
+export function nonZeros(row: readonly number[]): number {
+  let count = 0;
+  for (const entry of row) if (entry !== 0) count += 1;
+  return count;
 }
 
-function sumOfSquares(row: readonly number[]): number {
-  return (row[0] as number) ** 2 + (row[1] as number) ** 2 + (row[2] as number) ** 2;
+/** How many entries are negative. */
+export function minusSigns(row: readonly number[]): number {
+  let count = 0;
+  for (const entry of row) if (entry < 0) count += 1;
+  return count;
+}
+
+export function sumOfSquares(row: readonly number[]): number {
+  let sum = 0;
+  for (const entry of row) sum += entry * entry;
+  return sum;
 }

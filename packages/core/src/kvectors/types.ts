@@ -64,3 +64,14 @@ export interface KindOfK {
   /** The k with 2k ∈ L* that are of this kind. */
   readonly halfLattice: readonly WaveVector[];
 }
+
+/** A kind of k that comes near to a given k. */
+export interface NearbyKind {
+  readonly kind: KindOfK;
+  /** Its place in the atlas made with the same options. */
+  readonly index: number;
+  /** The nearest k of the kind: exact for a point, else a form (of the arm that is near) with values for its letters. */
+  readonly nearest: WaveVector;
+  /** Length of the difference with 2π, Å⁻¹. */
+  readonly distance: number;
+}

@@ -4,5 +4,15 @@
  * general arrangement in symbols, in lattice components and with phases per lattice translation (docs/conventions.md,
  * Moments and phases; Modes, amplitudes, real moments). Source: Bertaut, Acta Cryst. A24 (1968) 217.
  */
+export { cartesianAxes, convertComponents } from "./components.js";
+export {
+  type FourierConvention,
+  fromConvention,
+  type MomentComponents,
+  ownConvention,
+  toConvention,
+} from "./fourier-conventions.js";
+export { type MomentSizes, momentSizes } from "./moment-sizes.js";
 export { siteModes } from "./site-modes.js";
-export type { IrrepModes, Mode, ModeMoment, SiteModes } from "./types.js";
+export { type ArmModes, starModes } from "./star-modes.js";
+export type { IrrepModes, MinusKOnModes, Mode, ModeMoment, SiteModes } from "./types.js";

@@ -21,6 +21,7 @@ import {
   subtractForms,
   zeroForm,
 } from "../numbers/index.js";
+import { withPlainPhase } from "./common-phase.js";
 import { letterOf, type Term, termTable } from "./constraint-table.js";
 import type { OperatorAction } from "./site-action.js";
 import type { MinusKOnModes, Mode } from "./types.js";
@@ -119,7 +120,7 @@ function lockedConstraint(
     if (image === suborbit) terms.push(...selfTerms(copies, matrix, here, terms.length));
     else if (image > suborbit) terms.push(...pairTerms(copies, matrix, here, numbersOn(copies, image), terms.length));
   });
-  return termTable(k, terms, (copies[0] as Copy)[0]?.moments.length ?? 0);
+  return termTable(k, withPlainPhase(terms), (copies[0] as Copy)[0]?.moments.length ?? 0);
 }
 
 function numbersOn(copies: readonly Copy[], suborbit: number): number[] {

@@ -8,6 +8,8 @@ export { averagedReciprocalMetric } from "./averaged-metric.js";
 export { nuclearLines } from "./nuclear-lines.js";
 export { overlapsOf } from "./overlaps.js";
 export { distinctPositions, dToQ, qToTwoThetaDeg, twoThetaDegToQ } from "./positions.js";
+export { type ReciprocalFrame, reciprocalFrame } from "./reciprocal-frame.js";
 export { type SatelliteLister, satelliteLines, satelliteLister } from "./satellite-lines.js";
 export { type ReflectionOptions, satelliteReflections } from "./satellite-reflections.js";
 export type { NuclearLine, Overlap, PositionLimits, SatelliteLine, SatelliteReflection } from "./types.js";
+export { type BallVisitor, visitBall } from "./vectors-in-ball.js";

@@ -1,0 +1,198 @@
+import { choleskyFactor, choleskySolve } from "../algorithms/index.js";
+import { exactComponents, isHalfLattice, parameterValues } from "../kvectors/index.js";
+import { isInteger, multiply, phasedToComplex } from "../numbers/index.js";
+import { type Cell, directMetric, type SpaceGroup, toPrimitiveRow } from "../spacegroups/index.js";
+import type { IrrepModes, SiteModes } from "./types.js";
+
+/** What a single irrep allows about the sizes of the moments on a site. */
+export interface MomentSizes {
+  /** Equal |S_j| > 0 on all atoms of the orbit. */
+  readonly equalAmplitude: boolean;
+  /** Equal moments on all atoms in all cells. */
+  readonly constantMoment: boolean;
+  /** Whatever the amplitudes, all moments of the site are parallel or antiparallel. */
+  readonly collinear: boolean;
+}
+
+/**
+ * Whether equal amplitudes and constant moments are possible for one irrep, and whether it forces collinearity. With
+ * `|S|² = S† G S` in the metric G of the cell, moments are constant over all cells when `S·S = S^T G S` vanishes (Re S
+ * and Im S orthogonal and equally long); where 4k ∈ L* its real part is enough; where 2k ∈ L* nothing more is needed.
+ *
+ * A solution of these quadratic equations is sought by damped least squares from fixed starting points; what is found
+ * is proved by its residual (below `residualLimit`), "not possible" means not found from any start. Null where k has
+ * open letters.
+ */
+export function momentSizes(group: SpaceGroup, cell: Cell, site: SiteModes, part: IrrepModes): MomentSizes | null {
+  const waves = numericModes(site, part);
+  if (waves === null) return null;
+  if (part.multiplicity === 0) return { equalAmplitude: false, constantMoment: false, collinear: false };
+  const { k } = site.representations;
+  const half = isHalfLattice(group, k);
+  const real = half ? realWaves(waves) : null;
+  const problem: SizeProblem = { waves: real ?? waves, metric: directMetric(cell), realAmplitudes: half };
+  const period = half ? "none" : quarterLattice(group, site) ? "real part" : "whole";
+  return {
+    equalAmplitude: part.vanishingAtoms.length === 0 && solvable(problem, "none"),
+    constantMoment: part.vanishingAtoms.length === 0 && solvable(problem, period),
+    collinear: isCollinear(problem),
+  };
+}
+
+/** Squared residual per equation below which a solution counts: sizes are scaled to 1 and found to 1e-7. */
+const residualLimit = 1e-14;
+const starts = 24;
+const mostSteps = 200;
+
+interface SizeProblem {
+  /** `waves[mode][atom]` = three complex components, flat [re, im, re, im, re, im]. */
+  readonly waves: readonly (readonly (readonly number[])[])[];
+  readonly metric: readonly number[];
+  readonly realAmplitudes: boolean;
+}
+
+function numericModes(site: SiteModes, part: IrrepModes): number[][][] | null {
+  const values = parameterValues(site.representations.k);
+  const result: number[][][] = [];
+  for (const mode of part.modes) {
+    const atoms = mode.moments.map(({ phase, vector }) => vector.map((factor) => phasedToComplex({ phase, factor }, values)));
+    if (atoms.some((atom) => atom.includes(null))) return null;
+    result.push(atoms.map((atom) => atom.flatMap((entry) => entry as [number, number])));
+  }
+  return result;
+}
+
+/** Real and imaginary parts of the modes as real modes: together they span the physically irreducible space. */
+function realWaves(waves: readonly (readonly (readonly number[])[])[]): number[][][] {
+  const parts = waves.flatMap((atoms) =>
+    [0, 1].map((part) => atoms.map((atom) => atom.map((_, index) => (index % 2 === 0 ? (atom[index + part] as number) : 0)))),
+  );
+  return parts.filter((atoms) => atoms.some((atom) => atom.some((entry) => Math.abs(entry) > 1e-12)));
+}
+
+function quarterLattice(group: SpaceGroup, site: SiteModes): boolean {
+  const row = exactComponents(site.representations.k);
+  return row !== null && toPrimitiveRow(group.lattice, row).every((entry) => isInteger(multiply([4, 1], entry)));
+}
+
+/** S of every atom for real unknowns x: amplitudes x, or x_re + i x_im. */
+function fields({ waves, realAmplitudes }: SizeProblem, x: ArrayLike<number>): number[][] {
+  const atoms = waves[0]?.length ?? 0;
+  const sum = Array.from({ length: atoms }, () => [0, 0, 0, 0, 0, 0]);
+  waves.forEach((mode, number) => {
+    const re = x[realAmplitudes ? number : 2 * number] as number;
+    const im = realAmplitudes ? 0 : (x[2 * number + 1] as number);
+    mode.forEach((atom, index) => {
+      const target = sum[index] as number[];
+      for (let axis = 0; axis < 6; axis += 2) {
+        target[axis] = (target[axis] as number) + re * (atom[axis] as number) - im * (atom[axis + 1] as number);
+        target[axis + 1] = (target[axis + 1] as number) + re * (atom[axis + 1] as number) + im * (atom[axis] as number);
+      }
+    });
+  });
+  return sum;
+}
+
+type Period = "none" | "real part" | "whole";
+
+/** Residuals: |S_j|² − 1, and the parts of S_j·S_j that must vanish. */
+function residuals(problem: SizeProblem, period: Period, x: ArrayLike<number>): number[] {
+  return fields(problem, x).flatMap((s) => {
+    let size = -1;
+    let re = 0;
+    let im = 0;
+    for (let i = 0; i < 3; i++)
+      for (let j = 0; j < 3; j++) {
+        const g = problem.metric[3 * i + j] as number;
+        const [a, b, c, d] = [s[2 * i], s[2 * i + 1], s[2 * j], s[2 * j + 1]] as [number, number, number, number];
+        size += g * (a * c + b * d);
+        re += g * (a * c - b * d);
+        im += g * (a * d + b * c);
+      }
+    return period === "none" ? [size] : period === "real part" ? [size, re] : [size, re, im];
+  });
+}
+
+/** Levenberg–Marquardt on the quadratic equations; derivatives are exact because differences of quadratics are. */
+function solvable(problem: SizeProblem, period: Period): boolean {
+  const size = problem.waves.length * (problem.realAmplitudes ? 1 : 2);
+  const scale = 1 / Math.sqrt(problem.metric[0] as number);
+  for (let start = 0; start < starts; start++) {
+    let x = Float64Array.from({ length: size }, (_, index) => scale * Math.sin(1.7 * (start + 1) * (index + 1) + start));
+    let r = residuals(problem, period, x);
+    let cost = sumOfSquares(r);
+    let damping = 1e-3;
+    for (let step = 0; step < mostSteps && cost > residualLimit * r.length; step++) {
+      const jacobian = differentiate(problem, period, x, scale);
+      const trial = dampedStep(jacobian, r, x, damping);
+      if (trial === null) break;
+      const next = residuals(problem, period, trial);
+      const nextCost = sumOfSquares(next);
+      if (nextCost < cost) {
+        if (cost - nextCost < 1e-9 * cost && cost > 1e-6) break;
+        [x, r, cost, damping] = [trial, next, nextCost, damping / 4];
+      } else damping *= 8;
+      if (damping > 1e12) break;
+    }
+    if (cost <= residualLimit * r.length) return true;
+  }
+  return false;
+}
+
+function differentiate(problem: SizeProblem, period: Period, x: Float64Array, step: number): number[][] {
+  return Array.from({ length: x.length }, (_, index) => {
+    const ahead = Float64Array.from(x);
+    const behind = Float64Array.from(x);
+    ahead[index] = (ahead[index] as number) + step;
+    behind[index] = (behind[index] as number) - step;
+    const a = residuals(problem, period, ahead);
+    const b = residuals(problem, period, behind);
+    // The central difference of a quadratic is its derivative, whatever the step.
+    return a.map((value, row) => (value - (b[row] as number)) / (2 * step));
+  });
+}
+
+function dampedStep(columns: readonly (readonly number[])[], r: readonly number[], x: Float64Array, damping: number): Float64Array<ArrayBuffer> | null {
+  const size = x.length;
+  const normal = new Float64Array(size * size);
+  const right = new Float64Array(size);
+  for (let a = 0; a < size; a++) {
+    const column = columns[a] as readonly number[];
+    right[a] = -dotNumbers(column, r);
+    for (let b = 0; b <= a; b++) {
+      const value = dotNumbers(column, columns[b] as readonly number[]);
+      normal[a * size + b] = value;
+      normal[b * size + a] = value;
+    }
+  }
+  const trace = Array.from({ length: size }, (_, index) => normal[index * size + index] as number).reduce((sum, entry) => sum + entry, 0);
+  for (let index = 0; index < size; index++)
+    normal[index * size + index] = (normal[index * size + index] as number) + damping * (trace / size + 1e-12);
+  const factor = choleskyFactor(normal, size);
+  if (factor === null) return null;
+  const step = choleskySolve(factor, right);
+  return Float64Array.from(x, (entry, index) => entry + (step[index] as number));
+}
+
+function dotNumbers(a: readonly number[], b: readonly number[]): number {
+  return a.reduce((sum, entry, index) => sum + entry * (b[index] as number), 0);
+}
+
+function sumOfSquares(values: readonly number[]): number {
+  return values.reduce((sum, value) => sum + value * value, 0);
+}
+
+/** Generic amplitudes decide: parallel real and imaginary parts there means parallel everywhere (an identity of polynomials). */
+function isCollinear(problem: SizeProblem): boolean {
+  const size = problem.waves.length * (problem.realAmplitudes ? 1 : 2);
+  const vectors = fields(problem, Float64Array.from({ length: size }, (_, index) => Math.cos(2.3 * index + 0.7))).flatMap((s) => [
+    [s[0], s[2], s[4]] as number[],
+    [s[1], s[3], s[5]] as number[],
+  ]);
+  const longest = vectors.reduce((best, vector) => (sumOfSquares(vector) > sumOfSquares(best) ? vector : best), [0, 0, 0]);
+  const limit = 1e-18 * sumOfSquares(longest) ** 2;
+  return vectors.every((v) => {
+    const cross = [0, 1, 2].map((i) => (v[(i + 1) % 3] as number) * (longest[(i + 2) % 3] as number) - (v[(i + 2) % 3] as number) * (longest[(i + 1) % 3] as number));
+    return sumOfSquares(cross) <= limit;
+  });
+}

@@ -1,0 +1,110 @@
+import type { PairTable } from "./peak-pairs.js";
+import type { Wedge } from "./wedge.js";
+
+/** The box test of one kind of k, with the lists of pairs that survive in the boxes on the way down. */
+export interface PairFilter {
+  /** As `BoxProblem.admits`. */
+  readonly admits: (level: number, centre: Float64Array, half: Float64Array) => boolean;
+  /** The surviving lists of the box last admitted at a level: pairs of peak i in `arena` from start to end. */
+  readonly lists: (level: number) => SurvivingPairs;
+}
+
+export interface SurvivingPairs {
+  readonly arena: Int32Array;
+  readonly offsets: Int32Array;
+  /** Pairs of peak i are at `arena[offsets[base + i]] … arena[offsets[base + i + 1] − 1]`. */
+  readonly base: number;
+}
+
+const firstLevels = 64;
+
+/**
+ * A box can be dropped when it lies outside the wedge, or when more peaks than allowed have no H left whose |H + k|
+ * comes into the peak's interval anywhere in the box. Both bounds of |H + k|² over the box are exact. Only the pairs that
+ * survive in a box are tried in its halves; they stand in one growing array, level after level, so that no box allocates.
+ */
+export function pairFilter(table: PairTable, wedge: Wedge, allowed: number): PairFilter {
+  const { vectors, lowest, highest } = table;
+  const count = table.peaks.length;
+  const stride = count + 1;
+  let arena = new Int32Array(4 * table.pairs.length + 64);
+  let offsets = new Int32Array(stride * firstLevels);
+  arena.set(table.pairs);
+  // The root list stands before level 0, so level L writes row L + 1.
+  offsets.set(table.starts);
+
+  const outside = wallTest(wedge);
+  const admits = (level: number, centre: Float64Array, half: Float64Array): boolean => {
+    if (outside(level, centre, half)) return false;
+    const from = level * stride;
+    const to = from + stride;
+    if (to + stride > offsets.length) offsets = grown(offsets, to + stride);
+    let write = offsets[from + count] as number;
+    const needed = 2 * write - (offsets[from] as number);
+    if (needed > arena.length) arena = grown(arena, needed);
+    const [c0 = 0, c1 = 0, c2 = 0] = centre;
+    const [h0 = 0, h1 = 0, h2 = 0] = half;
+    let missing = 0;
+    offsets[to] = write;
+    for (let peak = 0; peak < count; peak++) {
+      const low = lowest[peak] as number;
+      const high = highest[peak] as number;
+      const end = offsets[from + peak + 1] as number;
+      const start = write;
+      for (let at = offsets[from + peak] as number; at < end; at++) {
+        const index = arena[at] as number;
+        const v = 4 * index;
+        const x0 = Math.abs((vectors[v] as number) + c0);
+        const x1 = Math.abs((vectors[v + 1] as number) + c1);
+        const x2 = Math.abs((vectors[v + 2] as number) + c2);
+        const across = vectors[v + 3] as number;
+        const n0 = x0 > h0 ? x0 - h0 : 0;
+        const n1 = x1 > h1 ? x1 - h1 : 0;
+        const n2 = x2 > h2 ? x2 - h2 : 0;
+        if (across + n0 * n0 + n1 * n1 + n2 * n2 > high) continue;
+        const f0 = x0 + h0;
+        const f1 = x1 + h1;
+        const f2 = x2 + h2;
+        if (across + f0 * f0 + f1 * f1 + f2 * f2 < low) continue;
+        arena[write] = index;
+        write += 1;
+      }
+      if (write === start) {
+        missing += 1;
+        if (missing > allowed) return false;
+      }
+      offsets[to + peak + 1] = write;
+    }
+    return true;
+  };
+  return { admits, lists: (level) => ({ arena, offsets, base: (level + 1) * stride }) };
+}
+
+/** Whether a box lies behind a wall of the wedge: one dot product a wall. */
+function wallTest(wedge: Wedge): (level: number, centre: Float64Array, half: Float64Array) => boolean {
+  const dimension = wedge.centre.length;
+  const walls = wedge.walls.length;
+  const normals = Float64Array.from(wedge.walls.flatMap(({ normal }) => [...normal]));
+  const reaches: Float64Array[] = [];
+  return (level, centre, half) => {
+    let reach = reaches[level];
+    if (reach === undefined) {
+      reach = Float64Array.from(wedge.walls, ({ normal, offset }) =>
+        normal.reduce((sum, entry, axis) => sum + Math.abs(entry) * (half[axis] as number), offset * (1 + 1e-9)),
+      );
+      reaches[level] = reach;
+    }
+    for (let wall = 0, at = 0; wall < walls; wall++) {
+      let sum = 0;
+      for (let axis = 0; axis < dimension; axis++, at++) sum += (normals[at] as number) * (centre[axis] as number);
+      if (sum > (reach[wall] as number)) return true;
+    }
+    return false;
+  };
+}
+
+function grown(array: Int32Array<ArrayBuffer>, least: number): Int32Array<ArrayBuffer> {
+  const larger = new Int32Array(Math.max(least, 2 * array.length));
+  larger.set(array);
+  return larger;
+}

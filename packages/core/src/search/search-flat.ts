@@ -1,0 +1,133 @@
+import { boxSearch, breathe, type WorkHost } from "../algorithms/index.js";
+import { strayShare } from "./evidence.js";
+import type { FlatFrame } from "./flat-frame.js";
+import { type PolishedPoint, polishLeaf } from "./leaf-polish.js";
+import { pairFilter } from "./pair-filter.js";
+import { type AcceptedInterval, pairTable } from "./peak-pairs.js";
+import { foldInto, inverseImage, type Wedge } from "./wedge.js";
+
+/** Boxes between two looks at the clock. */
+const boxesAtATime = 512;
+
+/** Halvings of an open leaf before it is given up as undecided: the box is then a thousandth of the leaf. */
+const levelsBelowLeaf = 30;
+
+export interface FlatSearchSettings {
+  /** Peaks that must match. */
+  readonly wanted: number;
+  /** Å⁻¹: half-diagonal of a leaf. */
+  readonly leafRadius: number;
+  /** Boxes after which the search is stopped. */
+  readonly budget: number;
+  /** Leaves after which the kind counts as saturated and the search is stopped. */
+  readonly mostLeaves: number;
+}
+
+/** What branch and bound made of one flat. */
+export interface FlatFindings {
+  /** One point a settled leaf, best score first. */
+  readonly points: readonly PolishedPoint[];
+  /** Centres of the settled leaves, `dimension` numbers each, and of those that could be neither settled nor excluded. */
+  readonly leaves: readonly Float64Array[];
+  readonly undecided: readonly Float64Array[];
+  readonly leafHalf: Float64Array;
+  readonly boxes: number;
+  /** Share of the root box that was not looked at. */
+  readonly unexplored: number;
+  readonly stopped: "boxes" | "leaves" | null;
+}
+
+/**
+ * Every part of a flat where at least `wanted` peaks match, by branch and bound over its wedge: what is not inside a
+ * returned leaf is proved to match fewer. A leaf is settled when least squares from its middle finds a point that matches
+ * enough; one where that fails is split further until it is excluded, settled, or far below any uncertainty.
+ */
+export async function searchFlat(
+  frame: FlatFrame,
+  wedge: Wedge,
+  peaks: readonly AcceptedInterval[],
+  settings: FlatSearchSettings,
+  host: WorkHost,
+): Promise<FlatFindings> {
+  const table = pairTable(frame, wedge, peaks);
+  const filter = pairFilter(table, wedge, peaks.length - settings.wanted);
+  const polish = {
+    wanted: settings.wanted,
+    drops: peaks.length - settings.wanted + 2,
+    density: smoothDensity(frame, wedge),
+    strayShare,
+  };
+  const points: PolishedPoint[] = [];
+  const leaves: Float64Array[] = [];
+  const undecided: Float64Array[] = [];
+  const search = boxSearch({
+    centre: wedge.centre,
+    half: wedge.half,
+    leafRadius: settings.leafRadius,
+    levelsBelowLeaf,
+    admits: filter.admits,
+    settles: (level, centre) => {
+      const point = polishLeaf(table, filter.lists(level), centre, polish);
+      if (point.matched < settings.wanted) return false;
+      leaves.push(centre.slice());
+      points.push(point);
+      return true;
+    },
+    leavesOpen: (_, centre) => undecided.push(centre.slice()),
+  });
+  let stopped: FlatFindings["stopped"] = null;
+  for (;;) {
+    if (search.advance(Math.min(boxesAtATime, settings.budget - search.boxes()))) break;
+    if (search.boxes() >= settings.budget) stopped = "boxes";
+    if (leaves.length >= settings.mostLeaves) stopped = "leaves";
+    if (stopped !== null) break;
+    await breathe(host);
+  }
+  for (const { t } of points) foldInto(wedge, t);
+  return {
+    points: points.sort((a, b) => b.score - a.score),
+    leaves,
+    undecided,
+    leafHalf: search.halfAt(search.leafLevel),
+    boxes: search.boxes(),
+    unexplored: search.unexplored(),
+    stopped,
+  };
+}
+
+/** Lines per Å⁻¹ over q²: vectors of a shell over the volume of L*'s cell and over the images that coincide on the flat. */
+function smoothDensity(frame: FlatFrame, wedge: Wedge): number {
+  const [a, b, c, , e, f, , , i] = frame.metric as unknown as Nine;
+  const determinant = a * (e * i - f * f) - b * (b * i - f * c) + c * (b * f - e * c);
+  return (4 * Math.PI) / (Math.sqrt(determinant) * wedge.fixing);
+}
+
+type Nine = readonly [number, number, number, number, number, number, number, number, number];
+
+/** The best points that are apart from one another by more than `apart`, images by the wedge's walls counted as one. */
+export function distinctPoints(
+  wedge: Wedge,
+  points: readonly PolishedPoint[],
+  apart: number,
+  most: number,
+): { readonly kept: readonly PolishedPoint[]; readonly complete: boolean } {
+  const kept: PolishedPoint[] = [];
+  for (const point of points) {
+    if (kept.some((other) => nearest(wedge, point.t, other.t) <= apart)) continue;
+    if (kept.length === most) return { kept, complete: false };
+    kept.push(point);
+  }
+  return { kept, complete: true };
+}
+
+function nearest(wedge: Wedge, a: Float64Array, b: Float64Array): number {
+  let least = distance(a, b);
+  for (const map of wedge.beyond) least = Math.min(least, distance(inverseImage(map, a), b));
+  return least;
+}
+
+function distance(a: Float64Array, b: Float64Array): number {
+  let square = 0;
+  for (let axis = 0; axis < a.length; axis++) square += ((a[axis] as number) - (b[axis] as number)) ** 2;
+  return Math.sqrt(square);
+}
