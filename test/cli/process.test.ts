@@ -51,8 +51,8 @@ describe("the built command", () => {
     const before = readdirSync(folder);
     const child = spawn(process.execPath, [commandFile, "run", "-", "--out", "results"], { cwd: folder });
     const ended = new Promise<number | null>((resolve) => child.on("exit", (status) => resolve(status)));
-    // It waits for a study on standard input; by then the handler is in place.
-    await new Promise((resolve) => setTimeout(resolve, 800));
+    // More than a pipe holds: once it is gone the command reads standard input, and its handler is in place.
+    await new Promise((resolve) => child.stdin.write("# a study that does not end\n".repeat(100_000), resolve));
     child.kill("SIGINT");
     expect(await ended).toBe(130);
     expect(readdirSync(folder)).toEqual(before);

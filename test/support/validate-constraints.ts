@@ -74,23 +74,37 @@ export function kLetters(modes: SiteModes): Letters {
 
 /** Names of amplitudes in the texts, in order of appearance. */
 export function lettersIn(texts: readonly string[]): string[] {
-  const names = texts.flatMap((text) => text.match(/[a-zξ][a-z0-9_]*/g) ?? []);
+  const names = texts.flatMap((text) => text.match(/[a-zξ][a-z0-9_]*'*/g) ?? []);
   return [...new Set(names.filter((name) => !reserved.has(name)))];
 }
 
 /** The Fourier components of all atoms from `(a, b, c)` or `(a, b, c)·phase` for each of them. */
 export function vectorOf(texts: readonly string[], letters: Letters): Vector {
-  const components = texts.flatMap((text) => {
-    const parts = /^\((.*), (.*), (.*?)\)(?:·(.*))?$/.exec(text);
-    if (!parts) throw new Error(`no three components: ${text}`);
-    const [re, im] = parts[4] === undefined ? [1, 0] : evaluateText(parts[4], letters);
-    return [1, 2, 3].map((at): Complex => {
-      const [x, y] = evaluateText(parts[at] as string, letters);
+  const numbers = texts.flatMap((text) => {
+    const { components, phase } = splitMoment(text);
+    const [re, im] = phase === null ? [1, 0] : evaluateText(phase, letters);
+    return components.map((component): Complex => {
+      const [x, y] = evaluateText(component, letters);
       return [x * re - y * im, x * im + y * re];
     });
   });
   return {
-    real: Float64Array.from(components, ([re]) => re),
-    imaginary: Float64Array.from(components, ([, im]) => im),
+    real: Float64Array.from(numbers, ([re]) => re),
+    imaginary: Float64Array.from(numbers, ([, im]) => im),
   };
+}
+
+/** `(a, b, c)·phase` taken apart at the bracket that closes the first one; a, b, c may hold brackets of their own. */
+function splitMoment(text: string): { components: string[]; phase: string | null } {
+  let depth = 0;
+  const close = [...text].findIndex((character) => {
+    if (character === "(") depth += 1;
+    if (character === ")") depth -= 1;
+    return depth === 0;
+  });
+  const components = text.slice(1, close).split(", ");
+  const rest = text.slice(close + 1);
+  if (!text.startsWith("(") || components.length !== 3 || !/^(?:·.+)?$/.test(rest))
+    throw new Error(`no moment: ${text}`);
+  return { components, phase: rest === "" ? null : rest.slice(1) };
 }

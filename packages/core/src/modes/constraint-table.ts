@@ -24,6 +24,8 @@ import type { Mode } from "./types.js";
 /** One free amplitude and what it, or its complex conjugate, puts on each atom. */
 export interface Term {
   readonly letter: string;
+  /** Component of the order parameter that the letter multiplies, where it has several: `ξ1`, `ξ2`; else empty. */
+  readonly component?: string;
   readonly moments: readonly { readonly phase: Phase; readonly vector: readonly Cyclotomic[]; readonly conjugate?: boolean }[];
 }
 
@@ -45,9 +47,9 @@ export function termTable(k: WaveVector, terms: readonly Term[], atoms: number):
 
 const letters = ["u", "v", "w", "p", "q", "r", "s", "t", "f", "g", "h", "l", "m", "n"];
 
-/** The letter of the amplitude with that number, u v w first. */
+/** The letter of the amplitude with that number, u v w first; primes where the alphabet runs out. */
 export function letterOf(index: number): string {
-  return letters[index] ?? `c${index - letters.length + 1}_`;
+  return `${letters[index % letters.length]}${"'".repeat(Math.floor(index / letters.length))}`;
 }
 
 function complexTerms(modes: readonly Mode[]): Term[] {
@@ -84,7 +86,7 @@ function atomText(k: WaveVector, terms: readonly Term[], atom: number): string {
         const entry = term.moments[atom]?.vector[axis] ?? cyclotomicZero;
         if (isCyclotomicZero(entry)) return [];
         const phase = common === null ? outer(phases[index] as Phase) : { negative: common.negative, rest: zeroForm };
-        return [coefficientText(k, phase.negative ? negateCyclotomic(entry) : entry, phase.rest, `${term.letter}${term.moments[atom]?.conjugate === true ? "*" : ""}`)];
+        return [coefficientText(k, phase.negative ? negateCyclotomic(entry) : entry, phase.rest, `${term.letter}${term.moments[atom]?.conjugate === true ? "*" : ""}${term.component ?? ""}`)];
       }),
     ),
   );

@@ -117,8 +117,9 @@ function lockedConstraint(
   const terms: Term[] = [];
   suborbitImages.forEach((image, suborbit) => {
     const here = numbersOn(copies, suborbit);
-    if (image === suborbit) terms.push(...selfTerms(copies, matrix, here, terms.length));
-    else if (image > suborbit) terms.push(...pairTerms(copies, matrix, here, numbersOn(copies, image), terms.length));
+    const used = terms.length / (copies[0] as Copy).length;
+    if (image === suborbit) terms.push(...selfTerms(copies, matrix, here, used));
+    else if (image > suborbit) terms.push(...pairTerms(copies, matrix, here, numbersOn(copies, image), used));
   });
   return termTable(k, withPlainPhase(terms), (copies[0] as Copy)[0]?.moments.length ?? 0);
 }
@@ -148,7 +149,8 @@ function selfTerms(copies: readonly Copy[], matrix: readonly (readonly PhasedNum
   return realBasis(fixed).flatMap((weights, index) =>
     partnersOf(copies, here).map(
       (partner): Term => ({
-        letter: letterFor(copies, used + index, partner),
+        letter: letterOf(used + index),
+        component: componentFor(copies, partner),
         moments: combined(copies, here, weights, partner, half),
       }),
     ),
@@ -188,7 +190,8 @@ function pairTerms(
       const weights = there.map((row) => matrix[row]?.[column]?.factor ?? cyclotomicZero);
       const other = combined(copies, there, weights, partner, phases);
       return {
-        letter: letterFor(copies, used + index, partner),
+        letter: letterOf(used + index),
+        component: componentFor(copies, partner),
         moments: own.map((moment, atom) =>
           moment.vector.every(isCyclotomicZero) ? { ...(other[atom] as Term["moments"][number]), conjugate: true } : moment,
         ),
@@ -201,9 +204,9 @@ function partnersOf(copies: readonly Copy[], numbers: readonly number[]): number
   return Array.from({ length: copies[numbers[0] as number]?.length ?? 0 }, (_, partner) => partner);
 }
 
-/** `u` for one-dimensional irreps; `u·ξ2` for the second component of an order parameter ξ of several. */
-function letterFor(copies: readonly Copy[], index: number, partner: number): string {
-  return (copies[0] as Copy).length === 1 ? letterOf(index) : `${letterOf(index)}ξ${partner + 1}`;
+/** Nothing for one-dimensional irreps; `ξ2` for the second component of an order parameter ξ of several. */
+function componentFor(copies: readonly Copy[], partner: number): string {
+  return (copies[0] as Copy).length === 1 ? "" : `ξ${partner + 1}`;
 }
 
 /** Σ weight_c e^{2πi·phase_c} E_c for one partner; on one suborbit all terms of an atom have one phase. */

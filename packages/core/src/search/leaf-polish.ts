@@ -17,8 +17,10 @@ const rounds = 6;
 const ridge = 1e-6;
 
 /**
- * Least squares of the flat's coordinates from the middle of a leaf, each peak with the nearest of its surviving H; peaks
- * that end outside their interval are dropped one by one, the worst first, as long as too few match.
+ * A point near the middle of a leaf where enough peaks match. First least squares, each peak with the nearest of its
+ * surviving H. Where that leaves a peak just outside its interval, its weight is raised; where that does not help either,
+ * the worst peak is dropped and all begins anew. The middle itself is tried last, so that deep enough boxes inside the
+ * part that matches are always settled.
  */
 export function polishLeaf(
   table: PairTable,
@@ -26,16 +28,31 @@ export function polishLeaf(
   centre: Float64Array,
   settings: PolishSettings,
 ): PolishedPoint {
-  const used = new Uint8Array(table.peaks.length).fill(1);
+  const weights = new Float64Array(table.peaks.length).fill(1);
   let best: PolishedPoint | null = null;
   for (let dropped = 0; dropped <= settings.drops; dropped++) {
-    const point = settle(table, pairs, centre, used, settings);
-    if (best === null || point.matched > best.matched) best = point;
-    if (best.matched >= settings.wanted || point.worst < 0) break;
-    used[point.worst] = 0;
+    let worst = -1;
+    for (let raised = 0; raised <= mostRaises; raised++) {
+      const t = settle(table, pairs, centre, weights);
+      const point = judge(table, pairs, t, weights, settings);
+      if (best === null || point.matched > best.matched) best = { t, ...point };
+      if (best.matched >= settings.wanted) return best;
+      if (raised === 0) worst = point.worst;
+      if (point.worst < 0) break;
+      for (const index of point.outside) weights[index] = (weights[index] as number) * raise;
+    }
+    if (worst < 0) break;
+    weights.forEach((weight, index) => {
+      weights[index] = weight === 0 || index === worst ? 0 : 1;
+    });
   }
-  return best as PolishedPoint;
+  const middle = { t: centre.slice(), ...judge(table, pairs, centre, weights, settings) };
+  return best === null || middle.matched > best.matched ? middle : best;
 }
+
+/** How often the weights of peaks outside their intervals are raised, and by which factor. */
+const mostRaises = 4;
+const raise = 4;
 
 export interface PolishSettings {
   /** Peaks that must match. */
@@ -51,9 +68,8 @@ function settle(
   table: PairTable,
   pairs: SurvivingPairs,
   centre: Float64Array,
-  used: Uint8Array,
-  settings: PolishSettings,
-): PolishedPoint & { readonly worst: number } {
+  weights: Float64Array,
+): Float64Array {
   const dimension = centre.length;
   const t = centre.slice();
   const normal = new Float64Array(dimension * dimension);
@@ -62,10 +78,9 @@ function settle(
     normal.fill(0);
     gradient.fill(0);
     table.peaks.forEach((peak, index) => {
-      if (used[index] === 0) return;
-      const vector = nearestVector(table, pairs, index, t);
-      if (vector < 0) return;
-      addEquation(table.vectors, vector, t, peak.q, peak.uncertainty, normal, gradient);
+      const weight = weights[index] as number;
+      const vector = weight === 0 ? -1 : nearestVector(table, pairs, index, t);
+      if (vector >= 0) addEquation(table.vectors, vector, t, peak.q, weight / peak.uncertainty ** 2, normal, gradient);
     });
     let trace = 0;
     for (let a = 0; a < dimension; a++) trace += normal[a * dimension + a] as number;
@@ -81,10 +96,17 @@ function settle(
     }
     if (length < 1e-20) break;
   }
-  return { t, ...judge(table, pairs, t, used, settings) };
+  return t;
 }
 
-function judge(table: PairTable, pairs: SurvivingPairs, t: Float64Array, used: Uint8Array, settings: PolishSettings) {
+function judge(
+  table: PairTable,
+  pairs: SurvivingPairs,
+  t: Float64Array,
+  weights: Float64Array,
+  settings: PolishSettings,
+): { matched: number; score: number; worst: number; outside: readonly number[] } {
+  const outside: number[] = [];
   let matched = 0;
   let score = 0;
   let worst = -1;
@@ -95,11 +117,14 @@ function judge(table: PairTable, pairs: SurvivingPairs, t: Float64Array, used: U
     if (vector >= 0) {
       const q = lengthAt(table.vectors, vector, t);
       const inside = q >= peak.low - roundingOfQ && q <= peak.high + roundingOfQ;
-      if (inside) matched += 1;
       const residual = (q - peak.q) / peak.uncertainty;
-      if (!inside && used[index] === 1 && Math.abs(residual) > excess) {
-        excess = Math.abs(residual);
-        worst = index;
+      if (inside) matched += 1;
+      else if ((weights[index] as number) > 0) {
+        outside.push(index);
+        if (Math.abs(residual) > excess) {
+          excess = Math.abs(residual);
+          worst = index;
+        }
       }
       const density = Math.max(0.5, settings.density * peak.q * peak.q);
       odds +=
@@ -108,7 +133,7 @@ function judge(table: PairTable, pairs: SurvivingPairs, t: Float64Array, used: U
     }
     score += Math.log(odds);
   });
-  return { matched, score, worst };
+  return { matched, score, worst, outside };
 }
 
 /** Å⁻¹. A computed position this little outside the interval is on its end. */
@@ -143,13 +168,12 @@ function addEquation(
   vector: number,
   t: Float64Array,
   wanted: number,
-  uncertainty: number,
+  weight: number,
   normal: Float64Array,
   gradient: Float64Array,
 ): void {
   const dimension = t.length;
   const q = Math.max(Number.MIN_VALUE, lengthAt(vectors, vector, t));
-  const weight = 1 / (uncertainty * uncertainty);
   for (let a = 0; a < dimension; a++) {
     const slope = ((vectors[vector + a] as number) + (t[a] as number)) / q;
     gradient[a] = (gradient[a] as number) + weight * slope * (wanted - q);

@@ -9,8 +9,8 @@ import { foldInto, inverseImage, type Wedge } from "./wedge.js";
 /** Boxes between two looks at the clock. */
 const boxesAtATime = 512;
 
-/** Halvings of an open leaf before it is given up as undecided: the box is then a thousandth of the leaf. */
-const levelsBelowLeaf = 30;
+/** Halvings of an open leaf along each axis before it is given up as undecided: the box is then 1/128 of the leaf. */
+const halvingsBelowLeaf = 7;
 
 export interface FlatSearchSettings {
   /** Peaks that must match. */
@@ -64,7 +64,7 @@ export async function searchFlat(
     centre: wedge.centre,
     half: wedge.half,
     leafRadius: settings.leafRadius,
-    levelsBelowLeaf,
+    levelsBelowLeaf: halvingsBelowLeaf * frame.dimension,
     admits: filter.admits,
     settles: (level, centre) => {
       const point = polishLeaf(table, filter.lists(level), centre, polish);
