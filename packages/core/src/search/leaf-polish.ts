@@ -19,8 +19,7 @@ const ridge = 1e-6;
 /**
  * A point near the middle of a leaf where enough peaks match. First least squares, each peak with the nearest of its
  * surviving H. Where that leaves a peak just outside its interval, its weight is raised; where that does not help either,
- * the worst peak is dropped and all begins anew. The middle itself is tried last, so that deep enough boxes inside the
- * part that matches are always settled.
+ * the worst peak is dropped and all begins anew. The middle itself is tried last.
  */
 export function polishLeaf(
   table: PairTable,
@@ -46,12 +45,23 @@ export function polishLeaf(
       weights[index] = weight === 0 || index === worst ? 0 : 1;
     });
   }
-  const middle = { t: centre.slice(), ...judge(table, pairs, centre, weights, settings) };
+  const middle = judgePoint(table, pairs, centre, settings);
   return best === null || middle.matched > best.matched ? middle : best;
 }
 
+/** The middle of a box as it is. */
+export function judgePoint(
+  table: PairTable,
+  pairs: SurvivingPairs,
+  centre: Float64Array,
+  settings: PolishSettings,
+): PolishedPoint {
+  const { matched, score } = judge(table, pairs, centre, null, settings);
+  return { t: centre.slice(), matched, score };
+}
+
 /** How often the weights of peaks outside their intervals are raised, and by which factor. */
-const mostRaises = 4;
+const mostRaises = 2;
 const raise = 4;
 
 export interface PolishSettings {
@@ -103,7 +113,7 @@ function judge(
   table: PairTable,
   pairs: SurvivingPairs,
   t: Float64Array,
-  weights: Float64Array,
+  weights: Float64Array | null,
   settings: PolishSettings,
 ): { matched: number; score: number; worst: number; outside: readonly number[] } {
   const outside: number[] = [];
@@ -119,7 +129,7 @@ function judge(
       const inside = q >= peak.low - roundingOfQ && q <= peak.high + roundingOfQ;
       const residual = (q - peak.q) / peak.uncertainty;
       if (inside) matched += 1;
-      else if ((weights[index] as number) > 0) {
+      else if (weights !== null && (weights[index] as number) > 0) {
         outside.push(index);
         if (Math.abs(residual) > excess) {
           excess = Math.abs(residual);

@@ -1,7 +1,7 @@
-import { boxSearch, breathe, type WorkHost } from "../algorithms/index.js";
+import { type BoxSearch, boxSearch, breathe, type WorkHost } from "../algorithms/index.js";
 import { strayShare } from "./evidence.js";
 import type { FlatFrame } from "./flat-frame.js";
-import { type PolishedPoint, polishLeaf } from "./leaf-polish.js";
+import { judgePoint, type PolishedPoint, polishLeaf } from "./leaf-polish.js";
 import { pairFilter } from "./pair-filter.js";
 import { type AcceptedInterval, pairTable } from "./peak-pairs.js";
 import { foldInto, inverseImage, type Wedge } from "./wedge.js";
@@ -9,8 +9,8 @@ import { foldInto, inverseImage, type Wedge } from "./wedge.js";
 /** Boxes between two looks at the clock. */
 const boxesAtATime = 512;
 
-/** Halvings of an open leaf along each axis before it is given up as undecided: the box is then 1/128 of the leaf. */
-const halvingsBelowLeaf = 7;
+/** Halvings of an open leaf along each axis before it is left undecided: the box is then 1/8 of the leaf. */
+const halvingsBelowLeaf = 3;
 
 export interface FlatSearchSettings {
   /** Peaks that must match. */
@@ -53,21 +53,23 @@ export async function searchFlat(
   const filter = pairFilter(table, wedge, peaks.length - settings.wanted);
   const polish = {
     wanted: settings.wanted,
-    drops: peaks.length - settings.wanted + 2,
+    drops: Math.min(2, peaks.length - settings.wanted),
     density: smoothDensity(frame, wedge),
     strayShare,
   };
   const points: PolishedPoint[] = [];
   const leaves: Float64Array[] = [];
   const undecided: Float64Array[] = [];
-  const search = boxSearch({
+  const search: BoxSearch = boxSearch({
     centre: wedge.centre,
     half: wedge.half,
     leafRadius: settings.leafRadius,
     levelsBelowLeaf: halvingsBelowLeaf * frame.dimension,
     admits: filter.admits,
     settles: (level, centre) => {
-      const point = polishLeaf(table, filter.lists(level), centre, polish);
+      const lists = filter.lists(level);
+      const point =
+        level === search.leafLevel ? polishLeaf(table, lists, centre, polish) : judgePoint(table, lists, centre, polish);
       if (point.matched < settings.wanted) return false;
       leaves.push(centre.slice());
       points.push(point);
