@@ -80,7 +80,7 @@ function readFactor(reader: Reader): Complex | null {
     return [Math.exp(re) * Math.cos(im), Math.exp(re) * Math.sin(im)];
   }
   // The longest name comes first: `iπ` is i times π, `kx` and `c12_` are one name each.
-  const name = /^[a-zξ][a-z0-9_']*'*/.exec(text.slice(reader.position))?.[0] ?? character;
+  const name = /^[a-zξ][a-z0-9_']*/.exec(text.slice(reader.position))?.[0] ?? character;
   for (let length = name.length; length > 0; length--) {
     const letter = reader.letters[name.slice(0, length)];
     if (letter === undefined) continue;

@@ -74,7 +74,7 @@ export function kLetters(modes: SiteModes): Letters {
 
 /** Names of amplitudes in the texts, in order of appearance. */
 export function lettersIn(texts: readonly string[]): string[] {
-  const names = texts.flatMap((text) => text.match(/[a-zξ][a-z0-9_']*'*/g) ?? []);
+  const names = texts.flatMap((text) => text.match(/[a-zξ][a-z0-9_']*/g) ?? []);
   return [...new Set(names.filter((name) => !reserved.has(name)))];
 }
 

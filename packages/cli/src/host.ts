@@ -1,6 +1,5 @@
 import { readFile } from "node:fs/promises";
-import { resolve } from "node:path";
-import { fileURLToPath } from "node:url";
+import { join, resolve } from "node:path";
 import { fail, type Place } from "@kvane/core/errors";
 import type { JobHost, Request } from "@kvane/core/job";
 import { argumentNames, type RequestField } from "@kvane/core/job";
@@ -74,7 +73,7 @@ async function bytesOf(path: string, { folder }: Surroundings): Promise<Uint8Arr
 
 function located(path: string, folder: string): string {
   if (!path.startsWith(examplePrefix)) return resolve(folder, path);
-  return fileURLToPath(new URL(`../example/${path.slice(examplePrefix.length)}`, import.meta.url));
+  return join(import.meta.dirname, "../example", path.slice(examplePrefix.length));
 }
 
 function decoded(bytes: Uint8Array, path: string): string {

@@ -27,12 +27,16 @@ for (const stream of [process.stdout, process.stderr])
     process.exit(process.exitCode ?? 0);
   });
 
-try {
-  process.exitCode = await runCommand(process.argv.slice(2), processSurroundings(signal));
-} catch (error) {
-  removeUnfinished();
-  process.stderr.write(
-    `error[internal-fault]: kvane met a fault of its own\n  found:    ${String(error)}\n  remedy:   please report it, with the command and the files that led to it\n`,
-  );
-  process.exitCode = 70;
+void main();
+
+async function main(): Promise<void> {
+  try {
+    process.exitCode = await runCommand(process.argv.slice(2), processSurroundings(signal));
+  } catch (error) {
+    removeUnfinished();
+    process.stderr.write(
+      `error[internal-fault]: kvane met a fault of its own\n  found:    ${String(error)}\n  remedy:   please report it, with the command and the files that led to it\n`,
+    );
+    process.exitCode = 70;
+  }
 }

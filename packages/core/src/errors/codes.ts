@@ -12,14 +12,16 @@ export const problemCodes = {
   "ambiguous-group": "The symbol stands for several tabulated settings; a setting or origin code is needed.",
   "not-a-group": "The given operators do not close into a space group.",
   "singular-basis": "A change of basis has determinant zero.",
-  "invalid-cell": "The unit cell is impossible: a length not above zero, an angle outside (0, 180), or angles without a volume.",
+  "invalid-cell":
+    "The unit cell is impossible: a length not above zero, an angle outside (0, 180), or angles without a volume.",
   "cell-contradicts-group": "The unit cell has not the metric symmetry that the operators of the group need.",
   "invalid-site": "A site has no label, no coordinates, or coordinates that are no numbers.",
   "duplicate-site": "Two sites have one label, or two sites stand on the same orbit.",
   "invalid-k": "The wave vector is not three fractions, decimals or linear forms in u, v, w.",
   "k-needs-values": "The wave vector has open parameters, and the command needs numbers for them.",
   "k-not-on-manifold": "The point lies on no arm of the line or plane that was named.",
-  "measured-k-ambiguous": "A decimal component is close to a fraction, but not within the tolerance for taking it as one.",
+  "measured-k-ambiguous":
+    "A decimal component is close to a fraction, but not within the tolerance for taking it as one.",
   "file-not-found": "A named file does not exist.",
   "file-unreadable": "A file exists but cannot be read as text.",
   "file-empty": "A file holds nothing to work with.",

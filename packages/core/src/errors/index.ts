@@ -5,4 +5,5 @@
 export { caretLine } from "./caret-line.js";
 export { type ProblemCode, problemCodes } from "./codes.js";
 export { fail, KvaneError, placed } from "./kvane-error.js";
-export { type Assumption, nowhere, type Place, type Problem, problem } from "./problem.js";
+export { editDistance, nearMiss } from "./near-miss.js";
+export { type Assumption, nowhere, type Place, type Problem, type ProblemDetails, problem } from "./problem.js";

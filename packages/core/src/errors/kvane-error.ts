@@ -1,5 +1,5 @@
 import type { ProblemCode } from "./codes.js";
-import type { Place, Problem } from "./problem.js";
+import type { Place, Problem, ProblemDetails } from "./problem.js";
 import { problem } from "./problem.js";
 
 /**
@@ -21,16 +21,7 @@ export class KvaneError extends Error {
 }
 
 /** Throws a `KvaneError` with a single problem. */
-export function fail(
-  code: ProblemCode,
-  message: string,
-  details: {
-    readonly where?: Partial<Place>;
-    readonly expected?: string;
-    readonly found?: string;
-    readonly remedy?: string;
-  } = {},
-): never {
+export function fail(code: ProblemCode, message: string, details: ProblemDetails = {}): never {
   throw new KvaneError([problem(code, message, details)]);
 }
 

@@ -23,17 +23,16 @@ export interface Problem {
 
 export const nowhere: Place = { file: null, line: null, column: null, path: null, argument: null };
 
+/** What may be said about a problem beside its code and message. */
+export interface ProblemDetails {
+  readonly where?: Partial<Place>;
+  readonly expected?: string;
+  readonly found?: string;
+  readonly remedy?: string;
+}
+
 /** A problem with the fields that matter; the others become null. */
-export function problem(
-  code: ProblemCode,
-  message: string,
-  details: {
-    readonly where?: Partial<Place>;
-    readonly expected?: string;
-    readonly found?: string;
-    readonly remedy?: string;
-  } = {},
-): Problem {
+export function problem(code: ProblemCode, message: string, details: ProblemDetails = {}): Problem {
   return {
     code,
     message,

@@ -1,4 +1,4 @@
-import { nearMiss } from "./near-miss.js";
+import { nearMiss } from "../errors/index.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { type StudySectionName, sectionsWithKey, studyKeys } from "./study-keys.js";
 import { where } from "./yaml-convert.js";

@@ -1,3 +1,4 @@
+import { fail } from "../errors/index.js";
 import { type Manifold, manifold, pointOnManifold, star, type WaveVector } from "../kvectors/index.js";
 import {
   addCyclotomic,
@@ -14,7 +15,6 @@ import {
   rootOfUnity,
   subtract,
 } from "../numbers/index.js";
-import { fail } from "../errors/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import { smallIrreps } from "./small-irreps.js";
 import type { SmallIrreps } from "./types.js";
@@ -46,7 +46,11 @@ export function compatibility(group: SpaceGroup, from: WaveVector, to: WaveVecto
   const through = manifold(group, to, { withInversion: false });
   const { arm, operator, parameters } = findArm(group, from, through);
   const point = smallIrreps(group, arm);
-  const line = smallIrreps(group, { ...through.form, values: through.dimension === 0 ? [] : null, uncertainties: null });
+  const line = smallIrreps(group, {
+    ...through.form,
+    values: through.dimension === 0 ? [] : null,
+    uncertainties: null,
+  });
   const places = line.littleGroup.operators.map((index) => point.littleGroup.operators.indexOf(index));
   if (places.includes(-1)) throw new Error("the little group of a line is not part of that of its point");
   const values = [0, 1, 2].map((index) => parameters[index] ?? ([0, 1] as const)) as unknown as RationalVector;
@@ -94,6 +98,7 @@ function multiplicity(point: readonly PhasedNumber[], line: readonly PhasedNumbe
     return addCyclotomic(total, multiplyCyclotomic(rootOfUnity(turns), product));
   }, cyclotomicZero);
   const value = cyclotomicToRational(reduceOrder(sum));
-  if (value === null || value[1] !== 1 || value[0] % line.length !== 0) throw new Error("a multiplicity came out fractional");
+  if (value === null || value[1] !== 1 || value[0] % line.length !== 0)
+    throw new Error("a multiplicity came out fractional");
   return value[0] / line.length;
 }

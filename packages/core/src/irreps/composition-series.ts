@@ -15,7 +15,10 @@ export interface SeriesStep {
  * 1972, section 4.4). Depends only on the order of the elements.
  */
 export function compositionSeries(group: LittleCoGroup): SeriesStep[] {
-  return seriesOf(group, Array.from({ length: group.size }, (_, element) => element));
+  return seriesOf(
+    group,
+    Array.from({ length: group.size }, (_, element) => element),
+  );
 }
 
 function seriesOf(group: LittleCoGroup, elements: readonly number[]): SeriesStep[] {

@@ -13,8 +13,14 @@ export interface LittleGroupElement {
  * Any operator of the little group, with any lattice translation, in terms of the printed coset representatives:
  * `D({R|t + T}) = e^{+2πi k·T} D({R|t})`. Throws a plain error when the operator is not in the little group.
  */
-export function littleGroupElement(group: SpaceGroup, irreps: SmallIrreps, operator: SymmetryOperator): LittleGroupElement {
-  const element = irreps.littleGroup.operators.findIndex((index) => sameRotation(group.operators[index] as SymmetryOperator, operator));
+export function littleGroupElement(
+  group: SpaceGroup,
+  irreps: SmallIrreps,
+  operator: SymmetryOperator,
+): LittleGroupElement {
+  const element = irreps.littleGroup.operators.findIndex((index) =>
+    sameRotation(group.operators[index] as SymmetryOperator, operator),
+  );
   const representative = group.operators[irreps.littleGroup.operators[element] as number];
   if (!representative) throw new Error("an operator is not in the little group");
   const step = subtractVectors(translationColumn(operator), translationColumn(representative));
@@ -22,7 +28,9 @@ export function littleGroupElement(group: SpaceGroup, irreps: SmallIrreps, opera
 }
 
 function sameRotation(a: SymmetryOperator, b: SymmetryOperator): boolean {
-  return a.rotationDenominator === b.rotationDenominator && a.rotation.every((entry, index) => entry === b.rotation[index]);
+  return (
+    a.rotationDenominator === b.rotationDenominator && a.rotation.every((entry, index) => entry === b.rotation[index])
+  );
 }
 
 /** `D(g)` of an irrep for any operator of the little group, as phase and matrix. */

@@ -44,7 +44,9 @@ export function fullIrrepMatrix(
   const { dimension } = irrep;
   const size = arms.arms.length * dimension;
   const matrix = Array.from({ length: size }, () => new Array<PhasedNumber>(size).fill(nothing));
-  const little = new Set(irreps.littleGroup.operators.map((index) => rotationKey(group.operators[index] as SymmetryOperator)));
+  const little = new Set(
+    irreps.littleGroup.operators.map((index) => rotationKey(group.operators[index] as SymmetryOperator)),
+  );
   const representatives = arms.representatives.map((index) => group.operators[index] as SymmetryOperator);
   representatives.forEach((from, column) => {
     const moved = composeOperators(operator, from);
@@ -54,7 +56,10 @@ export function fullIrrepMatrix(
       const { phase, matrix: block } = smallIrrepMatrix(group, irreps, irrep, inner);
       block.forEach((entries, p) => {
         entries.forEach((factor, q) => {
-          (matrix[row * dimension + p] as PhasedNumber[])[column * dimension + q] = { phase: reducePhase(phase), factor };
+          (matrix[row * dimension + p] as PhasedNumber[])[column * dimension + q] = {
+            phase: reducePhase(phase),
+            factor,
+          };
         });
       });
     });

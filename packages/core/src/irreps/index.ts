@@ -5,7 +5,7 @@
  * (1960) 165; Bradley & Cracknell (1972), chapters 3 and 4; Herring, Phys. Rev. 52 (1937) 361.
  */
 export { type Compatibility, compatibility } from "./compatibility.js";
-export { littleGroupElement, type LittleGroupElement, smallIrrepMatrix } from "./evaluate.js";
+export { type LittleGroupElement, littleGroupElement, smallIrrepMatrix } from "./evaluate.js";
 export { type FullIrrep, fullIrrepMatrix, fullIrreps } from "./full-irreps.js";
 export { type MinusKLink, type MinusKRelation, minusKRelation } from "./minus-k.js";
 export { translationColumn, waveTimesColumn } from "./setting.js";

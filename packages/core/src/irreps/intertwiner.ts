@@ -22,8 +22,10 @@ import {
  * (one pair per element), unique up to a phase by Schur's lemma: the mean of `left · E · right⁻¹` for the first
  * elementary matrix E that does not vanish, scaled so that one entry is positive.
  */
-export function unitaryIntertwiner(pairs: readonly (readonly [CyclotomicMatrix, CyclotomicMatrix])[]): CyclotomicMatrix {
-  const dimension = (pairs[0]?.[0] as CyclotomicMatrix).length;
+export function unitaryIntertwiner(
+  pairs: readonly (readonly [CyclotomicMatrix, CyclotomicMatrix])[],
+): CyclotomicMatrix {
+  const dimension = pairs[0]?.[0].length ?? 0;
   for (let seed = 0; seed < dimension * dimension; seed++) {
     const mean = pairs
       .map(([left, right]) => outerProduct(left, right, Math.floor(seed / dimension), seed % dimension))
@@ -37,7 +39,9 @@ export function unitaryIntertwiner(pairs: readonly (readonly [CyclotomicMatrix, 
 /** Δ E_{ab} Δ'† for an elementary matrix: column a of the first times the conjugated column b of the second. */
 function outerProduct(left: CyclotomicMatrix, right: CyclotomicMatrix, a: number, b: number): CyclotomicMatrix {
   const adjoint = adjointCyclotomicMatrix(right);
-  return left.map((row) => (adjoint[b] as readonly Cyclotomic[]).map((entry) => multiplyCyclotomic(row[a] as Cyclotomic, entry)));
+  return left.map((row) =>
+    (adjoint[b] as readonly Cyclotomic[]).map((entry) => multiplyCyclotomic(row[a] as Cyclotomic, entry)),
+  );
 }
 
 /** Divides by √m where X X† = m·1; m is rational because one entry of X is 1 and the rest come from roots of unity. */
@@ -48,6 +52,9 @@ function normalizedUnitary(matrix: CyclotomicMatrix): CyclotomicMatrix {
   );
   const value = cyclotomicToRational(reduceOrder(norm));
   if (value === null) throw new Error("an intertwiner has no unitary form in a cyclotomic field found by this method");
-  const inverseRoot = multiplyCyclotomic(squareRootOf(value[0] * value[1]), cyclotomicFromRational(rational(1, value[0])));
+  const inverseRoot = multiplyCyclotomic(
+    squareRootOf(value[0] * value[1]),
+    cyclotomicFromRational(rational(1, value[0])),
+  );
   return scaleCyclotomicMatrix(inverseRoot, matrix).map((row) => row.map(reduceOrder));
 }

@@ -30,13 +30,17 @@ export function littleCoGroup(group: SpaceGroup, k: WaveVector): LittleCoGroup {
   const { rotations, translations, denominator } = group.primitive;
   const size = little.operators.length;
   const numberOf = new Map<string, number>();
-  little.operators.forEach((operator, element) => numberOf.set(String(rotations[operator]), element));
-  const rotationOf = (element: number): readonly number[] => rotations[little.operators[element] as number] as readonly number[];
+  for (const [element, operator] of little.operators.entries()) numberOf.set(String(rotations[operator]), element);
+  const rotationOf = (element: number): readonly number[] =>
+    rotations[little.operators[element] as number] as readonly number[];
   const product = new Array<number>(size * size);
   for (let g = 0; g < size; g++)
     for (let h = 0; h < size; h++)
       product[g * size + h] = numberOf.get(String(multiplyIntegerMatrices(rotationOf(g), rotationOf(h)))) as number;
-  const inverse = Array.from({ length: size }, (_, g) => numberOf.get(String(invertUnimodular(rotationOf(g)))) as number);
+  const inverse = Array.from(
+    { length: size },
+    (_, g) => numberOf.get(String(invertUnimodular(rotationOf(g)))) as number,
+  );
   const origin = [0, 1, 2].map((axis) =>
     little.operators.reduce((sum, operator) => sum + (translations[operator]?.[axis] as number), 0),
   ) as [number, number, number];
@@ -47,8 +51,19 @@ export function littleCoGroup(group: SpaceGroup, k: WaveVector): LittleCoGroup {
   const factor = new Array<number>(size * size);
   for (let g = 0; g < size; g++)
     for (let h = 0; h < size; h++)
-      factor[g * size + h] = modulo(dotIntegers(little.shifts[g] as readonly number[], shifted[h] as readonly number[]), originDenominator);
-  return { littleGroup: little, size, product, inverse, ...reduced(factor, originDenominator), origin, originDenominator };
+      factor[g * size + h] = modulo(
+        dotIntegers(little.shifts[g] as readonly number[], shifted[h] as readonly number[]),
+        originDenominator,
+      );
+  return {
+    littleGroup: little,
+    size,
+    product,
+    inverse,
+    ...reduced(factor, originDenominator),
+    origin,
+    originDenominator,
+  };
 }
 
 /** Numerators of `t + (R − 1) p` over `denominator · size`, t being given over `denominator`. */
@@ -72,4 +87,3 @@ function reduced(factor: readonly number[], denominator: number): { factor: numb
   const factorOrder = factor.reduce((order, entry) => lcm(order, denominator / gcd(entry, denominator)), 1);
   return { factor: factor.map((entry) => entry / (denominator / factorOrder)), factorOrder };
 }
-

@@ -46,7 +46,11 @@ export function minusKRelation(group: SpaceGroup, irreps: SmallIrreps): MinusKRe
   const reverse = group.operators[operator] as SymmetryOperator;
   const back = invertOperator(reverse);
   const images = irreps.littleGroup.operators.map((index) =>
-    littleGroupElement(group, irreps, composeOperators(composeOperators(back, group.operators[index] as SymmetryOperator), reverse)),
+    littleGroupElement(
+      group,
+      irreps,
+      composeOperators(composeOperators(back, group.operators[index] as SymmetryOperator), reverse),
+    ),
   );
   return {
     operator,
@@ -54,7 +58,10 @@ export function minusKRelation(group: SpaceGroup, irreps: SmallIrreps): MinusKRe
       const partner = irreps.irreps.find((other) => other.label === (irrep.conjugateOf ?? irrep.label)) as SmallIrrep;
       const pairs = images.map(({ element, phase }, index): readonly [CyclotomicMatrix, CyclotomicMatrix] => {
         const turns = negateForm(addForms(phase, irreps.phases[index] as Phase));
-        return [partner.matrices[index] as CyclotomicMatrix, scaleCyclotomicMatrix(constantRoot(turns), conjugateMatrix(irrep.matrices[element] as CyclotomicMatrix))];
+        return [
+          partner.matrices[index] as CyclotomicMatrix,
+          scaleCyclotomicMatrix(constantRoot(turns), conjugateMatrix(irrep.matrices[element] as CyclotomicMatrix)),
+        ];
       });
       return { label: irrep.label, partner: partner.label, matrix: unitaryIntertwiner(pairs) };
     }),

@@ -63,7 +63,9 @@ function charactersOn(matrices: Matrices, elements: readonly number[]): Cyclotom
 }
 
 function indexOfCharacter(list: readonly (readonly Cyclotomic[])[], wanted: readonly Cyclotomic[]): number {
-  const index = list.findIndex((one) => one.every((value, position) => equalCyclotomic(value, wanted[position] as Cyclotomic)));
+  const index = list.findIndex((one) =>
+    one.every((value, position) => equalCyclotomic(value, wanted[position] as Cyclotomic)),
+  );
   if (index < 0) throw new Error("a conjugated irrep is not among the irreps of the subgroup");
   return index;
 }
@@ -90,7 +92,10 @@ function scaledMatrix(scale: Cyclotomic, matrix: CyclotomicMatrix): CyclotomicMa
 }
 
 /** e_s^p = e^{2πi·exponent} e_{s^p}: the element s^p of H and the accumulated factor. */
-function generatorPower(group: LittleCoGroup, { generator: s, index }: SeriesStep): { element: number; exponent: number } {
+function generatorPower(
+  group: LittleCoGroup,
+  { generator: s, index }: SeriesStep,
+): { element: number; exponent: number } {
   let element = s;
   let exponent = 0;
   for (let power = 1; power < index; power++) {
@@ -102,17 +107,20 @@ function generatorPower(group: LittleCoGroup, { generator: s, index }: SeriesSte
 
 /** The induced irrep on blocks e_s^j ⊗ v: block-diagonal Δ^{s^j} on H, a block shift for s. */
 function induced(group: LittleCoGroup, step: SeriesStep, orbit: readonly Matrices[]): Matrices {
-  const dimension = (orbit[0]?.[0] as CyclotomicMatrix).length;
+  const dimension = orbit[0]?.[0]?.length ?? 0;
   const size = dimension * orbit.length;
   const blocks = (place: (row: number, column: number) => CyclotomicMatrix | null): CyclotomicMatrix =>
     Array.from({ length: size }, (_, row) =>
       Array.from({ length: size }, (_unused, column) => {
         const block = place(Math.floor(row / dimension), Math.floor(column / dimension));
-        return block === null ? cyclotomicZero : ((block[row % dimension] as readonly Cyclotomic[])[column % dimension] as Cyclotomic);
+        return block === null
+          ? cyclotomicZero
+          : ((block[row % dimension] as readonly Cyclotomic[])[column % dimension] as Cyclotomic);
       }),
     );
   const base: (CyclotomicMatrix | undefined)[] = new Array(group.size);
-  for (const h of step.subgroup) base[h] = blocks((row, column) => (row === column ? (orbit[row]?.[h] as CyclotomicMatrix) : null));
+  for (const h of step.subgroup)
+    base[h] = blocks((row, column) => (row === column ? (orbit[row]?.[h] as CyclotomicMatrix) : null));
   const { element, exponent } = generatorPower(group, step);
   const wrap = scaledMatrix(root(group, exponent), orbit[0]?.[element] as CyclotomicMatrix);
   const unit = orbit[0]?.[0] as CyclotomicMatrix;
@@ -164,6 +172,7 @@ function extended(group: LittleCoGroup, step: SeriesStep, matrices: Matrices, co
 function ratio(a: CyclotomicMatrix, b: CyclotomicMatrix): Cyclotomic {
   for (const [row, entries] of b.entries())
     for (const [column, entry] of entries.entries())
-      if (!isCyclotomicZero(entry)) return divideCyclotomic((a[row] as readonly Cyclotomic[])[column] as Cyclotomic, entry);
+      if (!isCyclotomicZero(entry))
+        return divideCyclotomic((a[row] as readonly Cyclotomic[])[column] as Cyclotomic, entry);
   throw new Error("a zero matrix has no ratio");
 }

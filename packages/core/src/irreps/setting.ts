@@ -16,7 +16,10 @@ import type { SymmetryOperator } from "../spacegroups/index.js";
 
 /** k·x as an exact form in turns. */
 export function waveTimesColumn(k: WaveVector, column: RationalVector): LinearForm {
-  return k.components.reduce((sum, component, axis) => addForms(sum, scaleForm(column[axis as 0 | 1 | 2], component)), zeroForm);
+  return k.components.reduce(
+    (sum, component, axis) => addForms(sum, scaleForm(column[axis as 0 | 1 | 2], component)),
+    zeroForm,
+  );
 }
 
 /** The translation of an operator as an exact column. */

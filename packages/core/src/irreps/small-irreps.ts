@@ -1,21 +1,27 @@
 import { canonicalPlacement, littleGroup, star, type WaveVector } from "../kvectors/index.js";
 import {
   addForms,
-  constantForm,
   type Cyclotomic,
   type CyclotomicMatrix,
+  constantForm,
   cyclotomicToComplex,
   dotIntegers,
   type Phase,
-  rational,
   type RationalVector,
+  rational,
   reduceOrder,
   reducePhase,
   traceCyclotomicMatrix,
   unitComplex,
   vectorFrom,
 } from "../numbers/index.js";
-import { composeOperators, fromPrimitiveColumn, invertOperator, type SpaceGroup, type SymmetryOperator } from "../spacegroups/index.js";
+import {
+  composeOperators,
+  fromPrimitiveColumn,
+  invertOperator,
+  type SpaceGroup,
+  type SymmetryOperator,
+} from "../spacegroups/index.js";
 import { type LittleCoGroup, littleCoGroup } from "./little-co-group.js";
 import { projectiveIrreps } from "./projective-irreps.js";
 import { conjugateCharacter, herringReality, type RealityContext, sameCharacter } from "./reality.js";
@@ -57,7 +63,10 @@ export function smallIrreps(group: SpaceGroup, k: WaveVector): SmallIrreps {
       conjugateOf: irrep.conjugate === null ? null : label(irrep.conjugate),
       physicalDimension: arms.length * irrep.dimension * (irrep.reality === "real" ? 1 : 2),
       matrices: elements.map((element) => irrep.matrices[element] as CyclotomicMatrix),
-      characters: elements.map((element, index) => ({ phase: phases[index] as Phase, factor: irrep.character[element] as Cyclotomic })),
+      characters: elements.map((element, index) => ({
+        phase: phases[index] as Phase,
+        factor: irrep.character[element] as Cyclotomic,
+      })),
     })),
   };
 }
@@ -94,7 +103,9 @@ function canonicalIrreps(group: SpaceGroup, k: WaveVector): CanonicalIrreps {
     return element;
   };
   const gauge = (element: number): Phase =>
-    constantForm(rational(dotIntegers(shifts[element] as readonly number[], coGroup.origin), coGroup.originDenominator));
+    constantForm(
+      rational(dotIntegers(shifts[element] as readonly number[], coGroup.origin), coGroup.originDenominator),
+    );
   const phaseOf = (element: number, operator: SymmetryOperator): Phase =>
     reducePhase(addForms(waveTimesColumn(k, translationColumn(operator)), gauge(element)));
   const context = realityContext(group, k, coGroup, elementOf);
@@ -102,7 +113,10 @@ function canonicalIrreps(group: SpaceGroup, k: WaveVector): CanonicalIrreps {
     matrices: matrices.map((matrix) => matrix.map((row) => row.map(reduceOrder))),
     character: matrices.map((matrix) => reduceOrder(traceCyclotomicMatrix(matrix))),
   }));
-  const sorted = sortIrreps(made, operators.map((_, element) => gauge(element)));
+  const sorted = sortIrreps(
+    made,
+    operators.map((_, element) => gauge(element)),
+  );
   const realities = sorted.map(({ character }) => herringReality(context, character));
   const irreps = sorted.map(({ matrices, character }, position) => ({
     dimension: (matrices[0] as CyclotomicMatrix).length,
@@ -127,7 +141,10 @@ function realityContext(
   coGroup: LittleCoGroup,
   elementOf: (operator: SymmetryOperator) => number,
 ): RealityContext {
-  const origin: RationalVector = fromPrimitiveColumn(group.lattice, vectorFrom(coGroup.origin, coGroup.originDenominator));
+  const origin: RationalVector = fromPrimitiveColumn(
+    group.lattice,
+    vectorFrom(coGroup.origin, coGroup.originDenominator),
+  );
   const moved = (index: number): SymmetryOperator => aboutPoint(group.operators[index] as SymmetryOperator, origin);
   return {
     k,
@@ -177,4 +194,3 @@ function findCharacter(irreps: readonly MadeIrrep[], wanted: readonly Cyclotomic
   if (position < 0) throw new Error("the conjugate of an irrep is not among the irreps of its little group");
   return position;
 }
-

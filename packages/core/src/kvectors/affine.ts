@@ -1,14 +1,14 @@
 import {
   add,
   constantForm,
+  gcdOf,
   isZero,
   type LinearForm,
   multiply,
-  nullSpace,
   negate,
+  nullSpace,
   one,
   overCommonDenominator,
-  gcdOf,
   type Rational,
   type RationalMatrix,
   type RationalVector,
@@ -122,7 +122,8 @@ export function affineParameters(set: AffineSet, components: readonly LinearForm
 export function affinePoint(set: AffineSet, parameters: readonly Rational[]): RationalVector {
   const at = (axis: 0 | 1 | 2): Rational =>
     set.directions.reduce(
-      (sum, direction, index) => (isZero(direction[axis]) ? sum : add(sum, multiply(parameters[index] as Rational, direction[axis]))),
+      (sum, direction, index) =>
+        isZero(direction[axis]) ? sum : add(sum, multiply(parameters[index] as Rational, direction[axis])),
       set.base[axis],
     );
   return [at(0), at(1), at(2)];

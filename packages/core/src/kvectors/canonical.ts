@@ -1,8 +1,8 @@
-import { invertUnimodular, modulo, overCommonDenominator } from "../numbers/index.js";
-import { type SpaceGroup, toPrimitiveRow } from "../spacegroups/index.js";
-import { adaptedCoordinates, saturated } from "./flats.js";
+import { modulo } from "../numbers/index.js";
+import type { SpaceGroup } from "../spacegroups/index.js";
+import { fixedRows, fixingForm } from "./acting-rotations.js";
+import { type DirectionLattice, directionTable } from "./flats.js";
 import { fromIntegerForm, type IntegerForm, rotateForm, rotateRow, toIntegerForm } from "./integer-form.js";
-import { manifoldSet } from "./manifold.js";
 import type { WaveVector } from "./types.js";
 import { parameterValues } from "./wave-vector.js";
 
@@ -19,47 +19,56 @@ export interface CanonicalPlacement {
  */
 export function canonicalPlacement(group: SpaceGroup, k: WaveVector): CanonicalPlacement {
   const form = toIntegerForm(group.lattice, k);
-  let best: { readonly key: readonly number[]; readonly operator: number; readonly arm: Arm } | null = null;
-  group.primitive.rotations.forEach((rotation, operator) => {
-    const arm = describeArm(group, rotateForm(form, rotation), k);
-    if (best === null || lexicographic(arm.key, best.key) < 0) best = { key: arm.key, operator, arm };
-  });
-  const { operator, arm } = best as unknown as { operator: number; arm: Arm };
-  return { canonical: fromIntegerForm(group, shiftArm(arm, parameterValues(k)), k), operator };
+  const own = group.primitive.rotations.map((matrix) => ({ matrix, own: true }));
+  // The manifold of k R is that of k, rotated.
+  const directions = fixedRows(fixingForm(own, form));
+  const lattices = directionTable();
+  const arms = own.map(({ matrix }) =>
+    describeArm(rotateForm(form, matrix), lattices(directions.map((row) => rotateRow(row, matrix)))),
+  );
+  const best = arms.reduce((first, arm) => (lexicographic(arm.key, first.key) < 0 ? arm : first));
+  return {
+    canonical: fromIntegerForm(group, shiftArm(best, parameterValues(k)), k),
+    operator: arms.indexOf(best),
+  };
 }
 
 interface Arm {
   readonly form: IntegerForm;
-  /** `(t, s) = κ C`: t along the manifold (`dimension` of them), s across it; C is unimodular. */
-  readonly coordinates: readonly number[];
-  readonly dimension: number;
+  /** The directions of its manifold. */
+  readonly lattice: DirectionLattice;
   readonly key: readonly number[];
 }
 
-function describeArm(group: SpaceGroup, form: IntegerForm, like: WaveVector): Arm {
-  const set = manifoldSet(group, fromIntegerForm(group, form, like), { withInversion: false });
-  const directions = set.directions.map((row) => overCommonDenominator(toPrimitiveRow(group.lattice, row)).numerators);
-  const lattice = saturated(directions);
-  const coordinates = adaptedCoordinates(lattice);
-  const across = rotateRow(form.base, coordinates).slice(lattice.length).map((entry) => modulo(entry, form.denominator));
-  return { form, coordinates, dimension: lattice.length, key: [...lattice.flat(), ...across.map((entry) => entry / form.denominator)] };
+function describeArm(form: IntegerForm, lattice: DirectionLattice): Arm {
+  const across = rotateRow(form.base, lattice.coordinates).slice(lattice.rows.length);
+  const places = across.map((entry) => modulo(entry, form.denominator) / form.denominator);
+  return { form, lattice, key: [...lattice.rows.flat(), ...places] };
 }
 
 /** Moves the arm by a vector of L* to its canonical place; along the manifold only where there are numbers to go by. */
 function shiftArm(arm: Arm, values: readonly number[] | null): IntegerForm {
-  const { form, coordinates, dimension } = arm;
+  const { form, lattice } = arm;
+  const { coordinates } = lattice;
   const base = rotateRow(form.base, coordinates);
   const along = form.directions.map((direction) => rotateRow(direction, coordinates));
   const shift = base.map((entry, index) => {
-    if (index >= dimension) return Math.floor(entry / form.denominator);
+    if (index >= lattice.rows.length) return Math.floor(entry / form.denominator);
     const position = along.reduce(
-      (sum, direction, letter) => (direction[index] === 0 ? sum : sum + ((direction[index] as number) / form.denominator) * (values?.[letter] ?? Number.NaN)),
+      (sum, direction, letter) =>
+        direction[index] === 0
+          ? sum
+          : sum + ((direction[index] as number) / form.denominator) * (values?.[letter] ?? Number.NaN),
       entry / form.denominator,
     );
     return Number.isNaN(position) ? 0 : Math.ceil(position - 0.5);
   });
-  const step = rotateRow(shift, invertUnimodular(coordinates));
-  const moved = form.base.map((entry, axis) => entry - form.denominator * (step[axis] as number)) as [number, number, number];
+  const step = rotateRow(shift, lattice.inverse);
+  const moved = form.base.map((entry, axis) => entry - form.denominator * (step[axis] as number)) as [
+    number,
+    number,
+    number,
+  ];
   return { ...form, base: moved };
 }
 

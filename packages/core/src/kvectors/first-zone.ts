@@ -1,8 +1,14 @@
-import { type RationalVector, rational, toNumber, addVectors, roundNumber } from "../numbers/index.js";
-import { type Cell, fromPrimitiveRow, lengthInMetric, reciprocalMetric, type SpaceGroup } from "../spacegroups/index.js";
+import { fail } from "../errors/index.js";
+import { addVectors, type RationalVector, rational, roundNumber, toNumber } from "../numbers/index.js";
+import {
+  type Cell,
+  fromPrimitiveRow,
+  lengthInMetric,
+  reciprocalMetric,
+  type SpaceGroup,
+} from "../spacegroups/index.js";
 import type { WaveVector } from "./types.js";
 import { numericWaveVector } from "./wave-vector.js";
-import { fail } from "../errors/index.js";
 
 /**
  * The equivalent of k in the first Brillouin zone of a cell: the shortest of all k + H, H ∈ L*. Among equally long
@@ -32,8 +38,10 @@ export function firstZoneRepresentative(group: SpaceGroup, cell: Cell, k: WaveVe
 }
 
 function shorter(metric: readonly number[], start: readonly number[], a: RationalVector, b: RationalVector): boolean {
-  const at = (shift: RationalVector): number[] => start.map((entry, axis) => entry + toNumber(shift[axis as 0 | 1 | 2]));
-  const difference = roundNumber(lengthInMetric(metric, at(a)), 1, 10) - roundNumber(lengthInMetric(metric, at(b)), 1, 10);
+  const at = (shift: RationalVector): number[] =>
+    start.map((entry, axis) => entry + toNumber(shift[axis as 0 | 1 | 2]));
+  const difference =
+    roundNumber(lengthInMetric(metric, at(a)), 1, 10) - roundNumber(lengthInMetric(metric, at(b)), 1, 10);
   if (difference !== 0) return difference < 0;
   for (const axis of [0, 1, 2] as const) {
     const step = toNumber(a[axis]) - toNumber(b[axis]);
@@ -45,7 +53,11 @@ function shorter(metric: readonly number[], start: readonly number[], a: Rationa
 /** A basis of L* whose vectors no longer get shorter by adding one another (pairwise Gauss reduction). */
 function reducedBasis(group: SpaceGroup, metric: readonly number[]): RationalVector[] {
   const unit = (index: number): RationalVector =>
-    fromPrimitiveRow(group.lattice, [rational(index === 0 ? 1 : 0), rational(index === 1 ? 1 : 0), rational(index === 2 ? 1 : 0)]);
+    fromPrimitiveRow(group.lattice, [
+      rational(index === 0 ? 1 : 0),
+      rational(index === 1 ? 1 : 0),
+      rational(index === 2 ? 1 : 0),
+    ]);
   const basis = [unit(0), unit(1), unit(2)];
   const length = (row: RationalVector): number => lengthInMetric(metric, row.map(toNumber));
   for (let changed = true; changed; ) {
@@ -55,7 +67,10 @@ function reducedBasis(group: SpaceGroup, metric: readonly number[]): RationalVec
         for (const sign of [1, -1]) {
           if (i === j) continue;
           const other = basis[j] as RationalVector;
-          const candidate = addVectors(basis[i] as RationalVector, sign === 1 ? other : [minus(other[0]), minus(other[1]), minus(other[2])]);
+          const candidate = addVectors(
+            basis[i] as RationalVector,
+            sign === 1 ? other : [minus(other[0]), minus(other[1]), minus(other[2])],
+          );
           if (length(candidate) < length(basis[i] as RationalVector) * (1 - 1e-9)) {
             basis[i] = candidate;
             changed = true;

@@ -32,7 +32,9 @@ export function toIntegerForm(lattice: Lattice, k: WaveVector): IntegerForm {
     lattice.vectors.map((vector) =>
       vector.reduce<Rational>(
         (sum, entry, axis) =>
-          entry === 0 ? sum : add(sum, multiply(partOf(k.components[axis] as LinearForm, part), rational(entry, lattice.denominator))),
+          entry === 0
+            ? sum
+            : add(sum, multiply(partOf(k.components[axis] as LinearForm, part), rational(entry, lattice.denominator))),
         zero,
       ),
     ),

@@ -1,6 +1,13 @@
 import { evaluateFormNumber, isConstantForm, type RationalVector, toNumber } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
-import { type AffineSet, affineForms, affineParameters, type Condition, fixingConditions, solveConditions } from "./affine.js";
+import {
+  type AffineSet,
+  affineForms,
+  affineParameters,
+  type Condition,
+  fixingConditions,
+  solveConditions,
+} from "./affine.js";
 import { fromPrimitiveIntegers, reciprocalDifference, rotateForm, toIntegerForm } from "./integer-form.js";
 import { settingRotation } from "./rotations.js";
 import type { Manifold, WaveVector } from "./types.js";

@@ -12,7 +12,7 @@ import {
   zero,
 } from "../numbers/index.js";
 import { type SpaceGroup, toPrimitiveRow } from "../spacegroups/index.js";
-import { affineForms, type AffineSet, type Condition, fixingConditions, solveConditions } from "./affine.js";
+import { type AffineSet, affineForms, type Condition, fixingConditions, solveConditions } from "./affine.js";
 import { fromPrimitiveIntegers, rotateRow } from "./integer-form.js";
 import { settingRotation } from "./rotations.js";
 import type { WaveVector } from "./types.js";
@@ -58,9 +58,16 @@ export function placeWaveVector(
  * operators R (with both signs) that nearly fix k give linear conditions; when all together move k too far, those that
  * fit worst are left out.
  */
-function lowestKind(group: SpaceGroup, given: RationalVector, measured: readonly boolean[], tolerance: number): AffineSet {
+function lowestKind(
+  group: SpaceGroup,
+  given: RationalVector,
+  measured: readonly boolean[],
+  tolerance: number,
+): AffineSet {
   const exact: Condition[] = [0, 1, 2].flatMap((axis) =>
-    measured[axis] ? [] : [{ coefficients: [0, 1, 2].map((index) => (index === axis ? one : zero)), value: given[axis] as Rational }],
+    measured[axis]
+      ? []
+      : [{ coefficients: [0, 1, 2].map((index) => (index === axis ? one : zero)), value: given[axis] as Rational }],
   );
   const nearly = nearlyFixing(group, given, tolerance);
   for (let count = nearly.length; count > 0; count--) {
@@ -71,7 +78,11 @@ function lowestKind(group: SpaceGroup, given: RationalVector, measured: readonly
 }
 
 /** Operators ±R with `±kR − k` within reach of a vector of L*, best first, as exact conditions. */
-function nearlyFixing(group: SpaceGroup, given: RationalVector, tolerance: number): { misfit: number; conditions: Condition[] }[] {
+function nearlyFixing(
+  group: SpaceGroup,
+  given: RationalVector,
+  tolerance: number,
+): { misfit: number; conditions: Condition[] }[] {
   const primitive = toPrimitiveRow(group.lattice, given).map(toNumber);
   const found: { misfit: number; conditions: Condition[] }[] = [];
   group.primitive.rotations.forEach((rotation, index) => {
@@ -96,24 +107,33 @@ function waveVectorOn(set: AffineSet, given: RationalVector): WaveVector {
 
 function parameters(set: AffineSet, given: RationalVector): number[] {
   return set.pivots.map(
-    (pivot, index) => toNumber(given[pivot as 0 | 1 | 2]) / toNumber((set.directions[index] as RationalVector)[pivot as 0 | 1 | 2]),
+    (pivot, index) =>
+      toNumber(given[pivot as 0 | 1 | 2]) / toNumber((set.directions[index] as RationalVector)[pivot as 0 | 1 | 2]),
   );
 }
 
 function pointNumbers(set: AffineSet, given: RationalVector): number[] {
   const values = parameters(set, given);
   return set.base.map((base, axis) =>
-    set.directions.reduce((sum, direction, index) => sum + (values[index] as number) * toNumber(direction[axis as 0 | 1 | 2]), toNumber(base)),
+    set.directions.reduce(
+      (sum, direction, index) => sum + (values[index] as number) * toNumber(direction[axis as 0 | 1 | 2]),
+      toNumber(base),
+    ),
   );
 }
 
 /** Largest move of a component, reciprocal lattice units. Equal moves share rounding, hence the tiny slack. */
 function distance(set: AffineSet, given: RationalVector): number {
-  return Math.max(...pointNumbers(set, given).map((entry, axis) => Math.abs(entry - toNumber(given[axis as 0 | 1 | 2])))) - 1e-12;
+  return (
+    Math.max(...pointNumbers(set, given).map((entry, axis) => Math.abs(entry - toNumber(given[axis as 0 | 1 | 2])))) -
+    1e-12
+  );
 }
 
 function movedComponents(set: AffineSet, given: RationalVector, k: WaveVector): Assumption[] {
-  const moved = pointNumbers(set, given).some((entry, axis) => Math.abs(entry - toNumber(given[axis as 0 | 1 | 2])) > 1e-12);
+  const moved = pointNumbers(set, given).some(
+    (entry, axis) => Math.abs(entry - toNumber(given[axis as 0 | 1 | 2])) > 1e-12,
+  );
   if (!moved) return [];
   const typed = `(${given.map((entry) => roundNumber(toNumber(entry))).join(", ")})`;
   return [
@@ -137,13 +157,21 @@ function nearMisses(
   if (wider.directions.length >= set.directions.length) return [];
   const values = parameters(wider, given);
   const text = `${affineForms(wider)
-    .map((form, axis) => (isConstantForm(form) ? formatRational(form.constant) : String(roundNumber(pointNumbers(wider, given)[axis] as number))))
+    .map((form, axis) =>
+      isConstantForm(form)
+        ? formatRational(form.constant)
+        : String(roundNumber(pointNumbers(wider, given)[axis] as number)),
+    )
     .join(",")}`;
   return [
-    problem("measured-k-ambiguous", `\`${written.text}\` was taken as measured, on a kind of dimension ${set.directions.length}`, {
-      expected: `${text} if the special value is meant`,
-      found: written.text,
-      remedy: `write ${text}${values.length === 0 ? "" : " (fractions are exact)"} to mean the special value`,
-    }),
+    problem(
+      "measured-k-ambiguous",
+      `\`${written.text}\` was taken as measured, on a kind of dimension ${set.directions.length}`,
+      {
+        expected: `${text} if the special value is meant`,
+        found: written.text,
+        remedy: `write ${text}${values.length === 0 ? "" : " (fractions are exact)"} to mean the special value`,
+      },
+    ),
   ];
 }

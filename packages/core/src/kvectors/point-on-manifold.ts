@@ -25,11 +25,14 @@ export function pointOnManifold(group: SpaceGroup, through: Manifold, k: WaveVec
   if (row === null) return null;
   const { components } = through.form;
   const base: RationalVector = [components[0].constant, components[1].constant, components[2].constant];
-  const directions = Array.from({ length: through.dimension }, (_, letter): RationalVector => [
-    components[0].coefficients[letter as 0 | 1 | 2],
-    components[1].coefficients[letter as 0 | 1 | 2],
-    components[2].coefficients[letter as 0 | 1 | 2],
-  ]);
+  const directions = Array.from(
+    { length: through.dimension },
+    (_, letter): RationalVector => [
+      components[0].coefficients[letter as 0 | 1 | 2],
+      components[1].coefficients[letter as 0 | 1 | 2],
+      components[2].coefficients[letter as 0 | 1 | 2],
+    ],
+  );
   const primitive = directions.map((direction) => toPrimitiveRow(group.lattice, direction));
   const lattice = saturated(primitive.map((entries) => overCommonDenominator(entries).numerators));
   const coordinates = adaptedCoordinates(lattice);
@@ -42,7 +45,10 @@ export function pointOnManifold(group: SpaceGroup, through: Manifold, k: WaveVec
 /** Row times integer matrix, exact. */
 function throughColumns(row: RationalVector, matrix: readonly number[]): Rational[] {
   return [0, 1, 2].map((column) =>
-    row.reduce<Rational>((sum, entry, index) => add(sum, multiply(entry, rational(matrix[3 * index + column] as number))), zero),
+    row.reduce<Rational>(
+      (sum, entry, index) => add(sum, multiply(entry, rational(matrix[3 * index + column] as number))),
+      zero,
+    ),
   );
 }
 

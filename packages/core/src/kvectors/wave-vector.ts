@@ -41,7 +41,9 @@ export function numericWaveVector(k: WaveVector): readonly [number, number, numb
   if (k.values === null) return null;
   const values = parameterValues(k);
   const at = (index: 0 | 1 | 2): number =>
-    isConstantForm(k.components[index]) ? toNumber(k.components[index].constant) : evaluateFormNumber(k.components[index], values ?? []);
+    isConstantForm(k.components[index])
+      ? toNumber(k.components[index].constant)
+      : evaluateFormNumber(k.components[index], values ?? []);
   return [at(0), at(1), at(2)];
 }
 

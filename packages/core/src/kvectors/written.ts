@@ -30,7 +30,11 @@ export function parseWaveVector(text: string, column = 1): WrittenWaveVector {
     return refuse(text, error);
   }
   const parts = inner.split(",");
-  const measured = components.map((form, index) => isMeasured(form, parts[index] as string)) as [boolean, boolean, boolean];
+  const measured = components.map((form, index) => isMeasured(form, parts[index] as string)) as [
+    boolean,
+    boolean,
+    boolean,
+  ];
   if (measured.some(Boolean) && !components.every(isConstantForm))
     fail("invalid-k", `the wave vector \`${text}\` mixes a measured decimal with open letters`, {
       where: { column },

@@ -10,7 +10,8 @@ type Triple = readonly [number, number, number];
  */
 export function convertComponents(cell: Cell, vector: Triple, from: MomentComponents, to: MomentComponents): Triple {
   if (from === to) return vector;
-  const lattice = from === "lattice" ? vector : from === "crystal" ? perLength(cell, vector) : fromCartesian(cell, vector);
+  const lattice =
+    from === "lattice" ? vector : from === "crystal" ? perLength(cell, vector) : fromCartesian(cell, vector);
   if (to === "lattice") return lattice;
   if (to === "crystal") return [lattice[0] * cell.a, lattice[1] * cell.b, lattice[2] * cell.c];
   const [a, b, c] = cartesianAxes(cell);
@@ -25,7 +26,9 @@ function perLength(cell: Cell, vector: Triple): Triple {
 /** The axes a, b, c in Å on Cartesian axes with x ∥ a and z ∥ c*. */
 export function cartesianAxes(cell: Cell): readonly [Triple, Triple, Triple] {
   const radians = Math.PI / 180;
-  const [cosAlpha, cosBeta, cosGamma] = [cell.alpha, cell.beta, cell.gamma].map((angle) => Math.cos(angle * radians)) as [number, number, number];
+  const [cosAlpha, cosBeta, cosGamma] = [cell.alpha, cell.beta, cell.gamma].map((angle) =>
+    Math.cos(angle * radians),
+  ) as [number, number, number];
   const sinGamma = Math.sin(cell.gamma * radians);
   const cy = (cosAlpha - cosBeta * cosGamma) / sinGamma;
   return [

@@ -3,6 +3,7 @@ import {
   type Cyclotomic,
   conjugateCyclotomic,
   cyclotomicNumbers,
+  cyclotomicToRational,
   cyclotomicZero,
   equalForms,
   formatCyclotomic,
@@ -10,12 +11,14 @@ import {
   multiplyCyclotomic,
   negateCyclotomic,
   type Phase,
-  rational,
   type Rational,
+  rational,
   reducedEchelon,
   reduceOrder,
   reducePhase,
   rootOfUnity,
+  roundNumber,
+  toNumber,
   zeroForm,
 } from "../numbers/index.js";
 import { phaseText } from "./phase-text.js";
@@ -26,7 +29,15 @@ export interface Term {
   readonly letter: string;
   /** Component of the order parameter that the letter multiplies, where it has several: `ξ1`, `ξ2`; else empty. */
   readonly component?: string;
-  readonly moments: readonly { readonly phase: Phase; readonly vector: readonly Cyclotomic[]; readonly conjugate?: boolean }[];
+  /** Index of the little-group suborbit on which the letter begins, where it is known. */
+  readonly suborbit?: number;
+  /** What the entries along a, b, c are multiplied with beside their exact factor: 1 each unless given. */
+  readonly ratios?: readonly [number, number, number];
+  readonly moments: readonly {
+    readonly phase: Phase;
+    readonly vector: readonly Cyclotomic[];
+    readonly conjugate?: boolean;
+  }[];
 }
 
 /**
@@ -35,9 +46,17 @@ export interface Term {
  * complex, except with `real`: there 2k ∈ L*, the Fourier components are real, and the table is that of the physically
  * irreducible representation, made with the modes of the conjugate irrep where the irrep is complex.
  */
-export function constraintTable(k: WaveVector, modes: readonly Mode[], real: { readonly conjugate: readonly Mode[] } | null): string[] {
-  const terms = real === null ? complexTerms(modes) : realTerms([...modes, ...real.conjugate]);
-  return termTable(k, terms, modes[0]?.moments.length ?? 0);
+export function constraintTable(
+  k: WaveVector,
+  modes: readonly Mode[],
+  real: { readonly conjugate: readonly Mode[] } | null,
+): string[] {
+  return termTable(k, constraintTerms(modes, real), modes[0]?.moments.length ?? 0);
+}
+
+/** The amplitudes of `constraintTable` and what each puts on the atoms. */
+export function constraintTerms(modes: readonly Mode[], real: { readonly conjugate: readonly Mode[] } | null): Term[] {
+  return real === null ? complexTerms(modes) : realTerms([...modes, ...real.conjugate]);
 }
 
 /** The sum of all terms on each atom, as text. */
@@ -54,7 +73,11 @@ export function letterOf(index: number): string {
 
 function complexTerms(modes: readonly Mode[]): Term[] {
   const many = modes.some((mode) => mode.partner > 1);
-  return modes.map((mode) => ({ letter: `${letterOf(mode.copy - 1)}${many ? mode.partner : ""}`, moments: mode.moments }));
+  return modes.map((mode) => ({
+    letter: `${letterOf(mode.copy - 1)}${many ? mode.partner : ""}`,
+    suborbit: mode.suborbit,
+    moments: mode.moments,
+  }));
 }
 
 /**
@@ -63,7 +86,9 @@ function complexTerms(modes: readonly Mode[]): Term[] {
  */
 function realTerms(modes: readonly Mode[]): Term[] {
   const rows = modes.flatMap((mode) => {
-    const row = mode.moments.flatMap(({ phase, vector }) => vector.map((entry) => multiplyCyclotomic(rootOfUnity(phase.constant), entry)));
+    const row = mode.moments.flatMap(({ phase, vector }) =>
+      vector.map((entry) => multiplyCyclotomic(rootOfUnity(phase.constant), entry)),
+    );
     return [row, row.map(conjugateCyclotomic)];
   });
   return reducedEchelon(rows, cyclotomicNumbers).rows.map((row, index) => ({
@@ -86,7 +111,16 @@ function atomText(k: WaveVector, terms: readonly Term[], atom: number): string {
         const entry = term.moments[atom]?.vector[axis] ?? cyclotomicZero;
         if (isCyclotomicZero(entry)) return [];
         const phase = common === null ? outer(phases[index] as Phase) : { negative: common.negative, rest: zeroForm };
-        return [coefficientText(k, phase.negative ? negateCyclotomic(entry) : entry, phase.rest, `${term.letter}${term.moments[atom]?.conjugate === true ? "*" : ""}${term.component ?? ""}`)];
+        const ratio = term.ratios?.[axis as 0 | 1 | 2] ?? 1;
+        return [
+          coefficientText(
+            k,
+            phase.negative ? negateCyclotomic(entry) : entry,
+            ratio,
+            phase.rest,
+            `${term.letter}${term.moments[atom]?.conjugate === true ? "*" : ""}${term.component ?? ""}`,
+          ),
+        ];
       }),
     ),
   );
@@ -106,12 +140,18 @@ function outer(phase: Phase): { negative: boolean; rest: Phase } {
   return { negative, rest: { ...reduced, constant: rational(2 * numerator - denominator, 2 * denominator) } };
 }
 
-/** `u`, `-u`, `2u`, `-u/2`, `i·u`, `e^{2πi/3}·u`. */
-function coefficientText(k: WaveVector, factor: Cyclotomic, phase: Phase, letter: string): string {
+/** `u`, `-u`, `2u`, `-u/2`, `i·u`, `e^{2πi/3}·u`; with a ratio `0.8u`, `0.8·e^{2πi/3}·u`. */
+function coefficientText(k: WaveVector, factor: Cyclotomic, ratio: number, phase: Phase, letter: string): string {
   const number = formatCyclotomic(factor);
   const plain = /^(-?)(\d*)(?:\/(\d+))?$/.exec(number);
   const wave = phaseText(k, phase);
   const tail = wave === "1" ? "" : `·${wave}`;
+  if (ratio !== 1) {
+    const fraction = cyclotomicToRational(factor);
+    if (fraction !== null) return `${ratioText(ratio * toNumber(fraction))}${letter}${tail}`;
+    const exact = coefficientText(k, factor, 1, phase, letter);
+    return exact.startsWith("-") ? `-${ratioText(ratio)}·${exact.slice(1)}` : `${ratioText(ratio)}·${exact}`;
+  }
   if (plain) {
     const size = plain[2] === "1" ? "" : plain[2];
     return `${plain[1]}${size}${letter}${plain[3] ? `/${plain[3]}` : ""}${tail}`;
@@ -119,6 +159,13 @@ function coefficientText(k: WaveVector, factor: Cyclotomic, phase: Phase, letter
   const bare = number.replaceAll(/\{[^}]*\}/g, "");
   const sum = /[+-]/.test(bare.slice(1)) && !bare.startsWith("(");
   return `${sum ? `(${number})` : number}·${letter}${tail}`;
+}
+
+/** Digits of a ratio of cell lengths, which are measured to four or five. */
+const ratioDigits = 6;
+
+function ratioText(value: number): string {
+  return String(roundNumber(value, 1, ratioDigits));
 }
 
 function sumText(parts: readonly string[]): string {

@@ -1,9 +1,9 @@
-import { isHalfLattice, type WaveVector } from "../kvectors/index.js";
 import { waveTimesColumn } from "../irreps/index.js";
+import { isHalfLattice, type WaveVector } from "../kvectors/index.js";
 import {
   addForms,
-  conjugateCyclotomic,
   type Cyclotomic,
+  conjugateCyclotomic,
   cyclotomicFromRational,
   multiplyCyclotomic,
   negateForm,

@@ -6,6 +6,15 @@
  */
 export { cartesianAxes, convertComponents } from "./components.js";
 export {
+  axisLengths,
+  type ConstraintOptions,
+  type ConstraintTexts,
+  constraintCrystal,
+  constraintTexts,
+  leadingAxis,
+  orderParameterTexts,
+} from "./constraint-forms.js";
+export {
   type FourierConvention,
   fromConvention,
   type MomentComponents,

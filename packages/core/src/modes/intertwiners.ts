@@ -31,7 +31,9 @@ export interface MomentOperator {
 
 /** `det(R) R` (axial) or `R` (polar) with exact entries. */
 export function momentMatrix(rotation: RationalMatrix, properSign: number): CyclotomicMatrix {
-  return rotation.map((row) => row.map(([numerator, denominator]) => cyclotomicFromRational([properSign * numerator + 0, denominator])));
+  return rotation.map((row) =>
+    row.map(([numerator, denominator]) => cyclotomicFromRational([properSign * numerator + 0, denominator])),
+  );
 }
 
 /**
@@ -40,7 +42,11 @@ export function momentMatrix(rotation: RationalMatrix, properSign: number): Cycl
  * there is induced from the site (the projection operators of Bertaut, Acta Cryst. A24 (1968) 217, reduced to one
  * atom). All phases are short roots of unity here: the letters of k cancel.
  */
-export function siteIntertwiners(irrep: SmallIrrep, phases: readonly Phase[], stabilizer: readonly MomentOperator[]): CyclotomicMatrix[] {
+export function siteIntertwiners(
+  irrep: SmallIrrep,
+  phases: readonly Phase[],
+  stabilizer: readonly MomentOperator[],
+): CyclotomicMatrix[] {
   const { dimension } = irrep;
   const operators = stabilizer.map(({ matrix, phase, element }) => {
     const turns = subtractForms(phase, phases[element] as Phase);
@@ -54,7 +60,9 @@ export function siteIntertwiners(irrep: SmallIrrep, phases: readonly Phase[], st
   for (let partner = 0; partner < dimension; partner++)
     for (let axis = 0; axis < 3; axis++) {
       const seed = [0, 1, 2].map((row) =>
-        Array.from({ length: dimension }, (_, column) => (row === axis && column === partner ? cyclotomicOne : cyclotomicZero)),
+        Array.from({ length: dimension }, (_, column) =>
+          row === axis && column === partner ? cyclotomicOne : cyclotomicZero,
+        ),
       );
       const mean = operators
         .map(({ left, right }) => multiplyCyclotomicMatrices(multiplyCyclotomicMatrices(left, seed), right))

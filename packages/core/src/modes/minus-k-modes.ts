@@ -53,14 +53,20 @@ export function minusKOnModes(
   const pivots = partners.map(leadingEntry);
   const source = action.image.map((_, atom) => action.image.indexOf(atom));
   const phaseAt = (copy: Copy, atom: number): Phase =>
-    subtractForms(action.phase[atom] as Phase, (copy.find((mode) => hasMoment(mode, atom)) ?? (copy[0] as Mode)).moments[atom]?.phase ?? zeroForm);
+    subtractForms(
+      action.phase[atom] as Phase,
+      (copy.find((mode) => hasMoment(mode, atom)) ?? (copy[0] as Mode)).moments[atom]?.phase ?? zeroForm,
+    );
   const matrix = pivots.map(({ atom, axis }) =>
     copies.map((copy): PhasedNumber => {
       const from = source[atom] as number;
       const factor = copy.reduce((sum, mode, partner) => {
         const vector = mode.moments[from]?.vector ?? [];
         const rotated = rowTimesConjugate(action.matrix[axis] as readonly Cyclotomic[], vector);
-        return addCyclotomic(sum, multiplyCyclotomic(rotated, conjugateCyclotomic(link.matrix[0]?.[partner] as Cyclotomic)));
+        return addCyclotomic(
+          sum,
+          multiplyCyclotomic(rotated, conjugateCyclotomic(link.matrix[0]?.[partner] as Cyclotomic)),
+        );
       }, cyclotomicZero);
       return { phase: phaseAt(copy, from), factor: reduceOrder(factor) };
     }),
@@ -73,8 +79,16 @@ export function minusKOnModes(
     partner: link.partner,
     suborbitImages,
     matrix,
-    constraint: irrep.reality === "real" && copies.length > 0 ? lockedConstraint(k, copies, matrix, suborbitImages) : null,
+    constraint:
+      irrep.reality === "real" && copies.length > 0
+        ? termTable(k, lockedTerms(copies, matrix, suborbitImages), modes[0]?.moments.length ?? 0)
+        : null,
   };
+}
+
+/** The amplitudes of the arrangement of one order parameter, and what each puts on the atoms; real irreps only. */
+export function orderParameterTerms({ matrix, suborbitImages }: MinusKOnModes, modes: readonly Mode[]): Term[] {
+  return lockedTerms(groupCopies(modes), matrix, suborbitImages);
 }
 
 function groupCopies(modes: readonly Mode[]): Copy[] {
@@ -98,7 +112,8 @@ function hasMoment(mode: Mode, atom: number): boolean {
 
 function rowTimesConjugate(row: readonly Cyclotomic[], vector: readonly Cyclotomic[]): Cyclotomic {
   return row.reduce(
-    (sum, entry, index) => addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(vector[index] ?? cyclotomicZero))),
+    (sum, entry, index) =>
+      addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(vector[index] ?? cyclotomicZero))),
     cyclotomicZero,
   );
 }
@@ -108,12 +123,11 @@ function rowTimesConjugate(row: readonly Cyclotomic[], vector: readonly Cyclotom
  * irrep). On a suborbit that g₀ maps to itself they are real behind half the phase of B's diagonal; on two suborbits
  * that it exchanges they are one complex letter and its conjugate.
  */
-function lockedConstraint(
-  k: WaveVector,
+function lockedTerms(
   copies: readonly Copy[],
   matrix: readonly (readonly PhasedNumber[])[],
   suborbitImages: readonly number[],
-): string[] {
+): Term[] {
   const terms: Term[] = [];
   suborbitImages.forEach((image, suborbit) => {
     const here = numbersOn(copies, suborbit);
@@ -121,7 +135,7 @@ function lockedConstraint(
     if (image === suborbit) terms.push(...selfTerms(copies, matrix, here, used));
     else if (image > suborbit) terms.push(...pairTerms(copies, matrix, here, numbersOn(copies, image), used));
   });
-  return termTable(k, withPlainPhase(terms), (copies[0] as Copy)[0]?.moments.length ?? 0);
+  return withPlainPhase(terms);
 }
 
 function numbersOn(copies: readonly Copy[], suborbit: number): number[] {
@@ -129,12 +143,17 @@ function numbersOn(copies: readonly Copy[], suborbit: number): number[] {
 }
 
 /** Real letters: the fixed space of `a → b a*`, b being B without the half phases of its diagonal. */
-function selfTerms(copies: readonly Copy[], matrix: readonly (readonly PhasedNumber[])[], here: readonly number[], used: number): Term[] {
+function selfTerms(
+  copies: readonly Copy[],
+  matrix: readonly (readonly PhasedNumber[])[],
+  here: readonly number[],
+  used: number,
+): Term[] {
   if (here.length === 0) return [];
   const half = new Map(here.map((number) => [number, scaleForm([1, 2], matrix[number]?.[number]?.phase ?? zeroForm)]));
   const b = here.map((row) =>
     here.map((column) => {
-      const { phase, factor } = matrix[row]?.[column] as PhasedNumber;
+      const { phase, factor } = (matrix[row] as readonly PhasedNumber[])[column] as PhasedNumber;
       const rest = subtractForms(phase, addForms(half.get(row) as Phase, half.get(column) as Phase));
       if (!isConstantForm(rest)) throw new Error("a phase between copies on one suborbit depends on a free parameter");
       return multiplyCyclotomic(rootOfUnity(rest.constant), factor);
@@ -142,9 +161,10 @@ function selfTerms(copies: readonly Copy[], matrix: readonly (readonly PhasedNum
   );
   const i = rootOfUnity([1, 4]);
   const fixed = here.flatMap((_, column) =>
-    [cyclotomicOneAt(here.length, column), cyclotomicOneAt(here.length, column).map((entry) => multiplyCyclotomic(i, entry))].map((v) =>
-      v.map((entry, row) => addCyclotomic(entry, rowTimesConjugate(b[row] as readonly Cyclotomic[], v))),
-    ),
+    [
+      cyclotomicOneAt(here.length, column),
+      cyclotomicOneAt(here.length, column).map((entry) => multiplyCyclotomic(i, entry)),
+    ].map((v) => v.map((entry, row) => addCyclotomic(entry, rowTimesConjugate(b[row] as readonly Cyclotomic[], v)))),
   );
   return realBasis(fixed).flatMap((weights, index) =>
     partnersOf(copies, here).map(
@@ -166,7 +186,10 @@ function realBasis(rows: readonly (readonly Cyclotomic[])[]): Cyclotomic[][] {
   const i = rootOfUnity([1, 4]);
   const twice = (entry: Cyclotomic): Cyclotomic => addCyclotomic(entry, conjugateCyclotomic(entry));
   // 2 Re z and 2 Im z = 2 Re(−i z): the common factor 2 does not change the span.
-  const split = rows.map((row) => [...row.map(twice), ...row.map((entry) => twice(multiplyCyclotomic(conjugateCyclotomic(i), entry)))]);
+  const split = rows.map((row) => [
+    ...row.map(twice),
+    ...row.map((entry) => twice(multiplyCyclotomic(conjugateCyclotomic(i), entry))),
+  ]);
   const width = rows[0]?.length ?? 0;
   return reducedEchelon(split, cyclotomicNumbers).rows.map((row) =>
     Array.from({ length: width }, (_, index) =>
@@ -192,8 +215,11 @@ function pairTerms(
       return {
         letter: letterOf(used + index),
         component: componentFor(copies, partner),
+        suborbit: (copies[column] as Copy)[0]?.suborbit ?? 0,
         moments: own.map((moment, atom) =>
-          moment.vector.every(isCyclotomicZero) ? { ...(other[atom] as Term["moments"][number]), conjugate: true } : moment,
+          moment.vector.every(isCyclotomicZero)
+            ? { ...(other[atom] as Term["moments"][number]), conjugate: true }
+            : moment,
         ),
       };
     }),
@@ -230,7 +256,10 @@ function combined(
       const step = addForms(total, negateForm(phase));
       if (!isConstantForm(step)) throw new Error("two copies on one suborbit differ by a phase with a free parameter");
       moment.vector.forEach((entry, axis) => {
-        vector[axis] = addCyclotomic(vector[axis] as Cyclotomic, multiplyCyclotomic(multiplyCyclotomic(rootOfUnity(step.constant), weight), entry));
+        vector[axis] = addCyclotomic(
+          vector[axis] as Cyclotomic,
+          multiplyCyclotomic(multiplyCyclotomic(rootOfUnity(step.constant), weight), entry),
+        );
       });
     });
     return { phase: phase ?? zeroForm, vector: vector.map(reduceOrder) };

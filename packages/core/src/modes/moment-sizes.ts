@@ -55,7 +55,9 @@ function numericModes(site: SiteModes, part: IrrepModes): number[][][] | null {
   const values = parameterValues(site.representations.k);
   const result: number[][][] = [];
   for (const mode of part.modes) {
-    const atoms = mode.moments.map(({ phase, vector }) => vector.map((factor) => phasedToComplex({ phase, factor }, values)));
+    const atoms = mode.moments.map(({ phase, vector }) =>
+      vector.map((factor) => phasedToComplex({ phase, factor }, values)),
+    );
     if (atoms.some((atom) => atom.includes(null))) return null;
     result.push(atoms.map((atom) => atom.flatMap((entry) => entry as [number, number])));
   }
@@ -65,7 +67,9 @@ function numericModes(site: SiteModes, part: IrrepModes): number[][][] | null {
 /** Real and imaginary parts of the modes as real modes: together they span the physically irreducible space. */
 function realWaves(waves: readonly (readonly (readonly number[])[])[]): number[][][] {
   const parts = waves.flatMap((atoms) =>
-    [0, 1].map((part) => atoms.map((atom) => atom.map((_, index) => (index % 2 === 0 ? (atom[index + part] as number) : 0)))),
+    [0, 1].map((part) =>
+      atoms.map((atom) => atom.map((_, index) => (index % 2 === 0 ? (atom[index + part] as number) : 0))),
+    ),
   );
   return parts.filter((atoms) => atoms.some((atom) => atom.some((entry) => Math.abs(entry) > 1e-12)));
 }
@@ -118,7 +122,10 @@ function solvable(problem: SizeProblem, period: Period): boolean {
   const size = problem.waves.length * (problem.realAmplitudes ? 1 : 2);
   const scale = 1 / Math.sqrt(problem.metric[0] as number);
   for (let start = 0; start < starts; start++) {
-    let x = Float64Array.from({ length: size }, (_, index) => scale * Math.sin(1.7 * (start + 1) * (index + 1) + start));
+    let x = Float64Array.from(
+      { length: size },
+      (_, index) => scale * Math.sin(1.7 * (start + 1) * (index + 1) + start),
+    );
     let r = residuals(problem, period, x);
     let cost = sumOfSquares(r);
     let damping = 1e-3;
@@ -152,7 +159,12 @@ function differentiate(problem: SizeProblem, period: Period, x: Float64Array, st
   });
 }
 
-function dampedStep(columns: readonly (readonly number[])[], r: readonly number[], x: Float64Array, damping: number): Float64Array<ArrayBuffer> | null {
+function dampedStep(
+  columns: readonly (readonly number[])[],
+  r: readonly number[],
+  x: Float64Array,
+  damping: number,
+): Float64Array<ArrayBuffer> | null {
   const size = x.length;
   const normal = new Float64Array(size * size);
   const right = new Float64Array(size);
@@ -165,7 +177,10 @@ function dampedStep(columns: readonly (readonly number[])[], r: readonly number[
       normal[b * size + a] = value;
     }
   }
-  const trace = Array.from({ length: size }, (_, index) => normal[index * size + index] as number).reduce((sum, entry) => sum + entry, 0);
+  const trace = Array.from({ length: size }, (_, index) => normal[index * size + index] as number).reduce(
+    (sum, entry) => sum + entry,
+    0,
+  );
   for (let index = 0; index < size; index++)
     normal[index * size + index] = (normal[index * size + index] as number) + damping * (trace / size + 1e-12);
   const factor = choleskyFactor(normal, size);
@@ -185,14 +200,21 @@ function sumOfSquares(values: readonly number[]): number {
 /** Generic amplitudes decide: parallel real and imaginary parts there means parallel everywhere (an identity of polynomials). */
 function isCollinear(problem: SizeProblem): boolean {
   const size = problem.waves.length * (problem.realAmplitudes ? 1 : 2);
-  const vectors = fields(problem, Float64Array.from({ length: size }, (_, index) => Math.cos(2.3 * index + 0.7))).flatMap((s) => [
-    [s[0], s[2], s[4]] as number[],
-    [s[1], s[3], s[5]] as number[],
-  ]);
-  const longest = vectors.reduce((best, vector) => (sumOfSquares(vector) > sumOfSquares(best) ? vector : best), [0, 0, 0]);
+  const vectors = fields(
+    problem,
+    Float64Array.from({ length: size }, (_, index) => Math.cos(2.3 * index + 0.7)),
+  ).flatMap((s) => [[s[0], s[2], s[4]] as number[], [s[1], s[3], s[5]] as number[]]);
+  const longest = vectors.reduce(
+    (best, vector) => (sumOfSquares(vector) > sumOfSquares(best) ? vector : best),
+    [0, 0, 0],
+  );
   const limit = 1e-18 * sumOfSquares(longest) ** 2;
   return vectors.every((v) => {
-    const cross = [0, 1, 2].map((i) => (v[(i + 1) % 3] as number) * (longest[(i + 2) % 3] as number) - (v[(i + 2) % 3] as number) * (longest[(i + 1) % 3] as number));
+    const cross = [0, 1, 2].map(
+      (i) =>
+        (v[(i + 1) % 3] as number) * (longest[(i + 2) % 3] as number) -
+        (v[(i + 2) % 3] as number) * (longest[(i + 1) % 3] as number),
+    );
     return sumOfSquares(cross) <= limit;
   });
 }

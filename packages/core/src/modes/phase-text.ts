@@ -52,5 +52,8 @@ function inComponents(k: WaveVector, phase: Phase): LinearForm {
     coefficients[axis] = add(coefficients[axis] as Rational, factor);
     constant = add(constant, negate(multiply(factor, component.constant)));
   }
-  return { constant, coefficients: vectorOf(coefficients[0] ?? zero, coefficients[1] ?? zero, coefficients[2] ?? zero) };
+  return {
+    constant,
+    coefficients: vectorOf(coefficients[0] ?? zero, coefficients[1] ?? zero, coefficients[2] ?? zero),
+  };
 }

@@ -1,7 +1,7 @@
-import type { WaveVector } from "../kvectors/index.js";
-import { lcm, type LinearForm, modulo, overCommonDenominator, rational, safe } from "../numbers/index.js";
-import { fromPrimitiveColumn, type SiteOrbit, type SpaceGroup, toPrimitiveColumn } from "../spacegroups/index.js";
 import { waveTimesColumn } from "../irreps/index.js";
+import type { WaveVector } from "../kvectors/index.js";
+import { type LinearForm, lcm, modulo, overCommonDenominator, rational, safe } from "../numbers/index.js";
+import { fromPrimitiveColumn, type SiteOrbit, type SpaceGroup, toPrimitiveColumn } from "../spacegroups/index.js";
 
 /** How one operator of the little group moves the atoms: `g r_j = r_{image[j]} + a_j`, `phase[j] = k·a_j` in turns. */
 export interface OperatorAction {
@@ -10,15 +10,26 @@ export interface OperatorAction {
 }
 
 /** The action of the given operators (by index) on the atoms of an orbit, exact. */
-export function siteAction(group: SpaceGroup, k: WaveVector, orbit: SiteOrbit, operators: readonly number[]): OperatorAction[] {
+export function siteAction(
+  group: SpaceGroup,
+  k: WaveVector,
+  orbit: SiteOrbit,
+  operators: readonly number[],
+): OperatorAction[] {
   const { rotations, translations, denominator: translationDenominator } = group.primitive;
-  const primitive = orbit.positions.map((position) => overCommonDenominator(toPrimitiveColumn(group.lattice, position)));
+  const primitive = orbit.positions.map((position) =>
+    overCommonDenominator(toPrimitiveColumn(group.lattice, position)),
+  );
   const denominator = primitive.reduce((common, entry) => lcm(common, entry.denominator), translationDenominator);
-  const atoms = primitive.map((entry) => entry.numerators.map((value) => safe(value * (denominator / entry.denominator))));
+  const atoms = primitive.map((entry) =>
+    entry.numerators.map((value) => safe(value * (denominator / entry.denominator))),
+  );
   const indexOf = new Map(atoms.map((atom, index) => [classKey(atom, denominator), index]));
   return operators.map((operator) => {
     const rotation = rotations[operator] as readonly number[];
-    const translation = (translations[operator] as readonly number[]).map((entry) => entry * (denominator / translationDenominator));
+    const translation = (translations[operator] as readonly number[]).map(
+      (entry) => entry * (denominator / translationDenominator),
+    );
     const image: number[] = [];
     const phase: LinearForm[] = [];
     for (const atom of atoms) {
@@ -34,7 +45,12 @@ export function siteAction(group: SpaceGroup, k: WaveVector, orbit: SiteOrbit, o
       if (target === undefined) throw new Error("an operator moves an atom off its orbit");
       const shift = moved.map((entry, axis) => rational((entry - (atoms[target]?.[axis] as number)) / denominator));
       image.push(target);
-      phase.push(waveTimesColumn(k, fromPrimitiveColumn(group.lattice, [shift[0] ?? [0, 1], shift[1] ?? [0, 1], shift[2] ?? [0, 1]])));
+      phase.push(
+        waveTimesColumn(
+          k,
+          fromPrimitiveColumn(group.lattice, [shift[0] ?? [0, 1], shift[1] ?? [0, 1], shift[2] ?? [0, 1]]),
+        ),
+      );
     }
     return { image, phase };
   });

@@ -6,8 +6,8 @@ import {
   type CyclotomicMatrix,
   cyclotomicNumbers,
   cyclotomicZero,
-  isCyclotomicZero,
   integerDeterminant,
+  isCyclotomicZero,
   matrixFrom,
   multiplyCyclotomicMatrices,
   type Phase,
@@ -53,9 +53,13 @@ export function siteModes(
   const real = isHalfLattice(group, irreps.k);
   const plain = irreps.irreps.map((irrep) => {
     const copies = parts.flatMap((atoms, suborbit) =>
-      copiesOnSuborbit(irrep, irreps.phases, momentOperators(atoms[0] as number), atoms[0] as number, orbit.positions.length).map(
-        (copy) => ({ ...copy, suborbit }),
-      ),
+      copiesOnSuborbit(
+        irrep,
+        irreps.phases,
+        momentOperators(atoms[0] as number),
+        atoms[0] as number,
+        orbit.positions.length,
+      ).map((copy) => ({ ...copy, suborbit })),
     );
     copies.sort((a, b) => a.pivot - b.pivot);
     return { irrep, modes: copies.flatMap((copy, number) => modesOfCopy(copy, number + 1)) };
@@ -75,7 +79,10 @@ export function siteModes(
     representations: irreps,
     irreps: plain.map(({ irrep, modes }, number) => {
       const partner = plain.find((other) => other.irrep.label === irrep.conjugateOf);
-      return { ...describe(irrep, modes, real, real && partner ? partner.modes : [], irreps), minusK: onModes(irrep, modes, number) };
+      return {
+        ...describe(irrep, modes, real, real && partner ? partner.modes : [], irreps),
+        minusK: onModes(irrep, modes, number),
+      };
     }),
   };
 }
@@ -118,12 +125,19 @@ function copiesOnSuborbit(
   const stabilizer = operators.filter((operator) => operator.image === first);
   const basis = siteIntertwiners(irrep, phases, stabilizer);
   if (basis.length === 0) return [];
-  const carriers = Array.from({ length: atoms }, (_, atom) => operators.find((operator) => operator.image === atom) ?? null);
-  const rows = basis.map((start) => carriers.map((carrier) => (carrier === null ? null : carried(irrep, carrier, start))));
+  const carriers = Array.from(
+    { length: atoms },
+    (_, atom) => operators.find((operator) => operator.image === atom) ?? null,
+  );
+  const rows = basis.map((start) =>
+    carriers.map((carrier) => (carrier === null ? null : carried(irrep, carrier, start))),
+  );
   const { dimension } = irrep;
   const flat = rows.map((blocks) =>
     Array.from({ length: dimension }, (_, partner) =>
-      blocks.flatMap((block) => [0, 1, 2].map((axis) => (block === null ? cyclotomicZero : (block[axis]?.[partner] as Cyclotomic)))),
+      blocks.flatMap((block) =>
+        [0, 1, 2].map((axis) => (block === null ? cyclotomicZero : (block[axis]?.[partner] as Cyclotomic))),
+      ),
     ).flat(),
   );
   const { rows: reduced, pivots } = reducedEchelon(flat, cyclotomicNumbers);
@@ -141,7 +155,9 @@ function copiesOnSuborbit(
           : {
               phase: reducePhase(subtractForms(subtractForms(carrier.phase, phases[carrier.element] as Phase), zeroOf)),
               block: [0, 1, 2].map((axis) =>
-                Array.from({ length: dimension }, (_, partner) => reduceOrder(row[partner * width + 3 * atom + axis] as Cyclotomic)),
+                Array.from({ length: dimension }, (_, partner) =>
+                  reduceOrder(row[partner * width + 3 * atom + axis] as Cyclotomic),
+                ),
               ),
             },
       ),
@@ -165,7 +181,11 @@ function modesOfCopy(copy: Copy & { readonly suborbit: number }, number: number)
     suborbit: copy.suborbit,
     moments: copy.blocks.map(({ phase, block }): ModeMoment => {
       if (block === null) return zeroMoment;
-      const vector = [0, 1, 2].map((axis) => block[axis]?.[partner] as Cyclotomic) as [Cyclotomic, Cyclotomic, Cyclotomic];
+      const vector = [0, 1, 2].map((axis) => block[axis]?.[partner] as Cyclotomic) as [
+        Cyclotomic,
+        Cyclotomic,
+        Cyclotomic,
+      ];
       return vector.every(isCyclotomicZero) ? zeroMoment : { phase, vector };
     }),
   }));

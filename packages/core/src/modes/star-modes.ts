@@ -29,7 +29,10 @@ export function starModes(group: SpaceGroup, modes: SiteModes): readonly ArmMode
     const carry = (moments: readonly ModeMoment[]): ModeMoment[] => {
       const carried = [...moments];
       moments.forEach((moment, atom) => {
-        const rotated = multiplyCyclotomicMatrices(matrix, moment.vector.map((entry) => [entry]));
+        const rotated = multiplyCyclotomicMatrices(
+          matrix,
+          moment.vector.map((entry) => [entry]),
+        );
         carried[action?.image[atom] as number] = {
           phase: reducePhase(addForms(moment.phase, action?.phase[atom] as ModeMoment["phase"])),
           vector: rotated.map((row) => row[0]) as unknown as ModeMoment["vector"],

@@ -26,7 +26,9 @@ export function cyclotomicField(order: number): CyclotomicField {
     // ζ·current, with ζ^degree replaced by −(lower terms of the polynomial).
     const lead = current[degree - 1] as number;
     const before = current;
-    current = before.map((_, index) => (index === 0 ? 0 : (before[index - 1] as number)) - lead * (polynomial[index] as number) + 0);
+    current = before.map(
+      (_, index) => (index === 0 ? 0 : (before[index - 1] as number)) - lead * (polynomial[index] as number) + 0,
+    );
   }
   const field = { order, degree, powers };
   fields.set(order, field);
@@ -35,7 +37,9 @@ export function cyclotomicField(order: number): CyclotomicField {
 
 /** Φ_N, coefficients from the constant term up: (x^N − 1) divided by Φ_d of all proper divisors d. */
 function cyclotomicPolynomial(order: number): number[] {
-  let dividend: number[] = Array.from({ length: order + 1 }, (_, index) => (index === 0 ? -1 : index === order ? 1 : 0));
+  let dividend: number[] = Array.from({ length: order + 1 }, (_, index) =>
+    index === 0 ? -1 : index === order ? 1 : 0,
+  );
   for (let divisor = 1; divisor < order; divisor++)
     if (order % divisor === 0) dividend = divideMonic(dividend, cyclotomicPolynomial(divisor));
   return dividend;

@@ -37,7 +37,9 @@ export function scaleCyclotomicMatrix(factor: Cyclotomic, matrix: CyclotomicMatr
 }
 
 export function addCyclotomicMatrices(a: CyclotomicMatrix, b: CyclotomicMatrix): CyclotomicMatrix {
-  return a.map((row, index) => row.map((entry, column) => addCyclotomic(entry, (b[index] as readonly Cyclotomic[])[column] as Cyclotomic)));
+  return a.map((row, index) =>
+    row.map((entry, column) => addCyclotomic(entry, (b[index] as readonly Cyclotomic[])[column] as Cyclotomic)),
+  );
 }
 
 /** Conjugate transpose; the inverse of a unitary matrix. */

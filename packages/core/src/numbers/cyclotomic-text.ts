@@ -1,9 +1,9 @@
 import {
   type Cyclotomic,
+  conjugateCyclotomic,
   cyclotomicFromRational,
   cyclotomicOne,
   cyclotomicToRational,
-  conjugateCyclotomic,
   equalCyclotomic,
   invertCyclotomic,
   isCyclotomicZero,
@@ -42,12 +42,15 @@ function formatPolar(value: Cyclotomic): string | null {
   if (squared === null) return null;
   // √(p/q) = √(pq)/q keeps the denominator rational.
   const radicand = squared[0] * squared[1];
-  const root = reduceOrder(multiplyCyclotomic(value, invertCyclotomic(scaled(squareRootOf(radicand), rational(1, squared[1])))));
+  const root = reduceOrder(
+    multiplyCyclotomic(value, invertCyclotomic(scaled(squareRootOf(radicand), rational(1, squared[1])))),
+  );
   const turns = rootTurns(root);
   if (turns === null) return null;
   const { inside, outside } = splitSquare(radicand);
   const factor = divide([outside, 1], [squared[1], 1]);
-  const head = inside === 1 ? (factor[0] === 1 ? "" : String(factor[0])) : `${factor[0] === 1 ? "" : factor[0]}√${inside}`;
+  const head =
+    inside === 1 ? (factor[0] === 1 ? "" : String(factor[0])) : `${factor[0] === 1 ? "" : factor[0]}√${inside}`;
   const tail = factor[1] === 1 ? "" : `/${factor[1]}`;
   const phase = formatTurns(turns);
   if (phase === "1") return `${head === "" ? "1" : head}${tail}`;

@@ -1,6 +1,6 @@
 import { fail } from "../errors/index.js";
-import type { Field } from "./echelon.js";
 import { cyclotomicField, unitsModulo } from "./cyclotomic-field.js";
+import type { Field } from "./echelon.js";
 import { gcd, lcm, modulo, safe } from "./integers.js";
 import { type Rational, rational } from "./rationals.js";
 
@@ -36,7 +36,8 @@ export function isCyclotomicZero(a: Cyclotomic): boolean {
 /** Lowest terms. */
 function normalized(order: number, coefficients: number[], denominator: number): Cyclotomic {
   let divisor = denominator;
-  for (let index = 0; index < coefficients.length && divisor !== 1; index++) divisor = gcd(divisor, coefficients[index] as number);
+  for (let index = 0; index < coefficients.length && divisor !== 1; index++)
+    divisor = gcd(divisor, coefficients[index] as number);
   for (let index = 0; index < coefficients.length; index++)
     coefficients[index] = safe(coefficients[index] as number) / divisor + 0;
   return { order, coefficients, denominator: safe(denominator) / divisor };
@@ -169,11 +170,16 @@ export function reduceOrder(a: Cyclotomic): Cyclotomic {
  */
 function inSubfield(a: Cyclotomic, order: number): Cyclotomic | null {
   const residues = unitsModulo(a.order).filter((residue) => modulo(residue, order) === modulo(1, order));
-  if (residues.some((residue) => galois(a, residue).coefficients.some((entry, index) => entry !== a.coefficients[index])))
+  if (
+    residues.some((residue) => galois(a, residue).coefficients.some((entry, index) => entry !== a.coefficients[index]))
+  )
     return null;
   const step = a.order / order;
   const { degree } = cyclotomicField(order);
-  const columns = Array.from({ length: degree }, (_, exponent) => cyclotomicField(a.order).powers[exponent * step] as number[]);
+  const columns = Array.from(
+    { length: degree },
+    (_, exponent) => cyclotomicField(a.order).powers[exponent * step] as number[],
+  );
   return solveIntegerSystem(a, order, columns);
 }
 

@@ -49,13 +49,7 @@ export function reducedEchelon<T>(rows: readonly (readonly T[])[], field: Field<
  * A basis of `{x : rows · x = 0}` from the reduced echelon form, one vector per free column with a 1 there.
  * `zero` and `one` are the field's.
  */
-export function nullSpace<T>(
-  rows: readonly (readonly T[])[],
-  width: number,
-  field: Field<T>,
-  zero: T,
-  one: T,
-): T[][] {
+export function nullSpace<T>(rows: readonly (readonly T[])[], width: number, field: Field<T>, zero: T, one: T): T[][] {
   const { rows: reduced, pivots } = reducedEchelon(rows, field);
   const basis: T[][] = [];
   for (let free = 0; free < width; free++) {

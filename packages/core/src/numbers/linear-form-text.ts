@@ -1,5 +1,13 @@
 import { fail } from "../errors/index.js";
-import { addForms, constantForm, type LinearForm, scaleForm, type VariableNames, variableForm, zeroForm } from "./linear-forms.js";
+import {
+  addForms,
+  constantForm,
+  type LinearForm,
+  scaleForm,
+  type VariableNames,
+  variableForm,
+  zeroForm,
+} from "./linear-forms.js";
 import { divide, multiply, one, parseRational, type Rational } from "./rationals.js";
 
 /**
@@ -86,11 +94,15 @@ function readNumber(reader: Reader): Rational | null {
 
 function refuse(reader: Reader, column: number, expected: string): never {
   const found = reader.text[reader.position];
-  fail("syntax", `cannot read \`${reader.text}\`: ${found === undefined ? "it ends too early" : `unexpected \`${found}\``}`, {
-    where: { column: column + reader.position },
-    expected,
-    found: found ?? "end of the text",
-  });
+  fail(
+    "syntax",
+    `cannot read \`${reader.text}\`: ${found === undefined ? "it ends too early" : `unexpected \`${found}\``}`,
+    {
+      where: { column: column + reader.position },
+      expected,
+      found: found ?? "end of the text",
+    },
+  );
 }
 
 /** Splits at commas that separate the three components of a triplet, k or position; throws `syntax` unless three. */
@@ -110,4 +122,3 @@ export function parseThreeForms(text: string, names: VariableNames, column = 1):
   });
   return forms as [LinearForm, LinearForm, LinearForm];
 }
-

@@ -1,6 +1,17 @@
-import { add, equal, formatRational, isZero, multiply, negate, one, type Rational, subtract, zero } from "./rationals.js";
 import type { RationalVector } from "./matrices.js";
 import { dot, mapVector, zeroVector } from "./matrices.js";
+import {
+  add,
+  equal,
+  formatRational,
+  isZero,
+  multiply,
+  negate,
+  one,
+  type Rational,
+  subtract,
+  zero,
+} from "./rationals.js";
 
 /**
  * An exact linear form in three named variables, `constant + c₁·x + c₂·y + c₃·z`. The names (x y z of a coordinate,
@@ -43,7 +54,8 @@ export function subtractForms(a: LinearForm, b: LinearForm): LinearForm {
 
 export function equalForms(a: LinearForm, b: LinearForm): boolean {
   return (
-    equal(a.constant, b.constant) && a.coefficients.every((entry, index) => equal(entry, b.coefficients[index] as Rational))
+    equal(a.constant, b.constant) &&
+    a.coefficients.every((entry, index) => equal(entry, b.coefficients[index] as Rational))
   );
 }
 

@@ -23,7 +23,10 @@ export function vectorOf(first: Rational, second: Rational, third: Rational): Ra
   return [first, second, third];
 }
 
-export function mapVector(vector: RationalVector, change: (entry: Rational, index: number) => Rational): RationalVector {
+export function mapVector(
+  vector: RationalVector,
+  change: (entry: Rational, index: number) => Rational,
+): RationalVector {
   return [change(vector[0], 0), change(vector[1], 1), change(vector[2], 2)];
 }
 
@@ -132,9 +135,15 @@ export function invertUnimodular(m: IntegerMatrix): number[] {
   if (det !== 1 && det !== -1) fail("singular-basis", `an integer matrix of determinant ${det} has no integer inverse`);
   const [a, b, c, d, e, f, g, h, i] = m as [number, number, number, number, number, number, number, number, number];
   return [
-    e * i - f * h, c * h - b * i, b * f - c * e,
-    f * g - d * i, a * i - c * g, c * d - a * f,
-    d * h - e * g, b * g - a * h, a * e - b * d,
+    e * i - f * h,
+    c * h - b * i,
+    b * f - c * e,
+    f * g - d * i,
+    a * i - c * g,
+    c * d - a * f,
+    d * h - e * g,
+    b * g - a * h,
+    a * e - b * d,
   ].map((entry) => entry * det + 0);
 }
 

@@ -1,3 +1,4 @@
+import { formatCyclotomic } from "./cyclotomic-text.js";
 import {
   type Cyclotomic,
   conjugateCyclotomic,
@@ -7,9 +8,16 @@ import {
   rootOfUnity,
   unitComplex,
 } from "./cyclotomics.js";
-import { formatCyclotomic } from "./cyclotomic-text.js";
 import { modulo } from "./integers.js";
-import { addForms, constantForm, formatForm, isConstantForm, type LinearForm, negateForm, parameterNames } from "./linear-forms.js";
+import {
+  addForms,
+  constantForm,
+  formatForm,
+  isConstantForm,
+  type LinearForm,
+  negateForm,
+  parameterNames,
+} from "./linear-forms.js";
 import { formatRational, fractionalPart, isZero, type Rational } from "./rationals.js";
 
 /** An exact phase: a linear form in u, v, w, in turns. Its number is e^{2πi·form}. */
@@ -76,7 +84,12 @@ export function formatPhased(a: PhasedNumber): string {
   if (phaseText === "1") return factorText;
   if (factorText === "1") return phaseText;
   if (factorText === "-1") return `-${phaseText}`;
-  const needsBrackets = /[+-]/.test(factorText.replaceAll(/\{[^}]*\}/g, "").replaceAll(/\([^)]*\)/g, "").slice(1));
+  const needsBrackets = /[+-]/.test(
+    factorText
+      .replaceAll(/\{[^}]*\}/g, "")
+      .replaceAll(/\([^)]*\)/g, "")
+      .slice(1),
+  );
   return `${needsBrackets ? `(${factorText})` : factorText}·${phaseText}`;
 }
 
@@ -96,4 +109,3 @@ export function exponentialText(turns: string): string {
 export function phaseOf(turns: Rational): Phase {
   return constantForm(turns);
 }
-

@@ -11,12 +11,15 @@ export const one: Rational = [1, 1];
 export function rational(numerator: number, denominator = 1): Rational {
   if (denominator === 0) fail("invalid-number", "a fraction has the denominator 0");
   safe(numerator);
+  if (denominator === 1) return [numerator + 0, 1];
   safe(denominator);
   const divisor = gcd(numerator, denominator) * (denominator < 0 ? -1 : 1);
   return [numerator / divisor + 0, denominator / divisor];
 }
 
 export function add(a: Rational, b: Rational): Rational {
+  if (a[0] === 0) return b;
+  if (b[0] === 0) return a;
   if (a[1] === b[1]) return rational(safe(a[0] + b[0]), a[1]);
   const divisor = gcd(a[1], b[1]);
   const left = safe(a[0] * (b[1] / divisor));
@@ -29,13 +32,15 @@ export function negate(a: Rational): Rational {
 }
 
 export function subtract(a: Rational, b: Rational): Rational {
-  return add(a, negate(b));
+  return b[0] === 0 ? a : add(a, negate(b));
 }
 
 export function multiply(a: Rational, b: Rational): Rational {
+  if (a[0] === 0 || b[0] === 0) return zero;
+  if (a[1] === 1 && b[1] === 1) return [safe(a[0] * b[0]), 1];
   // Crossing out first keeps the products as small as the result allows.
-  const first = gcd(a[0], b[1]) || 1;
-  const second = gcd(b[0], a[1]) || 1;
+  const first = gcd(a[0], b[1]);
+  const second = gcd(b[0], a[1]);
   return rational(safe((a[0] / first) * (b[0] / second)), safe((a[1] / second) * (b[1] / first)));
 }
 

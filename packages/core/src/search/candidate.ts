@@ -13,7 +13,7 @@ import { evidenceOf } from "./evidence.js";
 import type { Explanation, PeakModel } from "./explanation.js";
 import { nearFractions } from "./near-fractions.js";
 import { type Refined, refineWaveVector } from "./refine.js";
-import { tunedSet } from "./tuned-set.js";
+import { type TunedSet, tunedSet } from "./tuned-set.js";
 import { tuningCharge } from "./tuning-charge.js";
 import type { Candidate, EvidenceCharges, ResidualStatistics } from "./types.js";
 
@@ -26,36 +26,66 @@ export interface Weighed {
   readonly explanation: Explanation;
 }
 
+/** Weighs one k after another; `charges` are those of the search, null for a k that was given. */
+export type Weigher = (start: WaveVector, charges: SearchCharges | null) => Weighed;
+
 /**
- * Refines a k, weighs it against the peaks and describes it. `charges` are those of the search; null for a k that was
- * given: then a special point is charged like the search over the points, so that both give one value, and any other k
- * nothing but the tuning of its letters.
+ * Refines k, weighs it against the peaks and describes it. Of a k that was given, a special point is charged like the
+ * search over the points, so that both give one value, and any other k nothing but the tuning of its letters. What
+ * depends on the kind of k alone is worked out once for all k with the same `components` record.
  */
-export function weigh(group: SpaceGroup, model: PeakModel, start: WaveVector, charges: SearchCharges | null): Weighed {
-  const refined = refineWaveVector(model, start);
-  const { k, explanation, refinement } = refined;
-  const kind = manifold(group, k, { withInversion: true });
-  const tuning = tuningOf(group, model, refined);
-  const residuals = statisticsOf(explanation, refinement?.determined ? (k.values ?? []).length : 0);
-  const candidate: Candidate = {
-    k,
-    manifold: kind,
-    arms: star(group, k).arms.length,
-    onNuclearLines: isNuclear(group, k),
-    evidence: evidenceOf(explanation.logOdds, { ...(charges ?? chargesOfGiven(group, kind.dimension)), tuning }),
-    matched: explanation.assignments.length,
-    total: model.total,
-    deWolff: explanation.deWolff,
-    smithSnyder: explanation.smithSnyder,
-    nearFractions: nearFractions(k),
-    tiedWith: [],
-    assignments: explanation.assignments,
-    unmatched: explanation.unmatched,
-    residuals,
-    refinement,
-    warnings: warningsOf(refined, residuals),
+export function weigher(group: SpaceGroup, model: PeakModel): Weigher {
+  const kinds = new WeakMap<WaveVector["components"], { arms: number; onNuclearLines: boolean }>();
+  const kindOf = (k: WaveVector) => {
+    const known = kinds.get(k.components);
+    if (known !== undefined) return known;
+    const made = {
+      arms: star(group, k).arms.length,
+      onNuclearLines: isNuclear(group, k),
+    };
+    kinds.set(k.components, made);
+    return made;
   };
-  return { candidate, explanation };
+  return (start, charges) => {
+    const refined = refineWaveVector(model, start);
+    const { k, explanation, refinement, corrections } = refined;
+    const kind = kindOf(k);
+    const flat = manifold(group, k, { withInversion: true });
+    const tuning = tuningOf(group, model, refined);
+    const letters = refinement?.determined ? (k.values ?? []).length : 0;
+    const residuals = statisticsOf(explanation, letters + corrections.length);
+    const candidate: Candidate = {
+      k,
+      manifold: flat,
+      arms: kind.arms,
+      onNuclearLines: kind.onNuclearLines,
+      evidence: evidenceOf(explanation.logOdds, {
+        ...(charges ?? chargesOfGiven(group, flat.dimension)),
+        tuning,
+      }),
+      matched: explanation.assignments.length,
+      total: model.total,
+      deWolff: explanation.deWolff,
+      smithSnyder: explanation.smithSnyder,
+      nearFractions: nearFractions(k),
+      tiedWith: [],
+      assignments: explanation.assignments,
+      unmatched: explanation.unmatched,
+      residuals,
+      refinement,
+      corrections,
+      region: null,
+      merged: [],
+      separations: [],
+      warnings: warningsOf(refined, residuals),
+    };
+    return { candidate, explanation };
+  };
+}
+
+/** One k on its own. */
+export function weigh(group: SpaceGroup, model: PeakModel, start: WaveVector, charges: SearchCharges | null): Weighed {
+  return weigher(group, model)(start, charges);
 }
 
 function chargesOfGiven(group: SpaceGroup, dimension: number): SearchCharges {
@@ -67,11 +97,24 @@ function isNuclear(group: SpaceGroup, k: WaveVector): boolean {
   return components !== null && isReciprocalLatticeVector(group, components);
 }
 
-function tuningOf(group: SpaceGroup, model: PeakModel, { k, explanation, refinement }: Refined): number {
-  if (!refinement?.determined) return 0;
-  const { jacobian } = model.equations(k, explanation.assignments, Float64Array.from(k.values ?? []));
-  return tuningCharge(tunedSet(group, k, model.metric, 2 * model.tolerance), jacobian);
+function tuningOf(
+  group: SpaceGroup,
+  model: PeakModel,
+  { k, explanation, refinement, corrections }: Refined,
+): number {
+  if (refinement === null ? corrections.length === 0 : !refinement.determined) return 0;
+  const values = [...(k.values ?? []), ...corrections.map(({ value }) => value)];
+  const { jacobian } = model.equations(k, explanation.assignments, Float64Array.from(values));
+  const set = refinement === null ? isolated : tunedSet(group, k, model.metric, 2 * model.tolerance);
+  return tuningCharge(
+    set,
+    jacobian,
+    corrections.map(({ limit }) => 2 * limit),
+  );
 }
+
+/** A special point: nothing to tune. */
+const isolated: TunedSet = { dimension: 0, gram: new Float64Array(0), volume: 1, coincidentImages: 1 };
 
 function statisticsOf(explanation: Explanation, refinedParameters: number): ResidualStatistics {
   const degreesOfFreedom = explanation.observations - refinedParameters;

@@ -1,10 +1,11 @@
 import { usedParameters } from "../kvectors/index.js";
 import { roundNumber, toNumber } from "../numbers/index.js";
-import { averagedReciprocalMetric } from "../reflections/index.js";
+import { averagedReciprocalMetric, reciprocalFrame } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { latticeDensity, latticeRounding, type SignedArm, signedArms, type Triple } from "./crystal-arms.js";
 import { crystalLogOdds } from "./evidence.js";
 import type { Explanation, PeakModel } from "./explanation.js";
+import { solveCrystal } from "./solve-crystal.js";
 import type { Assignment } from "./types.js";
 import type { CrystalPeak } from "./used-peaks.js";
 
@@ -23,15 +24,21 @@ export function crystalModel(group: SpaceGroup, cell: Cell, peaks: readonly Crys
   };
   const sorted = peaks.map((peak) => peak.halfWidth).sort((a, b) => a - b);
   const tolerance = sorted[sorted.length >> 1] as number;
+  const primitiveMetric = reciprocalFrame(group, cell).metric.map((entry) => 4 * Math.PI * Math.PI * entry);
+  // |Δ| ≤ Σ |Δ_i| |a*_i|: the cube of the tolerance lies in that ball, and balls stay balls when turned.
+  const edges = [0, 4, 8].reduce((sum, index) => sum + 2 * Math.PI * Math.sqrt(metric[index] as number), 0);
+  const targets = peaks.map(({ hkl, halfWidth }) => ({ hkl, reach: halfWidth * edges }));
   return {
     total: peaks.length,
     tolerance,
     metric: unitMetric,
+    corrections: [],
     explain: (k) => explainCrystal(signedArms(group, k), peaks, space),
     equations: (k, assignments, values) =>
       crystalEquations(signedArms(group, { ...k, values: [...values] }), usedParameters(k), assignments, peaks),
     samePositions: ({ predicted: a }, { predicted: b }) =>
       covers(a, b, space, tolerance) && covers(b, a, space, tolerance),
+    solve: async (form, budget) => solveCrystal(group, form, targets, primitiveMetric, budget),
   };
 }
 

@@ -1,6 +1,6 @@
-import type { WeightedResiduals } from "../algorithms/index.js";
+import type { WeightedResiduals, WorkHost } from "../algorithms/index.js";
 import type { WaveVector } from "../kvectors/index.js";
-import type { Assignment } from "./types.js";
+import type { Assignment, Correction, Region } from "./types.js";
 
 /** What a k makes of the peaks. */
 export interface Explanation {
@@ -20,6 +20,42 @@ export interface Explanation {
   readonly smithSnyder: number | null;
 }
 
+/** A quantity that is refined with k, from −limit to limit. */
+export interface CorrectionLimit {
+  readonly name: Correction["name"];
+  readonly limit: number;
+}
+
+/** A k that branch and bound came to. */
+export interface Solution {
+  readonly k: WaveVector;
+  /** Most peaks that some k beside it matches, corrections free within their limits. */
+  readonly matched: number;
+  /** Index among the regions of the kind. */
+  readonly region: number;
+}
+
+/** What the search of one kind of k gives. */
+export interface KindFindings {
+  readonly solutions: readonly Solution[];
+  readonly regions: readonly Region[];
+  readonly boxes: number;
+  /** Å⁻¹ (r.l.u. for h k l): half-diagonal of the smallest box. */
+  readonly smallestBox: number;
+  readonly leaves: number;
+  readonly unexplored: number;
+  readonly stopped: "boxes" | "leaves" | null;
+  /** Whether `solutions` holds every distinct one. */
+  readonly complete: boolean;
+}
+
+/** How far the search of a kind may go. */
+export interface KindBudget {
+  /** Peaks that must match. */
+  readonly wanted: number;
+  readonly boxes: number;
+}
+
 /**
  * How peaks of one sort (powder positions, or fractional h k l) speak about k. The rest of the room works through it
  * and does not ask which sort it is.
@@ -30,9 +66,18 @@ export interface PeakModel {
   readonly tolerance: number;
   /** Metric (nine numbers) in a*, b*, c* of the space where k is measured: Å⁻² with 4π², or 1 for h k l. */
   readonly metric: readonly number[];
-  explain(k: WaveVector): Explanation;
-  /** The matched peaks as equations for the values of the letters of `k`, at given values. */
+  readonly corrections: readonly CorrectionLimit[];
+  /**
+   * @param corrections values of the corrections; all zero when left out
+   * @param widened take a peak as matched wherever some values of the corrections within their limits would match it
+   */
+  explain(k: WaveVector, corrections?: readonly number[], widened?: boolean): Explanation;
+  /**
+   * The matched peaks as equations for the values of the letters of `k` and then of the corrections, at given values.
+   */
   equations(k: WaveVector, assignments: readonly Assignment[], values: Float64Array): WeightedResiduals;
   /** Whether two k predict the same positions within the tolerance, over the range of the peaks. */
   samePositions(a: Explanation, b: Explanation): boolean;
+  /** Every part of a kind of k (its form with open letters) where at least `wanted` peaks may match. */
+  solve(form: WaveVector, budget: KindBudget, host: WorkHost): Promise<KindFindings>;
 }

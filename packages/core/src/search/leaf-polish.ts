@@ -1,4 +1,3 @@
-import { choleskyFactor, choleskySolve } from "../algorithms/index.js";
 import type { SurvivingPairs } from "./pair-filter.js";
 import type { PairTable } from "./peak-pairs.js";
 
@@ -11,59 +10,6 @@ export interface PolishedPoint {
   readonly score: number;
 }
 
-const rounds = 6;
-
-/** Share of the curvature added so that a direction which no peak fixes stays where it is. */
-const ridge = 1e-6;
-
-/**
- * A point near the middle of a leaf where enough peaks match. First least squares, each peak with the nearest of its
- * surviving H. Where that leaves a peak just outside its interval, its weight is raised; where that does not help either,
- * the worst peak is dropped and all begins anew. The middle itself is tried last.
- */
-export function polishLeaf(
-  table: PairTable,
-  pairs: SurvivingPairs,
-  centre: Float64Array,
-  settings: PolishSettings,
-): PolishedPoint {
-  const weights = new Float64Array(table.peaks.length).fill(1);
-  let best: PolishedPoint | null = null;
-  for (let dropped = 0; dropped <= settings.drops; dropped++) {
-    let worst = -1;
-    for (let raised = 0; raised <= mostRaises; raised++) {
-      const t = settle(table, pairs, centre, weights);
-      const point = judge(table, pairs, t, weights, settings);
-      if (best === null || point.matched > best.matched) best = { t, ...point };
-      if (best.matched >= settings.wanted) return best;
-      if (raised === 0) worst = point.worst;
-      if (point.worst < 0) break;
-      for (const index of point.outside) weights[index] = (weights[index] as number) * raise;
-    }
-    if (worst < 0) break;
-    weights.forEach((weight, index) => {
-      weights[index] = weight === 0 || index === worst ? 0 : 1;
-    });
-  }
-  const middle = judgePoint(table, pairs, centre, settings);
-  return best === null || middle.matched > best.matched ? middle : best;
-}
-
-/** The middle of a box as it is. */
-export function judgePoint(
-  table: PairTable,
-  pairs: SurvivingPairs,
-  centre: Float64Array,
-  settings: PolishSettings,
-): PolishedPoint {
-  const { matched, score } = judge(table, pairs, centre, null, settings);
-  return { t: centre.slice(), matched, score };
-}
-
-/** How often the weights of peaks outside their intervals are raised, and by which factor. */
-const mostRaises = 2;
-const raise = 4;
-
 export interface PolishSettings {
   /** Peaks that must match. */
   readonly wanted: number;
@@ -74,66 +20,107 @@ export interface PolishSettings {
   readonly strayShare: number;
 }
 
-function settle(
-  table: PairTable,
-  pairs: SurvivingPairs,
-  centre: Float64Array,
-  weights: Float64Array,
-): Float64Array {
-  const dimension = centre.length;
-  const t = centre.slice();
-  const normal = new Float64Array(dimension * dimension);
-  const gradient = new Float64Array(dimension);
-  for (let round = 0; round < rounds; round++) {
-    normal.fill(0);
-    gradient.fill(0);
-    table.peaks.forEach((peak, index) => {
-      const weight = weights[index] as number;
-      const vector = weight === 0 ? -1 : nearestVector(table, pairs, index, t);
-      if (vector >= 0) addEquation(table.vectors, vector, t, peak.q, weight / peak.uncertainty ** 2, normal, gradient);
-    });
-    let trace = 0;
-    for (let a = 0; a < dimension; a++) trace += normal[a * dimension + a] as number;
-    for (let a = 0; a < dimension; a++)
-      normal[a * dimension + a] = (normal[a * dimension + a] as number) + ridge * trace + Number.MIN_VALUE;
-    const factor = choleskyFactor(normal, dimension, 0);
-    if (factor === null) break;
-    const step = choleskySolve(factor, gradient);
-    let length = 0;
-    for (let a = 0; a < dimension; a++) {
-      t[a] = (t[a] as number) + (step[a] as number);
-      length += (step[a] as number) ** 2;
-    }
-    if (length < 1e-20) break;
-  }
-  return t;
+export interface LeafPolisher {
+  /** A point near the middle of a leaf where enough peaks match, or the best that was met. */
+  readonly polish: (pairs: SurvivingPairs, centre: Float64Array) => PolishedPoint;
+  /** The middle of a box as it is. */
+  readonly judge: (pairs: SurvivingPairs, centre: Float64Array) => PolishedPoint;
 }
 
-function judge(
+const mostRounds = 6;
+
+/** Share of the smallest uncertainty: a step below it is small enough here, since candidates are refined again. */
+const stepShare = 0.01;
+
+/** Share of the curvature added so that a direction which no peak fixes stays where it is. */
+const ridge = 1e-6;
+
+/** How often the weights of peaks outside their intervals are raised, and by which factor. */
+const mostRaises = 2;
+const raise = 4;
+
+/** Å⁻¹. A computed position this little outside the interval is on its end. */
+const roundingOfQ = 1e-10;
+
+/**
+ * First least squares, each peak with the nearest of its surviving H. Where that leaves a peak just outside its interval,
+ * its weight is raised; where that does not help either, the worst peak is dropped and all begins anew. The middle itself
+ * is tried last. Working arrays are made once for a kind.
+ */
+export function leafPolisher(table: PairTable, dimension: number, settings: PolishSettings): LeafPolisher {
+  const count = table.peaks.length;
+  const steps = stepOf(table, dimension);
+  const weights = new Float64Array(count);
+  const state = { matched: 0, score: 0, worst: -1, outside: new Uint8Array(count) };
+
+  const settle = (pairs: SurvivingPairs, centre: Float64Array, t: Float64Array): void => {
+    t.set(centre);
+    for (let round = 0; round < mostRounds; round++) if (steps.take(pairs, weights, t)) break;
+    judgeInto(table, pairs, t, weights, settings, state);
+  };
+  const judge = (pairs: SurvivingPairs, centre: Float64Array): PolishedPoint => {
+    judgeInto(table, pairs, centre, weights, settings, state);
+    return { t: centre.slice(), matched: state.matched, score: state.score };
+  };
+  const polish = (pairs: SurvivingPairs, centre: Float64Array): PolishedPoint => {
+    weights.fill(1);
+    const t = new Float64Array(dimension);
+    let best: PolishedPoint | null = null;
+    for (let dropped = 0; dropped <= settings.drops; dropped++) {
+      let worst = -1;
+      for (let raised = 0; raised <= mostRaises; raised++) {
+        settle(pairs, centre, t);
+        if (best === null || state.matched > best.matched)
+          best = { t: t.slice(), matched: state.matched, score: state.score };
+        if (best.matched >= settings.wanted) return best;
+        if (raised === 0) worst = state.worst;
+        if (state.worst < 0) break;
+        for (let peak = 0; peak < count; peak++)
+          if (state.outside[peak] === 1) weights[peak] = raise * (weights[peak] as number);
+      }
+      if (worst < 0) break;
+      for (let peak = 0; peak < count; peak++) weights[peak] = weights[peak] === 0 || peak === worst ? 0 : 1;
+    }
+    const middle = judge(pairs, centre);
+    return best === null || middle.matched > best.matched ? middle : best;
+  };
+  return { polish, judge };
+}
+
+interface Judgement {
+  matched: number;
+  score: number;
+  /** The peak furthest outside its interval among those with weight, −1 when there is none. */
+  worst: number;
+  readonly outside: Uint8Array;
+}
+
+function judgeInto(
   table: PairTable,
   pairs: SurvivingPairs,
   t: Float64Array,
-  weights: Float64Array | null,
+  weights: Float64Array,
   settings: PolishSettings,
-): { matched: number; score: number; worst: number; outside: readonly number[] } {
-  const outside: number[] = [];
-  let matched = 0;
-  let score = 0;
-  let worst = -1;
+  into: Judgement,
+): void {
+  into.matched = 0;
+  into.score = 0;
+  into.worst = -1;
   let excess = 0;
-  table.peaks.forEach((peak, index) => {
-    const vector = nearestVector(table, pairs, index, t);
+  for (let index = 0; index < table.peaks.length; index++) {
+    const peak = table.peaks[index] as PairTable["peaks"][number];
+    const vector = nearestVector(table, pairs, index, peak.q, t);
     let odds = settings.strayShare;
+    into.outside[index] = 0;
     if (vector >= 0) {
-      const q = lengthAt(table.vectors, vector, t);
-      const inside = q >= peak.low - roundingOfQ && q <= peak.high + roundingOfQ;
-      const residual = (q - peak.q) / peak.uncertainty;
-      if (inside) matched += 1;
-      else if (weights !== null && (weights[index] as number) > 0) {
-        outside.push(index);
-        if (Math.abs(residual) > excess) {
-          excess = Math.abs(residual);
-          worst = index;
+      const q = Math.sqrt(squareAt(table.vectors, vector, t));
+      const residual = Math.abs(q - peak.q) / peak.uncertainty;
+      if (q >= peak.low - roundingOfQ && q <= peak.high + roundingOfQ) into.matched += 1;
+      else {
+        into.outside[index] = 1;
+        if (residual > excess && (weights[index] as number) > 0) {
+          excess = residual;
+          into.worst = index;
         }
       }
       const density = Math.max(0.5, settings.density * peak.q * peak.q);
@@ -141,55 +128,101 @@ function judge(
         ((1 - settings.strayShare) * Math.exp(-0.5 * residual * residual)) /
         (Math.sqrt(2 * Math.PI) * peak.uncertainty * density);
     }
-    score += Math.log(odds);
-  });
-  return { matched, score, worst, outside };
+    into.score += Math.log(odds);
+  }
 }
 
-/** Å⁻¹. A computed position this little outside the interval is on its end. */
-const roundingOfQ = 1e-10;
+/** One step of least squares on up to three coordinates; true when it was too short to matter. */
+function stepOf(table: PairTable, dimension: number) {
+  const { vectors, peaks } = table;
+  const shortest = (stepShare * Math.min(...peaks.map(({ uncertainty }) => uncertainty))) ** 2;
+  const take = (pairs: SurvivingPairs, weights: Float64Array, t: Float64Array): boolean => {
+    const t0 = t[0] as number;
+    const t1 = dimension > 1 ? (t[1] as number) : 0;
+    const t2 = dimension > 2 ? (t[2] as number) : 0;
+    let a00 = 0;
+    let a01 = 0;
+    let a02 = 0;
+    let a11 = 0;
+    let a12 = 0;
+    let a22 = 0;
+    let g0 = 0;
+    let g1 = 0;
+    let g2 = 0;
+    for (let index = 0; index < peaks.length; index++) {
+      const weight = weights[index] as number;
+      if (weight === 0) continue;
+      const peak = peaks[index] as PairTable["peaks"][number];
+      const v = nearestVector(table, pairs, index, peak.q, t);
+      if (v < 0) continue;
+      const x0 = (vectors[v] as number) + t0;
+      const x1 = (vectors[v + 1] as number) + t1;
+      const x2 = (vectors[v + 2] as number) + t2;
+      const square = x0 * x0 + x1 * x1 + x2 * x2 + (vectors[v + 3] as number);
+      if (square === 0) continue;
+      const q = Math.sqrt(square);
+      const w = weight / (peak.uncertainty * peak.uncertainty * square);
+      const r = w * q * (peak.q - q);
+      a00 += w * x0 * x0;
+      a01 += w * x0 * x1;
+      a02 += w * x0 * x2;
+      a11 += w * x1 * x1;
+      a12 += w * x1 * x2;
+      a22 += w * x2 * x2;
+      g0 += r * x0;
+      g1 += r * x1;
+      g2 += r * x2;
+    }
+    const added = ridge * (a00 + a11 + a22) + Number.MIN_VALUE;
+    // The columns of missing dimensions are zero: with a positive diagonal their steps are zero too.
+    const d0 = a00 + added;
+    const l10 = a01 / d0;
+    const l20 = a02 / d0;
+    const d1 = a11 + added - l10 * a01;
+    const b12 = a12 - l10 * a02;
+    const l21 = b12 / d1;
+    const d2 = a22 + added - l20 * a02 - l21 * b12;
+    const y1 = g1 - l10 * g0;
+    const y2 = g2 - l20 * g0 - l21 * y1;
+    const s2 = dimension > 2 ? y2 / d2 : 0;
+    const s1 = dimension > 1 ? y1 / d1 - l21 * s2 : 0;
+    const s0 = g0 / d0 - l10 * s1 - l20 * s2;
+    const length = s0 * s0 + s1 * s1 + s2 * s2;
+    if (!Number.isFinite(length)) return true;
+    t[0] = t0 + s0;
+    if (dimension > 1) t[1] = t1 + s1;
+    if (dimension > 2) t[2] = t2 + s2;
+    return length < shortest;
+  };
+  return { take };
+}
 
-function lengthAt(vectors: Float64Array, vector: number, t: Float64Array): number {
+function squareAt(vectors: Float64Array, vector: number, t: Float64Array): number {
   let square = vectors[vector + 3] as number;
-  for (let a = 0; a < t.length; a++) square += ((vectors[vector + a] as number) + (t[a] as number)) ** 2;
-  return Math.sqrt(square);
+  for (let a = 0; a < t.length; a++) {
+    const x = (vectors[vector + a] as number) + (t[a] as number);
+    square += x * x;
+  }
+  return square;
 }
 
 /** Place in the table of the surviving H whose |H + k| is nearest to the peak; −1 when none survives. */
-function nearestVector(table: PairTable, pairs: SurvivingPairs, peak: number, t: Float64Array): number {
+function nearestVector(table: PairTable, pairs: SurvivingPairs, peak: number, wanted: number, t: Float64Array): number {
   const { arena, offsets, base } = pairs;
-  const wanted = (table.peaks[peak] as { readonly q: number }).q;
+  const start = offsets[base + peak] as number;
+  const end = offsets[base + peak + 1] as number;
+  if (end - start === 1) return 4 * (arena[start] as number);
+  const square = wanted * wanted;
   let best = -1;
   let least = Number.POSITIVE_INFINITY;
-  const end = offsets[base + peak + 1] as number;
-  for (let at = offsets[base + peak] as number; at < end; at++) {
+  // Nearest by the square, which near a peak orders as the length does.
+  for (let at = start; at < end; at++) {
     const vector = 4 * (arena[at] as number);
-    const difference = Math.abs(lengthAt(table.vectors, vector, t) - wanted);
+    const difference = Math.abs(squareAt(table.vectors, vector, t) - square);
     if (difference < least) {
       least = difference;
       best = vector;
     }
   }
   return best;
-}
-
-function addEquation(
-  vectors: Float64Array,
-  vector: number,
-  t: Float64Array,
-  wanted: number,
-  weight: number,
-  normal: Float64Array,
-  gradient: Float64Array,
-): void {
-  const dimension = t.length;
-  const q = Math.max(Number.MIN_VALUE, lengthAt(vectors, vector, t));
-  for (let a = 0; a < dimension; a++) {
-    const slope = ((vectors[vector + a] as number) + (t[a] as number)) / q;
-    gradient[a] = (gradient[a] as number) + weight * slope * (wanted - q);
-    for (let b = 0; b <= a; b++) {
-      const other = ((vectors[vector + b] as number) + (t[b] as number)) / q;
-      normal[a * dimension + b] = (normal[a * dimension + b] as number) + weight * slope * other;
-    }
-  }
 }

@@ -27,6 +27,8 @@ export function pairFilter(table: PairTable, wedge: Wedge, allowed: number): Pai
   const { vectors, lowest, highest } = table;
   const count = table.peaks.length;
   const stride = count + 1;
+  const two = wedge.centre.length > 1;
+  const three = wedge.centre.length > 2;
   let arena = new Int32Array(4 * table.pairs.length + 64);
   let offsets = new Int32Array(stride * firstLevels);
   arena.set(table.pairs);
@@ -34,16 +36,64 @@ export function pairFilter(table: PairTable, wedge: Wedge, allowed: number): Pai
   offsets.set(table.starts);
 
   const outside = wallTest(wedge);
+  // Peaks that closed a box lately are asked first.
+  const order = Int32Array.from({ length: count }, (_, index) => index);
+  const tooFew = (from: number, centre: Float64Array, half: Float64Array): boolean => {
+    // No destructuring here: it would walk an iterator for every box.
+    const c0 = centre[0] as number;
+    const c1 = two ? (centre[1] as number) : 0;
+    const c2 = three ? (centre[2] as number) : 0;
+    const h0 = half[0] as number;
+    const h1 = two ? (half[1] as number) : 0;
+    const h2 = three ? (half[2] as number) : 0;
+    let missing = 0;
+    for (let place = 0; place < count; place++) {
+      const peak = order[place] as number;
+      const low = lowest[peak] as number;
+      const high = highest[peak] as number;
+      const end = offsets[from + peak + 1] as number;
+      let at = offsets[from + peak] as number;
+      for (; at < end; at++) {
+        const v = 4 * (arena[at] as number);
+        const x0 = Math.abs((vectors[v] as number) + c0);
+        const x1 = Math.abs((vectors[v + 1] as number) + c1);
+        const x2 = Math.abs((vectors[v + 2] as number) + c2);
+        const across = vectors[v + 3] as number;
+        const n0 = x0 > h0 ? x0 - h0 : 0;
+        const n1 = x1 > h1 ? x1 - h1 : 0;
+        const n2 = x2 > h2 ? x2 - h2 : 0;
+        if (across + n0 * n0 + n1 * n1 + n2 * n2 > high) continue;
+        const f0 = x0 + h0;
+        const f1 = x1 + h1;
+        const f2 = x2 + h2;
+        if (across + f0 * f0 + f1 * f1 + f2 * f2 >= low) break;
+      }
+      if (at < end) continue;
+      missing += 1;
+      if (place > 0 && offsets[from + peak] !== end) {
+        order[place] = order[place - 1] as number;
+        order[place - 1] = peak;
+      }
+      if (missing > allowed) return true;
+    }
+    return false;
+  };
   const admits = (level: number, centre: Float64Array, half: Float64Array): boolean => {
     if (outside(level, centre, half)) return false;
     const from = level * stride;
+    if (tooFew(from, centre, half)) return false;
     const to = from + stride;
     if (to + stride > offsets.length) offsets = grown(offsets, to + stride);
     let write = offsets[from + count] as number;
     const needed = 2 * write - (offsets[from] as number);
     if (needed > arena.length) arena = grown(arena, needed);
-    const [c0 = 0, c1 = 0, c2 = 0] = centre;
-    const [h0 = 0, h1 = 0, h2 = 0] = half;
+    // No destructuring here: it would walk an iterator for every box.
+    const c0 = centre[0] as number;
+    const c1 = two ? (centre[1] as number) : 0;
+    const c2 = three ? (centre[2] as number) : 0;
+    const h0 = half[0] as number;
+    const h1 = two ? (half[1] as number) : 0;
+    const h2 = three ? (half[2] as number) : 0;
     let missing = 0;
     offsets[to] = write;
     for (let peak = 0; peak < count; peak++) {

@@ -1,3 +1,4 @@
+import { fail } from "../errors/index.js";
 import { averagedReciprocalMetric } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { crystalModel } from "./crystal-model.js";
@@ -15,12 +16,18 @@ export function peakModel(
   options: SearchOptions,
 ): { readonly model: PeakModel; readonly setAside: readonly SetAside[] } {
   checkOptions(options);
+  if (options.zeroShift > 0 && list.kind !== "hkl" && list.wavelengthAngstrom === null)
+    fail("missing-wavelength", "a zero shift of 2θ can only be refined where the wavelength is known", {
+      where: { argument: "--zero-shift" },
+      expected: "--wavelength, or --zero-shift 0",
+      found: "no wavelength",
+    });
   const metric = averagedReciprocalMetric(group, cell);
   const { powder, crystal, setAside } = usedPeaks(list, options, (hkl) => lengthOf(metric, hkl));
   const model =
     list.kind === "hkl"
       ? crystalModel(group, cell, crystal)
-      : powderModel(group, cell, powder, list.wavelengthAngstrom);
+      : powderModel(group, cell, powder, list.wavelengthAngstrom, options);
   return { model, setAside };
 }
 

@@ -3,15 +3,24 @@ import { roundNumber, toNumber } from "../numbers/index.js";
 import {
   averagedReciprocalMetric,
   distinctPositions,
+  reciprocalFrame,
   type SatelliteLine,
   satelliteLister,
 } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { densityHalfWindow, lowerBound, powderLogOdds } from "./evidence.js";
-import type { Explanation, PeakModel } from "./explanation.js";
+import type { CorrectionLimit, Explanation, PeakModel } from "./explanation.js";
 import { deWolff, smithSnyder } from "./figures-of-merit.js";
+import type { AcceptedInterval } from "./peak-pairs.js";
+import { solveFlat } from "./solve-flat.js";
 import type { Assignment, IndexedLine } from "./types.js";
 import type { PowderPeak } from "./used-peaks.js";
+
+/** Largest zero shift (degrees 2θ) and relative change of the cell that are refined with k. */
+export interface CorrectionLimits {
+  readonly zeroShift: number;
+  readonly cellScale: number;
+}
 
 /** What powder positions, whatever unit they came in, say about k. */
 export function powderModel(
@@ -19,23 +28,82 @@ export function powderModel(
   cell: Cell,
   peaks: readonly PowderPeak[],
   wavelengthAngstrom: number | null,
+  limits: CorrectionLimits,
 ): PeakModel {
+  const corrections = (["zeroShift", "cellScale"] as const)
+    .map((name) => ({ name, limit: limits[name] }))
+    .filter(({ limit }) => limit > 0);
+  const intervals = peaks.map((peak) => acceptedInterval(peak, limits));
   const widest = Math.max(...peaks.map((peak) => peak.halfWidth));
-  const highest = Math.max(...peaks.map((peak) => peak.q));
+  const highest = Math.max(...intervals.map(({ high }) => high));
   // Beyond the last peak as far as its density window and the tolerance of a comparison reach.
   const qMax = highest + Math.max(densityHalfWindow, 2 * widest);
   const lister = satelliteLister(group, cell);
   const metric = averagedReciprocalMetric(group, cell).map((entry) => 4 * Math.PI * Math.PI * entry);
   const tolerance = median(peaks.map((peak) => peak.halfWidth));
+  const primitiveMetric = reciprocalFrame(group, cell).metric.map((entry) => 4 * Math.PI * Math.PI * entry);
   return {
     total: peaks.length,
     tolerance,
     metric,
-    explain: (k) => explainPowder(lister(k, { qMax }), peaks, wavelengthAngstrom),
-    equations: (k, assignments, values) => powderEquations(k, assignments, values, peaks, metric),
+    corrections,
+    explain: (k, values = [], widened = false) => {
+      const corrected = correctedPeaks(peaks, corrections, values);
+      return explainPowder(
+        lister(k, { qMax }),
+        widened ? corrected.map((peak, index) => widenedPeak(peak, intervals[index] as AcceptedInterval)) : corrected,
+        wavelengthAngstrom,
+      );
+    },
+    equations: (k, assignments, values) => powderEquations(k, assignments, values, peaks, metric, corrections),
     samePositions: ({ predicted: a }, { predicted: b }) =>
       covers(a, b, highest + tolerance, tolerance) && covers(b, a, highest + tolerance, tolerance),
+    solve: (form, budget, host) =>
+      solveFlat(group, form, { metric: primitiveMetric, intervals, leafRadius: tolerance }, budget, host),
   };
+}
+
+/**
+ * Computed Q that a peak would accept for some zero shift z and scale σ of the cell within their limits:
+ * `|Q − z·∂Q/∂2θ − q/(1 + σ)| ≤ halfWidth`.
+ */
+function acceptedInterval(peak: PowderPeak, limits: CorrectionLimits): AcceptedInterval {
+  const reach = peak.halfWidth + limits.zeroShift * peak.slope;
+  return {
+    q: peak.q,
+    low: (peak.q - reach) * (1 - (peak.q > reach ? limits.cellScale : 0)),
+    high: (peak.q + reach) * (1 + limits.cellScale),
+    uncertainty: peak.uncertainty,
+  };
+}
+
+/** The peaks as they stand against the cell as given: `(Q − z·∂Q/∂2θ)(1 + σ)`. */
+function correctedPeaks(
+  peaks: readonly PowderPeak[],
+  corrections: readonly CorrectionLimit[],
+  values: readonly number[],
+): readonly PowderPeak[] {
+  const { shift, scale } = named(corrections, values);
+  if (shift === 0 && scale === 0) return peaks;
+  return peaks.map((peak) => ({
+    ...peak,
+    q: (peak.q - shift * peak.slope) * (1 + scale),
+    uncertainty: peak.uncertainty * (1 + scale),
+    halfWidth: peak.halfWidth * (1 + scale),
+  }));
+}
+
+function widenedPeak(peak: PowderPeak, { low, high }: AcceptedInterval): PowderPeak {
+  return { ...peak, halfWidth: Math.max(peak.halfWidth, peak.q - low, high - peak.q) };
+}
+
+function named(
+  corrections: readonly CorrectionLimit[],
+  values: ArrayLike<number>,
+): { readonly shift: number; readonly scale: number } {
+  const of = (name: CorrectionLimit["name"]): number =>
+    corrections.reduce((value, entry, index) => (entry.name === name ? (values[index] ?? 0) : value), 0);
+  return { shift: of("zeroShift"), scale: of("cellScale") };
 }
 
 function explainPowder(
@@ -93,21 +161,25 @@ function assign(peak: PowderPeak, lines: readonly SatelliteLine[], all: Float64A
   };
 }
 
-/** `q_i = |H_i ± k|` as equations for the letters of k. */
+/** `Q_i = |H_i ± k|/(1 + σ) + z·∂Q_i/∂2θ` as equations for the letters of k and the corrections. */
 function powderEquations(
   k: WaveVector,
   assignments: readonly Assignment[],
   values: Float64Array,
   peaks: readonly PowderPeak[],
   metric: readonly number[],
+  corrections: readonly CorrectionLimit[],
 ): { residuals: Float64Array; jacobian: Float64Array } {
-  const numeric = numericWaveVector({ ...k, values: [...values] }) as readonly [number, number, number];
-  const directions = usedParameters(k).map((letter) =>
+  const letters = usedParameters(k);
+  const numeric = numericWaveVector({ ...k, values: [...values.slice(0, letters.length)] }) as readonly number[];
+  const { shift, scale } = named(corrections, values.slice(letters.length));
+  const directions = letters.map((letter) =>
     k.components.map((form) => toNumber(form.coefficients[letter as 0 | 1 | 2])),
   );
   const byIndex = new Map(peaks.map((peak) => [peak.index, peak]));
+  const columns = directions.length + corrections.length;
   const residuals = new Float64Array(assignments.length);
-  const jacobian = new Float64Array(assignments.length * directions.length);
+  const jacobian = new Float64Array(assignments.length * columns);
   assignments.forEach(({ peak: peakIndex, h, sign }, row) => {
     const peak = byIndex.get(peakIndex) as PowderPeak;
     const side = sign === -1 ? -1 : 1;
@@ -116,10 +188,17 @@ function powderEquations(
       vector.reduce((sum, entry, other) => sum + entry * (metric[3 * other + axis] as number), 0),
     );
     const q = Math.sqrt(covariant.reduce((sum, entry, axis) => sum + entry * (vector[axis] as number), 0));
-    residuals[row] = (peak.q - q) / peak.uncertainty;
-    directions.forEach((direction, column) => {
-      const slope = direction.reduce((sum, entry, axis) => sum + entry * (covariant[axis] as number), 0) / q;
-      jacobian[row * directions.length + column] = (side * slope) / peak.uncertainty;
+    residuals[row] = (peak.q - q / (1 + scale) - shift * peak.slope) / peak.uncertainty;
+    const slopes = [
+      ...directions.map(
+        (direction) =>
+          (side * direction.reduce((sum, entry, axis) => sum + entry * (covariant[axis] as number), 0)) /
+          (q * (1 + scale)),
+      ),
+      ...corrections.map(({ name }) => (name === "zeroShift" ? peak.slope : -q / (1 + scale) ** 2)),
+    ];
+    slopes.forEach((slope, column) => {
+      jacobian[row * columns + column] = slope / peak.uncertainty;
     });
   });
   return { residuals, jacobian };

@@ -1,7 +1,7 @@
 import { type BoxSearch, boxSearch, breathe, type WorkHost } from "../algorithms/index.js";
 import { strayShare } from "./evidence.js";
 import type { FlatFrame } from "./flat-frame.js";
-import { judgePoint, type PolishedPoint, polishLeaf } from "./leaf-polish.js";
+import { leafPolisher, type PolishedPoint } from "./leaf-polish.js";
 import { pairFilter } from "./pair-filter.js";
 import { type AcceptedInterval, pairTable } from "./peak-pairs.js";
 import { foldInto, inverseImage, type Wedge } from "./wedge.js";
@@ -25,13 +25,15 @@ export interface FlatSearchSettings {
 
 /** What branch and bound made of one flat. */
 export interface FlatFindings {
-  /** One point a settled leaf, best score first. */
+  /** One point a settled leaf, in the order of `leaves`, mapped into the wedge. */
   readonly points: readonly PolishedPoint[];
   /** Centres of the settled leaves, `dimension` numbers each, and of those that could be neither settled nor excluded. */
   readonly leaves: readonly Float64Array[];
   readonly undecided: readonly Float64Array[];
   readonly leafHalf: Float64Array;
   readonly boxes: number;
+  /** Half-diagonal of the smallest box that was looked at. */
+  readonly smallestBox: number;
   /** Share of the root box that was not looked at. */
   readonly unexplored: number;
   readonly stopped: "boxes" | "leaves" | null;
@@ -51,15 +53,16 @@ export async function searchFlat(
 ): Promise<FlatFindings> {
   const table = pairTable(frame, wedge, peaks);
   const filter = pairFilter(table, wedge, peaks.length - settings.wanted);
-  const polish = {
+  const { polish, judge } = leafPolisher(table, frame.dimension, {
     wanted: settings.wanted,
     drops: Math.min(2, peaks.length - settings.wanted),
     density: smoothDensity(frame, wedge),
     strayShare,
-  };
+  });
   const points: PolishedPoint[] = [];
   const leaves: Float64Array[] = [];
   const undecided: Float64Array[] = [];
+  let deepest = 0;
   const search: BoxSearch = boxSearch({
     centre: wedge.centre,
     half: wedge.half,
@@ -67,9 +70,9 @@ export async function searchFlat(
     levelsBelowLeaf: halvingsBelowLeaf * frame.dimension,
     admits: filter.admits,
     settles: (level, centre) => {
+      deepest = Math.max(deepest, level);
       const lists = filter.lists(level);
-      const point =
-        level === search.leafLevel ? polishLeaf(table, lists, centre, polish) : judgePoint(table, lists, centre, polish);
+      const point = level === search.leafLevel ? polish(lists, centre) : judge(lists, centre);
       if (point.matched < settings.wanted) return false;
       leaves.push(centre.slice());
       points.push(point);
@@ -87,11 +90,12 @@ export async function searchFlat(
   }
   for (const { t } of points) foldInto(wedge, t);
   return {
-    points: points.sort((a, b) => b.score - a.score),
+    points,
     leaves,
     undecided,
     leafHalf: search.halfAt(search.leafLevel),
     boxes: search.boxes(),
+    smallestBox: Math.hypot(...search.halfAt(deepest)),
     unexplored: search.unexplored(),
     stopped,
   };
@@ -106,14 +110,14 @@ function smoothDensity(frame: FlatFrame, wedge: Wedge): number {
 
 type Nine = readonly [number, number, number, number, number, number, number, number, number];
 
-/** The best points that are apart from one another by more than `apart`, images by the wedge's walls counted as one. */
-export function distinctPoints(
+/** The first points that are apart from one another by more than `apart`, images by the wedge's walls counted as one. */
+export function distinctPoints<Point extends PolishedPoint>(
   wedge: Wedge,
-  points: readonly PolishedPoint[],
+  points: readonly Point[],
   apart: number,
   most: number,
-): { readonly kept: readonly PolishedPoint[]; readonly complete: boolean } {
-  const kept: PolishedPoint[] = [];
+): { readonly kept: readonly Point[]; readonly complete: boolean } {
+  const kept: Point[] = [];
   for (const point of points) {
     if (kept.some((other) => nearest(wedge, point.t, other.t) <= apart)) continue;
     if (kept.length === most) return { kept, complete: false };

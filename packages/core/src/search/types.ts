@@ -46,10 +46,12 @@ export interface SearchOptions {
   readonly maxDimension: 0 | 1 | 2 | 3;
   /** Peaks above this Q in Å⁻¹ are set aside; null for no limit. */
   readonly qMax: number | null;
-  /** Largest zero shift in degrees 2θ to refine with k. Not built: anything but 0 gives a warning. */
+  /** Largest zero shift in degrees 2θ, up or down, to refine with k; needs a wavelength. */
   readonly zeroShift: number;
-  /** Largest relative change of the cell to refine with k. Not built: anything but 0 gives a warning. */
+  /** Largest relative change of all cell lengths, up or down, to refine with k. */
   readonly cellScale: number;
+  /** Boxes after which the search over lines, planes and general k is stopped; default `defaultMostBoxes`. */
+  readonly mostBoxes?: number;
   /** Return also the candidates that match fewer peaks than asked. Default false. */
   readonly belowMinimum?: boolean;
 }
@@ -120,6 +122,50 @@ export interface Refinement {
   readonly rescaledUncertainties: readonly number[] | null;
 }
 
+/** A quantity refined with k between limits. */
+export interface Correction {
+  readonly name: "zeroShift" | "cellScale";
+  /** Degrees 2θ that the positions are too high by; or the relative change of the cell lengths. */
+  readonly value: number;
+  /** Null where the value stands at its limit. */
+  readonly uncertainty: number | null;
+  readonly limit: number;
+}
+
+/** A part of a kind of k that branch and bound could not exclude. */
+export interface Region {
+  /** The kind, with open letters. */
+  readonly kind: WaveVector;
+  /** Bounds of each letter. */
+  readonly from: readonly number[];
+  readonly to: readonly number[];
+  /** Boxes that it is made of. */
+  readonly leaves: number;
+  /** Whether a k that matches enough peaks was found in it; if not, it could be neither settled nor excluded. */
+  readonly decided: boolean;
+}
+
+/** A candidate of a higher kind that lies beside the one it is listed under: the same find within the resolution. */
+export interface MergedCandidate {
+  readonly k: WaveVector;
+  readonly dimension: 0 | 1 | 2 | 3;
+  readonly evidence: Evidence;
+  readonly matched: number;
+}
+
+/** Where another k could be told from this one. */
+export interface Separation {
+  /** The other k: a candidate of the same result by index, or null for a special k that is none. */
+  readonly candidate: number | null;
+  readonly k: WaveVector;
+  /** Satellite of this k (Å⁻¹) furthest from every line of the other, in units of its Q. */
+  readonly q: number;
+  /** Distance in Å⁻¹ to the nearest line of the other. */
+  readonly distance: number;
+  /** Relative resolution ΔQ/Q needed there; null when all lines agree whatever the resolution. */
+  readonly resolution: number | null;
+}
+
 /** A simple fraction within 2 standard uncertainties of a free parameter. */
 export interface NearFraction {
   readonly parameter: "u" | "v" | "w";
@@ -153,6 +199,14 @@ export interface Candidate {
   readonly unmatched: readonly number[];
   readonly residuals: ResidualStatistics;
   readonly refinement: Refinement | null;
+  /** Zero shift and cell scale at this k, as far as they were set free. */
+  readonly corrections: readonly Correction[];
+  /** The region of the search that it stands for, by index; null for points and for a k that was given. */
+  readonly region: number | null;
+  /** Candidates of higher kinds beside it that are the same find within the resolution. */
+  readonly merged: readonly MergedCandidate[];
+  /** For every tied candidate, and for simpler k nearby, what would tell them apart. */
+  readonly separations: readonly Separation[];
   readonly warnings: readonly Problem[];
 }
 
@@ -170,6 +224,28 @@ export interface Certificate {
   readonly maxDimension: 0 | 1 | 2 | 3;
   readonly zeroShift: number;
   readonly cellScale: number;
+  /** Why the search ended before its end; null when it did not. */
+  readonly stopped: string | null;
+  /** What was done kind by kind. */
+  readonly kinds: readonly KindCertificate[];
+}
+
+/** What the search did with one kind of k. */
+export interface KindCertificate {
+  readonly kind: WaveVector;
+  readonly dimension: 0 | 1 | 2 | 3;
+  readonly boxes: number;
+  /** Boxes that hold or may hold a solution. */
+  readonly leaves: number;
+  readonly regions: number;
+  /** Regions that could be neither settled nor excluded. */
+  readonly undecided: number;
+  /** Share of the kind's volume that was not looked at. */
+  readonly unexplored: number;
+  /** The peaks hardly restrict k here: solutions are so many that their list says nothing. */
+  readonly saturated: boolean;
+  /** Whether every distinct solution was weighed; if not, only the best by a quick score. */
+  readonly allWeighed: boolean;
 }
 
 /** A peak that was not used. */
@@ -185,6 +261,8 @@ export interface SearchResult {
   readonly setAside: readonly SetAside[];
   /** Peaks (by index) that the first candidate does not explain; all used peaks when there is no candidate. */
   readonly unmatched: readonly number[];
+  /** Every part of the searched kinds where enough peaks may match. */
+  readonly regions: readonly Region[];
   /** How many k were tried and left out because they match too few peaks. */
   readonly dropped: number;
   readonly warnings: readonly Problem[];

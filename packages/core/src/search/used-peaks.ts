@@ -8,6 +8,8 @@ export interface PowderPeak {
   readonly q: number;
   readonly uncertainty: number;
   readonly halfWidth: number;
+  /** ∂Q/∂2θ in Å⁻¹ per degree: what a zero shift moves it by; 0 without a wavelength. */
+  readonly slope: number;
 }
 
 /** A single-crystal peak in the form that matching needs, r.l.u. */
@@ -55,7 +57,7 @@ export function usedPeaks(
       halfWidth: options.tolerance ?? matchStandardUncertainties * uncertainty,
     };
     if (list.kind === "hkl") crystal.push({ ...common, hkl: position as unknown as [number, number, number] });
-    else powder.push({ ...common, q });
+    else powder.push({ ...common, q, slope: slopeAt(q, list.wavelengthAngstrom) });
   }
   if (powder.length + crystal.length === 0)
     fail("too-few-peaks", "there is no peak to index", {
@@ -64,6 +66,13 @@ export function usedPeaks(
       remedy: "give a list of satellite positions, or raise the limit of Q",
     });
   return { powder, crystal, setAside };
+}
+
+/** `dQ/d(2θ) = (2π/λ) cos θ`, per degree. */
+function slopeAt(q: number, wavelength: number | null): number {
+  if (wavelength === null) return 0;
+  const sine = Math.min(1, (q * wavelength) / (4 * Math.PI));
+  return ((2 * Math.PI) / wavelength) * Math.sqrt(1 - sine * sine) * (Math.PI / 180);
 }
 
 function isPosition(list: PeakList, position: readonly number[] | null): position is readonly number[] {

@@ -138,7 +138,7 @@ function imagesOfOrigin(
 }
 
 /** The point group extended by −1, as integer matrices on primitive rows. */
-function extendedRotations(group: SpaceGroup): readonly (readonly number[])[] {
+export function extendedRotations(group: SpaceGroup): readonly (readonly number[])[] {
   const both = group.primitive.rotations.flatMap((rotation) => [rotation, rotation.map((entry) => 0 - entry)]);
   return [...new Map(both.map((rotation) => [rotation.join(), rotation])).values()];
 }
@@ -161,7 +161,8 @@ function flatMatrix(frame: FlatFrame, rotation: readonly number[]): Float64Array
   return matrix;
 }
 
-function rotated(row: Triple, rotation: readonly number[]): [number, number, number] {
+/** `row · rotation`. */
+export function rotated(row: Triple, rotation: readonly number[]): [number, number, number] {
   const at = (column: 0 | 1 | 2): number =>
     row[0] * (rotation[column] as number) +
     row[1] * (rotation[3 + column] as number) +

@@ -1,6 +1,6 @@
-import { fail } from "../errors/index.js";
+import { editDistance, fail } from "../errors/index.js";
 import { type SettingRow, settingsOfNumber, settingTable } from "./settings.js";
-import { comparableSymbol, editDistance, isWrittenAs, symbolLetters } from "./symbol-text.js";
+import { comparableSymbol, isWrittenAs, symbolLetters } from "./symbol-text.js";
 import { displaySymbol, symbolWithCode } from "./symbols.js";
 import type { GroupAssumption } from "./types.js";
 

@@ -41,17 +41,3 @@ function isSubset(part: ReadonlySet<number>, whole: ReadonlySet<number>): boolea
   for (const entry of part) if (!whole.has(entry)) return false;
   return true;
 }
-
-/** Edit distance (insertions, deletions, replacements) of two short texts. */
-export function editDistance(a: string, b: string): number {
-  let previous = Array.from({ length: b.length + 1 }, (_, index) => index);
-  for (let row = 1; row <= a.length; row++) {
-    const current = [row];
-    for (let column = 1; column <= b.length; column++) {
-      const replaced = (previous[column - 1] as number) + (a[row - 1] === b[column - 1] ? 0 : 1);
-      current.push(Math.min(replaced, (previous[column] as number) + 1, (current[column - 1] as number) + 1));
-    }
-    previous = current;
-  }
-  return previous[b.length] as number;
-}

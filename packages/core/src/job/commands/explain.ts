@@ -1,8 +1,7 @@
-import { fail, type ProblemCode, problemCodes } from "../../errors/index.js";
+import { fail, nearMiss, type ProblemCode, problemCodes } from "../../errors/index.js";
 import type { ExplainRecord } from "../../reports/index.js";
 import { exitStatusOf } from "../exit-status.js";
 import { optionOf } from "../inputs/given.js";
-import { nearest } from "../inputs/nearest.js";
 import type { Work } from "../work.js";
 
 /** `kvane explain`: what a code of a problem means; all of them when none is named. */
@@ -11,7 +10,7 @@ export function explainCommand({ request }: Work): ExplainRecord {
   const given = optionOf(request, "code");
   const wanted = given === null ? codes : codes.filter((code) => code === given.text.toLowerCase());
   if (wanted.length === 0 && given !== null) {
-    const near = nearest(given.text, codes);
+    const near = nearMiss(given.text, codes);
     fail("invalid-argument", `there is no code \`${given.text}\``, {
       where: given.where,
       expected: "a code such as cell-contradicts-group",

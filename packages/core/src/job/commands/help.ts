@@ -1,8 +1,7 @@
-import { fail } from "../../errors/index.js";
+import { fail, nearMiss } from "../../errors/index.js";
 import type { HelpRecord } from "../../reports/index.js";
 import { helpTopics } from "../help/topics.js";
 import { optionOf } from "../inputs/given.js";
-import { nearest } from "../inputs/nearest.js";
 import type { Work } from "../work.js";
 
 /** `kvane help TOPIC`: conventions and formats. */
@@ -12,7 +11,7 @@ export function helpCommand({ request }: Work): HelpRecord {
   const name = given === null ? "topics" : given.text.toLowerCase();
   const topic = Object.hasOwn(helpTopics, name) ? helpTopics[name] : undefined;
   if (topic === undefined) {
-    const near = nearest(name, topics);
+    const near = nearMiss(name, topics);
     fail("invalid-argument", `there is no help on \`${given?.text ?? name}\``, {
       where: given?.where ?? {},
       expected: `one of ${topics.join(", ")}, or a command`,

@@ -1,7 +1,7 @@
 /**
  * The word of a list that was probably meant, or null: the nearest by single-letter insertions, deletions,
- * replacements and swaps of neighbours (Damerau, Comm. ACM 7 (1964) 171). One is allowed in words of 2 to 4 letters, two
- * in words of 5 to 7, and so on; of a key of one letter only the case may differ.
+ * replacements and swaps of neighbours. One is allowed in words of 2 to 4 letters, two in words of 5 to 7, and so on;
+ * of a word of one letter only the case may differ.
  */
 export function nearMiss(word: string, known: readonly string[]): string | null {
   const plain = word.toLowerCase().replaceAll("_", "-");
@@ -17,7 +17,8 @@ export function nearMiss(word: string, known: readonly string[]): string | null 
   return best;
 }
 
-function editDistance(a: string, b: string): number {
+/** Insertions, deletions, replacements and swaps of neighbours between two words (Damerau, Comm. ACM 7 (1964) 171). */
+export function editDistance(a: string, b: string): number {
   // A word that is much longer or shorter is no slip of the pen.
   if (Math.abs(a.length - b.length) > 8) return Number.POSITIVE_INFINITY;
   const rows: number[][] = [Array.from({ length: b.length + 1 }, (_, j) => j)];
