@@ -81,7 +81,7 @@ describe("MnO, C. G. Shull & J. S. Smart, Phys. Rev. 76 (1949) 1256; C. G. Shull
     const result = await search("F m -3 m", cubic(4.43), angleList(angles, 0.1, wavelength));
     const first = expectFirst(result, "F m -3 m", [0.5, 0.5, 0.5]);
     expect(first).toMatchObject({ arms: 4, onNuclearLines: false, manifold: { dimension: 0 } });
-    expect(result.certificate).toMatchObject({ exhaustive: true, maxDimension: 0, minimumMatched: 4 });
+    expect(result.certificate).toMatchObject({ exhaustive: true, maxDimension: 3, minimumMatched: 4 });
     // (5 1 1) and (3 3 3) of the doubled cell are one line.
     expect(first.assignments[3]?.alternatives.length).toBe(1);
   });

@@ -1,12 +1,13 @@
 import { KvaneError } from "@kvane/core/errors";
 import { formatWaveVector, specialPoints } from "@kvane/core/kvectors";
-import { defaultSearchOptions, locate, type SearchResult } from "@kvane/core/search";
+import { defaultSearchOptions as allKinds, locate, type SearchResult } from "@kvane/core/search";
 import { parseGroup } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { breathe } from "#core/algorithms/index.js";
 import { lengthOf, reciprocalAxes } from "../support/line-twin.ts";
 import { crystalList, powderList } from "../support/peak-lists.ts";
 
+const defaultSearchOptions = { ...allKinds, maxDimension: 0 as const };
 const cell = { a: 4, b: 5.3, c: 6.1, alpha: 90, beta: 90, gamma: 90 };
 const axes = reciprocalAxes(cell);
 const half = [
@@ -34,7 +35,8 @@ describe("locate over the special points", () => {
 
   test("the certificate says what was tried and what would have been shown", async () => {
     const result = await locate(group, cell, powderList(half, 0.004), { ...defaultSearchOptions, unmatched: 2 });
-    expect(result.certificate).toEqual({
+    const { kinds, ...whole } = result.certificate;
+    expect(whole).toEqual({
       minimumMatched: 3,
       boxes: 8,
       smallestBox: 0,
@@ -42,7 +44,11 @@ describe("locate over the special points", () => {
       maxDimension: 0,
       zeroShift: 0,
       cellScale: 0,
+      stopped: null,
     });
+    expect(kinds.map(({ kind }) => formatWaveVector(kind))).toEqual(
+      specialPoints(group).map(({ k }) => formatWaveVector(k)),
+    );
     expect(result.candidates.every(({ matched }) => matched >= 3)).toBe(true);
     expect(result.candidates.length + result.dropped).toBe(8);
   });
@@ -55,19 +61,11 @@ describe("locate over the special points", () => {
     expect(lone).toMatchObject({ candidates: [], dropped: 8, unmatched: [0], certificate: { minimumMatched: 1 } });
   });
 
-  test("lines, planes and shifts that are not searched are said to be so", async () => {
-    const result = await locate(group, cell, powderList(half, 0.004), {
-      ...defaultSearchOptions,
-      maxDimension: 3,
-      zeroShift: 0.1,
-      cellScale: 0.01,
+  test("a zero shift cannot be refined where no wavelength turns Q into 2θ, and it is said", async () => {
+    const free = { ...defaultSearchOptions, zeroShift: 0.1 };
+    await expect(locate(group, cell, powderList(half, 0.004), free)).rejects.toMatchObject({
+      code: "missing-wavelength",
     });
-    expect(result.warnings.map(({ code, where }) => [code, where.argument])).toEqual([
-      ["not-built", "--max-dimension"],
-      ["not-built", "--zero-shift"],
-      ["not-built", "--cell-scale"],
-    ]);
-    expect(result.certificate).toMatchObject({ maxDimension: 0, zeroShift: 0, cellScale: 0 });
   });
 
   test("ties by the metric are told: (1/2,0,0) and (0,0,1/2) where a tetragonal cell is a cube", async () => {

@@ -9,9 +9,18 @@ export interface OptionSpec {
 /** Every option of every command, by the name that a request or the output uses. */
 export const optionSpecs = {
   k: { flags: "--k <K>", about: "wave vector: 0,1/2,0 or 0,0.472,0 or u,0,0" },
+  within: { flags: "--within <DISTANCE>", about: "list special k within this distance in Å⁻¹ (0.05)" },
+  from: { flags: "--from <K>", about: "wave vector whose irreps split: 0,1/2,0" },
+  to: { flags: "--to <K>", about: "line or plane through it: 0,u,0" },
+  full: { flags: "--full", about: "the irreps of the whole space group too, over the star" },
   cell: { flags: "--cell <CELL>", about: '"a b c alpha beta gamma" in Å and degrees' },
   sites: { flags: "--site <SITE>", about: '"LABEL x y z", once for each site', repeatable: true },
   polar: { flags: "--polar", about: "polar vectors (displacements) instead of moments" },
+  star: { flags: "--star", about: "list the basis vectors on every arm of the star" },
+  exponent: { flags: "--exponent <SIGN>", about: "sign in exp(−2πi k·T): minus or plus (minus)" },
+  phase: { flags: "--phase <WHERE>", about: "phases run with lattice translations or with positions: lattice or position (lattice)" },
+  factor: { flags: "--factor <FACTOR>", about: "factor before wave + c.c.: one or half (one)" },
+  components: { flags: "--components <AXES>", about: "lattice, crystal or cartesian; the last two need a cell (lattice)" },
   peaks: { flags: "--peaks <FILE>", about: "list of peak positions" },
   as: { flags: "--as <KIND>", about: "what the positions are: d, q, two-theta or hkl" },
   wavelength: { flags: "--wavelength <Å>", about: "neutron wavelength" },

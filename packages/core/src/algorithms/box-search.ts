@@ -31,8 +31,8 @@ export interface BoxSearch {
   readonly leafLevel: number;
 }
 
-/** Thickness in levels beyond which halving a box is only rounding. */
-const mostLevels = 200;
+/** Levels beyond which halving a box is only rounding. */
+export const mostLevels = 200;
 
 /**
  * Branch and bound by binary splits of the longest edge (E. R. Hansen & G. W. Walster, Global Optimization Using
@@ -68,7 +68,8 @@ export function boxSearch(problem: BoxProblem): BoxSearch {
     const child = level + 1;
     const axis = axes[level] as number;
     const middle = centres[child] as Float64Array;
-    middle.set(centres[level] as Float64Array);
+    const from = centres[level] as Float64Array;
+    for (let at = 0; at < dimension; at++) middle[at] = from[at] as number;
     const side = tried[level] === 0 ? -1 : 1;
     middle[axis] = (middle[axis] as number) + side * ((halves[child] as Float64Array)[axis] as number);
     tried[level] = (tried[level] as number) + 1;

@@ -1,9 +1,10 @@
 /**
  * Numerical methods and the manners of long work; no physics. Cancel and progress for whoever started the work,
- * positive definite systems, non-linear least squares, branch and bound over boxes, convex cells. Sources: Golub & Van Loan, Matrix Computations; Björck,
- * Numerical Methods for Least Squares Problems (1996).
+ * positive definite systems, non-linear least squares, branch and bound over boxes, convex cells. Sources: Golub & Van
+ * Loan, Matrix Computations; Björck, Numerical Methods for Least Squares Problems (1996); Hansen & Walster, Global
+ * Optimization Using Interval Analysis (2004).
  */
-export { type BoxProblem, type BoxSearch, boxSearch } from "./box-search.js";
+export { type BoxProblem, type BoxSearch, boxSearch, mostLevels } from "./box-search.js";
 export { breathe, breathMilliseconds } from "./breathe.js";
 export { choleskyFactor, choleskyInverse, choleskyLogDeterminant, choleskySolve } from "./cholesky.js";
 export { gaussNewton, type LeastSquares, type WeightedResiduals } from "./gauss-newton.js";

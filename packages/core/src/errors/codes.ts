@@ -37,6 +37,8 @@ export const problemCodes = {
   "too-few-peaks": "The list has too few peaks for what was asked.",
   "k-not-determined": "The matched peaks do not fix all free components of the wave vector.",
   "uncertainties-understated": "The peaks scatter about their lines by much more than their uncertainties say.",
+  "search-stopped": "The search for k ended before every box was settled; what was not looked at is stated.",
+  "search-saturated": "So many wave vectors fit the peaks that not all of them were weighed.",
   "no-candidate": "No wave vector of those searched explains enough of the peaks.",
   "not-built": "The command or option is planned but not part of this version.",
   "interrupted": "The work was cancelled before it ended.",

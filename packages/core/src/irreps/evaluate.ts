@@ -1,5 +1,6 @@
 import { addForms, type CyclotomicMatrix, type Phase, subtractVectors } from "../numbers/index.js";
 import type { SpaceGroup, SymmetryOperator } from "../spacegroups/index.js";
+import { type PrimitiveOperator, primitiveComponents, primitiveOperator, turnsOf } from "./primitive-operators.js";
 import { translationColumn, waveTimesColumn } from "./setting.js";
 import type { SmallIrrep, SmallIrreps } from "./types.js";
 
@@ -31,6 +32,24 @@ function sameRotation(a: SymmetryOperator, b: SymmetryOperator): boolean {
   return (
     a.rotationDenominator === b.rotationDenominator && a.rotation.every((entry, index) => entry === b.rotation[index])
   );
+}
+
+/** The same for operators in the primitive basis, translations over the group's `primitive.denominator`. */
+export function littleGroupPlaces(
+  group: SpaceGroup,
+  irreps: SmallIrreps,
+): (operator: PrimitiveOperator) => LittleGroupElement {
+  const representatives = irreps.littleGroup.operators.map((index) => primitiveOperator(group, index));
+  const elementByRotation = new Map(representatives.map(({ rotation }, element) => [rotation.join(), element]));
+  const kappa = primitiveComponents(group, irreps.k);
+  return ({ rotation, translation }) => {
+    const element = elementByRotation.get(rotation.join());
+    if (element === undefined) throw new Error("an operator is not in the little group");
+    const representative = representatives[element] as PrimitiveOperator;
+    const step = translation.map((entry, axis) => entry - (representative.translation[axis] as number));
+    const turns = turnsOf(kappa, step, group.primitive.denominator);
+    return { element, phase: addForms(irreps.phases[element] as Phase, turns) };
+  };
 }
 
 /** `D(g)` of an irrep for any operator of the little group, as phase and matrix. */

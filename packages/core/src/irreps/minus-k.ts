@@ -10,9 +10,10 @@ import {
   rootOfUnity,
   scaleCyclotomicMatrix,
 } from "../numbers/index.js";
-import { composeOperators, invertOperator, type SpaceGroup, type SymmetryOperator } from "../spacegroups/index.js";
-import { littleGroupElement } from "./evaluate.js";
+import type { SpaceGroup } from "../spacegroups/index.js";
+import { littleGroupPlaces } from "./evaluate.js";
 import { unitaryIntertwiner } from "./intertwiner.js";
+import { composePrimitive, invertPrimitive, primitiveOperator } from "./primitive-operators.js";
 import type { SmallIrrep, SmallIrreps } from "./types.js";
 
 /**
@@ -43,14 +44,11 @@ export interface MinusKLink {
 export function minusKRelation(group: SpaceGroup, irreps: SmallIrreps): MinusKRelation | null {
   const [operator] = star(group, irreps.k).reversing;
   if (operator === undefined) return null;
-  const reverse = group.operators[operator] as SymmetryOperator;
-  const back = invertOperator(reverse);
+  const reverse = primitiveOperator(group, operator);
+  const back = invertPrimitive(reverse);
+  const placed = littleGroupPlaces(group, irreps);
   const images = irreps.littleGroup.operators.map((index) =>
-    littleGroupElement(
-      group,
-      irreps,
-      composeOperators(composeOperators(back, group.operators[index] as SymmetryOperator), reverse),
-    ),
+    placed(composePrimitive(composePrimitive(back, primitiveOperator(group, index)), reverse)),
   );
   return {
     operator,

@@ -1,31 +1,63 @@
-import type { WaveVector } from "../kvectors/index.js";
 import {
   addCyclotomic,
-  addVectors,
   type Cyclotomic,
   conjugateCyclotomic,
   cyclotomicToRational,
   cyclotomicZero,
   equalCyclotomic,
+  type IntegerMatrix,
   isConstantForm,
   type LinearForm,
   multiplyCyclotomic,
   reduceOrder,
   rootOfUnity,
 } from "../numbers/index.js";
-import { composeOperators, invertOperator, type SymmetryOperator } from "../spacegroups/index.js";
-import { rotateColumn, translationColumn, waveTimesColumn } from "./setting.js";
+import type { LittleCoGroup } from "./little-co-group.js";
+import { composePrimitive, invertPrimitive, turnsOf } from "./primitive-operators.js";
 import type { Reality } from "./types.js";
 
+/** An operator of the little group: its element number and a root of unity that belongs to its translation. */
+interface PhasedElement {
+  readonly element: number;
+  readonly phase: Cyclotomic;
+}
+
 /**
- * What the test of reality needs: operators about the mean origin of the little co-group (so that every phase is a
- * short root of unity), the little group's element number of a rotation, and the reversing operators (kR ≡ −k).
+ * What the test of reality needs, made once for all irreps. All translations are about the mean origin of the little
+ * co-group, so that every phase is a short root of unity.
  */
 export interface RealityContext {
-  readonly k: WaveVector;
-  readonly elements: readonly SymmetryOperator[];
-  readonly reversing: readonly SymmetryOperator[];
-  readonly elementOf: (operator: SymmetryOperator) => number;
+  /** h² for each reversing operator h (kR ≡ −k), one per coset, with e^{2πi k·t}; empty where −k is not in the star. */
+  readonly squares: readonly PhasedElement[];
+  /** `g₀⁻¹ g g₀ = {R'|t'}` for each element `g = {R|t}`, g₀ the first reversing operator, with e^{2πi k·(t + t')}. */
+  readonly images: readonly PhasedElement[];
+}
+
+/** @param kappa primitive components of k */
+export function realityContext(
+  kappa: readonly LinearForm[],
+  coGroup: LittleCoGroup,
+  reversing: readonly number[],
+  elementOf: (rotation: IntegerMatrix) => number,
+): RealityContext {
+  const operators = reversing.map(coGroup.aboutOrigin);
+  const phased = (rotation: IntegerMatrix, translation: readonly number[]): PhasedElement => ({
+    element: elementOf(rotation),
+    phase: constantTurns(turnsOf(kappa, translation, coGroup.originDenominator)),
+  });
+  const squares = operators.map((operator) => composePrimitive(operator, operator));
+  const [reverse] = operators;
+  const back = reverse && invertPrimitive(reverse);
+  return {
+    squares: squares.map(({ rotation, translation }) => phased(rotation, translation)),
+    images: !back
+      ? []
+      : coGroup.elements.map((element) => {
+          const { rotation, translation } = composePrimitive(composePrimitive(back, element), reverse);
+          const sum = translation.map((entry, axis) => entry + (element.translation[axis] as number));
+          return phased(rotation, sum);
+        }),
+  };
 }
 
 /**
@@ -34,16 +66,13 @@ export interface RealityContext {
  *
  * @param character characters of Δ by element number
  */
-export function herringReality(context: RealityContext, character: readonly Cyclotomic[]): Reality {
-  let sum = cyclotomicZero;
-  for (const operator of context.reversing) {
-    const square = composeOperators(operator, operator);
-    const translation = addVectors(rotateColumn(operator, translationColumn(operator)), translationColumn(operator));
-    const phase = constantTurns(waveTimesColumn(context.k, translation));
-    sum = addCyclotomic(sum, multiplyCyclotomic(phase, character[context.elementOf(square)] as Cyclotomic));
-  }
+export function herringReality({ squares }: RealityContext, character: readonly Cyclotomic[]): Reality {
+  const sum = squares.reduce(
+    (total, { element, phase }) => addCyclotomic(total, multiplyCyclotomic(phase, character[element] as Cyclotomic)),
+    cyclotomicZero,
+  );
   const value = cyclotomicToRational(reduceOrder(sum));
-  const count = context.elements.length;
+  const count = character.length;
   if (value?.[1] === 1 && value[0] === count) return "real";
   if (value?.[1] === 1 && value[0] === -count) return "pseudoreal";
   if (value?.[0] === 0) return "complex";
@@ -51,19 +80,13 @@ export function herringReality(context: RealityContext, character: readonly Cycl
 }
 
 /**
- * Characters, by element number, of the irrep `D(g₀⁻¹ g g₀)*` of the same little group, g₀ the first reversing
- * operator: the irrep to which the complex conjugate belongs.
+ * Characters, by element number, of the irrep `D(g₀⁻¹ g g₀)*` of the same little group: the irrep to which the complex
+ * conjugate belongs.
  */
-export function conjugateCharacter(context: RealityContext, character: readonly Cyclotomic[]): Cyclotomic[] {
-  const [reverse] = context.reversing;
-  if (!reverse) throw new Error("−k is not in the star");
-  const back = invertOperator(reverse);
-  return context.elements.map((element) => {
-    const image = composeOperators(composeOperators(back, element), reverse);
-    const together = addVectors(translationColumn(image), translationColumn(element));
-    const phase = conjugateCyclotomic(constantTurns(waveTimesColumn(context.k, together)));
-    return multiplyCyclotomic(phase, conjugateCyclotomic(character[context.elementOf(image)] as Cyclotomic));
-  });
+export function conjugateCharacter({ images }: RealityContext, character: readonly Cyclotomic[]): Cyclotomic[] {
+  return images.map(({ element, phase }) =>
+    multiplyCyclotomic(conjugateCyclotomic(phase), conjugateCyclotomic(character[element] as Cyclotomic)),
+  );
 }
 
 export function sameCharacter(a: readonly Cyclotomic[], b: readonly Cyclotomic[]): boolean {

@@ -6,26 +6,26 @@ import {
   constantForm,
   cyclotomicToComplex,
   dotIntegers,
+  type IntegerMatrix,
   type Phase,
-  type RationalVector,
   rational,
   reduceOrder,
   reducePhase,
   traceCyclotomicMatrix,
   unitComplex,
-  vectorFrom,
 } from "../numbers/index.js";
+import type { SpaceGroup } from "../spacegroups/index.js";
+import { littleCoGroup } from "./little-co-group.js";
 import {
-  composeOperators,
-  fromPrimitiveColumn,
-  invertOperator,
-  type SpaceGroup,
-  type SymmetryOperator,
-} from "../spacegroups/index.js";
-import { type LittleCoGroup, littleCoGroup } from "./little-co-group.js";
+  composePrimitive,
+  invertPrimitive,
+  type PrimitiveOperator,
+  primitiveComponents,
+  primitiveOperator,
+  turnsOf,
+} from "./primitive-operators.js";
 import { projectiveIrreps } from "./projective-irreps.js";
-import { conjugateCharacter, herringReality, type RealityContext, sameCharacter } from "./reality.js";
-import { aboutPoint, translationColumn, waveTimesColumn } from "./setting.js";
+import { conjugateCharacter, herringReality, realityContext, sameCharacter } from "./reality.js";
 import type { Reality, SmallIrreps } from "./types.js";
 
 /**
@@ -41,13 +41,13 @@ import type { Reality, SmallIrreps } from "./types.js";
 export function smallIrreps(group: SpaceGroup, k: WaveVector): SmallIrreps {
   const placement = canonicalPlacement(group, k);
   const canonical = canonicalIrreps(group, placement.canonical);
-  const carrier = group.operators[placement.operator] as SymmetryOperator;
+  const carrier = primitiveOperator(group, placement.operator);
   const little = littleGroup(group, k);
-  const back = invertOperator(carrier);
+  const back = invertPrimitive(carrier);
   const images = little.operators.map((index) =>
-    composeOperators(composeOperators(back, group.operators[index] as SymmetryOperator), carrier),
+    composePrimitive(composePrimitive(back, primitiveOperator(group, index)), carrier),
   );
-  const elements = images.map(canonical.elementOf);
+  const elements = images.map(({ rotation }) => canonical.elementOf(rotation));
   const phases = images.map((image, index) => canonical.phaseOf(elements[index] as number, image));
   const { arms, minusK } = star(group, k);
   return {
@@ -85,73 +85,47 @@ interface CanonicalIrrep {
 
 interface CanonicalIrreps {
   readonly irreps: readonly CanonicalIrrep[];
-  /** Element number in the canonical little co-group of an operator of the canonical little group. */
-  readonly elementOf: (operator: SymmetryOperator) => number;
-  /** k·t + H·p of such an operator. */
-  readonly phaseOf: (element: number, operator: SymmetryOperator) => Phase;
+  /** Element number in the canonical little co-group of a rotation of the canonical little group. */
+  readonly elementOf: (rotation: IntegerMatrix) => number;
+  /** k·t + H·p of an operator of that group. */
+  readonly phaseOf: (element: number, operator: PrimitiveOperator) => Phase;
 }
 
 function canonicalIrreps(group: SpaceGroup, k: WaveVector): CanonicalIrreps {
   const coGroup = littleCoGroup(group, k);
   const { operators, shifts } = coGroup.littleGroup;
   const elementByRotation = new Map(
-    operators.map((operator, element) => [rotationKey(group.operators[operator] as SymmetryOperator), element]),
+    operators.map((operator, element) => [primitiveOperator(group, operator).rotation.join(), element]),
   );
-  const elementOf = (operator: SymmetryOperator): number => {
-    const element = elementByRotation.get(rotationKey(operator));
+  const elementOf = (rotation: IntegerMatrix): number => {
+    const element = elementByRotation.get(rotation.join());
     if (element === undefined) throw new Error("an operator is not in the little group");
     return element;
   };
-  const gauge = (element: number): Phase =>
-    constantForm(
-      rational(dotIntegers(shifts[element] as readonly number[], coGroup.origin), coGroup.originDenominator),
-    );
-  const phaseOf = (element: number, operator: SymmetryOperator): Phase =>
-    reducePhase(addForms(waveTimesColumn(k, translationColumn(operator)), gauge(element)));
-  const context = realityContext(group, k, coGroup, elementOf);
+  const gauges = shifts.map((shift) =>
+    constantForm(rational(dotIntegers(shift, coGroup.origin), coGroup.originDenominator)),
+  );
+  const kappa = primitiveComponents(group, k);
+  const phaseOf = (element: number, { translation }: PrimitiveOperator): Phase =>
+    reducePhase(addForms(turnsOf(kappa, translation, group.primitive.denominator), gauges[element] as Phase));
+  const context = realityContext(kappa, coGroup, star(group, k).reversing, elementOf);
   const made = projectiveIrreps(coGroup).map((matrices) => ({
     matrices: matrices.map((matrix) => matrix.map((row) => row.map(reduceOrder))),
     character: matrices.map((matrix) => reduceOrder(traceCyclotomicMatrix(matrix))),
   }));
-  const sorted = sortIrreps(
-    made,
-    operators.map((_, element) => gauge(element)),
-  );
+  const sorted = sortIrreps(made, gauges);
   const realities = sorted.map(({ character }) => herringReality(context, character));
   const irreps = sorted.map(({ matrices, character }, position) => ({
     dimension: (matrices[0] as CyclotomicMatrix).length,
     reality: realities[position] as Reality,
     conjugate:
-      realities[position] === "complex" && context.reversing.length > 0
+      realities[position] === "complex" && context.images.length > 0
         ? findCharacter(sorted, conjugateCharacter(context, character))
         : null,
     matrices,
     character,
   }));
   return { irreps, elementOf, phaseOf };
-}
-
-function rotationKey(operator: SymmetryOperator): string {
-  return `${operator.rotation.join(" ")}/${operator.rotationDenominator}`;
-}
-
-function realityContext(
-  group: SpaceGroup,
-  k: WaveVector,
-  coGroup: LittleCoGroup,
-  elementOf: (operator: SymmetryOperator) => number,
-): RealityContext {
-  const origin: RationalVector = fromPrimitiveColumn(
-    group.lattice,
-    vectorFrom(coGroup.origin, coGroup.originDenominator),
-  );
-  const moved = (index: number): SymmetryOperator => aboutPoint(group.operators[index] as SymmetryOperator, origin);
-  return {
-    k,
-    elements: coGroup.littleGroup.operators.map(moved),
-    reversing: star(group, k).reversing.map(moved),
-    elementOf,
-  };
 }
 
 interface MadeIrrep {

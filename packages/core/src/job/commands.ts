@@ -9,6 +9,7 @@ export interface CommandEntry {
 }
 
 const peakFields = ["peaks", "as", "wavelength", "tolerance", "unmatched", "qMax"] as const;
+const conventionFields = ["exponent", "phase", "factor", "components"] as const;
 const searchFields = ["maxDimension", "zeroShift", "cellScale"] as const;
 
 /** The commands of this version, in the order of the manual. */
@@ -25,16 +26,24 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
     takes: ["study", "group"],
     load: async () => (await import("./commands/ops.js")).opsCommand,
   },
+  atlas: {
+    takes: ["study", "group", "k", "cell", "within"],
+    load: async () => (await import("./commands/atlas.js")).atlasCommand,
+  },
   star: {
     takes: ["study", "group", "k"],
     load: async () => (await import("./commands/star.js")).starCommand,
   },
   irreps: {
-    takes: ["study", "group", "k"],
+    takes: ["study", "group", "k", "full"],
     load: async () => (await import("./commands/irreps.js")).irrepsCommand,
   },
+  compatibility: {
+    takes: ["study", "group", "from", "to"],
+    load: async () => (await import("./commands/compatibility.js")).compatibilityCommand,
+  },
   modes: {
-    takes: ["study", "group", "k", "sites", "polar"],
+    takes: ["study", "group", "k", "sites", "cell", "polar", "star", ...conventionFields],
     load: async () => (await import("./commands/modes.js")).modesCommand,
   },
   satellites: {
@@ -62,8 +71,6 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
 /** Commands of the interface that this version answers with `not-built`. */
 export const plannedCommands: readonly string[] = [
   "study",
-  "atlas",
-  "compatibility",
   "configurations",
   "decompose",
   "weigh",

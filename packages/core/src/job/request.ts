@@ -10,10 +10,24 @@ export interface Request {
   readonly study?: string | null;
   readonly group?: string | null;
   readonly k?: string | null;
+  /** `atlas`: how near in Å⁻¹ special k are listed. */
+  readonly within?: string | null;
+  /** `compatibility`: the k whose irreps are split, and the line or plane through it. */
+  readonly from?: string | null;
+  readonly to?: string | null;
+  /** `irreps`: the irreps of the whole space group too. */
+  readonly full?: boolean;
   readonly cell?: string | null;
   readonly sites?: readonly string[] | null;
   /** Polar vectors (displacements) instead of moments. */
   readonly polar?: boolean;
+  /** `modes`: the basis vectors on every arm of the star. */
+  readonly star?: boolean;
+  /** `modes`: how Fourier components are written. */
+  readonly exponent?: string | null;
+  readonly phase?: string | null;
+  readonly factor?: string | null;
+  readonly components?: string | null;
   /** Path of a peak list. */
   readonly peaks?: string | null;
   readonly as?: string | null;
@@ -51,9 +65,18 @@ export const argumentNames: { readonly [field in RequestField]: string } = {
   study: "STUDY",
   group: "GROUP",
   k: "--k",
+  within: "--within",
+  from: "--from",
+  to: "--to",
+  full: "--full",
   cell: "--cell",
   sites: "--site",
   polar: "--polar",
+  star: "--star",
+  exponent: "--exponent",
+  phase: "--phase",
+  factor: "--factor",
+  components: "--components",
   peaks: "--peaks",
   as: "--as",
   wavelength: "--wavelength",

@@ -1,13 +1,12 @@
 import { breathe } from "../algorithms/index.js";
-import { smallIrreps } from "../irreps/index.js";
+import { minusKRelation, smallIrreps } from "../irreps/index.js";
 import { numericWaveVector, type WaveVector, waveVectorToJson } from "../kvectors/index.js";
-import { siteModes } from "../modes/index.js";
+import { ownWriting } from "../modes/index.js";
 import {
   type BranchRecord,
   cellRecord,
   groupRecord,
   irrepsRecord,
-  modesRecord,
   peaksRecord,
   type RunRecord,
   resultFileNames,
@@ -17,6 +16,7 @@ import { numberOption } from "./inputs/number-input.js";
 import { coincidencesOf } from "./study/coincidences.js";
 import { type FoundK, findK } from "./study/find-k.js";
 import { nextSteps } from "./study/next-steps.js";
+import { modesOf } from "./study/modes-of.js";
 import { readStudy, type StudyInputs, satelliteLimit } from "./study/read-study.js";
 import { satellitesOf } from "./study/satellites-of.js";
 import { starOf } from "./study/star-of.js";
@@ -62,17 +62,19 @@ function followBranch(inputs: StudyInputs, { k, candidate }: FoundK): BranchReco
     k: waveVectorToJson(k),
     candidate,
     star: starOf(group, k),
-    ...representationsOf(group, k, orbits),
+    ...representationsOf(group, cell, k, orbits),
     configurations: null,
     satellites: satelliteList(inputs, cell, k),
     weigh: null,
   };
 }
 
-function representationsOf(group: SpaceGroup, k: WaveVector, orbits: readonly SiteOrbit[]) {
+function representationsOf(group: SpaceGroup, cell: Cell | null, k: WaveVector, orbits: readonly SiteOrbit[]) {
   const irreps = smallIrreps(group, k);
-  const sites = orbits.map((orbit) => siteModes(group, irreps, orbit));
-  return { irreps: irrepsRecord(group, irreps), modes: modesRecord(group, irreps, sites, { axial: true }) };
+  return {
+    irreps: irrepsRecord(group, irreps, minusKRelation(group, irreps)),
+    modes: modesOf(group, irreps, orbits, { axial: true, cell, convention: ownWriting, star: false }),
+  };
 }
 
 /** Positions need a cell and a number for every letter. */

@@ -1,8 +1,9 @@
 /**
  * Which k is it, and what leaves it alone? Exact wave vectors as rows in the reciprocal basis of the setting, modulo
- * L* (docs/conventions.md, Wave vectors): equivalence, little group, star, the manifold a k lies on, special points.
+ * L* (docs/conventions.md, Wave vectors): equivalence, little group, star, the manifold a k lies on, the atlas of all
+ * kinds of k and the special points.
  * Sources: Bradley & Cracknell, The Mathematical Theory of Symmetry in Solids (1972), chapter 3; Wintgen, Math. Ann.
- * 118 (1941) 195.
+ * 118 (1941) 195; International Tables for Crystallography B, chapter 1.5.
  */
 export type { Assumption } from "../errors/index.js";
 export { atlas } from "./atlas.js";

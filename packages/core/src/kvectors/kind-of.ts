@@ -1,6 +1,6 @@
 import { modulo, safe } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
-import { type ActingRotation, extendedPointGroup, fixedRows, fixingForm } from "./acting-rotations.js";
+import { type ActingRotation, extendedPointGroup, fixedDimension, fixedRows, fixingForm } from "./acting-rotations.js";
 import {
   type DirectionTable,
   directionTable,
@@ -25,27 +25,35 @@ export function kindOf(
   k: WaveVector,
   options: { readonly withInversion: boolean },
 ): number {
-  const acting = extendedPointGroup(group).filter(({ own }) => own || options.withInversion);
-  const table = directionTable();
+  const { withInversion } = options;
+  const acting = extendedPointGroup(group).filter(({ own }) => own || withInversion);
   const form = toIntegerForm(group.lattice, k);
   const fixing = fixingForm(acting, form);
-  const flat = flatFixedBy(fixing, form, table);
+  const dimension = fixedDimension(fixing);
+  const order = fixing.filter(({ own }) => own).length;
+  const candidates = [...kinds.keys()].filter((index) => {
+    const kind = kinds[index] as KindOfK;
+    return (withInversion ? kind.dimensionPM : kind.dimension) === dimension && kind.littleCoGroup.order === order;
+  });
+  if (candidates.length === 1) return candidates[0] as number;
+  const table = directionTable();
+  const images = imageNames(flatFixedBy(fixing, form, table), acting, table);
+  const found = candidates.find((index) => {
+    const other = toIntegerForm(group.lattice, (kinds[index] as KindOfK).k);
+    return images.has(flatName(flatFixedBy(fixingForm(acting, other), other, table)));
+  });
+  if (found === undefined) throw new Error("a wave vector lies on no kind of the atlas");
+  return found;
+}
+
+function imageNames(flat: Flat, acting: readonly ActingRotation[], table: DirectionTable): ReadonlySet<string> {
   const point = pointOfFlat(flat);
-  const images = new Set(
+  return new Set(
     acting.map(({ matrix }) => {
       const rows = flat.lattice.rows.map((row) => rotateRow(row, matrix));
       return flatName(flatThrough(table(rows), rotateRow(point, matrix)));
     }),
   );
-  const order = fixing.filter(({ own }) => own).length;
-  const index = kinds.findIndex((kind) => {
-    const dimension = options.withInversion ? kind.dimensionPM : kind.dimension;
-    if (kind.littleCoGroup.order !== order || dimension !== flat.lattice.rows.length) return false;
-    const kindForm = toIntegerForm(group.lattice, kind.k);
-    return images.has(flatName(flatFixedBy(fixingForm(acting, kindForm), kindForm, table)));
-  });
-  if (index < 0) throw new Error("a wave vector lies on no kind of the atlas");
-  return index;
 }
 
 /**

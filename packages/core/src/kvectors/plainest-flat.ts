@@ -1,4 +1,4 @@
-import { gcd, gcdOf, lcm, modulo, type RationalVector, safe, vectorFrom } from "../numbers/index.js";
+import { gcd, gcdOf, lcm, type RationalVector, safe, vectorFrom } from "../numbers/index.js";
 import { type AffineSet, affineForms } from "./affine.js";
 import { type DirectionLattice, type Flat, pointDenominator } from "./flats.js";
 import { combine, type DualBasis, descend, minusSigns, neighbourSteps, nonZeros, sumOfSquares } from "./plainest.js";
@@ -112,10 +112,7 @@ export function plainestOf(placed: readonly PlacedFlat[]): PlacedFlat {
 /** The base with the place across centred. */
 function startOf(flat: Flat, frame: SettingFrame): readonly number[] {
   return combine(
-    flat.across.map((entry) => {
-      const rest = modulo(entry, pointDenominator);
-      return 2 * rest > pointDenominator ? rest - pointDenominator : rest;
-    }),
+    flat.across.map((entry) => (2 * entry > pointDenominator ? entry - pointDenominator : entry)),
     frame.units,
   );
 }

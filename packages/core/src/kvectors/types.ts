@@ -61,7 +61,7 @@ export interface KindOfK {
   readonly arms: number;
   /** The value for a generic k of the kind. */
   readonly minusK: MinusK;
-  /** The k with 2k ∈ L* that are of this kind. */
+  /** The k with 2k ∈ L* that are of this kind and of no smaller one: one of each star, on the form `k`, plainest first. */
   readonly halfLattice: readonly WaveVector[];
 }
 

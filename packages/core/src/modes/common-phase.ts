@@ -25,7 +25,10 @@ export function withPlainPhase(terms: readonly Term[]): Term[] {
   const [first] = terms;
   if (!first) return [];
   const common = first.moments.some((moment) => moment.conjugate) ? null : leadingPhase(first);
-  return terms.map((term) => scaled(common === null ? term : shifted(term, common)));
+  // One scale a letter: its terms with different components of the order parameter must keep their ratio.
+  const scales = new Map<string, Cyclotomic | null>();
+  for (const term of terms) if (!scales.has(term.letter)) scales.set(term.letter, plainScale(term));
+  return terms.map((term) => scaled(common === null ? term : shifted(term, common), scales.get(term.letter) ?? null));
 }
 
 function leading(term: Term): { phase: Phase; entry: Cyclotomic } | null {
@@ -74,11 +77,15 @@ function shifted(term: Term, { phase, root }: CommonPhase): Term {
   };
 }
 
-function scaled(term: Term): Term {
+/** |leading entry|⁻¹ of a term, the real scale that its letter takes up; null where it has no simple form. */
+function plainScale(term: Term): Cyclotomic | null {
   const found = leading(term);
   const size = found && modulus(found.entry);
-  if (!size) return term;
-  const factor = invertCyclotomic(size);
+  return size && invertCyclotomic(size);
+}
+
+function scaled(term: Term, factor: Cyclotomic | null): Term {
+  if (factor === null) return term;
   return {
     ...term,
     moments: term.moments.map((moment) => ({

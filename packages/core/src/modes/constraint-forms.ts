@@ -1,7 +1,8 @@
 import { waveTimesColumn } from "../irreps/index.js";
 import { isHalfLattice, type WaveVector } from "../kvectors/index.js";
-import { addForms, isCyclotomicZero, negateForm } from "../numbers/index.js";
-import { type Cell, directMetric, type SiteOrbit, type SpaceGroup } from "../spacegroups/index.js";
+import { addForms, isCyclotomicZero, negateForm, zeroForm } from "../numbers/index.js";
+import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
+import { axisLengths } from "./averaged-metric.js";
 import { withPlainPhase } from "./common-phase.js";
 import { constraintTerms, type Term, termTable } from "./constraint-table.js";
 import { type FourierConvention, ownConvention, toConvention } from "./fourier-conventions.js";
@@ -34,7 +35,7 @@ export function constraintTexts(
   options: ConstraintOptions = {},
 ): ConstraintTexts {
   const { k } = site.representations;
-  if (part.modes.length === 0) return { lattice: [], crystal: null };
+  if (part.modes.length === 0 || isPlain(options)) return { lattice: part.constraint, crystal: null };
   const half = isHalfLattice(group, k);
   const conjugate = site.irreps.find(({ irrep }) => irrep.label === part.irrep.conjugateOf)?.modes ?? [];
   const terms = constraintTerms(part.modes, half ? { conjugate } : null);
@@ -49,6 +50,7 @@ export function orderParameterTexts(
   options: ConstraintOptions = {},
 ): ConstraintTexts | null {
   if (part.minusK === null || part.minusK.constraint === null) return null;
+  if (isPlain(options)) return { lattice: part.minusK.constraint, crystal: null };
   const terms = orderParameterTerms(part.minusK, part.modes);
   // Letters that meet their conjugate are complex, the others real.
   const isComplex = ({ moments }: Term): boolean => moments.some(({ conjugate }) => conjugate === true);
@@ -66,16 +68,17 @@ export function constraintCrystal(
   return constraintTexts(group, site, part, { cell }).crystal;
 }
 
-function texts(
-  group: SpaceGroup,
-  site: SiteModes,
-  terms: readonly Term[],
-  { cell }: ConstraintOptions,
-): ConstraintTexts {
+function texts(group: SpaceGroup, site: SiteModes, terms: readonly Term[], { cell }: ConstraintOptions): ConstraintTexts {
   const { k } = site.representations;
   const atoms = site.orbit.positions.length;
   const crystal = cell ? crystalTerms(axisLengths(group, cell), terms) : null;
   return { lattice: termTable(k, terms, atoms), crystal: crystal && termTable(k, crystal, atoms) };
+}
+
+/** Without a cell kvane's own convention asks for nothing but what is there. */
+function isPlain({ convention = ownConvention, cell }: ConstraintOptions): boolean {
+  const { exponent, phase } = convention;
+  return !cell && exponent === ownConvention.exponent && phase === ownConvention.phase;
 }
 
 /** The terms in a convention; partners (`u1`, `u2`) live on one suborbit, so they take up the same phase. */
@@ -144,23 +147,4 @@ export function leadingAxis({ moments }: Pick<Term, "moments">): 0 | 1 | 2 {
 /** Lengths that symmetry makes equal differ by rounding only. */
 function plainRatio(ratio: number): number {
   return Math.abs(ratio - 1) < 1e-9 ? 1 : ratio;
-}
-
-/**
- * Lengths of the axes in Å in the metric averaged over the point group, `G = (1/n) Σ RᵀGR`: cells are given to four
- * digits, and axes that symmetry makes equivalent must have one length.
- */
-export function axisLengths(group: SpaceGroup, cell: Cell): [number, number, number] {
-  const metric = directMetric(cell);
-  const length = (axis: 0 | 1 | 2): number => {
-    const squares = group.operators.map(({ rotation, rotationDenominator }) => {
-      const image = [0, 1, 2].map((row) => (rotation[3 * row + axis] as number) / rotationDenominator);
-      return image.reduce(
-        (sum, x, i) => sum + image.reduce((inner, y, j) => inner + x * (metric[3 * i + j] as number) * y, 0),
-        0,
-      );
-    });
-    return Math.sqrt(squares.reduce((sum, square) => sum + square, 0) / squares.length);
-  };
-  return [length(0), length(1), length(2)];
 }

@@ -5,6 +5,7 @@ import {
   cyclotomicNumbers,
   cyclotomicToRational,
   cyclotomicZero,
+  equalCyclotomic,
   equalForms,
   formatCyclotomic,
   isCyclotomicZero,
@@ -89,7 +90,8 @@ function realTerms(modes: readonly Mode[]): Term[] {
     const row = mode.moments.flatMap(({ phase, vector }) =>
       vector.map((entry) => multiplyCyclotomic(rootOfUnity(phase.constant), entry)),
     );
-    return [row, row.map(conjugateCyclotomic)];
+    const conjugate = row.map(conjugateCyclotomic);
+    return row.every((entry, index) => equalCyclotomic(entry, conjugate[index] as Cyclotomic)) ? [row] : [row, conjugate];
   });
   return reducedEchelon(rows, cyclotomicNumbers).rows.map((row, index) => ({
     letter: letterOf(index),

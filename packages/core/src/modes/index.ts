@@ -5,13 +5,12 @@
  * Moments and phases; Modes, amplitudes, real moments). Source: Bertaut, Acta Cryst. A24 (1968) 217.
  */
 export { cartesianAxes, convertComponents } from "./components.js";
+export { axisLengths } from "./averaged-metric.js";
 export {
-  axisLengths,
   type ConstraintOptions,
   type ConstraintTexts,
   constraintCrystal,
   constraintTexts,
-  leadingAxis,
   orderParameterTexts,
 } from "./constraint-forms.js";
 export {
@@ -25,3 +24,13 @@ export { type MomentSizes, momentSizes } from "./moment-sizes.js";
 export { siteModes } from "./site-modes.js";
 export { type ArmModes, starModes } from "./star-modes.js";
 export type { IrrepModes, MinusKOnModes, Mode, ModeMoment, SiteModes } from "./types.js";
+export {
+  ownWriting,
+  type WritingConvention,
+  type WritingOptions,
+  type WrittenArm,
+  type WrittenIrrep,
+  type WrittenMode,
+  type WrittenSite,
+  writtenSite,
+} from "./written-site.js";

@@ -6,8 +6,6 @@ import {
   type CyclotomicMatrix,
   cyclotomicFromRational,
   cyclotomicNumbers,
-  cyclotomicOne,
-  cyclotomicZero,
   isConstantForm,
   type LinearForm,
   multiplyCyclotomicMatrices,
@@ -59,13 +57,14 @@ export function siteIntertwiners(
   const projected: Cyclotomic[][] = [];
   for (let partner = 0; partner < dimension; partner++)
     for (let axis = 0; axis < 3; axis++) {
-      const seed = [0, 1, 2].map((row) =>
-        Array.from({ length: dimension }, (_, column) =>
-          row === axis && column === partner ? cyclotomicOne : cyclotomicZero,
-        ),
-      );
+      // Γ(s) E D(s)⁻¹ for the elementary matrix E that is 1 at (axis, partner): a column times a row.
       const mean = operators
-        .map(({ left, right }) => multiplyCyclotomicMatrices(multiplyCyclotomicMatrices(left, seed), right))
+        .map(({ left, right }) =>
+          multiplyCyclotomicMatrices(
+            left.map((row) => [row[axis] as Cyclotomic]),
+            [right[partner] as readonly Cyclotomic[]],
+          ),
+        )
         .reduce(addCyclotomicMatrices);
       projected.push(mean.flat());
     }

@@ -27,7 +27,10 @@ export interface IrrepModes {
   readonly constraint: readonly string[];
   /** Free real parameters of one arm's Fourier components. */
   readonly freeParameters: number;
-  /** The same when one order parameter drives all copies, with the relation between k and −k where there is one. */
+  /**
+   * Where −k is in another arm: the same when one order parameter drives all copies, which the relation between k and
+   * −k then ties together. Elsewhere there is no such relation and it equals `freeParameters`.
+   */
   readonly freeParametersWithMinusK: number;
   /** The relation itself; null where k ≡ −k or −k is not in the star. */
   readonly minusK: MinusKOnModes | null;

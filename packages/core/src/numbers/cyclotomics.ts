@@ -16,6 +16,7 @@ export interface Cyclotomic {
 
 export const cyclotomicZero: Cyclotomic = { order: 1, denominator: 1, coefficients: [0] };
 export const cyclotomicOne: Cyclotomic = { order: 1, denominator: 1, coefficients: [1] };
+const cyclotomicMinusOne: Cyclotomic = { order: 1, denominator: 1, coefficients: [-1] };
 
 export function cyclotomicFromRational([numerator, denominator]: Rational): Cyclotomic {
   return { order: 1, denominator, coefficients: [numerator] };
@@ -24,6 +25,7 @@ export function cyclotomicFromRational([numerator, denominator]: Rational): Cycl
 /** e^{2πi·turns}, turns an exact fraction. */
 export function rootOfUnity([numerator, denominator]: Rational): Cyclotomic {
   if (denominator === 1) return cyclotomicOne;
+  if (denominator === 2) return cyclotomicMinusOne;
   const field = cyclotomicField(denominator);
   return { order: denominator, denominator: 1, coefficients: field.powers[modulo(numerator, denominator)] as number[] };
 }
@@ -61,7 +63,7 @@ function addScaled(target: number[], source: readonly number[], factor: number):
 }
 
 function combine(a: Cyclotomic, b: Cyclotomic, sign: 1 | -1): Cyclotomic {
-  const order = lcm(a.order, b.order);
+  const order = a.order === b.order ? a.order : lcm(a.order, b.order);
   const left = liftCyclotomic(a, order);
   const right = liftCyclotomic(b, order);
   const denominator = lcm(left.denominator, right.denominator);
@@ -90,6 +92,8 @@ export function negateCyclotomic(a: Cyclotomic): Cyclotomic {
 
 export function multiplyCyclotomic(a: Cyclotomic, b: Cyclotomic): Cyclotomic {
   if (isCyclotomicZero(a) || isCyclotomicZero(b)) return cyclotomicZero;
+  if (a.order === 1) return timesFraction(b, a);
+  if (b.order === 1) return timesFraction(a, b);
   const order = lcm(a.order, b.order);
   const left = liftCyclotomic(a, order);
   const right = liftCyclotomic(b, order);
@@ -102,6 +106,16 @@ export function multiplyCyclotomic(a: Cyclotomic, b: Cyclotomic): Cyclotomic {
     });
   });
   return normalized(order, coefficients, safe(left.denominator * right.denominator));
+}
+
+function timesFraction(a: Cyclotomic, { coefficients, denominator }: Cyclotomic): Cyclotomic {
+  const factor = coefficients[0] as number;
+  if (factor === 1 && denominator === 1) return a;
+  return normalized(
+    a.order,
+    a.coefficients.map((entry) => factor * entry),
+    safe(denominator * a.denominator),
+  );
 }
 
 /** Applies ζ → ζ^residue; residue −1 is complex conjugation. */
@@ -120,16 +134,20 @@ export function conjugateCyclotomic(a: Cyclotomic): Cyclotomic {
   return galois(a, -1);
 }
 
+function isFraction({ coefficients }: Cyclotomic): boolean {
+  for (let index = 1; index < coefficients.length; index++) if (coefficients[index] !== 0) return false;
+  return true;
+}
+
 /** The value as a fraction when it is one, else null. */
 export function cyclotomicToRational(a: Cyclotomic): Rational | null {
-  return a.coefficients.some((entry, index) => index > 0 && entry !== 0)
-    ? null
-    : rational(a.coefficients[0] as number, a.denominator);
+  return isFraction(a) ? rational(a.coefficients[0] as number, a.denominator) : null;
 }
 
 /** 1/a through the product of all Galois conjugates, whose product with `a` is the rational norm. */
 export function invertCyclotomic(a: Cyclotomic): Cyclotomic {
   if (isCyclotomicZero(a)) fail("invalid-number", "an exact division by 0");
+  if (a.order === 1) return cyclotomicFromRational(rational(a.denominator, a.coefficients[0] as number));
   let cofactor = conjugateCyclotomic(a);
   let norm = cyclotomicToRational(multiplyCyclotomic(a, cofactor));
   if (norm === null) {
@@ -148,6 +166,9 @@ export function divideCyclotomic(a: Cyclotomic, b: Cyclotomic): Cyclotomic {
 }
 
 export function equalCyclotomic(a: Cyclotomic, b: Cyclotomic): boolean {
+  // In one field the form is unique.
+  if (a.order === b.order)
+    return a.denominator === b.denominator && a.coefficients.every((entry, index) => entry === b.coefficients[index]);
   return isCyclotomicZero(subtractCyclotomic(a, b));
 }
 
@@ -156,7 +177,8 @@ export function reduceOrder(a: Cyclotomic): Cyclotomic {
   let current = a;
   for (let prime = 2; prime <= current.order; prime++) {
     while (current.order % prime === 0) {
-      const smaller = inSubfield(current, current.order / prime);
+      if (isFraction(current)) return normalized(1, [current.coefficients[0] as number], current.denominator);
+      const smaller = inSubfield(current, prime);
       if (smaller === null) break;
       current = smaller;
     }
@@ -164,23 +186,27 @@ export function reduceOrder(a: Cyclotomic): Cyclotomic {
   return current;
 }
 
-/**
- * `a` written in Q(ζ_M), M = order, or null when it is not in that field. It is in it exactly when every Galois map
- * ζ → ζ^r with r ≡ 1 mod M leaves it alone.
- */
-function inSubfield(a: Cyclotomic, order: number): Cyclotomic | null {
-  const residues = unitsModulo(a.order).filter((residue) => modulo(residue, order) === modulo(1, order));
-  if (
-    residues.some((residue) => galois(a, residue).coefficients.some((entry, index) => entry !== a.coefficients[index]))
-  )
-    return null;
-  const step = a.order / order;
-  const { degree } = cyclotomicField(order);
+/** `a` written in Q(ζ_M), M its order divided by a prime, or null when it is not in that field. */
+function inSubfield(a: Cyclotomic, prime: number): Cyclotomic | null {
+  const order = a.order / prime;
+  const { coefficients, denominator } = a;
+  if (order % prime === 0) {
+    // φ(N) = p φ(M), so that the powers of ζ_M = ζ_N^p are those powers of ζ_N in the basis that p divides.
+    if (coefficients.some((entry, exponent) => entry !== 0 && exponent % prime !== 0)) return null;
+    return { order, coefficients: coefficients.filter((_, exponent) => exponent % prime === 0), denominator };
+  }
   const columns = Array.from(
-    { length: degree },
-    (_, exponent) => cyclotomicField(a.order).powers[exponent * step] as number[],
+    { length: cyclotomicField(order).degree },
+    (_, exponent) => cyclotomicField(a.order).powers[exponent * prime] as number[],
   );
-  return solveIntegerSystem(a, order, columns);
+  return isFixedOver(a, order) ? solveIntegerSystem(a, order, columns) : null;
+}
+
+/** Whether every Galois map ζ → ζ^r with r ≡ 1 mod M leaves `a` alone; it is in Q(ζ_M), M = order, exactly then. */
+function isFixedOver(a: Cyclotomic, order: number): boolean {
+  return unitsModulo(a.order)
+    .filter((residue) => modulo(residue, order) === modulo(1, order))
+    .every((residue) => galois(a, residue).coefficients.every((entry, index) => entry === a.coefficients[index]));
 }
 
 /** Gaussian elimination over the rationals of the small integer system Σ x_e column_e = a. */
@@ -274,5 +300,5 @@ export const cyclotomicNumbers: Field<Cyclotomic> = {
   isZero: isCyclotomicZero,
   subtract: subtractCyclotomic,
   multiply: multiplyCyclotomic,
-  divide: divideCyclotomic,
+  invert: invertCyclotomic,
 };

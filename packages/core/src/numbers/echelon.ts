@@ -1,4 +1,4 @@
-import { divide, isZero, multiply, type Rational, subtract } from "./rationals.js";
+import { divide, isZero, multiply, one, type Rational, subtract } from "./rationals.js";
 
 /**
  * The arithmetic that the exact reduced echelon form needs, so that one elimination serves fractions and cyclotomic
@@ -8,10 +8,15 @@ export interface Field<T> {
   isZero(value: T): boolean;
   subtract(a: T, b: T): T;
   multiply(a: T, b: T): T;
-  divide(a: T, b: T): T;
+  invert(value: T): T;
 }
 
-export const rationalField: Field<Rational> = { isZero, subtract, multiply, divide };
+export const rationalField: Field<Rational> = {
+  isZero,
+  subtract,
+  multiply,
+  invert: (value) => divide(one, value),
+};
 
 /**
  * Reduced row echelon form of `rows` (all of one length): leading entries 1, zero above and below them, zero rows left
@@ -28,7 +33,8 @@ export function reducedEchelon<T>(rows: readonly (readonly T[])[], field: Field<
     const pivotRow = work[found] as T[];
     work[found] = work[top] as T[];
     const lead = pivotRow[column] as T;
-    const scaled = pivotRow.map((entry) => (field.isZero(entry) ? entry : field.divide(entry, lead)));
+    const inverse = field.invert(lead);
+    const scaled = pivotRow.map((entry) => (field.isZero(entry) ? entry : field.multiply(entry, inverse)));
     work[top] = scaled;
     for (let index = 0; index < work.length; index++) {
       const row = work[index] as T[];

@@ -4,13 +4,16 @@
  * records alone, so that nothing is printed that the JSON does not hold. Exact numbers are texts, measured ones numbers
  * that went through the one formatter, complex ones `[re, im]`. Conventions: docs/conventions.md.
  */
+export { atlasRecord, type PlacedK } from "./building/atlas.js";
 export { checkedSiteRecord } from "./building/check.js";
+export { compatibilityRecord } from "./building/compatibility.js";
 export { modesRecord } from "./building/modes.js";
 export { cellRecord, groupRecord, littleGroupRecord } from "./building/names.js";
 export { overlapRecord, peaksRecord, satellitesRecord, searchRecord } from "./building/peaks.js";
 export { irrepsRecord, opsRecord, starRecord } from "./building/symmetry.js";
 export { commandsWithTable, reportCsv } from "./csv/report-csv.js";
 export { jsonText } from "./json-text.js";
+export type { AtlasRecord, KindRecord, NearbyKindRecord, PlacedKRecord } from "./records/atlas.js";
 export type { CheckedSiteRecord, CheckRecord } from "./records/check.js";
 export type {
   AssumedRecord,
@@ -22,8 +25,23 @@ export type {
   KRecord,
   LittleGroupRecord,
 } from "./records/common.js";
-export type { ExactIrrepRecord, IrrepRecord, IrrepsRecord } from "./records/irreps.js";
-export type { IrrepModesRecord, ModeRecord, ModesRecord, SiteModesRecord } from "./records/modes.js";
+export type { CompatibilityRecord, NamedIrrepRecord, PartRecord } from "./records/compatibility.js";
+export type {
+  ExactIrrepRecord,
+  FullIrrepsRecord,
+  IrrepRecord,
+  IrrepsRecord,
+  MinusKRelationRecord,
+} from "./records/irreps.js";
+export type {
+  ArmModesRecord,
+  ConventionRecord,
+  IrrepModesRecord,
+  MinusKModesRecord,
+  ModeRecord,
+  ModesRecord,
+  SiteModesRecord,
+} from "./records/modes.js";
 export type { OpsRecord } from "./records/ops.js";
 export type { BranchRecord, RunRecord } from "./records/run.js";
 export type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "./records/satellites.js";

@@ -51,7 +51,7 @@ export function weigher(group: SpaceGroup, model: PeakModel): Weigher {
     const { k, explanation, refinement, corrections } = refined;
     const kind = kindOf(k);
     const flat = manifold(group, k, { withInversion: true });
-    const tuning = tuningOf(group, model, refined);
+    const tuning = tuningOf(group, model, refined, charges !== null);
     const letters = refinement?.determined ? (k.values ?? []).length : 0;
     const residuals = statisticsOf(explanation, letters + corrections.length);
     const candidate: Candidate = {
@@ -101,8 +101,10 @@ function tuningOf(
   group: SpaceGroup,
   model: PeakModel,
   { k, explanation, refinement, corrections }: Refined,
+  searched: boolean,
 ): number {
-  if (refinement === null ? corrections.length === 0 : !refinement.determined) return 0;
+  // A given k that nothing moved was not tuned; one that a search came to was, however little the peaks fix it.
+  if (refinement === null ? corrections.length === 0 : !refinement.determined && !searched) return 0;
   const values = [...(k.values ?? []), ...corrections.map(({ value }) => value)];
   const { jacobian } = model.equations(k, explanation.assignments, Float64Array.from(values));
   const set = refinement === null ? isolated : tunedSet(group, k, model.metric, 2 * model.tolerance);

@@ -32,6 +32,11 @@ export function crystalModel(group: SpaceGroup, cell: Cell, peaks: readonly Crys
     total: peaks.length,
     tolerance,
     metric: unitMetric,
+    primitiveMetric,
+    kTolerance: Math.max(...targets.map(({ reach }) => reach)),
+    blur: 2 * Math.max(...targets.map(({ reach }) => reach)),
+    // A separation in Q says nothing where vectors are measured.
+    range: { lowest: 0, highest: 0 },
     corrections: [],
     explain: (k) => explainCrystal(signedArms(group, k), peaks, space),
     equations: (k, assignments, values) =>

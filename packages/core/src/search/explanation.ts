@@ -66,6 +66,14 @@ export interface PeakModel {
   readonly tolerance: number;
   /** Metric (nine numbers) in a*, b*, c* of the space where k is measured: Å⁻² with 4π², or 1 for h k l. */
   readonly metric: readonly number[];
+  /** Metric of the dual of the primitive basis, Å⁻² with 4π². */
+  readonly primitiveMetric: readonly number[];
+  /** Å⁻¹: how far k moves within a typical tolerance. */
+  readonly kTolerance: number;
+  /** Å⁻¹: k nearer than this may look the same; on a mirror plane |Q| changes to second order only. */
+  readonly blur: number;
+  /** Least and largest Q of the peaks, Å⁻¹. */
+  readonly range: { readonly lowest: number; readonly highest: number };
   readonly corrections: readonly CorrectionLimit[];
   /**
    * @param corrections values of the corrections; all zero when left out

@@ -6,6 +6,7 @@
  * Inference, and Learning Algorithms (2003), chapters 27 and 28 (Laplace's method, Occam's factor); de Wolff, J. Appl.
  * Cryst. 1 (1968) 108; Smith & Snyder, J. Appl. Cryst. 12 (1979) 60.
  */
+export { defaultMostBoxes } from "./certificate.js";
 export { indexPeaks } from "./index-peaks.js";
 export { locate } from "./locate.js";
 export { defaultSearchOptions } from "./options.js";
@@ -14,17 +15,23 @@ export type {
   Assignment,
   Candidate,
   Certificate,
+  Correction,
   Evidence,
   EvidenceCharges,
   EvidenceReading,
   IndexedLine,
+  KindCertificate,
+  MergedCandidate,
   NearFraction,
   Peak,
   PeakKind,
   PeakList,
+  ReferenceVector,
   Refinement,
+  Region,
   ResidualStatistics,
   SearchOptions,
   SearchResult,
+  Separation,
   SetAside,
 } from "./types.js";

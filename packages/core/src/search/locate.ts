@@ -1,18 +1,28 @@
 import { breathe, type WorkHost } from "../algorithms/index.js";
-import { type Problem, problem } from "../errors/index.js";
+import { exactComponents, isReciprocalLatticeVector, type WaveVector } from "../kvectors/index.js";
+import { isInteger } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
-import { type Weighed, weigh } from "./candidate.js";
+import { type Weigher, weigher } from "./candidate.js";
+import { certificateOf, certificateWarnings, defaultMostBoxes, type SearchedKind } from "./certificate.js";
+import type { PeakModel } from "./explanation.js";
+import { starDistance } from "./near-in-k.js";
 import { peakModel } from "./peak-model.js";
-import { largestSearchedDimension, searchKinds, solutionsOf } from "./search-kind.js";
+import { type Entry, mergeSameFinds } from "./same-find.js";
+import { type SearchKind, searchKinds, solutionsOf } from "./search-kind.js";
+import { separationsOf } from "./separations.js";
 import { tiesAmong } from "./ties.js";
-import type { PeakList, SearchOptions, SearchResult } from "./types.js";
+import type { Candidate, PeakList, ReferenceVector, Region, SearchOptions, SearchResult } from "./types.js";
+
+/** Candidates that are compared with one another and returned, best first, besides the points. */
+const mostCandidates = 60;
 
 /**
- * Searches the k whose satellites are the peaks: every special point of the group, k = 0 among them, is weighed, and
- * those that match at least `total − options.unmatched` peaks come back by falling evidence (all of them with
- * `options.belowMinimum`). The list is complete within what the certificate states.
+ * Searches the k whose satellites are the peaks: every kind of k up to `options.maxDimension`, special points one by
+ * one, lines, planes and general k by branch and bound. What matches at least `total − options.unmatched` peaks comes
+ * back by falling evidence (the points all of them with `options.belowMinimum`), and the certificate says what was
+ * gone through. Candidates of higher kinds beside a simpler one that is the same find are listed under it.
  *
- * Throws `too-few-peaks`, `invalid-peak`, `cell-contradicts-group`, `interrupted`.
+ * Throws `too-few-peaks`, `invalid-peak`, `missing-wavelength`, `cell-contradicts-group`, `interrupted`.
  */
 export async function locate(
   group: SpaceGroup,
@@ -23,76 +33,98 @@ export async function locate(
 ): Promise<SearchResult> {
   const { model, setAside } = peakModel(group, cell, peaks, options);
   const minimumMatched = Math.max(1, model.total - options.unmatched);
-  const kinds = searchKinds(group);
-  const dimensions = Math.log(new Set(kinds.map((kind) => kind.dimension)).size);
-  const found: Weighed[] = [];
-  let boxes = 0;
-  for (const [index, kind] of kinds.entries()) {
-    await breathe(host);
-    host.progress?.(index, kinds.length, "kinds of k");
-    const charges = { dimensions, kinds: Math.log(kind.kindsOfDimension) };
-    const { solutions, boxes: visited } = solutionsOf(kind);
-    boxes += visited;
-    for (const k of solutions) found.push(weigh(group, model, k, charges));
-  }
-  host.progress?.(kinds.length, kinds.length, "kinds of k");
-  const kept = found
-    .filter(({ candidate }) => options.belowMinimum === true || candidate.matched >= minimumMatched)
+  const kinds = searchKinds(group, options.maxDimension);
+  const weigh = weigher(group, model);
+  const searched = await searchAll(kinds, model, minimumMatched, options, host);
+  const { entries, regions } = weighAll(searched, weigh);
+  const kept = entries.filter(
+    ({ candidate, mostMatched, dimension }) =>
+      (options.belowMinimum === true && dimension === 0) ||
+      Math.max(candidate.matched, mostMatched) >= minimumMatched,
+  );
+  const merged = [...mergeSameFinds(kept, model, starDistance(group, model.primitiveMetric))]
     // The sort is stable: equal evidence leaves the order of the kinds, fewest arms first.
     .sort((a, b) => b.candidate.evidence.value - a.candidate.evidence.value);
-  const ties = tiesAmong(model, kept);
-  const candidates = kept.map(({ candidate }, index) => ({ ...candidate, tiedWith: ties[index] ?? [] }));
+  const shown = merged.filter(({ dimension }, rank) => rank < mostCandidates || dimension === 0);
+  const candidates = compared(shown, model, weigh);
+  const certificate = certificateOf(searched, options, minimumMatched);
+  const aside = new Set(setAside.map(({ peak }) => peak));
   return {
     candidates,
-    certificate: {
-      minimumMatched,
-      boxes,
-      smallestBox: 0,
-      exhaustive: true,
-      maxDimension: largestSearchedDimension,
-      zeroShift: 0,
-      cellScale: 0,
-    },
+    certificate,
     setAside,
     unmatched:
-      candidates[0]?.unmatched ??
-      usedIndices(
-        peaks,
-        setAside.map(({ peak }) => peak),
-      ),
-    dropped: found.length - kept.length,
-    warnings: notBuilt(options),
+      candidates[0]?.unmatched ?? peaks.peaks.map(({ index }) => index).filter((index) => !aside.has(index)),
+    regions,
+    references: referencesOf(group, entries),
+    dropped: entries.length - kept.length + (merged.length - shown.length),
+    warnings: certificateWarnings(certificate),
   };
 }
 
-function usedIndices(peaks: PeakList, setAside: readonly number[]): number[] {
-  return peaks.peaks.map((peak) => peak.index).filter((index) => !setAside.includes(index));
+async function searchAll(
+  kinds: readonly SearchKind[],
+  model: PeakModel,
+  wanted: number,
+  options: SearchOptions,
+  host: WorkHost,
+): Promise<readonly SearchedKind[]> {
+  const searched: SearchedKind[] = [];
+  let boxes = options.mostBoxes ?? defaultMostBoxes;
+  for (const [index, kind] of kinds.entries()) {
+    await breathe(host);
+    host.progress?.(index, kinds.length, "kinds of k");
+    const findings = await solutionsOf(kind, model, { wanted, boxes }, host);
+    if (kind.dimension > 0) boxes -= findings.boxes;
+    searched.push({ kind, findings });
+  }
+  host.progress?.(kinds.length, kinds.length, "kinds of k");
+  return searched;
 }
 
-/** What was asked for and is not done is said, never passed over. */
-function notBuilt(options: SearchOptions): readonly Problem[] {
-  const warnings: Problem[] = [];
-  if (options.maxDimension > largestSearchedDimension)
-    warnings.push(
-      problem("not-built", "lines, planes and general k are not searched yet: only the special points were", {
-        where: { argument: "--max-dimension" },
-        expected: "0",
-        found: String(options.maxDimension),
-        remedy: "try a k on a line or plane with `kvane index --k`, which refines its values",
-      }),
-    );
-  for (const [value, argument] of [
-    [options.zeroShift, "--zero-shift"],
-    [options.cellScale, "--cell-scale"],
-  ] as const)
-    if (value !== 0)
-      warnings.push(
-        problem("not-built", `${argument} is not refined yet: the positions were taken as they are`, {
-          where: { argument },
-          expected: "0",
-          found: String(value),
-          remedy: "correct the positions, or give a wider tolerance",
-        }),
-      );
-  return warnings;
+function weighAll(
+  searched: readonly SearchedKind[],
+  weigh: Weigher,
+): { readonly entries: readonly Entry[]; readonly regions: readonly Region[] } {
+  const dimensions = Math.log(new Set(searched.map(({ kind }) => kind.dimension)).size);
+  const entries: Entry[] = [];
+  const regions: Region[] = [];
+  for (const { kind, findings } of searched) {
+    const charges = { dimensions, kinds: Math.log(kind.kindsOfDimension) };
+    for (const { k, matched, region } of findings.solutions) {
+      const weighed = weigh(k, charges);
+      const index = region < 0 ? -1 : regions.length + region;
+      entries.push({
+        ...weighed,
+        candidate: { ...weighed.candidate, region: index < 0 ? null : index },
+        dimension: kind.dimension,
+        region: index,
+        mostMatched: matched,
+      });
+    }
+    regions.push(...findings.regions);
+  }
+  return { entries, regions };
+}
+
+function compared(shown: readonly Entry[], model: PeakModel, weigh: Weigher): readonly Candidate[] {
+  const ties = tiesAmong(model, shown);
+  const separations = separationsOf(shown, ties, weigh, model.range);
+  return shown.map(({ candidate }, index) => ({
+    ...candidate,
+    tiedWith: ties[index] ?? [],
+    separations: separations[index] ?? [],
+  }));
+}
+
+/** k = 0 and the points with integer components, which only a centred lattice has besides it. */
+function referencesOf(group: SpaceGroup, entries: readonly Entry[]): readonly ReferenceVector[] {
+  return entries
+    .filter(({ dimension, candidate }) => dimension === 0 && isReference(group, candidate.k))
+    .map(({ candidate: { k, evidence, matched, total } }) => ({ k, evidence, matched, total }));
+}
+
+function isReference(group: SpaceGroup, k: WaveVector): boolean {
+  const components = exactComponents(k);
+  return components !== null && (components.every(isInteger) || isReciprocalLatticeVector(group, components));
 }

@@ -2,12 +2,13 @@ import { KvaneError, type Problem, problem } from "../errors/index.js";
 import type { SearchOptions } from "./types.js";
 
 /**
- * Matches within 3 standard uncertainties, one peak may stay unmatched (an impurity), special points only, no limit of Q.
+ * Matches within 3 standard uncertainties, one peak may stay unmatched (an impurity), every kind of k, no limit of Q,
+ * positions and cell as they are.
  */
 export const defaultSearchOptions: SearchOptions = {
   tolerance: null,
   unmatched: 1,
-  maxDimension: 0,
+  maxDimension: 3,
   qMax: null,
   zeroShift: 0,
   cellScale: 0,
@@ -33,6 +34,8 @@ export function checkOptions(options: SearchOptions): void {
   demand([0, 1, 2, 3].includes(maxDimension), "--max-dimension", "0, 1, 2 or 3", maxDimension);
   demand(qMax === null || qMax > 0, "--q-max", "a number above 0 in Å⁻¹", qMax);
   demand(zeroShift >= 0 && Number.isFinite(zeroShift), "--zero-shift", "a number from 0 on, in degrees 2θ", zeroShift);
+  const { mostBoxes = 1 } = options;
+  demand(Number.isSafeInteger(mostBoxes) && mostBoxes > 0, "mostBoxes", "an integer from 1 on", mostBoxes);
   demand(cellScale >= 0 && cellScale < 1, "--cell-scale", "a relative change from 0 to 1", cellScale);
   if (problems.length > 0) throw new KvaneError(problems);
 }

@@ -1,3 +1,4 @@
+import { mostLevels } from "../algorithms/index.js";
 import type { PairTable } from "./peak-pairs.js";
 import type { Wedge } from "./wedge.js";
 
@@ -130,25 +131,38 @@ export function pairFilter(table: PairTable, wedge: Wedge, allowed: number): Pai
   return { admits, lists: (level) => ({ arena, offsets, base: (level + 1) * stride }) };
 }
 
-/** Whether a box lies behind a wall of the wedge: one dot product a wall. */
+/**
+ * Whether a box lies behind a wall of the wedge: one dot product a wall, and none for a box whose parent lies wholly
+ * inside.
+ */
 function wallTest(wedge: Wedge): (level: number, centre: Float64Array, half: Float64Array) => boolean {
   const dimension = wedge.centre.length;
   const walls = wedge.walls.length;
   const normals = Float64Array.from(wedge.walls.flatMap(({ normal }) => [...normal]));
-  const reaches: Float64Array[] = [];
+  const offsets = Float64Array.from(wedge.walls, ({ offset }) => offset * (1 + 1e-9));
+  const spreads: Float64Array[] = [];
+  const inside = new Uint8Array(mostLevels + 1);
   return (level, centre, half) => {
-    let reach = reaches[level];
-    if (reach === undefined) {
-      reach = Float64Array.from(wedge.walls, ({ normal, offset }) =>
-        normal.reduce((sum, entry, axis) => sum + Math.abs(entry) * (half[axis] as number), offset * (1 + 1e-9)),
+    if (level > 0 && inside[level - 1] === 1) {
+      inside[level] = 1;
+      return false;
+    }
+    let spread = spreads[level];
+    if (spread === undefined) {
+      spread = Float64Array.from(wedge.walls, ({ normal }) =>
+        normal.reduce((sum, entry, axis) => sum + Math.abs(entry) * (half[axis] as number), 0),
       );
-      reaches[level] = reach;
+      spreads[level] = spread;
     }
+    let all = 1;
     for (let wall = 0, at = 0; wall < walls; wall++) {
-      let sum = 0;
-      for (let axis = 0; axis < dimension; axis++, at++) sum += (normals[at] as number) * (centre[axis] as number);
-      if (sum > (reach[wall] as number)) return true;
+      let beyond = -(offsets[wall] as number);
+      for (let axis = 0; axis < dimension; axis++, at++) beyond += (normals[at] as number) * (centre[axis] as number);
+      const reach = spread[wall] as number;
+      if (beyond > reach) return true;
+      if (beyond > -reach) all = 0;
     }
+    inside[level] = all;
     return false;
   };
 }

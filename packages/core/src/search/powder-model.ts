@@ -46,6 +46,10 @@ export function powderModel(
     total: peaks.length,
     tolerance,
     metric,
+    primitiveMetric,
+    kTolerance: tolerance,
+    blur: Math.max(2 * tolerance, Math.sqrt(2 * highest * tolerance)),
+    range: { lowest: Math.min(...peaks.map((peak) => peak.q)), highest },
     corrections,
     explain: (k, values = [], widened = false) => {
       const corrected = correctedPeaks(peaks, corrections, values);

@@ -9,8 +9,8 @@ import { foldInto, inverseImage, type Wedge } from "./wedge.js";
 /** Boxes between two looks at the clock. */
 const boxesAtATime = 512;
 
-/** Halvings of an open leaf along each axis before it is left undecided: the box is then 1/8 of the leaf. */
-const halvingsBelowLeaf = 3;
+/** Halvings of an open leaf along each axis before it is left undecided: the box is then a quarter of the leaf. */
+const halvingsBelowLeaf = 2;
 
 export interface FlatSearchSettings {
   /** Peaks that must match. */
@@ -71,6 +71,8 @@ export async function searchFlat(
     admits: filter.admits,
     settles: (level, centre) => {
       deepest = Math.max(deepest, level);
+      // Below a leaf only boxes that are halved along every axis are looked into.
+      if ((level - search.leafLevel) % frame.dimension !== 0) return false;
       const lists = filter.lists(level);
       const point = level === search.leafLevel ? polish(lists, centre) : judge(lists, centre);
       if (point.matched < settings.wanted) return false;
@@ -84,7 +86,7 @@ export async function searchFlat(
   for (;;) {
     if (search.advance(Math.min(boxesAtATime, settings.budget - search.boxes()))) break;
     if (search.boxes() >= settings.budget) stopped = "boxes";
-    if (leaves.length >= settings.mostLeaves) stopped = "leaves";
+    if (leaves.length + undecided.length >= settings.mostLeaves) stopped = "leaves";
     if (stopped !== null) break;
     await breathe(host);
   }

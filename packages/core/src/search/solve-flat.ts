@@ -13,7 +13,7 @@ import { wedgeOf } from "./wedge.js";
 export const mostSolutionsOfKind = 24;
 
 /** Leaves beyond which the list of solutions of a kind says nothing: the peaks hardly restrict k. */
-export const saturatingLeaves = 20_000;
+export const saturatingLeaves = 50_000;
 
 /** Times the tolerance. Solutions of a kind nearer than this are one find: their lines differ by less than can be seen. */
 const apartTolerances = 2;

@@ -164,6 +164,8 @@ export interface Separation {
   readonly distance: number;
   /** Relative resolution ΔQ/Q needed there; null when all lines agree whatever the resolution. */
   readonly resolution: number | null;
+  /** Whether these peaks tell the two apart already: their log-odds differ by more than 3. */
+  readonly toldApart: boolean;
 }
 
 /** A simple fraction within 2 standard uncertainties of a free parameter. */
@@ -208,6 +210,17 @@ export interface Candidate {
   /** For every tied candidate, and for simpler k nearby, what would tell them apart. */
   readonly separations: readonly Separation[];
   readonly warnings: readonly Problem[];
+}
+
+/**
+ * k = 0 or a k that only reverses centring translations: its lines are nuclear positions, allowed or forbidden ones, so
+ * it is weighed and shown whatever it explains.
+ */
+export interface ReferenceVector {
+  readonly k: WaveVector;
+  readonly evidence: Evidence;
+  readonly matched: number;
+  readonly total: number;
 }
 
 /** What the search has gone through, so that a reader knows what its silence means. */
@@ -263,6 +276,8 @@ export interface SearchResult {
   readonly unmatched: readonly number[];
   /** Every part of the searched kinds where enough peaks may match. */
   readonly regions: readonly Region[];
+  /** k = 0 and the k that reverse centring translations, found or not. */
+  readonly references: readonly ReferenceVector[];
   /** How many k were tried and left out because they match too few peaks. */
   readonly dropped: number;
   readonly warnings: readonly Problem[];

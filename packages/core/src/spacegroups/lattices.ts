@@ -7,7 +7,9 @@ import {
   invert,
   isInteger,
   lcm,
+  mapVector,
   matrixFrom,
+  multiply,
   overCommonDenominator,
   type Rational,
   type RationalMatrix,
@@ -16,6 +18,7 @@ import {
   reduceModulo,
   rowTimes,
   safe,
+  subtract,
   timesColumn,
   toNumber,
   transpose,
@@ -55,9 +58,17 @@ export function latticeMatrix(lattice: Lattice): RationalMatrix {
   return transpose(matrixFrom(lattice.vectors.flat(), lattice.denominator));
 }
 
+type LatticeVector = Lattice["vectors"][number];
+
 /** Coordinates ξ in the primitive basis of L, `ξ = B⁻¹ x`. */
 export function toPrimitiveColumn(lattice: Lattice, x: RationalVector): RationalVector {
-  return timesColumn(invert(latticeMatrix(lattice)), x);
+  // The basis vectors are upper triangular, so that B is lower triangular and is solved from the first axis on.
+  const [p, q, r] = lattice.vectors as [LatticeVector, LatticeVector, LatticeVector];
+  const scaled = mapVector(x, (entry) => multiply(entry, rational(lattice.denominator)));
+  const first = multiply(scaled[0], rational(1, p[0]));
+  const second = multiply(subtract(scaled[1], multiply(first, rational(p[1]))), rational(1, q[1]));
+  const rest = subtract(subtract(scaled[2], multiply(first, rational(p[2]))), multiply(second, rational(q[2])));
+  return [first, second, multiply(rest, rational(1, r[2]))];
 }
 
 /** Coordinates in the axes of the setting, `x = B ξ`. */

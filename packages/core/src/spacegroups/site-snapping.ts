@@ -41,9 +41,11 @@ interface Ruler {
  */
 export function snapPosition(group: SpaceGroup, position: RationalVector, cell: Cell | null): SnappedPosition {
   const ruler = rulerFor(cell);
-  let stabilizer: readonly SymmetryOperator[] = [];
+  const near = nearStabilizer(group, position, ruler);
+  // Those that leave the position exactly where it is are a group already.
+  let stabilizer: readonly SymmetryOperator[] = near.filter(isExact).map(({ operator }) => operator);
   let best = position;
-  for (const candidate of nearStabilizer(group, position, ruler)) {
+  for (const { operator: candidate } of near.filter((one) => !isExact(one))) {
     if (stabilizer.some((known) => isSame(known, candidate))) continue;
     const larger = finiteClosure([...stabilizer, candidate]);
     if (larger === null) continue;
@@ -74,9 +76,19 @@ function rulerFor(cell: Cell | null): Ruler {
   };
 }
 
-/** Operators `{R|t − a}` that bring the position almost back, exact ones first, then by how far they move it. */
-function nearStabilizer(group: SpaceGroup, position: RationalVector, ruler: Ruler): SymmetryOperator[] {
-  const found: { operator: SymmetryOperator; distance: number }[] = [];
+/** An operator `{R|t − a}` that brings the position almost back, and how far from it. */
+interface NearOperator {
+  readonly operator: SymmetryOperator;
+  readonly distance: number;
+}
+
+function isExact({ distance }: NearOperator): boolean {
+  return distance === 0;
+}
+
+/** Those of the group, by how far they move the position. */
+function nearStabilizer(group: SpaceGroup, position: RationalVector, ruler: Ruler): NearOperator[] {
+  const found: NearOperator[] = [];
   for (const operator of group.operators) {
     const difference = subtractVectors(applyOperator(operator, position), position);
     const nearest = mapVector(toPrimitiveColumn(group.lattice, difference), nearestInteger);
@@ -88,7 +100,7 @@ function nearStabilizer(group: SpaceGroup, position: RationalVector, ruler: Rule
         distance,
       });
   }
-  return found.sort((a, b) => a.distance - b.distance).map((one) => one.operator);
+  return found.sort((a, b) => a.distance - b.distance);
 }
 
 function nearestInteger(value: Rational): Rational {

@@ -21,6 +21,26 @@ Units          Å, degrees, Q = 2π/d in Å⁻¹
 Evidence       natural log-odds that the peaks are lines of this k and not chance:
                above 3 found, 0 to 3 weak, below 0 not informative`,
   },
+  fourier: {
+    title: "How Fourier components are written",
+    text: `kvane's own way: M_j(T) = S_j exp(−2πi k·T) + c.c. on atom j in the cell at T, components along
+a, b, c. Options of \`kvane modes\` write basis vectors and tables otherwise; every table says how.
+
+  --exponent minus|plus        sign of the exponent: S becomes its complex conjugate
+  --phase lattice|position     the phase runs with T, or with T + r_j: S_j gets exp(+2πi k·r_j)
+                               (the conjugate of that with --exponent plus)
+  --factor one|half            wave + c.c. as it stands, or times 1/2: S is doubled
+                               (not where 2k is a reciprocal lattice vector)
+  --components lattice         S = S₁ a + S₂ b + S₃ c, exact
+               crystal         along the unit vectors of a, b, c (the crystalaxis components of
+                               the IUCr magnetic dictionary), numbers, needs --cell
+               cartesian       x along a, z along c*, numbers, needs --cell
+
+Letters of a table of what is allowed stand for components as written, so the factor never shows in
+it. In crystal and Cartesian components each copy of an irrep is divided by the length of the axis
+of its leading entry, so that an amplitude in μB is the moment along that axis. The matrix B of the
+relation between k and −k is that of kvane's own way always.`,
+  },
   commands: {
     title: "What this version does",
     text: `Built:

@@ -8,6 +8,7 @@ import {
   type WrittenWaveVector,
 } from "../../kvectors/index.js";
 import type { SpaceGroup } from "../../spacegroups/index.js";
+import { argumentNames } from "../request.js";
 import { remember, type Work } from "../work.js";
 import { type Given, optionOf, readingGiven, studyText } from "./given.js";
 
@@ -30,14 +31,21 @@ export function writtenKs({ request, study }: Work): GivenK[] {
 
 /** The one wave vector of a command that needs one; of several in a study the first, and that is said. */
 export function writtenK(work: Work): GivenK {
-  const [first, ...others] = writtenKs(work);
-  if (first === undefined)
+  const written = writtenKIfGiven(work);
+  if (written === null)
     fail("missing-argument", "no wave vector was given", {
       where: work.study === null ? { argument: "--k" } : { file: work.study.file, path: "k", argument: "--k" },
       expected: "three components such as --k 0,1/2,0",
       found: "nothing",
       remedy: "give --k",
     });
+  return written;
+}
+
+/** The same, null when there is none. */
+export function writtenKIfGiven(work: Work): GivenK | null {
+  const [first, ...others] = writtenKs(work);
+  if (first === undefined) return null;
   if (others.length > 0)
     remember(
       work,
@@ -51,6 +59,19 @@ export function writtenK(work: Work): GivenK {
       [],
     );
   return first;
+}
+
+/** The wave vector of an option of its own name, such as --from. */
+export function writtenOption({ request }: Work, field: "from" | "to", expected: string): GivenK {
+  const given = optionOf(request, field);
+  if (given === null)
+    fail("missing-argument", `${argumentNames[field]} was not given`, {
+      where: { argument: argumentNames[field] },
+      expected,
+      found: "nothing",
+      remedy: `give ${argumentNames[field]}`,
+    });
+  return { given, written: readingGiven(given, () => parseWaveVector(given.text)) };
 }
 
 /** What the written wave vector stands for in this group; where it moved is remembered. */

@@ -1,30 +1,51 @@
 import type { SmallIrreps } from "../../irreps/index.js";
 import { parameterValues, waveVectorToJson } from "../../kvectors/index.js";
-import type { IrrepModes, Mode, SiteModes } from "../../modes/index.js";
-import { formatPhased, phasedToComplex } from "../../numbers/index.js";
+import type {
+  ConstraintTexts,
+  MinusKOnModes,
+  WritingOptions,
+  WrittenArm,
+  WrittenIrrep,
+  WrittenMode,
+  WrittenSite,
+} from "../../modes/index.js";
+import { formatPhased, modeSignificantDigits, roundNumber } from "../../numbers/index.js";
 import type { SpaceGroup } from "../../spacegroups/index.js";
-import type { IrrepModesRecord, ModeRecord, ModesRecord, SiteModesRecord } from "../records/modes.js";
-import { groupRecord, littleGroupRecord, positionRecord } from "./names.js";
-import { complexRecord, irrepNumbers } from "./symmetry.js";
+import type { ComplexRecord } from "../records/common.js";
+import type {
+  ArmModesRecord,
+  IrrepModesRecord,
+  MinusKModesRecord,
+  ModeRecord,
+  ModesRecord,
+  SiteModesRecord,
+} from "../records/modes.js";
+import { matrixRecords } from "./complex.js";
+import { cellRecord, groupRecord, littleGroupRecord, operatorText, positionRecord } from "./names.js";
+import { irrepNumbers } from "./symmetry.js";
 
 export function modesRecord(
   group: SpaceGroup,
   found: SmallIrreps,
-  sites: readonly SiteModes[],
-  options: { readonly axial: boolean },
+  sites: readonly WrittenSite[],
+  options: WritingOptions & { readonly axial: boolean },
 ): ModesRecord {
+  const { exponent, phase, factor, components } = options.convention;
   return {
     group: groupRecord(group),
     k: waveVectorToJson(found.k),
     minusK: found.minusK,
     arms: found.arms,
     axial: options.axial,
+    convention: { exponent, phase, factor, components },
+    cell: options.cell && cellRecord(options.cell),
     littleGroup: littleGroupRecord(group, found.littleGroup),
-    sites: sites.map((site) => siteRecord(found, site)),
+    sites: sites.map((site) => siteRecord(group, found, site)),
   };
 }
 
-function siteRecord(found: SmallIrreps, { orbit, suborbits, irreps }: SiteModes): SiteModesRecord {
+function siteRecord(group: SpaceGroup, found: SmallIrreps, { site, irreps, arms }: WrittenSite): SiteModesRecord {
+  const { orbit, suborbits } = site;
   return {
     label: orbit.label,
     position: positionRecord(orbit.position),
@@ -32,11 +53,21 @@ function siteRecord(found: SmallIrreps, { orbit, suborbits, irreps }: SiteModes)
     siteSymmetry: orbit.siteSymmetryClass,
     orbit: orbit.positions.map(positionRecord),
     suborbits: suborbits.map((atoms) => [...atoms]),
-    irreps: irreps.map((part) => irrepModesRecord(found, part)),
+    irreps: irreps.map((irrep) => irrepModesRecord(group, found, irrep)),
+    starModes: arms && arms.map((arm) => armRecord(group, arm)),
   };
 }
 
-function irrepModesRecord(found: SmallIrreps, part: IrrepModes): IrrepModesRecord {
+function armRecord(group: SpaceGroup, { arm, operator, irreps }: WrittenArm): ArmModesRecord {
+  return {
+    arm: waveVectorToJson(arm),
+    operator: operatorText(group, operator),
+    irreps: irreps.map(({ label, modes }) => ({ label, modes: modes.map(modeRecord) })),
+  };
+}
+
+function irrepModesRecord(group: SpaceGroup, found: SmallIrreps, written: WrittenIrrep): IrrepModesRecord {
+  const { part, sizes } = written;
   const { irrep } = part;
   return {
     label: irrep.label,
@@ -44,27 +75,54 @@ function irrepModesRecord(found: SmallIrreps, part: IrrepModes): IrrepModesRecor
     reality: irrep.reality,
     multiplicity: part.multiplicity,
     ...irrepNumbers(found, irrep),
-    modes: part.modes.map((mode) => modeRecord(found, mode)),
-    constraint: [...part.constraint],
+    modes: written.modes.map(modeRecord),
+    constraint: [...written.constraint.lattice],
+    constraintCrystal: listOrNull(written.constraint.crystal),
     freeParameters: part.freeParameters,
     freeParametersWithMinusK: part.freeParametersWithMinusK,
+    minusK: part.minusK && minusKRecord(group, found, part.minusK, written.orderParameter),
     vanishingAtoms: [...part.vanishingAtoms],
-    equalAmplitude: null,
-    constantMoment: null,
+    equalAmplitude: sizes && sizes.equalAmplitude,
+    constantMoment: sizes && sizes.constantMoment,
+    collinear: sizes && sizes.collinear,
   };
 }
 
-function modeRecord(found: SmallIrreps, mode: Mode): ModeRecord {
-  const values = parameterValues(found.k);
-  const exact = mode.moments.map(({ phase, vector }) => vector.map((factor) => ({ phase, factor })));
-  // Rounding noise is judged against the largest component of the whole mode.
-  const scale =
-    values && Math.max(...exact.flat().map((entry) => Math.hypot(...(phasedToComplex(entry, values) ?? []))));
+function minusKRecord(
+  group: SpaceGroup,
+  found: SmallIrreps,
+  relation: MinusKOnModes,
+  texts: ConstraintTexts | null,
+): MinusKModesRecord {
+  const { numbers, exact } = matrixRecords(relation.matrix, parameterValues(found.k));
   return {
-    copy: mode.copy,
-    partner: mode.partner,
-    suborbit: mode.suborbit,
-    moments: values && exact.map((vector) => vector.map((entry) => complexRecord(entry, values, scale ?? 1))),
+    operator: operatorText(group, relation.operator),
+    partner: relation.partner,
+    suborbitImages: [...relation.suborbitImages],
+    matrix: numbers,
+    exact,
+    constraint: listOrNull(texts && texts.lattice),
+    constraintCrystal: listOrNull(texts && texts.crystal),
+  };
+}
+
+function listOrNull(texts: readonly string[] | null): string[] | null {
+  return texts && [...texts];
+}
+
+function modeRecord({ copy, partner, suborbit, exact, numbers }: WrittenMode): ModeRecord {
+  return {
+    copy,
+    partner,
+    suborbit,
+    moments: numbers && rounded(numbers),
     exact: exact.map((vector) => vector.map(formatPhased)),
   };
+}
+
+/** Rounding noise is judged against the largest component of the whole mode. */
+function rounded(numbers: NonNullable<WrittenMode["numbers"]>): ComplexRecord[][] {
+  const scale = Math.max(...numbers.flat().map(([real, imaginary]) => Math.hypot(real, imaginary)));
+  const round = (value: number) => roundNumber(value, scale, modeSignificantDigits);
+  return numbers.map((vector) => vector.map(([real, imaginary]): ComplexRecord => [round(real), round(imaginary)]));
 }

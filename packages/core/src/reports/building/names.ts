@@ -23,12 +23,15 @@ export function littleGroupRecord(group: SpaceGroup, little: LittleGroup): Littl
   return {
     order: little.operators.length,
     symbol: little.symbol,
-    operators: little.operators.map((index) => {
-      const operator = group.operators[index];
-      if (operator === undefined) throw new RangeError(`the group has no operator ${index}`);
-      return formatTriplet(operator);
-    }),
+    operators: little.operators.map((index) => operatorText(group, index)),
   };
+}
+
+/** The coordinate triplet of an operator by its index. */
+export function operatorText(group: SpaceGroup, index: number): string {
+  const operator = group.operators[index];
+  if (operator === undefined) throw new RangeError(`the group has no operator ${index}`);
+  return formatTriplet(operator);
 }
 
 /** Exact coordinates as texts. */

@@ -1,10 +1,25 @@
 import { type WaveVector, waveVectorToJson } from "../../kvectors/index.js";
 import { formatRational, roundNumber } from "../../numbers/index.js";
 import type { Overlap, SatelliteReflection } from "../../reflections/index.js";
-import type { Candidate, Certificate, IndexedLine, PeakList, SetAside } from "../../search/index.js";
+import type {
+  Candidate,
+  Certificate,
+  IndexedLine,
+  PeakList,
+  ReferenceVector,
+  Region,
+  SetAside,
+} from "../../search/index.js";
 import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
 import type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "../records/satellites.js";
-import type { AssignmentRecord, CandidateRecord, LineRecord, PeaksRecord, SearchRecord } from "../records/search.js";
+import type {
+  AssignmentRecord,
+  CandidateRecord,
+  CertificateRecord,
+  LineRecord,
+  PeaksRecord,
+  SearchRecord,
+} from "../records/search.js";
 import { cellRecord, groupRecord } from "./names.js";
 
 export function satellitesRecord(
@@ -82,6 +97,8 @@ export function searchRecord(
     readonly certificate: Certificate | null;
     readonly setAside: readonly SetAside[];
     readonly unmatched: readonly number[];
+    readonly regions?: readonly Region[];
+    readonly references?: readonly ReferenceVector[];
     readonly dropped: number;
   },
 ): SearchRecord {
@@ -90,9 +107,22 @@ export function searchRecord(
     cell: cellRecord(cell),
     peaks,
     candidates: found.candidates.map(candidateRecord),
-    certificate: found.certificate && { ...found.certificate, smallestBox: roundNumber(found.certificate.smallestBox) },
+    certificate: found.certificate && certificateRecord(found.certificate),
     setAside: found.setAside.map(({ peak, because }) => ({ peak, because })),
     unmatched: [...found.unmatched],
+    regions: (found.regions ?? []).map((region) => ({
+      kind: waveVectorToJson(region.kind),
+      from: region.from.map((entry) => roundNumber(entry)),
+      to: region.to.map((entry) => roundNumber(entry)),
+      leaves: region.leaves,
+      decided: region.decided,
+    })),
+    references: (found.references ?? []).map(({ k, evidence, matched, total }) => ({
+      k: waveVectorToJson(k),
+      evidence: roundNumber(evidence.value),
+      matched,
+      total,
+    })),
     dropped: found.dropped,
   };
 }
@@ -144,6 +174,39 @@ function candidateRecord(candidate: Candidate): CandidateRecord {
       converged: refinement.converged,
       rescaledSu: roundedAll(refinement.rescaledUncertainties),
     },
+    corrections: candidate.corrections.map(({ name, value, uncertainty, limit }) => ({
+      name,
+      value: roundNumber(value),
+      su: rounded(uncertainty),
+      limit: roundNumber(limit),
+    })),
+    region: candidate.region,
+    merged: candidate.merged.map((one) => ({
+      k: waveVectorToJson(one.k),
+      dimension: one.dimension,
+      evidence: roundNumber(one.evidence.value),
+      matched: one.matched,
+    })),
+    separations: candidate.separations.map((one) => ({
+      candidate: one.candidate,
+      k: waveVectorToJson(one.k),
+      q: roundNumber(one.q),
+      distance: roundNumber(one.distance),
+      resolution: rounded(one.resolution),
+      toldApart: one.toldApart,
+    })),
+  };
+}
+
+function certificateRecord(certificate: Certificate): CertificateRecord {
+  return {
+    ...certificate,
+    smallestBox: roundNumber(certificate.smallestBox),
+    kinds: certificate.kinds.map((one) => ({
+      ...one,
+      kind: waveVectorToJson(one.kind),
+      unexplored: roundNumber(one.unexplored),
+    })),
   };
 }
 

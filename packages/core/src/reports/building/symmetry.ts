@@ -1,4 +1,4 @@
-import type { SmallIrrep, SmallIrreps } from "../../irreps/index.js";
+import type { FullIrrep, MinusKRelation, SmallIrrep, SmallIrreps } from "../../irreps/index.js";
 import {
   type LittleGroup,
   type Manifold,
@@ -7,19 +7,14 @@ import {
   type WaveVector,
   waveVectorToJson,
 } from "../../kvectors/index.js";
-import {
-  formatPhased,
-  modeSignificantDigits,
-  type PhasedNumber,
-  phasedToComplex,
-  roundNumber,
-} from "../../numbers/index.js";
+import { formatPhased, type PhasedNumber } from "../../numbers/index.js";
 import { formatTriplet, operatorsModuloIntegers, type SpaceGroup } from "../../spacegroups/index.js";
-import type { ComplexRecord } from "../records/common.js";
 import type { IrrepRecord, IrrepsRecord } from "../records/irreps.js";
 import type { OpsRecord } from "../records/ops.js";
 import type { StarRecord } from "../records/star.js";
+import { complexRecord } from "./complex.js";
 import { groupRecord, littleGroupRecord } from "./names.js";
+import { fullIrrepsRecord, minusKRelationRecord } from "./relations.js";
 
 export function opsRecord(group: SpaceGroup): OpsRecord {
   const operators = operatorsModuloIntegers(group);
@@ -56,7 +51,13 @@ export function starRecord(
   };
 }
 
-export function irrepsRecord(group: SpaceGroup, found: SmallIrreps): IrrepsRecord {
+/** @param full the irreps of the whole space group, where they were asked for */
+export function irrepsRecord(
+  group: SpaceGroup,
+  found: SmallIrreps,
+  relation: MinusKRelation | null,
+  full: readonly FullIrrep[] | null = null,
+): IrrepsRecord {
   return {
     group: groupRecord(group),
     k: waveVectorToJson(found.k),
@@ -71,6 +72,8 @@ export function irrepsRecord(group: SpaceGroup, found: SmallIrreps): IrrepsRecor
       physicalDimension: irrep.physicalDimension,
       ...irrepNumbers(found, irrep),
     })),
+    minusKRelation: relation && minusKRelationRecord(group, relation),
+    full: full && fullIrrepsRecord(group, found.k, full),
   };
 }
 
@@ -93,12 +96,4 @@ export function irrepNumbers(
       matrices: matrices.map((matrix) => matrix.map((row) => row.map(formatPhased))),
     },
   };
-}
-
-/** An exact number as `[re, im]` with the digits of mode data, seen against `scale`. */
-export function complexRecord(value: PhasedNumber, values: readonly number[], scale = 1): ComplexRecord {
-  const numbers = phasedToComplex(value, values);
-  if (numbers === null) throw new RangeError("a phase has a letter without a value");
-  const [real, imaginary] = numbers;
-  return [roundNumber(real, scale, modeSignificantDigits), roundNumber(imaginary, scale, modeSignificantDigits)];
 }

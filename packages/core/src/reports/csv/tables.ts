@@ -1,3 +1,5 @@
+import type { AtlasRecord } from "../records/atlas.js";
+import type { CompatibilityRecord } from "../records/compatibility.js";
 import type { ModesRecord } from "../records/modes.js";
 import type { SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
@@ -56,26 +58,78 @@ function numericOr(numeric: readonly number[] | null, components: readonly strin
   return (numeric ?? components).join(" ");
 }
 
-/** One row for each atom of each basis vector; numbers are empty while a letter of k is open. */
+/**
+ * One row for each atom of each basis vector, on every arm where they are listed; numbers are empty while a letter of k
+ * is open. The exact columns are in lattice components, the numbers in those of the convention.
+ */
 export function modesCsv(record: ModesRecord): string {
-  const header = ["site", "irrep", "copy", "partner", "atom", "x", "y", "z", "exact_a", "exact_b", "exact_c"];
+  const header = ["site", "arm", "irrep", "copy", "partner", "atom", "x", "y", "z", "exact_a", "exact_b", "exact_c"];
+  const axes = record.convention.components === "cartesian" ? ["mx", "my", "mz"] : ["a", "b", "c"];
+  const { exponent, phase, factor, components } = record.convention;
+  const convention = `exponent ${exponent}; phase ${phase}; factor ${factor}; components ${components}`;
   return csvText(
-    [...header, "re_a", "im_a", "re_b", "im_b", "re_c", "im_c"],
+    [...header, ...axes.flatMap((axis) => [`re_${axis}`, `im_${axis}`]), "convention"],
     record.sites.flatMap((site) =>
-      site.irreps.flatMap((irrep) =>
-        irrep.modes.flatMap((mode) =>
-          site.orbit.map((position, atom): CsvCell[] => [
-            site.label,
-            irrep.label,
-            mode.copy,
-            mode.partner,
-            atom,
-            ...position,
-            ...(mode.exact[atom] ?? []),
-            ...(mode.moments?.[atom]?.flat() ?? [null, null, null, null, null, null]),
-          ]),
+      (site.starModes ?? [{ irreps: site.irreps }]).flatMap(({ irreps }, arm) =>
+        irreps.flatMap(({ label, modes }) =>
+          modes.flatMap((mode) =>
+            site.orbit.map((position, atom): CsvCell[] => [
+              site.label,
+              arm,
+              label,
+              mode.copy,
+              mode.partner,
+              atom,
+              ...position,
+              ...(mode.exact[atom] ?? []),
+              ...(mode.moments?.[atom]?.flat() ?? [null, null, null, null, null, null]),
+              convention,
+            ]),
+          ),
         ),
       ),
+    ),
+  );
+}
+
+/** One row a kind, in both classifications. */
+export function atlasCsv(record: AtlasRecord): string {
+  const header = ["classification", "kind", "k1", "k2", "k3", "dimension", "dimension_pm", "little_co_group", "order"];
+  const rows = (classification: string, kinds: AtlasRecord["kinds"]) =>
+    kinds.map((kind, index): CsvCell[] => [
+      classification,
+      index,
+      ...kind.k.components,
+      kind.dimension,
+      kind.dimensionPM,
+      kind.littleCoGroup.symbol,
+      kind.littleCoGroup.order,
+      kind.arms,
+      kind.minusK,
+      kind.halfLattice.map(({ components }) => components.join(" ")).join("; "),
+    ]);
+  return csvText(
+    [...header, "arms", "minus_k", "half_lattice"],
+    [...rows("point group", record.kinds), ...rows("point group and -1", record.kindsPM)],
+  );
+}
+
+/** One row for each irrep of the k and each of the line or plane, with the multiplicity, 0 included. */
+export function compatibilityCsv(record: CompatibilityRecord): string {
+  const header = ["from", "irrep", "dimension", "to", "part", "part_dimension", "multiplicity"];
+  const [from, to] = [record.from.arm.components.join(" "), record.to.k.components.join(" ")];
+  return csvText(
+    header,
+    record.splitting.flatMap(({ label, dimension, parts }) =>
+      record.to.irreps.map((part): CsvCell[] => [
+        from,
+        label,
+        dimension,
+        to,
+        part.label,
+        part.dimension,
+        parts.find((one) => one.label === part.label)?.multiplicity ?? 0,
+      ]),
     ),
   );
 }

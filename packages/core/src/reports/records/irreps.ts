@@ -18,6 +18,33 @@ export interface IrrepRecord {
   readonly exact: ExactIrrepRecord;
 }
 
+/** The operator g₀ with `k R₀⁻¹ ≡ −k` and for each irrep the matrix N of `D(g₀⁻¹ g g₀)* = N⁻¹ D'(g) N`. */
+export interface MinusKRelationRecord {
+  readonly operator: string;
+  readonly links: readonly {
+    readonly label: string;
+    /** The irrep D': itself unless the irrep is complex. */
+    readonly partner: string;
+    readonly matrix: readonly (readonly ComplexRecord[])[];
+    readonly exact: readonly (readonly string[])[];
+  }[];
+}
+
+/** The irreps of the whole space group, induced over the star. Rows and columns run over (arm, partner), arm first. */
+export interface FullIrrepsRecord {
+  readonly arms: readonly KRecord[];
+  /** The operator that takes k to each arm. */
+  readonly representatives: readonly string[];
+  /** One operator per coset of L, in the order of the matrices. */
+  readonly operators: readonly string[];
+  readonly irreps: readonly {
+    readonly label: string;
+    readonly dimension: number;
+    readonly matrices: readonly (readonly (readonly ComplexRecord[])[])[] | null;
+    readonly exact: { readonly matrices: readonly (readonly (readonly string[])[])[] };
+  }[];
+}
+
 /** Result of `kvane irreps`. */
 export interface IrrepsRecord {
   readonly group: GroupRecord;
@@ -26,4 +53,8 @@ export interface IrrepsRecord {
   readonly arms: number;
   readonly littleGroup: LittleGroupRecord;
   readonly irreps: readonly IrrepRecord[];
+  /** Null where −k is in no arm of the star. */
+  readonly minusKRelation: MinusKRelationRecord | null;
+  /** Null unless asked for. */
+  readonly full: FullIrrepsRecord | null;
 }

@@ -75,6 +75,37 @@ export interface EvidenceRecord {
   readonly charges: { readonly dimensions: number; readonly kinds: number; readonly tuning: number };
 }
 
+/** A quantity refined with k: degrees 2θ, or a relative change of the cell lengths. */
+export interface CorrectionRecord {
+  readonly name: "zeroShift" | "cellScale";
+  readonly value: number;
+  /** Null where the value stands at its limit. */
+  readonly su: number | null;
+  readonly limit: number;
+}
+
+/** A candidate of a higher kind that is the same find within the resolution. */
+export interface MergedRecord {
+  readonly k: KRecord;
+  readonly dimension: number;
+  readonly evidence: number;
+  readonly matched: number;
+}
+
+/** What would tell another k from this one: the line at `q`, with a relative resolution better than `resolution`. */
+export interface SeparationRecord {
+  /** Index of the other candidate; null for a simple k nearby that is none. */
+  readonly candidate: number | null;
+  readonly k: KRecord;
+  readonly q: number;
+  /** Å⁻¹ to the nearest line of the other. */
+  readonly distance: number;
+  /** ΔQ/Q; null when no resolution would do. */
+  readonly resolution: number | null;
+  /** Whether the peaks tell them apart already. */
+  readonly toldApart: boolean;
+}
+
 export interface CandidateRecord {
   readonly k: KRecord;
   readonly manifold: KRecord;
@@ -96,6 +127,45 @@ export interface CandidateRecord {
   readonly unmatched: readonly number[];
   readonly residuals: ResidualsRecord;
   readonly refinement: RefinementRecord | null;
+  /** Zero shift and cell scale where they were refined with k. */
+  readonly corrections: readonly CorrectionRecord[];
+  /** Index of its region; null for a point and for a k that was given. */
+  readonly region: number | null;
+  readonly merged: readonly MergedRecord[];
+  readonly separations: readonly SeparationRecord[];
+}
+
+/** A part of a line, plane or the general kind where enough peaks may match; bounds for each letter. */
+export interface RegionRecord {
+  readonly kind: KRecord;
+  readonly from: readonly number[];
+  readonly to: readonly number[];
+  readonly leaves: number;
+  /** False where it could be neither settled nor excluded. */
+  readonly decided: boolean;
+}
+
+/** What was done with one kind of k. */
+export interface KindCertificateRecord {
+  readonly kind: KRecord;
+  readonly dimension: number;
+  readonly boxes: number;
+  readonly leaves: number;
+  readonly regions: number;
+  readonly undecided: number;
+  /** Share of the kind's volume. */
+  readonly unexplored: number;
+  readonly saturated: boolean;
+  /** False when only the best solutions by a quick score were weighed. */
+  readonly allWeighed: boolean;
+}
+
+/** k = 0 or a k that only reverses centring translations. */
+export interface ReferenceRecord {
+  readonly k: KRecord;
+  readonly evidence: number;
+  readonly matched: number;
+  readonly total: number;
 }
 
 /** What was searched and how far the answer is complete. */
@@ -107,6 +177,9 @@ export interface CertificateRecord {
   readonly maxDimension: number;
   readonly zeroShift: number;
   readonly cellScale: number;
+  /** Why the search ended early; null when it did not. */
+  readonly stopped: string | null;
+  readonly kinds: readonly KindCertificateRecord[];
 }
 
 /** Result of `kvane index` and `kvane locate`. */
@@ -120,6 +193,9 @@ export interface SearchRecord {
   readonly setAside: readonly { readonly peak: number; readonly because: string }[];
   /** Peaks that the first candidate does not explain. */
   readonly unmatched: readonly number[];
+  readonly regions: readonly RegionRecord[];
+  /** Weighed and shown whatever they explain; empty for `index`. */
+  readonly references: readonly ReferenceRecord[];
   /** How many k were tried and left out because they match too few peaks. */
   readonly dropped: number;
 }

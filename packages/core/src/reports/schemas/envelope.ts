@@ -1,5 +1,6 @@
 import { type JsonSchema, list, nothing, nullable, shared, text } from "./building.js";
 import { commonDefinitions } from "./common.js";
+import { atlasSchema, compatibilitySchema } from "./kinds.js";
 import { satellitesSchema, searchSchema } from "./peaks.js";
 import { checkSchema, explainSchema, helpSchema, runSchema } from "./study.js";
 import { irrepsSchema, modesSchema, opsSchema, starSchema } from "./symmetry.js";
@@ -9,8 +10,10 @@ const resultSchemas: { readonly [command: string]: JsonSchema } = {
   run: runSchema,
   check: checkSchema,
   ops: opsSchema,
+  atlas: atlasSchema,
   star: starSchema,
   irreps: irrepsSchema,
+  compatibility: compatibilitySchema,
   modes: modesSchema,
   satellites: satellitesSchema,
   index: searchSchema,

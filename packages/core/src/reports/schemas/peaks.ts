@@ -110,6 +110,21 @@ const candidate = record({
       rescaledSu: nullable(list(number)),
     }),
   ),
+  corrections: list(
+    record({ name: { enum: ["zeroShift", "cellScale"] }, value: number, su: nullable(number), limit: number }),
+  ),
+  region: nullable(count),
+  merged: list(record({ k: shared("k"), dimension: count, evidence: number, matched: count })),
+  separations: list(
+    record({
+      candidate: nullable(count),
+      k: shared("k"),
+      q: number,
+      distance: number,
+      resolution: nullable(number),
+      toldApart: flag,
+    }),
+  ),
 });
 
 export const searchSchema: JsonSchema = record({
@@ -126,9 +141,27 @@ export const searchSchema: JsonSchema = record({
       maxDimension: { type: "integer", minimum: 0, maximum: 3 },
       zeroShift: number,
       cellScale: number,
+      stopped: nullable(text),
+      kinds: list(
+        record({
+          kind: shared("k"),
+          dimension: count,
+          boxes: count,
+          leaves: count,
+          regions: count,
+          undecided: count,
+          unexplored: number,
+          saturated: flag,
+          allWeighed: flag,
+        }),
+      ),
     }),
   ),
   setAside: list(record({ peak: count, because: text })),
   unmatched: list(count),
+  regions: list(
+    record({ kind: shared("k"), from: list(number), to: list(number), leaves: count, decided: flag }),
+  ),
+  references: list(record({ k: shared("k"), evidence: number, matched: count, total: count })),
   dropped: count,
 });

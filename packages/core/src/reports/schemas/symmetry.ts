@@ -1,4 +1,16 @@
-import { count, flag, integer, type JsonSchema, list, nullable, record, shared, text, tuple } from "./building.js";
+import {
+  count,
+  flag,
+  integer,
+  type JsonSchema,
+  list,
+  nullable,
+  oneOf,
+  record,
+  shared,
+  text,
+  tuple,
+} from "./building.js";
 
 export const opsSchema: JsonSchema = record({
   group: shared("group"),
@@ -28,6 +40,34 @@ const numericIrrep = {
   exact: shared("exactIrrep"),
 };
 
+const complexMatrix = list(list(shared("complex")));
+const exactMatrix = list(list(text));
+
+const minusKRelation = record(
+  {
+    operator: text,
+    links: list(record({ label: text, partner: text, matrix: complexMatrix, exact: exactMatrix })),
+  },
+  "the operator that takes k to -k and the matrices N of D(g0^-1 g g0)* = N^-1 D'(g) N",
+);
+
+const fullIrreps = record(
+  {
+    arms: list(shared("k")),
+    representatives: list(text, "the operator that takes k to each arm"),
+    operators: list(text, "one per coset of the lattice, in the order of the matrices"),
+    irreps: list(
+      record({
+        label: text,
+        dimension: count,
+        matrices: nullable(list(complexMatrix)),
+        exact: record({ matrices: list(exactMatrix) }),
+      }),
+    ),
+  },
+  "irreps of the whole space group; rows and columns run over (arm, partner)",
+);
+
 export const irrepsSchema: JsonSchema = record({
   group: shared("group"),
   k: shared("k"),
@@ -44,14 +84,35 @@ export const irrepsSchema: JsonSchema = record({
       ...numericIrrep,
     }),
   ),
+  minusKRelation: nullable(minusKRelation),
+  full: nullable(fullIrreps),
 });
 
 const mode = record({
   copy: count,
   partner: count,
   suborbit: count,
-  moments: nullable(list(tuple(3, shared("complex")), "lattice components, one triple per orbit atom")),
-  exact: list(tuple(3, text)),
+  moments: nullable(list(tuple(3, shared("complex")), "one triple per orbit atom, in the components of the convention")),
+  exact: list(tuple(3, text), "lattice components"),
+});
+
+const minusKModes = record(
+  {
+    operator: text,
+    partner: text,
+    suborbitImages: list(count),
+    matrix: nullable(complexMatrix),
+    exact: exactMatrix,
+    constraint: nullable(list(text)),
+    constraintCrystal: nullable(list(text)),
+  },
+  "how the operator that takes k to -k acts on the copies, and the arrangement of one order parameter",
+);
+
+const armModes = record({
+  arm: shared("k"),
+  operator: text,
+  irreps: list(record({ label: text, modes: list(mode) })),
 });
 
 export const modesSchema: JsonSchema = record({
@@ -60,6 +121,16 @@ export const modesSchema: JsonSchema = record({
   minusK: shared("minusK"),
   arms: count,
   axial: flag,
+  convention: record(
+    {
+      exponent: oneOf("minus", "plus"),
+      phase: oneOf("lattice", "position"),
+      factor: oneOf("one", "half"),
+      components: oneOf("lattice", "crystal", "cartesian"),
+    },
+    "how Fourier components are written",
+  ),
+  cell: nullable(shared("cell")),
   littleGroup: shared("littleGroup"),
   sites: list(
     record({
@@ -77,14 +148,18 @@ export const modesSchema: JsonSchema = record({
           multiplicity: count,
           ...numericIrrep,
           modes: list(mode),
-          constraint: list(text),
+          constraint: list(text, "lattice components"),
+          constraintCrystal: nullable(list(text, "moments along the crystal axes")),
           freeParameters: integer,
-          freeParametersWithMinusK: nullable(integer),
+          freeParametersWithMinusK: integer,
+          minusK: nullable(minusKModes),
           vanishingAtoms: list(count),
           equalAmplitude: nullable(flag),
           constantMoment: nullable(flag),
+          collinear: nullable(flag),
         }),
       ),
+      starModes: nullable(list(armModes, "one per arm of the star")),
     }),
   ),
 });

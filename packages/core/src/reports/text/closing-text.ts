@@ -1,19 +1,21 @@
 import type { Problem } from "../../errors/index.js";
-import type { AssumedRecord } from "../records/common.js";
+import type { AssumedRecord, Envelope } from "../records/common.js";
+import type { ModesRecord } from "../records/modes.js";
+import type { RunRecord } from "../records/run.js";
+import { conventionSentence } from "./convention-text.js";
 import { paragraph, section, table } from "./layout.js";
 
-const conventions =
-  "Conventions: operators x' = Rx + t; k in the reciprocal basis of the setting; D(T) = exp(+2πi k·T).";
-const momentConventions =
-  "M_j(T) = S_j exp(−2πi k·T) + c.c., without a factor 1/2 (S_j real and without c.c. where 2k is a reciprocal lattice vector); phases run with lattice translations T only; components along a, b, c.";
+const operatorConventions =
+  "Operators x' = Rx + t; k in the reciprocal basis of the setting; D(T) = exp(+2πi k·T).";
 
 /** Which conventions the numbers above obey, once. */
-export function conventionLines(command: string): string[] {
-  if (!["star", "irreps", "modes", "run"].includes(command)) return [];
-  const moments = command === "modes" || command === "run";
+export function conventionLines({ command, result }: Envelope): string[] {
+  if (!["atlas", "star", "irreps", "compatibility", "modes", "run"].includes(command)) return [];
+  const convention =
+    command === "modes" ? (result as ModesRecord).convention : (result as RunRecord).branches?.[0]?.modes.convention;
   return section(
     "Conventions",
-    paragraph(`${conventions.replace("Conventions: o", "O")}${moments ? ` ${momentConventions}` : ""}`),
+    paragraph(`${operatorConventions}${convention ? ` ${conventionSentence(convention)}` : ""}`),
   );
 }
 

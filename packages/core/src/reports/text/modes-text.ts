@@ -1,7 +1,12 @@
-import type { IrrepModesRecord, ModesRecord, SiteModesRecord } from "../records/modes.js";
-import { fields, section, table, wideTable } from "./layout.js";
-import { counted, groupText, kText, minusKText, positionText } from "./names.js";
+import type { ConventionRecord, IrrepModesRecord, ModeRecord, ModesRecord, SiteModesRecord } from "../records/modes.js";
+import { axesText, waveText } from "./convention-text.js";
+import { matrixText } from "./irreps-text.js";
+import { fields, pageWidth, paragraph, section, table, wideTable, widthOf } from "./layout.js";
+import { cellText, counted, groupText, kForm, kText, minusKText, positionText } from "./names.js";
 import { littleGroupSection } from "./star-text.js";
+
+/** What the parts of a report on modes need of the whole. */
+export type ModesFrame = Pick<ModesRecord, "convention" | "cell" | "minusK" | "k">;
 
 export function modesText(record: ModesRecord): string[] {
   return [
@@ -9,18 +14,20 @@ export function modesText(record: ModesRecord): string[] {
       "Wave vector",
       fields([
         ["Group", groupText(record.group)],
+        ...(record.cell ? [["Cell", cellText(record.cell)] as const] : []),
         ["k", kText(record.k)],
         ["−k", minusKText(record.minusK)],
         ["Little co-group", `${record.littleGroup.symbol}, order ${record.littleGroup.order}`],
       ]),
     ),
     ...littleGroupSection(record.littleGroup),
-    ...record.sites.flatMap((site) => siteText(site)),
+    ...record.sites.flatMap((site) => siteText(site, record)),
+    ...letterSection(record),
   ];
 }
 
 /** Everything about one site: orbit, decomposition and, irrep by irrep, what is allowed and the basis vectors. */
-export function siteText(site: SiteModesRecord): string[] {
+function siteText(site: SiteModesRecord, frame: ModesFrame): string[] {
   return [
     ...section(
       `Site ${site.label}`,
@@ -31,7 +38,8 @@ export function siteText(site: SiteModesRecord): string[] {
         ["Decomposition", decompositionText(site)],
       ]),
     ),
-    ...site.irreps.filter(({ multiplicity }) => multiplicity > 0).flatMap((irrep) => irrepText(site, irrep)),
+    ...site.irreps.filter(({ multiplicity }) => multiplicity > 0).flatMap((irrep) => irrepText(site, irrep, frame)),
+    ...armSections(site, frame),
   ];
 }
 
@@ -47,14 +55,21 @@ function suborbitText(site: SiteModesRecord): string {
   return site.suborbits.map((atoms) => atoms.map((atom) => atom + 1).join(" ")).join(" | ");
 }
 
-function irrepText(site: SiteModesRecord, irrep: IrrepModesRecord): string[] {
+function irrepText(site: SiteModesRecord, irrep: IrrepModesRecord, frame: ModesFrame): string[] {
   return [
     ...section(
       `${irrep.label} on ${site.label}: dimension ${irrep.dimension}, ${countText(irrep.multiplicity)}, ${irrep.reality}`,
-      fields([["Free real parameters", parameterText(irrep)]]),
-      constraintTable(site, irrep),
+      fields([
+        ["Free real parameters", parameterText(irrep)],
+        ...relationFields(site, irrep),
+        ...sizeFields(irrep, frame),
+        ...(irrep.vanishingAtoms.length > 0
+          ? [["Atoms without a moment", irrep.vanishingAtoms.map((atom) => atom + 1).join(", ")] as const]
+          : []),
+      ]),
+      constraintTables(site, irrep, frame.convention),
       [""],
-      modeTable(site, irrep),
+      modeTable(site, irrep.dimension, irrep.modes, frame.convention),
     ),
   ];
 }
@@ -66,34 +81,167 @@ function countText(count: number): string {
 
 export function parameterText(irrep: IrrepModesRecord): string {
   const relation = irrep.freeParametersWithMinusK;
-  if (relation === null || relation === irrep.freeParameters) return String(irrep.freeParameters);
+  if (relation === irrep.freeParameters) return String(irrep.freeParameters);
   return `${irrep.freeParameters}; ${relation} with the relation between k and −k of one order parameter`;
 }
 
-/** The allowed Fourier component of each atom, in symbols. */
-export function constraintTable(site: SiteModesRecord, irrep: IrrepModesRecord): string[] {
-  return table(
-    [{ title: "atom", align: "right" }, { title: "position" }, { title: "allowed S along a, b, c" }],
-    site.orbit.map((position, atom) => [
-      String(atom + 1),
-      positionText(position),
-      irrep.constraint[atom] ?? "(0, 0, 0)",
-    ]),
-  );
+function relationFields(site: SiteModesRecord, { label, minusK }: IrrepModesRecord): [string, string][] {
+  if (minusK === null) return [];
+  const partner = minusK.partner === label ? "" : ` to those of ${minusK.partner}`;
+  const swapped = minusK.suborbitImages.flatMap((image, orbit) => (image > orbit ? [`${orbit + 1} ↔ ${image + 1}`] : []));
+  const orbits = site.suborbits.length > 1 && swapped.length > 0 ? `, little-group orbits ${swapped.join(", ")}` : "";
+  return [
+    ["g₀, which takes k to −k", `${minusK.operator}${orbits}`],
+    [`B on the copies${partner}`, matrixText(minusK.exact)],
+  ];
 }
 
-function modeTable(site: SiteModesRecord, irrep: IrrepModesRecord): string[] {
-  const partner = irrep.dimension > 1;
-  const title = `${counted(irrep.modes.length, "basis vector")}${partner ? ", copy.partner" : ""}`;
+function sizeFields(irrep: IrrepModesRecord, { cell, k }: ModesFrame): [string, string][] {
+  const { equalAmplitude, constantMoment, collinear } = irrep;
+  if (equalAmplitude === null || constantMoment === null || collinear === null) {
+    const needs = cell === null ? "a cell (--cell)" : `a number for every letter of k = ${kForm(k)}`;
+    return [["Sizes of moments", `not computed: they need ${needs}`]];
+  }
+  const possible = (value: boolean) => (value ? "possible" : "none found");
+  return [
+    ["Equal |S| on all atoms", possible(equalAmplitude)],
+    ["Equal moments in all cells", possible(constantMoment)],
+    ["Collinear", collinear ? "for all amplitudes" : "not forced"],
+  ];
+}
+
+/** The allowed Fourier component of each atom: plain, and beside it that of one order parameter; below in μB. */
+function constraintTables(site: SiteModesRecord, irrep: IrrepModesRecord, convention: ConventionRecord): string[] {
+  const wave = waveText(convention);
+  const lattice = constraintTable(site, irrep.constraint, irrep.minusK?.constraint ?? null, [
+    `allowed S along a, b, c, with ${wave}`,
+    "of one order parameter",
+  ]);
+  if (irrep.constraintCrystal === null && !irrep.minusK?.constraintCrystal) return lattice;
+  const crystal = constraintTable(
+    site,
+    irrep.constraintCrystal ?? irrep.constraint,
+    irrep.minusK && (irrep.minusK.constraintCrystal ?? irrep.minusK.constraint),
+    [`allowed S in μB along the unit vectors of a, b, c, with ${wave}`, "of one order parameter"],
+  );
+  return [...lattice, "", ...crystal];
+}
+
+function constraintTable(
+  site: SiteModesRecord,
+  plain: readonly string[],
+  one: readonly string[] | null,
+  [title, oneTitle]: readonly [string, string],
+): string[] {
+  const atoms = [{ title: "atom", align: "right" as const }, { title: "position" }];
+  const rows = site.orbit.map((position, atom) => [
+    String(atom + 1),
+    positionText(position),
+    plain[atom] ?? "(0, 0, 0)",
+    ...(one ? [one[atom] ?? "(0, 0, 0)"] : []),
+  ]);
+  if (one === null) return table([...atoms, { title }], rows);
+  const widest = (column: number, head: string) => Math.max(widthOf(head), ...rows.map((row) => widthOf(row[column] ?? "")));
+  const width = 2 + 4 + 2 + widest(1, "position") + 2 + widest(2, title) + 2 + widest(3, oneTitle);
+  if (width <= pageWidth) return table([...atoms, { title }, { title: oneTitle }], rows);
+  return [
+    ...table(
+      [...atoms, { title }],
+      rows.map((row) => row.slice(0, 3)),
+    ),
+    "",
+    ...table(
+      [...atoms, { title: `the same ${oneTitle}` }],
+      rows.map(([atom = "", position = "", , last = ""]) => [atom, position, last]),
+    ),
+  ];
+}
+
+function modeTable(
+  site: SiteModesRecord,
+  dimension: number,
+  modes: readonly ModeRecord[],
+  convention: ConventionRecord,
+): string[] {
+  const partner = dimension > 1;
+  const title = `${counted(modes.length, "basis vector")}${partner ? ", copy.partner," : ""} ${axesText(convention.components)}, with ${waveText(convention)}`;
   return [
     `  ${title}`,
     ...wideTable(
       [{ title: "atom", align: "right" }],
-      irrep.modes.map(({ copy, partner: index }) => ({ title: partner ? `${copy}.${index}` : String(copy) })),
+      modes.map(({ copy, partner: index }) => ({ title: partner ? `${copy}.${index}` : String(copy) })),
       site.orbit.map((_, atom) => ({
         fixed: [String(atom + 1)],
-        cells: irrep.modes.map(({ exact }) => `(${(exact[atom] ?? []).join(", ")})`),
+        cells: modes.map((mode) => vectorText(mode, atom, convention)),
       })),
     ),
   ];
+}
+
+/** Exact in lattice components, else numbers. */
+function vectorText({ exact, moments }: ModeRecord, atom: number, { components }: ConventionRecord): string {
+  if (components === "lattice" || moments === null) return `(${(exact[atom] ?? []).join(", ")})`;
+  return `(${(moments[atom] ?? []).map(([real, imaginary]) => complexText(real, imaginary)).join(", ")})`;
+}
+
+/** Decimals of a component of a basis vector in crystal or Cartesian axes. */
+const shownDecimals = 5;
+
+function complexText(real: number, imaginary: number): string {
+  const [re, im] = [real, imaginary].map((value) => Number(value.toFixed(shownDecimals)) + 0) as [number, number];
+  if (im === 0) return String(re);
+  const part = `${Math.abs(im) === 1 ? "" : Math.abs(im)}i`;
+  if (re === 0) return `${im < 0 ? "-" : ""}${part}`;
+  return `${re}${im < 0 ? "-" : "+"}${part}`;
+}
+
+/** Basis vectors on the other arms: those of k stand with each irrep. */
+function armSections(site: SiteModesRecord, { convention }: ModesFrame): string[] {
+  return (site.starModes ?? []).flatMap(({ arm, operator, irreps }, index) =>
+    irreps
+      .filter(({ modes }) => modes.length > 0)
+      .flatMap(({ label, modes }) =>
+        section(
+          `${label} on ${site.label}, arm ${index + 1} ${kForm(arm)} by ${operator}`,
+          modeTable(site, Math.max(...modes.map(({ partner }) => partner)), modes, convention),
+        ),
+      ),
+  );
+}
+
+/** What the letters of the tables above mean, once. */
+function letterSection(record: ModesRecord): string[] {
+  const present = record.sites.flatMap(({ irreps }) => irreps.filter(({ multiplicity }) => multiplicity > 0));
+  if (present.length === 0) return [];
+  const several = present.some(({ dimension }) => dimension > 1);
+  const one = present.filter(({ minusK }) => minusK !== null && minusK.constraint !== null);
+  const half = record.minusK === "equivalent";
+  return section(
+    "Letters",
+    paragraph(
+      half
+        ? "Letters are free real amplitudes, one for each real parameter of the physically irreducible representation."
+        : "Letters are free complex amplitudes, one for each copy of the irrep (u, v, w first), each irrep with its own.",
+    ),
+    several && !half
+      ? paragraph(
+          "In u1, u2 the digit is the partner: u1, u2, … of one copy mix under the little group as the matrices of `kvane irreps` say; different copies (u1 and v1) never mix.",
+        )
+      : [],
+    several && half
+      ? paragraph(
+          "Basis vectors are numbered copy.partner: partners of one copy mix under the little group as the matrices of `kvane irreps` say, copies never.",
+        )
+      : [],
+    record.cell !== null
+      ? paragraph("In μB along the unit vectors of a, b, c a table is the same text unless it stands below its own.")
+      : [],
+    one.length > 0
+      ? paragraph(
+          `One order parameter: the relation between k and −k joins the copies. Letters are real there, complex where a star marks their complex conjugate; all S share one free phase.${
+            one.some(({ dimension }) => dimension > 1) ? " ξ1, ξ2, … are the complex components of the order parameter." : ""
+          }`,
+        )
+      : [],
+  );
 }

@@ -21,6 +21,16 @@ export function kText(k: KRecord): string {
   return [kForm(k), ...values].join(", ");
 }
 
+/** The values in place of the letters: `(0, 0.4720(4), 0)`; components with more than a letter as plain numbers. */
+export function kShort(k: KRecord): string {
+  const components = k.components.map((component, axis) => {
+    const value = k.values[component];
+    if (value !== undefined) return measured(value, k.su[component] ?? null);
+    return /[uvw]/.test(component) && k.numeric !== null ? plain(k.numeric[axis] ?? Number.NaN) : component;
+  });
+  return `(${components.join(", ")})`;
+}
+
 function measured(value: number, su: number | null): string {
   return su === null ? plain(value) : withUncertainty(value, su);
 }

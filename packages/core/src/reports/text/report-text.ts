@@ -1,5 +1,7 @@
+import type { AtlasRecord } from "../records/atlas.js";
 import type { CheckRecord } from "../records/check.js";
 import type { Envelope } from "../records/common.js";
+import type { CompatibilityRecord } from "../records/compatibility.js";
 import type { IrrepsRecord } from "../records/irreps.js";
 import type { ModesRecord } from "../records/modes.js";
 import type { OpsRecord } from "../records/ops.js";
@@ -8,8 +10,10 @@ import type { SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
 import type { ExplainRecord, HelpRecord } from "../records/simple.js";
 import type { StarRecord } from "../records/star.js";
+import { atlasText } from "./atlas-text.js";
 import { checkText } from "./check-text.js";
 import { assumedLines, cautionLines, conventionLines, warningLines } from "./closing-text.js";
+import { compatibilityText } from "./compatibility-text.js";
 import { irrepsText } from "./irreps-text.js";
 import { modesText } from "./modes-text.js";
 import { opsText } from "./ops-text.js";
@@ -31,7 +35,7 @@ export function reportText(answer: Envelope, options: { readonly full?: boolean 
     ...bodyLines(answer, options.full ?? false),
     ...warningLines(answer.warnings),
     ...assumedLines(answer.assumed),
-    ...conventionLines(answer.command),
+    ...conventionLines(answer),
     ...cautionLines(answer.command),
   ];
   while (lines.at(-1) === "") lines.pop();
@@ -43,6 +47,10 @@ function bodyLines({ command, result }: Envelope, full: boolean): string[] {
   switch (command) {
     case "ops":
       return opsText(result as OpsRecord);
+    case "atlas":
+      return atlasText(result as AtlasRecord);
+    case "compatibility":
+      return compatibilityText(result as CompatibilityRecord);
     case "star":
       return starText(result as StarRecord);
     case "irreps":

@@ -1,6 +1,6 @@
 import type { AssignmentRecord, CandidateRecord, PeaksRecord, SearchRecord } from "../records/search.js";
 import { fields, paragraph, section, table } from "./layout.js";
-import { cellText, counted, decimals, dimensionText, groupText, kForm, kText, plain } from "./names.js";
+import { cellText, counted, decimals, dimensionText, groupText, kForm, kShort, kText, plain } from "./names.js";
 import { lineText } from "./satellites-text.js";
 
 /** Candidates that the report of `locate` lists; the JSON has all. */
@@ -25,6 +25,8 @@ export function locateText(record: SearchRecord): string[] {
       candidateTable(record.candidates.slice(0, shownCandidates)),
       [""],
       certificateLines(record),
+      separationLines(record),
+      referenceLines(record),
       setAsideLines(record),
     ),
     ...(best ? section(`Assignment by candidate 1, ${kText(best.k)}`, assignmentTable(best, record.peaks)) : []),
@@ -71,7 +73,7 @@ export function candidateTable(candidates: readonly CandidateRecord[]): string[]
     ],
     candidates.map((candidate, index) => [
       String(index + 1),
-      kText(candidate.k),
+      kShort(candidate.k),
       dimensionText(candidate.dimension),
       String(candidate.arms),
       `${candidate.matched} of ${candidate.total}`,
@@ -83,19 +85,59 @@ export function candidateTable(candidates: readonly CandidateRecord[]): string[]
   );
 }
 
-/** What the search covered. */
+/** What the search covered, and what it says of what is not listed. */
 export function certificateLines(record: SearchRecord): string[] {
   const certificate = record.certificate;
   if (certificate === null) return [];
-  const kinds = ["points", "points and lines", "points, lines and planes", "all k"][certificate.maxDimension];
+  const kinds = ["all special points", "points and lines", "points, lines and planes", "every kind of k"];
+  const within = allowances(certificate.zeroShift, certificate.cellScale);
   const scope =
-    certificate.maxDimension === 0
-      ? "All special points were tried, with k and −k as one; lines, planes and general k were not."
-      : `Searched: ${kinds}, ${counted(certificate.boxes, "box", "boxes")}.`;
+    `Searched, with k and −k as one: ${kinds[certificate.maxDimension]}, ` +
+    `${counted(certificate.boxes, "box", "boxes")}` +
+    `${certificate.smallestBox > 0 ? ` down to ${plain(Number(certificate.smallestBox.toPrecision(2)))} Å⁻¹` : ""}${within}.`;
+  const undecided = certificate.kinds.reduce((sum, kind) => sum + kind.undecided, 0);
   const complete = certificate.exhaustive
-    ? `Besides those listed none of them matches ${certificate.minimumMatched} or more peaks.`
-    : "The search was stopped before its end: others may match.";
+    ? `Nothing else in the ${certificate.maxDimension === 3 ? "whole zone" : "kinds searched"} matches ${certificate.minimumMatched} or more peaks` +
+      `${undecided > 0 ? `, but ${counted(undecided, "region")} could not be decided (see --json)` : ""}.`
+    : `The search was stopped before its end (${certificate.stopped ?? "no reason given"}): other k may match.`;
   return paragraph(`${scope} ${complete}`);
+}
+
+function allowances(zeroShift: number, cellScale: number): string {
+  const parts = [
+    ...(zeroShift > 0 ? [`a zero shift up to ${plain(zeroShift)}°`] : []),
+    ...(cellScale > 0 ? [`a change of the cell up to ${plain(100 * cellScale)} %`] : []),
+  ];
+  return parts.length === 0 ? "" : `, allowing ${parts.join(" and ")}`;
+}
+
+/** What the first candidate cannot be told from, and what would tell. */
+export function separationLines(record: SearchRecord): string[] {
+  const best = record.candidates[0];
+  if (best === undefined) return [];
+  const lines = best.separations
+    .filter((one) => !one.toldApart && one.q > 0)
+    .map((one) =>
+      one.resolution === null
+        ? `${kShort(best.k)} cannot be told from ${kShort(one.k)} by positions: all lines coincide.`
+        : `${kShort(best.k)} cannot be told from ${kShort(one.k)} unless ΔQ/Q < ${decimals(100 * one.resolution, 2)} % at ${decimals(one.q, 2)} Å⁻¹.`,
+    );
+  const merged = best.merged.map(
+    (one) => `${kShort(one.k)} beside it is the same find (evidence ${decimals(one.evidence, 1)}).`,
+  );
+  const corrections = best.corrections.map(
+    ({ name, value, su }) =>
+      `Refined with it: ${name === "zeroShift" ? "zero shift of 2θ" : "relative change of the cell"} ${plain(Number(value.toPrecision(3)))}` +
+      `${su === null ? " (at its limit)" : ` ± ${plain(Number(su.toPrecision(2)))}`}.`,
+  );
+  return [...lines, ...merged, ...corrections].flatMap((line) => paragraph(line));
+}
+
+/** k = 0 and its like, where no candidate stands for them. */
+function referenceLines(record: SearchRecord): string[] {
+  return record.references.flatMap(({ k, evidence, matched, total }) =>
+    paragraph(`For comparison ${kShort(k)}: ${matched} of ${total} peaks, evidence ${decimals(evidence, 1)}.`),
+  );
 }
 
 function setAsideLines(record: SearchRecord): string[] {
