@@ -69,3 +69,10 @@ for (const { name, parameters } of rows) {
     process.exitCode = 1;
   }
 }
+
+// What happens inside one process: the search against its dense-grid twin.
+if (wanted === "" || "search".includes(wanted)) {
+  const program = [join(root, "test/tools/run-typescript.mjs"), join(root, "test/bench/search.ts")];
+  const { status } = spawnSync(process.execPath, program, { stdio: "inherit", cwd: root });
+  if (status !== 0) process.exitCode = 1;
+}

@@ -70,7 +70,10 @@ export async function missedByTwin(seed: number): Promise<readonly string[]> {
   if (!result.certificate.exhaustive) return [];
   const axes = reciprocalAxes(made.cell);
   const primitive = basisOf(made.centring).map(
-    (row) => [0, 1, 2].map((i) => row.reduce((sum, entry, axis) => sum + entry * (axes[axis]?.[i] as number), 0)) as unknown as Triple,
+    (row) =>
+      [0, 1, 2].map((i) =>
+        row.reduce((sum, entry, axis) => sum + entry * (axes[axis]?.[i] as number), 0),
+      ) as unknown as Triple,
   );
   const { found } = gridSearch(
     {

@@ -11,7 +11,15 @@ import { groupFromOperators, type SpaceGroup } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { symmorphicNumbers, wyckoffPositions } from "../fixtures/make-wyckoff-counts.mjs";
 import { typeFinder } from "../support/affine-types.js";
-import { floatGroup, isReciprocalVector, minus } from "../support/float-group.js";
+import {
+  componentsOf,
+  countArms,
+  type FloatGroup,
+  floatGroup,
+  isReciprocalVector,
+  minus,
+  operatorsTaking,
+} from "../support/float-group.js";
 import { imagesOf, randomKindProblems } from "../support/kinds-in-floats.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { seeded } from "../support/random.js";
@@ -171,6 +179,47 @@ describe("every k belongs to exactly one kind", () => {
 });
 
 type Pair = [number, number];
+
+describe("what is said of each kind", () => {
+  test("is what plain floats give: order, arms, −k, both dimensions", () => {
+    const wrong = symmorphicNumbers.map(groupOf).flatMap((group) =>
+      [false, true].flatMap((withInversion) =>
+        atlas(group, { withInversion }).flatMap((kind) => {
+          const float = floatGroup(group);
+          const k = componentsOf(kind.k);
+          const [fixing, reversing] = [operatorsTaking(float, k, 1), operatorsTaking(float, k, -1)];
+          const equivalent = isReciprocalVector(
+            float,
+            k.map((entry) => 2 * entry),
+          );
+          const expected = {
+            order: fixing.length,
+            arms: countArms(float, k),
+            minusK: equivalent ? "equivalent" : reversing.length > 0 ? "in star" : "not in star",
+            dimension: meanTrace(float, fixing, []),
+            dimensionPM: meanTrace(float, fixing, reversing),
+          };
+          const { littleCoGroup, arms, minusK, dimension, dimensionPM } = kind;
+          const found = { order: littleCoGroup.order, arms, minusK, dimension, dimensionPM };
+          return JSON.stringify(found) === JSON.stringify(expected)
+            ? []
+            : [`${group.name.number} (${k}): ${JSON.stringify(found)} instead of ${JSON.stringify(expected)}`];
+        }),
+      ),
+    );
+    expect(wrong).toEqual([]);
+  });
+});
+
+/** Dimension of what R of the first list and −R of the second leave fixed: a mean of traces (orthogonality). */
+function meanTrace(float: FloatGroup, fixing: readonly number[], reversing: readonly number[]): number {
+  const trace = (index: number): number => {
+    const r = float.operators[index]?.rotation as readonly number[];
+    return (r[0] as number) + (r[4] as number) + (r[8] as number);
+  };
+  const sum = (list: readonly number[]): number => list.reduce((total, index) => total + trace(index), 0);
+  return Math.round((sum(fixing) - sum(reversing)) / (fixing.length + reversing.length)) + 0;
+}
 
 describe("points and halves", () => {
   test("the points under P with −1 are the special points", () => {

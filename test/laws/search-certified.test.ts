@@ -7,7 +7,9 @@ import { ranksFirst, searchCase } from "../support/search-cases.ts";
  * and a dense grid that must not know of a k which the search missed.
  */
 describe("the certified search on made lists (seeds 0 to 11)", () => {
-  test("the k behind each list lies in a returned region, and ranks first or tied first in all but one", { timeout: 60_000 }, async () => {
+  test("the k behind each list lies in a returned region, and ranks first or tied first in all but one", {
+    timeout: 60_000,
+  }, async () => {
     const failures: string[] = [];
     const outranked: string[] = [];
     for (let seed = 0; seed < 12; seed++) {

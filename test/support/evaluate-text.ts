@@ -102,7 +102,7 @@ function readInside(reader: Reader, opening: number, closing: string): Complex {
 }
 
 function readDigits(reader: Reader): string {
-  const digits = /^\d+/.exec(reader.text.slice(reader.position))?.[0];
+  const digits = /^\d+(?:\.\d+)?/.exec(reader.text.slice(reader.position))?.[0];
   if (digits === undefined) throw new Error(`expected digits at ${reader.position} in ${reader.text}`);
   reader.position += digits.length;
   return digits;

@@ -18,15 +18,15 @@ export interface GridAnswer {
   readonly found: readonly (readonly [number, number, number])[];
 }
 
-/** Points along the edge of a cube whose table of H is made at once. */
-const cubeEdge = 16;
+/** Points along the edge of a cube whose table of H is made at once; infinite for one table of the whole zone. */
+const usualCubeEdge = 16;
 
 /**
  * Searches u, v, w in [0, 1) × [0, 1) × [0, 1/2], one of every pair ±k.
  *
  * @param slack Å⁻¹ added to each half-width: `radius` to miss nothing between the points, 0 to list matches only
  */
-export function gridSearch(input: GridInput, slack: number): GridAnswer {
+export function gridSearch(input: GridInput, slack: number, edge = usualCubeEdge): GridAnswer {
   const { axes, radius } = input;
   const peaks = [...input.peaks].sort((a, b) => a.q - b.q);
   const count = peaks.length;
@@ -35,6 +35,7 @@ export function gridSearch(input: GridInput, slack: number): GridAnswer {
   const steps = lengths.map((length) => Math.ceil((length * Math.sqrt(3)) / (2 * radius)));
   const [n0, n1, n2] = steps as [number, number, number];
   const last2 = Math.floor(n2 / 2);
+  const cubeEdge = Math.min(edge, Math.max(n0, n1, n2));
   const highest = Math.max(...peaks.map((peak) => peak.q + peak.halfWidth)) + slack;
   const vectors = vectorsUpTo(axes, highest + lengths.reduce((sum, length) => sum + length, 0));
   const lowSquare = Float64Array.from(peaks, ({ q, halfWidth }) => Math.max(0, q - halfWidth - slack) ** 2);
@@ -43,7 +44,9 @@ export function gridSearch(input: GridInput, slack: number): GridAnswer {
   let table = new Float64Array(3 * 4096);
   const found: [number, number, number][] = [];
   const at = (axis: number, i: number, j: number, l: number): number =>
-    (i / n0) * (axes[0]?.[axis] as number) + (j / n1) * (axes[1]?.[axis] as number) + (l / n2) * (axes[2]?.[axis] as number);
+    (i / n0) * (axes[0]?.[axis] as number) +
+    (j / n1) * (axes[1]?.[axis] as number) +
+    (l / n2) * (axes[2]?.[axis] as number);
   let points = 0;
   for (let i0 = 0; i0 < n0; i0 += cubeEdge)
     for (let j0 = 0; j0 < n1; j0 += cubeEdge)

@@ -4,8 +4,8 @@ import type { Cell, SpaceGroup } from "@kvane/core/spacegroups";
 import { lengthOf, reciprocalAxes, twinLines } from "./line-twin.ts";
 import { groupOf } from "./parsed-groups.ts";
 import { angleList, normal } from "./peak-lists.ts";
-import { randomCell } from "./random-cells.ts";
 import { type Random, seeded } from "./random.ts";
+import { randomCell } from "./random-cells.ts";
 
 /** One made peak list with the k behind it. */
 export interface SearchCase {
@@ -150,13 +150,25 @@ function latticeVectors(centring: readonly Triple[], reach: number): Triple[] {
 }
 
 /** Distance in Å⁻¹ between two k, all images allowed, the slow way. */
-export function slowStarDistance(group: SpaceGroup, cell: Cell, centring: readonly Triple[], a: Triple, b: Triple): number {
+export function slowStarDistance(
+  group: SpaceGroup,
+  cell: Cell,
+  centring: readonly Triple[],
+  a: Triple,
+  b: Triple,
+): number {
   const axes = reciprocalAxes(cell);
   const vectors = latticeVectors(centring, 4);
   let least = Number.POSITIVE_INFINITY;
   for (const image of imagesOf(group, a))
     for (const h of vectors)
-      least = Math.min(least, lengthOf(axes, [0, 1, 2].map((i) => (image[i] as number) + (h[i] as number) - (b[i] as number))));
+      least = Math.min(
+        least,
+        lengthOf(
+          axes,
+          [0, 1, 2].map((i) => (image[i] as number) + (h[i] as number) - (b[i] as number)),
+        ),
+      );
   return least;
 }
 
@@ -170,11 +182,7 @@ export function inSomeRegion(
   const vectors = latticeVectors(centring, 4);
   const wanted = regions.filter(({ from }) => from.length === dimension);
   return wanted.some((region) =>
-    images.some((image) =>
-      vectors.some((h) =>
-        inRegion(region, [image[0] + h[0], image[1] + h[1], image[2] + h[2]]),
-      ),
-    ),
+    images.some((image) => vectors.some((h) => inRegion(region, [image[0] + h[0], image[1] + h[1], image[2] + h[2]]))),
   );
 }
 
@@ -182,11 +190,9 @@ const rounding = 1e-7;
 
 function inRegion({ kind, from, to }: Region, k: Triple): boolean {
   const letters = lettersOf(kind, k);
-  return (
-    letters !== null &&
-    letters.every(
-      (value, index) => value >= (from[index] as number) - rounding && value <= (to[index] as number) + rounding,
-    )
+  if (letters === null) return false;
+  return letters.every(
+    (value, index) => value >= (from[index] as number) - rounding && value <= (to[index] as number) + rounding,
   );
 }
 
@@ -200,7 +206,8 @@ function lettersOf(form: WaveVector, k: Triple): number[] | null {
   };
   const letters = used.map((letter) => {
     const axis = [0, 1, 2].find(
-      (place) => coefficient(place, letter) !== 0 && used.every((other) => other === letter || coefficient(place, other) === 0),
+      (place) =>
+        coefficient(place, letter) !== 0 && used.every((other) => other === letter || coefficient(place, other) === 0),
     );
     if (axis === undefined) throw new Error("a form has no component with one letter alone");
     return ((k[axis] as number) - (constants[axis] as number)) / coefficient(axis, letter);

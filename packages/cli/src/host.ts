@@ -1,4 +1,4 @@
-import { readFile } from "node:fs/promises";
+import { readFileSync } from "node:fs";
 import { join, resolve } from "node:path";
 import { fail, type Place } from "@kvane/core/errors";
 import type { JobHost, Request } from "@kvane/core/job";
@@ -23,7 +23,7 @@ export function commandHost(surroundings: Surroundings, progress: JobHost["progr
     signal: surroundings.signal,
     ...(progress ? { progress } : {}),
     readText: async (path) => {
-      const text = decoded(path === "-" ? await surroundings.standardInput() : await bytesOf(path, surroundings), path);
+      const text = decoded(path === "-" ? await surroundings.standardInput() : bytesOf(path, surroundings), path);
       texts.set(path, text);
       return text;
     },
@@ -49,9 +49,9 @@ function argumentText(request: Request, place: Place): string | null {
   return (value as readonly string[])[index]?.trim() ?? null;
 }
 
-async function bytesOf(path: string, { folder }: Surroundings): Promise<Uint8Array> {
+function bytesOf(path: string, { folder }: Surroundings): Uint8Array {
   try {
-    return await readFile(located(path, folder));
+    return readFileSync(located(path, folder));
   } catch (error) {
     const code = (error as NodeJS.ErrnoException).code ?? "";
     if (code === "ENOENT" || code === "ENOTDIR")

@@ -20,13 +20,6 @@ function stop(): void {
   process.exit(interrupted);
 }
 
-// A reader that has seen enough (`| head`) is no error.
-for (const stream of [process.stdout, process.stderr])
-  stream.on("error", (error: NodeJS.ErrnoException) => {
-    if (error.code !== "EPIPE") throw error;
-    process.exit(process.exitCode ?? 0);
-  });
-
 void main();
 
 async function main(): Promise<void> {

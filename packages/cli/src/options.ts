@@ -18,9 +18,15 @@ export const optionSpecs = {
   polar: { flags: "--polar", about: "polar vectors (displacements) instead of moments" },
   star: { flags: "--star", about: "list the basis vectors on every arm of the star" },
   exponent: { flags: "--exponent <SIGN>", about: "sign in exp(−2πi k·T): minus or plus (minus)" },
-  phase: { flags: "--phase <WHERE>", about: "phases run with lattice translations or with positions: lattice or position (lattice)" },
+  phase: {
+    flags: "--phase <WHERE>",
+    about: "phases run with lattice translations or with positions: lattice or position (lattice)",
+  },
   factor: { flags: "--factor <FACTOR>", about: "factor before wave + c.c.: one or half (one)" },
-  components: { flags: "--components <AXES>", about: "lattice, crystal or cartesian; the last two need a cell (lattice)" },
+  components: {
+    flags: "--components <AXES>",
+    about: "lattice, crystal or cartesian; the last two need a cell (lattice)",
+  },
   peaks: { flags: "--peaks <FILE>", about: "list of peak positions" },
   as: { flags: "--as <KIND>", about: "what the positions are: d, q, two-theta or hkl" },
   wavelength: { flags: "--wavelength <Å>", about: "neutron wavelength" },

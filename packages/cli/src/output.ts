@@ -2,6 +2,7 @@ import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync, write
 import { basename, dirname, join } from "node:path";
 import { fail, KvaneError } from "@kvane/core/errors";
 import type { ResultFile } from "@kvane/core/reports";
+import { systemFault } from "./system-faults.js";
 
 /** A place for output: as the user wrote it, and in full. */
 export interface OutputPath {
@@ -14,12 +15,24 @@ const unfinished = new Set<string>();
 
 /** Removes what was begun and not finished. */
 export function removeUnfinished(): void {
-  for (const path of unfinished) rmSync(path, { recursive: true, force: true });
+  for (const path of unfinished)
+    try {
+      rmSync(path, { recursive: true, force: true });
+    } catch {
+      // What could not be begun cannot be removed either.
+    }
   unfinished.clear();
 }
 
 /** Throws `output-exists` unless the place is free or may be replaced: asked before the work, not after it. */
 export function checkFree({ shown, full }: OutputPath, force: boolean): void {
+  if (shown.trim() === "")
+    fail("missing-argument", "--out came without a name", {
+      where: { argument: "--out" },
+      expected: "the name of a new file or folder",
+      found: "nothing",
+      remedy: "give a name, or leave --out away",
+    });
   if (force || !existsSync(full)) return;
   fail("output-exists", `\`${shown}\` exists already`, {
     where: { argument: "--out" },
@@ -72,12 +85,14 @@ function writing({ shown }: OutputPath, part: string, action: () => void): void 
   } catch (error) {
     removeUnfinished();
     if (error instanceof KvaneError) throw error;
-    const { code } = error as NodeJS.ErrnoException;
+    const { code = "" } = error as NodeJS.ErrnoException;
+    // Some folders of the system take no files, and say that they do not exist.
+    const { found, remedy } = systemFault(code === "ENOENT" && existsSync(dirname(part)) ? "EINVAL" : code);
     fail("output-failed", `\`${shown}\` could not be written`, {
       where: { argument: "--out" },
       expected: "a place that can be written to",
-      found: code === "ENOENT" ? "a folder that does not exist" : (code ?? String(error)),
-      remedy: code === "ENOENT" ? "make the folder first" : "choose another place",
+      found,
+      remedy,
     });
   }
   unfinished.delete(part);

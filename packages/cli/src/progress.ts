@@ -9,13 +9,15 @@ export interface ProgressLine {
 /** Milliseconds between two updates. */
 const pause = 100;
 
-export function progressLine({ showsProgress, writeError }: Surroundings, quiet: boolean): ProgressLine {
-  if (quiet || !showsProgress) return { show: undefined, clear: () => {} };
+export function progressLine(surroundings: Surroundings, quiet: boolean): ProgressLine {
+  if (quiet) return { show: undefined, clear: () => {} };
+  const { writeError } = surroundings;
   let shown = false;
   let last = 0;
   return {
     show: (done, total, what) => {
-      if (Date.now() - last < pause) return;
+      // Asked only where there is something to show: the error output is not opened for quick commands.
+      if (Date.now() - last < pause || !surroundings.showsProgress) return;
       last = Date.now();
       shown = true;
       writeError(`\r\u001b[K${what} ${done}${total === null ? "" : ` of ${total}`}`);

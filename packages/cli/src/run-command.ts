@@ -1,5 +1,5 @@
 import { resolve } from "node:path";
-import { KvaneError, type Problem } from "@kvane/core/errors";
+import { KvaneError, type Problem, problem } from "@kvane/core/errors";
 import { answer, exitStatusOf, plannedCommands, type Request, version } from "@kvane/core/job";
 import { commandSpecs } from "./commands/index.js";
 import { deliver, type RefusedAnswer, refusedAnswer } from "./deliver.js";
@@ -58,6 +58,10 @@ const nothingAsked: Problem = {
   remedy: "begin with `kvane run --example`",
 };
 
+const interrupted = problem("interrupted", "the work was cancelled before it ended", {
+  remedy: "start the command again; nothing was written",
+});
+
 /** `kvane help ops` is `kvane ops --help`. */
 function helpOfCommand(words: readonly string[]): readonly string[] {
   const [first, topic] = words;
@@ -75,6 +79,12 @@ async function execute(line: ParsedLine, surroundings: Surroundings): Promise<nu
   const answered = await answer(request, host);
   progress.clear();
   if (answered.errors.length > 0) return refuse(answered, request, wishes.json, host, surroundings);
+  // A cancel that came during the last step is heard only after a turn of the event loop.
+  await new Promise((resolve) => setImmediate(resolve));
+  if (surroundings.signal.aborted) {
+    const cancelled = refusedAnswer(line.spec.name, [interrupted]);
+    return refuse(cancelled, request, wishes.json, host, surroundings);
+  }
   deliver(answered, wishes, surroundings);
   // A table has no room for warnings; the report and the JSON hold them.
   if (wishes.csv && !wishes.quiet && answered.warnings.length > 0)

@@ -1,3 +1,9 @@
+import { writeSync } from "node:fs";
+import { type Problem, problem } from "@kvane/core/errors";
+import { exitStatusOf } from "@kvane/core/job";
+import { problemsText } from "./errors.js";
+import { systemFault } from "./system-faults.js";
+
 /** Everything outside that the command touches, so that tests can run it without a process of its own. */
 export interface Surroundings {
   readonly write: (text: string) => void;
@@ -14,13 +20,11 @@ export interface Surroundings {
 /** Those of this process. */
 export function processSurroundings(signal: { readonly aborted: boolean }): Surroundings {
   return {
-    write: (text) => {
-      process.stdout.write(text);
+    write: writer(() => process.stdout),
+    writeError: writer(() => process.stderr),
+    get showsProgress() {
+      return process.stderr.isTTY === true;
     },
-    writeError: (text) => {
-      process.stderr.write(text);
-    },
-    showsProgress: process.stderr.isTTY === true,
     standardInput: async () => {
       const parts: Uint8Array[] = [];
       for await (const part of process.stdin) parts.push(part as Uint8Array);
@@ -29,4 +33,36 @@ export function processSurroundings(signal: { readonly aborted: boolean }): Surr
     folder: process.cwd(),
     signal,
   };
+}
+
+/** Writes to a stream that is made at the first use, because making it takes time. */
+function writer(stream: () => NodeJS.WritableStream): (text: string) => void {
+  let opened: NodeJS.WritableStream | null = null;
+  return (text) => {
+    opened ??= stream().on("error", endAfter);
+    opened.write(text);
+  };
+}
+
+/** A reader that has seen enough (`| head`) is no error; a full disk is one. */
+function endAfter(error: NodeJS.ErrnoException): void {
+  if (error.code === "EPIPE") process.exit(process.exitCode ?? 0);
+  try {
+    // The stream may be the one that failed.
+    writeSync(
+      2,
+      problemsText([outputFailed(error)], "error", () => null),
+    );
+  } catch {
+    // There is nobody left to tell.
+  }
+  process.exit(exitStatusOf("output-failed"));
+}
+
+function outputFailed({ code }: NodeJS.ErrnoException): Problem {
+  return problem("output-failed", "the output could not be written", {
+    expected: "an output that takes all of it",
+    found: systemFault(code ?? "").found,
+    remedy: "make room, or send the output elsewhere with --out",
+  });
 }

@@ -15,10 +15,7 @@ export const symmetryCommands: readonly CommandSpec[] = [
     summary: "all kinds of k of the group, and where a given k belongs",
     argument: "group or study",
     options: ["k", "cell", "within", "example", "csv", ...outputOptions],
-    examples: [
-      "kvane atlas 62",
-      'kvane atlas "P 63/m m c" --k 0.329,0.329,1 --cell "7.14 7.14 5.90 90 90 120"',
-    ],
+    examples: ["kvane atlas 62", 'kvane atlas "P 63/m m c" --k 0.329,0.329,1 --cell "7.14 7.14 5.90 90 90 120"'],
   },
   {
     name: "star",

@@ -39,6 +39,8 @@ export const problemCodes = {
   "uncertainties-understated": "The peaks scatter about their lines by much more than their uncertainties say.",
   "search-stopped": "The search for k ended before every box was settled; what was not looked at is stated.",
   "search-saturated": "So many wave vectors fit the peaks that not all of them were weighed.",
+  "half-wavelength":
+    "Twice the wave vector is a reciprocal lattice vector, so that peaks through half the wavelength would fit too.",
   "no-candidate": "No wave vector of those searched explains enough of the peaks.",
   "not-built": "The command or option is planned but not part of this version.",
   "interrupted": "The work was cancelled before it ended.",

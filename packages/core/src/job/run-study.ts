@@ -15,8 +15,8 @@ import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
 import { numberOption } from "./inputs/number-input.js";
 import { coincidencesOf } from "./study/coincidences.js";
 import { type FoundK, findK } from "./study/find-k.js";
-import { nextSteps } from "./study/next-steps.js";
 import { modesOf } from "./study/modes-of.js";
+import { nextSteps } from "./study/next-steps.js";
 import { readStudy, type StudyInputs, satelliteLimit } from "./study/read-study.js";
 import { satellitesOf } from "./study/satellites-of.js";
 import { starOf } from "./study/star-of.js";
@@ -37,7 +37,7 @@ export async function runStudy(work: Work): Promise<RunRecord> {
   for (const one of found.followed) {
     work.host.progress?.(branches.length, found.followed.length, "symmetry and modes");
     await breathe(work.host);
-    branches.push(followBranch(inputs, one));
+    branches.push(await followBranch(work, inputs, one));
   }
   const { search, notFollowed } = found;
   const { peaks } = inputs;
@@ -56,7 +56,7 @@ export async function runStudy(work: Work): Promise<RunRecord> {
 }
 
 /** All that follows from one k. */
-function followBranch(inputs: StudyInputs, { k, candidate }: FoundK): BranchRecord {
+async function followBranch(work: Work, inputs: StudyInputs, { k, candidate }: FoundK): Promise<BranchRecord> {
   const { group, cell, orbits } = inputs;
   return {
     k: waveVectorToJson(k),
@@ -64,7 +64,7 @@ function followBranch(inputs: StudyInputs, { k, candidate }: FoundK): BranchReco
     star: starOf(group, k),
     ...representationsOf(group, cell, k, orbits),
     configurations: null,
-    satellites: satelliteList(inputs, cell, k),
+    satellites: await satelliteList(work, inputs, cell, k),
     weigh: null,
   };
 }
@@ -78,9 +78,9 @@ function representationsOf(group: SpaceGroup, cell: Cell | null, k: WaveVector, 
 }
 
 /** Positions need a cell and a number for every letter. */
-function satelliteList(inputs: StudyInputs, cell: Cell | null, k: WaveVector) {
+async function satelliteList({ host }: Work, inputs: StudyInputs, cell: Cell | null, k: WaveVector) {
   if (cell === null || numericWaveVector(k) === null) return null;
-  return satellitesOf(inputs.group, cell, k, {
+  return satellitesOf(host, inputs.group, cell, k, {
     qMax: satelliteLimit(inputs),
     wavelengthAngstrom: inputs.wavelengthAngstrom,
   });

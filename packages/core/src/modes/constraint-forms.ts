@@ -39,7 +39,12 @@ export function constraintTexts(
   const half = isHalfLattice(group, k);
   const conjugate = site.irreps.find(({ irrep }) => irrep.label === part.irrep.conjugateOf)?.modes ?? [];
   const terms = constraintTerms(part.modes, half ? { conjugate } : null);
-  return texts(group, site, inConvention(group, k, site, terms, options.convention, () => !half), options);
+  return texts(
+    group,
+    site,
+    inConvention(group, k, site, terms, options.convention, () => !half),
+    options,
+  );
 }
 
 /** The same for the arrangement of one order parameter (`MinusKOnModes.constraint`); null where there is none. */
@@ -68,7 +73,12 @@ export function constraintCrystal(
   return constraintTexts(group, site, part, { cell }).crystal;
 }
 
-function texts(group: SpaceGroup, site: SiteModes, terms: readonly Term[], { cell }: ConstraintOptions): ConstraintTexts {
+function texts(
+  group: SpaceGroup,
+  site: SiteModes,
+  terms: readonly Term[],
+  { cell }: ConstraintOptions,
+): ConstraintTexts {
   const { k } = site.representations;
   const atoms = site.orbit.positions.length;
   const crystal = cell ? crystalTerms(axisLengths(group, cell), terms) : null;

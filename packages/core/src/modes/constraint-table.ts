@@ -91,7 +91,9 @@ function realTerms(modes: readonly Mode[]): Term[] {
       vector.map((entry) => multiplyCyclotomic(rootOfUnity(phase.constant), entry)),
     );
     const conjugate = row.map(conjugateCyclotomic);
-    return row.every((entry, index) => equalCyclotomic(entry, conjugate[index] as Cyclotomic)) ? [row] : [row, conjugate];
+    return row.every((entry, index) => equalCyclotomic(entry, conjugate[index] as Cyclotomic))
+      ? [row]
+      : [row, conjugate];
   });
   return reducedEchelon(rows, cyclotomicNumbers).rows.map((row, index) => ({
     letter: letterOf(index),

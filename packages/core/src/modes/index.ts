@@ -4,8 +4,9 @@
  * general arrangement in symbols, in lattice components and with phases per lattice translation (docs/conventions.md,
  * Moments and phases; Modes, amplitudes, real moments). Source: Bertaut, Acta Cryst. A24 (1968) 217.
  */
-export { cartesianAxes, convertComponents } from "./components.js";
+
 export { axisLengths } from "./averaged-metric.js";
+export { cartesianAxes, convertComponents } from "./components.js";
 export {
   type ConstraintOptions,
   type ConstraintTexts,

@@ -204,9 +204,9 @@ function inSubfield(a: Cyclotomic, prime: number): Cyclotomic | null {
 
 /** Whether every Galois map ζ → ζ^r with r ≡ 1 mod M leaves `a` alone; it is in Q(ζ_M), M = order, exactly then. */
 function isFixedOver(a: Cyclotomic, order: number): boolean {
-  return unitsModulo(a.order)
-    .filter((residue) => modulo(residue, order) === modulo(1, order))
-    .every((residue) => galois(a, residue).coefficients.every((entry, index) => entry === a.coefficients[index]));
+  for (let residue = 1 + order; residue < a.order; residue += order)
+    if (gcd(residue, a.order) === 1 && !equalCyclotomic(galois(a, residue), a)) return false;
+  return true;
 }
 
 /** Gaussian elimination over the rationals of the small integer system Σ x_e column_e = a. */

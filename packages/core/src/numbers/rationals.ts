@@ -37,6 +37,8 @@ export function subtract(a: Rational, b: Rational): Rational {
 
 export function multiply(a: Rational, b: Rational): Rational {
   if (a[0] === 0 || b[0] === 0) return zero;
+  if (a[0] === 1 && a[1] === 1) return b;
+  if (b[0] === 1 && b[1] === 1) return a;
   if (a[1] === 1 && b[1] === 1) return [safe(a[0] * b[0]), 1];
   // Crossing out first keeps the products as small as the result allows.
   const first = gcd(a[0], b[1]);

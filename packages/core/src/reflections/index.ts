@@ -10,6 +10,11 @@ export { overlapsOf } from "./overlaps.js";
 export { distinctPositions, dToQ, qToTwoThetaDeg, twoThetaDegToQ } from "./positions.js";
 export { type ReciprocalFrame, reciprocalFrame } from "./reciprocal-frame.js";
 export { type SatelliteLister, satelliteLines, satelliteLister } from "./satellite-lines.js";
-export { type ReflectionOptions, satelliteReflections } from "./satellite-reflections.js";
+export {
+  type ReflectionList,
+  type ReflectionOptions,
+  reflectionList,
+  satelliteReflections,
+} from "./satellite-reflections.js";
 export type { NuclearLine, Overlap, PositionLimits, SatelliteLine, SatelliteReflection } from "./types.js";
 export { type BallVisitor, visitBall } from "./vectors-in-ball.js";

@@ -1,8 +1,12 @@
+import { fail } from "../errors/index.js";
 import { roundNumber, sameLineInverseAngstrom } from "../numbers/index.js";
 import { type ReciprocalFrame, toSettingIndices } from "./reciprocal-frame.js";
 import { mapIndices, type SatelliteMap, type SymmetryOfK } from "./symmetry-of-k.js";
 import type { PositionLimits } from "./types.js";
 import { visitBall } from "./vectors-in-ball.js";
+
+/** A list with more lines than this helps nobody and would fill the memory; it is refused, not cut. */
+const mostOrbits = 250_000;
 
 /** One orbit of vectors ±(η + κ) under the group of ±k. */
 export interface VectorOrbit {
@@ -20,6 +24,8 @@ export interface VectorOrbit {
  *
  * Every orbit holds a vector η + κ. Among those, only the one with the largest integers is kept: an orbit is met once,
  * without a table of what was seen, and most vectors are given up after a few images.
+ *
+ * Throws `invalid-argument` for more than 250 000 orbits.
  */
 export function vectorOrbits(
   frame: ReciprocalFrame,
@@ -36,6 +42,7 @@ export function vectorOrbits(
   visitBall(frame.metric, kappa, squareMax, (n1, n2, n3, square) => {
     const stabilizer = square < lowest * lowest ? 0 : stabilizerOrder(symmetry.maps, n1, n2, n3);
     if (stabilizer === 0) return;
+    if (orbits.length === mostOrbits) refuseTooMany();
     orbits.push({
       eta: [n1, n2, n3],
       ...representative(frame, symmetry, k, [n1, n2, n3]),
@@ -44,6 +51,14 @@ export function vectorOrbits(
     });
   });
   return orbits.sort(compareOrbits);
+}
+
+function refuseTooMany(): never {
+  fail("invalid-argument", `the list would hold more than ${mostOrbits} lines`, {
+    expected: `at most ${mostOrbits} lines within the limit of Q`,
+    found: "more",
+    remedy: "lower the limit of Q, or check the units of the cell (Å) and of Q (Å⁻¹)",
+  });
 }
 
 /** How many maps leave (n1, n2, n3) where it is, or 0 when some map leads to larger integers. */

@@ -17,6 +17,40 @@ export function overlapsOf(q: number, nuclear: readonly NuclearLine[], resolutio
   ];
 }
 
+/** Some of the lines that fall on a satellite, and how many more that are not extinct were left out. */
+export interface SomeOverlaps {
+  readonly list: readonly Overlap[];
+  readonly more: number;
+}
+
+/**
+ * `overlapsOf` with at most `most` of either kind, those that are not extinct and the nearest first: far out in Q nuclear
+ * lines lie closer than any resolution.
+ */
+export function someOverlapsOf(
+  q: number,
+  nuclear: readonly NuclearLine[],
+  resolution: number,
+  most: number,
+): SomeOverlaps {
+  const atNuclear = chosen(coincidences(q, nuclear, resolution, "nuclear"), most);
+  const atHalf = chosen(coincidences(q, nuclear, resolution, "half wavelength"), most);
+  return { list: [...atNuclear.list, ...atHalf.list], more: atNuclear.more + atHalf.more };
+}
+
+/** The `most` that matter most, in order of Q. */
+function chosen(all: readonly Overlap[], most: number): SomeOverlaps {
+  if (all.length <= most) return { list: all, more: 0 };
+  const ranked = [...all].sort(
+    (a, b) => Number(b.allowed) - Number(a.allowed) || Math.abs(a.separation) - Math.abs(b.separation),
+  );
+  const kept = new Set(ranked.slice(0, most));
+  return {
+    list: all.filter((one) => kept.has(one)),
+    more: ranked.slice(most).filter(({ allowed }) => allowed).length,
+  };
+}
+
 function coincidences(
   q: number,
   nuclear: readonly NuclearLine[],

@@ -45,7 +45,10 @@ export interface Overlap {
 export interface SatelliteReflection extends SatelliteLine {
   /** Scattering angle in degrees; null without a wavelength or beyond 180°. */
   readonly twoThetaDeg: number | null;
+  /** Those that are not extinct and the nearest first, a few of either kind. */
   readonly overlaps: readonly Overlap[];
+  /** Further nuclear lines and images that fall on it, not extinct. */
+  readonly moreOverlaps: number;
 }
 
 /** Which part of reciprocal space a list covers, in Å⁻¹. */

@@ -1,10 +1,12 @@
 import { breathe, type WorkHost } from "../algorithms/index.js";
-import { exactComponents, isReciprocalLatticeVector, type WaveVector } from "../kvectors/index.js";
+import { type Problem, problem } from "../errors/index.js";
+import { exactComponents, isHalfLattice, isReciprocalLatticeVector, type WaveVector } from "../kvectors/index.js";
 import { isInteger } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { type Weigher, weigher } from "./candidate.js";
 import { certificateOf, certificateWarnings, defaultMostBoxes, type SearchedKind } from "./certificate.js";
 import type { PeakModel } from "./explanation.js";
+import { flagsOf } from "./flags.js";
 import { starDistance } from "./near-in-k.js";
 import { peakModel } from "./peak-model.js";
 import { type Entry, mergeSameFinds } from "./same-find.js";
@@ -31,7 +33,7 @@ export async function locate(
   options: SearchOptions,
   host: WorkHost = {},
 ): Promise<SearchResult> {
-  const { model, setAside } = peakModel(group, cell, peaks, options);
+  const { model, setAside, powder } = peakModel(group, cell, peaks, options);
   const minimumMatched = Math.max(1, model.total - options.unmatched);
   const kinds = searchKinds(group, options.maxDimension);
   const weigh = weigher(group, model);
@@ -39,8 +41,7 @@ export async function locate(
   const { entries, regions } = weighAll(searched, weigh);
   const kept = entries.filter(
     ({ candidate, mostMatched, dimension }) =>
-      (options.belowMinimum === true && dimension === 0) ||
-      Math.max(candidate.matched, mostMatched) >= minimumMatched,
+      (options.belowMinimum === true && dimension === 0) || Math.max(candidate.matched, mostMatched) >= minimumMatched,
   );
   const merged = [...mergeSameFinds(kept, model, starDistance(group, model.primitiveMetric))]
     // The sort is stable: equal evidence leaves the order of the kinds, fewest arms first.
@@ -53,13 +54,25 @@ export async function locate(
     candidates,
     certificate,
     setAside,
-    unmatched:
-      candidates[0]?.unmatched ?? peaks.peaks.map(({ index }) => index).filter((index) => !aside.has(index)),
+    unmatched: candidates[0]?.unmatched ?? peaks.peaks.map(({ index }) => index).filter((index) => !aside.has(index)),
     regions,
+    flags: flagsOf(group, cell, powder, options.sites ?? []),
     references: referencesOf(group, entries),
     dropped: entries.length - kept.length + (merged.length - shown.length),
-    warnings: certificateWarnings(certificate),
+    warnings: [...certificateWarnings(certificate), ...halfWavelengthWarning(group, candidates[0])],
   };
+}
+
+/** Where 2k is a vector of L*, every satellite lies at half of one: no position speaks against λ/2. */
+function halfWavelengthWarning(group: SpaceGroup, first: Candidate | undefined): readonly Problem[] {
+  if (first === undefined || first.onNuclearLines || !isHalfLattice(group, first.k)) return [];
+  return [
+    problem("half-wavelength", "every satellite of this k lies on the λ/2 image of a nuclear position", {
+      expected: "peaks that neutrons of half the wavelength cannot give",
+      found: "positions alone, which cannot exclude them",
+      remedy: "measure with a filter or another wavelength, or above the ordering temperature",
+    }),
+  ];
 }
 
 async function searchAll(

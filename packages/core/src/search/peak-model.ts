@@ -6,7 +6,7 @@ import type { PeakModel } from "./explanation.js";
 import { checkOptions } from "./options.js";
 import { powderModel } from "./powder-model.js";
 import type { PeakList, SearchOptions, SetAside } from "./types.js";
-import { usedPeaks } from "./used-peaks.js";
+import { type PowderPeak, usedPeaks } from "./used-peaks.js";
 
 /** The model of a list's peaks, and the peaks that it leaves out. Throws `invalid-argument` for impossible options. */
 export function peakModel(
@@ -14,7 +14,7 @@ export function peakModel(
   cell: Cell,
   list: PeakList,
   options: SearchOptions,
-): { readonly model: PeakModel; readonly setAside: readonly SetAside[] } {
+): { readonly model: PeakModel; readonly setAside: readonly SetAside[]; readonly powder: readonly PowderPeak[] } {
   checkOptions(options);
   if (options.zeroShift > 0 && list.kind !== "hkl" && list.wavelengthAngstrom === null)
     fail("missing-wavelength", "a zero shift of 2θ can only be refined where the wavelength is known", {
@@ -28,7 +28,7 @@ export function peakModel(
     list.kind === "hkl"
       ? crystalModel(group, cell, crystal)
       : powderModel(group, cell, powder, list.wavelengthAngstrom, options);
-  return { model, setAside };
+  return { model, setAside, powder };
 }
 
 /** |Q| in Å⁻¹. */

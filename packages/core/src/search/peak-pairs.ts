@@ -96,11 +96,7 @@ function vectorsNear(frame: FlatFrame, wedge: Wedge, highestQ: number): Float64A
   const found: number[] = [];
   const seen = new Map<number, number>();
   visitBall(frame.metric, middle, (highestQ + radius) ** 2, (n1, n2, n3) => {
-    const { along, across } = alongAxes(frame, [
-      n1 + frame.origin[0],
-      n2 + frame.origin[1],
-      n3 + frame.origin[2],
-    ]);
+    const { along, across } = alongAxes(frame, [n1 + frame.origin[0], n2 + frame.origin[1], n3 + frame.origin[2]]);
     const [x0 = 0, x1 = 0, x2 = 0] = along;
     if (frame.dimension < 3) {
       const key = Math.round(1e6 * (x0 + Math.SQRT2 * x1 + 7.389 * across));

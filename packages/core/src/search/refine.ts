@@ -64,7 +64,12 @@ function valuesOf(corrections: readonly Correction[]): readonly number[] {
 }
 
 function correctionAt({ name, limit }: CorrectionLimit, value: number, uncertainty: number | null): Correction {
-  return { name, value: roundNumber(value), uncertainty: uncertainty === null ? null : roundNumber(uncertainty), limit };
+  return {
+    name,
+    value: roundNumber(value),
+    uncertainty: uncertainty === null ? null : roundNumber(uncertainty),
+    limit,
+  };
 }
 
 function fitParameters(model: PeakModel, { k, corrections }: Fit, explanation: Explanation): Fit | null {

@@ -21,7 +21,10 @@ export function mergeLeaves(frame: FlatFrame, wedge: Wedge, findings: FlatFindin
   const place = (centre: Float64Array): number[] =>
     Array.from(centre, (entry, axis) => {
       const low = (wedge.centre[axis] as number) - (wedge.half[axis] as number);
-      return Math.min((size[axis] as number) - 1, Math.max(0, Math.floor((entry - low) / (2 * (half[axis] as number)))));
+      return Math.min(
+        (size[axis] as number) - 1,
+        Math.max(0, Math.floor((entry - low) / (2 * (half[axis] as number)))),
+      );
     });
   const keyOf = (cell: readonly number[]): number =>
     cell.reduce((key, entry, axis) => key * ((size[axis] as number) + 2) + entry + 1, 0);

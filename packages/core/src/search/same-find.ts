@@ -1,10 +1,19 @@
 import type { Weighed } from "./candidate.js";
-import type { PeakModel } from "./explanation.js";
+import type { Explanation, PeakModel } from "./explanation.js";
 import type { StarDistance } from "./near-in-k.js";
 import type { MergedCandidate } from "./types.js";
 
-/** Two k whose summed log-odds differ by more than this are told apart by the peaks. */
+/** In natural log-odds: what tells two k apart. */
 export const toldApartBy = 3;
+
+/** χ²/2 that an unmatched peak counts for when k is compared with k: that of a peak at 3 s.u. */
+const unmatchedMisfit = 4.5;
+
+/** How much better the peaks fit the first k than the second, in units of ln(likelihood); lines predicted do not count. */
+export function betterFit(one: Explanation, other: Explanation): number {
+  const misfit = (of: Explanation): number => of.chiSquared / 2 + unmatchedMisfit * of.unmatched.length;
+  return misfit(other) - misfit(one);
+}
 
 /** A weighed k with what the search knows of it. */
 export interface Entry extends Weighed {

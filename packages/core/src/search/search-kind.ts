@@ -1,7 +1,7 @@
+import type { WorkHost } from "../algorithms/index.js";
 import { atlas, specialPoints, type WaveVector } from "../kvectors/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import type { KindBudget, KindFindings, PeakModel } from "./explanation.js";
-import type { WorkHost } from "../algorithms/index.js";
 
 /** One kind of k under the point group extended by −1: what the search takes up at a time. */
 export interface SearchKind {

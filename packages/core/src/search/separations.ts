@@ -1,8 +1,8 @@
 import { exactWaveVector, numericWaveVector, usedParameters, type WaveVector } from "../kvectors/index.js";
-import { add, multiply, type Rational, rational, roundNumber, type RationalVector } from "../numbers/index.js";
+import { add, multiply, type Rational, type RationalVector, rational, roundNumber } from "../numbers/index.js";
 import type { Weighed, Weigher } from "./candidate.js";
 import { lowerBound } from "./evidence.js";
-import { toldApartBy } from "./same-find.js";
+import { betterFit, toldApartBy } from "./same-find.js";
 import type { Candidate, Separation } from "./types.js";
 
 /** Candidates for which separations are worked out. */
@@ -58,7 +58,7 @@ function separation(
     q: roundNumber(best.q),
     distance: roundNumber(best.distance),
     resolution: best.distance > sameForAll ? roundNumber(best.distance / best.q) : null,
-    toldApart: Math.abs(one.explanation.logOdds - other.explanation.logOdds) > toldApartBy,
+    toldApart: Math.abs(betterFit(one.explanation, other.explanation)) > toldApartBy,
   };
 }
 

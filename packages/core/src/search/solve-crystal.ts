@@ -131,9 +131,7 @@ function regionAround(frame: FlatFrame, t: Float64Array, reach: number, decided:
   const spread = letters.map(
     (_, letter) =>
       reach *
-      Math.hypot(
-        ...frame.lettersFromAxes.slice(letter * frame.dimension, letter * frame.dimension + frame.dimension),
-      ),
+      Math.hypot(...frame.lettersFromAxes.slice(letter * frame.dimension, letter * frame.dimension + frame.dimension)),
   );
   return {
     kind: frame.form,

@@ -1,6 +1,7 @@
 import type { Problem } from "../errors/index.js";
 import type { Manifold, WaveVector } from "../kvectors/index.js";
 import type { Rational } from "../numbers/index.js";
+import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
 
 /** What the positions of a peak list are. */
 export type PeakKind = "d" | "q" | "two-theta" | "hkl";
@@ -50,10 +51,37 @@ export interface SearchOptions {
   readonly zeroShift: number;
   /** Largest relative change of all cell lengths, up or down, to refine with k. */
   readonly cellScale: number;
+  /** Ranges of positions, in the unit of the list, whose peaks are set aside. Default none; not for h k l. */
+  readonly exclude?: readonly (readonly [number, number])[];
+  /** Other phases in the sample: peaks on their allowed nuclear lines are set aside. Default none; not for h k l. */
+  readonly impurities?: readonly ImpurityPhase[];
+  /** Atoms of the structure: tells which nuclear lines their positions forbid. Default none. */
+  readonly sites?: readonly SiteOrbit[];
   /** Boxes after which the search over lines, planes and general k is stopped; default `defaultMostBoxes`. */
   readonly mostBoxes?: number;
   /** Return also the candidates that match fewer peaks than asked. Default false. */
   readonly belowMinimum?: boolean;
+}
+
+export interface ImpurityPhase {
+  readonly name: string;
+  readonly group: SpaceGroup;
+  readonly cell: Cell;
+}
+
+/** Why a nuclear line should be seen or not. */
+export type NuclearState = "allowed" | "forbidden by a glide plane or screw axis" | "forbidden by the sites";
+
+/** A peak that need not be a satellite. It is never removed for that. */
+export interface PeakFlag {
+  readonly peak: number;
+  /** It lies on a nuclear line of the cell, or on the image of one through neutrons of half the wavelength. */
+  readonly with: "nuclear" | "half wavelength";
+  /** The nuclear line in a*, b*, c*. */
+  readonly h: readonly [number, number, number];
+  readonly state: NuclearState;
+  /** Position of the line less that of the peak, Å⁻¹. */
+  readonly separation: number;
 }
 
 /** One way of writing a peak as H ± k. */
@@ -164,7 +192,7 @@ export interface Separation {
   readonly distance: number;
   /** Relative resolution ΔQ/Q needed there; null when all lines agree whatever the resolution. */
   readonly resolution: number | null;
-  /** Whether these peaks tell the two apart already: their log-odds differ by more than 3. */
+  /** Whether these peaks tell the two apart already: ln of their likelihoods differs by more than 3. */
   readonly toldApart: boolean;
 }
 
@@ -276,6 +304,8 @@ export interface SearchResult {
   readonly unmatched: readonly number[];
   /** Every part of the searched kinds where enough peaks may match. */
   readonly regions: readonly Region[];
+  /** Peaks that need not be satellites; empty for h k l. */
+  readonly flags: readonly PeakFlag[];
   /** k = 0 and the k that reverse centring translations, found or not. */
   readonly references: readonly ReferenceVector[];
   /** How many k were tried and left out because they match too few peaks. */

@@ -1,5 +1,6 @@
 import { fail } from "../errors/index.js";
 import { matchStandardUncertainties } from "../numbers/index.js";
+import { impurityLines, onImpurity } from "./flags.js";
 import type { PeakList, SearchOptions, SetAside } from "./types.js";
 
 /** A powder peak in the form that matching needs, Å⁻¹. */
@@ -41,6 +42,7 @@ export function usedPeaks(
   const powder: PowderPeak[] = [];
   const crystal: CrystalPeak[] = [];
   const setAside: SetAside[] = [];
+  const impurities = impurityLines(options.impurities ?? [], impurityReach(list, options));
   for (const peak of list.peaks) {
     const uncertainty = list.kind === "hkl" ? peak.hklUncertainty : peak.uncertainty;
     const position = list.kind === "hkl" ? peak.hkl : peak.q === null ? null : [peak.q];
@@ -49,6 +51,19 @@ export function usedPeaks(
     const q = list.kind === "hkl" ? lengthOf(position) : (position[0] as number);
     if (options.qMax !== null && q > options.qMax) {
       setAside.push({ peak: peak.index, because: `it lies above the limit of Q, ${options.qMax} Å⁻¹` });
+      continue;
+    }
+    const excluded = list.kind === "hkl" ? undefined : options.exclude?.find((range) => isInside(peak.position, range));
+    if (excluded !== undefined) {
+      setAside.push({ peak: peak.index, because: `it lies in the excluded range ${excluded[0]} to ${excluded[1]}` });
+      continue;
+    }
+    const phase =
+      list.kind === "hkl"
+        ? null
+        : onImpurity(q, options.tolerance ?? matchStandardUncertainties * uncertainty, impurities);
+    if (phase !== null) {
+      setAside.push({ peak: peak.index, because: phase });
       continue;
     }
     const common = {
@@ -66,6 +81,20 @@ export function usedPeaks(
       remedy: "give a list of satellite positions, or raise the limit of Q",
     });
   return { powder, crystal, setAside };
+}
+
+function isInside(position: number | null, [from, to]: readonly [number, number]): boolean {
+  return position !== null && position >= from && position <= to;
+}
+
+/** Q up to which lines of other phases are wanted. */
+function impurityReach(list: PeakList, options: SearchOptions): number {
+  const highest = Math.max(0.1, ...list.peaks.map((peak) => (Number.isFinite(peak.q) ? (peak.q as number) : 0)));
+  const widest = Math.max(
+    ...list.peaks.map((peak) => options.tolerance ?? matchStandardUncertainties * (peak.uncertainty ?? 0)),
+    0,
+  );
+  return Math.min(options.qMax ?? Number.POSITIVE_INFINITY, highest) + (Number.isFinite(widest) ? widest : 0);
 }
 
 /** `dQ/d(2θ) = (2π/λ) cos θ`, per degree. */

@@ -2,9 +2,9 @@ import { fail } from "../../errors/index.js";
 import { compatibility } from "../../irreps/index.js";
 import { isExactWaveVector } from "../../kvectors/index.js";
 import { type CompatibilityRecord, compatibilityRecord } from "../../reports/index.js";
+import { readingGiven } from "../inputs/given.js";
 import { groupOf } from "../inputs/group-input.js";
 import { placedK, writtenOption } from "../inputs/k-input.js";
-import { readingGiven } from "../inputs/given.js";
 import { together, type Work } from "../work.js";
 
 /** `kvane compatibility`: how the irreps of a k split along a line or plane through it. */
@@ -25,5 +25,9 @@ export async function compatibilityCommand(work: Work): Promise<CompatibilityRec
       found: from.given.text,
       remedy: "write fractions; for a line or plane take one that is not special on it, such as 1/7",
     });
-  return compatibilityRecord(group, start, readingGiven(to.given, () => compatibility(group, start, end)));
+  return compatibilityRecord(
+    group,
+    start,
+    readingGiven(to.given, () => compatibility(group, start, end)),
+  );
 }

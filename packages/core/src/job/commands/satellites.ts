@@ -20,21 +20,31 @@ export async function satellitesCommand(work: Work): Promise<SatellitesRecord> {
     k: () => numericK(work, group, written),
     cell: () => cellFor(group, given),
   });
-  const qMax = asked ?? defaultLimit(work, wavelength);
-  return satellitesOf(group, cell, k, { qMax, wavelengthAngstrom: wavelength });
+  const qMax = limitOf(work, asked, wavelength);
+  return satellitesOf(work.host, group, cell, k, { qMax, wavelengthAngstrom: wavelength });
 }
 
 /** Å⁻¹. Beyond it the form factors of 3d and 4f ions leave little to see. */
 const usualLimit = 3;
 
-function defaultLimit(work: Work, wavelength: number | null): number {
-  // No line lies beyond 2θ = 180°.
-  const reach = wavelength === null ? usualLimit : (4 * Math.PI) / wavelength;
-  const limit = Math.min(usualLimit, reach);
-  remember(
-    work,
-    [{ what: "Q limit", value: `${Number(limit.toPrecision(6))} Å⁻¹`, because: "--q-max was not given" }],
-    [],
-  );
+/** What was asked or the usual limit; never beyond 2θ = 180°. */
+function limitOf(work: Work, asked: number | null, wavelength: number | null): number {
+  const reach = wavelength === null ? Number.POSITIVE_INFINITY : (4 * Math.PI) / wavelength;
+  const limit = Math.min(asked ?? usualLimit, reach);
+  if (asked === null || asked > reach)
+    remember(
+      work,
+      [
+        {
+          what: "Q limit",
+          value: `${Number(limit.toPrecision(6))} Å⁻¹`,
+          because:
+            asked === null
+              ? `--q-max was not given${limit === reach ? ", and 2θ ends at 180°" : ""}`
+              : `the wavelength reaches no further: 4π/λ, 2θ = 180°`,
+        },
+      ],
+      [],
+    );
   return limit;
 }

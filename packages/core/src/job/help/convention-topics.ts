@@ -44,10 +44,10 @@ relation between k and −k is that of kvane's own way always.`,
   commands: {
     title: "What this version does",
     text: `Built:
-  ${Object.keys(commandTable).join(", ")}
+  ${Object.keys(commandTable).slice(0, 8).join(", ")},
+  ${Object.keys(commandTable).slice(8).join(", ")}
 Planned:
-  ${plannedCommands.slice(0, 6).join(", ")},
-  ${plannedCommands.slice(6).join(", ")}
+  ${plannedCommands.join(", ")}
 
 kvane COMMAND --help shows options and an example that works when pasted.`,
   },

@@ -1,8 +1,8 @@
 import { fail, nearMiss } from "../../errors/index.js";
 import { ownWriting, type WritingConvention } from "../../modes/index.js";
 import { argumentNames, type Request } from "../request.js";
-import { optionOf } from "./given.js";
 import { together } from "../work.js";
+import { optionOf } from "./given.js";
 
 const choices: { readonly [field in keyof WritingConvention]: readonly WritingConvention[field][] } = {
   exponent: ["minus", "plus"],

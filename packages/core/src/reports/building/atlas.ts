@@ -27,14 +27,13 @@ export function atlasRecord(
       k: waveVectorToJson(given.k),
       kind: given.kind,
       kindPM: given.kindPM,
-      within: given.nearby && given.nearby.within,
+      within: given.nearby?.within ?? null,
       nearby:
-        given.nearby &&
-        given.nearby.kinds.map(({ index, nearest, distance }) => ({
+        given.nearby?.kinds.map(({ index, nearest, distance }) => ({
           kindPM: index,
           nearest: waveVectorToJson(nearest),
           distance,
-        })),
+        })) ?? null,
     },
   };
 }

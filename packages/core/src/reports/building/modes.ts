@@ -54,7 +54,7 @@ function siteRecord(group: SpaceGroup, found: SmallIrreps, { site, irreps, arms 
     orbit: orbit.positions.map(positionRecord),
     suborbits: suborbits.map((atoms) => [...atoms]),
     irreps: irreps.map((irrep) => irrepModesRecord(group, found, irrep)),
-    starModes: arms && arms.map((arm) => armRecord(group, arm)),
+    starModes: arms?.map((arm) => armRecord(group, arm)) ?? null,
   };
 }
 
@@ -82,9 +82,9 @@ function irrepModesRecord(group: SpaceGroup, found: SmallIrreps, written: Writte
     freeParametersWithMinusK: part.freeParametersWithMinusK,
     minusK: part.minusK && minusKRecord(group, found, part.minusK, written.orderParameter),
     vanishingAtoms: [...part.vanishingAtoms],
-    equalAmplitude: sizes && sizes.equalAmplitude,
-    constantMoment: sizes && sizes.constantMoment,
-    collinear: sizes && sizes.collinear,
+    equalAmplitude: sizes?.equalAmplitude ?? null,
+    constantMoment: sizes?.constantMoment ?? null,
+    collinear: sizes?.collinear ?? null,
   };
 }
 
@@ -101,8 +101,8 @@ function minusKRecord(
     suborbitImages: [...relation.suborbitImages],
     matrix: numbers,
     exact,
-    constraint: listOrNull(texts && texts.lattice),
-    constraintCrystal: listOrNull(texts && texts.crystal),
+    constraint: listOrNull(texts?.lattice ?? null),
+    constraintCrystal: listOrNull(texts?.crystal ?? null),
   };
 }
 

@@ -5,6 +5,7 @@ import type {
   Candidate,
   Certificate,
   IndexedLine,
+  PeakFlag,
   PeakList,
   ReferenceVector,
   Region,
@@ -55,6 +56,7 @@ function satelliteRecord(line: SatelliteReflection): SatelliteRecord {
     multiplicity: line.multiplicity,
     multiplicityAllArms: line.multiplicityAllArms,
     overlaps: line.overlaps.map(overlapRecord),
+    moreOverlaps: line.moreOverlaps,
     extinctFor: null,
     intensity: null,
   };
@@ -99,6 +101,7 @@ export function searchRecord(
     readonly unmatched: readonly number[];
     readonly regions?: readonly Region[];
     readonly references?: readonly ReferenceVector[];
+    readonly flags?: readonly PeakFlag[];
     readonly dropped: number;
   },
 ): SearchRecord {
@@ -116,6 +119,13 @@ export function searchRecord(
       to: region.to.map((entry) => roundNumber(entry)),
       leaves: region.leaves,
       decided: region.decided,
+    })),
+    flags: (found.flags ?? []).map((flag) => ({
+      peak: flag.peak,
+      with: flag.with,
+      h: [...flag.h],
+      state: flag.state,
+      separation: roundNumber(flag.separation),
     })),
     references: (found.references ?? []).map(({ k, evidence, matched, total }) => ({
       k: waveVectorToJson(k),

@@ -7,7 +7,14 @@ import type { SearchRecord } from "../records/search.js";
 import { atlasCsv, compatibilityCsv, modesCsv, satellitesCsv, searchCsv } from "./tables.js";
 
 /** The commands whose answer has a table. */
-export const commandsWithTable: readonly string[] = ["atlas", "compatibility", "modes", "satellites", "index", "locate"];
+export const commandsWithTable: readonly string[] = [
+  "atlas",
+  "compatibility",
+  "modes",
+  "satellites",
+  "index",
+  "locate",
+];
 
 /** The answer's table as CSV, or null where the command has none or the answer no result. */
 export function reportCsv({ command, result }: Envelope): string | null {

@@ -1,7 +1,7 @@
 import type { AtlasRecord } from "../records/atlas.js";
 import type { CompatibilityRecord } from "../records/compatibility.js";
 import type { ModesRecord } from "../records/modes.js";
-import type { SatellitesRecord } from "../records/satellites.js";
+import type { OverlapRecord, SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
 import { type CsvCell, csvText } from "./csv-text.js";
 
@@ -9,7 +9,7 @@ import { type CsvCell, csvText } from "./csv-text.js";
 export function satellitesCsv(record: SatellitesRecord): string {
   const header = ["h", "k", "l", "sign", "arm", "q_inverse_angstrom", "d_angstrom", "two_theta_deg", "multiplicity"];
   return csvText(
-    [...header, "multiplicity_all_arms", "overlaps"],
+    [...header, "multiplicity_all_arms", "overlaps", "more_overlaps"],
     record.reflections.map((line) => [
       ...line.h,
       line.sign,
@@ -19,9 +19,15 @@ export function satellitesCsv(record: SatellitesRecord): string {
       line.twoThetaDeg,
       line.multiplicity,
       line.multiplicityAllArms,
-      line.overlaps.map((one) => `${one.with} ${one.h.join(" ")}`).join("; "),
+      line.overlaps.map(overlapCell).join("; "),
+      line.moreOverlaps,
     ]),
   );
+}
+
+/** `nuclear 2 0 0`, `half wavelength 1 0 0 extinct`: what a glide plane or screw axis forbids is marked. */
+function overlapCell({ with: kind, h, allowed }: OverlapRecord): string {
+  return `${kind} ${h.join(" ")}${allowed ? "" : " extinct"}`;
 }
 
 /** One row for each peak of each candidate; `h` to `residual` are empty where the peak is not matched. */

@@ -26,7 +26,10 @@ export interface SatelliteRecord {
   /** Vectors of one single-k domain that its symmetry relates, and those over the whole star. */
   readonly multiplicity: number;
   readonly multiplicityAllArms: number;
+  /** Those that are not extinct and the nearest first, at most eight nuclear lines and eight images. */
   readonly overlaps: readonly OverlapRecord[];
+  /** Further ones that are not extinct. */
+  readonly moreOverlaps: number;
   /** Labels of the irreps for which the line is zero; null where it was not computed. */
   readonly extinctFor: readonly string[] | null;
   readonly intensity: number | null;

@@ -160,6 +160,16 @@ export interface KindCertificateRecord {
   readonly allWeighed: boolean;
 }
 
+/** A nuclear line, or its λ/2 image, that a peak lies on; a flag removes nothing. */
+export interface FlagRecord {
+  readonly peak: number;
+  readonly with: "nuclear" | "half wavelength";
+  readonly h: readonly number[];
+  readonly state: string;
+  /** Å⁻¹, line less peak. */
+  readonly separation: number;
+}
+
 /** k = 0 or a k that only reverses centring translations. */
 export interface ReferenceRecord {
   readonly k: KRecord;
@@ -194,6 +204,8 @@ export interface SearchRecord {
   /** Peaks that the first candidate does not explain. */
   readonly unmatched: readonly number[];
   readonly regions: readonly RegionRecord[];
+  /** Peaks that need not be satellites: on nuclear lines or their λ/2 images. */
+  readonly flags: readonly FlagRecord[];
   /** Weighed and shown whatever they explain; empty for `index`. */
   readonly references: readonly ReferenceRecord[];
   /** How many k were tried and left out because they match too few peaks. */

@@ -42,6 +42,7 @@ export const satellitesSchema: JsonSchema = record({
       multiplicity: count,
       multiplicityAllArms: count,
       overlaps: list(overlapSchema),
+      moreOverlaps: count,
       extinctFor: nullable(list(text)),
       intensity: nullable(number),
     }),
@@ -159,8 +160,15 @@ export const searchSchema: JsonSchema = record({
   ),
   setAside: list(record({ peak: count, because: text })),
   unmatched: list(count),
-  regions: list(
-    record({ kind: shared("k"), from: list(number), to: list(number), leaves: count, decided: flag }),
+  regions: list(record({ kind: shared("k"), from: list(number), to: list(number), leaves: count, decided: flag })),
+  flags: list(
+    record({
+      peak: count,
+      with: { enum: ["nuclear", "half wavelength"] },
+      h: list(number),
+      state: text,
+      separation: number,
+    }),
   ),
   references: list(record({ k: shared("k"), evidence: number, matched: count, total: count })),
   dropped: count,

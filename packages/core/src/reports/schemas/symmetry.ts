@@ -92,7 +92,9 @@ const mode = record({
   copy: count,
   partner: count,
   suborbit: count,
-  moments: nullable(list(tuple(3, shared("complex")), "one triple per orbit atom, in the components of the convention")),
+  moments: nullable(
+    list(tuple(3, shared("complex")), "one triple per orbit atom, in the components of the convention"),
+  ),
   exact: list(tuple(3, text), "lattice components"),
 });
 

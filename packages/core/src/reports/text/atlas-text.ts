@@ -5,21 +5,21 @@ import { cellText, decimals, dimensionText, groupText, kForm, kText } from "./na
 export function atlasText(record: AtlasRecord): string[] {
   const { kinds, kindsPM } = record;
   const same =
-    kinds.length === kindsPM.length && kinds.every((kind, index) => kForm(kind.k) === kForm((kindsPM[index] as KindRecord).k));
+    kinds.length === kindsPM.length &&
+    kinds.every((kind, index) => kForm(kind.k) === kForm((kindsPM[index] as KindRecord).k));
   return [
     ...section(
       "Space group",
-      fields([
-        ["Group", groupText(record.group)],
-        ...(record.cell ? [["Cell", cellText(record.cell)] as const] : []),
-      ]),
+      fields([["Group", groupText(record.group)], ...(record.cell ? [["Cell", cellText(record.cell)] as const] : [])]),
     ),
     ...section(
       `Kinds of k (${kinds.length})`,
       kindTable(kinds, "dimension"),
       same ? ["", ...paragraph("With k and −k taken as one the kinds are the same.")] : [],
     ),
-    ...(same ? [] : section(`Kinds of k with k and −k taken as one (${kindsPM.length})`, kindTable(kindsPM, "dimensionPM"))),
+    ...(same
+      ? []
+      : section(`Kinds of k with k and −k taken as one (${kindsPM.length})`, kindTable(kindsPM, "dimensionPM"))),
     ...(record.given ? givenSections(record, record.given, same) : []),
   ];
 }

@@ -5,8 +5,7 @@ import type { RunRecord } from "../records/run.js";
 import { conventionSentence } from "./convention-text.js";
 import { paragraph, section, table } from "./layout.js";
 
-const operatorConventions =
-  "Operators x' = Rx + t; k in the reciprocal basis of the setting; D(T) = exp(+2πi k·T).";
+const operatorConventions = "Operators x' = Rx + t; k in the reciprocal basis of the setting; D(T) = exp(+2πi k·T).";
 
 /** Which conventions the numbers above obey, once. */
 export function conventionLines({ command, result }: Envelope): string[] {

@@ -22,6 +22,8 @@ export function conventionSentence(convention: ConventionRecord): string {
   const half = phase === "lattice" ? "S_j real and without c.c." : "without c.c.";
   const alone = `(${half}${factor === "half" ? " and ½" : ""} where 2k is a reciprocal lattice vector)`;
   const runs =
-    phase === "lattice" ? "phases run with lattice translations T only" : "phases run with the position T + r_j of the atom";
+    phase === "lattice"
+      ? "phases run with lattice translations T only"
+      : "phases run with the position T + r_j of the atom";
   return `${sum} ${alone}; ${runs}; components ${axesText(components)}.`;
 }

@@ -5,7 +5,7 @@ import type {
   IrrepsRecord,
   MinusKRelationRecord,
 } from "../records/irreps.js";
-import { fields, flow, numbered, paragraph, section, table, wideTable } from "./layout.js";
+import { fields, flow, numbered, paragraph, section, table, unbroken, wideTable } from "./layout.js";
 import { counted, groupText, kForm, kText, minusKText } from "./names.js";
 import { littleGroupSection } from "./star-text.js";
 
@@ -52,7 +52,10 @@ function fullSections(full: FullIrrepsRecord): string[] {
       `Arms of the star (${full.arms.length}), reached from k by`,
       flow(full.arms.map((arm, index) => `${index + 1}  ${kForm(arm)} by ${full.representatives[index] ?? ""}`)),
     ),
-    ...section(`Operators of the whole group (one per coset of the lattice, ${full.operators.length})`, numbered(full.operators)),
+    ...section(
+      `Operators of the whole group (one per coset of the lattice, ${full.operators.length})`,
+      numbered(full.operators),
+    ),
     ...full.irreps.flatMap(({ label, dimension, exact }) =>
       section(
         `Full irrep of ${label}: dimension ${dimension}; by the number of the operator, row | row`,
@@ -81,7 +84,8 @@ function blocksText(matrix: readonly (readonly string[])[], arms: number): strin
 /** `(0, 1 | 1, 0)`; a single entry stands alone. */
 export function matrixText(matrix: readonly (readonly string[])[]): string {
   if (matrix.length === 1 && matrix[0]?.length === 1) return matrix[0][0] ?? "";
-  return `(${matrix.map((row) => row.join(", ")).join(" | ")})`;
+  // Lines are broken between rows where that will do.
+  return `(${matrix.map((row) => unbroken(row.join(", "))).join(" | ")})`;
 }
 
 export function irrepTable(irreps: readonly Omit<IrrepRecord, "characters" | "matrices" | "exact">[]): string[] {
@@ -115,9 +119,5 @@ function characterTable(irreps: readonly IrrepRecord[]): string[] {
 /** `3  (0, 1 | 1, 0)`: number of the operator and the rows of its matrix. */
 export function matrixLines(exact: ExactIrrepRecord): string[] {
   const places = String(exact.matrices.length).length;
-  return flow(
-    exact.matrices.map(
-      (matrix, index) => `${String(index + 1).padStart(places)}  ${matrixText(matrix)}`,
-    ),
-  );
+  return flow(exact.matrices.map((matrix, index) => `${String(index + 1).padStart(places)}  ${matrixText(matrix)}`));
 }

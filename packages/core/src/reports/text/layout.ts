@@ -17,11 +17,24 @@ function pad(text: string, width: number, align: "left" | "right" = "left"): str
   return align === "right" ? blanks + text : text + blanks;
 }
 
+/** A blank at which no line is broken unless it must be; the report writes it as a blank. */
+const joint = "\u00a0";
+
+/** The text as one word for `wrap`: index triples, a number and what it counts. */
+export function unbroken(text: string): string {
+  return text.replaceAll(" ", joint);
+}
+
+/** The finished lines, without the marks for `wrap`. */
+export function plainBlanks(text: string): string {
+  return text.replaceAll(joint, " ");
+}
+
 /** Lines of at most `width` characters, broken at blanks; later lines are indented by `hanging` more. */
 export function wrap(text: string, width = pageWidth, hanging = 0): string[] {
   const lines: string[] = [];
   let line = "";
-  for (const word of text.split(" ")) {
+  for (const word of text.split(" ").flatMap((one) => parts(one, width - hanging))) {
     const room = width - (lines.length > 0 ? hanging : 0);
     if (line !== "" && widthOf(line) + 1 + widthOf(word) > room) {
       lines.push(line);
@@ -30,6 +43,16 @@ export function wrap(text: string, width = pageWidth, hanging = 0): string[] {
   }
   lines.push(line);
   return lines.map((one, index) => (index === 0 ? one : " ".repeat(hanging) + one));
+}
+
+/** A word that is wider than a line, in pieces: broken where it was joined, or else anywhere. */
+function parts(word: string, room: number): string[] {
+  if (word.length <= room || widthOf(word) <= room) return [word];
+  if (word.includes(joint)) return word.split(joint).flatMap((one) => parts(one, room));
+  const letters = [...word];
+  const pieces: string[] = [];
+  for (let start = 0; start < letters.length; start += room) pieces.push(letters.slice(start, start + room).join(""));
+  return pieces;
 }
 
 export function indented(lines: readonly string[], by = 2): string[] {
@@ -44,38 +67,54 @@ export function paragraph(text: string, by = 2, hanging = 0): string[] {
 /** A headed part of a report; nothing when it has no lines. */
 export function section(title: string, ...parts: readonly (readonly string[])[]): string[] {
   const lines = parts.flat();
-  return lines.length === 0 ? [] : [title, ...lines, ""];
+  return lines.length === 0 ? [] : [...wrap(title, pageWidth, 2), ...lines, ""];
 }
 
 /** Names and values in two columns, long values wrapped under themselves. */
 export function fields(entries: readonly (readonly [string, string])[], by = 2): string[] {
   const left = Math.max(...entries.map(([name]) => widthOf(name))) + 2;
+  // A name that leaves no room stands above its value.
+  if (left > pageWidth / 2)
+    return entries.flatMap(([name, value]) => [...paragraph(name, by), ...paragraph(value, by + 2)]);
   return entries.flatMap(([name, value]) => {
     const lines = wrap(value, pageWidth - by - left);
     return lines.map((line, index) => " ".repeat(by) + pad(index === 0 ? name : "", left) + line);
   });
 }
 
+/** A column is not made narrower than that to fit the page, unless it is by itself. */
+const narrowest = 20;
+
 /**
  * A table with aligned columns, two blanks between them. What is wider than the page has its last column wrapped under
- * itself.
+ * itself, and where that does not do the widest others too.
  */
 export function table(columns: readonly Column[], rows: readonly (readonly string[])[], by = 2): string[] {
   const widths = columns.map((column, index) =>
     Math.max(widthOf(column.title), ...rows.map((row) => widthOf(row[index] ?? ""))),
   );
-  const last = columns.length - 1;
-  const before = widths.slice(0, last).reduce((sum, width) => sum + width + 2, by);
-  const room = Math.max(20, pageWidth - before);
+  fitPage(widths, by);
   const line = (cells: readonly string[]): string[] => {
-    const start = cells.slice(0, last).map((cell, index) => pad(cell, widths[index] ?? 0, columns[index]?.align));
-    const width = Math.min(widths[last] ?? 0, room);
-    return wrap(cells[last] ?? "", room).map((text, index) => {
-      const left = index === 0 ? start : start.map((cell) => " ".repeat(widthOf(cell)));
-      return (" ".repeat(by) + [...left, pad(text, width, columns[last]?.align)].join("  ")).trimEnd();
+    const wrapped = columns.map((_, index) => wrap(cells[index] ?? "", widths[index]));
+    const height = Math.max(...wrapped.map(({ length }) => length));
+    return Array.from({ length: height }, (_, row) => {
+      const texts = columns.map(({ align }, index) => pad(wrapped[index]?.[row] ?? "", widths[index] ?? 0, align));
+      return (" ".repeat(by) + texts.join("  ")).trimEnd();
     });
   };
   return [line(columns.map(({ title }) => title)), ...rows.map(line)].flat();
+}
+
+/** Makes columns narrower until the table fits: the last, then the widest. */
+function fitPage(widths: number[], by: number): void {
+  const last = widths.length - 1;
+  const excess = () => by - 2 + widths.reduce((sum, width) => sum + width + 2, 0) - pageWidth;
+  widths[last] = Math.min(widths[last] ?? 0, Math.max(narrowest, (widths[last] ?? 0) - Math.max(0, excess())));
+  while (excess() > 0) {
+    const widest = widths.indexOf(Math.max(...widths));
+    if ((widths[widest] ?? 0) <= 1) return;
+    widths[widest] = Math.max(1, (widths[widest] ?? 0) - excess(), Math.min(narrowest, (widths[widest] ?? 0) - 1));
+  }
 }
 
 /**
@@ -125,9 +164,10 @@ export function wideTable(
   ]);
 }
 
-/** Short texts in as many columns as the page holds, filled row by row. */
+/** Short texts in as many columns as the page holds, filled row by row; what is wider than the page is wrapped. */
 export function flow(texts: readonly string[], by = 2): string[] {
   const width = Math.max(...texts.map(widthOf)) + 2;
+  if (width > pageWidth - by + 2) return texts.flatMap((text) => paragraph(text, by, 4));
   const across = Math.max(1, Math.floor((pageWidth - by + 2) / width));
   const lines: string[] = [];
   for (let start = 0; start < texts.length; start += across)

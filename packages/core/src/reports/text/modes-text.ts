@@ -88,7 +88,9 @@ export function parameterText(irrep: IrrepModesRecord): string {
 function relationFields(site: SiteModesRecord, { label, minusK }: IrrepModesRecord): [string, string][] {
   if (minusK === null) return [];
   const partner = minusK.partner === label ? "" : ` to those of ${minusK.partner}`;
-  const swapped = minusK.suborbitImages.flatMap((image, orbit) => (image > orbit ? [`${orbit + 1} ↔ ${image + 1}`] : []));
+  const swapped = minusK.suborbitImages.flatMap((image, orbit) =>
+    image > orbit ? [`${orbit + 1} ↔ ${image + 1}`] : [],
+  );
   const orbits = site.suborbits.length > 1 && swapped.length > 0 ? `, little-group orbits ${swapped.join(", ")}` : "";
   return [
     ["g₀, which takes k to −k", `${minusK.operator}${orbits}`],
@@ -141,7 +143,8 @@ function constraintTable(
     ...(one ? [one[atom] ?? "(0, 0, 0)"] : []),
   ]);
   if (one === null) return table([...atoms, { title }], rows);
-  const widest = (column: number, head: string) => Math.max(widthOf(head), ...rows.map((row) => widthOf(row[column] ?? "")));
+  const widest = (column: number, head: string) =>
+    Math.max(widthOf(head), ...rows.map((row) => widthOf(row[column] ?? "")));
   const width = 2 + 4 + 2 + widest(1, "position") + 2 + widest(2, title) + 2 + widest(3, oneTitle);
   if (width <= pageWidth) return table([...atoms, { title }, { title: oneTitle }], rows);
   return [
@@ -233,13 +236,18 @@ function letterSection(record: ModesRecord): string[] {
           "Basis vectors are numbered copy.partner: partners of one copy mix under the little group as the matrices of `kvane irreps` say, copies never.",
         )
       : [],
+    Object.keys(record.k.values).length > 0 || record.k.numeric === null
+      ? paragraph("In exponents of B and of basis vectors u, v, w are the letters of k; tables write kx, ky, kz there.")
+      : [],
     record.cell !== null
       ? paragraph("In μB along the unit vectors of a, b, c a table is the same text unless it stands below its own.")
       : [],
     one.length > 0
       ? paragraph(
           `One order parameter: the relation between k and −k joins the copies. Letters are real there, complex where a star marks their complex conjugate; all S share one free phase.${
-            one.some(({ dimension }) => dimension > 1) ? " ξ1, ξ2, … are the complex components of the order parameter." : ""
+            one.some(({ dimension }) => dimension > 1)
+              ? " ξ1, ξ2, … are the complex components of the order parameter."
+              : ""
           }`,
         )
       : [],

@@ -21,12 +21,18 @@ export function kText(k: KRecord): string {
   return [kForm(k), ...values].join(", ");
 }
 
-/** The values in place of the letters: `(0, 0.4720(4), 0)`; components with more than a letter as plain numbers. */
+/**
+ * The values in place of the letters: `(0, 0.4720(4), 0)`; without uncertainties, and in components with more than a
+ * letter, numbers to four decimals.
+ */
 export function kShort(k: KRecord): string {
   const components = k.components.map((component, axis) => {
     const value = k.values[component];
-    if (value !== undefined) return measured(value, k.su[component] ?? null);
-    return /[uvw]/.test(component) && k.numeric !== null ? plain(k.numeric[axis] ?? Number.NaN) : component;
+    const su = k.su[component];
+    if (value !== undefined && su !== undefined) return withUncertainty(value, su);
+    return /[uvw]/.test(component) && k.numeric !== null
+      ? plain(Number((k.numeric[axis] ?? Number.NaN).toFixed(4)))
+      : component;
   });
   return `(${components.join(", ")})`;
 }

@@ -15,6 +15,7 @@ import { checkText } from "./check-text.js";
 import { assumedLines, cautionLines, conventionLines, warningLines } from "./closing-text.js";
 import { compatibilityText } from "./compatibility-text.js";
 import { irrepsText } from "./irreps-text.js";
+import { plainBlanks } from "./layout.js";
 import { modesText } from "./modes-text.js";
 import { opsText } from "./ops-text.js";
 import { runFullText, runShortText } from "./run-text.js";
@@ -39,7 +40,7 @@ export function reportText(answer: Envelope, options: { readonly full?: boolean 
     ...cautionLines(answer.command),
   ];
   while (lines.at(-1) === "") lines.pop();
-  return `${lines.join("\n")}\n`;
+  return `${plainBlanks(lines.join("\n"))}\n`;
 }
 
 /** The command names the shape of the result. */

@@ -2,7 +2,7 @@ import type { BranchRecord, RunRecord } from "../records/run.js";
 import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
 import { irrepsText, irrepTable } from "./irreps-text.js";
-import { fields, paragraph, section, table } from "./layout.js";
+import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { decompositionText, modesText, parameterText } from "./modes-text.js";
 import { cellText, counted, groupText, kText, positionText } from "./names.js";
 import { satellitesText, satelliteTable } from "./satellites-text.js";
@@ -135,14 +135,14 @@ function modeSummary({ modes }: BranchRecord): string[] {
     ...fields([
       [
         site.label,
-        `${decompositionText(site)}; atoms ${site.orbit.map((one, atom) => `${atom + 1} ${positionText(one)}`).join("  ")}`,
+        `${decompositionText(site)}; atoms ${site.orbit.map((one, atom) => unbroken(`${atom + 1} ${positionText(one)}`)).join("  ")}`,
       ],
     ]),
     ...table(
       [{ title: "irrep" }, { title: "free", align: "right" }, { title: "allowed S on atoms 1, 2, … along a, b, c" }],
       site.irreps
         .filter(({ multiplicity }) => multiplicity > 0)
-        .map((irrep) => [irrep.label, parameterText(irrep).split(";")[0] ?? "", irrep.constraint.join("  ")]),
+        .map((irrep) => [irrep.label, parameterText(irrep).split(";")[0] ?? "", irrep.constraint.map(unbroken).join("  ")]),
       4,
     ),
   ]);

@@ -1,6 +1,6 @@
 import type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "../records/satellites.js";
 import type { LineRecord } from "../records/search.js";
-import { fields, paragraph, section, table } from "./layout.js";
+import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { cellText, counted, decimals, groupText, kText, plain } from "./names.js";
 
 export function satellitesText(record: SatellitesRecord): string[] {
@@ -48,20 +48,31 @@ export function satelliteTable(reflections: readonly SatelliteRecord[], record: 
       ...(angles ? [decimals(line.twoThetaDeg, 3)] : []),
       String(line.multiplicity),
       String(line.multiplicityAllArms),
-      line.overlaps
-        .filter(({ allowed }) => allowed)
-        .map(overlapText)
-        .join(", "),
+      overlapsText(line),
     ]),
   );
 }
 
+/** Names on a line; the JSON has more of them. */
+const shownOverlaps = 3;
+
+/** What lies on a satellite and is not extinct, the nearest first where not all are named. */
+function overlapsText({ overlaps, moreOverlaps }: SatelliteRecord): string {
+  const allowed = overlaps.filter((one) => one.allowed);
+  const shown =
+    allowed.length > shownOverlaps
+      ? [...allowed].sort((a, b) => Math.abs(a.separation) - Math.abs(b.separation)).slice(0, shownOverlaps)
+      : allowed;
+  const more = allowed.length - shown.length + moreOverlaps;
+  return `${shown.map(overlapText).join(", ")}${more > 0 ? ` ${unbroken(`and ${more} more`)}` : ""}`;
+}
+
 /** `(1 0 -1) + k`; the sign says which satellite of H it is. */
 export function lineText(line: Pick<LineRecord, "h" | "sign">): string {
-  return `(${line.h.join(" ")}) ${line.sign < 0 ? "−" : "+"} k`;
+  return unbroken(`(${line.h.join(" ")}) ${line.sign < 0 ? "−" : "+"} k`);
 }
 
 export function overlapText(overlap: OverlapRecord): string {
   const name = overlap.with === "nuclear" ? "nuclear" : "λ/2 of";
-  return `${name} (${overlap.h.join(" ")})`;
+  return unbroken(`${name} (${overlap.h.join(" ")})`);
 }

@@ -27,6 +27,7 @@ export function locateText(record: SearchRecord): string[] {
       certificateLines(record),
       separationLines(record),
       referenceLines(record),
+      flagLines(record),
       setAsideLines(record),
     ),
     ...(best ? section(`Assignment by candidate 1, ${kText(best.k)}`, assignmentTable(best, record.peaks)) : []),
@@ -80,9 +81,15 @@ export function candidateTable(candidates: readonly CandidateRecord[]): string[]
       decimals(misfitOf(candidate), 2),
       decimals(candidate.evidence.value, 1),
       candidate.evidence.reading,
-      candidate.tiedWith.map((other) => other + 1).join(", "),
+      tiesText(candidate.tiedWith),
     ]),
   );
+}
+
+/** Numbers of the tied candidates, the first few of many. */
+function tiesText(ties: readonly number[]): string {
+  const shown = ties.slice(0, 3).map((other) => other + 1);
+  return ties.length > 3 ? `${shown.join(", ")} and ${ties.length - 3} more` : shown.join(", ");
 }
 
 /** What the search covered, and what it says of what is not listed. */
@@ -138,6 +145,16 @@ function referenceLines(record: SearchRecord): string[] {
   return record.references.flatMap(({ k, evidence, matched, total }) =>
     paragraph(`For comparison ${kShort(k)}: ${matched} of ${total} peaks, evidence ${decimals(evidence, 1)}.`),
   );
+}
+
+/** Peaks on nuclear lines or λ/2 images, one line for each kind of coincidence. */
+function flagLines(record: SearchRecord): string[] {
+  return (["nuclear", "half wavelength"] as const).flatMap((sort) => {
+    const peaks = [...new Set(record.flags.filter((flag) => flag.with === sort).map(({ peak }) => peak + 1))];
+    if (peaks.length === 0) return [];
+    const where = sort === "nuclear" ? "nuclear lines of the cell" : "λ/2 images of nuclear lines";
+    return paragraph(`Flagged, not removed: peak ${peaks.join(", ")} on ${where}.`);
+  });
 }
 
 function setAsideLines(record: SearchRecord): string[] {
