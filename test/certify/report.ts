@@ -31,7 +31,7 @@ function report(units: readonly Unit[], state: State): string {
     const cases = sum((entry) => entry.cases);
     const failures = sum((entry) => entry.problems.length);
     const { what, seed } = sweeps[name];
-    const cell = (value: number): string => (seed === null ? "–" : String(value));
+    const cell = (value: number): string => (value === 0 ? "–" : String(value));
     return [
       what,
       seed === null ? "–" : String(seed),

@@ -1,6 +1,8 @@
-import { manifold, specialPoints, type WaveVector } from "@kvane/core/kvectors";
+import { atlas, manifold, specialPoints, type WaveVector } from "@kvane/core/kvectors";
 import { changeBasis, groupFromSetting, type Site, type SpaceGroup, tabulatedSettings } from "@kvane/core/spacegroups";
+import { symmorphicNumbers } from "../fixtures/make-wyckoff-counts.mjs";
 import { changedSite, changedWave, randomChange } from "../support/axes.js";
+import { randomKindProblems } from "../support/kinds-in-floats.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { type Random, seeded } from "../support/random.js";
 import { generalSite, randomWaveVector, specialSite } from "../support/random-cases.js";
@@ -43,6 +45,14 @@ export const sweeps = {
     what: "230 groups in 2 random bases each, origin shifted, at a special point and a random rational k",
     seed: 103,
   },
+  kinds: {
+    what: "230 groups at every kind of k of the atlas, letters left open; a special site, moments and displacements",
+    seed: 105,
+  },
+  atlas: {
+    what: "200 random k in each of the 73 arithmetic classes, each in exactly one kind, under P and with −1",
+    seed: 106,
+  },
   settings: { what: "530 tabulated settings at a special point and a random rational k", seed: 104 },
   characters: { what: "reference sets of characters (898)", seed: null },
   decompositions: { what: "reference decompositions (153)", seed: null },
@@ -51,6 +61,8 @@ export const sweeps = {
 export type SweepName = keyof typeof sweeps;
 
 const cells = 256;
+/** Random k in each arithmetic class. */
+const randomKinds = 200;
 const groups = Array.from({ length: 230 }, (_, index) => index + 1);
 
 export function allUnits(): Unit[] {
@@ -61,6 +73,18 @@ export function allUnits(): Unit[] {
     ...groups.map((number) => unit("points", number, (random) => pointResults(groupOf(number), random))),
     ...groups.map((number) => unit("random", number, (random) => randomResults(groupOf(number), random))),
     ...groups.map((number) => unit("axes", number, (random) => axesResults(groupOf(number), random))),
+    ...groups.map((number) => unit("kinds", number, (random) => kindResults(groupOf(number), random))),
+    ...symmorphicNumbers.map((number) => ({
+      sweep: "atlas" as const,
+      number,
+      run: () => ({
+        cases: randomKinds,
+        irreps: 0,
+        modes: 0,
+        fields: 0,
+        problems: randomKindProblems(groupOf(number), seeded(10_000 * sweeps.atlas.seed + number), randomKinds),
+      }),
+    })),
     ...settings.map((setting, row) =>
       unit("settings", row + 1, (random) => {
         const group = groupFromSetting(setting);
@@ -103,6 +127,12 @@ function pick<T>(random: Random, items: readonly T[]): T {
 function pointResults(group: SpaceGroup, random: Random): SweepResult[] {
   return specialPoints(group).map(({ k }) =>
     sweepCase(group, k, [generalSite(random), specialSite(group, random), specialSite(group, random)], options(random)),
+  );
+}
+
+function kindResults(group: SpaceGroup, random: Random): SweepResult[] {
+  return atlas(group, { withInversion: false }).map(({ k }) =>
+    sweepCase(group, k, [specialSite(group, random)], options(random)),
   );
 }
 

@@ -58,6 +58,18 @@ describe("the built command", () => {
     expect(readdirSync(folder)).toEqual(before);
   });
 
+  test.skipIf(process.platform === "win32")("Ctrl-C ends a long list of satellites", async () => {
+    const words = ["satellites", "194", "--cell", "7.61 7.61 6.52 90 90 120", "--k", "0.1,0.2,0.3", "--q-max", "20"];
+    const before = readdirSync(folder);
+    const child = spawn(process.execPath, [commandFile, ...words, "--out", "list.txt"], { cwd: folder });
+    const ended = new Promise<number | null>((resolve) => child.on("exit", (status) => resolve(status)));
+    // It works for seconds; the handler is in place once it has begun.
+    await new Promise((resolve) => setTimeout(resolve, 700));
+    child.kill("SIGINT");
+    expect(await ended).toBe(130);
+    expect(readdirSync(folder)).toEqual(before);
+  });
+
   test("an answer of a cancelled job is `interrupted`", async () => {
     const { answer, exitStatusOf } = await import("@kvane/core/job");
     const text = "group: P n m a\ncell: {a: 9, b: 7, c: 5, alpha: 90, beta: 90, gamma: 90}\npeaks: {file: p, as: d}\n";

@@ -53,6 +53,11 @@ const lines: readonly (readonly string[])[] = [
   ["check", "--example"],
   ["run", "--example"],
   ["explain"],
+  ["explain", "no-candidate"],
+  ["irreps", "227:2", "--k", "1/2,1/2,1/2"],
+  ["irreps", "230", "--k", "1/2,0,0", "--full"],
+  ["modes", "62", "--k", "0,0,0", "--site", `${"Fe".repeat(60)} 0 0 0`],
+  ["satellites", "62", ...cell, "--k", "0,0.4723,0", "--q-max", "12"],
 ];
 
 describe("text reports", () => {

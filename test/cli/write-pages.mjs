@@ -31,9 +31,9 @@ Every problem that kvane reports has one of these codes, on the error output as 
 A code keeps its meaning; new ones may be added. Beside it stand the place (file, line and column, or the argument), what
 was expected, what was found and what to do. All problems of an input are reported at once. The exit status of a command
 is that of its first error: 1 the job failed on valid input or output could not be written, 2 the input or the usage is
-wrong, 70 an internal fault, 130 interrupted. Some of the codes appear as warnings too, which do not change the exit
-status. \`kvane explain CODE\` prints a line of this page, which \`node test/cli/write-pages.mjs\` makes from
-\`packages/core/src/errors/codes.ts\`.
+wrong, 70 an internal fault, 130 interrupted. A code with the status 0 is only a warning beside an answer; some others
+appear as warnings too, which do not change the exit status. \`kvane explain CODE\` prints a line of this page and what
+mostly helps; \`node test/cli/write-pages.mjs\` makes the page from \`packages/core/src/errors/codes.ts\`.
 
 | code | exit status | meaning |
 |---|---|---|

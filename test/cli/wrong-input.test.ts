@@ -18,8 +18,13 @@ const files = {
   ]),
   "bad-group.yaml": "title: x\ngroup: P n q a\n",
   "not-yaml.yaml": "group: [P n m a\ncell: }\n",
+  "components.txt": "# S\n1 0 0.5+0.1i 0\n2 0 0.5+ 0\n",
+  "no-atom.txt": "1 0 0 1\n5 0 0 1\n",
+  "atom-twice.txt": "1 0 0 1\n1 0 0 1\n",
+  "two-components.txt": "1 0 0\n",
   "latin1.txt": new Uint8Array([0x64, 0x0a, 0xe9, 0x0a]),
 };
+const rows = ["modes", "62", "--k", "0,0.3,0", "--site", "A 0 0 0", "--read"];
 const folder = scratchFolder(files);
 const cell = ["--cell", "10 6 4 90 90 90"];
 
@@ -86,6 +91,18 @@ const cases: readonly Case[] = [
     line: ["modes", "62", "--k", "0,0,0", "--site", "A 0 0 0", "--site", "B 1/2 0 1/2"],
     code: "duplicate-site",
     place: "--site",
+  },
+  { line: [...rows, "components.txt"], code: "invalid-component", place: "components.txt:3:5" },
+  { line: [...rows, "no-atom.txt"], code: "invalid-component", place: "no-atom.txt:2:1" },
+  { line: [...rows, "atom-twice.txt"], code: "invalid-component", place: "atom-twice.txt:2:1" },
+  { line: [...rows, "two-components.txt"], code: "invalid-component", place: "two-components.txt:1" },
+  { line: [...rows, "empty.txt"], code: "file-empty", place: "empty.txt" },
+  { line: [...rows, "none.txt"], code: "file-not-found", place: "none.txt" },
+  { line: [...rows, "no-atom.txt", "--site", "B 0.1 0.2 0.3"], code: "conflicting-arguments", place: "--read" },
+  {
+    line: ["modes", "62", "--k", "0,u,0", "--site", "A 0 0 0", "--read", "no-atom.txt"],
+    code: "k-needs-values",
+    place: "--k",
   },
   {
     line: ["satellites", "62", "--cell", "10 6 4 90 200 90", "--k", "0,0,0"],

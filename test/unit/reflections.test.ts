@@ -273,10 +273,30 @@ describe("overlaps", () => {
       { h: [0, 1, 0], q: 2.1, d: 3, multiplicity: 2, extinct: true },
       { h: [0, 0, 1], q: 2.5, d: 3, multiplicity: 2, extinct: true },
     ] as const;
-    expect(overlapsOf(1.02, nuclear, 0.05)).toEqual([
+    expect(overlapsOf(1.02, nuclear, 0.05).list).toEqual([
       { with: "nuclear", h: [1, 0, 0], q: 1, separation: -0.02, allowed: true },
       { with: "half wavelength", h: [0, 1, 0], q: 1.05, separation: 0.03, allowed: false },
     ]);
-    expect(overlapsOf(1.02, nuclear, 0.01)).toEqual([]);
+    expect(overlapsOf(1.02, nuclear, 0.01)).toEqual({ list: [], more: 0 });
+  });
+
+  test("of many the allowed and nearest are kept, and the other allowed ones counted", () => {
+    const line = (q: number, extinct: boolean) =>
+      ({ h: [Math.round(1000 * q), 0, 0], q, d: 1, multiplicity: 2, extinct }) as const;
+    const nuclear = [line(0.97, false), line(0.98, false), line(0.99, false), line(1, true), line(1.02, false)];
+    const { list, more } = overlapsOf(1, nuclear, 0.05, 2);
+    expect(list.map(({ h }) => h[0])).toEqual([980, 990]);
+    expect(more).toBe(2);
+    // As many as there are: the extinct one is named where there is room.
+    expect(overlapsOf(1, nuclear, 0.05, 5)).toMatchObject({ list: { length: 5 }, more: 0 });
+  });
+
+  test("lists that would fill the memory are refused, with what they would hold", () => {
+    const hexagonal = { a: 7.61, b: 7.61, c: 6.52, alpha: 90, beta: 90, gamma: 120 };
+    const p63mmc = parseGroup("194");
+    const listTo = (qMax: number) => () => satelliteReflections(p63mmc, hexagonal, wave("0.1 0.2 0.3"), { qMax });
+    // 4/3 π q³ V/(2π)³ vectors H + k of a general k, none equivalent to another: 58 798 within 22 Å⁻¹.
+    expect(errorOf(listTo(22)).message).toMatch(/58\d{3} satellites/);
+    expect(errorOf(listTo(45)).message).toContain("more than 250000 lines");
   });
 });

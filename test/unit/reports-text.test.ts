@@ -2,7 +2,19 @@ import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { csvText } from "#core/reports/csv/csv-text.js";
 import { jsonText } from "#core/reports/json-text.js";
-import { fields, flow, numbered, pageWidth, table, wideTable, widthOf, wrap } from "#core/reports/text/layout.js";
+import {
+  fields,
+  flow,
+  numbered,
+  pageWidth,
+  plainBlanks,
+  section,
+  table,
+  unbroken,
+  wideTable,
+  widthOf,
+  wrap,
+} from "#core/reports/text/layout.js";
 import { kText, positionText } from "#core/reports/text/names.js";
 
 const seed = 20261201;
@@ -49,6 +61,35 @@ describe("layout", () => {
     for (const line of lines) expect(widthOf(line)).toBeLessThanOrEqual(pageWidth);
     expect(lines.join(" ").match(/v\d+/g)).toEqual(columns.map(({ title }) => `v${title}`));
     expect(lines.filter((line) => line.includes("row")).length).toBe(lines.filter((line) => /\bx\b/.test(line)).length);
+  });
+
+  test("what is wider than a line is broken all the same, and nothing is lost", () => {
+    const long = "Γ".repeat(230);
+    const rows = [[long, "b", `${long} c`]];
+    const lines = [
+      ...table([{ title: "a" }, { title: "b", align: "right" }, { title: "c" }], rows),
+      ...fields([["name", long]]),
+      ...fields([[long, "value"]]),
+      ...flow([long, "short"]),
+      ...section(long, ["  line"]),
+    ];
+    for (const line of lines) expect(widthOf(line)).toBeLessThanOrEqual(pageWidth);
+    expect([...lines.join("")].filter((letter) => letter === "Γ")).toHaveLength(6 * 230);
+  });
+
+  test("joined words stay together unless they fill more than a line", () => {
+    expect(wrap(`aaaa bbbb ${unbroken("(1 0 -1) + k")}`, 16)).toEqual(["aaaa bbbb", unbroken("(1 0 -1) + k")]);
+    expect(plainBlanks(wrap(unbroken("(1 0 -1) + k"), 6).join("|"))).toBe("(1 0|-1) +|k");
+  });
+
+  test("titles are broken before cells are", () => {
+    const titles = ["first of many words", "second of many words", "third of many words", "fourth of many words"];
+    const cell = "x".repeat(20);
+    const lines = table(
+      titles.map((title) => ({ title: `${title} and more` })),
+      [[cell, cell, cell, cell]],
+    );
+    expect(lines.at(-1)).toBe(`  ${[cell, cell, cell, cell].join("  ")}`);
   });
 
   test("right-aligned numbers end in one column", () => {

@@ -11,7 +11,7 @@ import { slowStarDistance, type Triple } from "../support/search-cases.ts";
 const cell = { a: 5.1, b: 6.3, c: 7.2, alpha: 90, beta: 90, gamma: 90 };
 const axes = reciprocalAxes(cell);
 const group = parseGroup("P n m a");
-const few = { ...defaultSearchOptions, mostBoxes: 200_000 };
+const few = { ...defaultSearchOptions, mostBoxes: 60_000 };
 
 describe("degenerate lists end with a result or a clear error, quickly", () => {
   test("one peak: every kind is saturated or not informative, nothing is called found", {

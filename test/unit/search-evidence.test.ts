@@ -1,5 +1,5 @@
 import { specialPoints } from "@kvane/core/kvectors";
-import { defaultSearchOptions, indexPeaks, locate } from "@kvane/core/search";
+import { defaultSearchOptions as allKinds, indexPeaks, locate } from "@kvane/core/search";
 import { parseGroup, tabulatedSettings } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { deWolff, smithSnyder } from "#core/search/figures-of-merit.js";
@@ -11,6 +11,9 @@ import { powderList } from "../support/peak-lists.ts";
 import { seeded } from "../support/random.ts";
 import { randomCell } from "../support/random-cells.ts";
 import { wave } from "../support/written.ts";
+
+/** These tests are about evidence over the special points. */
+const defaultSearchOptions = { ...allKinds, maxDimension: 0 as const };
 
 type Vector = [number, number, number];
 

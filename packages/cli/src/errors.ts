@@ -19,13 +19,32 @@ function problemText(one: Problem, kind: "error" | "warning", lines: SourceLines
     ["found", one.found],
     ["remedy", one.remedy],
   ] as const;
+  const head = `${kind}[${one.code}]`;
+  const colour = kind === "error" ? "red" : "yellow";
   const parts = [
-    `${styled(kind === "error" ? "red" : "yellow", `${kind}[${one.code}]`)}: ${one.message}`,
+    ...wrapped(`${kind}[${one.code}]: ${one.message}`, 2).map((line) => line.replace(head, styled(colour, head))),
     ...(place === "" ? [] : [`  at ${place}`]),
     ...(caret === null ? [] : caret.split("\n").map((line) => `    | ${line}`)),
-    ...details.flatMap(([name, text]) => (text === null ? [] : [`  ${`${name}:`.padEnd(9)} ${text}`])),
+    ...details.flatMap(([name, text]) => (text === null ? [] : wrapped(`  ${`${name}:`.padEnd(9)} ${text}`, 12))),
   ];
   return `${parts.join("\n")}\n`;
+}
+
+const widest = 100;
+
+/** Lines of at most 100 characters, broken at blanks, later ones indented; words that are wider stay whole. */
+function wrapped(text: string, indent: number): string[] {
+  const lines: string[] = [];
+  let line = "";
+  for (const word of text.split(/(?<=\S) (?=\S)/)) {
+    if (line === "") line = word;
+    else if ([...line].length + 1 + [...word].length <= widest) line = `${line} ${word}`;
+    else {
+      lines.push(line);
+      line = " ".repeat(indent) + word;
+    }
+  }
+  return [...lines, line];
 }
 
 /** `peaks.csv:4:7`, `--k, column 5`, `study.yaml:3:1 (sites[1].at)`. */

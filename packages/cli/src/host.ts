@@ -4,6 +4,7 @@ import { fail, type Place } from "@kvane/core/errors";
 import type { JobHost, Request } from "@kvane/core/job";
 import { argumentNames, type RequestField } from "@kvane/core/job";
 import type { Surroundings } from "./surroundings.js";
+import { systemFault } from "./system-faults.js";
 
 /** Paths that begin so are files of the bundled example. */
 const examplePrefix = "example:/";
@@ -54,14 +55,14 @@ function bytesOf(path: string, { folder }: Surroundings): Uint8Array {
     return readFileSync(located(path, folder));
   } catch (error) {
     const code = (error as NodeJS.ErrnoException).code ?? "";
-    if (code === "ENOENT" || code === "ENOTDIR")
+    if (code === "ENOENT" || code === "ENOTDIR" || code === "ENAMETOOLONG")
       fail("file-not-found", `there is no file \`${path}\``, {
         where: { file: path },
         expected: "a file that exists",
         found: "none",
         remedy: "check the name; a name in a study counts from the folder of the study",
       });
-    const found = code === "EISDIR" ? "a folder" : code === "EACCES" ? "no permission to read it" : code;
+    const { found } = systemFault(code);
     return fail("file-unreadable", `\`${path}\` cannot be read`, {
       where: { file: path },
       expected: "a text file",

@@ -27,6 +27,10 @@ export const optionSpecs = {
     flags: "--components <AXES>",
     about: "lattice, crystal or cartesian; the last two need a cell (lattice)",
   },
+  read: {
+    flags: "--read <FILE>",
+    about: "split the Fourier components of a list, in that convention, over the irreps",
+  },
   peaks: { flags: "--peaks <FILE>", about: "list of peak positions" },
   as: { flags: "--as <KIND>", about: "what the positions are: d, q, two-theta or hkl" },
   wavelength: { flags: "--wavelength <Å>", about: "neutron wavelength" },

@@ -56,6 +56,7 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
     phase: text("phase"),
     factor: text("factor"),
     components: text("components"),
+    read: text("read"),
     peaks: text("peaks"),
     as: text("as"),
     wavelength: text("wavelength"),

@@ -24,15 +24,15 @@ export async function runCommand(words: readonly string[], surroundings: Surroun
     const line = parse(words, surroundings);
     return line === null ? 0 : await execute(line, surroundings);
   } catch (error) {
-    const problems = problemsOf(error);
+    const problems = problemsOf(error, words);
     return problems.length === 0 ? 0 : refuse(refusedAnswer(command ?? "", problems), null, asJson, null, surroundings);
   }
 }
 
 /** Problems of the usage and of the output; none where the parser has only shown help. */
-function problemsOf(error: unknown): readonly Problem[] {
+function problemsOf(error: unknown, words: readonly string[]): readonly Problem[] {
   if (error instanceof KvaneError) return error.problems;
-  const problem = usageProblem(error);
+  const problem = usageProblem(error, words);
   return problem === null ? [] : [problem];
 }
 

@@ -1,18 +1,23 @@
 import { type Problem, problem } from "@kvane/core/errors";
 import { CommanderError } from "commander";
+import { valueOptions } from "./program.js";
 
-/** A complaint of the parser as a problem, or null when it was no complaint (help and version were asked for). */
-export function usageProblem(error: unknown): Problem | null {
+/**
+ * A complaint of the parser as a problem, or null when it was no complaint (help and version were asked for).
+ *
+ * @param words the command line, from the command on
+ */
+export function usageProblem(error: unknown, words: readonly string[]): Problem | null {
   if (!(error instanceof CommanderError)) throw error;
   if (error.exitCode === 0) return null;
-  return fromParser(error);
+  return fromParser(error, words);
 }
 
-const seeHelp = "see `kvane COMMAND --help` for what it takes";
-
-function fromParser({ code, message }: CommanderError): Problem {
+function fromParser({ code, message }: CommanderError, words: readonly string[]): Problem {
   const [text = "", ...more] = message.replace(/^error: /, "").split("\n");
   const suggestion = /Did you mean (.*)\?/.exec(more.join(" "))?.[1] ?? null;
+  const command = /^[a-z]/.test(words[0] ?? "") ? ` ${words[0]}` : "";
+  const seeHelp = `see \`kvane${code === "commander.unknownCommand" ? "" : command} --help\` for what it takes`;
   const remedy = suggestion === null ? seeHelp : `did you mean ${suggestion.replace(/^one of /, "one of: ")}?`;
   const named = /'([^']*)'/.exec(text)?.[1] ?? null;
   const found = named === null ? {} : { found: named };
@@ -39,11 +44,61 @@ function fromParser({ code, message }: CommanderError): Problem {
         remedy: "give the value directly behind the option",
       });
     case "commander.excessArguments":
-      return problem("invalid-argument", text, {
-        expected: "one GROUP or file behind the command",
-        remedy: 'put a GROUP with blanks into quotation marks: "P n m a"',
-      });
+      return excessProblem(words) ?? problem("invalid-argument", text, { remedy: seeHelp });
     default:
       return problem("invalid-argument", text, { remedy: seeHelp });
   }
+}
+
+/** Words that belong to nothing: mostly a value with blanks that was not put into quotation marks. */
+function excessProblem(words: readonly string[]): Problem | null {
+  const [command = ""] = words;
+  // The runs of words that are neither options nor their first value, with what stands before them.
+  const runs: { readonly option: string | null; readonly texts: string[] }[] = [];
+  let open: (typeof runs)[number] | null = null;
+  for (let index = 1; index < words.length; index++) {
+    const word = words[index] as string;
+    if (/^--/.test(word)) {
+      open = null;
+      if (!valueOptions.has(word) || index + 1 >= words.length) continue;
+      open = { option: word, texts: [words[index + 1] as string] };
+      runs.push(open);
+      index += 1;
+    } else if (open === null) {
+      open = { option: null, texts: [word] };
+      runs.push(open);
+    } else open.texts.push(word);
+  }
+  const stray = runs.find(({ texts }) => texts.length > 1) ?? runs.filter(({ option }) => option === null)[1];
+  if (stray === undefined) return null;
+  const { option, texts } = stray;
+  if (option !== null)
+    return problem("invalid-argument", `the value of ${option} breaks off at a blank`, {
+      where: { argument: option },
+      expected: "one word, or words in quotation marks",
+      found: texts.join(" "),
+      remedy: `write ${option} "${texts.join(" ")}"`,
+    });
+  const excess = { found: texts.slice(1).join(" ") || (texts[0] ?? "") };
+  if (command === "help" || command === "explain")
+    return problem("invalid-argument", `\`kvane ${command}\` takes one word`, {
+      where: { argument: command === "help" ? "TOPIC" : "CODE" },
+      expected: command === "help" ? "one topic or command" : "one code",
+      ...excess,
+      remedy: `ask for one at a time: kvane ${command} ${texts[0] ?? ""}`,
+    });
+  const files = texts.some((text) => /\.(ya?ml|cif)$/i.test(text)) || ["run", "check"].includes(command);
+  return files
+    ? problem("invalid-argument", `\`kvane ${command}\` takes one study`, {
+        where: { argument: "STUDY" },
+        expected: "one study file",
+        ...excess,
+        remedy: "do one study after the other",
+      })
+    : problem("invalid-argument", "the group breaks off at a blank", {
+        where: { argument: "GROUP" },
+        expected: "one word, or words in quotation marks",
+        found: texts.join(" "),
+        remedy: `write kvane ${command} "${texts.join(" ")}"`,
+      });
 }

@@ -52,6 +52,7 @@ export const symmetryCommands: readonly CommandSpec[] = [
       "phase",
       "factor",
       "components",
+      "read",
       "example",
       "csv",
       ...outputOptions,

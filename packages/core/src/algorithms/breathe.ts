@@ -32,7 +32,8 @@ export async function breathe(host: WorkHost): Promise<void> {
 }
 
 function refuseWhenAborted(host: WorkHost): void {
-  if (host.signal?.aborted) fail("interrupted", "the work was cancelled before it ended", {
+  if (host.signal?.aborted)
+    fail("interrupted", "the work was cancelled before it ended", {
       remedy: "start the command again; nothing was written",
     });
 }

@@ -31,6 +31,8 @@ export const problemCodes = {
   "missing-key": "A study file lacks a required key.",
   "wrong-type": "A value in a study file has the wrong type.",
   "invalid-peak": "A row of a peak list has a word in a number column, a missing value or an impossible value.",
+  "invalid-component":
+    "A row of a list of Fourier components names no atom of the site, or one twice, or has not three complex numbers.",
   "peak-kind-unknown": "It is not said whether positions are d, Q, 2theta or hkl.",
   "missing-wavelength": "2theta positions need the wavelength.",
   "peak-out-of-range": "A peak position is impossible, for example 2theta above 180 degrees.",

@@ -4,6 +4,7 @@
  * coordinates are exact as written (docs/conventions.md, Components and units; Numbers). Sources: YAML 1.2; Bragg's law
  * for 2θ. The room reads no file itself.
  */
+export { parseFourierComponents } from "./fourier-components.js";
 export { readPeakKind } from "./peak-kind.js";
 export { type PeakListOptions, parsePeakList } from "./peak-list.js";
 export { parseStudy } from "./study.js";

@@ -90,7 +90,10 @@ export function readSearch(node: TreeNode, problems: ProblemList): StudySearch {
     maxDimension: dimension && readDimension(dimension, problems),
     tolerance: number("tolerance", positive("a half-width in 1/Å above 0")),
     zeroShift: number("zero-shift", notNegative("degrees 2theta, 0 or more")),
-    cellScale: number("cell-scale", notNegative("a relative change, 0 or more")),
+    cellScale: number("cell-scale", {
+      expected: "a relative change of the cell from 0 to less than 1, such as 0.01",
+      allows: (value) => value >= 0 && value < 1,
+    }),
     qMax: number("q-max", positive("a Q in 1/Å above 0")),
   };
 }

@@ -1,5 +1,6 @@
 import type { Rational, RationalVector } from "../numbers/index.js";
 import type { Cell } from "../spacegroups/index.js";
+import { ionFault } from "./ion-names.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { openSection } from "./study-section.js";
 import type { StudySite } from "./study-types.js";
@@ -60,10 +61,24 @@ function readSite(node: TreeNode, lineOfLabel: Map<string, number | null>, probl
   const at = section.need("at", "three coordinates such as [0, 1/4, 0.183]");
   const position = at && readPosition(at, problems);
   const ion = section.get("ion");
-  const ionText = ion && asText(problems, ion, "the name of an ion such as Fe3+");
+  const ionText = ion && readIon(ion, problems);
   const spin = section.get("spin");
   const spinValue = spin && readSpin(spin, problems);
   return label !== null && position ? { label, ion: ionText, position, spin: spinValue } : null;
+}
+
+function readIon(node: TreeNode, problems: ProblemList): string | null {
+  const expected = "an element and its charge, such as Fe3+";
+  const text = asText(problems, node, expected);
+  const fault = text === null ? null : ionFault(text);
+  if (fault === null) return text;
+  note(problems, "invalid-site", fault.message, {
+    where: where(node.place),
+    expected,
+    found: text ?? "",
+    remedy: fault.remedy,
+  });
+  return null;
 }
 
 function readLabel(

@@ -3,7 +3,7 @@ interface Said {
   readonly details: { readonly found?: string; readonly remedy: string };
 }
 
-/** The errors that people make most, in words that say what to do; the rest in those of the YAML reader. */
+/** The errors that people make most, in words that say what to do. */
 const known: Readonly<Record<string, Said>> = {
   BLOCK_AS_IMPLICIT_KEY: {
     message: "a value holds a colon with a blank behind it",
@@ -19,7 +19,17 @@ const known: Readonly<Record<string, Said>> = {
   },
   MISSING_CHAR: {
     message: "something is not closed or is missing here",
-    details: { remedy: "close every quote, [ and {, and put a blank behind every colon" },
+    details: { remedy: "close every quote, [ and {, and put a colon and a blank behind every key" },
+  },
+  MULTILINE_IMPLICIT_KEY: {
+    message: "a key has no colon",
+    details: { found: "a word alone in its line", remedy: "put a colon behind it" },
+  },
+  UNEXPECTED_TOKEN: {
+    message: "something stands here that does not belong here",
+    details: {
+      remedy: "look for a colon, a quote or a bracket that is missing or too many, here or in the line before",
+    },
   },
   MULTIPLE_DOCS: {
     message: "the file holds more than one document",
@@ -36,7 +46,9 @@ const known: Readonly<Record<string, Said>> = {
 };
 
 /** What an error of the YAML reader means for the author of a study. */
-export function yamlMessage(code: string, message: string): Said {
+export function yamlMessage(code: string): Said {
   const said = Object.hasOwn(known, code) ? known[code] : undefined;
-  return said ?? { message: `the file breaks the grammar of YAML: ${message}`, details: { remedy: "mend the line" } };
+  return (
+    said ?? { message: "the file breaks the grammar of YAML", details: { remedy: "mend the line, or the one before" } }
+  );
 }

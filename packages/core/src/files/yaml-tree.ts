@@ -69,11 +69,17 @@ export async function readYamlTree(text: string, problems: ProblemList): Promise
       schema: "failsafe",
       uniqueKeys: false,
     });
-    for (const { code, message, pos } of [...document.errors, ...document.warnings]) {
+    // One slip makes the reader stumble over all that follows: only the first error means what it says.
+    const [first] = document.errors;
+    for (const { code, pos } of first ? [first] : document.warnings) {
       // What is missing at the end is missing behind the last word, not in the empty line below.
       const { line, col } = lineCounter.linePos(Math.min(pos[0], text.trimEnd().length));
-      const said = yamlMessage(code, message);
-      note(problems, "syntax", said.message, { where: { line, column: col }, expected: "YAML", ...said.details });
+      const said = yamlMessage(code);
+      note(problems, "syntax", said.message, {
+        where: { line, column: col },
+        expected: "`key: value`, lists in brackets",
+        ...said.details,
+      });
     }
     if (document.errors.length > 0) return null;
     return document.contents ? convertNode({ yaml, lineCounter, text, problems }, document.contents, "") : null;

@@ -29,7 +29,7 @@ export async function answer(request: Request, host: JobHost): Promise<Envelope<
 /** The study is read once, before the command, and its reader is loaded only then. */
 async function readStudy(request: Request, host: JobHost) {
   const path = request.study ?? null;
-  return path === null ? null : (await import("./inputs/study-input.js")).studyFrom(path, host);
+  return path === null ? null : (await import("./inputs/study-input.js")).studyFrom(path, host, request.command);
 }
 
 /** What was asked, tidied: blanks collapsed, null for what was not given. */

@@ -43,7 +43,7 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
     load: async () => (await import("./commands/compatibility.js")).compatibilityCommand,
   },
   modes: {
-    takes: ["study", "group", "k", "sites", "cell", "polar", "star", ...conventionFields],
+    takes: ["study", "group", "k", "sites", "cell", "polar", "star", ...conventionFields, "read"],
     load: async () => (await import("./commands/modes.js")).modesCommand,
   },
   satellites: {

@@ -28,6 +28,8 @@ export interface Request {
   readonly phase?: string | null;
   readonly factor?: string | null;
   readonly components?: string | null;
+  /** `modes`: path of a list of Fourier components, in that convention. */
+  readonly read?: string | null;
   /** Path of a peak list. */
   readonly peaks?: string | null;
   readonly as?: string | null;
@@ -77,6 +79,7 @@ export const argumentNames: { readonly [field in RequestField]: string } = {
   phase: "--phase",
   factor: "--factor",
   components: "--components",
+  read: "--read",
   peaks: "--peaks",
   as: "--as",
   wavelength: "--wavelength",

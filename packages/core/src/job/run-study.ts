@@ -41,16 +41,23 @@ export async function runStudy(work: Work): Promise<RunRecord> {
   }
   const { search, notFollowed } = found;
   const { peaks } = inputs;
+  const coincidences = coincidencesOf(inputs);
   const record = {
     title: inputs.title,
     group: groupRecord(inputs.group),
     cell: inputs.cell && cellRecord(inputs.cell),
     peaks: peaks && peaksRecord(peaks.list, peaks.file),
-    coincidences: coincidencesOf(inputs),
+    coincidences,
     search,
     branches,
     notFollowed,
-    next: nextSteps(inputs, found, branches),
+    next: nextSteps(
+      inputs,
+      found,
+      branches,
+      coincidences,
+      work.warnings.map(({ code }) => code),
+    ),
   };
   return { ...record, files: work.request.files === true ? resultFileNames(record) : [] };
 }

@@ -16,6 +16,7 @@ export { nearbyKinds } from "./nearby-kinds.js";
 export { type PlacedWaveVector, placeWaveVector } from "./placing.js";
 export { plainestRepresentative } from "./plainest.js";
 export { pointOnManifold } from "./point-on-manifold.js";
+export { reducedRepresentative } from "./reduced.js";
 export { specialPoints } from "./special-points.js";
 export type { KindOfK, LittleGroup, Manifold, MinusK, NearbyKind, SpecialPoint, Star, WaveVector } from "./types.js";
 export {

@@ -166,7 +166,7 @@ function nearMisses(
   return [
     problem(
       "measured-k-ambiguous",
-      `\`${written.text}\` was taken as measured, on a kind of dimension ${set.directions.length}`,
+      `\`${written.text}\` was taken as measured, ${["at a point", "on a line", "in a plane", "at a general position"][set.directions.length]}`,
       {
         expected: `${text} if the special value is meant`,
         found: written.text,

@@ -22,6 +22,7 @@ export {
   toConvention,
 } from "./fourier-conventions.js";
 export { type MomentSizes, momentSizes } from "./moment-sizes.js";
+export { type IrrepShare, type ProjectedComponents, projectComponents } from "./read-components.js";
 export { siteModes } from "./site-modes.js";
 export { type ArmModes, starModes } from "./star-modes.js";
 export type { IrrepModes, MinusKOnModes, Mode, ModeMoment, SiteModes } from "./types.js";

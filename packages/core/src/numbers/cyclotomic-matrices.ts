@@ -19,17 +19,20 @@ export function identityCyclotomicMatrix(size: number): CyclotomicMatrix {
 
 export function multiplyCyclotomicMatrices(a: CyclotomicMatrix, b: CyclotomicMatrix): CyclotomicMatrix {
   const width = b[0]?.length ?? 0;
-  return a.map((row) =>
-    Array.from({ length: width }, (_, column) => {
-      let sum = cyclotomicZero;
-      row.forEach((entry, index) => {
-        const other = (b[index] as readonly Cyclotomic[])[column] as Cyclotomic;
-        if (isCyclotomicZero(entry) || isCyclotomicZero(other)) return;
-        sum = addCyclotomic(sum, multiplyCyclotomic(entry, other));
-      });
-      return sum;
-    }),
-  );
+  return a.map((row) => {
+    const sums = new Array<Cyclotomic>(width).fill(cyclotomicZero);
+    for (const [index, entry] of row.entries()) {
+      // Most entries are zero.
+      if (isCyclotomicZero(entry)) continue;
+      const other = b[index] as readonly Cyclotomic[];
+      for (let column = 0; column < width; column++)
+        sums[column] = addCyclotomic(
+          sums[column] as Cyclotomic,
+          multiplyCyclotomic(entry, other[column] as Cyclotomic),
+        );
+    }
+    return sums;
+  });
 }
 
 export function scaleCyclotomicMatrix(factor: Cyclotomic, matrix: CyclotomicMatrix): CyclotomicMatrix {

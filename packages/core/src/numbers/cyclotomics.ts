@@ -31,7 +31,8 @@ export function rootOfUnity([numerator, denominator]: Rational): Cyclotomic {
 }
 
 export function isCyclotomicZero(a: Cyclotomic): boolean {
-  for (const coefficient of a.coefficients) if (coefficient !== 0) return false;
+  const { coefficients } = a;
+  for (let index = 0; index < coefficients.length; index++) if (coefficients[index] !== 0) return false;
   return true;
 }
 

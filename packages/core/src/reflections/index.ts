@@ -6,7 +6,7 @@
  */
 export { averagedReciprocalMetric } from "./averaged-metric.js";
 export { nuclearLines } from "./nuclear-lines.js";
-export { overlapsOf } from "./overlaps.js";
+export { type Overlaps, overlapsOf } from "./overlaps.js";
 export { distinctPositions, dToQ, qToTwoThetaDeg, twoThetaDegToQ } from "./positions.js";
 export { type ReciprocalFrame, reciprocalFrame } from "./reciprocal-frame.js";
 export { type SatelliteLister, satelliteLines, satelliteLister } from "./satellite-lines.js";

@@ -6,40 +6,32 @@ import type { NuclearLine, Overlap } from "./types.js";
  * half the wavelength is. A line at Q diffracts λ/2 at the angle where λ is diffracted by Q/2, so the nuclear lines must
  * reach up to 2 (q + resolution) for the second.
  *
+ * At most `most` of either kind are listed, those that are not extinct and the nearest first: far out in Q nuclear lines
+ * lie closer than any resolution.
+ *
  * @param q position of the satellite, Å⁻¹
  * @param nuclear in order of Q, as `nuclearLines` gives them
  * @param resolution half-width in Å⁻¹ within which two lines cannot be told apart
  */
-export function overlapsOf(q: number, nuclear: readonly NuclearLine[], resolution: number): readonly Overlap[] {
-  return [
-    ...coincidences(q, nuclear, resolution, "nuclear"),
-    ...coincidences(q, nuclear, resolution, "half wavelength"),
-  ];
-}
-
-/** Some of the lines that fall on a satellite, and how many more that are not extinct were left out. */
-export interface SomeOverlaps {
-  readonly list: readonly Overlap[];
-  readonly more: number;
-}
-
-/**
- * `overlapsOf` with at most `most` of either kind, those that are not extinct and the nearest first: far out in Q nuclear
- * lines lie closer than any resolution.
- */
-export function someOverlapsOf(
+export function overlapsOf(
   q: number,
   nuclear: readonly NuclearLine[],
   resolution: number,
-  most: number,
-): SomeOverlaps {
+  most = Number.POSITIVE_INFINITY,
+): Overlaps {
   const atNuclear = chosen(coincidences(q, nuclear, resolution, "nuclear"), most);
   const atHalf = chosen(coincidences(q, nuclear, resolution, "half wavelength"), most);
   return { list: [...atNuclear.list, ...atHalf.list], more: atNuclear.more + atHalf.more };
 }
 
+/** The lines that fall on a satellite, and how many more that are not extinct were left out. */
+export interface Overlaps {
+  readonly list: readonly Overlap[];
+  readonly more: number;
+}
+
 /** The `most` that matter most, in order of Q. */
-function chosen(all: readonly Overlap[], most: number): SomeOverlaps {
+function chosen(all: readonly Overlap[], most: number): Overlaps {
   if (all.length <= most) return { list: all, more: 0 };
   const ranked = [...all].sort(
     (a, b) => Number(b.allowed) - Number(a.allowed) || Math.abs(a.separation) - Math.abs(b.separation),

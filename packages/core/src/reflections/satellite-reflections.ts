@@ -3,7 +3,7 @@ import type { WaveVector } from "../kvectors/index.js";
 import { overlapInverseAngstrom, roundNumber } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { nuclearLines } from "./nuclear-lines.js";
-import { someOverlapsOf } from "./overlaps.js";
+import { overlapsOf } from "./overlaps.js";
 import { qToTwoThetaDeg } from "./positions.js";
 import { satelliteLines } from "./satellite-lines.js";
 import type { PositionLimits, SatelliteLine, SatelliteReflection } from "./types.js";
@@ -53,7 +53,7 @@ export function reflectionList(
     lines,
     noted: (line) => {
       const angle = wavelengthAngstrom === null ? null : qToTwoThetaDeg(line.q, wavelengthAngstrom);
-      const { list, more } = someOverlapsOf(line.q, nuclear, resolution, mostOverlaps);
+      const { list, more } = overlapsOf(line.q, nuclear, resolution, mostOverlaps);
       return {
         ...line,
         twoThetaDeg: angle === null ? null : roundNumber(angle),

@@ -13,6 +13,7 @@ export { overlapRecord, peaksRecord, satellitesRecord, searchRecord } from "./bu
 export { irrepsRecord, opsRecord, starRecord } from "./building/symmetry.js";
 export { commandsWithTable, reportCsv } from "./csv/report-csv.js";
 export { jsonText } from "./json-text.js";
+export { physicalSets } from "./physical-sets.js";
 export type { AtlasRecord, KindRecord, NearbyKindRecord, PlacedKRecord } from "./records/atlas.js";
 export type { CheckedSiteRecord, CheckRecord } from "./records/check.js";
 export type {
@@ -40,6 +41,7 @@ export type {
   MinusKModesRecord,
   ModeRecord,
   ModesRecord,
+  ReadComponentsRecord,
   SiteModesRecord,
 } from "./records/modes.js";
 export type { OpsRecord } from "./records/ops.js";

@@ -1,5 +1,5 @@
-import { toNumber } from "../numbers/index.js";
-import { type NuclearLine, nuclearLines, type Overlap, overlapsOf } from "../reflections/index.js";
+import { roundNumber, toNumber } from "../numbers/index.js";
+import { type NuclearLine, nuclearLines } from "../reflections/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
 import type { ImpurityPhase, NuclearState, PeakFlag } from "./types.js";
 import type { PowderPeak } from "./used-peaks.js";
@@ -20,21 +20,32 @@ export function flagsOf(
   if (peaks.length === 0) return [];
   const reach = Math.max(...peaks.map(({ q, halfWidth }) => q + halfWidth));
   const nuclear = nuclearLines(group, cell, { qMax: 2 * reach });
+  const places = { nuclear: 1, "half wavelength": 0.5 } as const;
   return peaks.flatMap(({ index, q, halfWidth }) =>
-    overlapsOf(q, nuclear, halfWidth, mostOfEach)
-      .list.map((overlap) => ({
-        peak: index,
-        with: overlap.with,
-        h: overlap.h,
-        state: stateOf(overlap, sites),
-        separation: overlap.separation,
-      }))
-      .sort((a, b) => Number(a.state !== "allowed") - Number(b.state !== "allowed")),
+    (["nuclear", "half wavelength"] as const).flatMap((sort) =>
+      nuclear
+        .filter((line) => Math.abs(places[sort] * line.q - q) <= halfWidth)
+        .map(
+          (line): PeakFlag => ({
+            peak: index,
+            with: sort,
+            h: line.h,
+            state: stateOf(line, sites),
+            separation: roundNumber(places[sort] * line.q - q, q),
+          }),
+        )
+        .sort(
+          (a, b) =>
+            Number(a.state !== "allowed") - Number(b.state !== "allowed") ||
+            Math.abs(a.separation) - Math.abs(b.separation),
+        )
+        .slice(0, mostOfEach),
+    ),
   );
 }
 
-function stateOf({ allowed, h }: Pick<Overlap, "allowed" | "h">, sites: readonly SiteOrbit[]): NuclearState {
-  if (!allowed) return "forbidden by a glide plane or screw axis";
+function stateOf({ extinct, h }: NuclearLine, sites: readonly SiteOrbit[]): NuclearState {
+  if (extinct) return "forbidden by a glide plane or screw axis";
   return sites.length > 0 && sites.every((site) => isExtinctFor(site, h)) ? "forbidden by the sites" : "allowed";
 }
 

@@ -8,6 +8,8 @@ export interface MergedRegions {
   readonly regions: readonly Region[];
   /** Region of each settled leaf. */
   readonly ofLeaf: Int32Array;
+  /** Region of each undecided box. */
+  readonly ofUndecided: Int32Array;
 }
 
 /**
@@ -38,7 +40,7 @@ export function mergeLeaves(frame: FlatFrame, wedge: Wedge, findings: FlatFindin
     return key;
   };
   const keys = findings.leaves.map((centre) => enter(centre, true));
-  for (const centre of findings.undecided) enter(centre, false);
+  const openKeys = findings.undecided.map((centre) => enter(centre, false));
   const steps = neighbours(dimension);
   const regions: Region[] = [];
   for (const first of cells.values()) {
@@ -64,7 +66,8 @@ export function mergeLeaves(frame: FlatFrame, wedge: Wedge, findings: FlatFindin
       ),
     );
   }
-  return { regions, ofLeaf: Int32Array.from(keys, (key) => cells.get(key)?.region ?? -1) };
+  const regionOf = (key: number): number => cells.get(key)?.region ?? -1;
+  return { regions, ofLeaf: Int32Array.from(keys, regionOf), ofUndecided: Int32Array.from(openKeys, regionOf) };
 }
 
 function neighbours(dimension: number): number[][] {

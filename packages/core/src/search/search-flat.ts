@@ -31,6 +31,8 @@ export interface FlatFindings {
   readonly leaves: readonly Float64Array[];
   readonly undecided: readonly Float64Array[];
   readonly leafHalf: Float64Array;
+  /** Half-widths of the undecided boxes. */
+  readonly openHalf: Float64Array;
   readonly boxes: number;
   /** Half-diagonal of the smallest box that was looked at. */
   readonly smallestBox: number;
@@ -96,11 +98,57 @@ export async function searchFlat(
     leaves,
     undecided,
     leafHalf: search.halfAt(search.leafLevel),
+    openHalf: search.halfAt(search.leafLevel + halvingsBelowLeaf * frame.dimension),
     boxes: search.boxes(),
     smallestBox: Math.hypot(...search.halfAt(deepest)),
     unexplored: search.unexplored(),
     stopped,
   };
+}
+
+/** How one undecided box came out after a closer look. */
+export type Decision = PolishedPoint | "excluded" | "open";
+
+/** Halvings along each axis, and boxes, that a closer look may take. */
+const closerHalvings = 6;
+const closerBoxes = 4000;
+
+/** A closer look at boxes that the search left undecided, far below any uncertainty. */
+export function decideBox(
+  frame: FlatFrame,
+  wedge: Wedge,
+  peaks: readonly AcceptedInterval[],
+  wanted: number,
+  centre: Float64Array,
+  half: Float64Array,
+): { readonly decision: Decision; readonly boxes: number } {
+  const part: Wedge = { ...wedge, centre, half };
+  const table = pairTable(frame, part, peaks);
+  const filter = pairFilter(table, part, peaks.length - wanted);
+  const settings = { wanted, drops: peaks.length - wanted, density: smoothDensity(frame, wedge), strayShare };
+  const { polish, judge } = leafPolisher(table, frame.dimension, settings);
+  let found: PolishedPoint | null = null;
+  let open = 0;
+  const search = boxSearch({
+    centre,
+    half,
+    leafRadius: Number.POSITIVE_INFINITY,
+    levelsBelowLeaf: closerHalvings * frame.dimension,
+    admits: (level, middle, widths) => found === null && filter.admits(level, middle, widths),
+    settles: (level, middle) => {
+      const point = level === 0 ? polish(filter.lists(level), middle) : judge(filter.lists(level), middle);
+      if (point.matched < wanted) return false;
+      found = point;
+      return true;
+    },
+    leavesOpen: () => {
+      open += 1;
+    },
+  });
+  const done = search.advance(closerBoxes);
+  const decision: Decision = (found as PolishedPoint | null) ?? (done && open === 0 ? "excluded" : "open");
+  if (typeof decision !== "string") foldInto(wedge, decision.t);
+  return { decision, boxes: search.boxes() };
 }
 
 /** Lines per Å⁻¹ over q²: vectors of a shell over the volume of L*'s cell and over the images that coincide on the flat. */

@@ -1,13 +1,13 @@
-import type { WorkHost } from "../algorithms/index.js";
+import { breathe, type WorkHost } from "../algorithms/index.js";
 import type { WaveVector } from "../kvectors/index.js";
 import { roundNumber } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import type { KindBudget, KindFindings } from "./explanation.js";
-import { flatFrame, lettersAt } from "./flat-frame.js";
+import { type FlatFrame, flatFrame, lettersAt } from "./flat-frame.js";
 import type { AcceptedInterval } from "./peak-pairs.js";
 import { mergeLeaves } from "./regions.js";
-import { distinctPoints, searchFlat } from "./search-flat.js";
-import { wedgeOf } from "./wedge.js";
+import { decideBox, distinctPoints, type FlatFindings, searchFlat } from "./search-flat.js";
+import { type Wedge, wedgeOf } from "./wedge.js";
 
 /** Distinct solutions of a kind that are weighed; more than that is said. */
 export const mostSolutionsOfKind = 24;
@@ -40,13 +40,14 @@ export async function solveFlat(
   const frame = flatFrame(group, form, problem.metric);
   const wedge = wedgeOf(group, frame);
   const leafRadius = Math.max(leastLeaf, problem.leafRadius);
-  const findings = await searchFlat(
+  const first = await searchFlat(
     frame,
     wedge,
     problem.intervals,
     { wanted: budget.wanted, leafRadius, budget: budget.boxes, mostLeaves: saturatingLeaves },
     host,
   );
+  const findings = await decideOpenRegions(frame, wedge, problem.intervals, budget.wanted, first, host);
   const { regions, ofLeaf } = mergeLeaves(frame, wedge, findings);
   const order = findings.points
     .map((point, leaf) => ({ ...point, region: ofLeaf[leaf] as number }))
@@ -70,4 +71,40 @@ export async function solveFlat(
     stopped: findings.stopped,
     complete,
   };
+}
+
+/** Undecided boxes that get a closer look; in a kind with more of them the list says nothing anyway. */
+const mostCloserLooks = 5000;
+
+/** Boxes beside a settled leaf belong to its region; where a region has none, its boxes are looked at more closely. */
+async function decideOpenRegions(
+  frame: FlatFrame,
+  wedge: Wedge,
+  intervals: readonly AcceptedInterval[],
+  wanted: number,
+  findings: FlatFindings,
+  host: WorkHost,
+): Promise<FlatFindings> {
+  const { regions, ofUndecided } = mergeLeaves(frame, wedge, findings);
+  const isOpen = (index: number): boolean => regions[ofUndecided[index] as number]?.decided === false;
+  if (findings.undecided.filter((_, index) => isOpen(index)).length > mostCloserLooks) return findings;
+  const points = [...findings.points];
+  const leaves = [...findings.leaves];
+  const undecided: Float64Array[] = [];
+  let { boxes } = findings;
+  for (const [index, centre] of findings.undecided.entries()) {
+    if (!isOpen(index)) {
+      undecided.push(centre);
+      continue;
+    }
+    if (index % 64 === 0) await breathe(host);
+    const looked = decideBox(frame, wedge, intervals, wanted, centre, findings.openHalf);
+    boxes += looked.boxes;
+    if (looked.decision === "open") undecided.push(centre);
+    else if (looked.decision !== "excluded") {
+      points.push(looked.decision);
+      leaves.push(centre);
+    }
+  }
+  return { ...findings, points, leaves, undecided, boxes };
 }

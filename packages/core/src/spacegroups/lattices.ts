@@ -2,6 +2,7 @@ import {
   addVectors,
   determinant,
   divide,
+  dot,
   gcdOf,
   hermiteNormalForm,
   invert,
@@ -19,7 +20,6 @@ import {
   rowTimes,
   safe,
   subtract,
-  timesColumn,
   toNumber,
   transpose,
   vectorFrom,
@@ -73,7 +73,11 @@ export function toPrimitiveColumn(lattice: Lattice, x: RationalVector): Rational
 
 /** Coordinates in the axes of the setting, `x = B ξ`. */
 export function fromPrimitiveColumn(lattice: Lattice, xi: RationalVector): RationalVector {
-  return timesColumn(latticeMatrix(lattice), xi);
+  const [p, q, r] = lattice.vectors as [LatticeVector, LatticeVector, LatticeVector];
+  const part = rational(1, lattice.denominator);
+  const at = (axis: 0 | 1 | 2): Rational =>
+    multiply(part, dot(xi, [rational(p[axis]), rational(q[axis]), rational(r[axis])]));
+  return [at(0), at(1), at(2)];
 }
 
 /** A reciprocal row in the dual of the primitive basis, `κ = k B`; κ is integer exactly when k ∈ L*. */

@@ -1,4 +1,5 @@
 import { fail, KvaneError } from "../errors/index.js";
+import { determinant } from "../numbers/index.js";
 import { formatBasisChange, parseBasisChange } from "./basis-changes.js";
 import { groupOnLattice, unnamed } from "./build-group.js";
 import { changeBasis } from "./change-basis.js";
@@ -32,7 +33,8 @@ export function parseGroup(text: string): SpaceGroup {
 
 /** `parseGroup` together with what had to be assumed: setting, origin, reading of the symbol. */
 export function parseGroupWithNotes(text: string): ParsedGroup {
-  const { head, column, hallOperator, basisChange } = takeBrackets(text);
+  // An overline behind its digit (combining, U+0305 or U+0304) is how print shows the bar.
+  const { head, column, hallOperator, basisChange } = takeBrackets(text.replace(/(\d)[\u0304\u0305]/g, "-$1"));
   if (head === "")
     fail("syntax", "the space group is empty", {
       where: { column },
@@ -42,7 +44,18 @@ export function parseGroupWithNotes(text: string): ParsedGroup {
   const parsed = parseHead(head, column, hallOperator);
   if (basisChange === null) return parsed;
   const change = parseBasisChange(basisChange.inner, basisChange.column);
-  return { ...parsed, group: changeBasis(parsed.group, change) };
+  const group = changeBasis(parsed.group, change);
+  return determinant(change.matrix)[0] > 0
+    ? { ...parsed, group }
+    : { assumed: [...parsed.assumed, leftHanded(basisChange.inner)], group };
+}
+
+function leftHanded(axes: string): GroupAssumption {
+  return {
+    what: "handedness of the axes",
+    value: "left-handed",
+    because: `the axes (${axes.trim()}) turn a right-handed basis into a left-handed one`,
+  };
 }
 
 function parseHead(head: string, column: number, hallOperator: Brackets | null): ParsedGroup {

@@ -4,6 +4,7 @@ import { cellFor, cellIfGiven } from "../inputs/cell-input.js";
 import { groupOf } from "../inputs/group-input.js";
 import { placedK, writtenKs } from "../inputs/k-input.js";
 import { peaksIfGiven } from "../inputs/peaks-input.js";
+import { checkSearchFits, searchOptionsOf } from "../inputs/search-input.js";
 import { orbitsOf, sitesIfGiven } from "../inputs/site-input.js";
 import { needStudy } from "../inputs/study-input.js";
 import { remember, together, type Work } from "../work.js";
@@ -12,17 +13,19 @@ import { remember, together, type Work } from "../work.js";
 export async function checkCommand(work: Work): Promise<CheckRecord> {
   const study = needStudy(work.study);
   remember(work, [], study.warnings);
-  const { group, written, given, peaks, sites } = await together({
+  const { group, written, given, peaks, sites, options } = await together({
     group: () => (study.group === null ? null : groupOf(work)),
     written: () => writtenKs(work),
     given: () => cellIfGiven(work),
     peaks: () => peaksIfGiven(work),
     sites: () => sitesIfGiven(work),
+    options: () => searchOptionsOf(work),
   });
   const { cell, ks, orbits } = await together({
     cell: () => (given === null ? null : group === null ? given.cell : cellFor(group, given)),
     ks: () => (group === null ? [] : written.map((one) => placedK(work, group, one))),
     orbits: () => (group === null ? [] : orbitsOf(work, group, sites, given?.cell ?? null)),
+    fits: () => peaks && checkSearchFits(work, written.length > 0 ? { ...options, unmatched: 0 } : options, peaks.list),
   });
   return {
     kind: "study",

@@ -2,6 +2,7 @@ import { fail, nearMiss, type ProblemCode, problemCodes } from "../../errors/ind
 import type { ExplainRecord } from "../../reports/index.js";
 import { exitStatusOf } from "../exit-status.js";
 import { optionOf } from "../inputs/given.js";
+import { generalRemedy } from "../remedies.js";
 import type { Work } from "../work.js";
 
 /** `kvane explain`: what a code of a problem means; all of them when none is named. */
@@ -19,6 +20,11 @@ export function explainCommand({ request }: Work): ExplainRecord {
     });
   }
   return {
-    codes: wanted.map((code) => ({ code, meaning: problemCodes[code], exitStatus: exitStatusOf(code) })),
+    codes: wanted.map((code) => ({
+      code,
+      meaning: problemCodes[code],
+      exitStatus: exitStatusOf(code),
+      remedy: generalRemedy(code),
+    })),
   };
 }

@@ -4,6 +4,7 @@ import { formatWaveVector, numericWaveVector, type WaveVector } from "../../kvec
 import type { ModesRecord } from "../../reports/index.js";
 import type { Cell } from "../../spacegroups/index.js";
 import { cellFor, cellIfGiven } from "../inputs/cell-input.js";
+import { componentsFor, componentsIfGiven } from "../inputs/components-input.js";
 import { conventionOf } from "../inputs/convention-input.js";
 import { groupOf } from "../inputs/group-input.js";
 import { type GivenK, placedK, writtenK } from "../inputs/k-input.js";
@@ -14,12 +15,13 @@ import { together, type Work } from "../work.js";
 
 /** `kvane modes`: for each site the decomposition, mode vectors and what each irrep allows. */
 export async function modesCommand(work: Work): Promise<ModesRecord> {
-  const { group, written, sites, given, convention } = await together({
+  const { group, written, sites, given, convention, list } = await together({
     group: () => groupOf(work),
     written: () => writtenK(work),
     sites: () => writtenSites(work),
     given: () => cellIfGiven(work),
     convention: () => conventionOf(work.request),
+    list: () => componentsIfGiven(work),
   });
   const axial = work.request.polar !== true;
   const { k, cell } = await together({
@@ -28,7 +30,9 @@ export async function modesCommand(work: Work): Promise<ModesRecord> {
   });
   const orbits = orbitsOf(work, group, sites, cell);
   if (convention.components !== "lattice") refuseComponents(convention.components, cell, k, written);
-  return modesOf(group, smallIrreps(group, k), orbits, { axial, cell, convention, star: work.request.star === true });
+  const read = list && componentsFor(list, orbits, k);
+  const options = { axial, cell, convention, star: work.request.star === true };
+  return modesOf(group, smallIrreps(group, k), orbits, options, read);
 }
 
 /** Crystal and Cartesian components are numbers: they need a cell, and a number for every letter of k. */

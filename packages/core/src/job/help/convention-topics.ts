@@ -36,6 +36,10 @@ a, b, c. Options of \`kvane modes\` write basis vectors and tables otherwise; ev
                                the IUCr magnetic dictionary), numbers, needs --cell
                cartesian       x along a, z along c*, numbers, needs --cell
 
+--read FILE takes components that somebody else has written in the convention named by these
+options: a row for each atom, its number in the table and three complex numbers, such as
+1  0.5+0.1i  0  -0.3. They are printed in kvane's own way, with share and amplitudes of each irrep.
+
 Letters of a table of what is allowed stand for components as written, so the factor never shows in
 it. In crystal and Cartesian components each copy of an irrep is divided by the length of the axis
 of its leading entry, so that an amplitude in μB is the moment along that axis. The matrix B of the

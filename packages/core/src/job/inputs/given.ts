@@ -10,6 +10,11 @@ export interface Given {
   readonly verbatim: boolean;
 }
 
+/** `, or give --cell`: only where the command takes the option; `run` and `check` take these things from the study. */
+export function orOption({ command }: Request, option: string): string {
+  return command === "run" || command === "check" ? "" : `, or give ${option}`;
+}
+
 /** An option's text, trimmed, or null when it was not given. */
 export function optionOf(request: Request, field: RequestField): Given | null {
   const value = request[field];

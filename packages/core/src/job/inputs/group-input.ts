@@ -1,7 +1,7 @@
 import { fail } from "../../errors/index.js";
 import { parseGroupWithNotes, type SpaceGroup } from "../../spacegroups/index.js";
 import { remember, type Work } from "../work.js";
-import { type Given, optionOf, readingGiven, studyText } from "./given.js";
+import { type Given, optionOf, orOption, readingGiven, studyText } from "./given.js";
 
 /** The space group of the option or of the study. */
 export function groupOf(work: Work): SpaceGroup {
@@ -20,7 +20,7 @@ function groupText({ request, study }: Work): Given {
       where: { file: study.file, path: "group" },
       expected: "a line such as `group: P n m a`",
       found: "none",
-      remedy: "add the group, or give GROUP on the command line",
+      remedy: `add the group to the study${orOption(request, "GROUP on the command line")}`,
     });
   fail("missing-argument", "no space group was given", {
     where: { argument: "GROUP" },

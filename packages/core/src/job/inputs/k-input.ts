@@ -1,4 +1,4 @@
-import { fail, nowhere } from "../../errors/index.js";
+import { fail, KvaneError, nowhere } from "../../errors/index.js";
 import {
   formatWaveVector,
   numericWaveVector,
@@ -26,7 +26,18 @@ export function writtenKs({ request, study }: Work): GivenK[] {
     : study === null
       ? []
       : (study.k ?? []).map((text, index) => studyText(study, `k[${index}]`, text));
-  return texts.map((given) => ({ given, written: readingGiven(given, () => parseWaveVector(given.text)) }));
+  return texts.map((given) => ({ given, written: readingGiven(given, () => readK(given.text)) }));
+}
+
+/** `parseWaveVector`, which takes commas for separators; decimal commas are likely where there are too many. */
+function readK(text: string): WrittenWaveVector {
+  try {
+    return parseWaveVector(text);
+  } catch (error) {
+    if (!(error instanceof KvaneError) || text.split(",").length < 4 || !/\d,\d/.test(text)) throw error;
+    const remedy = "write decimal points within numbers and commas between them, such as 0,0.472,0";
+    throw new KvaneError(error.problems.map((one) => ({ ...one, remedy })));
+  }
 }
 
 /** The one wave vector of a command that needs one; of several in a study the first, and that is said. */
@@ -71,7 +82,7 @@ export function writtenOption({ request }: Work, field: "from" | "to", expected:
       found: "nothing",
       remedy: `give ${argumentNames[field]}`,
     });
-  return { given, written: readingGiven(given, () => parseWaveVector(given.text)) };
+  return { given, written: readingGiven(given, () => readK(given.text)) };
 }
 
 /** What the written wave vector stands for in this group; where it moved is remembered. */

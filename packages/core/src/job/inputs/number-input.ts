@@ -7,6 +7,7 @@ export interface NumberRange {
   readonly above?: number;
   readonly from?: number;
   readonly to?: number;
+  readonly below?: number;
   readonly whole?: boolean;
 }
 
@@ -28,16 +29,18 @@ export function numberOption(request: Request, field: RequestField, range: Numbe
   return value;
 }
 
-function inRange(value: number, { above, from, to, whole }: NumberRange): boolean {
+function inRange(value: number, { above, from, to, below, whole }: NumberRange): boolean {
   if (above !== undefined && !(value > above)) return false;
   if (from !== undefined && !(value >= from)) return false;
   if (to !== undefined && !(value <= to)) return false;
+  if (below !== undefined && !(value < below)) return false;
   return !whole || Number.isInteger(value);
 }
 
-function rangeText({ above, from, to, whole }: NumberRange): string {
+function rangeText({ above, from, to, below, whole }: NumberRange): string {
   const kind = whole ? "a whole number" : "a number";
   if (from !== undefined && to !== undefined) return `${kind} from ${from} to ${to}`;
+  if (from !== undefined && below !== undefined) return `${kind} from ${from} to less than ${below}`;
   if (from !== undefined) return `${kind} not below ${from}`;
   return above === undefined ? kind : `${kind} above ${above}`;
 }

@@ -1,5 +1,5 @@
-import { fail, placed } from "../../errors/index.js";
-import { parsePeakList } from "../../files/index.js";
+import { fail, KvaneError, nowhere, placed } from "../../errors/index.js";
+import { parsePeakList, readPeakKind } from "../../files/index.js";
 import type { PeakKind } from "../../search/index.js";
 import type { ReadPeaks } from "../study/search-of.js";
 import { remember, type Work } from "../work.js";
@@ -29,12 +29,12 @@ export async function peaksOf(work: Work): Promise<ReadPeaks> {
 export async function peaksIfGiven(work: Work): Promise<ReadPeaks | null> {
   const named = namedList(work);
   if (named === null) return null;
-  const { request, study } = work;
+  const { request } = work;
   const kind = kindOption(work) ?? named.fromStudy?.kind ?? null;
   const wavelength = wavelengthOf(work);
   const tolerance = numberOption(request, "tolerance", { above: 0 }) ?? named.fromStudy?.tolerance ?? null;
   const text = await readNamed(work.host, named.path, named.where);
-  const list = placed(study === null || named.fromStudy === null ? {} : { file: study.file }, () =>
+  const list = withStudyPlace(work, named.fromStudy !== null, () =>
     parsePeakList(text, {
       file: named.path,
       ...(kind === null ? {} : { kind }),
@@ -58,6 +58,23 @@ export async function peaksIfGiven(work: Work): Promise<ReadPeaks | null> {
   return { list, file: named.path };
 }
 
+/** Runs `action`; that the wavelength is missing is the fault of the study where the study names the list. */
+function withStudyPlace<T>({ study }: Work, fromStudy: boolean, action: () => T): T {
+  if (study === null || !fromStudy) return action();
+  try {
+    return placed({ file: study.file }, action);
+  } catch (error) {
+    if (!(error instanceof KvaneError)) throw error;
+    const { where } = studyText(study, "peaks", "");
+    const remedy = "add `wavelength: …` in Å to the peaks of the study, or give --wavelength";
+    throw new KvaneError(
+      error.problems.map((one) =>
+        one.code === "missing-wavelength" ? { ...one, where: { ...nowhere, ...where }, remedy } : one,
+      ),
+    );
+  }
+}
+
 function namedList({ request, study }: Work) {
   const option = optionOf(request, "peaks");
   if (option !== null) return { path: option.text, where: option.where, fromStudy: null };
@@ -66,16 +83,14 @@ function namedList({ request, study }: Work) {
   return { path: besideStudy(study.file, study.peaks.file), where, fromStudy: study.peaks };
 }
 
-const kinds: readonly PeakKind[] = ["d", "q", "two-theta", "hkl"];
-
 function kindOption({ request }: Work): PeakKind | null {
   const given = optionOf(request, "as");
   if (given === null) return null;
-  const kind = kinds.find((one) => one === given.text.toLowerCase());
-  if (kind !== undefined) return kind;
+  const kind = readPeakKind(given.text);
+  if (kind !== null) return kind;
   return fail("invalid-argument", `\`${given.text}\` is no kind of positions`, {
     where: given.where,
-    expected: kinds.join(", "),
+    expected: "d, q, two-theta or hkl",
     found: given.text,
     remedy: "say what the numbers are: --as two-theta",
   });

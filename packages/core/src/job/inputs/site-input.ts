@@ -1,5 +1,5 @@
 import { fail, KvaneError, type Problem, problem } from "../../errors/index.js";
-import { formatRational } from "../../numbers/index.js";
+import { formatRational, type Rational, toNumber } from "../../numbers/index.js";
 import {
   type Cell,
   parseSite,
@@ -9,7 +9,7 @@ import {
   siteOrbit,
 } from "../../spacegroups/index.js";
 import { remember, type Work } from "../work.js";
-import { type Given, readingGiven, studyText } from "./given.js";
+import { type Given, orOption, readingGiven, studyText } from "./given.js";
 
 /** A site as it was written, with where, and its ion if the study names one. */
 export interface GivenSite {
@@ -22,8 +22,15 @@ export interface GivenSite {
 export function writtenSites(work: Work): GivenSite[] {
   const sites = sitesIfGiven(work);
   if (sites.length > 0) return sites;
+  if (work.study !== null)
+    fail("missing-key", "the study has no sites", {
+      where: { file: work.study.file, path: "sites" },
+      expected: "a list such as `sites: [{label: Fe1, ion: Fe3+, at: [0, 0, 0]}]`",
+      found: "none",
+      remedy: `add the sites to the study${orOption(work.request, "--site")}`,
+    });
   return fail("missing-argument", "no site was given", {
-    where: work.study === null ? { argument: "--site" } : { file: work.study.file, path: "sites", argument: "--site" },
+    where: { argument: "--site" },
     expected: '--site "LABEL x y z", such as --site "Fe 0 0 1/2"',
     found: "nothing",
     remedy: "give --site, once for each site",
@@ -73,11 +80,17 @@ function rememberMove(work: Work, { label, position, snapped }: SiteOrbit, cell:
       {
         what: `position of ${label}`,
         value: `(${position.map(formatRational).join(", ")})`,
-        because: `the given (${snapped.from.map(formatRational).join(", ")}) lies${far} beside this special position`,
+        because: `the given (${snapped.from.map(asWritten).join(", ")}) lies${far} beside this special position`,
       },
     ],
     [],
   );
+}
+
+/** A coordinate as it was probably typed: a decimal where it is one exactly. */
+function asWritten(value: Rational): string {
+  const decimal = String(toNumber(value));
+  return value[1] > 24 && decimal.length <= 12 && /^-?[\d.]+$/.test(decimal) ? decimal : formatRational(value);
 }
 
 /** Two labels alike, or two sites whose orbits share an atom. */

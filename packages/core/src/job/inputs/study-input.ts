@@ -1,10 +1,10 @@
-import { fail } from "../../errors/index.js";
+import { fail, KvaneError } from "../../errors/index.js";
 import { parseStudy, type Study } from "../../files/index.js";
 import type { JobHost } from "../request.js";
 import { readNamed } from "./read-file.js";
 
 /** The study at `path`, read and checked for its form; `-` is standard input. */
-export async function studyFrom(path: string, host: JobHost): Promise<Study> {
+export async function studyFrom(path: string, host: JobHost, command: string): Promise<Study> {
   if (/\.cif$/i.test(path))
     fail("not-built", "CIF files are not read by this version", {
       where: { file: path, argument: "STUDY" },
@@ -12,8 +12,23 @@ export async function studyFrom(path: string, host: JobHost): Promise<Study> {
       found: path,
       remedy: "write cell, group and sites into a study; `kvane help study` shows how",
     });
-  const text = await readNamed(host, path, { file: path, argument: "STUDY" });
+  const text = await studyTextFrom(path, host, command);
   return parseStudy(text, path);
+}
+
+/** A word that is no name of a file was meant as something else. */
+async function studyTextFrom(path: string, host: JobHost, command: string): Promise<string> {
+  try {
+    return await readNamed(host, path, { file: path, argument: "STUDY" });
+  } catch (error) {
+    if (!(error instanceof KvaneError) || error.code !== "file-not-found" || /[./\\]/.test(path)) throw error;
+    return fail("file-not-found", `\`kvane ${command}\` needs a study file, and there is no file \`${path}\``, {
+      where: { argument: "STUDY" },
+      expected: "a study file such as study.yaml, or --example",
+      found: path,
+      remedy: "write the group into a study file; `kvane help study` shows one",
+    });
+  }
 }
 
 /** Throws `missing-argument` where a command can do nothing without a study. */

@@ -13,7 +13,7 @@ export function coincidencesOf({ group, cell, peaks }: StudyInputs): RunRecord["
   const last = Math.max(...powder.map(({ q }) => q));
   const nuclear = nuclearLines(group, cell, { qMax: 2 * (last + overlapInverseAngstrom) });
   return powder.flatMap(({ index, q }) => {
-    const overlaps = overlapsOf(q, nuclear, overlapInverseAngstrom).filter(({ allowed }) => allowed);
+    const overlaps = overlapsOf(q, nuclear, overlapInverseAngstrom).list.filter(({ allowed }) => allowed);
     return overlaps.length > 0 ? [{ peak: index, overlaps: overlaps.map(overlapRecord) }] : [];
   });
 }

@@ -1,7 +1,7 @@
 import { numericWaveVector, type WaveVector } from "../../kvectors/index.js";
 import type { SearchRecord } from "../../reports/index.js";
 import type { Candidate } from "../../search/index.js";
-import type { Work } from "../work.js";
+import { remember, type Work } from "../work.js";
 import type { StudyInputs } from "./read-study.js";
 import { type Found, indexedBy, searchedFor } from "./search-of.js";
 
@@ -46,6 +46,7 @@ export async function findK(work: Work, inputs: StudyInputs, bound: number): Pro
 function withGivenK(work: Work, inputs: StudyInputs): FoundKs {
   const numeric = inputs.peaks !== null && inputs.given.every((k) => numericWaveVector(k) !== null);
   const found: Found | null = numeric ? indexedBy(work, searchInput(inputs), inputs.given) : null;
+  for (const one of found?.candidates ?? []) rememberRefined(work, one);
   return {
     search: found?.record ?? null,
     candidates: found?.candidates ?? [],
@@ -56,6 +57,17 @@ function withGivenK(work: Work, inputs: StudyInputs): FoundKs {
     notFollowed: [],
     searched: false,
   };
+}
+
+/** A given k that the peaks moved. */
+function rememberRefined(work: Work, { k, refinement, matched }: Candidate): void {
+  if (refinement === null || !refinement.determined) return;
+  const text = (one: WaveVector) =>
+    `(${(numericWaveVector(one) ?? []).map((entry) => Number(entry.toFixed(5))).join(", ")})`;
+  const [from, to] = [text(refinement.from), text(k)];
+  if (from === to) return;
+  const because = `it was refined against the ${matched} peaks that it matches`;
+  remember(work, [{ what: `wave vector ${from}`, value: to, because }], []);
 }
 
 function searchInput({ group, cell, peaks, options }: StudyInputs) {

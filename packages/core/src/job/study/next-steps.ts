@@ -1,27 +1,51 @@
+import type { ProblemCode } from "../../errors/index.js";
 import { formatWaveVector } from "../../kvectors/index.js";
 import { fixedNumber } from "../../numbers/index.js";
 import { qToTwoThetaDeg } from "../../reflections/index.js";
-import type { BranchRecord } from "../../reports/index.js";
+import { type BranchRecord, physicalSets, type RunRecord } from "../../reports/index.js";
 import type { FoundKs } from "./find-k.js";
 import type { StudyInputs } from "./read-study.js";
 import { separatingLine } from "./separating-line.js";
 
 /** What to measure or to look at next, most useful first; drawn from the results alone. */
-export function nextSteps(inputs: StudyInputs, found: FoundKs, branches: readonly BranchRecord[]): string[] {
+export function nextSteps(
+  inputs: StudyInputs,
+  found: FoundKs,
+  branches: readonly BranchRecord[],
+  coincidences: RunRecord["coincidences"],
+  warned: readonly ProblemCode[],
+): string[] {
   return [
+    ...givenSteps(found),
     ...noCandidate(found),
     ...tieSteps(inputs, found),
     ...evidenceSteps(found),
     ...onNuclearSteps(found),
+    ...coincidenceSteps(inputs, found, branches, coincidences, warned),
     ...roughStep(found),
     ...irrepStep(branches),
   ];
 }
 
+/** A given k that the peaks do not speak for: it was followed because it was asked for. */
+function givenSteps({ searched, candidates, followed }: FoundKs): string[] {
+  if (searched) return [];
+  const several = followed.length > 1;
+  return followed.flatMap(({ candidate }) => {
+    const one = candidate === null ? undefined : candidates[candidate];
+    if (one === undefined || (one.evidence.reading !== "not informative" && 2 * one.matched >= one.total)) return [];
+    const name = several ? `The given k ${(candidate ?? 0) + 1}` : "This k";
+    const figures = `${one.matched} of ${one.total} matched, evidence ${fixedNumber(one.evidence.value, 1)}`;
+    return [
+      `${name} does not explain your peaks (${figures}): leave k out, so that it is searched for, or check the cell and the list.`,
+    ];
+  });
+}
+
 function noCandidate({ searched, candidates }: FoundKs): string[] {
   if (!searched || candidates.length > 0) return [];
   return [
-    "No special point explains enough of the peaks. Look for peaks that are not magnetic (--unmatched), or try a k on a line or plane: kvane index STUDY.yaml --k 0,0.47,0.",
+    "No k of those searched explains enough of the peaks. Look for peaks that are not magnetic (--unmatched), and check the cell, the wavelength and what the positions are (--as).",
   ];
 }
 
@@ -60,6 +84,38 @@ function onNuclearSteps({ candidates, followed }: FoundKs): string[] {
     : [];
 }
 
+/** Peaks that may hold something else: what to measure so that they can be told. */
+function coincidenceSteps(
+  { peaks }: StudyInputs,
+  { candidates, followed }: FoundKs,
+  branches: readonly BranchRecord[],
+  coincidences: RunRecord["coincidences"],
+  warned: readonly ProblemCode[],
+): string[] {
+  const total = peaks?.list.peaks.length ?? 0;
+  const on = (kind: string) => coincidences.filter(({ overlaps }) => overlaps.some((one) => one.with === kind)).length;
+  const [nuclear, half] = [on("nuclear"), on("half wavelength")];
+  // A k with 2k ∈ L*: H + k is half of the vector 2H + 2k of L*.
+  const allHalf = branches.length > 0 && branches.every(({ star }) => star.minusK === "equivalent");
+  const said = followed.some(({ candidate }) => candidate !== null && candidates[candidate]?.onNuclearLines);
+  return [
+    ...(total > 0 && 2 * nuclear >= total && !said
+      ? [
+          `${nuclear} of ${total} peaks lie on nuclear lines: subtract the pattern measured above the ordering temperature, or leave them out.`,
+        ]
+      : []),
+    ...(half === 0 || warned.includes("half-wavelength")
+      ? []
+      : allHalf
+        ? [
+            "2k is a reciprocal lattice vector, so every satellite lies where half the wavelength would put a nuclear line: make sure that the peaks vanish above the ordering temperature.",
+          ]
+        : [
+            `${half} of ${total} peaks lie where half the wavelength would put a nuclear line: check with a filter, or above the ordering temperature.`,
+          ]),
+  ];
+}
+
 /** χ² per degree of freedom above this calls for larger uncertainties or a line off its place. */
 const roughFit = 4;
 
@@ -72,12 +128,17 @@ function roughStep({ candidates }: FoundKs): string[] {
 }
 
 function irrepStep(branches: readonly BranchRecord[]): string[] {
-  const allowed = branches[0]?.modes.sites.flatMap(({ irreps }) =>
-    irreps.filter(({ multiplicity }) => multiplicity > 0).map(({ label }) => label),
+  const [first] = branches;
+  if (first === undefined) return [];
+  const allowed = new Set(
+    first.modes.sites.flatMap(({ irreps }) =>
+      irreps.filter(({ multiplicity }) => multiplicity > 0).map(({ label }) => label),
+    ),
   );
-  const count = new Set(allowed).size;
-  if (count < 2) return [];
+  const sets = physicalSets(first.irreps).filter((set) => set.some((label) => allowed.has(label)));
+  if (sets.length < 2) return [];
+  const pairs = sets.some(({ length }) => length > 1) ? ", a conjugate pair counted once," : "";
   return [
-    `${count} irreps can carry moments${branches.length > 1 ? " with the first k" : ""}: refine each one alone against the intensities before mixing them.`,
+    `${sets.length} irreps${pairs} can carry moments${branches.length > 1 ? " with the first k" : ""}: refine each one alone against the intensities before mixing them.`,
   ];
 }

@@ -37,28 +37,32 @@ export async function readStudy(work: Work): Promise<StudyInputs> {
   const study = needStudy(work.study);
   remember(work, [], study.warnings);
   const hasPeaks = study.peaks !== null || typeof work.request.peaks === "string";
+  const hasK = (study.k ?? []).length > 0 || typeof work.request.k === "string";
   const { group, written, givenCell, sites, peaks, wavelengthAngstrom, options } = await together({
     group: () => groupOf(work),
     written: () => writtenKs(work),
-    givenCell: () => (hasPeaks ? writtenCell(work) : cellIfGiven(work)),
+    givenCell: () => (hasPeaks || !hasK ? writtenCell(work) : cellIfGiven(work)),
     sites: () => writtenSites(work),
     wavelengthAngstrom: () => wavelengthOf(work),
     peaks: () => peaksIfGiven(work),
     options: () => searchOptionsOf(work),
+    source: () => hasPeaks || hasK || refuseWithoutSource(study.file),
   });
-  if (peaks === null && written.length === 0)
-    fail("missing-key", "the study has neither peaks nor a wave vector", {
-      where: { file: study.file, path: "peaks" },
-      expected: "`peaks: {file: …, as: …}`, or `k: [[0, 1/2, 0]]`",
-      found: "neither",
-      remedy: "add the peak list, or give --peaks or --k",
-    });
   const { given, cell, orbits } = await together({
     given: () => written.map((one) => placedK(work, group, one)),
     cell: () => givenCell && cellFor(group, givenCell),
     orbits: () => orbitsOf(work, group, sites, givenCell?.cell ?? null),
   });
   return { title: study.title, group, cell, orbits, given, peaks, wavelengthAngstrom, options };
+}
+
+function refuseWithoutSource(file: string): never {
+  fail("missing-key", "the study has neither peaks nor a wave vector", {
+    where: { file, path: "peaks" },
+    expected: "`peaks: {file: …, as: …}`, or `k: [[0, 1/2, 0]]`",
+    found: "neither",
+    remedy: "add the peak list, or give --peaks or --k",
+  });
 }
 
 /** Å⁻¹. Where nothing says how far the data go. */

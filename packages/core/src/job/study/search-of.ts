@@ -10,6 +10,7 @@ import {
   setAsidePeaks,
 } from "../../search/index.js";
 import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
+import { checkSearchFits } from "../inputs/search-input.js";
 import { remember, type Work } from "../work.js";
 
 /** A peak list and the name of the file that it came from. */
@@ -34,6 +35,7 @@ export interface Found {
 /** The peaks as satellites of each of the given k, in the order given; nothing is searched. */
 export function indexedBy(work: Work, input: SearchInput, ks: readonly WaveVector[]): Found {
   const { group, cell, peaks, options } = input;
+  checkSearchFits(work, { ...options, unmatched: 0 }, peaks.list);
   const candidates = ks.map((k) => indexPeaks(group, cell, k, peaks.list, options));
   for (const { warnings } of candidates) remember(work, [], warnings);
   const record = searchRecord(group, cell, peaksRecord(peaks.list, peaks.file), {
@@ -46,17 +48,18 @@ export function indexedBy(work: Work, input: SearchInput, ks: readonly WaveVecto
   return { candidates, record };
 }
 
-function nothingFound({ unmatched }: SearchOptions): Problem {
+function nothingFound({ unmatched, maxDimension }: SearchOptions): Problem {
   return problem("no-candidate", "no wave vector of those searched explains enough of the peaks", {
     expected: `a k that leaves at most ${unmatched} of the peaks unmatched`,
     found: "none",
-    remedy: "raise --unmatched or --tolerance, or look for peaks that are not magnetic",
+    remedy: `${maxDimension < 3 ? "raise --max-dimension, " : ""}raise --unmatched or --tolerance, look for peaks that are not magnetic, or check the cell`,
   });
 }
 
 /** The search over the kinds of k. */
 export async function searchedFor(work: Work, input: SearchInput): Promise<Found> {
   const { group, cell, peaks, options } = input;
+  checkSearchFits(work, options, peaks.list);
   const found = await locate(group, cell, peaks.list, options, work.host);
   remember(work, [], found.warnings);
   for (const { warnings } of found.candidates.slice(0, 1)) remember(work, [], warnings);

@@ -3,6 +3,7 @@ import { parameterValues, waveVectorToJson } from "../../kvectors/index.js";
 import type {
   ConstraintTexts,
   MinusKOnModes,
+  ProjectedComponents,
   WritingOptions,
   WrittenArm,
   WrittenIrrep,
@@ -18,6 +19,7 @@ import type {
   MinusKModesRecord,
   ModeRecord,
   ModesRecord,
+  ReadComponentsRecord,
   SiteModesRecord,
 } from "../records/modes.js";
 import { matrixRecords } from "./complex.js";
@@ -27,7 +29,7 @@ import { irrepNumbers } from "./symmetry.js";
 export function modesRecord(
   group: SpaceGroup,
   found: SmallIrreps,
-  sites: readonly WrittenSite[],
+  sites: readonly (WrittenSite & { readonly read?: ReadFile | null })[],
   options: WritingOptions & { readonly axial: boolean },
 ): ModesRecord {
   const { exponent, phase, factor, components } = options.convention;
@@ -40,11 +42,45 @@ export function modesRecord(
     convention: { exponent, phase, factor, components },
     cell: options.cell && cellRecord(options.cell),
     littleGroup: littleGroupRecord(group, found.littleGroup),
-    sites: sites.map((site) => siteRecord(group, found, site)),
+    sites: sites.map((site) => ({
+      ...siteRecord(group, found, site),
+      read: site.read ? readRecord(site, site.read) : null,
+    })),
   };
 }
 
-function siteRecord(group: SpaceGroup, found: SmallIrreps, { site, irreps, arms }: WrittenSite): SiteModesRecord {
+/** Fourier components of a site that were read from a file. */
+export interface ReadFile {
+  readonly file: string;
+  readonly projected: ProjectedComponents;
+}
+
+function readRecord({ site }: WrittenSite, { file, projected }: ReadFile): ReadComponentsRecord {
+  const complex = ([real, imaginary]: readonly [number, number], scale: number): ComplexRecord => [
+    roundNumber(real, scale, modeSignificantDigits),
+    roundNumber(imaginary, scale, modeSignificantDigits),
+  ];
+  const scale = Math.max(...projected.components.flat().map((entry) => Math.hypot(...entry)));
+  return {
+    file,
+    components: projected.components.map((vector) => vector.map((entry) => complex(entry, scale))),
+    irreps: projected.shares.map(({ label, share, amplitudes }, number) => ({
+      label,
+      share: roundNumber(share, 1, modeSignificantDigits),
+      amplitudes: (site.irreps[number]?.modes ?? []).map(({ copy, partner }, index) => ({
+        copy,
+        partner,
+        value: complex(amplitudes[index] ?? [0, 0], scale),
+      })),
+    })),
+  };
+}
+
+function siteRecord(
+  group: SpaceGroup,
+  found: SmallIrreps,
+  { site, irreps, arms }: WrittenSite,
+): Omit<SiteModesRecord, "read"> {
   const { orbit, suborbits } = site;
   return {
     label: orbit.label,

@@ -1,4 +1,4 @@
-import { type WaveVector, waveVectorToJson } from "../../kvectors/index.js";
+import { reducedRepresentative, type WaveVector, waveVectorToJson } from "../../kvectors/index.js";
 import { formatRational, roundNumber } from "../../numbers/index.js";
 import type { Overlap, SatelliteReflection } from "../../reflections/index.js";
 import type {
@@ -109,7 +109,7 @@ export function searchRecord(
     group: groupRecord(group),
     cell: cellRecord(cell),
     peaks,
-    candidates: found.candidates.map(candidateRecord),
+    candidates: found.candidates.map((candidate) => candidateRecord(group, candidate)),
     certificate: found.certificate && certificateRecord(found.certificate),
     setAside: found.setAside.map(({ peak, because }) => ({ peak, because })),
     unmatched: [...found.unmatched],
@@ -137,11 +137,12 @@ export function searchRecord(
   };
 }
 
-function candidateRecord(candidate: Candidate): CandidateRecord {
+function candidateRecord(group: SpaceGroup, candidate: Candidate): CandidateRecord {
   const { evidence, residuals, refinement } = candidate;
   const { dimensions, kinds, tuning } = evidence.charges;
   return {
     k: waveVectorToJson(candidate.k),
+    reduced: waveVectorToJson(reducedRepresentative(group, candidate.k)),
     manifold: waveVectorToJson(candidate.manifold.form),
     dimension: candidate.manifold.dimension,
     arms: candidate.arms,

@@ -3,6 +3,7 @@ import {
   type LittleGroup,
   type Manifold,
   parameterValues,
+  reducedRepresentative,
   type Star,
   type WaveVector,
   waveVectorToJson,
@@ -41,6 +42,7 @@ export function starRecord(
   return {
     group: groupRecord(group),
     k: waveVectorToJson(k),
+    reduced: waveVectorToJson(reducedRepresentative(group, k)),
     manifold: waveVectorToJson(found.manifold.form),
     dimension: found.manifold.dimension,
     manifoldPM: waveVectorToJson(found.manifoldPM.form),
@@ -61,6 +63,7 @@ export function irrepsRecord(
   return {
     group: groupRecord(group),
     k: waveVectorToJson(found.k),
+    reduced: waveVectorToJson(reducedRepresentative(group, found.k)),
     minusK: found.minusK,
     arms: found.arms,
     littleGroup: littleGroupRecord(group, found.littleGroup),

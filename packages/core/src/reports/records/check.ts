@@ -8,7 +8,10 @@ export interface CheckedSiteRecord {
   readonly multiplicity: number;
   readonly siteSymmetry: string;
   readonly freeCoordinates: readonly string[];
-  /** Moment directions that site symmetry allows at k = 0, a form in mx, my, mz. */
+  /**
+   * Moments that every operator of the site leaves as they are, a form in mx, my, mz: what the totally symmetric irrep
+   * at k = 0 allows. Other irreps allow other moments.
+   */
   readonly allowedMoment: readonly string[];
   readonly snapped: { readonly from: readonly string[]; readonly distanceAngstrom: number | null } | null;
 }

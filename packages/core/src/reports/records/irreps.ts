@@ -49,6 +49,8 @@ export interface FullIrrepsRecord {
 export interface IrrepsRecord {
   readonly group: GroupRecord;
   readonly k: KRecord;
+  /** The plainest of all k + H, H a reciprocal lattice vector. */
+  readonly reduced: KRecord;
   readonly minusK: "equivalent" | "in star" | "not in star";
   readonly arms: number;
   readonly littleGroup: LittleGroupRecord;

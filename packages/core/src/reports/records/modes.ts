@@ -86,6 +86,20 @@ export interface IrrepModesRecord {
   readonly collinear: boolean | null;
 }
 
+/** Fourier components that were read from a file, and how they split over the irreps. */
+export interface ReadComponentsRecord {
+  readonly file: string;
+  /** In kvane's own convention and lattice components, one triple per orbit atom. */
+  readonly components: readonly (readonly ComplexRecord[])[];
+  readonly irreps: readonly {
+    readonly label: string;
+    /** Share of Σ |S|²; the shares add up to 1. */
+    readonly share: number;
+    /** Of the basis vectors in kvane's own convention and lattice components. */
+    readonly amplitudes: readonly { readonly copy: number; readonly partner: number; readonly value: ComplexRecord }[];
+  }[];
+}
+
 /** One site: `orbit` holds one atom per atom of the primitive cell, the positions that the phases refer to. */
 export interface SiteModesRecord {
   readonly label: string;
@@ -97,6 +111,8 @@ export interface SiteModesRecord {
   readonly irreps: readonly IrrepModesRecord[];
   /** Basis vectors on every arm, arm 0 being k; null unless asked for. */
   readonly starModes: readonly ArmModesRecord[] | null;
+  /** Null unless a file was read. */
+  readonly read: ReadComponentsRecord | null;
 }
 
 /** Result of `kvane modes`. */

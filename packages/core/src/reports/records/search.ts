@@ -108,6 +108,8 @@ export interface SeparationRecord {
 
 export interface CandidateRecord {
   readonly k: KRecord;
+  /** The plainest of all k + H, H a reciprocal lattice vector. */
+  readonly reduced: KRecord;
   readonly manifold: KRecord;
   readonly dimension: number;
   readonly arms: number;

@@ -1,6 +1,12 @@
 /** Result of `kvane explain`: one code, or all of them when none was named. */
 export interface ExplainRecord {
-  readonly codes: readonly { readonly code: string; readonly meaning: string; readonly exitStatus: number }[];
+  readonly codes: readonly {
+    readonly code: string;
+    readonly meaning: string;
+    readonly exitStatus: number;
+    /** What mostly helps; null where only the problem itself can say it. */
+    readonly remedy: string | null;
+  }[];
 }
 
 /** Result of `kvane help TOPIC`. */

@@ -4,6 +4,8 @@ import type { GroupRecord, KRecord, LittleGroupRecord } from "./common.js";
 export interface StarRecord {
   readonly group: GroupRecord;
   readonly k: KRecord;
+  /** The plainest of all k + H, H a reciprocal lattice vector. */
+  readonly reduced: KRecord;
   readonly manifold: KRecord;
   readonly dimension: number;
   readonly manifoldPM: KRecord;

@@ -71,6 +71,7 @@ const line = { h, sign, arm: count, residual: number };
 
 const candidate = record({
   k: shared("k"),
+  reduced: shared("k"),
   manifold: shared("k"),
   dimension: { type: "integer", minimum: 0, maximum: 3 },
   arms: count,

@@ -62,7 +62,7 @@ export const runSchema: JsonSchema = record({
 });
 
 export const explainSchema: JsonSchema = record({
-  codes: list(record({ code: text, meaning: text, exitStatus: count })),
+  codes: list(record({ code: text, meaning: text, exitStatus: count, remedy: nullable(text) })),
 });
 
 export const helpSchema: JsonSchema = record({ topic: text, title: text, text, topics: list(text) });

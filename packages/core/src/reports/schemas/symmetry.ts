@@ -5,6 +5,7 @@ import {
   type JsonSchema,
   list,
   nullable,
+  number,
   oneOf,
   record,
   shared,
@@ -25,6 +26,7 @@ const dimension: JsonSchema = { type: "integer", minimum: 0, maximum: 3 };
 export const starSchema: JsonSchema = record({
   group: shared("group"),
   k: shared("k"),
+  reduced: shared("k"),
   manifold: shared("k"),
   dimension,
   manifoldPM: shared("k"),
@@ -71,6 +73,7 @@ const fullIrreps = record(
 export const irrepsSchema: JsonSchema = record({
   group: shared("group"),
   k: shared("k"),
+  reduced: shared("k"),
   minusK: shared("minusK"),
   arms: count,
   littleGroup: shared("littleGroup"),
@@ -117,6 +120,21 @@ const armModes = record({
   irreps: list(record({ label: text, modes: list(mode) })),
 });
 
+const readComponents = record(
+  {
+    file: text,
+    components: list(tuple(3, shared("complex"))),
+    irreps: list(
+      record({
+        label: text,
+        share: number,
+        amplitudes: list(record({ copy: count, partner: count, value: shared("complex") })),
+      }),
+    ),
+  },
+  "Fourier components from a file, in kvane's own convention, and their parts by irrep",
+);
+
 export const modesSchema: JsonSchema = record({
   group: shared("group"),
   k: shared("k"),
@@ -162,6 +180,7 @@ export const modesSchema: JsonSchema = record({
         }),
       ),
       starModes: nullable(list(armModes, "one per arm of the star")),
+      read: nullable(readComponents),
     }),
   ),
 });

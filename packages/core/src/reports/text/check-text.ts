@@ -18,7 +18,10 @@ export function checkText(record: CheckRecord): string[] {
       "Result",
       record.missing.length === 0
         ? paragraph("Nothing is missing: kvane run can do the whole job.")
-        : record.missing.flatMap((text) => paragraph(`Missing for the whole job: ${text}.`)),
+        : [
+            ...paragraph("Incomplete: what is there is right, but kvane run needs more."),
+            ...record.missing.flatMap((text) => paragraph(`Missing: ${text}.`)),
+          ],
     ),
   ];
 }
@@ -33,7 +36,6 @@ function siteTable(sites: readonly CheckedSiteRecord[]): string[] {
       { title: "in the cell", align: "right" },
       { title: "symmetry" },
       { title: "free" },
-      { title: "moment allowed at k = 0" },
     ],
     sites.map((site) => [
       site.label,
@@ -42,7 +44,6 @@ function siteTable(sites: readonly CheckedSiteRecord[]): string[] {
       counted(site.multiplicity, "atom"),
       site.siteSymmetry,
       `(${site.freeCoordinates.join(", ")})`,
-      `(${site.allowedMoment.join(", ")})`,
     ]),
   );
 }

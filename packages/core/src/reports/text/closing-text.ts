@@ -15,6 +15,9 @@ export function conventionLines({ command, result }: Envelope): string[] {
   return section(
     "Conventions",
     paragraph(`${operatorConventions}${convention ? ` ${conventionSentence(convention)}` : ""}`),
+    ["atlas", "star"].includes(command) || (command === "run" && (result as RunRecord).branches.length === 0)
+      ? []
+      : paragraph("The numbers in Γ1, Γ2, … are kvane's own: an irrep is identified by its characters."),
   );
 }
 

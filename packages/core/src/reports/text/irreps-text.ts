@@ -7,7 +7,7 @@ import type {
 } from "../records/irreps.js";
 import { fields, flow, numbered, paragraph, section, table, unbroken, wideTable } from "./layout.js";
 import { counted, groupText, kForm, kText, minusKText } from "./names.js";
-import { littleGroupSection } from "./star-text.js";
+import { littleGroupSection, reducedFields } from "./star-text.js";
 
 export function irrepsText(record: IrrepsRecord): string[] {
   const larger = record.irreps.filter(({ dimension }) => dimension > 1);
@@ -17,6 +17,7 @@ export function irrepsText(record: IrrepsRecord): string[] {
       fields([
         ["Group", groupText(record.group)],
         ["k", kText(record.k)],
+        ...reducedFields(record),
         ["−k", minusKText(record.minusK)],
         [
           "Little co-group",

@@ -36,8 +36,8 @@ export function wrap(text: string, width = pageWidth, hanging = 0): string[] {
   let line = "";
   for (const word of text.split(" ").flatMap((one) => parts(one, width - hanging))) {
     const room = width - (lines.length > 0 ? hanging : 0);
-    if (line !== "" && widthOf(line) + 1 + widthOf(word) > room) {
-      lines.push(line);
+    if (line.trim() !== "" && widthOf(line) + 1 + widthOf(word) > room) {
+      lines.push(line.trimEnd());
       line = word;
     } else line = line === "" ? word : `${line} ${word}`;
   }
@@ -93,7 +93,7 @@ export function table(columns: readonly Column[], rows: readonly (readonly strin
   const widths = columns.map((column, index) =>
     Math.max(widthOf(column.title), ...rows.map((row) => widthOf(row[index] ?? ""))),
   );
-  fitPage(widths, by);
+  if (widthOfAll(widths, by) > pageWidth) fitPage(widths, narrowTitles(columns, rows), by);
   const line = (cells: readonly string[]): string[] => {
     const wrapped = columns.map((_, index) => wrap(cells[index] ?? "", widths[index]));
     const height = Math.max(...wrapped.map(({ length }) => length));
@@ -105,15 +105,32 @@ export function table(columns: readonly Column[], rows: readonly (readonly strin
   return [line(columns.map(({ title }) => title)), ...rows.map(line)].flat();
 }
 
-/** Makes columns narrower until the table fits: the last, then the widest. */
-function fitPage(widths: number[], by: number): void {
+function widthOfAll(widths: readonly number[], by: number): number {
+  return by - 2 + widths.reduce((sum, width) => sum + width + 2, 0);
+}
+
+/** The widths of columns whose titles may be broken at blanks. */
+function narrowTitles(columns: readonly Column[], rows: readonly (readonly string[])[]): number[] {
+  return columns.map(({ title }, index) =>
+    Math.max(...title.split(" ").map(widthOf), ...rows.map((row) => widthOf(row[index] ?? ""))),
+  );
+}
+
+/** Makes columns narrower until the table fits: their titles, then the last column, then the widest. */
+function fitPage(widths: number[], narrow: readonly number[], by: number): void {
   const last = widths.length - 1;
-  const excess = () => by - 2 + widths.reduce((sum, width) => sum + width + 2, 0) - pageWidth;
-  widths[last] = Math.min(widths[last] ?? 0, Math.max(narrowest, (widths[last] ?? 0) - Math.max(0, excess())));
+  const excess = () => Math.max(0, widthOfAll(widths, by) - pageWidth);
+  const shrink = (index: number, floor: number) => {
+    const width = widths[index] ?? 0;
+    widths[index] = Math.max(Math.min(width, floor), width - excess());
+  };
+  if (widthOfAll(narrow, by) <= pageWidth) for (const index of narrow.keys()) shrink(index, narrow[index] ?? 0);
+  shrink(last, narrowest);
+  for (const index of narrow.keys()) shrink(index, narrow[index] ?? 0);
   while (excess() > 0) {
     const widest = widths.indexOf(Math.max(...widths));
     if ((widths[widest] ?? 0) <= 1) return;
-    widths[widest] = Math.max(1, (widths[widest] ?? 0) - excess(), Math.min(narrowest, (widths[widest] ?? 0) - 1));
+    shrink(widest, Math.min(narrowest, (widths[widest] ?? 0) - 1));
   }
 }
 

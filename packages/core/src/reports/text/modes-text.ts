@@ -40,6 +40,7 @@ function siteText(site: SiteModesRecord, frame: ModesFrame): string[] {
     ),
     ...site.irreps.filter(({ multiplicity }) => multiplicity > 0).flatMap((irrep) => irrepText(site, irrep, frame)),
     ...armSections(site, frame),
+    ...readSection(site),
   ];
 }
 
@@ -210,6 +211,50 @@ function armSections(site: SiteModesRecord, { convention }: ModesFrame): string[
         ),
       ),
   );
+}
+
+/** Components from a file, and which irreps they are made of. */
+function readSection({ label, orbit, irreps, read }: SiteModesRecord): string[] {
+  if (read === null) return [];
+  const present = read.irreps.filter((_, index) => (irreps[index]?.multiplicity ?? 0) > 0);
+  const partner = irreps.some(({ dimension, multiplicity }) => dimension > 1 && multiplicity > 0);
+  return [
+    ...section(
+      `Fourier components of ${label} from ${read.file}`,
+      table(
+        [{ title: "atom", align: "right" }, { title: "position" }, { title: `S along a, b, c, with ${waveText(own)}` }],
+        orbit.map((position, atom) => [
+          String(atom + 1),
+          positionText(position),
+          `(${(read.components[atom] ?? []).map(([re, im]) => complexText(re, im)).join(", ")})`,
+        ]),
+      ),
+    ),
+    ...section(
+      "Their parts by irrep",
+      table(
+        [
+          { title: "irrep" },
+          { title: "share of Σ|S|²", align: "right" },
+          { title: `amplitudes of the basis vectors of kvane's own convention${partner ? ", copy.partner" : ""}` },
+        ],
+        present.map((one) => [one.label, one.share.toFixed(shownDecimals), amplitudesText(one.amplitudes, partner)]),
+      ),
+    ),
+  ];
+}
+
+const own: ConventionRecord = { exponent: "minus", phase: "lattice", factor: "one", components: "lattice" };
+
+function amplitudesText(
+  amplitudes: NonNullable<SiteModesRecord["read"]>["irreps"][number]["amplitudes"],
+  partner: boolean,
+): string {
+  return amplitudes
+    .map(
+      ({ copy, partner: index, value: [re, im] }) => `${partner ? `${copy}.${index}` : copy}: ${complexText(re, im)}`,
+    )
+    .join("  ");
 }
 
 /** What the letters of the tables above mean, once. */

@@ -1,3 +1,4 @@
+import { physicalSets } from "../physical-sets.js";
 import type { BranchRecord, RunRecord } from "../records/run.js";
 import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
@@ -72,17 +73,19 @@ function peakSection({ peaks, search, coincidences }: RunRecord): string[] {
         ? []
         : [["Set aside", aside.map(({ peak, because }) => `${peak + 1} (${because})`).join(", ")] as [string, string]]),
       ["Taken as satellites", satelliteCount(peaks, aside.length)],
-      ...coincidenceFields(coincidences),
+      ...coincidenceFields(coincidences, peaks.list.length),
     ]),
   );
 }
 
 /** Peaks that may hold something else too, by what that is; the JSON says which lines. */
-function coincidenceFields(coincidences: RunRecord["coincidences"]): [string, string][] {
+function coincidenceFields(coincidences: RunRecord["coincidences"], count: number): [string, string][] {
   const peaksOn = (kind: OverlapRecord["with"]) =>
     coincidences.filter(({ overlaps }) => overlaps.some((one) => one.with === kind)).map(({ peak }) => peak + 1);
-  const fieldFor = (name: string, numbers: readonly number[]): [string, string][] =>
-    numbers.length > 0 ? [[name, `peak ${numbers.join(", ")} (flagged, not removed)`]] : [];
+  const fieldFor = (name: string, numbers: readonly number[]): [string, string][] => {
+    const named = numbers.length === count ? "every peak" : `peak ${numbers.join(", ")}`;
+    return numbers.length > 0 ? [[name, `${named} (flagged, not removed)`]] : [];
+  };
   return [
     ...fieldFor("On nuclear lines", peaksOn("nuclear")),
     ...fieldFor("On λ/2 images", peaksOn("half wavelength")),
@@ -101,8 +104,7 @@ function searchSection(record: RunRecord): string[] {
     "Wave vector",
     candidateTable(search.candidates.slice(0, shownCandidates)),
     moreLine(search.candidates.length - shownCandidates, "candidate"),
-    [""],
-    certificateLines(search),
+    search.certificate ? ["", ...certificateLines(search)] : [],
     search.certificate && followed.length > 0 ? paragraph(`Followed below: candidate ${followed.join(", ")}.`) : [],
     record.notFollowed.length > 0
       ? paragraph(`Tied but not followed: candidate ${record.notFollowed.map((index) => index + 1).join(", ")}.`)
@@ -123,13 +125,20 @@ function branchText(branch: BranchRecord, number: number | null): string[] {
       [""],
       irrepTable(branch.irreps.irreps),
     ),
-    ...section(`${name}Modes`, modeSummary(branch)),
+    ...section(`${name}Modes`, modeSummary(branch), [""], paragraph(letterText(branch))),
     ...satelliteSummary(branch, name),
   ];
 }
 
+/** What the letters of the table mean; `kx` in its exponents is a component of k. */
+function letterText({ star }: BranchRecord): string {
+  if (star.minusK === "equivalent") return "Letters are free real amplitudes.";
+  return "Letters u, v, w, p, … are free complex amplitudes; kx, ky, kz are the components of k.";
+}
+
 /** For each site the decomposition, and for each irrep the arrangement in symbols. */
-function modeSummary({ modes }: BranchRecord): string[] {
+function modeSummary({ irreps, modes }: BranchRecord): string[] {
+  const sets = physicalSets(irreps);
   return modes.sites.flatMap((site, index) => [
     ...(index > 0 ? [""] : []),
     ...fields([
@@ -140,9 +149,16 @@ function modeSummary({ modes }: BranchRecord): string[] {
     ]),
     ...table(
       [{ title: "irrep" }, { title: "free", align: "right" }, { title: "allowed S on atoms 1, 2, … along a, b, c" }],
-      site.irreps
-        .filter(({ multiplicity }) => multiplicity > 0)
-        .map((irrep) => [irrep.label, parameterText(irrep).split(";")[0] ?? "", irrep.constraint.map(unbroken).join("  ")]),
+      sets
+        .flatMap((set) => {
+          const irrep = site.irreps.find(({ label, multiplicity }) => set.includes(label) && multiplicity > 0);
+          return irrep === undefined ? [] : [{ irrep, name: set.join(" ⊕ ") }];
+        })
+        .map(({ irrep, name }) => [
+          name,
+          parameterText(irrep).split(";")[0] ?? "",
+          irrep.constraint.map(unbroken).join("  "),
+        ]),
       4,
     ),
   ]);

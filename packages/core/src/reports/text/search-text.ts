@@ -1,7 +1,9 @@
+import { withUncertainty } from "../../numbers/index.js";
 import type { AssignmentRecord, CandidateRecord, PeaksRecord, SearchRecord } from "../records/search.js";
 import { fields, paragraph, section, table } from "./layout.js";
 import { cellText, counted, decimals, dimensionText, groupText, kForm, kShort, kText, plain } from "./names.js";
 import { lineText } from "./satellites-text.js";
+import { reducedFields } from "./star-text.js";
 
 /** Candidates that the report of `locate` lists; the JSON has all. */
 const shownCandidates = 12;
@@ -75,7 +77,7 @@ export function candidateTable(candidates: readonly CandidateRecord[]): string[]
     candidates.map((candidate, index) => [
       String(index + 1),
       kShort(candidate.k),
-      dimensionText(candidate.dimension),
+      candidate.dimension === 3 ? "general" : dimensionText(candidate.dimension),
       String(candidate.arms),
       `${candidate.matched} of ${candidate.total}`,
       decimals(misfitOf(candidate), 2),
@@ -134,8 +136,7 @@ export function separationLines(record: SearchRecord): string[] {
   );
   const corrections = best.corrections.map(
     ({ name, value, su }) =>
-      `Refined with it: ${name === "zeroShift" ? "zero shift of 2θ" : "relative change of the cell"} ${plain(Number(value.toPrecision(3)))}` +
-      `${su === null ? " (at its limit)" : ` ± ${plain(Number(su.toPrecision(2)))}`}.`,
+      `Refined with it: ${name === "zeroShift" ? "zero shift of 2θ" : "relative change of the cell"} ${su === null ? `${plain(Number(value.toPrecision(3)))} (at its limit)` : withUncertainty(value, su)}.`,
   );
   return [...lines, ...merged, ...corrections].flatMap((line) => paragraph(line));
 }
@@ -160,7 +161,7 @@ function flagLines(record: SearchRecord): string[] {
 function setAsideLines(record: SearchRecord): string[] {
   return [
     ...record.setAside.flatMap(({ peak, because }) => paragraph(`Peak ${peak + 1} set aside: ${because}.`)),
-    ...(record.unmatched.length > 0
+    ...(record.unmatched.length > 0 && record.candidates.length > 0
       ? paragraph(`No candidate explains peak ${record.unmatched.map((peak) => peak + 1).join(", ")}.`)
       : []),
   ];
@@ -169,6 +170,7 @@ function setAsideLines(record: SearchRecord): string[] {
 function candidateFields(candidate: CandidateRecord): [string, string][] {
   const { evidence } = candidate;
   return [
+    ...reducedFields(candidate),
     ["Kind", `${dimensionText(candidate.dimension)} ${kForm(candidate.manifold)}, ${counted(candidate.arms, "arm")}`],
     ["Matched", `${candidate.matched} of ${candidate.total}`],
     ["Misfit", `${decimals(misfitOf(candidate), 2)} standard uncertainties (root mean square)`],
@@ -196,7 +198,10 @@ function refinementFields({ refinement, k }: CandidateRecord): [string, string][
   if (!refinement.determined) return [["Refined", "no: the matched peaks do not fix every parameter"]];
   const enlarged = refinement.rescaledSu
     ? `; s.u. enlarged to the scatter of the peaks: ${Object.keys(k.values)
-        .map((letter, index) => `${letter} ±${plain(refinement.rescaledSu?.[index] ?? Number.NaN)}`)
+        .map(
+          (letter, index) =>
+            `${letter} = ${withUncertainty(k.values[letter] ?? 0, refinement.rescaledSu?.[index] ?? 0)}`,
+        )
         .join(", ")}`
     : "";
   return [["Refined", `from ${kText(refinement.from)}${refinement.converged ? "" : ", not converged"}${enlarged}`]];

@@ -8,7 +8,8 @@ export function explainText(record: ExplainRecord): string[] {
       only.code,
       fields([
         ["Meaning", only.meaning],
-        ["Exit status", String(only.exitStatus)],
+        ["Exit status", only.exitStatus === 0 ? "0: a warning, the answer stands" : String(only.exitStatus)],
+        ...(only.remedy === null ? [] : [["Remedy", only.remedy] as const]),
       ]),
     );
   return section(

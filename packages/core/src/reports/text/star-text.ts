@@ -1,7 +1,7 @@
 import type { LittleGroupRecord } from "../records/common.js";
 import type { StarRecord } from "../records/star.js";
 import { fields, numbered, section } from "./layout.js";
-import { dimensionText, groupText, kForm, kText, minusKText } from "./names.js";
+import { dimensionText, groupText, kForm, kShort, kText, minusKText } from "./names.js";
 
 export function starText(record: StarRecord): string[] {
   return [
@@ -16,10 +16,16 @@ export function starFields(record: StarRecord): string[] {
   return fields([
     ["Group", groupText(record.group)],
     ["k", kText(record.k)],
+    ...reducedFields(record),
     ...kindFields(record),
     ["−k", minusKText(record.minusK)],
     ["Little co-group", `${record.littleGroup.symbol}, order ${record.littleGroup.order}`],
   ]);
+}
+
+/** The plainest way to write k, where k is written otherwise. */
+export function reducedFields({ k, reduced }: Pick<StarRecord, "k" | "reduced">): [string, string][] {
+  return kForm(k) === kForm(reduced) ? [] : [["Equivalent to", kShort(reduced)]];
 }
 
 /** One line, or two where it matters whether k and −k are taken as one. */
