@@ -192,7 +192,7 @@ describe("wrong input", () => {
     expect(status).toBe(2);
     expect(stdout).toBe("");
     expect(stderr.startsWith(`error[${code}]: `), stderr).toBe(true);
-    const [, at] = stderr.split("\n");
+    const at = stderr.split("\n").find((line) => line.startsWith("  at "));
     expect(at?.startsWith(`  at ${place}`), stderr).toBe(true);
     for (const part of ["expected:", "remedy:"]) expect(stderr).toContain(`  ${part}`);
     // No stack trace: neither its lines nor files of ours.

@@ -77,7 +77,7 @@ function excessProblem(words: readonly string[]): Problem | null {
       where: { argument: option },
       expected: "one word, or words in quotation marks",
       found: texts.join(" "),
-      remedy: `write ${option} "${texts.join(" ")}"`,
+      remedy: `put it into quotation marks: ${option} "${texts.join(" ")}"`,
     });
   const excess = { found: texts.slice(1).join(" ") || (texts[0] ?? "") };
   if (command === "help" || command === "explain")
@@ -99,6 +99,6 @@ function excessProblem(words: readonly string[]): Problem | null {
         where: { argument: "GROUP" },
         expected: "one word, or words in quotation marks",
         found: texts.join(" "),
-        remedy: `write kvane ${command} "${texts.join(" ")}"`,
+        remedy: `put it into quotation marks: kvane ${command} "${texts.join(" ")}"`,
       });
 }

@@ -33,10 +33,10 @@ unit of the positions.`,
     title: "The JSON of --json",
     text: `One object: kvane (version), format (1), command, input, result, errors, warnings, assumed. The
 result is null exactly when there are errors. Exact numbers are strings ("1/2", "u"), measured ones
-numbers, complex ones [re, im]; what does not apply is null. Peaks, candidates, atoms, arms, kinds and
-little-group orbits count from 0 here and in CSV, from 1 in text reports; copies and partners of
-modes count from 1 everywhere. A schema (JSON Schema 2020-12) of every
-answer: answerSchema(command) from @kvane/core/reports.`,
+numbers, complex ones [re, im]; what does not apply is null. Peaks, candidates, atoms, arms, kinds
+and little-group orbits count from 0 here and in CSV, from 1 in text; copies and partners of modes
+count from 1 everywhere. A schema (JSON Schema 2020-12) of every answer: answerSchema(command) from
+@kvane/core/reports.`,
   },
   exit: {
     title: "Exit statuses",
