@@ -70,9 +70,10 @@ for (const { name, parameters } of rows) {
   }
 }
 
-// What happens inside one process: the search against its dense-grid twin.
-if (wanted === "" || "search".includes(wanted)) {
-  const program = [join(root, "test/tools/run-typescript.mjs"), join(root, "test/bench/search.ts")];
+// What happens inside one process: irreps beside those of a computer-algebra system, the search beside its dense grid.
+for (const inside of ["irreps", "search"]) {
+  if (wanted !== "" && !inside.includes(wanted)) continue;
+  const program = [join(root, "test/tools/run-typescript.mjs"), join(root, `test/bench/${inside}.ts`)];
   const { status } = spawnSync(process.execPath, program, { stdio: "inherit", cwd: root });
   if (status !== 0) process.exitCode = 1;
 }

@@ -74,6 +74,15 @@ describe("text reports", () => {
     expect(stdout.endsWith("\n\n")).toBe(false);
   });
 
+  test("exponents of modes are in the components of k: letters beside them are amplitudes", async () => {
+    const { stdout } = await kvane(["modes", "62", "--k", "0,u,0", "--site", "A 0 0 0"]);
+    expect(stdout).toContain("e^{-2πi·ky/2}, 0, 0)");
+    expect(stdout).not.toMatch(/e\^\{[^}]*[uvw]/);
+    // u is no component of (u/2, 0, 1/4) by itself, and stays.
+    const half = await kvane(["modes", "P 1", "--k", "1/2u,0,1/4", "--site", "A 0 0 0", "--json"]);
+    expect(half.status).toBe(0);
+  });
+
   test("modes say which conventions they use, once", async () => {
     const { stdout } = await kvane(["modes", "62", "--k", "0,1/2,0", "--site", "Fe 0 0 0"]);
     expect(stdout.match(/without a factor 1\/2/g)).toHaveLength(1);

@@ -5,7 +5,9 @@ import { describe, expect, test } from "vitest";
 import { parseWaveVector, placeWaveVector, reducedRepresentative } from "#core/kvectors/index.js";
 
 const seed = 20261202;
-const groups = ["P n m a", "F m -3 m", "I 41/a m d:2", "R -3 m:H", "C 2/c", "P 63/m m c"].map((text) => parseGroup(text));
+const groups = ["P n m a", "F m -3 m", "I 41/a m d:2", "R -3 m:H", "C 2/c", "P 63/m m c"].map((text) =>
+  parseGroup(text),
+);
 const component = fc.tuple(fc.integer({ min: -14, max: 14 }), fc.constantFrom(1, 2, 3, 4));
 
 describe("the plainest of all k + H", () => {

@@ -1,3 +1,4 @@
+import type { KRecord } from "../records/common.js";
 import type { ConventionRecord, IrrepModesRecord, ModeRecord, ModesRecord, SiteModesRecord } from "../records/modes.js";
 import { axesText, waveText } from "./convention-text.js";
 import { matrixText } from "./irreps-text.js";
@@ -21,9 +22,46 @@ export function modesText(record: ModesRecord): string[] {
       ]),
     ),
     ...littleGroupSection(record.littleGroup),
-    ...record.sites.flatMap((site) => siteText(site, record)),
+    ...record.sites.map((site) => inComponents(site, record.k)).flatMap((site) => siteText(site, record)),
     ...letterSection(record),
   ];
+}
+
+/**
+ * The exact texts of a site with kx, ky, kz in exponents in place of the letters of k, as the tables of what is allowed
+ * have it: there u, v, w are amplitudes. Letters that are no component by themselves stay; so do those on other arms.
+ */
+function inComponents(site: SiteModesRecord, k: KRecord): SiteModesRecord {
+  const names = componentNames(k);
+  const renamed = (text: string) =>
+    text.replace(/e\^\{[^}]*\}/g, (power) => power.replace(/[uvw]/g, (letter) => names.get(letter) ?? letter));
+  const all = (rows: readonly (readonly string[])[]) => rows.map((row) => row.map(renamed));
+  return {
+    ...site,
+    irreps: site.irreps.map((irrep) => ({
+      ...irrep,
+      modes: irrep.modes.map((mode) => ({ ...mode, exact: all(mode.exact) })),
+      minusK: irrep.minusK && { ...irrep.minusK, exact: all(irrep.minusK.exact) },
+    })),
+  };
+}
+
+/** `u` → `ky` where the second component of k is just u. */
+function componentNames({ components }: KRecord): ReadonlyMap<string, string> {
+  const names = new Map<string, string>();
+  for (const [axis, component] of components.entries())
+    if (/^[uvw]$/.test(component) && !names.has(component)) names.set(component, ["kx", "ky", "kz"][axis] ?? component);
+  return names;
+}
+
+/** What letters in exponents mean. */
+function exponentText({ k, sites }: ModesRecord): string {
+  const letters = new Set(k.components.flatMap((component) => component.match(/[uvw]/g) ?? []));
+  const [names, arms] = [componentNames(k), sites.some(({ starModes }) => starModes !== null)];
+  const left = [...letters].some((letter) => !names.has(letter));
+  if (!left && !arms) return "In exponents kx, ky, kz are the components of k.";
+  const where = left ? "in those of B and of basis vectors" : "on the other arms";
+  return `In exponents kx, ky, kz are the components of k; ${where} u, v, w are its letters.`;
 }
 
 /** Everything about one site: orbit, decomposition and, irrep by irrep, what is allowed and the basis vectors. */
@@ -281,9 +319,7 @@ function letterSection(record: ModesRecord): string[] {
           "Basis vectors are numbered copy.partner: partners of one copy mix under the little group as the matrices of `kvane irreps` say, copies never.",
         )
       : [],
-    Object.keys(record.k.values).length > 0 || record.k.numeric === null
-      ? paragraph("In exponents of B and of basis vectors u, v, w are the letters of k; tables write kx, ky, kz there.")
-      : [],
+    Object.keys(record.k.values).length > 0 || record.k.numeric === null ? paragraph(exponentText(record)) : [],
     record.cell !== null
       ? paragraph("In μB along the unit vectors of a, b, c a table is the same text unless it stands below its own.")
       : [],
