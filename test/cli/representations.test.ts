@@ -229,7 +229,7 @@ describe("kvane modes", () => {
     expect(text).toMatch(/\(0, 0, v\) +\(0, 0, u\*\)·e\^\{-2πi·ky\}/);
     expect(text).toContain("a star marks their complex conjugate");
     expect(text).not.toContain("ξ");
-    expect(text).toMatch(/B on the copies +\(0, e\^\{-2πi·u\} \| e\^\{-2πi·u\}, 0\)/);
+    expect(text).toMatch(/B on the copies +\(0, e\^\{-2πi·ky\} \| e\^\{-2πi·ky\}, 0\)/);
     expect(text).toContain("not computed: they need a cell (--cell)");
     const hexagonal = flat(await textOf("modes", "P 63/m m c", "--k", "1/3,1/3,1", "--site", "Ni 0 0 0"));
     expect(hexagonal).toContain("ξ1, ξ2, … are the complex components of the order parameter");

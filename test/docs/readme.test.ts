@@ -11,7 +11,9 @@ function words(line: string): string[] {
 }
 
 describe("README", () => {
-  const shown = [...readme.matchAll(/```sh\nnode packages\/cli\/bin\/kvane\.js ([^\n]+)\n```\s+```text\n([\s\S]*?)```/g)];
+  const shown = [
+    ...readme.matchAll(/```sh\nnode packages\/cli\/bin\/kvane\.js ([^\n]+)\n```\s+```text\n([\s\S]*?)```/g),
+  ];
 
   it("shows at least one result", () => {
     expect(shown.length).toBeGreaterThan(0);
@@ -34,7 +36,9 @@ describe("README", () => {
   it("has a library example that runs", async () => {
     const code = /```ts\n([\s\S]*?)```/.exec(readme)?.[1] ?? "";
     for (const [, names, room] of code.matchAll(/import \{ ([^}]+) \} from "@kvane\/core\/([a-z]+)"/g)) {
-      const module = (await import(/* @vite-ignore */ `@kvane/core/${room}`).catch(() => import(`../../packages/core/src/${room}/index.ts`))) as Record<string, unknown>;
+      const module = (await import(/* @vite-ignore */ `@kvane/core/${room}`).catch(
+        () => import(`../../packages/core/src/${room}/index.ts`),
+      )) as Record<string, unknown>;
       for (const name of (names as string).split(", ")) expect(module[name], `${room}: ${name}`).toBeTypeOf("function");
     }
     const { parseGroup } = await import("@kvane/core/spacegroups");

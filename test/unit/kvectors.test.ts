@@ -1,4 +1,3 @@
-import { describe, expect, it } from "vitest";
 import {
   canonicalPlacement,
   equivalentWaveVectors,
@@ -16,6 +15,7 @@ import {
   waveVectorToJson,
 } from "@kvane/core/kvectors";
 import { parseGroup, tabulatedSettings } from "@kvane/core/spacegroups";
+import { describe, expect, it } from "vitest";
 import { parseRational, type Rational } from "#core/numbers/index.js";
 import { seeded } from "../support/random.js";
 
@@ -33,7 +33,12 @@ describe("reading a wave vector", () => {
   it("puts 0.3333 onto the point and says so; 0.333 stays measured with the remedy", () => {
     const group = parseGroup("P 6/m m m");
     const near = placeWaveVector(group, parseWaveVector("0.3333,0.3333,0"));
-    expect(waveVectorToJson(near.k)).toEqual({ components: ["1/3", "1/3", "0"], values: {}, su: {}, numeric: [0.333333333333, 0.333333333333, 0] });
+    expect(waveVectorToJson(near.k)).toEqual({
+      components: ["1/3", "1/3", "0"],
+      values: {},
+      su: {},
+      numeric: [0.333333333333, 0.333333333333, 0],
+    });
     expect(near.assumed).toHaveLength(1);
     const far = placeWaveVector(group, parseWaveVector("0.333,0.333,0"));
     expect(waveVectorToJson(far.k).components).toEqual(["u", "u", "0"]);
@@ -59,7 +64,9 @@ describe("reading a wave vector", () => {
     for (const text of ["0,1/2", "0,a,0", "", "0,1/2,0,0", "0,,0", "0.31,u,0", "1/0,0,0"])
       expect(() => parseWaveVector(text), text).toThrowError(expect.objectContaining({ code: "invalid-k" }));
     expect(() => parseWaveVector("0,1/2,q")).toThrowError(
-      expect.objectContaining({ problems: [expect.objectContaining({ where: expect.objectContaining({ column: 7 }) })] }),
+      expect.objectContaining({
+        problems: [expect.objectContaining({ where: expect.objectContaining({ column: 7 }) })],
+      }),
     );
   });
 });
@@ -91,7 +98,9 @@ describe("stars, manifolds and equivalence", () => {
     const random = seeded(7);
     for (const setting of tabulatedSettings().filter((row) => row.standard)) {
       const group = parseGroup(`hall:${setting.hall}`);
-      const vector = exactWaveVector([0, 1, 2].map(() => [random.below(13) - 6, random.pick([1, 2, 3, 4, 5])]).map(reduced) as never);
+      const vector = exactWaveVector(
+        [0, 1, 2].map(() => [random.below(13) - 6, random.pick([1, 2, 3, 4, 5])]).map(reduced) as never,
+      );
       const { arms, minusK, reversing } = star(group, vector);
       expect(arms.length * littleGroup(group, vector).operators.length).toBe(group.operators.length);
       expect(reversing.length > 0).toBe(minusK !== "not in star");
@@ -105,7 +114,9 @@ describe("stars, manifolds and equivalence", () => {
     for (const number of ["14", "62", "146", "199", "225", "227:2"]) {
       const group = parseGroup(number);
       for (let round = 0; round < 5; round++) {
-        const vector = exactWaveVector([0, 1, 2].map(() => [random.below(13) - 6, random.pick([1, 2, 3, 5])]).map(reduced) as never);
+        const vector = exactWaveVector(
+          [0, 1, 2].map(() => [random.below(13) - 6, random.pick([1, 2, 3, 5])]).map(reduced) as never,
+        );
         const [a, b, c] = vector.components;
         // 6 times an integer vector is in L* of every lattice type.
         const shifted = exactWaveVector([
@@ -138,13 +149,23 @@ function addInteger([numerator, denominator]: Rational, step: number): Rational 
 }
 
 describe("special points", () => {
-  const names = (symbol: string): string[] => specialPoints(parseGroup(symbol)).map((point) => formatWaveVector(point.k)).sort();
+  const names = (symbol: string): string[] =>
+    specialPoints(parseGroup(symbol))
+      .map((point) => formatWaveVector(point.k))
+      .sort();
 
   it("are those of the zones in Bradley & Cracknell (1972), table 3.6, up to the arm chosen", () => {
     expect(names("P m -3 m")).toEqual(["(0, 0, 0)", "(0, 0, 1/2)", "(0, 1/2, 1/2)", "(1/2, 1/2, 1/2)"]);
     expect(names("F m -3 m")).toEqual(["(0, 0, 0)", "(0, 0, 1)", "(0, 1/2, 1)", "(1/2, 1/2, 1/2)"]);
     expect(names("I m -3 m")).toEqual(["(0, 0, 0)", "(0, 0, 1)", "(0, 1/2, 1/2)", "(1/2, 1/2, 1/2)"]);
-    expect(names("P 6/m m m")).toEqual(["(0, 0, 0)", "(0, 0, 1/2)", "(0, 1/2, 0)", "(0, 1/2, 1/2)", "(1/3, 1/3, 0)", "(1/3, 1/3, 1/2)"]);
+    expect(names("P 6/m m m")).toEqual([
+      "(0, 0, 0)",
+      "(0, 0, 1/2)",
+      "(0, 1/2, 0)",
+      "(0, 1/2, 1/2)",
+      "(1/3, 1/3, 0)",
+      "(1/3, 1/3, 1/2)",
+    ]);
     expect(names("P 1")).toHaveLength(8);
     expect(names("R -3 m:H")).toContain("(0, 0, 3/2)");
   });
@@ -153,7 +174,10 @@ describe("special points", () => {
     for (const setting of tabulatedSettings().filter((row) => row.standard)) {
       const group = parseGroup(`hall:${setting.hall}`);
       const half = specialPoints(group).filter((point) => isHalfLattice(group, point.k));
-      expect(half.reduce((sum, point) => sum + point.armPairs, 0), setting.hall).toBe(8);
+      expect(
+        half.reduce((sum, point) => sum + point.armPairs, 0),
+        setting.hall,
+      ).toBe(8);
     }
   });
 
@@ -164,9 +188,13 @@ describe("special points", () => {
       const points = specialPoints(group);
       for (let round = 0; round < 60; round++) {
         const denominator = random.pick([2, 3, 4, 6, 8]);
-        const vector = exactWaveVector([0, 1, 2].map(() => reduced([random.below(2 * denominator), denominator])) as never);
+        const vector = exactWaveVector(
+          [0, 1, 2].map(() => reduced([random.below(2 * denominator), denominator])) as never,
+        );
         if (manifold(group, vector, { withInversion: true }).dimension !== 0) continue;
-        const reversed = exactWaveVector(vector.components.map((form) => [0 - form.constant[0], form.constant[1]] as const) as never);
+        const reversed = exactWaveVector(
+          vector.components.map((form) => [0 - form.constant[0], form.constant[1]] as const) as never,
+        );
         const images = [...star(group, vector).arms, ...star(group, reversed).arms];
         expect(points.some((point) => images.some((arm) => equivalentWaveVectors(group, arm, point.k)))).toBe(true);
       }

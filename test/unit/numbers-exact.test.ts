@@ -61,7 +61,8 @@ describe("fractions against fraction.js", () => {
     expect(parseRational("-.5")).toEqual([-1, 2]);
     expect(parseRational("0.3333")).toEqual([3333, 10000]);
     expect(parseRational("-2/6")).toEqual([-1, 3]);
-    for (const text of ["", ".", "1/0", "1e3", "NaN", "1,5", "0x1", "1/2/3"]) expect(parseRational(text), text).toBeNull();
+    for (const text of ["", ".", "1/0", "1e3", "NaN", "1,5", "0x1", "1/2/3"])
+      expect(parseRational(text), text).toBeNull();
   });
 
   it("throws instead of rounding when a number grows too large", () => {
@@ -103,18 +104,27 @@ describe("matrices and echelon forms", () => {
         expect(basis.length).toBe(3 - reducedEchelon(m, rationalField).pivots.length);
         for (const vector of basis)
           for (const row of m)
-            expect(row.reduce<Rational>((sum, entry, index) => add(sum, multiply(entry, vector[index] as Rational)), [0, 1])).toEqual([0, 1]);
+            expect(
+              row.reduce<Rational>((sum, entry, index) => add(sum, multiply(entry, vector[index] as Rational)), [0, 1]),
+            ).toEqual([0, 1]);
       }),
       { seed },
     );
   });
 
   it("has one Hermite form per lattice: unimodular mixing of the rows changes nothing", () => {
-    const rows = fc.array(fc.array(fc.integer({ min: -9, max: 9 }), { minLength: 3, maxLength: 3 }), { minLength: 3, maxLength: 3 });
+    const rows = fc.array(fc.array(fc.integer({ min: -9, max: 9 }), { minLength: 3, maxLength: 3 }), {
+      minLength: 3,
+      maxLength: 3,
+    });
     fc.assert(
       fc.property(rows, fc.integer({ min: -3, max: 3 }), fc.integer({ min: -3, max: 3 }), (m, f, g) => {
         const [a, b, c] = m as [number[], number[], number[]];
-        const mixed = [b, a.map((entry, index) => -entry + f * (c[index] as number)), c.map((entry, index) => entry + g * (b[index] as number))];
+        const mixed = [
+          b,
+          a.map((entry, index) => -entry + f * (c[index] as number)),
+          c.map((entry, index) => entry + g * (b[index] as number)),
+        ];
         const form = hermiteNormalForm(m, 3);
         expect(hermiteNormalForm(mixed, 3)).toEqual(form);
         for (const row of m) expect(reduceModulo(row, form)).toEqual([0, 0, 0]);
@@ -128,10 +138,15 @@ describe("cyclotomic numbers against floating-point complex numbers", () => {
   const orders = [1, 2, 3, 4, 5, 6, 8, 9, 12, 16, 24];
   const numbersOf = (...allowed: readonly number[]) =>
     fc
-      .array(fc.tuple(fc.integer({ min: -3, max: 3 }), fc.constantFrom(...allowed), fc.integer({ min: 0, max: 23 })), { minLength: 1, maxLength: 3 })
+      .array(fc.tuple(fc.integer({ min: -3, max: 3 }), fc.constantFrom(...allowed), fc.integer({ min: 0, max: 23 })), {
+        minLength: 1,
+        maxLength: 3,
+      })
       .map((terms) =>
         terms
-          .map(([size, order, exponent]) => multiplyCyclotomic(cyclotomicFromRational([size, 2]), rootOfUnity(rational(exponent, order))))
+          .map(([size, order, exponent]) =>
+            multiplyCyclotomic(cyclotomicFromRational([size, 2]), rootOfUnity(rational(exponent, order))),
+          )
           .reduce(addCyclotomic),
       );
   const numbers = numbersOf(...orders);
@@ -200,7 +215,9 @@ describe("cyclotomic numbers against floating-point complex numbers", () => {
     const i = rootOfUnity([1, 4]);
     expect(formatCyclotomic(cyclotomicFromRational([-1, 2]))).toBe("-1/2");
     expect(formatCyclotomic(i)).toBe("i");
-    expect(formatCyclotomic(multiplyCyclotomic(cyclotomicFromRational([1, 2]), addCyclotomic(rootOfUnity([0, 1]), i)))).toBe("(1+i)/2");
+    expect(
+      formatCyclotomic(multiplyCyclotomic(cyclotomicFromRational([1, 2]), addCyclotomic(rootOfUnity([0, 1]), i))),
+    ).toBe("(1+i)/2");
     expect(formatCyclotomic(rootOfUnity([1, 6]))).toBe("e^{iπ/3}");
     expect(formatCyclotomic(rootOfUnity([1, 3]))).toBe("e^{2πi/3}");
     expect(formatCyclotomic(squareRootOf(3))).toBe("√3");

@@ -24,11 +24,15 @@ describe("the grammar of linear forms", () => {
       fc.constantFrom("", "/2", " / 3"),
     )
     .map((parts) => parts.join(""));
-  const constant = fc.tuple(fc.constantFrom("+", "-"), fc.constantFrom("1", "1/4", "0.125", "7/3")).map((parts) => parts.join(""));
+  const constant = fc
+    .tuple(fc.constantFrom("+", "-"), fc.constantFrom("1", "1/4", "0.125", "7/3"))
+    .map((parts) => parts.join(""));
 
   it("agrees with mathjs's expression parser", () => {
     const values: RationalVector = [rational(3, 7), rational(-2, 5), rational(11, 13)];
-    const scope = Object.fromEntries(["x", "y", "z"].map((name, index) => [name, toNumber(values[index as 0 | 1 | 2])]));
+    const scope = Object.fromEntries(
+      ["x", "y", "z"].map((name, index) => [name, toNumber(values[index as 0 | 1 | 2])]),
+    );
     fc.assert(
       fc.property(fc.array(fc.oneof(term, constant), { minLength: 1, maxLength: 5 }), (terms) => {
         const text = terms.join("");
@@ -70,12 +74,16 @@ describe("the grammar of linear forms", () => {
       expect(() => parseForm(text, coordinateNames), text).toThrowError(
         expect.objectContaining({
           code: "syntax",
-          problems: [expect.objectContaining({ where: expect.objectContaining({ column }), expected: expect.any(String) })],
+          problems: [
+            expect.objectContaining({ where: expect.objectContaining({ column }), expected: expect.any(String) }),
+          ],
         }),
       );
     expect(() => parseThreeForms("x,y", coordinateNames)).toThrowError(expect.objectContaining({ code: "syntax" }));
     expect(() => parseThreeForms("x, y+, z", coordinateNames)).toThrowError(
-      expect.objectContaining({ problems: [expect.objectContaining({ where: expect.objectContaining({ column: 6 }) })] }),
+      expect.objectContaining({
+        problems: [expect.objectContaining({ where: expect.objectContaining({ column: 6 }) })],
+      }),
     );
   });
 });
