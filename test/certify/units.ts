@@ -3,8 +3,10 @@ import { changeBasis, groupFromSetting, type Site, type SpaceGroup, tabulatedSet
 import { symmorphicNumbers } from "../fixtures/make-wyckoff-counts.mjs";
 import { changedSite, changedWave, randomChange } from "../support/axes.js";
 import { randomKindProblems } from "../support/kinds-in-floats.js";
+import { mappedModesProblems } from "../support/map-modes.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { type Random, seeded } from "../support/random.js";
+import { randomBasis } from "../support/random-bases.js";
 import { generalSite, randomWaveVector, specialSite } from "../support/random-cases.js";
 import {
   type CharacterCase,
@@ -49,6 +51,10 @@ export const sweeps = {
     what: "230 groups at every kind of k of the atlas, letters left open; a special site, moments and displacements",
     seed: 105,
   },
+  bases: {
+    what: "300 random settings (sheared, centred, halved bases, any origin): the mode spaces map onto each other",
+    seed: 107,
+  },
   atlas: {
     what: "200 random k in each of the 73 arithmetic classes, each in exactly one kind, under P and with −1",
     seed: 106,
@@ -74,6 +80,11 @@ export function allUnits(): Unit[] {
     ...groups.map((number) => unit("random", number, (random) => randomResults(groupOf(number), random))),
     ...groups.map((number) => unit("axes", number, (random) => axesResults(groupOf(number), random))),
     ...groups.map((number) => unit("kinds", number, (random) => kindResults(groupOf(number), random))),
+    ...Array.from({ length: 300 }, (_, index) => ({
+      sweep: "bases" as const,
+      number: index + 1,
+      run: () => mappedCounts(seeded(10_000 * sweeps.bases.seed + index)),
+    })),
     ...symmorphicNumbers.map((number) => ({
       sweep: "atlas" as const,
       number,
@@ -128,6 +139,13 @@ function pointResults(group: SpaceGroup, random: Random): SweepResult[] {
   return specialPoints(group).map(({ k }) =>
     sweepCase(group, k, [generalSite(random), specialSite(group, random), specialSite(group, random)], options(random)),
   );
+}
+
+function mappedCounts(random: Random): Counts {
+  const group = groupOf(random.below(230) + 1);
+  const k = random.below(2) === 0 ? pick(random, specialPoints(group)).k : randomWaveVector(group, random);
+  const problems = mappedModesProblems(group, k, specialSite(group, random), randomBasis(random));
+  return { cases: 1, irreps: 0, modes: 0, fields: 0, problems };
 }
 
 function kindResults(group: SpaceGroup, random: Random): SweepResult[] {
