@@ -34,7 +34,7 @@ export function mappedModesProblems(
     const irreps = smallIrreps(inGroup as SpaceGroup, wave as WaveVector);
     const modes = siteModes(inGroup as SpaceGroup, irreps, siteOrbit(inGroup as SpaceGroup, at as Site, null));
     return { irreps: irreps.irreps, read: floatModes(inGroup as SpaceGroup, modes) };
-  }) as [Side, Side];
+  }) as unknown as [Side, Side];
   const turn = back.map((row) => row.map(([top, bottom]) => top / bottom));
   const origin = change.shift.map(([top, bottom]) => top / bottom);
   const float = floatGroup(changed);
