@@ -34,7 +34,7 @@ export interface Compatibility {
 
 /**
  * Compatibility relations by subduction (Bouckaert, Smoluchowski & Wigner, Phys. Rev. 50 (1936) 58; Bradley &
- * Cracknell, 1972, section 3.8): the little group of the line or plane is a subgroup of that of a k on it, and the
+ * Cracknell, 1972, chapter 3): the little group of the line or plane is a subgroup of that of a k on it, and the
  * irreps of the line, continued to that k, are counted in the restriction. Exact.
  *
  * Throws `k-not-on-manifold` when no arm of `from` lies on the line or plane of `to`.

@@ -12,7 +12,7 @@ export interface SeriesStep {
  * A composition series 1 = G₀ ◁ G₁ ◁ … ◁ G with steps of prime index. It passes through the derived series: between a
  * group and its derived subgroup the quotient is abelian, so any element of prime order modulo the current subgroup
  * extends it normally. Crystallographic point groups are solvable, and their indices are 2 and 3 (Bradley & Cracknell,
- * 1972, section 4.4). Depends only on the order of the elements.
+ * 1972, chapter 4). Depends only on the order of the elements.
  */
 export function compositionSeries(group: LittleCoGroup): SeriesStep[] {
   return seriesOf(

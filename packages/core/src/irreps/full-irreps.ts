@@ -30,7 +30,7 @@ export function fullIrreps(group: SpaceGroup, irreps: SmallIrreps): readonly Ful
 }
 
 /**
- * Induction over the star (Bradley & Cracknell, 1972, equation 3.4.17): with coset representatives s_i, arm i being
+ * Induction over the star (Bradley & Cracknell, 1972, chapter 4): with coset representatives s_i, arm i being
  * `k S_i⁻¹`, block (i, j) of g is `D(s_i⁻¹ g s_j)` where that is in the little group, else zero. Any operator of the
  * group may be given, with any lattice translation.
  */

@@ -38,7 +38,7 @@ export interface MinusKLink {
 }
 
 /**
- * The antiunitary relation of every irrep (Bradley & Cracknell, 1972, section 4.6, for the co-representations of grey
+ * The antiunitary relation of every irrep (Bradley & Cracknell, 1972, chapter 7, for the co-representations of grey
  * groups; docs/conventions.md, Modes), or null where −k is in no arm of the star.
  */
 export function minusKRelation(group: SpaceGroup, irreps: SmallIrreps): MinusKRelation | null {

@@ -25,7 +25,7 @@ type Matrices = readonly (CyclotomicMatrix | undefined)[];
  *
  * Along a composition series each irrep of the normal subgroup H either is inequivalent to its conjugate by the
  * generator s, and the orbit of p irreps gives one induced irrep; or it is equivalent, and it extends to p irreps that
- * differ by the p-th roots of unity (Zak, J. Math. Phys. 1 (1960) 165; Bradley & Cracknell, 1972, theorems 4.4.1–4.4.3).
+ * differ by the p-th roots of unity (Zak, J. Math. Phys. 1 (1960) 165; Bradley & Cracknell, 1972, chapter 4).
  */
 export function projectiveIrreps(group: LittleCoGroup): CyclotomicMatrix[][] {
   const start: (CyclotomicMatrix | undefined)[] = new Array(group.size);

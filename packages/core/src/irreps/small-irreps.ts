@@ -35,6 +35,9 @@ import type { Reality, SmallIrreps } from "./types.js";
  * the other, `D_k(h) = D_canonical(g⁻¹ h g)`, so that numbers and matrices belong together all along a line or plane
  * and on every arm. `D({R|t}) = e^{2πi(k·t + H·p)} Δ(R)` with Δ about the mean origin p of the little co-group.
  *
+ * Method: the projective irreps of the little co-group (Bradley & Cracknell, 1972, chapter 3) along a
+ * composition series (Zak, J. Math. Phys. 1 (1960) 165; chapter 4 of the book).
+ *
  * Order and labels: by dimension, then by the characters of Δ at the canonical representative in operator order, larger
  * real part first, then larger imaginary part. Works with open letters in k.
  */

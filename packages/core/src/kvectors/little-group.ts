@@ -5,7 +5,7 @@ import type { LittleGroup, Star, WaveVector } from "./types.js";
 
 /**
  * The little group of k: the operators whose rotation R obeys `k R − k ∈ L*` (equivalently `k R⁻¹ ≡ k`), for all
- * values of the parameters that k leaves open (Bradley & Cracknell, 1972, section 3.7).
+ * values of the parameters that k leaves open (Bradley & Cracknell, 1972, chapter 3).
  */
 export function littleGroup(group: SpaceGroup, k: WaveVector): LittleGroup {
   const form = toIntegerForm(group.lattice, k);

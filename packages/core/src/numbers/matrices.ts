@@ -129,10 +129,8 @@ export function integerDeterminant(m: IntegerMatrix): number {
   return a * (e * i - f * h) - b * (d * i - f * g) + c * (d * h - e * g);
 }
 
-/** The inverse of an integer matrix of determinant ±1, again integer. */
-export function invertUnimodular(m: IntegerMatrix): number[] {
-  const det = integerDeterminant(m);
-  if (det !== 1 && det !== -1) fail("singular-basis", `an integer matrix of determinant ${det} has no integer inverse`);
+/** adj(M) with `M adj(M) = det M`. */
+export function adjugate(m: IntegerMatrix): number[] {
   const [a, b, c, d, e, f, g, h, i] = m as [number, number, number, number, number, number, number, number, number];
   return [
     e * i - f * h,
@@ -144,7 +142,14 @@ export function invertUnimodular(m: IntegerMatrix): number[] {
     d * h - e * g,
     b * g - a * h,
     a * e - b * d,
-  ].map((entry) => entry * det + 0);
+  ];
+}
+
+/** The inverse of an integer matrix of determinant ±1, again integer. */
+export function invertUnimodular(m: IntegerMatrix): number[] {
+  const det = integerDeterminant(m);
+  if (det !== 1 && det !== -1) fail("singular-basis", `an integer matrix of determinant ${det} has no integer inverse`);
+  return adjugate(m).map((entry) => entry * det + 0);
 }
 
 export function transposeIntegers(m: IntegerMatrix): number[] {

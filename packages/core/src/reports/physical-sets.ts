@@ -2,7 +2,7 @@ import type { IrrepRecord } from "./records/irreps.js";
 
 /**
  * Labels of irreps in the sets that real moments need. Where 2k is a reciprocal lattice vector real moments carry a
- * complex irrep only together with its conjugate, so the two are one choice (Bradley & Cracknell 1972, section 3.6:
+ * complex irrep only together with its conjugate, so the two are one choice (Bradley & Cracknell 1972, chapter 3:
  * physically irreducible representations). Elsewhere each irrep stands alone.
  */
 export function physicalSets(record: {

@@ -1,4 +1,5 @@
 import {
+  adjugate,
   gcdOf,
   type IntegerMatrix,
   integerDeterminant,
@@ -124,20 +125,4 @@ function settingConverter(lattice: Lattice, denominator: number) {
 /** Numerators of the lattice vectors as columns; upper triangular by rows, so the determinant is positive. */
 function columnsOf({ vectors }: Lattice): IntegerMatrix {
   return [0, 1, 2].flatMap((row) => vectors.map((vector) => vector[row as 0 | 1 | 2]));
-}
-
-/** adj(M) with `M adj(M) = det M`. */
-function adjugate(m: IntegerMatrix): IntegerMatrix {
-  const [a, b, c, d, e, f, g, h, i] = m as [number, number, number, number, number, number, number, number, number];
-  return [
-    e * i - f * h,
-    c * h - b * i,
-    b * f - c * e,
-    f * g - d * i,
-    a * i - c * g,
-    c * d - a * f,
-    d * h - e * g,
-    b * g - a * h,
-    a * e - b * d,
-  ];
 }

@@ -25,7 +25,7 @@ function readCell(text: string): Cell {
   try {
     return parseCell(text);
   } catch (error) {
-    if (!(error instanceof KvaneError) || !/\d,\d/.test(text)) throw error;
+    if (!(error instanceof KvaneError) || !/\d,\d/.test(text) || text.includes(".")) throw error;
     const remedy = `write decimal points: "${text.replace(/(\d),(?=\d)/g, "$1.").replaceAll(",", "")}"`;
     throw new KvaneError(error.problems.map((one) => (one.code === "invalid-cell" ? { ...one, remedy } : one)));
   }

@@ -56,7 +56,8 @@ function shortDimension(dimension: number): string {
 function givenSections(record: AtlasRecord, given: PlacedKRecord, same: boolean): string[] {
   const belongs = (kinds: readonly KindRecord[], index: number, dimension: "dimension" | "dimensionPM") => {
     const kind = kinds[index] as KindRecord;
-    return `kind ${index + 1}, ${dimensionText(kind[dimension])} ${kForm(kind.k)}`;
+    const where = `kind ${index + 1}, ${dimensionText(kind[dimension])} ${kForm(kind.k)}`;
+    return kind.arms > 1 ? `${where}, on this or an equivalent arm` : where;
   };
   return [
     ...section(
