@@ -216,7 +216,7 @@ const whole: readonly Published[] = [
     site: "0 0 0",
     k: "0.329 0.329 0",
     expected: "1x1 1x2",
-    source: "Frontzek et al., arXiv 1109.1747; k: memory",
+    source: "Frontzek et al., arXiv 1109.1747; k: memory 95",
     mark: "memory 95",
     counts: "computed",
   },

@@ -76,9 +76,11 @@ describe("phases between suborbits and copies in published structures", () => {
   });
 
   /**
-   * TbMnO3, Pbnm, Tb 4c, k = (0 q 0): two orbits of two atoms, each 6 = 1x1 twice + 1x2 twice [computed]; the relation
-   * between them by the inversion: A. B. Harris, Phys. Rev. B 76, 054447 (2007) [memory 75], where the amplitudes of the
-   * two Tb orbits are complex conjugates of each other, while those of Mn have one phase.
+   * TbMnO3, Pbnm, Tb 4c, k = (0 q 0): two orbits of two atoms, each 6 = 1x1 twice + 1x2 twice [computed]. The relation
+   * between them is derived by hand: the inversion takes k to −k and exchanges the two orbits, so one order parameter
+   * makes the amplitudes of one the complex conjugates of those of the other, up to a phase; Mn, on a centre of
+   * inversion, keeps one phase. (Said also by A. B. Harris, Phys. Rev. B 76, 054447 (2007), which is recalled only,
+   * memory 75, and is not what the test rests on.)
    */
   describe("TbMnO3", () => {
     test("Tb: two orbits; one order parameter makes the amplitudes of the second the conjugates of the first", () => {
