@@ -51,8 +51,21 @@ function licences(inputs) {
     const folder = /^.*node_modules\/(?:@[^/]+\/)?[^/]+(?=\/)/.exec(input)?.[0];
     if (folder) folders.add(resolve(here, folder));
   }
-  const texts = [...folders].map(licence).sort();
+  const texts = [...folders].map(licence);
+  // The script of the report page is a text in the bundle; what is in it and nowhere else is not among the inputs.
+  for (const notice of pageNotices()) {
+    const entry = `${"-".repeat(80)}\n${notice}\n`;
+    if (!texts.includes(entry)) texts.push(entry);
+  }
+  texts.sort();
   return `kvane carries parts of these packages.\n\n${texts.join("\n")}`;
+}
+
+/** The licence texts that packages/core/make-page-script.mjs has put beside the script of the report page. */
+function pageNotices() {
+  const made = readFileSync(join(here, "../core/src/reports/generated/page-script.ts"), "utf8");
+  const lines = made.slice(made.indexOf("pageNotices")).matchAll(/^ {2}(".*"),$/gm);
+  return [...lines].map(([, text]) => /** @type {string} */ (JSON.parse(text ?? "")));
 }
 
 /** @param {string} folder of one package */

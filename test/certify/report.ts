@@ -1,17 +1,17 @@
 import { existsSync, readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { root, type State } from "./state.js";
-import { type SweepName, sweeps, type Unit } from "./units.js";
+import { type Counts, type Subject, unitName } from "./subject.js";
 
 const begin = "<!-- certify: begin (written by `npm run certify`) -->";
 const end = "<!-- certify: end -->";
 const shownFailures = 40;
 
 /** Writes the table between the markers of docs/validation.md; the rest of the page is left as it is. */
-export function writeReport(units: readonly Unit[], state: State): string {
+export function writeReport(states: ReadonlyMap<Subject, State>): string {
   const file = join(root, "docs/validation.md");
   const page = existsSync(file) ? readFileSync(file, "utf8") : "# Validation\n";
-  const text = `${begin}\n${report(units, state)}\n${end}`;
+  const text = `${begin}\n${report(states)}\n${end}`;
   const from = page.indexOf(begin);
   const to = page.indexOf(end);
   const written =
@@ -22,38 +22,42 @@ export function writeReport(units: readonly Unit[], state: State): string {
   return file;
 }
 
-function report(units: readonly Unit[], state: State): string {
-  const names = Object.keys(sweeps) as SweepName[];
-  const rows = names.map((name) => {
-    const counts = units.flatMap((unit) => (unit.sweep === name ? [state.done.get(unitName(unit))] : []));
-    const sum = (of: (entry: NonNullable<(typeof counts)[number]>) => number): number =>
-      counts.reduce((value, entry) => value + (entry === undefined ? 0 : of(entry)), 0);
-    const cases = sum((entry) => entry.cases);
-    const failures = sum((entry) => entry.problems.length);
-    const { what, seed } = sweeps[name];
-    const cell = (value: number): string => (value === 0 ? "–" : String(value));
-    return [
-      what,
-      seed === null ? "–" : String(seed),
-      String(cases),
-      cell(sum((entry) => entry.irreps)),
-      cell(sum((entry) => entry.modes)),
-      cell(sum((entry) => entry.fields)),
-      String(failures),
-    ];
-  });
-  const head = ["sweep", "seed", "cases (group, k)", "irreps", "mode vectors", "fields in a supercell", "failures"];
+function report(states: ReadonlyMap<Subject, State>): string {
+  const rows: string[][] = [];
+  const problems: string[] = [];
+  const notes: string[] = [];
+  for (const [subject, state] of states) {
+    const units = subject.units();
+    for (const [sweep, { what, seed }] of Object.entries(subject.sweeps)) {
+      const counts = units.flatMap((unit) => (unit.sweep === sweep ? (state.done.get(unitName(unit)) ?? []) : []));
+      problems.push(...counts.flatMap((entry) => entry.problems));
+      notes.push(...counts.flatMap(({ note }) => (note === undefined ? [] : [`- ${note}`])));
+      rows.push(rowOf(what, seed, counts));
+    }
+  }
+  const head = ["sweep", "seed", "cases", "irreps", "mode vectors", "fields in a supercell", "failures"];
   const table = [head, head.map((_, column) => (column === 0 ? "---" : "---:")), ...rows];
-  const problems = units.flatMap((unit) => state.done.get(unitName(unit))?.problems ?? []);
   const failures = problems.slice(0, shownFailures).map((problem) => `- ${problem}`);
   const more = problems.length > shownFailures ? [`- and ${problems.length - shownFailures} more`] : [];
   return [
     ...table.map((row) => `| ${row.join(" | ")} |`),
     "",
+    ...(notes.length === 0 ? [] : [...notes, ""]),
     ...(problems.length === 0 ? ["No failures."] : ["Failures:", "", ...failures, ...more]),
   ].join("\n");
 }
 
-export function unitName(unit: Unit): string {
-  return `${unit.sweep} ${unit.number}`;
+function rowOf(what: string, seed: number | null, counts: readonly Counts[]): string[] {
+  const sum = (of: (entry: Counts) => number | undefined): number =>
+    counts.reduce((value, entry) => value + (of(entry) ?? 0), 0);
+  const cell = (value: number): string => (value === 0 ? "–" : String(value));
+  return [
+    what,
+    seed === null ? "–" : String(seed),
+    String(sum((entry) => entry.cases)),
+    cell(sum((entry) => entry.irreps)),
+    cell(sum((entry) => entry.modes)),
+    cell(sum((entry) => entry.fields)),
+    String(sum((entry) => entry.problems.length)),
+  ];
 }

@@ -1,30 +1,43 @@
 /**
  * The full sweeps, `npm run certify`: every check of test/sweep and test/laws without sampling. A broken run goes on
- * where it was as long as the sources stay the same. When all units are done, docs/validation.md gets the table.
- * `npm run certify -- points random` runs these sweeps only and writes nothing.
+ * where it was as long as the code that a subject reaches stays the same. When all units are done, docs/validation.md
+ * gets the table. `npm run certify -- symmetry` runs one subject, `npm run certify -- points random` these sweeps only;
+ * then nothing is written.
  */
-import { unitName, writeReport } from "./report.js";
-import { openState } from "./state.js";
-import { allUnits, sweeps } from "./units.js";
+import { subject as magneticGroups } from "./magnetic-groups.js";
+import { writeReport } from "./report.js";
+import { subject as search } from "./search.js";
+import { openState, type State } from "./state.js";
+import { type Subject, unitName } from "./subject.js";
+import { subject as symmetry } from "./symmetry.js";
+
+const subjects: readonly Subject[] = [symmetry, magneticGroups, search];
 
 const wanted = process.argv.slice(2);
-const unknown = wanted.filter((name) => !(name in sweeps));
-if (unknown.length > 0)
-  throw new Error(`no sweep is called ${unknown.join(", ")}; there are ${Object.keys(sweeps).join(", ")}`);
+const names = subjects.flatMap(({ name, sweeps }) => [name, ...Object.keys(sweeps)]);
+const unknown = wanted.filter((name) => !names.includes(name));
+if (unknown.length > 0) throw new Error(`no sweep is called ${unknown.join(", ")}; there are ${names.join(", ")}`);
 
-const state = openState();
-const units = allUnits();
-const chosen = units.filter((unit) => wanted.length === 0 || wanted.includes(unit.sweep));
-const open = chosen.filter((unit) => !state.done.has(unitName(unit)));
-if (open.length < chosen.length)
-  console.log(`${chosen.length - open.length} of ${chosen.length} units are done already`);
-open.forEach((unit, index) => {
-  const counts = unit.run();
-  state.keep(unitName(unit), counts);
-  for (const problem of counts.problems) console.error(`FAILED ${problem}`);
-  if (index % 20 === 19 || index === open.length - 1) console.log(`${index + 1} of ${open.length}: ${unitName(unit)}`);
-});
-const failures = chosen.reduce((sum, unit) => sum + (state.done.get(unitName(unit))?.problems.length ?? 0), 0);
-console.log(`${chosen.length} units, ${failures} failures`);
-if (wanted.length === 0) console.log(`written: ${writeReport(units, state)}`);
+const states = new Map<Subject, State>();
+let failures = 0;
+for (const subject of subjects) {
+  const chosen = subject
+    .units()
+    .filter(({ sweep }) => wanted.length === 0 || wanted.includes(sweep) || wanted.includes(subject.name));
+  if (chosen.length === 0) continue;
+  const state = await openState(subject.name);
+  states.set(subject, state);
+  const open = chosen.filter((unit) => !state.done.has(unitName(unit)));
+  console.log(`${subject.name}: ${chosen.length - open.length} of ${chosen.length} units are done already`);
+  for (const [index, unit] of open.entries()) {
+    const counts = await unit.run();
+    state.keep(unitName(unit), counts);
+    for (const problem of counts.problems) console.error(`FAILED ${problem}`);
+    if (index % 20 === 19 || index === open.length - 1)
+      console.log(`${index + 1} of ${open.length}: ${unitName(unit)}`);
+  }
+  failures += chosen.reduce((sum, unit) => sum + (state.done.get(unitName(unit))?.problems.length ?? 0), 0);
+}
+console.log(`${failures} failures`);
+if (wanted.length === 0) console.log(`written: ${writeReport(states)}`);
 if (failures > 0) process.exitCode = 1;

@@ -4,7 +4,6 @@ import { gridSearch } from "../support/grid-twin.js";
 import { reciprocalAxes } from "../support/line-twin.js";
 import { seeded } from "../support/random.js";
 import {
-  type CaseOptions,
   inSomeRegion,
   ranksFirst,
   type SearchCase,
@@ -12,22 +11,8 @@ import {
   slowStarDistance,
   type Triple,
 } from "../support/search-cases.js";
-
-/** A sweep over seeds 0 … count − 1; `run` gives what failed for one of them. */
-export interface SearchSweep {
-  readonly name: string;
-  readonly count: number;
-  readonly run: (seed: number) => Promise<readonly string[]>;
-}
-
-export const ordinary: CaseOptions = {
-  least: 5,
-  most: 14,
-  strays: 0,
-  seen: 0.7,
-  volumes: [60, 900],
-  uncertainty: 0.03,
-};
+import { ordinary, rateCells, rateColumns, ratesOf, shortOf, sorts } from "./rates.js";
+import type { Subject, Unit } from "./subject.js";
 
 /** One stray peak in half of the lists. */
 export function ordinaryCase(seed: number): SearchCase {
@@ -138,27 +123,57 @@ function basisOf(centring: readonly Triple[]): readonly Triple[] {
   ];
 }
 
-/** The sweeps over the search for k. */
-export const searchSweeps: readonly SearchSweep[] = [
-  { name: "search: no k of a dense grid is missed", count: 200, run: missedByTwin },
-  {
-    name: "search: the k behind a made list lies in a returned region",
-    count: 500,
-    run: async (seed) => {
-      const made = ordinaryCase(seed);
-      return lostK(made, await search(made));
-    },
+/** Lists of each sort for the rates of the evidence. */
+const rateLists = 200;
+
+const sweeps = {
+  grid: { what: "search: no k of a dense grid over random cells, groups and lists is missed", seed: 1_000_000 },
+  regions: { what: "search: the k behind a made list with noise lies in a returned region", seed: 0 },
+  first: {
+    what: "search: of lists with 8 peaks or more, 20 at a time, at least 18 rank the true k first or tied first",
+    seed: 2_000_000,
   },
-  {
-    name: "search: of lists with 8 peaks or more, 20 at a time, at least 16 rank the true k first or tied first",
-    count: 25,
-    run: async (seed) => {
-      let right = 0;
-      for (let index = 0; index < 20; index++) {
-        const made = searchCase(2_000_000 + 20 * seed + index, { ...ordinary, least: 8, strays: index % 2 });
-        if (ranksFirst(made, await search(made))) right += 1;
-      }
-      return right >= 16 ? [] : [`lists ${20 * seed} to ${20 * seed + 19}: ${right} of 20`];
-    },
-  },
-];
+  rates: { what: "search: rates of the evidence on four sorts of lists (table below)", seed: 5_000_000 },
+} as const;
+
+/** The search for k. */
+export const subject: Subject = {
+  name: "search",
+  sweeps,
+  units: () => [
+    ...seeds(200).map((seed) => unit("grid", seed, async () => missedByTwin(seed))),
+    ...seeds(500).map((seed) =>
+      unit("regions", seed, async () => {
+        const made = ordinaryCase(seed);
+        return lostK(made, await search(made));
+      }),
+    ),
+    ...seeds(25).map((seed) =>
+      unit("first", seed, async () => {
+        let right = 0;
+        for (let index = 0; index < 20; index++) {
+          const made = searchCase(sweeps.first.seed + 20 * seed + index, { ...ordinary, least: 8, strays: index % 2 });
+          if (ranksFirst(made, await search(made))) right += 1;
+        }
+        return right >= 18 ? [] : [`lists ${20 * seed} to ${20 * seed + 19}: ${right} of 20`];
+      }),
+    ),
+    ...sorts.map((sort, place) => ({
+      sweep: "rates",
+      number: place + 1,
+      run: async () => {
+        const rates = await ratesOf(sort, sweeps.rates.seed + 10_000 * place, rateLists);
+        const cells = rateCells(sort, rates).map((cell, column) => `${rateColumns[column]} ${cell}`);
+        return { cases: rateLists, problems: shortOf(sort, rates), note: `${sort.name}: ${cells.join(", ")}` };
+      },
+    })),
+  ],
+};
+
+function seeds(count: number): readonly number[] {
+  return Array.from({ length: count }, (_, seed) => seed);
+}
+
+function unit(sweep: keyof typeof sweeps, number: number, run: () => Promise<readonly string[]>): Unit {
+  return { sweep, number, run: async () => ({ cases: 1, problems: await run() }) };
+}

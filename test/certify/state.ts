@@ -2,13 +2,10 @@ import { createHash } from "node:crypto";
 import { appendFileSync, existsSync, mkdirSync, readdirSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
-import type { Counts } from "./units.js";
+import { bundleText } from "../tools/bundle-test.mjs";
+import type { Counts } from "./subject.js";
 
 export const root = fileURLToPath(new URL("../../", import.meta.url));
-
-/** What the result of a unit depends on; any change makes the sweep begin anew. */
-const rooms = ["errors", "numbers", "spacegroups", "kvectors", "irreps", "modes"];
-const sources = [...rooms.map((room) => `packages/core/src/${room}`), "test/support", "test/certify", "test/fixtures"];
 
 /** Finished units, kept in an ignored folder so that a broken run goes on where it was. */
 export interface State {
@@ -16,10 +13,10 @@ export interface State {
   readonly keep: (name: string, counts: Counts) => void;
 }
 
-export function openState(): State {
+export async function openState(subject: string): Promise<State> {
   const folder = join(root, "node_modules/.cache/kvane/certify");
   mkdirSync(folder, { recursive: true });
-  const file = join(folder, `${fingerprint()}.jsonl`);
+  const file = join(folder, `${subject}-${await fingerprint(subject)}.jsonl`);
   const done = new Map<string, Counts>();
   // The last line may be cut off.
   for (const line of existsSync(file) ? readFileSync(file, "utf8").split("\n").slice(0, -1) : []) {
@@ -35,13 +32,17 @@ export function openState(): State {
   };
 }
 
-function fingerprint(): string {
-  const hash = createHash("sha256");
-  for (const folder of sources)
-    for (const entry of readdirSync(join(root, folder), { recursive: true, withFileTypes: true })
-      .filter((item) => item.isFile())
-      .map((item) => join(item.parentPath, item.name))
-      .sort())
-      hash.update(entry.slice(root.length)).update("\0").update(readFileSync(entry)).update("\0");
+/** Of all code that the sweeps of a subject reach, without its comments, and of the reference data. */
+async function fingerprint(subject: string): Promise<string> {
+  const hash = createHash("sha256").update(await bundleText(join("test/certify", `${subject}.ts`)));
+  const fixtures = join(root, "test/fixtures");
+  for (const name of readdirSync(fixtures)
+    .filter((entry) => /\.jsonl?$/.test(entry))
+    .sort())
+    hash
+      .update(name)
+      .update("\0")
+      .update(readFileSync(join(fixtures, name)))
+      .update("\0");
   return hash.digest("hex").slice(0, 16);
 }

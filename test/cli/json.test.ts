@@ -1,5 +1,6 @@
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
+import { fileURLToPath } from "node:url";
 import { describedCommands } from "@kvane/core/reports";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "./command.js";
@@ -18,10 +19,12 @@ peaks: {file: peaks.csv, as: two-theta, wavelength: 2.41}
   "hkl.csv": "h k l\n0 0.47 0\n1 0.47 0\n1 0.53 1\n",
 });
 
+const doubled = fileURLToPath(new URL("../fixtures/magnetic-cif/doubled-spherical.cif", import.meta.url));
 const cell = ["--cell", "10.21 6.05 4.71 90 90 90"];
 /** Every command and every kind of k: exact, measured, with open letters; complex irreps; crystal peaks. */
 const lines: readonly (readonly string[])[] = [
   ["ops", "62"],
+  ["study", "--example"],
   ["ops", "F m -3 m"],
   ["ops", "x,y,z;-x,-y,-z (a,b,2c;0,0,1/4)"],
   ["atlas", "62"],
@@ -48,6 +51,13 @@ const lines: readonly (readonly string[])[] = [
   ["modes", "62", ...cell, "--k", "0,0.28,0", "--site", "A 0 0 0", "--components", "crystal", "--exponent", "plus"],
   ["modes", "study.yaml", "--k", "0,1/2,0", "--components", "cartesian", "--factor", "half"],
   ["modes", "62 (a,b,a+c)", "--k", "0,1/2,0", "--site", "A 0 0 0", "--cell", "10.21 6.05 11.24403 90 24.7662 90"],
+  ["configurations", "study.yaml", "--k", "0,1/2,0"],
+  ["configurations", "F m -3 m", "--k", "1/2,1/2,1/2", "--site", "Mn 0 0 0"],
+  ["configurations", "62", ...cell, "--k", "0,0,0", "--site", "Fe 0 0 1/2", "--together", "1+3"],
+  ["configurations", "study.yaml", "--k", "0,0.472,0"],
+  ["export", "study.yaml", "--k", "0,1/2,0", "--configuration", "1.1"],
+  ["export", "study.yaml", "--k", "0,1/2,0", "--configuration", "G1.1", "--cif", "1.1"],
+  ["decompose", doubled, "--parent", "study.yaml"],
   ["satellites", "62", ...cell, "--k", "0,1/2,0"],
   ["satellites", "62", ...cell, "--k", "0,0.47,0", "--wavelength", "2.41", "--q-max", "1.5"],
   ["index", "study.yaml", "--k", "0,1/2,0"],
@@ -58,6 +68,7 @@ const lines: readonly (readonly string[])[] = [
   ["run", "study.yaml"],
   ["run", "study.yaml", "--k", "0,v,0"],
   ["run", "--example"],
+  ["report", "study.yaml", "--k", "0,1/2,0"],
   ["explain"],
   ["explain", "invalid-k"],
   ["help"],
@@ -78,6 +89,9 @@ const wrong: readonly (readonly string[])[] = [
   ["atlas", "62", "--within", "-1"],
   ["compatibility", "62", "--from", "0,0,0"],
   ["configurations", "62"],
+  ["export", "study.yaml", "--k", "0,1/2,0", "--configuration", "9.9"],
+  ["export", "study.yaml", "--k", "0,1/2,0"],
+  ["decompose"],
 ];
 
 describe("--json gives the shape of the schema", () => {

@@ -77,7 +77,7 @@ describe("answer", () => {
     const plain = await answer({ command: "star", group: "P n m a", k: "0,1/2,0" }, hostOf({}));
     const spread = await answer({ command: "star", group: "  P  n m  a ", k: " 0,1/2,0 " }, hostOf({}));
     expect(spread).toEqual(plain);
-    expect(plain.input).toEqual({ study: null, group: "P n m a", k: "0,1/2,0" });
+    expect(plain.input).toEqual({ study: null, group: "P n m a", structure: null, block: null, k: "0,1/2,0" });
   });
 
   test("tied candidates are followed up to the bound", async () => {

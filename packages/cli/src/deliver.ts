@@ -1,7 +1,18 @@
 import { resolve } from "node:path";
-import type { Problem } from "@kvane/core/errors";
+import { fail, type Problem } from "@kvane/core/errors";
 import { version } from "@kvane/core/job";
-import { type Envelope, jsonText, type RunRecord, reportCsv, reportText, resultFolder } from "@kvane/core/reports";
+import {
+  type Envelope,
+  jsonText,
+  type ResultFile,
+  type RunRecord,
+  reportCsv,
+  reportEndings,
+  reportForm,
+  reportIn,
+  reportText,
+  resultFolder,
+} from "@kvane/core/reports";
 import { writeFolder, writeWhole } from "./output.js";
 import type { OutputWishes } from "./request.js";
 import type { Surroundings } from "./surroundings.js";
@@ -14,26 +25,57 @@ export function refusedAnswer(command: string, errors: readonly Problem[]): Refu
   return { kvane: version, format: 1, command, input: {}, result: null, errors, warnings: [], assumed: [] };
 }
 
-/** Puts an answer where it was wished: the terminal, a file, or for the whole job a folder. */
-export function deliver(
+/** An answer made ready: what is printed or written to one file, and the files of a folder where one was wished. */
+export interface Parcel {
+  readonly text: string;
+  readonly files: readonly ResultFile[] | null;
+}
+
+/** Throws unless the ending of the file says which form of a report is wished: asked before the work, not after it. */
+export function checkForm(command: string, { out, json }: OutputWishes): void {
+  if (command !== "report" || out === null || json || reportForm(out) !== null) return;
+  fail("invalid-argument", `the ending of \`${out}\` names no form of a report`, {
+    where: { argument: "--out" },
+    expected: `a name that ends in ${reportEndings.join(", ")}`,
+    found: out,
+    remedy: "write --out report.html for a page to look at",
+  });
+}
+
+/** Makes everything that was wished; nothing is written yet. */
+export async function packed(
   answered: Envelope<object>,
+  wishes: OutputWishes,
+  { columns = null }: Pick<Surroundings, "columns">,
+): Promise<Parcel> {
+  const { command } = answered;
+  const whole = answered as Envelope<RunRecord>;
+  if (wishes.out === null) return { text: textOf(answered, wishes, columns), files: null };
+  if (command === "run") return { text: textOf(answered, wishes, columns), files: await resultFolder(whole) };
+  const form = command === "report" && !wishes.json ? reportForm(wishes.out) : null;
+  return { text: form === null ? textOf(answered, wishes, null) : await reportIn(form, whole), files: null };
+}
+
+/** Puts it where it was wished: the terminal, a file, or for the whole job a folder. */
+export function deliver(
+  { text, files }: Parcel,
   wishes: OutputWishes,
   { write, writeError, folder }: Surroundings,
 ): void {
-  const text = textOf(answered, wishes);
   if (wishes.out === null) {
     write(text);
     return;
   }
   const path = { shown: wishes.out, full: resolve(folder, wishes.out) };
-  if (answered.command === "run") {
-    writeFolder(path, resultFolder(answered as Envelope<RunRecord>), wishes.force);
+  if (files !== null) {
+    writeFolder(path, files, wishes.force);
     if (!wishes.quiet || wishes.json) write(text);
   } else writeWhole(path, text, wishes.force);
   if (!wishes.quiet) writeError(`written: ${wishes.out}\n`);
 }
 
-function textOf(answered: Envelope<object>, wishes: OutputWishes): string {
+/** A file has the usual width, a terminal its own. */
+function textOf(answered: Envelope<object>, wishes: OutputWishes, width: number | null): string {
   if (wishes.json) return jsonText(answered);
-  return (wishes.csv ? reportCsv(answered) : null) ?? reportText(answered);
+  return (wishes.csv ? reportCsv(answered) : null) ?? reportText(answered, { width });
 }

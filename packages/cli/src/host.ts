@@ -1,6 +1,6 @@
-import { readFileSync } from "node:fs";
+import { readFileSync, statSync } from "node:fs";
 import { join, resolve } from "node:path";
-import { fail, type Place } from "@kvane/core/errors";
+import { fail, KvaneError, type Place } from "@kvane/core/errors";
 import type { JobHost, Request } from "@kvane/core/job";
 import { argumentNames, type RequestField } from "@kvane/core/job";
 import type { Surroundings } from "./surroundings.js";
@@ -11,6 +11,9 @@ const examplePrefix = "example:/";
 
 /** The bundled example study. */
 export const exampleStudy = `${examplePrefix}study.yaml`;
+
+/** The bundled CIF of the same invented compound. */
+export const exampleStructure = `${examplePrefix}structure.cif`;
 
 /** A host that reads files, and remembers what it read so that a problem can show its line. */
 export interface CommandHost extends JobHost {
@@ -50,10 +53,17 @@ function argumentText(request: Request, place: Place): string | null {
   return (value as readonly string[])[index]?.trim() ?? null;
 }
 
+/** Bytes. No text that kvane reads comes near it. */
+const largestFile = 256 * 1024 * 1024;
+
 function bytesOf(path: string, { folder }: Surroundings): Uint8Array {
   try {
-    return readFileSync(located(path, folder));
+    const full = located(path, folder);
+    const { size } = statSync(full);
+    if (size > largestFile) refuseSize(path, size);
+    return readFileSync(full);
   } catch (error) {
+    if (error instanceof KvaneError) throw error;
     const code = (error as NodeJS.ErrnoException).code ?? "";
     if (code === "ENOENT" || code === "ENOTDIR" || code === "ENAMETOOLONG")
       fail("file-not-found", `there is no file \`${path}\``, {
@@ -72,6 +82,15 @@ function bytesOf(path: string, { folder }: Surroundings): Uint8Array {
   }
 }
 
+function refuseSize(path: string, size: number): never {
+  fail("file-too-large", `\`${path}\` is too large to be read`, {
+    where: { file: path },
+    expected: "a file of at most 256 MB",
+    found: `${Math.round(size / 1024 / 1024)} MB`,
+    remedy: "cut out the part that is meant, and leave images and raw data away",
+  });
+}
+
 function located(path: string, folder: string): string {
   if (!path.startsWith(examplePrefix)) return resolve(folder, path);
   return join(import.meta.dirname, "../example", path.slice(examplePrefix.length));
@@ -81,11 +100,42 @@ function decoded(bytes: Uint8Array, path: string): string {
   try {
     return new TextDecoder("utf-8", { fatal: true }).decode(bytes);
   } catch {
+    if (bytes.length > largestFile) refuseSize(path, bytes.length);
+    const { offset, line, column } = firstWrongByte(bytes);
     return fail("file-unreadable", `\`${path}\` is not text in UTF-8`, {
-      where: { file: path },
+      where: { file: path, line, column },
       expected: "text in UTF-8",
-      found: "bytes that are none",
+      found: `the byte 0x${(bytes[offset] ?? 0).toString(16).toUpperCase().padStart(2, "0")} at offset ${offset}`,
       remedy: "save it as plain text in UTF-8",
     });
+  }
+}
+
+/** Where the bytes stop to be UTF-8: the offset (from 0) of the first byte that no character has there. */
+function firstWrongByte(bytes: Uint8Array): { offset: number; line: number; column: number } {
+  let low = 0;
+  let high = bytes.length;
+  // The longest beginning that can be decoded, if not all of its last character is asked for.
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if (isBeginning(bytes.subarray(0, middle))) low = middle;
+    else high = middle - 1;
+  }
+  // A first byte whose followers are wrong is the wrong one.
+  while (low > 0 && !isWhole(bytes.subarray(0, low))) low -= 1;
+  const before = new TextDecoder("utf-8").decode(bytes.subarray(0, low), { stream: true }).split(/\r\n?|\n/);
+  return { offset: low, line: before.length, column: (before.at(-1) ?? "").length + 1 };
+}
+
+function isBeginning(bytes: Uint8Array): boolean {
+  return isWhole(bytes, { stream: true });
+}
+
+function isWhole(bytes: Uint8Array, options: { stream?: boolean } = {}): boolean {
+  try {
+    new TextDecoder("utf-8", { fatal: true }).decode(bytes, options);
+    return true;
+  } catch {
+    return false;
   }
 }

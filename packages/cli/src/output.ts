@@ -61,15 +61,21 @@ export function writeFolder(path: OutputPath, files: readonly ResultFile[], forc
     mkdirSync(part);
     for (const { name, text } of files) writeFileSync(join(part, name), text, { flag: "wx" });
     if (!existsSync(folder)) return renameSync(part, folder);
+    // Seen before the first file is replaced: a folder with the name of a file cannot be.
+    const inTheWay = files.find(({ name }) => statSync(join(folder, name), { throwIfNoEntry: false })?.isDirectory());
+    if (inTheWay) throw Object.assign(new Error(inTheWay.name), { code: "EISDIR" });
     for (const name of readdirSync(folder)) if (isStale(name, files)) rmSync(join(folder, name));
     for (const { name } of files) renameSync(join(part, name), join(folder, name));
     rmSync(part, { recursive: true });
   });
 }
 
-/** A table of an earlier run that this one does not have. */
+/** A table or drawing of an earlier run that this one does not have. */
 function isStale(name: string, files: readonly ResultFile[]): boolean {
-  const ours = /^(assignments|branch-\d+-(modes|satellites))\.csv$/.test(name);
+  const ours =
+    /^(assignments|branch-\d+-(modes|configurations|satellites))\.csv$/.test(name) ||
+    /^branch-\d+-GM[\w.]*\.mcif$/.test(name) ||
+    /^(peaks|zone|branch-\d+-moments-\d+)\.svg$/.test(name);
   return ours && !files.some((file) => file.name === name);
 }
 

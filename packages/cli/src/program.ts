@@ -56,10 +56,13 @@ function lines(names: readonly string[]): string {
 }
 
 const argumentTexts = {
-  "group or study": ["[GROUP|STUDY]", "space group, or a study file (.yaml, - for standard input)"],
-  study: ["[STUDY]", "study file (.yaml, - for standard input)"],
+  "group or study": ["[GROUP|STUDY]", "space group, study file or CIF (.yaml, .cif, - for standard input)"],
+  study: ["[STUDY]", "study file or CIF (.yaml, .cif, - for standard input)"],
+  cif: ["[FILE.cif]", "CIF of the nuclear structure (- for standard input)"],
+  moments: ["[FILE.cif]", "magnetic CIF (.mcif, .cif, - for standard input)"],
   code: ["[CODE]", "code of a problem; without it all are listed"],
   topic: ["[TOPIC]", "topic or command; without it the topics are listed"],
+  shell: ["[SHELL]", "bash, zsh or fish"],
 } as const;
 
 function addCommand(program: Command, spec: CommandSpec, onCommand: (line: ParsedLine) => void): void {

@@ -1,6 +1,6 @@
 import { fail } from "@kvane/core/errors";
 import type { Request } from "@kvane/core/job";
-import { exampleStudy } from "./host.js";
+import { exampleStructure, exampleStudy } from "./host.js";
 import { type ParsedLine, valueOptions } from "./program.js";
 
 /** What the command line wants done with the answer. */
@@ -28,7 +28,9 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
   const text = (name: string) => (typeof options[name] === "string" ? (options[name] as string) : null);
   const example = options["example"] === true;
   const first = argument?.trim() ?? null;
-  const isFile = first !== null && (spec.argument === "study" || /\.(ya?ml|cif)$/i.test(first) || first === "-");
+  const isFile =
+    first !== null &&
+    (spec.argument === "study" || spec.argument === "cif" || /\.(ya?ml|m?cif)$/i.test(first) || first === "-");
   const topical = spec.argument === "code" || spec.argument === "topic";
   if (example && isFile)
     fail("conflicting-arguments", "a study and --example are both given", {
@@ -37,12 +39,21 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
       found: first,
       remedy: "leave one of them out",
     });
+  const studyOf = () => {
+    if (example) return spec.argument === "cif" ? exampleStructure : exampleStudy;
+    return isFile && !topical ? first : null;
+  };
   return {
     command: spec.name,
-    study: example ? exampleStudy : isFile && !topical ? first : null,
+    study: spec.argument === "moments" ? text("parent") : studyOf(),
+    moments: spec.argument === "moments" ? first : null,
+    child: text("child"),
     group: spec.argument === "group or study" && !isFile ? first : null,
     code: spec.argument === "code" ? first : null,
     topic: spec.argument === "topic" ? first : null,
+    structure: text("structure"),
+    block: text("block"),
+    syntax: options["syntax"] === true,
     k: text("k"),
     within: text("within"),
     from: text("from"),
@@ -66,6 +77,16 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
     qMax: text("qMax"),
     zeroShift: text("zeroShift"),
     cellScale: text("cellScale"),
+    exclude: (options["exclude"] as readonly string[] | undefined) ?? null,
+    impurities: (options["impurity"] as readonly string[] | undefined) ?? null,
+    nuclear: text("nuclear"),
+    ...(options["weighIntensities"] === true ? { weighIntensities: true } : {}),
+    arms: text("arms"),
+    together: (options["together"] as readonly string[] | undefined) ?? null,
+    onSites: (options["onSite"] as readonly string[] | undefined) ?? null,
+    limit: text("limit"),
+    configuration: text("configuration"),
+    cif: text("cif"),
     branches: text("branches"),
     files: spec.name === "run" && text("out") !== null,
   };

@@ -1,8 +1,9 @@
 import { resolve } from "node:path";
-import { KvaneError, type Problem, problem } from "@kvane/core/errors";
-import { answer, exitStatusOf, plannedCommands, type Request, version } from "@kvane/core/job";
+import { KvaneError, type Problem, problem, problemCodes } from "@kvane/core/errors";
+import { answer, exitStatusOf, type JobHost, plannedCommands, type Request, version } from "@kvane/core/job";
+import { type HelpRecord, jsonText } from "@kvane/core/reports";
 import { commandSpecs } from "./commands/index.js";
-import { deliver, type RefusedAnswer, refusedAnswer } from "./deliver.js";
+import { checkForm, deliver, packed, type RefusedAnswer, refusedAnswer } from "./deliver.js";
 import { problemsText } from "./errors.js";
 import { type CommandHost, commandHost } from "./host.js";
 import { checkFree } from "./output.js";
@@ -69,9 +70,21 @@ function helpOfCommand(words: readonly string[]): readonly string[] {
   return named ? [topic as string, "--help"] : words;
 }
 
+/** Prints the script of a shell, made from the table of commands. */
+async function writeCompletion(shell: string | null, host: JobHost, write: Surroundings["write"]): Promise<number> {
+  const { completionScript } = await import("./completion.js");
+  const { topics } = ((await answer({ command: "help" }, host)).result ?? { topics: [] }) as HelpRecord;
+  const words = { topics: [...topics, ...commandSpecs.map(({ name }) => name)], codes: Object.keys(problemCodes) };
+  write(completionScript(shell, commandSpecs, words));
+  return 0;
+}
+
 async function execute(line: ParsedLine, surroundings: Surroundings): Promise<number> {
+  if (line.spec.name === "completion")
+    return writeCompletion(line.argument, commandHost(surroundings, undefined), surroundings.write);
   const request = requestFrom(line);
   const wishes = wishesFrom(line);
+  checkForm(line.spec.name, wishes);
   if (wishes.out !== null)
     checkFree({ shown: wishes.out, full: resolve(surroundings.folder, wishes.out) }, wishes.force);
   const progress = progressLine(surroundings, wishes.quiet);
@@ -79,15 +92,17 @@ async function execute(line: ParsedLine, surroundings: Surroundings): Promise<nu
   const answered = await answer(request, host);
   progress.clear();
   if (answered.errors.length > 0) return refuse(answered, request, wishes.json, host, surroundings);
+  const parcel = await packed(answered, wishes, surroundings);
   // A cancel that came during the last step is heard only after a turn of the event loop.
   await new Promise((resolve) => setImmediate(resolve));
   if (surroundings.signal.aborted) {
     const cancelled = refusedAnswer(line.spec.name, [interrupted]);
     return refuse(cancelled, request, wishes.json, host, surroundings);
   }
-  deliver(answered, wishes, surroundings);
-  // A table has no room for warnings; the report and the JSON hold them.
-  if (wishes.csv && !wishes.quiet && answered.warnings.length > 0)
+  deliver(parcel, wishes, surroundings);
+  // A table has no room for warnings, nor has a drafted study; the report and the JSON hold them.
+  const bare = wishes.csv || (line.spec.name === "study" && !wishes.json);
+  if (bare && !wishes.quiet && answered.warnings.length > 0)
     surroundings.writeError(problemsText(answered.warnings, "warning", (place) => host.sourceLine(request, place)));
   return 0;
 }
@@ -100,7 +115,7 @@ function refuse(
   host: CommandHost | null,
   surroundings: Surroundings,
 ): number {
-  if (asJson) deliver(answered, { json: true, csv: false, out: null, force: false, quiet: true }, surroundings);
+  if (asJson) surroundings.write(jsonText(answered));
   surroundings.writeError(problemsText(answered.errors, "error", (place) => host?.sourceLine(request, place) ?? null));
   return exitStatusOf(answered.errors[0]?.code ?? "internal-fault");
 }

@@ -10,6 +10,8 @@ export interface Surroundings {
   readonly writeError: (text: string) => void;
   /** Whether the error output is a terminal, where progress can be shown. */
   readonly showsProgress: boolean;
+  /** Columns of the terminal that `write` goes to; null where it goes elsewhere, and pages have their usual width. */
+  readonly columns?: number | null;
   readonly standardInput: () => Promise<Uint8Array>;
   /** Where relative file names count from. */
   readonly folder: string;
@@ -24,6 +26,9 @@ export function processSurroundings(signal: { readonly aborted: boolean }): Surr
     writeError: writer(() => process.stderr),
     get showsProgress() {
       return process.stderr.isTTY === true;
+    },
+    get columns() {
+      return process.stdout.isTTY === true ? process.stdout.columns : null;
     },
     standardInput: async () => {
       const parts: Uint8Array[] = [];

@@ -13,6 +13,7 @@ const faults: { readonly [code: string]: SystemFault } = {
   EPERM: { found: "no permission", remedy: "choose another place, or change the permissions" },
   EROFS: { found: "a place that can only be read", remedy: "choose another place" },
   ENOSPC: { found: "no room left on the device", remedy: "make room, or choose another place" },
+  EFBIG: { found: "a limit on the size of files", remedy: "raise the limit, or choose another place" },
   EDQUOT: { found: "no room left in the quota", remedy: "make room, or choose another place" },
   ENAMETOOLONG: { found: "a name that is too long", remedy: "choose a shorter name" },
   ELOOP: { found: "links that lead in a circle", remedy: "correct the path" },

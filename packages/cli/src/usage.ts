@@ -87,7 +87,7 @@ function excessProblem(words: readonly string[]): Problem | null {
       ...excess,
       remedy: `ask for one at a time: kvane ${command} ${texts[0] ?? ""}`,
     });
-  const files = texts.some((text) => /\.(ya?ml|cif)$/i.test(text)) || ["run", "check"].includes(command);
+  const files = texts.some((text) => /\.(ya?ml|cif)$/i.test(text)) || ["run", "report", "check"].includes(command);
   return files
     ? problem("invalid-argument", `\`kvane ${command}\` takes one study`, {
         where: { argument: "STUDY" },

@@ -16,4 +16,11 @@ export const helpCommands: readonly CommandSpec[] = [
     options: ["json"],
     examples: ["kvane help conventions"],
   },
+  {
+    name: "completion",
+    summary: "completion of commands and options for bash, zsh or fish",
+    argument: "shell",
+    options: [],
+    examples: ["kvane completion bash"],
+  },
 ];

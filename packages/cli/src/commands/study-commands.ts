@@ -1,4 +1,5 @@
 import type { CommandSpec } from "../command-spec.js";
+import { outputOptions } from "../options.js";
 
 /** The whole job and its study file. */
 export const studyCommands: readonly CommandSpec[] = [
@@ -7,6 +8,8 @@ export const studyCommands: readonly CommandSpec[] = [
     summary: "the whole job: k from the peaks or as given, little group, irreps, modes, satellites",
     argument: "study",
     options: [
+      "structure",
+      "block",
       "example",
       "k",
       "peaks",
@@ -18,6 +21,10 @@ export const studyCommands: readonly CommandSpec[] = [
       "maxDimension",
       "zeroShift",
       "cellScale",
+      "exclude",
+      "impurities",
+      "nuclear",
+      "weighIntensities",
       "branches",
       "json",
       "folder",
@@ -27,10 +34,44 @@ export const studyCommands: readonly CommandSpec[] = [
     examples: ["kvane run --example", "kvane run --example --k 0,0,1/2"],
   },
   {
-    name: "check",
-    summary: "validate a study and the files it names",
+    name: "report",
+    summary: "the report of the whole job alone: --out FILE ending in .html, .md, .txt or .json",
     argument: "study",
-    options: ["example", "json", "out", "force", "quiet"],
+    options: [
+      "structure",
+      "block",
+      "example",
+      "k",
+      "peaks",
+      "as",
+      "wavelength",
+      "tolerance",
+      "unmatched",
+      "qMax",
+      "maxDimension",
+      "zeroShift",
+      "cellScale",
+      "exclude",
+      "impurities",
+      "nuclear",
+      "weighIntensities",
+      "branches",
+      ...outputOptions,
+    ],
+    examples: ["kvane report --example"],
+  },
+  {
+    name: "study",
+    summary: "write a commented study to start from",
+    argument: "cif",
+    options: ["block", "example", ...outputOptions],
+    examples: ["kvane study --example"],
+  },
+  {
+    name: "check",
+    summary: "validate a study and the files it names, or read any CIF",
+    argument: "study",
+    options: ["structure", "block", "syntax", "example", "json", "out", "force", "quiet"],
     examples: ["kvane check --example"],
   },
 ];

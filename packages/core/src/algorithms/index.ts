@@ -9,4 +9,12 @@ export { breathe, breathMilliseconds } from "./breathe.js";
 export { choleskyFactor, choleskyInverse, choleskyLogDeterminant, choleskySolve } from "./cholesky.js";
 export { gaussNewton, type LeastSquares, type WeightedResiduals } from "./gauss-newton.js";
 export { type HalfSpace, type Polytope, polytope } from "./half-spaces.js";
+export {
+  type HermitianEigen,
+  type HermitianMatrix,
+  hermitianAbove,
+  hermitianEigen,
+  hermitianMatrix,
+} from "./hermitian.js";
+export { type LeastSquaresMinimum, levenbergMarquardt } from "./levenberg-marquardt.js";
 export type { CancelSignal, WorkHost } from "./work-host.js";

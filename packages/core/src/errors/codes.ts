@@ -25,12 +25,25 @@ export const problemCodes = {
   "file-not-found": "A named file does not exist.",
   "file-unreadable": "A file exists but cannot be read as text.",
   "file-empty": "A file holds nothing to work with.",
+  "file-too-large": "A file is larger than what can be meant for kvane.",
+  "cif-syntax": "A CIF breaks the grammar of CIF 1.1 or 2.0 at the place named.",
+  "cif-characters": "A CIF has characters that its version of the standard does not allow.",
+  "cif-incomplete": "A data name of a CIF has no value, or the values of a loop do not make whole rows.",
+  "cif-duplicate": "A data name, a block or a key stands twice where it may stand once.",
+  "cif-block": "A CIF has several blocks with structures, or none of the name that was asked for.",
+  "cif-missing": "A CIF lacks something that is needed: the cell, the symmetry or the sites.",
+  "cif-value": "A value of a CIF is not of the kind that its data name asks for.",
+  "cif-contradiction": "Two statements of a CIF contradict each other; it is said which one was taken.",
+  "cif-doubtful":
+    "Something in a CIF needs a look: sites that are split, shared, partly occupied or without coordinates.",
   "output-exists": "The output file or folder exists already; it is not overwritten unasked.",
   "output-failed": "The output could not be written; nothing partial was left.",
   "unknown-key": "A study file has a key that is not part of the format.",
   "missing-key": "A study file lacks a required key.",
   "wrong-type": "A value in a study file has the wrong type.",
   "invalid-peak": "A row of a peak list has a word in a number column, a missing value or an impossible value.",
+  "invalid-scan":
+    "A temperature scan has a word in a number column, a row without a temperature, or no column besides the temperature.",
   "invalid-component":
     "A row of a list of Fourier components names no atom of the site, or one twice, or has not three complex numbers.",
   "peak-kind-unknown": "It is not said whether positions are d, Q, 2theta or hkl.",
@@ -39,6 +52,7 @@ export const problemCodes = {
   "too-few-peaks": "The list has too few peaks for what was asked.",
   "k-not-determined": "The matched peaks do not fix all free components of the wave vector.",
   "uncertainties-understated": "The peaks scatter about their lines by much more than their uncertainties say.",
+  "shared-line": "Two peaks have only one and the same line of the wave vector within their tolerance.",
   "search-stopped": "The search for k ended before every box was settled; what was not looked at is stated.",
   "search-saturated": "So many wave vectors fit the peaks that not all of them were weighed.",
   "half-wavelength":

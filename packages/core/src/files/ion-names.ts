@@ -8,6 +8,11 @@ const elements = new Set(
   ).split(" "),
 );
 
+/** Whether a text is the symbol of an element, in its proper case; D counts as one. */
+export function isElement(symbol: string): boolean {
+  return elements.has(symbol);
+}
+
 /** What is wrong with the name of an ion, with what to do; null for an element with or without a charge, `Fe3+`. */
 export function ionFault(text: string): { readonly message: string; readonly remedy: string } | null {
   const found = /^([A-Za-z]{1,2})(?:(\d{0,2})([+\-\u2212])|(?:([+\-\u2212])(\d{1,2}))|(\d{1,2}))?$/.exec(text);

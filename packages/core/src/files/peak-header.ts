@@ -1,7 +1,7 @@
 import type { PeakKind } from "../search/index.js";
 import { readNumber } from "./number-text.js";
 import { plainName, readPeakKind } from "./peak-kind.js";
-import type { Field, Row } from "./peak-rows.js";
+import { decimalCommaOf, type Field, type Row } from "./peak-rows.js";
 import { unitFactor, unitNames } from "./peak-units.js";
 import { note, type ProblemList } from "./problem-list.js";
 
@@ -37,6 +37,8 @@ const columnWords =
  */
 export function isHeader(row: Row): boolean {
   if (readNumber(row.fields[0]?.text ?? "")) return false;
+  // `3,10;0,01` is a row with decimal commas, which are refused as such.
+  if (decimalCommaOf(row) !== null && !hasColumnName(row)) return false;
   return hasColumnName(row) || !row.fields.some((field) => readNumber(field.text) || noNumber.test(field.text));
 }
 

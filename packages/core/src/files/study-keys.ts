@@ -1,12 +1,29 @@
 /** The keys of a study file by section; `""` is the top. A test holds the list against the manual. */
 export const studyKeys = {
-  "": ["title", "structure", "group", "cell", "sites", "k", "peaks", "search", "intensities", "exchange", "exclude"],
+  "": [
+    "title",
+    "structure",
+    "group",
+    "cell",
+    "sites",
+    "k",
+    "peaks",
+    "search",
+    "intensities",
+    "exchange",
+    "onset",
+    "exclude",
+    "impurities",
+  ],
+  structure: ["file", "block"],
   cell: ["a", "b", "c", "alpha", "beta", "gamma"],
   sites: ["label", "ion", "at", "spin"],
-  peaks: ["file", "as", "wavelength", "tolerance", "unit"],
-  search: ["unmatched", "max-dimension", "tolerance", "zero-shift", "cell-scale", "q-max"],
+  peaks: ["file", "as", "wavelength", "tolerance", "unit", "nuclear"],
+  search: ["unmatched", "max-dimension", "tolerance", "zero-shift", "cell-scale", "q-max", "weigh-intensities"],
   intensities: ["file"],
-  exchange: ["shell", "j"],
+  exchange: ["shell", "bond", "between", "j"],
+  onset: ["file"],
+  impurities: ["name", "group", "cell"],
 } as const;
 
 export type StudySectionName = keyof typeof studyKeys;

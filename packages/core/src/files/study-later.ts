@@ -1,6 +1,8 @@
 import { type Problem, problem } from "../errors/index.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { openSection } from "./study-section.js";
+import { readCell } from "./study-structure.js";
+import type { StudyImpurity } from "./study-types.js";
 import { asList, asNumber, asRecord, asText, type NumberLimits } from "./study-values.js";
 import { where } from "./yaml-convert.js";
 import type { TreeNode } from "./yaml-tree.js";
@@ -14,28 +16,6 @@ export function readIntensities(node: TreeNode, problems: ProblemList): { readon
 }
 
 const finite: NumberLimits = { expected: "a number", allows: () => true };
-
-const shellNumber: NumberLimits = {
-  expected: "the number of a shell, counted from 1",
-  allows: (value) => Number.isSafeInteger(value) && value >= 1,
-};
-
-/** `exchange: [{shell, j}]`. */
-export function readExchange(node: TreeNode, problems: ProblemList): { shell: number; j: number }[] | null {
-  const example = "for example - {shell: 1, j: -1.0}";
-  const list = asList(problems, node, "a list of shells", example);
-  if (!list) return null;
-  return list.items.flatMap((item) => {
-    const record = asRecord(problems, item, "a shell with `shell` and `j`", example);
-    if (!record) return [];
-    const section = openSection("exchange", record, problems);
-    const shellNode = section.need("shell", shellNumber.expected);
-    const jNode = section.need("j", finite.expected);
-    const shell = shellNode && asNumber(problems, shellNode, shellNumber);
-    const j = jNode && asNumber(problems, jNode, finite);
-    return shell === null || j === null ? [] : [{ shell, j }];
-  });
-}
 
 /** `exclude: [[from, to]]`. */
 export function readExclude(node: TreeNode, problems: ProblemList): (readonly [number, number])[] | null {
@@ -56,6 +36,26 @@ export function readExclude(node: TreeNode, problems: ProblemList): (readonly [n
       remedy: example,
     });
     return [];
+  });
+}
+
+/** `impurities: [{name, group, cell}]`. */
+export function readImpurities(node: TreeNode, problems: ProblemList): StudyImpurity[] {
+  const example =
+    "for example - {name: MnO, group: F m -3 m, cell: {a: 4.445, b: 4.445, c: 4.445, alpha: 90, beta: 90, gamma: 90}}";
+  const list = asList(problems, node, "a list of other phases", example);
+  if (!list) return [];
+  return list.items.flatMap((item) => {
+    const record = asRecord(problems, item, "a phase with name, group and cell", example);
+    if (!record) return [];
+    const section = openSection("impurities", record, problems);
+    const nameNode = section.need("name", "what the phase is called");
+    const groupNode = section.need("group", "its space group");
+    const cellNode = section.need("cell", "its cell");
+    const name = nameNode && asText(problems, nameNode, "what the phase is called");
+    const group = groupNode && asText(problems, groupNode, "a space group such as F m -3 m");
+    const cell = cellNode && readCell(cellNode, problems);
+    return name === null || group === null || cell === null ? [] : [{ name, group, cell }];
   });
 }
 

@@ -17,6 +17,13 @@ export function checkMeaning(study: Study, problems: ProblemList): void {
       if (known) checkCellAgainstGroup(cell, known);
     });
   }
+  for (const [index, phase] of study.impurities.entries()) {
+    const its = tried<SpaceGroup>(study, `impurities[${index}].group`, problems, () => parseGroup(phase.group));
+    tried(study, `impurities[${index}].cell`, problems, () => {
+      checkCell(phase.cell);
+      if (its) checkCellAgainstGroup(phase.cell, its);
+    });
+  }
   for (const [index, text] of k?.entries() ?? []) {
     tried(study, `k[${index}]`, problems, () => parseWaveVector(text));
   }

@@ -4,14 +4,14 @@ import { unitFactor, unitNames } from "./peak-units.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { openSection } from "./study-section.js";
 import type { StudyPeaks, StudySearch } from "./study-types.js";
-import { asNumber, asRecord, asText, describe, type NumberLimits, noteNumber } from "./study-values.js";
+import { asFlag, asNumber, asRecord, asText, describe, type NumberLimits, noteNumber } from "./study-values.js";
 import { where } from "./yaml-convert.js";
 import type { TreeNode } from "./yaml-tree.js";
 
 const positive = (expected: string): NumberLimits => ({ expected, allows: (value) => value > 0 });
 const notNegative = (expected: string): NumberLimits => ({ expected, allows: (value) => value >= 0 });
 
-/** `peaks: {file, as, wavelength, tolerance, unit}`; the file is needed. */
+/** `peaks: {file, as, wavelength, tolerance, unit, nuclear}`; the file is needed. */
 export function readPeaks(node: TreeNode, problems: ProblemList): StudyPeaks | null {
   const example = "for example peaks: {file: satellites.csv, as: two-theta, wavelength: 2.41}";
   const record = asRecord(problems, node, "a section with `file`", example);
@@ -29,7 +29,9 @@ export function readPeaks(node: TreeNode, problems: ProblemList): StudyPeaks | n
   const tolerance = number("tolerance", positive("a half-width above 0 in the unit of the positions"));
   const unit = section.get("unit");
   const unitText = unit && readUnit(unit, kind, problems);
-  return file === null ? null : { file, kind, wavelengthAngstrom, tolerance, unit: unitText };
+  const nuclearNode = section.get("nuclear");
+  const nuclear = nuclearNode && asText(problems, nuclearNode, "the name of a list of nuclear lines");
+  return file === null ? null : { file, kind, wavelengthAngstrom, tolerance, unit: unitText, nuclear };
 }
 
 function readKind(node: TreeNode, problems: ProblemList): PeakKind | null {
@@ -68,6 +70,7 @@ export const emptySearch: StudySearch = {
   zeroShift: null,
   cellScale: null,
   qMax: null,
+  weighIntensities: null,
 };
 
 const wholeNumber: NumberLimits = {
@@ -75,7 +78,7 @@ const wholeNumber: NumberLimits = {
   allows: (value) => Number.isSafeInteger(value) && value >= 0,
 };
 
-/** `search: {unmatched, max-dimension, tolerance, zero-shift, cell-scale, q-max}`. */
+/** `search: {unmatched, max-dimension, tolerance, zero-shift, cell-scale, q-max, weigh-intensities}`. */
 export function readSearch(node: TreeNode, problems: ProblemList): StudySearch {
   const record = asRecord(problems, node, "a section with keys", "for example search: {unmatched: 1}");
   if (!record) return emptySearch;
@@ -85,6 +88,7 @@ export function readSearch(node: TreeNode, problems: ProblemList): StudySearch {
     return value && asNumber(problems, value, limits);
   };
   const dimension = section.get("max-dimension");
+  const weigh = section.get("weigh-intensities");
   return {
     unmatched: number("unmatched", wholeNumber),
     maxDimension: dimension && readDimension(dimension, problems),
@@ -95,6 +99,7 @@ export function readSearch(node: TreeNode, problems: ProblemList): StudySearch {
       allows: (value) => value >= 0 && value < 1,
     }),
     qMax: number("q-max", positive("a Q in 1/Å above 0")),
+    weighIntensities: weigh && asFlag(problems, weigh),
   };
 }
 

@@ -17,6 +17,23 @@ import {
 import { where } from "./yaml-convert.js";
 import type { TreeNode } from "./yaml-tree.js";
 
+/** `structure: FILE.cif` or `structure: {file, block}`; a file name alone where it has one structure. */
+export function readStructureFile(
+  node: TreeNode,
+  problems: ProblemList,
+): { readonly file: string; readonly block: string | null } | null {
+  if (node.shape !== "record") {
+    const file = asText(problems, node, "the name of a CIF");
+    return file === null ? null : { file, block: null };
+  }
+  const section = openSection("structure", node, problems);
+  const fileNode = section.need("file", "the name of a CIF");
+  const file = fileNode && asText(problems, fileNode, "the name of a CIF");
+  const blockNode = section.get("block");
+  const block = blockNode && asText(problems, blockNode, "the name of a data block");
+  return file === null ? null : { file, block };
+}
+
 const length: NumberLimits = { expected: "a length in Å above 0", allows: (value) => value > 0, code: "invalid-cell" };
 
 const angle: NumberLimits = {

@@ -28,6 +28,8 @@ export interface StudyPeaks {
   readonly tolerance: number | null;
   /** Unit of the positions, e.g. `nm`. */
   readonly unit: string | null;
+  /** A list of nuclear lines measured in the same way, relative to the study. */
+  readonly nuclear: string | null;
 }
 
 /** Wishes for the search; what is null is not said in the study. */
@@ -42,6 +44,25 @@ export interface StudySearch {
   readonly cellScale: number | null;
   /** Å⁻¹. */
   readonly qMax: number | null;
+  /** Whether weak peaks are taken as likelier strays than strong ones. */
+  readonly weighIntensities: boolean | null;
+}
+
+/** Another phase in the sample. */
+export interface StudyImpurity {
+  readonly name: string;
+  /** GROUP as on the command line. */
+  readonly group: string;
+  readonly cell: Cell;
+}
+
+/** One exchange constant. */
+export interface StudyCoupling {
+  /** `2` for a whole shell, counted from 1, `2b` for one of its kinds of bonds. */
+  readonly bond: string;
+  /** Only bonds between sites of these labels; null for all. */
+  readonly between: readonly [string, string] | null;
+  readonly j: number;
 }
 
 /** A study file as a record: values where they are given, null for sections that are left out. */
@@ -50,6 +71,8 @@ export interface Study {
   readonly title: string | null;
   /** File name of a CIF with cell, group and sites, relative to the study. */
   readonly structure: string | null;
+  /** Which data block of that CIF. */
+  readonly structureBlock: string | null;
   /** GROUP as on the command line. */
   readonly group: string | null;
   readonly cell: Cell | null;
@@ -59,10 +82,14 @@ export interface Study {
   readonly peaks: StudyPeaks | null;
   readonly search: StudySearch;
   readonly intensities: { readonly file: string } | null;
-  /** Exchange constants by shell of neighbours, counted from 1. */
-  readonly exchange: readonly { readonly shell: number; readonly j: number }[] | null;
+  /** Exchange constants of shells of neighbours or of single kinds of bonds. */
+  readonly exchange: readonly StudyCoupling[] | null;
+  /** A temperature scan, relative to the study. */
+  readonly onset: { readonly file: string } | null;
   /** Ranges of positions, in the unit of the peaks, that are not to be used. */
   readonly exclude: readonly (readonly [number, number])[] | null;
+  /** Other phases, whose lines are no satellites. */
+  readonly impurities: readonly StudyImpurity[];
   /** Where each value stands, by its path: `cell.alpha`, `sites[0].at[2]`, `k[1]`. */
   readonly places: Readonly<Record<string, StudyPlace>>;
   /** Sections that this version reads but does not use. */

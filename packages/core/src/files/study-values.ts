@@ -51,6 +51,13 @@ export function asText(problems: ProblemList, node: TreeNode, expected = "a text
   return null;
 }
 
+/** `true` or `false`. */
+export function asFlag(problems: ProblemList, node: TreeNode): boolean | null {
+  if (node.shape === "text" && (node.text === "true" || node.text === "false")) return node.text === "true";
+  noteType(problems, node, "true or false");
+  return null;
+}
+
 /** What a number may be besides finite. */
 export interface NumberLimits {
   /** In words, e.g. `a length in Å above 0`. */

@@ -1,10 +1,11 @@
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
 import { readableText } from "./readable-text.js";
-import { laterSections, readExchange, readExclude, readIntensities } from "./study-later.js";
+import { readExchange, readOnset } from "./study-exchange.js";
+import { laterSections, readExclude, readImpurities, readIntensities } from "./study-later.js";
 import { checkMeaning } from "./study-meaning.js";
 import { emptySearch, readPeaks, readSearch } from "./study-peaks.js";
 import { openSection, type Section } from "./study-section.js";
-import { readCell, readSites } from "./study-structure.js";
+import { readCell, readSites, readStructureFile } from "./study-structure.js";
 import type { Study, StudyPlace } from "./study-types.js";
 import { asRecord, asText } from "./study-values.js";
 import { readWaveVectors } from "./study-wave-vectors.js";
@@ -61,13 +62,15 @@ function readStudy(section: Section, file: string, places: Map<string, StudyPlac
     const node = section.get(key);
     if (structure && node) noteConflict(key, node, problems);
   }
+  const cif = read("structure", readStructureFile);
   const k = read("k", readWaveVectors);
   for (const [index, { place }] of k?.entries() ?? []) places.set(`k[${index}]`, { ...place, path: `k[${index}]` });
-  const later = ["structure", "intensities", "exchange", "exclude"].map((key) => [key, section.get(key)] as const);
+  const later = ["intensities"].map((key) => [key, section.get(key)] as const);
   return {
     file,
     title: text("title", "a title"),
-    structure: text("structure", "the name of a CIF"),
+    structure: cif?.file ?? null,
+    structureBlock: cif?.block ?? null,
     group: text("group", "a space group such as P n m a"),
     cell: read("cell", readCell),
     sites: read("sites", readSites) ?? [],
@@ -76,7 +79,9 @@ function readStudy(section: Section, file: string, places: Map<string, StudyPlac
     search: read("search", readSearch) ?? emptySearch,
     intensities: read("intensities", readIntensities),
     exchange: read("exchange", readExchange),
+    onset: read("onset", readOnset),
     exclude: read("exclude", readExclude),
+    impurities: read("impurities", readImpurities) ?? [],
     places: Object.fromEntries(places),
     warnings: laterSections(Object.fromEntries(later), file),
   };

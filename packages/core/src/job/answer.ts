@@ -13,23 +13,25 @@ import type { Work } from "./work.js";
  */
 export async function answer(request: Request, host: JobHost): Promise<Envelope<object>> {
   const entry = Object.hasOwn(commandTable, request.command) ? commandTable[request.command] : undefined;
-  const work: Work = { request, host, study: null, assumed: [], warnings: [] };
+  const work: Work = { request, host, study: null, structure: null, assumed: [], warnings: [] };
   const frame = { kvane: version, format: 1, command: request.command, input: {} as InputRecord } as const;
   try {
     Object.assign(frame.input, inputRecord(request, entry));
     if (entry === undefined) return refuse(request.command);
-    const study = await readStudy(request, host);
-    const result = await (await entry.load())({ ...work, study });
+    const files = await readFiles(request, host);
+    const result = await (await entry.load())({ ...work, ...files });
     return { ...frame, result, errors: [], warnings: work.warnings, assumed: work.assumed };
   } catch (error) {
     return { ...frame, result: null, errors: problemsOf(error), warnings: work.warnings, assumed: work.assumed };
   }
 }
 
-/** The study is read once, before the command, and its reader is loaded only then. */
-async function readStudy(request: Request, host: JobHost) {
-  const path = request.study ?? null;
-  return path === null ? null : (await import("./inputs/study-input.js")).studyFrom(path, host, request.command);
+/** The study and the CIF are read once, before the command, and their readers are loaded only then. */
+async function readFiles(request: Request, host: JobHost): Promise<Pick<Work, "study" | "structure">> {
+  const named = [request.study, request.structure, request.block].some((one) => typeof one === "string");
+  return named
+    ? (await import("./inputs/structure-input.js")).filesOf(request, host)
+    : { study: null, structure: null };
 }
 
 /** What was asked, tidied: blanks collapsed, null for what was not given. */

@@ -8,55 +8,98 @@ export interface CommandEntry {
   readonly load: () => Promise<(work: Work) => Promise<object> | object>;
 }
 
+const structureFields = ["structure", "block"] as const;
 const peakFields = ["peaks", "as", "wavelength", "tolerance", "unmatched", "qMax"] as const;
 const conventionFields = ["exponent", "phase", "factor", "components"] as const;
 const searchFields = ["maxDimension", "zeroShift", "cellScale"] as const;
+const asideFields = ["exclude", "impurities", "nuclear", "weighIntensities"] as const;
+
+const configurationFields = [
+  "study",
+  "group",
+  ...structureFields,
+  "k",
+  "sites",
+  "cell",
+  "arms",
+  "together",
+  "onSites",
+  "limit",
+] as const;
 
 /** The commands of this version, in the order of the manual. */
 export const commandTable: { readonly [command: string]: CommandEntry } = {
   run: {
-    takes: ["study", "k", ...peakFields, ...searchFields, "branches", "files"],
+    takes: ["study", ...structureFields, "k", ...peakFields, ...asideFields, ...searchFields, "branches", "files"],
+    load: async () => (await import("./run-study.js")).runStudy,
+  },
+  study: {
+    takes: ["study", ...structureFields],
+    load: async () => (await import("./commands/study.js")).studyCommand,
+  },
+  report: {
+    takes: ["study", ...structureFields, "k", ...peakFields, ...asideFields, ...searchFields, "branches"],
     load: async () => (await import("./run-study.js")).runStudy,
   },
   check: {
-    takes: ["study"],
+    takes: ["study", ...structureFields, "syntax"],
     load: async () => (await import("./commands/check.js")).checkCommand,
   },
   ops: {
-    takes: ["study", "group"],
+    takes: ["study", "group", ...structureFields],
     load: async () => (await import("./commands/ops.js")).opsCommand,
   },
   atlas: {
-    takes: ["study", "group", "k", "cell", "within"],
+    takes: ["study", "group", ...structureFields, "k", "cell", "within"],
     load: async () => (await import("./commands/atlas.js")).atlasCommand,
   },
   star: {
-    takes: ["study", "group", "k"],
+    takes: ["study", "group", ...structureFields, "k"],
     load: async () => (await import("./commands/star.js")).starCommand,
   },
   irreps: {
-    takes: ["study", "group", "k", "full"],
+    takes: ["study", "group", ...structureFields, "k", "full"],
     load: async () => (await import("./commands/irreps.js")).irrepsCommand,
   },
   compatibility: {
-    takes: ["study", "group", "from", "to"],
+    takes: ["study", "group", ...structureFields, "from", "to"],
     load: async () => (await import("./commands/compatibility.js")).compatibilityCommand,
   },
   modes: {
-    takes: ["study", "group", "k", "sites", "cell", "polar", "star", ...conventionFields, "read"],
+    takes: ["study", "group", ...structureFields, "k", "sites", "cell", "polar", "star", ...conventionFields, "read"],
     load: async () => (await import("./commands/modes.js")).modesCommand,
   },
+  configurations: {
+    takes: configurationFields,
+    load: async () => (await import("./commands/configurations.js")).configurationsCommand,
+  },
+  decompose: {
+    takes: ["moments", "study", "block", "child"],
+    load: async () => (await import("./commands/decompose.js")).decomposeCommand,
+  },
+  export: {
+    takes: [...configurationFields, "configuration", "cif"],
+    load: async () => (await import("./commands/export.js")).exportCommand,
+  },
   satellites: {
-    takes: ["study", "group", "cell", "k", "qMax", "wavelength"],
+    takes: ["study", "group", ...structureFields, "cell", "k", "qMax", "wavelength"],
     load: async () => (await import("./commands/satellites.js")).satellitesCommand,
   },
   index: {
-    takes: ["study", "group", "cell", "k", ...peakFields],
+    takes: ["study", "group", ...structureFields, "cell", "k", ...peakFields, ...asideFields],
     load: async () => (await import("./commands/index-peaks.js")).indexCommand,
   },
   locate: {
-    takes: ["study", "group", "cell", ...peakFields, ...searchFields],
+    takes: ["study", "group", ...structureFields, "cell", ...peakFields, ...asideFields, ...searchFields],
     load: async () => (await import("./commands/locate.js")).locateCommand,
+  },
+  exchange: {
+    takes: ["study", "group", ...structureFields, "cell", "sites", "k", "constants", "vary", "shells"],
+    load: async () => (await import("./commands/exchange.js")).exchangeCommand,
+  },
+  onset: {
+    takes: ["study", "scan", "reduced"],
+    load: async () => (await import("./commands/onset.js")).onsetCommand,
   },
   explain: {
     takes: ["code"],
@@ -69,14 +112,4 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
 };
 
 /** Commands of the interface that this version answers with `not-built`. */
-export const plannedCommands: readonly string[] = [
-  "study",
-  "configurations",
-  "decompose",
-  "weigh",
-  "exchange",
-  "onset",
-  "export",
-  "report",
-  "batch",
-];
+export const plannedCommands: readonly string[] = ["weigh", "batch"];

@@ -12,6 +12,8 @@ const warningsOnly: readonly ProblemCode[] = [
   "search-saturated",
   "half-wavelength",
   "no-candidate",
+  "cif-contradiction",
+  "cif-doubtful",
 ];
 
 /**

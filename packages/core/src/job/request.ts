@@ -9,6 +9,12 @@ export interface Request {
   /** Path of a study file, `-` for standard input. */
   readonly study?: string | null;
   readonly group?: string | null;
+  /** Path of a CIF with cell, group and sites. */
+  readonly structure?: string | null;
+  /** Which data block of the CIF. */
+  readonly block?: string | null;
+  /** `check`: the grammar of a CIF alone. */
+  readonly syntax?: boolean;
   readonly k?: string | null;
   /** `atlas`: how near in Å⁻¹ special k are listed. */
   readonly within?: string | null;
@@ -40,6 +46,38 @@ export interface Request {
   readonly qMax?: string | null;
   readonly zeroShift?: string | null;
   readonly cellScale?: string | null;
+  /** Ranges of positions that are set aside, each `FROM TO` in the unit of the list. */
+  readonly exclude?: readonly string[] | null;
+  /** Other phases, each `NAME; GROUP; CELL`. */
+  readonly impurities?: readonly string[] | null;
+  /** Path of a list of nuclear lines measured in the same way as the peaks. */
+  readonly nuclear?: string | null;
+  /** Take weak peaks as likelier strays than strong ones. */
+  readonly weighIntensities?: boolean;
+  /** `configurations`: which arms of the star take part: pair, all or numbers from 1. */
+  readonly arms?: string | null;
+  /** `configurations`: irreps that are taken at once, each a set such as `Γ1+Γ3`. */
+  readonly together?: readonly string[] | null;
+  /** `configurations`: which irreps a site may carry, each `SITE: IRREPS`. */
+  readonly onSites?: readonly string[] | null;
+  /** `configurations`: the largest number of elements of an image group. */
+  readonly limit?: string | null;
+  /** `decompose`: path of a magnetic CIF, and its axes in those of the parent where the file does not say them. */
+  readonly moments?: string | null;
+  readonly child?: string | null;
+  /** `export`: id of a configuration, and the version of the standard. */
+  readonly configuration?: string | null;
+  readonly cif?: string | null;
+  /** `exchange`: constants, each `BOND J` or `BOND LABEL LABEL J`. */
+  readonly constants?: readonly string[] | null;
+  /** `exchange`: constants that run through a range, each `BOND FROM TO COUNT`. */
+  readonly vary?: readonly string[] | null;
+  /** `exchange`: how many shells of neighbours are listed. */
+  readonly shells?: string | null;
+  /** `onset`: path of a temperature scan. */
+  readonly scan?: string | null;
+  /** `onset`: the largest (T_N − T)/T_N of a fit. */
+  readonly reduced?: string | null;
   /** `run`: how many tied candidates are followed. */
   readonly branches?: string | null;
   /** `run`: list the names of the files of a result folder in the result. */
@@ -66,6 +104,9 @@ export interface JobHost extends WorkHost {
 export const argumentNames: { readonly [field in RequestField]: string } = {
   study: "STUDY",
   group: "GROUP",
+  structure: "--structure",
+  block: "--block",
+  syntax: "--syntax",
   k: "--k",
   within: "--within",
   from: "--from",
@@ -89,6 +130,23 @@ export const argumentNames: { readonly [field in RequestField]: string } = {
   qMax: "--q-max",
   zeroShift: "--zero-shift",
   cellScale: "--cell-scale",
+  exclude: "--exclude",
+  impurities: "--impurity",
+  nuclear: "--nuclear",
+  weighIntensities: "--weigh-intensities",
+  arms: "--arms",
+  together: "--together",
+  onSites: "--on-site",
+  limit: "--limit",
+  moments: "FILE",
+  child: "--child",
+  configuration: "--configuration",
+  cif: "--cif",
+  constants: "--j",
+  vary: "--vary",
+  shells: "--shells",
+  scan: "FILE",
+  reduced: "--reduced",
   branches: "--branches",
   files: "--out",
   code: "CODE",

@@ -14,6 +14,7 @@ import {
 import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
 import { numberOption } from "./inputs/number-input.js";
 import { coincidencesOf } from "./study/coincidences.js";
+import { configurationsFor } from "./study/configurations-for.js";
 import { type FoundK, findK } from "./study/find-k.js";
 import { modesOf } from "./study/modes-of.js";
 import { nextSteps } from "./study/next-steps.js";
@@ -27,7 +28,7 @@ const usualBranches = 3;
 
 /**
  * The whole job: read study → k from the peaks (or as given) → for each k that the data allow: little group → irreps →
- * modes → satellites → what to do next. Configurations and weights are of later versions, null here.
+ * modes → configurations → satellites → what to do next. Weights are of a later version, null here.
  */
 export async function runStudy(work: Work): Promise<RunRecord> {
   const bound = numberOption(work.request, "branches", { from: 1, whole: true }) ?? usualBranches;
@@ -70,7 +71,7 @@ async function followBranch(work: Work, inputs: StudyInputs, { k, candidate }: F
     candidate,
     star: starOf(group, k),
     ...representationsOf(group, cell, k, orbits),
-    configurations: null,
+    configurations: await configurationList(work, inputs, k),
     satellites: await satelliteList(work, inputs, cell, k),
     weigh: null,
   };
@@ -82,6 +83,11 @@ function representationsOf(group: SpaceGroup, cell: Cell | null, k: WaveVector, 
     irreps: irrepsRecord(group, irreps, minusKRelation(group, irreps)),
     modes: modesOf(group, irreps, orbits, { axial: true, cell, convention: ownWriting, star: false }),
   };
+}
+
+/** All arrangements of one ±k pair; none where there is no site. */
+async function configurationList(work: Work, { group, cell, sites, orbits }: StudyInputs, k: WaveVector) {
+  return orbits.length === 0 ? null : configurationsFor(work, { group, cell, k, sites, orbits }, {});
 }
 
 /** Positions need a cell and a number for every letter. */

@@ -1,5 +1,6 @@
 import { type Assumption, KvaneError, type Problem } from "../errors/index.js";
 import type { Study } from "../files/index.js";
+import type { GivenStructure } from "./inputs/structure-input.js";
 import type { JobHost, Request } from "./request.js";
 
 /** One request on its way: the commands add to `assumed` and `warnings` as they go. */
@@ -8,6 +9,8 @@ export interface Work {
   readonly host: JobHost;
   /** The study, read before the command starts; null when none was named. */
   readonly study: Study | null;
+  /** The CIF, likewise. */
+  readonly structure: GivenStructure | null;
   readonly assumed: Assumption[];
   readonly warnings: Problem[];
 }

@@ -37,3 +37,27 @@ export const chiSquaredStandardDeviations = 3;
 
 /** Standard uncertainties. A simple fraction this near a measured component of k is offered. */
 export const nearFractionStandardUncertainties = 2;
+
+/**
+ * Fractional units. A decimal translation of an operator in a CIF this near a multiple of 1/24 is taken for it: half a
+ * unit of the second decimal, as in 0.33 and 0.67, and a little for rounding. The multiples lie 0.042 apart.
+ */
+export const operatorTranslationSnap = 5.5e-3;
+
+/** No unit. A factor between two entries of a tensor this near a fraction or a root of one is printed as that. */
+export const tensorFactorSnap = 1e-9;
+
+/** Å. Bonds whose lengths differ by less are one shell: printed cells and coordinates leave no more than that. */
+export const sameBondAngstrom = 1e-3;
+
+/** Share of Σ|J| at a site. Two eigenvalues this near are one: rounding leaves some 1e-15. */
+export const sameEnergyShare = 1e-11;
+
+/** Reciprocal lattice units per component. A computed minimum this near a simpler k is put there, if the energy agrees. */
+export const computedKSnap = 2e-6;
+
+/** Å. An atom of a magnetic structure this near a site of the parent is that atom: distortions are smaller, bonds larger. */
+export const sameAtomAngstrom = 0.5;
+
+/** No unit. A structure factor of a configuration below this share of the sizes it adds up is 0: they come to 12 digits. */
+export const vanishingShare = 1e-9;

@@ -7,15 +7,20 @@
 export { atlasRecord, type PlacedK } from "./building/atlas.js";
 export { checkedSiteRecord } from "./building/check.js";
 export { compatibilityRecord } from "./building/compatibility.js";
+export { type ExchangeFindings, exchangeRecord } from "./building/exchange.js";
 export { modesRecord } from "./building/modes.js";
 export { cellRecord, groupRecord, littleGroupRecord } from "./building/names.js";
+export type { NamedSite, ParentSites } from "./building/parent-sites.js";
+export { onsetRecord } from "./building/onset.js";
 export { overlapRecord, peaksRecord, satellitesRecord, searchRecord } from "./building/peaks.js";
 export { irrepsRecord, opsRecord, starRecord } from "./building/symmetry.js";
 export { commandsWithTable, reportCsv } from "./csv/report-csv.js";
 export { jsonText } from "./json-text.js";
+export { configurationsRecord, decomposeRecord } from "./made-records.js";
+export { cifCode, configurationCif } from "./magnetic-cif-of.js";
 export { physicalSets } from "./physical-sets.js";
 export type { AtlasRecord, KindRecord, NearbyKindRecord, PlacedKRecord } from "./records/atlas.js";
-export type { CheckedSiteRecord, CheckRecord } from "./records/check.js";
+export type { CheckedSiteRecord, CheckRecord, CifBlockRecord, CifRecord } from "./records/check.js";
 export type {
   AssumedRecord,
   CellRecord,
@@ -27,6 +32,32 @@ export type {
   LittleGroupRecord,
 } from "./records/common.js";
 export type { CompatibilityRecord, NamedIrrepRecord, PartRecord } from "./records/compatibility.js";
+export type {
+  ConfigurationRecord,
+  ConfigurationSiteRecord,
+  ConfigurationsRecord,
+  MagneticGroupRecord,
+  OtherAtomRecord,
+  ParentSiteRecord,
+  PropertyRecord,
+  SecondaryIrrepRecord,
+} from "./records/configurations.js";
+export type { DecomposeRecord, IrrepPartRecord } from "./records/decompose.js";
+export type { ExportRecord } from "./records/export.js";
+export type {
+  BondClassRecord,
+  ConfigurationEnergyRecord,
+  DiagramRecord,
+  ExchangeAtKRecord,
+  ExchangeAtomRecord,
+  ExchangeCertificateRecord,
+  ExchangeLevelRecord,
+  ExchangeRecord,
+  GroundRecord,
+  IrrepCountRecord,
+  ShellRecord,
+  StationaryRecord,
+} from "./records/exchange.js";
 export type {
   ExactIrrepRecord,
   FullIrrepsRecord,
@@ -44,6 +75,14 @@ export type {
   ReadComponentsRecord,
   SiteModesRecord,
 } from "./records/modes.js";
+export type {
+  MeasuredRecord,
+  MovingKRecord,
+  OnsetRecord,
+  PeakOnsetRecord,
+  PowerLawRecord,
+  TransitionRecord,
+} from "./records/onset.js";
 export type { OpsRecord } from "./records/ops.js";
 export type { BranchRecord, RunRecord } from "./records/run.js";
 export type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "./records/satellites.js";
@@ -62,6 +101,8 @@ export type {
 } from "./records/search.js";
 export type { ExplainRecord, HelpRecord } from "./records/simple.js";
 export type { StarRecord } from "./records/star.js";
+export type { StudyRecord } from "./records/study.js";
+export { type ReportForm, reportEndings, reportForm, reportIn } from "./report-files.js";
 export { type ResultFile, resultFileNames, resultFolder } from "./result-folder.js";
 export type { JsonSchema } from "./schemas/building.js";
 export { answerSchema, describedCommands } from "./schemas/envelope.js";

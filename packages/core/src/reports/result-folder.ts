@@ -1,6 +1,9 @@
-import { modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
+import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
+import { type DrawnRun, figureNames } from "./document/figure-names.js";
 import { jsonText } from "./json-text.js";
+import { cifCode, configurationCif } from "./magnetic-cif-of.js";
 import type { Envelope } from "./records/common.js";
+import type { ConfigurationRecord, ConfigurationsRecord } from "./records/configurations.js";
 import type { RunRecord } from "./records/run.js";
 import { reportText } from "./text/report-text.js";
 
@@ -10,30 +13,59 @@ export interface ResultFile {
 }
 
 /** Names of the files that `resultFolder` gives for such a result, in its order. */
-export function resultFileNames(record: Pick<RunRecord, "search" | "branches">): string[] {
+export function resultFileNames(record: DrawnRun): string[] {
   return [
+    "report.html",
     "report.txt",
+    "report.md",
     "result.json",
     ...(record.search ? ["assignments.csv"] : []),
-    ...record.branches.flatMap(({ satellites }, index) => [
+    ...record.branches.flatMap(({ satellites, configurations }, index) => [
       `branch-${index + 1}-modes.csv`,
+      ...(configurations ? [`branch-${index + 1}-configurations.csv`] : []),
+      ...cifNames(configurations, index),
       ...(satellites ? [`branch-${index + 1}-satellites.csv`] : []),
     ]),
+    ...figureNames(record),
   ];
 }
 
-/** Everything that `kvane run --out` writes, as names and texts. */
-export function resultFolder(answer: Envelope<RunRecord>): ResultFile[] {
+/** Everything that `kvane run --out` writes, as names and texts. The makers of pages are loaded only here. */
+export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultFile[]> {
   const record = answer.result;
   if (record === null) return [];
-  const texts = [
-    reportText(answer, { full: true }),
-    jsonText(answer),
-    ...(record.search ? [searchCsv(record.search)] : []),
-    ...record.branches.flatMap(({ modes, satellites }) => [
-      modesCsv(modes),
-      ...(satellites ? [satellitesCsv(satellites)] : []),
+  const { documentFiles } = await import("./made-reports.js");
+  const texts = new Map([
+    ...documentFiles(answer),
+    ["report.txt", reportText(answer, { full: true })],
+    ["result.json", jsonText(answer)],
+    ...(record.search ? [["assignments.csv", searchCsv(record.search)] as const] : []),
+    ...record.branches.flatMap(({ modes, satellites, configurations }, index) => [
+      [`branch-${index + 1}-modes.csv`, modesCsv(modes)] as const,
+      ...(configurations
+        ? [[`branch-${index + 1}-configurations.csv`, configurationsCsv(configurations)] as const]
+        : []),
+      ...cifFiles(configurations, index),
+      ...(satellites ? [[`branch-${index + 1}-satellites.csv`, satellitesCsv(satellites)] as const] : []),
     ]),
-  ];
-  return resultFileNames(record).map((name, index) => ({ name, text: texts[index] as string }));
+  ]);
+  return resultFileNames(record).map((name) => {
+    const text = texts.get(name);
+    if (text === undefined) throw new TypeError(`nothing was made for ${name}`);
+    return { name, text };
+  });
+}
+
+/** One magnetic CIF for each configuration, where the cell is known. */
+function cifNames(configurations: ConfigurationsRecord | null, branch: number): string[] {
+  if (configurations === null || configurations.cell === null) return [];
+  return configurations.configurations.map(({ id }) => `branch-${branch + 1}-${cifCode(id)}.mcif`);
+}
+
+function cifFiles(configurations: ConfigurationsRecord | null, branch: number): (readonly [string, string])[] {
+  const names = cifNames(configurations, branch);
+  return names.map((name, index): readonly [string, string] => {
+    const record = configurations as ConfigurationsRecord;
+    return [name, configurationCif(record, record.configurations[index] as ConfigurationRecord, "2.0") ?? ""];
+  });
 }

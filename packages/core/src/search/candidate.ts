@@ -7,7 +7,12 @@ import {
   star,
   type WaveVector,
 } from "../kvectors/index.js";
-import { chiSquaredStandardDeviations, roundNumber } from "../numbers/index.js";
+import {
+  chiSquaredStandardDeviations,
+  matchStandardUncertainties,
+  roundNumber,
+  sameLineInverseAngstrom,
+} from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import { evidenceOf } from "./evidence.js";
 import type { Explanation, PeakModel } from "./explanation.js";
@@ -59,10 +64,14 @@ export function weigher(group: SpaceGroup, model: PeakModel): Weigher {
       manifold: flat,
       arms: kind.arms,
       onNuclearLines: kind.onNuclearLines,
-      evidence: evidenceOf(explanation.logOdds, {
-        ...(charges ?? chargesOfGiven(group, flat.dimension)),
-        tuning,
-      }),
+      evidence: evidenceOf(
+        explanation.logOdds,
+        {
+          ...(charges ?? chargesOfGiven(group, flat.dimension)),
+          tuning,
+        },
+        spareObservations(explanation, k),
+      ),
       matched: explanation.assignments.length,
       total: model.total,
       deWolff: explanation.deWolff,
@@ -77,7 +86,7 @@ export function weigher(group: SpaceGroup, model: PeakModel): Weigher {
       region: null,
       merged: [],
       separations: [],
-      warnings: warningsOf(refined, residuals),
+      warnings: [...warningsOf(refined, residuals), ...sharedLineWarning(explanation)],
     };
     return { candidate, explanation };
   };
@@ -86,6 +95,11 @@ export function weigher(group: SpaceGroup, model: PeakModel): Weigher {
 /** One k on its own. */
 export function weigh(group: SpaceGroup, model: PeakModel, start: WaveVector, charges: SearchCharges | null): Weighed {
   return weigher(group, model)(start, charges);
+}
+
+/** Matched numbers beyond the letters; a single peak, of a powder or with three indices, has none to spare. */
+function spareObservations({ assignments, observations }: Explanation, k: WaveVector): number {
+  return assignments.length < 2 ? 0 : observations - (k.values ?? []).length;
 }
 
 function chargesOfGiven(group: SpaceGroup, dimension: number): SearchCharges {
@@ -127,6 +141,32 @@ function statisticsOf(explanation: Explanation, refinedParameters: number): Resi
     degreesOfFreedom,
     reducedChiSquared: degreesOfFreedom > 0 ? roundNumber(explanation.chiSquared / degreesOfFreedom) : null,
   };
+}
+
+/**
+ * Two peaks that are too far apart to be one line, and yet have only one and the same line within their tolerance: one
+ * of them is something else.
+ */
+function sharedLineWarning({ assignments, uncertainties }: Explanation): readonly Problem[] {
+  const single = assignments.filter(
+    ({ residualHkl, alternatives }) => residualHkl === null && alternatives.length === 0,
+  );
+  const shared = single.filter((one) =>
+    single.some((other) => {
+      if (Math.abs(other.q - one.q) > sameLineInverseAngstrom) return false;
+      const combined = Math.hypot(uncertainties.get(one.peak) ?? 0, uncertainties.get(other.peak) ?? 0);
+      return Math.abs(one.residual - other.residual) > matchStandardUncertainties * combined;
+    }),
+  );
+  if (shared.length === 0) return [];
+  const peaks = shared.map(({ peak }) => peak + 1).join(", ");
+  return [
+    problem("shared-line", `peaks ${peaks} are too far apart to be one line, and have no line each`, {
+      expected: "a line of this k for each peak",
+      found: `${new Set(shared.map(({ q }) => q)).size} for ${shared.length} peaks`,
+      remedy: "some of them are something else: look at them again, or leave out what may be an impurity",
+    }),
+  ];
 }
 
 function warningsOf({ refinement }: Refined, residuals: ResidualStatistics): readonly Problem[] {

@@ -3,7 +3,7 @@ import { roundNumber, toNumber } from "../numbers/index.js";
 import { averagedReciprocalMetric, reciprocalFrame } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { latticeDensity, latticeRounding, type SignedArm, signedArms, type Triple } from "./crystal-arms.js";
-import { crystalLogOdds } from "./evidence.js";
+import { crystalRatio, peakLogOdds } from "./evidence.js";
 import type { Explanation, PeakModel } from "./explanation.js";
 import { solveCrystal } from "./solve-crystal.js";
 import type { Assignment } from "./types.js";
@@ -30,6 +30,7 @@ export function crystalModel(group: SpaceGroup, cell: Cell, peaks: readonly Crys
   const targets = peaks.map(({ hkl, halfWidth }) => ({ hkl, reach: halfWidth * edges }));
   return {
     total: peaks.length,
+    strayShares: peaks.map(({ strayShare }) => strayShare),
     tolerance,
     metric: unitMetric,
     primitiveMetric,
@@ -59,15 +60,18 @@ function explainCrystal(arms: readonly SignedArm[], peaks: readonly CrystalPeak[
   const density = space.density * arms.length;
   const assignments: Assignment[] = [];
   const unmatched: number[] = [];
+  const ratios = new Float64Array(peaks.length);
   let logOdds = 0;
   let chiSquared = 0;
-  for (const peak of peaks) {
+  for (const [at, peak] of peaks.entries()) {
     const near = arms.map((arm) => nearestSatellite(arm, peak, space)).sort((a, b) => a.square - b.square);
-    logOdds += crystalLogOdds(
+    const ratio = crystalRatio(
       near.map(({ square }) => square),
       peak.uncertainty,
       density,
     );
+    ratios[at] = ratio;
+    logOdds += peakLogOdds(ratio, peak.strayShare);
     const [first, ...others] = near.filter(({ difference }) => within(difference, peak.halfWidth));
     if (!first) {
       unmatched.push(peak.index);
@@ -86,7 +90,9 @@ function explainCrystal(arms: readonly SignedArm[], peaks: readonly CrystalPeak[
   return {
     assignments,
     unmatched,
+    uncertainties: new Map(peaks.map(({ index, uncertainty }) => [index, uncertainty])),
     logOdds,
+    ratios,
     rootMeanSquare: Math.sqrt(
       components.reduce((sum, entry) => sum + entry * entry, 0) / Math.max(1, components.length),
     ),

@@ -17,12 +17,22 @@ const normalReach = 8;
 const foundAbove = 3;
 
 /**
- * Log-odds of one powder peak being a line against its standing there by chance,
- * `ln[ε + (1 − ε) Σ_l N(Q − q_l; s) / n(Q)]`, with N the normal density and n the local density of lines.
+ * Log-odds of one peak being a line against its standing there by chance, `ln[ε + (1 − ε) r]`, r the ratio of the two
+ * densities (`powderRatio`, `crystalRatio`).
+ *
+ * @param stray ε, the chance that the peak is no satellite at all
+ */
+export function peakLogOdds(ratio: number, stray: number): number {
+  return Math.log(stray + (1 - stray) * ratio);
+}
+
+/**
+ * How much likelier a powder peak stands where it does if it is a line: `Σ_l N(Q − q_l; s) / n(Q)`, with N the normal
+ * density and n the local density of lines.
  *
  * @param positions distinct predicted positions in rising order, Å⁻¹, reaching at least 0.6 Å⁻¹ beyond `q`
  */
-export function powderLogOdds(q: number, uncertainty: number, positions: Float64Array): number {
+export function powderRatio(q: number, uncertainty: number, positions: Float64Array): number {
   const reach = normalReach * uncertainty;
   let density = 0;
   for (let index = lowerBound(positions, q - reach); index < positions.length; index++) {
@@ -31,7 +41,7 @@ export function powderLogOdds(q: number, uncertainty: number, positions: Float64
     density += Math.exp(-0.5 * (difference / uncertainty) ** 2);
   }
   density /= Math.sqrt(2 * Math.PI) * uncertainty;
-  return Math.log(strayShare + ((1 - strayShare) * density) / localDensity(q, positions));
+  return density / localDensity(q, positions);
 }
 
 /** Distinct lines per Å⁻¹ within ±0.6 Å⁻¹ of Q, the window clipped at 0; at least 0.5. */
@@ -43,24 +53,31 @@ function localDensity(q: number, positions: Float64Array): number {
 }
 
 /**
- * Log-odds of a single-crystal peak, in three dimensions: the density of satellite vectors is the same everywhere, so
+ * The same of a single-crystal peak, in three dimensions: the density of satellite vectors is the same everywhere, so
  * nothing local is needed.
  *
  * @param squares squared distances (r.l.u.²) of the nearest satellites
  * @param density satellite vectors per unit volume of reciprocal lattice units
  */
-export function crystalLogOdds(squares: readonly number[], uncertainty: number, density: number): number {
+export function crystalRatio(squares: readonly number[], uncertainty: number, density: number): number {
   const sum = squares.reduce((total, square) => total + Math.exp((-0.5 * square) / uncertainty ** 2), 0);
   const normal = sum / (Math.sqrt(2 * Math.PI) * uncertainty) ** 3;
-  return Math.log(strayShare + ((1 - strayShare) * normal) / density);
+  return normal / density;
 }
 
-/** The evidence: summed log-odds minus what the search is charged. */
-export function evidenceOf(logOdds: number, charges: EvidenceCharges): Evidence {
+/** Matched peaks beyond the free components that a find needs: with fewer, chance fits are common whatever the number. */
+const leastSpare = 3;
+
+/**
+ * The evidence: summed log-odds minus what the search is charged.
+ *
+ * @param spare matched peaks less free components; below 3 the reading stays weak at most
+ */
+export function evidenceOf(logOdds: number, charges: EvidenceCharges, spare: number): Evidence {
   const value = roundNumber(logOdds - charges.dimensions - charges.kinds - charges.tuning);
   return {
     value,
-    reading: value > foundAbove ? "found" : value >= 0 ? "weak" : "not informative",
+    reading: value > foundAbove && spare >= leastSpare ? "found" : value >= 0 ? "weak" : "not informative",
     charges: {
       dimensions: roundNumber(charges.dimensions),
       kinds: roundNumber(charges.kinds),

@@ -5,10 +5,14 @@ import type { Assignment, Correction, Region } from "./types.js";
 /** What a k makes of the peaks. */
 export interface Explanation {
   readonly assignments: readonly Assignment[];
+  /** Standard uncertainties of the peaks by index, in the unit of the residuals. */
+  readonly uncertainties: ReadonlyMap<number, number>;
   /** Indices of the peaks outside every line's tolerance. */
   readonly unmatched: readonly number[];
   /** Σ over peaks of the log-odds against chance, before any charge for searching. */
   readonly logOdds: number;
+  /** The ratio of densities behind it, peak by peak in the order of the model. */
+  readonly ratios: Float64Array;
   readonly rootMeanSquare: number;
   readonly largest: number;
   readonly chiSquared: number;
@@ -62,6 +66,8 @@ export interface KindBudget {
  */
 export interface PeakModel {
   readonly total: number;
+  /** The chance of each peak to be no satellite, in the order of the model. */
+  readonly strayShares: readonly number[];
   /** Half-width of a typical match, in the unit of `metric`'s square root. */
   readonly tolerance: number;
   /** Metric (nine numbers) in a*, b*, c* of the space where k is measured: Å⁻² with 4π², or 1 for h k l. */

@@ -1,7 +1,7 @@
-import { roundNumber, toNumber } from "../numbers/index.js";
+import { matchStandardUncertainties, roundNumber, toNumber } from "../numbers/index.js";
 import { type NuclearLine, nuclearLines } from "../reflections/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
-import type { ImpurityPhase, NuclearState, PeakFlag } from "./types.js";
+import type { ImpurityPhase, NuclearState, Peak, PeakFlag } from "./types.js";
 import type { PowderPeak } from "./used-peaks.js";
 
 /** Coincidences of either sort that are named for a peak: far out there is always another. */
@@ -16,6 +16,7 @@ export function flagsOf(
   cell: Cell,
   peaks: readonly PowderPeak[],
   sites: readonly SiteOrbit[],
+  measured: readonly Peak[] = [],
 ): readonly PeakFlag[] {
   if (peaks.length === 0) return [];
   const reach = Math.max(...peaks.map(({ q, halfWidth }) => q + halfWidth));
@@ -32,6 +33,7 @@ export function flagsOf(
             h: line.h,
             state: stateOf(line, sites),
             separation: roundNumber(places[sort] * line.q - q, q),
+            parentIntensity: intensityAt(line.q, measured),
           }),
         )
         .sort(
@@ -42,6 +44,18 @@ export function flagsOf(
         .slice(0, mostOfEach),
     ),
   );
+}
+
+/** Intensity of the measured nuclear peak nearest to a line, within its uncertainty; null where there is none. */
+function intensityAt(q: number, measured: readonly Peak[]): number | null {
+  let best: { readonly off: number; readonly intensity: number } | null = null;
+  for (const peak of measured) {
+    if (peak.q === null || peak.intensity === null || peak.uncertainty === null) continue;
+    const off = Math.abs(peak.q - q);
+    if (off > matchStandardUncertainties * peak.uncertainty || (best !== null && best.off <= off)) continue;
+    best = { off, intensity: peak.intensity };
+  }
+  return best?.intensity ?? null;
 }
 
 function stateOf({ extinct, h }: NuclearLine, sites: readonly SiteOrbit[]): NuclearState {

@@ -37,4 +37,8 @@ export type {
   SearchResult,
   Separation,
   SetAside,
+  SeveralVectors,
+  VectorFind,
+  VectorMember,
+  VectorStage,
 } from "./types.js";

@@ -12,6 +12,7 @@ import { peakModel } from "./peak-model.js";
 import { type Entry, mergeSameFinds } from "./same-find.js";
 import { type SearchKind, searchKinds, solutionsOf } from "./search-kind.js";
 import { separationsOf } from "./separations.js";
+import { severalVectors } from "./several-vectors.js";
 import { tiesAmong } from "./ties.js";
 import type { Candidate, PeakList, ReferenceVector, Region, SearchOptions, SearchResult } from "./types.js";
 
@@ -33,7 +34,8 @@ export async function locate(
   options: SearchOptions,
   host: WorkHost = {},
 ): Promise<SearchResult> {
-  const { model, setAside, powder } = peakModel(group, cell, peaks, options);
+  const modelled = peakModel(group, cell, peaks, options);
+  const { model, setAside, powder } = modelled;
   const minimumMatched = Math.max(1, model.total - options.unmatched);
   const kinds = searchKinds(group, options.maxDimension);
   const weigh = weigher(group, model);
@@ -43,12 +45,15 @@ export async function locate(
     ({ candidate, mostMatched, dimension }) =>
       (options.belowMinimum === true && dimension === 0) || Math.max(candidate.matched, mostMatched) >= minimumMatched,
   );
-  const merged = [...mergeSameFinds(kept, model, starDistance(group, model.primitiveMetric))]
+  const distance = starDistance(group, model.primitiveMetric);
+  const merged = [...mergeSameFinds(kept, model, distance)]
     // The sort is stable: equal evidence leaves the order of the kinds, fewest arms first.
     .sort((a, b) => b.candidate.evidence.value - a.candidate.evidence.value);
   const shown = merged.filter(({ dimension }, rank) => rank < mostCandidates || dimension === 0);
   const candidates = compared(shown, model, weigh);
   const certificate = certificateOf(searched, options, minimumMatched);
+  const enough = (candidates[0]?.matched ?? 0) >= minimumMatched;
+  const several = await severalVectors({ group, peaks: modelled, options, distance, candidates: shown, enough }, host);
   const aside = new Set(setAside.map(({ peak }) => peak));
   return {
     candidates,
@@ -56,10 +61,15 @@ export async function locate(
     setAside,
     unmatched: candidates[0]?.unmatched ?? peaks.peaks.map(({ index }) => index).filter((index) => !aside.has(index)),
     regions,
-    flags: flagsOf(group, cell, powder, options.sites ?? []),
+    flags: flagsOf(group, cell, powder, options.sites ?? [], options.nuclear?.peaks ?? []),
     references: referencesOf(group, entries),
     dropped: entries.length - kept.length + (merged.length - shown.length),
-    warnings: [...certificateWarnings(certificate), ...halfWavelengthWarning(group, candidates[0])],
+    severalVectors: several,
+    warnings: [
+      ...certificateWarnings(certificate),
+      ...halfWavelengthWarning(group, candidates[0]),
+      ...fewPeaksWarning(model, candidates[0]),
+    ],
   };
 }
 
@@ -71,6 +81,21 @@ function halfWavelengthWarning(group: SpaceGroup, first: Candidate | undefined):
       expected: "peaks that neutrons of half the wavelength cannot give",
       found: "positions alone, which cannot exclude them",
       remedy: "measure with a filter or another wavelength, or above the ordering temperature",
+    }),
+  ];
+}
+
+/** With so few peaks beyond the free components a chance fit is common. */
+const fewSpare = 2;
+
+function fewPeaksWarning(model: PeakModel, first: Candidate | undefined): readonly Problem[] {
+  const letters = (first?.k.values ?? []).length;
+  if (first === undefined || first.residuals.degreesOfFreedom > fewSpare) return [];
+  return [
+    problem("too-few-peaks", `${first.matched} matched of ${model.total} peaks hardly say which k it is`, {
+      expected: `at least ${letters + fewSpare + 1} matched positions for ${letters} free components`,
+      found: String(first.matched),
+      remedy: "measure more satellites, above all at small Q; whatever the evidence, this is a guess",
     }),
   ];
 }

@@ -8,13 +8,17 @@ import { powderModel } from "./powder-model.js";
 import type { PeakList, SearchOptions, SetAside } from "./types.js";
 import { type PowderPeak, usedPeaks } from "./used-peaks.js";
 
+/** The model of a list's peaks. */
+export interface ModelledPeaks {
+  readonly model: PeakModel;
+  /** The model of some of them, chosen by index. */
+  readonly modelOf: (wanted: (peak: number) => boolean) => PeakModel;
+  readonly setAside: readonly SetAside[];
+  readonly powder: readonly PowderPeak[];
+}
+
 /** The model of a list's peaks, and the peaks that it leaves out. Throws `invalid-argument` for impossible options. */
-export function peakModel(
-  group: SpaceGroup,
-  cell: Cell,
-  list: PeakList,
-  options: SearchOptions,
-): { readonly model: PeakModel; readonly setAside: readonly SetAside[]; readonly powder: readonly PowderPeak[] } {
+export function peakModel(group: SpaceGroup, cell: Cell, list: PeakList, options: SearchOptions): ModelledPeaks {
   checkOptions(options);
   if (options.zeroShift > 0 && list.kind !== "hkl" && list.wavelengthAngstrom === null)
     fail("missing-wavelength", "a zero shift of 2θ can only be refined where the wavelength is known", {
@@ -24,11 +28,13 @@ export function peakModel(
     });
   const metric = averagedReciprocalMetric(group, cell);
   const { powder, crystal, setAside } = usedPeaks(list, options, (hkl) => lengthOf(metric, hkl));
-  const model =
-    list.kind === "hkl"
-      ? crystalModel(group, cell, crystal)
-      : powderModel(group, cell, powder, list.wavelengthAngstrom, options);
-  return { model, setAside, powder };
+  const modelOf = (wanted: (peak: number) => boolean): PeakModel => {
+    const chosen = ({ index }: { readonly index: number }) => wanted(index);
+    return list.kind === "hkl"
+      ? crystalModel(group, cell, crystal.filter(chosen))
+      : powderModel(group, cell, powder.filter(chosen), list.wavelengthAngstrom, options);
+  };
+  return { model: modelOf(() => true), modelOf, setAside, powder };
 }
 
 /** |Q| in Å⁻¹. */

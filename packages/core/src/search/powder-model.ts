@@ -8,7 +8,7 @@ import {
   satelliteLister,
 } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
-import { densityHalfWindow, lowerBound, powderLogOdds } from "./evidence.js";
+import { densityHalfWindow, lowerBound, peakLogOdds, powderRatio } from "./evidence.js";
 import type { CorrectionLimit, Explanation, PeakModel } from "./explanation.js";
 import { deWolff, smithSnyder } from "./figures-of-merit.js";
 import type { AcceptedInterval } from "./peak-pairs.js";
@@ -44,6 +44,7 @@ export function powderModel(
   const primitiveMetric = reciprocalFrame(group, cell).metric.map((entry) => 4 * Math.PI * Math.PI * entry);
   return {
     total: peaks.length,
+    strayShares: peaks.map(({ strayShare }) => strayShare),
     tolerance,
     metric,
     primitiveMetric,
@@ -119,10 +120,11 @@ function explainPowder(
   const all = Float64Array.from(lines, (line) => line.q);
   const assignments: Assignment[] = [];
   const unmatched: number[] = [];
+  const ratios = Float64Array.from(peaks, (peak) => powderRatio(peak.q, peak.uncertainty, positions));
   let logOdds = 0;
   let chiSquared = 0;
-  for (const peak of peaks) {
-    logOdds += powderLogOdds(peak.q, peak.uncertainty, positions);
+  for (const [at, peak] of peaks.entries()) {
+    logOdds += peakLogOdds(ratios[at] as number, peak.strayShare);
     const assignment = assign(peak, lines, all);
     if (assignment === null) unmatched.push(peak.index);
     else {
@@ -134,7 +136,9 @@ function explainPowder(
   return {
     assignments,
     unmatched,
+    uncertainties: new Map(peaks.map(({ index, uncertainty }) => [index, uncertainty])),
     logOdds,
+    ratios,
     rootMeanSquare: Math.sqrt(mean(assignments.map(({ residual }) => residual * residual))),
     largest: Math.max(0, ...assignments.map(({ residual }) => Math.abs(residual))),
     chiSquared,

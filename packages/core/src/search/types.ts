@@ -61,6 +61,12 @@ export interface SearchOptions {
   readonly mostBoxes?: number;
   /** Return also the candidates that match fewer peaks than asked. Default false. */
   readonly belowMinimum?: boolean;
+  /** Take strong peaks as less likely to be strays (`strayShares`). Default false: positions alone speak. */
+  readonly weighByIntensity?: boolean;
+  /** Nuclear lines measured in the same way: the parent of a λ/2 image gets its intensity from there. Default none. */
+  readonly nuclear?: PeakList;
+  /** Look for harmonics, sums and a second vector where no k explains enough. Default true. */
+  readonly severalVectors?: boolean;
 }
 
 export interface ImpurityPhase {
@@ -82,6 +88,8 @@ export interface PeakFlag {
   readonly state: NuclearState;
   /** Position of the line less that of the peak, Å⁻¹. */
   readonly separation: number;
+  /** Intensity of the nuclear line itself where a list of them was given and has it; null otherwise. */
+  readonly parentIntensity: number | null;
 }
 
 /** One way of writing a peak as H ± k. */
@@ -289,6 +297,48 @@ export interface KindCertificate {
   readonly allWeighed: boolean;
 }
 
+/** One of several vectors that explain the peaks together. */
+export interface VectorMember {
+  readonly name: "k1" | "k2" | "2 k1" | "3 k1" | "k1 + k2" | "k1 − k2";
+  readonly k: WaveVector;
+  /** Peaks (by index) on its lines; one may be on lines of several. */
+  readonly peaks: readonly number[];
+}
+
+/** Several vectors that explain more than one alone. */
+export interface VectorFind {
+  readonly stage: "harmonics" | "second vector" | "sums";
+  /** The independent ones, refined. */
+  readonly vectors: readonly WaveVector[];
+  readonly members: readonly VectorMember[];
+  /** Of all members together, on the scale of a single vector's. */
+  readonly evidence: Evidence;
+  /** The evidence less that of the best single vector. */
+  readonly gain: number;
+  readonly matched: number;
+  readonly total: number;
+  readonly unmatched: readonly number[];
+}
+
+/** One stage of the search for more than one vector. */
+export interface VectorStage {
+  readonly stage: VectorFind["stage"];
+  /** Combinations that were weighed. */
+  readonly tried: number;
+  /** Most of the certificates of the searches that it took: boxes in all, and whether each went to its end. */
+  readonly boxes: number;
+  readonly exhaustive: boolean;
+  /** Peaks that a vector had to match in each of its searches; empty where none was needed. */
+  readonly minimumMatched: readonly number[];
+}
+
+/** What was tried with more than one vector. */
+export interface SeveralVectors {
+  readonly stages: readonly VectorStage[];
+  /** Those that gain on the best single vector, best evidence first. */
+  readonly found: readonly VectorFind[];
+}
+
 /** A peak that was not used. */
 export interface SetAside {
   readonly peak: number;
@@ -310,5 +360,7 @@ export interface SearchResult {
   readonly references: readonly ReferenceVector[];
   /** How many k were tried and left out because they match too few peaks. */
   readonly dropped: number;
+  /** Harmonics, sums and a second vector; null where one k explains enough or they were not asked for. */
+  readonly severalVectors: SeveralVectors | null;
   readonly warnings: readonly Problem[];
 }

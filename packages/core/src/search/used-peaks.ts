@@ -1,6 +1,8 @@
 import { fail } from "../errors/index.js";
 import { matchStandardUncertainties } from "../numbers/index.js";
+import { strayShare } from "./evidence.js";
 import { impurityLines, onImpurity } from "./flags.js";
+import { strayShares } from "./stray-shares.js";
 import type { PeakList, SearchOptions, SetAside } from "./types.js";
 
 /** A powder peak in the form that matching needs, Å⁻¹. */
@@ -11,6 +13,8 @@ export interface PowderPeak {
   readonly halfWidth: number;
   /** ∂Q/∂2θ in Å⁻¹ per degree: what a zero shift moves it by; 0 without a wavelength. */
   readonly slope: number;
+  /** Chance of being no satellite. */
+  readonly strayShare: number;
 }
 
 /** A single-crystal peak in the form that matching needs, r.l.u. */
@@ -19,7 +23,12 @@ export interface CrystalPeak {
   readonly hkl: readonly [number, number, number];
   readonly uncertainty: number;
   readonly halfWidth: number;
+  /** Chance of being no satellite. */
+  readonly strayShare: number;
 }
+
+/** A row that repeats another to the last digit is no second peak: as a certain stray it adds no evidence. */
+const sayingNothing = 1;
 
 /** The peaks that take part, and those that do not. */
 export interface UsedPeaks {
@@ -42,6 +51,8 @@ export function usedPeaks(
   const powder: PowderPeak[] = [];
   const crystal: CrystalPeak[] = [];
   const setAside: SetAside[] = [];
+  const seen = new Set<string>();
+  const shares = options.weighByIntensity === true ? strayShares(list.peaks) : [];
   const impurities = impurityLines(options.impurities ?? [], impurityReach(list, options));
   for (const peak of list.peaks) {
     const uncertainty = list.kind === "hkl" ? peak.hklUncertainty : peak.uncertainty;
@@ -70,7 +81,9 @@ export function usedPeaks(
       index: peak.index,
       uncertainty,
       halfWidth: options.tolerance ?? matchStandardUncertainties * uncertainty,
+      strayShare: seen.has(position.join()) ? sayingNothing : (shares[peak.index] ?? strayShare),
     };
+    seen.add(position.join());
     if (list.kind === "hkl") crystal.push({ ...common, hkl: position as unknown as [number, number, number] });
     else powder.push({ ...common, q, slope: slopeAt(q, list.wavelengthAngstrom) });
   }

@@ -68,16 +68,9 @@ export function assembleGroup(
   lattice: Lattice,
   elements: readonly PrimitiveElement[],
   denominator: number,
-  name: GroupName,
+  name: GroupName = unnamed,
 ): SpaceGroup {
-  const toSetting = settingConverter(lattice, denominator);
-  const sorted = elements
-    .map((element) => {
-      const { operator, translation } = toSetting(element);
-      const key = operatorKey(element.rotation, operator.rotation, operator.rotationDenominator);
-      return { rotation: element.rotation, translation, operator, key };
-    })
-    .sort((a, b) => compareKeys(a.key, b.key));
+  const sorted = arrangeElements(lattice, elements, denominator);
   const divisor = gcdOf([denominator, ...sorted.flatMap((one) => one.translation)]);
   return {
     name,
@@ -90,6 +83,31 @@ export function assembleGroup(
     },
     pointGroup: pointGroupSymbol(sorted.map((one) => one.rotation)),
   };
+}
+
+/** An operator in both bases; the primitive translation has the denominator that the caller gave. */
+export interface ArrangedElement extends PrimitiveElement {
+  readonly operator: SymmetryOperator;
+}
+
+/**
+ * Operators of the primitive basis, each with its record in the axes of the setting, translations reduced modulo L, in
+ * the fixed order of operators. They need not be a group, but no two may have one rotation.
+ */
+export function arrangeElements(
+  lattice: Lattice,
+  elements: readonly PrimitiveElement[],
+  denominator: number,
+): readonly ArrangedElement[] {
+  const toSetting = settingConverter(lattice, denominator);
+  return elements
+    .map((element) => {
+      const { operator, translation } = toSetting(element);
+      const key = operatorKey(element.rotation, operator.rotation, operator.rotationDenominator);
+      return { key, arranged: { rotation: element.rotation, translation, operator } };
+    })
+    .sort((a, b) => compareKeys(a.key, b.key))
+    .map((one) => one.arranged);
 }
 
 /**

@@ -37,7 +37,16 @@ export function changeBasis(group: SpaceGroup, change: BasisChange): SpaceGroup 
   });
 }
 
-function changeOperator(operator: SymmetryOperator, change: BasisChange, inverse: RationalMatrix): SymmetryOperator {
+/**
+ * One operator in other axes: `R' = P⁻¹RP`, `t' = P⁻¹(t + (R − 1)p)`, not reduced.
+ *
+ * @param inverse P⁻¹, where the caller has it already
+ */
+export function changeOperator(
+  operator: SymmetryOperator,
+  change: BasisChange,
+  inverse: RationalMatrix = invert(change.matrix),
+): SymmetryOperator {
   const rotation = rotationOf(operator);
   const difference = rotation.map((row, index) =>
     mapVector(row, (entry, column) => subtract(entry, rational(index === column ? 1 : 0))),

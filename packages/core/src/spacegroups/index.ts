@@ -11,6 +11,7 @@
  * A1.4.2 (Hall symbols and the 530 settings); S. R. Hall, Acta Cryst. A37 (1981) 517. Origin of the table:
  * spacegroup-data/SOURCES.md.
  */
+
 export {
   composeBasisChanges,
   formatBasisChange,
@@ -18,7 +19,8 @@ export {
   invertBasisChange,
   parseBasisChange,
 } from "./basis-changes.js";
-export { groupFromOperators } from "./build-group.js";
+export { arrangeElements, assembleGroup, groupFromOperators, groupOnLattice } from "./build-group.js";
+export { changeCell } from "./cell-changes.js";
 export {
   cellVolume,
   checkCell,
@@ -27,24 +29,38 @@ export {
   parseCell,
   reciprocalMetric,
 } from "./cells.js";
-export { changeBasis } from "./change-basis.js";
+export { changeBasis, changeOperator } from "./change-basis.js";
 export { latticeVectorsInCell, operatorsModuloIntegers } from "./integer-cosets.js";
 export {
   fromPrimitiveColumn,
   fromPrimitiveRow,
   isLatticeVector,
+  latticeFrom as latticeFromVectors,
+  latticeMatrix,
+  latticeVectors,
+  latticeVectorsOfCell,
   reduceByLattice,
   toPrimitiveColumn,
   toPrimitiveRow,
 } from "./lattices.js";
 export { checkCellAgainstGroup } from "./metric-symmetry.js";
 export { groupFromSetting } from "./name-groups.js";
-export { applyOperator, composeOperators, invertOperator } from "./operators.js";
+export {
+  applyOperator,
+  composeOperators,
+  invertOperator,
+  isTranslation,
+  operatorFrom,
+  rotationOf,
+  translationOf,
+} from "./operators.js";
 export { type ParsedGroup, parseGroup, parseGroupWithNotes } from "./parse-group.js";
 export { pointGroupSymbol, rotationType } from "./point-groups.js";
+export { composeElements, type PrimitiveElement, timesIntegers, toPrimitiveElements } from "./primitive-elements.js";
 export { tabulatedSettings } from "./settings.js";
 export { siteOrbit } from "./site-orbits.js";
 export { parseSite } from "./sites.js";
+export { standardSetting, type WayToSetting, waysToSettings } from "./standard-setting.js";
 export { formatTriplet, parseTriplet } from "./triplets.js";
 export type {
   BasisChange,

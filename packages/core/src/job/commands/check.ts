@@ -1,3 +1,5 @@
+import { fail } from "../../errors/index.js";
+import type { CifStructure } from "../../files/index.js";
 import { waveVectorToJson } from "../../kvectors/index.js";
 import { type CheckRecord, cellRecord, checkedSiteRecord, groupRecord } from "../../reports/index.js";
 import { cellFor, cellIfGiven } from "../inputs/cell-input.js";
@@ -8,13 +10,15 @@ import { checkSearchFits, searchOptionsOf } from "../inputs/search-input.js";
 import { orbitsOf, sitesIfGiven } from "../inputs/site-input.js";
 import { needStudy } from "../inputs/study-input.js";
 import { remember, together, type Work } from "../work.js";
+import { checkCif } from "./check-cif.js";
 
 /** `kvane check`: everything that a study says, understood and held against each other; all problems at once. */
 export async function checkCommand(work: Work): Promise<CheckRecord> {
-  const study = needStudy(work.study);
+  if (work.structure?.from === "argument") return checkCif(work, work.structure);
+  const study = studyOrCif(work);
   remember(work, [], study.warnings);
   const { group, written, given, peaks, sites, options } = await together({
-    group: () => (study.group === null ? null : groupOf(work)),
+    group: () => (study.group === null && work.structure === null ? null : groupOf(work)),
     written: () => writtenKs(work),
     given: () => cellIfGiven(work),
     peaks: () => peaksIfGiven(work),
@@ -27,6 +31,7 @@ export async function checkCommand(work: Work): Promise<CheckRecord> {
     orbits: () => (group === null ? [] : orbitsOf(work, group, sites, given?.cell ?? null)),
     fits: () => peaks && checkSearchFits(work, written.length > 0 ? { ...options, unmatched: 0 } : options, peaks.list),
   });
+  const structure = work.structure?.structure ?? null;
   return {
     kind: "study",
     blocks: null,
@@ -36,15 +41,27 @@ export async function checkCommand(work: Work): Promise<CheckRecord> {
     sites: orbits.map((orbit, index) => checkedSiteRecord(orbit, sites[index]?.ion ?? null)),
     k: ks.map(waveVectorToJson),
     peaks: peaks && { file: peaks.file, kind: peaks.list.kind, count: peaks.list.peaks.length },
-    missing: missingParts(study, written.length),
+    missing: missingParts(study, structure, written.length),
+    cif: null,
   };
 }
 
-function missingParts(study: NonNullable<Work["study"]>, ks: number): string[] {
+/** `check --structure FILE.cif` without a study has nothing to check but the CIF, which is an argument then. */
+function studyOrCif(work: Work): NonNullable<Work["study"]> {
+  if (work.study !== null || work.structure === null) return needStudy(work.study);
+  return fail("missing-argument", "no study was given beside the CIF", {
+    where: { argument: "STUDY" },
+    expected: "kvane check FILE.cif, or kvane check STUDY.yaml --structure FILE.cif",
+    found: "--structure alone",
+    remedy: "name the CIF without --structure to check it by itself",
+  });
+}
+
+function missingParts(study: NonNullable<Work["study"]>, cif: CifStructure | null, ks: number): string[] {
   return [
-    ...(study.group === null ? ["the space group (group)"] : []),
-    ...(study.cell === null && (ks === 0 || study.peaks !== null) ? ["the unit cell (cell)"] : []),
-    ...(study.sites.length === 0 ? ["the magnetic sites (sites)"] : []),
+    ...(study.group === null && !cif?.symmetry ? ["the space group (group)"] : []),
+    ...(study.cell === null && !cif?.cell && (ks === 0 || study.peaks !== null) ? ["the unit cell (cell)"] : []),
+    ...(study.sites.length === 0 && !cif?.sites.length ? ["the magnetic sites (sites)"] : []),
     ...(study.peaks === null && ks === 0 ? ["a peak list (peaks) or a wave vector (k)"] : []),
   ];
 }

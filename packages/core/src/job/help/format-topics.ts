@@ -12,7 +12,17 @@ export const formatTopics: { readonly [topic: string]: HelpTopic } = {
     - {label: Fe1, ion: Fe3+, at: [0, 0, 0]}
   k: [[0, 1/2, 0]]                    # leave out to search
   peaks: {file: satellites.csv, as: two-theta, wavelength: 2.41, tolerance: 0.08}
-  search: {unmatched: 1, max-dimension: 0}
+  search: {unmatched: 1, max-dimension: 3, zero-shift: 0.05, cell-scale: 0.002}
+  exclude: [[38.1, 38.6]]             # ranges of positions that are set aside
+  impurities:                         # peaks on their lines are set aside
+    - name: MnO
+      group: F m -3 m
+      cell: {a: 4.445, b: 4.445, c: 4.445, alpha: 90, beta: 90, gamma: 90}
+
+search: {weigh-intensities: true} takes weak peaks as likelier strays than strong ones, and
+peaks: {nuclear: FILE} names a list of nuclear lines with intensities (kvane help peaks).
+A CIF may stand for group, cell and sites: structure: nuclear.cif, or with several data blocks
+structure: {file: nuclear.cif, block: NAME}. kvane study FILE.cif writes a study to start from.
 
 File names count from the folder of the study. kvane check STUDY.yaml names all that is wrong or
 missing. Options on the command line win over the study.`,
@@ -26,8 +36,28 @@ header row may name them; # or ! starts a comment.
 What the positions are is said by --as d, q, two-theta or hkl, by the study, or by the header; it is
 never guessed. two-theta needs --wavelength in Å. Q is 2π/d in Å⁻¹.
 
+peaks: {nuclear: FILE} or --nuclear names a list of nuclear lines with intensities, read the same
+way; a peak on the λ/2 image of one is then compared with it.
+
 A peak is matched within 3 standard uncertainties of a line, or within --tolerance, which is in the
 unit of the positions.`,
+  },
+  cif: {
+    title: "CIFs of nuclear structures",
+    text: `kvane check FILE.cif reads a CIF (1.1 and 2.0, older and newer data names) and shows what it makes
+of it; --syntax looks at the grammar alone, to the letter. kvane study FILE.cif writes a commented
+study to start from. A CIF goes straight into every command: as the first word, as --structure
+FILE.cif, or as structure: in a study. --block NAME chooses one of several data blocks.
+
+Symmetry       the operators are believed, then the Hall symbol, then the Hermann–Mauguin symbol,
+               then the number; what contradicts them is a warning. A CIF without any is refused.
+Cell           held against the group; within 3 s.u. a cell may break it, and the mean is taken.
+Sites          exact as written (to 7 decimals), without s.u.; what lies within 0.02 Å of a special
+               position is put there, so that 0.3333 is 1/3, and that is listed under Assumed.
+Moments        sites whose element mostly carries one are taken; --site LABEL takes any other.
+Occupancies    partial ones, disorder and shared positions are warned about: symmetry takes every
+               site as full.
+Options        GROUP, --cell and --site win over the CIF; that GROUP is another one is said.`,
   },
   json: {
     title: "The JSON of --json",

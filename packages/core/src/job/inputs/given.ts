@@ -10,9 +10,9 @@ export interface Given {
   readonly verbatim: boolean;
 }
 
-/** `, or give --cell`: only where the command takes the option; `run` and `check` take these things from the study. */
+/** `, or give --cell`: only where the command takes the option; `run`, `report` and `check` take these things from the study. */
 export function orOption({ command }: Request, option: string): string {
-  return command === "run" || command === "check" ? "" : `, or give ${option}`;
+  return ["run", "report", "check"].includes(command) ? "" : `, or give ${option}`;
 }
 
 /** An option's text, trimmed, or null when it was not given. */

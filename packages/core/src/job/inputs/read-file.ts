@@ -10,7 +10,14 @@ export async function readNamed(host: JobHost, path: string, where: Partial<Plac
     return await host.readText(path);
   } catch (error) {
     const place: Place = { ...nowhere, ...(where.file ? where : { ...where, file: path }) };
-    if (error instanceof KvaneError) throw new KvaneError(error.problems.map((one) => ({ ...one, where: place })));
+    if (error instanceof KvaneError)
+      throw new KvaneError(
+        error.problems.map(({ where: { line, column }, ...one }) => ({
+          ...one,
+          // A line of the file itself says more than its name does.
+          where: place.file === path && place.line === null ? { ...place, line, column } : place,
+        })),
+      );
     const found = error instanceof Error ? error.message : String(error);
     return fail("file-unreadable", `\`${path}\` cannot be read`, { where: place, expected: "a text file", found });
   }

@@ -2,11 +2,12 @@ import { KvaneError, nowhere, type Problem, problem } from "../../errors/index.j
 import { defaultSearchOptions, type PeakList, type SearchOptions } from "../../search/index.js";
 import { argumentNames, type RequestField } from "../request.js";
 import { remember, type Work } from "../work.js";
+import { asideOptionsOf } from "./aside-input.js";
 import { studyText } from "./given.js";
 import { numberOption } from "./number-input.js";
 
 /** The wishes for the search: those of the options, else of the study, else the safe defaults, which are remembered. */
-export function searchOptionsOf(work: Work): SearchOptions {
+export async function searchOptionsOf(work: Work): Promise<SearchOptions> {
   const { request, study } = work;
   const wishes = study?.search ?? null;
   const unmatched = numberOption(request, "unmatched", { from: 0, whole: true }) ?? wishes?.unmatched ?? null;
@@ -27,6 +28,7 @@ export function searchOptionsOf(work: Work): SearchOptions {
       [],
     );
   return {
+    ...(await asideOptionsOf(work)),
     tolerance: wishes?.tolerance ?? defaultSearchOptions.tolerance,
     unmatched: unmatched ?? defaultSearchOptions.unmatched,
     maxDimension: maxDimension ?? wishes?.maxDimension ?? defaultSearchOptions.maxDimension,

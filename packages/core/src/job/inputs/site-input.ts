@@ -1,4 +1,5 @@
 import { fail, KvaneError, type Problem, problem } from "../../errors/index.js";
+import { type CifStructure, magneticSitesOf } from "../../files/index.js";
 import { formatRational, type Rational, toNumber } from "../../numbers/index.js";
 import {
   type Cell,
@@ -10,6 +11,7 @@ import {
 } from "../../spacegroups/index.js";
 import { remember, type Work } from "../work.js";
 import { type Given, orOption, readingGiven, studyText } from "./given.js";
+import { structureFor, throwPart } from "./structure-notes.js";
 
 /** A site as it was written, with where, and its ion if the study names one. */
 export interface GivenSite {
@@ -18,9 +20,9 @@ export interface GivenSite {
   readonly ion: string | null;
 }
 
-/** The sites of the options or of the study; throws the problems of all of them at once. */
-export function writtenSites(work: Work): GivenSite[] {
-  const sites = sitesIfGiven(work);
+/** The sites of the options, of the study or of the CIF; throws the problems of all of them at once. */
+export async function writtenSites(work: Work): Promise<GivenSite[]> {
+  const sites = await sitesIfGiven(work);
   if (sites.length > 0) return sites;
   if (work.study !== null)
     fail("missing-key", "the study has no sites", {
@@ -38,8 +40,11 @@ export function writtenSites(work: Work): GivenSite[] {
 }
 
 /** The same without the demand that there is one. */
-export function sitesIfGiven({ request, study }: Work): GivenSite[] {
+export async function sitesIfGiven(work: Work): Promise<GivenSite[]> {
+  const { request, study } = work;
   const options = request.sites ?? [];
+  const structure = structureFor(work, "sites", options.length === 0 && (study?.sites ?? []).length > 0);
+  if (options.length === 0 && structure !== null) return sitesOfStructure(work, structure);
   if (options.length === 0)
     return (study?.sites ?? []).map((site, index) => ({
       given: studyText(study as NonNullable<typeof study>, `sites[${index}]`, ""),
@@ -51,8 +56,42 @@ export function sitesIfGiven({ request, study }: Work): GivenSite[] {
       const text = option.trim();
       const where = { argument: "--site", path: options.length > 1 ? `sites[${index}]` : null };
       const given = { text, where, verbatim: false };
-      return () => ({ given, site: readingGiven(given, () => parseSite(text)), ion: null });
+      return () => siteOfStructure(structure, given) ?? ownSite(given);
     }),
+  );
+}
+
+function ownSite(given: Given): GivenSite {
+  return { given, site: readingGiven(given, () => parseSite(given.text)), ion: null };
+}
+
+/** `--site LABEL` beside a CIF is a site of the CIF; null where the text is no lone label. */
+function siteOfStructure(structure: CifStructure | null, given: Given): GivenSite | null {
+  if (structure === null || given.text === "" || /\s/.test(given.text)) return null;
+  throwPart(structure.problems.sites);
+  const found = structure.sites.find(({ label }) => label === given.text);
+  if (found?.position)
+    return { given, site: { label: found.label, position: found.position }, ion: found.ion?.text ?? null };
+  const labels = structure.sites.map(({ label }) => label);
+  return fail("invalid-site", `the CIF has no site \`${given.text}\`${found ? " with coordinates" : ""}`, {
+    where: given.where,
+    expected: labels.length > 0 ? `one of ${labels.slice(0, 20).join(", ")}` : "a CIF with sites",
+    found: given.text,
+    remedy: "name a site of the CIF, or write LABEL x y z",
+  });
+}
+
+/** The sites of a CIF that may carry moments; a CIF without sites is no fault of a command that can do without. */
+async function sitesOfStructure(work: Work, structure: CifStructure): Promise<GivenSite[]> {
+  throwPart(structure.problems.sites);
+  const ownGroup = typeof work.request.group !== "string";
+  const group = ownGroup ? (structure.symmetry?.group ?? null) : null;
+  const { sites, assumed, warnings } = await magneticSitesOf(structure, group, structure.cell?.cell ?? null);
+  remember(work, assumed, warnings);
+  return sites.flatMap(({ label, position, ion, place }) =>
+    position
+      ? [{ given: { text: label, where: place, verbatim: false }, site: { label, position }, ion: ion?.text ?? null }]
+      : [],
   );
 }
 
@@ -70,7 +109,7 @@ export function orbitsOf(work: Work, group: SpaceGroup, sites: readonly GivenSit
   return orbits;
 }
 
-function rememberMove(work: Work, { label, position, snapped }: SiteOrbit, cell: Cell | null): void {
+export function rememberMove(work: Work, { label, position, snapped }: SiteOrbit, cell: Cell | null): void {
   if (snapped === null) return;
   const distance = snapped.distanceAngstrom;
   const far = cell === null || distance === null ? "" : ` ${Number(distance.toPrecision(2))} Å away`;

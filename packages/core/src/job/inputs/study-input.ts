@@ -1,23 +1,10 @@
 import { fail, KvaneError } from "../../errors/index.js";
-import { parseStudy, type Study } from "../../files/index.js";
+import type { Study } from "../../files/index.js";
 import type { JobHost } from "../request.js";
 import { readNamed } from "./read-file.js";
 
-/** The study at `path`, read and checked for its form; `-` is standard input. */
-export async function studyFrom(path: string, host: JobHost, command: string): Promise<Study> {
-  if (/\.cif$/i.test(path))
-    fail("not-built", "CIF files are not read by this version", {
-      where: { file: path, argument: "STUDY" },
-      expected: "a study file, .yaml or .yml",
-      found: path,
-      remedy: "write cell, group and sites into a study; `kvane help study` shows how",
-    });
-  const text = await studyTextFrom(path, host, command);
-  return parseStudy(text, path);
-}
-
-/** A word that is no name of a file was meant as something else. */
-async function studyTextFrom(path: string, host: JobHost, command: string): Promise<string> {
+/** The text of the file at `path`; `-` is standard input. A word that is no name of a file was meant as something else. */
+export async function studyTextFrom(path: string, host: JobHost, command: string): Promise<string> {
   try {
     return await readNamed(host, path, { file: path, argument: "STUDY" });
   } catch (error) {

@@ -30,7 +30,14 @@ export async function findK(work: Work, inputs: StudyInputs, bound: number): Pro
   const found = await searchedFor(work, searchInput(inputs));
   const [best] = found.candidates;
   if (best === undefined)
-    return { search: found.record, candidates: [], followed: [], notFollowed: [], searched: true };
+    return {
+      search: found.record,
+      candidates: [],
+      // No single k explains enough: each vector of the best set is followed on its own.
+      followed: found.several.map((k) => ({ k, candidate: null })),
+      notFollowed: [],
+      searched: true,
+    };
   const allowed = [0, ...best.tiedWith.filter((index) => index > 0)].sort((a, b) => a - b);
   return {
     search: found.record,

@@ -13,7 +13,7 @@ import { groupOf } from "../inputs/group-input.js";
 import { placedK, writtenKs } from "../inputs/k-input.js";
 import { peaksIfGiven, wavelengthOf } from "../inputs/peaks-input.js";
 import { searchOptionsOf } from "../inputs/search-input.js";
-import { orbitsOf, writtenSites } from "../inputs/site-input.js";
+import { type GivenSite, orbitsOf, writtenSites } from "../inputs/site-input.js";
 import { needStudy } from "../inputs/study-input.js";
 import { remember, together, type Work } from "../work.js";
 import type { ReadPeaks } from "./search-of.js";
@@ -24,6 +24,7 @@ export interface StudyInputs {
   readonly group: SpaceGroup;
   /** Null only where k is given and no positions are asked for. */
   readonly cell: Cell | null;
+  readonly sites: readonly GivenSite[];
   readonly orbits: readonly SiteOrbit[];
   /** The wave vectors given; empty when k is to be searched. */
   readonly given: readonly WaveVector[];
@@ -53,7 +54,7 @@ export async function readStudy(work: Work): Promise<StudyInputs> {
     cell: () => givenCell && cellFor(group, givenCell),
     orbits: () => orbitsOf(work, group, sites, givenCell?.cell ?? null),
   });
-  return { title: study.title, group, cell, orbits, given, peaks, wavelengthAngstrom, options };
+  return { title: study.title, group, cell, sites, orbits, given, peaks, wavelengthAngstrom, options };
 }
 
 function refuseWithoutSource(file: string): never {

@@ -29,6 +29,8 @@ export interface SearchInput {
 /** Candidates as the search gives them, and the record for the answer, in one order. */
 export interface Found {
   readonly candidates: readonly Candidate[];
+  /** The vectors of the best set of several, where that gains on one and is more than chance; else none. */
+  readonly several: readonly WaveVector[];
   readonly record: SearchRecord;
 }
 
@@ -45,7 +47,7 @@ export function indexedBy(work: Work, input: SearchInput, ks: readonly WaveVecto
     unmatched: candidates[0]?.unmatched ?? [],
     dropped: 0,
   });
-  return { candidates, record };
+  return { candidates, several: [], record };
 }
 
 function nothingFound({ unmatched, maxDimension }: SearchOptions): Problem {
@@ -65,5 +67,7 @@ export async function searchedFor(work: Work, input: SearchInput): Promise<Found
   for (const { warnings } of found.candidates.slice(0, 1)) remember(work, [], warnings);
   if (found.candidates.length === 0) remember(work, [], [nothingFound(options)]);
   const record = searchRecord(group, cell, peaksRecord(peaks.list, peaks.file), found);
-  return { candidates: found.candidates, record };
+  const [set] = found.severalVectors?.found ?? [];
+  const several = set !== undefined && set.evidence.value > 0 ? set.vectors : [];
+  return { candidates: found.candidates, several, record };
 }

@@ -10,6 +10,7 @@ import type {
   ReferenceVector,
   Region,
   SetAside,
+  SeveralVectors,
 } from "../../search/index.js";
 import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
 import type { OverlapRecord, SatelliteRecord, SatellitesRecord } from "../records/satellites.js";
@@ -17,9 +18,11 @@ import type {
   AssignmentRecord,
   CandidateRecord,
   CertificateRecord,
+  EvidenceRecord,
   LineRecord,
   PeaksRecord,
   SearchRecord,
+  SeveralVectorsRecord,
 } from "../records/search.js";
 import { cellRecord, groupRecord } from "./names.js";
 
@@ -102,6 +105,7 @@ export function searchRecord(
     readonly regions?: readonly Region[];
     readonly references?: readonly ReferenceVector[];
     readonly flags?: readonly PeakFlag[];
+    readonly severalVectors?: SeveralVectors | null;
     readonly dropped: number;
   },
 ): SearchRecord {
@@ -126,6 +130,7 @@ export function searchRecord(
       h: [...flag.h],
       state: flag.state,
       separation: roundNumber(flag.separation),
+      parentIntensity: rounded(flag.parentIntensity),
     })),
     references: (found.references ?? []).map(({ k, evidence, matched, total }) => ({
       k: waveVectorToJson(k),
@@ -133,13 +138,43 @@ export function searchRecord(
       matched,
       total,
     })),
+    severalVectors: severalVectorsRecord(found.severalVectors ?? null),
     dropped: found.dropped,
+  };
+}
+
+function severalVectorsRecord(several: SeveralVectors | null): SeveralVectorsRecord | null {
+  return (
+    several && {
+      stages: several.stages.map((one) => ({ ...one, minimumMatched: [...one.minimumMatched] })),
+      found: several.found.map((find) => ({
+        stage: find.stage,
+        vectors: find.vectors.map(waveVectorToJson),
+        members: find.members.map(({ name, k, peaks }) => ({ name, k: waveVectorToJson(k), peaks: [...peaks] })),
+        evidence: evidenceRecord(find.evidence),
+        gain: roundNumber(find.gain),
+        matched: find.matched,
+        total: find.total,
+        unmatched: [...find.unmatched],
+      })),
+    }
+  );
+}
+
+function evidenceRecord({ value, reading, charges }: Candidate["evidence"]): EvidenceRecord {
+  return {
+    value: roundNumber(value),
+    reading,
+    charges: {
+      dimensions: roundNumber(charges.dimensions),
+      kinds: roundNumber(charges.kinds),
+      tuning: roundNumber(charges.tuning),
+    },
   };
 }
 
 function candidateRecord(group: SpaceGroup, candidate: Candidate): CandidateRecord {
   const { evidence, residuals, refinement } = candidate;
-  const { dimensions, kinds, tuning } = evidence.charges;
   return {
     k: waveVectorToJson(candidate.k),
     reduced: waveVectorToJson(reducedRepresentative(group, candidate.k)),
@@ -147,11 +182,7 @@ function candidateRecord(group: SpaceGroup, candidate: Candidate): CandidateReco
     dimension: candidate.manifold.dimension,
     arms: candidate.arms,
     onNuclearLines: candidate.onNuclearLines,
-    evidence: {
-      value: roundNumber(evidence.value),
-      reading: evidence.reading,
-      charges: { dimensions: roundNumber(dimensions), kinds: roundNumber(kinds), tuning: roundNumber(tuning) },
-    },
+    evidence: evidenceRecord(evidence),
     matched: candidate.matched,
     total: candidate.total,
     deWolff: rounded(candidate.deWolff),

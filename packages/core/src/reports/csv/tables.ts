@@ -1,5 +1,6 @@
 import type { AtlasRecord } from "../records/atlas.js";
 import type { CompatibilityRecord } from "../records/compatibility.js";
+import type { ConfigurationsRecord } from "../records/configurations.js";
 import type { ModesRecord } from "../records/modes.js";
 import type { OverlapRecord, SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
@@ -135,6 +136,36 @@ export function compatibilityCsv(record: CompatibilityRecord): string {
         part.label,
         part.dimension,
         parts.find((one) => one.label === part.label)?.multiplicity ?? 0,
+      ]),
+    ),
+  );
+}
+
+/** One row for each site of each configuration: what a refinement starts from. */
+export function configurationsCsv(record: ConfigurationsRecord): string {
+  const header = ["configuration", "irreps", "direction", "bns_number", "bns_symbol", "og_number", "cell_from_parent"];
+  const site = ["site", "parent_site", "x", "y", "z", "moment_lattice", "form_lattice", "form_crystal"];
+  return csvText(
+    [...header, "index", "parameters_irreps", "parameters_group", ...site, "example_a", "example_b", "example_c"],
+    record.configurations.flatMap((one) =>
+      one.sites.map((atom): CsvCell[] => [
+        one.id,
+        one.irreps.join(" "),
+        one.direction,
+        one.magneticGroup.bns.number,
+        one.magneticGroup.bns.symbol,
+        one.magneticGroup.og.number,
+        one.magneticGroup.cellFromParent,
+        one.index,
+        one.freeParameters.irreps,
+        one.freeParameters.group,
+        atom.label,
+        atom.parentSite,
+        ...atom.positionLattice,
+        atom.momentLattice,
+        atom.symmformLattice,
+        atom.symmformCrystal,
+        ...atom.exampleLattice,
       ]),
     ),
   );

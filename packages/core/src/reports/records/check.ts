@@ -16,6 +16,31 @@ export interface CheckedSiteRecord {
   readonly snapped: { readonly from: readonly string[]; readonly distanceAngstrom: number | null } | null;
 }
 
+/** A data block with a structure. */
+export interface CifBlockRecord {
+  readonly block: string;
+  readonly title: string | null;
+  readonly group: GroupRecord | null;
+  readonly cell: CellRecord | null;
+  readonly sites: number;
+}
+
+/** What a CIF is beside its structure. */
+export interface CifRecord {
+  readonly version: "1.1" | "2.0";
+  /** The data block that was read; null where only the grammar was, or where several blocks have structures. */
+  readonly block: string | null;
+  /** What the group was taken from. */
+  readonly symmetryFrom: string | null;
+  /** How many atoms the block lists; `sites` may show fewer. */
+  readonly siteCount: number | null;
+  /** The blocks with a cell or atoms; empty where only the grammar was read. */
+  readonly structures: readonly CifBlockRecord[];
+  /** Single items and loops of all blocks. */
+  readonly items: number;
+  readonly loops: number;
+}
+
 /** Result of `kvane check`. */
 export interface CheckRecord {
   readonly kind: "study" | "cif";
@@ -29,4 +54,6 @@ export interface CheckRecord {
   readonly peaks: { readonly file: string; readonly kind: string; readonly count: number } | null;
   /** What the whole job still needs, in words; empty when it can run. */
   readonly missing: readonly string[];
+  /** Null for a study. */
+  readonly cif: CifRecord | null;
 }

@@ -1,4 +1,5 @@
 import type { CellRecord, GroupRecord, KRecord } from "./common.js";
+import type { ConfigurationsRecord } from "./configurations.js";
 import type { IrrepsRecord } from "./irreps.js";
 import type { ModesRecord } from "./modes.js";
 import type { OverlapRecord, SatellitesRecord } from "./satellites.js";
@@ -13,7 +14,8 @@ export interface BranchRecord {
   readonly star: StarRecord;
   readonly irreps: IrrepsRecord;
   readonly modes: ModesRecord;
-  readonly configurations: null;
+  /** Null without sites, or where a letter of k has no number. */
+  readonly configurations: ConfigurationsRecord | null;
   readonly satellites: SatellitesRecord | null;
   readonly weigh: null;
 }

@@ -170,6 +170,8 @@ export interface FlagRecord {
   readonly state: string;
   /** Å⁻¹, line less peak. */
   readonly separation: number;
+  /** Intensity of the nuclear line itself where it was given. */
+  readonly parentIntensity: number | null;
 }
 
 /** k = 0 or a k that only reverses centring translations. */
@@ -194,6 +196,32 @@ export interface CertificateRecord {
   readonly kinds: readonly KindCertificateRecord[];
 }
 
+/** Several vectors that explain more peaks together than one alone. */
+export interface VectorFindRecord {
+  readonly stage: "harmonics" | "second vector" | "sums";
+  /** The independent ones. */
+  readonly vectors: readonly KRecord[];
+  readonly members: readonly { readonly name: string; readonly k: KRecord; readonly peaks: readonly number[] }[];
+  readonly evidence: EvidenceRecord;
+  /** Evidence less that of the best single vector. */
+  readonly gain: number;
+  readonly matched: number;
+  readonly total: number;
+  readonly unmatched: readonly number[];
+}
+
+/** What was tried with more than one vector, stage by stage. */
+export interface SeveralVectorsRecord {
+  readonly stages: readonly {
+    readonly stage: "harmonics" | "second vector" | "sums";
+    readonly tried: number;
+    readonly boxes: number;
+    readonly exhaustive: boolean;
+    readonly minimumMatched: readonly number[];
+  }[];
+  readonly found: readonly VectorFindRecord[];
+}
+
 /** Result of `kvane index` and `kvane locate`. */
 export interface SearchRecord {
   readonly group: GroupRecord;
@@ -210,6 +238,8 @@ export interface SearchRecord {
   readonly flags: readonly FlagRecord[];
   /** Weighed and shown whatever they explain; empty for `index`. */
   readonly references: readonly ReferenceRecord[];
+  /** Harmonics, sums and a second vector; null where one k explains enough, and for `index`. */
+  readonly severalVectors: SeveralVectorsRecord | null;
   /** How many k were tried and left out because they match too few peaks. */
   readonly dropped: number;
 }

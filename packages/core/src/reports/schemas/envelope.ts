@@ -1,13 +1,18 @@
 import { type JsonSchema, list, nothing, nullable, shared, text } from "./building.js";
 import { commonDefinitions } from "./common.js";
+import { configurationsSchema, exportSchema } from "./configurations.js";
+import { decomposeSchema } from "./decompose.js";
 import { atlasSchema, compatibilitySchema } from "./kinds.js";
+import { exchangeSchema, onsetSchema } from "./exchange.js";
 import { satellitesSchema, searchSchema } from "./peaks.js";
-import { checkSchema, explainSchema, helpSchema, runSchema } from "./study.js";
+import { checkSchema, explainSchema, helpSchema, runSchema, studySchema } from "./study.js";
 import { irrepsSchema, modesSchema, opsSchema, starSchema } from "./symmetry.js";
 
 /** Schema of `result` by command; null for commands that are named but not built in this version. */
 const resultSchemas: { readonly [command: string]: JsonSchema } = {
   run: runSchema,
+  report: runSchema,
+  study: studySchema,
   check: checkSchema,
   ops: opsSchema,
   atlas: atlasSchema,
@@ -15,9 +20,14 @@ const resultSchemas: { readonly [command: string]: JsonSchema } = {
   irreps: irrepsSchema,
   compatibility: compatibilitySchema,
   modes: modesSchema,
+  configurations: configurationsSchema,
+  decompose: decomposeSchema,
+  export: exportSchema,
   satellites: satellitesSchema,
   index: searchSchema,
   locate: searchSchema,
+  exchange: exchangeSchema,
+  onset: onsetSchema,
   explain: explainSchema,
   help: helpSchema,
 };

@@ -69,6 +69,14 @@ export const peaksSchema: JsonSchema = record({
 
 const line = { h, sign, arm: count, residual: number };
 
+const evidence = record({
+  value: number,
+  reading: oneOf("found", "weak", "not informative"),
+  charges: record({ dimensions: number, kinds: number, tuning: number }),
+});
+
+const stageName = oneOf("harmonics", "second vector", "sums");
+
 const candidate = record({
   k: shared("k"),
   reduced: shared("k"),
@@ -76,11 +84,7 @@ const candidate = record({
   dimension: { type: "integer", minimum: 0, maximum: 3 },
   arms: count,
   onNuclearLines: flag,
-  evidence: record({
-    value: number,
-    reading: oneOf("found", "weak", "not informative"),
-    charges: record({ dimensions: number, kinds: number, tuning: number }),
-  }),
+  evidence,
   matched: count,
   total: count,
   deWolff: nullable(number),
@@ -169,6 +173,33 @@ export const searchSchema: JsonSchema = record({
       h: list(number),
       state: text,
       separation: number,
+      parentIntensity: nullable(number),
+    }),
+  ),
+  severalVectors: nullable(
+    record({
+      stages: list(
+        record({
+          stage: stageName,
+          tried: count,
+          boxes: count,
+          exhaustive: flag,
+          minimumMatched: list(count),
+        }),
+      ),
+      found: list(
+        record({
+          stage: stageName,
+          vectors: list(shared("k")),
+          members: list(record({ name: text, k: shared("k"), peaks: list(count) })),
+          evidence,
+          gain: number,
+          matched: count,
+          total: count,
+          unmatched: list(count),
+        }),
+        "best evidence first",
+      ),
     }),
   ),
   references: list(record({ k: shared("k"), evidence: number, matched: count, total: count })),

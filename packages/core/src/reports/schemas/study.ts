@@ -1,5 +1,6 @@
 import {
   count,
+  flag,
   type JsonSchema,
   list,
   nothing,
@@ -11,6 +12,7 @@ import {
   text,
   tuple,
 } from "./building.js";
+import { configurationsSchema } from "./configurations.js";
 import { overlapSchema, peaksSchema, satellitesSchema, searchSchema } from "./peaks.js";
 import { irrepsSchema, modesSchema, starSchema } from "./symmetry.js";
 
@@ -35,6 +37,33 @@ export const checkSchema: JsonSchema = record({
   k: list(shared("k")),
   peaks: nullable(record({ file: text, kind: text, count })),
   missing: list(text),
+  cif: nullable(
+    record({
+      version: oneOf("1.1", "2.0"),
+      block: nullable(text),
+      symmetryFrom: nullable(text),
+      siteCount: nullable(count),
+      structures: list(
+        record({
+          block: text,
+          title: nullable(text),
+          group: nullable(shared("group")),
+          cell: nullable(shared("cell")),
+          sites: count,
+        }),
+      ),
+      items: count,
+      loops: count,
+    }),
+  ),
+});
+
+export const studySchema: JsonSchema = record({
+  study: text,
+  block: text,
+  group: shared("group"),
+  cell: nullable(shared("cell")),
+  sites: list(record({ label: text, ion: nullable(text), active: flag, because: text })),
 });
 
 export const runSchema: JsonSchema = record({
@@ -51,7 +80,7 @@ export const runSchema: JsonSchema = record({
       star: starSchema,
       irreps: irrepsSchema,
       modes: modesSchema,
-      configurations: nothing,
+      configurations: nullable(configurationsSchema),
       satellites: nullable(satellitesSchema),
       weigh: nothing,
     }),

@@ -1,5 +1,25 @@
 /** The widest line of a text report, in characters. */
 export const pageWidth = 100;
+/** The narrowest one: below it tables can no longer be read. */
+const narrowestPage = 60;
+
+/** The width of the page that is being written; set for the time of one report, which is made in one go. */
+let current = pageWidth;
+
+/** The widest line of the page that is being written. */
+export function lineWidth(): number {
+  return current;
+}
+
+/** What `write` gives, for a page of that width, 60 to 100; null stands for the usual 100. */
+export function onPage<Result>(width: number | null, write: () => Result): Result {
+  current = Math.min(Math.max(width ?? pageWidth, narrowestPage), pageWidth);
+  try {
+    return write();
+  } finally {
+    current = pageWidth;
+  }
+}
 
 /** One column of a table. Numbers stand to the right, words to the left. */
 export interface Column {
@@ -31,7 +51,7 @@ export function plainBlanks(text: string): string {
 }
 
 /** Lines of at most `width` characters, broken at blanks; later lines are indented by `hanging` more. */
-export function wrap(text: string, width = pageWidth, hanging = 0): string[] {
+export function wrap(text: string, width = lineWidth(), hanging = 0): string[] {
   const lines: string[] = [];
   let line = "";
   for (const word of text.split(" ").flatMap((one) => parts(one, width - hanging))) {
@@ -61,23 +81,23 @@ export function indented(lines: readonly string[], by = 2): string[] {
 
 /** A paragraph, indented and wrapped, its later lines by `hanging` more. */
 export function paragraph(text: string, by = 2, hanging = 0): string[] {
-  return indented(wrap(text, pageWidth - by, hanging), by);
+  return indented(wrap(text, lineWidth() - by, hanging), by);
 }
 
 /** A headed part of a report; nothing when it has no lines. */
 export function section(title: string, ...parts: readonly (readonly string[])[]): string[] {
   const lines = parts.flat();
-  return lines.length === 0 ? [] : [...wrap(title, pageWidth, 2), ...lines, ""];
+  return lines.length === 0 ? [] : [...wrap(title, lineWidth(), 2), ...lines, ""];
 }
 
 /** Names and values in two columns, long values wrapped under themselves. */
 export function fields(entries: readonly (readonly [string, string])[], by = 2): string[] {
   const left = Math.max(...entries.map(([name]) => widthOf(name))) + 2;
   // A name that leaves no room stands above its value.
-  if (left > pageWidth / 2)
+  if (left > lineWidth() / 2)
     return entries.flatMap(([name, value]) => [...paragraph(name, by), ...paragraph(value, by + 2)]);
   return entries.flatMap(([name, value]) => {
-    const lines = wrap(value, pageWidth - by - left);
+    const lines = wrap(value, lineWidth() - by - left);
     return lines.map((line, index) => " ".repeat(by) + pad(index === 0 ? name : "", left) + line);
   });
 }
@@ -93,7 +113,8 @@ export function table(columns: readonly Column[], rows: readonly (readonly strin
   const widths = columns.map((column, index) =>
     Math.max(widthOf(column.title), ...rows.map((row) => widthOf(row[index] ?? ""))),
   );
-  if (widthOfAll(widths, by) > pageWidth) fitPage(widths, narrowTitles(columns, rows), by);
+  if (widthOfAll(widths, by) > lineWidth())
+    fitPage(widths, narrowTitles(columns, rows), longestWords(columns, rows), by);
   const line = (cells: readonly string[]): string[] => {
     const wrapped = columns.map((_, index) => wrap(cells[index] ?? "", widths[index]));
     const height = Math.max(...wrapped.map(({ length }) => length));
@@ -116,17 +137,30 @@ function narrowTitles(columns: readonly Column[], rows: readonly (readonly strin
   );
 }
 
-/** Makes columns narrower until the table fits: their titles, then the last column, then the widest. */
-function fitPage(widths: number[], narrow: readonly number[], by: number): void {
+/** The widths of columns that are broken at blanks only. */
+function longestWords(columns: readonly Column[], rows: readonly (readonly string[])[]): number[] {
+  return columns.map(({ title }, index) =>
+    Math.max(...[title, ...rows.map((row) => row[index] ?? "")].flatMap((text) => text.split(" ").map(widthOf))),
+  );
+}
+
+/** Makes columns narrower until the table fits: their titles, then the last column, then the widest, words last. */
+function fitPage(widths: number[], narrow: readonly number[], words: readonly number[], by: number): void {
   const last = widths.length - 1;
-  const excess = () => Math.max(0, widthOfAll(widths, by) - pageWidth);
+  const excess = () => Math.max(0, widthOfAll(widths, by) - lineWidth());
   const shrink = (index: number, floor: number) => {
     const width = widths[index] ?? 0;
     widths[index] = Math.max(Math.min(width, floor), width - excess());
   };
-  if (widthOfAll(narrow, by) <= pageWidth) for (const index of narrow.keys()) shrink(index, narrow[index] ?? 0);
+  if (widthOfAll(narrow, by) <= lineWidth()) for (const index of narrow.keys()) shrink(index, narrow[index] ?? 0);
   shrink(last, narrowest);
   for (const index of narrow.keys()) shrink(index, narrow[index] ?? 0);
+  while (excess() > 0) {
+    const spare = widths.map((width, index) => width - (words[index] ?? 0));
+    const roomiest = spare.indexOf(Math.max(...spare));
+    if ((spare[roomiest] ?? 0) <= 0) break;
+    shrink(roomiest, (widths[roomiest] ?? 0) - 1);
+  }
   while (excess() > 0) {
     const widest = widths.indexOf(Math.max(...widths));
     if ((widths[widest] ?? 0) <= 1) return;
@@ -156,7 +190,7 @@ export function wideTable(
     by,
   );
   const blocks: number[][] = [];
-  let used = pageWidth;
+  let used = lineWidth();
   columns.forEach((column, index) => {
     const width =
       2 +
@@ -164,7 +198,7 @@ export function wideTable(
         column,
         rows.map((row) => row.cells[index] ?? ""),
       );
-    if (used + width > pageWidth + 2) {
+    if (used + width > lineWidth() + 2) {
       blocks.push([]);
       used = left;
     }
@@ -184,8 +218,8 @@ export function wideTable(
 /** Short texts in as many columns as the page holds, filled row by row; what is wider than the page is wrapped. */
 export function flow(texts: readonly string[], by = 2): string[] {
   const width = Math.max(...texts.map(widthOf)) + 2;
-  if (width > pageWidth - by + 2) return texts.flatMap((text) => paragraph(text, by, 4));
-  const across = Math.max(1, Math.floor((pageWidth - by + 2) / width));
+  if (width > lineWidth() - by + 2) return texts.flatMap((text) => paragraph(text, by, 4));
+  const across = Math.max(1, Math.floor((lineWidth() - by + 2) / width));
   const lines: string[] = [];
   for (let start = 0; start < texts.length; start += across)
     lines.push(

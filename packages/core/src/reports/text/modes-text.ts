@@ -2,7 +2,7 @@ import type { KRecord } from "../records/common.js";
 import type { ConventionRecord, IrrepModesRecord, ModeRecord, ModesRecord, SiteModesRecord } from "../records/modes.js";
 import { axesText, waveText } from "./convention-text.js";
 import { matrixText } from "./irreps-text.js";
-import { fields, pageWidth, paragraph, section, table, wideTable, widthOf } from "./layout.js";
+import { fields, lineWidth, paragraph, section, table, wideTable, widthOf } from "./layout.js";
 import { cellText, counted, groupText, kForm, kText, minusKText, positionText } from "./names.js";
 import { littleGroupSection } from "./star-text.js";
 
@@ -31,7 +31,7 @@ export function modesText(record: ModesRecord): string[] {
  * The exact texts of a site with kx, ky, kz in exponents in place of the letters of k, as the tables of what is allowed
  * have it: there u, v, w are amplitudes. Letters that are no component by themselves stay; so do those on other arms.
  */
-function inComponents(site: SiteModesRecord, k: KRecord): SiteModesRecord {
+export function inComponents(site: SiteModesRecord, k: KRecord): SiteModesRecord {
   const names = componentNames(k);
   const renamed = (text: string) =>
     text.replace(/e\^\{[^}]*\}/g, (power) => power.replace(/[uvw]/g, (letter) => names.get(letter) ?? letter));
@@ -90,7 +90,7 @@ export function decompositionText(site: SiteModesRecord): string {
   return terms.length > 0 ? terms.join(" + ") : "nothing";
 }
 
-function suborbitText(site: SiteModesRecord): string {
+export function suborbitText(site: SiteModesRecord): string {
   return site.suborbits.map((atoms) => atoms.map((atom) => atom + 1).join(" ")).join(" | ");
 }
 
@@ -124,7 +124,7 @@ export function parameterText(irrep: IrrepModesRecord): string {
   return `${irrep.freeParameters}; ${relation} with the relation between k and −k of one order parameter`;
 }
 
-function relationFields(site: SiteModesRecord, { label, minusK }: IrrepModesRecord): [string, string][] {
+export function relationFields(site: SiteModesRecord, { label, minusK }: IrrepModesRecord): [string, string][] {
   if (minusK === null) return [];
   const partner = minusK.partner === label ? "" : ` to those of ${minusK.partner}`;
   const swapped = minusK.suborbitImages.flatMap((image, orbit) =>
@@ -137,7 +137,7 @@ function relationFields(site: SiteModesRecord, { label, minusK }: IrrepModesReco
   ];
 }
 
-function sizeFields(irrep: IrrepModesRecord, { cell, k }: ModesFrame): [string, string][] {
+export function sizeFields(irrep: IrrepModesRecord, { cell, k }: ModesFrame): [string, string][] {
   const { equalAmplitude, constantMoment, collinear } = irrep;
   if (equalAmplitude === null || constantMoment === null || collinear === null) {
     const needs = cell === null ? "a cell (--cell)" : `a number for every letter of k = ${kForm(k)}`;
@@ -185,7 +185,7 @@ function constraintTable(
   const widest = (column: number, head: string) =>
     Math.max(widthOf(head), ...rows.map((row) => widthOf(row[column] ?? "")));
   const width = 2 + 4 + 2 + widest(1, "position") + 2 + widest(2, title) + 2 + widest(3, oneTitle);
-  if (width <= pageWidth) return table([...atoms, { title }, { title: oneTitle }], rows);
+  if (width <= lineWidth()) return table([...atoms, { title }, { title: oneTitle }], rows);
   return [
     ...table(
       [...atoms, { title }],

@@ -2,17 +2,19 @@ import { physicalSets } from "../physical-sets.js";
 import type { BranchRecord, RunRecord } from "../records/run.js";
 import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
+import { configurationsText, configurationTable } from "./configurations-text.js";
 import { irrepsText, irrepTable } from "./irreps-text.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { decompositionText, modesText, parameterText } from "./modes-text.js";
 import { cellText, counted, groupText, kText, positionText } from "./names.js";
 import { satellitesText, satelliteTable } from "./satellites-text.js";
-import { assignmentTable, candidateTable, certificateLines, peakFields } from "./search-text.js";
+import { assignmentTable, candidateTable, certificateLines, peakFields, severalVectorLines } from "./search-text.js";
 import { starFields, starText } from "./star-text.js";
 
 /** Satellites and candidates that the short report shows. */
 const shownSatellites = 8;
 const shownCandidates = 6;
+const shownConfigurations = 12;
 
 /** The page that the whole job prints, in the order in which a user asks. */
 export function runShortText(record: RunRecord): string[] {
@@ -50,6 +52,7 @@ export function runFullText(record: RunRecord): string[] {
       ...starText(branch.star),
       ...irrepsText(branch.irreps),
       ...modesText(branch.modes),
+      ...(branch.configurations?.kind === "commensurate" ? configurationsText(branch.configurations) : []),
       ...(branch.satellites ? satellitesText(branch.satellites) : []),
     ]),
   ];
@@ -104,7 +107,7 @@ function searchSection(record: RunRecord): string[] {
     "Wave vector",
     candidateTable(search.candidates.slice(0, shownCandidates)),
     moreLine(search.candidates.length - shownCandidates, "candidate"),
-    search.certificate ? ["", ...certificateLines(search)] : [],
+    search.certificate ? ["", ...certificateLines(search), ...severalVectorLines(search)] : [],
     search.certificate && followed.length > 0 ? paragraph(`Followed below: candidate ${followed.join(", ")}.`) : [],
     record.notFollowed.length > 0
       ? paragraph(`Tied but not followed: candidate ${record.notFollowed.map((index) => index + 1).join(", ")}.`)
@@ -126,6 +129,7 @@ function branchText(branch: BranchRecord, number: number | null): string[] {
       irrepTable(branch.irreps.irreps),
     ),
     ...section(`${name}Modes`, modeSummary(branch), [""], paragraph(letterText(branch))),
+    ...configurationSummary(branch, name),
     ...satelliteSummary(branch, name),
   ];
 }
@@ -162,6 +166,18 @@ function modeSummary({ irreps, modes }: BranchRecord): string[] {
       4,
     ),
   ]);
+}
+
+/** One line each; the full report and `kvane configurations` have the rest. */
+function configurationSummary({ configurations }: BranchRecord, name: string): string[] {
+  if (configurations === null || configurations.kind === "incommensurate") return [];
+  const { configurations: all } = configurations;
+  return section(
+    `${name}Configurations`,
+    configurationTable(all.slice(0, shownConfigurations)),
+    moreLine(all.length - shownConfigurations, "configuration"),
+    configurations.bounded.flatMap((what) => paragraph(`Left out because of the limit: ${what}.`)),
+  );
 }
 
 function satelliteSummary({ satellites }: BranchRecord, name: string): string[] {

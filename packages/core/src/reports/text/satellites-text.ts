@@ -57,7 +57,7 @@ export function satelliteTable(reflections: readonly SatelliteRecord[], record: 
 const shownOverlaps = 3;
 
 /** What lies on a satellite and is not extinct, the nearest first where not all are named. */
-function overlapsText({ overlaps, moreOverlaps }: SatelliteRecord): string {
+export function overlapsText({ overlaps, moreOverlaps }: SatelliteRecord): string {
   const allowed = overlaps.filter((one) => one.allowed);
   const shown =
     allowed.length > shownOverlaps

@@ -8,6 +8,12 @@ import { reducedFields } from "./star-text.js";
 /** Candidates that the report of `locate` lists; the JSON has all. */
 const shownCandidates = 12;
 
+/** Other k that a candidate is held against, one line each. */
+const shownSeparations = 4;
+
+/** Sets of several vectors that are printed. */
+const shownVectorFinds = 3;
+
 export function indexText(record: SearchRecord): string[] {
   return [
     ...inputSection(record),
@@ -28,6 +34,7 @@ export function locateText(record: SearchRecord): string[] {
       [""],
       certificateLines(record),
       separationLines(record),
+      severalVectorLines(record),
       referenceLines(record),
       flagLines(record),
       setAsideLines(record),
@@ -48,13 +55,13 @@ function inputSection(record: SearchRecord): string[] {
   );
 }
 
-const kindNames = { d: "d in Å", q: "Q in Å⁻¹", "two-theta": "2θ in degrees", hkl: "single-crystal h k l" };
+export const peakKindNames = { d: "d in Å", q: "Q in Å⁻¹", "two-theta": "2θ in degrees", hkl: "single-crystal h k l" };
 
 /** What was read, in two lines. */
 export function peakFields(peaks: PeaksRecord): [string, string][] {
   const wavelength = peaks.wavelengthAngstrom === null ? "" : `, wavelength ${plain(peaks.wavelengthAngstrom)} Å`;
   return [
-    ["Peaks", `${peaks.list.length} as ${kindNames[peaks.kind]}${wavelength}`],
+    ["Peaks", `${peaks.list.length} as ${peakKindNames[peaks.kind]}${wavelength}`],
     ["Uncertainties", peaks.uncertaintySource],
   ];
 }
@@ -89,15 +96,21 @@ export function candidateTable(candidates: readonly CandidateRecord[]): string[]
 }
 
 /** Numbers of the tied candidates, the first few of many. */
-function tiesText(ties: readonly number[]): string {
+export function tiesText(ties: readonly number[]): string {
   const shown = ties.slice(0, 3).map((other) => other + 1);
   return ties.length > 3 ? `${shown.join(", ")} and ${ties.length - 3} more` : shown.join(", ");
 }
 
 /** What the search covered, and what it says of what is not listed. */
 export function certificateLines(record: SearchRecord): string[] {
+  const sentences = certificateSentences(record);
+  return sentences === null ? [] : paragraph(sentences);
+}
+
+/** The same as one text; null where nothing was searched. */
+export function certificateSentences(record: SearchRecord): string | null {
   const certificate = record.certificate;
-  if (certificate === null) return [];
+  if (certificate === null) return null;
   const kinds = ["all special points", "points and lines", "points, lines and planes", "every kind of k"];
   const within = allowances(certificate.zeroShift, certificate.cellScale);
   const scope =
@@ -109,7 +122,7 @@ export function certificateLines(record: SearchRecord): string[] {
     ? `Nothing else in the ${certificate.maxDimension === 3 ? "whole zone" : "kinds searched"} matches ${certificate.minimumMatched} or more peaks` +
       `${undecided > 0 ? `, but ${counted(undecided, "region")} could not be decided (see --json)` : ""}.`
     : `The search was stopped before its end (${certificate.stopped ?? "no reason given"}): other k may match.`;
-  return paragraph(`${scope} ${complete}`);
+  return `${scope} ${complete}`;
 }
 
 function allowances(zeroShift: number, cellScale: number): string {
@@ -122,6 +135,13 @@ function allowances(zeroShift: number, cellScale: number): string {
 
 /** What the first candidate cannot be told from, and what would tell. */
 export function separationLines(record: SearchRecord): string[] {
+  return [...separationSentences(record), ...mergedSentences(record), ...correctionSentences(record)].flatMap((line) =>
+    paragraph(line),
+  );
+}
+
+/** What the first candidate cannot be told from, a text each. */
+export function separationSentences(record: SearchRecord): string[] {
   const best = record.candidates[0];
   if (best === undefined) return [];
   const lines = best.separations
@@ -131,20 +151,38 @@ export function separationLines(record: SearchRecord): string[] {
         ? `${kShort(best.k)} cannot be told from ${kShort(one.k)} by positions: all lines coincide.`
         : `${kShort(best.k)} cannot be told from ${kShort(one.k)} unless ΔQ/Q < ${decimals(100 * one.resolution, 2)} % at ${decimals(one.q, 2)} Å⁻¹.`,
     );
-  const merged = best.merged.map(
+  const more = lines.length - shownSeparations;
+  return [
+    ...lines.slice(0, shownSeparations),
+    ...(more > 0 ? [`The same holds for ${counted(more, "more k", "more k")}.`] : []),
+  ];
+}
+
+/** Candidates of higher kinds that are the same find as the first, a text each. */
+export function mergedSentences({ candidates }: SearchRecord): string[] {
+  return (candidates[0]?.merged ?? []).map(
     (one) => `${kShort(one.k)} beside it is the same find (evidence ${decimals(one.evidence, 1)}).`,
   );
-  const corrections = best.corrections.map(
+}
+
+/** What was refined with the first candidate, a text each. */
+export function correctionSentences({ candidates }: SearchRecord): string[] {
+  return (candidates[0]?.corrections ?? []).map(
     ({ name, value, su }) =>
       `Refined with it: ${name === "zeroShift" ? "zero shift of 2θ" : "relative change of the cell"} ${su === null ? `${plain(Number(value.toPrecision(3)))} (at its limit)` : withUncertainty(value, su)}.`,
   );
-  return [...lines, ...merged, ...corrections].flatMap((line) => paragraph(line));
 }
 
 /** k = 0 and its like, where no candidate stands for them. */
 function referenceLines(record: SearchRecord): string[] {
-  return record.references.flatMap(({ k, evidence, matched, total }) =>
-    paragraph(`For comparison ${kShort(k)}: ${matched} of ${total} peaks, evidence ${decimals(evidence, 1)}.`),
+  return referenceSentences(record).flatMap((line) => paragraph(line));
+}
+
+/** The same, a text each. */
+export function referenceSentences({ references }: SearchRecord): string[] {
+  return references.map(
+    ({ k, evidence, matched, total }) =>
+      `For comparison ${kShort(k)}: ${matched} of ${total} peaks, evidence ${decimals(evidence, 1)}.`,
   );
 }
 
@@ -154,8 +192,44 @@ function flagLines(record: SearchRecord): string[] {
     const peaks = [...new Set(record.flags.filter((flag) => flag.with === sort).map(({ peak }) => peak + 1))];
     if (peaks.length === 0) return [];
     const where = sort === "nuclear" ? "nuclear lines of the cell" : "λ/2 images of nuclear lines";
-    return paragraph(`Flagged, not removed: peak ${peaks.join(", ")} on ${where}.`);
+    return [
+      ...paragraph(`Flagged, not removed: peak ${peaks.join(", ")} on ${where}.`),
+      ...(sort === "half wavelength" ? parentLines(record) : []),
+    ];
   });
+}
+
+/** How strong the parents of λ/2 images are, against the peak, where both were measured. */
+function parentLines({ flags, peaks }: SearchRecord): string[] {
+  const shares = flags.flatMap(({ peak, h, with: sort, parentIntensity }) => {
+    const intensity = peaks.list.find(({ index }) => index === peak)?.intensity ?? null;
+    if (sort !== "half wavelength" || parentIntensity === null || intensity === null || parentIntensity <= 0) return [];
+    return [`peak ${peak + 1} has ${decimals((100 * intensity) / parentIntensity, 2)} % of ${h.join(" ")}`];
+  });
+  return shares.length === 0 ? [] : paragraph(`Against their parents: ${shares.join(", ")}.`);
+}
+
+/** Harmonics, sums and second vectors, the best few; or that nothing gains by them. */
+export function severalVectorLines({ severalVectors }: SearchRecord): string[] {
+  if (severalVectors === null) return [];
+  const { found, stages } = severalVectors;
+  const tried = stages.filter((one) => one.tried > 0).map(({ stage }) => stage);
+  const open = stages.some(({ exhaustive }) => !exhaustive) ? " (not exhaustive: a budget for each kind)" : "";
+  if (found.length === 0)
+    return paragraph(
+      `More than one vector: ${tried.length === 0 ? "nothing to try" : `${tried.join(", ")} tried${open}`}; nothing explains more.`,
+    );
+  return [
+    ...paragraph(`More than one vector (${tried.join(", ")} tried${open}):`),
+    ...found.slice(0, shownVectorFinds).flatMap((find) => {
+      const members = find.members.map(
+        ({ name, k, peaks }) => `${name} = ${kShort(k)} (${counted(peaks.length, "peak")})`,
+      );
+      return paragraph(
+        `${find.matched} of ${find.total} peaks by ${members.join(" and ")}: evidence ${decimals(find.evidence.value, 1)}, ${find.evidence.reading}, ${decimals(find.gain, 1)} better than one vector.`,
+      );
+    }),
+  ];
 }
 
 function setAsideLines(record: SearchRecord): string[] {
@@ -189,7 +263,7 @@ function candidateFields(candidate: CandidateRecord): [string, string][] {
   ];
 }
 
-function nearText({ letter, fraction, deviation }: CandidateRecord["nearFractions"][number]): string {
+export function nearText({ letter, fraction, deviation }: CandidateRecord["nearFractions"][number]): string {
   return `${letter} = ${fraction} (${decimals(Math.abs(deviation), 1)} s.u. away)`;
 }
 
@@ -208,7 +282,7 @@ function refinementFields({ refinement, k }: CandidateRecord): [string, string][
 }
 
 /** Root mean square of the matched peaks' residuals in standard uncertainties. */
-function misfitOf({ residuals, matched }: CandidateRecord): number | null {
+export function misfitOf({ residuals, matched }: CandidateRecord): number | null {
   return matched > 0 ? Math.sqrt(residuals.chiSquared / matched) : null;
 }
 
@@ -249,7 +323,7 @@ export function assignmentTable(candidate: CandidateRecord, peaks: PeaksRecord):
 }
 
 /** Observed less computed in standard uncertainties; of three indices the one that is off most. */
-function offsetOf({ residual, residualHkl }: AssignmentRecord, uncertainty: number): number | null {
+export function offsetOf({ residual, residualHkl }: AssignmentRecord, uncertainty: number): number | null {
   if (!(uncertainty > 0)) return null;
   if (residualHkl === null) return residual / uncertainty;
   return Math.max(...residualHkl.map(Math.abs)) / uncertainty;

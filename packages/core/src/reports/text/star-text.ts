@@ -29,7 +29,7 @@ export function reducedFields({ k, reduced }: Pick<StarRecord, "k" | "reduced">)
 }
 
 /** One line, or two where it matters whether k and −k are taken as one. */
-function kindFields(record: StarRecord): [string, string][] {
+export function kindFields(record: StarRecord): [string, string][] {
   const alone = `${dimensionText(record.dimension)} ${kForm(record.manifold)}`;
   const withMinusK = `${dimensionText(record.dimensionPM)} ${kForm(record.manifoldPM)}`;
   if (alone === withMinusK) return [["Kind", alone]];

@@ -16,25 +16,10 @@ import {
   readCases,
 } from "../support/reference-cases.js";
 import { type SweepOptions, type SweepResult, sweepCase } from "../support/sweep-case.js";
-
-/** One piece of the sweep: small enough to be lost when the run is broken off, big enough to be worth a line. */
-export interface Unit {
-  readonly sweep: SweepName;
-  /** Group number, row of the table of settings, or number of the first case of a reference table. */
-  readonly number: number;
-  readonly run: () => Counts;
-}
-
-export interface Counts {
-  readonly cases: number;
-  readonly irreps: number;
-  readonly modes: number;
-  readonly fields: number;
-  readonly problems: readonly string[];
-}
+import type { Counts, Subject, Unit } from "./subject.js";
 
 /** What each sweep goes over, and its seed. */
-export const sweeps = {
+const sweeps = {
   points: {
     what: "230 standard settings at every special point; a general and a special site, moments and displacements",
     seed: 101,
@@ -64,14 +49,17 @@ export const sweeps = {
   decompositions: { what: "reference decompositions (153)", seed: null },
 } as const;
 
-export type SweepName = keyof typeof sweeps;
+type SweepName = keyof typeof sweeps;
+
+/** Irreps and modes of every group. */
+export const subject: Subject = { name: "symmetry", sweeps, units: allUnits };
 
 const cells = 256;
 /** Random k in each arithmetic class. */
 const randomKinds = 200;
 const groups = Array.from({ length: 230 }, (_, index) => index + 1);
 
-export function allUnits(): Unit[] {
+function allUnits(): Unit[] {
   const settings = tabulatedSettings();
   return [
     ...caseUnits<CharacterCase>("characters", characterCaseProblems),

@@ -1,0 +1,65 @@
+import { isElement } from "../ion-names.js";
+
+/** An element and its charge where it has one, from a type symbol or a label. */
+export interface Ion {
+  readonly element: string;
+  /** In units of e; null where none is written. */
+  readonly charge: number | null;
+  /** As a study writes it: `Fe3+`, `O2-`, `Al`. */
+  readonly text: string;
+}
+
+const written = /^([A-Za-z]{1,2}?)(?:\(?([+-]?)(\d*(?:\.\d*)?)([+-]?)\)?)$/;
+
+/**
+ * Reads a type symbol: `Fe3+`, `O2-`, `Fe+3`, `FE`, `D`, `Al0+` (which is `Al`). A charge that is no whole number is
+ * left away. Null for what is no element: `Wat`, `OH`, `X`.
+ */
+export function ionOfSymbol(symbol: string): Ion | null {
+  const found = written.exec(symbol.trim().replaceAll("\u2212", "-"));
+  if (!found) return null;
+  const [, letters = "", front = "", size = "", back = ""] = found;
+  const element = properCase(letters);
+  if (!isElement(element) || (front !== "" && back !== "")) return null;
+  const sign = front || back;
+  if (sign === "") return ionOf(element, null);
+  const charge = Number(size === "" ? 1 : size) * (sign === "-" ? -1 : 1);
+  return ionOf(element, Number.isInteger(charge) ? charge + 0 : null);
+}
+
+export function ionOf(element: string, charge: number | null): Ion {
+  const sign = charge === null || charge === 0 ? "" : charge > 0 ? "+" : "-";
+  const size = Math.abs(charge ?? 0);
+  return { element, charge, text: sign === "" ? element : `${element}${size === 1 ? "" : size}${sign}` };
+}
+
+/**
+ * The element that a label begins with (core dictionary: a label starts with the type symbol). Two letters count where
+ * the second is small, or where the file names that element elsewhere: `Co1`, and `CO1` beside `_atom_type_symbol Co`.
+ *
+ * @param known elements that the file names in its formula or list of types
+ */
+export function ionOfLabel(label: string, known: ReadonlySet<string>): Ion | null {
+  const letters = /^[A-Za-z]{1,2}/.exec(label.trim())?.[0] ?? "";
+  const two = properCase(letters);
+  const one = two.slice(0, 1);
+  const small = /^[A-Z][a-z]/.test(letters);
+  if (
+    two.length === 2 &&
+    isElement(two) &&
+    (small ? !known.has(one) || known.has(two) || known.size === 0 : known.has(two))
+  )
+    return ionOf(two, null);
+  if (isElement(one) && (known.size === 0 || known.has(one))) return ionOf(one, null);
+  if (two.length === 2 && isElement(two)) return ionOf(two, null);
+  return isElement(one) ? ionOf(one, null) : null;
+}
+
+/** The elements of a formula such as `Fe2 O3` or `C12 H8 (Fe O4)2`. */
+export function elementsOfFormula(formula: string): string[] {
+  return (formula.match(/[A-Z][a-z]?/g) ?? []).filter(isElement);
+}
+
+function properCase(letters: string): string {
+  return `${letters.charAt(0).toUpperCase()}${letters.slice(1).toLowerCase()}`;
+}

@@ -1,0 +1,185 @@
+import type { ScanSeries } from "../onsets/index.js";
+import { readNumber } from "./number-text.js";
+import { decimalCommaOf, type Field, type Row, readRows } from "./peak-rows.js";
+import { noteDecimalComma } from "./peak-values.js";
+import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
+import { readableText } from "./readable-text.js";
+
+/** A temperature scan: several quantities against temperature. */
+export interface ScanTable {
+  readonly file: string;
+  readonly intensities: readonly ScanSeries[];
+  /** Components of the wave vector, columns called k, kx, ky, kz, u, v or w. */
+  readonly k: readonly ScanSeries[];
+  /** Whether a header named the columns; without one every column is an intensity. */
+  readonly headed: boolean;
+  readonly rows: number;
+}
+
+type Role = "temperature" | "intensity" | "k" | "uncertainty";
+
+interface Column {
+  readonly name: string;
+  readonly role: Role;
+  /** For uncertainties: the column that they belong to. */
+  readonly of: number | null;
+}
+
+const temperatureName = /^(t|temp|temperature)(\s*[/([]\s*k\s*[)\]]?)?$/i;
+const uncertaintyName = /^(su|s\.u\.|sigma|sig|σ|error|err|esd|uncertainty|±|\+-)([\s([_].*)?$|^.*[\s_-](su|s\.u\.|sigma|error|esd|uncertainty)$/i;
+const kName = /^(k|k[xyz]|[uvw])(\s*[/([].*)?$/i;
+/** What stands in a cell that has no value. */
+const missing = /^([-–—.]|nan)?$/i;
+
+/**
+ * Reads a temperature scan: rows of a temperature in K and one or more quantities. A header names the columns: T first,
+ * then a name for each peak; a column called su (or sigma, error, esd, …) holds the uncertainties of the one before it,
+ * and columns called k, kx, ky, kz, u, v, w are components of the wave vector. Values may carry their uncertainty in
+ * brackets, `132(4)`. Empty cells and `-` are left out. Rows may stand in any order.
+ *
+ * Throws all problems at once with line and column: `file-empty`, `file-unreadable`, `invalid-scan`.
+ */
+export function parseScanTable(text: string, file: string): ScanTable {
+  const problems = problemList(file);
+  const rows = readRows(readableText(text, file));
+  const [first] = rows;
+  if (!first) {
+    note(problems, "file-empty", "the scan holds nothing but comments", { where: { line: 1, column: 1 } });
+    throwProblems(problems);
+  }
+  const headed = first !== undefined && readNumber(first.fields[0]?.text ?? "") === null && decimalCommaOf(first) === null;
+  const data = headed ? rows.slice(1) : rows;
+  const columns = headed ? headerColumns(first as Row, problems) : plainColumns(data);
+  if (columns.filter(({ role }) => role === "intensity" || role === "k").length === 0)
+    note(problems, "invalid-scan", "there is no column besides the temperature", {
+      where: { line: first?.line ?? 1, column: 1 },
+      expected: "T, then a column for each peak",
+      found: first?.text.trim() ?? "nothing",
+      remedy: "write a header such as T peak1 su peak2 su",
+    });
+  const cells = data.map((row) => readRow(row, columns, problems));
+  throwProblems(problems);
+  const series = (role: Role) =>
+    columns.flatMap((column, index) => (column.role === role ? [seriesOf(column.name, index, columns, cells)] : []));
+  return { file, intensities: series("intensity"), k: series("k"), headed, rows: data.length };
+}
+
+function plainColumns(rows: readonly Row[]): Column[] {
+  const width = Math.max(0, ...rows.map(({ fields }) => fields.length));
+  return Array.from({ length: width }, (_, index) =>
+    index === 0
+      ? { name: "T", role: "temperature", of: null }
+      : { name: `column ${index + 1}`, role: "intensity", of: null },
+  );
+}
+
+function headerColumns(row: Row, problems: ProblemList): Column[] {
+  const fields = row.separator === " " ? joinedBrackets(row.fields) : row.fields;
+  const columns: Column[] = [];
+  const temperature = fields.findIndex(({ text }) => temperatureName.test(text));
+  fields.forEach((field, index) => {
+    const { text } = field;
+    if (index === temperature) columns.push({ name: text, role: "temperature", of: null });
+    else if (uncertaintyName.test(text)) columns.push({ name: text, role: "uncertainty", of: lastQuantity(columns) });
+    else columns.push({ name: text, role: kName.test(text) ? "k" : "intensity", of: null });
+  });
+  if (temperature < 0)
+    note(problems, "invalid-scan", "no column of the header is the temperature", {
+      where: { line: row.line, column: row.fields[0]?.column ?? 1 },
+      expected: "a column called T",
+      found: row.text.trim(),
+      remedy: "call the column of temperatures T; they are in K",
+    });
+  const names = columns.filter(({ role }) => role !== "uncertainty").map(({ name }) => name);
+  const twice = names.find((name, index) => names.indexOf(name) !== index);
+  if (twice !== undefined)
+    note(problems, "invalid-scan", `two columns are called ${twice}`, {
+      where: { line: row.line, column: fields.filter(({ text }) => text === twice).at(-1)?.column ?? 1 },
+      expected: "a name of its own for each column",
+      found: twice,
+      remedy: "number them",
+    });
+  return columns;
+}
+
+/** Index of the last column that is no uncertainty. */
+function lastQuantity(columns: readonly Column[]): number | null {
+  for (let index = columns.length - 1; index >= 0; index--) if (columns[index]?.role !== "uncertainty") return index;
+  return null;
+}
+
+/** `(0 1/2 1)` is one name though blanks separate the columns. */
+function joinedBrackets(fields: readonly Field[]): Field[] {
+  const joined: { text: string; column: number }[] = [];
+  let open = false;
+  for (const { text, column } of fields) {
+    const last = joined.at(-1);
+    if (open && last) last.text += ` ${text}`;
+    else joined.push({ text, column });
+    const whole = joined.at(-1)?.text ?? "";
+    open = (whole.match(/[([]/g) ?? []).length > (whole.match(/[)\]]/g) ?? []).length;
+  }
+  return joined;
+}
+
+interface Cell {
+  readonly value: number;
+  readonly uncertainty: number | null;
+}
+
+/** The numbers of a row by column; null where a cell is empty. */
+function readRow(row: Row, columns: readonly Column[], problems: ProblemList): (Cell | null)[] {
+  const comma = decimalCommaOf(row);
+  if (comma) {
+    noteDecimalComma(row, comma, problems);
+    return [];
+  }
+  if (row.fields.length > columns.length) {
+    const field = row.fields[columns.length] as Field;
+    note(problems, "invalid-scan", `the row has ${row.fields.length} values where ${columns.length} are expected`, {
+      where: { line: row.line, column: field.column },
+      expected: columns.map(({ name }) => name).join(", "),
+      found: field.text,
+      remedy: "name every column in the header, and put notes behind #",
+    });
+  }
+  return columns.map(({ name, role }, index) => {
+    const field = row.fields[index];
+    const empty = field === undefined || missing.test(field.text);
+    if (empty && role !== "temperature") return null;
+    const number = field === undefined ? null : readNumber(field.text);
+    const wrong = number === null || (role === "temperature" && !(number.value > 0)) || (role === "uncertainty" && !(number.value > 0));
+    if (!wrong) return number;
+    note(problems, "invalid-scan", `\`${field?.text ?? ""}\` is no ${role === "uncertainty" ? "uncertainty" : role === "temperature" ? "temperature" : `number for ${name}`}`, {
+      where: { line: row.line, column: field?.column ?? 1 },
+      expected: role === "temperature" ? "a temperature in K, above 0" : role === "uncertainty" ? "a number above 0" : "a number such as 132.5 or 132(4)",
+      found: field?.text ?? "nothing",
+      remedy: "correct the value; what is no data goes behind #, and - stands for a value that is not there",
+    });
+    return null;
+  });
+}
+
+function seriesOf(
+  name: string,
+  index: number,
+  columns: readonly Column[],
+  cells: readonly (readonly (Cell | null)[])[],
+): ScanSeries {
+  const temperature = columns.findIndex(({ role }) => role === "temperature");
+  const su = columns.findIndex(({ of }) => of === index);
+  const points = cells
+    .flatMap((row) => {
+      const [t, value] = [row[temperature], row[index]];
+      if (!t || !value) return [];
+      return [{ t: t.value, value: value.value, su: (su >= 0 ? row[su]?.value : null) ?? value.uncertainty }];
+    })
+    .sort((a, b) => a.t - b.t);
+  const complete = points.length > 0 && points.every((point) => point.su !== null && point.su > 0);
+  return {
+    name,
+    temperatures: points.map(({ t }) => t),
+    values: points.map(({ value }) => value),
+    uncertainties: complete ? points.map((point) => point.su as number) : null,
+  };
+}

@@ -1,0 +1,133 @@
+import {
+  type BondTable,
+  bondTable,
+  constantMoments,
+  type ExchangeLevels,
+  type ExchangeModel,
+  exchangeLevels,
+  exchangeModel,
+  farthestShell,
+  type GivenCoupling,
+  groundOf,
+  phaseDiagram,
+  type StationaryAnswer,
+  stationaryConstants,
+} from "../../exchange/index.js";
+import { formatWaveVector, isExactWaveVector, numericWaveVector, type WaveVector } from "../../kvectors/index.js";
+import { type ExchangeRecord, exchangeRecord } from "../../reports/index.js";
+import type { SpaceGroup } from "../../spacegroups/index.js";
+import { cellFor, writtenCell } from "../inputs/cell-input.js";
+import { axesOf, constantsOf, type GivenRange, rangesOf, spinsOf } from "../inputs/exchange-input.js";
+import { groupOf } from "../inputs/group-input.js";
+import { type GivenK, placedK, writtenKs } from "../inputs/k-input.js";
+import { numberOption } from "../inputs/number-input.js";
+import { orbitsOf, writtenSites } from "../inputs/site-input.js";
+import { remember, together, type Work } from "../work.js";
+
+/** Shells that are listed where nobody says how many. */
+const usualShells = 6;
+/** k of the minimum whose eigenvectors are shown; more are told by number. */
+const shownVectors = 4;
+
+/** `kvane exchange`: shells of neighbours and, with constants, the k that the model prefers. */
+export async function exchangeCommand(work: Work): Promise<ExchangeRecord> {
+  const { group, given, sites, ks, constants, ranges, shells } = await together({
+    group: () => groupOf(work),
+    given: () => writtenCell(work),
+    sites: () => writtenSites(work),
+    ks: () => writtenKs(work),
+    constants: () => constantsOf(work),
+    ranges: () => rangesOf(work),
+    shells: () => numberOption(work.request, "shells", { from: 1, to: 200, whole: true }),
+  });
+  const { cell, placed } = await together({
+    cell: () => cellFor(group, given),
+    placed: () => ks.map((one) => placedK(work, group, one)),
+  });
+  const orbits = orbitsOf(work, group, sites, cell);
+  const all = [...constants, ...runningAlone(constants, ranges)];
+  const needed = farthestShell(all);
+  const table = bondTable(group, cell, orbits, { shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed) });
+  const model = exchangeModel(table, all, all.length === 0 ? {} : spinsOf(work, sites));
+  if (all.length === 0) return exchangeRecord(table, model, nothing);
+  return exchangeRecord(table, model, await findingsOf(work, { group, table, model, placed, ks, ranges }));
+}
+
+const nothing = {
+  ground: null,
+  constantMoments: null,
+  atK: [],
+  configurations: [],
+  stationary: null,
+  diagram: null,
+} as const;
+
+/** A constant that only runs need not be given: it starts where its range does. */
+function runningAlone(constants: readonly GivenCoupling[], ranges: readonly GivenRange[]): GivenCoupling[] {
+  return ranges
+    .filter(({ bond }) => !constants.some((one) => one.bond === bond))
+    .map(({ bond, from }) => ({ bond, between: null, j: from }));
+}
+
+interface Question {
+  readonly group: SpaceGroup;
+  readonly table: BondTable;
+  readonly model: ExchangeModel;
+  readonly placed: readonly WaveVector[];
+  readonly ks: readonly GivenK[];
+  readonly ranges: readonly GivenRange[];
+}
+
+async function findingsOf(work: Work, { table, model, placed, ranges }: Question) {
+  const { host } = work;
+  const ground = await groundOf(model, {}, host);
+  const numeric = placed.filter((k) => numericWaveVector(k) !== null);
+  for (const k of placed)
+    if (numericWaveVector(k) === null)
+      remember(work, [{ what: `k = ${formatWaveVector(k)}`, value: "left out", because: "energies need a number for every letter of k" }], []);
+  const tolerance = sameLevel * scaleOf(model);
+  const shown = ground.set.vectors.slice(0, shownVectors);
+  const levels = shown.map(({ k }) => ({ from: "minimum" as const, levels: exchangeLevels(model, k, tolerance) }));
+  const asked = numeric.map((k) => ({ from: "given" as const, levels: exchangeLevels(model, k, tolerance) }));
+  const axes = axesOf(table, ranges);
+  return {
+    ground,
+    constantMoments: constantMoments(model, ground.set.vectors, tolerance),
+    atK: [...levels, ...asked],
+    configurations: [],
+    stationary: await stationaryFor(model, numeric, asked, work),
+    diagram: axes.length === 0 ? null : await phaseDiagram(model, axes, host),
+  };
+}
+
+/** Share of Σ|J| within which eigenvalues at one computed k are one: k is known to 1e-9. */
+const sameLevel = 1e-8;
+
+function scaleOf(model: ExchangeModel): number {
+  return model.couplings.reduce((sum, { j }) => sum + Math.abs(j), 0) * Math.max(...model.lengths) ** 2;
+}
+
+/** The first given k that has letters asks for constants. */
+async function stationaryFor(
+  model: ExchangeModel,
+  ks: readonly WaveVector[],
+  asked: readonly { readonly levels: ExchangeLevels }[],
+  { host }: Work,
+): Promise<StationaryAnswer | null> {
+  const at = ks.findIndex((k) => !isExactWaveVector(k));
+  const [k, levels] = [ks[at], asked[at]?.levels];
+  if (!k || !levels) return null;
+  const fixedBySymmetry = isFixed(levels);
+  return stationaryConstants(model, k, { fixedBySymmetry, searchZone: true }, host);
+}
+
+/** The lowest level is one irrep that no other level has: then symmetry alone makes its eigenvector. */
+function isFixed({ levels }: ExchangeLevels): boolean {
+  const [first, ...others] = levels;
+  const own = first?.irreps ?? [];
+  return (
+    own.length === 1 &&
+    own[0]?.multiplicity === 1 &&
+    !others.some(({ irreps }) => irreps.some(({ label }) => label === own[0]?.label))
+  );
+}

@@ -1,0 +1,63 @@
+import { fail } from "../../errors/index.js";
+import type { CifVersion } from "../../files/index.js";
+import { type ConfigurationsRecord, configurationCif, type ExportRecord } from "../../reports/index.js";
+import { optionOf } from "../inputs/given.js";
+import { argumentNames } from "../request.js";
+import type { Work } from "../work.js";
+import { configurationsCommand } from "./configurations.js";
+
+/** `kvane export`: the magnetic CIF of one configuration. */
+export async function exportCommand(work: Work): Promise<ExportRecord> {
+  const version = versionOf(work);
+  const record = await configurationsCommand(work);
+  const one = chosen(work, record);
+  const cif = configurationCif(record, one, version);
+  if (cif === null)
+    fail("missing-argument", "a CIF needs the unit cell", {
+      where: { argument: argumentNames.cell },
+      expected: '--cell "a b c alpha beta gamma" in Å and degrees',
+      found: "nothing",
+      remedy: "give --cell, or the cell in the study",
+    });
+  return { configuration: one.id, cifVersion: version, cif };
+}
+
+function versionOf({ request }: Work): CifVersion {
+  const given = optionOf(request, "cif");
+  if (given === null || given.text === "2.0") return "2.0";
+  if (given.text === "1.1") return "1.1";
+  return fail("invalid-argument", `there is no CIF ${given.text}`, {
+    where: given.where,
+    expected: "2.0 or 1.1",
+    found: given.text,
+    remedy: "leave --cif out for 2.0",
+  });
+}
+
+/** `Γ2.1`, also written `G2.1`, `GM2.1` or `2.1`; the only configuration needs no name. */
+function chosen({ request }: Work, { configurations }: ConfigurationsRecord) {
+  const given = optionOf(request, "configuration");
+  const expected = configurations.map(({ id }) => id).join(", ");
+  const [only, second] = configurations;
+  if (given === null && only !== undefined && second === undefined) return only;
+  if (given === null)
+    return fail("missing-argument", "it is not said which configuration", {
+      where: { argument: argumentNames.configuration },
+      expected,
+      found: "nothing",
+      remedy: `give --configuration, for example --configuration ${only?.id ?? "Γ1.1"}`,
+    });
+  const wanted = plainId(given.text);
+  const found = configurations.find(({ id }) => plainId(id) === wanted);
+  if (found !== undefined) return found;
+  return fail("invalid-argument", `there is no configuration \`${given.text}\``, {
+    where: given.where,
+    expected: expected || "no configuration: no irrep carries moments on the sites",
+    found: given.text,
+    remedy: "kvane configurations lists them",
+  });
+}
+
+function plainId(id: string): string {
+  return id.replace(/Γ|GM|G/gi, "").trim();
+}

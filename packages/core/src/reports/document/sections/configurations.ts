@@ -1,0 +1,105 @@
+import type { ConfigurationRecord } from "../../records/configurations.js";
+import {
+  allowedText,
+  armsText,
+  freeText,
+  parameterText,
+  propertyFields,
+  roman,
+} from "../../text/configurations-text.js";
+import { counted, positionText } from "../../text/names.js";
+import {
+  type Block,
+  type DocumentSection,
+  fieldsBlock,
+  listBlock,
+  moreBlock,
+  paragraphBlock,
+  tableBlock,
+} from "../blocks.js";
+import type { BranchSource } from "../run-document.js";
+
+/** Configurations that are described one by one; the tables and files have all of them. */
+const described = 24;
+
+/** The spin configurations of this k with their magnetic groups. */
+export function configurationsSection({ branch, prefix }: BranchSource): DocumentSection | null {
+  const { configurations: record } = branch;
+  if (record === null || record.kind === "incommensurate" || record.configurations.length === 0) return null;
+  const { configurations: all } = record;
+  return {
+    id: `${prefix}-configurations`,
+    title: "Configurations",
+    parts: [],
+    blocks: [
+      paragraphBlock(
+        `Every arrangement of ${armsText(record.arms)} up to equivalence, by the direction of its order parameter.`,
+      ),
+      ...tableBlock(
+        "Configurations and their magnetic groups",
+        ["id", "direction", "magnetic group", ">index", ">free", "equal sizes", "net moment", "polarization"],
+        all.map((one) => [
+          one.id,
+          one.direction,
+          `${one.magneticGroup.bns.symbol} (${one.magneticGroup.bns.number})`,
+          String(one.index),
+          freeText(one),
+          one.constantMoment ?? "",
+          allowedText(one.netMoment),
+          allowedText(one.polarization),
+        ]),
+      ),
+      ...record.bounded.map((what) => paragraphBlock(`Left out because of the limit: ${what}.`)),
+      ...all
+        .slice(0, described)
+        .flatMap((one) =>
+          moreBlock(`${one.id}, ${one.magneticGroup.bns.symbol}: cell, sites and operators`, details(one)),
+        ),
+      ...(all.length > described
+        ? [
+            paragraphBlock(
+              `${counted(all.length - described, "further configuration")} in result.json and its CSV table.`,
+            ),
+          ]
+        : []),
+    ],
+  };
+}
+
+function details(one: ConfigurationRecord): Block[] {
+  const { magneticGroup: group } = one;
+  return [
+    ...fieldsBlock([
+      ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
+      [
+        "Magnetic group",
+        `${group.bns.symbol}, BNS ${group.bns.number}, OG ${group.og.number}, type ${roman(group.type)}, point group ${group.pointGroup}`,
+      ],
+      ["Cell", `(${group.cellFromParent}) of the parent; to the BNS setting (${group.toBns})`],
+      [
+        "Domains",
+        `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")} apart from time reversal and translations`,
+      ],
+      ["Free parameters", parameterText(one)],
+      ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
+      ...propertyFields(one),
+    ]),
+    ...tableBlock(
+      "Magnetic sites in the child cell",
+      ["site", "of", ">atoms", "position", "moment of the irreps", "form of the group"],
+      one.sites.map((site) => [
+        site.label,
+        site.parentSite,
+        String(site.multiplicity),
+        positionText(site.positionLattice),
+        site.momentLattice,
+        site.symmformLattice,
+      ]),
+    ),
+    paragraphBlock("Operators of the child cell, with time reversal:"),
+    ...listBlock(group.operators, { short: true }),
+    ...(group.centrings.length > 1
+      ? [paragraphBlock("Centrings:"), ...listBlock(group.centrings, { short: true })]
+      : []),
+  ];
+}

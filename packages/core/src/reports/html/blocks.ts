@@ -1,0 +1,124 @@
+import type { Block, DocumentFigure, DocumentSection } from "../document/blocks.js";
+import { inlineSvg } from "../svg/figure.js";
+import { element, escapeMarkup as text } from "../svg/mark-up.js";
+
+/** A cell longer than this may be broken into lines. */
+const longCell = 44;
+
+/** One section with its parts; `level` is that of its heading. */
+export function sectionHtml(section: DocumentSection, level: number): string {
+  const heading = `h${Math.min(level, 6)}`;
+  return element(
+    "section",
+    { id: section.id, "aria-labelledby": `${section.id}-head` },
+    element(heading, { id: `${section.id}-head` }, text(section.title)),
+    "\n",
+    blocksHtml(section.blocks, section.id),
+    ...section.parts.map((part) => sectionHtml(part, level + 1)),
+  );
+}
+
+/** Blocks one after the other; ids inside begin with `prefix`. */
+export function blocksHtml(blocks: readonly Block[], prefix: string): string {
+  return blocks.map((block, index) => `${blockHtml(block, `${prefix}-${index + 1}`)}\n`).join("");
+}
+
+function blockHtml(block: Block, id: string): string {
+  switch (block.kind) {
+    case "paragraph":
+      return element("p", {}, text(block.text));
+    case "note":
+      return noteHtml(block);
+    case "fields":
+      return element(
+        "dl",
+        { class: "fields" },
+        ...block.entries.map(([name, value]) => element("dt", {}, text(name)) + element("dd", {}, text(value))),
+      );
+    case "list":
+      return element(
+        block.ordered ? "ol" : "ul",
+        { class: block.short ? "short" : null },
+        ...block.items.map((item) => element("li", {}, text(item))),
+      );
+    case "table":
+      return tableHtml(block, id);
+    case "figure":
+      return figureHtml(block.figure);
+    case "live":
+      return element(
+        "div",
+        {
+          id: block.id,
+          class: "live",
+          role: "group",
+          "aria-label": block.label,
+          "data-live": block.view.kind,
+          "data-data": block.view.data,
+        },
+        element("p", { class: "hint" }, text(`${block.label}: only with a script; the drawings below show the same.`)),
+      );
+    case "verbatim":
+      return element("pre", { tabindex: "0" }, text(block.text));
+    case "more":
+      return element("details", {}, element("summary", {}, text(block.title)), "\n", blocksHtml(block.blocks, id));
+  }
+}
+
+function noteHtml({ tone, text: words }: Extract<Block, { kind: "note" }>): string {
+  const head = tone === "warning" ? element("b", {}, "Note: ") : "";
+  return element("p", { class: tone === "good" ? "note good" : "note" }, head, text(words));
+}
+
+function tableHtml({ caption, columns, rows }: Extract<Block, { kind: "table" }>, id: string): string {
+  const long = columns.map((_, index) => rows.some((row) => [...(row[index] ?? "")].length > longCell));
+  const classOf = (index: number) =>
+    [columns[index]?.align === "right" ? "number" : "", long[index] ? "words" : ""].filter(Boolean).join(" ") || null;
+  const head = columns.map(({ title }, index) =>
+    element("th", { scope: "col", class: classOf(index) }, title === "" ? "№" : text(title)),
+  );
+  const body = rows.map((row) =>
+    element(
+      "tr",
+      {},
+      ...columns.map((_, index) =>
+        index === 0
+          ? element("th", { scope: "row", class: classOf(index) }, text(row[index] ?? ""))
+          : element("td", { class: classOf(index) }, text(row[index] ?? "")),
+      ),
+    ),
+  );
+  return element(
+    "div",
+    { class: "table", role: "region", "aria-labelledby": `${id}-caption`, tabindex: "0" },
+    element(
+      "table",
+      {},
+      element("caption", { id: `${id}-caption` }, text(caption)),
+      element("thead", {}, element("tr", {}, ...head)),
+      element("tbody", {}, ...body),
+    ),
+  );
+}
+
+function figureHtml({ id, caption, parts, legend, live }: DocumentFigure): string {
+  const drawings = parts.map((part, index) =>
+    live === null
+      ? inlineSvg(part, `${id}-${index + 1}`, { width: part.width, height: part.height })
+      : inlineSvg(part, id),
+  );
+  const kind = live?.kind === "peaks" ? "wide" : live?.kind === "zone" ? "zone" : null;
+  return element(
+    "figure",
+    { id, class: kind, "data-live": live?.kind ?? null, "data-data": live?.data ?? null },
+    legend === null ? null : inlineSvg(legend, `${id}-legend`, { class: "legend-of" }),
+    live === null
+      ? element("div", { class: "parts" }, ...drawings)
+      : element(
+          "div",
+          { class: "stage", tabindex: "0", role: "group", "aria-label": parts[0]?.title ?? "" },
+          ...drawings,
+        ),
+    element("figcaption", {}, text(caption)),
+  );
+}

@@ -1,0 +1,27 @@
+import type { ConfigurationSet, Decomposition, GivenMoments, MomentField } from "../configurations/index.js";
+import type { MagneticStructure } from "../files/index.js";
+import type { Cell, SpaceGroup } from "../spacegroups/index.js";
+import type { ParentSites } from "./building/parent-sites.js";
+import type { ConfigurationsRecord } from "./records/configurations.js";
+import type { DecomposeRecord } from "./records/decompose.js";
+
+/** Records whose making needs rooms that small commands must not load: they are loaded by the first call. */
+
+export async function configurationsRecord(
+  set: ConfigurationSet,
+  cell: Cell | null,
+  sites: ParentSites,
+): Promise<ConfigurationsRecord> {
+  return (await import("./building/configurations.js")).configurationsRecord(set, cell, sites);
+}
+
+export async function decomposeRecord(
+  group: SpaceGroup,
+  cell: Cell,
+  structure: MagneticStructure,
+  moments: GivenMoments,
+  field: MomentField,
+  found: Decomposition,
+): Promise<DecomposeRecord> {
+  return (await import("./building/decompose.js")).decomposeRecord(group, cell, structure, moments, field, found);
+}

@@ -1,0 +1,46 @@
+import type { CellRecord, ComplexRecord, GroupRecord, KRecord } from "./common.js";
+
+/** The part of the moments that one irrep of one star has. */
+export interface IrrepPartRecord {
+  readonly k: KRecord;
+  readonly label: string;
+  /** Share of Σ |S|² over all atoms and wave vectors. */
+  readonly share: number;
+  /** Amplitudes of the basis vectors that `modes` prints for this k, μB/Å in lattice components. */
+  readonly arms: readonly {
+    readonly k: KRecord;
+    readonly sites: readonly { readonly label: string; readonly amplitudes: readonly ComplexRecord[] }[];
+  }[];
+}
+
+/** Result of `kvane decompose`. */
+export interface DecomposeRecord {
+  readonly file: string;
+  readonly block: string;
+  readonly group: GroupRecord;
+  readonly cell: CellRecord;
+  /** (P, p) from the parent to the axes of the file. */
+  readonly childFromParent: string;
+  /** Å. How far the atom furthest off its parent site stands from it. */
+  readonly furthest: number;
+  readonly parts: readonly IrrepPartRecord[];
+  readonly magneticGroup: {
+    readonly type: number;
+    readonly bns: { readonly number: string; readonly symbol: string };
+    readonly og: { readonly number: string };
+    readonly pointGroup: string;
+    /** From the parent's axes to those of the BNS setting. */
+    readonly toBns: string;
+  };
+  /** What the file calls its group, and what its operators are; null where it names none. */
+  readonly declared: { readonly bns: string | null; readonly operators: string };
+  readonly primary: { readonly k: KRecord; readonly irreps: readonly string[] };
+  /** The configuration that it is, and the parent operator from the listed one to it; null where it is none of them. */
+  readonly recognised: {
+    readonly id: string;
+    readonly direction: string;
+    readonly operator: string;
+  } | null;
+  /** Ids of the configurations that were looked through. */
+  readonly listed: readonly string[];
+}

@@ -1,0 +1,68 @@
+/** A number with its standard uncertainty. */
+export interface MeasuredRecord {
+  readonly value: number;
+  readonly su: number | null;
+}
+
+export interface PowerLawRecord {
+  /** K. */
+  readonly transition: MeasuredRecord;
+  readonly beta: MeasuredRecord;
+  readonly amplitude: MeasuredRecord;
+  readonly background: MeasuredRecord;
+  readonly chiSquared: number;
+  readonly degreesOfFreedom: number;
+  readonly uncertaintySource: "given" | "scatter";
+  readonly points: number;
+  readonly pointsBelow: number;
+  /** K. */
+  readonly from: number;
+  readonly to: number;
+  readonly reducedRange: number;
+  readonly fits: boolean;
+}
+
+export interface PeakOnsetRecord {
+  readonly name: string;
+  readonly behaviour: "onset" | "loss" | "constant" | "gradual" | "absent" | "undecided";
+  readonly evidence: number;
+  readonly onBackground: boolean;
+  readonly fit: PowerLawRecord | null;
+  readonly data: {
+    readonly temperatures: readonly number[];
+    readonly values: readonly number[];
+    readonly uncertainties: readonly number[] | null;
+  };
+}
+
+export interface TransitionRecord {
+  readonly temperature: MeasuredRecord;
+  /** Indices in `peaks`. */
+  readonly peaks: readonly number[];
+  readonly probability: number | null;
+}
+
+export interface MovingKRecord {
+  readonly name: string;
+  readonly behaviour: "constant" | "sliding" | "lock-in" | "undecided";
+  readonly plateaus: readonly {
+    readonly from: number;
+    readonly to: number;
+    readonly points: number;
+    readonly mean: MeasuredRecord;
+    /** `1/3`; null where no simple fraction is near. */
+    readonly fraction: string | null;
+  }[];
+  readonly slope: MeasuredRecord | null;
+  readonly uncertaintySource: "given" | "scatter";
+  readonly data: PeakOnsetRecord["data"];
+}
+
+/** Result of `kvane onset`. */
+export interface OnsetRecord {
+  readonly file: string;
+  readonly rows: number;
+  readonly peaks: readonly PeakOnsetRecord[];
+  readonly transitions: readonly TransitionRecord[];
+  readonly k: readonly MovingKRecord[];
+}

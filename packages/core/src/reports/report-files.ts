@@ -1,0 +1,29 @@
+import { jsonText } from "./json-text.js";
+import type { Envelope } from "./records/common.js";
+import type { RunRecord } from "./records/run.js";
+import { reportText } from "./text/report-text.js";
+
+/** The forms that a report has, by the ending of its file. */
+const forms = { ".html": "html", ".htm": "html", ".md": "markdown", ".txt": "text", ".json": "json" } as const;
+
+export type ReportForm = (typeof forms)[keyof typeof forms];
+
+/** The endings that `reportForm` knows. */
+export const reportEndings: readonly string[] = Object.keys(forms);
+
+/** The form that the ending of a file name asks for, or null. */
+export function reportForm(name: string): ReportForm | null {
+  const ending = /\.[a-z]+$/.exec(name.toLowerCase())?.[0] ?? "";
+  return Object.hasOwn(forms, ending) ? forms[ending as keyof typeof forms] : null;
+}
+
+/**
+ * The report of the whole job in one form. The makers of pages are loaded only when they are wanted. A Markdown file on
+ * its own names no drawings.
+ */
+export async function reportIn(form: ReportForm, answer: Envelope<RunRecord>): Promise<string> {
+  if (form === "json") return jsonText(answer);
+  if (form === "text") return reportText(answer, { full: true });
+  const { htmlReport, markdownReport } = await import("./made-reports.js");
+  return form === "html" ? htmlReport(answer) : markdownReport(answer, "none");
+}

@@ -1,0 +1,32 @@
+import { type JsonSchema, list, nullable, number, record, shared, text } from "./building.js";
+
+const amplitudes = record({ label: text, amplitudes: list(shared("complex")) });
+
+export const decomposeSchema: JsonSchema = record({
+  file: text,
+  block: text,
+  group: shared("group"),
+  cell: shared("cell"),
+  childFromParent: text,
+  furthest: number,
+  parts: list(
+    record({
+      k: shared("k"),
+      label: text,
+      share: number,
+      arms: list(record({ k: shared("k"), sites: list(amplitudes) })),
+    }),
+    "largest share first",
+  ),
+  magneticGroup: record({
+    type: { type: "integer", minimum: 1, maximum: 4 },
+    bns: record({ number: text, symbol: text }),
+    og: record({ number: text }),
+    pointGroup: text,
+    toBns: text,
+  }),
+  declared: record({ bns: nullable(text), operators: text }),
+  primary: record({ k: shared("k"), irreps: list(text) }),
+  recognised: nullable(record({ id: text, direction: text, operator: text })),
+  listed: list(text),
+});

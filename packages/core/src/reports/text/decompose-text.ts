@@ -1,0 +1,77 @@
+import type { DecomposeRecord, IrrepPartRecord } from "../records/decompose.js";
+import { fields, paragraph, section, table } from "./layout.js";
+import { cellText, decimals, groupText, kForm, plain } from "./names.js";
+
+export function decomposeText(record: DecomposeRecord): string[] {
+  const { magneticGroup: group, declared, recognised } = record;
+  return [
+    ...section(
+      "Moments",
+      fields([
+        ["File", `${record.file}, block ${record.block}`],
+        ["Parent", groupText(record.group)],
+        ["Cell", cellText(record.cell)],
+        ["Axes of the file", `(${record.childFromParent}) of the parent`],
+        ["Furthest atom", `${plain(Number(record.furthest.toPrecision(2)))} Å from its parent site`],
+      ]),
+    ),
+    ...section(
+      "Irreps",
+      table(
+        [
+          { title: "k" },
+          { title: "irrep" },
+          { title: "share / %", align: "right" },
+          { title: "site" },
+          { title: "amplitudes of the basis vectors, μB/Å" },
+        ],
+        record.parts.flatMap(partRows),
+      ),
+    ),
+    ...section(
+      "Magnetic group",
+      fields([
+        [
+          "Of these moments",
+          `${group.bns.symbol}, BNS ${group.bns.number}, OG ${group.og.number}, point group ${group.pointGroup}`,
+        ],
+        ["To the BNS setting", `(${group.toBns}) from the parent's axes`],
+        [
+          "In the file",
+          `${declared.bns === null ? "not named" : `BNS ${declared.bns}`}; its operators are BNS ${declared.operators}${declared.operators === group.bns.number ? "" : ", a subgroup of what the moments have or moments that break it"}`,
+        ],
+      ]),
+    ),
+    ...section(
+      "Configuration",
+      recognised === null
+        ? paragraph(
+            `None of those that ${record.primary.irreps.join(" and ")} of k = ${kForm(record.primary.k)} give (${record.listed.join(", ") || "no list"}): more than one order parameter, or moments that rounding makes less symmetric.`,
+          )
+        : fields([
+            ["Configuration", `${recognised.id}, direction ${recognised.direction}`],
+            ["Domain", `the listed one moved by ${recognised.operator}`],
+          ]),
+    ),
+  ];
+}
+
+function partRows({ k, label, share, arms }: IrrepPartRecord): string[][] {
+  return arms
+    .flatMap((arm, index) =>
+      arm.sites.map((site, place) => [
+        place === 0 ? kForm(arm.k) : "",
+        index + place === 0 ? label : "",
+        index + place === 0 ? decimals(100 * share, 2) : "",
+        site.label,
+        site.amplitudes
+          .map(([re, im]) => (im === 0 ? short(re) : `${short(re)}${im < 0 ? "-" : "+"}${short(Math.abs(im))}i`))
+          .join(", ") || "–",
+      ]),
+    )
+    .concat(arms.length === 0 ? [[kForm(k), label, decimals(100 * share, 2), "", ""]] : []);
+}
+
+function short(value: number): string {
+  return plain(Number(value.toFixed(4)));
+}

@@ -1,0 +1,252 @@
+import type {
+  DiagramRecord,
+  ExchangeAtKRecord,
+  ExchangeLevelRecord,
+  ExchangeRecord,
+  GroundRecord,
+  IrrepCountRecord,
+  StationaryRecord,
+} from "../records/exchange.js";
+import { diagramLines } from "./exchange-diagram-text.js";
+import { fields, paragraph, section, table, unbroken } from "./layout.js";
+import { cellText, counted, decimals, groupText, kForm, kText, plain } from "./names.js";
+
+export function exchangeText(record: ExchangeRecord): string[] {
+  return [
+    ...section(
+      "Exchange model",
+      fields([
+        ["Group", groupText(record.group)],
+        ["Cell", cellText(record.cell)],
+        ["Atoms", atomsText(record)],
+        ["Energy", "E = Σ J S·S, every bond once: J > 0 is antiferromagnetic"],
+      ]),
+    ),
+    ...section(`Shells of neighbours (${record.shells.length})`, shellTable(record), [""], shellNotes(record)),
+    ...(record.ground === null
+      ? section(
+          "Minimum",
+          paragraph('No constants are given. Name them with --j "1 1.0" --j "2b -0.3" or in the study: exchange: [{shell: 1, j: 1.0}].'),
+        )
+      : groundSections(record, record.ground)),
+    ...record.atK.flatMap((one) => levelSection(record, one)),
+    ...configurationSection(record),
+    ...(record.stationary ? stationarySection(record.stationary) : []),
+    ...(record.diagram ? diagramSection(record.diagram) : []),
+  ];
+}
+
+function atomsText({ atoms }: ExchangeRecord): string {
+  const labels = [...new Set(atoms.map(({ label }) => label))];
+  const each = labels.map((label) => {
+    const own = atoms.filter((atom) => atom.label === label);
+    const length = own[0]?.length ?? 1;
+    return unbroken(`${own.length} ${label}${length === 1 ? "" : `, |S| = ${plain(length)}`}`);
+  });
+  return `${each.join("; ")} in a primitive cell`;
+}
+
+function shellTable({ shells }: ExchangeRecord): string[] {
+  return table(
+    [
+      { title: "bonds" },
+      { title: "length/Å", align: "right" },
+      { title: "between" },
+      { title: "neighbours" },
+      { title: "J", align: "right" },
+      { title: "one of them along a, b, c" },
+    ],
+    shells.flatMap(({ distance, classes }) =>
+      classes.map(({ name, labels, neighbours, j, vector }) => [
+        name,
+        decimals(distance, 4),
+        unbroken(labels.join("–")),
+        neighbours.map(({ label, count }) => unbroken(`${plain(count)} of each ${label}`)).join(", "),
+        j === null ? "–" : plain(j),
+        unbroken(vector.map((entry) => plain(Number(entry.toFixed(4)))).join(" ")),
+      ]),
+    ),
+  );
+}
+
+function shellNotes({ shells }: ExchangeRecord): string[] {
+  const split = shells.filter(({ classes }) => classes.length > 1);
+  if (split.length === 0) return paragraph("Symmetry makes all bonds of each shell equal.");
+  return paragraph(
+    `Letters: bonds of one length that symmetry does not make equal (${split.map(({ number }) => number).join(", ")}). Each may have a J of its own.`,
+  );
+}
+
+function groundSections(record: ExchangeRecord, ground: GroundRecord): string[] {
+  const { certificate, vectors } = ground;
+  return [
+    ...section(
+      "Minimum of J(k) over the whole zone",
+      fields([
+        ["Energy a spin", plain10(ground.energy)],
+        ["At", setText(ground)],
+        ...(ground.dimension === 0 ? [] : [["Set", dimensionSentence(ground)] as const]),
+        ["Spins", momentsText(ground)],
+        ["Certificate", certificateText(certificate, ground)],
+      ]),
+      vectors.length === 0 ? [] : [""],
+      vectors.length === 0
+        ? []
+        : table(
+            [{ title: "k" }, { title: "±k pairs", align: "right" }],
+            vectors.map(({ k, pairs }) => [kText(k), String(pairs)]),
+          ),
+    ),
+    ...(record.atoms.length === 0 ? [] : []),
+  ];
+}
+
+function setText({ vectors, dimension, freeDirections }: GroundRecord): string {
+  const continuous = dimension > freeDirections;
+  const shown = vectors.slice(0, 6).map(({ k }) => kText(k));
+  const more = vectors.length > shown.length ? ` and ${vectors.length - shown.length} more` : "";
+  return continuous ? `a continuous set of k, among them ${shown.join("; ")}${more}` : `${shown.join("; ")}${more}`;
+}
+
+function dimensionSentence({ dimension, freeDirections, manifolds }: GroundRecord): string {
+  const what = ["", "a line or ring of k", "a surface of k", "all k"][dimension] ?? "";
+  const free =
+    freeDirections === 0
+      ? ""
+      : dimension === freeDirections
+        ? `: the constants leave ${counted(freeDirections, "direction")} of k open`
+        : `; ${counted(freeDirections, "direction")} of k because no constant acts along it`;
+  const whole = manifolds.length === 0 ? "" : `; whole ${manifolds.map(kForm).join(", ")} in it`;
+  return `${what}, one and the same energy: no single k is preferred${free}${whole}`;
+}
+
+function momentsText({ constantMoments: { answer, k, spins, short } }: GroundRecord): string {
+  if (answer === "reached") {
+    const how = k.length === 1 ? `one k, ${k.map(kText).join("")}` : `${k.length} k at once, ${k.map(kText).join("; ")}`;
+    return `a ${spins} arrangement of full spins reaches this energy with ${how}: it is the ground state of the model`;
+  }
+  if (answer === "only a bound")
+    return `no arrangement of full spins at these k reaches this energy (${short.join(", ")} would be short): it is a lower bound, and the ground state may order elsewhere`;
+  return "no arrangement of full spins that reaches this energy was found: take it as a lower bound";
+}
+
+function certificateText(certificate: GroundRecord["certificate"], { energy }: GroundRecord): string {
+  const { boxes, smallestBox, lowerBound, exhaustive, stopped } = certificate;
+  if (!exhaustive) return `not complete: ${stopped ?? "stopped"}; no energy below ${plain10(lowerBound)} so far`;
+  const gap = energy - lowerBound;
+  return `whole zone in ${boxes} boxes, the smallest ${smallestBox.toPrecision(2)} Å⁻¹: no k has less than this by more than ${gap < 1e-12 ? "rounding" : gap.toPrecision(2)}`;
+}
+
+/** Ten significant digits, as short as they are. */
+function plain10(value: number): string {
+  return String(Number(value.toPrecision(10)) + 0);
+}
+
+function levelSection(record: ExchangeRecord, one: ExchangeAtKRecord): string[] {
+  const title = one.from === "given" ? `Energies at the given k = ${kText(one.k)}` : `Energies at k = ${kText(one.k)}`;
+  const above = one.from === "given" ? paragraph(`Lowest here ${plain10(one.above)} a spin above the minimum.`) : [];
+  return section(
+    title,
+    above,
+    above.length > 0 ? [""] : [],
+    table(
+      [
+        { title: "energy", align: "right" },
+        { title: "times", align: "right" },
+        { title: "irreps of the sites" },
+        { title: "irreps of moments" },
+        { title: "weight of atoms" },
+      ],
+      one.levels.map((level) => [
+        plain10(level.energy),
+        String(level.degeneracy),
+        countsText(level.irreps),
+        countsText(level.magneticIrreps),
+        weightsText(record, level),
+      ]),
+    ),
+  );
+}
+
+function countsText(counts: readonly IrrepCountRecord[]): string {
+  return counts.map(({ label, multiplicity }) => (multiplicity === 1 ? label : unbroken(`${multiplicity} ${label}`))).join(" + ");
+}
+
+const shownAtoms = 8;
+
+function weightsText({ atoms }: ExchangeRecord, { weights, phases }: ExchangeLevelRecord): string {
+  const texts = atoms.map(({ label }, index) => {
+    const weight = weights[index] as number;
+    const phase = phases?.[index] ?? null;
+    const turns = phase === null || weight < 1e-9 ? "" : phase === 0 ? " 0" : ` ${plain(Number(phase.toFixed(4)))}`;
+    return unbroken(`${label} ${plain(Number(weight.toFixed(4)))}${turns === "" ? "" : ` at${turns}`}`);
+  });
+  const shown = texts.slice(0, shownAtoms).join(", ");
+  return texts.length > shownAtoms ? `${shown}, …` : shown;
+}
+
+function configurationSection({ configurations }: ExchangeRecord): string[] {
+  if (configurations.length === 0) return [];
+  return section(
+    "Energies of arrangements",
+    table(
+      [
+        { title: "id" },
+        { title: "k" },
+        { title: "direction" },
+        { title: "amplitudes", align: "right" },
+        { title: "lowest", align: "right" },
+        { title: "highest", align: "right" },
+      ],
+      configurations.map((one) => [
+        one.id,
+        kText(one.k),
+        one.direction,
+        String(one.amplitudes),
+        plain10(one.lowest),
+        plain10(one.highest),
+      ]),
+    ),
+    [""],
+    paragraph("A spin, for moments of length 1 on the average of the atoms; with several amplitudes the energies run from lowest to highest."),
+  );
+}
+
+function stationarySection(answer: StationaryRecord): string[] {
+  const relations = answer.relations.flatMap((one) => [
+    ...(one.text === null ? [] : [[`Relation in ${one.letter}`, one.text] as const]),
+    [`Slope in ${one.letter}`, sumText(one.slopes, answer.classes)] as const,
+    ...(answer.fixedBySymmetry ? [[`Curvature in ${one.letter}`, sumText(one.curvatures, answer.classes)] as const] : []),
+  ]);
+  const validity = answer.fixedBySymmetry
+    ? "Symmetry fixes the eigenvector here, so the slope is linear in the constants: it must be 0, and the curvature above 0, for the minimum to lie at this k."
+    : "The eigenvector depends on the constants: the slope is that near the constants of the model.";
+  return section(
+    `What k = ${kText(answer.k)} asks of the constants`,
+    fields(relations),
+    [""],
+    paragraph(validity),
+    answer.needed.length === 0 ? [] : [""],
+    answer.needed.length === 0
+      ? []
+      : table(
+          [{ title: "bonds" }, { title: "J needed, others as they are", align: "right" }, { title: "along the line" }, { title: "in the whole zone" }],
+          answer.needed.map(({ name, j, minimum, lowest }) => [
+            name,
+            j === null ? "none" : plain10(j),
+            j === null ? "–" : minimum ? "minimum" : "maximum",
+            lowest === null ? "–" : lowest ? "the lowest" : "another k is lower",
+          ]),
+        ),
+  );
+}
+
+function sumText(factors: readonly number[], classes: readonly string[]): string {
+  return factors
+    .map((factor, index) => `${factor < 0 ? "−" : index === 0 ? "" : "+"} ${unbroken(`${Number(Math.abs(factor).toPrecision(6))} J${classes[index]}`)}`.trim())
+    .join(" ");
+}
+
+function diagramSection(diagram: DiagramRecord): string[] {
+  return section(`Phase diagram (${diagram.axes.map(({ name }) => `J${name}`).join(", ")})`, diagramLines(diagram));
+}

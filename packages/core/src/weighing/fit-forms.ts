@@ -1,0 +1,149 @@
+import {
+  clusterLines,
+  displacementFactor,
+  domainForm,
+  lineForm,
+  lineMembers,
+  lorentzFactor,
+  type MomentSpace,
+  type PreparedSpace,
+  prepareSpace,
+  scatteringGeometry,
+} from "../diffraction/index.js";
+import type { WaveVector } from "../kvectors/index.js";
+import { type SatelliteLine, satelliteLines } from "../reflections/index.js";
+import type { Cell, SpaceGroup } from "../spacegroups/index.js";
+import type { IntensityData } from "./types.js";
+
+/** The calculated intensities of one candidate: `s (N_i + Σ_d w_d aᵀ A_di a)`. */
+export interface FitForms {
+  readonly size: number;
+  /** Domains that the data tell apart, each with the operators that make it. One for a powder. */
+  readonly domains: readonly (readonly number[])[];
+  /** A_di, by domain, then datum: size × size, Lorentz and displacement factors included. */
+  readonly forms: readonly (readonly Float64Array[])[];
+  /** N_i: nuclear intensity on the datum without the scale. */
+  readonly constants: Float64Array;
+}
+
+/** What does not depend on the candidate. */
+export interface DataFrame {
+  readonly group: SpaceGroup;
+  readonly cell: Cell;
+  readonly k: WaveVector;
+  readonly data: IntensityData;
+  /** Per datum the satellite lines of a powder that belong to it. */
+  readonly lines: readonly (readonly SatelliteLine[])[];
+  readonly constants: Float64Array;
+}
+
+/**
+ * Assigns the lines of a powder to the peaks: lines that follow each other within the resolution are one peak, and belong to
+ * the datum that lies on it; where several do, each line to the nearest.
+ */
+export function dataFrame(group: SpaceGroup, cell: Cell, k: WaveVector, data: IntensityData): DataFrame {
+  const positions = data.data.map(({ q }) => q);
+  const constants = new Float64Array(positions.length);
+  const lines: SatelliteLine[][] = positions.map(() => []);
+  const furthest = positions.reduce<number>((most, q) => Math.max(most, q ?? 0), 0);
+  if (data.sample === "single crystal" || furthest === 0) return { group, cell, k, data, lines, constants };
+  const satellites = satelliteLines(group, cell, k, { qMax: furthest + 2 * data.resolution });
+  assigned(satellites, positions, data.resolution, (line, datum) => lines[datum]?.push(line));
+  const nuclear = data.nuclear.map(({ line, square }) => ({ q: line.q, square }));
+  assigned(nuclear, positions, data.resolution, ({ q, square }, datum) => {
+    constants[datum] = (constants[datum] as number) + square * instrumentFactor(data, q);
+  });
+  return { group, cell, k, data, lines, constants };
+}
+
+/** Calls `take` for every line (in order of Q) that belongs to a datum. */
+function assigned<T extends { readonly q: number }>(
+  lines: readonly T[],
+  positions: readonly (number | null)[],
+  resolution: number,
+  take: (line: T, datum: number) => void,
+): void {
+  const clusters = clusterLines(
+    lines.map(({ q }) => q),
+    resolution,
+  );
+  for (const { lines: members, qMin, qMax } of clusters) {
+    const there = positions.flatMap((q, datum) =>
+      q !== null && q >= qMin - resolution && q <= qMax + resolution ? [{ q, datum }] : [],
+    );
+    for (const member of members) {
+      const line = lines[member] as T;
+      const [first, ...others] = there;
+      if (!first) continue;
+      const nearest = others.reduce(
+        (best, one) => (Math.abs(one.q - line.q) < Math.abs(best.q - line.q) ? one : best),
+        first,
+      );
+      take(line, nearest.datum);
+    }
+  }
+}
+
+/** Lorentz factor × displacement factor. */
+export function instrumentFactor({ geometry, displacement }: IntensityData, q: number): number {
+  return lorentzFactor(geometry, q) * displacementFactor(displacement, q);
+}
+
+export function fitForms(frame: DataFrame, space: MomentSpace): FitForms {
+  const prepared = prepareSpace(scatteringGeometry(frame.group, frame.cell), space);
+  return frame.data.sample === "powder" ? powderForms(frame, prepared) : crystalForms(frame, prepared);
+}
+
+function powderForms({ group, k, data, lines, constants }: DataFrame, prepared: PreparedSpace): FitForms {
+  const { size } = prepared;
+  const members = lineMembers(group, k);
+  const forms = lines.map((own) => {
+    const sum = new Float64Array(size * size);
+    for (const line of own) {
+      const factor = instrumentFactor(data, line.q);
+      lineForm(prepared, members, line).forEach((entry, index) => {
+        sum[index] = (sum[index] as number) + factor * entry;
+      });
+    }
+    return sum;
+  });
+  return { size, domains: [[0]], forms: [forms], constants };
+}
+
+/** Relative to the largest entry of all: forms of two operators that differ by less are one domain. */
+const sameForm = 1e-9;
+
+function crystalForms({ group, data, constants }: DataFrame, prepared: PreparedSpace): FitForms {
+  const { reciprocalAxes } = prepared.geometry;
+  const factors = data.data.map(({ hkl }) => {
+    const [h = 0, k = 0, l = 0] = hkl ?? [];
+    const q = Math.hypot(
+      ...([0, 1, 2] as const).map(
+        (axis) => h * reciprocalAxes[0][axis] + k * reciprocalAxes[1][axis] + l * reciprocalAxes[2][axis],
+      ),
+    );
+    return q > 0 ? instrumentFactor(data, q) : 0;
+  });
+  const domains: number[][] = [];
+  const forms: Float64Array[][] = [];
+  let largest = 0;
+  group.operators.forEach((_, operator) => {
+    const own = data.data.map(({ hkl }, datum) =>
+      hkl === null
+        ? new Float64Array(prepared.size ** 2)
+        : domainForm(group, prepared, hkl, operator).map((entry) => entry * (factors[datum] as number)),
+    );
+    for (const form of own) for (const entry of form) largest = Math.max(largest, Math.abs(entry));
+    const known = forms.findIndex((other) =>
+      other.every((form, datum) =>
+        form.every((entry, at) => Math.abs(entry - (own[datum]?.[at] as number)) <= sameForm * largest),
+      ),
+    );
+    if (known >= 0) domains[known]?.push(operator);
+    else {
+      domains.push([operator]);
+      forms.push(own);
+    }
+  });
+  return { size: prepared.size, domains, forms, constants };
+}

@@ -1,0 +1,228 @@
+import type { WorkHost } from "../algorithms/index.js";
+import { type MomentSpace, type ScatteringGeometry, scatteringGeometry } from "../diffraction/index.js";
+import { roundNumber } from "../numbers/index.js";
+import { commonPhaseDirection, withChosenPhase } from "./common-phase.js";
+import { type FitCovariance, fitCovariance, propagated } from "./fit-covariance.js";
+import type { DataFrame, FitForms } from "./fit-forms.js";
+import { calculated, type FitLayout, fitLayout, readParameters, residualModel } from "./fit-model.js";
+import { fittedMoments } from "./moments.js";
+import { boundsOf, type Minima, multiStart } from "./multi-start.js";
+import { profileUncertainty } from "./profile-uncertainty.js";
+import { normalNumbers, seededNumbers } from "./random.js";
+import type { DomainFraction, FittedAmplitude, IntensityData, WeighedCandidate, WeighOptions } from "./types.js";
+
+/** A candidate's fit before it is compared with others. */
+export interface OneFit {
+  readonly space: MomentSpace;
+  readonly forms: FitForms;
+  readonly layout: FitLayout;
+  readonly minima: Minima;
+  readonly result: Omit<WeighedCandidate, "sameAs" | "identicalTo" | "separations">;
+}
+
+export async function weighOne(
+  frame: DataFrame,
+  space: MomentSpace,
+  forms: FitForms,
+  options: WeighOptions,
+  host: WorkHost,
+): Promise<OneFit> {
+  const { data } = frame;
+  const layout = fitLayout(forms, data, options.domains === "free");
+  const minima = await multiStart(forms, layout, data, { ...options, from: options.from[space.id] ?? null }, host);
+  const parameters = Float64Array.from(minima.best.parameters);
+  parameters.set(withChosenPhase(space, parameters));
+  const model = residualModel(forms, layout, data);
+  const steps = stepSizes(layout, parameters);
+  const covariance = fitCovariance(model(parameters), layout.size, steps);
+  const here = sightOf(space, parameters, covariance);
+  const generic = genericSight(space, layout, parameters, steps, model, options.seed);
+  const rank = Math.max(here.rank, generic.rank);
+  const seen = space.basis.map((_, index) =>
+    [...here.unseen, ...generic.unseen].every((direction) => Math.abs(direction[index] as number) < shareUnseen),
+  );
+  const { amplitudes, fractions, scale } = readParameters(layout, parameters);
+  const { values } = calculated(forms, layout, parameters);
+  const count = data.data.length;
+  const relative = isRelative(layout, data);
+  const geometry: ScatteringGeometry = scatteringGeometry(frame.group, frame.cell);
+  const moments = fittedMoments(frame.group, geometry, space, amplitudes, covariance, relative);
+  const observed = data.data.reduce((sum, one) => sum + Math.abs(one.observed), 0);
+  const residue = data.data.reduce((sum, one, index) => sum + Math.abs(one.observed - (values[index] as number)), 0);
+  const chiSquared = minima.best.chiSquared;
+  const largestIntensity = Math.max(...values, 0);
+  return {
+    space,
+    forms,
+    layout,
+    minima,
+    result: {
+      id: space.id,
+      chiSquared: roundNumber(chiSquared, count),
+      reducedChiSquared: count > rank ? roundNumber(chiSquared / (count - rank), 1) : null,
+      rFactor: roundNumber(observed > 0 ? residue / observed : 0, 1),
+      parameters: rank,
+      criterion: roundNumber(chiSquared + rank * Math.log(count), count),
+      amplitudes: fittedAmplitudes(space, layout, parameters, covariance, model, chiSquared, seen),
+      freePhase: commonPhaseDirection(space, parameters) !== null,
+      moments,
+      factorToLimit: relative ? factorToLimit(moments) : null,
+      scale: relative ? null : roundNumber(scale),
+      domains: domainFractions(forms, layout, fractions, parameters, covariance),
+      calculated: Array.from(values, (value) => roundNumber(value, largestIntensity)),
+      covariance: Array.from({ length: layout.amplitudes }, (_, row) =>
+        Array.from({ length: layout.amplitudes }, (__, column) =>
+          roundNumber(covariance.matrix[row * layout.size + column] as number),
+        ),
+      ),
+      minima: seen.every(Boolean)
+        ? differentMinima(space, minima)
+        : [Array.from(amplitudes, (value) => roundNumber(value, Math.max(...amplitudes.map(Math.abs))))],
+      hits: minima.hits,
+      starts: minima.starts,
+    },
+  };
+}
+
+/** Relative to the largest. Minima whose amplitudes agree within this but for signs are one. */
+const sameAmplitudes = 1e-2;
+
+function differentMinima(space: MomentSpace, minima: Minima): number[][] {
+  const kept: number[][] = [];
+  for (const { parameters } of minima.equals) {
+    const amplitudes = Array.from(withChosenPhase(space, parameters));
+    const scale = Math.max(...amplitudes.map(Math.abs), 0);
+    const known = kept.some((other) =>
+      other.every(
+        (value, index) => Math.abs(Math.abs(value) - Math.abs(amplitudes[index] as number)) <= sameAmplitudes * scale,
+      ),
+    );
+    if (!known) kept.push(amplitudes.map((value) => roundNumber(value, scale)));
+  }
+  return kept;
+}
+
+/** Sizes are relative where neither a scale nor nuclear lines are there. */
+export function isRelative(layout: FitLayout, data: IntensityData): boolean {
+  return data.scale === null && !layout.fitsScale;
+}
+
+function stepSizes(layout: FitLayout, parameters: Float64Array): Float64Array {
+  const size = Math.hypot(...parameters.subarray(0, layout.amplitudes)) || 1;
+  return Float64Array.from({ length: layout.size }, (_, index) =>
+    index < layout.amplitudes
+      ? size
+      : index < layout.amplitudes + layout.fractions
+        ? 1
+        : (parameters[index] as number) || 1,
+  );
+}
+
+/** Directions that the data do not see, the common phase aside, and how many they see. */
+interface Sight {
+  readonly rank: number;
+  readonly unseen: readonly Float64Array[];
+}
+
+/** At a random point: at a minimum with an amplitude of 0 fewer may be seen, and on a circle of equal fits others. */
+function genericSight(
+  space: MomentSpace,
+  layout: FitLayout,
+  parameters: Float64Array,
+  steps: Float64Array,
+  model: ReturnType<typeof residualModel>,
+  seed: number,
+): Sight {
+  const uniform = seededNumbers(seed + 7919);
+  const normal = normalNumbers(uniform);
+  const point = parameters.map((value, index) =>
+    index < layout.amplitudes
+      ? normal() * (steps[index] as number)
+      : index < layout.amplitudes + layout.fractions
+        ? 0.2 + 0.6 * uniform()
+        : value,
+  );
+  return sightOf(space, point, fitCovariance(model(point), layout.size, steps));
+}
+
+function sightOf(space: MomentSpace, parameters: Float64Array, { rank, unseen }: FitCovariance): Sight {
+  const gauge = commonPhaseDirection(space, parameters);
+  return { rank, unseen: unseen.map((direction) => withoutGauge(direction, gauge)) };
+}
+
+/** Share of an unseen direction above which an amplitude counts as not determined. */
+const shareUnseen = 0.05;
+
+/** Above this number of amplitudes small ones are not followed one by one. */
+const mostProfiled = 12;
+
+function fittedAmplitudes(
+  space: MomentSpace,
+  layout: FitLayout,
+  parameters: Float64Array,
+  covariance: FitCovariance,
+  model: ReturnType<typeof residualModel>,
+  chiSquared: number,
+  seen: readonly boolean[],
+): FittedAmplitude[] {
+  const gauge = commonPhaseDirection(space, parameters);
+  const scale = Math.max(...parameters.subarray(0, layout.amplitudes).map(Math.abs), 0);
+  return space.basis.map(({ label }, index) => {
+    const unit = new Float64Array(layout.size);
+    unit[index] = 1;
+    const value = parameters[index] as number;
+    const linear = propagated(covariance, unit);
+    // Within its uncertainty of 0 the square decides, not the derivative.
+    const small = gauge === null && linear > Math.abs(value);
+    const followed = seen[index] === true && small && layout.amplitudes <= mostProfiled;
+    const uncertainty = followed
+      ? profileUncertainty(index, parameters, chiSquared, boundsOf(layout), model, scale)
+      : linear <= scale
+        ? linear
+        : null;
+    const determined = seen[index] === true && uncertainty !== null;
+    return {
+      label,
+      value: roundNumber(value, scale),
+      uncertainty: determined ? roundNumber(uncertainty, scale) : null,
+      determined,
+    };
+  });
+}
+
+function withoutGauge(direction: Float64Array, gauge: Float64Array | null): Float64Array {
+  if (gauge === null) return direction;
+  const along = gauge.reduce((sum, entry, index) => sum + entry * (direction[index] as number), 0);
+  return direction.map((entry, index) => entry - along * (gauge[index] ?? 0));
+}
+
+function domainFractions(
+  forms: FitForms,
+  layout: FitLayout,
+  fractions: Float64Array,
+  parameters: Float64Array,
+  covariance: FitCovariance,
+): DomainFraction[] {
+  if (forms.domains.length < 2) return [];
+  const total = parameters
+    .subarray(layout.amplitudes, layout.amplitudes + layout.fractions)
+    .reduce((sum, value) => sum + value, 0);
+  return forms.domains.map((alike, domain) => {
+    const gradient = new Float64Array(layout.size);
+    for (let other = 0; other < layout.fractions; other++)
+      gradient[layout.amplitudes + other] = (Number(other === domain) - (fractions[domain] as number)) / (total || 1);
+    return {
+      operator: alike[0] as number,
+      alike,
+      fraction: roundNumber(fractions[domain] as number, 1),
+      uncertainty: layout.fractions === 0 ? null : roundNumber(propagated(covariance, gradient), 1),
+    };
+  });
+}
+
+/** What takes the largest moment in units of its limit to 1. */
+function factorToLimit(moments: OneFit["result"]["moments"]): number | null {
+  if (moments.some(({ limit }) => limit === null || limit === 0)) return null;
+  const largest = Math.max(...moments.map(({ largest: own, limit }) => own / (limit as number)));
+  return largest > 0 ? roundNumber(1 / largest) : null;
+}
