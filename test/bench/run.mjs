@@ -70,8 +70,9 @@ for (const { name, parameters } of rows) {
   }
 }
 
-// What happens inside one process: irreps beside those of a computer-algebra system, the search beside its dense grid.
-for (const inside of ["irreps", "search"]) {
+// What happens inside one process: irreps beside those of a computer-algebra system, the search beside its dense grid,
+// weighing as it grows.
+for (const inside of ["irreps", "search", "weighing"]) {
   if (wanted !== "" && !inside.includes(wanted)) continue;
   const program = [join(root, "test/tools/run-typescript.mjs"), join(root, `test/bench/${inside}.ts`)];
   const { status } = spawnSync(process.execPath, program, { stdio: "inherit", cwd: root });

@@ -28,7 +28,7 @@ const rows = [...satellites, ...others].map((row) => `${row} 2`);
 const phase = { text: "MnO; F m -3 m; 4.445 4.445 4.445 90 90 90" };
 const folder = scratchFolder({
   "peaks.txt": `${header}\n${rows.join("\n")}\n`,
-  "nuclear.txt": `${header}\n${lengthOf(abc, 0, 1, 2).toFixed(4)} 0.002 5000 10\n`,
+  "nuclear.txt": `${header}\n${lengthOf(abc, 2, 1, 2).toFixed(4)} 0.002 5000 10\n`,
   "study.yaml": [
     "group: P n m a",
     "cell: {a: 10.21, b: 6.05, c: 4.71, alpha: 90, beta: 90, gamma: 90}",
@@ -68,10 +68,10 @@ describe("what is listed is set aside, by options or by the study", () => {
       expect(setAside[2].because).toContain("1.23 to 1.24");
       expect(candidates[0].k.components).toEqual(["0", "1/2", "0"]);
       expect(candidates[0].matched).toBe(6);
-      const parent = flags.find((flag: { h: number[]; with: string }) => flag.h.map(Math.abs).join() === "0,1,2");
-      expect(parent).toMatchObject({ with: "half wavelength", peak: 2, parentIntensity: 5000 });
+      const parent = flags.find((flag: { h: number[]; with: string }) => flag.h.map(Math.abs).join() === "2,1,2");
+      expect(parent).toMatchObject({ with: "half wavelength", peak: 4, parentIntensity: 5000 });
       const text = await kvane(words, { cwd: folder });
-      expect(text.stdout).toContain("peak 3 has 1.60 % of 0 1 2");
+      expect(text.stdout).toContain("peak 5 has 1.20 % of 2 1 2");
     });
 
   test("without them the search says that no k explains enough", async () => {

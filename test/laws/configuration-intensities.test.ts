@@ -48,9 +48,8 @@ const cases: readonly (readonly [string, string, string, "pair" | "all"])[] = [
   ["F m -3 m", "0 0 1", "0 0 0", "all"],
   ["P b n m", "0 0 0", "1/2 0 0", "pair"],
   ["P n m a", "0 1/2 0", "0 0 0", "pair"],
-  ["P 63/m m c", "1/3 1/3 0", "0 0 0", "pair"],
-  ["P 4/m m m", "1/2 0 0", "0 0 0", "all"],
   ["R -3 m :H", "0 0 3/2", "0 1/2 1/2", "pair"],
+  ["P -3 m 1", "1/3 1/3 0", "0 0 0", "pair"],
   ["P 2/c", "1/4 1/2 1/2", "1/2 0.685 1/4", "pair"],
   ["P 63 c m", "0 0 0", "1/3 0 0", "pair"],
 ];
@@ -69,7 +68,7 @@ describe("configurations: the Fourier components of the adapter", () => {
     expect(spaces.length).toBeGreaterThan(0);
     const { basis, operators } = floatGroup(group);
     const geometry = scatteringGeometry(group, cell);
-    for (const [index, space] of spaces.slice(0, 8).entries()) {
+    for (const [index, space] of spaces.slice(0, 4).entries()) {
       const configuration = set.configurations[index];
       if (!configuration) throw new Error("a configuration is missing");
       // Amplitudes of the adapter are scaled ones: the example arrangement fixes what they are.
@@ -131,7 +130,6 @@ describe("configurations: the Fourier components of the adapter", () => {
   test.for([
     ["P b n m", [0, 1, 0], "1/2 0 0", 0.28],
     ["P n m a", [0, 1, 0], "0 0 0", 0.472],
-    ["P 63/m m c", [0, 0, 1], "0 0 0", 0.138],
     ["C 2/m", [0, 1, 0], "0.1 0.2 0.3", 0.21],
   ] as const)(
     "%s, k along %s: a modulated configuration is left unchanged by its operators",

@@ -6,10 +6,7 @@ import { generalSite, randomWaveVector, specialSite } from "../support/random-ca
 import { randomCell } from "../support/random-cells.js";
 
 /** All 230 groups are swept by `npm run certify`; here every crystal system and kind of centring. */
-const numbers = [
-  2, 5, 9, 14, 15, 20, 24, 37, 43, 52, 62, 70, 82, 88, 109, 122, 130, 142, 148, 155, 161, 165, 178, 185, 190, 206, 212,
-  220, 229,
-];
+const numbers = [2, 9, 15, 20, 43, 52, 62, 88, 122, 142, 155, 165, 178, 190, 212, 229];
 
 test.for(numbers)("group %i: extinct exactly where random arrangements give nothing", (number) => {
   const random = seeded(900 + number);
@@ -22,7 +19,7 @@ test.for(numbers)("group %i: extinct exactly where random arrangements give noth
       randomWaveVector(group, random),
       generic ? generalSite(random) : specialSite(group, random),
       random,
-      { qMax: generic && number > 194 ? 3 : 4, generic },
+      { qMax: generic && number > 194 ? 2.5 : 3.5, generic },
     ),
   );
   expect(results.flatMap(({ problems }) => problems).slice(0, 5)).toEqual([]);

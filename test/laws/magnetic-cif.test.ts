@@ -45,16 +45,18 @@ async function writtenFor(number: number, random: Random): Promise<Written[]> {
   const set = await configurationsOf(group, irreps, [siteModes(group, irreps, orbit)], cell, { limit: 2000 });
   const named = { orbit, ion: "Fe3+", occupancy: 1, spin: null };
   const record = await configurationsRecord(set, cell, { magnetic: [named], others: [] });
-  return record.configurations.slice(0, mostConfigurations).map((one) => ({
-    name: `group ${number}, k ${record.k.components.join(" ")}, ${one.id}`,
-    group,
-    cell,
-    id: one.id,
-    bns: one.magneticGroup.bns.number,
-    orbit,
-    cif: configurationCif(record, one, "2.0") as string,
-    cif11: configurationCif(record, one, "1.1") as string,
-  }));
+  return Promise.all(
+    record.configurations.slice(0, mostConfigurations).map(async (one) => ({
+      name: `group ${number}, k ${record.k.components.join(" ")}, ${one.id}`,
+      group,
+      cell,
+      id: one.id,
+      bns: one.magneticGroup.bns.number,
+      orbit,
+      cif: (await configurationCif(record, one, "2.0")) as string,
+      cif11: (await configurationCif(record, one, "1.1")) as string,
+    })),
+  );
 }
 
 const all: Written[] = [];
@@ -101,7 +103,7 @@ describe("written magnetic CIFs", () => {
   if (!installed)
     console.warn("skipped: cif_linguist and cod-tools are not installed (Debian: cif-linguist, cod-tools)");
   test.skipIf(!installed)("independent readers take them, in both versions", () => {
-    for (const [index, { cif, cif11, name }] of all.entries())
+    for (const [index, { cif, cif11, name }] of all.filter((_, place) => place % 4 === 0).entries())
       for (const [version, text] of [["2.0", cif] as const, ["1.1", cif11] as const]) {
         const file = join(folder, `${index}-${version}.cif`);
         writeFileSync(file, text);

@@ -75,6 +75,7 @@ function problemsOfOne(
   check: ConfigurationCheck,
   random: Random,
 ): string[] {
+  if (configuration.notWritten !== null) return [];
   const problems: string[] = [];
   const { matrix, shift } = configuration.cell.cellFromParent;
   const columns = matrix.map((row) => row.map(([top, bottom]) => top / bottom));

@@ -41,6 +41,7 @@ export interface StudyOptions {
   readonly noise: number;
   readonly qMax: number;
   readonly scale: number | null;
+  readonly mostCandidates: number;
 }
 
 const numbers = [
@@ -59,9 +60,8 @@ const waves = [
   "1/2 0 1/2",
 ];
 
-/** Largest numbers of amplitudes and of candidates of a made study. */
+/** Largest number of amplitudes of a made study. */
 const mostAmplitudes = 6;
-const mostCandidates = 30;
 
 /** Powder intensities of a random configuration of a random group and k, with noise; null where it is no fair study. */
 export async function madeStudy(seed: number, options: StudyOptions): Promise<MadeStudy | null> {
@@ -77,7 +77,7 @@ export async function madeStudy(seed: number, options: StudyOptions): Promise<Ma
   const set = await configurationsOf(group, irreps, [modes], cell);
   const candidates = configurationSpaces(set, cell, [{ modes, formFactor }]);
   const small = candidates.filter(({ basis }) => basis.length <= mostAmplitudes);
-  if (small.length === 0 || candidates.length > mostCandidates || set.bounded.length > 0) return null;
+  if (small.length === 0 || candidates.length > options.mostCandidates || set.bounded.length > 0) return null;
   const truth = random.pick(small);
   // Up to a moment of a few μB; none so small that the arrangement is in fact a simpler one.
   const amplitudes = truth.basis.map(() => (random.next() < 0.5 ? -1 : 1) * (0.6 + 2.4 * random.next()));
@@ -154,12 +154,13 @@ export async function outcomeOf(study: MadeStudy): Promise<StudyOutcome> {
  */
 function amplitudePulls({ amplitudes }: MadeStudy, own: WeighedCandidate): number[] {
   if (own.freePhase) return [];
-  const pulls = own.minima.map((minimum) =>
+  const pulls = own.minima.map((minimum, place) =>
     amplitudes.flatMap((value, index) => {
       const { determined = false, uncertainty = null } = own.amplitudes[index] ?? {};
-      return determined && uncertainty !== null
-        ? [(Math.abs(minimum[index] as number) - Math.abs(value)) / uncertainty]
-        : [];
+      if (!determined || uncertainty === null) return [];
+      // Of the best minimum the uncertainties that are reported, of others those there.
+      const there = place === 0 ? uncertainty : (minimum.uncertainties[index] as number);
+      return [(Math.abs(minimum.amplitudes[index] as number) - Math.abs(value)) / there];
     }),
   );
   pulls.sort((a, b) => sumOfSquares(a) - sumOfSquares(b));
@@ -168,4 +169,41 @@ function amplitudePulls({ amplitudes }: MadeStudy, own: WeighedCandidate): numbe
 
 function sumOfSquares(values: readonly number[]): number {
   return values.reduce((sum, value) => sum + value * value, 0);
+}
+
+/** What many made studies came to. */
+export interface StudyRates {
+  readonly studies: number;
+  /** The true configuration first, or in the family of the first. */
+  readonly first: number;
+  readonly parameters: number;
+  /** Share of fitted parameters within 2.5 s.u., and the r.m.s. of the pulls. */
+  readonly within: number;
+  readonly spread: number;
+  readonly missed: readonly string[];
+}
+
+/** Weighs made studies from the seed on until there are `count` fair ones. */
+export async function studyRates(seed: number, count: number, mostCandidates = 30): Promise<StudyRates> {
+  const missed: string[] = [];
+  const pulls: number[] = [];
+  let studies = 0;
+  let first = 0;
+  for (let offset = 0; studies < count && offset < 20 * count; offset++) {
+    const study = await madeStudy(seed + offset, { noise: 0.03, qMax: 5, scale: 50, mostCandidates });
+    if (study === null) continue;
+    const outcome = await outcomeOf(study);
+    studies += 1;
+    if (outcome.first) first += 1;
+    else missed.push(outcome.name);
+    pulls.push(...outcome.pulls);
+  }
+  return {
+    studies,
+    first,
+    parameters: pulls.length,
+    within: pulls.filter((pull) => Math.abs(pull) <= 2.5).length / pulls.length,
+    spread: Math.sqrt(sumOfSquares(pulls) / pulls.length),
+    missed,
+  };
 }

@@ -14,12 +14,13 @@ const group = parseGroup("P n m a");
 const few = { ...defaultSearchOptions, mostBoxes: 60_000 };
 
 describe("degenerate lists end with a result or a clear error, quickly", () => {
-  test("one peak: every kind is saturated or not informative, nothing is called found", {
+  test("one peak: only points are searched, nothing is called found, and it is said why", {
     timeout: 20_000,
   }, async () => {
     const result = await locate(group, cell, powderList([1.1], 0.004), few);
     expect(result.candidates.every(({ evidence }) => evidence.reading !== "found")).toBe(true);
-    expect(result.warnings.map(({ code }) => code)).toContain("search-saturated");
+    expect(result.warnings.map(({ code }) => code)).toContain("too-few-peaks");
+    expect(result.certificate.maxDimension).toBe(0);
   });
 
   test("equal peaks, and peaks below the smallest possible", { timeout: 20_000 }, async () => {

@@ -14,6 +14,7 @@ export const exampleStudy = `${examplePrefix}study.yaml`;
 
 /** The bundled CIF of the same invented compound. */
 export const exampleStructure = `${examplePrefix}structure.cif`;
+export const exampleMoments = `${examplePrefix}moments.mcif`;
 
 /** A host that reads files, and remembers what it read so that a problem can show its line. */
 export interface CommandHost extends JobHost {

@@ -67,6 +67,18 @@ export const optionSpecs = {
   child: { flags: "--child <CHANGE>", about: '"2a,b,c;0,0,0": axes of the file in those of the parent' },
   configuration: { flags: "--configuration <ID>", about: "which one: Γ2.1, or 2.1 for short" },
   cif: { flags: "--cif <VERSION>", about: "2.0, or 1.1, which leaves list-valued items out (2.0)" },
+  constants: {
+    flags: "--j <CONSTANT>",
+    about: '"BOND J" such as "1 1.0" or "2b -0.3", or "BOND LABEL LABEL J"; J > 0 is antiferromagnetic',
+    repeatable: true,
+  },
+  vary: {
+    flags: "--vary <RANGE>",
+    about: '"BOND FROM TO COUNT": phase diagram while this constant runs; give it twice for a map',
+    repeatable: true,
+  },
+  shells: { flags: "--shells <N>", about: "shells of neighbours to list (6, or as many as constants name)" },
+  reduced: { flags: "--reduced <T>", about: "largest (T_N − T)/T_N of a fit (the widest that the law describes)" },
   branches: { flags: "--branches <N>", about: "how many tied wave vectors are followed (3)" },
   example: { flags: "--example", about: "take the bundled example study" },
   json: { flags: "--json", about: "print the answer as JSON" },

@@ -60,6 +60,7 @@ const argumentTexts = {
   study: ["[STUDY]", "study file or CIF (.yaml, .cif, - for standard input)"],
   cif: ["[FILE.cif]", "CIF of the nuclear structure (- for standard input)"],
   moments: ["[FILE.cif]", "magnetic CIF (.mcif, .cif, - for standard input)"],
+  scan: ["[FILE|STUDY]", "temperature scan (- for standard input), or a study that names one (.yaml)"],
   code: ["[CODE]", "code of a problem; without it all are listed"],
   topic: ["[TOPIC]", "topic or command; without it the topics are listed"],
   shell: ["[SHELL]", "bash, zsh or fish"],

@@ -1,6 +1,6 @@
 import { fail } from "@kvane/core/errors";
 import type { Request } from "@kvane/core/job";
-import { exampleStructure, exampleStudy } from "./host.js";
+import { exampleMoments, exampleStructure, exampleStudy } from "./host.js";
 import { type ParsedLine, valueOptions } from "./program.js";
 
 /** What the command line wants done with the answer. */
@@ -30,7 +30,10 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
   const first = argument?.trim() ?? null;
   const isFile =
     first !== null &&
-    (spec.argument === "study" || spec.argument === "cif" || /\.(ya?ml|m?cif)$/i.test(first) || first === "-");
+    (spec.argument === "study" ||
+      spec.argument === "cif" ||
+      /\.(ya?ml|m?cif)$/i.test(first) ||
+      (first === "-" && spec.argument !== "scan"));
   const topical = spec.argument === "code" || spec.argument === "topic";
   if (example && isFile)
     fail("conflicting-arguments", "a study and --example are both given", {
@@ -45,8 +48,8 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
   };
   return {
     command: spec.name,
-    study: spec.argument === "moments" ? text("parent") : studyOf(),
-    moments: spec.argument === "moments" ? first : null,
+    study: spec.argument === "moments" ? (text("parent") ?? (example ? exampleStudy : null)) : studyOf(),
+    moments: spec.argument === "moments" ? (first ?? (example ? exampleMoments : null)) : null,
     child: text("child"),
     group: spec.argument === "group or study" && !isFile ? first : null,
     code: spec.argument === "code" ? first : null,
@@ -87,6 +90,11 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
     limit: text("limit"),
     configuration: text("configuration"),
     cif: text("cif"),
+    constants: (options["j"] as readonly string[] | undefined) ?? null,
+    vary: (options["vary"] as readonly string[] | undefined) ?? null,
+    shells: text("shells"),
+    scan: spec.argument === "scan" && !isFile ? first : null,
+    reduced: text("reduced"),
     branches: text("branches"),
     files: spec.name === "run" && text("out") !== null,
   };

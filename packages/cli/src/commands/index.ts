@@ -1,6 +1,7 @@
 import type { CommandSpec } from "../command-spec.js";
 import { helpCommands } from "./help-commands.js";
 import { peakCommands } from "./peak-commands.js";
+import { physicsCommands } from "./physics-commands.js";
 import { studyCommands } from "./study-commands.js";
 import { symmetryCommands } from "./symmetry-commands.js";
 
@@ -9,5 +10,6 @@ export const commandSpecs: readonly CommandSpec[] = [
   ...studyCommands,
   ...symmetryCommands,
   ...peakCommands,
+  ...physicsCommands,
   ...helpCommands,
 ];

@@ -109,7 +109,7 @@ export const symmetryCommands: readonly CommandSpec[] = [
     name: "decompose",
     summary: "moments of a magnetic CIF: their irreps, amplitudes and magnetic group",
     argument: "moments",
-    options: ["parent", "block", "child", ...outputOptions],
-    examples: [],
+    options: ["parent", "block", "child", "example", ...outputOptions],
+    examples: ["kvane decompose --example"],
   },
 ];

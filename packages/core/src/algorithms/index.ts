@@ -8,6 +8,7 @@ export { type BoxProblem, type BoxSearch, boxSearch, mostLevels } from "./box-se
 export { breathe, breathMilliseconds } from "./breathe.js";
 export { choleskyFactor, choleskyInverse, choleskyLogDeterminant, choleskySolve } from "./cholesky.js";
 export { gaussNewton, type LeastSquares, type WeightedResiduals } from "./gauss-newton.js";
+export { goldenSection } from "./golden-section.js";
 export { type HalfSpace, type Polytope, polytope } from "./half-spaces.js";
 export {
   type HermitianEigen,

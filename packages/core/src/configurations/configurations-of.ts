@@ -8,8 +8,8 @@ import { commensurateConfigurations } from "./commensurate.js";
 import { modulatedConfigurations } from "./modulated.js";
 import type { ConfigurationOptions, ConfigurationSet } from "./types.js";
 
-/** Enough for every star of up to eight arms at k with 4k ∈ L*; more is said to be bounded. */
-export const usualLimit = 20_000;
+/** Enough for cubic stars of up to eight arms at k with 4k ∈ L*; more is said to be bounded. */
+export const usualLimit = 10_000;
 
 /**
  * All symmetry-distinct arrangements of moments that the irreps of one k allow on the sites: the directions of the order

@@ -1,9 +1,11 @@
 import { breathe, type WorkHost } from "../algorithms/index.js";
+import { gcd } from "../numbers/index.js";
 import { elementIndex, generatingPlaces, type ParentQuotient, translationNumber } from "./parent-quotient.js";
 import { directSum, type ResidueAction } from "./residue-action.js";
+import { scratchFor, sparseFixedPart, sparseResidues } from "./sparse-residues.js";
 import {
-  fixedPart,
   fixesSubspace,
+  identityResidues,
   mapSubspace,
   multiplyResidues,
   type ResidueMatrix,
@@ -65,21 +67,25 @@ export async function isotropyClasses(
     classes.push(representative(orbit, prime));
   };
   await take(wholeSpace(size));
+  const probes = cyclicGenerators(image, size, prime).map(({ number, sign }) => ({
+    matrix: sparseResidues(image.matrices[number] as ResidueMatrix, size),
+    sign,
+  }));
+  const scratch = scratchFor(size);
   for (let next = 0; next < classes.length && bounded === null; next++) {
     const { space } = classes[next] as { space: Subspace };
     const local = new Set<string>();
-    for (const matrix of image.matrices)
-      for (const sign of [1, -1] as const) {
-        await breathe(host);
-        const part = fixedPart(space, matrix, sign, prime);
-        if (part.rows === 0 || part.rows === space.rows) continue;
-        const key = subspaceKey(part);
-        if (local.has(key)) continue;
-        local.add(key);
-        await take(part);
-        if (seen.size > limit)
-          bounded ??= `more than ${limit} directions of the order parameter came up; the list is not complete`;
-      }
+    for (const { matrix, sign } of probes) {
+      await breathe(host);
+      const part = sparseFixedPart(space, matrix, sign, prime, scratch);
+      if (part === null || part.rows === space.rows) continue;
+      const key = subspaceKey(part);
+      if (local.has(key)) continue;
+      local.add(key);
+      await take(part);
+      if (seen.size > limit)
+        bounded ??= `more than ${limit} directions of the order parameter came up; the list is not complete`;
+    }
   }
   const found: IsotropyClass[] = [];
   for (const { space, orbit } of classes) {
@@ -94,6 +100,9 @@ interface ImageGroup {
   readonly matrices: readonly ResidueMatrix[];
   /** For operator place · translations + translation the number of its matrix. */
   readonly numbers: readonly number[];
+  /** By the entries as text. */
+  readonly numberOf: ReadonlyMap<string, number>;
+  readonly identity: number;
   readonly order: number;
 }
 
@@ -121,7 +130,51 @@ function imageMatrices(
     translations.length === 0
       ? ""
       : Array.from({ length: size * size }, (_, index) => (index % (size + 1) === 0 ? prime - 1 : 0)).join();
-  return { matrices, numbers, order: matrices.length * (known.has(minusOne) ? 1 : 2) };
+  return {
+    matrices,
+    numbers,
+    numberOf: known,
+    identity: known.get(identityResidues(size).join()) as number,
+    order: matrices.length * (known.has(minusOne) ? 1 : 2),
+  };
+}
+
+/**
+ * One generator of every cyclic subgroup of prime-power order of the image with −1. They are enough: the fixed space of
+ * any element is the intersection of those of its powers of prime-power order.
+ */
+function cyclicGenerators(image: ImageGroup, size: number, prime: number): { number: number; sign: 1 | -1 }[] {
+  const { matrices, numberOf, identity } = image;
+  const powers = matrices.map((matrix, number) => {
+    const list = [number];
+    for (let power = matrix; list[list.length - 1] !== identity; ) {
+      power = multiplyResidues(power, matrix, size, prime);
+      list.push(numberOf.get(power.join()) as number);
+    }
+    return list;
+  });
+  return matrices.flatMap((_, number) =>
+    ([1, -1] as const).flatMap((sign) => {
+      const list = powers[number] as readonly number[];
+      const order = sign === 1 || list.length % 2 === 0 ? list.length : 2 * list.length;
+      if (order === 1 || !isPrimePower(order)) return [];
+      for (let exponent = 2; exponent < order; exponent++) {
+        if (gcd(exponent, order) !== 1) continue;
+        const other = list[(exponent - 1) % list.length] as number;
+        const otherSign = sign === 1 || exponent % 2 === 0 ? 1 : -1;
+        if (other < number || (other === number && otherSign > sign)) return [];
+      }
+      return [{ number, sign }];
+    }),
+  );
+}
+
+function isPrimePower(n: number): boolean {
+  let divisor = 2;
+  while (n % divisor !== 0) divisor += 1;
+  let rest = n;
+  while (rest % divisor === 0) rest /= divisor;
+  return rest === 1;
 }
 
 /** Matrices that generate the image together with −1, which maps every subspace on itself. */

@@ -35,14 +35,23 @@ export function sparseEchelon(rows: readonly SparseRow[]): SparseRow[] {
     }
     leading.set(lead, scaled);
   }
-  return [...leading].sort(([a], [b]) => a - b).map(([, row]) => new Map([...row].sort(([a], [b]) => a - b)));
+  return [...leading]
+    .sort(([a], [b]) => a - b)
+    .map(
+      ([, row]) =>
+        new Map(
+          [...row]
+            .sort(([a], [b]) => a - b)
+            .map(([column, value]): [number, Cyclotomic] => [column, value.order === 1 ? value : reduceOrder(value)]),
+        ),
+    );
 }
 
 function divided(row: ReadonlyMap<number, Cyclotomic>, lead: Cyclotomic): Map<number, Cyclotomic> {
   if (isSmallInteger(lead, 1)) return new Map(row);
   if (isSmallInteger(lead, -1)) return new Map([...row].map(([column, value]) => [column, negateCyclotomic(value)]));
   const inverse = invertCyclotomic(lead);
-  return new Map([...row].map(([column, value]) => [column, reduceOrder(multiplyCyclotomic(inverse, value))]));
+  return new Map([...row].map(([column, value]) => [column, plainWhereRational(multiplyCyclotomic(inverse, value))]));
 }
 
 function isSmallInteger({ order, denominator, coefficients }: Cyclotomic, value: number): boolean {
@@ -70,10 +79,18 @@ function integer(value: number): Cyclotomic {
 /** Most entries are small integers; they need no reduction to lowest terms. */
 function times(a: Cyclotomic, b: Cyclotomic): Cyclotomic {
   if (isInteger(a) && isInteger(b)) return integer((a.coefficients[0] as number) * (b.coefficients[0] as number));
-  return reduceOrder(multiplyCyclotomic(a, b));
+  return plainWhereRational(multiplyCyclotomic(a, b));
 }
 
 function minus(a: Cyclotomic, b: Cyclotomic): Cyclotomic {
   if (isInteger(a) && isInteger(b)) return integer((a.coefficients[0] as number) - (b.coefficients[0] as number));
-  return reduceOrder(subtractCyclotomic(a, b));
+  return plainWhereRational(subtractCyclotomic(a, b));
+}
+
+/** A fraction written in a larger field, as a plain one: cheaper than looking for the smallest field each time. */
+function plainWhereRational(value: Cyclotomic): Cyclotomic {
+  if (value.order === 1) return value;
+  const { coefficients, denominator } = value;
+  for (let index = 1; index < coefficients.length; index++) if (coefficients[index] !== 0) return value;
+  return { order: 1, denominator, coefficients: [coefficients[0] as number] };
 }

@@ -165,12 +165,24 @@ export function fixedPart(space: Subspace, matrix: ResidueMatrix, sign: 1 | -1, 
   return echelonResidues(result, combinations.length, width, prime);
 }
 
-/** Whether every vector of `inner` lies in `outer`. */
+/** Whether every vector of `inner` lies in `outer`: each is the sum of outer rows with its entries at their pivots. */
 export function isInside(inner: Subspace, outer: Subspace, prime: number): boolean {
   if (inner.rows > outer.rows) return false;
-  const { width } = outer;
-  const both = new Float64Array((inner.rows + outer.rows) * width);
-  both.set(outer.basis);
-  both.set(inner.basis, outer.rows * width);
-  return echelonResidues(both, inner.rows + outer.rows, width, prime).rows === outer.rows;
+  const { width, basis } = outer;
+  const pivots: number[] = [];
+  for (let row = 0; row < outer.rows; row++) {
+    let pivot = 0;
+    while (basis[row * width + pivot] === 0) pivot += 1;
+    pivots.push(pivot);
+  }
+  for (let vector = 0; vector < inner.rows; vector++)
+    for (let column = 0; column < width; column++) {
+      let sum = 0;
+      for (let row = 0; row < outer.rows; row++) {
+        const factor = inner.basis[vector * width + (pivots[row] as number)] as number;
+        if (factor !== 0) sum = (sum + factor * (basis[row * width + column] as number)) % prime;
+      }
+      if (sum !== inner.basis[vector * width + column]) return false;
+    }
+  return true;
 }

@@ -61,6 +61,8 @@ export interface Configuration {
   readonly magneticGroup: MagneticGroup;
   readonly cell: ConfigurationCell;
   readonly sites: readonly ConfigurationSite[];
+  /** Set where `sites` is left empty because there are too many: `1296 atoms with 432 amplitudes`. */
+  readonly notWritten: string | null;
   /** Whether the amplitudes can give moments of one size on each parent site that orders; null without a cell. */
   readonly constantMoment: ConstantMoment | null;
   /** What the magnetic point group allows; null without a cell. */

@@ -1,10 +1,8 @@
+import { reflectionIndexTolerance } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import type { Triple } from "./geometry.js";
 import { rotationNumbers, rowTimesNumbers } from "./satellite-members.js";
 import { addSquares, basisFactors, type PreparedSpace } from "./structure-factors.js";
-
-/** Reciprocal lattice units per component. A reflection this near to H ± k is taken for it. */
-const indexTolerance = 0.03;
 
 /** The vector H + k of a wave that a reflection means, with k or with −k. */
 export interface MatchedWave {
@@ -17,7 +15,7 @@ export interface MatchedWave {
 export function matchWave({ lattice }: SpaceGroup, prepared: PreparedSpace, q: Triple): MatchedWave | null {
   const vectors = lattice.vectors.map((vector) => vector.map((entry) => entry / lattice.denominator));
   let best: MatchedWave | null = null;
-  let nearest = indexTolerance;
+  let nearest = reflectionIndexTolerance;
   prepared.waveVectors.forEach((k, wave) => {
     for (const side of [1, -1]) {
       const h = [side * q[0] - k[0], side * q[1] - k[1], side * q[2] - k[2]];

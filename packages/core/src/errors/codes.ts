@@ -52,6 +52,8 @@ export const problemCodes = {
   "too-few-peaks": "The list has too few peaks for what was asked.",
   "k-not-determined": "The matched peaks do not fix all free components of the wave vector.",
   "uncertainties-understated": "The peaks scatter about their lines by much more than their uncertainties say.",
+  "repeated-peaks": "Peaks stand where other peaks of the list stand; each position counts once.",
+  "no-intensities": "Intensities were to be used, and the list has none.",
   "shared-line": "Two peaks have only one and the same line of the wave vector within their tolerance.",
   "search-stopped": "The search for k ended before every box was settled; what was not looked at is stated.",
   "search-saturated": "So many wave vectors fit the peaks that not all of them were weighed.",

@@ -45,6 +45,7 @@ export type {
   MomentWave,
 } from "./magnetic-cif/types.js";
 export { magneticCifText } from "./magnetic-cif/write.js";
+export { type IntensityList, type ListedIntensity, parseIntensityList } from "./intensity-list.js";
 export { readPeakKind } from "./peak-kind.js";
 export { type PeakListOptions, parsePeakList } from "./peak-list.js";
 export { parseScanTable, type ScanTable } from "./scan-table.js";

@@ -86,7 +86,7 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
     load: async () => (await import("./commands/satellites.js")).satellitesCommand,
   },
   index: {
-    takes: ["study", "group", ...structureFields, "cell", "k", ...peakFields, ...asideFields],
+    takes: ["study", "group", ...structureFields, "cell", "k", ...peakFields, ...asideFields, "zeroShift", "cellScale"],
     load: async () => (await import("./commands/index-peaks.js")).indexCommand,
   },
   locate: {

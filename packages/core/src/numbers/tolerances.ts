@@ -61,3 +61,22 @@ export const sameAtomAngstrom = 0.5;
 
 /** No unit. A structure factor of a configuration below this share of the sizes it adds up is 0: they come to 12 digits. */
 export const vanishingShare = 1e-9;
+
+/** Share of the intensity, and of the strongest one, that make its uncertainty where the file gives none: usual counting. */
+export const defaultIntensityShare = 0.1;
+export const weakIntensityShare = 0.01;
+
+/**
+ * Difference of the Bayesian criterion below which two candidates are not told apart: below 6 the evidence is not strong
+ * (R. E. Kass & A. E. Raftery, J. Am. Stat. Assoc. 90 (1995) 773).
+ */
+export const tiedCriterion = 6;
+
+/** Standard uncertainties. An intensity above this must have a line: of hundreds of absent lines none is so high by chance. */
+export const clearlySeenUncertainties = 5;
+
+/** Share of the strongest intensity by which two arrangements must differ for a good measurement to tell them apart. */
+export const clearDifferenceShare = 0.02;
+
+/** Reciprocal lattice units per component. A measured reflection this near to H ± k is taken for it. */
+export const reflectionIndexTolerance = 0.03;

@@ -10,14 +10,14 @@ export { compatibilityRecord } from "./building/compatibility.js";
 export { type ExchangeFindings, exchangeRecord } from "./building/exchange.js";
 export { modesRecord } from "./building/modes.js";
 export { cellRecord, groupRecord, littleGroupRecord } from "./building/names.js";
-export type { NamedSite, ParentSites } from "./building/parent-sites.js";
 export { onsetRecord } from "./building/onset.js";
+export type { NamedSite, ParentSites } from "./building/parent-sites.js";
 export { overlapRecord, peaksRecord, satellitesRecord, searchRecord } from "./building/peaks.js";
 export { irrepsRecord, opsRecord, starRecord } from "./building/symmetry.js";
+export { cifCode } from "./cif-code.js";
 export { commandsWithTable, reportCsv } from "./csv/report-csv.js";
 export { jsonText } from "./json-text.js";
-export { configurationsRecord, decomposeRecord } from "./made-records.js";
-export { cifCode, configurationCif } from "./magnetic-cif-of.js";
+export { configurationCif, configurationsRecord, decomposeRecord } from "./made-records.js";
 export { physicalSets } from "./physical-sets.js";
 export type { AtlasRecord, KindRecord, NearbyKindRecord, PlacedKRecord } from "./records/atlas.js";
 export type { CheckedSiteRecord, CheckRecord, CifBlockRecord, CifRecord } from "./records/check.js";
@@ -43,7 +43,6 @@ export type {
   SecondaryIrrepRecord,
 } from "./records/configurations.js";
 export type { DecomposeRecord, IrrepPartRecord } from "./records/decompose.js";
-export type { ExportRecord } from "./records/export.js";
 export type {
   BondClassRecord,
   ConfigurationEnergyRecord,
@@ -58,6 +57,7 @@ export type {
   ShellRecord,
   StationaryRecord,
 } from "./records/exchange.js";
+export type { ExportRecord } from "./records/export.js";
 export type {
   ExactIrrepRecord,
   FullIrrepsRecord,

@@ -1,5 +1,6 @@
 import { type CifVersion, type MagneticCif, magneticCifText } from "../files/index.js";
 import { parseRational, toNumber } from "../numbers/index.js";
+import { cifCode } from "./cif-code.js";
 import type { CellRecord } from "./records/common.js";
 import type { ConfigurationRecord, ConfigurationsRecord } from "./records/configurations.js";
 
@@ -14,11 +15,6 @@ export function configurationCif(
 ): string | null {
   const { cell } = one.magneticGroup;
   return cell === null ? null : magneticCifText(contentOf(record, one, cell), version);
-}
-
-/** `branch-1-GM2.1.mcif`: what a file system and a CIF reader take everywhere. */
-export function cifCode(id: string): string {
-  return id.replaceAll("Γ", "GM").replace(/[^A-Za-z0-9.]+/g, "_");
 }
 
 function contentOf(record: ConfigurationsRecord, one: ConfigurationRecord, cell: CellRecord): MagneticCif {

@@ -1,7 +1,7 @@
+import { cifCode } from "./cif-code.js";
 import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
 import { type DrawnRun, figureNames } from "./document/figure-names.js";
 import { jsonText } from "./json-text.js";
-import { cifCode, configurationCif } from "./magnetic-cif-of.js";
 import type { Envelope } from "./records/common.js";
 import type { ConfigurationRecord, ConfigurationsRecord } from "./records/configurations.js";
 import type { RunRecord } from "./records/run.js";
@@ -35,6 +35,12 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
   const record = answer.result;
   if (record === null) return [];
   const { documentFiles } = await import("./made-reports.js");
+  const { configurationCif } = await import("./magnetic-cif-of.js");
+  const cifFiles = (configurations: ConfigurationsRecord | null, branch: number): (readonly [string, string])[] =>
+    cifNames(configurations, branch).map((name, index): readonly [string, string] => {
+      const all = configurations as ConfigurationsRecord;
+      return [name, configurationCif(all, all.configurations[index] as ConfigurationRecord, "2.0") ?? ""];
+    });
   const texts = new Map([
     ...documentFiles(answer),
     ["report.txt", reportText(answer, { full: true })],
@@ -60,12 +66,4 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
 function cifNames(configurations: ConfigurationsRecord | null, branch: number): string[] {
   if (configurations === null || configurations.cell === null) return [];
   return configurations.configurations.map(({ id }) => `branch-${branch + 1}-${cifCode(id)}.mcif`);
-}
-
-function cifFiles(configurations: ConfigurationsRecord | null, branch: number): (readonly [string, string])[] {
-  const names = cifNames(configurations, branch);
-  return names.map((name, index): readonly [string, string] => {
-    const record = configurations as ConfigurationsRecord;
-    return [name, configurationCif(record, record.configurations[index] as ConfigurationRecord, "2.0") ?? ""];
-  });
 }

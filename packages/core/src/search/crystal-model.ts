@@ -31,6 +31,8 @@ export function crystalModel(group: SpaceGroup, cell: Cell, peaks: readonly Crys
   return {
     total: peaks.length,
     strayShares: peaks.map(({ strayShare }) => strayShare),
+    repeated: peaks.filter(({ repeats }) => repeats).map(({ index }) => index),
+    numbersPerPeak: 3,
     tolerance,
     metric: unitMetric,
     primitiveMetric,

@@ -68,6 +68,10 @@ export interface PeakModel {
   readonly total: number;
   /** The chance of each peak to be no satellite, in the order of the model. */
   readonly strayShares: readonly number[];
+  /** Peaks (by index) that repeat an earlier one. */
+  readonly repeated: readonly number[];
+  /** Numbers that a matched peak gives: its Q, or three indices. */
+  readonly numbersPerPeak: 1 | 3;
   /** Half-width of a typical match, in the unit of `metric`'s square root. */
   readonly tolerance: number;
   /** Metric (nine numbers) in a*, b*, c* of the space where k is measured: Å⁻² with 4π², or 1 for h k l. */

@@ -14,7 +14,15 @@ import { type SearchKind, searchKinds, solutionsOf } from "./search-kind.js";
 import { separationsOf } from "./separations.js";
 import { severalVectors } from "./several-vectors.js";
 import { tiesAmong } from "./ties.js";
-import type { Candidate, PeakList, ReferenceVector, Region, SearchOptions, SearchResult } from "./types.js";
+import type {
+  Candidate,
+  Certificate,
+  PeakList,
+  ReferenceVector,
+  Region,
+  SearchOptions,
+  SearchResult,
+} from "./types.js";
 
 /** Candidates that are compared with one another and returned, best first, besides the points. */
 const mostCandidates = 60;
@@ -37,7 +45,11 @@ export async function locate(
   const modelled = peakModel(group, cell, peaks, options);
   const { model, setAside, powder } = modelled;
   const minimumMatched = Math.max(1, model.total - options.unmatched);
-  const kinds = searchKinds(group, options.maxDimension);
+  // A kind with as many free components as there are numbers to match fits whatever they are.
+  const numbers = minimumMatched * model.numbersPerPeak;
+  const kinds = searchKinds(group, options.maxDimension).filter(
+    ({ dimension }) => dimension === 0 || dimension < numbers,
+  );
   const weigh = weigher(group, model);
   const searched = await searchAll(kinds, model, minimumMatched, options, host);
   const { entries, regions } = weighAll(searched, weigh);
@@ -67,6 +79,9 @@ export async function locate(
     severalVectors: several,
     warnings: [
       ...certificateWarnings(certificate),
+      ...leftOutWarning(options, certificate, numbers),
+      ...repeatedWarning(model),
+      ...intensityWarnings(peaks, options),
       ...halfWavelengthWarning(group, candidates[0]),
       ...fewPeaksWarning(model, candidates[0]),
     ],
@@ -85,12 +100,60 @@ function halfWavelengthWarning(group: SpaceGroup, first: Candidate | undefined):
   ];
 }
 
+function leftOutWarning(
+  { maxDimension }: SearchOptions,
+  { maxDimension: searched }: Certificate,
+  numbers: number,
+): readonly Problem[] {
+  if (searched >= maxDimension || numbers > maxDimension) return [];
+  return [
+    problem("too-few-peaks", `k with ${numbers} free components or more were not searched: they fit any ${numbers}`, {
+      expected: "more positions to match than free components",
+      found: `${numbers} to match`,
+      remedy: "give more peaks, or allow fewer unmatched ones",
+    }),
+  ];
+}
+
+function repeatedWarning({ repeated }: PeakModel): readonly Problem[] {
+  if (repeated.length === 0) return [];
+  const shown = repeated.slice(0, 10).map((peak) => peak + 1);
+  const more = repeated.length - shown.length;
+  return [
+    problem(
+      "repeated-peaks",
+      `${repeated.length === 1 ? "peak" : "peaks"} ${shown.join(", ")}${more > 0 ? ` and ${more} more` : ""} stand where another one stands and count once with it`,
+      {
+        expected: "each line once",
+        found: `${repeated.length} repeated`,
+        remedy: "give the mean of repeated measurements, with its smaller uncertainty",
+      },
+    ),
+  ];
+}
+
+/** What was asked of intensities that are not there. */
+function intensityWarnings({ peaks }: PeakList, { weighByIntensity, nuclear }: SearchOptions): readonly Problem[] {
+  const without = (list: PeakList["peaks"]) => list.every(({ intensity }) => intensity === null);
+  const warn = (what: string): Problem =>
+    problem("no-intensities", `${what} has no intensities, so that they change nothing`, {
+      expected: "a column of intensities",
+      found: "none",
+      remedy: "add the column, or leave the option out",
+    });
+  return [
+    ...(weighByIntensity === true && without(peaks) ? [warn("the list of peaks")] : []),
+    ...(nuclear !== undefined && without(nuclear.peaks) ? [warn("the list of nuclear lines")] : []),
+  ];
+}
+
 /** With so few peaks beyond the free components a chance fit is common. */
 const fewSpare = 2;
 
 function fewPeaksWarning(model: PeakModel, first: Candidate | undefined): readonly Problem[] {
   const letters = (first?.k.values ?? []).length;
-  if (first === undefined || first.residuals.degreesOfFreedom > fewSpare) return [];
+  if (first === undefined || first.evidence.reading === "not informative") return [];
+  if (first.residuals.degreesOfFreedom > fewSpare) return [];
   return [
     problem("too-few-peaks", `${first.matched} matched of ${model.total} peaks hardly say which k it is`, {
       expected: `at least ${letters + fewSpare + 1} matched positions for ${letters} free components`,

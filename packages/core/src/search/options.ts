@@ -14,6 +14,10 @@ export const defaultSearchOptions: SearchOptions = {
   cellScale: 0,
 };
 
+/** Beyond these a diffractometer or a cell is wrong in a way that no refinement beside k can mend, and any k fits. */
+const largestZeroShift = 1;
+const largestCellScale = 0.05;
+
 /** Throws `invalid-argument` with every option that makes no sense. */
 export function checkOptions(options: SearchOptions): void {
   const problems: Problem[] = [];
@@ -33,9 +37,19 @@ export function checkOptions(options: SearchOptions): void {
   demand(Number.isSafeInteger(unmatched) && unmatched >= 0, "--unmatched", "an integer from 0 on", unmatched);
   demand([0, 1, 2, 3].includes(maxDimension), "--max-dimension", "0, 1, 2 or 3", maxDimension);
   demand(qMax === null || qMax > 0, "--q-max", "a number above 0 in Å⁻¹", qMax);
-  demand(zeroShift >= 0 && Number.isFinite(zeroShift), "--zero-shift", "a number from 0 on, in degrees 2θ", zeroShift);
+  demand(
+    zeroShift >= 0 && zeroShift <= largestZeroShift,
+    "--zero-shift",
+    `degrees 2θ from 0 to ${largestZeroShift}`,
+    zeroShift,
+  );
   const { mostBoxes = 1 } = options;
   demand(Number.isSafeInteger(mostBoxes) && mostBoxes > 0, "mostBoxes", "an integer from 1 on", mostBoxes);
-  demand(cellScale >= 0 && cellScale < 1, "--cell-scale", "a relative change from 0 to 1", cellScale);
+  demand(
+    cellScale >= 0 && cellScale <= largestCellScale,
+    "--cell-scale",
+    `a relative change from 0 to ${largestCellScale}`,
+    cellScale,
+  );
   if (problems.length > 0) throw new KvaneError(problems);
 }

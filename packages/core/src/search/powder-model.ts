@@ -45,6 +45,8 @@ export function powderModel(
   return {
     total: peaks.length,
     strayShares: peaks.map(({ strayShare }) => strayShare),
+    repeated: peaks.filter(({ repeats }) => repeats).map(({ index }) => index),
+    numbersPerPeak: 1,
     tolerance,
     metric,
     primitiveMetric,
@@ -129,9 +131,10 @@ function explainPowder(
     if (assignment === null) unmatched.push(peak.index);
     else {
       assignments.push(assignment);
-      chiSquared += (assignment.residual / peak.uncertainty) ** 2;
+      if (!peak.repeats) chiSquared += (assignment.residual / peak.uncertainty) ** 2;
     }
   }
+  const repeated = new Set(peaks.filter(({ repeats }) => repeats).map(({ index }) => index));
   const matches = assignments.map(({ q, residual }) => ({ observed: q + residual, calculated: q }));
   return {
     assignments,
@@ -142,7 +145,7 @@ function explainPowder(
     rootMeanSquare: Math.sqrt(mean(assignments.map(({ residual }) => residual * residual))),
     largest: Math.max(0, ...assignments.map(({ residual }) => Math.abs(residual))),
     chiSquared,
-    observations: assignments.length,
+    observations: assignments.filter(({ peak }) => !repeated.has(peak)).length,
     predicted: positions,
     deWolff: deWolff(matches, positions),
     smithSnyder: smithSnyder(matches, positions, wavelengthAngstrom),
@@ -190,6 +193,8 @@ function powderEquations(
   const jacobian = new Float64Array(assignments.length * columns);
   assignments.forEach(({ peak: peakIndex, h, sign }, row) => {
     const peak = byIndex.get(peakIndex) as PowderPeak;
+    // A row of zeros: the same observation counts once.
+    if (peak.repeats) return;
     const side = sign === -1 ? -1 : 1;
     const vector = h.map((entry, axis) => entry + side * (numeric[axis] as number));
     const covariant = [0, 1, 2].map((axis) =>

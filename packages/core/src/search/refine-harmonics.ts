@@ -1,8 +1,10 @@
-import { gaussNewton } from "../algorithms/index.js";
+import { gaussNewton, type WeightedResiduals } from "../algorithms/index.js";
 import type { WaveVector } from "../kvectors/index.js";
 import { roundNumber } from "../numbers/index.js";
 import { multipleOf } from "./derived-vectors.js";
 import type { Explanation, PeakModel } from "./explanation.js";
+import type { TunedSet } from "./tuned-set.js";
+import { tuningCharge } from "./tuning-charge.js";
 
 /** Rounds of assigning and refining; they settle within a few. */
 const mostRounds = 10;
@@ -12,6 +14,8 @@ export interface RefinedHarmonics {
   readonly k: WaveVector;
   /** Of k itself and of each order asked for. */
   readonly explanations: readonly Explanation[];
+  /** The charge for tuning the letters against all orders; null without letters, or where they were not refined. */
+  readonly tuning: (set: TunedSet | null) => number | null;
 }
 
 /**
@@ -36,7 +40,14 @@ export function refineHarmonics(
     explanations = explained;
     if (settled === true) break;
   }
-  return { k, explanations };
+  return {
+    k,
+    explanations,
+    tuning: (set) =>
+      set === null
+        ? null
+        : tuningCharge(set, jointEquations(model, k, orders, explanations, corrections, k.values ?? []).jacobian),
+  };
 }
 
 function explain(
@@ -52,6 +63,44 @@ function matchedBy(explanations: readonly Explanation[]): number {
   return new Set(explanations.flatMap(({ assignments }) => assignments.map(({ peak }) => peak))).size;
 }
 
+/** The peaks of each order that no other order explains better, as equations for the letters of k. */
+function jointEquations(
+  model: PeakModel,
+  k: WaveVector,
+  orders: readonly number[],
+  explanations: readonly Explanation[],
+  corrections: readonly number[],
+  letters: readonly number[],
+): WeightedResiduals {
+  const count = letters.length;
+  const columns = count + corrections.length;
+  const values = Float64Array.from([...letters, ...corrections]);
+  const parts = [1, ...orders].map((order, index) =>
+    model.equations(order === 1 ? k : multipleOf(k, order), ownAssignments(explanations, index), values),
+  );
+  return {
+    residuals: Float64Array.from(parts.flatMap((part) => [...part.residuals])),
+    jacobian: Float64Array.from(
+      parts.flatMap((part) =>
+        Array.from(part.residuals, (_, row) => [...part.jacobian.slice(row * columns, row * columns + count)]).flat(),
+      ),
+    ),
+  };
+}
+
+function ownAssignments(explanations: readonly Explanation[], index: number): Explanation["assignments"] {
+  return (explanations[index] as Explanation).assignments.filter(
+    ({ peak, residual }) =>
+      !explanations.some(({ assignments }, other) =>
+        assignments.some(
+          (one) =>
+            one.peak === peak &&
+            (Math.abs(one.residual) < Math.abs(residual) || (one.residual === residual && other < index)),
+        ),
+      ),
+  );
+}
+
 function fitted(
   model: PeakModel,
   k: WaveVector,
@@ -60,31 +109,9 @@ function fitted(
   corrections: readonly number[],
 ): WaveVector | null {
   const letters = (k.values ?? []).length;
-  const columns = letters + corrections.length;
-  const own = explanations.map((explanation, index) =>
-    explanation.assignments.filter(
-      ({ peak, residual }) =>
-        !explanations.some(({ assignments }, other) =>
-          assignments.some(
-            (one) =>
-              one.peak === peak &&
-              (Math.abs(one.residual) < Math.abs(residual) || (one.residual === residual && other < index)),
-          ),
-        ),
-    ),
+  const fit = gaussNewton([...(k.values ?? [])], (trial) =>
+    jointEquations(model, k, orders, explanations, corrections, [...trial]),
   );
-  const vectors = [1, ...orders].map((order) => (order === 1 ? k : multipleOf(k, order)));
-  const fit = gaussNewton([...(k.values ?? [])], (trial) => {
-    const values = Float64Array.from([...trial, ...corrections]);
-    const parts = vectors.map((vector, index) =>
-      model.equations(vector, own[index] as Explanation["assignments"], values),
-    );
-    const residuals = parts.flatMap((part) => [...part.residuals]);
-    const rows = parts.flatMap((part) =>
-      Array.from(part.residuals, (_, row) => [...part.jacobian.slice(row * columns, row * columns + letters)]),
-    );
-    return { residuals: Float64Array.from(residuals), jacobian: Float64Array.from(rows.flat()) };
-  });
   if (fit === null) return null;
   return {
     components: k.components,

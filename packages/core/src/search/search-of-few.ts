@@ -8,6 +8,9 @@ import type { SearchOptions } from "./types.js";
 /** Peaks that must match beyond the free components of a kind: with fewer, its solutions say nothing. */
 const leastSpare = 3;
 
+/** Of a longer list planes and general k would take too long: half of its peaks fit many of them. */
+const longList = 60;
+
 export interface SearchOfFew {
   /** By falling evidence. */
   readonly weighed: readonly Weighed[];
@@ -29,7 +32,9 @@ export async function searchOfFew(
   host: WorkHost,
 ): Promise<SearchOfFew> {
   const kinds = searchKinds(group, options.maxDimension).filter(
-    ({ dimension }) => dimension === 0 || dimension + leastSpare <= wanted,
+    ({ dimension }) =>
+      dimension === 0 ||
+      (dimension + leastSpare <= wanted * model.numbersPerPeak && (dimension === 1 || model.total <= longList)),
   );
   const dimensions = Math.log(new Set(kinds.map(({ dimension }) => dimension)).size);
   const weigh = weigher(group, model);

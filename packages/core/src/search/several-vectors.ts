@@ -13,6 +13,7 @@ import type { StarDistance } from "./near-in-k.js";
 import type { ModelledPeaks } from "./peak-model.js";
 import { refineHarmonics } from "./refine-harmonics.js";
 import { searchOfFew } from "./search-of-few.js";
+import { type TunedSet, tunedSet } from "./tuned-set.js";
 import type { EvidenceCharges, SearchOptions, SeveralVectors, VectorFind, VectorStage } from "./types.js";
 import { type MixedVector, mixtureOf } from "./vector-mixture.js";
 
@@ -36,6 +37,17 @@ const leastLeftOver = 3;
 const boxesOfFirst = 100_000;
 const boxesOfSecond = 40_000;
 
+/** A box costs as its peaks do: beyond so many peaks the budgets shrink in proportion. */
+const usualPeaks = 20;
+
+function budgetsFor(total: number): { readonly first: number; readonly second: number } {
+  const share = Math.min(1, usualPeaks / total);
+  return { first: Math.ceil(share * boxesOfFirst), second: Math.ceil(share * boxesOfSecond) };
+}
+
+/** A shorter list says nothing of two vectors. */
+const leastPeaks = 6;
+
 /** What the stages work with. */
 export interface StageInput {
   readonly group: SpaceGroup;
@@ -56,19 +68,29 @@ export interface StageInput {
 export async function severalVectors(input: StageInput, host: WorkHost): Promise<SeveralVectors | null> {
   const { candidates, options, peaks, enough } = input;
   const left = candidates[0]?.candidate.unmatched.length ?? peaks.model.total;
-  if (options.severalVectors === false || (enough && left === 0)) return null;
-  const wider = !enough || left >= leastLeftOver;
+  // A chance k with all letters free may leave little over: only one that is found settles the matter.
+  const settled = candidates[0]?.candidate.evidence.reading === "found" || peaks.model.total < leastPeaks;
+  if (options.severalVectors === false || (enough && left === 0 && settled)) return null;
+  const wider = !enough || !settled || left >= leastLeftOver;
   const half = Math.ceil((peaks.model.total - options.unmatched) / 2);
+  const budget = budgetsFor(peaks.model.total);
   const broad =
     wider && half >= 2
-      ? await searchOfFew(input.group, options, peaks.model, half, boxesOfFirst, "first of two vectors", host)
+      ? await searchOfFew(input.group, options, peaks.model, half, budget.first, "first of two vectors", host)
       : null;
   const first = distinct([...candidates, ...(broad?.weighed ?? [])], input).slice(0, wider ? mostFirst : 1);
   if (first.length === 0) return null;
   const bestSingle = (first[0] as Weighed).candidate.evidence.value;
   const harmonics = first.flatMap((one) => harmonicsOf(input, one, bestSingle));
   const stages: VectorStage[] = [
-    { stage: "harmonics", tried: harmonics.length, boxes: 0, exhaustive: true, minimumMatched: [] },
+    // Of the vectors that the searches came to: no more complete than they are.
+    {
+      stage: "harmonics",
+      tried: harmonics.length,
+      boxes: 0,
+      exhaustive: broad?.exhaustive ?? true,
+      minimumMatched: broad === null ? [] : [half],
+    },
   ];
   const pairs = broad === null ? null : await secondVectors(input, first, bestSingle, host);
   if (pairs !== null && broad !== null)
@@ -87,7 +109,12 @@ export async function severalVectors(input: StageInput, host: WorkHost): Promise
   for (const find of byEvidence([...harmonics, ...two.map((pair) => pair.find), ...sums]))
     if (find.gain > 0 && found.length < mostFinds && !found.some((better) => isBeside(input, better, find)))
       found.push(find);
-  return { stages, found };
+  return { stages, found, single: singleOf(first[0] as Weighed) };
+}
+
+/** What the finds are held against: the best vector on its own, however many peaks it leaves over. */
+function singleOf({ candidate: { k, evidence, matched, total } }: Weighed): SeveralVectors["single"] {
+  return { k, evidence, matched, total };
 }
 
 /** A pair with what its sums need. */
@@ -128,7 +155,8 @@ function harmonicsOf({ group, peaks }: StageInput, one: Weighed, bestSingle: num
       ...MixedVector["explanation"][],
     ];
     if (others.some((explanation) => !explainsMore(explanation, base))) return [];
-    const charges = { ...evidence.charges, kinds: evidence.charges.kinds + asked };
+    const tuning = refined.tuning(tunedSetOf(group, model, refined.k)) ?? evidence.charges.tuning;
+    const charges = { ...evidence.charges, tuning, kinds: evidence.charges.kinds + asked };
     const letters = (k.values ?? []).length;
     const members = chosen.map(
       (order, place): MixedVector => ({
@@ -140,6 +168,10 @@ function harmonicsOf({ group, peaks }: StageInput, one: Weighed, bestSingle: num
     const first: MixedVector = { name: "k1", k: refined.k, explanation: base };
     return [mixtureOf("harmonics", model, [refined.k], [first, ...members], { charges, letters }, bestSingle)];
   });
+}
+
+function tunedSetOf(group: SpaceGroup, model: PeakModel, k: WaveVector): TunedSet | null {
+  return (k.values ?? []).length === 0 ? null : tunedSet(group, k, model.metric, 2 * model.tolerance);
 }
 
 function isNoNews(group: SpaceGroup, harmonic: WaveVector, k: WaveVector): boolean {
@@ -176,7 +208,15 @@ async function secondVectors(
     const wanted = left.size - options.unmatched;
     if (left.size < leastLeftOver || wanted < 2) continue;
     const model = peaks.modelOf((peak) => left.has(peak));
-    const search = await searchOfFew(input.group, options, model, wanted, boxesOfSecond, "second vector", host);
+    const search = await searchOfFew(
+      input.group,
+      options,
+      model,
+      wanted,
+      budgetsFor(peaks.model.total).second,
+      "second vector",
+      host,
+    );
     demands.add(wanted);
     boxes += search.boxes;
     exhaustive &&= search.exhaustive;

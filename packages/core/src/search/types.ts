@@ -337,6 +337,8 @@ export interface SeveralVectors {
   readonly stages: readonly VectorStage[];
   /** Those that gain on the best single vector, best evidence first. */
   readonly found: readonly VectorFind[];
+  /** The best single vector of all that were weighed, however many peaks it leaves over. */
+  readonly single: ReferenceVector;
 }
 
 /** A peak that was not used. */

@@ -15,6 +15,8 @@ export interface PowderPeak {
   readonly slope: number;
   /** Chance of being no satellite. */
   readonly strayShare: number;
+  /** It stands where an earlier peak stands: the same observation once more. */
+  readonly repeats: boolean;
 }
 
 /** A single-crystal peak in the form that matching needs, r.l.u. */
@@ -25,10 +27,9 @@ export interface CrystalPeak {
   readonly halfWidth: number;
   /** Chance of being no satellite. */
   readonly strayShare: number;
+  /** It stands where an earlier peak stands, within its uncertainty: the same observation once more. */
+  readonly repeats: boolean;
 }
-
-/** A row that repeats another to the last digit is no second peak: as a certain stray it adds no evidence. */
-const sayingNothing = 1;
 
 /** The peaks that take part, and those that do not. */
 export interface UsedPeaks {
@@ -51,7 +52,6 @@ export function usedPeaks(
   const powder: PowderPeak[] = [];
   const crystal: CrystalPeak[] = [];
   const setAside: SetAside[] = [];
-  const seen = new Set<string>();
   const shares = options.weighByIntensity === true ? strayShares(list.peaks) : [];
   const impurities = impurityLines(options.impurities ?? [], impurityReach(list, options));
   for (const peak of list.peaks) {
@@ -81,9 +81,9 @@ export function usedPeaks(
       index: peak.index,
       uncertainty,
       halfWidth: options.tolerance ?? matchStandardUncertainties * uncertainty,
-      strayShare: seen.has(position.join()) ? sayingNothing : (shares[peak.index] ?? strayShare),
+      strayShare: shares[peak.index] ?? strayShare,
+      repeats: false,
     };
-    seen.add(position.join());
     if (list.kind === "hkl") crystal.push({ ...common, hkl: position as unknown as [number, number, number] });
     else powder.push({ ...common, q, slope: slopeAt(q, list.wavelengthAngstrom) });
   }
@@ -93,7 +93,37 @@ export function usedPeaks(
       found: `${list.peaks.length} in the list, ${setAside.length} set aside`,
       remedy: "give a list of satellite positions, or raise the limit of Q",
     });
-  return { powder, crystal, setAside };
+  return { powder: countedOnce(powder), crystal: countedOnceInSpace(crystal), setAside };
+}
+
+/** Certain to be a stray: a repeated peak adds nothing to the evidence. */
+const sayingNothing = 1;
+
+/** Standard uncertainties. Peaks nearer than this are one observation: two lines that near are never seen as two. */
+const sameObservation = 0.3;
+
+/** Marks peaks that stand where an earlier one stands: the same line measured again. They stay in the list, and count once. */
+function countedOnce(peaks: readonly PowderPeak[]): readonly PowderPeak[] {
+  const repeated = new Set<number>();
+  const sorted = [...peaks].sort((a, b) => a.q - b.q || a.index - b.index);
+  let last = sorted[0];
+  for (const peak of sorted.slice(1)) {
+    if (last !== undefined && peak.q - last.q < sameObservation * Math.max(peak.uncertainty, last.uncertainty))
+      repeated.add(peak.index);
+    else last = peak;
+  }
+  return peaks.map((peak) => (repeated.has(peak.index) ? { ...peak, strayShare: sayingNothing, repeats: true } : peak));
+}
+
+/** The same of three indices: only equal rows, since domains and arms come near each other. */
+function countedOnceInSpace(peaks: readonly CrystalPeak[]): readonly CrystalPeak[] {
+  const seen = new Set<string>();
+  return peaks.map((peak) => {
+    const key = peak.hkl.join();
+    const repeats = seen.has(key);
+    seen.add(key);
+    return repeats ? { ...peak, strayShare: sayingNothing, repeats } : peak;
+  });
 }
 
 function isInside(position: number | null, [from, to]: readonly [number, number]): boolean {

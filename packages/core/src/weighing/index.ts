@@ -10,6 +10,7 @@ export {
   type DomainFraction,
   defaultWeighOptions,
   type FittedAmplitude,
+  type FittedMinimum,
   type FittedMoment,
   type IntensityData,
   type IntensityDatum,
@@ -20,4 +21,4 @@ export {
   type WeighOptions,
   type WeighSeparation,
 } from "./types.js";
-export { tiedCriterion, weigh } from "./weigh.js";
+export { weigh } from "./weigh.js";

@@ -1,10 +1,10 @@
 import type { WeightedResiduals } from "../algorithms/index.js";
-import { type Bounds, boundedFit } from "./bounded-fit.js";
+import { type Bounds, boundedFit, quickPatience } from "./bounded-fit.js";
 
 /** In units of the largest amplitude: beyond that an amplitude is not determined. */
 const furthest = 4;
 const firstStep = 1e-3;
-const bisections = 12;
+const bisections = 8;
 
 /**
  * How far an amplitude can go from its best value until χ² has risen by 1, all other parameters following; the larger of both
@@ -26,7 +26,7 @@ export function profileUncertainty(
     start[index] = (best[index] as number) + away;
     const held = Float64Array.from(start, (value, at) => (at === index ? value : (bounds.lower[at] as number)));
     const top = Float64Array.from(start, (value, at) => (at === index ? value : (bounds.upper[at] as number)));
-    return boundedFit(start, { lower: held, upper: top }, model).chiSquared - chiSquared;
+    return boundedFit(start, { lower: held, upper: top }, model, quickPatience).chiSquared - chiSquared;
   };
   let largest = 0;
   for (const side of [1, -1]) {

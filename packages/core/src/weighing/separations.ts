@@ -12,7 +12,7 @@ import {
   type Triple,
 } from "../diffraction/index.js";
 import { star } from "../kvectors/index.js";
-import { roundNumber } from "../numbers/index.js";
+import { clearDifferenceShare, roundNumber } from "../numbers/index.js";
 import { type SatelliteLine, satelliteLines } from "../reflections/index.js";
 import type { DataFrame } from "./fit-forms.js";
 import type { WeighSeparation } from "./types.js";
@@ -23,9 +23,6 @@ export interface FittedArrangement {
   readonly space: MomentSpace;
   readonly amplitudes: ArrayLike<number>;
 }
-
-/** Share of the strongest intensity by which two must differ to be told apart by a good measurement. */
-const clearDifference = 0.02;
 
 /** Lines and vectors that are looked at. */
 const mostLines = 80;
@@ -193,7 +190,7 @@ function largestDifference(
   const scale = Math.max(...a.map(Math.abs), ...b.map(Math.abs));
   if (!(scale > 0)) return null;
   let best = -1;
-  let most = clearDifference;
+  let most = clearDifferenceShare;
   a.forEach((value, index) => {
     const share = Math.abs(value - (b[index] as number)) / scale;
     if (share > most) [best, most] = [index, share];

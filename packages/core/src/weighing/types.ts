@@ -56,7 +56,15 @@ export interface FittedAmplitude {
   readonly determined: boolean;
 }
 
-/** The moment of one site of the primitive cell. */
+/** One of several minima that fit equally well. */
+export interface FittedMinimum {
+  readonly chiSquared: number;
+  readonly amplitudes: readonly number[];
+  /** Standard uncertainties from the derivatives there. */
+  readonly uncertainties: readonly number[];
+}
+
+/** The moment of one atom of the primitive cell. */
 export interface FittedMoment {
   readonly label: string;
   readonly position: Triple;
@@ -122,7 +130,7 @@ export interface WeighedCandidate {
   readonly domains: readonly DomainFraction[];
   /** Observed and calculated, one per datum. */
   readonly calculated: readonly number[];
-  /** Others that the data cannot tell from this one: criterion within `tiedCriterion`. */
+  /** Others that the data cannot tell from this one: criterions less than 6 apart (`tiedCriterion`). */
   readonly sameAs: readonly string[];
   /** Others whose best fits give the very same intensities. */
   readonly identicalTo: readonly string[];
@@ -130,11 +138,11 @@ export interface WeighedCandidate {
   /** Covariance of the amplitudes, row by row; along directions that the data do not see it is 0. */
   readonly covariance: readonly (readonly number[])[];
   /**
-   * Amplitudes of every minimum that was found within 4 of the lowest χ² and does not differ from another in signs alone,
-   * the best first: arrangements that fit equally well, some of them the same up to a choice of origin or domain. The best
+   * Every minimum that was found within 4 of the lowest χ² and does not differ from another in signs alone, the best first,
+   * at most eight: arrangements that fit equally well, some of them the same up to a choice of origin or domain. The best
    * alone where the data leave amplitudes undetermined.
    */
-  readonly minima: readonly (readonly number[])[];
+  readonly minima: readonly FittedMinimum[];
   /** Starts that ended in the best minimum, of how many. */
   readonly hits: number;
   readonly starts: number;

@@ -1,6 +1,7 @@
 import type { WorkHost } from "../algorithms/index.js";
 import { type MomentSpace, type ScatteringGeometry, scatteringGeometry } from "../diffraction/index.js";
 import { roundNumber } from "../numbers/index.js";
+import type { BoundedFit } from "./bounded-fit.js";
 import { commonPhaseDirection, withChosenPhase } from "./common-phase.js";
 import { type FitCovariance, fitCovariance, propagated } from "./fit-covariance.js";
 import type { DataFrame, FitForms } from "./fit-forms.js";
@@ -9,7 +10,14 @@ import { fittedMoments } from "./moments.js";
 import { boundsOf, type Minima, multiStart } from "./multi-start.js";
 import { profileUncertainty } from "./profile-uncertainty.js";
 import { normalNumbers, seededNumbers } from "./random.js";
-import type { DomainFraction, FittedAmplitude, IntensityData, WeighedCandidate, WeighOptions } from "./types.js";
+import type {
+  DomainFraction,
+  FittedAmplitude,
+  FittedMinimum,
+  IntensityData,
+  WeighedCandidate,
+  WeighOptions,
+} from "./types.js";
 
 /** A candidate's fit before it is compared with others. */
 export interface OneFit {
@@ -17,7 +25,12 @@ export interface OneFit {
   readonly forms: FitForms;
   readonly layout: FitLayout;
   readonly minima: Minima;
-  readonly result: Omit<WeighedCandidate, "sameAs" | "identicalTo" | "separations">;
+  readonly result: Omit<WeighedCandidate, "amplitudes" | "sameAs" | "identicalTo" | "separations">;
+  /**
+   * The amplitudes with their uncertainties. With `follow` those that derivatives say nothing of are followed one by one,
+   * which takes many fits and is for the candidates that matter.
+   */
+  readonly amplitudes: (follow: boolean) => readonly FittedAmplitude[];
 }
 
 export async function weighOne(
@@ -38,9 +51,7 @@ export async function weighOne(
   const here = sightOf(space, parameters, covariance);
   const generic = genericSight(space, layout, parameters, steps, model, options.seed);
   const rank = Math.max(here.rank, generic.rank);
-  const seen = space.basis.map((_, index) =>
-    [...here.unseen, ...generic.unseen].every((direction) => Math.abs(direction[index] as number) < shareUnseen),
-  );
+  const seen = space.basis.map((_, index) => isSeen(generic, index));
   const { amplitudes, fractions, scale } = readParameters(layout, parameters);
   const { values } = calculated(forms, layout, parameters);
   const count = data.data.length;
@@ -63,7 +74,6 @@ export async function weighOne(
       rFactor: roundNumber(observed > 0 ? residue / observed : 0, 1),
       parameters: rank,
       criterion: roundNumber(chiSquared + rank * Math.log(count), count),
-      amplitudes: fittedAmplitudes(space, layout, parameters, covariance, model, chiSquared, seen),
       freePhase: commonPhaseDirection(space, parameters) !== null,
       moments,
       factorToLimit: relative ? factorToLimit(moments) : null,
@@ -75,31 +85,55 @@ export async function weighOne(
           roundNumber(covariance.matrix[row * layout.size + column] as number),
         ),
       ),
-      minima: seen.every(Boolean)
-        ? differentMinima(space, minima)
-        : [Array.from(amplitudes, (value) => roundNumber(value, Math.max(...amplitudes.map(Math.abs))))],
+      minima: differentMinima(space, seen.every(Boolean) ? minima.equals : [minima.best], layout, model),
       hits: minima.hits,
       starts: minima.starts,
     },
+    amplitudes: (follow) =>
+      fittedAmplitudes(space, layout, parameters, covariance, model, chiSquared, { here, generic, follow }),
   };
 }
 
 /** Relative to the largest. Minima whose amplitudes agree within this but for signs are one. */
 const sameAmplitudes = 1e-2;
 
-function differentMinima(space: MomentSpace, minima: Minima): number[][] {
-  const kept: number[][] = [];
-  for (const { parameters } of minima.equals) {
-    const amplitudes = Array.from(withChosenPhase(space, parameters));
+const mostMinima = 8;
+
+function differentMinima(
+  space: MomentSpace,
+  fits: readonly BoundedFit[],
+  layout: FitLayout,
+  model: ReturnType<typeof residualModel>,
+): FittedMinimum[] {
+  const kept: FittedMinimum[] = [];
+  for (const { parameters, chiSquared } of fits) {
+    if (kept.length === mostMinima) break;
+    const own = Float64Array.from(parameters);
+    own.set(withChosenPhase(space, parameters));
+    const amplitudes = Array.from(own.subarray(0, layout.amplitudes));
     const scale = Math.max(...amplitudes.map(Math.abs), 0);
     const known = kept.some((other) =>
-      other.every(
+      other.amplitudes.every(
         (value, index) => Math.abs(Math.abs(value) - Math.abs(amplitudes[index] as number)) <= sameAmplitudes * scale,
       ),
     );
-    if (!known) kept.push(amplitudes.map((value) => roundNumber(value, scale)));
+    if (known) continue;
+    const covariance = fitCovariance(model(own), layout.size, stepSizes(layout, own));
+    kept.push({
+      chiSquared: roundNumber(chiSquared, layout.size),
+      amplitudes: amplitudes.map((value) => roundNumber(value, scale)),
+      uncertainties: amplitudes.map((_, index) =>
+        roundNumber(propagated(covariance, unitVector(layout.size, index)), scale),
+      ),
+    });
   }
   return kept;
+}
+
+function unitVector(size: number, index: number): Float64Array {
+  const unit = new Float64Array(size);
+  unit[index] = 1;
+  return unit;
 }
 
 /** Sizes are relative where neither a scale nor nuclear lines are there. */
@@ -153,6 +187,10 @@ function sightOf(space: MomentSpace, parameters: Float64Array, { rank, unseen }:
 /** Share of an unseen direction above which an amplitude counts as not determined. */
 const shareUnseen = 0.05;
 
+function isSeen({ unseen }: Sight, index: number): boolean {
+  return unseen.every((direction) => Math.abs(direction[index] as number) < shareUnseen);
+}
+
 /** Above this number of amplitudes small ones are not followed one by one. */
 const mostProfiled = 12;
 
@@ -163,24 +201,23 @@ function fittedAmplitudes(
   covariance: FitCovariance,
   model: ReturnType<typeof residualModel>,
   chiSquared: number,
-  seen: readonly boolean[],
+  sights: { readonly here: Sight; readonly generic: Sight; readonly follow: boolean },
 ): FittedAmplitude[] {
   const gauge = commonPhaseDirection(space, parameters);
   const scale = Math.max(...parameters.subarray(0, layout.amplitudes).map(Math.abs), 0);
   return space.basis.map(({ label }, index) => {
-    const unit = new Float64Array(layout.size);
-    unit[index] = 1;
     const value = parameters[index] as number;
-    const linear = propagated(covariance, unit);
-    // Within its uncertainty of 0 the square decides, not the derivative.
-    const small = gauge === null && linear > Math.abs(value);
-    const followed = seen[index] === true && small && layout.amplitudes <= mostProfiled;
+    const linear = propagated(covariance, unitVector(layout.size, index));
+    const seen = isSeen(sights.generic, index);
+    // Near 0, and where two solutions meet, the square decides and not the derivative.
+    const flat = gauge === null && (linear > Math.abs(value) || !isSeen(sights.here, index));
+    const followed = sights.follow && seen && flat && layout.amplitudes <= mostProfiled;
     const uncertainty = followed
       ? profileUncertainty(index, parameters, chiSquared, boundsOf(layout), model, scale)
-      : linear <= scale
+      : linear <= scale && isSeen(sights.here, index)
         ? linear
         : null;
-    const determined = seen[index] === true && uncertainty !== null;
+    const determined = seen && uncertainty !== null;
     return {
       label,
       value: roundNumber(value, scale),

@@ -1,6 +1,7 @@
 import { breathe, type WorkHost } from "../algorithms/index.js";
 import { fail } from "../errors/index.js";
 import type { WaveVector } from "../kvectors/index.js";
+import { clearlySeenUncertainties, tiedCriterion } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { type DataFrame, dataFrame, type FitForms, fitForms } from "./fit-forms.js";
 import { type Separator, separator } from "./separations.js";
@@ -14,14 +15,6 @@ import {
 } from "./types.js";
 import { isRelative, type OneFit, weighOne } from "./weigh-one.js";
 
-/**
- * Candidates whose criterion differs by less than this are not told apart: differences of the Bayesian criterion below 6
- * are no strong evidence (R. E. Kass & A. E. Raftery, J. Am. Stat. Assoc. 90 (1995) 773).
- */
-export const tiedCriterion = 6;
-
-/** An observed intensity above this many s.u. must have a line: of hundreds of absent lines none is that high by chance. */
-const clearlySeen = 5;
 /** Of the strongest form: entries below are zero but for rounding. */
 const zeroShare = 1e-12;
 /** s.u. Calculated intensities that differ by less everywhere are the same pattern. */
@@ -153,7 +146,7 @@ function impossiblePeaks({ data }: IntensityData, { forms, constants, size }: Fi
   return data
     .filter(
       ({ observed, uncertainty }, index) =>
-        observed > clearlySeen * uncertainty &&
+        observed > clearlySeenUncertainties * uncertainty &&
         constants[index] === 0 &&
         forms.every((domain) =>
           Array.from({ length: size }, (_, at) => domain[index]?.[at * size + at] as number).every(
@@ -183,9 +176,9 @@ function compared(
   const isFirst = (fits[0]?.result.criterion ?? 0) + tiedCriterion > fit.result.criterion;
   return {
     ...fit.result,
+    amplitudes: fit.amplitudes(isFirst),
     sameAs: tied.map(({ space }) => space.id),
     identicalTo: identical.map(({ space }) => space.id),
-    // Only for the family that matters.
     separations:
       isFirst && separate
         ? tied.slice(0, mostSeparations).map((other) => separate(arrangement(fit), arrangement(other)))

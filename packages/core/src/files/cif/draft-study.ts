@@ -42,7 +42,7 @@ export function draftStudy(
   const sites = draftSites(structure, group, cell);
   const lines = [
     `# Drafted by kvane from ${comment(structure.file.replace(/^.*[\\/]/, ""))}, data block ${comment(structure.block)}. Lines behind # are notes, and choices`,
-    "# that are left to you. `kvane check` says what is wrong or missing; `kvane help study` shows the keys.",
+    "# that are left to you. `kvane check` says what is wrong or missing; `kvane help study-file` shows the keys.",
     ...notes.map((text) => `# Note: ${comment(text)}`),
     `title: ${scalar(structure.title ?? structure.block)}  # add the temperature`,
     "",

@@ -1,5 +1,8 @@
+import { configurationsOf } from "../../configurations/index.js";
 import {
+  arrangementEnergy,
   type BondTable,
+  balancedModel,
   bondTable,
   constantMoments,
   type ExchangeLevels,
@@ -13,13 +16,21 @@ import {
   type StationaryAnswer,
   stationaryConstants,
 } from "../../exchange/index.js";
-import { formatWaveVector, isExactWaveVector, numericWaveVector, type WaveVector } from "../../kvectors/index.js";
-import { type ExchangeRecord, exchangeRecord } from "../../reports/index.js";
-import type { SpaceGroup } from "../../spacegroups/index.js";
+import { smallIrreps } from "../../irreps/index.js";
+import {
+  formatWaveVector,
+  isExactWaveVector,
+  numericWaveVector,
+  type WaveVector,
+  waveVectorToJson,
+} from "../../kvectors/index.js";
+import { siteModes } from "../../modes/index.js";
+import { type ConfigurationEnergyRecord, type ExchangeRecord, exchangeRecord } from "../../reports/index.js";
+import type { SiteOrbit } from "../../spacegroups/index.js";
 import { cellFor, writtenCell } from "../inputs/cell-input.js";
 import { axesOf, constantsOf, type GivenRange, rangesOf, spinsOf } from "../inputs/exchange-input.js";
 import { groupOf } from "../inputs/group-input.js";
-import { type GivenK, placedK, writtenKs } from "../inputs/k-input.js";
+import { placedK, writtenKs } from "../inputs/k-input.js";
 import { numberOption } from "../inputs/number-input.js";
 import { orbitsOf, writtenSites } from "../inputs/site-input.js";
 import { remember, together, type Work } from "../work.js";
@@ -47,10 +58,13 @@ export async function exchangeCommand(work: Work): Promise<ExchangeRecord> {
   const orbits = orbitsOf(work, group, sites, cell);
   const all = [...constants, ...runningAlone(constants, ranges)];
   const needed = farthestShell(all);
-  const table = bondTable(group, cell, orbits, { shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed) });
-  const model = exchangeModel(table, all, all.length === 0 ? {} : spinsOf(work, sites));
-  if (all.length === 0) return exchangeRecord(table, model, nothing);
-  return exchangeRecord(table, model, await findingsOf(work, { group, table, model, placed, ks, ranges }));
+  const table = bondTable(group, cell, orbits, {
+    shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),
+  });
+  const plain = exchangeModel(table, all, all.length === 0 ? {} : spinsOf(work, sites));
+  if (all.length === 0) return exchangeRecord(table, plain, nothing);
+  const model = await balancedModel(plain, null, work.host);
+  return exchangeRecord(table, model, await findingsOf(work, { table, model, placed, ranges, orbits }));
 }
 
 const nothing = {
@@ -70,34 +84,74 @@ function runningAlone(constants: readonly GivenCoupling[], ranges: readonly Give
 }
 
 interface Question {
-  readonly group: SpaceGroup;
   readonly table: BondTable;
   readonly model: ExchangeModel;
   readonly placed: readonly WaveVector[];
-  readonly ks: readonly GivenK[];
   readonly ranges: readonly GivenRange[];
+  readonly orbits: readonly SiteOrbit[];
 }
 
-async function findingsOf(work: Work, { table, model, placed, ranges }: Question) {
+async function findingsOf(work: Work, { table, model, placed, ranges, orbits }: Question) {
   const { host } = work;
   const ground = await groundOf(model, {}, host);
   const numeric = placed.filter((k) => numericWaveVector(k) !== null);
   for (const k of placed)
     if (numericWaveVector(k) === null)
-      remember(work, [{ what: `k = ${formatWaveVector(k)}`, value: "left out", because: "energies need a number for every letter of k" }], []);
+      remember(
+        work,
+        [
+          {
+            what: `k = ${formatWaveVector(k)}`,
+            value: "left out",
+            because: "energies need a number for every letter of k",
+          },
+        ],
+        [],
+      );
   const tolerance = sameLevel * scaleOf(model);
   const shown = ground.set.vectors.slice(0, shownVectors);
   const levels = shown.map(({ k }) => ({ from: "minimum" as const, levels: exchangeLevels(model, k, tolerance) }));
   const asked = numeric.map((k) => ({ from: "given" as const, levels: exchangeLevels(model, k, tolerance) }));
   const axes = axesOf(table, ranges);
+  const given = numeric.filter(isExactWaveVector);
+  const exact =
+    given.length > 0
+      ? given
+      : shown
+          .map(({ k }) => k)
+          .filter(isExactWaveVector)
+          .slice(0, 1);
   return {
     ground,
     constantMoments: constantMoments(model, ground.set.vectors, tolerance),
     atK: [...levels, ...asked],
-    configurations: [],
+    configurations: await energiesOfArrangements(work, model, orbits, exact),
     stationary: await stationaryFor(model, numeric, asked, work),
     diagram: axes.length === 0 ? null : await phaseDiagram(model, axes, host),
   };
+}
+
+/** Every arrangement that the irreps of these k allow, with its energy, lowest first. */
+async function energiesOfArrangements(
+  { host }: Work,
+  model: ExchangeModel,
+  orbits: readonly SiteOrbit[],
+  ks: readonly WaveVector[],
+): Promise<ConfigurationEnergyRecord[]> {
+  const { group, cell } = model.table;
+  const records: ConfigurationEnergyRecord[] = [];
+  for (const k of ks) {
+    const irreps = smallIrreps(group, k);
+    const modes = orbits.map((orbit) => siteModes(group, irreps, orbit));
+    const { configurations } = await configurationsOf(group, irreps, modes, cell, {}, host);
+    for (const one of configurations) {
+      const energy = arrangementEnergy(model, one);
+      if (energy === null) continue;
+      const { id, direction } = one;
+      records.push({ id, k: waveVectorToJson(k), irreps: one.irreps, direction, ...energy });
+    }
+  }
+  return records.sort((a, b) => a.lowest - b.lowest);
 }
 
 /** Share of Σ|J| within which eigenvalues at one computed k are one: k is known to 1e-9. */

@@ -11,7 +11,7 @@ export async function exportCommand(work: Work): Promise<ExportRecord> {
   const version = versionOf(work);
   const record = await configurationsCommand(work);
   const one = chosen(work, record);
-  const cif = configurationCif(record, one, version);
+  const cif = await configurationCif(record, one, version);
   if (cif === null)
     fail("missing-argument", "a CIF needs the unit cell", {
       where: { argument: argumentNames.cell },

@@ -16,7 +16,13 @@ export async function onsetCommand(work: Work): Promise<OnsetRecord> {
   if (!table.headed)
     remember(
       work,
-      [{ what: "columns of the scan", value: "T, then an intensity each", because: "there is no header that names them" }],
+      [
+        {
+          what: "columns of the scan",
+          value: "T, then an intensity each",
+          because: "there is no header that names them",
+        },
+      ],
       [],
     );
   const bare = table.intensities.filter(({ uncertainties }) => uncertainties === null);
@@ -49,6 +55,9 @@ async function scanOf(work: Work) {
     where: study === null ? { argument: "FILE" } : { file: study.file, path: "onset" },
     expected: "a file with columns: T, then a column for each peak",
     found: "nothing",
-    remedy: study === null ? "name the file: kvane onset scan.csv" : "add `onset: {file: scan.csv}` to the study, or name the file",
+    remedy:
+      study === null
+        ? "name the file: kvane onset scan.csv"
+        : "add `onset: {file: scan.csv}` to the study, or name the file",
   });
 }

@@ -2,7 +2,7 @@ import type { HelpTopic } from "./topics.js";
 
 /** Files in and out. */
 export const formatTopics: { readonly [topic: string]: HelpTopic } = {
-  study: {
+  "study-file": {
     title: "The study file",
     text: `A YAML file that holds the question. Numbers are read as written: 1/3 and 0.5 are exact.
   title: Layered ferrite (invented), 1.5 K

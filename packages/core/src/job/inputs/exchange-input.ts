@@ -1,5 +1,5 @@
-import { type BondTable, type DiagramAxis, classesNamed, type GivenCoupling } from "../../exchange/index.js";
 import { fail } from "../../errors/index.js";
+import { type BondTable, classesNamed, type DiagramAxis, type GivenCoupling } from "../../exchange/index.js";
 import { formatRational, toNumber } from "../../numbers/index.js";
 import { argumentNames } from "../request.js";
 import { remember, type Work } from "../work.js";
@@ -47,7 +47,9 @@ export function spinsOf(work: Work, sites: readonly GivenSite[]): Record<string,
     [
       {
         what: "lengths of the spins",
-        value: all ? sites.map(({ site }, n) => `${site.label} ${formatRational(spins[n] ?? [1, 1])}`).join(", ") : "1 for every atom",
+        value: all
+          ? sites.map(({ site }, n) => `${site.label} ${formatRational(spins[n] ?? [1, 1])}`).join(", ")
+          : "1 for every atom",
         because: all ? "the study gives the spin of every site" : "not every site has a spin in the study",
       },
     ],
@@ -73,10 +75,17 @@ export function rangesOf({ request }: Work): GivenRange[] {
   const texts = request.vary ?? [];
   const where = { argument: argumentNames.vary };
   const ranges = texts.map((text): GivenRange => {
-    const [bond = "", from = "", to = "", count = String(usualCount), ...more] = text.split(/[\s,]+/).filter((word) => word !== "");
+    const [bond = "", from = "", to = "", count = String(usualCount), ...more] = text
+      .split(/[\s,]+/)
+      .filter((word) => word !== "");
     const fine =
-      more.length === 0 && bondName.test(bond) && number.test(from) && number.test(to) && /^\d+$/.test(count) &&
-      Number(count) >= 2 && Number(from) !== Number(to);
+      more.length === 0 &&
+      bondName.test(bond) &&
+      number.test(from) &&
+      number.test(to) &&
+      /^\d+$/.test(count) &&
+      Number(count) >= 2 &&
+      Number(from) !== Number(to);
     if (!fine)
       fail("invalid-argument", `\`${text}\` is no range of an exchange constant`, {
         where,
@@ -88,12 +97,16 @@ export function rangesOf({ request }: Work): GivenRange[] {
   });
   const total = ranges.reduce((product, { count }) => product * count, 1);
   if (ranges.length > 2 || total > mostPoints)
-    fail("invalid-argument", ranges.length > 2 ? "more than two constants are to run" : `the diagram would have ${total} points`, {
-      where,
-      expected: `at most two ranges and ${mostPoints} points`,
-      found: `${ranges.length} ranges, ${total} points`,
-      remedy: "take fewer",
-    });
+    fail(
+      "invalid-argument",
+      ranges.length > 2 ? "more than two constants are to run" : `the diagram would have ${total} points`,
+      {
+        where,
+        expected: `at most two ranges and ${mostPoints} points`,
+        found: `${ranges.length} ranges, ${total} points`,
+        remedy: "take fewer",
+      },
+    );
   return ranges;
 }
 

@@ -13,7 +13,7 @@ export async function studyTextFrom(path: string, host: JobHost, command: string
       where: { argument: "STUDY" },
       expected: "a study file such as study.yaml, or --example",
       found: path,
-      remedy: "write the group into a study file; `kvane help study` shows one",
+      remedy: "write the group into a study file; `kvane help study-file` shows one",
     });
   }
 }
@@ -25,6 +25,6 @@ export function needStudy(study: Study | null): Study {
     where: { argument: "STUDY" },
     expected: "a study file such as study.yaml, or --example",
     found: "nothing",
-    remedy: "name a study file, or take --example; `kvane help study` shows what is in one",
+    remedy: "name a study file, or take --example; `kvane help study-file` shows what is in one",
   });
 }

@@ -45,9 +45,13 @@ function givenSteps({ searched, candidates, followed }: FoundKs): string[] {
 function noCandidate({ searched, candidates, followed }: FoundKs): string[] {
   if (!searched || candidates.length > 0) return [];
   if (followed.length > 0)
-    return [
-      `No single k explains enough of the peaks; ${followed.map(({ k }) => formatWaveVector(k)).join(" and ")}${followed.length > 1 ? " together" : " with its harmonics"} does. Measure whether all peaks vanish at one temperature: if not, they belong to different orders or phases.`,
-    ];
+    return followed.length > 1
+      ? [
+          `No single k explains enough of the peaks; ${followed.map(({ k }) => formatWaveVector(k)).join(" and ")} together do. Measure whether all peaks vanish at one temperature: if not, they belong to different orders or phases.`,
+        ]
+      : [
+          `The k that is followed, ${formatWaveVector((followed[0] as (typeof followed)[number]).k)}, leaves more peaks over than allowed: find out what they are (impurities, harmonics), or allow them with --unmatched.`,
+        ];
   return [
     "No k of those searched explains enough of the peaks. Look for peaks that are not magnetic (--unmatched), and check the cell, the wavelength and what the positions are (--as).",
   ];

@@ -7,6 +7,7 @@ import {
   locate,
   type PeakList,
   type SearchOptions,
+  type SeveralVectors,
   setAsidePeaks,
 } from "../../search/index.js";
 import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
@@ -58,6 +59,16 @@ function nothingFound({ unmatched, maxDimension }: SearchOptions): Problem {
   });
 }
 
+/** In natural log-odds: what several vectors must gain to be followed instead of one that leaves peaks over. */
+const clearGain = 3;
+
+function severalOf(result: SeveralVectors | null): readonly WaveVector[] {
+  if (result === null) return [];
+  const [set] = result.found;
+  if (set !== undefined && set.evidence.value > 0 && set.gain > clearGain) return set.vectors;
+  return result.single.evidence.reading === "found" ? [result.single.k] : [];
+}
+
 /** The search over the kinds of k. */
 export async function searchedFor(work: Work, input: SearchInput): Promise<Found> {
   const { group, cell, peaks, options } = input;
@@ -67,7 +78,6 @@ export async function searchedFor(work: Work, input: SearchInput): Promise<Found
   for (const { warnings } of found.candidates.slice(0, 1)) remember(work, [], warnings);
   if (found.candidates.length === 0) remember(work, [], [nothingFound(options)]);
   const record = searchRecord(group, cell, peaksRecord(peaks.list, peaks.file), found);
-  const [set] = found.severalVectors?.found ?? [];
-  const several = set !== undefined && set.evidence.value > 0 ? set.vectors : [];
+  const several = severalOf(found.severalVectors);
   return { candidates: found.candidates, several, record };
 }

@@ -40,6 +40,7 @@ export function exchangeRecord(table: BondTable, model: ExchangeModel, found: Ex
       label,
       position: positionRecord(position),
       length: model.lengths[index] as number,
+      potential: roundNumber(model.potentials[index] as number),
     })),
     shells: table.shells.map(({ number, distance, classes }) => ({
       number,
@@ -131,8 +132,9 @@ function signed(factor: number, cosineText: string, name: string): string {
   return `${factor < 0 ? "−" : "+"} ${[number, cosineText, name].filter((part) => part !== "").join(" ")}`;
 }
 
-function diagramRecord({ axes, phases, points, boundaries }: PhaseDiagram): DiagramRecord {
+function diagramRecord({ freeDirections, axes, phases, points, boundaries }: PhaseDiagram): DiagramRecord {
   return {
+    freeDirections,
     axes,
     phases,
     points: points.map(({ values, energy, phase, k }) => ({ values, energy, phase, k: k.map(waveVectorToJson) })),

@@ -21,6 +21,7 @@ import type {
   EvidenceRecord,
   LineRecord,
   PeaksRecord,
+  ReferenceRecord,
   SearchRecord,
   SeveralVectorsRecord,
 } from "../records/search.js";
@@ -132,15 +133,14 @@ export function searchRecord(
       separation: roundNumber(flag.separation),
       parentIntensity: rounded(flag.parentIntensity),
     })),
-    references: (found.references ?? []).map(({ k, evidence, matched, total }) => ({
-      k: waveVectorToJson(k),
-      evidence: roundNumber(evidence.value),
-      matched,
-      total,
-    })),
+    references: (found.references ?? []).map(referenceRecord),
     severalVectors: severalVectorsRecord(found.severalVectors ?? null),
     dropped: found.dropped,
   };
+}
+
+function referenceRecord({ k, evidence, matched, total }: ReferenceVector): ReferenceRecord {
+  return { k: waveVectorToJson(k), evidence: roundNumber(evidence.value), matched, total };
 }
 
 function severalVectorsRecord(several: SeveralVectors | null): SeveralVectorsRecord | null {
@@ -157,6 +157,7 @@ function severalVectorsRecord(several: SeveralVectors | null): SeveralVectorsRec
         total: find.total,
         unmatched: [...find.unmatched],
       })),
+      single: referenceRecord(several.single),
     }
   );
 }

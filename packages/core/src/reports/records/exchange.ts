@@ -6,6 +6,8 @@ export interface ExchangeAtomRecord {
   readonly position: readonly string[];
   /** |S| in the energy. */
   readonly length: number;
+  /** Added to the energy of the atom to tighten the bound; the sum over the atoms is 0. */
+  readonly potential: number;
 }
 
 /** Bonds that the space group makes equal. */
@@ -121,6 +123,8 @@ export interface StationaryRecord {
 }
 
 export interface DiagramRecord {
+  /** Directions of k that no bond notices, whatever the constants. */
+  readonly freeDirections: number;
   readonly axes: readonly {
     readonly name: string;
     readonly classes: readonly string[];

@@ -220,6 +220,8 @@ export interface SeveralVectorsRecord {
     readonly minimumMatched: readonly number[];
   }[];
   readonly found: readonly VectorFindRecord[];
+  /** The best single vector that was weighed, however many peaks it leaves over. */
+  readonly single: ReferenceRecord;
 }
 
 /** Result of `kvane index` and `kvane locate`. */

@@ -2,8 +2,8 @@ import { type JsonSchema, list, nothing, nullable, shared, text } from "./buildi
 import { commonDefinitions } from "./common.js";
 import { configurationsSchema, exportSchema } from "./configurations.js";
 import { decomposeSchema } from "./decompose.js";
-import { atlasSchema, compatibilitySchema } from "./kinds.js";
 import { exchangeSchema, onsetSchema } from "./exchange.js";
+import { atlasSchema, compatibilitySchema } from "./kinds.js";
 import { satellitesSchema, searchSchema } from "./peaks.js";
 import { checkSchema, explainSchema, helpSchema, runSchema, studySchema } from "./study.js";
 import { irrepsSchema, modesSchema, opsSchema, starSchema } from "./symmetry.js";

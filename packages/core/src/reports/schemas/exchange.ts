@@ -1,4 +1,16 @@
-import { count, flag, type JsonSchema, list, nullable, number, oneOf, record, shared, text, tuple } from "./building.js";
+import {
+  count,
+  flag,
+  type JsonSchema,
+  list,
+  nullable,
+  number,
+  oneOf,
+  record,
+  shared,
+  text,
+  tuple,
+} from "./building.js";
 
 const dimension: JsonSchema = { type: "integer", minimum: 0, maximum: 3 };
 const irreps = list(record({ label: text, dimension: count, multiplicity: count }));
@@ -63,13 +75,16 @@ const configuration = record({
 const stationary = record({
   k: shared("k"),
   classes: list(text),
-  relations: list(record({ letter: oneOf("u", "v", "w"), slopes: list(number), curvatures: list(number), text: nullable(text) })),
+  relations: list(
+    record({ letter: oneOf("u", "v", "w"), slopes: list(number), curvatures: list(number), text: nullable(text) }),
+  ),
   fixedBySymmetry: flag,
   slopes: list(number),
   needed: list(record({ name: text, j: nullable(number), minimum: flag, lowest: nullable(flag) })),
 });
 
 const diagram = record({
+  freeDirections: count,
   axes: list(record({ name: text, classes: list(text), from: number, to: number, count })),
   phases: list(record({ forms: list(text), dimension })),
   points: list(record({ values: list(number), energy: number, phase: count, k: list(shared("k")) })),
@@ -80,7 +95,7 @@ export const exchangeSchema: JsonSchema = record({
   group: shared("group"),
   cell: shared("cell"),
   energy: text,
-  atoms: list(record({ label: text, position: tuple(3, text), length: number })),
+  atoms: list(record({ label: text, position: tuple(3, text), length: number, potential: number })),
   shells: list(record({ number: count, distance: number, classes: list(bondClass) })),
   ground: nullable(ground),
   atK: list(atK),

@@ -75,6 +75,8 @@ const evidence = record({
   charges: record({ dimensions: number, kinds: number, tuning: number }),
 });
 
+const reference = record({ k: shared("k"), evidence: number, matched: count, total: count });
+
 const stageName = oneOf("harmonics", "second vector", "sums");
 
 const candidate = record({
@@ -200,8 +202,9 @@ export const searchSchema: JsonSchema = record({
         }),
         "best evidence first",
       ),
+      single: reference,
     }),
   ),
-  references: list(record({ k: shared("k"), evidence: number, matched: count, total: count })),
+  references: list(reference),
   dropped: count,
 });

@@ -31,7 +31,9 @@ function lineOf({ axes, points, boundaries }: DiagramRecord): string[] {
   const [axis] = axes;
   const name = `J${axis?.name ?? ""}`;
   return [
-    ...paragraph(`${name} from ${plain(axis?.from ?? 0)} to ${plain(axis?.to ?? 0)}: ${points.map(({ phase }) => letter(phase)).join("")}`),
+    ...paragraph(
+      `${name} from ${plain(axis?.from ?? 0)} to ${plain(axis?.to ?? 0)}: ${points.map(({ phase }) => letter(phase)).join("")}`,
+    ),
     ...((boundaries ?? []).length === 0
       ? paragraph("One phase throughout.")
       : [
@@ -61,7 +63,9 @@ function mapOf({ axes, points }: DiagramRecord): string[] {
     return `${plain(Number(value.toPrecision(4))).padStart(10)}  ${own.map(({ phase }) => letter(phase)).join("")}`;
   });
   return [
-    ...paragraph(`J${second.name} upwards, J${first.name} from ${plain(first.from)} to ${plain(first.to)} to the right${stride > 1 ? ` (every ${stride}th value)` : ""}:`),
+    ...paragraph(
+      `J${second.name} upwards, J${first.name} from ${plain(first.from)} to ${plain(first.to)} to the right${stride > 1 ? ` (every ${stride}th value)` : ""}:`,
+    ),
     ...rows,
   ];
 }

@@ -26,7 +26,9 @@ export function exchangeText(record: ExchangeRecord): string[] {
     ...(record.ground === null
       ? section(
           "Minimum",
-          paragraph('No constants are given. Name them with --j "1 1.0" --j "2b -0.3" or in the study: exchange: [{shell: 1, j: 1.0}].'),
+          paragraph(
+            'No constants are given. Name them with --j "1 1.0" --j "2b -0.3" or in the study: exchange: [{shell: 1, j: 1.0}].',
+          ),
         )
       : groundSections(record, record.ground)),
     ...record.atK.flatMap((one) => levelSection(record, one)),
@@ -122,7 +124,8 @@ function dimensionSentence({ dimension, freeDirections, manifolds }: GroundRecor
 
 function momentsText({ constantMoments: { answer, k, spins, short } }: GroundRecord): string {
   if (answer === "reached") {
-    const how = k.length === 1 ? `one k, ${k.map(kText).join("")}` : `${k.length} k at once, ${k.map(kText).join("; ")}`;
+    const how =
+      k.length === 1 ? `one k, ${k.map(kText).join("")}` : `${k.length} k at once, ${k.map(kText).join("; ")}`;
     return `a ${spins} arrangement of full spins reaches this energy with ${how}: it is the ground state of the model`;
   }
   if (answer === "only a bound")
@@ -169,7 +172,9 @@ function levelSection(record: ExchangeRecord, one: ExchangeAtKRecord): string[] 
 }
 
 function countsText(counts: readonly IrrepCountRecord[]): string {
-  return counts.map(({ label, multiplicity }) => (multiplicity === 1 ? label : unbroken(`${multiplicity} ${label}`))).join(" + ");
+  return counts
+    .map(({ label, multiplicity }) => (multiplicity === 1 ? label : unbroken(`${multiplicity} ${label}`)))
+    .join(" + ");
 }
 
 const shownAtoms = 8;
@@ -208,7 +213,9 @@ function configurationSection({ configurations }: ExchangeRecord): string[] {
       ]),
     ),
     [""],
-    paragraph("A spin, for moments of length 1 on the average of the atoms; with several amplitudes the energies run from lowest to highest."),
+    paragraph(
+      "A spin, for moments of length 1 on the average of the atoms; with several amplitudes the energies run from lowest to highest.",
+    ),
   );
 }
 
@@ -216,7 +223,9 @@ function stationarySection(answer: StationaryRecord): string[] {
   const relations = answer.relations.flatMap((one) => [
     ...(one.text === null ? [] : [[`Relation in ${one.letter}`, one.text] as const]),
     [`Slope in ${one.letter}`, sumText(one.slopes, answer.classes)] as const,
-    ...(answer.fixedBySymmetry ? [[`Curvature in ${one.letter}`, sumText(one.curvatures, answer.classes)] as const] : []),
+    ...(answer.fixedBySymmetry
+      ? [[`Curvature in ${one.letter}`, sumText(one.curvatures, answer.classes)] as const]
+      : []),
   ]);
   const validity = answer.fixedBySymmetry
     ? "Symmetry fixes the eigenvector here, so the slope is linear in the constants: it must be 0, and the curvature above 0, for the minimum to lie at this k."
@@ -230,7 +239,12 @@ function stationarySection(answer: StationaryRecord): string[] {
     answer.needed.length === 0
       ? []
       : table(
-          [{ title: "bonds" }, { title: "J needed, others as they are", align: "right" }, { title: "along the line" }, { title: "in the whole zone" }],
+          [
+            { title: "bonds" },
+            { title: "J needed, others as they are", align: "right" },
+            { title: "along the line" },
+            { title: "in the whole zone" },
+          ],
           answer.needed.map(({ name, j, minimum, lowest }) => [
             name,
             j === null ? "none" : plain10(j),
@@ -243,7 +257,9 @@ function stationarySection(answer: StationaryRecord): string[] {
 
 function sumText(factors: readonly number[], classes: readonly string[]): string {
   return factors
-    .map((factor, index) => `${factor < 0 ? "−" : index === 0 ? "" : "+"} ${unbroken(`${Number(Math.abs(factor).toPrecision(6))} J${classes[index]}`)}`.trim())
+    .map((factor, index) =>
+      `${factor < 0 ? "−" : index === 0 ? "" : "+"} ${unbroken(`${Number(Math.abs(factor).toPrecision(6))} J${classes[index]}`)}`.trim(),
+    )
     .join(" ");
 }
 

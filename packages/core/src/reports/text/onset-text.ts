@@ -1,14 +1,30 @@
 import { withUncertainty } from "../../numbers/index.js";
-import type { MeasuredRecord, MovingKRecord, OnsetRecord, PeakOnsetRecord, PowerLawRecord, TransitionRecord } from "../records/onset.js";
+import type {
+  MeasuredRecord,
+  MovingKRecord,
+  OnsetRecord,
+  PeakOnsetRecord,
+  PowerLawRecord,
+  TransitionRecord,
+} from "../records/onset.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { counted, plain } from "./names.js";
 
 export function onsetText(record: OnsetRecord): string[] {
   const fitted = record.peaks.filter(({ fit }) => fit !== null);
   return [
-    ...section("Temperature scan", fields([["File", record.file], ["Rows", String(record.rows)], ["Peaks", String(record.peaks.length)]])),
+    ...section(
+      "Temperature scan",
+      fields([
+        ["File", record.file],
+        ["Rows", String(record.rows)],
+        ["Peaks", String(record.peaks.length)],
+      ]),
+    ),
     ...transitionSection(record),
-    ...(fitted.length === 0 ? [] : section("Fits of I = I₀ (1 − T/T_N)^2β + background", fitTable(fitted), [""], rangeNotes(fitted))),
+    ...(fitted.length === 0
+      ? []
+      : section("Fits of I = I₀ (1 − T/T_N)^2β + background", fitTable(fitted), [""], rangeNotes(fitted))),
     ...otherSection(record.peaks),
     ...kSections(record.k),
   ];
@@ -21,7 +37,11 @@ function transitionSection({ peaks, transitions }: OnsetRecord): string[] {
     `Transitions (${transitions.length})`,
     table(
       [{ title: "T_N/K", align: "right" }, { title: "peaks" }, { title: "common onset" }],
-      transitions.map((one) => [measuredText(one.temperature), one.peaks.map((index) => peaks[index]?.name ?? "").join(", "), commonText(one)]),
+      transitions.map((one) => [
+        measuredText(one.temperature),
+        one.peaks.map((index) => peaks[index]?.name ?? "").join(", "),
+        commonText(one),
+      ]),
     ),
     [""],
     paragraph(
@@ -57,7 +77,9 @@ function fitTable(peaks: readonly PeakOnsetRecord[]): string[] {
         measuredText(law.beta),
         measuredText(law.amplitude),
         measuredText(law.background),
-        law.uncertaintySource === "given" ? plain(Number((law.chiSquared / Math.max(1, law.degreesOfFreedom)).toPrecision(3))) : "–",
+        law.uncertaintySource === "given"
+          ? plain(Number((law.chiSquared / Math.max(1, law.degreesOfFreedom)).toPrecision(3)))
+          : "–",
         `${law.pointsBelow} of ${law.points}`,
         plain(Number(law.reducedRange.toFixed(3))),
       ];
@@ -74,16 +96,21 @@ function rangeNotes(peaks: readonly PeakOnsetRecord[]): string[] {
     ...paragraph(
       `The law holds near T_N only: each fit takes the widest range of (T_N−T)/T_N that it describes, and β is that of the range. A β far from the transition is no critical exponent.${scatter ? " χ²/dof is not tested where uncertainties come from the scatter." : ""}`,
     ),
-    ...(bad.length === 0 ? [] : paragraph(`The law fits badly even in a narrow range, so that T_N and β are doubtful: ${namesOf(bad)}.`)),
+    ...(bad.length === 0
+      ? []
+      : paragraph(`The law fits badly even in a narrow range, so that T_N and β are doubtful: ${namesOf(bad)}.`)),
     ...(losing.length === 0 ? [] : paragraph(`Intensity is lost below T_N: ${namesOf(losing)}.`)),
     ...(based.length === 0
       ? []
-      : paragraph(`Intensity remains above T_N, which may be background or a part that does not order there (nuclear, or k = 0 on a nuclear line): ${namesOf(based)}.`)),
+      : paragraph(
+          `Intensity remains above T_N, which may be background or a part that does not order there (nuclear, or k = 0 on a nuclear line): ${namesOf(based)}.`,
+        )),
   ];
 }
 
 const sentences: { readonly [behaviour: string]: string } = {
-  constant: "the same at all temperatures: not magnetic, or ordered beyond the range (nuclear, structural, λ/2, sample holder)",
+  constant:
+    "the same at all temperatures: not magnetic, or ordered beyond the range (nuclear, structural, λ/2, sample holder)",
   gradual: "changes smoothly without an onset: thermal motion of a nuclear peak, or an onset beyond the range",
   absent: "no intensity at any temperature",
   undecided: "too few points",
@@ -106,21 +133,33 @@ function kSections(components: readonly MovingKRecord[]): string[] {
   return section(
     "k against temperature",
     table(
-      [{ title: "component" }, { title: "it" }, { title: "level" }, { title: "slope elsewhere, per K", align: "right" }],
-      components.map((one) => [one.name, behaviourText(one), plateauText(one), one.slope === null ? "–" : measuredText(one.slope)]),
+      [
+        { title: "component" },
+        { title: "it" },
+        { title: "level" },
+        { title: "slope elsewhere, per K", align: "right" },
+      ],
+      components.map((one) => [
+        one.name,
+        behaviourText(one),
+        plateauText(one),
+        one.slope === null ? "–" : measuredText(one.slope),
+      ]),
     ),
   );
 }
 
 function behaviourText({ behaviour, plateaus }: MovingKRecord): string {
-  if (behaviour !== "lock-in") return behaviour === "undecided" ? "too few points" : behaviour === "constant" ? "is constant" : "slides";
+  if (behaviour !== "lock-in")
+    return behaviour === "undecided" ? "too few points" : behaviour === "constant" ? "is constant" : "slides";
   return `slides and locks in at ${plateaus.flatMap(({ fraction }) => fraction ?? []).join(", ")}`;
 }
 
 function plateauText({ plateaus }: MovingKRecord): string {
   return plateaus
-    .map(({ from, to, mean, fraction }) =>
-      `${unbroken(`${measuredText(mean)} from ${plain(from)} to ${plain(to)} K`)}${fraction === null ? " (no simple fraction)" : unbroken(` (${fraction})`)}`,
+    .map(
+      ({ from, to, mean, fraction }) =>
+        `${unbroken(`${measuredText(mean)} from ${plain(from)} to ${plain(to)} K`)}${fraction === null ? " (no simple fraction)" : unbroken(` (${fraction})`)}`,
     )
     .join("; ");
 }

@@ -3,12 +3,14 @@ import type { BranchRecord, RunRecord } from "../records/run.js";
 import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
 import { configurationsText, configurationTable } from "./configurations-text.js";
+import { peaksText } from "./flag-text.js";
 import { irrepsText, irrepTable } from "./irreps-text.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { decompositionText, modesText, parameterText } from "./modes-text.js";
 import { cellText, counted, groupText, kText, positionText } from "./names.js";
 import { satellitesText, satelliteTable } from "./satellites-text.js";
-import { assignmentTable, candidateTable, certificateLines, peakFields, severalVectorLines } from "./search-text.js";
+import { assignmentTable, candidateTable, certificateLines, peakFields, separationLines } from "./search-text.js";
+import { severalVectorLines } from "./several-vectors-text.js";
 import { starFields, starText } from "./star-text.js";
 
 /** Satellites and candidates that the short report shows. */
@@ -43,7 +45,7 @@ export function runFullText(record: RunRecord): string[] {
       record.peaks
         ? section(
             `Assignment by candidate ${index + 1}, ${kText(candidate.k)}`,
-            assignmentTable(candidate, record.peaks),
+            assignmentTable(candidate, record.peaks, record.search?.setAside),
           )
         : [],
     ),
@@ -86,7 +88,13 @@ function coincidenceFields(coincidences: RunRecord["coincidences"], count: numbe
   const peaksOn = (kind: OverlapRecord["with"]) =>
     coincidences.filter(({ overlaps }) => overlaps.some((one) => one.with === kind)).map(({ peak }) => peak + 1);
   const fieldFor = (name: string, numbers: readonly number[]): [string, string][] => {
-    const named = numbers.length === count ? "every peak" : `peak ${numbers.join(", ")}`;
+    const named =
+      numbers.length === 0
+        ? ""
+        : peaksText(
+            numbers.map((number) => number - 1),
+            count,
+          );
     return numbers.length > 0 ? [[name, `${named} (flagged, not removed)`]] : [];
   };
   return [
@@ -107,8 +115,12 @@ function searchSection(record: RunRecord): string[] {
     "Wave vector",
     candidateTable(search.candidates.slice(0, shownCandidates)),
     moreLine(search.candidates.length - shownCandidates, "candidate"),
-    search.certificate ? ["", ...certificateLines(search), ...severalVectorLines(search)] : [],
-    search.certificate && followed.length > 0 ? paragraph(`Followed below: candidate ${followed.join(", ")}.`) : [],
+    search.certificate
+      ? ["", ...certificateLines(search), ...separationLines(search), ...severalVectorLines(search)]
+      : [],
+    search.certificate && followed.length > 0
+      ? paragraph(`Followed below: ${followed.length === 1 ? "candidate" : "candidates"} ${followed.join(", ")}.`)
+      : [],
     record.notFollowed.length > 0
       ? paragraph(`Tied but not followed: candidate ${record.notFollowed.map((index) => index + 1).join(", ")}.`)
       : [],

@@ -1,8 +1,11 @@
 import { withUncertainty } from "../../numbers/index.js";
+import { qToTwoThetaDeg } from "../../reflections/index.js";
 import type { AssignmentRecord, CandidateRecord, PeaksRecord, SearchRecord } from "../records/search.js";
+import { flagLines, peaksText } from "./flag-text.js";
 import { fields, paragraph, section, table } from "./layout.js";
 import { cellText, counted, decimals, dimensionText, groupText, kForm, kShort, kText, plain } from "./names.js";
 import { lineText } from "./satellites-text.js";
+import { severalVectorLines } from "./several-vectors-text.js";
 import { reducedFields } from "./star-text.js";
 
 /** Candidates that the report of `locate` lists; the JSON has all. */
@@ -11,15 +14,12 @@ const shownCandidates = 12;
 /** Other k that a candidate is held against, one line each. */
 const shownSeparations = 4;
 
-/** Sets of several vectors that are printed. */
-const shownVectorFinds = 3;
-
 export function indexText(record: SearchRecord): string[] {
   return [
     ...inputSection(record),
     ...record.candidates.flatMap((candidate) => [
       ...section(`Wave vector ${kText(candidate.k)}`, fields(candidateFields(candidate))),
-      ...section("Assignment", assignmentTable(candidate, record.peaks)),
+      ...section("Assignment", assignmentTable(candidate, record.peaks, record.setAside)),
     ]),
   ];
 }
@@ -27,6 +27,7 @@ export function indexText(record: SearchRecord): string[] {
 export function locateText(record: SearchRecord): string[] {
   const best = record.candidates[0];
   return [
+    ...section("Result", paragraph(verdictText(record))),
     ...inputSection(record),
     ...section(
       `Candidates (${shownText(record)})`,
@@ -39,9 +40,41 @@ export function locateText(record: SearchRecord): string[] {
       flagLines(record),
       setAsideLines(record),
     ),
-    ...(best ? section(`Assignment by candidate 1, ${kText(best.k)}`, assignmentTable(best, record.peaks)) : []),
+    ...(best
+      ? section(`Assignment by candidate 1, ${kText(best.k)}`, assignmentTable(best, record.peaks, record.setAside))
+      : []),
   ];
 }
+
+/** The answer in one sentence. */
+export function verdictText(record: SearchRecord): string {
+  const [best] = record.candidates;
+  const set = record.severalVectors?.found[0];
+  const several = set !== undefined && set.evidence.reading === "found" && set.gain > clearGain ? set : undefined;
+  const named = several?.members.map(({ name, k }) => `${name} = ${kShort(k)}`).join(", ");
+  if (best !== undefined && best.evidence.reading === "found" && several === undefined) {
+    const tied =
+      best.tiedWith.length === 0 ? "" : `; ${counted(best.tiedWith.length, "other k", "other k")} fit as well`;
+    return `k = ${kShort(best.k)} found, ${best.matched} of ${best.total} peaks${tied}.`;
+  }
+  if (several !== undefined)
+    return `No single k explains enough; ${named} together explain ${several.matched} of ${several.total} peaks.`;
+  const single = record.severalVectors?.single;
+  if (single !== undefined && single.evidence > foundAbove)
+    return (
+      `No k leaves as few peaks over as asked. The best, ${kShort(single.k)}, explains ${single.matched} of ${single.total} ` +
+      `(evidence ${decimals(single.evidence, 1)}): --unmatched ${single.total - single.matched} allows it.`
+    );
+  const weak = best !== undefined && best.evidence.reading === "weak" ? ` The best, ${kShort(best.k)}, is weak.` : "";
+  return (
+    `No k is found.${weak} Check what the positions are, the wavelength, the cell and the uncertainties; ` +
+    "--zero-shift 0.1 and --cell-scale 0.002 let the zero and the cell move, --unmatched allows for more impurities."
+  );
+}
+
+/** In natural log-odds: a clear difference, and what reads as found. */
+const clearGain = 3;
+const foundAbove = 3;
 
 function shownText(record: SearchRecord): string {
   const total = record.candidates.length;
@@ -118,11 +151,17 @@ export function certificateSentences(record: SearchRecord): string | null {
     `${counted(certificate.boxes, "box", "boxes")}` +
     `${certificate.smallestBox > 0 ? ` down to ${plain(Number(certificate.smallestBox.toPrecision(2)))} Å⁻¹` : ""}${within}.`;
   const undecided = certificate.kinds.reduce((sum, kind) => sum + kind.undecided, 0);
+  const regions = certificate.kinds.reduce((sum, kind) => sum + (kind.dimension > 0 ? kind.regions : 0), 0);
+  const zone = certificate.maxDimension === 3 ? "whole zone" : "kinds searched";
+  const outside = regions > 0 ? `Outside the ${counted(regions, "region")} found, nothing` : "Nothing else";
   const complete = certificate.exhaustive
-    ? `Nothing else in the ${certificate.maxDimension === 3 ? "whole zone" : "kinds searched"} matches ${certificate.minimumMatched} or more peaks` +
+    ? `${outside} in the ${zone} matches ${certificate.minimumMatched} or more peaks` +
       `${undecided > 0 ? `, but ${counted(undecided, "region")} could not be decided (see --json)` : ""}.`
     : `The search was stopped before its end (${certificate.stopped ?? "no reason given"}): other k may match.`;
-  return `${scope} ${complete}`;
+  const fewer = record.candidates.some(({ matched }) => matched < certificate.minimumMatched)
+    ? " Candidates with fewer were refined away from a k beside them that matches that many."
+    : "";
+  return `${scope} ${complete}${fewer}`;
 }
 
 function allowances(zeroShift: number, cellScale: number): string {
@@ -186,57 +225,11 @@ export function referenceSentences({ references }: SearchRecord): string[] {
   );
 }
 
-/** Peaks on nuclear lines or λ/2 images, one line for each kind of coincidence. */
-function flagLines(record: SearchRecord): string[] {
-  return (["nuclear", "half wavelength"] as const).flatMap((sort) => {
-    const peaks = [...new Set(record.flags.filter((flag) => flag.with === sort).map(({ peak }) => peak + 1))];
-    if (peaks.length === 0) return [];
-    const where = sort === "nuclear" ? "nuclear lines of the cell" : "λ/2 images of nuclear lines";
-    return [
-      ...paragraph(`Flagged, not removed: peak ${peaks.join(", ")} on ${where}.`),
-      ...(sort === "half wavelength" ? parentLines(record) : []),
-    ];
-  });
-}
-
-/** How strong the parents of λ/2 images are, against the peak, where both were measured. */
-function parentLines({ flags, peaks }: SearchRecord): string[] {
-  const shares = flags.flatMap(({ peak, h, with: sort, parentIntensity }) => {
-    const intensity = peaks.list.find(({ index }) => index === peak)?.intensity ?? null;
-    if (sort !== "half wavelength" || parentIntensity === null || intensity === null || parentIntensity <= 0) return [];
-    return [`peak ${peak + 1} has ${decimals((100 * intensity) / parentIntensity, 2)} % of ${h.join(" ")}`];
-  });
-  return shares.length === 0 ? [] : paragraph(`Against their parents: ${shares.join(", ")}.`);
-}
-
-/** Harmonics, sums and second vectors, the best few; or that nothing gains by them. */
-export function severalVectorLines({ severalVectors }: SearchRecord): string[] {
-  if (severalVectors === null) return [];
-  const { found, stages } = severalVectors;
-  const tried = stages.filter((one) => one.tried > 0).map(({ stage }) => stage);
-  const open = stages.some(({ exhaustive }) => !exhaustive) ? " (not exhaustive: a budget for each kind)" : "";
-  if (found.length === 0)
-    return paragraph(
-      `More than one vector: ${tried.length === 0 ? "nothing to try" : `${tried.join(", ")} tried${open}`}; nothing explains more.`,
-    );
-  return [
-    ...paragraph(`More than one vector (${tried.join(", ")} tried${open}):`),
-    ...found.slice(0, shownVectorFinds).flatMap((find) => {
-      const members = find.members.map(
-        ({ name, k, peaks }) => `${name} = ${kShort(k)} (${counted(peaks.length, "peak")})`,
-      );
-      return paragraph(
-        `${find.matched} of ${find.total} peaks by ${members.join(" and ")}: evidence ${decimals(find.evidence.value, 1)}, ${find.evidence.reading}, ${decimals(find.gain, 1)} better than one vector.`,
-      );
-    }),
-  ];
-}
-
 function setAsideLines(record: SearchRecord): string[] {
   return [
     ...record.setAside.flatMap(({ peak, because }) => paragraph(`Peak ${peak + 1} set aside: ${because}.`)),
     ...(record.unmatched.length > 0 && record.candidates.length > 0
-      ? paragraph(`No candidate explains peak ${record.unmatched.map((peak) => peak + 1).join(", ")}.`)
+      ? paragraph(`Candidate 1 leaves ${peaksText(record.unmatched, record.peaks.list.length)} over.`)
       : []),
   ];
 }
@@ -287,39 +280,54 @@ export function misfitOf({ residuals, matched }: CandidateRecord): number | null
 }
 
 /** One row a peak, matched or not. */
-export function assignmentTable(candidate: CandidateRecord, peaks: PeaksRecord): string[] {
+export function assignmentTable(
+  candidate: CandidateRecord,
+  peaks: PeaksRecord,
+  setAside: SearchRecord["setAside"] = [],
+): string[] {
   const vectors = peaks.kind === "hkl";
   const several = vectors && candidate.arms > 1;
   const byPeak = new Map(candidate.assignments.map((one) => [one.peak, one]));
+  const aside = new Set(setAside.map(({ peak }) => peak));
   const places = Math.max(0, ...peaks.list.map(({ position }) => (plain(position ?? 0).split(".")[1] ?? "").length));
+  const corrected = candidate.corrections.length > 0;
   return table(
     [
       { title: "peak", align: "right" },
       { title: vectors ? "h k l" : "position", align: "right" },
+      ...(vectors || peaks.kind === "q" ? [] : [{ title: "computed", align: "right" as const }]),
       ...(vectors
         ? []
         : [
-            { title: "Q / Å⁻¹", align: "right" as const },
-            { title: "computed", align: "right" as const },
+            { title: corrected ? "Q corrected" : "Q / Å⁻¹", align: "right" as const },
+            { title: "Q computed", align: "right" as const },
           ]),
       { title: "H ± k" },
       ...(several ? [{ title: "arm", align: "right" as const }] : []),
       { title: "off / s.u.", align: "right" },
-      { title: "others within", align: "right" },
+      { title: "others near", align: "right" },
     ],
     peaks.list.map((peak) => {
       const found = byPeak.get(peak.index);
+      const q = found && corrected ? found.q + found.residual : peak.q;
       return [
         String(peak.index + 1),
         vectors ? (peak.hkl ?? []).map((entry) => decimals(entry, 4)).join(" ") : decimals(peak.position, places),
-        ...(vectors ? [] : [decimals(peak.q, 5), decimals(found?.q ?? null, 5)]),
-        found ? lineText(found) : "not matched",
+        ...(vectors || peaks.kind === "q" ? [] : [found ? decimals(inListUnit(found.q, peaks), places) : ""]),
+        ...(vectors ? [] : [decimals(q, 5), decimals(found?.q ?? null, 5)]),
+        found ? lineText(found) : aside.has(peak.index) ? "set aside" : "not matched",
         ...(several ? [found ? String(found.arm + 1) : ""] : []),
         found ? decimals(offsetOf(found, peak.uncertainty), 2) : "",
         found && found.alternatives.length > 0 ? String(found.alternatives.length) : "",
       ];
     }),
   );
+}
+
+/** A computed Q as d or 2θ, whichever the list has. */
+function inListUnit(q: number, { kind, wavelengthAngstrom }: PeaksRecord): number | null {
+  if (kind === "d") return (2 * Math.PI) / q;
+  return wavelengthAngstrom === null ? null : qToTwoThetaDeg(q, wavelengthAngstrom);
 }
 
 /** Observed less computed in standard uncertainties; of three indices the one that is off most. */
