@@ -4,14 +4,17 @@
  * gets the table. `npm run certify -- symmetry` runs one subject, `npm run certify -- points random` these sweeps only;
  * then nothing is written.
  */
+import { subject as configurations } from "./configurations.js";
+import { subject as exchange } from "./exchange.js";
 import { subject as magneticGroups } from "./magnetic-groups.js";
 import { writeReport } from "./report.js";
 import { subject as search } from "./search.js";
 import { openState, type State } from "./state.js";
 import { type Subject, unitName } from "./subject.js";
 import { subject as symmetry } from "./symmetry.js";
+import { subject as weighing } from "./weighing.js";
 
-const subjects: readonly Subject[] = [symmetry, magneticGroups, search];
+const subjects: readonly Subject[] = [symmetry, magneticGroups, configurations, search, weighing, exchange];
 
 const wanted = process.argv.slice(2);
 const names = subjects.flatMap(({ name, sweeps }) => [name, ...Object.keys(sweeps)]);

@@ -20,7 +20,7 @@ export function ordinaryCase(seed: number): SearchCase {
 }
 
 export function search(made: SearchCase): Promise<SearchResult> {
-  return locate(made.group, made.cell, made.list, { ...defaultSearchOptions, unmatched: 1 });
+  return locate(made.group, made.cell, made.list, { ...defaultSearchOptions, unmatched: 1, severalVectors: false });
 }
 
 /** The k behind the list must lie in a region of the general kind and in one of its own, or be the point itself. */

@@ -1,5 +1,6 @@
 import { configurationsOf } from "@kvane/core/configurations";
 import { describe, expect, test } from "vitest";
+import { bruteSupergroups } from "../support/brute-graph.js";
 import { allSubgroups, bruteIsotropy } from "../support/brute-isotropy.js";
 import { modesOf } from "../support/decomposition.js";
 import { groupOf } from "../support/parsed-groups.js";
@@ -54,5 +55,25 @@ describe("completeness against all subgroups", () => {
       expect(brute.map(({ index, dimension }) => `${index}:${dimension}`).sort(), key).toEqual(list);
     }
     expect(compared).toBeGreaterThan(0);
+  });
+});
+
+describe("the graph of subgroups against all conjugates", () => {
+  const lists: readonly (readonly [string, string, string, "pair" | "all"])[] = [
+    ["P 6/m m m", "1/3 1/3 0", "0 0 0", "pair"],
+    ["F m -3 m", "1/2 1/2 1/2", "0 0 0", "pair"],
+    ["P 4/m m m", "1/2 0 0", "0 0 0", "all"],
+    ["P 42/m n m", "0 0 0", "0 0 0", "pair"],
+    ["P b n m", "0 1/4 0", "1/2 0 0", "pair"],
+    ["P 4/m m m", "1/5 2/5 0", "0 0 0", "pair"],
+  ];
+  test.for(lists)("%s at %s, site %s, arms %s", async ([name, k, position, arms]) => {
+    const group = groupOf(name);
+    const modes = modesOf(name, k, position);
+    const set = await configurationsOf(group, modes.representations, [modes], null, { arms });
+    const brute = bruteSupergroups(group, set.configurations);
+    expect(set.configurations.map(({ id, subgroupOf }) => [id, [...subgroupOf].sort()])).toEqual(
+      set.configurations.map(({ id }, index) => [id, [...(brute[index] ?? [])].sort()]),
+    );
   });
 });

@@ -6,7 +6,7 @@ import { configurationsOf, decomposeField, momentField } from "@kvane/core/confi
 import { parseCif, readMagneticCif } from "@kvane/core/files";
 import { smallIrreps } from "@kvane/core/irreps";
 import { siteModes } from "@kvane/core/modes";
-import { configurationCif, configurationsRecord } from "@kvane/core/reports";
+import { commensurateOnes, configurationCif, configurationsRecord } from "@kvane/core/reports";
 import { type Cell, type SpaceGroup, siteOrbit } from "@kvane/core/spacegroups";
 import { afterAll, describe, expect, test } from "vitest";
 import { randomHalfThirdQuarter } from "../support/configurations-cases.ts";
@@ -46,16 +46,18 @@ async function writtenFor(number: number, random: Random): Promise<Written[]> {
   const named = { orbit, ion: "Fe3+", occupancy: 1, spin: null };
   const record = await configurationsRecord(set, cell, { magnetic: [named], others: [] });
   return Promise.all(
-    record.configurations.slice(0, mostConfigurations).map(async (one) => ({
-      name: `group ${number}, k ${record.k.components.join(" ")}, ${one.id}`,
-      group,
-      cell,
-      id: one.id,
-      bns: one.magneticGroup.bns.number,
-      orbit,
-      cif: (await configurationCif(record, one, "2.0")) as string,
-      cif11: (await configurationCif(record, one, "1.1")) as string,
-    })),
+    commensurateOnes(record)
+      .slice(0, mostConfigurations)
+      .map(async (one) => ({
+        name: `group ${number}, k ${record.k.components.join(" ")}, ${one.id}`,
+        group,
+        cell,
+        id: one.id,
+        bns: one.magneticGroup.bns.number,
+        orbit,
+        cif: (await configurationCif(record, one, "2.0")) as string,
+        cif11: (await configurationCif(record, one, "1.1")) as string,
+      })),
   );
 }
 

@@ -144,11 +144,8 @@ function movedWave(frame: Frame, wave: Wave, own: FloatSuperspace): Wave {
 }
 
 function differs(a: Wave, b: Wave): boolean {
-  return a.real.some(
-    (entry, index) =>
-      Math.abs(entry - (b.real[index] as number)) > 1e-7 ||
-      Math.abs((a.imaginary[index] as number) - (b.imaginary[index] as number)) > 1e-7,
-  );
+  const [left, right] = [flat(a), flat(b)];
+  return left.some((entry, index) => Math.abs(entry - (right[index] as number)) > 1e-7);
 }
 
 function problemsOfOne(frame: Frame, configuration: ModulatedConfiguration, random: Random): string[] {

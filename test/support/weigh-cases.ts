@@ -139,13 +139,15 @@ export interface StudyOutcome {
 
 export async function outcomeOf(study: MadeStudy): Promise<StudyOutcome> {
   const { group, cell, k, data, candidates, truth } = study;
-  // Among several equal minima that of the truth is asked for too, so that its parameters can be compared.
-  const weighing = await weigh(group, cell, k, data, candidates, { from: { [truth.id]: study.amplitudes } });
+  const weighing = await weigh(group, cell, k, data, candidates);
   const place = weighing.ranking.findIndex(({ id }) => id === truth.id);
-  const own = weighing.ranking[place];
   const best = weighing.ranking[0];
-  const first = own !== undefined && best !== undefined && (place === 0 || best.sameAs.includes(own.id));
-  return { name: study.name, first, pulls: own && data.scale !== null ? amplitudePulls(study, own) : [], weighing };
+  const first = place === 0 || (place > 0 && best !== undefined && best.sameAs.includes(truth.id));
+  // Parameters can only be compared in the minimum of the truth: of several equal ones that too is asked for, apart from
+  // the ranking.
+  const apart = await weigh(group, cell, k, data, [truth], { from: { [truth.id]: study.amplitudes } });
+  const own = apart.ranking[0];
+  return { name: study.name, first, pulls: own ? amplitudePulls(study, own) : [], weighing };
 }
 
 /**

@@ -272,3 +272,64 @@ describe("weighing", () => {
     await expect(weigh(group, rockSalt, k, bare, spaces)).rejects.toThrow(/uncertainty/);
   });
 });
+
+describe("polarised neutrons on a crystal", () => {
+  test("the two hands of a spiral are domains whose fractions polarised intensities give", async () => {
+    const group = groupOf("P 4/m");
+    const cell: Cell = { a: 5, b: 5, c: 7, alpha: 90, beta: 90, gamma: 90 };
+    const modes = siteModes(group, smallIrreps(group, wave("0 0 1/5")), siteOrbit(group, site("M", "0 0 0"), null));
+    const formFactor = magneticFormFactor({ ion: "Mn2+" });
+    const spaces = modes.irreps
+      .filter(({ multiplicity }) => multiplicity > 0)
+      .map(({ irrep }) => modeSpace(group, cell, [{ modes, formFactor }], [irrep.label]));
+    // Circular in the plane: S ∝ (1, ±i, 0).
+    const circular = spaces.find(
+      ({ basis }) => Math.abs(basis[0]?.components[0]?.[0]?.imaginary[1] ?? 0) > 0.1,
+    ) as MomentSpace;
+    const prepared = prepareSpace(scatteringGeometry(group, cell), circular);
+    const inversion = group.operators.findIndex(({ rotation }) => rotation.join() === "-1,0,0,0,-1,0,0,0,-1");
+    const data: IntensityData = {
+      sample: "single crystal",
+      geometry: { kind: "none" },
+      scale: 25,
+      nuclear: [],
+      displacement: 0,
+      resolution: 0.01,
+      data: (
+        [
+          [0, 0, 0.2],
+          [0, 0, 0.8],
+          [1, 0, 0.2],
+          [1, 1, 0.8],
+          [0, 0, 1.2],
+        ] as const
+      ).flatMap((hkl) =>
+        [-0.9, 0.9].map((polarization) => {
+          const of = (operator: number): number =>
+            quadraticForm(domainForm(group, prepared, hkl, operator, polarization), [2.1, 0]);
+          const observed = 25 * (0.8 * of(0) + 0.2 * of(inversion));
+          return {
+            label: `${hkl} ${polarization}`,
+            q: null,
+            hkl,
+            observed,
+            uncertainty: 0.02 * observed + 1e-3,
+            polarization,
+          };
+        }),
+      ),
+    };
+    const { ranking } = await weigh(group, cell, wave("0 0 1/5"), data, [circular], { domains: "free" });
+    const [best] = ranking;
+    expect(best?.chiSquared).toBeLessThan(1e-6);
+    expect(best?.domains.map(({ alike }) => alike.length)).toEqual([4, 4]);
+    expect(best?.domains.find(({ alike }) => alike.includes(0))?.fraction).toBeCloseTo(0.8, 4);
+    expect(best?.freePhase).toBe(true);
+    // Equal fractions of both hands cannot do it; without polarization nothing tells them apart.
+    const equal = await weigh(group, cell, wave("0 0 1/5"), data, [circular], { domains: "equal" });
+    expect(equal.ranking[0]?.chiSquared).toBeGreaterThan(100);
+    const plain = { ...data, data: data.data.map(({ polarization: _, ...datum }) => datum) };
+    const blind = await weigh(group, cell, wave("0 0 1/5"), plain, [circular], { domains: "free" });
+    expect(blind.ranking[0]?.domains).toEqual([]);
+  });
+});

@@ -17,3 +17,4 @@ export * from "./reflections/index.js";
 export * from "./reports/index.js";
 export * from "./search/index.js";
 export * from "./spacegroups/index.js";
+export * from "./weighing/index.js";

@@ -37,6 +37,33 @@ export interface CommensurateRequest {
   readonly limit: number;
 }
 
+/** The directions of every set of order parameters, plainest first within a set. */
+async function candidatesOf(
+  request: CommensurateRequest,
+  quotient: ParentQuotient,
+  sets: readonly (readonly ResidueAction[])[],
+  host: WorkHost,
+): Promise<{ candidates: Candidate[]; bounded: string[] }> {
+  const bounded: string[] = [];
+  const candidates: Candidate[] = [];
+  for (const set of sets) {
+    if (set.length === 0) continue;
+    const list = await isotropyClasses(quotient, set, request.limit, host);
+    if (list.bounded !== null)
+      bounded.push(`${set.map(({ parameter }) => parameter.labels.join("+")).join(", ")}: ${list.bounded}`);
+    const own: Candidate[] = [];
+    for (const found of list.classes) {
+      await breathe(host);
+      const candidate = candidateOf(quotient, set, found);
+      if (Array.isArray(request.arms) && candidate.pairs.length < quotient.selection.pairs.length) continue;
+      if (candidate.parts.some((part) => part.real.length === 0)) continue;
+      own.push(candidate);
+    }
+    candidates.push(...own.sort(plainestFirst));
+  }
+  return { candidates, bounded };
+}
+
 interface Candidate extends GraphEntry {
   readonly parts: readonly FixedVectors[];
   readonly pairs: readonly number[];
@@ -69,23 +96,7 @@ export async function commensurateConfigurations(
       : request.together.map((labels) =>
           actions.filter(({ parameter }) => parameter.labels.some((label) => labels.includes(label))),
         );
-  const bounded: string[] = [];
-  const candidates: Candidate[] = [];
-  for (const set of sets) {
-    if (set.length === 0) continue;
-    const list = await isotropyClasses(quotient, set, request.limit, host);
-    if (list.bounded !== null)
-      bounded.push(`${set.map(({ parameter }) => parameter.labels.join("+")).join(", ")}: ${list.bounded}`);
-    const own: Candidate[] = [];
-    for (const found of list.classes) {
-      await breathe(host);
-      const candidate = candidateOf(quotient, set, found);
-      if (Array.isArray(request.arms) && candidate.pairs.length < selection.pairs.length) continue;
-      if (candidate.parts.some((part) => part.real.length === 0)) continue;
-      own.push(candidate);
-    }
-    candidates.push(...own.sort(plainestFirst));
-  }
+  const { candidates, bounded } = await candidatesOf(request, quotient, sets, host);
   const graph = await minimalSupergroups(quotient, candidates, host);
   const shelf = harmonicShelf(group, irreps, frames);
   const ids = identifiers(candidates);

@@ -17,6 +17,7 @@ export { type Decomposition, decomposeField, type IrrepPart } from "./decompose.
 export type { ConstantMoment } from "./equal-sizes.js";
 export { type GivenMoments, type MomentField, momentField } from "./given-field.js";
 export type { ModulatedConfiguration, ModulatedSite } from "./modulated-types.js";
+export { type MomentVerdict, momentVerdict } from "./plausibility.js";
 export type { Recognised } from "./recognise.js";
 export { splitPositions } from "./split-positions.js";
 export type {

@@ -1,8 +1,8 @@
-import { reflectionIndexTolerance } from "../numbers/index.js";
+import { integerDeterminant, reflectionIndexTolerance } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
-import type { Triple } from "./geometry.js";
+import { cartesianQ, type Triple } from "./geometry.js";
 import { rotationNumbers, rowTimesNumbers } from "./satellite-members.js";
-import { addSquares, basisFactors, type PreparedSpace } from "./structure-factors.js";
+import { addChirality, addSquares, basisFactors, type PreparedSpace } from "./structure-factors.js";
 
 /** The vector H + k of a wave that a reflection means, with k or with −k. */
 export interface MatchedWave {
@@ -48,13 +48,29 @@ function moved(
 /**
  * `|F⊥(Q)|² = aᵀ A a` of one domain of a crystal: that which the operator {R|t} makes of the arrangement, so that it
  * scatters at Q as the first does at Q R. Zero where Q is no satellite of that domain.
+ *
+ * @param polarization P·Q̂ of the beam, −1 to 1: that many times the chiral term, det(R) times that of the first domain at
+ *   Q R, is added
  */
-export function domainForm(group: SpaceGroup, prepared: PreparedSpace, q: Triple, operator: number): Float64Array {
+export function domainForm(
+  group: SpaceGroup,
+  prepared: PreparedSpace,
+  q: Triple,
+  operator: number,
+  polarization = 0,
+): Float64Array {
   const { size } = prepared;
   const matrix = new Float64Array(size * size);
-  const rotation = group.operators[operator];
-  if (!rotation) throw new Error(`the group has no operator ${operator}`);
-  const found = matchWave(group, prepared, rowTimesNumbers(q, rotationNumbers(rotation)));
-  if (found !== null) addSquares(matrix, basisFactors(prepared, found.wave, found.q), size, 1);
+  const symmetry = group.operators[operator];
+  if (!symmetry) throw new Error(`the group has no operator ${operator}`);
+  const rotation = rotationNumbers(symmetry);
+  const found = matchWave(group, prepared, rowTimesNumbers(q, rotation));
+  if (found === null) return matrix;
+  const factors = basisFactors(prepared, found.wave, found.q);
+  addSquares(matrix, factors, size, 1);
+  if (polarization !== 0) {
+    const hand = integerDeterminant(group.primitive.rotations[operator] as readonly number[]);
+    addChirality(matrix, factors, size, cartesianQ(prepared.geometry, found.q), hand * polarization);
+  }
   return matrix;
 }

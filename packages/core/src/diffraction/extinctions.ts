@@ -3,7 +3,6 @@ import { isHalfLattice, star, type WaveVector } from "../kvectors/index.js";
 import type { IrrepModes, Mode, SiteModes } from "../modes/index.js";
 import {
   addVectors,
-  isInteger,
   mapVector,
   type Rational,
   type RationalMatrix,
@@ -11,13 +10,7 @@ import {
   rowTimes,
   vectorFrom,
 } from "../numbers/index.js";
-import {
-  fromPrimitiveRow,
-  rotationOf,
-  type SpaceGroup,
-  type SymmetryOperator,
-  toPrimitiveRow,
-} from "../spacegroups/index.js";
+import { fromPrimitiveRow, rotationOf, type SpaceGroup, type SymmetryOperator } from "../spacegroups/index.js";
 import {
   type FormalPosition,
   type FormalVector,
@@ -165,12 +158,4 @@ export function exactVector(group: SpaceGroup, h: readonly number[]): RationalVe
     return whole;
   });
   return fromPrimitiveRow(group.lattice, vectorFrom(eta));
-}
-
-/** Rows in the dual of the primitive basis and back. */
-export function toIntegers(group: SpaceGroup, h: RationalVector): number[] {
-  return toPrimitiveRow(group.lattice, h).map((entry) => {
-    if (!isInteger(entry)) throw new Error("a vector of L* is not integer in the dual basis");
-    return entry[0];
-  });
 }

@@ -43,10 +43,11 @@ export {
   simulatedPattern,
 } from "./pattern.js";
 export { type LineForm, type LineSquare, lineForm, lineForms, lineSquares, quadraticForm } from "./powder-lines.js";
-export { type LineMembers, lineMembers } from "./satellite-members.js";
+export { type LineMembers, lineMembers, rotationNumbers, rowTimesNumbers } from "./satellite-members.js";
 export { type ScatteringLength, scatteringLength } from "./scattering-lengths.js";
 export { spaceExtinctions } from "./space-extinctions.js";
 export {
+  addChirality,
   addSquares,
   basisFactors,
   chiralityAlong,

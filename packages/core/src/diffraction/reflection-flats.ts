@@ -4,7 +4,6 @@ import {
   multiply,
   type Rational,
   type RationalVector,
-  rational,
   reduceModulo,
   safe,
   subtract,
@@ -113,5 +112,3 @@ export function shiftedValue(value: Rational, constant: RationalVector, column: 
     value,
   );
 }
-
-export const noTurns: Rational = rational(0);

@@ -50,6 +50,7 @@ export function lineMembers(group: SpaceGroup, k: WaveVector): LineMembers {
   };
 }
 
+/** The rotation part as nine floats row by row. */
 export function rotationNumbers({ rotation, rotationDenominator }: SymmetryOperator): readonly number[] {
   return rotation.map((entry) => entry / rotationDenominator);
 }

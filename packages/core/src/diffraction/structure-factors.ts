@@ -24,6 +24,7 @@ export interface PreparedSpace {
   readonly factorOf: readonly number[];
 }
 
+/** Cartesian components of a space in one geometry. */
 export function prepareSpace(geometry: ScatteringGeometry, space: MomentSpace): PreparedSpace {
   const { atoms, basis, waves } = space;
   const factors = [...new Set(atoms.map(({ formFactor }) => formFactor))];
@@ -113,6 +114,31 @@ export function addSquares(matrix: Float64Array, factors: Float64Array, size: nu
       matrix[a * size + b] = (matrix[a * size + b] as number) + weight * sum;
       if (a !== b) matrix[b * size + a] = (matrix[b * size + a] as number) + weight * sum;
     }
+}
+
+/**
+ * Adds `weight · C` for the chiral term as a quadratic form: `i (F⊥* × F⊥)·Q̂ = aᵀ C a`.
+ *
+ * @param q Cartesian, any length but 0
+ */
+export function addChirality(
+  matrix: Float64Array,
+  factors: Float64Array,
+  size: number,
+  q: Triple,
+  weight: number,
+): void {
+  const part = (index: number, start: number): Triple => [
+    factors[6 * index + start] as number,
+    factors[6 * index + start + 1] as number,
+    factors[6 * index + start + 2] as number,
+  ];
+  const scale = weight / (2 * (Math.hypot(...q) || 1));
+  for (let a = 0; a < size; a++)
+    for (let b = 0; b < size; b++)
+      matrix[a * size + b] =
+        (matrix[a * size + b] as number) +
+        scale * (chiralityAlong(part(a, 0), part(b, 3), q) + chiralityAlong(part(b, 0), part(a, 3), q));
 }
 
 /** Structure factor of one arrangement at one Q. */

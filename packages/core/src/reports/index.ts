@@ -32,15 +32,20 @@ export type {
   LittleGroupRecord,
 } from "./records/common.js";
 export type { CompatibilityRecord, NamedIrrepRecord, PartRecord } from "./records/compatibility.js";
-export type {
-  ConfigurationRecord,
-  ConfigurationSiteRecord,
-  ConfigurationsRecord,
-  MagneticGroupRecord,
-  OtherAtomRecord,
-  ParentSiteRecord,
-  PropertyRecord,
-  SecondaryIrrepRecord,
+export {
+  type AnyConfiguration,
+  type ConfigurationRecord,
+  type ConfigurationSiteRecord,
+  type ConfigurationsRecord,
+  commensurateOnes,
+  type MagneticGroupRecord,
+  type ModulatedRecord,
+  type ModulatedSiteRecord,
+  modulatedOnes,
+  type OtherAtomRecord,
+  type ParentSiteRecord,
+  type PropertyRecord,
+  type SecondaryIrrepRecord,
 } from "./records/configurations.js";
 export type { DecomposeRecord, IrrepPartRecord } from "./records/decompose.js";
 export type {

@@ -1,8 +1,8 @@
 import type { ConfigurationSet, Decomposition, GivenMoments, MomentField } from "../configurations/index.js";
 import type { CifVersion, MagneticStructure } from "../files/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
-import type { ParentSites } from "./building/parent-sites.js";
-import type { ConfigurationRecord, ConfigurationsRecord } from "./records/configurations.js";
+import type { NamedSite, ParentSites } from "./building/parent-sites.js";
+import type { AnyConfiguration, ConfigurationsRecord } from "./records/configurations.js";
 import type { DecomposeRecord } from "./records/decompose.js";
 
 /** Records whose making needs rooms that small commands must not load: they are loaded by the first call. */
@@ -22,14 +22,16 @@ export async function decomposeRecord(
   moments: GivenMoments,
   field: MomentField,
   found: Decomposition,
+  sites: readonly NamedSite[],
 ): Promise<DecomposeRecord> {
-  return (await import("./building/decompose.js")).decomposeRecord(group, cell, structure, moments, field, found);
+  const { decomposeRecord: made } = await import("./building/decompose.js");
+  return made(group, cell, structure, moments, field, found, sites);
 }
 
 /** One configuration as a magnetic CIF; null without a cell. */
 export async function configurationCif(
   record: ConfigurationsRecord,
-  one: ConfigurationRecord,
+  one: AnyConfiguration,
   version: CifVersion,
 ): Promise<string | null> {
   return (await import("./magnetic-cif-of.js")).configurationCif(record, one, version);

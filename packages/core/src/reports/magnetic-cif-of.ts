@@ -2,7 +2,12 @@ import { type CifVersion, type MagneticCif, magneticCifText } from "../files/ind
 import { parseRational, toNumber } from "../numbers/index.js";
 import { cifCode } from "./cif-code.js";
 import type { CellRecord } from "./records/common.js";
-import type { ConfigurationRecord, ConfigurationsRecord } from "./records/configurations.js";
+import type {
+  AnyConfiguration,
+  ConfigurationRecord,
+  ConfigurationsRecord,
+  ModulatedRecord,
+} from "./records/configurations.js";
 
 /**
  * One configuration as a magnetic CIF in its child cell. The irreps leave amplitudes free: the moments are one generic
@@ -10,38 +15,54 @@ import type { ConfigurationRecord, ConfigurationsRecord } from "./records/config
  */
 export function configurationCif(
   record: ConfigurationsRecord,
-  one: ConfigurationRecord,
+  one: AnyConfiguration,
   version: CifVersion,
 ): string | null {
-  const { cell } = one.magneticGroup;
-  return cell === null ? null : magneticCifText(contentOf(record, one, cell), version);
+  if ("superspace" in one.magneticGroup) {
+    const { cell } = record;
+    return cell === null ? null : magneticCifText(modulatedContent(record, one as ModulatedRecord, cell), version);
+  }
+  const own = one as ConfigurationRecord;
+  const { cell } = own.magneticGroup;
+  return cell === null || own.notWritten !== null ? null : magneticCifText(contentOf(record, own, cell), version);
 }
 
-function contentOf(record: ConfigurationsRecord, one: ConfigurationRecord, cell: CellRecord): MagneticCif {
-  const { magneticGroup: group } = one;
+/** What both kinds of file say. */
+function commonContent(record: ConfigurationsRecord, one: AnyConfiguration) {
   const parentOf = (label: string) => record.parentSites.find((site) => site.label === label);
-  const typeOf = (label: string) => parentOf(label)?.ion ?? elementOf(label);
-  const occupancyOf = (label: string) => parentOf(label)?.occupancy ?? null;
-  const place = (position: readonly string[]) => position.map((entry) => toNumber(parseRational(entry) ?? [0, 1]));
   return {
     block: `kvane_${cifCode(one.id)}`,
     remarks: [
       `Written by kvane: configuration ${one.id}, direction ${one.direction}, irreps ${one.irreps.join(" and ")}.`,
-      `k = (${record.k.components.join(", ")}) of the parent cell, exactly.`,
+      `k = (${record.k.components.join(", ")}) of the parent cell${Object.keys(record.k.values).length > 0 ? "" : ", exactly"}.`,
       "A hypothesis that symmetry allows, not a refined structure: the moments are one example within the form of the",
       "irreps, in Bohr magnetons. Refine the amplitudes against intensities.",
     ],
-    cell,
-    parent: {
-      symbol: record.group.hermannMauguin,
-      number: record.parentStandard.number,
-      toStandard: record.parentStandard.change,
-      toChild: group.cellFromParent,
-    },
     waveVectors: one.arms.map((arm, index) => ({
       id: `k${index + 1}`,
       components: record.star[arm]?.numeric ?? [],
     })),
+    typeOf: (label: string) => parentOf(label)?.ion ?? elementOf(label),
+    occupancyOf: (label: string) => parentOf(label)?.occupancy ?? null,
+    place: (position: readonly string[]) => position.map((entry) => toNumber(parseRational(entry) ?? [0, 1])),
+    parent: (toChild: string) => ({
+      symbol: record.group.hermannMauguin,
+      number: record.parentStandard.number,
+      toStandard: record.parentStandard.change,
+      toChild,
+    }),
+  };
+}
+
+function contentOf(record: ConfigurationsRecord, one: ConfigurationRecord, cell: CellRecord): MagneticCif {
+  const { magneticGroup: group } = one;
+  const { block, remarks, waveVectors, typeOf, occupancyOf, place, parent } = commonContent(record, one);
+  return {
+    block,
+    remarks,
+    cell,
+    parent: parent(group.cellFromParent),
+    waveVectors,
     symmetry: {
       kind: "commensurate",
       bns: group.bns,
@@ -72,6 +93,58 @@ function contentOf(record: ConfigurationsRecord, one: ConfigurationRecord, cell:
       })),
     ],
   };
+}
+
+/** In the axes of the parent; the position of the atom is inside the phase, as the dictionary of modulated structures has it. */
+function modulatedContent(record: ConfigurationsRecord, one: ModulatedRecord, cell: CellRecord): MagneticCif {
+  const { superspace, pointGroup } = one.magneticGroup;
+  const { block, remarks, waveVectors, typeOf, occupancyOf, place, parent } = commonContent(record, one);
+  return {
+    block,
+    remarks,
+    cell,
+    parent: parent("a,b,c;0,0,0"),
+    waveVectors,
+    symmetry: {
+      kind: "modulated",
+      pointGroup,
+      waveVector: superspace.k.numeric ?? [],
+      operators: superspace.operators,
+      centrings: superspace.centrings,
+    },
+    atoms: one.sites.map((site) => ({
+      label: site.label,
+      type: typeOf(site.parentSite),
+      position: place(site.positionLattice),
+      occupancy: occupancyOf(site.parentSite),
+      moment: {
+        crystal: [0, 0, 0],
+        symmform: null,
+        waves: [
+          {
+            order: 1,
+            cosine: site.exampleCosineCrystal ?? [],
+            sine: site.exampleSineCrystal ?? [],
+            cosineForms: waveForms(site.symmformCosine),
+            sineForms: waveForms(site.symmformSine),
+          },
+        ],
+      },
+    })),
+  };
+}
+
+/** `(mxcos, 2mxcos, 0)` in the letters of the dictionary of modulated structures: `mxc1`, `2*mxc1`, `0`. */
+function waveForms(form: string): readonly string[] {
+  return form
+    .replace(/[()\s]/g, "")
+    .split(",")
+    .map((entry) =>
+      entry
+        .replace(/m([xyz])cos/g, "m$1c1")
+        .replace(/m([xyz])sin/g, "m$1s1")
+        .replace(/(\d)(?=m)/g, "$1*"),
+    );
 }
 
 /** The element that a label begins with: the best guess where no ion is named. */

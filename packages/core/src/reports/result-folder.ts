@@ -3,7 +3,7 @@ import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tab
 import { type DrawnRun, figureNames } from "./document/figure-names.js";
 import { jsonText } from "./json-text.js";
 import type { Envelope } from "./records/common.js";
-import type { ConfigurationRecord, ConfigurationsRecord } from "./records/configurations.js";
+import type { AnyConfiguration, ConfigurationsRecord } from "./records/configurations.js";
 import type { RunRecord } from "./records/run.js";
 import { reportText } from "./text/report-text.js";
 
@@ -39,7 +39,7 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
   const cifFiles = (configurations: ConfigurationsRecord | null, branch: number): (readonly [string, string])[] =>
     cifNames(configurations, branch).map((name, index): readonly [string, string] => {
       const all = configurations as ConfigurationsRecord;
-      return [name, configurationCif(all, all.configurations[index] as ConfigurationRecord, "2.0") ?? ""];
+      return [name, configurationCif(all, all.configurations[index] as AnyConfiguration, "2.0") ?? ""];
     });
   const texts = new Map([
     ...documentFiles(answer),

@@ -6,8 +6,11 @@ import {
   lineMembers,
   lorentzFactor,
   type MomentSpace,
+  matchWave,
   type PreparedSpace,
   prepareSpace,
+  rotationNumbers,
+  rowTimesNumbers,
   scatteringGeometry,
 } from "../diffraction/index.js";
 import type { WaveVector } from "../kvectors/index.js";
@@ -24,6 +27,8 @@ export interface FitForms {
   readonly forms: readonly (readonly Float64Array[])[];
   /** N_i: nuclear intensity on the datum without the scale. */
   readonly constants: Float64Array;
+  /** Whether the datum is a satellite, or has a line near it, be it dark or not. */
+  readonly assigned: readonly boolean[];
 }
 
 /** What does not depend on the candidate. */
@@ -89,6 +94,7 @@ export function instrumentFactor({ geometry, displacement }: IntensityData, q: n
   return lorentzFactor(geometry, q) * displacementFactor(displacement, q);
 }
 
+/** The calculated intensities of one candidate as quadratic forms. */
 export function fitForms(frame: DataFrame, space: MomentSpace): FitForms {
   const prepared = prepareSpace(scatteringGeometry(frame.group, frame.cell), space);
   return frame.data.sample === "powder" ? powderForms(frame, prepared) : crystalForms(frame, prepared);
@@ -107,7 +113,8 @@ function powderForms({ group, k, data, lines, constants }: DataFrame, prepared: 
     }
     return sum;
   });
-  return { size, domains: [[0]], forms: [forms], constants };
+  const assigned = lines.map((own, index) => own.length > 0 || (constants[index] as number) > 0);
+  return { size, domains: [[0]], forms: [forms], constants, assigned };
 }
 
 /** Relative to the largest entry of all: forms of two operators that differ by less are one domain. */
@@ -128,10 +135,12 @@ function crystalForms({ group, data, constants }: DataFrame, prepared: PreparedS
   const forms: Float64Array[][] = [];
   let largest = 0;
   group.operators.forEach((_, operator) => {
-    const own = data.data.map(({ hkl }, datum) =>
+    const own = data.data.map(({ hkl, polarization }, datum) =>
       hkl === null
         ? new Float64Array(prepared.size ** 2)
-        : domainForm(group, prepared, hkl, operator).map((entry) => entry * (factors[datum] as number)),
+        : domainForm(group, prepared, hkl, operator, polarization ?? 0).map(
+            (entry) => entry * (factors[datum] as number),
+          ),
     );
     for (const form of own) for (const entry of form) largest = Math.max(largest, Math.abs(entry));
     const known = forms.findIndex((other) =>
@@ -145,5 +154,10 @@ function crystalForms({ group, data, constants }: DataFrame, prepared: PreparedS
       forms.push(own);
     }
   });
-  return { size: prepared.size, domains, forms, constants };
+  const rotations = group.operators.map(rotationNumbers);
+  const assigned = data.data.map(
+    ({ hkl }) =>
+      hkl !== null && rotations.some((rotation) => matchWave(group, prepared, rowTimesNumbers(hkl, rotation)) !== null),
+  );
+  return { size: prepared.size, domains, forms, constants, assigned };
 }

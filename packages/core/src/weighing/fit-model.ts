@@ -18,6 +18,7 @@ export interface FitLayout {
   readonly fixedFractions: Float64Array;
 }
 
+/** Which parameters a fit of these data has. */
 export function fitLayout(forms: FitForms, data: IntensityData, freeDomains: boolean): FitLayout {
   const fractions = freeDomains && forms.domains.length > 1 ? forms.domains.length : 0;
   const fitsScale = data.scale === null && forms.constants.some((value) => value !== 0);

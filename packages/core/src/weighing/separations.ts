@@ -8,11 +8,13 @@ import {
   matchWave,
   type PreparedSpace,
   prepareSpace,
+  rotationNumbers,
+  rowTimesNumbers,
   scatteringGeometry,
   type Triple,
 } from "../diffraction/index.js";
 import { star } from "../kvectors/index.js";
-import { clearDifferenceShare, roundNumber } from "../numbers/index.js";
+import { clearDifferenceShare, integerDeterminant, roundNumber } from "../numbers/index.js";
 import { type SatelliteLine, satelliteLines } from "../reflections/index.js";
 import type { DataFrame } from "./fit-forms.js";
 import type { WeighSeparation } from "./types.js";
@@ -208,27 +210,19 @@ function bestOverDomains(
   const own = vectors.map((q) => a.at(q)[part]);
   let result: { readonly q: Triple; readonly values: readonly [number, number] } | null = null;
   let least = Number.POSITIVE_INFINITY;
-  for (const { rotation, rotationDenominator } of group.operators) {
-    const turned = vectors.map((q) => {
-      const image = [0, 1, 2].map(
-        (column) =>
-          [0, 1, 2].reduce((sum, row) => sum + (q[row] as number) * (rotation[3 * row + column] as number), 0) /
-          rotationDenominator,
-      );
-      return b.at(image as unknown as Triple)[part];
-    });
-    // Inversion of space turns the sign of the chiral term; either hand of a domain may be there.
-    for (const hand of part === "chirality" ? [1, -1] : [1]) {
-      const found = largestDifference(
-        own,
-        turned.map((value) => hand * value),
-      );
-      if (!found) return null;
-      const share = Math.abs(found.values[0] - found.values[1]);
-      if (share < least) {
-        least = share;
-        result = { q: vectors[found.index] as Triple, values: found.values };
-      }
+  for (const [index, operator] of group.operators.entries()) {
+    const rotation = rotationNumbers(operator);
+    // An improper operator turns the sign of the chiral term.
+    const hand = part === "chirality" ? integerDeterminant(group.primitive.rotations[index] as readonly number[]) : 1;
+    const found = largestDifference(
+      own,
+      vectors.map((q) => hand * b.at(rowTimesNumbers(q, rotation))[part]),
+    );
+    if (!found) return null;
+    const share = Math.abs(found.values[0] - found.values[1]);
+    if (share < least) {
+      least = share;
+      result = { q: vectors[found.index] as Triple, values: found.values };
     }
   }
   return result;

@@ -11,6 +11,11 @@ export interface IntensityDatum {
   readonly observed: number;
   /** Standard uncertainty. */
   readonly uncertainty: number;
+  /**
+   * Component along Q of the polarization of the incident beam, −1 to 1, for a crystal; with Q = k_i − k_f. Left out or 0:
+   * not polarized.
+   */
+  readonly polarization?: number;
 }
 
 /** What was measured and how. */

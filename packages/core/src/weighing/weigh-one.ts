@@ -33,6 +33,7 @@ export interface OneFit {
   readonly amplitudes: (follow: boolean) => readonly FittedAmplitude[];
 }
 
+/** Fits one candidate and works out what is said of it. */
 export async function weighOne(
   frame: DataFrame,
   space: MomentSpace,

@@ -47,22 +47,8 @@ export async function weigh(
     await breathe(host);
     made.push({ candidate, forms: fitForms(whole, candidate) });
   }
-  const usable = data.data.map((_, index) =>
-    hasLine(
-      whole,
-      made.map(({ forms }) => forms),
-      index,
-    ),
-  );
-  if (!usable.includes(true))
-    fail("invalid-argument", "no peak of the list lies on a satellite of this k", {
-      expected: "peaks within the resolution of satellites",
-      found: data.data
-        .map(({ label }) => label)
-        .slice(0, 5)
-        .join(", "),
-      remedy: "check k, the cell and the positions of the peaks",
-    });
+  const usable = data.data.map((_, index) => made.some(({ forms }) => forms.assigned[index]));
+  if (!usable.includes(true)) refuseData(data);
   const frame = keepData(whole, usable);
   const zero = zeroLimit(made.map(({ forms }) => forms));
   const struckOut: Weighing["struckOut"][number][] = [];
@@ -74,7 +60,9 @@ export async function weigh(
     if (peaks.length > 0) struckOut.push({ id: candidate.id, peaks });
     else fits.push(await weighOne(frame, candidate, own, chosen, host));
   }
-  fits.sort((a, b) => a.result.criterion - b.result.criterion || a.space.id.localeCompare(b.space.id, "en"));
+  // Fits that are equal but for rounding stay in the order of the candidates.
+  const rank = (fit: OneFit): number => Math.round(1e6 * fit.result.criterion);
+  fits.sort((a, b) => rank(a) - rank(b) || a.result.parameters - b.result.parameters);
   const ranking: WeighedCandidate[] = [];
   const separate = fits.length > 1 ? separator(frame, chosen.qMax) : null;
   for (const fit of fits) {
@@ -109,10 +97,15 @@ function checkData({ data }: IntensityData): void {
     );
 }
 
-/** Whether a peak of a powder has a satellite or a nuclear line, a reflection of a crystal a wave of some candidate. */
-function hasLine({ data, lines, constants }: DataFrame, forms: readonly FitForms[], index: number): boolean {
-  if (data.sample === "powder") return (lines[index]?.length ?? 0) > 0 || (constants[index] as number) > 0;
-  return forms.some((one) => one.forms.some((domain) => domain[index]?.some((entry) => entry !== 0)));
+function refuseData({ data }: IntensityData): never {
+  fail("invalid-argument", "no peak of the list lies on a satellite of this k", {
+    expected: "peaks within the resolution of satellites",
+    found: data
+      .map(({ label }) => label)
+      .slice(0, 5)
+      .join(", "),
+    remedy: "check k, the cell and the positions of the peaks",
+  });
 }
 
 function keepData(frame: DataFrame, usable: readonly boolean[]): DataFrame {
@@ -130,6 +123,7 @@ function keepForms(forms: FitForms, usable: readonly boolean[]): FitForms {
     ...forms,
     forms: forms.forms.map((domain) => domain.filter((_, index) => usable[index])),
     constants: forms.constants.filter((_, index) => usable[index]),
+    assigned: forms.assigned.filter((_, index) => usable[index]),
   };
 }
 

@@ -6,6 +6,7 @@ import { type BasisChange, type Cell, identityChange, parseBasisChange } from ".
 import { cellFor, writtenCell } from "../inputs/cell-input.js";
 import { optionOf, readingGiven } from "../inputs/given.js";
 import { groupOf } from "../inputs/group-input.js";
+import { parentSitesOf } from "../inputs/parent-sites.js";
 import { readNamed } from "../inputs/read-file.js";
 import { orbitsOf, writtenSites } from "../inputs/site-input.js";
 import { argumentNames } from "../request.js";
@@ -23,7 +24,9 @@ export async function decomposeCommand(work: Work): Promise<DecomposeRecord> {
   const orbits = orbitsOf(work, group, sites, cell);
   const moments = momentsOf(work, structure, cell);
   const field = placed({ ...nowhere, file: structure.file }, () => momentField(group, cell, orbits, moments));
-  return decomposeRecord(group, cell, structure, moments, field, await decomposeField(group, cell, field, work.host));
+  const found = await decomposeField(group, cell, field, work.host);
+  const { magnetic } = parentSitesOf(work, group, cell, sites, orbits);
+  return decomposeRecord(group, cell, structure, moments, field, found, magnetic);
 }
 
 async function structureOf({ request, host }: Work): Promise<MagneticStructure> {

@@ -56,7 +56,14 @@ export async function exchangeCommand(work: Work): Promise<ExchangeRecord> {
     placed: () => ks.map((one) => placedK(work, group, one)),
   });
   const orbits = orbitsOf(work, group, sites, cell);
-  const all = [...constants, ...runningAlone(constants, ranges)];
+  const alone = runningAlone(constants, ranges);
+  for (const { bond, j } of alone)
+    remember(
+      work,
+      [{ what: `J${bond} outside the diagram`, value: String(j), because: "it only runs: --j does not give it" }],
+      [],
+    );
+  const all = [...constants, ...alone];
   const needed = farthestShell(all);
   const table = bondTable(group, cell, orbits, {
     shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),

@@ -1,6 +1,7 @@
 import { conventionTopics } from "./convention-topics.js";
 import { formatTopics } from "./format-topics.js";
 import { inputTopics } from "./input-topics.js";
+import { physicsTopics } from "./physics-topics.js";
 
 export interface HelpTopic {
   readonly title: string;
@@ -8,7 +9,12 @@ export interface HelpTopic {
   readonly text: string;
 }
 
-const pages: { readonly [topic: string]: HelpTopic } = { ...inputTopics, ...formatTopics, ...conventionTopics };
+const pages: { readonly [topic: string]: HelpTopic } = {
+  ...inputTopics,
+  ...formatTopics,
+  ...physicsTopics,
+  ...conventionTopics,
+};
 
 /** The pages of `kvane help`, by topic. */
 export const helpTopics: { readonly [topic: string]: HelpTopic } = {

@@ -4,25 +4,15 @@ import {
   type ConfigurationSite,
   splitPositions,
 } from "../../configurations/index.js";
-import { ionState } from "../../diffraction/index.js";
 import { star, waveVectorToJson } from "../../kvectors/index.js";
-import {
-  formatMagneticTriplet,
-  identifyMagneticGroup,
-  type MagneticGroup,
-  magneticGroup,
-  type TensorForms,
-  tensorForms,
-} from "../../magneticgroups/index.js";
-import { formatRational, roundNumber, toNumber } from "../../numbers/index.js";
+import { formatMagneticTriplet, identifyMagneticGroup } from "../../magneticgroups/index.js";
+import { formatRational, roundNumber } from "../../numbers/index.js";
 import {
   type Cell,
   changeCell,
   composeBasisChanges,
-  directMetric,
   formatBasisChange,
   invertBasisChange,
-  lengthInMetric,
   type SpaceGroup,
   standardSetting,
 } from "../../spacegroups/index.js";
@@ -33,10 +23,12 @@ import type {
   MagneticGroupRecord,
   OtherAtomRecord,
   ParentSiteRecord,
-  PropertyRecord,
 } from "../records/configurations.js";
+import { exampleScale } from "./example-moments.js";
+import { modulatedRecord } from "./modulated.js";
 import { cellRecord, groupRecord } from "./names.js";
-import type { NamedSite, ParentSites } from "./parent-sites.js";
+import { limitOf, type NamedSite, type ParentSites } from "./parent-sites.js";
+import { propertyRecords } from "./properties.js";
 
 export function configurationsRecord(
   set: ConfigurationSet,
@@ -44,7 +36,6 @@ export function configurationsRecord(
   sites: ParentSites,
 ): ConfigurationsRecord {
   const { setting, change } = standardSetting(set.group);
-  const parent = cell === null ? null : tensorForms(greyGroup(set.group), cell);
   return {
     group: groupRecord(set.group),
     cell: cell && cellRecord(cell),
@@ -57,7 +48,10 @@ export function configurationsRecord(
       ...sites.magnetic.map((site) => parentSiteRecord(site, true)),
       ...sites.others.map((site) => parentSiteRecord(site, false)),
     ],
-    configurations: set.configurations.map((one) => configurationRecord(set.group, one, cell, parent, sites)),
+    configurations: [
+      ...set.configurations.map((one) => configurationRecord(set.group, one, cell, sites)),
+      ...set.modulated.map((one) => modulatedRecord(one, cell, sites.magnetic)),
+    ],
     bounded: [...set.bounded],
   };
 }
@@ -67,31 +61,13 @@ function parentSiteRecord(site: NamedSite, magnetic: boolean): ParentSiteRecord 
   return { label: orbit.label, ion, occupancy, magnetic, largestMoment: limitOf(site) };
 }
 
-/** μB of the free ion: 2S where the spin is given, else by Hund's rules. */
-function limitOf({ ion, spin }: NamedSite): number | null {
-  if (spin !== null) return 2 * toNumber(spin);
-  return (ion === null ? null : ionState(ion)?.largestMoment) ?? null;
-}
-
-/** The parent with time reversal: the symmetry of the paramagnetic phase. */
-function greyGroup({ lattice, operators }: SpaceGroup): MagneticGroup {
-  return magneticGroup(
-    lattice,
-    ([1, -1] as const).flatMap((timeReversal) => operators.map((operator) => ({ operator, timeReversal }))),
-  );
-}
-
 function configurationRecord(
   group: SpaceGroup,
   one: Configuration,
   cell: Cell | null,
-  parent: TensorForms | null,
   sites: ParentSites,
 ): ConfigurationRecord {
   const child = cell && changeCell(cell, one.cell.cellFromParent);
-  const forms = cell === null ? null : tensorForms(one.magneticGroup, cell);
-  const property = (name: keyof TensorForms): PropertyRecord | null =>
-    forms === null || parent === null ? null : propertyRecord(forms[name], parent[name]);
   return {
     id: one.id,
     irreps: [...one.irreps],
@@ -110,12 +86,10 @@ function configurationRecord(
     severalIrreps: one.severalIrreps,
     magneticGroup: magneticGroupRecord(one, child),
     sites: siteRecords(one, child, sites.magnetic),
+    notWritten: one.notWritten,
     otherAtoms: sites.others.flatMap((site) => otherAtoms(group, one, site)),
     constantMoment: one.constantMoment,
-    netMoment: property("netMoment"),
-    polarization: property("polarization"),
-    magnetoelectric: property("magnetoelectric"),
-    piezomagnetic: property("piezomagnetic"),
+    ...propertyRecords(one.consequences),
   };
 }
 
@@ -135,9 +109,6 @@ function magneticGroupRecord({ magneticGroup: group, cell }: Configuration, chil
   };
 }
 
-/** μB. The largest moment of an example where nothing says what the ion can have. */
-const unknownMoment = 1;
-
 /** The sites with an example in μB: one generic choice of the amplitudes, scaled so that no ion exceeds what it can have. */
 function siteRecords(
   { sites }: Configuration,
@@ -145,26 +116,13 @@ function siteRecords(
   named: readonly NamedSite[],
 ): readonly ConfigurationSiteRecord[] {
   if (child === null) return sites.map((site) => siteRecord(site, null));
-  const metric = directMetric(child);
-  const scale = sites.reduce((least, { parentSite, exampleLattice }) => {
-    const size = lengthInMetric(metric, exampleLattice);
-    const own = named.find(({ orbit }) => orbit.label === parentSite);
-    const limit = (own && limitOf(own)) || unknownMoment;
-    return size > 0 ? Math.min(least, limit / size) : least;
-  }, Number.POSITIVE_INFINITY);
-  const lengths = [child.a, child.b, child.c];
-  return sites.map((site) =>
-    siteRecord(
-      site,
-      site.exampleLattice.map((entry, axis) =>
-        entry === 0 ? 0 : roundNumber(entry * scale * (lengths[axis] as number), 1, momentDigits),
-      ),
-    ),
+  const scaled = exampleScale(
+    child,
+    named,
+    sites.map(({ parentSite, exampleLattice }) => ({ parentSite, vectors: [exampleLattice] })),
   );
+  return sites.map((site) => siteRecord(site, scaled(site.exampleLattice)));
 }
-
-/** Digits of an example in μB. */
-const momentDigits = 8;
 
 function siteRecord(site: ConfigurationSite, exampleCrystal: readonly number[] | null): ConfigurationSiteRecord {
   return {
@@ -188,12 +146,4 @@ function otherAtoms(group: SpaceGroup, one: Configuration, { orbit }: NamedSite)
     multiplicity,
     positionLattice: position.map(formatRational),
   }));
-}
-
-/** Letters beyond those of the parent's form are what the order adds. */
-function propertyRecord(form: readonly string[], parent: readonly string[]): PropertyRecord {
-  const letters = (entries: readonly string[]) =>
-    new Set(entries.flatMap((entry) => entry.match(/[A-ZΛα][a-z0-9]*/gu) ?? []));
-  const [own, before] = [letters(form), letters(parent)];
-  return { form: [...form], inParent: before.size > 0, induced: own.size > before.size };
 }

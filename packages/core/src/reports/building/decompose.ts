@@ -1,4 +1,4 @@
-import type { Decomposition, GivenMoments, MomentField } from "../../configurations/index.js";
+import { type Decomposition, type GivenMoments, type MomentField, momentVerdict } from "../../configurations/index.js";
 import type { MagneticStructure } from "../../files/index.js";
 import { waveVectorToJson } from "../../kvectors/index.js";
 import {
@@ -11,13 +11,16 @@ import {
 import { identityMatrix, roundNumber } from "../../numbers/index.js";
 import {
   type Cell,
+  directMetric,
   formatBasisChange,
   latticeFromVectors,
+  lengthInMetric,
   type SpaceGroup,
   translationOf,
 } from "../../spacegroups/index.js";
 import type { DecomposeRecord } from "../records/decompose.js";
 import { cellRecord, groupRecord } from "./names.js";
+import { limitOf, type NamedSite } from "./parent-sites.js";
 
 export function decomposeRecord(
   group: SpaceGroup,
@@ -26,6 +29,7 @@ export function decomposeRecord(
   moments: GivenMoments,
   field: MomentField,
   found: Decomposition,
+  sites: readonly NamedSite[],
 ): DecomposeRecord {
   const { name, toBns } = identifyMagneticGroup(found.magneticGroup);
   const { recognised } = found;
@@ -36,6 +40,7 @@ export function decomposeRecord(
     cell: cellRecord(cell),
     childFromParent: formatBasisChange(moments.childFromParent),
     furthest: roundNumber(field.furthest),
+    moments: field.orbits.map((orbit, index) => momentOf(cell, field, orbit.label, index, sites)),
     parts: found.parts.map(({ k, label, share, arms }) => ({
       k: waveVectorToJson(k),
       label,
@@ -63,6 +68,27 @@ export function decomposeRecord(
       operator: formatMagneticTriplet(recognised.operator),
     },
     listed: (found.listed?.configurations ?? []).map(({ id }) => id),
+  };
+}
+
+function momentOf(
+  cell: Cell,
+  { moments }: MomentField,
+  site: string,
+  index: number,
+  sites: readonly NamedSite[],
+): DecomposeRecord["moments"][number] {
+  const metric = directMetric(cell);
+  const sizes = (moments[index] ?? []).flat().map((moment) => lengthInMetric(metric, moment));
+  const largest = Math.max(0, ...sizes);
+  const named = sites.find(({ orbit }) => orbit.label === site);
+  const limit = named === undefined ? null : limitOf(named);
+  return {
+    site,
+    ion: named?.ion ?? null,
+    largest: roundNumber(largest),
+    limit,
+    verdict: limit === null || limit === 0 || largest === 0 ? null : momentVerdict(largest, limit),
   };
 }
 

@@ -1,4 +1,5 @@
-import type { Rational } from "../../numbers/index.js";
+import { ionState } from "../../diffraction/index.js";
+import { type Rational, toNumber } from "../../numbers/index.js";
 import type { SiteOrbit } from "../../spacegroups/index.js";
 
 /** A site of the parent structure with what stands there. */
@@ -14,4 +15,10 @@ export interface NamedSite {
 export interface ParentSites {
   readonly magnetic: readonly NamedSite[];
   readonly others: readonly NamedSite[];
+}
+
+/** μB of the free ion: 2S where the spin is given, else by Hund's rules. */
+export function limitOf({ ion, spin }: NamedSite): number | null {
+  if (spin !== null) return 2 * toNumber(spin);
+  return (ion === null ? null : ionState(ion)?.largestMoment) ?? null;
 }

@@ -1,6 +1,6 @@
 import type { AtlasRecord } from "../records/atlas.js";
 import type { CompatibilityRecord } from "../records/compatibility.js";
-import type { ConfigurationsRecord } from "../records/configurations.js";
+import { type ConfigurationsRecord, commensurateOnes, modulatedOnes } from "../records/configurations.js";
 import type { ModesRecord } from "../records/modes.js";
 import type { OverlapRecord, SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
@@ -143,11 +143,12 @@ export function compatibilityCsv(record: CompatibilityRecord): string {
 
 /** One row for each site of each configuration: what a refinement starts from. */
 export function configurationsCsv(record: ConfigurationsRecord): string {
+  if (record.kind === "incommensurate") return modulatedCsv(record);
   const header = ["configuration", "irreps", "direction", "bns_number", "bns_symbol", "og_number", "cell_from_parent"];
   const site = ["site", "parent_site", "x", "y", "z", "moment_lattice", "form_lattice", "form_crystal"];
   return csvText(
     [...header, "index", "parameters_irreps", "parameters_group", ...site, "example_a", "example_b", "example_c"],
-    record.configurations.flatMap((one) =>
+    commensurateOnes(record).flatMap((one) =>
       one.sites.map((atom): CsvCell[] => [
         one.id,
         one.irreps.join(" "),
@@ -166,6 +167,45 @@ export function configurationsCsv(record: ConfigurationsRecord): string {
         atom.symmformLattice,
         atom.symmformCrystal,
         ...atom.exampleLattice,
+      ]),
+    ),
+  );
+}
+
+/** One row for each site of each modulated configuration. */
+function modulatedCsv(record: ConfigurationsRecord): string {
+  const header = [
+    "configuration",
+    "irreps",
+    "direction",
+    "index",
+    "parameters_irreps",
+    "parameters_group",
+    "free_phases",
+  ];
+  const site = ["site", "parent_site", "x", "y", "z", "cosine_lattice", "sine_lattice", "cosine_form", "sine_form"];
+  const examples = ["cosine", "sine"].flatMap((wave) => ["a", "b", "c"].map((axis) => `example_${wave}_${axis}`));
+  return csvText(
+    [...header, ...site, ...examples, "operators"],
+    modulatedOnes(record).flatMap((one) =>
+      one.sites.map((atom): CsvCell[] => [
+        one.id,
+        one.irreps.join(" "),
+        one.direction,
+        one.index,
+        one.freeParameters.irreps,
+        one.freeParameters.group,
+        one.freePhases,
+        atom.label,
+        atom.parentSite,
+        ...atom.positionLattice,
+        atom.cosineLattice,
+        atom.sineLattice,
+        atom.symmformCosine,
+        atom.symmformSine,
+        ...atom.exampleCosine,
+        ...atom.exampleSine,
+        one.magneticGroup.superspace.operators.join("; "),
       ]),
     ),
   );

@@ -80,6 +80,8 @@ export interface ConfigurationRecord {
   readonly magneticGroup: MagneticGroupRecord;
   readonly sites: readonly ConfigurationSiteRecord[];
   readonly otherAtoms: readonly OtherAtomRecord[];
+  /** Why `sites` is empty, where the atoms of the magnetic cell are too many to write; else null. */
+  readonly notWritten: string | null;
   /** Whether moments of one size on each site are possible; null without a cell. */
   readonly constantMoment: "always" | "possible" | "impossible" | null;
   /** Null without a cell. */
@@ -88,6 +90,61 @@ export interface ConfigurationRecord {
   readonly magnetoelectric: PropertyRecord | null;
   readonly piezomagnetic: PropertyRecord | null;
 }
+
+/** One atom of a modulated arrangement, in the axes of the parent. */
+export interface ModulatedSiteRecord {
+  readonly label: string;
+  readonly parentSite: string;
+  /** Atoms of the primitive cell. */
+  readonly multiplicity: number;
+  readonly positionLattice: readonly string[];
+  readonly meanMoment: string;
+  /** `M = C cos 2πx₄ + S sin 2πx₄`, x₄ = k·x, under the listed irreps: letters are free real amplitudes. */
+  readonly cosineLattice: string;
+  readonly sineLattice: string;
+  /** The same under the operators. */
+  readonly symmformCosine: string;
+  readonly symmformSine: string;
+  readonly exampleCosine: readonly number[];
+  readonly exampleSine: readonly number[];
+  /** μB along unit vectors of the axes, the largest |C| or |S| that of the free ion; null without a cell. */
+  readonly exampleCosineCrystal: readonly number[] | null;
+  readonly exampleSineCrystal: readonly number[] | null;
+}
+
+/** An incommensurate arrangement with the pair ±k. */
+export interface ModulatedRecord {
+  readonly id: string;
+  readonly irreps: readonly string[];
+  readonly direction: string;
+  readonly arms: readonly number[];
+  /** In the grey parent, phase shifts of the wave taken as no change. */
+  readonly index: number;
+  readonly domains: { readonly total: number; readonly k: number; readonly orientation: number };
+  readonly freeParameters: { readonly irreps: number; readonly group: number };
+  readonly freePhases: number;
+  /** One order parameter would have more symmetry: this needs a second one. */
+  readonly needsSecondOrderParameter: boolean;
+  readonly secondaryIrreps: readonly SecondaryIrrepRecord[];
+  readonly subgroupOf: readonly string[];
+  readonly severalIrreps: boolean;
+  readonly magneticGroup: {
+    /** Of mean properties: the operators in space, with and without time reversal. */
+    readonly pointGroup: string;
+    readonly superspace: {
+      readonly k: KRecord;
+      readonly operators: readonly string[];
+      readonly centrings: readonly string[];
+    };
+  };
+  readonly sites: readonly ModulatedSiteRecord[];
+  readonly netMoment: PropertyRecord | null;
+  readonly polarization: PropertyRecord | null;
+  readonly magnetoelectric: PropertyRecord | null;
+  readonly piezomagnetic: PropertyRecord | null;
+}
+
+export type AnyConfiguration = ConfigurationRecord | ModulatedRecord;
 
 /** Result of `kvane configurations`. */
 export interface ConfigurationsRecord {
@@ -102,7 +159,18 @@ export interface ConfigurationsRecord {
   /** Number of the parent group in any setting, and (P, p) to its standard setting. */
   readonly parentStandard: { readonly number: number; readonly change: string };
   readonly parentSites: readonly ParentSiteRecord[];
-  readonly configurations: readonly ConfigurationRecord[];
+  /** Those of a commensurate k have a magnetic space group and a cell, others superspace operators. */
+  readonly configurations: readonly AnyConfiguration[];
   /** What was left out because of a limit; empty when the list is complete. */
   readonly bounded: readonly string[];
+}
+
+/** The configurations of a commensurate k. */
+export function commensurateOnes({ configurations }: ConfigurationsRecord): readonly ConfigurationRecord[] {
+  return configurations.filter((one): one is ConfigurationRecord => !("superspace" in one.magneticGroup));
+}
+
+/** The configurations of an incommensurate k. */
+export function modulatedOnes({ configurations }: ConfigurationsRecord): readonly ModulatedRecord[] {
+  return configurations.filter((one): one is ModulatedRecord => "superspace" in one.magneticGroup);
 }

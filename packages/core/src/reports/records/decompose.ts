@@ -23,6 +23,14 @@ export interface DecomposeRecord {
   readonly childFromParent: string;
   /** Å. How far the atom furthest off its parent site stands from it. */
   readonly furthest: number;
+  /** Site by site the largest moment in μB against what the free ion can have; null where the ion is not known. */
+  readonly moments: readonly {
+    readonly site: string;
+    readonly ion: string | null;
+    readonly largest: number;
+    readonly limit: number | null;
+    readonly verdict: "beyond the ion" | "usual" | "low" | null;
+  }[];
   readonly parts: readonly IrrepPartRecord[];
   readonly magneticGroup: {
     readonly type: number;

@@ -17,6 +17,8 @@ const property = nullable(record({ form: list(text), inParent: flag, induced: fl
 const change = pattern("^[^;]+,[^;]+,[^;]+;[^;]+,[^;]+,[^;]+$", "(P, p) of International Tables A");
 const operator = pattern("^[^,]+,[^,]+,[^,]+,[+-]1$", "a coordinate triplet with time reversal");
 
+const superspaceOperator = pattern("^[^,]+,[^,]+,[^,]+,[^,]+,[+-]1$", "x1,x2,x3,x4 with time reversal");
+
 const magneticGroup = record({
   type: { type: "integer", minimum: 1, maximum: 4 },
   bns: record({ number: pattern("^\\d+\\.\\d+$", "a text: 1.10 is not 1.1"), symbol: text }),
@@ -63,7 +65,50 @@ const configuration = record({
   magneticGroup,
   sites: list(site),
   otherAtoms: list(otherAtom),
+  notWritten: nullable(text),
   constantMoment: nullable(oneOf("always", "possible", "impossible")),
+  netMoment: property,
+  polarization: property,
+  magnetoelectric: property,
+  piezomagnetic: property,
+});
+
+const vector = tuple(3, number);
+
+const modulated = record({
+  id: text,
+  irreps: list(text),
+  direction: text,
+  arms: list(count),
+  index: count,
+  domains: record({ total: count, k: count, orientation: count }),
+  freeParameters: record({ irreps: count, group: count }),
+  freePhases: count,
+  needsSecondOrderParameter: flag,
+  secondaryIrreps: list(record({ label: text, k: shared("k"), parameters: count })),
+  subgroupOf: list(text),
+  severalIrreps: flag,
+  magneticGroup: record({
+    pointGroup: text,
+    superspace: record({ k: shared("k"), operators: list(superspaceOperator), centrings: list(superspaceOperator) }),
+  }),
+  sites: list(
+    record({
+      label: text,
+      parentSite: text,
+      multiplicity: count,
+      positionLattice: shared("exactPosition"),
+      meanMoment: text,
+      cosineLattice: text,
+      sineLattice: text,
+      symmformCosine: text,
+      symmformSine: text,
+      exampleCosine: vector,
+      exampleSine: vector,
+      exampleCosineCrystal: nullable(vector),
+      exampleSineCrystal: nullable(vector),
+    }),
+  ),
   netMoment: property,
   polarization: property,
   magnetoelectric: property,
@@ -81,7 +126,7 @@ export const configurationsSchema: JsonSchema = record({
   parentSites: list(
     record({ label: text, ion: nullable(text), occupancy: number, magnetic: flag, largestMoment: nullable(number) }),
   ),
-  configurations: list(configuration),
+  configurations: list({ anyOf: [configuration, modulated] }),
   bounded: list(text),
 });
 

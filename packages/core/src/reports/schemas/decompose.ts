@@ -1,4 +1,4 @@
-import { type JsonSchema, list, nullable, number, record, shared, text } from "./building.js";
+import { type JsonSchema, list, nullable, number, oneOf, record, shared, text } from "./building.js";
 
 const amplitudes = record({ label: text, amplitudes: list(shared("complex")) });
 
@@ -9,6 +9,15 @@ export const decomposeSchema: JsonSchema = record({
   cell: shared("cell"),
   childFromParent: text,
   furthest: number,
+  moments: list(
+    record({
+      site: text,
+      ion: nullable(text),
+      largest: number,
+      limit: nullable(number),
+      verdict: nullable(oneOf("beyond the ion", "usual", "low")),
+    }),
+  ),
   parts: list(
     record({
       k: shared("k"),

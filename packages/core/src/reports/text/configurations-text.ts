@@ -1,11 +1,14 @@
-import type {
-  ConfigurationRecord,
-  ConfigurationSiteRecord,
-  ConfigurationsRecord,
-  PropertyRecord,
+import {
+  type ConfigurationRecord,
+  type ConfigurationSiteRecord,
+  type ConfigurationsRecord,
+  commensurateOnes,
+  modulatedOnes,
 } from "../records/configurations.js";
 import { fields, flow, paragraph, section, table } from "./layout.js";
+import { modulatedSection, modulatedTable } from "./modulated-text.js";
 import { counted, groupText, kForm, kText, positionText } from "./names.js";
+import { allowedText, propertyFields } from "./property-text.js";
 
 /** The list of configurations, then each with its group, cell and moments. */
 export function configurationsText(record: ConfigurationsRecord): string[] {
@@ -18,10 +21,13 @@ export function configurationsText(record: ConfigurationsRecord): string[] {
         ["Arms", armsText(record.arms)],
       ]),
       [""],
-      configurationTable(record.configurations),
+      record.kind === "incommensurate"
+        ? modulatedTable(modulatedOnes(record))
+        : configurationTable(commensurateOnes(record)),
       boundedLines(record),
     ),
-    ...record.configurations.flatMap((one) => configurationSection(one)),
+    ...commensurateOnes(record).flatMap((one) => configurationSection(one)),
+    ...modulatedOnes(record).flatMap(modulatedSection),
   ];
 }
 
@@ -70,13 +76,6 @@ export function freeText({ freeParameters: { irreps, group }, freePhases }: Conf
   return `${irreps === group ? irreps : `${irreps} of ${group}`}${phases}`;
 }
 
-/** The non-zero components; `–` where nothing is allowed, blank where it was not worked out. */
-export function allowedText(property: PropertyRecord | null): string {
-  if (property === null) return "";
-  const shown = property.form.every((entry) => entry === "0") ? "–" : `(${property.form.join(", ")})`;
-  return property.inParent && !property.induced && shown !== "–" ? `${shown} as before` : shown;
-}
-
 function configurationSection(one: ConfigurationRecord): string[] {
   const { magneticGroup: group } = one;
   return section(
@@ -112,24 +111,6 @@ export function roman(type: number): string {
 export function parameterText({ freeParameters: { irreps, group }, secondaryIrreps }: ConfigurationRecord): string {
   const more = secondaryIrreps.map(({ label, k, parameters }) => `${label} of k = ${kForm(k)} (${parameters})`);
   return `${irreps} of the irreps listed, ${group} of the magnetic group${more.length > 0 ? `, which lets in ${more.join(", ")}` : ""}`;
-}
-
-export function propertyFields(one: ConfigurationRecord): [string, string][] {
-  const entry = (name: string, property: PropertyRecord | null, width: number): [string, string][] => {
-    if (property === null) return [];
-    if (property.form.every((value) => value === "0")) return [[name, "not allowed"]];
-    const rows = Array.from({ length: property.form.length / width }, (_, row) =>
-      property.form.slice(row * width, (row + 1) * width).join(" "),
-    );
-    const origin = property.induced ? "" : property.inParent ? " (in the parent already)" : "";
-    return [[name, (rows.length === 1 ? `(${property.form.join(", ")})` : rows.join(" | ")) + origin]];
-  };
-  return [
-    ...entry("Net moment", one.netMoment, 3),
-    ...entry("Polarization", one.polarization, 3),
-    ...entry("Magnetoelectric", one.magnetoelectric, 3),
-    ...entry("Piezomagnetic", one.piezomagnetic, 6),
-  ];
 }
 
 function siteTable(sites: readonly ConfigurationSiteRecord[]): string[] {

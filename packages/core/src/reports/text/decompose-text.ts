@@ -12,6 +12,7 @@ export function decomposeText(record: DecomposeRecord): string[] {
         ["Parent", groupText(record.group)],
         ["Cell", cellText(record.cell)],
         ["Axes of the file", `(${record.childFromParent}) of the parent`],
+        ...record.moments.map(momentField),
         ["Furthest atom", `${plain(Number(record.furthest.toPrecision(2)))} Å from its parent site`],
       ]),
     ),
@@ -54,6 +55,17 @@ export function decomposeText(record: DecomposeRecord): string[] {
           ]),
     ),
   ];
+}
+
+function momentField({ site, ion, largest, limit, verdict }: DecomposeRecord["moments"][number]): [string, string] {
+  const size = `${decimals(largest, 2)} μB at most`;
+  if (limit === null || verdict === null) return [`Moment of ${site}`, size];
+  const words = {
+    "beyond the ion": "more than the free ion has: check scale and form factor",
+    usual: "as usual for the ion",
+    low: "low for the ion: zero-point motion and covalency rarely take more than half",
+  }[verdict];
+  return [`Moment of ${site}`, `${size}, ${ion ?? "the ion"} can have ${decimals(limit, 2)}: ${words}`];
 }
 
 function partRows({ k, label, share, arms }: IrrepPartRecord): string[][] {

@@ -10,13 +10,19 @@ export function diagramLines(diagram: DiagramRecord): string[] {
       [{ title: "phase" }, { title: "k" }, { title: "set" }],
       diagram.phases.flatMap(({ forms, dimension }, index) =>
         used[index] || inBoundary(diagram, index)
-          ? [[letter(index), forms.join(" and "), ["isolated", "line", "surface", "all k"][dimension] ?? ""]]
+          ? [[letter(index), forms.join(" and "), setText(dimension, diagram.freeDirections)]]
           : [],
       ),
     ),
     "",
     ...(diagram.axes.length === 1 ? lineOf(diagram) : mapOf(diagram)),
   ];
+}
+
+/** Directions that no bond notices do not count. */
+function setText(dimension: number, free: number): string {
+  if (dimension === free) return "isolated";
+  return ["isolated", "line or ring", "surface", "all k"][dimension - free] ?? "";
 }
 
 function inBoundary({ boundaries }: DiagramRecord, index: number): boolean {

@@ -88,18 +88,16 @@ function groundSections(record: ExchangeRecord, ground: GroundRecord): string[] 
         ["Energy a spin", plain10(ground.energy)],
         ["At", setText(ground)],
         ...(ground.dimension === 0 ? [] : [["Set", dimensionSentence(ground)] as const]),
+        ...(record.atoms.some(({ potential }) => potential !== 0) ? [["Bound", balanceText(record)] as const] : []),
         ["Spins", momentsText(ground)],
         ["Certificate", certificateText(certificate, ground)],
       ]),
-      vectors.length === 0 ? [] : [""],
-      vectors.length === 0
-        ? []
-        : table(
-            [{ title: "k" }, { title: "±k pairs", align: "right" }],
-            vectors.map(({ k, pairs }) => [kText(k), String(pairs)]),
-          ),
+      [""],
+      table(
+        [{ title: "k" }, { title: "±k pairs", align: "right" }],
+        vectors.map(({ k, pairs }) => [kText(k), String(pairs)]),
+      ),
     ),
-    ...(record.atoms.length === 0 ? [] : []),
   ];
 }
 
@@ -111,15 +109,21 @@ function setText({ vectors, dimension, freeDirections }: GroundRecord): string {
 }
 
 function dimensionSentence({ dimension, freeDirections, manifolds }: GroundRecord): string {
+  const whole = manifolds.length === 0 ? "" : `: all of ${manifolds.map(kForm).join(", ")}`;
+  if (dimension === freeDirections)
+    return `isolated as far as the bonds reach; no bond acts along ${counted(freeDirections, "direction")} of k, which stays open${whole}`;
   const what = ["", "a line or ring of k", "a surface of k", "all k"][dimension] ?? "";
-  const free =
-    freeDirections === 0
-      ? ""
-      : dimension === freeDirections
-        ? `: the constants leave ${counted(freeDirections, "direction")} of k open`
-        : `; ${counted(freeDirections, "direction")} of k because no constant acts along it`;
-  const whole = manifolds.length === 0 ? "" : `; whole ${manifolds.map(kForm).join(", ")} in it`;
-  return `${what}, one and the same energy: no single k is preferred${free}${whole}`;
+  const open = freeDirections === 0 ? "" : ` (${counted(freeDirections, "direction")} because no bond acts along it)`;
+  return `${what} with one and the same energy${open}: no single k is preferred${whole === "" ? "" : `; in it${whole}`}`;
+}
+
+/** Sites that symmetry does not relate are weighed against each other. */
+function balanceText({ atoms }: ExchangeRecord): string {
+  const labels = [...new Set(atoms.map(({ label }) => label))];
+  const each = labels.map((label) =>
+    unbroken(`${label} ${plain10(atoms.find((atom) => atom.label === label)?.potential ?? 0)}`),
+  );
+  return `tightened by site potentials that add up to nothing for full spins (${each.join(", ")})`;
 }
 
 function momentsText({ constantMoments: { answer, k, spins, short } }: GroundRecord): string {

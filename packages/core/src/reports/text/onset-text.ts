@@ -47,7 +47,7 @@ function transitionSection({ peaks, transitions }: OnsetRecord): string[] {
     paragraph(
       transitions.length === 1
         ? "One transition explains all onsets."
-        : `${counted(transitions.length, "transition")}: a common T_N is improbable (below 1 %) for peaks in different rows.`,
+        : `${counted(transitions.length, "transition")}: a common T_N is improbable (below 0.1 %) for peaks in different rows.`,
     ),
   );
 }

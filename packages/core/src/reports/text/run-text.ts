@@ -1,4 +1,5 @@
 import { physicalSets } from "../physical-sets.js";
+import { commensurateOnes, modulatedOnes } from "../records/configurations.js";
 import type { BranchRecord, RunRecord } from "../records/run.js";
 import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
@@ -7,6 +8,7 @@ import { peaksText } from "./flag-text.js";
 import { irrepsText, irrepTable } from "./irreps-text.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { decompositionText, modesText, parameterText } from "./modes-text.js";
+import { modulatedTable } from "./modulated-text.js";
 import { cellText, counted, groupText, kText, positionText } from "./names.js";
 import { satellitesText, satelliteTable } from "./satellites-text.js";
 import { assignmentTable, candidateTable, certificateLines, peakFields, separationLines } from "./search-text.js";
@@ -54,7 +56,7 @@ export function runFullText(record: RunRecord): string[] {
       ...starText(branch.star),
       ...irrepsText(branch.irreps),
       ...modesText(branch.modes),
-      ...(branch.configurations?.kind === "commensurate" ? configurationsText(branch.configurations) : []),
+      ...(branch.configurations === null ? [] : configurationsText(branch.configurations)),
       ...(branch.satellites ? satellitesText(branch.satellites) : []),
     ]),
   ];
@@ -182,12 +184,13 @@ function modeSummary({ irreps, modes }: BranchRecord): string[] {
 
 /** One line each; the full report and `kvane configurations` have the rest. */
 function configurationSummary({ configurations }: BranchRecord, name: string): string[] {
-  if (configurations === null || configurations.kind === "incommensurate") return [];
-  const { configurations: all } = configurations;
+  if (configurations === null || configurations.configurations.length === 0) return [];
+  const [all, modulated] = [commensurateOnes(configurations), modulatedOnes(configurations)];
   return section(
     `${name}Configurations`,
-    configurationTable(all.slice(0, shownConfigurations)),
-    moreLine(all.length - shownConfigurations, "configuration"),
+    all.length > 0 ? configurationTable(all.slice(0, shownConfigurations)) : [],
+    modulated.length > 0 ? modulatedTable(modulated.slice(0, shownConfigurations)) : [],
+    moreLine(configurations.configurations.length - shownConfigurations, "configuration"),
     configurations.bounded.flatMap((what) => paragraph(`Left out because of the limit: ${what}.`)),
   );
 }

@@ -1,5 +1,4 @@
 import { withUncertainty } from "../../numbers/index.js";
-import { qToTwoThetaDeg } from "../../reflections/index.js";
 import type { AssignmentRecord, CandidateRecord, PeaksRecord, SearchRecord } from "../records/search.js";
 import { flagLines, peaksText } from "./flag-text.js";
 import { fields, paragraph, section, table } from "./layout.js";
@@ -324,10 +323,12 @@ export function assignmentTable(
   );
 }
 
-/** A computed Q as d or 2θ, whichever the list has. */
+/** A computed Q as d or 2θ (Bragg's law), whichever the list has. */
 function inListUnit(q: number, { kind, wavelengthAngstrom }: PeaksRecord): number | null {
   if (kind === "d") return (2 * Math.PI) / q;
-  return wavelengthAngstrom === null ? null : qToTwoThetaDeg(q, wavelengthAngstrom);
+  if (wavelengthAngstrom === null) return null;
+  const sine = (q * wavelengthAngstrom) / (4 * Math.PI);
+  return sine > 1 ? null : (360 / Math.PI) * Math.asin(sine);
 }
 
 /** Observed less computed in standard uncertainties; of three indices the one that is off most. */

@@ -1,13 +1,7 @@
-import type { ConfigurationRecord } from "../../records/configurations.js";
-import {
-  allowedText,
-  armsText,
-  freeText,
-  parameterText,
-  propertyFields,
-  roman,
-} from "../../text/configurations-text.js";
+import { type ConfigurationRecord, commensurateOnes } from "../../records/configurations.js";
+import { armsText, freeText, parameterText, roman } from "../../text/configurations-text.js";
 import { counted, positionText } from "../../text/names.js";
+import { allowedText, propertyFields } from "../../text/property-text.js";
 import {
   type Block,
   type DocumentSection,
@@ -26,7 +20,7 @@ const described = 24;
 export function configurationsSection({ branch, prefix }: BranchSource): DocumentSection | null {
   const { configurations: record } = branch;
   if (record === null || record.kind === "incommensurate" || record.configurations.length === 0) return null;
-  const { configurations: all } = record;
+  const all = commensurateOnes(record);
   return {
     id: `${prefix}-configurations`,
     title: "Configurations",

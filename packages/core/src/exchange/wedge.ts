@@ -1,0 +1,164 @@
+import { type HalfSpace, polytope } from "../algorithms/index.js";
+import { invertUnimodular } from "../numbers/index.js";
+import { visitBall } from "../reflections/index.js";
+import type { SpaceGroup } from "../spacegroups/index.js";
+import { fromZone, toCartesian, toZone, type ZoneFrame } from "./zone-frame.js";
+
+/** One asymmetric part of the zone of a frame, in Cartesian x, and the box that just holds it. */
+export interface ZoneWedge {
+  readonly walls: readonly HalfSpace[];
+  readonly centre: readonly number[];
+  readonly half: readonly number[];
+  /** How the point group extended by −1 acts on q: r × r matrices on columns, `q' = M q`. */
+  readonly actions: readonly (readonly number[])[];
+}
+
+/** A q on no element of symmetry, in the middle of nowhere. */
+const generic = [0.1234567, 0.3127043, 0.2211953];
+
+/**
+ * The Dirichlet cell of a generic point among its images under the point group extended by −1 and the lattice of q: every
+ * k has an image in it (H. S. M. Coxeter, Regular Polytopes, 1973, section 4). It is bounded exactly: once all images
+ * within twice its reach have cut it, no further one can.
+ */
+export function zoneWedge(group: SpaceGroup, frame: ZoneFrame): ZoneWedge {
+  const { rank } = frame;
+  const actions = zoneActions(group, frame);
+  const start = generic.slice(0, rank);
+  const origin = toCartesian(frame, start);
+  const metric = threeDimensional(frame);
+  let within = Math.max(...Array.from({ length: rank }, (_, a) => Math.sqrt(frame.metric[a * rank + a] as number)));
+  for (;;) {
+    const box = boxAround(rank, origin, 2 * within);
+    const walls = bisectors(frame, actions, start, metric, within);
+    const halfSpaces = [...box, ...walls];
+    const { vertices, active } = polytope(halfSpaces, rank);
+    const reach = Math.max(...vertices.map((vertex) => distance(vertex, origin)));
+    const bounded = active.every((index) => index >= box.length);
+    if (bounded && 2 * reach <= within) {
+      const kept = active.map((index) => halfSpaces[index] as HalfSpace);
+      return { walls: kept, actions, ...boundingBox(vertices, rank, reach) };
+    }
+    within = bounded ? 2 * reach * (1 + 1e-9) : 1.5 * within;
+  }
+}
+
+/** `κ → κ R⁻¹` as seen by q; both signs, each once. */
+export function zoneActions(group: SpaceGroup, frame: ZoneFrame): number[][] {
+  const { rank } = frame;
+  const found = new Map<string, number[]>();
+  for (const rotation of group.primitive.rotations) {
+    const inverse = invertUnimodular(rotation);
+    const columns = Array.from({ length: rank }, (_, a) => {
+      const kappa = fromZone(frame, Array.from({ length: rank }, (_, b) => (a === b ? 1 : 0)));
+      return toZone(
+        frame,
+        [0, 1, 2].map((axis) => kappa.reduce((sum, entry, row) => sum + entry * (inverse[3 * row + axis] as number), 0)),
+      );
+    });
+    for (const sign of [1, -1]) {
+      const matrix = Array.from(
+        { length: rank * rank },
+        (_, at) => sign * Math.round(columns[at % rank]?.[Math.floor(at / rank)] as number) + 0,
+      );
+      found.set(matrix.join(), matrix);
+    }
+  }
+  return [...found.values()];
+}
+
+function bisectors(
+  frame: ZoneFrame,
+  actions: readonly (readonly number[])[],
+  start: readonly number[],
+  metric: readonly number[],
+  within: number,
+): HalfSpace[] {
+  const { rank } = frame;
+  const origin = toCartesian(frame, start);
+  const found: (HalfSpace & { readonly distance: number })[] = [];
+  for (const action of actions) {
+    const image = start.map((_, row) => start.reduce((sum, entry, b) => sum + (action[row * rank + b] as number) * entry, 0));
+    const step = [0, 1, 2].map((a) => (a < rank ? (image[a] as number) - (start[a] as number) : 0));
+    visitBall(metric, step, within * within, (n1, n2, n3, square) => {
+      const length = Math.sqrt(square);
+      if (length < 1e-9) return;
+      const q = [n1, n2, n3].slice(0, rank).map((n, a) => n + (image[a] as number));
+      const normal = toCartesian(frame, q).map((entry, a) => (entry - (origin[a] as number)) / length);
+      const offset = normal.reduce((sum, entry, a) => sum + entry * (origin[a] as number), length / 2);
+      found.push({ normal, offset, distance: length });
+    });
+  }
+  return found.sort((a, b) => a.distance - b.distance);
+}
+
+/** The metric of q with the axes that are not there so long that no vector along them is short. */
+function threeDimensional({ rank, metric }: ZoneFrame): number[] {
+  const longest = Math.max(...metric.map(Math.abs));
+  return Array.from({ length: 9 }, (_, at) => {
+    const [row, column] = [Math.floor(at / 3), at % 3];
+    if (row < rank && column < rank) return metric[row * rank + column] as number;
+    return row === column ? 1e12 * longest : 0;
+  });
+}
+
+function boxAround(rank: number, origin: readonly number[], reach: number): HalfSpace[] {
+  return Array.from({ length: 2 * rank }, (_, index) => {
+    const [axis, sign] = [index >> 1, index % 2 === 0 ? 1 : -1];
+    return {
+      normal: Array.from({ length: rank }, (_, a) => (a === axis ? sign : 0)),
+      offset: reach + sign * (origin[axis] as number),
+    };
+  });
+}
+
+function distance(a: readonly number[], b: readonly number[]): number {
+  return Math.hypot(...a.map((entry, axis) => entry - (b[axis] as number)));
+}
+
+function boundingBox(vertices: readonly (readonly number[])[], rank: number, reach: number) {
+  const bounds = Array.from({ length: rank }, (_, axis) => {
+    const along = vertices.map((vertex) => vertex[axis] as number);
+    return [Math.min(...along), Math.max(...along)] as const;
+  });
+  return {
+    centre: bounds.map(([low, high]) => (low + high) / 2),
+    // A hair wider, so that rounding loses nothing.
+    half: bounds.map(([low, high]) => ((high - low) / 2) * (1 + 1e-9) + 1e-9 * reach),
+  };
+}
+
+/** Whether the whole box lies beyond a wall: its points have images inside, which other boxes look at. */
+export function beyondWalls(walls: readonly HalfSpace[], centre: ArrayLike<number>, half: ArrayLike<number>): boolean {
+  for (const { normal, offset } of walls) {
+    let near = -offset;
+    for (let a = 0; a < normal.length; a++)
+      near += (normal[a] as number) * (centre[a] as number) - Math.abs(normal[a] as number) * (half[a] as number);
+    if (near > 1e-9 * Math.abs(offset) + 1e-12) return true;
+  }
+  return false;
+}
+
+/** All q of the star of a q, in [0, 1), without repetition. */
+export function starOfZone(actions: readonly (readonly number[])[], q: readonly number[]): number[][] {
+  const rank = q.length;
+  const found: number[][] = [];
+  for (const action of actions) {
+    const image = q.map((_, row) => q.reduce((sum, entry, b) => sum + (action[row * rank + b] as number) * entry, 0));
+    const reduced = image.map((entry) => entry - Math.floor(entry + sameQ));
+    if (!found.some((one) => sameZonePoint(one, reduced))) found.push(reduced);
+  }
+  return found;
+}
+
+/** Share of a reciprocal lattice vector within which two computed q are one. */
+const sameQ = 1e-6;
+
+/** Whether two q differ by integers. */
+export function sameZonePoint(a: readonly number[], b: readonly number[], within = sameQ): boolean {
+  return a.every((entry, axis) => {
+    const step = entry - (b[axis] as number);
+    return Math.abs(step - Math.round(step)) < within;
+  });
+}
+

@@ -1,0 +1,42 @@
+import type { HelpTopic } from "./topics.js";
+
+/** Exchange models and temperature scans. */
+export const physicsTopics: { readonly [topic: string]: HelpTopic } = {
+  exchange: {
+    title: "Exchange constants and what is made of them",
+    text: `E = Σ J S·S, every bond counted once: J > 0 is antiferromagnetic. |S| is the spin of the study where
+every magnetic site has one, else 1. Energies are per magnetic atom, in the unit of the constants.
+
+Bonds are named by their shell, counted from 1 over all pairs of the given sites: 1, 2, … Where
+symmetry does not make all bonds of a shell equal they are 2a, 2b, …; without constants
+\`kvane exchange\` lists them.
+
+  --j "1 1.0"  --j "2b -0.3"          a whole shell, or one kind of its bonds
+  --j "2 Fe1 Fe2 0.4"                 only the bonds of the shell between these sites
+  exchange: [{shell: 1, j: 1.0}, {bond: 2b, j: -0.3}, {shell: 3, between: [Fe1, Fe2], j: 0.4}]
+
+The lowest eigenvalue of J(k) is searched over the whole zone with proof (Luttinger and Tisza); it
+bounds the energy of any arrangement from below. It is then tried to build spins of full length
+that reach it. Sites that symmetry does not relate are balanced first (Lyons and Kaplan).
+
+  --vary "2 0 1 41"                   phase diagram while J2 runs from 0 to 1; twice for a map
+  --k 0,0,0.29                        energies at this k, and which constants put the minimum there`,
+  },
+  onset: {
+    title: "Temperature scans",
+    text: `Rows of a temperature in K and one or more quantities, in any order of the rows. The header names
+the columns: T, then a name for each peak. A column called su (or sigma, error, esd, uncertainty)
+holds the uncertainties of the one before it; a value may carry its own, 132(4). Columns called k,
+kx, ky, kz, u, v or w are components of the wave vector. - stands for a value that is not there.
+
+  T      (0 0 1/2)  su   (1 0 1/2)  su
+  2.0    98.1       2.0  41.7       1.1
+
+Each peak is fitted by I = I₀ (1 − T/T_N)^2β + background over the widest range of (T_N − T)/T_N that
+this law describes, or over that of --reduced. Standard uncertainties are those of the profile of
+χ²; without uncertainties in the file they follow from the scatter. Peaks share a transition unless
+a common T_N is improbable at 0.1 %. A β from a wide range is no critical exponent.
+
+onset: {file: scan.csv} in a study names the scan for \`kvane onset STUDY.yaml\`.`,
+  },
+};
