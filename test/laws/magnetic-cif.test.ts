@@ -5,9 +5,10 @@ import { join } from "node:path";
 import { configurationsOf, decomposeField, momentField } from "@kvane/core/configurations";
 import { parseCif, readMagneticCif } from "@kvane/core/files";
 import { smallIrreps } from "@kvane/core/irreps";
+import { parseWaveVector, placeWaveVector } from "@kvane/core/kvectors";
 import { siteModes } from "@kvane/core/modes";
-import { commensurateOnes, configurationCif, configurationsRecord } from "@kvane/core/reports";
-import { type Cell, type SpaceGroup, siteOrbit } from "@kvane/core/spacegroups";
+import { commensurateOnes, configurationCif, configurationsRecord, modulatedOnes } from "@kvane/core/reports";
+import { type Cell, parseSite, type SpaceGroup, siteOrbit } from "@kvane/core/spacegroups";
 import { afterAll, describe, expect, test } from "vitest";
 import { randomHalfThirdQuarter } from "../support/configurations-cases.ts";
 import { groupOf } from "../support/parsed-groups.ts";
@@ -114,4 +115,44 @@ describe("written magnetic CIFs", () => {
     const { stderr } = spawnSync("sh", ["-c", "cif_parse *.cif > /dev/null"], { cwd: folder, encoding: "utf8" });
     expect(stderr).not.toMatch(/ERROR/);
   });
+});
+
+describe("modulated structures", () => {
+  const cases: readonly (readonly [number, string, string])[] = [
+    [62, "0,0.283,0", "0 0 1/2"],
+    [14, "0,0.31,0", "0.137 0.223 0.317"],
+    [166, "0,0,0.217", "0 0 0"],
+    [148, "0,0,0.313", "0 0 0.193"],
+    [225, "0,0,0.231", "0 0 0"],
+  ];
+  test.each(cases)(
+    "group %i, k = %s: written and read back, waves and operators are the same",
+    async (number, text, at) => {
+      const group = groupOf(number);
+      const cell = randomCell(group, seeded(50_000 + number), 120);
+      const { k } = placeWaveVector(group, parseWaveVector(text));
+      const orbit = siteOrbit(group, parseSite(`Fe1 ${at}`), cell);
+      const irreps = smallIrreps(group, k);
+      const set = await configurationsOf(group, irreps, [siteModes(group, irreps, orbit)], cell);
+      const named = { orbit, ion: "Fe3+", occupancy: 1, spin: null };
+      const record = await configurationsRecord(set, cell, { magnetic: [named], others: [] });
+      const all = modulatedOnes(record);
+      expect(all.length).toBeGreaterThan(0);
+      for (const one of all) {
+        const cif = (await configurationCif(record, one, "2.0")) as string;
+        const read = await readMagneticCif(await parseCif(cif, one.id));
+        expect(read.modulation?.operators).toEqual(one.magneticGroup.superspace.operators);
+        expect(read.modulation?.waveVector.map((entry) => entry.toFixed(6))).toEqual(
+          one.magneticGroup.superspace.k.numeric?.map((entry) => entry.toFixed(6)),
+        );
+        for (const [index, site] of one.sites.entries()) {
+          const [wave] = read.atoms[index]?.waves ?? [];
+          for (const axis of [0, 1, 2]) {
+            expect(wave?.cosine[axis]).toBeCloseTo(site.exampleCosineCrystal?.[axis] as number, 5);
+            expect(wave?.sine[axis]).toBeCloseTo(site.exampleSineCrystal?.[axis] as number, 5);
+          }
+        }
+      }
+    },
+  );
 });

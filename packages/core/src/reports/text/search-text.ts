@@ -190,7 +190,9 @@ export function separationSentences(record: SearchRecord): string[] {
         : `${kShort(best.k)} cannot be told from ${kShort(one.k)} unless ΔQ/Q < ${decimals(100 * one.resolution, 2)} % at ${decimals(one.q, 2)} Å⁻¹.`,
     );
   const more = lines.length - shownSeparations;
+  const excluded = best.separations.filter(({ candidate, toldApart, q }) => candidate === null && toldApart && q > 0);
   return [
+    ...excluded.map((one) => `The peaks tell ${kShort(best.k)} from ${kShort(one.k)}.`),
     ...lines.slice(0, shownSeparations),
     ...(more > 0 ? [`The same holds for ${counted(more, "more k", "more k")}.`] : []),
   ];
