@@ -18,7 +18,9 @@ export interface TwinModel {
 
 /** Axes with x along a and z along c*. */
 export function axesOf({ a, b, c, alpha, beta, gamma }: Cell): number[][] {
-  const [ca, cb, cg, sg] = [alpha, beta, gamma].map((one) => Math.cos((one * Math.PI) / 180)).concat(Math.sin((gamma * Math.PI) / 180)) as [number, number, number, number];
+  const [ca, cb, cg, sg] = [alpha, beta, gamma]
+    .map((one) => Math.cos((one * Math.PI) / 180))
+    .concat(Math.sin((gamma * Math.PI) / 180)) as [number, number, number, number];
   const y = (ca - cb * cg) / sg;
   return [
     [a, 0, 0],
@@ -43,7 +45,9 @@ export function twinBonds({ axes, atoms, lengths, constants }: TwinModel): TwinB
         for (let y = -reach; y <= reach; y++)
           for (let z = -reach; z <= reach; z++) {
             const step = [x, y, z].map((n, i) => n + (end[i] as number) - (start[i] as number));
-            const length = Math.hypot(...[0, 1, 2].map((i) => step.reduce((sum, s, a) => sum + s * (axes[a]?.[i] as number), 0)));
+            const length = Math.hypot(
+              ...[0, 1, 2].map((i) => step.reduce((sum, s, a) => sum + s * (axes[a]?.[i] as number), 0)),
+            );
             const shell = lengths.findIndex((one) => Math.abs(one - length) < 1e-3);
             if (shell >= 0) bonds.push({ from, to, step, j: constants[shell] as number });
           }
@@ -120,10 +124,21 @@ export function twinDescent(size: number, bonds: readonly TwinBond[], start: rea
 }
 
 const groups: readonly (readonly [string, (random: () => number) => Cell, readonly (readonly string[])[]])[] = [
-  ["P 1", triclinic, [["A 0 0 0"], ["A 0 0 0", "B 0.31 0.42 0.27"], ["A 0 0 0", "B 0.31 0.12 0.47", "C 0.62 0.55 0.18"]]],
+  [
+    "P 1",
+    triclinic,
+    [["A 0 0 0"], ["A 0 0 0", "B 0.31 0.42 0.27"], ["A 0 0 0", "B 0.31 0.12 0.47", "C 0.62 0.55 0.18"]],
+  ],
   ["P -1", triclinic, [["A 0.13 0.22 0.34"], ["A 0 0 0", "B 0.27 0.31 0.16"]]],
   ["P 1 2/m 1", monoclinic, [["A 0 0 0"], ["A 0 0.31 0"], ["A 0 0 0", "B 1/2 0.24 1/2"]]],
-  ["P 2 2 2", orthorhombic, [["A 0 0 0", "B 1/2 1/2 0"], ["A 0 0 0", "B 0.5 0 0.5", "C 0 0.5 0.5"]]],
+  [
+    "P 2 2 2",
+    orthorhombic,
+    [
+      ["A 0 0 0", "B 1/2 1/2 0"],
+      ["A 0 0 0", "B 0.5 0 0.5", "C 0 0.5 0.5"],
+    ],
+  ],
   ["P 4/m m m", tetragonal, [["A 0 0 0"], ["A 0 1/2 0"], ["A 0 1/2 0", "B 0 0 1/2"]]],
   ["P 6/m m m", hexagonal, [["A 0 0 0"], ["A 1/3 2/3 0"], ["A 1/2 0 0"]]],
   ["P -3 m 1", hexagonal, [["A 1/3 2/3 0.21"], ["A 0 0 0.31"], ["A 0 0 0", "B 1/3 2/3 0.3"]]],
@@ -135,8 +150,12 @@ function between(random: () => number, low: number, high: number): number {
 }
 function triclinic(random: () => number): Cell {
   return {
-    a: between(random, 4, 7), b: between(random, 4, 7), c: between(random, 4, 7),
-    alpha: between(random, 70, 110), beta: between(random, 70, 110), gamma: between(random, 70, 110),
+    a: between(random, 4, 7),
+    b: between(random, 4, 7),
+    c: between(random, 4, 7),
+    alpha: between(random, 70, 110),
+    beta: between(random, 70, 110),
+    gamma: between(random, 70, 110),
   };
 }
 function monoclinic(random: () => number): Cell {
@@ -192,7 +211,9 @@ export async function randomModel(seed: number): Promise<RandomModel> {
 function siteOf(text: string): Site {
   const [label = "", ...coordinates] = text.split(" ");
   const exact = (word: string) => {
-    const [top = "0", bottom = "1"] = word.includes("/") ? word.split("/") : [String(Math.round(Number(word) * 100)), "100"];
+    const [top = "0", bottom = "1"] = word.includes("/")
+      ? word.split("/")
+      : [String(Math.round(Number(word) * 100)), "100"];
     const divisor = gcd(Number(top), Number(bottom));
     return [Number(top) / divisor, Number(bottom) / divisor] as const;
   };
@@ -220,7 +241,8 @@ export function againstTwin(
   const deepest = twinDescent(size, bonds, grid.k, 0.5 / count) / 2;
   const problems: string[] = [];
   if (!ground.exhaustive) problems.push(`${name}: the search was stopped`);
-  if (grid.value / 2 < ground.lowerBound - 1e-9) problems.push(`${name}: the grid has ${grid.value / 2}, below the proven ${ground.lowerBound}`);
+  if (grid.value / 2 < ground.lowerBound - 1e-9)
+    problems.push(`${name}: the grid has ${grid.value / 2}, below the proven ${ground.lowerBound}`);
   if (deepest < ground.energy - 1e-9) problems.push(`${name}: ${deepest} lies below the ${ground.energy} found`);
   if (ground.energy < deepest - 1e-6) problems.push(`${name}: the grid ends at ${deepest}, ${ground.energy} was found`);
   return problems;

@@ -1,5 +1,5 @@
+import type { KvaneError } from "@kvane/core/errors";
 import { bondTable, exchangeModel } from "@kvane/core/exchange";
-import { KvaneError } from "@kvane/core/errors";
 import { parseGroup, parseSite, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, it } from "vitest";
 import { cellOf, lattices } from "../support/exchange-models.js";
@@ -19,15 +19,92 @@ describe("shells of neighbours", () => {
   // Numbers of neighbours and squared distances: C. Kittel, Introduction to Solid State Physics, table of lattice sums,
   // and by counting points on the planar nets.
   const known: readonly [keyof typeof lattices, readonly (readonly [number, number])[]][] = [
-    ["simpleCubic", [[1, 6], [2, 12], [3, 8], [4, 6], [5, 24]]],
-    ["faceCentred", [[1 / 2, 12], [1, 6], [3 / 2, 24], [2, 12], [5 / 2, 24]]],
-    ["bodyCentred", [[3 / 4, 8], [1, 6], [2, 12], [11 / 4, 24], [3, 8]]],
-    ["diamond", [[3 / 16, 4], [1 / 2, 12], [11 / 16, 12], [1, 6], [19 / 16, 12]]],
-    ["square", [[1, 4], [2, 4], [4, 4], [5, 8], [8, 4]]],
-    ["triangular", [[1, 6], [3, 6], [4, 6], [7, 12]]],
-    ["honeycomb", [[1 / 3, 3], [1, 6], [4 / 3, 3], [7 / 3, 6]]],
-    ["kagome", [[1 / 4, 4], [3 / 4, 4], [1, 6], [7 / 4, 8]]],
-    ["pyrochlore", [[1 / 8, 6], [3 / 8, 12], [1 / 2, 12], [5 / 8, 12]]],
+    [
+      "simpleCubic",
+      [
+        [1, 6],
+        [2, 12],
+        [3, 8],
+        [4, 6],
+        [5, 24],
+      ],
+    ],
+    [
+      "faceCentred",
+      [
+        [1 / 2, 12],
+        [1, 6],
+        [3 / 2, 24],
+        [2, 12],
+        [5 / 2, 24],
+      ],
+    ],
+    [
+      "bodyCentred",
+      [
+        [3 / 4, 8],
+        [1, 6],
+        [2, 12],
+        [11 / 4, 24],
+        [3, 8],
+      ],
+    ],
+    [
+      "diamond",
+      [
+        [3 / 16, 4],
+        [1 / 2, 12],
+        [11 / 16, 12],
+        [1, 6],
+        [19 / 16, 12],
+      ],
+    ],
+    [
+      "square",
+      [
+        [1, 4],
+        [2, 4],
+        [4, 4],
+        [5, 8],
+        [8, 4],
+      ],
+    ],
+    [
+      "triangular",
+      [
+        [1, 6],
+        [3, 6],
+        [4, 6],
+        [7, 12],
+      ],
+    ],
+    [
+      "honeycomb",
+      [
+        [1 / 3, 3],
+        [1, 6],
+        [4 / 3, 3],
+        [7 / 3, 6],
+      ],
+    ],
+    [
+      "kagome",
+      [
+        [1 / 4, 4],
+        [3 / 4, 4],
+        [1, 6],
+        [7 / 4, 8],
+      ],
+    ],
+    [
+      "pyrochlore",
+      [
+        [1 / 8, 6],
+        [3 / 8, 12],
+        [1 / 2, 12],
+        [5 / 8, 12],
+      ],
+    ],
   ];
   it.each(known)("of the %s lattice have the known distances and numbers", async (name, shells) => {
     const table = await shellsOf(name, shells.length);
@@ -79,7 +156,10 @@ describe("shells of neighbours", () => {
       const short = 4 / Math.SQRT2;
       const cell = index === 0 ? cellOf(4, 4, 4) : cellOf(short, short, short, 60, 60, 60);
       const table = bondTable(group, cell, [siteOrbit(group, parseSite("M 0 0 0"), cell)], { shells: 5 });
-      return table.shells.map(({ distance, classes }) => [distance.toFixed(4), classes.map(({ bonds }) => bonds.length)]);
+      return table.shells.map(({ distance, classes }) => [
+        distance.toFixed(4),
+        classes.map(({ bonds }) => bonds.length),
+      ]);
     });
     const [first, second] = await Promise.all(shapes);
     expect(second).toEqual(first);

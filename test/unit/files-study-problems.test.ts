@@ -74,6 +74,15 @@ describe("what is wrong in a study", () => {
     ["half a peak", "search: {unmatched: 0.5}\n", ["invalid-number 1:21 search.unmatched"]],
     ["four dimensions", "search: {max-dimension: 4}\n", ["invalid-number 1:25 search.max-dimension"]],
     ["shell 0", "exchange: [{shell: 0, j: 1}]\n", ["invalid-number 1:20 exchange[0].shell"]],
+    ["a bond that is none", "exchange: [{bond: b2, j: 1}]\n", ["wrong-type 1:19 exchange[0].bond"]],
+    ["shell and bond", "exchange: [{shell: 1, bond: 2b, j: 1}]\n", ["conflicting-arguments 1:29 exchange[0].bond"]],
+    ["neither shell nor bond", "exchange: [{j: 1}]\n", ["missing-key 1:12 exchange[0]"]],
+    [
+      "a bond between three",
+      "exchange: [{shell: 1, between: [A, B, C], j: 1}]\n",
+      ["wrong-type 1:32 exchange[0].between"],
+    ],
+    ["an onset without a file", "onset: {}\n", ["missing-key 1:8 onset.file"]],
     ["a range upside down", "exclude: [[38.5, 38.1]]\n", ["wrong-type 1:11 exclude[0]"]],
     ["structure and cell", `structure: a.cif\n${cell}\n`, ["conflicting-arguments 2:7 cell"]],
   ])("%s", async (_what, text, expected) => {

@@ -37,6 +37,7 @@ describe("a study file", () => {
             [0, 1],
           ],
           spin: [5, 2],
+          occupancy: null,
         },
         {
           label: "Co1",
@@ -47,6 +48,7 @@ describe("a study file", () => {
             [-3, 10],
           ],
           spin: [3, 2],
+          occupancy: null,
         },
       ],
       k: ["0, 1/2, 0", "u, 0, 1/2"],
@@ -69,12 +71,26 @@ describe("a study file", () => {
       },
       intensities: { file: "integrated.csv" },
       exchange: [
-        { shell: 1, j: -1 },
-        { shell: 2, j: 0.4 },
+        { bond: "1", between: null, j: -1 },
+        { bond: "2b", between: null, j: 0.4 },
+        { bond: "3", between: ["Fe1", "Co1"], j: 0.1 },
       ],
+      onset: { file: "scan.csv" },
       exclude: [
         [38.1, 38.5],
         [51, 52],
+      ],
+      atoms: [
+        {
+          label: "O1",
+          ion: "O2-",
+          position: [
+            [103, 250],
+            [1, 4],
+            [59, 500],
+          ],
+          occupancy: 0.5,
+        },
       ],
       impurities: [
         {
@@ -90,7 +106,6 @@ describe("a study file", () => {
     const study = await parseStudy(fixture("every-key.yaml"), "every-key.yaml");
     expect(study.warnings.map(({ code, where }) => [code, where.path, where.line, where.column])).toEqual([
       ["not-built", "intensities", 11, 14],
-      ["not-built", "exchange", 12, 11],
     ]);
     const other = await parseStudy(fixture("with-structure.yaml"), "with-structure.yaml");
     expect(other).toMatchObject({ structure: "nuclear.cif", structureBlock: "at_2K", warnings: [] });
@@ -111,6 +126,7 @@ describe("a study file", () => {
           [1, 2],
         ],
         spin: null,
+        occupancy: null,
       },
       {
         label: "2",
@@ -121,6 +137,7 @@ describe("a study file", () => {
           [469, 2000],
         ],
         spin: null,
+        occupancy: null,
       },
     ]);
     expect(study.k?.map((text) => parseWaveVector(text).components.map(({ constant }) => constant))).toEqual([

@@ -50,16 +50,27 @@ function termText(factor: Cyclotomic, letter: string): string {
   const number = realText(factor);
   const plain = /^(-?)(\d*)(?:\/(\d+))?$/.exec(number);
   if (plain) return `${plain[1]}${plain[2] === "1" ? "" : plain[2]}${letter}${plain[3] ? `/${plain[3]}` : ""}`;
+  if (/^-?\d+\.\d+$/.test(number)) return `${number}${letter}`;
   const root = /^(-?)(\d*√\d+)(?:\/(\d+))?$/.exec(number);
   if (root) return `${root[1]}${root[2]}·${letter}${root[3] ? `/${root[3]}` : ""}`;
   return number.startsWith("-(") || number.startsWith("(") ? `${number}·${letter}` : `(${number})·${letter}`;
+}
+
+/** Characters of an exact number that still reads well; longer ones are written as decimals. */
+const longestExact = 12;
+
+function decimalText(value: number): string {
+  return String(Number(value.toFixed(6)));
 }
 
 /** A real exact number: `-1/2`, `√3/2`, `(1+√2)`, `(3-√5)/2`, else as the room `numbers` writes it. */
 function realText(value: Cyclotomic): string {
   if (cyclotomicToRational(value) !== null) return formatCyclotomic(value);
   const quadratic = asQuadratic(value);
-  if (quadratic === null) return formatCyclotomic(value);
+  if (quadratic === null) {
+    const exact = formatCyclotomic(value);
+    return exact.length <= longestExact ? exact : decimalText(cyclotomicToComplex(value)[0]);
+  }
   const { plain, factor, radicand, denominator } = quadratic;
   const below = denominator === 1 ? "" : `/${denominator}`;
   const size = Math.abs(factor) === 1 ? "" : Math.abs(factor);

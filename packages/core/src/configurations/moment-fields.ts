@@ -1,7 +1,9 @@
+import { KvaneError } from "../errors/index.js";
 import {
   addCyclotomic,
   type Cyclotomic,
   conjugateCyclotomic,
+  cyclotomicToComplex,
   cyclotomicZero,
   isCyclotomicZero,
   lcm,
@@ -58,7 +60,46 @@ export function momentRows(
       copies.flatMap((copy) => fieldRows(places, fixed.parameter.irrep.dimension, vector, copy, axes)),
     ),
   );
-  return { rows: sparseEchelon(raw) };
+  return { rows: echelonWherePossible(raw) };
+}
+
+/** Share of a row's length that must be new for it to be independent of those before. */
+const independentShare = 1e-6;
+
+/**
+ * The reduced echelon form; where its exact numbers grow beyond the safe integers (k of large denominators), a choice of
+ * the rows as they are, exact too and only less plain. Which are independent is then told from floats.
+ */
+function echelonWherePossible(rows: readonly SparseRow[]): SparseRow[] {
+  try {
+    return sparseEchelon(rows);
+  } catch (error) {
+    if (!(error instanceof KvaneError) || error.code !== "number-overflow") throw error;
+    return independentRows(rows);
+  }
+}
+
+function independentRows(rows: readonly SparseRow[]): SparseRow[] {
+  const basis: Map<number, number>[] = [];
+  return rows.filter((row) => {
+    const rest = new Map([...row].map(([column, value]): [number, number] => [column, cyclotomicToComplex(value)[0]]));
+    const size = lengthOf(rest);
+    for (const unit of basis) {
+      let product = 0;
+      for (const [column, value] of rest) product += value * (unit.get(column) ?? 0);
+      for (const [column, value] of unit) rest.set(column, (rest.get(column) ?? 0) - product * value);
+    }
+    const left = lengthOf(rest);
+    if (size === 0 || left < independentShare * size) return false;
+    basis.push(new Map([...rest].map(([column, value]): [number, number] => [column, value / left])));
+    return true;
+  });
+}
+
+function lengthOf(row: ReadonlyMap<number, number>): number {
+  let square = 0;
+  for (const value of row.values()) square += value * value;
+  return Math.sqrt(square);
 }
 
 type Places = ReadonlyMap<number, readonly { readonly column: number; readonly waves: readonly Cyclotomic[] }[]>;

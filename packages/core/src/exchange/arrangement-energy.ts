@@ -35,7 +35,8 @@ export function arrangementEnergy(model: ExchangeModel, configuration: Configura
   const at = new Map(placed.map((one) => [keyOf(one.atom, one.translation), one]));
   const product = (a: readonly number[], b: readonly number[]) =>
     a.reduce(
-      (sum, left, row) => sum + left * b.reduce((part, right, column) => part + (metric[3 * row + column] as number) * right, 0),
+      (sum, left, row) =>
+        sum + left * b.reduce((part, right, column) => part + (metric[3 * row + column] as number) * right, 0),
       0,
     );
   const energy = new Float64Array(amplitudes * amplitudes);
@@ -44,7 +45,12 @@ export function arrangementEnergy(model: ExchangeModel, configuration: Configura
   for (const one of placed) {
     addProducts(square, one.moments, one.moments, 1 / placed.length, product);
     for (const { bond, strength } of outgoing[one.atom] ?? []) {
-      const other = at.get(keyOf(bond.to, one.translation.map((entry, axis) => entry + (bond.translation[axis] as number))));
+      const other = at.get(
+        keyOf(
+          bond.to,
+          one.translation.map((entry, axis) => entry + (bond.translation[axis] as number)),
+        ),
+      );
       if (!other) throw new Error("a bond leads to no atom of the magnetic cell");
       addProducts(energy, one.moments, other.moments, strength / (2 * placed.length), product);
     }
@@ -75,7 +81,9 @@ function placedMoments(table: BondTable, { cell, sites }: Configuration): Placed
         const key = inside.map((entry) => Math.round(entry * 1e6)).join();
         if (seen.has(key)) return [];
         seen.add(key);
-        const parent = matrix.map((row) => row.reduce((sum, entry, axis) => sum + toNumber(entry) * (inside[axis] as number), 0));
+        const parent = matrix.map((row) =>
+          row.reduce((sum, entry, axis) => sum + toNumber(entry) * (inside[axis] as number), 0),
+        );
         const rotation = rotationOf(first.operator).map((row) => row.map(toNumber));
         const flat = first.operator.rotation;
         const sign = Math.sign(integerDeterminant(flat)) * first.timeReversal * second.timeReversal;
@@ -84,7 +92,9 @@ function placedMoments(table: BondTable, { cell, sites }: Configuration): Placed
             ...placeOf(table, parent),
             moments: Array.from({ length: amplitudes }, (_, index) => {
               const moment = site.amplitudes.find(({ amplitude }) => amplitude === index)?.momentLattice ?? [0, 0, 0];
-              return rotation.map((row) => sign * row.reduce((sum, entry, axis) => sum + entry * (moment[axis] as number), 0));
+              return rotation.map(
+                (row) => sign * row.reduce((sum, entry, axis) => sum + entry * (moment[axis] as number), 0),
+              );
             }),
           },
         ];
@@ -106,7 +116,10 @@ function placeOf({ group, atoms }: BondTable, position: readonly number[]): { at
 }
 
 /** Texts that are the same for atoms that a translation of the magnetic cell joins. */
-function cellKeys({ group }: BondTable, { cell }: Configuration): (atom: number, translation: readonly number[]) => string {
+function cellKeys(
+  { group }: BondTable,
+  { cell }: Configuration,
+): (atom: number, translation: readonly number[]) => string {
   const { matrix } = cell.cellFromParent;
   const columns = [0, 1, 2].map((axis) =>
     toPrimitiveColumn(group.lattice, [
@@ -127,7 +140,8 @@ function childMetric({ cell }: BondTable, configuration: Configuration): number[
     const [row, column] = [Math.floor(at / 3), at % 3];
     let sum = 0;
     for (let a = 0; a < 3; a++)
-      for (let b = 0; b < 3; b++) sum += (p[a]?.[row] as number) * (metric[3 * a + b] as number) * (p[b]?.[column] as number);
+      for (let b = 0; b < 3; b++)
+        sum += (p[a]?.[row] as number) * (metric[3 * a + b] as number) * (p[b]?.[column] as number);
     return sum;
   });
 }
@@ -175,9 +189,11 @@ function extremes(energy: Float64Array, square: Float64Array, size: number): Arr
   const columnsSolved = (matrix: Float64Array): Float64Array => {
     const result = new Float64Array(size * size);
     for (let column = 0; column < size; column++)
-      solve(Float64Array.from({ length: size }, (_, row) => matrix[row * size + column] as number)).forEach((entry, row) => {
-        result[row * size + column] = entry;
-      });
+      solve(Float64Array.from({ length: size }, (_, row) => matrix[row * size + column] as number)).forEach(
+        (entry, row) => {
+          result[row * size + column] = entry;
+        },
+      );
     return result;
   };
   const real = columnsSolved(transposed(columnsSolved(energy)));

@@ -77,6 +77,5 @@ export function reversedBond({ from, to, translation: [a, b, c] }: Bond): Bond {
 /** One text for a bond and its reverse. */
 export function bondKey(bond: Bond): string {
   const text = (one: Bond) => `${one.from} ${one.to} ${one.translation.join(" ")}`;
-  const [a, b] = [text(bond), text(reversedBond(bond))];
-  return a < b ? a : b;
+  return [text(bond), text(reversedBond(bond))].sort()[0] as string;
 }

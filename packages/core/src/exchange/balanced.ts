@@ -46,7 +46,10 @@ export async function balancedModel(
   /** The slope of the bound: by how much the orbit has more than its share of the lowest eigenvector. */
   const excess = (nu: readonly number[], axis: number): number => {
     const { weights } = bound(nu);
-    const own = atoms.reduce((sum, { orbit }, atom) => sum + (orbit === orbits[axis] ? (weights[atom] as number) : 0), 0);
+    const own = atoms.reduce(
+      (sum, { orbit }, atom) => sum + (orbit === orbits[axis] ? (weights[atom] as number) : 0),
+      0,
+    );
     return own - (counts[axis] as number) / atoms.length;
   };
   let nu: number[] = orbits.map(() => 0);

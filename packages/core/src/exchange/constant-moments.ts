@@ -45,7 +45,8 @@ export function constantMoments(
     if (arms.length < 2) continue;
     for (let count = 2; count <= Math.min(arms.length, mostArms); count++) {
       const several = solved(model, arms.slice(0, count));
-      if (several) return { answer: "reached", k: (stars[index] as WaveVector[]).slice(0, count), spins: several, short: [] };
+      if (several)
+        return { answer: "reached", k: (stars[index] as WaveVector[]).slice(0, count), spins: several, short: [] };
     }
   }
   const short = shortSites(model, waves);
@@ -59,7 +60,9 @@ function armPairs(model: ExchangeModel, k: WaveVector): WaveVector[] {
   for (const arm of star(group, k).arms) {
     const numbers = kappaOf(group, numericWaveVector(arm) ?? []);
     const known = kept.some((other) => {
-      const sum = kappaOf(group, numericWaveVector(other) ?? []).map((entry, axis) => entry + (numbers[axis] as number));
+      const sum = kappaOf(group, numericWaveVector(other) ?? []).map(
+        (entry, axis) => entry + (numbers[axis] as number),
+      );
       return sum.every((entry) => Math.abs(entry - Math.round(entry)) < 1e-6);
     });
     if (!known) kept.push(arm);
@@ -81,7 +84,8 @@ function waveOf(model: ExchangeModel, k: WaveVector, tolerance: number): Wave {
   const kappa = kappaOf(group, numericWaveVector(k) ?? []);
   const branches = branchesAt(model, kappa);
   const { size } = branches;
-  const column = (part: Float64Array, n: number) => Array.from({ length: size }, (_, i) => part[i * size + n] as number);
+  const column = (part: Float64Array, n: number) =>
+    Array.from({ length: size }, (_, i) => part[i * size + n] as number);
   return {
     k,
     kappa,
@@ -119,12 +123,14 @@ function generator(seed: number): () => number {
 /** |M_j|² as Fourier coefficients: quadratic in the amplitudes, so that central differences are exact. */
 function equations(atoms: number, waves: readonly Wave[], components: number) {
   const parts = waves.flatMap(({ half, kappa, vectors }, wave) =>
-    half ? [{ wave, conjugate: false, kappa, vectors }] : [false, true].map((conjugate) => ({
-      wave,
-      conjugate,
-      kappa: conjugate ? kappa.map((entry) => -entry) : kappa,
-      vectors,
-    })),
+    half
+      ? [{ wave, conjugate: false, kappa, vectors }]
+      : [false, true].map((conjugate) => ({
+          wave,
+          conjugate,
+          kappa: conjugate ? kappa.map((entry) => -entry) : kappa,
+          vectors,
+        })),
   );
   const classes = pairClasses(parts.map(({ kappa }) => kappa));
   const offsets: number[] = [];
@@ -207,12 +213,15 @@ function entryOf({ wave, conjugate }: Part, fields: readonly Field[], atom: numb
 
 /** Pairs of waves by their difference modulo L*; of a difference and its negative only one is kept. */
 function pairClasses(kappas: readonly (readonly number[])[]) {
-  const classes: { readonly difference: number[]; readonly constant: boolean; readonly pairs: [number, number][] }[] = [];
+  const classes: { readonly difference: number[]; readonly constant: boolean; readonly pairs: [number, number][] }[] =
+    [];
   const whole = (step: readonly number[]) => step.every((entry) => Math.abs(entry - Math.round(entry)) < 1e-6);
   for (let a = 0; a < kappas.length; a++)
     for (let b = 0; b < kappas.length; b++) {
       const difference = (kappas[a] as number[]).map((entry, axis) => entry - (kappas[b]?.[axis] as number));
-      const known = classes.find((one) => whole(one.difference.map((entry, axis) => entry - (difference[axis] as number))));
+      const known = classes.find((one) =>
+        whole(one.difference.map((entry, axis) => entry - (difference[axis] as number))),
+      );
       if (known) known.pairs.push([a, b]);
       else if (!classes.some((one) => whole(one.difference.map((entry, axis) => entry + (difference[axis] as number)))))
         classes.push({ difference, constant: whole(difference), pairs: [[a, b]] });
@@ -227,7 +236,10 @@ function pairClasses(kappas: readonly (readonly number[])[]) {
 function shortSites(model: ExchangeModel, stars: readonly (readonly Wave[])[]): string[] {
   const { atoms } = model.table;
   const weight = (wave: Wave, atom: number) =>
-    wave.vectors.reduce((sum, { real, imaginary }) => sum + (real[atom] as number) ** 2 + (imaginary[atom] as number) ** 2, 0);
+    wave.vectors.reduce(
+      (sum, { real, imaginary }) => sum + (real[atom] as number) ** 2 + (imaginary[atom] as number) ** 2,
+      0,
+    );
   const [only] = stars;
   const single = stars.length === 1 && only?.length === 1 && only[0]?.vectors.length === 1;
   const largest = single ? Math.max(...atoms.map((_, atom) => weight(only[0] as Wave, atom))) : 0;

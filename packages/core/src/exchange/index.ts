@@ -34,11 +34,11 @@ export type {
   BondClass,
   BondTable,
   Coupling,
+  ExchangeAtom,
   ExchangeCertificate,
   ExchangeModel,
   Ground,
-  ExchangeAtom,
   MinimumSet,
-  OrderingVector,
   NeighbourShell,
+  OrderingVector,
 } from "./types.js";

@@ -93,7 +93,10 @@ function irrepSorter(model: ExchangeModel, k: WaveVector, irreps: SmallIrreps) {
         let [sumRe, sumIm] = [0, 0];
         for (let atom = 0; atom < size; atom++) {
           const to = image[atom] as number;
-          const turns = (shift[atom] as readonly number[]).reduce((sum, a, axis) => sum + a * (kappa[axis] as number), 0);
+          const turns = (shift[atom] as readonly number[]).reduce(
+            (sum, a, axis) => sum + a * (kappa[axis] as number),
+            0,
+          );
           const [cosine, sine] = [Math.cos(2 * Math.PI * turns), Math.sin(2 * Math.PI * turns)];
           for (let n = from; n < from + count; n++) {
             const [ar, ai] = [real[to * size + n] as number, imaginary[to * size + n] as number];
@@ -107,8 +110,9 @@ function irrepSorter(model: ExchangeModel, k: WaveVector, irreps: SmallIrreps) {
       }),
     counts: (traces: readonly Complex[]): IrrepCount[] =>
       irreps.irreps.flatMap(({ label, dimension }, index) => {
+        const own = characters[index] as readonly Complex[];
         const sum = traces.reduce((total, [re, im], g) => {
-          const [cr, ci] = characters[index]?.[g] as Complex;
+          const [cr, ci] = own[g] as Complex;
           return total + cr * re + ci * im;
         }, 0);
         const multiplicity = Math.round(sum / traces.length);
@@ -120,7 +124,8 @@ function irrepSorter(model: ExchangeModel, k: WaveVector, irreps: SmallIrreps) {
 function weightsOf({ size, real, imaginary }: ExchangeBranches, from: number, count: number): number[] {
   return Array.from({ length: size }, (_, atom) => {
     let sum = 0;
-    for (let n = from; n < from + count; n++) sum += (real[atom * size + n] as number) ** 2 + (imaginary[atom * size + n] as number) ** 2;
+    for (let n = from; n < from + count; n++)
+      sum += (real[atom * size + n] as number) ** 2 + (imaginary[atom * size + n] as number) ** 2;
     return roundNumber(sum);
   });
 }

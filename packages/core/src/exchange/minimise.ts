@@ -1,4 +1,12 @@
-import { boxSearch, breathe, type HermitianMatrix, hermitianAbove, hermitianEigen, hermitianMatrix, type WorkHost } from "../algorithms/index.js";
+import {
+  boxSearch,
+  breathe,
+  type HermitianMatrix,
+  hermitianAbove,
+  hermitianEigen,
+  hermitianMatrix,
+  type WorkHost,
+} from "../algorithms/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import { fillInteraction, type Interaction, type LowestBranch, lowestBranch, remainderOf } from "./interaction.js";
 import { type Descent, descend } from "./polish.js";

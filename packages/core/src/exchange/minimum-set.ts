@@ -59,7 +59,9 @@ function heaps(leaves: readonly Leaf[]): Leaf[][] {
   const first = leaves[0];
   if (!first) return [];
   const placeOf = ({ centre }: Leaf) =>
-    Array.from(centre, (entry, a) => Math.round((entry - (first.centre[a] as number)) / (2 * (first.half[a] as number))));
+    Array.from(centre, (entry, a) =>
+      Math.round((entry - (first.centre[a] as number)) / (2 * (first.half[a] as number))),
+    );
   const byPlace = new Map(leaves.map((leaf) => [placeOf(leaf).join(), leaf]));
   const result: Leaf[][] = [];
   const open = new Set(byPlace.keys());
@@ -113,7 +115,10 @@ function localDimension(points: readonly number[][], rank: number): number {
   const dimensions = points
     .map((point) => {
       const near = [...points].sort((a, b) => apart(a, point) - apart(b, point)).slice(1, 2 + 2 * rank);
-      return filledBy(near.map((one) => one.map((entry, axis) => entry - (point[axis] as number))), rank);
+      return filledBy(
+        near.map((one) => one.map((entry, axis) => entry - (point[axis] as number))),
+        rank,
+      );
     })
     .sort((a, b) => a - b);
   return dimensions[Math.floor(dimensions.length / 2)] as number;
@@ -133,7 +138,9 @@ function filledBy(steps: readonly (readonly number[])[], rank: number): number {
     if (axis === 0) longest = square;
     if (square <= filledShare * longest) break;
     dimension += 1;
-    rest = rest.map((step, index) => step.map((entry, a) => entry - (along[index] as number) * (direction[a] as number)));
+    rest = rest.map((step, index) =>
+      step.map((entry, a) => entry - (along[index] as number) * (direction[a] as number)),
+    );
   }
   return Math.max(1, dimension);
 }

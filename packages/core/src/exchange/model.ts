@@ -71,7 +71,10 @@ export function classesNamed(
   const pair = between && [...between].sort().join(" ");
   return table.shells
     .flatMap(({ classes }) => classes)
-    .filter(({ name, shell, labels }) => (name === bond || String(shell) === bond) && (pair === null || labels.join(" ") === pair));
+    .filter(
+      ({ name, shell, labels }) =>
+        (name === bond || String(shell) === bond) && (pair === null || labels.join(" ") === pair),
+    );
 }
 
 function noBond(table: BondTable, { bond, between, where }: GivenCoupling): Problem {

@@ -1,6 +1,6 @@
 import type { WaveVector } from "../kvectors/index.js";
-import type { SpaceGroup } from "../spacegroups/index.js";
 import { roundNumber } from "../numbers/index.js";
+import type { SpaceGroup } from "../spacegroups/index.js";
 import { interactionOf, lowestBranch } from "./interaction.js";
 import type { DiagramPoint } from "./phase-diagram.js";
 import { kappaOfVector, placedVector } from "./placing.js";

@@ -66,8 +66,8 @@ export async function phaseDiagram(
   const modelAt = (values: readonly number[]) =>
     balancedModel(
       withConstants(
-      model,
-      Object.fromEntries(axes.flatMap(({ classes }, axis) => classes.map((name) => [name, values[axis] as number]))),
+        model,
+        Object.fromEntries(axes.flatMap(({ classes }, axis) => classes.map((name) => [name, values[axis] as number]))),
       ),
       prepared,
       host,
@@ -99,6 +99,10 @@ export async function phaseDiagram(
     host.progress?.(index + 1, total, "phase diagram");
   }
   const one = axes.length === 1 && frame.rank > 0;
-  const boundaries = one ? await phaseBoundaries(points, { group: model.table.group, frame, modelAt, pointAt, kindForm }) : axes.length === 1 ? [] : null;
+  const boundaries = one
+    ? await phaseBoundaries(points, { group: model.table.group, frame, modelAt, pointAt, kindForm })
+    : axes.length === 1
+      ? []
+      : null;
   return { freeDirections: 3 - frame.rank, axes, phases, points, boundaries };
 }

@@ -1,12 +1,20 @@
-import { isExactWaveVector, numericWaveVector, parseWaveVector, placeWaveVector, plainestRepresentative, type WaveVector } from "../kvectors/index.js";
-import { computedKSnap } from "../numbers/index.js";
+import {
+  isExactWaveVector,
+  numericWaveVector,
+  parseWaveVector,
+  placeWaveVector,
+  plainestRepresentative,
+  type WaveVector,
+} from "../kvectors/index.js";
+import { computedKSnap, toNumber } from "../numbers/index.js";
 import { fromPrimitiveRow, type SpaceGroup } from "../spacegroups/index.js";
-import { toNumber } from "../numbers/index.js";
 
 /** `κ = k B` of numbers: components in the dual of the primitive basis. */
 export function kappaOf(group: SpaceGroup, k: readonly number[]): number[] {
   const { vectors, denominator } = group.lattice;
-  return vectors.map((vector) => vector.reduce((sum, entry, axis) => sum + entry * (k[axis] as number), 0) / denominator);
+  return vectors.map(
+    (vector) => vector.reduce((sum, entry, axis) => sum + entry * (k[axis] as number), 0) / denominator,
+  );
 }
 
 /** The numbers of a wave vector as κ; throws for open letters, which callers have refused. */

@@ -61,7 +61,10 @@ function lineStep(
     if (next.value <= here.value + 1e-4 * share * fall && next.value < here.value)
       return { x: trial as Float64Array<ArrayBuffer>, here: next };
     // Below rounding the values tell nothing; a slope that shrinks does.
-    if (Math.abs(next.value - here.value) <= 1e-14 * Math.abs(here.value) && Math.hypot(...next.slope) < 0.5 * Math.hypot(...here.slope))
+    if (
+      Math.abs(next.value - here.value) <= 1e-14 * Math.abs(here.value) &&
+      Math.hypot(...next.slope) < 0.5 * Math.hypot(...here.slope)
+    )
       return { x: trial as Float64Array<ArrayBuffer>, here: next };
   }
   return null;

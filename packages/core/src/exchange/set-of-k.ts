@@ -44,7 +44,9 @@ export function minimumSet(
     dimension,
     vectors: ordered(chosen.map(vectorAt)),
     manifolds:
-      dimension === 0 || dimension === 3 || test.withoutManifolds ? [] : wholeManifolds(group, at, test.limit, dimension),
+      dimension === 0 || dimension === 3 || test.withoutManifolds
+        ? []
+        : wholeManifolds(group, at, test.limit, dimension),
     free: frame.dual.slice(frame.rank),
   };
 }

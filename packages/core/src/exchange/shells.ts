@@ -21,12 +21,7 @@ const mostBonds = 20_000;
  *
  * @throws `invalid-cell`, `cell-contradicts-group`; `invalid-argument` for a reach with too many bonds or none
  */
-export function bondTable(
-  group: SpaceGroup,
-  cell: Cell,
-  orbits: readonly SiteOrbit[],
-  limits: ShellLimits,
-): BondTable {
+export function bondTable(group: SpaceGroup, cell: Cell, orbits: readonly SiteOrbit[], limits: ShellLimits): BondTable {
   const atoms = magneticAtoms(orbits);
   const metric = invertSymmetric(reciprocalFrame(group, cell).metric);
   const wanted = limits.shells ?? Number.POSITIVE_INFINITY;
@@ -84,7 +79,9 @@ function bondsWithin(
 
 /** Lengths of the shells: a new one begins where the next bond is longer by more than the tolerance. */
 function shellLengths(sorted: readonly number[]): number[] {
-  const starts = sorted.filter((length, index) => index === 0 || length - (sorted[index - 1] as number) > sameBondAngstrom);
+  const starts = sorted.filter(
+    (length, index) => index === 0 || length - (sorted[index - 1] as number) > sameBondAngstrom,
+  );
   return starts;
 }
 
@@ -146,8 +143,10 @@ function bondClass(group: SpaceGroup, atoms: readonly ExchangeAtom[], found: Fou
     neighbours: [...new Set(labels)].map((one) => ({
       label: one,
       count:
-        found.bonds.reduce((sum, { from, to }) => sum + (label(from) === one ? 1 : 0) + (label(to) === one ? 1 : 0), 0) /
-        atoms.filter((atom) => atom.label === one).length,
+        found.bonds.reduce(
+          (sum, { from, to }) => sum + (label(from) === one ? 1 : 0) + (label(to) === one ? 1 : 0),
+          0,
+        ) / atoms.filter((atom) => atom.label === one).length,
     })),
     vector: [at(0), at(1), at(2)],
   };

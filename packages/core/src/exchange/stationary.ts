@@ -76,7 +76,9 @@ export async function stationaryConstants(
   const values = k.values ?? [];
   const lines = letters.map((letter, index) => lineOf(model, k, letter, index));
   const { scale } = interactionOf(model);
-  const relations = lines.map((line, index) => relationOf(model, line, scale, letters[index] as number, values[index] as number));
+  const relations = lines.map((line, index) =>
+    relationOf(model, line, scale, letters[index] as number, values[index] as number),
+  );
   const slopes = lines.map((line) => slopeAt(model, line, scale));
   const needed = letters.length !== 1 ? [] : await neededConstants(model, lines[0] as Line, options, host);
   return {
@@ -108,7 +110,6 @@ function lineOf(model: ExchangeModel, k: WaveVector, letter: number, index: numb
     );
   };
   const [from, to] = [at(0), at(1)];
-  void letter;
   return { at, direction: to.map((entry, axis) => entry - (from[axis] as number)) };
 }
 
@@ -150,7 +151,13 @@ function alone(model: ExchangeModel, index: number): ExchangeModel {
   return { ...model, couplings, potentials: model.potentials.map(() => 0) };
 }
 
-function relationOf(model: ExchangeModel, line: Line, scale: number, letter: number, value: number): StationaryRelation {
+function relationOf(
+  model: ExchangeModel,
+  line: Line,
+  scale: number,
+  letter: number,
+  value: number,
+): StationaryRelation {
   const each = model.couplings.map((_, index) => alone(model, index));
   const branches = branchesAt(model, line.at(0));
   const count = levelSize(branches, scale);
@@ -159,7 +166,9 @@ function relationOf(model: ExchangeModel, line: Line, scale: number, letter: num
     letter: parameterNames[letter as 0 | 1 | 2],
     slopes: each.map((only) => roundNumber(slopeOf(only, branches, count, line))),
     curvatures: each.map((only) =>
-      roundNumber(Number(((means(only, step) - 2 * means(only, 0) + means(only, -step)) / (step * step)).toPrecision(7))),
+      roundNumber(
+        Number(((means(only, step) - 2 * means(only, 0) + means(only, -step)) / (step * step)).toPrecision(7)),
+      ),
     ),
     cosines: cosineForm(model, line, value),
   };
@@ -175,7 +184,8 @@ function slopeOf(only: ExchangeModel, branches: ExchangeBranches, count: number,
     if (j === 0) continue;
     for (const { from, to, translation } of bonds.bonds) {
       const turns = dot(translation, kappa);
-      const factor = -2 * Math.PI * dot(translation, direction) * j * (only.lengths[from] as number) * (only.lengths[to] as number);
+      const factor =
+        -2 * Math.PI * dot(translation, direction) * j * (only.lengths[from] as number) * (only.lengths[to] as number);
       const [re, im] = [factor * Math.sin(2 * Math.PI * turns), factor * Math.cos(2 * Math.PI * turns)];
       real[from * size + to] = (real[from * size + to] as number) + re;
       real[to * size + from] = (real[to * size + from] as number) + re;
@@ -275,7 +285,9 @@ function cosineForm(model: ExchangeModel, { at, direction }: Line, value: number
     return sums;
   });
   if (sines.some((sums) => [...sums].some(([key, sum]) => key < 0 && Math.abs(sum) > 1e-9))) return null;
-  const multiples = sines.flatMap((sums) => [...sums].filter(([key, sum]) => key > 0 && Math.abs(sum) > 1e-9).map(([key]) => key));
+  const multiples = sines.flatMap((sums) =>
+    [...sums].filter(([key, sum]) => key > 0 && Math.abs(sum) > 1e-9).map(([key]) => key),
+  );
   if (multiples.length === 0) return null;
   const smallest = Math.min(...multiples);
   if (multiples.some((one) => Math.abs(one / smallest - Math.round(one / smallest)) > 1e-9)) return null;

@@ -50,10 +50,15 @@ export function zoneActions(group: SpaceGroup, frame: ZoneFrame): number[][] {
   for (const rotation of group.primitive.rotations) {
     const inverse = invertUnimodular(rotation);
     const columns = Array.from({ length: rank }, (_, a) => {
-      const kappa = fromZone(frame, Array.from({ length: rank }, (_, b) => (a === b ? 1 : 0)));
+      const kappa = fromZone(
+        frame,
+        Array.from({ length: rank }, (_, b) => (a === b ? 1 : 0)),
+      );
       return toZone(
         frame,
-        [0, 1, 2].map((axis) => kappa.reduce((sum, entry, row) => sum + entry * (inverse[3 * row + axis] as number), 0)),
+        [0, 1, 2].map((axis) =>
+          kappa.reduce((sum, entry, row) => sum + entry * (inverse[3 * row + axis] as number), 0),
+        ),
       );
     });
     for (const sign of [1, -1]) {
@@ -78,7 +83,9 @@ function bisectors(
   const origin = toCartesian(frame, start);
   const found: (HalfSpace & { readonly distance: number })[] = [];
   for (const action of actions) {
-    const image = start.map((_, row) => start.reduce((sum, entry, b) => sum + (action[row * rank + b] as number) * entry, 0));
+    const image = start.map((_, row) =>
+      start.reduce((sum, entry, b) => sum + (action[row * rank + b] as number) * entry, 0),
+    );
     const step = [0, 1, 2].map((a) => (a < rank ? (image[a] as number) - (start[a] as number) : 0));
     visitBall(metric, step, within * within, (n1, n2, n3, square) => {
       const length = Math.sqrt(square);
@@ -161,4 +168,3 @@ export function sameZonePoint(a: readonly number[], b: readonly number[], within
     return Math.abs(step - Math.round(step)) < within;
   });
 }
-

@@ -124,7 +124,8 @@ function closedWalks(atoms: number, bonds: readonly Bond[]): { cycles: number[][
 
 /** A basis of Z³ whose first rows span the same space as the cycles. */
 function adaptedBasis(cycles: readonly (readonly number[])[]): { rows: number[][]; rank: 0 | 1 | 2 | 3 } {
-  const reduced = cycles.length === 0 ? [] : hermiteNormalForm(cycles, 3).filter((row) => row.some((entry) => entry !== 0));
+  const reduced =
+    cycles.length === 0 ? [] : hermiteNormalForm(cycles, 3).filter((row) => row.some((entry) => entry !== 0));
   const unit = [
     [1, 0, 0],
     [0, 1, 0],
@@ -142,7 +143,12 @@ function adaptedBasis(cycles: readonly (readonly number[])[]): { rows: number[][
 function completed(vector: readonly number[]): number[][] {
   const [a, b, c] = primitiveVector(vector) as [number, number, number];
   const { divisor: g, first: u, second: v } = bezout(a, b);
-  if (g === 0) return [[a, b, c], [1, 0, 0], [0, 1, 0]];
+  if (g === 0)
+    return [
+      [a, b, c],
+      [1, 0, 0],
+      [0, 1, 0],
+    ];
   const { first: s, second: t } = bezout(g, c);
   // det of these rows is s g + t c = 1 up to sign.
   return [

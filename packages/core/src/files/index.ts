@@ -35,6 +35,7 @@ export {
   structureBlocksOf,
 } from "./cif-files.js";
 export { parseFourierComponents } from "./fourier-components.js";
+export { type IntensityList, type ListedIntensity, parseIntensityList } from "./intensity-list.js";
 export type { MagneticAtom, MagneticStructure } from "./magnetic-cif/read.js";
 export type {
   CommensurateSymmetry,
@@ -45,7 +46,6 @@ export type {
   MomentWave,
 } from "./magnetic-cif/types.js";
 export { magneticCifText } from "./magnetic-cif/write.js";
-export { type IntensityList, type ListedIntensity, parseIntensityList } from "./intensity-list.js";
 export { readPeakKind } from "./peak-kind.js";
 export { type PeakListOptions, parsePeakList } from "./peak-list.js";
 export { parseScanTable, type ScanTable } from "./scan-table.js";

@@ -26,7 +26,8 @@ interface Column {
 }
 
 const temperatureName = /^(t|temp|temperature)(\s*[/([]\s*k\s*[)\]]?)?$/i;
-const uncertaintyName = /^(su|s\.u\.|sigma|sig|σ|error|err|esd|uncertainty|±|\+-)([\s([_].*)?$|^.*[\s_-](su|s\.u\.|sigma|error|esd|uncertainty)$/i;
+const uncertaintyName =
+  /^(su|s\.u\.|sigma|sig|σ|error|err|esd|uncertainty|±|\+-)([\s([_].*)?$|^.*[\s_-](su|s\.u\.|sigma|error|esd|uncertainty)$/i;
 const kName = /^(k|k[xyz]|[uvw])(\s*[/([].*)?$/i;
 /** What stands in a cell that has no value. */
 const missing = /^([-–—.]|nan)?$/i;
@@ -47,7 +48,8 @@ export function parseScanTable(text: string, file: string): ScanTable {
     note(problems, "file-empty", "the scan holds nothing but comments", { where: { line: 1, column: 1 } });
     throwProblems(problems);
   }
-  const headed = first !== undefined && readNumber(first.fields[0]?.text ?? "") === null && decimalCommaOf(first) === null;
+  const headed =
+    first !== undefined && readNumber(first.fields[0]?.text ?? "") === null && decimalCommaOf(first) === null;
   const data = headed ? rows.slice(1) : rows;
   const columns = headed ? headerColumns(first as Row, problems) : plainColumns(data);
   if (columns.filter(({ role }) => role === "intensity" || role === "k").length === 0)
@@ -148,14 +150,27 @@ function readRow(row: Row, columns: readonly Column[], problems: ProblemList): (
     const empty = field === undefined || missing.test(field.text);
     if (empty && role !== "temperature") return null;
     const number = field === undefined ? null : readNumber(field.text);
-    const wrong = number === null || (role === "temperature" && !(number.value > 0)) || (role === "uncertainty" && !(number.value > 0));
+    const wrong =
+      number === null ||
+      (role === "temperature" && !(number.value > 0)) ||
+      (role === "uncertainty" && !(number.value > 0));
     if (!wrong) return number;
-    note(problems, "invalid-scan", `\`${field?.text ?? ""}\` is no ${role === "uncertainty" ? "uncertainty" : role === "temperature" ? "temperature" : `number for ${name}`}`, {
-      where: { line: row.line, column: field?.column ?? 1 },
-      expected: role === "temperature" ? "a temperature in K, above 0" : role === "uncertainty" ? "a number above 0" : "a number such as 132.5 or 132(4)",
-      found: field?.text ?? "nothing",
-      remedy: "correct the value; what is no data goes behind #, and - stands for a value that is not there",
-    });
+    note(
+      problems,
+      "invalid-scan",
+      `\`${field?.text ?? ""}\` is no ${role === "uncertainty" ? "uncertainty" : role === "temperature" ? "temperature" : `number for ${name}`}`,
+      {
+        where: { line: row.line, column: field?.column ?? 1 },
+        expected:
+          role === "temperature"
+            ? "a temperature in K, above 0"
+            : role === "uncertainty"
+              ? "a number above 0"
+              : "a number such as 132.5 or 132(4)",
+        found: field?.text ?? "nothing",
+        remedy: "correct the value; what is no data goes behind #, and - stands for a value that is not there",
+      },
+    );
     return null;
   });
 }

@@ -39,12 +39,17 @@ function readBond(
 ): string | null {
   if ((shell === null) === (bond === null)) {
     const both = shell !== null;
-    note(problems, both ? "conflicting-arguments" : "missing-key", `\`${record.place.path}\` needs \`shell\` or \`bond\``, {
-      where: where((bond ?? record).place),
-      expected: "the number of a shell, or one kind of its bonds such as 2b",
-      found: both ? "both" : "neither",
-      remedy: both ? "leave one of them out" : example,
-    });
+    note(
+      problems,
+      both ? "conflicting-arguments" : "missing-key",
+      `\`${record.place.path}\` needs \`shell\` or \`bond\``,
+      {
+        where: where((bond ?? record).place),
+        expected: "the number of a shell, or one kind of its bonds such as 2b",
+        found: both ? "both" : "neither",
+        remedy: both ? "leave one of them out" : example,
+      },
+    );
     return null;
   }
   if (shell !== null) {

@@ -3,7 +3,7 @@ import type { Cell } from "../spacegroups/index.js";
 import { ionFault } from "./ion-names.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { openSection } from "./study-section.js";
-import type { StudySite } from "./study-types.js";
+import type { StudyAtom, StudySite } from "./study-types.js";
 import {
   asList,
   asNumber,
@@ -81,7 +81,35 @@ function readSite(node: TreeNode, lineOfLabel: Map<string, number | null>, probl
   const ionText = ion && readIon(ion, problems);
   const spin = section.get("spin");
   const spinValue = spin && readSpin(spin, problems);
-  return label !== null && position ? { label, ion: ionText, position, spin: spinValue } : null;
+  const occupancy = readOccupancy(section.get("occupancy"), problems);
+  return label !== null && position ? { label, ion: ionText, position, spin: spinValue, occupancy } : null;
+}
+
+const atomExample = "for example - {label: O1, ion: O2-, at: [0.412, 1/4, 0.118], occupancy: 1}";
+
+/** `atoms: [{label, ion, at, occupancy}]`: what carries no moment. */
+export function readAtoms(node: TreeNode, problems: ProblemList): StudyAtom[] {
+  const list = asList(problems, node, "a list of atoms", atomExample);
+  if (!list) return [];
+  const lineOfLabel = new Map<string, number | null>();
+  return list.items.flatMap((item) => {
+    const record = asRecord(problems, item, "an atom with label and at", atomExample);
+    if (!record) return [];
+    const section = openSection("atoms", record, problems);
+    const label = readLabel(section.need("label", "the name of the atom, such as O1"), lineOfLabel, problems);
+    const at = section.need("at", "three coordinates such as [0, 1/4, 0.183]");
+    const position = at && readPosition(at, problems);
+    const ion = section.get("ion");
+    const ionText = ion && readIon(ion, problems);
+    const occupancy = readOccupancy(section.get("occupancy"), problems);
+    return label !== null && position ? [{ label, ion: ionText, position, occupancy }] : [];
+  });
+}
+
+const share: NumberLimits = { expected: "a share above 0, at most 1", allows: (value) => value > 0 && value <= 1 };
+
+function readOccupancy(node: TreeNode | null, problems: ProblemList): number | null {
+  return node && asNumber(problems, node, share);
 }
 
 function readIon(node: TreeNode, problems: ProblemList): string | null {

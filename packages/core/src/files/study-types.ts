@@ -16,6 +16,14 @@ export interface StudySite extends Site {
   readonly position: RationalVector;
   /** Spin quantum number, a multiple of 1/2. */
   readonly spin: Rational | null;
+  /** Share of the site that the ion has; null where it is not said. */
+  readonly occupancy: number | null;
+}
+
+/** An atom that carries no moment: it goes into written files. */
+export interface StudyAtom extends Site {
+  readonly ion: string | null;
+  readonly occupancy: number | null;
 }
 
 /** The list of satellite peaks and how it is to be read; what is null is not said in the study. */
@@ -77,6 +85,7 @@ export interface Study {
   readonly group: string | null;
   readonly cell: Cell | null;
   readonly sites: readonly StudySite[];
+  readonly atoms: readonly StudyAtom[];
   /** Each wave vector as text for `parseWaveVector`; null when it is to be searched. */
   readonly k: readonly string[] | null;
   readonly peaks: StudyPeaks | null;

@@ -5,7 +5,7 @@ import { laterSections, readExclude, readImpurities, readIntensities } from "./s
 import { checkMeaning } from "./study-meaning.js";
 import { emptySearch, readPeaks, readSearch } from "./study-peaks.js";
 import { openSection, type Section } from "./study-section.js";
-import { readCell, readSites, readStructureFile } from "./study-structure.js";
+import { readAtoms, readCell, readSites, readStructureFile } from "./study-structure.js";
 import type { Study, StudyPlace } from "./study-types.js";
 import { asRecord, asText } from "./study-values.js";
 import { readWaveVectors } from "./study-wave-vectors.js";
@@ -74,6 +74,7 @@ function readStudy(section: Section, file: string, places: Map<string, StudyPlac
     group: text("group", "a space group such as P n m a"),
     cell: read("cell", readCell),
     sites: read("sites", readSites) ?? [],
+    atoms: read("atoms", readAtoms) ?? [],
     k: k?.map((one) => one.text) ?? null,
     peaks: read("peaks", readPeaks),
     search: read("search", readSearch) ?? emptySearch,

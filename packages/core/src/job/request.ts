@@ -65,6 +65,8 @@ export interface Request {
   /** `decompose`: path of a magnetic CIF, and its axes in those of the parent where the file does not say them. */
   readonly moments?: string | null;
   readonly child?: string | null;
+  /** Only a name for messages: `decompose` takes the parent as its `study`. */
+  readonly parent?: string | null;
   /** `export`: id of a configuration, and the version of the standard. */
   readonly configuration?: string | null;
   readonly cif?: string | null;
@@ -140,6 +142,7 @@ export const argumentNames: { readonly [field in RequestField]: string } = {
   limit: "--limit",
   moments: "FILE",
   child: "--child",
+  parent: "--parent",
   configuration: "--configuration",
   cif: "--cif",
   constants: "--j",

@@ -1,6 +1,15 @@
 import { choleskyFactor, choleskyInverse } from "../algorithms/index.js";
 import { roundNumber } from "../numbers/index.js";
-import { bestLaw, betaGrid, type LawAt, lawAtBeta, lawAtTransition, profileUncertainty, type ScanPoints, transitionGrid } from "./power-law.js";
+import {
+  bestLaw,
+  betaGrid,
+  type LawAt,
+  lawAtBeta,
+  lawAtTransition,
+  profileUncertainty,
+  type ScanPoints,
+  transitionGrid,
+} from "./power-law.js";
 import { chiSquaredTail, fitPolynomial, median, noiseOf } from "./statistics.js";
 import type { Measured, OnsetOptions, PowerLaw, ScanSeries, SeriesOnset } from "./types.js";
 
@@ -24,7 +33,10 @@ const onsetMargin = 6;
 /** What a peak does with temperature, and the power law where it has an onset. */
 export function fitSeries(series: ScanSeries, options: OnsetOptions = {}): FittedSeries {
   const count = series.temperatures.length;
-  const undecided = (evidence: number): FittedSeries => ({ onset: plain(series, "undecided", evidence), profile: null });
+  const undecided = (evidence: number): FittedSeries => ({
+    onset: plain(series, "undecided", evidence),
+    profile: null,
+  });
   if (count < fewestPoints) return undecided(0);
   const given = series.uncertainties !== null;
   const [low, high] = limitsOf(series.temperatures);
@@ -39,13 +51,18 @@ export function fitSeries(series: ScanSeries, options: OnsetOptions = {}): Fitte
   const [constant, line, parabola] = [0, 1, 2].map((degree) => fitPolynomial(x, series.values, su, degree));
   const price = Math.log(count);
   // Without given uncertainties, or with too small ones, the best description sets the scale.
-  const scale = Math.max(given ? 1 : 0, Math.min(law.chiSquared / (count - 4), (parabola?.chiSquared ?? 0) / (count - 3)));
+  const scale = Math.max(
+    given ? 1 : 0,
+    Math.min(law.chiSquared / (count - 4), (parabola?.chiSquared ?? 0) / (count - 3)),
+  );
   const gain = (chiSquared: number, parameters: number) =>
     scale === 0 ? 0 : (chiSquared - law.chiSquared) / scale - (4 - parameters) * price;
   const smooth = Math.min(...[constant, line, parabola].map((one, degree) => gain(one?.chiSquared ?? 0, degree + 1)));
   const evidence = roundNumber(Number((smooth - onsetMargin).toPrecision(6)));
   if (evidence > 0) return withLaw(series, points, { law, given, evidence, options });
-  const tilt = ((constant?.chiSquared ?? 0) - Math.min(line?.chiSquared ?? 0, (parabola?.chiSquared ?? 0) + price * scale)) / (scale || 1);
+  const tilt =
+    ((constant?.chiSquared ?? 0) - Math.min(line?.chiSquared ?? 0, (parabola?.chiSquared ?? 0) + price * scale)) /
+    (scale || 1);
   if (tilt > price + 9) return { onset: plain(series, "gradual", evidence), profile: null };
   const [level, levelSu] = [constant?.coefficients[0] ?? 0, (constant?.su[0] ?? 0) * Math.sqrt(scale)];
   return { onset: plain(series, Math.abs(level) > 4 * levelSu ? "constant" : "absent", evidence), profile: null };
@@ -73,12 +90,11 @@ function weighed(points: ScanPoints, low: number, high: number): ScanPoints {
   let current = points;
   for (let round = 0; round < 2; round++) {
     const law = bestLaw(current, low, high);
-    const rows = current.temperatures
-      .map((temperature, n) => {
-        const below = 1 - temperature / law.transition;
-        const calculated = law.background + (below > 0 ? law.amplitude * below ** (2 * law.beta) : 0);
-        return { calculated, residual: Math.abs((current.values[n] as number) - calculated) };
-      });
+    const rows = current.temperatures.map((temperature, n) => {
+      const below = 1 - temperature / law.transition;
+      const calculated = law.background + (below > 0 ? law.amplitude * below ** (2 * law.beta) : 0);
+      return { calculated, residual: Math.abs((current.values[n] as number) - calculated) };
+    });
     const sorted = [...rows].sort((a, b) => a.calculated - b.calculated);
     const third = Math.floor(sorted.length / 3);
     if (third < 5) return current;
@@ -236,7 +252,9 @@ function linearUncertainties(points: ScanPoints, law: LawAt, scale: number) {
     }),
   ];
   const normal = columns.flatMap((a) =>
-    columns.map((b) => a.reduce((sum, entry, n) => sum + (entry * (b[n] as number)) / (points.su[n] as number) ** 2, 0)),
+    columns.map((b) =>
+      a.reduce((sum, entry, n) => sum + (entry * (b[n] as number)) / (points.su[n] as number) ** 2, 0),
+    ),
   );
   const covariance = inverseOf(normal);
   const su = (index: number) =>

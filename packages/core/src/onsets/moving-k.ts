@@ -6,12 +6,12 @@ const fewestPoints = 5;
 const fewestOnPlateau = 4;
 const leastProbability = 0.01;
 const largestDenominator = 8;
+/** In χ²: what a level stretch must gain over one smooth curve. */
+const leastGain = 6;
 
 /**
  * Does a component of k stay, slide, or lock in? Constant: all values scatter about their mean as their uncertainties
- * say. Else plateaus are sought, the longest first: a run of temperatures whose values do so while the values beyond
- * its end leave it, and in which a straight line is flatter than outside by three s.u. A plateau on a simple fraction
- * n/m, m ≤ 8, is a lock-in.
+ * say. Else level stretches are sought; one on a simple fraction n/m, m ≤ 8, is a lock-in.
  */
 export function movingK(series: ScanSeries): KAgainstTemperature {
   const { name, temperatures, values } = series;
@@ -24,7 +24,7 @@ export function movingK(series: ScanSeries): KAgainstTemperature {
   const all = run(values, su, 0, values.length);
   if (all.probability >= leastProbability)
     return { ...base, behaviour: "constant", plateaus: [plateau(temperatures, all)], slope: null };
-  const plateaus = plateausOf(temperatures, values, su);
+  const plateaus = plateausOf({ temperatures, values, su }).map((one) => plateau(temperatures, one));
   const moving = temperatures.flatMap((one, n) =>
     plateaus.some(({ from, to }) => one >= from && one <= to) ? [] : [n],
   );
@@ -32,7 +32,14 @@ export function movingK(series: ScanSeries): KAgainstTemperature {
     ...base,
     behaviour: plateaus.some(({ fraction }) => fraction !== null) ? "lock-in" : "sliding",
     plateaus,
-    slope: moving.length < 3 ? null : slopeOf(moving.map((n) => temperatures[n] as number), moving.map((n) => values[n] as number), moving.map((n) => su[n] as number)),
+    slope:
+      moving.length < 3
+        ? null
+        : slopeOf(
+            moving.map((n) => temperatures[n] as number),
+            moving.map((n) => values[n] as number),
+            moving.map((n) => su[n] as number),
+          ),
   };
 }
 
@@ -43,6 +50,7 @@ interface Run {
   readonly su: number;
   /** Median uncertainty of a single value. */
   readonly single: number;
+  readonly chiSquared: number;
   readonly probability: number;
 }
 
@@ -58,6 +66,7 @@ function run(values: readonly number[], su: readonly number[], start: number, en
     mean,
     su: Math.sqrt(1 / total),
     single: median(su.slice(start, end)),
+    chiSquared,
     probability: chiSquaredTail(chiSquared, own.length - 1),
   };
 }
@@ -82,37 +91,61 @@ function simpleFraction(value: number, within: number): readonly [number, number
   return null;
 }
 
-function plateausOf(temperatures: readonly number[], values: readonly number[], su: readonly number[]): Plateau[] {
-  const found: Run[] = [];
-  const count = values.length;
-  for (let length = count - 1; length >= fewestOnPlateau; length--)
-    for (let start = 0; start + length <= count; start++) {
-      const one = run(values, su, start, start + length);
-      if (found.some((other) => one.start < other.end && other.start < one.end)) continue;
-      if (one.probability >= leastProbability && flatter(temperatures, values, su, one)) found.push(one);
+/**
+ * Level stretches of a series that moves. A stretch counts where a constant with free curves before and behind it
+ * describes all values better than one smooth curve, by G. Schwarz's criterion χ² + p ln N (Ann. Stat. 6 (1978) 461) with
+ * both ends counted as parameters; then what lies before and behind is looked at in the same way.
+ */
+function plateausOf(data: Weighed, offset = 0): Run[] {
+  const count = data.values.length;
+  if (count < fewestOnPlateau + 1) return [];
+  const price = Math.log(count);
+  const smooth = smoothest(data, 0, count, 4, price);
+  const before = Array.from({ length: count + 1 }, (_, end) => smoothest(data, 0, end, 2, price));
+  const behind = Array.from({ length: count + 1 }, (_, start) => smoothest(data, start, count, 2, price));
+  let best: { readonly run: Run; readonly value: number } | null = null;
+  for (let start = 0; start + fewestOnPlateau <= count; start++)
+    for (let end = start + fewestOnPlateau; end <= count; end++) {
+      if (start === 0 && end === count) continue;
+      const one = run(data.values, data.su, start, end);
+      if (one.probability < leastProbability) continue;
+      const ends = (start > 0 ? 1 : 0) + (end < count ? 1 : 0);
+      const value = one.chiSquared + (1 + ends) * price + (before[start] as number) + (behind[end] as number);
+      if (best === null || value < best.value) best = { run: one, value };
     }
-  return found.sort((a, b) => a.start - b.start).map((one) => plateau(temperatures, one));
+  if (best === null || best.value > smooth - leastGain) return [];
+  const { start, end } = best.run;
+  return [
+    ...plateausOf(part(data, 0, start), offset),
+    { ...best.run, start: start + offset, end: end + offset },
+    ...plateausOf(part(data, end, count), offset + end),
+  ];
 }
 
-/** Whether k is level within the run and moves just outside it. */
-function flatter(
-  temperatures: readonly number[],
-  values: readonly number[],
-  su: readonly number[],
-  { start, end }: Run,
-): boolean {
-  const part = (from: number, to: number) =>
-    slopeOf(temperatures.slice(from, to), values.slice(from, to), su.slice(from, to));
-  const inside = part(start, end);
-  if (inside === null || Math.abs(inside.value) > 2.5 * (inside.su ?? 0)) return false;
-  const length = Math.max(4, end - start);
-  // The neighbours on either side, with the last points of the run as their foot.
-  const sides = [
-    part(Math.max(0, start - length), start + 1),
-    part(end - 1, Math.min(values.length, end + length)),
-  ].filter((one) => one !== null);
-  return sides.some(
-    ({ value, su: error }) => Math.abs(value - inside.value) > 3 * Math.hypot(error ?? 0, inside.su ?? 0),
+interface Weighed {
+  readonly temperatures: readonly number[];
+  readonly values: readonly number[];
+  readonly su: readonly number[];
+}
+
+function part({ temperatures, values, su }: Weighed, start: number, end: number): Weighed {
+  return { temperatures: temperatures.slice(start, end), values: values.slice(start, end), su: su.slice(start, end) };
+}
+
+/** The least χ² + p ln N of polynomials up to a degree; 0 for no points. */
+function smoothest(data: Weighed, start: number, end: number, degree: number, price: number): number {
+  const { temperatures, values, su } = part(data, start, end);
+  const count = values.length;
+  if (count === 0) return 0;
+  const middle = ((temperatures[0] as number) + (temperatures.at(-1) as number)) / 2;
+  const span = Math.max((temperatures.at(-1) as number) - (temperatures[0] as number), 1e-9);
+  const x = temperatures.map((one) => (2 * (one - middle)) / span);
+  const distinct = new Set(temperatures).size;
+  return Math.min(
+    ...Array.from(
+      { length: Math.min(degree, distinct - 1) + 1 },
+      (_, n) => fitPolynomial(x, values, su, n).chiSquared + (n + 1) * price,
+    ),
   );
 }
 

@@ -101,12 +101,21 @@ export function bestLaw(points: ScanPoints, from: number, to: number): LawAt {
   const ranked = grid
     .map((one) => ({ one, chiSquared: lawAtTransition(points, one, 6).chiSquared }))
     .sort((a, b) => a.chiSquared - b.chiSquared);
-  const gaps = [...new Map(ranked.slice(0, 5).map(({ one }) => gapAround(edges, one)).map((gap) => [gap[0], gap])).values()];
-  const ends = gaps
-    .slice(0, 3)
-    .map(([low, high]) =>
-      lawAtTransition(points, goldenSection((one) => lawAtTransition(points, one).chiSquared, low, high, 20), 30),
-    );
+  const gaps = [
+    ...new Map(
+      ranked
+        .slice(0, 5)
+        .map(({ one }) => gapAround(edges, one))
+        .map((gap) => [gap[0], gap]),
+    ).values(),
+  ];
+  const ends = gaps.slice(0, 3).map(([low, high]) =>
+    lawAtTransition(
+      points,
+      goldenSection((one) => lawAtTransition(points, one).chiSquared, low, high, 20),
+      30,
+    ),
+  );
   return ends.reduce((least, end) => (end.chiSquared < least.chiSquared ? end : least));
 }
 

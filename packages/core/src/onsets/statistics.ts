@@ -69,7 +69,8 @@ export function fitPolynomial(
     for (let a = 0; a < size; a++) {
       right[a] = (right[a] as number) + weight * (powers[a] as number) * (y[index] as number);
       const row = normal[a] as number[];
-      for (let b = 0; b < size; b++) row[b] = (row[b] as number) + weight * (powers[a] as number) * (powers[b] as number);
+      for (let b = 0; b < size; b++)
+        row[b] = (row[b] as number) + weight * (powers[a] as number) * (powers[b] as number);
     }
   });
   const inverse = invert(normal);

@@ -1,7 +1,7 @@
+import { goldenSection } from "../algorithms/index.js";
 import { roundNumber } from "../numbers/index.js";
 import type { FittedSeries } from "./fit-series.js";
 import { profileUncertainty } from "./power-law.js";
-import { goldenSection } from "../algorithms/index.js";
 import { chiSquaredTail } from "./statistics.js";
 import type { Transition } from "./types.js";
 
@@ -61,7 +61,8 @@ function fewestGroups(members: readonly Member[]): Member[][] {
       const before = best[start] as { groups: Member[][]; rise: number };
       const way = { groups: [...before.groups, group], rise: before.rise + rise };
       const fewer = chosen === null || way.groups.length < chosen.groups.length;
-      if (fewer || (chosen !== null && way.groups.length === chosen.groups.length && way.rise < chosen.rise)) chosen = way;
+      if (fewer || (chosen !== null && way.groups.length === chosen.groups.length && way.rise < chosen.rise))
+        chosen = way;
     }
     best.push(chosen as { groups: Member[][]; rise: number });
   }

@@ -92,11 +92,15 @@ export async function locate(
 function halfWavelengthWarning(group: SpaceGroup, first: Candidate | undefined): readonly Problem[] {
   if (first === undefined || first.onNuclearLines || !isHalfLattice(group, first.k)) return [];
   return [
-    problem("half-wavelength", "every satellite of this k lies on the λ/2 image of a nuclear position", {
-      expected: "peaks that neutrons of half the wavelength cannot give",
-      found: "positions alone, which cannot exclude them",
-      remedy: "measure with a filter or another wavelength, or above the ordering temperature",
-    }),
+    problem(
+      "half-wavelength",
+      "2k is a reciprocal lattice vector: every satellite lies halfway to one, allowed or not",
+      {
+        expected: "peaks that neutrons of half the wavelength cannot give",
+        found: "positions alone, which cannot exclude them",
+        remedy: "measure with a filter or another wavelength, or above the ordering temperature",
+      },
+    ),
   ];
 }
 

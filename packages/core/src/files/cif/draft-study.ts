@@ -70,6 +70,8 @@ function cellLines({ cell: written }: CifStructure, cell: Cell | null): string[]
   return [...(uncertain ? [`# Å and degrees; in the CIF ${shown}.`] : ["# Å and degrees."]), `cell: {${values}}`];
 }
 
+const sharedOrbit = "stands on the orbit of";
+
 function draftSites({ sites }: CifStructure, group: SpaceGroup, cell: Cell | null): DraftSite[] {
   const taken = new Map<string, string>();
   let active = 0;
@@ -79,7 +81,7 @@ function draftSites({ sites }: CifStructure, group: SpaceGroup, cell: Cell | nul
     if ((likely ? active : passive) >= writtenSites) return [];
     const orbit = orbitOf(site, group, cell);
     const owner = likely && orbit ? ownerOf(orbit, taken) : null;
-    const shared = owner === null ? null : `stands on the orbit of ${owner}`;
+    const shared = owner === null ? null : `${sharedOrbit} ${owner}`;
     if (likely && shared === null) active += 1;
     else passive += 1;
     const reason = site.position === null ? "has no coordinates" : (shared ?? momentReason(site.ion));
@@ -89,8 +91,10 @@ function draftSites({ sites }: CifStructure, group: SpaceGroup, cell: Cell | nul
 
 function siteLines(sites: readonly DraftSite[]): string[] {
   const active = sites.filter((one) => one.active);
-  const asked = sites.filter((one) => !one.active && momentChance(one.site.ion) !== "none");
-  const others = sites.filter((one) => !one.active && momentChance(one.site.ion) === "none");
+  const shared = sites.filter((one) => !one.active && one.because.startsWith(sharedOrbit));
+  const asked = sites.filter((one) => !one.active && !shared.includes(one) && momentChance(one.site.ion) !== "none");
+  const others = sites.filter((one) => !one.active && one.site.position !== null && !asked.includes(one));
+  const placeless = sites.filter((one) => !one.active && one.site.position === null && !asked.includes(one));
   const lines = (list: readonly DraftSite[], mark: string) => list.map((one) => `${mark}  - ${siteText(one)}`);
   return [
     ...(active.length > 0
@@ -99,8 +103,15 @@ function siteLines(sites: readonly DraftSite[]): string[] {
     ...lines(active, ""),
     ...(asked.length > 0 ? ["# Do these carry a moment? Remove the # if so."] : []),
     ...lines(asked, "#"),
-    ...(others.length > 0 ? ["# Left out:"] : []),
-    ...lines(others, "#"),
+    ...(shared.length > 0
+      ? [
+          "# A site has one line above: of several ions on it, put the one whose moment counts there. All stand below too.",
+        ]
+      : []),
+    ...(others.length > 0 ? ["", "# The other atoms, for the files that are written.", "atoms:"] : []),
+    ...lines(others, ""),
+    ...(placeless.length > 0 ? ["# Without coordinates:"] : []),
+    ...lines(placeless, "#"),
   ];
 }
 
@@ -109,9 +120,10 @@ function siteText({ site, orbit, because }: DraftSite): string {
   const at = site.position === null ? "" : `, at: [${coordinates(site, site.position, orbit)}]`;
   const moved = orbit?.snapped ? `; in the CIF ${site.written.map(comment).join(" ")}` : "";
   const place = orbit === null ? "" : `${orbit.multiplicity} in the cell, symmetry ${orbit.siteSymmetryClass}`;
-  const occupied = site.occupancy === 1 ? "" : `; occupied by ${site.occupancy}`;
-  const note = `${place}${moved}${occupied}${place === "" ? "" : "; "}${because}`;
-  return `{label: ${scalar(site.label)}${ion}${at}}  # ${note}`;
+  const share =
+    site.occupancy === 1 || site.occupancy <= 0 || site.occupancy > 1 ? "" : `, occupancy: ${site.occupancy}`;
+  const note = `${place}${moved}${place === "" ? "" : "; "}${because}`;
+  return `{label: ${scalar(site.label)}${ion}${at}${share}}  # ${note}`;
 }
 
 /** The exact special position where the site was put on one, else the decimals as the CIF has them. */

@@ -14,6 +14,13 @@ import { remember, together, type Work } from "../work.js";
 
 /** `kvane decompose`: the moments of a magnetic CIF as irreps of the parent, their group, and the configuration they are. */
 export async function decomposeCommand(work: Work): Promise<DecomposeRecord> {
+  if (work.study === null && work.structure === null)
+    fail("missing-argument", "no parent structure was given", {
+      where: { argument: argumentNames.parent },
+      expected: "--parent with a study or the CIF of the nuclear structure",
+      found: "nothing",
+      remedy: "give --parent: its group, cell and sites are what the moments are held against",
+    });
   const { structure, group, given, sites } = await together({
     structure: () => structureOf(work),
     group: () => groupOf(work),

@@ -16,27 +16,31 @@ export function parentSitesOf(
   sites: readonly GivenSite[],
   orbits: readonly SiteOrbit[],
 ): ParentSites {
-  const spins = new Map((work.study?.sites ?? []).map(({ label, spin }) => [label, spin]));
-  const structure = work.structure?.structure ?? null;
-  const inFile = structure?.sites ?? [];
+  const ofStudy = new Map((work.study?.sites ?? []).map((site) => [site.label, site]));
+  const inFile = work.structure?.structure?.sites ?? [];
   const magnetic = orbits.map((orbit, index): NamedSite => {
     const label = sites[index]?.site.label ?? orbit.label;
+    const own = ofStudy.get(label);
     return {
       orbit,
       ion: sites[index]?.ion ?? null,
-      occupancy: inFile.find((site) => site.label === label)?.occupancy ?? 1,
-      spin: spins.get(label) ?? null,
+      occupancy: own?.occupancy ?? inFile.find((site) => site.label === label)?.occupancy ?? 1,
+      spin: own?.spin ?? null,
     };
   });
-  const taken = new Set(orbits.flatMap(({ positions }) => positions.map(textOf)));
+  const atoms = [
+    ...(work.study?.atoms ?? []),
+    ...inFile.map(({ label, ion, position, occupancy }) => ({ label, ion: ion?.text ?? null, position, occupancy })),
+  ];
+  // An equivalent atom that is listed twice stands there once; another ion on a site stands beside the first.
+  const taken = new Set(magnetic.flatMap(({ orbit, ion }) => orbit.positions.map((one) => `${textOf(one)} ${ion}`)));
   const others: NamedSite[] = [];
-  for (const { label, ion, position, occupancy } of inFile) {
+  for (const { label, ion, position, occupancy } of atoms) {
     if (position === null || orbits.some((orbit) => orbit.label === label)) continue;
     const orbit = orbitOrNull(group, { label, position }, cell);
-    // A second ion on a magnetic site is left to the magnetic one.
-    if (orbit === null || taken.has(textOf(orbit.position))) continue;
-    for (const one of orbit.positions) taken.add(textOf(one));
-    others.push({ orbit, ion: ion?.text ?? null, occupancy, spin: null });
+    if (orbit === null || taken.has(`${textOf(orbit.position)} ${ion}`)) continue;
+    for (const one of orbit.positions) taken.add(`${textOf(one)} ${ion}`);
+    others.push({ orbit, ion, occupancy: occupancy ?? 1, spin: null });
   }
   return { magnetic, others };
 }

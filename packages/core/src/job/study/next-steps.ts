@@ -144,6 +144,13 @@ function irrepStep(branches: readonly BranchRecord[]): string[] {
     ),
   );
   const sets = physicalSets(first.irreps).filter((set) => set.some((label) => allowed.has(label)));
+  const { sites } = first.modes;
+  const carries = (set: readonly string[], site: (typeof sites)[number]) =>
+    site.irreps.some(({ label, multiplicity }) => multiplicity > 0 && set.includes(label));
+  if (sites.length > 1 && sets.length > 0 && !sets.some((set) => sites.every((site) => carries(set, site))))
+    return [
+      `No irrep alone puts moments on all of ${sites.map(({ label }) => label).join(", ")}: if they all order with this k, two irreps are at work (kvane configurations --together).`,
+    ];
   if (sets.length < 2) return [];
   const pairs = sets.some(({ length }) => length > 1) ? ", a conjugate pair counted once," : "";
   return [

@@ -25,6 +25,8 @@ export function configurationsText(record: ConfigurationsRecord): string[] {
         ? modulatedTable(modulatedOnes(record))
         : configurationTable(commensurateOnes(record)),
       boundedLines(record),
+      [""],
+      legendLines(record),
     ),
     ...commensurateOnes(record).flatMap((one) => configurationSection(one)),
     ...modulatedOnes(record).flatMap(modulatedSection),
@@ -37,6 +39,19 @@ export function armsText(arms: ConfigurationsRecord["arms"]): string {
   return `arms ${arms.map((arm) => arm + 1).join(", ")} of the star`;
 }
 
+/** What the columns mean, in the words of `kvane help configurations`. */
+export function legendLines({ kind, parentSites }: ConfigurationsRecord): string[] {
+  const several = parentSites.filter(({ magnetic }) => magnetic).length > 1;
+  const common =
+    "index: in the parent with time reversal, the number of domains; free: real parameters of the irreps, of how many that " +
+    "the group allows. Net moment and polarization are Cartesian, x along a and z along c* of the parent";
+  return paragraph(
+    kind === "incommensurate"
+      ? `${common}.`
+      : `${common}; equal sizes: whether all moments of a site can be of one size${several ? "; sites: those that get moments" : ""}. Moments are along the axes of the child cell.`,
+  );
+}
+
 function boundedLines({ bounded }: ConfigurationsRecord): string[] {
   return bounded.length === 0
     ? []
@@ -46,6 +61,8 @@ function boundedLines({ bounded }: ConfigurationsRecord): string[] {
 /** One line each: irreps, direction, magnetic group, free parameters and what may come with the order. */
 export function configurationTable(configurations: readonly ConfigurationRecord[]): string[] {
   if (configurations.length === 0) return paragraph("none: no irrep of this k carries moments on the sites");
+  const labels = new Set(configurations.flatMap(({ sites }) => sites.map(({ parentSite }) => parentSite)));
+  const several = labels.size > 1;
   return table(
     [
       { title: "id" },
@@ -53,6 +70,7 @@ export function configurationTable(configurations: readonly ConfigurationRecord[
       { title: "magnetic group" },
       { title: "index", align: "right" },
       { title: "free", align: "right" },
+      ...(several ? [{ title: "sites" }] : []),
       { title: "equal sizes" },
       { title: "net moment" },
       { title: "polarization" },
@@ -63,11 +81,19 @@ export function configurationTable(configurations: readonly ConfigurationRecord[
       `${one.magneticGroup.bns.symbol} (${one.magneticGroup.bns.number})`,
       String(one.index),
       freeText(one),
+      ...(several ? [orderedSites(one).join(" ")] : []),
       one.constantMoment ?? "",
       allowedText(one.netMoment),
       allowedText(one.polarization),
     ]),
   );
+}
+
+/** The parent sites on which the irreps put moments. */
+export function orderedSites({ sites }: ConfigurationRecord): string[] {
+  return [
+    ...new Set(sites.filter(({ momentLattice }) => momentLattice !== "(0, 0, 0)").map(({ parentSite }) => parentSite)),
+  ];
 }
 
 /** Parameters under the irreps, and under the group where these are more. */

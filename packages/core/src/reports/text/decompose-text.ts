@@ -13,7 +13,10 @@ export function decomposeText(record: DecomposeRecord): string[] {
         ["Cell", cellText(record.cell)],
         ["Axes of the file", `(${record.childFromParent}) of the parent`],
         ...record.moments.map(momentField),
-        ["Furthest atom", `${plain(Number(record.furthest.toPrecision(2)))} Å from its parent site`],
+        [
+          "Furthest atom",
+          `${plain(Number(record.furthest.toPrecision(2)))} Å from its parent site${record.furthest > farAtom ? ": is it the right parent, axes and origin?" : ""}`,
+        ],
       ]),
     ),
     ...section(
@@ -24,7 +27,7 @@ export function decomposeText(record: DecomposeRecord): string[] {
           { title: "irrep" },
           { title: "share / %", align: "right" },
           { title: "site" },
-          { title: "amplitudes of the basis vectors, μB/Å" },
+          { title: "amplitudes, copy by copy, partner by partner, μB/Å" },
         ],
         record.parts.flatMap(partRows),
       ),
@@ -39,7 +42,7 @@ export function decomposeText(record: DecomposeRecord): string[] {
         ["To the BNS setting", `(${group.toBns}) from the parent's axes`],
         [
           "In the file",
-          `${declared.bns === null ? "not named" : `BNS ${declared.bns}`}; its operators are BNS ${declared.operators}${declared.operators === group.bns.number ? "" : ", a subgroup of what the moments have or moments that break it"}`,
+          `${declared.bns === null ? "not named" : `BNS ${declared.bns}`}; its operators are BNS ${declared.operators}${declared.operators === group.bns.number ? "" : ". That is another group: either the moments have more symmetry than the file lists, or they break some of it"}`,
         ],
       ]),
     ),
@@ -56,6 +59,9 @@ export function decomposeText(record: DecomposeRecord): string[] {
     ),
   ];
 }
+
+/** Å. Distortions below the ordering temperature rarely move an atom further. */
+const farAtom = 0.1;
 
 function momentField({ site, ion, largest, limit, verdict }: DecomposeRecord["moments"][number]): [string, string] {
   const size = `${decimals(largest, 2)} μB at most`;

@@ -44,7 +44,7 @@ export function runFullText(record: RunRecord): string[] {
   return [
     ...runShortText(record),
     ...(record.search ?? { candidates: [] }).candidates.flatMap((candidate, index) =>
-      record.peaks
+      record.peaks && (candidate.evidence.reading !== "not informative" || index === 0)
         ? section(
             `Assignment by candidate ${index + 1}, ${kText(candidate.k)}`,
             assignmentTable(candidate, record.peaks, record.search?.setAside),

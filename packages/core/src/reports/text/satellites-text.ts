@@ -56,13 +56,14 @@ export function satelliteTable(reflections: readonly SatelliteRecord[], record: 
 /** Names on a line; the JSON has more of them. */
 const shownOverlaps = 3;
 
-/** What lies on a satellite and is not extinct, the nearest first where not all are named. */
+/** What lies on a satellite and is not extinct: nuclear lines first, then the nearest. */
 export function overlapsText({ overlaps, moreOverlaps }: SatelliteRecord): string {
   const allowed = overlaps.filter((one) => one.allowed);
-  const shown =
-    allowed.length > shownOverlaps
-      ? [...allowed].sort((a, b) => Math.abs(a.separation) - Math.abs(b.separation)).slice(0, shownOverlaps)
-      : allowed;
+  // A nuclear line matters more than any image of one.
+  const rank = (one: OverlapRecord) => (one.with === "nuclear" ? 0 : 1);
+  const shown = [...allowed]
+    .sort((a, b) => rank(a) - rank(b) || Math.abs(a.separation) - Math.abs(b.separation))
+    .slice(0, shownOverlaps);
   const more = allowed.length - shown.length + moreOverlaps;
   return `${shown.map(overlapText).join(", ")}${more > 0 ? ` ${unbroken(`and ${more} more`)}` : ""}`;
 }

@@ -15,7 +15,9 @@ export function severalVectorLines(record: SearchRecord): string[] {
   const open = stages.some(({ exhaustive }) => !exhaustive) ? " (not exhaustive: a budget for each kind)" : "";
   if (found.length === 0)
     return paragraph(
-      `More than one vector: ${tried.length === 0 ? "nothing to try" : `${tried.join(", ")} tried${open}`}; nothing explains more.`,
+      tried.length === 0
+        ? "More than one vector: there was nothing to try."
+        : `More than one vector: ${tried.join(", ")} tried${open}; nothing explains more.`,
     );
   return [
     ...paragraph(`More than one vector (${tried.join(", ")} tried${open}):`),
