@@ -124,7 +124,7 @@ function basisOf(centring: readonly Triple[]): readonly Triple[] {
 }
 
 /** Lists of each sort for the rates of the evidence. */
-const rateLists = 200;
+const rateLists = 100;
 
 const sweeps = {
   grid: { what: "search: no k of a dense grid over random cells, groups and lists is missed", seed: 1_000_000 },

@@ -74,7 +74,7 @@ export async function stationaryConstants(
   if (numbers === null) throw new Error("a letter of k is open");
   const letters = usedParameters(k);
   const values = k.values ?? [];
-  const lines = letters.map((letter, index) => lineOf(model, k, letter, index));
+  const lines = letters.map((_, index) => lineOf(model, k, index));
   const { scale } = interactionOf(model);
   const relations = lines.map((line, index) =>
     relationOf(model, line, scale, letters[index] as number, values[index] as number),
@@ -97,7 +97,7 @@ interface Line {
   readonly direction: readonly number[];
 }
 
-function lineOf(model: ExchangeModel, k: WaveVector, letter: number, index: number): Line {
+function lineOf(model: ExchangeModel, k: WaveVector, index: number): Line {
   const { group } = model.table;
   const at = (shift: number): number[] => {
     const given = [0, 0, 0];

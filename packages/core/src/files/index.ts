@@ -51,4 +51,4 @@ export { type PeakListOptions, parsePeakList } from "./peak-list.js";
 export { parseScanTable, type ScanTable } from "./scan-table.js";
 export { parseStudy } from "./study.js";
 export { type StudySectionName, studyKeys } from "./study-keys.js";
-export type { Study, StudyCoupling, StudyPeaks, StudyPlace, StudySearch, StudySite } from "./study-types.js";
+export type { Study, StudyCoupling, StudyIntensities, StudyPeaks, StudyPlace, StudySearch, StudySite } from "./study-types.js";

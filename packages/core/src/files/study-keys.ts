@@ -22,7 +22,7 @@ export const studyKeys = {
   atoms: ["label", "ion", "at", "occupancy"],
   peaks: ["file", "as", "wavelength", "tolerance", "unit", "nuclear"],
   search: ["unmatched", "max-dimension", "tolerance", "zero-shift", "cell-scale", "q-max", "weigh-intensities"],
-  intensities: ["file"],
+  intensities: ["file", "as", "wavelength", "lorentz", "scale", "resolution"],
   exchange: ["shell", "bond", "between", "j"],
   onset: ["file"],
   impurities: ["name", "group", "cell"],

@@ -1,4 +1,3 @@
-import { type Problem, problem } from "../errors/index.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { openSection } from "./study-section.js";
 import { readCell } from "./study-structure.js";
@@ -6,14 +5,6 @@ import type { StudyImpurity } from "./study-types.js";
 import { asList, asNumber, asRecord, asText, type NumberLimits } from "./study-values.js";
 import { where } from "./yaml-convert.js";
 import type { TreeNode } from "./yaml-tree.js";
-
-/** `intensities: {file}`. */
-export function readIntensities(node: TreeNode, problems: ProblemList): { readonly file: string } | null {
-  const record = asRecord(problems, node, "a section with `file`", "for example intensities: {file: integrated.csv}");
-  const fileNode = record && openSection("intensities", record, problems).need("file", "the name of a file");
-  const file = fileNode && asText(problems, fileNode, "the name of a file");
-  return file === null ? null : { file };
-}
 
 const finite: NumberLimits = { expected: "a number", allows: () => true };
 
@@ -57,18 +48,4 @@ export function readImpurities(node: TreeNode, problems: ProblemList): StudyImpu
     const cell = cellNode && readCell(cellNode, problems);
     return name === null || group === null || cell === null ? [] : [{ name, group, cell }];
   });
-}
-
-/** What the study has and this version does not use, as warnings with their places. */
-export function laterSections(sections: Readonly<Record<string, TreeNode | null>>, file: string): Problem[] {
-  return Object.entries(sections).flatMap(([key, node]) =>
-    node
-      ? [
-          problem("not-built", `\`${key}\` is read, but this version does nothing with it`, {
-            where: { ...where(node.place), file, path: key },
-            remedy: "the rest of the study is used as if the section were not there",
-          }),
-        ]
-      : [],
-  );
 }

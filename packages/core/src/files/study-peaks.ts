@@ -8,7 +8,7 @@ import { asFlag, asNumber, asRecord, asText, describe, type NumberLimits, noteNu
 import { where } from "./yaml-convert.js";
 import type { TreeNode } from "./yaml-tree.js";
 
-const positive = (expected: string): NumberLimits => ({ expected, allows: (value) => value > 0 });
+export const positive = (expected: string): NumberLimits => ({ expected, allows: (value) => value > 0 });
 const notNegative = (expected: string): NumberLimits => ({ expected, allows: (value) => value >= 0 });
 
 /** `peaks: {file, as, wavelength, tolerance, unit, nuclear}`; the file is needed. */
@@ -34,7 +34,8 @@ export function readPeaks(node: TreeNode, problems: ProblemList): StudyPeaks | n
   return file === null ? null : { file, kind, wavelengthAngstrom, tolerance, unit: unitText, nuclear };
 }
 
-function readKind(node: TreeNode, problems: ProblemList): PeakKind | null {
+/** The word of an `as:` key. */
+export function readKind(node: TreeNode, problems: ProblemList): PeakKind | null {
   const word = asText(problems, node, peakKindWords);
   if (word === null) return null;
   const kind = readPeakKind(word);

@@ -40,6 +40,20 @@ export interface StudyPeaks {
   readonly nuclear: string | null;
 }
 
+/** Integrated intensities and how they were measured; what is null is not said in the study. */
+export interface StudyIntensities {
+  /** As written, relative to the study. */
+  readonly file: string;
+  readonly kind: PeakKind | null;
+  readonly wavelengthAngstrom: number | null;
+  /** Whether the Lorentz factor is in the numbers: intensities as measured, or |F|². */
+  readonly lorentz: boolean | null;
+  /** Intensity per |F|² in 10⁻²⁴ cm² of the primitive cell. */
+  readonly scale: number | null;
+  /** Å⁻¹: lines nearer to each other are one peak. */
+  readonly resolution: number | null;
+}
+
 /** Wishes for the search; what is null is not said in the study. */
 export interface StudySearch {
   readonly unmatched: number | null;
@@ -90,7 +104,7 @@ export interface Study {
   readonly k: readonly string[] | null;
   readonly peaks: StudyPeaks | null;
   readonly search: StudySearch;
-  readonly intensities: { readonly file: string } | null;
+  readonly intensities: StudyIntensities | null;
   /** Exchange constants of shells of neighbours or of single kinds of bonds. */
   readonly exchange: readonly StudyCoupling[] | null;
   /** A temperature scan, relative to the study. */

@@ -1,7 +1,8 @@
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
 import { readableText } from "./readable-text.js";
 import { readExchange, readOnset } from "./study-exchange.js";
-import { laterSections, readExclude, readImpurities, readIntensities } from "./study-later.js";
+import { readIntensities } from "./study-intensities.js";
+import { readExclude, readImpurities } from "./study-later.js";
 import { checkMeaning } from "./study-meaning.js";
 import { emptySearch, readPeaks, readSearch } from "./study-peaks.js";
 import { openSection, type Section } from "./study-section.js";
@@ -65,7 +66,6 @@ function readStudy(section: Section, file: string, places: Map<string, StudyPlac
   const cif = read("structure", readStructureFile);
   const k = read("k", readWaveVectors);
   for (const [index, { place }] of k?.entries() ?? []) places.set(`k[${index}]`, { ...place, path: `k[${index}]` });
-  const later = ["intensities"].map((key) => [key, section.get(key)] as const);
   return {
     file,
     title: text("title", "a title"),
@@ -84,7 +84,7 @@ function readStudy(section: Section, file: string, places: Map<string, StudyPlac
     exclude: read("exclude", readExclude),
     impurities: read("impurities", readImpurities) ?? [],
     places: Object.fromEntries(places),
-    warnings: laterSections(Object.fromEntries(later), file),
+    warnings: [],
   };
 }
 

@@ -80,6 +80,14 @@ export interface Request {
   readonly scan?: string | null;
   /** `onset`: the largest (T_N − T)/T_N of a fit. */
   readonly reduced?: string | null;
+  /** `weigh`: path of a list of intensities. */
+  readonly intensities?: string | null;
+  /** `weigh`: intensity per |F|². */
+  readonly scale?: string | null;
+  /** `weigh`: Å⁻¹ within which lines are one peak. */
+  readonly resolution?: string | null;
+  /** `weigh`: whether the Lorentz factor is in the intensities: yes or no. */
+  readonly lorentz?: string | null;
   /** `run`: how many tied candidates are followed. */
   readonly branches?: string | null;
   /** `run`: list the names of the files of a result folder in the result. */
@@ -150,6 +158,10 @@ export const argumentNames: { readonly [field in RequestField]: string } = {
   shells: "--shells",
   scan: "FILE",
   reduced: "--reduced",
+  intensities: "--intensities",
+  scale: "--scale",
+  resolution: "--resolution",
+  lorentz: "--lorentz",
   branches: "--branches",
   files: "--out",
   code: "CODE",

@@ -1,9 +1,12 @@
 import type { ConfigurationSet, Decomposition, GivenMoments, MomentField } from "../configurations/index.js";
 import type { CifVersion, MagneticStructure } from "../files/index.js";
+import type { Weighing } from "../weighing/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import type { NamedSite, ParentSites } from "./building/parent-sites.js";
+import type { WeighedInput } from "./building/weigh.js";
 import type { AnyConfiguration, ConfigurationsRecord } from "./records/configurations.js";
 import type { DecomposeRecord } from "./records/decompose.js";
+import type { WeighRecord } from "./records/weigh.js";
 
 /** Records whose making needs rooms that small commands must not load: they are loaded by the first call. */
 
@@ -26,6 +29,11 @@ export async function decomposeRecord(
 ): Promise<DecomposeRecord> {
   const { decomposeRecord: made } = await import("./building/decompose.js");
   return made(group, cell, structure, moments, field, found, sites);
+}
+
+/** The ranking of configurations by intensities. */
+export async function weighRecord(input: WeighedInput, found: Weighing): Promise<WeighRecord> {
+  return (await import("./building/weigh.js")).weighRecord(input, found);
 }
 
 /** One configuration as a magnetic CIF; null without a cell. */

@@ -1,6 +1,9 @@
 import { commandTable, plannedCommands } from "../commands.js";
 import type { HelpTopic } from "./topics.js";
 
+/** Longest line of a page. */
+const width = 100;
+
 /** Signs, bases, units; and what this version does. */
 export const conventionTopics: { readonly [topic: string]: HelpTopic } = {
   conventions: {
@@ -45,14 +48,44 @@ it. In crystal and Cartesian components each copy of an irrep is divided by the 
 of its leading entry, so that an amplitude in μB is the moment along that axis. The matrix B of the
 relation between k and −k is that of kvane's own way always.`,
   },
+  arrangements: {
+    title: "Reading a list of configurations",
+    text: `A configuration is one direction of the order parameter of an irrep (or of several), up to
+equivalence: what a parent operator makes of it is a domain of it.
+  direction       real components of the order parameter; ; parts arms, | parts order parameters
+  magnetic group  symbol and number of Belov, Neronova and Smirnova (BNS)
+  index           of that group in the parent with time reversal: the number of domains
+  free            real parameters of the moments under the irreps, and of how many under the group
+                  where that lets in more: secondary irreps, which may come with small amplitudes
+  equal sizes     whether amplitudes exist that give all moments of a site one size
+  net moment, polarization, tensors
+                  what the magnetic point group allows, Cartesian, x along a and z along c* of the
+                  parent, equal symbols for equal entries; "as before": the parent had it already
+Positions and moments are in the child cell, whose axes are given in those of the parent; operators
+and centrings applied to the sites give every moment. u, v, w are free amplitudes of the irreps, mx,
+my, mz components under the group. Exact numbers that no short root writes have six decimals.
+
+kvane export writes one configuration as a magnetic CIF; kvane decompose reads one back into irreps
+and says which configuration it is.`,
+  },
   commands: {
     title: "What this version does",
     text: `Built:
-  ${Object.keys(commandTable).slice(0, 8).join(", ")},
-  ${Object.keys(commandTable).slice(8).join(", ")}
+${inLines(Object.keys(commandTable))}
 Planned:
-  ${plannedCommands.join(", ")}
+${inLines(plannedCommands)}
 
 kvane COMMAND --help shows options and an example that works when pasted.`,
   },
 };
+
+/** Names with commas in lines that fit a page. */
+function inLines(names: readonly string[]): string {
+  const lines: string[] = [];
+  for (const name of names) {
+    const last = lines.at(-1);
+    if (last !== undefined && `${last}, ${name},`.length <= width) lines[lines.length - 1] = `${last}, ${name}`;
+    else lines.push(`  ${name}`);
+  }
+  return lines.join(",\n");
+}

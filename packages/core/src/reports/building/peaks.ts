@@ -36,6 +36,8 @@ export function satellitesRecord(
     readonly qMax: number;
     readonly overlapWithin: number;
     readonly reflections: readonly SatelliteReflection[];
+    /** For each line the labels of the irreps that make it zero. */
+    readonly extinct: readonly (readonly string[])[] | null;
   },
 ): SatellitesRecord {
   return {
@@ -45,11 +47,11 @@ export function satellitesRecord(
     wavelengthAngstrom: found.wavelengthAngstrom,
     qMax: roundNumber(found.qMax),
     overlapWithin: roundNumber(found.overlapWithin),
-    reflections: found.reflections.map(satelliteRecord),
+    reflections: found.reflections.map((line, index) => satelliteRecord(line, found.extinct?.[index] ?? null)),
   };
 }
 
-function satelliteRecord(line: SatelliteReflection): SatelliteRecord {
+function satelliteRecord(line: SatelliteReflection, extinctFor: readonly string[] | null): SatelliteRecord {
   return {
     h: line.h.map((entry) => roundNumber(entry)),
     sign: line.sign,
@@ -61,7 +63,7 @@ function satelliteRecord(line: SatelliteReflection): SatelliteRecord {
     multiplicityAllArms: line.multiplicityAllArms,
     overlaps: line.overlaps.map(overlapRecord),
     moreOverlaps: line.moreOverlaps,
-    extinctFor: null,
+    extinctFor,
     intensity: null,
   };
 }

@@ -5,8 +5,9 @@ import type { ModesRecord } from "./modes.js";
 import type { OverlapRecord, SatellitesRecord } from "./satellites.js";
 import type { PeaksRecord, SearchRecord } from "./search.js";
 import type { StarRecord } from "./star.js";
+import type { WeighRecord } from "./weigh.js";
 
-/** All that follows from one k. What this version does not compute is null. */
+/** All that follows from one k. */
 export interface BranchRecord {
   readonly k: KRecord;
   /** Index of its candidate in `search`; null when there was no search. */
@@ -17,7 +18,8 @@ export interface BranchRecord {
   /** Null without sites, or where a letter of k has no number. */
   readonly configurations: ConfigurationsRecord | null;
   readonly satellites: SatellitesRecord | null;
-  readonly weigh: null;
+  /** Null where the study has no intensities, or they could not be weighed, which is warned about. */
+  readonly weigh: WeighRecord | null;
 }
 
 /** Result of `kvane run`. */

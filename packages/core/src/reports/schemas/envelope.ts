@@ -7,6 +7,7 @@ import { atlasSchema, compatibilitySchema } from "./kinds.js";
 import { satellitesSchema, searchSchema } from "./peaks.js";
 import { checkSchema, explainSchema, helpSchema, runSchema, studySchema } from "./study.js";
 import { irrepsSchema, modesSchema, opsSchema, starSchema } from "./symmetry.js";
+import { weighSchema } from "./weigh.js";
 
 /** Schema of `result` by command; null for commands that are named but not built in this version. */
 const resultSchemas: { readonly [command: string]: JsonSchema } = {
@@ -26,6 +27,7 @@ const resultSchemas: { readonly [command: string]: JsonSchema } = {
   satellites: satellitesSchema,
   index: searchSchema,
   locate: searchSchema,
+  weigh: weighSchema,
   exchange: exchangeSchema,
   onset: onsetSchema,
   explain: explainSchema,

@@ -82,7 +82,7 @@ export const runSchema: JsonSchema = record({
       modes: modesSchema,
       configurations: nullable(configurationsSchema),
       satellites: nullable(satellitesSchema),
-      weigh: nothing,
+      weigh: nullable(weighSchema),
     }),
   ),
   notFollowed: list(count),

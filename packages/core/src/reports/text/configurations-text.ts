@@ -39,7 +39,7 @@ export function armsText(arms: ConfigurationsRecord["arms"]): string {
   return `arms ${arms.map((arm) => arm + 1).join(", ")} of the star`;
 }
 
-/** What the columns mean, in the words of `kvane help configurations`. */
+/** What the columns mean, in short; `kvane help arrangements` has more. */
 export function legendLines({ kind, parentSites }: ConfigurationsRecord): string[] {
   const several = parentSites.filter(({ magnetic }) => magnetic).length > 1;
   const common =

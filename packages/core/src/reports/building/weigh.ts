@@ -1,0 +1,100 @@
+import type { ConfigurationSet } from "../../configurations/index.js";
+import type { MagneticFormFactor } from "../../diffraction/index.js";
+import { waveVectorToJson } from "../../kvectors/index.js";
+import { roundNumber } from "../../numbers/index.js";
+import { type Cell, formatTriplet, type SpaceGroup } from "../../spacegroups/index.js";
+import type { IntensityDatum, WeighedCandidate, Weighing } from "../../weighing/index.js";
+import type { WeighDataRecord, WeighedRecord, WeighRecord } from "../records/weigh.js";
+import { cellRecord, groupRecord } from "./names.js";
+
+/** What was weighed and how, for the record. */
+export interface WeighedInput {
+  readonly set: ConfigurationSet;
+  readonly cell: Cell;
+  readonly ions: readonly { readonly label: string; readonly formFactor: MagneticFormFactor }[];
+  readonly data: Omit<WeighDataRecord, "list"> & { readonly intensities: readonly IntensityDatum[] };
+}
+
+export function weighRecord({ set, cell, ions, data }: WeighedInput, found: Weighing): WeighRecord {
+  const { intensities, ...how } = data;
+  const left = new Set(found.unassigned);
+  const irrepsOf = (id: string) => formOf(set, id).irreps;
+  return {
+    group: groupRecord(set.group),
+    cell: cellRecord(cell),
+    k: waveVectorToJson(set.k),
+    ions: ions.map(({ label, formFactor: { ion, text, largestMoment } }) => ({
+      label,
+      ion: ion ?? "",
+      formFactor: text,
+      limit: largestMoment,
+    })),
+    data: {
+      ...how,
+      list: intensities
+        .filter(({ label }) => !left.has(label))
+        .map(({ label, q, hkl, observed, uncertainty }) => ({
+          label,
+          q: q === null ? null : roundNumber(q),
+          hkl,
+          observed,
+          su: roundNumber(uncertainty),
+        })),
+    },
+    ranking: found.ranking.map((one) => weighedRecord(set, one)),
+    struckOut: found.struckOut.map(({ id, peaks }) => ({ id, irreps: irrepsOf(id), peaks })),
+    unassigned: found.unassigned,
+    relative: found.relative,
+    criterion: found.criterion,
+    remarks: found.remarks,
+    bounded: [...set.bounded],
+  };
+}
+
+function weighedRecord(set: ConfigurationSet, one: WeighedCandidate): WeighedRecord {
+  return {
+    id: one.id,
+    ...formOf(set, one.id),
+    chiSquared: one.chiSquared,
+    reducedChiSquared: one.reducedChiSquared,
+    rFactor: one.rFactor,
+    parameters: one.parameters,
+    criterion: one.criterion,
+    amplitudes: one.amplitudes.map(({ label, value, uncertainty, determined }) => ({
+      label,
+      value,
+      su: uncertainty,
+      determined,
+    })),
+    freePhase: one.freePhase,
+    moments: one.moments.map(({ sizeUncertainty, position, ...moment }) => ({
+      ...moment,
+      position: position.map((entry) => roundNumber(entry)),
+      sizeSu: sizeUncertainty,
+    })),
+    factorToLimit: one.factorToLimit,
+    scale: one.scale,
+    domains: one.domains.map(({ operator, fraction, uncertainty }) => ({
+      operator: operatorText(set.group, operator),
+      fraction,
+      su: uncertainty,
+    })),
+    calculated: one.calculated,
+    sameAs: one.sameAs,
+    identicalTo: one.identicalTo,
+    separations: one.separations.map(({ from, by, hkl, q, text }) => ({ from, by, hkl, q, text })),
+    minima: one.minima.map(({ chiSquared, amplitudes }) => ({ chiSquared, amplitudes })),
+    starts: one.starts,
+    hits: one.hits,
+  };
+}
+
+function formOf(set: ConfigurationSet, id: string): { readonly irreps: string[]; readonly direction: string } {
+  const found = [...set.configurations, ...set.modulated].find((one) => one.id === id);
+  return { irreps: [...(found?.irreps ?? [])], direction: found?.direction ?? "" };
+}
+
+function operatorText({ operators }: SpaceGroup, index: number): string {
+  const operator = operators[index];
+  return operator === undefined ? "" : formatTriplet(operator);
+}

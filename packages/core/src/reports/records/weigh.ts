@@ -1,0 +1,109 @@
+import type { CellRecord, GroupRecord, KRecord } from "./common.js";
+import type { MeasuredRecord } from "./onset.js";
+
+/** What was measured, and how it was read. */
+export interface WeighDataRecord {
+  readonly file: string;
+  readonly sample: "powder" | "single crystal";
+  readonly wavelengthAngstrom: number | null;
+  /** Whether the Lorentz factor is in the numbers; else they are |F|². */
+  readonly lorentz: boolean;
+  /** Intensity per |F|² in 10⁻²⁴ cm² of the primitive cell; null where sizes are relative. */
+  readonly scale: number | null;
+  /** Å⁻¹. */
+  readonly resolution: number;
+  readonly uncertaintySource: string;
+  /** Those that lie on satellites; `calculated` of a candidate has one number for each. */
+  readonly list: readonly {
+    readonly label: string;
+    readonly q: number | null;
+    readonly hkl: readonly number[] | null;
+    readonly observed: number;
+    readonly su: number;
+  }[];
+}
+
+/** The ion of a magnetic site. */
+export interface WeighIonRecord {
+  readonly label: string;
+  readonly ion: string;
+  /** Which form factor was taken and why. */
+  readonly formFactor: string;
+  /** μB. */
+  readonly limit: number | null;
+}
+
+export interface WeighMomentRecord {
+  readonly label: string;
+  /** Of the atom in the primitive cell. */
+  readonly position: readonly number[];
+  /** In the cell at the origin, along unit vectors of the axes; μB, or relative where no scale is known. */
+  readonly momentCrystal: readonly number[];
+  /** Null where it changes from cell to cell. */
+  readonly size: number | null;
+  readonly sizeSu: number | null;
+  /** The largest in any cell. */
+  readonly largest: number;
+  /** gS or g_J J in μB. */
+  readonly limit: number | null;
+  readonly aboveLimit: boolean;
+}
+
+/** One configuration with its best fit. */
+export interface WeighedRecord {
+  readonly id: string;
+  readonly irreps: readonly string[];
+  readonly direction: string;
+  readonly chiSquared: number;
+  readonly reducedChiSquared: number | null;
+  readonly rFactor: number;
+  /** Parameters that the data see. */
+  readonly parameters: number;
+  readonly criterion: number;
+  readonly amplitudes: readonly (MeasuredRecord & { readonly label: string; readonly determined: boolean })[];
+  /** Whether the common phase of the wave is free; one was chosen. */
+  readonly freePhase: boolean;
+  readonly moments: readonly WeighMomentRecord[];
+  /** What relative sizes are to be multiplied with for the largest moment to reach its limit. */
+  readonly factorToLimit: number | null;
+  readonly scale: number | null;
+  readonly domains: readonly { readonly operator: string; readonly fraction: number; readonly su: number | null }[];
+  readonly calculated: readonly number[];
+  /** Configurations that the data do not tell from this one. */
+  readonly sameAs: readonly string[];
+  /** Configurations whose best fits give the very same intensities. */
+  readonly identicalTo: readonly string[];
+  /** What would tell them apart. */
+  readonly separations: readonly {
+    readonly from: string;
+    readonly by: "powder line" | "single crystal" | "polarised neutrons" | "not by diffraction";
+    readonly hkl: readonly number[] | null;
+    readonly q: number | null;
+    readonly text: string;
+  }[];
+  /** Arrangements that fit equally well, by their amplitudes. */
+  readonly minima: readonly { readonly chiSquared: number; readonly amplitudes: readonly number[] }[];
+  readonly starts: number;
+  readonly hits: number;
+}
+
+/** Result of `kvane weigh`. */
+export interface WeighRecord {
+  readonly group: GroupRecord;
+  readonly cell: CellRecord;
+  readonly k: KRecord;
+  readonly ions: readonly WeighIonRecord[];
+  readonly data: WeighDataRecord;
+  /** Best criterion first. */
+  readonly ranking: readonly WeighedRecord[];
+  /** Configurations that give nothing, whatever their amplitudes, where a peak is clearly observed. */
+  readonly struckOut: readonly { readonly id: string; readonly irreps: readonly string[]; readonly peaks: readonly string[] }[];
+  /** Labels of intensities that lie on no satellite. */
+  readonly unassigned: readonly string[];
+  /** Whether sizes are relative. */
+  readonly relative: boolean;
+  readonly criterion: string;
+  readonly remarks: readonly string[];
+  /** Configurations left out because of a limit. */
+  readonly bounded: readonly string[];
+}
