@@ -14,6 +14,24 @@ k: [[1/2, 1/2, 1/2]]
 cell: {a: 4.874, b: 4.874, c: 3.310, alpha: 90, beta: 90, gamma: 90}
 sites: [{label: Mn1, ion: Mn2+, at: [0, 0, 0]}]
 `,
+  "lamno3.yaml": `group: P n m a
+cell: {a: 5.75, b: 7.70, c: 5.53, alpha: 90, beta: 90, gamma: 90}
+sites: [{label: Mn, ion: Mn3+, at: [0, 0, 1/2]}]
+`,
+  "a-type.txt":
+    "label x y z mx my mz\nMn 0 0 1/2 3.5 0 0\nMn 1/2 0 0 3.5 0 0\nMn 0 1/2 1/2 -3.5 0 0\nMn 1/2 1/2 0 -3.5 0 0\n",
+  "doubled.txt": [
+    "Mn 0 0 1/2 3.5 0 0",
+    "Mn 1/2 0 0 -3.5 0 0",
+    "Mn 0 1/2 1/2 -3.5 0 0",
+    "Mn 1/2 1/2 0 3.5 0 0",
+    "Mn 1 0 1/2 -3.5 0 0",
+    "Mn 3/2 0 0 3.5 0 0",
+    "Mn 1 1/2 1/2 3.5 0 0",
+    "Mn 3/2 1/2 0 -3.5 0 0",
+    "",
+  ].join("\n"),
+  "wrong.txt": "Mn 0 0 1/2 3.5 0 0\nMn 0 0 1/2 3,5 0\nMn 0 0 x 1 2 3\n",
   "pnma.yaml": `group: P n m a
 cell: {a: 10.21, b: 6.05, c: 4.71, alpha: 90, beta: 90, gamma: 90}
 sites: [{label: Fe1, ion: Fe3+, at: [0, 0, 0]}]
@@ -118,6 +136,19 @@ describe("kvane decompose", () => {
     expect(result.declared.operators).toBe("1.3");
     expect(result.magneticGroup.type).toBe(4);
     expect(result.recognised).not.toBeNull();
+  });
+
+  test("a list of moments in the parent's axes, in its cell and in a doubled one", async () => {
+    // A-type order of LaMnO₃, moments along the long axis of the plane: Pn'ma' (Wollan & Koehler, Phys. Rev. 100 (1955) 545).
+    const plain = await json("decompose", "a-type.txt", "--parent", "lamno3.yaml");
+    expect(plain.result.magneticGroup.bns).toEqual({ number: "62.448", symbol: "Pn'ma'" });
+    expect(plain.result.moments[0]).toMatchObject({ site: "Mn", largest: 3.5, limit: 4, verdict: "usual" });
+    expect(plain.result.recognised).not.toBeNull();
+    const doubled = await json("decompose", "doubled.txt", "--parent", "lamno3.yaml", "--child", "2a,b,c;0,0,0");
+    expect(doubled.result.primary.k.components).toEqual(["1/2", "0", "0"]);
+    expect(doubled.result.recognised).not.toBeNull();
+    const wrong = await json("decompose", "wrong.txt", "--parent", "lamno3.yaml");
+    expect(wrong.errors.map(({ where }: { where: { line: number } }) => where.line)).toEqual([2, 3]);
   });
 
   test("what does not fit the parent is refused with a remedy", async () => {

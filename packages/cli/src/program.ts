@@ -59,7 +59,7 @@ const argumentTexts = {
   "group or study": ["[GROUP|STUDY]", "space group, study file or CIF (.yaml, .cif, - for standard input)"],
   study: ["[STUDY]", "study file or CIF (.yaml, .cif, - for standard input)"],
   cif: ["[FILE.cif]", "CIF of the nuclear structure (- for standard input)"],
-  moments: ["[FILE.cif]", "magnetic CIF (.mcif, .cif, - for standard input)"],
+  moments: ["[FILE]", "magnetic CIF (.mcif, .cif) or list of moments, - for standard input"],
   scan: ["[FILE|STUDY]", "temperature scan (- for standard input), or a study that names one (.yaml)"],
   code: ["[CODE]", "code of a problem; without it all are listed"],
   topic: ["[TOPIC]", "topic or command; without it the topics are listed"],

@@ -95,6 +95,10 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
     shells: text("shells"),
     scan: spec.argument === "scan" && !isFile ? first : null,
     reduced: text("reduced"),
+    intensities: text("intensities"),
+    scale: text("scale"),
+    resolution: text("resolution"),
+    lorentz: text("lorentz"),
     branches: text("branches"),
     files: spec.name === "run" && text("out") !== null,
   };

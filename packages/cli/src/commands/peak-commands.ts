@@ -20,8 +20,11 @@ export const peakCommands: readonly CommandSpec[] = [
     name: "satellites",
     summary: "list of satellites and what lies on them",
     argument: "group or study",
-    options: ["structure", "block", "cell", "k", "qMax", "wavelength", "example", "csv", ...outputOptions],
-    examples: ['kvane satellites 62 --cell "10.21 6.05 4.71 90 90 90" --k 0,1/2,0 --q-max 2 --wavelength 2.41'],
+    options: ["structure", "block", "cell", "k", "sites", "qMax", "wavelength", "example", "csv", ...outputOptions],
+    examples: [
+      'kvane satellites 62 --cell "10.21 6.05 4.71 90 90 90" --k 0,1/2,0 --q-max 2 --wavelength 2.41',
+      'kvane satellites 62 --cell "10.21 6.05 4.71 90 90 90" --k 0,1/2,0 --site "Fe 0 0 1/2" --q-max 2',
+    ],
   },
   {
     name: "index",

@@ -107,7 +107,7 @@ export const symmetryCommands: readonly CommandSpec[] = [
   },
   {
     name: "decompose",
-    summary: "moments of a magnetic CIF: their irreps, amplitudes and magnetic group",
+    summary: "moments of a magnetic CIF or a list: their irreps, amplitudes and magnetic group",
     argument: "moments",
     options: ["parent", "block", "child", "example", ...outputOptions],
     examples: ["kvane decompose --example"],

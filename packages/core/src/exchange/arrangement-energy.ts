@@ -23,6 +23,7 @@ export interface ArrangementEnergy {
 /**
  * The energy of a commensurate arrangement, summed bond by bond over its magnetic cell: a quadratic form in the free
  * amplitudes of its moments, least and largest where it equals its extreme eigenvalues against the mean square moment.
+ * Site potentials of the model are counted: they are nothing for moments of one size.
  * Null where no atom carries a moment.
  */
 export function arrangementEnergy(model: ExchangeModel, configuration: Configuration): ArrangementEnergy | null {
@@ -44,6 +45,8 @@ export function arrangementEnergy(model: ExchangeModel, configuration: Configura
   const outgoing = bondsByAtom(model);
   for (const one of placed) {
     addProducts(square, one.moments, one.moments, 1 / placed.length, product);
+    const potential = model.potentials[one.atom] as number;
+    if (potential !== 0) addProducts(energy, one.moments, one.moments, potential / (2 * placed.length), product);
     for (const { bond, strength } of outgoing[one.atom] ?? []) {
       const other = at.get(
         keyOf(

@@ -46,9 +46,18 @@ export type {
   MomentWave,
 } from "./magnetic-cif/types.js";
 export { magneticCifText } from "./magnetic-cif/write.js";
+export { type ListedMoment, parseMomentList } from "./moment-list.js";
 export { readPeakKind } from "./peak-kind.js";
 export { type PeakListOptions, parsePeakList } from "./peak-list.js";
 export { parseScanTable, type ScanTable } from "./scan-table.js";
 export { parseStudy } from "./study.js";
 export { type StudySectionName, studyKeys } from "./study-keys.js";
-export type { Study, StudyCoupling, StudyIntensities, StudyPeaks, StudyPlace, StudySearch, StudySite } from "./study-types.js";
+export type {
+  Study,
+  StudyCoupling,
+  StudyIntensities,
+  StudyPeaks,
+  StudyPlace,
+  StudySearch,
+  StudySite,
+} from "./study-types.js";

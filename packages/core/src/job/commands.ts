@@ -82,7 +82,7 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
     load: async () => (await import("./commands/export.js")).exportCommand,
   },
   satellites: {
-    takes: ["study", "group", ...structureFields, "cell", "k", "qMax", "wavelength"],
+    takes: ["study", "group", ...structureFields, "cell", "k", "sites", "qMax", "wavelength"],
     load: async () => (await import("./commands/satellites.js")).satellitesCommand,
   },
   index: {
@@ -92,6 +92,24 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
   locate: {
     takes: ["study", "group", ...structureFields, "cell", ...peakFields, ...asideFields, ...searchFields],
     load: async () => (await import("./commands/locate.js")).locateCommand,
+  },
+  weigh: {
+    takes: [
+      "study",
+      ...structureFields,
+      "k",
+      "intensities",
+      "as",
+      "wavelength",
+      "lorentz",
+      "scale",
+      "resolution",
+      "arms",
+      "together",
+      "onSites",
+      "limit",
+    ],
+    load: async () => (await import("./commands/weigh.js")).weighCommand,
   },
   exchange: {
     takes: ["study", "group", ...structureFields, "cell", "sites", "k", "constants", "vary", "shells"],
@@ -112,4 +130,4 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
 };
 
 /** Commands of the interface that this version answers with `not-built`. */
-export const plannedCommands: readonly string[] = ["weigh", "batch"];
+export const plannedCommands: readonly string[] = ["batch"];

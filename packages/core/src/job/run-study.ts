@@ -1,4 +1,5 @@
 import { breathe } from "../algorithms/index.js";
+import { KvaneError } from "../errors/index.js";
 import { minusKRelation, smallIrreps } from "../irreps/index.js";
 import { numericWaveVector, type WaveVector, waveVectorToJson } from "../kvectors/index.js";
 import { ownWriting } from "../modes/index.js";
@@ -10,35 +11,38 @@ import {
   peaksRecord,
   type RunRecord,
   resultFileNames,
+  type WeighRecord,
 } from "../reports/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
+import { type GivenIntensities, intensitiesIfGiven } from "./inputs/intensities-input.js";
 import { numberOption } from "./inputs/number-input.js";
 import { coincidencesOf } from "./study/coincidences.js";
-import { configurationsFor } from "./study/configurations-for.js";
+import { type MadeConfigurations, madeConfigurations, recordOfConfigurations } from "./study/configurations-for.js";
 import { type FoundK, findK } from "./study/find-k.js";
 import { modesOf } from "./study/modes-of.js";
 import { nextSteps } from "./study/next-steps.js";
 import { readStudy, type StudyInputs, satelliteLimit } from "./study/read-study.js";
 import { satellitesOf } from "./study/satellites-of.js";
 import { starOf } from "./study/star-of.js";
-import type { Work } from "./work.js";
+import { remember, type Work } from "./work.js";
 
 /** How many tied candidates are followed unless the user says otherwise. */
 const usualBranches = 3;
 
 /**
  * The whole job: read study → k from the peaks (or as given) → for each k that the data allow: little group → irreps →
- * modes → configurations → satellites → what to do next. Weights are of a later version, null here.
+ * modes → configurations → satellites → weights where there are intensities → what to do next.
  */
 export async function runStudy(work: Work): Promise<RunRecord> {
   const bound = numberOption(work.request, "branches", { from: 1, whole: true }) ?? usualBranches;
   const inputs = await readStudy(work);
+  const intensities = await intensitiesIfGiven(work);
   const found = await findK(work, inputs, bound);
   const branches: BranchRecord[] = [];
   for (const one of found.followed) {
     work.host.progress?.(branches.length, found.followed.length, "symmetry and modes");
     await breathe(work.host);
-    branches.push(await followBranch(work, inputs, one));
+    branches.push(await followBranch(work, inputs, intensities, one));
   }
   const { search, notFollowed } = found;
   const { peaks } = inputs;
@@ -64,16 +68,23 @@ export async function runStudy(work: Work): Promise<RunRecord> {
 }
 
 /** All that follows from one k. */
-async function followBranch(work: Work, inputs: StudyInputs, { k, candidate }: FoundK): Promise<BranchRecord> {
+async function followBranch(
+  work: Work,
+  inputs: StudyInputs,
+  intensities: GivenIntensities | null,
+  { k, candidate }: FoundK,
+): Promise<BranchRecord> {
   const { group, cell, orbits } = inputs;
+  const input = { ...inputs, k };
+  const made = orbits.length === 0 ? null : await madeConfigurations(work, input, {});
   return {
     k: waveVectorToJson(k),
     candidate,
     star: starOf(group, k),
     ...representationsOf(group, cell, k, orbits),
-    configurations: await configurationList(work, inputs, k),
+    configurations: made && (await recordOfConfigurations(work, input, made)),
     satellites: await satelliteList(work, inputs, cell, k),
-    weigh: null,
+    weigh: intensities && made && (await weights(work, inputs, k, intensities, made)),
   };
 }
 
@@ -85,16 +96,37 @@ function representationsOf(group: SpaceGroup, cell: Cell | null, k: WaveVector, 
   };
 }
 
-/** All arrangements of one ±k pair; none where there is no site. */
-async function configurationList(work: Work, { group, cell, sites, orbits }: StudyInputs, k: WaveVector) {
-  return orbits.length === 0 ? null : configurationsFor(work, { group, cell, k, sites, orbits }, {});
+/** What stands in the way of weights is warned about: the rest of the answer does not need them. */
+async function weights(
+  work: Work,
+  { cell, ...inputs }: StudyInputs,
+  k: WaveVector,
+  intensities: GivenIntensities,
+  made: MadeConfigurations,
+): Promise<WeighRecord | null> {
+  if (cell === null || numericWaveVector(k) === null) return null;
+  try {
+    const { weighFor } = await import("./study/weigh-for.js");
+    return await weighFor(work, { ...inputs, cell, k }, intensities, made);
+  } catch (error) {
+    if (!(error instanceof KvaneError) || error.problems.some(({ code }) => code === "interrupted")) throw error;
+    remember(work, [], error.problems);
+    return null;
+  }
 }
 
 /** Positions need a cell and a number for every letter. */
 async function satelliteList({ host }: Work, inputs: StudyInputs, cell: Cell | null, k: WaveVector) {
   if (cell === null || numericWaveVector(k) === null) return null;
-  return satellitesOf(host, inputs.group, cell, k, {
-    qMax: satelliteLimit(inputs),
-    wavelengthAngstrom: inputs.wavelengthAngstrom,
-  });
+  return satellitesOf(
+    host,
+    inputs.group,
+    cell,
+    k,
+    {
+      qMax: satelliteLimit(inputs),
+      wavelengthAngstrom: inputs.wavelengthAngstrom,
+    },
+    inputs.orbits,
+  );
 }

@@ -12,9 +12,9 @@ export { modesRecord } from "./building/modes.js";
 export { cellRecord, groupRecord, littleGroupRecord } from "./building/names.js";
 export { onsetRecord } from "./building/onset.js";
 export type { NamedSite, ParentSites } from "./building/parent-sites.js";
-export type { WeighedInput } from "./building/weigh.js";
 export { overlapRecord, peaksRecord, satellitesRecord, searchRecord } from "./building/peaks.js";
 export { irrepsRecord, opsRecord, starRecord } from "./building/symmetry.js";
+export type { WeighedInput } from "./building/weigh.js";
 export { cifCode } from "./cif-code.js";
 export { commandsWithTable, reportCsv } from "./csv/report-csv.js";
 export { jsonText } from "./json-text.js";
@@ -108,7 +108,13 @@ export type {
 export type { ExplainRecord, HelpRecord } from "./records/simple.js";
 export type { StarRecord } from "./records/star.js";
 export type { StudyRecord } from "./records/study.js";
-export type { WeighDataRecord, WeighedRecord, WeighIonRecord, WeighMomentRecord, WeighRecord } from "./records/weigh.js";
+export type {
+  WeighDataRecord,
+  WeighedRecord,
+  WeighIonRecord,
+  WeighMomentRecord,
+  WeighRecord,
+} from "./records/weigh.js";
 export { type ReportForm, reportEndings, reportForm, reportIn } from "./report-files.js";
 export { type ResultFile, resultFileNames, resultFolder } from "./result-folder.js";
 export type { JsonSchema } from "./schemas/building.js";

@@ -1,7 +1,8 @@
 import type { ConfigurationSet, Decomposition, GivenMoments, MomentField } from "../configurations/index.js";
-import type { CifVersion, MagneticStructure } from "../files/index.js";
-import type { Weighing } from "../weighing/index.js";
+import type { CifVersion } from "../files/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
+import type { Weighing } from "../weighing/index.js";
+import type { DecomposedFile } from "./building/decompose.js";
 import type { NamedSite, ParentSites } from "./building/parent-sites.js";
 import type { WeighedInput } from "./building/weigh.js";
 import type { AnyConfiguration, ConfigurationsRecord } from "./records/configurations.js";
@@ -21,14 +22,14 @@ export async function configurationsRecord(
 export async function decomposeRecord(
   group: SpaceGroup,
   cell: Cell,
-  structure: MagneticStructure,
+  source: DecomposedFile,
   moments: GivenMoments,
   field: MomentField,
   found: Decomposition,
   sites: readonly NamedSite[],
 ): Promise<DecomposeRecord> {
   const { decomposeRecord: made } = await import("./building/decompose.js");
-  return made(group, cell, structure, moments, field, found, sites);
+  return made(group, cell, source, moments, field, found, sites);
 }
 
 /** The ranking of configurations by intensities. */

@@ -2,8 +2,8 @@ import type { HelpTopic } from "./topics.js";
 
 /** Exchange models and temperature scans. */
 export const physicsTopics: { readonly [topic: string]: HelpTopic } = {
-  exchange: {
-    title: "Exchange constants and what is made of them",
+  bonds: {
+    title: "Exchange constants and bonds",
     text: `E = Σ J S·S, every bond counted once: J > 0 is antiferromagnetic. |S| is the spin of the study where
 every magnetic site has one, else 1. Energies are per magnetic atom, in the unit of the constants.
 
@@ -22,7 +22,7 @@ that reach it. Sites that symmetry does not relate are balanced first (Lyons and
   --vary "2 0 1 41"                   phase diagram while J2 runs from 0 to 1; twice for a map
   --k 0,0,0.29                        energies at this k, and which constants put the minimum there`,
   },
-  onset: {
+  scan: {
     title: "Temperature scans",
     text: `Rows of a temperature in K and one or more quantities, in any order of the rows. The header names
 the columns: T, then a name for each peak. A column called su (or sigma, error, esd, uncertainty)

@@ -1,7 +1,7 @@
-import { type ConfigurationOptions, configurationsOf } from "../../configurations/index.js";
+import { type ConfigurationOptions, type ConfigurationSet, configurationsOf } from "../../configurations/index.js";
 import { smallIrreps } from "../../irreps/index.js";
 import type { WaveVector } from "../../kvectors/index.js";
-import { siteModes } from "../../modes/index.js";
+import { type SiteModes, siteModes } from "../../modes/index.js";
 import { type ConfigurationsRecord, configurationsRecord } from "../../reports/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../../spacegroups/index.js";
 import { parentSitesOf } from "../inputs/parent-sites.js";
@@ -17,14 +17,37 @@ export interface ConfigurationInput {
   readonly orbits: readonly SiteOrbit[];
 }
 
-/** All arrangements that the irreps of k allow on the sites, as their record. */
-export async function configurationsFor(
-  work: Work,
-  { group, cell, k, sites, orbits }: ConfigurationInput,
+/** The configurations of one k, and the modes of the sites that they were made from. */
+export interface MadeConfigurations {
+  readonly set: ConfigurationSet;
+  readonly modes: readonly SiteModes[];
+}
+
+/** All arrangements that the irreps of k allow on the sites. */
+export async function madeConfigurations(
+  { host }: Work,
+  { group, cell, k, orbits }: ConfigurationInput,
   options: ConfigurationOptions,
-): Promise<ConfigurationsRecord> {
+): Promise<MadeConfigurations> {
   const irreps = smallIrreps(group, k);
   const modes = orbits.map((orbit) => siteModes(group, irreps, orbit));
-  const set = await configurationsOf(group, irreps, modes, cell, options, work.host);
+  return { set: await configurationsOf(group, irreps, modes, cell, options, host), modes };
+}
+
+/** The same as their record. */
+export function recordOfConfigurations(
+  work: Work,
+  { group, cell, sites, orbits }: ConfigurationInput,
+  { set }: MadeConfigurations,
+): Promise<ConfigurationsRecord> {
   return configurationsRecord(set, cell, parentSitesOf(work, group, cell, sites, orbits));
+}
+
+/** Both in one. */
+export async function configurationsFor(
+  work: Work,
+  input: ConfigurationInput,
+  options: ConfigurationOptions,
+): Promise<ConfigurationsRecord> {
+  return recordOfConfigurations(work, input, await madeConfigurations(work, input, options));
 }

@@ -1,5 +1,4 @@
 import { type Decomposition, type GivenMoments, type MomentField, momentVerdict } from "../../configurations/index.js";
-import type { MagneticStructure } from "../../files/index.js";
 import { waveVectorToJson } from "../../kvectors/index.js";
 import {
   composeMagnetic,
@@ -22,10 +21,19 @@ import type { DecomposeRecord } from "../records/decompose.js";
 import { cellRecord, groupRecord } from "./names.js";
 import { limitOf, type NamedSite } from "./parent-sites.js";
 
+/** Where the moments come from. */
+export interface DecomposedFile {
+  readonly file: string;
+  /** Null for a list. */
+  readonly block: string | null;
+  /** Number of the group as the file names it. */
+  readonly bns: string | null;
+}
+
 export function decomposeRecord(
   group: SpaceGroup,
   cell: Cell,
-  structure: MagneticStructure,
+  source: DecomposedFile,
   moments: GivenMoments,
   field: MomentField,
   found: Decomposition,
@@ -34,8 +42,8 @@ export function decomposeRecord(
   const { name, toBns } = identifyMagneticGroup(found.magneticGroup);
   const { recognised } = found;
   return {
-    file: structure.file,
-    block: structure.block,
+    file: source.file,
+    block: source.block,
     group: groupRecord(group),
     cell: cellRecord(cell),
     childFromParent: formatBasisChange(moments.childFromParent),
@@ -60,7 +68,7 @@ export function decomposeRecord(
       pointGroup: found.magneticGroup.pointGroup,
       toBns: formatBasisChange(toBns),
     },
-    declared: { bns: structure.named.bns, operators: identifyMagneticGroup(declaredGroup(structure)).name.bns.number },
+    declared: { bns: source.bns, operators: identifyMagneticGroup(declaredGroup(moments)).name.bns.number },
     primary: { k: waveVectorToJson(found.primary.k), irreps: [...found.primary.irreps] },
     recognised: recognised && {
       id: recognised.configuration.id,
@@ -93,7 +101,7 @@ function momentOf(
 }
 
 /** The group that the operators of the file make, in the axes of the file. */
-function declaredGroup({ operators, centrings }: MagneticStructure): MagneticGroup {
+function declaredGroup({ operators, centrings }: GivenMoments): MagneticGroup {
   const pure = centrings.filter(({ timeReversal }) => timeReversal === 1);
   const lattice = latticeFromVectors([...identityMatrix, ...pure.map(({ operator }) => translationOf(operator))]);
   return magneticGroup(

@@ -7,8 +7,10 @@ import type { ModesRecord } from "../records/modes.js";
 import type { OnsetRecord } from "../records/onset.js";
 import type { SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
+import type { WeighRecord } from "../records/weigh.js";
 import { exchangeCsv, onsetCsv } from "./exchange-tables.js";
 import { atlasCsv, compatibilityCsv, configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./tables.js";
+import { weighCsv } from "./weigh-table.js";
 
 /** The commands whose answer has a table. */
 export const commandsWithTable: readonly string[] = [
@@ -19,6 +21,7 @@ export const commandsWithTable: readonly string[] = [
   "satellites",
   "index",
   "locate",
+  "weigh",
   "exchange",
   "onset",
 ];
@@ -32,6 +35,7 @@ export function reportCsv({ command, result }: Envelope): string | null {
   if (command === "configurations") return configurationsCsv(result as ConfigurationsRecord);
   if (command === "satellites") return satellitesCsv(result as SatellitesRecord);
   if (command === "index" || command === "locate") return searchCsv(result as SearchRecord);
+  if (command === "weigh") return weighCsv(result as WeighRecord);
   if (command === "exchange") return exchangeCsv(result as ExchangeRecord);
   if (command === "onset") return onsetCsv(result as OnsetRecord);
   return null;

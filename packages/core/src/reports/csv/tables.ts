@@ -10,7 +10,7 @@ import { type CsvCell, csvText } from "./csv-text.js";
 export function satellitesCsv(record: SatellitesRecord): string {
   const header = ["h", "k", "l", "sign", "arm", "q_inverse_angstrom", "d_angstrom", "two_theta_deg", "multiplicity"];
   return csvText(
-    [...header, "multiplicity_all_arms", "overlaps", "more_overlaps"],
+    [...header, "multiplicity_all_arms", "overlaps", "more_overlaps", "zero_for"],
     record.reflections.map((line) => [
       ...line.h,
       line.sign,
@@ -22,6 +22,7 @@ export function satellitesCsv(record: SatellitesRecord): string {
       line.multiplicityAllArms,
       line.overlaps.map(overlapCell).join("; "),
       line.moreOverlaps,
+      line.extinctFor === null ? null : line.extinctFor.join(" "),
     ]),
   );
 }

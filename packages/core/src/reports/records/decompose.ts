@@ -16,7 +16,8 @@ export interface IrrepPartRecord {
 /** Result of `kvane decompose`. */
 export interface DecomposeRecord {
   readonly file: string;
-  readonly block: string;
+  /** Null for a list of moments. */
+  readonly block: string | null;
   readonly group: GroupRecord;
   readonly cell: CellRecord;
   /** (P, p) from the parent to the axes of the file. */

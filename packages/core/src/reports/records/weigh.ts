@@ -97,7 +97,11 @@ export interface WeighRecord {
   /** Best criterion first. */
   readonly ranking: readonly WeighedRecord[];
   /** Configurations that give nothing, whatever their amplitudes, where a peak is clearly observed. */
-  readonly struckOut: readonly { readonly id: string; readonly irreps: readonly string[]; readonly peaks: readonly string[] }[];
+  readonly struckOut: readonly {
+    readonly id: string;
+    readonly irreps: readonly string[];
+    readonly peaks: readonly string[];
+  }[];
   /** Labels of intensities that lie on no satellite. */
   readonly unassigned: readonly string[];
   /** Whether sizes are relative. */

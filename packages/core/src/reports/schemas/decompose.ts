@@ -4,7 +4,7 @@ const amplitudes = record({ label: text, amplitudes: list(shared("complex")) });
 
 export const decomposeSchema: JsonSchema = record({
   file: text,
-  block: text,
+  block: nullable(text),
   group: shared("group"),
   cell: shared("cell"),
   childFromParent: text,

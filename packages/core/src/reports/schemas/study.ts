@@ -3,7 +3,6 @@ import {
   flag,
   type JsonSchema,
   list,
-  nothing,
   nullable,
   number,
   oneOf,
@@ -15,6 +14,7 @@ import {
 import { configurationsSchema } from "./configurations.js";
 import { overlapSchema, peaksSchema, satellitesSchema, searchSchema } from "./peaks.js";
 import { irrepsSchema, modesSchema, starSchema } from "./symmetry.js";
+import { weighSchema } from "./weigh.js";
 
 export const checkSchema: JsonSchema = record({
   kind: oneOf("study", "cif"),

@@ -1,4 +1,16 @@
-import { count, flag, type JsonSchema, list, nullable, number, oneOf, record, shared, text, tuple } from "./building.js";
+import {
+  count,
+  flag,
+  type JsonSchema,
+  list,
+  nullable,
+  number,
+  oneOf,
+  record,
+  shared,
+  text,
+  tuple,
+} from "./building.js";
 
 const measured = { value: number, su: nullable(number) };
 

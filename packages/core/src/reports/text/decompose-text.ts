@@ -8,7 +8,7 @@ export function decomposeText(record: DecomposeRecord): string[] {
     ...section(
       "Moments",
       fields([
-        ["File", `${record.file}, block ${record.block}`],
+        ["File", record.block === null ? record.file : `${record.file}, block ${record.block}`],
         ["Parent", groupText(record.group)],
         ["Cell", cellText(record.cell)],
         ["Axes of the file", `(${record.childFromParent}) of the parent`],
@@ -40,10 +40,7 @@ export function decomposeText(record: DecomposeRecord): string[] {
           `${group.bns.symbol}, BNS ${group.bns.number}, OG ${group.og.number}, point group ${group.pointGroup}`,
         ],
         ["To the BNS setting", `(${group.toBns}) from the parent's axes`],
-        [
-          "In the file",
-          `${declared.bns === null ? "not named" : `BNS ${declared.bns}`}; its operators are BNS ${declared.operators}${declared.operators === group.bns.number ? "" : ". That is another group: either the moments have more symmetry than the file lists, or they break some of it"}`,
-        ],
+        ...(record.block === null ? [] : [inFileField(record)]),
       ]),
     ),
     ...section(
@@ -57,6 +54,14 @@ export function decomposeText(record: DecomposeRecord): string[] {
             ["Domain", `the listed one moved by ${recognised.operator}`],
           ]),
     ),
+  ];
+}
+
+/** What the file calls its group, and what its operators are. */
+function inFileField({ declared, magneticGroup: group }: DecomposeRecord): [string, string] {
+  return [
+    "In the file",
+    `${declared.bns === null ? "not named" : `BNS ${declared.bns}`}; its operators are BNS ${declared.operators}${declared.operators === group.bns.number ? "" : ". That is another group: either the moments have more symmetry than the file lists, or they break some of it"}`,
   ];
 }
 

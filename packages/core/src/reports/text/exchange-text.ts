@@ -85,7 +85,7 @@ function groundSections(record: ExchangeRecord, ground: GroundRecord): string[] 
     ...section(
       "Minimum of J(k) over the whole zone",
       fields([
-        ["Energy a spin", plain10(ground.energy)],
+        ["Energy a spin", energyText(ground.energy)],
         ["At", setText(ground)],
         ...(ground.dimension === 0 ? [] : [["Set", dimensionSentence(ground)] as const]),
         ...(record.atoms.some(({ potential }) => potential !== 0) ? [["Bound", balanceText(record)] as const] : []),
@@ -112,16 +112,17 @@ function dimensionSentence({ dimension, freeDirections, manifolds }: GroundRecor
   const whole = manifolds.length === 0 ? "" : `: all of ${manifolds.map(kForm).join(", ")}`;
   if (dimension === freeDirections)
     return `isolated as far as the bonds reach; no bond acts along ${counted(freeDirections, "direction")} of k, which stays open${whole}`;
-  const what = ["", "a line or ring of k", "a surface of k", "all k"][dimension] ?? "";
-  const open = freeDirections === 0 ? "" : ` (${counted(freeDirections, "direction")} because no bond acts along it)`;
-  return `${what} with one and the same energy${open}: no single k is preferred${whole === "" ? "" : `; in it${whole}`}`;
+  const what = ["", "a line or ring of k", "a surface of k", "all k"][dimension - freeDirections] ?? "";
+  const open =
+    freeDirections === 0 ? "" : `; no bond acts along ${counted(freeDirections, "direction")} of k, which stays open`;
+  return `${what} with one and the same energy: no single k is preferred${whole === "" ? "" : `; in it${whole}`}${open}`;
 }
 
 /** Sites that symmetry does not relate are weighed against each other. */
 function balanceText({ atoms }: ExchangeRecord): string {
   const labels = [...new Set(atoms.map(({ label }) => label))];
   const each = labels.map((label) =>
-    unbroken(`${label} ${plain10(atoms.find((atom) => atom.label === label)?.potential ?? 0)}`),
+    unbroken(`${label} ${energyText(atoms.find((atom) => atom.label === label)?.potential ?? 0)}`),
   );
   return `tightened by site potentials that add up to nothing for full spins (${each.join(", ")})`;
 }
@@ -133,25 +134,25 @@ function momentsText({ constantMoments: { answer, k, spins, short } }: GroundRec
     return `a ${spins} arrangement of full spins reaches this energy with ${how}: it is the ground state of the model`;
   }
   if (answer === "only a bound")
-    return `no arrangement of full spins at these k reaches this energy (${short.join(", ")} would be short): it is a lower bound, and the ground state may order elsewhere`;
+    return `no arrangement of full spins at these k reaches this energy (${short.join(", ")} would be short): it is a lower bound, and the ground state may have another k`;
   return "no arrangement of full spins that reaches this energy was found: take it as a lower bound";
 }
 
 function certificateText(certificate: GroundRecord["certificate"], { energy }: GroundRecord): string {
   const { boxes, smallestBox, lowerBound, exhaustive, stopped } = certificate;
-  if (!exhaustive) return `not complete: ${stopped ?? "stopped"}; no energy below ${plain10(lowerBound)} so far`;
+  if (!exhaustive) return `not complete: ${stopped ?? "stopped"}; no energy below ${energyText(lowerBound)} so far`;
   const gap = energy - lowerBound;
   return `whole zone in ${boxes} boxes, the smallest ${smallestBox.toPrecision(2)} Å⁻¹: no k has less than this by more than ${gap < 1e-12 ? "rounding" : gap.toPrecision(2)}`;
 }
 
-/** Ten significant digits, as short as they are. */
-function plain10(value: number): string {
-  return String(Number(value.toPrecision(10)) + 0);
+/** Eight significant digits, as short as they are: computed k are known to about nine. */
+function energyText(value: number): string {
+  return String(Number(value.toPrecision(8)) + 0);
 }
 
 function levelSection(record: ExchangeRecord, one: ExchangeAtKRecord): string[] {
   const title = one.from === "given" ? `Energies at the given k = ${kText(one.k)}` : `Energies at k = ${kText(one.k)}`;
-  const above = one.from === "given" ? paragraph(`Lowest here ${plain10(one.above)} a spin above the minimum.`) : [];
+  const above = one.from === "given" ? paragraph(`Lowest here ${energyText(one.above)} a spin above the minimum.`) : [];
   return section(
     title,
     above,
@@ -165,7 +166,7 @@ function levelSection(record: ExchangeRecord, one: ExchangeAtKRecord): string[] 
         { title: "weight of atoms" },
       ],
       one.levels.map((level) => [
-        plain10(level.energy),
+        energyText(level.energy),
         String(level.degeneracy),
         countsText(level.irreps),
         countsText(level.magneticIrreps),
@@ -212,8 +213,8 @@ function configurationSection({ configurations }: ExchangeRecord): string[] {
         kText(one.k),
         one.direction,
         String(one.amplitudes),
-        plain10(one.lowest),
-        plain10(one.highest),
+        energyText(one.lowest),
+        energyText(one.highest),
       ]),
     ),
     [""],
@@ -251,7 +252,7 @@ function stationarySection(answer: StationaryRecord): string[] {
           ],
           answer.needed.map(({ name, j, minimum, lowest }) => [
             name,
-            j === null ? "none" : plain10(j),
+            j === null ? "none" : energyText(j),
             j === null ? "–" : minimum ? "minimum" : "maximum",
             lowest === null ? "–" : lowest ? "the lowest" : "another k is lower",
           ]),

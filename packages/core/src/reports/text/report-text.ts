@@ -16,6 +16,7 @@ import type { SearchRecord } from "../records/search.js";
 import type { ExplainRecord, HelpRecord } from "../records/simple.js";
 import type { StarRecord } from "../records/star.js";
 import type { StudyRecord } from "../records/study.js";
+import type { WeighRecord } from "../records/weigh.js";
 import { atlasText } from "./atlas-text.js";
 import { checkText } from "./check-text.js";
 import { assumedLines, cautionLines, conventionLines, warningLines } from "./closing-text.js";
@@ -33,6 +34,7 @@ import { satellitesText } from "./satellites-text.js";
 import { indexText, locateText } from "./search-text.js";
 import { explainText, helpText } from "./simple-text.js";
 import { starText } from "./star-text.js";
+import { weighText } from "./weigh-text.js";
 
 /**
  * The answer as text of at most 100 columns, ended by a line feed: the result, then warnings, what was assumed, the
@@ -89,6 +91,8 @@ function bodyLines({ command, result }: Envelope, full: boolean): string[] {
       return indexText(result as SearchRecord);
     case "locate":
       return locateText(result as SearchRecord);
+    case "weigh":
+      return weighText(result as WeighRecord);
     case "exchange":
       return exchangeText(result as ExchangeRecord);
     case "onset":

@@ -14,6 +14,7 @@ import { satellitesText, satelliteTable } from "./satellites-text.js";
 import { assignmentTable, candidateTable, certificateLines, peakFields, separationLines } from "./search-text.js";
 import { severalVectorLines } from "./several-vectors-text.js";
 import { starFields, starText } from "./star-text.js";
+import { weighSummary, weighText } from "./weigh-text.js";
 
 /** Satellites and candidates that the short report shows. */
 const shownSatellites = 8;
@@ -58,6 +59,7 @@ export function runFullText(record: RunRecord): string[] {
       ...modesText(branch.modes),
       ...(branch.configurations === null ? [] : configurationsText(branch.configurations)),
       ...(branch.satellites ? satellitesText(branch.satellites) : []),
+      ...(branch.weigh ? weighText(branch.weigh) : []),
     ]),
   ];
 }
@@ -145,6 +147,7 @@ function branchText(branch: BranchRecord, number: number | null): string[] {
     ...section(`${name}Modes`, modeSummary(branch), [""], paragraph(letterText(branch))),
     ...configurationSummary(branch, name),
     ...satelliteSummary(branch, name),
+    ...weightSummary(branch, name),
   ];
 }
 
@@ -193,6 +196,11 @@ function configurationSummary({ configurations }: BranchRecord, name: string): s
     moreLine(configurations.configurations.length - shownConfigurations, "configuration"),
     configurations.bounded.flatMap((what) => paragraph(`Left out because of the limit: ${what}.`)),
   );
+}
+
+/** The ranking alone; the full report and `kvane weigh` have moments and intensities. */
+function weightSummary({ weigh }: BranchRecord, name: string): string[] {
+  return weigh === null ? [] : section(`${name}Weights`, weighSummary(weigh, shownConfigurations));
 }
 
 function satelliteSummary({ satellites }: BranchRecord, name: string): string[] {

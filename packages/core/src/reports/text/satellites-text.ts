@@ -22,7 +22,7 @@ export function satellitesText(record: SatellitesRecord): string[] {
       satelliteTable(record.reflections, record),
       [""],
       paragraph(
-        `Lines that symmetry makes equal stand once. n: vectors of one single-k domain; n(star): over all arms. On it: nuclear lines that are not extinct within ${plain(record.overlapWithin)} Å⁻¹, and images of nuclear lines through half the wavelength.`,
+        `Lines that symmetry makes equal stand once. n: vectors of one single-k domain; n(star): over all arms. On it: nuclear lines that are not extinct within ${plain(record.overlapWithin)} Å⁻¹, and images of nuclear lines through half the wavelength.${hasExtinctions(record) ? " Zero for: irreps that give the line no intensity, whatever their amplitudes are." : ""}`,
       ),
     ),
   ];
@@ -31,6 +31,7 @@ export function satellitesText(record: SatellitesRecord): string[] {
 /** The table alone, also for a shortened list. */
 export function satelliteTable(reflections: readonly SatelliteRecord[], record: SatellitesRecord): string[] {
   const angles = record.wavelengthAngstrom !== null;
+  const extinctions = hasExtinctions(record);
   return table(
     [
       { title: "H ± k" },
@@ -39,6 +40,7 @@ export function satelliteTable(reflections: readonly SatelliteRecord[], record: 
       ...(angles ? [{ title: "2θ / °", align: "right" as const }] : []),
       { title: "n", align: "right" },
       { title: "n(star)", align: "right" },
+      ...(extinctions ? [{ title: "zero for" }] : []),
       { title: "on it" },
     ],
     reflections.map((line) => [
@@ -48,9 +50,20 @@ export function satelliteTable(reflections: readonly SatelliteRecord[], record: 
       ...(angles ? [decimals(line.twoThetaDeg, 3)] : []),
       String(line.multiplicity),
       String(line.multiplicityAllArms),
+      ...(extinctions ? [extinctText(line)] : []),
       overlapsText(line),
     ]),
   );
+}
+
+/** Whether it was asked what vanishes on the sites. */
+export function hasExtinctions({ reflections }: SatellitesRecord): boolean {
+  return reflections.some(({ extinctFor }) => extinctFor !== null);
+}
+
+/** The irreps that make the line zero. */
+export function extinctText({ extinctFor }: SatelliteRecord): string {
+  return (extinctFor ?? []).join(", ");
 }
 
 /** Names on a line; the JSON has more of them. */

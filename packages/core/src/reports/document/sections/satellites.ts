@@ -1,5 +1,5 @@
 import { decimals, plain } from "../../text/names.js";
-import { lineText, overlapsText } from "../../text/satellites-text.js";
+import { extinctText, hasExtinctions, lineText, overlapsText } from "../../text/satellites-text.js";
 import { type DocumentSection, moreBlock, paragraphBlock, tableBlock } from "../blocks.js";
 import type { BranchSource } from "../run-document.js";
 
@@ -11,7 +11,17 @@ const listedLines = 500;
 export function satellitesSection({ branch: { satellites }, prefix }: BranchSource): DocumentSection | null {
   if (satellites === null) return null;
   const angles = satellites.wavelengthAngstrom !== null;
-  const columns = ["line", ">Q / Å⁻¹", ">d / Å", ...(angles ? [">2θ / °"] : []), ">n", ">n(star)", "also on it"];
+  const zeros = hasExtinctions(satellites);
+  const columns = [
+    "line",
+    ">Q / Å⁻¹",
+    ">d / Å",
+    ...(angles ? [">2θ / °"] : []),
+    ">n",
+    ">n(star)",
+    ...(zeros ? ["zero for"] : []),
+    "also on it",
+  ];
   const rows = satellites.reflections.map((line) => [
     lineText(line),
     decimals(line.q, 5),
@@ -19,6 +29,7 @@ export function satellitesSection({ branch: { satellites }, prefix }: BranchSour
     ...(angles ? [decimals(line.twoThetaDeg, 3)] : []),
     String(line.multiplicity),
     String(line.multiplicityAllArms),
+    ...(zeros ? [extinctText(line)] : []),
     overlapsText(line),
   ]);
   const caption = `Satellites up to Q = ${plain(Number(satellites.qMax.toFixed(3)))} Å⁻¹`;
@@ -39,7 +50,7 @@ export function satellitesSection({ branch: { satellites }, prefix }: BranchSour
           ])
         : []),
       paragraphBlock(
-        `n: vectors of one single-k domain, n(star): over all arms. Also on it: nuclear lines within ${plain(satellites.overlapWithin)} Å⁻¹ and images of nuclear lines through half the wavelength.`,
+        `n: vectors of one single-k domain, n(star): over all arms. Also on it: nuclear lines within ${plain(satellites.overlapWithin)} Å⁻¹ and images of nuclear lines through half the wavelength.${zeros ? " Zero for: irreps that give the line no intensity, whatever their amplitudes are." : ""}`,
       ),
     ],
   };
