@@ -16,6 +16,8 @@ sites:
 peaks: {file: peaks.csv, as: two-theta, wavelength: 2.41}
 `,
   "peaks.csv": "11.43 0.05\n17.77 0.05\n29.69 0.05\n31.87 0.05\n34.77 0.05\n",
+  "intensities.csv": "two-theta intensity intensity-su\n11.43 90 4\n17.77 60 3\n29.69 25 3\n31.87 40 4\n",
+  "crystal.csv": "h k l intensity intensity-su\n0 0.5 0 90 4\n1 0.5 0 60 3\n0 0.5 1 25 3\n",
   "hkl.csv": "h k l\n0 0.47 0\n1 0.47 0\n1 0.53 1\n",
 });
 
@@ -60,11 +62,28 @@ const lines: readonly (readonly string[])[] = [
   ["decompose", doubled, "--parent", "study.yaml"],
   ["satellites", "62", ...cell, "--k", "0,1/2,0"],
   ["satellites", "62", ...cell, "--k", "0,0.47,0", "--wavelength", "2.41", "--q-max", "1.5"],
+  ["satellites", "study.yaml", "--k", "0,1/2,0"],
+  ["weigh", "study.yaml", "--k", "0,1/2,0", "--intensities", "intensities.csv"],
+  ["weigh", "study.yaml", "--k", "0,1/2,0", "--intensities", "crystal.csv", "--scale", "10", "--lorentz", "no"],
   ["index", "study.yaml", "--k", "0,1/2,0"],
   ["index", "62", ...cell, "--k", "0,0.469,0", "--peaks", "hkl.csv", "--as", "hkl"],
   ["locate", "study.yaml"],
   ["exchange", "62", ...cell, "--site", "Fe 0 0 0", "--shells", "3"],
-  ["exchange", "62", ...cell, "--site", "Fe 0 0 0", "--j", "1 1", "--j", "2 0.4", "--k", "0,0.47,0", "--vary", "2 0 1 3"],
+  [
+    "exchange",
+    "62",
+    ...cell,
+    "--site",
+    "Fe 0 0 0",
+    "--j",
+    "1 1",
+    "--j",
+    "2 0.4",
+    "--k",
+    "0,0.47,0",
+    "--vary",
+    "2 0 1 3",
+  ],
   ["onset", "--example"],
   ["locate", "study.yaml", "--max-dimension", "2", "--zero-shift", "0.1"],
   ["check", "study.yaml"],
@@ -95,6 +114,9 @@ const wrong: readonly (readonly string[])[] = [
   ["export", "study.yaml", "--k", "0,1/2,0", "--configuration", "9.9"],
   ["export", "study.yaml", "--k", "0,1/2,0"],
   ["decompose"],
+  ["weigh", "study.yaml", "--k", "0,1/2,0"],
+  ["weigh", "study.yaml", "--k", "0,1/2,0", "--intensities", "peaks.csv"],
+  ["weigh", "study.yaml", "--k", "u,0,0", "--intensities", "intensities.csv"],
 ];
 
 describe("--json gives the shape of the schema", () => {

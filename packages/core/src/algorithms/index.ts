@@ -1,6 +1,6 @@
 /**
  * Numerical methods and the manners of long work; no physics. Cancel and progress for whoever started the work,
- * positive definite and Hermitian matrices, non-linear least squares, branch and bound over boxes, convex cells. Sources: Golub & Van
+ * positive definite and Hermitian matrices, least squares, branch and bound over boxes, convex cells. Sources: Golub & Van
  * Loan, Matrix Computations; Björck, Numerical Methods for Least Squares Problems (1996); Hansen & Walster, Global
  * Optimization Using Interval Analysis (2004).
  */

@@ -13,8 +13,9 @@ const leastDamping = 1e-12;
 const mostDamping = 1e12;
 
 /**
- * Damped non-linear least squares (D. W. Marquardt, J. Soc. Ind. Appl. Math. 11 (1963) 431): unlike Gauss–Newton it also
- * works where the observations do not fix every parameter, for it adds a share of the diagonal to the normal matrix.
+ * Damped non-linear least squares (K. Levenberg, Q. Appl. Math. 2 (1944) 164; D. W. Marquardt, J. Soc. Ind. Appl. Math. 11
+ * (1963) 431): unlike Gauss–Newton it also works where the observations do not fix every parameter. Parameters should be
+ * of one scale.
  * Same convention as `gaussNewton`: residuals are observed − calculated, the Jacobian is that of the calculated values.
  *
  * @param options.enough stop when the sum of squares is at most this
@@ -66,10 +67,8 @@ function dampedStep({ residuals, jacobian }: WeightedResiduals, size: number, da
     }
   let largest = 0;
   for (let a = 0; a < size; a++) largest = Math.max(largest, normal[a * size + a] as number);
-  for (let a = 0; a < size; a++)
-    // A parameter that nothing depends on would leave its diagonal at zero.
-    normal[a * size + a] =
-      (normal[a * size + a] as number) + damping * Math.max(normal[a * size + a] as number, 1e-6 * largest);
+  // The same for all, after Levenberg: a share of each diagonal would send weakly determined parameters far away.
+  for (let a = 0; a < size; a++) normal[a * size + a] = (normal[a * size + a] as number) + damping * largest;
   const factor = choleskyFactor(normal, size, 1e-16);
   return factor && choleskySolve(factor, right);
 }

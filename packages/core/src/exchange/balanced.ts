@@ -13,7 +13,7 @@ export interface PreparedZone {
 }
 
 const rounds = 12;
-const steps = 32;
+const steps = 26;
 /** Share of the scale within which a round counts as no gain. */
 const enough = 1e-13;
 
@@ -41,11 +41,11 @@ export async function balancedModel(
     const mean = nu.reduce((sum, entry, n) => sum + entry * (counts[n] as number), 0) / atoms.length;
     return atoms.map(({ orbit }) => (nu[orbits.indexOf(orbit)] as number) - mean);
   };
-  const bound = (nu: readonly number[]) =>
-    lowestOver({ ...start, potentials: Float64Array.from(potentialsOf(nu)) }, wedge, seeds);
+  const bound = (nu: readonly number[], everywhere = true) =>
+    lowestOver({ ...start, potentials: Float64Array.from(potentialsOf(nu)) }, wedge, seeds, everywhere);
   /** The slope of the bound: by how much the orbit has more than its share of the lowest eigenvector. */
   const excess = (nu: readonly number[], axis: number): number => {
-    const { weights } = bound(nu);
+    const { weights } = bound(nu, false);
     const own = atoms.reduce(
       (sum, { orbit }, atom) => sum + (orbit === orbits[axis] ? (weights[atom] as number) : 0),
       0,
@@ -63,7 +63,7 @@ export async function balancedModel(
       const from = nu[axis] as number;
       const near = goldenSection((one) => -bound(along(one)).value, from - reach, from + reach, steps);
       // Golden sections end where rounding hides the maximum; the sign of the slope goes on from there.
-      const entry = signChange((one) => excess(along(one), axis), near, 1e-5 * start.scale);
+      const entry = signChange((one) => excess(along(one), axis), near, 1e-4 * start.scale);
       const next = bound(along(entry)).value;
       if (next > value - enough * start.scale) [nu, value] = [along(entry), next];
     }
@@ -76,7 +76,7 @@ export async function balancedModel(
 function signChange(value: (x: number) => number, near: number, reach: number): number {
   let [low, high] = [near - reach, near + reach];
   if (!(value(low) > 0) || !(value(high) < 0)) return near;
-  for (let step = 0; step < 36; step++) {
+  for (let step = 0; step < 42; step++) {
     const middle = (low + high) / 2;
     if (value(middle) > 0) low = middle;
     else high = middle;
@@ -84,12 +84,13 @@ function signChange(value: (x: number) => number, near: number, reach: number): 
   return (low + high) / 2;
 }
 
-function lowestOver(interaction: Interaction, wedge: ZoneWedge, seeds: Float64Array[]) {
+/** @param everywhere also from new places; else only where a minimum was seen before */
+function lowestOver(interaction: Interaction, wedge: ZoneWedge, seeds: Float64Array[], everywhere: boolean) {
   const branch = lowestBranch(interaction);
   const size = Math.hypot(...wedge.half);
   const found = [
     ...seeds.map((x) => descend(branch, x, size, interaction.scale)),
-    ...seededDescents(branch, wedge, size, interaction.scale, 2),
+    ...(everywhere ? seededDescents(branch, wedge, size, interaction.scale, 2) : []),
   ];
   const best = found.reduce((least, one) => (one.value < least.value ? one : least));
   if (!seeds.some((x) => Math.hypot(...x.map((entry, axis) => entry - (best.x[axis] as number))) < 1e-3 * size))

@@ -31,7 +31,7 @@ export function parseMomentList(text: string, file: string): readonly ListedMome
     const numbers = words.slice(1).map(numberOf);
     const isHeader = moments.length === 0 && problems.length === 0 && numbers.every((number) => number === null);
     if (isHeader) return;
-    if (words.length === 7 && numbers.every((number) => number !== null)) {
+    if (words.length === 7 && numbers.every((number) => number !== null) && !hasDecimalComma(row)) {
       const [x, y, z, mx, my, mz] = numbers as [number, number, number, number, number, number];
       moments.push({ label: words[0] as string, position: [x, y, z], crystal: [mx, my, mz], line: index + 1 });
       return;
@@ -59,6 +59,14 @@ export function parseMomentList(text: string, file: string): readonly ListedMome
 
 /** Problems of one file that are listed. */
 const mostProblems = 20;
+
+/** Whether a row parted by blanks or semicolons has a comma between two digits: `3,5` is then one number, not two. */
+function hasDecimalComma(row: string): boolean {
+  const words = row.trim().split(/[\s;]+/);
+  return (
+    words.length > 1 && words.some((word) => /^[+-]?\d+,\d+$/.test(word)) && words.some((word) => !word.includes(","))
+  );
+}
 
 /** A decimal, or a fraction of two integers. */
 function numberOf(word: string): number | null {

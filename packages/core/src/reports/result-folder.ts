@@ -1,5 +1,6 @@
 import { cifCode } from "./cif-code.js";
 import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
+import { weighCsv } from "./csv/weigh-table.js";
 import { type DrawnRun, figureNames } from "./document/figure-names.js";
 import { jsonText } from "./json-text.js";
 import type { Envelope } from "./records/common.js";
@@ -20,11 +21,12 @@ export function resultFileNames(record: DrawnRun): string[] {
     "report.md",
     "result.json",
     ...(record.search ? ["assignments.csv"] : []),
-    ...record.branches.flatMap(({ satellites, configurations }, index) => [
+    ...record.branches.flatMap(({ satellites, configurations, weigh }, index) => [
       `branch-${index + 1}-modes.csv`,
       ...(configurations ? [`branch-${index + 1}-configurations.csv`] : []),
       ...cifNames(configurations, index),
       ...(satellites ? [`branch-${index + 1}-satellites.csv`] : []),
+      ...(weigh ? [`branch-${index + 1}-weights.csv`] : []),
     ]),
     ...figureNames(record),
   ];
@@ -46,13 +48,14 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
     ["report.txt", reportText(answer, { full: true })],
     ["result.json", jsonText(answer)],
     ...(record.search ? [["assignments.csv", searchCsv(record.search)] as const] : []),
-    ...record.branches.flatMap(({ modes, satellites, configurations }, index) => [
+    ...record.branches.flatMap(({ modes, satellites, configurations, weigh }, index) => [
       [`branch-${index + 1}-modes.csv`, modesCsv(modes)] as const,
       ...(configurations
         ? [[`branch-${index + 1}-configurations.csv`, configurationsCsv(configurations)] as const]
         : []),
       ...cifFiles(configurations, index),
       ...(satellites ? [[`branch-${index + 1}-satellites.csv`, satellitesCsv(satellites)] as const] : []),
+      ...(weigh ? [[`branch-${index + 1}-weights.csv`, weighCsv(weigh)] as const] : []),
     ]),
   ]);
   return resultFileNames(record).map((name) => {

@@ -14,6 +14,7 @@ export const formatTopics: { readonly [topic: string]: HelpTopic } = {
     - {label: O1, ion: O2-, at: [0.412, 1/4, 0.118]}
   k: [[0, 1/2, 0]]                    # leave out to search
   peaks: {file: satellites.csv, as: two-theta, wavelength: 2.41, tolerance: 0.08}
+  intensities: {file: integrated.csv, scale: 40}
   search: {unmatched: 1, max-dimension: 3, zero-shift: 0.05, cell-scale: 0.002}
   exclude: [[38.1, 38.6]]             # ranges of positions that are set aside
   impurities:                         # peaks on their lines are set aside

@@ -23,6 +23,7 @@ export function nextSteps(
     ...onNuclearSteps(found),
     ...coincidenceSteps(inputs, found, branches, coincidences, warned),
     ...roughStep(found),
+    ...weightStep(branches),
     ...irrepStep(branches),
   ];
 }
@@ -135,6 +136,20 @@ function roughStep({ candidates }: FoundKs): string[] {
   ];
 }
 
+/** Where a refinement starts. */
+function weightStep(branches: readonly BranchRecord[]): string[] {
+  return branches.flatMap(({ weigh }, index) => {
+    const [best] = weigh?.ranking ?? [];
+    if (best === undefined) return [];
+    const whose = branches.length > 1 ? ` of branch ${index + 1}` : "";
+    const same =
+      best.sameAs.length === 0
+        ? ""
+        : ` The intensities do not tell it from ${best.sameAs.slice(0, 4).join(", ")}${best.sameAs.length > 4 ? ` and ${best.sameAs.length - 4} more` : ""}: kvane weigh says what measurement would.`;
+    return [`${best.id} fits the intensities${whose} best: start a refinement from it (kvane export).${same}`];
+  });
+}
+
 function irrepStep(branches: readonly BranchRecord[]): string[] {
   const [first] = branches;
   if (first === undefined) return [];
@@ -151,7 +166,7 @@ function irrepStep(branches: readonly BranchRecord[]): string[] {
     return [
       `No irrep alone puts moments on all of ${sites.map(({ label }) => label).join(", ")}: if they all order with this k, two irreps are at work (kvane configurations --together).`,
     ];
-  if (sets.length < 2) return [];
+  if (sets.length < 2 || (first.weigh?.ranking.length ?? 0) > 0) return [];
   const pairs = sets.some(({ length }) => length > 1) ? ", a conjugate pair counted once," : "";
   return [
     `${sets.length} irreps${pairs} can carry moments${branches.length > 1 ? " with the first k" : ""}: refine each one alone against the intensities before mixing them.`,

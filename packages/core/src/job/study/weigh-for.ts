@@ -40,7 +40,7 @@ export async function weighFor(
   const { list, file, lorentz, scale, resolution } = given;
   const { wavelengthAngstrom, uncertaintySource } = list;
   const how = { file, sample: data.sample, wavelengthAngstrom, lorentz, scale, resolution, uncertaintySource };
-  return weighRecord({ set, cell, ions, data: { ...how, intensities: data.data } }, found);
+  return weighRecord({ set, cell, spaces, ions, data: { ...how, intensities: data.data } }, found);
 }
 
 function dataOf({ list, lorentz, scale, resolution }: GivenIntensities): IntensityData {
@@ -86,7 +86,13 @@ function formFactorsOf(work: Work, { group, cell, sites, orbits }: Configuration
       );
     } catch (error) {
       if (!(error instanceof KvaneError)) throw error;
-      problems.push(...error.problems.map((one) => ({ ...one, message: `site ${orbit.label}: ${one.message}` })));
+      problems.push(
+        ...error.problems.map((one) => ({
+          ...one,
+          message: `site ${orbit.label}: ${one.message}`,
+          remedy: "write one of the tabulated ions",
+        })),
+      );
       return null;
     }
   });

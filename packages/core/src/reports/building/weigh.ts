@@ -1,5 +1,5 @@
 import type { ConfigurationSet } from "../../configurations/index.js";
-import type { MagneticFormFactor } from "../../diffraction/index.js";
+import type { MagneticFormFactor, MomentSpace } from "../../diffraction/index.js";
 import { waveVectorToJson } from "../../kvectors/index.js";
 import { roundNumber } from "../../numbers/index.js";
 import { type Cell, formatTriplet, type SpaceGroup } from "../../spacegroups/index.js";
@@ -11,11 +11,13 @@ import { cellRecord, groupRecord } from "./names.js";
 export interface WeighedInput {
   readonly set: ConfigurationSet;
   readonly cell: Cell;
+  /** What was fitted, for which atoms an amplitude moves. */
+  readonly spaces: readonly MomentSpace[];
   readonly ions: readonly { readonly label: string; readonly formFactor: MagneticFormFactor }[];
   readonly data: Omit<WeighDataRecord, "list"> & { readonly intensities: readonly IntensityDatum[] };
 }
 
-export function weighRecord({ set, cell, ions, data }: WeighedInput, found: Weighing): WeighRecord {
+export function weighRecord({ set, cell, spaces, ions, data }: WeighedInput, found: Weighing): WeighRecord {
   const { intensities, ...how } = data;
   const left = new Set(found.unassigned);
   const irrepsOf = (id: string) => formOf(set, id).irreps;
@@ -41,7 +43,13 @@ export function weighRecord({ set, cell, ions, data }: WeighedInput, found: Weig
           su: roundNumber(uncertainty),
         })),
     },
-    ranking: found.ranking.map((one) => weighedRecord(set, one)),
+    ranking: found.ranking.map((one) =>
+      weighedRecord(
+        set,
+        one,
+        spaces.find(({ id }) => id === one.id),
+      ),
+    ),
     struckOut: found.struckOut.map(({ id, peaks }) => ({ id, irreps: irrepsOf(id), peaks })),
     unassigned: found.unassigned,
     relative: found.relative,
@@ -51,7 +59,10 @@ export function weighRecord({ set, cell, ions, data }: WeighedInput, found: Weig
   };
 }
 
-function weighedRecord(set: ConfigurationSet, one: WeighedCandidate): WeighedRecord {
+function weighedRecord(set: ConfigurationSet, one: WeighedCandidate, space: MomentSpace | undefined): WeighedRecord {
+  const open = one.amplitudes.flatMap(({ determined }, index) => (determined ? [] : [index]));
+  // Along what the data do not see the covariance is 0: sizes that depend on it have no uncertainty.
+  const depends = (atom: number) => open.some((amplitude) => movesAtom(space, amplitude, atom));
   return {
     id: one.id,
     ...formOf(set, one.id),
@@ -67,10 +78,10 @@ function weighedRecord(set: ConfigurationSet, one: WeighedCandidate): WeighedRec
       determined,
     })),
     freePhase: one.freePhase,
-    moments: one.moments.map(({ sizeUncertainty, position, ...moment }) => ({
+    moments: one.moments.map(({ sizeUncertainty, position, ...moment }, atom) => ({
       ...moment,
       position: position.map((entry) => roundNumber(entry)),
-      sizeSu: sizeUncertainty,
+      sizeSu: depends(atom) ? null : sizeUncertainty,
     })),
     factorToLimit: one.factorToLimit,
     scale: one.scale,
@@ -87,6 +98,13 @@ function weighedRecord(set: ConfigurationSet, one: WeighedCandidate): WeighedRec
     starts: one.starts,
     hits: one.hits,
   };
+}
+
+function movesAtom(space: MomentSpace | undefined, amplitude: number, atom: number): boolean {
+  return (space?.basis[amplitude]?.components ?? []).some((wave) => {
+    const { real = [], imaginary = [] } = wave[atom] ?? {};
+    return [...real, ...imaginary].some((entry) => entry !== 0);
+  });
 }
 
 function formOf(set: ConfigurationSet, id: string): { readonly irreps: string[]; readonly direction: string } {

@@ -8,7 +8,7 @@ export interface DocumentColumn {
 
 /** What a page does with a drawing beyond showing it: the name of the script's part and the key of its data. */
 export interface LiveView {
-  readonly kind: "peaks" | "zone" | "moments";
+  readonly kind: "peaks" | "zone" | "moments" | "configurations";
   /** Key in the data of the page. */
   readonly data: string;
 }

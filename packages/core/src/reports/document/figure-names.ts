@@ -1,4 +1,4 @@
-import type { RunRecord } from "../records/run.js";
+import type { BranchRecord, RunRecord } from "../records/run.js";
 import { isNamed } from "../svg/group-of-record.js";
 import { carriedSets, hasMoments } from "../svg/moment-data.js";
 
@@ -21,11 +21,22 @@ export function momentFigureNames(record: DrawnRun, index: number): string[] {
   return carriedSets(branch).map((_, set) => `branch-${index + 1}-moments-${set + 1}.svg`);
 }
 
+/** Configurations whose intensities are drawn. */
+export const shownWeights = 3;
+
+/** The drawing of observed against calculated intensities of a branch. */
+export function weightsFigureName({ weigh }: Pick<BranchRecord, "weigh">, index: number): string | null {
+  return weigh === null || weigh.ranking.length === 0 ? null : `branch-${index + 1}-weights.svg`;
+}
+
 /** Names of all drawings of a run, known before anything is drawn. */
 export function figureNames(record: DrawnRun): string[] {
   return [
     peakFigureName(record),
     zoneFigureName(record),
-    ...record.branches.flatMap((_, index) => momentFigureNames(record, index)),
+    ...record.branches.flatMap((branch, index) => [
+      ...momentFigureNames(record, index),
+      weightsFigureName(branch, index),
+    ]),
   ].filter((name) => name !== null);
 }

@@ -15,6 +15,7 @@ import { repeatSection } from "./sections/repeat.js";
 import { satellitesSection } from "./sections/satellites.js";
 import { summaryBlocks } from "./sections/summary.js";
 import { waveVectorSection } from "./sections/wave-vector.js";
+import { weightsSection } from "./sections/weights.js";
 import { zoneSection } from "./sections/zone.js";
 
 /** What a section is made from. */
@@ -35,7 +36,7 @@ export interface BranchSource extends DocumentSource {
 /** Null where the record has nothing for the section. */
 type SectionOf<Source> = (source: Source) => DocumentSection | null;
 
-/** The parts that follow from one k, in the order of the job; weights will have their place here. */
+/** The parts that follow from one k, in the order of the job. */
 const branchParts: readonly SectionOf<BranchSource>[] = [
   branchSymmetry,
   irrepsSection,
@@ -43,6 +44,7 @@ const branchParts: readonly SectionOf<BranchSource>[] = [
   momentsSection,
   configurationsSection,
   satellitesSection,
+  weightsSection,
 ];
 
 /** The whole report, in the order in which a user asks. */

@@ -1,5 +1,4 @@
-import type { MomentScene } from "../svg/moment-data.js";
-import { momentsOf } from "../svg/moments.js";
+import type { MomentBox, MomentPicture } from "../svg/moment-box.js";
 import { type Role, seriesRole } from "../svg/palette.js";
 import { combine, cross, dot, plus, size, times, type Vector } from "../svg/space.js";
 import type { Solid } from "./solids.js";
@@ -7,9 +6,9 @@ import type { Solid } from "./solids.js";
 /** A solid with the role of its colour. */
 type RoleSolid = Omit<Solid, "colour"> & { readonly role: Role };
 
-/** Everything that stands in the view of one arrangement, about the centre of the cells; lengths in Å. */
-export function sceneParts(scene: MomentScene, arrangement: number, centre: Vector): RoleSolid[] {
-  const { vectors } = momentsOf(scene, arrangement);
+/** Everything that stands in the view of one picture, about the centre of the cells; lengths in Å. */
+export function sceneParts(scene: MomentPicture, centre: Vector): RoleSolid[] {
+  const { vectors } = scene;
   const spacing = usualSpacing(scene);
   const atoms = scene.atoms.flatMap(({ site, at }, index) => {
     const place = plus(combine(scene.axes, at), centre, -1);
@@ -22,7 +21,7 @@ export function sceneParts(scene: MomentScene, arrangement: number, centre: Vect
 }
 
 /** Å: the edge of the cube that one atom has for itself. */
-function usualSpacing({ axes: [a, b, c], cells, atoms }: MomentScene): number {
+function usualSpacing({ axes: [a, b, c], cells, atoms }: MomentBox): number {
   const volume = Math.abs(dot(a, cross(b, c))) * cells[0] * cells[1] * cells[2];
   // Without those that are drawn again on the far sides.
   const inside = atoms.filter(({ at }) => at.every((entry, axis) => entry < (cells[axis] as number) - 1e-4)).length;
@@ -48,7 +47,7 @@ function arrow(place: Vector, moment: Vector, spacing: number, role: Role): Role
   return [stick(plus(place, half, -1), neck, 0.045 * spacing, role), stick(neck, tip, 0.115 * spacing, role, "cone")];
 }
 
-function cellEdges({ axes, cells }: MomentScene, centre: Vector, radius: number): RoleSolid[] {
+function cellEdges({ axes, cells }: MomentBox, centre: Vector, radius: number): RoleSolid[] {
   const range = (count: number) => Array.from({ length: count + 1 }, (_, index) => index);
   return ([0, 1, 2] as const).flatMap((axis) => {
     const [second, third] = [((axis + 1) % 3) as 0 | 1 | 2, ((axis + 2) % 3) as 0 | 1 | 2];

@@ -1,8 +1,9 @@
-import type { MomentScene } from "../svg/moment-data.js";
+import type { MomentBox } from "../svg/moment-box.js";
 import { type Role, seriesRole } from "../svg/palette.js";
 import { combine, cross, dot, plus, size, times, turnedView, unit, type Vector, type View } from "../svg/space.js";
 import { button, choice, make, oncePerFrame } from "./dom.js";
 import { sceneParts } from "./moment-parts.js";
+import type { PictureSource } from "./moment-pictures.js";
 import { type Solid, solidsView } from "./solids.js";
 import { turning } from "./turning.js";
 
@@ -12,19 +13,19 @@ const ways = ["a", "b", "c"] as const;
 const margin = 1.06;
 
 /** A view of the moments that can be turned; made when it comes into sight, for browsers allow few of them at once. */
-export function liveMoments(holder: HTMLElement, scene: MomentScene): void {
+export function liveMoments(holder: HTMLElement, source: PictureSource): void {
   const seen = new IntersectionObserver(
     (entries) => {
       if (!entries.some(({ isIntersecting }) => isIntersecting)) return;
       seen.disconnect();
-      build(holder, scene);
+      build(holder, source);
     },
     { rootMargin: "300px" },
   );
   seen.observe(holder);
 }
 
-function build(holder: HTMLElement, scene: MomentScene): void {
+function build(holder: HTMLElement, source: PictureSource): void {
   if (!drawsSolids()) {
     holder.replaceChildren(
       make(
@@ -43,18 +44,14 @@ function build(holder: HTMLElement, scene: MomentScene): void {
   const labels = ["a", "b", "c"].map((name) => make("span", { class: "axis-name", "aria-hidden": "true" }, name));
   const stage = make("div", { class: "solid-stage" }, canvas, ...labels);
   const solids = solidsView(canvas);
-  let arrangement = Math.max(
-    0,
-    scene.arrangements.findIndex(({ example }) => example),
-  );
+  let scene = source.picture(source.first);
   let view = atFirst;
   let zoom = 1;
-  const centre = times(combine(scene.axes, scene.cells), 0.5);
-  const reach = margin * farthest(scene, centre);
-  const refill = () => solids.fill(painted(sceneParts(scene, arrangement, centre), holder));
+  const refill = () => solids.fill(painted(sceneParts(scene, centreOf(scene)), holder));
   const draw = oncePerFrame(() => {
-    solids.draw(view, reach / zoom);
-    placeLabels(labels, scene, centre, view, reach / zoom, canvas);
+    const reach = (margin * farthest(scene)) / zoom;
+    solids.draw(view, reach);
+    placeLabels(labels, scene, view, reach, canvas);
   });
   const turned = (right: number, down: number) => {
     view = turnedBy(view, right, down);
@@ -69,13 +66,13 @@ function build(holder: HTMLElement, scene: MomentScene): void {
     draw();
   };
   const show = (next: number) => {
-    arrangement = next;
+    scene = source.picture(next);
     refill();
     draw();
   };
   controls(canvas, { turned, zoomed, look });
   holder.replaceChildren(
-    toolBar(scene, arrangement, { turned, zoomed, look, show }),
+    toolBar(source, { turned, zoomed, look, along: (axis) => look(viewAlong(scene, axis)), show }),
     stage,
     siteNames(scene),
     make("p", { class: "hint" }, hint),
@@ -100,11 +97,16 @@ interface Actions {
   readonly turned: (right: number, down: number) => void;
   readonly zoomed: (factor: number) => void;
   readonly look: (view: View) => void;
-  readonly show: (arrangement: number) => void;
+  /** Towards the end of an axis of what is shown. */
+  readonly along: (axis: 0 | 1 | 2) => void;
+  readonly show: (picture: number) => void;
 }
 
 /** Mouse, touch and keys; the wheel only while the canvas has the focus, so that the page can be scrolled past it. */
-function controls(canvas: HTMLCanvasElement, { turned, zoomed, look }: Omit<Actions, "show">): void {
+function controls(
+  canvas: HTMLCanvasElement,
+  { turned, zoomed, look }: Pick<Actions, "turned" | "zoomed" | "look">,
+): void {
   turning(canvas, turned, { "+": () => zoomed(1.25), "-": () => zoomed(0.8), Home: () => look(atFirst) });
   canvas.addEventListener(
     "wheel",
@@ -117,21 +119,16 @@ function controls(canvas: HTMLCanvasElement, { turned, zoomed, look }: Omit<Acti
   );
 }
 
-function toolBar(scene: MomentScene, first: number, { turned, zoomed, look, show }: Actions): HTMLElement {
+function toolBar({ names, first }: PictureSource, { turned, zoomed, along, show }: Actions): HTMLElement {
   return make(
     "div",
     { class: "tools", role: "toolbar", "aria-label": "Moments" },
-    choice(
-      "Show",
-      scene.arrangements.map(({ name }) => name),
-      first,
-      show,
-    ),
+    choice("Show", names, first, show),
     button("←", "Turn to the left", () => turned(-0.25, 0)),
     button("→", "Turn to the right", () => turned(0.25, 0)),
     button("↑", "Turn up", () => turned(0, -0.25)),
     button("↓", "Turn down", () => turned(0, 0.25)),
-    ...ways.map((name, axis) => button(name, `Look along ${name}`, () => look(viewAlong(scene, axis as 0 | 1 | 2)))),
+    ...ways.map((name, axis) => button(name, `Look along ${name}`, () => along(axis as 0 | 1 | 2))),
     button("+", "Larger", () => zoomed(1.25)),
     button("−", "Smaller", () => zoomed(0.8)),
   );
@@ -148,7 +145,14 @@ function drawsSolids(): boolean {
   }
 }
 
-function farthest({ axes, cells }: MomentScene, centre: Vector): number {
+/** Of the box of cells. */
+function centreOf({ axes, cells }: MomentBox): Vector {
+  return times(combine(axes, cells), 0.5);
+}
+
+function farthest(box: MomentBox): number {
+  const { axes, cells } = box;
+  const centre = centreOf(box);
   const corners = [0, 1].flatMap((x) =>
     [0, 1].flatMap((y) => [0, 1].map((z) => [x * cells[0], y * cells[1], z * cells[2]])),
   );
@@ -167,7 +171,7 @@ function turnedBy({ right, up, towards }: View, angle: number, down: number): Vi
 }
 
 /** From the end of an axis, as the projections are drawn. */
-function viewAlong({ axes }: MomentScene, axis: 0 | 1 | 2): View {
+function viewAlong({ axes }: MomentBox, axis: 0 | 1 | 2): View {
   const towards = unit(axes[axis]);
   const level = axes[((axis + 1) % 3) as 0 | 1 | 2];
   const right = unit(plus(level, towards, -dot(level, towards)));
@@ -195,12 +199,13 @@ function hexColour(text: string): Painted[number]["colour"] {
 
 function placeLabels(
   labels: readonly HTMLElement[],
-  { axes, cells }: MomentScene,
-  centre: Vector,
+  box: MomentBox,
   { right, up }: View,
   reach: number,
   canvas: HTMLCanvasElement,
 ): void {
+  const { axes, cells } = box;
+  const centre = centreOf(box);
   const scale = Math.min(canvas.clientWidth, canvas.clientHeight) / 2 / reach;
   labels.forEach((label, axis) => {
     const end = times(axes[axis] as Vector, (cells[axis] ?? 1) + 0.1 * Math.max(...cells));
@@ -210,7 +215,7 @@ function placeLabels(
   });
 }
 
-function siteNames({ sites }: MomentScene): HTMLElement {
+function siteNames({ sites }: MomentBox): HTMLElement {
   return make(
     "ul",
     { class: "sites" },

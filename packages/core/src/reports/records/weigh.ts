@@ -41,6 +41,7 @@ export interface WeighMomentRecord {
   readonly momentCrystal: readonly number[];
   /** Null where it changes from cell to cell. */
   readonly size: number | null;
+  /** Null too where the data leave an amplitude of this atom open. */
   readonly sizeSu: number | null;
   /** The largest in any cell. */
   readonly largest: number;

@@ -74,15 +74,15 @@ export function momentScene(record: RunRecord, branch: BranchRecord): MomentScen
   };
 }
 
-/** So many cells that the wave is seen: its period where that is a few cells, else about one wave. */
-function cellsAlong(k: readonly number[]): [number, number, number] {
+/** So many cells that the wave is seen: its period where that is a few cells, else about one wave; `most` in all. */
+export function cellsAlong(k: readonly number[], most = mostCells): [number, number, number] {
   const along = k.map((entry) => {
     const part = Math.abs(entry - Math.round(entry));
     if (part < 1e-4) return 1;
     const period = [2, 3, 4, 5, 6, 7, 8].find((cells) => Math.abs(part * cells - Math.round(part * cells)) < 1e-3);
     return Math.min(period ?? Math.ceil(1 / part), mostAlong);
   });
-  while (along.reduce((product, one) => product * one, 1) > mostCells) {
+  while (along.reduce((product, one) => product * one, 1) > Math.min(most, mostCells)) {
     const longest = along.indexOf(Math.max(...along));
     along[longest] = Math.max(1, (along[longest] as number) - 1);
   }
@@ -97,20 +97,28 @@ function siteAtoms(
   cells: readonly number[],
   k: readonly number[],
 ): SceneAtom[] {
-  const inside = (value: number, axis: number) => value > -1e-6 && value < (cells[axis] as number) + 1e-6;
   return orbit.flatMap((position, atom) => {
     const start = position.map(fraction);
     return centrings.flatMap((centring) =>
-      cellCorners(cells).flatMap((corner): SceneAtom[] => {
-        const shift = corner.map((entry, axis) => entry + (centring[axis] ?? 0));
-        const at = start.map((entry, axis) => entry + (shift[axis] as number));
-        if (!at.every(inside)) return [];
+      atomsInBox(start, cells, centring).map(({ at, shift }): SceneAtom => {
         const turns = shift.reduce((sum, entry, axis) => sum + entry * (k[axis] as number), 0);
-        return [
-          { site, atom, at: at.map(rounded) as [number, number, number], turns: Math.round(turns * 1e9) / 1e9 + 0 },
-        ];
+        return { site, atom, at, turns: Math.round(turns * 1e9) / 1e9 + 0 };
       }),
     );
+  });
+}
+
+/** Where an atom is in the closed box of cells, and by which translation it got there from its own place. */
+export function atomsInBox(
+  start: readonly number[],
+  cells: readonly number[],
+  centring: readonly number[] = [0, 0, 0],
+): { readonly at: readonly [number, number, number]; readonly shift: readonly number[] }[] {
+  const inside = (value: number, axis: number) => value > -1e-6 && value < (cells[axis] as number) + 1e-6;
+  return cellCorners(cells).flatMap((corner) => {
+    const shift = corner.map((entry, axis) => entry + (centring[axis] ?? 0));
+    const at = start.map((entry, axis) => entry + (shift[axis] as number));
+    return at.every(inside) ? [{ at: at.map(rounded) as [number, number, number], shift }] : [];
   });
 }
 

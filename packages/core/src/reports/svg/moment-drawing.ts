@@ -1,5 +1,6 @@
 import type { Figure } from "./figure.js";
 import { coordinate, element, escapeMarkup } from "./mark-up.js";
+import type { MomentBox } from "./moment-box.js";
 import type { MomentScene } from "./moment-data.js";
 import { momentsOf } from "./moments.js";
 import { paint, seriesRole } from "./palette.js";
@@ -16,24 +17,30 @@ const alongSight = 0.95;
 
 /** Three drawings of one arrangement to one scale, as seen from the ends of a, b and c. */
 export function momentProjections(scene: MomentScene, arrangement: number): readonly Figure[] {
-  const { vectors } = momentsOf(scene, arrangement);
-  const views = ([0, 1, 2] as const).map((axis) => viewFrom(scene.axes[axis], scene.axes[nextAxis(axis)]));
-  const sides = views.map((view) => boxOf(scene, view)).flatMap(({ x, y }) => [x[1] - x[0], y[1] - y[0]]);
+  return boxProjections(scene, momentsOf(scene, arrangement).vectors, "Moments");
+}
+
+/** The same of any atoms with moments; titles begin with `what`. */
+export function boxProjections(box: MomentBox, vectors: readonly Vector[], what: string): readonly Figure[] {
+  const views = ([0, 1, 2] as const).map((axis) => viewFrom(box.axes[axis], box.axes[nextAxis(axis)]));
+  const sides = views.map((view) => boxOf(box, view)).flatMap(({ x, y }) => [x[1] - x[0], y[1] - y[0]]);
   const scale = Math.min(longestSide / Math.max(...sides), largestScale);
-  return ([0, 1, 2] as const).map((axis) => projection(scene, vectors, axis, views[axis] as View, scale));
+  return ([0, 1, 2] as const).map((axis) => projection(box, vectors, { axis, view: views[axis] as View, scale, what }));
 }
 
 function nextAxis(axis: number): 0 | 1 | 2 {
   return ((axis + 1) % 3) as 0 | 1 | 2;
 }
 
-function projection(
-  scene: MomentScene,
-  vectors: readonly Vector[],
-  axis: 0 | 1 | 2,
-  view: View,
-  scale: number,
-): Figure {
+interface Projection {
+  readonly axis: 0 | 1 | 2;
+  readonly view: View;
+  /** Of the drawing, for an Å. */
+  readonly scale: number;
+  readonly what: string;
+}
+
+function projection(scene: MomentBox, vectors: readonly Vector[], { axis, view, scale, what }: Projection): Figure {
   const box = boxOf(scene, view);
   const flat: Flat = (point) => [
     margin + (dot(point, view.right) - box.x[0]) * scale,
@@ -51,7 +58,7 @@ function projection(
   return {
     width: Math.round((box.x[1] - box.x[0]) * scale + 2 * margin),
     height: Math.round((box.y[1] - box.y[0]) * scale + 2 * margin),
-    title: `Moments seen along ${axisNames[axis]}`,
+    title: `${what} seen along ${axisNames[axis]}`,
     description: `${atoms.length} atoms in ${scene.cells.join(" × ")} cells, seen from the end of ${axisNames[axis]}; arrows are moments, ⊙ points to the eye, ⊗ away from it.`,
     marks: [
       cellMarks(scene, axis, flat),
@@ -67,7 +74,7 @@ function projection(
 }
 
 /** From where to where the box of cells goes in a view, to the right and downwards, in Å. */
-function boxOf({ axes, cells }: MomentScene, view: View) {
+function boxOf({ axes, cells }: MomentBox, view: View) {
   const corners = [0, 1].flatMap((x) =>
     [0, 1].flatMap((y) => [0, 1].map((z) => combine(axes, [x * cells[0], y * cells[1], z * cells[2]]))),
   );
@@ -79,13 +86,13 @@ function boxOf({ axes, cells }: MomentScene, view: View) {
 type Flat = (point: Vector) => readonly [number, number];
 
 /** The longest arrow in the plane: about the usual distance between atoms. */
-function arrowLength({ axes: [a, b, c], cells, atoms }: MomentScene, scale: number): number {
+function arrowLength({ axes: [a, b, c], cells, atoms }: MomentBox, scale: number): number {
   const inCell = Math.max(1, atoms.length / (cells[0] * cells[1] * cells[2]));
   const spacing = (Math.abs(dot(a, cross(b, c))) / inCell) ** (1 / 3);
   return Math.max(16, Math.min(longestArrow, 0.95 * spacing * scale));
 }
 
-function cellMarks({ axes, cells }: MomentScene, axis: 0 | 1 | 2, flat: Flat): string {
+function cellMarks({ axes, cells }: MomentBox, axis: 0 | 1 | 2, flat: Flat): string {
   const [first, second] = [nextAxis(axis), nextAxis(axis + 1)];
   const at = (x: number, y: number): Vector => plus(times(axes[first], x), axes[second], y);
   const line = (from: Vector, to: Vector) =>
@@ -176,7 +183,7 @@ function arrowMarks(x: number, y: number, dx: number, dy: number, site: number):
 }
 
 /** What the colours of atoms mean. */
-export function siteLegend(scene: MomentScene): Figure {
+export function siteLegend(scene: Pick<MomentBox, "sites">): Figure {
   let x = 10;
   const marks = scene.sites.map((name, site) => {
     const circle = element("circle", { cx: x + 5, cy: 13, r: 5, ...paint({ fill: seriesRole(site) }) });

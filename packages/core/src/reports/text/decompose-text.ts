@@ -3,7 +3,7 @@ import { fields, paragraph, section, table } from "./layout.js";
 import { cellText, decimals, groupText, kForm, plain } from "./names.js";
 
 export function decomposeText(record: DecomposeRecord): string[] {
-  const { magneticGroup: group, declared, recognised } = record;
+  const { magneticGroup: group, recognised } = record;
   return [
     ...section(
       "Moments",

@@ -22,7 +22,7 @@ export function satellitesText(record: SatellitesRecord): string[] {
       satelliteTable(record.reflections, record),
       [""],
       paragraph(
-        `Lines that symmetry makes equal stand once. n: vectors of one single-k domain; n(star): over all arms. On it: nuclear lines that are not extinct within ${plain(record.overlapWithin)} Å⁻¹, and images of nuclear lines through half the wavelength.${hasExtinctions(record) ? " Zero for: irreps that give the line no intensity, whatever their amplitudes are." : ""}`,
+        `Lines that symmetry makes equal stand once. n: vectors of one single-k domain; n(star): over all arms. On it: nuclear lines that are not extinct within ${plain(record.overlapWithin)} Å⁻¹, and images of nuclear lines through half the wavelength.${extinctionText(record)}`,
       ),
     ),
   ];
@@ -56,9 +56,17 @@ export function satelliteTable(reflections: readonly SatelliteRecord[], record: 
   );
 }
 
-/** Whether it was asked what vanishes on the sites. */
+/** Whether an irrep on the sites makes a line zero. */
 export function hasExtinctions({ reflections }: SatellitesRecord): boolean {
-  return reflections.some(({ extinctFor }) => extinctFor !== null);
+  return reflections.some(({ extinctFor }) => (extinctFor ?? []).length > 0);
+}
+
+/** What the column means, or that it would be empty. */
+export function extinctionText(record: SatellitesRecord): string {
+  if (hasExtinctions(record))
+    return " Zero for: irreps that give the line no intensity, whatever their amplitudes are.";
+  const asked = record.reflections.some(({ extinctFor }) => extinctFor !== null);
+  return asked ? " No irrep on the sites makes a whole line zero." : "";
 }
 
 /** The irreps that make the line zero. */

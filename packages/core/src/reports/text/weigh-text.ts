@@ -72,7 +72,8 @@ function numbersText({ lorentz, sample, wavelengthAngstrom }: WeighDataRecord): 
   return `integrated intensities with the Lorentz factor ${factor}, λ = ${plain(wavelengthAngstrom ?? 0)} Å`;
 }
 
-function scaleText({ relative, data }: WeighRecord): string {
+/** What the sizes of moments rest on. */
+export function scaleText({ relative, data }: WeighRecord): string {
   if (relative) return "not known: moments are relative";
   return data.scale === null ? "from nuclear lines" : `${plain(data.scale)} per |F|² of 10⁻²⁴ cm²`;
 }
@@ -161,6 +162,7 @@ function familyOf({ ranking }: WeighRecord, best: WeighedRecord): WeighedRecord[
 
 function momentSection({ relative }: WeighRecord, one: WeighedRecord): string[] {
   const unit = relative ? "relative" : "μB";
+  const notes = notesOn(one, relative);
   const constant = one.moments.every(({ size }) => size !== null);
   return section(
     `Moments of ${one.id} (${unit})`,
@@ -178,8 +180,7 @@ function momentSection({ relative }: WeighRecord, one: WeighedRecord): string[] 
       one.moments.slice(0, shownAtoms).map(momentRow),
     ),
     one.moments.length > shownAtoms ? paragraph(`and ${counted(one.moments.length - shownAtoms, "more atom")}`) : [],
-    [""],
-    notesOn(one, relative).flatMap((text) => paragraph(text)),
+    notes.length === 0 ? [] : ["", ...notes.flatMap((text) => paragraph(text))],
   );
 }
 
@@ -255,7 +256,7 @@ function comparisonSection({ data, ranking }: WeighRecord): string[] {
 }
 
 /** As many decimals as the uncertainty of the observed value has. */
-function calculatedText(value: number, su: number): string {
+export function calculatedText(value: number, su: number): string {
   return decimals(value, Math.max(0, Math.min(6, 1 - Math.floor(Math.log10(su)))));
 }
 

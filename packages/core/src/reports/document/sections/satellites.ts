@@ -1,5 +1,5 @@
 import { decimals, plain } from "../../text/names.js";
-import { extinctText, hasExtinctions, lineText, overlapsText } from "../../text/satellites-text.js";
+import { extinctionText, extinctText, hasExtinctions, lineText, overlapsText } from "../../text/satellites-text.js";
 import { type DocumentSection, moreBlock, paragraphBlock, tableBlock } from "../blocks.js";
 import type { BranchSource } from "../run-document.js";
 
@@ -50,7 +50,7 @@ export function satellitesSection({ branch: { satellites }, prefix }: BranchSour
           ])
         : []),
       paragraphBlock(
-        `n: vectors of one single-k domain, n(star): over all arms. Also on it: nuclear lines within ${plain(satellites.overlapWithin)} Å⁻¹ and images of nuclear lines through half the wavelength.${zeros ? " Zero for: irreps that give the line no intensity, whatever their amplitudes are." : ""}`,
+        `n: vectors of one single-k domain, n(star): over all arms. Also on it: nuclear lines within ${plain(satellites.overlapWithin)} Å⁻¹ and images of nuclear lines through half the wavelength.${extinctionText(satellites)}`,
       ),
     ],
   };

@@ -1,0 +1,109 @@
+import { withUncertainty } from "../../../numbers/index.js";
+import type { WeighedRecord, WeighRecord } from "../../records/weigh.js";
+import { intensityChart } from "../../svg/intensity-chart.js";
+import { counted, decimals, plain } from "../../text/names.js";
+import { calculatedText, namesOf, notesOn, percent, remarksOn, scaleText, short } from "../../text/weigh-text.js";
+import { type Block, type DocumentSection, fieldsBlock, moreBlock, paragraphBlock, tableBlock } from "../blocks.js";
+import { shownWeights, weightsFigureName } from "../figure-names.js";
+import type { BranchSource } from "../run-document.js";
+
+const columns = 6;
+
+/** How well each configuration fits the intensities, and what the data do not tell. */
+export function weightsSection({ branch, index, prefix }: BranchSource): DocumentSection | null {
+  const { weigh } = branch;
+  if (weigh === null) return null;
+  const [best] = weigh.ranking;
+  const file = weightsFigureName(branch, index);
+  return {
+    id: `${prefix}-weights`,
+    title: "Weights",
+    parts: [],
+    blocks: [
+      ...remarksOn(weigh).map(paragraphBlock),
+      ...fieldsBlock([
+        ["Scale", scaleText(weigh)],
+        ...weigh.ions.map(({ label, ion, formFactor }) => [label, `${ion}, form factor ${formFactor}`] as const),
+      ]),
+      ...rankingBlocks(weigh),
+      ...(file === null ? [] : [figureBlock(weigh, prefix, file)]),
+      ...weigh.ranking.slice(0, shownWeights).flatMap((one) => momentBlocks(weigh, one)),
+      ...(best?.separations ?? []).map(({ from, text }) => paragraphBlock(`${best?.id} and ${from}: ${text}.`)),
+      ...moreBlock("Observed and calculated intensities", comparisonBlocks(weigh)),
+    ],
+  };
+}
+
+function rankingBlocks(weigh: WeighRecord): Block[] {
+  return [
+    ...tableBlock(
+      "Configurations by the Bayesian information criterion, best first",
+      [">", "id", "irreps", ">χ²", ">χ²/dof", ">R", ">parameters", ">criterion", "not told from"],
+      weigh.ranking.map((one, rank) => [
+        String(rank + 1),
+        one.id,
+        one.irreps.join("+"),
+        short(one.chiSquared),
+        one.reducedChiSquared === null ? "–" : short(one.reducedChiSquared),
+        percent(one.rFactor),
+        String(one.parameters),
+        decimals(one.criterion, 1),
+        namesOf(one.sameAs, 4),
+      ]),
+    ),
+    ...tableBlock(
+      "Struck out: nothing on these lines, whatever the amplitudes are",
+      ["id", "irreps", "zero, but observed"],
+      weigh.struckOut.map(({ id, irreps, peaks }) => [id, irreps.join("+"), namesOf(peaks, 6)]),
+    ),
+  ];
+}
+
+function figureBlock(weigh: WeighRecord, prefix: string, file: string): Block {
+  const shown = weigh.ranking.slice(0, shownWeights);
+  return {
+    kind: "figure",
+    figure: {
+      id: `figure-${prefix}-weights`,
+      caption: `Observed intensities (points, ±1 s.u.) and those calculated (bars) for the ${shown.length === 1 ? "configuration" : `first ${counted(shown.length, "configuration")}`}.`,
+      parts: [intensityChart(weigh.data, shown)],
+      legend: null,
+      file,
+      live: null,
+    },
+  };
+}
+
+function momentBlocks({ relative }: WeighRecord, one: WeighedRecord): Block[] {
+  return moreBlock(`Moments of ${one.id} (${relative ? "relative" : "μB"})`, [
+    ...tableBlock(
+      `Moments of ${one.id}, along the axes, in the cell at the origin`,
+      ["atom", "position", ">along a", ">along b", ">along c", ">size", ">limit / μB", ""],
+      one.moments.map((moment) => [
+        moment.label,
+        moment.position.map((entry) => plain(Number(entry.toFixed(4)))).join(", "),
+        ...moment.momentCrystal.map((entry) => decimals(entry, 2)),
+        moment.size !== null && moment.sizeSu !== null && moment.sizeSu > 0
+          ? withUncertainty(moment.size, moment.sizeSu)
+          : decimals(moment.largest, 2),
+        moment.limit === null ? "–" : plain(moment.limit),
+        moment.aboveLimit ? "above the limit" : "",
+      ]),
+    ),
+    ...notesOn(one, relative).map(paragraphBlock),
+  ]);
+}
+
+function comparisonBlocks({ data, ranking }: WeighRecord): Block[] {
+  const shown = ranking.slice(0, columns);
+  return tableBlock(
+    "Observed and calculated intensities",
+    [data.sample === "powder" ? "peak" : "h k l", ">Q / Å⁻¹", ">observed", ...shown.map(({ id }) => `>${id}`)],
+    data.list.map(({ label, q, observed, su }, index) => [
+      label,
+      decimals(q, 4),
+      withUncertainty(observed, su),
+      ...shown.map(({ calculated }) => calculatedText(calculated[index] ?? 0, su)),
+    ]),
+  );
+}
