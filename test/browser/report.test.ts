@@ -144,6 +144,25 @@ describe.skipIf(missing)(`the report in a browser${missing ? ` (skipped: there i
     await page.context().close();
   });
 
+  test("another configuration is chosen by keyboard, and shown; the graph of subgroups has all of them", async () => {
+    const { page, complaints } = await open("example.html");
+    await page.locator("#branch-1-configuration-moments-view").scrollIntoViewIfNeeded();
+    const canvas = page.locator("#branch-1-configuration-moments-view canvas");
+    await canvas.waitFor();
+    const select = page.locator("#branch-1-configuration-moments-view select");
+    const names = await select.locator("option").allTextContents();
+    expect(await page.locator("#branch-1-subgroups .configuration").count()).toBe(names.length);
+    const shown = () => canvas.evaluate((node) => (node as HTMLCanvasElement).toDataURL());
+    await expect.poll(async () => (await shown()).length).toBeGreaterThan(5000);
+    const before = await shown();
+    await select.focus();
+    await page.keyboard.press("ArrowDown");
+    await expect.poll(() => select.inputValue()).toBe(names[1]);
+    await expect.poll(shown).not.toBe(before);
+    expect(complaints).toEqual([]);
+    await page.context().close();
+  });
+
   test("the zone turns", async () => {
     const { page } = await open("example.html");
     const drawing = () => page.locator("#figure-zone svg").innerHTML();

@@ -111,7 +111,7 @@ describe("kvane study FILE.cif", () => {
     const path = structure("occupancy-and-disorder.cif");
     const answer = await json(["study", path]);
     expect(schemaErrors("study", answer)).toEqual([]);
-    expect(answer.warnings).toHaveLength(4);
+    expect(answer.warnings).toHaveLength(5);
     const { stdout, stderr } = await kvane(["study", path]);
     expect(stdout).toBe(answer.result.study);
     expect(stderr.match(/warning\[cif-doubtful\]/g)).toHaveLength(4);
@@ -148,7 +148,7 @@ describe("a CIF in place of group, cell and sites", () => {
     const typed = await json(["modes", "225", ...k, ...cell, "--site", "Mn1 0 0 0"]);
     expect((await json(["modes", "nuclear.cif", ...k])).result).toEqual(typed.result);
     expect((await json(["satellites", "nuclear.cif", ...k])).result).toEqual(
-      (await json(["satellites", "225", ...k, ...cell])).result,
+      (await json(["satellites", "225", ...k, ...cell, "--site", "Mn1 0 0 0"])).result,
     );
   });
 

@@ -67,14 +67,15 @@ describe("run --out DIR", () => {
 
   test("refuses an existing folder; --force replaces its own files and leaves others", async () => {
     writeFileSync(join(folder, "results/notes.txt"), "mine");
-    writeFileSync(join(folder, "results/branch-9-modes.csv"), "of an earlier run");
+    const earlier = ["branch-9-modes.csv", "branch-9-configurations.svg", "branch-9-configuration-GM1.1.svg"];
+    for (const name of earlier) writeFileSync(join(folder, "results", name), "of an earlier run");
     const refused = await run("--out", "results");
     expect(refused.status).toBe(1);
     expect(refused.stderr).toContain("error[output-exists]");
     const forced = await run("--out", "results", "--force", "--quiet");
     expect(forced).toMatchObject({ status: 0, stdout: "", stderr: "" });
     expect(readFileSync(join(folder, "results/notes.txt"), "utf8")).toBe("mine");
-    expect(existsSync(join(folder, "results/branch-9-modes.csv"))).toBe(false);
+    for (const name of earlier) expect(existsSync(join(folder, "results", name)), name).toBe(false);
     expect(readdirSync(folder)).toEqual(["results"]);
   });
 

@@ -109,13 +109,21 @@ describe("kvane weigh", () => {
     expect(result.data.list).toHaveLength(own.calculated.length);
   });
 
-  test("worse ones have more χ², and those that cannot give a peak are struck out with the peak", () => {
+  test("those that cannot give an observed peak are struck out with the peak", () => {
     const { ranking, result } = answer;
     const all = [...ranking.map(({ id }) => id), ...result.struckOut.map(({ id }: Ranked) => id)];
     expect(all.sort()).toEqual(spaces.map(({ id }) => id).sort());
-    const worst = ranking.at(-1) as Ranked;
-    expect(worst.chiSquared).toBeGreaterThan(10 * (ranking[0] as Ranked).chiSquared);
-    for (const { peaks } of result.struckOut) expect(peaks.length).toBeGreaterThan(0);
+    expect(result.struckOut.length).toBeGreaterThan(0);
+    const seen = new Map<string, number>(
+      result.data.list.map((one: { label: string; observed: number; su: number }) => [
+        one.label,
+        one.observed / one.su,
+      ]),
+    );
+    for (const { peaks } of result.struckOut) {
+      expect(peaks.length).toBeGreaterThan(0);
+      for (const peak of peaks) expect(seen.get(peak)).toBeGreaterThan(5);
+    }
   });
 
   test("without a scale sizes are relative, with the factor to what the ion can have", async () => {
@@ -166,8 +174,8 @@ describe("kvane weigh", () => {
   test.each([
     [["bare.yaml"], "missing-key", "bare.yaml", "intensities"],
     [["no-ion.yaml"], "missing-key", "no-ion.yaml", "site Fe1 has no ion"],
-    [["odd-ion.yaml"], "invalid-argument", "odd-ion.yaml:5:22 (sites[0].ion)", "Fe2+, Fe3+"],
-    [["missing.yaml"], "wrong-type", "missing.yaml:6:42", "number|scale"],
+    [["odd-ion.yaml"], "invalid-argument", "odd-ion.yaml:5:23 (sites[0].ion)", "Fe2[+], Fe3[+]"],
+    [["missing.yaml"], "invalid-number", "missing.yaml:6:38 (intensities.scale)", "above 0"],
     [["study.yaml", "--intensities", "gone.csv"], "file-not-found", "gone.csv", "check the name"],
     [["bare.yaml", "--intensities", "bare.csv"], "invalid-peak", "bare.csv:2:1", "no intensity"],
     [["bare.yaml", "--intensities", "elsewhere.csv"], "invalid-argument", "", "lies on a satellite"],
@@ -180,6 +188,25 @@ describe("kvane weigh", () => {
     expect(stderr).toContain(`error[${code}]`);
     expect(stderr).toContain(place);
     expect(stderr).toMatch(new RegExp(part));
+  });
+});
+
+describe("the bundled example", () => {
+  test("the arrangement of moments.mcif, from which the intensities were made, is first; another irrep is far off", async () => {
+    const named = JSON.parse((await kvane(["decompose", "--example", "--json"])).stdout).result;
+    const { stdout } = await kvane(["weigh", "--example", "--k", "1/2,0,0", "--json"]);
+    const { ranking } = JSON.parse(stdout).result as { ranking: (Ranked & { irreps: string[] })[] };
+    expect(JSON.stringify(named)).toContain(ranking[0]?.id);
+    // The other irrep of the two that this k has on these sites.
+    const other = ranking.filter(({ irreps }) => irreps.join() !== ranking[0]?.irreps.join());
+    expect(other.length).toBeGreaterThan(0);
+    for (const { chiSquared } of other) expect(chiSquared).toBeGreaterThan(100 * (ranking[0] as Ranked).chiSquared);
+    // moments.mcif: Mn1 (4.757, 1.213, 0.950) in its cell at the origin, up to a common sign; s.u. about 0.1.
+    const moment = ranking[0]?.moments[0]?.momentCrystal as number[];
+    const sign = Math.sign(moment[0] as number);
+    [4.757, 1.213, 0.95].forEach((value, axis) => {
+      expect(Math.abs(sign * (moment[axis] as number) - value)).toBeLessThan(0.35);
+    });
   });
 });
 
@@ -214,7 +241,7 @@ describe("kvane run with intensities", () => {
 });
 
 describe("satellites with sites", () => {
-  const words = ["satellites", "P n m a", "--cell", "10.21 6.05 4.71 90 90 90", "--k", "0,0,0", "--q-max", "1.6"];
+  const words = ["satellites", "P n m a", "--cell", "10.21 6.05 4.71 90 90 90", "--k", "0,0,0", "--q-max", "3"];
 
   test("every line names the irreps that make it zero: those whose pattern is zero there for all amplitudes", async () => {
     const { stdout } = await kvane([...words, "--site", "Fe1 0 0 0", "--json"]);
@@ -224,7 +251,7 @@ describe("satellites with sites", () => {
     for (const line of reflections) {
       for (const space of spaces) {
         const label = space.id.split(".")[0] as string;
-        const form = lineForms(groupOf("P n m a"), cell, wave("0 0 0"), space, { qMax: 1.6 }).find(
+        const form = lineForms(groupOf("P n m a"), cell, wave("0 0 0"), space, { qMax: 3 }).find(
           (one) => one.line.h.join() === line.h.join(),
         );
         const largest = Math.max(...(form?.matrix ?? [0]).map(Math.abs));
@@ -244,7 +271,7 @@ describe("satellites with sites", () => {
 
   test("the text has a column where a line is zero", async () => {
     const { stdout } = await kvane([...words, "--site", "Fe1 0 0 0"]);
-    expect(stdout).toContain("zero for");
-    expect((await kvane(words)).stdout).not.toContain("zero for");
+    expect(stdout).toContain("Zero for");
+    expect((await kvane(words)).stdout).not.toContain("Zero for");
   });
 });

@@ -148,8 +148,8 @@ const structures: { readonly [file: string]: Expected } = {
       "H1 H none",
       "X1 none 1/10 1/10 1/10",
     ],
-    // No coordinates, a shared position, partial occupancies, disorder: at the first site of each.
-    warnings: ["cif-doubtful 23:1", "cif-doubtful 19:1", "cif-doubtful 18:1", "cif-doubtful 21:1"],
+    // No coordinates, a shared position, partial occupancies, disorder: at the first site of each; an unknown element.
+    warnings: ["cif-doubtful 23:1", "cif-doubtful 19:1", "cif-doubtful 18:1", "cif-doubtful 21:1", "cif-doubtful 1:1"],
   },
   "ions.cif": {
     group: "P 1",
@@ -168,7 +168,8 @@ const structures: { readonly [file: string]: Expected } = {
       "Fe_3 Fe 1/10 0 0",
       "Fe1_2 Fe3+ 11/100 0 0",
     ],
-    warnings: ["cif-doubtful 1:1"],
+    // No element in Wat; labels written anew.
+    warnings: ["cif-doubtful 1:1", "cif-doubtful 1:1"],
   },
   "labels-alone.cif": {
     group: "P 1",
@@ -192,8 +193,8 @@ const structures: { readonly [file: string]: Expected } = {
   "cell-within-uncertainties.cif": {
     group: "P 4/m m m",
     source: "Hermann–Mauguin symbol",
-    // a = b = √((4.40² + 4.45²)/2), the mean of the metric.
-    cell: [4.42507062, 4.42507062, 5.2, 90, 90, 90],
+    // a = b = (4.40 + 4.45)/2, equal uncertainties.
+    cell: [4.425, 4.425, 5.2, 90, 90, 90],
     sites: ["Mn1 Mn 0 0 0"],
   },
   "equivalents-listed.cif": {
@@ -201,6 +202,55 @@ const structures: { readonly [file: string]: Expected } = {
     source: "Hermann–Mauguin symbol",
     cell: [10.2, 6, 4.7, 90, 90, 90],
     sites: ["Fe1 Fe2+ 0 0 0", "Fe2 Fe2+ 1/2 0 1/2", "Fe3 Fe2+ 0 1/2 0", "Fe4 Fe2+ 1/2 1/2 1/2"],
+  },
+  "two-names.cif": {
+    group: "P b n m",
+    source: "Hermann–Mauguin symbol",
+    cell: [5.1, 6.2, 7.3, 90, 90, 90],
+    sites: ["Fe1 Fe 11/100 23/100 37/100"],
+    warnings: ["cif-contradiction 9:33"],
+  },
+  "two-operator-lists.cif": {
+    group: "P -1",
+    source: "operators",
+    cell: [5.1, 6.2, 7.3, 90, 90, 90],
+    sites: ["Fe1 Fe 11/100 23/100 37/100"],
+    warnings: ["cif-contradiction 14:1"],
+  },
+  "other-hand.cif": {
+    group: "P 31 2 1 (a,b,c;0,0,1/24)",
+    source: "operators",
+    cell: [4.9, 4.9, 5.4, 90, 90, 120],
+    sites: ["Fe1 Fe 11/100 23/100 37/100"],
+    // The symbol is that of the other hand; the number is right.
+    warnings: ["cif-contradiction 9:33"],
+  },
+  "cell-weighted.cif": {
+    group: "P 4",
+    source: "Hermann–Mauguin symbol",
+    // (4 × 5.001 + 5.003)/5
+    cell: [5.0014, 5.0014, 7, 90, 90, 90],
+    sites: ["Fe1 Fe 11/100 23/100 37/100"],
+  },
+  "labels-in-capitals.cif": {
+    group: "P 1",
+    source: "Hermann–Mauguin symbol",
+    cell: [5.1, 6.2, 7.3, 90, 90, 90],
+    sites: [
+      "FE2 Fe 1/10 0 0",
+      "NI1 Ni 11/100 0 0",
+      "CO1 Co 3/25 0 0",
+      "YB Yb 13/100 0 0",
+      "HO1 Ho 7/50 0 0",
+      "OW1 O 3/20 0 0",
+      "C1A C 4/25 0 0",
+      "NH4 N 17/100 0 0",
+      "fe3 Fe 9/50 0 0",
+      "Wat1 none 19/100 0 0",
+      "WAT none 1/5 0 0",
+      "M1 none 21/100 0 0",
+    ],
+    warnings: ["cif-doubtful 2:1"],
   },
 };
 
@@ -215,6 +265,9 @@ const refused: { readonly [file: string]: readonly string[] } = {
   "cell-against-group.cif": ["cell-contradicts-group 2:16"],
   "coordinates.cif": ["cif-value 11:7", "cif-value 12:5", "cif-value 12:12"],
   "cartesian.cif": ["cif-missing 1:1"],
+  "hall-as-symbol.cif": ["ambiguous-group 8:33"],
+  "tripled-cell.cif": ["ambiguous-group 8:33"],
+  "cell-without-uncertainties.cif": ["cell-contradicts-group 2:16"],
   "alias-twice.cif": ["cif-duplicate 3:1"],
   "several-structures.cif": ["cif-block 3:1"],
   "no-structure.cif": ["cif-missing 1:1", "cif-missing 1:1", "cif-missing 1:1"],
@@ -292,6 +345,35 @@ describe("structures of CIFs", () => {
     expect(open.symmetry?.group.name).toMatchObject({ number: 227, choice: "1" });
     expect(open.symmetry?.warnings).toEqual([]);
     expect((await structureIn(text("F d -3 m :2"))).symmetry?.warnings).toMatchObject([{ code: "cif-contradiction" }]);
+  });
+
+  test("of two names of one item both are named with their places; equal ones are silent", async () => {
+    const text = cifText("structures", "two-names.cif");
+    const [warning] = (await structureIn(text)).symmetry?.warnings ?? [];
+    expect(warning?.message).toContain("_symmetry_space_group_name_H-M (line 9, column 32)");
+    expect(warning?.remedy).toContain("_space_group_name_H-M_alt (line 10, column 27)");
+    expect((await structureIn(text.replace("'P n m a'", '"P b n m"'))).symmetry?.warnings).toEqual([]);
+  });
+
+  test("a symbol of no table is not read as a Hall symbol beside operators, and that is said", async () => {
+    const text = cifText("structures", "two-operator-lists.cif").replace(
+      "loop_",
+      "_space_group_name_H-M_alt 'P 2 2'\nloop_",
+    );
+    expect((await structureIn(text)).symmetry?.warnings.map(({ message }) => message)).toContain(
+      "the Hermann–Mauguin symbol `P 2 2` is not understood (`P 2 2` is no Hermann–Mauguin symbol)",
+    );
+  });
+
+  test("groups of atoms in the type symbols are no elements, and all guesses up to twenty are listed", async () => {
+    const text = cifText("structures", "two-names.cif").replace("Fe1 Fe 0.11", "N1 NH4 0.11");
+    const { sites, notes } = await structureIn(text);
+    expect(sites[0]?.ion).toBeNull();
+    expect(notes.sites.warnings.map(({ message }) => message)).toEqual([
+      "sites have no element that is known: N1 (NH4)",
+    ]);
+    const guessed = (await structureIn(cifText("structures", "labels-in-capitals.cif"))).notes.sites.assumed;
+    expect(guessed[0]?.value.split(", ")).toHaveLength(9);
   });
 
   test("a cell that breaks its group by more than its uncertainties, and by little, is warned about", async () => {

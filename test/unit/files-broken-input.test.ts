@@ -11,7 +11,7 @@ function folder(path: string, ending: RegExp): [string, string][] {
 }
 
 const studies = [...folder("test/fixtures/studies", /\.yaml$/), ...folder("packages/cli/example", /\.yaml$/)];
-const lists = [...folder("test/fixtures/peaks", /./), ...folder("packages/cli/example", /\.csv$/)];
+const lists = [...folder("test/fixtures/peaks", /./), ...folder("packages/cli/example", /^satellites\.csv$/)];
 
 /** The text cut behind every word, every mark and every line. */
 function cuts(text: string): string[] {

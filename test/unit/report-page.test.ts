@@ -180,10 +180,12 @@ describe("the result folder", () => {
     expect(markdown).not.toContain("![");
   });
 
-  test("a study without a cell or with an open letter has a report without drawings", async () => {
+  test("a study without a cell or with an open letter has a report without drawings but the graph of subgroups", async () => {
     const study = "group: P n m a\nsites: [{label: Fe, at: [0, 0, 0]}]\nk: [[0, u, 0]]\n";
     const files = await resultFolder(await runAnswer(study));
     expect(files.map(({ name }) => name)).toContain("report.html");
-    expect(files.filter(({ name }) => name.endsWith(".svg"))).toEqual([]);
+    expect(files.map(({ name }) => name).filter((name) => name.endsWith(".svg"))).toEqual([
+      "branch-1-configurations.svg",
+    ]);
   });
 });

@@ -10,6 +10,7 @@ import {
   reportEndings,
   reportForm,
   reportIn,
+  reportSvg,
   reportText,
   resultFolder,
 } from "@kvane/core/reports";
@@ -50,6 +51,8 @@ export async function packed(
 ): Promise<Parcel> {
   const { command } = answered;
   const whole = answered as Envelope<RunRecord>;
+  const drawing = wishes.svg ? await reportSvg(answered) : null;
+  if (drawing !== null) return { text: drawing, files: null };
   if (wishes.out === null) return { text: textOf(answered, wishes, columns), files: null };
   if (command === "run") return { text: textOf(answered, wishes, columns), files: await resultFolder(whole) };
   const form = command === "report" && !wishes.json ? reportForm(wishes.out) : null;

@@ -87,6 +87,7 @@ export const optionSpecs = {
   example: { flags: "--example", about: "take the bundled example study" },
   json: { flags: "--json", about: "print the answer as JSON" },
   csv: { flags: "--csv", about: "print the table as CSV" },
+  svg: { flags: "--svg", about: "print the drawing as SVG" },
   out: { flags: "--out <FILE>", about: "write to a new file instead of the terminal" },
   folder: { flags: "--out <DIR>", about: "write everything to a new folder" },
   force: { flags: "--force", about: "let --out replace what is there" },

@@ -75,7 +75,7 @@ function isStale(name: string, files: readonly ResultFile[]): boolean {
   const ours =
     /^(assignments|branch-\d+-(modes|configurations|satellites))\.csv$/.test(name) ||
     /^branch-\d+-GM[\w.]*\.mcif$/.test(name) ||
-    /^(peaks|zone|branch-\d+-moments-\d+)\.svg$/.test(name);
+    /^(peaks|zone|onset|branch-\d+-(moments-\d+|configurations|configuration-GM[\w.]*|weights))\.svg$/.test(name);
   return ours && !files.some((file) => file.name === name);
 }
 

@@ -7,6 +7,7 @@ import { type ParsedLine, valueOptions } from "./program.js";
 export interface OutputWishes {
   readonly json: boolean;
   readonly csv: boolean;
+  readonly svg: boolean;
   readonly out: string | null;
   readonly force: boolean;
   readonly quiet: boolean;
@@ -104,20 +105,29 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
   };
 }
 
-export function wishesFrom({ options }: ParsedLine): OutputWishes {
+export function wishesFrom({ spec, options }: ParsedLine): OutputWishes {
   const wishes = {
     json: options["json"] === true,
     csv: options["csv"] === true,
+    svg: options["svg"] === true,
     out: typeof options["out"] === "string" ? options["out"] : null,
     force: options["force"] === true,
     quiet: options["quiet"] === true,
   };
-  if (wishes.json && wishes.csv)
-    fail("conflicting-arguments", "--json and --csv are both given", {
-      where: { argument: "--csv" },
+  const forms = (["json", "csv", "svg"] as const).filter((form) => wishes[form]).map((form) => `--${form}`);
+  if (forms.length > 1)
+    fail("conflicting-arguments", `${forms.join(" and ")} are ${forms.length === 2 ? "both" : "all"} given`, {
+      where: { argument: forms.at(-1) as string },
       expected: "one form of output",
-      found: "two",
+      found: forms.length === 2 ? "two" : "three",
       remedy: "leave one of them out",
+    });
+  if (wishes.svg && spec.name === "exchange" && options["vary"] === undefined)
+    fail("missing-argument", "there is no phase diagram to draw", {
+      where: { argument: "--vary" },
+      expected: "a constant that runs, or two",
+      found: "none",
+      remedy: 'say which, for example --vary "2 0 1 21", or leave --svg out',
     });
   return wishes;
 }

@@ -100,8 +100,8 @@ async function execute(line: ParsedLine, surroundings: Surroundings): Promise<nu
     return refuse(cancelled, request, wishes.json, host, surroundings);
   }
   deliver(parcel, wishes, surroundings);
-  // A table has no room for warnings, nor has a drafted study; the report and the JSON hold them.
-  const bare = wishes.csv || (line.spec.name === "study" && !wishes.json);
+  // A table or a drawing has no room for warnings, nor has a drafted study; the report and the JSON hold them.
+  const bare = wishes.csv || wishes.svg || (line.spec.name === "study" && !wishes.json);
   if (bare && !wishes.quiet && answered.warnings.length > 0)
     surroundings.writeError(problemsText(answered.warnings, "warning", (place) => host.sourceLine(request, place)));
   return 0;

@@ -18,6 +18,7 @@ export const physicsCommands: readonly CommandSpec[] = [
       "shells",
       "example",
       "csv",
+      "svg",
       ...outputOptions,
     ],
     examples: [
@@ -30,7 +31,7 @@ export const physicsCommands: readonly CommandSpec[] = [
     name: "onset",
     summary: "onset of peaks in a temperature scan, common transitions, movement of k",
     argument: "scan",
-    options: ["reduced", "example", "csv", ...outputOptions],
-    examples: ["kvane onset --example"],
+    options: ["reduced", "example", "csv", "svg", ...outputOptions],
+    examples: ["kvane onset --example", "kvane onset --example --svg"],
   },
 ];

@@ -113,7 +113,10 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
   },
   exchange: {
     takes: ["study", "group", ...structureFields, "cell", "sites", "k", "constants", "vary", "shells"],
-    load: async () => (await import("./commands/exchange.js")).exchangeCommand,
+    load: async () => {
+      const { exchangeCommand } = await import("./commands/exchange.js");
+      return (work) => exchangeCommand(work);
+    },
   },
   onset: {
     takes: ["study", "scan", "reduced"],

@@ -19,12 +19,13 @@ import { numberOption } from "./inputs/number-input.js";
 import { coincidencesOf } from "./study/coincidences.js";
 import { type MadeConfigurations, madeConfigurations, recordOfConfigurations } from "./study/configurations-for.js";
 import { type FoundK, findK } from "./study/find-k.js";
+import { exchangeIfGiven, onsetIfGiven } from "./study/model-and-scan.js";
 import { modesOf } from "./study/modes-of.js";
 import { nextSteps } from "./study/next-steps.js";
 import { readStudy, type StudyInputs, satelliteLimit } from "./study/read-study.js";
 import { satellitesOf } from "./study/satellites-of.js";
 import { starOf } from "./study/star-of.js";
-import { remember, type Work } from "./work.js";
+import { remember, together, type Work } from "./work.js";
 
 /** How many tied candidates are followed unless the user says otherwise. */
 const usualBranches = 3;
@@ -36,7 +37,10 @@ const usualBranches = 3;
 export async function runStudy(work: Work): Promise<RunRecord> {
   const bound = numberOption(work.request, "branches", { from: 1, whole: true }) ?? usualBranches;
   const inputs = await readStudy(work);
-  const intensities = await intensitiesIfGiven(work);
+  const { intensities, onset } = await together({
+    intensities: () => intensitiesIfGiven(work),
+    onset: () => onsetIfGiven(work),
+  });
   const found = await findK(work, inputs, bound);
   const branches: BranchRecord[] = [];
   for (const one of found.followed) {
@@ -44,6 +48,10 @@ export async function runStudy(work: Work): Promise<RunRecord> {
     await breathe(work.host);
     branches.push(await followBranch(work, inputs, intensities, one));
   }
+  const exchange = await exchangeIfGiven(
+    work,
+    found.followed.map(({ k }) => k),
+  );
   const { search, notFollowed } = found;
   const { peaks } = inputs;
   const coincidences = coincidencesOf(inputs);
@@ -55,6 +63,8 @@ export async function runStudy(work: Work): Promise<RunRecord> {
     coincidences,
     search,
     branches,
+    exchange,
+    onset,
     notFollowed,
     next: nextSteps(
       inputs,

@@ -115,7 +115,7 @@ export type {
   WeighMomentRecord,
   WeighRecord,
 } from "./records/weigh.js";
-export { type ReportForm, reportEndings, reportForm, reportIn } from "./report-files.js";
+export { type ReportForm, reportEndings, reportForm, reportIn, reportSvg } from "./report-files.js";
 export { type ResultFile, resultFileNames, resultFolder } from "./result-folder.js";
 export type { JsonSchema } from "./schemas/building.js";
 export { answerSchema, describedCommands } from "./schemas/envelope.js";

@@ -3,6 +3,14 @@ import type { Envelope } from "./records/common.js";
 import type { RunRecord } from "./records/run.js";
 import { reportText } from "./text/report-text.js";
 
+/**
+ * The answer's drawing as an SVG file, or null where the command has none or the answer nothing to draw. What draws is
+ * loaded only when it is wanted.
+ */
+export async function reportSvg(answer: Envelope): Promise<string | null> {
+  return (await import("./svg/report-svg.js")).svgOf(answer);
+}
+
 /** The forms that a report has, by the ending of its file. */
 const forms = { ".html": "html", ".htm": "html", ".md": "markdown", ".txt": "text", ".json": "json" } as const;
 

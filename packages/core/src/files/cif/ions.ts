@@ -1,5 +1,8 @@
 import { isElement } from "../ion-names.js";
 
+/** Short-lived elements of which no structure is known: in capitals `NH4` and `NO3` are groups of atoms, not they. */
+const neverInCapitals = new Set("Es Fm Md No Lr Rf Db Sg Bh Hs Mt Ds Rg Cn Nh Fl Mc Lv Ts Og".split(" "));
+
 /** An element and its charge where it has one, from a type symbol or a label. */
 export interface Ion {
   readonly element: string;
@@ -21,6 +24,7 @@ export function ionOfSymbol(symbol: string): Ion | null {
   const [, letters = "", front = "", size = "", back = ""] = found;
   const element = properCase(letters);
   if (!isElement(element) || (front !== "" && back !== "")) return null;
+  if (element !== letters && neverInCapitals.has(element)) return null;
   const sign = front || back;
   if (sign === "") return ionOf(element, null);
   const charge = Number(size === "" ? 1 : size) * (sign === "-" ? -1 : 1);
@@ -34,25 +38,27 @@ export function ionOf(element: string, charge: number | null): Ion {
 }
 
 /**
- * The element that a label begins with (core dictionary: a label starts with the type symbol). Two letters count where
- * the second is small, or where the file names that element elsewhere: `Co1`, and `CO1` beside `_atom_type_symbol Co`.
+ * The element that a label begins with (core dictionary: a label starts with the type symbol). Two letters that make an
+ * element are it, in capitals too, `FE2` and `CO1`, unless the file names only the element of the first one. Letters
+ * that go on in lower case beyond an element are a word: `Wat` is no tungsten. Null where none can be told.
  *
  * @param known elements that the file names in its formula or list of types
  */
 export function ionOfLabel(label: string, known: ReadonlySet<string>): Ion | null {
-  const letters = /^[A-Za-z]{1,2}/.exec(label.trim())?.[0] ?? "";
-  const two = properCase(letters);
+  const letters = /^[A-Za-z]+/.exec(label.trim())?.[0] ?? "";
+  if (/^[A-Za-z][a-z]{2}/.test(letters)) return null;
+  const two = properCase(letters.slice(0, 2));
   const one = two.slice(0, 1);
-  const small = /^[A-Z][a-z]/.test(letters);
-  if (
-    two.length === 2 &&
-    isElement(two) &&
-    (small ? !known.has(one) || known.has(two) || known.size === 0 : known.has(two))
-  )
-    return ionOf(two, null);
-  if (isElement(one) && (known.size === 0 || known.has(one))) return ionOf(one, null);
-  if (two.length === 2 && isElement(two)) return ionOf(two, null);
-  return isElement(one) ? ionOf(one, null) : null;
+  const oneNamed = isElement(one) && known.has(one);
+  const small = /^.[a-z]/.test(letters);
+  // Three capitals such as `HOH` and `WAT` spell a residue as often as an element: the file has to name it.
+  const word = /^[A-Z]{3}/.test(letters);
+  if (two.length === 2 && isElement(two)) {
+    if (known.has(two)) return ionOf(two, null);
+    if (!oneNamed && !word && (small || !neverInCapitals.has(two))) return ionOf(two, null);
+  }
+  if (oneNamed) return ionOf(one, null);
+  return isElement(one) && !small && !word ? ionOf(one, null) : null;
 }
 
 /** The elements of a formula such as `Fe2 O3` or `C12 H8 (Fe O4)2`. */

@@ -43,6 +43,15 @@ export function siteWarnings(sites: readonly CifSite[], notes: SiteNotes, block:
       "sites belong to disordered groups",
       "alternatives of one atom are all kept; leave out those that are not meant",
     ),
+    ...(notes.unknown.length > 0
+      ? [
+          doubtful(
+            `sites have no element that is known: ${someOf(notes.unknown)}`,
+            block,
+            "correct the type symbols (Fe or Fe3+), or give the ions in the study",
+          ),
+        ]
+      : []),
     ...(notes.dummies.length > 0
       ? [doubtful(`dummy atoms are left out: ${someOf(notes.dummies)}`, block, "nothing, if they are no atoms")]
       : []),

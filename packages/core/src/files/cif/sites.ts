@@ -5,7 +5,7 @@ import { notANumber } from "./cell.js";
 import type { CifValue } from "./document.js";
 import { elementsOfFormula, type Ion, ionOf, ionOfLabel, ionOfSymbol } from "./ions.js";
 import { numberOf, readCifRational } from "./numbers.js";
-import { blockPlace, placeIn } from "./places.js";
+import { blockPlace, placeIn, someOf } from "./places.js";
 import { siteWarnings } from "./site-warnings.js";
 import { isInapplicable, isUnknown, saidText } from "./values.js";
 
@@ -55,7 +55,7 @@ export function readSites(reader: BlockReader): CifSites {
   const types = atomTypes(reader);
   const labels = new Map<string, number>();
   const taken = new Map<string, string>();
-  const notes: SiteNotes = { dummies: [], relabelled: [], guessed: [] };
+  const notes: SiteNotes = { dummies: [], relabelled: [], guessed: [], unknown: [] };
   const sites = rowsOf(reader, coordinates[0], [...coordinates, ...others]).flatMap((row, index) => {
     const site = readSite(reader, row, index, types, labels, notes, problems);
     if (site === null) return [];
@@ -76,6 +76,8 @@ export interface SiteNotes {
   readonly dummies: string[];
   readonly relabelled: string[];
   readonly guessed: string[];
+  /** Sites whose element cannot be told, with the type symbol where there is one. */
+  readonly unknown: string[];
 }
 
 function requireCoordinates(reader: BlockReader): void {
@@ -205,20 +207,22 @@ function ionOfSite(symbol: string | null, label: string, types: AtomTypes, notes
     const charge = ion.charge ?? types.charges.get(symbol ?? "") ?? null;
     return ionOf(ion.element, charge);
   }
-  if (symbol !== null) return null;
-  const guess = ionOfLabel(label, types.elements);
-  if (guess) notes.guessed.push(`${label} is ${guess.text}`);
+  const guess = symbol === null ? ionOfLabel(label, types.elements) : null;
+  if (guess === null) notes.unknown.push(symbol === null ? label : `${label} (${symbol.trim().slice(0, 20)})`);
+  else notes.guessed.push(`${label} is ${guess.text}`);
   return guess;
 }
 
 function guessNote(guessed: readonly string[]): Assumption[] {
   if (guessed.length === 0) return [];
-  const shown = guessed.slice(0, 5).join(", ");
   return [
     {
       what: "elements",
-      value: guessed.length > 5 ? `${shown} and so on` : shown,
+      value: someOf(guessed, mostGuesses),
       because: "the CIF has no type symbols, and labels begin with the element",
     },
   ];
 }
+
+/** Every element that is read from a label is a guess that has to be looked at, but not a thousand in one line. */
+const mostGuesses = 20;

@@ -13,6 +13,7 @@ import {
 } from "../../spacegroups/index.js";
 import { type BlockReader, valuesOf } from "./block-reader.js";
 import type { CifText } from "./document.js";
+import { sameGroup } from "./group-text.js";
 import { readingValue, valuePlace } from "./places.js";
 import { saidText } from "./values.js";
 
@@ -24,15 +25,41 @@ export interface OperatorGroup {
   readonly warnings: readonly Problem[];
 }
 
-const operatorNames = ["_space_group_symop_operation_xyz", "_symmetry_equiv_pos_as_xyz"];
+const operatorNames = ["_space_group_symop_operation_xyz", "_symmetry_equiv_pos_as_xyz"] as const;
 
-/** The texts of the operators; empty when the file has none. */
-export function operatorTexts(reader: BlockReader): CifText[] {
-  for (const name of operatorNames) {
-    const texts = valuesOf(reader, name).flatMap((value) => saidText(value) ?? []);
-    if (texts.length > 0) return texts;
+/** The texts of the operators under each data name that the file has, the newer first; empty when it has none. */
+export function operatorLists(reader: BlockReader): CifText[][] {
+  return operatorNames
+    .map((name) => valuesOf(reader, name).flatMap((value) => saidText(value) ?? []))
+    .filter((texts) => texts.length > 0);
+}
+
+/** What a second list, under the other data name, says against the group of the first; null where they agree. */
+export function otherList(
+  reader: BlockReader,
+  group: SpaceGroup,
+  first: CifText,
+  texts: readonly CifText[],
+): Problem | null {
+  const [start] = texts as readonly [CifText];
+  const [newer, older] = operatorNames;
+  let because = "is another group than that of";
+  try {
+    if (sameGroup(groupOfOperators(reader, texts).group, group)) return null;
+  } catch (error) {
+    if (!(error instanceof KvaneError)) throw error;
+    because = `is not understood (${error.problems[0]?.message ?? "unknown"}), unlike that of`;
   }
-  return [];
+  return problem(
+    "cif-contradiction",
+    `the list of ${older} (line ${start.line}) ${because} ${newer} (line ${first.line})`,
+    {
+      where: valuePlace(reader, start),
+      expected: `the operators of ${newer} in line ${first.line}, column ${first.column}`,
+      found: `${start.raw.slice(0, 60)} and so on`,
+      remedy: `taken are those of ${newer}; check which are right`,
+    },
+  );
 }
 
 /**

@@ -6,19 +6,24 @@ import {
   groupFromSetting,
   type ParsedGroup,
   parseGroupWithNotes,
+  type SpaceGroup,
   tabulatedSettings,
 } from "../../spacegroups/index.js";
 import { type BlockReader, firstText } from "./block-reader.js";
 import type { CifText } from "./document.js";
+import { sameGroup } from "./group-text.js";
 import { readingValue } from "./places.js";
 
 /** What a CIF can say of its symmetry besides operators, in the order in which it is believed. */
 export type SymbolKind = "Hall symbol" | "Hermann–Mauguin symbol" | "number";
 
+/** A value and the data name it stands under. */
+export type NamedText = CifText & { readonly name: string };
+
 /** A statement of the symmetry, not yet read. */
 export interface SymbolStatement {
   readonly kind: SymbolKind;
-  readonly value: CifText;
+  readonly value: NamedText;
   /** Whether the symbol or a code beside it names axes and origin. */
   readonly coded: boolean;
   readonly read: () => ParsedGroup;
@@ -31,28 +36,45 @@ export interface SymbolStatement {
 export function symbolStatements(reader: BlockReader, cell: Cell | null): SymbolStatement[] {
   const statements: SymbolStatement[] = [];
   const code = firstText(reader, "_space_group_IT_coordinate_system_code");
-  const add = (
-    kind: SymbolKind,
-    value: CifText | null,
-    coded: boolean,
-    read: (value: CifText) => ParsedGroup,
-  ): void => {
-    if (value) statements.push({ kind, value, coded, read: () => readingValue(reader, value, () => read(value)) });
+  const add = (kind: SymbolKind, value: NamedText, coded: boolean, read: (value: CifText) => ParsedGroup): void => {
+    statements.push({ kind, value, coded, read: () => readingValue(reader, value, () => read(value)) });
   };
-  const hall = firstText(reader, "_space_group_name_Hall", "_symmetry_space_group_name_Hall");
-  add("Hall symbol", hall, true, ({ text }) => parseGroupWithNotes(`hall:${tidy(text)}`));
-  const symbol = firstText(
-    reader,
-    "_space_group_name_H-M_alt",
-    "_symmetry_space_group_name_H-M",
-    "_space_group_name_H-M_full",
-    "_space_group_name_H-M",
-  );
-  const coded = symbol !== null && (symbol.text.includes(":") || code !== null);
-  add("Hermann–Mauguin symbol", symbol, coded, ({ text }) => withCode(plainSymbol(text), code, cell));
-  const number = firstText(reader, "_space_group_IT_number", "_symmetry_Int_Tables_number");
-  add("number", number, code !== null, ({ text }) => withCode(text.trim(), code, cell));
+  for (const value of differing(reader, hallNames))
+    add("Hall symbol", value, true, ({ text }) => parseGroupWithNotes(`hall:${tidy(text)}`));
+  // A symbol with a code says more than the same one without: it is believed first.
+  const symbols = differing(reader, symbolNames);
+  const withCodeFirst = [...symbols.filter(hasCode), ...symbols.filter((value) => !hasCode(value))];
+  for (const value of withCodeFirst)
+    add("Hermann–Mauguin symbol", value, hasCode(value) || code !== null, ({ text }) =>
+      withCode(plainSymbol(text), code, cell),
+    );
+  for (const value of differing(reader, numberNames))
+    add("number", value, code !== null, ({ text }) => withCode(text.trim(), code, cell));
   return statements;
+}
+
+const hallNames = ["_space_group_name_Hall", "_symmetry_space_group_name_Hall"];
+const symbolNames = [
+  "_space_group_name_H-M_alt",
+  "_symmetry_space_group_name_H-M",
+  "_space_group_name_H-M_full",
+  "_space_group_name_H-M",
+];
+const numberNames = ["_space_group_IT_number", "_symmetry_Int_Tables_number"];
+
+/** What the older and newer names of one item say, equal texts once. */
+function differing(reader: BlockReader, names: readonly string[]): NamedText[] {
+  const found = new Map<string, NamedText>();
+  for (const name of names) {
+    const value = firstText(reader, name);
+    const key = value && tidy(value.text).toLowerCase();
+    if (value && key !== null && !found.has(key)) found.set(key, { ...value, name });
+  }
+  return [...found.values()];
+}
+
+function hasCode({ text }: CifText): boolean {
+  return text.includes(":");
 }
 
 /** Blanks and line ends as single blanks. */
@@ -95,6 +117,7 @@ function withCode(symbol: string, code: CifText | null, cell: Cell | null): Pars
       if (!(error instanceof KvaneError)) throw error;
     }
   }
+  refuseTripleCell(symbol);
   const parsed = parseGroupWithNotes(symbol);
   refuseHallReading(parsed, symbol);
   return cell && parsed.assumed.some(({ what }) => what === "setting of the space group")
@@ -103,18 +126,49 @@ function withCode(symbol: string, code: CifText | null, cell: Cell | null): Pars
 }
 
 /**
- * `P 3 2` is no Hermann–Mauguin symbol with a blank too many, but a Hall symbol of another group than `P 32`: where a
- * Hermann–Mauguin symbol is due, neither is taken.
+ * `H 3` is in no table. Files of proteins mean R 3 with hexagonal axes, older tables a tripled hexagonal cell: which one
+ * must be said.
  */
-function refuseHallReading({ assumed }: ParsedGroup, symbol: string): void {
-  const reading = assumed.find(({ what, value }) => what === "reading of the symbol" && value.startsWith("Hall"));
-  if (reading === undefined) return;
+function refuseTripleCell(symbol: string): void {
+  if (!/^H\s*-?3/i.test(symbol)) return;
+  const rest = symbol
+    .slice(1)
+    .replace(/\s*:.*$/, "")
+    .trim();
+  fail("ambiguous-group", `\`${symbol}\` is in no table of Hermann–Mauguin symbols`, {
+    where: { column: 1 },
+    expected: "a Hermann–Mauguin symbol",
+    found: symbol,
+    remedy: `write R ${rest}:H if H stands for R with hexagonal axes, as in files of proteins; or add the operators`,
+  });
+}
+
+/**
+ * `P 3 2` is no Hermann–Mauguin symbol with a blank too many, but a Hall symbol of another group than `P 32`; `P 2 2`
+ * is Hall's alone. Where a Hermann–Mauguin symbol is due, neither is taken.
+ */
+function refuseHallReading({ group, assumed }: ParsedGroup, symbol: string): void {
+  const noted = assumed.some(({ what, value }) => what === "reading of the symbol" && value.startsWith("Hall"));
+  if (!noted && !isHallAlone(group, symbol)) return;
   fail("ambiguous-group", `\`${symbol}\` is no Hermann–Mauguin symbol`, {
     where: { column: 1 },
     expected: "a Hermann–Mauguin symbol",
     found: symbol,
-    remedy: "correct the blanks in the symbol, or add the operators",
+    remedy: "correct the symbol and its blanks, write a Hall symbol under _space_group_name_Hall, or add the operators",
   });
+}
+
+/** Whether a text is the Hall symbol of the group that it was read as, and the letters of no tabulated symbol. */
+function isHallAlone(group: SpaceGroup, symbol: string): boolean {
+  const letters = (text: string): string => text.replace(/[\s_]/g, "").toLowerCase();
+  const own = letters(symbol);
+  if (tabulatedSettings().some(({ short, full }) => letters(short) === own || letters(full) === own)) return false;
+  try {
+    return sameGroup(parseGroupWithNotes(`hall:${symbol}`).group, group);
+  } catch (error) {
+    if (error instanceof KvaneError) return false;
+    throw error;
+  }
 }
 
 /** Another setting of the same symbol, where the one taken does not fit the cell and that one does. */

@@ -40,20 +40,23 @@ const usualShells = 6;
 /** k of the minimum whose eigenvectors are shown; more are told by number. */
 const shownVectors = 4;
 
-/** `kvane exchange`: shells of neighbours and, with constants, the k that the model prefers. */
-export async function exchangeCommand(work: Work): Promise<ExchangeRecord> {
+/**
+ * `kvane exchange`: shells of neighbours and, with constants, the k that the model prefers. The whole job gives the k
+ * that it found; without them those of the request or the study are taken.
+ */
+export async function exchangeCommand(work: Work, found: readonly WaveVector[] | null = null): Promise<ExchangeRecord> {
   const { group, given, sites, ks, constants, ranges, shells } = await together({
     group: () => groupOf(work),
     given: () => writtenCell(work),
     sites: () => writtenSites(work),
-    ks: () => writtenKs(work),
+    ks: () => (found === null ? writtenKs(work) : []),
     constants: () => constantsOf(work),
     ranges: () => rangesOf(work),
     shells: () => numberOption(work.request, "shells", { from: 1, to: 200, whole: true }),
   });
   const { cell, placed } = await together({
     cell: () => cellFor(group, given),
-    placed: () => ks.map((one) => placedK(work, group, one)),
+    placed: () => found ?? ks.map((one) => placedK(work, group, one)),
   });
   const orbits = orbitsOf(work, group, sites, cell);
   const alone = runningAlone(constants, ranges);

@@ -24,20 +24,22 @@ that reach it. Sites that symmetry does not relate are balanced first (Lyons and
   },
   intensities: {
     title: "Integrated intensities",
-    text: `A peak list in which every row has an intensity (kvane help peaks), by position for a powder or by
-h k l for a crystal, with standard uncertainties; 0 says that a line was looked for and not seen.
+    text: `A peak list in which every row has an intensity (kvane help peaks), by position for a powder or
+by h k l for a crystal, with standard uncertainties; 0 says that a line was looked for and not
+seen. Indices may be fractions: 1/2.
 
   two-theta  intensity  intensity-su        h    k    l    intensity  intensity-su
   11.43      95.2       3.1                 0    1/2  0    95.2       3.1
 
 intensities: {file: integrated.csv}   and where it is needed:
   as, wavelength    as for peaks; left out, those of the peaks
-  lorentz: true     the numbers are intensities as measured, with the Lorentz factor 1/(sin θ sin 2θ)
-                    (powder) or 1/sin 2θ (crystal); false: |F|². Powder lists with a wavelength are
-                    taken as measured, all others as |F|², and that is listed under Assumed
-  scale: 40         intensity per |F|² of 10⁻²⁴ cm² of the primitive cell, from the nuclear lines;
+  lorentz: true     the numbers are intensities as measured, with the Lorentz factor
+                    1/(sin θ sin 2θ) (powder) or 1/sin 2θ (crystal); false: |F|². Powder lists with
+                    a wavelength are taken as measured, all others as |F|², and that is listed
+                    under Assumed
+  scale: 40         intensity per |F|² of 10⁻²⁴ cm² of the primitive cell, from nuclear lines;
                     without it moments are relative
-  resolution: 0.01  lines nearer to each other in Å⁻¹ are one peak, and a peak lies so near to them
+  resolution: 0.01  lines nearer to each other in Å⁻¹ are one peak, which lies so near to them
 
 Form factors follow from the ions of the sites. kvane weigh fits the free amplitudes of every
 configuration and ranks them by χ² + parameters · ln(intensities). A ranking is no refinement.`,
@@ -53,9 +55,9 @@ kx, ky, kz, u, v or w are components of the wave vector. - stands for a value th
   2.0    98.1       2.0  41.7       1.1
 
 Each peak is fitted by I = I₀ (1 − T/T_N)^2β + background over the widest range of (T_N − T)/T_N
-that this law describes, or over that of --reduced. Standard uncertainties are those of the profile of
-χ²; without uncertainties in the file they follow from the scatter. Peaks share a transition unless
-a common T_N is improbable at 0.1 %. A β from a wide range is no critical exponent.
+that this law describes, or over that of --reduced. Standard uncertainties are those of the profile
+of χ²; without uncertainties in the file they follow from the scatter. Peaks share a transition
+unless a common T_N is improbable at 0.1 %. A β from a wide range is no critical exponent.
 
 onset: {file: scan.csv} in a study names the scan for \`kvane onset STUDY.yaml\`.`,
   },

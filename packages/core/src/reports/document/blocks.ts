@@ -23,6 +23,8 @@ export interface DocumentFigure {
   readonly legend: Figure | null;
   readonly file: string;
   readonly live: LiveView | null;
+  /** Set where a narrow page lets the reader scroll it: smaller, its letters would not be read. */
+  readonly scrolls?: true;
 }
 
 /**

@@ -6,10 +6,12 @@ import { askedSection } from "./sections/asked.js";
 import { branchSymmetry } from "./sections/branch-symmetry.js";
 import { cautionsSection } from "./sections/cautions.js";
 import { configurationsSection } from "./sections/configurations.js";
+import { exchangeSection } from "./sections/exchange.js";
 import { irrepsSection } from "./sections/irreps.js";
 import { modesSection } from "./sections/modes.js";
 import { momentsSection } from "./sections/moments.js";
 import { nextSection } from "./sections/next.js";
+import { onsetSection } from "./sections/onset.js";
 import { peaksSection } from "./sections/peaks.js";
 import { repeatSection } from "./sections/repeat.js";
 import { satellitesSection } from "./sections/satellites.js";
@@ -49,7 +51,13 @@ const branchParts: readonly SectionOf<BranchSource>[] = [
 
 /** The whole report, in the order in which a user asks. */
 const parts: readonly SectionOf<DocumentSource>[] = [askedSection, waveVectorSection, peaksSection, zoneSection];
-const closing: readonly SectionOf<DocumentSource>[] = [nextSection, cautionsSection, repeatSection];
+const closing: readonly SectionOf<DocumentSource>[] = [
+  exchangeSection,
+  onsetSection,
+  nextSection,
+  cautionsSection,
+  repeatSection,
+];
 
 /** The report of the whole job as a document, made from the answer alone; the same answer gives the same document. */
 export function runDocument(answer: Envelope<RunRecord>): ReportDocument {

@@ -101,19 +101,26 @@ function tableHtml({ caption, columns, rows }: Extract<Block, { kind: "table" }>
   );
 }
 
-function figureHtml({ id, caption, parts, legend, live }: DocumentFigure): string {
+function figureHtml({ id, caption, parts, legend, live, scrolls }: DocumentFigure): string {
   const drawings = parts.map((part, index) =>
     live === null
       ? inlineSvg(part, `${id}-${index + 1}`, { width: part.width, height: part.height })
       : inlineSvg(part, id),
   );
-  const kind = live?.kind === "peaks" ? "wide" : live?.kind === "zone" ? "zone" : null;
+  const kind = live?.kind === "peaks" ? "wide" : live?.kind === "zone" ? "zone" : scrolls ? "scrolls" : null;
   return element(
     "figure",
     { id, class: kind, "data-live": live?.kind ?? null, "data-data": live?.data ?? null },
     legend === null ? null : inlineSvg(legend, `${id}-legend`, { class: "legend-of" }),
     live === null
-      ? element("div", { class: "parts" }, ...drawings)
+      ? element(
+          "div",
+          // What scrolls has to be reached by keyboard.
+          scrolls
+            ? { class: "parts", tabindex: "0", role: "group", "aria-label": parts[0]?.title ?? "" }
+            : { class: "parts" },
+          ...drawings,
+        )
       : element(
           "div",
           { class: "stage", tabindex: "0", role: "group", "aria-label": parts[0]?.title ?? "" },

@@ -1,7 +1,9 @@
 import type { CellRecord, GroupRecord, KRecord } from "./common.js";
 import type { ConfigurationsRecord } from "./configurations.js";
+import type { ExchangeRecord } from "./exchange.js";
 import type { IrrepsRecord } from "./irreps.js";
 import type { ModesRecord } from "./modes.js";
+import type { OnsetRecord } from "./onset.js";
 import type { OverlapRecord, SatellitesRecord } from "./satellites.js";
 import type { PeaksRecord, SearchRecord } from "./search.js";
 import type { StarRecord } from "./star.js";
@@ -32,6 +34,10 @@ export interface RunRecord {
   readonly coincidences: readonly { readonly peak: number; readonly overlaps: readonly OverlapRecord[] }[];
   readonly search: SearchRecord | null;
   readonly branches: readonly BranchRecord[];
+  /** Null where the study has no exchange constants. */
+  readonly exchange: ExchangeRecord | null;
+  /** Null where the study names no temperature scan. */
+  readonly onset: OnsetRecord | null;
   /** Tied candidates that were not followed because the number of branches is bounded. */
   readonly notFollowed: readonly number[];
   readonly next: readonly string[];

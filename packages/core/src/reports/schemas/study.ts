@@ -12,6 +12,7 @@ import {
   tuple,
 } from "./building.js";
 import { configurationsSchema } from "./configurations.js";
+import { exchangeSchema, onsetSchema } from "./exchange.js";
 import { overlapSchema, peaksSchema, satellitesSchema, searchSchema } from "./peaks.js";
 import { irrepsSchema, modesSchema, starSchema } from "./symmetry.js";
 import { weighSchema } from "./weigh.js";
@@ -85,6 +86,8 @@ export const runSchema: JsonSchema = record({
       weigh: nullable(weighSchema),
     }),
   ),
+  exchange: nullable(exchangeSchema),
+  onset: nullable(onsetSchema),
   notFollowed: list(count),
   next: list(text),
   files: list(text),

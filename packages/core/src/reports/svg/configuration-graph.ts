@@ -22,20 +22,66 @@ interface Node {
   readonly dashed: boolean;
 }
 
+/** An arrow from a group to its subgroup, by the numbers of the boxes. */
+interface Line {
+  readonly from: number;
+  readonly to: number;
+  readonly name: string;
+}
+
+interface Graph {
+  readonly nodes: readonly Node[];
+  readonly lines: readonly Line[];
+  /** What stands above each layer. */
+  readonly heads: readonly string[];
+}
+
 /**
  * The groups of a list of configurations as boxes, from left to right by their index in the parent; lines lead to the
  * maximal subgroups among them, and from the parent to those that are in no other.
  */
 export function configurationGraph(record: ConfigurationsRecord): Figure {
+  const { nodes, lines, heads } = graphOf(record);
+  const layout = layeredLayout(
+    nodes.map(({ layer }) => ({ layer, size: boxHeight + spaceBetween })),
+    lines.map(({ from, to }) => [from, to]),
+  );
+  const columns = columnsOf(nodes, heads);
+  const column = (layer: number) => columns[layer] as Column;
+  const top = headHeight + margin;
+  const place = (node: number): Box => ({
+    ...column(nodes[node]?.layer ?? 0),
+    middle: top + (layout.places[node] as number),
+  });
+  return {
+    width: Math.ceil(column(columns.length - 1).right + margin),
+    height: Math.ceil(top + layout.extent + margin),
+    title: "Subgroup relations of the configurations",
+    description: `${record.configurations.length} magnetic groups by their index in the parent; arrows lead from a group to its subgroups in the list. The report says the same in words.`,
+    marks: [
+      ...columns.map(({ left, right }, layer) => columnHead(heads[layer] ?? "", (left + right) / 2)),
+      ...lines.map((one, index) => {
+        const passed = (layout.passes[index] ?? []).flatMap(({ layer, place: at }): [number, number][] => [
+          [column(layer).left, top + at],
+          [column(layer).right, top + at],
+        ]);
+        return lineMarks(place(one.from), passed, place(one.to), one);
+      }),
+      ...nodes.map((node, index) => boxMarks(node, place(index), index === 0)),
+    ].join(""),
+  };
+}
+
+function graphOf(record: ConfigurationsRecord): Graph {
   const { configurations } = record;
-  const indices = [...new Set(configurations.map(({ index }) => index))].sort((a, b) => a - b);
+  const layers = layersOf(configurations);
   const nodes: Node[] = [
     { head: "parent", symbol: parentSymbol(record), layer: 0, dashed: false },
-    ...configurations.map((one) => ({
+    ...configurations.map((one, index) => ({
       head: one.id,
       symbol: groupSymbol(one),
-      layer: indices.indexOf(one.index) + 1,
-      dashed: isDashed(one),
+      layer: (layers.of[index] as number) + 1,
+      dashed: severalParameters(one),
     })),
   ];
   const lines = configurations.flatMap(({ id, subgroupOf }, index) => {
@@ -47,64 +93,65 @@ export function configurationGraph(record: ConfigurationsRecord): Figure {
       name: `${nodes[from]?.head ?? ""} to ${id}`,
     }));
   });
-  const layout = layeredLayout(
-    nodes.map(({ layer }) => ({ layer, size: boxHeight + spaceBetween })),
-    lines.map(({ from, to }) => [from, to]),
+  return { nodes, lines, heads: ["", ...layers.indices.map((index) => `index ${index}`)] };
+}
+
+/**
+ * The layer of each configuration, from 0, and the index of each layer. Groups of one index that are in each other, as
+ * those of waves may be where only a phase becomes free, stand in layers after each other.
+ */
+function layersOf(configurations: readonly AnyConfiguration[]) {
+  const depths = configurations.map(() => 0);
+  // No chain is longer than the list.
+  for (let step = 0; step < configurations.length; step++)
+    configurations.forEach(({ index, subgroupOf }, place) => {
+      configurations.forEach((other, above) => {
+        if (other.index === index && subgroupOf.includes(other.id))
+          depths[place] = Math.min(
+            configurations.length,
+            Math.max(depths[place] as number, (depths[above] as number) + 1),
+          );
+      });
+    });
+  const pairs = configurations.map(({ index }, place) => ({ index, depth: depths[place] as number }));
+  const sorted = [...pairs].sort((a, b) => a.index - b.index || a.depth - b.depth);
+  const distinct = sorted.filter(
+    ({ index, depth }, place) => sorted[place - 1]?.index !== index || sorted[place - 1]?.depth !== depth,
   );
-  const widths = ["index 1", ...indices.map((index) => `index ${index}`)].map((head, layer) =>
-    Math.ceil(
-      Math.max(
-        textWidth(head),
-        ...nodes
-          .filter((node) => node.layer === layer)
-          .map((node) => Math.max(textWidth(node.head, 14), textWidth(node.symbol, 13)) + 24),
-      ),
-    ),
-  );
-  const lefts = widths.map((_, layer) => widths.slice(0, layer).reduce((sum, width) => sum + width + gap, margin));
-  const place = (node: number): Box => {
-    const layer = nodes[node]?.layer ?? 0;
-    return {
-      left: lefts[layer] as number,
-      right: (lefts[layer] as number) + (widths[layer] as number),
-      middle: headHeight + margin + (layout.places[node] as number),
-    };
-  };
-  const last = widths.length - 1;
   return {
-    width: Math.ceil((lefts[last] as number) + (widths[last] as number) + margin),
-    height: Math.ceil(headHeight + 2 * margin + layout.extent),
-    title: "Subgroup relations of the configurations",
-    description: `${configurations.length} magnetic groups by their index in the parent; lines lead from a group to its subgroups in the list. The list below says the same.`,
-    marks: [
-      ...widths.map((width, layer) =>
-        columnHead(layer === 0 ? "index 1" : `index ${indices[layer - 1]}`, (lefts[layer] as number) + width / 2),
-      ),
-      ...lines.map(({ from, to, name }, index) => {
-        const passed = (layout.passes[index] ?? []).flatMap(({ layer, place: at }): [number, number][] => {
-          const y = headHeight + margin + at;
-          return [
-            [lefts[layer] as number, y],
-            [(lefts[layer] as number) + (widths[layer] as number), y],
-          ];
-        });
-        return lineMarks(place(from), passed, place(to), { name, ofParent: from === 0 });
-      }),
-      ...nodes.map((node, index) => boxMarks(node, place(index), index === 0)),
-    ].join(""),
+    of: pairs.map(({ index, depth }) => distinct.findIndex((one) => one.index === index && one.depth === depth)),
+    indices: distinct.map(({ index }) => index),
   };
+}
+
+interface Column {
+  readonly left: number;
+  readonly right: number;
+}
+
+/** Each as wide as its widest text. */
+function columnsOf(nodes: readonly Node[], heads: readonly string[]): Column[] {
+  const columns: Column[] = [];
+  heads.forEach((head, layer) => {
+    const texts = nodes
+      .filter((node) => node.layer === layer)
+      .map(({ head: id, symbol }) => Math.max(textWidth(id, 14), textWidth(symbol, 13)) + 24);
+    const left = (columns.at(-1)?.right ?? margin - gap) + gap;
+    columns.push({ left, right: left + Math.ceil(Math.max(textWidth(head), ...texts)) });
+  });
+  return columns;
 }
 
 /** Every relation of the graph in words, one line for each configuration. */
 export function relationTexts({ configurations }: ConfigurationsRecord): string[] {
   return configurations.map(
     (one) =>
-      `${one.id}, ${groupSymbol(one)}, index ${one.index}: ${one.subgroupOf.length > 0 ? `subgroup of ${one.subgroupOf.join(", ")}` : "in no other group of the list"}${isDashed(one) ? "; more than one order parameter" : ""}`,
+      `${one.id}, ${groupSymbol(one)}, index ${one.index}: ${one.subgroupOf.length > 0 ? `subgroup of ${one.subgroupOf.join(", ")}` : "in no other group of the list"}${severalParameters(one) ? "; more than one order parameter" : ""}`,
   );
 }
 
 /** Whether a configuration needs more than one order parameter. */
-export function isDashed(one: AnyConfiguration): boolean {
+export function severalParameters(one: AnyConfiguration): boolean {
   return one.severalIrreps || ("needsSecondOrderParameter" in one && one.needsSecondOrderParameter);
 }
 
@@ -113,9 +160,7 @@ function parentSymbol({ group }: ConfigurationsRecord): string {
   return group.hermannMauguin === null ? "with time reversal" : `${group.hermannMauguin} 1'`;
 }
 
-interface Box {
-  readonly left: number;
-  readonly right: number;
+interface Box extends Column {
   readonly middle: number;
 }
 
@@ -123,14 +168,10 @@ function columnHead(text: string, x: number): string {
   return element("text", { x, y: margin + 10, "text-anchor": "middle", ...paint({ fill: "faint" }) }, text);
 }
 
-function lineMarks(
-  from: Box,
-  passed: readonly [number, number][],
-  to: Box,
-  { name, ofParent }: { readonly name: string; readonly ofParent: boolean },
-): string {
+function lineMarks(from: Box, passed: readonly [number, number][], to: Box, { name, from: parent }: Line): string {
+  const ofParent = parent === 0;
   const tip = to.left - 2;
-  const path = line<readonly [number, number]>().digits(2).curve(curveBumpX)([
+  const path = line<readonly [number, number]>().curve(curveBumpX)([
     [from.right, from.middle],
     ...passed,
     [tip - arrowHead, to.middle],

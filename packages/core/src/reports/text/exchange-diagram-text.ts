@@ -4,13 +4,12 @@ import { plain } from "./names.js";
 
 /** Phases with their letters, then boundaries along one constant or a map over two. */
 export function diagramLines(diagram: DiagramRecord): string[] {
-  const used = diagram.phases.map((_, index) => diagram.points.some(({ phase }) => phase === index));
   return [
     ...table(
       [{ title: "phase" }, { title: "k" }, { title: "set" }],
       diagram.phases.flatMap(({ forms, dimension }, index) =>
-        used[index] || inBoundary(diagram, index)
-          ? [[letter(index), forms.join(" and "), setText(dimension, diagram.freeDirections)]]
+        occurs(diagram, index)
+          ? [[phaseLetter(index), forms.join(" and "), setText(dimension, diagram.freeDirections)]]
           : [],
       ),
     ),
@@ -20,16 +19,19 @@ export function diagramLines(diagram: DiagramRecord): string[] {
 }
 
 /** Directions that no bond notices do not count. */
-function setText(dimension: number, free: number): string {
+export function setText(dimension: number, free: number): string {
   if (dimension === free) return "isolated";
   return ["isolated", "line or ring", "surface", "all k"][dimension - free] ?? "";
 }
 
-function inBoundary({ boundaries }: DiagramRecord, index: number): boolean {
+/** Whether a phase holds a point or touches a boundary. */
+export function occurs({ boundaries, points }: DiagramRecord, index: number): boolean {
+  if (points.some(({ phase }) => phase === index)) return true;
   return (boundaries ?? []).some(({ from, to }) => from === index || to === index);
 }
 
-function letter(index: number): string {
+/** What a phase is called in tables and drawings. */
+export function phaseLetter(index: number): string {
   return index < 26 ? String.fromCharCode(65 + index) : index < 52 ? String.fromCharCode(71 + index) : "?";
 }
 
@@ -38,7 +40,7 @@ function lineOf({ axes, points, boundaries }: DiagramRecord): string[] {
   const name = `J${axis?.name ?? ""}`;
   return [
     ...paragraph(
-      `${name} from ${plain(axis?.from ?? 0)} to ${plain(axis?.to ?? 0)}: ${points.map(({ phase }) => letter(phase)).join("")}`,
+      `${name} from ${plain(axis?.from ?? 0)} to ${plain(axis?.to ?? 0)}: ${points.map(({ phase }) => phaseLetter(phase)).join("")}`,
     ),
     ...((boundaries ?? []).length === 0
       ? paragraph("One phase throughout.")
@@ -48,8 +50,8 @@ function lineOf({ axes, points, boundaries }: DiagramRecord): string[] {
             [{ title: `boundary at ${name}`, align: "right" }, { title: "from" }, { title: "to" }, { title: "k" }],
             (boundaries ?? []).map(({ value, from, to, sudden }) => [
               String(Number(value.toPrecision(7))),
-              letter(from),
-              letter(to),
+              phaseLetter(from),
+              phaseLetter(to),
               sudden ? "jumps" : "moves away gradually",
             ]),
           ),
@@ -66,7 +68,7 @@ function mapOf({ axes, points }: DiagramRecord): string[] {
   const rows = Array.from({ length: second.count }, (_, index) => second.count - 1 - index).map((row) => {
     const own = points.slice(row * first.count, (row + 1) * first.count).filter((_, column) => column % stride === 0);
     const value = own[0]?.values[1] ?? 0;
-    return `${plain(Number(value.toPrecision(4))).padStart(10)}  ${own.map(({ phase }) => letter(phase)).join("")}`;
+    return `${plain(Number(value.toPrecision(4))).padStart(10)}  ${own.map(({ phase }) => phaseLetter(phase)).join("")}`;
   });
   return [
     ...paragraph(

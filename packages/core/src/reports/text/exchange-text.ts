@@ -38,6 +38,28 @@ export function exchangeText(record: ExchangeRecord): string[] {
   ];
 }
 
+/** What a report of the whole job says of the model in short: names and values. */
+export function exchangeSummary(record: ExchangeRecord): [string, string][] {
+  const { ground } = record;
+  return [
+    ["Constants", constantsText(record)],
+    ["Atoms", atomsText(record)],
+    ...(ground === null ? [] : groundFields(record, ground)),
+    ...record.atK.flatMap(({ k, from, above }): [string, string][] =>
+      from === "given" ? [[`At k = ${kText(k)}`, aboveText(above)]] : [],
+    ),
+  ];
+}
+
+function constantsText({ shells }: ExchangeRecord): string {
+  const classes = shells.flatMap(({ classes }) => classes).filter(({ j }) => j !== null);
+  return `${classes.map(({ name, j }) => unbroken(`J${name} = ${plain(j ?? 0)}`)).join(", ")}; E = Σ J S·S, every bond once`;
+}
+
+function aboveText(above: number): string {
+  return Math.abs(above) < 1e-8 ? "the least energy" : `${energyText(above)} above the least energy`;
+}
+
 function atomsText({ atoms }: ExchangeRecord): string {
   const labels = [...new Set(atoms.map(({ label }) => label))];
   const each = labels.map((label) => {
@@ -80,24 +102,30 @@ function shellNotes({ shells }: ExchangeRecord): string[] {
 }
 
 function groundSections(record: ExchangeRecord, ground: GroundRecord): string[] {
-  const { certificate, vectors } = ground;
   return [
     ...section(
       "Minimum of J(k) over the whole zone",
-      fields([
-        ["Energy a spin", energyText(ground.energy)],
-        ["At", setText(ground)],
-        ...(ground.dimension === 0 ? [] : [["Set", dimensionSentence(ground)] as const]),
-        ...(record.atoms.some(({ potential }) => potential !== 0) ? [["Bound", balanceText(record)] as const] : []),
-        ["Spins", momentsText(ground)],
-        ["Certificate", certificateText(certificate, ground)],
-      ]),
+      fields(groundFields(record, ground)),
       [""],
       table(
         [{ title: "k" }, { title: "±k pairs", align: "right" }],
-        vectors.map(({ k, pairs }) => [kText(k), String(pairs)]),
+        ground.vectors.map(({ k, pairs }) => [kText(k), String(pairs)]),
       ),
     ),
+  ];
+}
+
+function groundFields(record: ExchangeRecord, ground: GroundRecord): [string, string][] {
+  const { dimension, certificate, energy } = ground;
+  return [
+    ["Energy a spin", energyText(energy)],
+    ["At", setText(ground)],
+    ...(dimension === 0 ? [] : [["Set", dimensionSentence(ground)] as [string, string]]),
+    ...(record.atoms.some(({ potential }) => potential !== 0)
+      ? [["Bound", balanceText(record)] as [string, string]]
+      : []),
+    ["Spins", momentsText(ground)],
+    ["Certificate", certificateText(certificate, ground)],
   ];
 }
 

@@ -20,7 +20,7 @@ export function modulatedTable(configurations: readonly ModulatedRecord[]): stri
       one.direction + (one.needsSecondOrderParameter ? " *" : ""),
       one.magneticGroup.pointGroup,
       `${one.magneticGroup.superspace.operators.length}, index ${one.index}`,
-      freeText(one),
+      modulatedFreeText(one),
       allowedText(one.polarization),
     ]),
   ).concat(
@@ -30,9 +30,19 @@ export function modulatedTable(configurations: readonly ModulatedRecord[]): stri
   );
 }
 
-function freeText({ freeParameters: { irreps, group }, freePhases }: ModulatedRecord): string {
+/** Parameters under the irreps, and under the operators where these are more. */
+export function modulatedFreeText({ freeParameters: { irreps, group }, freePhases }: ModulatedRecord): string {
   const phases = freePhases > 0 ? `, ${counted(freePhases, "phase")}` : "";
   return `${irreps === group ? irreps : `${irreps} of ${group}`}${phases}`;
+}
+
+/** What fixes the phases between copies. */
+export function phasesText({ needsSecondOrderParameter, freePhases }: ModulatedRecord): string {
+  if (needsSecondOrderParameter)
+    return `${counted(freePhases, "phase")} between copies free: needs a second order parameter of the same symmetry`;
+  return freePhases > 0
+    ? `${counted(freePhases, "phase")} between amplitudes free`
+    : "locked by an operator that takes k to −k";
 }
 
 export function modulatedSection(one: ModulatedRecord): string[] {
@@ -44,14 +54,7 @@ export function modulatedSection(one: ModulatedRecord): string[] {
       ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
       ["Wave vector", kText(superspace.k)],
       ["Point group", `${pointGroup}, of mean properties`],
-      [
-        "Phases",
-        one.needsSecondOrderParameter
-          ? `${counted(one.freePhases, "phase")} between copies free: needs a second order parameter of the same symmetry`
-          : one.freePhases > 0
-            ? `${counted(one.freePhases, "phase")} between amplitudes free`
-            : "locked by an operator that takes k to −k",
-      ],
+      ["Phases", phasesText(one)],
       [
         "Domains",
         `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")}`,

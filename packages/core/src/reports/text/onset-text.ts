@@ -30,7 +30,8 @@ export function onsetText(record: OnsetRecord): string[] {
   ];
 }
 
-function transitionSection({ peaks, transitions }: OnsetRecord): string[] {
+/** The transitions alone, for the short report of the whole job. */
+export function transitionSection({ peaks, transitions }: OnsetRecord): string[] {
   if (peaks.length === 0) return [];
   if (transitions.length === 0) return section("Transitions", paragraph("No peak has an onset within the range."));
   return section(
@@ -52,7 +53,8 @@ function transitionSection({ peaks, transitions }: OnsetRecord): string[] {
   );
 }
 
-function commonText({ probability, peaks }: TransitionRecord): string {
+/** How well the peaks of a transition agree. */
+export function commonText({ probability, peaks }: TransitionRecord): string {
   if (probability === null || peaks.length === 1) return "one peak";
   return `probability of this scatter ${probability < 0.001 ? "below 0.1 %" : `${Number((100 * probability).toPrecision(2))} %`}`;
 }
@@ -108,7 +110,8 @@ function rangeNotes(peaks: readonly PeakOnsetRecord[]): string[] {
   ];
 }
 
-const sentences: { readonly [behaviour: string]: string } = {
+/** What peaks without an onset do. */
+export const sentences: { readonly [behaviour: string]: string } = {
   constant:
     "the same at all temperatures: not magnetic, or ordered beyond the range (nuclear, structural, λ/2, sample holder)",
   gradual: "changes smoothly without an onset: thermal motion of a nuclear peak, or an onset beyond the range",
@@ -149,13 +152,15 @@ function kSections(components: readonly MovingKRecord[]): string[] {
   );
 }
 
-function behaviourText({ behaviour, plateaus }: MovingKRecord): string {
+/** What a component of k does. */
+export function behaviourText({ behaviour, plateaus }: MovingKRecord): string {
   if (behaviour !== "lock-in")
     return behaviour === "undecided" ? "too few points" : behaviour === "constant" ? "is constant" : "slides";
   return `slides and locks in at ${plateaus.flatMap(({ fraction }) => fraction ?? []).join(", ")}`;
 }
 
-function plateauText({ plateaus }: MovingKRecord): string {
+/** Where it is level. */
+export function plateauText({ plateaus }: MovingKRecord): string {
   return plateaus
     .map(
       ({ from, to, mean, fraction }) =>
@@ -168,6 +173,7 @@ function namesOf(peaks: readonly PeakOnsetRecord[]): string {
   return peaks.map(({ name }) => name).join(", ");
 }
 
-function measuredText({ value, su }: MeasuredRecord): string {
+/** `38.50(15)`. */
+export function measuredText({ value, su }: MeasuredRecord): string {
   return withUncertainty(value, su);
 }

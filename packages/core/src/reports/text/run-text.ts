@@ -4,12 +4,14 @@ import type { BranchRecord, RunRecord } from "../records/run.js";
 import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
 import { configurationsText, configurationTable } from "./configurations-text.js";
+import { exchangeSummary, exchangeText } from "./exchange-text.js";
 import { peaksText } from "./flag-text.js";
 import { irrepsText, irrepTable } from "./irreps-text.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { decompositionText, modesText, parameterText } from "./modes-text.js";
 import { modulatedTable } from "./modulated-text.js";
 import { cellText, counted, groupText, kText, positionText } from "./names.js";
+import { onsetText, transitionSection } from "./onset-text.js";
 import { satellitesText, satelliteTable } from "./satellites-text.js";
 import { assignmentTable, candidateTable, certificateLines, peakFields, separationLines } from "./search-text.js";
 import { severalVectorLines } from "./several-vectors-text.js";
@@ -28,6 +30,8 @@ export function runShortText(record: RunRecord): string[] {
     ...peakSection(record),
     ...searchSection(record),
     ...record.branches.flatMap((branch, index) => branchText(branch, record.branches.length > 1 ? index + 1 : null)),
+    ...(record.exchange === null ? [] : section("Exchange model", fields(exchangeSummary(record.exchange)))),
+    ...(record.onset === null ? [] : transitionSection(record.onset)),
     ...section(
       "Next",
       record.next.flatMap((text, index) => paragraph(`${index + 1}. ${text}`, 2, 3)),
@@ -61,6 +65,8 @@ export function runFullText(record: RunRecord): string[] {
       ...(branch.satellites ? satellitesText(branch.satellites) : []),
       ...(branch.weigh ? weighText(branch.weigh) : []),
     ]),
+    ...(record.exchange === null ? [] : exchangeText(record.exchange)),
+    ...(record.onset === null ? [] : onsetText(record.onset)),
   ];
 }
 
