@@ -114,7 +114,7 @@ describe("kvane study FILE.cif", () => {
     expect(answer.warnings).toHaveLength(5);
     const { stdout, stderr } = await kvane(["study", path]);
     expect(stdout).toBe(answer.result.study);
-    expect(stderr.match(/warning\[cif-doubtful\]/g)).toHaveLength(4);
+    expect(stderr.match(/warning\[cif-doubtful\]/g)).toHaveLength(5);
   });
 });
 

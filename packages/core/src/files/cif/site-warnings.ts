@@ -46,7 +46,7 @@ export function siteWarnings(sites: readonly CifSite[], notes: SiteNotes, block:
     ...(notes.unknown.length > 0
       ? [
           doubtful(
-            `sites have no element that is known: ${someOf(notes.unknown)}`,
+            `sites have no element that is known: ${someOf(notes.unknown, 20)}`,
             block,
             "correct the type symbols (Fe or Fe3+), or give the ions in the study",
           ),

@@ -123,7 +123,7 @@ function difference(group: SpaceGroup, other: SpaceGroup, { kind, coded }: Symbo
   const otherNumber = typeNumber(other);
   const ownNumber = typeNumber(group);
   if (ownNumber !== otherNumber)
-    return `is that of another space group, ${nameOf(other)}${number === null ? `, than number ${ownNumber}` : ""}`;
+    return `is that of another space group, ${nameOf(other)}${number === null ? `, not of number ${ownNumber}` : ""}`;
   if (number === null || other.name.number === null)
     return kind === "Hall symbol" ? "stands for other operators" : null;
   if (kind === "Hall symbol") return "stands for the same type with another origin or other axes";
