@@ -163,6 +163,11 @@ function sitePower(wave: FieldWave, index: number, cell: Cell): number {
   return sum;
 }
 
+/** "all" where the arrangement has every arm: the configurations are then numbered as `configurations --arms all` does. */
+function listedArms(group: SpaceGroup, k: WaveVector, arms: readonly number[]): "all" | number[] {
+  return arms.length === star(group, k).arms.length ? "all" : [...arms].sort((a, b) => a - b);
+}
+
 async function listOf(
   group: SpaceGroup,
   cell: Cell,
@@ -180,7 +185,7 @@ async function listOf(
     irreps,
     modes,
     cell,
-    { arms: pair ? "pair" : [...arms].sort((a, b) => a - b), together: [labels] },
+    { arms: pair ? "pair" : listedArms(group, k, arms), together: [labels] },
     host,
   );
 }

@@ -69,7 +69,11 @@ export function decomposeRecord(
       toBns: formatBasisChange(toBns),
     },
     declared: { bns: source.bns, operators: identifyMagneticGroup(declaredGroup(moments)).name.bns.number },
-    primary: { k: waveVectorToJson(found.primary.k), irreps: [...found.primary.irreps] },
+    primary: {
+      k: waveVectorToJson(found.primary.k),
+      irreps: [...found.primary.irreps],
+      arms: found.primary.arms.map((arm) => arm + 1),
+    },
     recognised: recognised && {
       id: recognised.configuration.id,
       direction: recognised.configuration.direction,

@@ -43,7 +43,8 @@ export interface DecomposeRecord {
   };
   /** What the file calls its group, and what its operators are; null where it names none. */
   readonly declared: { readonly bns: string | null; readonly operators: string };
-  readonly primary: { readonly k: KRecord; readonly irreps: readonly string[] };
+  /** `arms` of the star of k, from 1, as in `configurations --arms`. */
+  readonly primary: { readonly k: KRecord; readonly irreps: readonly string[]; readonly arms: readonly number[] };
   /** The configuration that it is, and the parent operator from the listed one to it; null where it is none of them. */
   readonly recognised: {
     readonly id: string;

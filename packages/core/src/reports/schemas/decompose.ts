@@ -35,7 +35,7 @@ export const decomposeSchema: JsonSchema = record({
     toBns: text,
   }),
   declared: record({ bns: nullable(text), operators: text }),
-  primary: record({ k: shared("k"), irreps: list(text) }),
+  primary: record({ k: shared("k"), irreps: list(text), arms: list({ type: "integer", minimum: 1 }) }),
   recognised: nullable(record({ id: text, direction: text, operator: text })),
   listed: list(text),
 });

@@ -51,10 +51,16 @@ export function decomposeText(record: DecomposeRecord): string[] {
           )
         : fields([
             ["Configuration", `${recognised.id}, direction ${recognised.direction}`],
+            ["Listed for", listedFor(record.primary)],
             ["Domain", `the listed one moved by ${recognised.operator}`],
           ]),
     ),
   ];
+}
+
+/** Ids are those of one list: of this k (another arm has the same list in other axes) and of these arms together. */
+function listedFor({ k, arms }: DecomposeRecord["primary"]): string {
+  return `k = ${kForm(k)}${arms.length > 1 ? `, arms ${[...arms].sort((a, b) => a - b).join(", ")} together` : ""}`;
 }
 
 /** What the file calls its group, and what its operators are. */
