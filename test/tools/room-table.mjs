@@ -55,7 +55,8 @@ export const packageImporters = {
   yaml: "files",
   "d3-scale": "reports",
   "d3-shape": "reports",
-  "d3-array": "reports", ogl: "reports",
+  "d3-array": "reports",
+  ogl: "reports",
   mathjs: "numbers",
   "fraction.js": "numbers",
 };

@@ -56,3 +56,17 @@ describe("a temperature scan", () => {
     expect(problems(text)).toEqual(expected);
   });
 });
+
+describe("a scan that cannot be read", () => {
+  it("has no rows, uncertainties before any value, short rows or too many values: said with place", () => {
+    expect(problems("T a su\n")).toEqual(["invalid-scan 1:1"]);
+    expect(problems("T su a\n5 1 2\n")).toEqual(["invalid-scan 1:3"]);
+    expect(problems("T a b\n5 1 2\n6 1\n")).toEqual(["invalid-scan 3:3"]);
+    expect(problems(`T a\n${"5 1\n".repeat(10001)}`)).toEqual(["invalid-scan 1:1"]);
+  });
+
+  it("takes -, NaN and nan for values that are not there", () => {
+    const { intensities } = parseScanTable("T a\n5 -\n6 NaN\n7 nan\n8 1\n", "scan.txt");
+    expect(intensities[0]?.temperatures).toEqual([8]);
+  });
+});

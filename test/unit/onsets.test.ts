@@ -160,3 +160,75 @@ describe("k against temperature", () => {
     expect(found.plateaus).toHaveLength(1);
   });
 });
+
+describe("the uncertainty of T_N", () => {
+  it("covers a second hollow of χ² below a cusp just above a point", () => {
+    // Simulated with T_N = 40 K; χ² is least at 40.13 K with a narrow cusp, and has a second hollow 7 higher near 40.0 K.
+    const rows = [
+      [15, 90.051, 1.866],
+      [15.897, 90.814, 1.844],
+      [16.795, 87.524, 1.821],
+      [17.692, 82.843, 1.798],
+      [18.59, 80.951, 1.774],
+      [19.487, 83.378, 1.75],
+      [20.385, 80.221, 1.725],
+      [21.282, 80.005, 1.699],
+      [22.179, 77.812, 1.673],
+      [23.077, 78.813, 1.646],
+      [23.974, 77.103, 1.618],
+      [24.872, 71.808, 1.59],
+      [25.769, 72.426, 1.56],
+      [26.667, 69.867, 1.529],
+      [27.564, 66.621, 1.497],
+      [28.462, 67.718, 1.464],
+      [29.359, 64.653, 1.429],
+      [30.256, 63.468, 1.393],
+      [31.154, 64.085, 1.355],
+      [32.051, 60.209, 1.314],
+      [32.949, 57.44, 1.271],
+      [33.846, 52.91, 1.225],
+      [34.744, 49.148, 1.175],
+      [35.641, 48.756, 1.121],
+      [36.538, 43.411, 1.061],
+      [37.436, 39.524, 0.992],
+      [38.333, 33.835, 0.909],
+      [39.231, 26.702, 0.802],
+      [40.128, 6.468, 0.608],
+      [41.026, 4.809, 0.608],
+      [41.923, 4.829, 0.608],
+      [42.821, 5.124, 0.608],
+      [43.718, 5.174, 0.608],
+      [44.615, 4.269, 0.608],
+      [45.513, 3.918, 0.608],
+      [46.41, 4.644, 0.608],
+      [47.308, 4.869, 0.608],
+      [48.205, 4.518, 0.608],
+      [49.103, 4.386, 0.608],
+      [50, 4.422, 0.608],
+    ] as const;
+    const [temperatures, values, uncertainties] = [0, 1, 2].map((n) => rows.map((row) => row[n] as number)) as [
+      number[],
+      number[],
+      number[],
+    ];
+    const { value, su } = analyseScan([{ name: "a", temperatures, values, uncertainties }]).peaks[0]?.fit
+      ?.transition ?? { value: 0, su: 0 };
+    expect(Math.abs(value - 40)).toBeLessThan(2.5 * (su ?? 0));
+    expect(su).toBeGreaterThan(0.05);
+    expect(su).toBeLessThan(0.2);
+  });
+
+  it("and the grouping cost no more than a few seconds for many peaks", () => {
+    const random = seeded(3);
+    const peaks = Array.from({ length: 40 }, (_, n) =>
+      madeScan(
+        `p${n}`,
+        { transition: n % 2 ? 40 : 42, beta: 0.3, amplitude: 80, background: 3 },
+        range,
+        () => 1,
+        random,
+      ),
+    );
+    expect(analyseScan(peaks).transitions.map(({ series }) => series.length)).toEqual([20, 20]);
+  }, 60000);
+});

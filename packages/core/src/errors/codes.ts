@@ -43,7 +43,7 @@ export const problemCodes = {
   "wrong-type": "A value in a study file has the wrong type.",
   "invalid-peak": "A row of a peak list has a word in a number column, a missing value or an impossible value.",
   "invalid-scan":
-    "A temperature scan has a word in a number column, a row without a temperature, or no column besides the temperature.",
+    "A temperature scan has a word in a number column, a row without a temperature or too short, no rows, no column besides the temperature, uncertainties without values, or too many values.",
   "invalid-component":
     "A row of a list of Fourier components names no atom of the site, or one twice, or has not three complex numbers.",
   "peak-kind-unknown": "It is not said whether positions are d, Q, 2theta or hkl.",

@@ -29,6 +29,8 @@ const temperatureName = /^(t|temp|temperature)(\s*[/([]\s*k\s*[)\]]?)?$/i;
 const uncertaintyName =
   /^(su|s\.u\.|sigma|sig|σ|error|err|esd|uncertainty|±|\+-)([\s([_].*)?$|^.*[\s_-](su|s\.u\.|sigma|error|esd|uncertainty)$/i;
 const kName = /^(k|k[xyz]|[uvw])(\s*[/([].*)?$/i;
+/** Values of a scan (rows × columns besides T and s.u.) beyond which the fits take half a minute. */
+const mostValues = 10000;
 /** What stands in a cell that has no value. */
 const missing = /^([-–—.]|nan)?$/i;
 
@@ -36,7 +38,7 @@ const missing = /^([-–—.]|nan)?$/i;
  * Reads a temperature scan: rows of a temperature in K and one or more quantities. A header names the columns: T first,
  * then a name for each peak; a column called su (or sigma, error, esd, …) holds the uncertainties of the one before it,
  * and columns called k, kx, ky, kz, u, v, w are components of the wave vector. Values may carry their uncertainty in
- * brackets, `132(4)`. Empty cells and `-` are left out. Rows may stand in any order.
+ * brackets, `132(4)`. Empty cells, `-` and `nan` are left out. Rows may stand in any order.
  *
  * Throws all problems at once with line and column: `file-empty`, `file-unreadable`, `invalid-scan`.
  */
@@ -59,6 +61,22 @@ export function parseScanTable(text: string, file: string): ScanTable {
       found: first?.text.trim() ?? "nothing",
       remedy: "write a header such as T peak1 su peak2 su",
     });
+  if (headed && data.length === 0)
+    note(problems, "invalid-scan", "the scan has a header and no row of values", {
+      where: { line: first?.line ?? 1, column: 1 },
+      expected: "a row for each temperature",
+      found: "the header alone",
+      remedy: "add the measured rows below the header",
+    });
+  const values = data.length * columns.filter(holdsValues).length;
+  if (values > mostValues)
+    note(problems, "invalid-scan", `the scan has ${values} values, more than the ${mostValues} that are fitted`, {
+      where: { line: first?.line ?? 1, column: 1 },
+      expected: `rows times peaks up to ${mostValues}`,
+      found: `${values}`,
+      remedy: "average neighbouring temperatures, or give the peaks in several files",
+    });
+  throwProblems(problems);
   const cells = data.map((row) => readRow(row, columns, problems));
   throwProblems(problems);
   const series = (role: Role) =>
@@ -82,7 +100,15 @@ function headerColumns(row: Row, problems: ProblemList): Column[] {
   fields.forEach((field, index) => {
     const { text } = field;
     if (index === temperature) columns.push({ name: text, role: "temperature", of: null });
-    else if (uncertaintyName.test(text)) columns.push({ name: text, role: "uncertainty", of: lastQuantity(columns) });
+    else if (uncertaintyName.test(text) && !columns.some(holdsValues)) {
+      note(problems, "invalid-scan", `\`${text}\` stands before any column of values`, {
+        where: { line: row.line, column: field.column },
+        expected: "uncertainties behind the column that they belong to",
+        found: text,
+        remedy: "put the column behind that of its values: T, peak1, su",
+      });
+      columns.push({ name: text, role: "uncertainty", of: null });
+    } else if (uncertaintyName.test(text)) columns.push({ name: text, role: "uncertainty", of: lastQuantity(columns) });
     else columns.push({ name: text, role: kName.test(text) ? "k" : "intensity", of: null });
   });
   if (temperature < 0)
@@ -102,6 +128,10 @@ function headerColumns(row: Row, problems: ProblemList): Column[] {
       remedy: "number them",
     });
   return columns;
+}
+
+function holdsValues({ role }: Column): boolean {
+  return role === "intensity" || role === "k";
 }
 
 /** Index of the last column that is no uncertainty. */
@@ -145,6 +175,13 @@ function readRow(row: Row, columns: readonly Column[], problems: ProblemList): (
       remedy: "name every column in the header, and put notes behind #",
     });
   }
+  if (row.fields.length < columns.length)
+    note(problems, "invalid-scan", `the row has ${row.fields.length} values where ${columns.length} are expected`, {
+      where: { line: row.line, column: row.fields.at(-1)?.column ?? 1 },
+      expected: columns.map(({ name }) => name).join(", "),
+      found: row.text.trim(),
+      remedy: "write - for a value that is not there",
+    });
   return columns.map(({ name, role }, index) => {
     const field = row.fields[index];
     const empty = field === undefined || missing.test(field.text);

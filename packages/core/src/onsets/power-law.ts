@@ -90,16 +90,22 @@ export function lawAtBeta(points: ScanPoints, beta: number, near: number, reach:
   return lawAt(points, lowestOnGrid(value, near - reach, near + reach, 32), beta);
 }
 
+/** With more points than this, gaps are joined first and the best of them are then gone through point by point. */
+const mostEdges = 80;
+
 /** The best law of all; χ² has a kink wherever T_N passes a point, so that every gap between points is looked at. */
 export function bestLaw(points: ScanPoints, from: number, to: number): LawAt {
   const inside = points.temperatures.filter((one) => one > from && one < to);
-  const edges = [from, ...inside, to];
+  const every = Math.ceil(inside.length / mostEdges);
+  const edges = [from, ...inside.filter((_, n) => every < 2 || n % every === 0), to];
   const grid = edges.slice(1).flatMap((high, n) => {
     const low = edges[n] as number;
     return [low + 0.2 * (high - low), low + 0.6 * (high - low)];
   });
+  // Many points fix β so sharply that a rough β would upset the order of T_N.
+  const steps = points.temperatures.length > 200 ? 14 : 6;
   const ranked = grid
-    .map((one) => ({ one, chiSquared: lawAtTransition(points, one, 6).chiSquared }))
+    .map((one) => ({ one, chiSquared: lawAtTransition(points, one, steps).chiSquared }))
     .sort((a, b) => a.chiSquared - b.chiSquared);
   const gaps = [
     ...new Map(
@@ -110,11 +116,13 @@ export function bestLaw(points: ScanPoints, from: number, to: number): LawAt {
     ).values(),
   ];
   const ends = gaps.slice(0, 3).map(([low, high]) =>
-    lawAtTransition(
-      points,
-      goldenSection((one) => lawAtTransition(points, one).chiSquared, low, high, 20),
-      30,
-    ),
+    every > 1
+      ? bestLaw(points, low, high)
+      : lawAtTransition(
+          points,
+          goldenSection((one) => lawAtTransition(points, one).chiSquared, low, high, 20),
+          30,
+        ),
   );
   return ends.reduce((least, end) => (end.chiSquared < least.chiSquared ? end : least));
 }
@@ -135,12 +143,12 @@ function lowestOnGrid(value: (x: number) => number, from: number, to: number, co
   return goldenSection(value, best - step, best + step, 18);
 }
 
-/** Rises of χ² that belong to one, two and two and a half standard uncertainties. */
-const rises = [1, 4, 6.25];
+/** Rises of χ² that belong to one, two, two and a half and three standard uncertainties. */
+const rises = [1, 4, 6.25, 9];
 
 /**
  * Standard uncertainty from the profile of χ²: the half-width of the region in which χ² rises by n² above its least,
- * divided by n, the largest for n = 1, 2 and 2.5 (W. A. Rolke et al., Nucl. Instrum. Methods A 551 (2005) 493). χ² about
+ * divided by n, the largest for n = 1, 2, 2.5 and 3 (W. A. Rolke et al., Nucl. Instrum. Methods A 551 (2005) 493). χ² about
  * a kinked law is no parabola and may have a second hollow behind a small hill, so the whole grid is looked at.
  *
  * @param grid places where the profile is worked out, in rising order
@@ -188,8 +196,20 @@ export function transitionGrid(temperatures: readonly number[], best: number): n
     const [low, high] = [temperatures[n - 1] as number, temperatures[n] as number];
     const count = Math.abs(n - at) < 3 ? 8 : 2;
     for (let step = 0; step < count; step++) places.push(low + ((step + 0.5) / count) * (high - low));
+    // χ² may have a cusp just above a point, which is narrow.
+    if (Math.abs(n - at) < 6) places.push(low + 0.01 * (high - low));
   }
+  places.push(...outwards(best, temperatures[Math.max(0, at - 13)] as number, temperatures[0] as number));
+  places.push(...outwards(best, temperatures[Math.min(last, at + 12)] as number, temperatures[last] as number));
   return [...new Set(places)].sort((a, b) => a - b);
+}
+
+/** Where points lie close together: ever wider steps from the gaps nearby to an end of the range. */
+function outwards(best: number, nearby: number, end: number): number[] {
+  const places: number[] = [];
+  for (let step = 1.3 * (nearby - best); step !== 0 && Math.abs(step) < Math.abs(end - best); step *= 1.3)
+    if (Math.sign(step) === Math.sign(end - best)) places.push(best + step);
+  return places;
 }
 
 /** β tried about the best one, closer together near it. */

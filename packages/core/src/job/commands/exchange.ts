@@ -182,7 +182,9 @@ async function stationaryFor(
   const [k, levels] = [ks[at], asked[at]?.levels];
   if (!k || !levels) return null;
   const fixedBySymmetry = isFixed(levels);
-  return stationaryConstants(model, k, { fixedBySymmetry, searchZone: true }, host);
+  // Atoms that symmetry does not relate have site potentials, which other constants would change: no verdict then.
+  const searchZone = new Set(model.table.atoms.map(({ orbit }) => orbit)).size === 1;
+  return stationaryConstants(model, k, { fixedBySymmetry, searchZone }, host);
 }
 
 /** The lowest level is one irrep that no other level has: then symmetry alone makes its eigenvector. */

@@ -49,7 +49,8 @@ configuration and ranks them by χ² + parameters · ln(intensities). A ranking 
     text: `Rows of a temperature in K and one or more quantities, in any order of the rows. The header names
 the columns: T, then a name for each peak. A column called su (or sigma, error, esd, uncertainty)
 holds the uncertainties of the one before it; a value may carry its own, 132(4). Columns called k,
-kx, ky, kz, u, v or w are components of the wave vector. - stands for a value that is not there.
+kx, ky, kz, u, v or w are components of the wave vector. -, NaN and nan
+stand for a value that is not there; rows times peaks may be up to 10000.
 
   T      (0 0 1/2)  su   (1 0 1/2)  su
   2.0    98.1       2.0  41.7       1.1
@@ -57,7 +58,8 @@ kx, ky, kz, u, v or w are components of the wave vector. - stands for a value th
 Each peak is fitted by I = I₀ (1 − T/T_N)^2β + background over the widest range of (T_N − T)/T_N
 that this law describes, or over that of --reduced. Standard uncertainties are those of the profile
 of χ²; without uncertainties in the file they follow from the scatter. Peaks share a transition
-unless a common T_N is improbable at 0.1 %. A β from a wide range is no critical exponent.
+unless a common T_N is improbable at 0.1 %. T_N, β and their uncertainties depend on the law and
+its range; a β from a wide range is no critical exponent.
 
 onset: {file: scan.csv} in a study names the scan for \`kvane onset STUDY.yaml\`.`,
   },

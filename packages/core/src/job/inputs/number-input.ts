@@ -41,6 +41,7 @@ function rangeText({ above, from, to, below, whole }: NumberRange): string {
   const kind = whole ? "a whole number" : "a number";
   if (from !== undefined && to !== undefined) return `${kind} from ${from} to ${to}`;
   if (from !== undefined && below !== undefined) return `${kind} from ${from} to less than ${below}`;
+  if (above !== undefined && to !== undefined) return `${kind} above ${above} and up to ${to}`;
   if (from !== undefined) return `${kind} not below ${from}`;
   return above === undefined ? kind : `${kind} above ${above}`;
 }

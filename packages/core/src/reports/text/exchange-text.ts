@@ -152,7 +152,7 @@ function balanceText({ atoms }: ExchangeRecord): string {
   const each = labels.map((label) =>
     unbroken(`${label} ${energyText(atoms.find((atom) => atom.label === label)?.potential ?? 0)}`),
   );
-  return `tightened by site potentials that add up to nothing for full spins (${each.join(", ")})`;
+  return `tightened by site potentials that add up to nothing for full spins, and are counted in every energy below (${each.join(", ")})`;
 }
 
 function momentsText({ constantMoments: { answer, k, spins, short } }: GroundRecord): string {
@@ -282,7 +282,7 @@ function stationarySection(answer: StationaryRecord): string[] {
             name,
             j === null ? "none" : energyText(j),
             j === null ? "–" : minimum ? "minimum" : "maximum",
-            lowest === null ? "–" : lowest ? "the lowest" : "another k is lower",
+            lowest === null ? "not decided" : lowest ? "the lowest" : "another k is lower",
           ]),
         ),
   );

@@ -33,7 +33,11 @@ export function onsetText(record: OnsetRecord): string[] {
 /** The transitions alone, for the short report of the whole job. */
 export function transitionSection({ peaks, transitions }: OnsetRecord): string[] {
   if (peaks.length === 0) return [];
-  if (transitions.length === 0) return section("Transitions", paragraph("No peak has an onset within the range."));
+  if (transitions.length === 0)
+    return section(
+      "Transitions",
+      paragraph("No peak has an onset within the range, or only one that a smooth curve describes as well."),
+    );
   return section(
     `Transitions (${transitions.length})`,
     table(
@@ -96,7 +100,7 @@ function rangeNotes(peaks: readonly PeakOnsetRecord[]): string[] {
   const scatter = peaks.some(({ fit }) => fit?.uncertaintySource === "scatter");
   return [
     ...paragraph(
-      `The law holds near T_N only: each fit takes the widest range of (T_N−T)/T_N that it describes, and β is that of the range. A β far from the transition is no critical exponent.${scatter ? " χ²/dof is not tested where uncertainties come from the scatter." : ""}`,
+      `The law holds near T_N only: each fit takes the widest range of (T_N−T)/T_N that it describes, and T_N, β and their s.u. depend on this law and range. A β far from the transition is no critical exponent.${scatter ? " χ²/dof is not tested where uncertainties come from the scatter." : ""}`,
     ),
     ...(bad.length === 0
       ? []
@@ -114,7 +118,8 @@ function rangeNotes(peaks: readonly PeakOnsetRecord[]): string[] {
 export const sentences: { readonly [behaviour: string]: string } = {
   constant:
     "the same at all temperatures: not magnetic, or ordered beyond the range (nuclear, structural, λ/2, sample holder)",
-  gradual: "changes smoothly without an onset: thermal motion of a nuclear peak, or an onset beyond the range",
+  gradual:
+    "changes smoothly without an onset: thermal motion of a nuclear peak, an onset beyond the range, or an onset that a smooth curve describes as well",
   absent: "no intensity at any temperature",
   undecided: "too few points",
 };
