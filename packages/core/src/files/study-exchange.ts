@@ -5,7 +5,7 @@ import { asList, asNumber, asRecord, asText, type NumberLimits } from "./study-v
 import { where } from "./yaml-convert.js";
 import type { TreeNode, TreeRecord } from "./yaml-tree.js";
 
-const finite: NumberLimits = { expected: "a number", allows: () => true };
+const finite: NumberLimits = { expected: "a number", allows: Number.isFinite };
 
 const shellNumber: NumberLimits = {
   expected: "the number of a shell, counted from 1",

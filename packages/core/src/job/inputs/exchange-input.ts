@@ -26,7 +26,12 @@ function constantOf(text: string): GivenCoupling {
   const j = rest.at(-1) ?? "";
   const labels = rest.slice(0, -1);
   const where = { argument: argumentNames.constants };
-  if (!bondName.test(bond) || !number.test(j) || (labels.length !== 0 && labels.length !== 2))
+  if (
+    !bondName.test(bond) ||
+    !number.test(j) ||
+    !Number.isFinite(Number(j)) ||
+    (labels.length !== 0 && labels.length !== 2)
+  )
     fail("invalid-argument", `\`${text}\` is no exchange constant`, {
       where,
       expected: 'BOND J or BOND LABEL LABEL J, such as "1 1.0", "2b -0.3" or "2 Fe1 Fe2 0.4"',
