@@ -24,6 +24,8 @@ export default defineConfig({
     maxWorkers: 2,
     testTimeout: 30_000,
     hookTimeout: 60_000,
+    // A page on a busy machine redraws late; the default of a second ends before it.
+    expect: { poll: { timeout: 10_000 } },
     server: { deps: { external: target.name === "source" ? [] : [/\/dist\//] } },
   },
 });
