@@ -27,6 +27,8 @@ export interface DiagramAccess {
   readonly pointAt: (values: readonly number[]) => Promise<DiagramPoint>;
   /** The kind of k, as its form. */
   readonly kindForm: (k: WaveVector) => string;
+  /** Whether the k of a phase are a whole line, surface or zone, besides the directions that no bond notices. */
+  readonly isDegenerate: (phase: number) => boolean;
 }
 
 const halvings = 40;
@@ -48,7 +50,8 @@ export async function phaseBoundaries(
   const found: DiagramBoundary[] = [];
   const between = async (low: DiagramPoint, high: DiagramPoint, depth: number): Promise<void> => {
     if (low.phase === high.phase) return;
-    const boundary = await followed(low, high, access);
+    const degenerate = access.isDegenerate(low.phase) && access.isDegenerate(high.phase);
+    const boundary = await (degenerate ? bisected : followed)(low, high, access);
     const span = (high.values[0] as number) - (low.values[0] as number);
     // A third phase may lie between: it shows beside the boundary.
     for (const side of [-1, 1]) {
@@ -74,6 +77,36 @@ function isMeeting(points: readonly DiagramPoint[], index: number): boolean {
   const [before, here, after] = [points[index - 1], points[index], points[index + 1]];
   if (!before || !here || !after) return false;
   return here.phase !== before.phase && here.phase !== after.phase && before.phase !== after.phase && here.k.length > 1;
+}
+
+/** Of the range; where two sets of k touch their energies differ to second order only, and nearer than this they are one. */
+const degenerateShare = 1e-5;
+
+/**
+ * With a degenerate set on both sides one of its k tells nothing about the set: the whole minimum is looked for at each
+ * halving. The change is sudden where the energy has a kink, so that its change of slope stays when the step shrinks.
+ */
+async function bisected(low: DiagramPoint, high: DiagramPoint, { pointAt }: DiagramAccess) {
+  let [left, right] = [low.values[0] as number, high.values[0] as number];
+  const span = right - left;
+  while (right - left > 0.1 * degenerateShare * span) {
+    const middle = (left + right) / 2;
+    if ((await pointAt([middle])).phase === low.phase) left = middle;
+    else right = middle;
+  }
+  const value = (left + right) / 2;
+  const turn = async (step: number) => {
+    const [before, here, after] = await Promise.all([-step, 0, step].map((shift) => pointAt([value + shift])));
+    return Math.abs((before?.energy ?? 0) - 2 * (here?.energy ?? 0) + (after?.energy ?? 0)) / step;
+  };
+  const step = 0.01 * span;
+  return { value: rounded(value, degenerateShare * span), sudden: (await turn(step / 8)) > 0.5 * (await turn(step)) };
+}
+
+/** Without the digits that are smaller than the uncertainty. */
+function rounded(value: number, uncertainty: number): number {
+  const unit = 10 ** Math.ceil(Math.log10(uncertainty));
+  return roundNumber(Number((Math.round(value / unit) * unit).toPrecision(9)) + 0);
 }
 
 async function followed(low: DiagramPoint, high: DiagramPoint, { group, frame, modelAt, kindForm }: DiagramAccess) {

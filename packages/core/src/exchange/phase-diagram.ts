@@ -98,11 +98,13 @@ export async function phaseDiagram(
     points.push(await pointAt(values));
     host.progress?.(index + 1, total, "phase diagram");
   }
+  const freeDirections = 3 - frame.rank;
+  const isDegenerate = (phase: number) => (phases[phase]?.dimension ?? 0) > freeDirections;
   const one = axes.length === 1 && frame.rank > 0;
   const boundaries = one
-    ? await phaseBoundaries(points, { group: model.table.group, frame, modelAt, pointAt, kindForm })
+    ? await phaseBoundaries(points, { group: model.table.group, frame, modelAt, pointAt, kindForm, isDegenerate })
     : axes.length === 1
       ? []
       : null;
-  return { freeDirections: 3 - frame.rank, axes, phases, points, boundaries };
+  return { freeDirections, axes, phases, points, boundaries };
 }

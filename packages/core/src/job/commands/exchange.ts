@@ -1,4 +1,5 @@
 import { configurationsOf } from "../../configurations/index.js";
+import { fail } from "../../errors/index.js";
 import {
   arrangementEnergy,
   type BondTable,
@@ -71,10 +72,28 @@ export async function exchangeCommand(work: Work, found: readonly WaveVector[] |
   const table = bondTable(group, cell, orbits, {
     shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),
   });
+  refuseCloseAtoms(table);
   const plain = exchangeModel(table, all, all.length === 0 ? {} : spinsOf(work, sites));
   if (all.length === 0) return exchangeRecord(table, plain, nothing);
+  if (ranges.length === 0 && plain.couplings.every(({ j }) => j === 0)) {
+    const because = "every constant is zero: no bond acts, and every k has the same energy";
+    remember(work, [{ what: "the k of least energy", value: "left out", because }], []);
+    return exchangeRecord(table, plain, nothing);
+  }
   const model = await balancedModel(plain, null, work.host);
   return exchangeRecord(table, model, await findingsOf(work, { table, model, placed, ranges, orbits }));
+}
+
+/** Å. Magnetic atoms nearer than this are one atom written twice, or split positions of one: no bond is so short. */
+const shortestBondAngstrom = 0.5;
+
+function refuseCloseAtoms({ shells }: BondTable): void {
+  const [nearest] = shells;
+  if (nearest === undefined || nearest.distance >= shortestBondAngstrom) return;
+  fail("invalid-site", `two magnetic atoms are ${nearest.distance.toPrecision(2)} Å apart`, {
+    expected: `at least ${shortestBondAngstrom} Å between magnetic atoms`,
+    remedy: "give an atom once, and of split positions only one",
+  });
 }
 
 const nothing = {

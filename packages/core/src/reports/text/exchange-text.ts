@@ -27,7 +27,7 @@ export function exchangeText(record: ExchangeRecord): string[] {
       ? section(
           "Minimum",
           paragraph(
-            'No constants are given. Name them with --j "1 1.0" --j "2b -0.3" or in the study: exchange: [{shell: 1, j: 1.0}].',
+            'No constant acts. Name them with --j "1 1.0" --j "2b -0.3" or in the study: exchange: [{shell: 1, j: 1.0}].',
           ),
         )
       : groundSections(record, record.ground)),
