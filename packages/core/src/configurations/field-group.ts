@@ -1,5 +1,12 @@
 import { type MagneticGroup, type MagneticOperator, magneticGroup } from "../magneticgroups/index.js";
-import { addVectors, hermiteNormalForm, type RationalVector, reduceModulo, vectorFrom } from "../numbers/index.js";
+import {
+  addVectors,
+  hermiteNormalForm,
+  integerDeterminant,
+  type RationalVector,
+  reduceModulo,
+  vectorFrom,
+} from "../numbers/index.js";
 import {
   fromPrimitiveColumn,
   latticeFromVectors,
@@ -67,18 +74,7 @@ function keepsLattice(rotation: readonly number[], rows: readonly (readonly numb
 
 /** `det(R) R` in the parent's lattice components, nine numbers. */
 function axialMatrix({ rotation, rotationDenominator }: SymmetryOperator, primitive: readonly number[]): number[] {
-  const [a, b, c, d, e, f, g, h, i] = primitive as unknown as readonly [
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-  ];
-  const sign = a * (e * i - f * h) - b * (d * i - f * g) + c * (d * h - e * g);
+  const sign = integerDeterminant(primitive);
   return rotation.map((entry) => (sign * entry) / rotationDenominator);
 }
 

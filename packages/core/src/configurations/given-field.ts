@@ -2,6 +2,7 @@ import { fail } from "../errors/index.js";
 import type { MagneticOperator } from "../magneticgroups/index.js";
 import {
   hermiteNormalForm,
+  integerDeterminant,
   isInteger,
   type RationalVector,
   reduceModulo,
@@ -78,7 +79,7 @@ export function momentField(
         const rotation = operator.operator.rotation.map((entry) => entry / operator.operator.rotationDenominator);
         const columns = [translationOf(operator.operator), translationOf(centring.operator)];
         const moved = [0, 1, 2].map((axis) => rowProduct(rotation, axis, atom.position) + columnSum(columns, axis));
-        const sign = determinantOf(rotation) * operator.timeReversal * centring.timeReversal;
+        const sign = Math.sign(integerDeterminant(rotation)) * operator.timeReversal * centring.timeReversal;
         const moment = [0, 1, 2].map((axis) => sign * rowProduct(rotation, axis, own));
         const inParent = floats.map((row, axis) => product(row, moved) + toNumber(shift[axis as 0 | 1 | 2]));
         const vector = floats.map((row) => product(row, moment)) as unknown as Triple;
@@ -196,21 +197,6 @@ function product(row: readonly number[], vector: readonly number[]): number {
 
 function columnSum(columns: readonly RationalVector[], axis: number): number {
   return columns.reduce((sum, column) => sum + toNumber(column[axis as 0 | 1 | 2]), 0);
-}
-
-function determinantOf(m: readonly number[]): number {
-  const [a, b, c, d, e, f, g, h, i] = m as unknown as readonly [
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-  ];
-  return Math.sign(a * (e * i - f * h) - b * (d * i - f * g) + c * (d * h - e * g));
 }
 
 /** Share of the larger moment by which two may differ and still be one: files round to a hundredth of a μB. */

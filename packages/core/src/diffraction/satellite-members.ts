@@ -1,4 +1,5 @@
 import { littleGroup, numericWaveVector, star, type WaveVector } from "../kvectors/index.js";
+import { adjugate, integerDeterminant } from "../numbers/index.js";
 import type { SpaceGroup, SymmetryOperator } from "../spacegroups/index.js";
 import type { Triple } from "./geometry.js";
 import type { ArrangementWave } from "./moment-space.js";
@@ -55,6 +56,12 @@ export function rotationNumbers({ rotation, rotationDenominator }: SymmetryOpera
   return rotation.map((entry) => entry / rotationDenominator);
 }
 
+/** Inverse of a rotation part, in some settings of fractions: its determinant is ±1 but for rounding. */
+function inverseNumbers(rotation: readonly number[]): readonly number[] {
+  const sign = Math.sign(integerDeterminant(rotation));
+  return adjugate(rotation).map((entry) => entry * sign);
+}
+
 /** Row times matrix (nine numbers row by row). */
 export function rowTimesNumbers(row: Triple, matrix: readonly number[]): Triple {
   const at = (column: number): number =>
@@ -62,31 +69,4 @@ export function rowTimesNumbers(row: Triple, matrix: readonly number[]): Triple 
     row[1] * (matrix[3 + column] as number) +
     row[2] * (matrix[6 + column] as number);
   return [at(0), at(1), at(2)];
-}
-
-/** Inverse of a rotation part: its determinant is ±1. */
-function inverseNumbers(m: readonly number[]): readonly number[] {
-  const [a, b, c, d, e, f, g, h, i] = m as unknown as [
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-  ];
-  const determinant = Math.round(a * (e * i - f * h) - b * (d * i - f * g) + c * (d * h - e * g));
-  return [
-    e * i - f * h,
-    c * h - b * i,
-    b * f - c * e,
-    f * g - d * i,
-    a * i - c * g,
-    c * d - a * f,
-    d * h - e * g,
-    b * g - a * h,
-    a * e - b * d,
-  ].map((entry) => entry / determinant);
 }
