@@ -102,25 +102,31 @@ export function freeText({ freeParameters: { irreps, group }, freePhases }: Conf
   return `${irreps === group ? irreps : `${irreps} of ${group}`}${phases}`;
 }
 
+/** What one configuration is, but for its sites and moments: the same in text and in a document. */
+export function configurationFields(one: ConfigurationRecord): (readonly [string, string])[] {
+  const { magneticGroup: group } = one;
+  return [
+    ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
+    [
+      "Magnetic group",
+      `${group.bns.symbol}, BNS ${group.bns.number}, OG ${group.og.number}, type ${roman(group.type)}, point group ${group.pointGroup}`,
+    ],
+    ["Cell", `(${group.cellFromParent}) of the parent; to the BNS setting (${group.toBns})`],
+    [
+      "Domains",
+      `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")} apart from time reversal and translations`,
+    ],
+    ["Free parameters", parameterText(one)],
+    ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
+    ...propertyFields(one),
+  ];
+}
+
 function configurationSection(one: ConfigurationRecord): string[] {
   const { magneticGroup: group } = one;
   return section(
     `${one.id}, direction ${one.direction}`,
-    fields([
-      ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
-      [
-        "Magnetic group",
-        `${group.bns.symbol}, BNS ${group.bns.number}, OG ${group.og.number}, type ${roman(group.type)}, point group ${group.pointGroup}`,
-      ],
-      ["Cell", `(${group.cellFromParent}) of the parent; to the BNS setting (${group.toBns})`],
-      [
-        "Domains",
-        `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")} apart from time reversal and translations`,
-      ],
-      ["Free parameters", parameterText(one)],
-      ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
-      ...propertyFields(one),
-    ]),
+    fields(configurationFields(one)),
     [""],
     siteTable(one.sites),
     [""],
@@ -134,7 +140,7 @@ export function roman(type: number): string {
   return ["", "I", "II", "III", "IV"][type] ?? String(type);
 }
 
-export function parameterText({ freeParameters: { irreps, group }, secondaryIrreps }: ConfigurationRecord): string {
+function parameterText({ freeParameters: { irreps, group }, secondaryIrreps }: ConfigurationRecord): string {
   const more = secondaryIrreps.map(({ label, k, parameters }) => `${label} of k = ${kForm(k)} (${parameters})`);
   return `${irreps} of the irreps listed, ${group} of the magnetic group${more.length > 0 ? `, which lets in ${more.join(", ")}` : ""}`;
 }

@@ -45,27 +45,33 @@ export function phasesText({ needsSecondOrderParameter, freePhases }: ModulatedR
     : "locked by an operator that takes k to −k";
 }
 
-export function modulatedSection(one: ModulatedRecord): string[] {
+/** What one modulated configuration is, but for its sites and operators: the same in text and in a document. */
+export function modulatedFields(one: ModulatedRecord): (readonly [string, string])[] {
   const { superspace, pointGroup } = one.magneticGroup;
   const more = one.secondaryIrreps.map(({ label, k, parameters }) => `${label} of k = ${kForm(k)} (${parameters})`);
+  return [
+    ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
+    ["Wave vector", kText(superspace.k)],
+    ["Point group", `${pointGroup}, of mean properties`],
+    ["Phases", phasesText(one)],
+    [
+      "Domains",
+      `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")}`,
+    ],
+    [
+      "Free parameters",
+      `${one.freeParameters.irreps} of the irreps listed, ${one.freeParameters.group} of the operators${more.length > 0 ? `, which let in ${more.join(", ")}` : ""}`,
+    ],
+    ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
+    ...propertyFields(one),
+  ];
+}
+
+export function modulatedSection(one: ModulatedRecord): string[] {
+  const { superspace } = one.magneticGroup;
   return section(
     `${one.id}, direction ${one.direction}`,
-    fields([
-      ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
-      ["Wave vector", kText(superspace.k)],
-      ["Point group", `${pointGroup}, of mean properties`],
-      ["Phases", phasesText(one)],
-      [
-        "Domains",
-        `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")}`,
-      ],
-      [
-        "Free parameters",
-        `${one.freeParameters.irreps} of the irreps listed, ${one.freeParameters.group} of the operators${more.length > 0 ? `, which let in ${more.join(", ")}` : ""}`,
-      ],
-      ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
-      ...propertyFields(one),
-    ]),
+    fields(modulatedFields(one)),
     [""],
     paragraph("M = C cos 2πx₄ + S sin 2πx₄ with x₄ = k·x, along a, b, c of the parent; the mean moment is zero."),
     table(

@@ -94,7 +94,7 @@ export function rankingTable({ ranking }: WeighRecord, rows: number): string[] {
       { title: "criterion", align: "right" },
       { title: "not told from" },
     ],
-    ranking.slice(0, rows).map((one, index) => rankingRow(one, index)),
+    ranking.slice(0, rows).map((one, index) => rankingRow(one, index, ranking)),
   );
   const more = ranking.length - rows;
   return [...lines, ...(more > 0 ? paragraph(`and ${counted(more, "more configuration")}`) : [])];
@@ -103,9 +103,11 @@ export function rankingTable({ ranking }: WeighRecord, rows: number): string[] {
 /** Names in the last column. */
 const shownSame = 4;
 
-function rankingRow(one: WeighedRecord, index: number): string[] {
+/** One line of the ranking; those that cannot be told from a better one share its rank. */
+export function rankingRow(one: WeighedRecord, index: number, ranking: readonly WeighedRecord[]): string[] {
+  const first = ranking.findIndex(({ id }) => id === one.id || one.sameAs.includes(id));
   return [
-    String(index + 1),
+    `${Math.min(first, index) + 1}${one.sameAs.length > 0 ? "=" : ""}`,
     one.id,
     one.irreps.join("+"),
     short(one.chiSquared),

@@ -4,9 +4,9 @@ import {
   commensurateOnes,
   modulatedOnes,
 } from "../../records/configurations.js";
-import { armsText, freeText, parameterText, roman } from "../../text/configurations-text.js";
+import { armsText, configurationFields, freeText } from "../../text/configurations-text.js";
 import { counted, positionText } from "../../text/names.js";
-import { allowedText, propertyFields } from "../../text/property-text.js";
+import { allowedText } from "../../text/property-text.js";
 import {
   type Block,
   type DocumentSection,
@@ -85,21 +85,7 @@ function descriptions(record: ConfigurationsRecord): Block[] {
 function details(one: ConfigurationRecord): Block[] {
   const { magneticGroup: group } = one;
   return [
-    ...fieldsBlock([
-      ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
-      [
-        "Magnetic group",
-        `${group.bns.symbol}, BNS ${group.bns.number}, OG ${group.og.number}, type ${roman(group.type)}, point group ${group.pointGroup}`,
-      ],
-      ["Cell", `(${group.cellFromParent}) of the parent; to the BNS setting (${group.toBns})`],
-      [
-        "Domains",
-        `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")} apart from time reversal and translations`,
-      ],
-      ["Free parameters", parameterText(one)],
-      ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
-      ...propertyFields(one),
-    ]),
+    ...fieldsBlock(configurationFields(one)),
     ...tableBlock(
       "Magnetic sites in the child cell",
       ["site", "of", ">atoms", "position", "moment of the irreps", "form of the group"],

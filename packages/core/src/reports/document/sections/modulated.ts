@@ -1,7 +1,7 @@
 import type { ModulatedRecord } from "../../records/configurations.js";
-import { modulatedFreeText, phasesText } from "../../text/modulated-text.js";
-import { counted, kForm, kText, positionText } from "../../text/names.js";
-import { allowedText, propertyFields } from "../../text/property-text.js";
+import { modulatedFields, modulatedFreeText } from "../../text/modulated-text.js";
+import { positionText } from "../../text/names.js";
+import { allowedText } from "../../text/property-text.js";
 import { type Block, fieldsBlock, listBlock, paragraphBlock, tableBlock } from "../blocks.js";
 
 /** One line for each modulated configuration. */
@@ -28,25 +28,9 @@ export function modulatedTable(all: readonly ModulatedRecord[]): Block[] {
 
 /** Everything about one modulated configuration. */
 export function modulatedDetails(one: ModulatedRecord): Block[] {
-  const { superspace, pointGroup } = one.magneticGroup;
-  const more = one.secondaryIrreps.map(({ label, k, parameters }) => `${label} of k = ${kForm(k)} (${parameters})`);
+  const { superspace } = one.magneticGroup;
   return [
-    ...fieldsBlock([
-      ["Irreps", one.irreps.join(" and ") + (one.severalIrreps ? " at once: more than one order parameter" : "")],
-      ["Wave vector", kText(superspace.k)],
-      ["Point group", `${pointGroup}, of mean properties`],
-      ["Phases", phasesText(one)],
-      [
-        "Domains",
-        `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")}`,
-      ],
-      [
-        "Free parameters",
-        `${one.freeParameters.irreps} of the irreps listed, ${one.freeParameters.group} of the operators${more.length > 0 ? `, which let in ${more.join(", ")}` : ""}`,
-      ],
-      ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
-      ...propertyFields(one),
-    ]),
+    ...fieldsBlock(modulatedFields(one)),
     ...tableBlock(
       "Modulations M = C cos 2πx₄ + S sin 2πx₄ with x₄ = k·x, along a, b, c of the parent; the mean moment is zero",
       ["site", ">atoms", "position", "C of the irreps", "S of the irreps", "C of the operators", "S of the operators"],

@@ -2,7 +2,7 @@ import { withUncertainty } from "../../../numbers/index.js";
 import type { WeighedRecord, WeighRecord } from "../../records/weigh.js";
 import { intensityChart } from "../../svg/intensity-chart.js";
 import { counted, decimals, plain } from "../../text/names.js";
-import { calculatedText, namesOf, notesOn, percent, remarksOn, scaleText, short } from "../../text/weigh-text.js";
+import { calculatedText, namesOf, notesOn, rankingRow, remarksOn, scaleText } from "../../text/weigh-text.js";
 import { type Block, type DocumentSection, fieldsBlock, moreBlock, paragraphBlock, tableBlock } from "../blocks.js";
 import { shownWeights, weightsFigureName } from "../figure-names.js";
 import type { BranchSource } from "../run-document.js";
@@ -39,17 +39,7 @@ function rankingBlocks(weigh: WeighRecord): Block[] {
     ...tableBlock(
       "Configurations by the Bayesian information criterion, best first",
       [">", "id", "irreps", ">χ²", ">χ²/dof", ">R", ">parameters", ">criterion", "not told from"],
-      weigh.ranking.map((one, rank) => [
-        String(rank + 1),
-        one.id,
-        one.irreps.join("+"),
-        short(one.chiSquared),
-        one.reducedChiSquared === null ? "–" : short(one.reducedChiSquared),
-        percent(one.rFactor),
-        String(one.parameters),
-        decimals(one.criterion, 1),
-        namesOf(one.sameAs, 4),
-      ]),
+      weigh.ranking.map(rankingRow),
     ),
     ...tableBlock(
       "Struck out: nothing on these lines, whatever the amplitudes are",
