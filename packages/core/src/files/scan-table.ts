@@ -125,7 +125,7 @@ function headerColumns(row: Row, problems: ProblemList): Column[] {
       where: { line: row.line, column: fields.filter(({ text }) => text === twice).at(-1)?.column ?? 1 },
       expected: "a name of its own for each column",
       found: twice,
-      remedy: "number them",
+      remedy: "number the peaks; every column of uncertainties may be called su, behind its peak",
     });
   return columns;
 }

@@ -136,7 +136,8 @@ function otherSection(peaks: readonly PeakOnsetRecord[]): string[] {
   );
 }
 
-function kSections(components: readonly MovingKRecord[]): string[] {
+/** What k does with temperature. */
+export function kSections(components: readonly MovingKRecord[]): string[] {
   if (components.length === 0) return [];
   return section(
     "k against temperature",

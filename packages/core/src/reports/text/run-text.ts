@@ -11,7 +11,7 @@ import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { decompositionText, modesText, parameterText } from "./modes-text.js";
 import { modulatedTable } from "./modulated-text.js";
 import { cellText, counted, groupText, kText, positionText } from "./names.js";
-import { onsetText, transitionSection } from "./onset-text.js";
+import { kSections, onsetText, transitionSection } from "./onset-text.js";
 import { satellitesText, satelliteTable } from "./satellites-text.js";
 import { assignmentTable, candidateTable, certificateLines, peakFields, separationLines } from "./search-text.js";
 import { severalVectorLines } from "./several-vectors-text.js";
@@ -31,7 +31,7 @@ export function runShortText(record: RunRecord): string[] {
     ...searchSection(record),
     ...record.branches.flatMap((branch, index) => branchText(branch, record.branches.length > 1 ? index + 1 : null)),
     ...(record.exchange === null ? [] : section("Exchange model", fields(exchangeSummary(record.exchange)))),
-    ...(record.onset === null ? [] : transitionSection(record.onset)),
+    ...(record.onset === null ? [] : [...transitionSection(record.onset), ...kSections(record.onset.k)]),
     ...section(
       "Next",
       record.next.flatMap((text, index) => paragraph(`${index + 1}. ${text}`, 2, 3)),
