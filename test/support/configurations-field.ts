@@ -49,6 +49,8 @@ export interface GreyOperator {
 }
 
 const grain = 1e5;
+/** So that no fraction with a usual denominator, n/64 or n/6000, lies where rounding turns. */
+const offGrain = 0.3183;
 
 /** @param axes rows: the three axes of the supercell in parent coordinates */
 export function supercell(
@@ -62,7 +64,7 @@ export function supercell(
   const key = (position: readonly number[]): string =>
     inverse
       .map((row) => {
-        const value = Math.round((inner(row, position) % 1) * grain);
+        const value = Math.round((inner(row, position) % 1) * grain + offGrain);
         return ((value % grain) + grain) % grain;
       })
       .join();
@@ -127,10 +129,12 @@ export function greyOperators(cell: Supercell): GreyOperator[] {
 export function movedField(cell: Supercell, field: Field, { operator, timeReversal }: GreyOperator): Field {
   const result = new Float64Array(field.length);
   const sign = timeReversal * Math.round(determinantOf(operator.rotation));
+  // From every atom back to where its moment comes from: an operator that turns the supercell may take two to one place.
+  const back = inverse(operator);
   cell.atoms.forEach(({ position }, index) => {
-    const target = cell.find(apply(operator, position));
-    turnColumn(operator.rotation, [...field.subarray(3 * index, 3 * index + 3)]).forEach((entry, axis) => {
-      result[3 * target + axis] = sign * entry;
+    const source = cell.find(apply(back, position));
+    turnColumn(operator.rotation, [...field.subarray(3 * source, 3 * source + 3)]).forEach((entry, axis) => {
+      result[3 * index + axis] = sign * entry;
     });
   });
   return result;
@@ -253,7 +257,17 @@ export function carriedComponents(
   return result;
 }
 
+/**
+ * Mean over a group, translations first: an operator may turn the axes of the supercell into other translations of the
+ * group, and only a field with all of these is moved to one place.
+ */
 export function meanOver(cell: Supercell, field: Field, operators: readonly GreyOperator[]): Field {
+  const isTranslation = ({ operator: { rotation } }: GreyOperator): boolean =>
+    rotation.every((entry, index) => Math.abs(entry - (index % 4 === 0 ? 1 : 0)) < 1e-9);
+  return plainMean(cell, plainMean(cell, field, operators.filter(isTranslation)), operators);
+}
+
+function plainMean(cell: Supercell, field: Field, operators: readonly GreyOperator[]): Field {
   const total = new Float64Array(field.length);
   for (const operator of operators)
     movedField(cell, field, operator).forEach((entry, index) => {
