@@ -207,6 +207,12 @@ describe("extinction rules", () => {
     );
   };
 
+  test("P 3_1 1 2 at k = 0: each twofold axis along Q leaves F along Q for Γ1, on all of its three lines", () => {
+    expect(rulesOf("P 31 1 2", "0 0 0", "407/997 263/997 413/997")["Γ1"]?.map((rule) => rule.split("+")[0])).toEqual(
+      expect.arrayContaining(["all (h 0 0)", "all (0 k 0)"]),
+    );
+  });
+
   test("FeO: moments along [111] leave (1/2 1/2 1/2) and its odd multiples dark (Shull, Strauser & Wollan, Phys. Rev. 83 (1951) 333)", () => {
     const rules = Object.values(rulesOf("F m -3 m", "1/2 1/2 1/2", "0 0 0"));
     expect(rules).toContainEqual(["all (h h h)+k"]);

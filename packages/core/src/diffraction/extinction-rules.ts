@@ -27,6 +27,7 @@ import {
   placeOnFlat,
   type ReflectionFlat,
   shiftedValue,
+  spansFlat,
   vectorOnFlat,
 } from "./reflection-flats.js";
 
@@ -149,8 +150,12 @@ function placesUpTo(periods: readonly number[]): number[][] {
   );
 }
 
-/** Whether some H that the rule takes is taken by none of the rules on larger flats. */
-function addsToOthers(rule: FlatRule, others: readonly FlatRule[]): boolean {
+/**
+ * Whether some H that the rule takes is taken by none of the rules found before. Those that meet its flat in less than
+ * the whole of it cannot take a class, however many they are.
+ */
+function addsToOthers(rule: FlatRule, found: readonly FlatRule[]): boolean {
+  const others = found.filter(({ flat }) => spansFlat(flat, rule.flat));
   if (others.length === 0) return true;
   const fine = others.reduce((period, other) => other.periods.reduce(lcm, period), 1);
   const periods = rule.periods.map((period) => lcm(period, fine));

@@ -98,6 +98,23 @@ export function placeOnFlat(flat: ReflectionFlat, eta: readonly number[]): numbe
   return rest.every((entry) => entry === 0) ? places : null;
 }
 
+/** Whether the line, plane or space that a flat spans holds all of another flat. */
+export function spansFlat(flat: ReflectionFlat, other: ReflectionFlat): boolean {
+  const difference = other.origin.map((entry, axis) => entry - (flat.origin[axis] as number));
+  return [difference, ...other.basis].every((vector) => inSpan(flat.basis, vector));
+}
+
+/** Elimination without division along a Hermite normal form. */
+function inSpan(basis: readonly (readonly number[])[], vector: readonly number[]): boolean {
+  const rest = basis.reduce<readonly number[]>((left, row) => {
+    const pivot = row.findIndex((entry) => entry !== 0);
+    return left.map((entry, axis) =>
+      safe(entry * (row[pivot] as number) - (left[pivot] as number) * (row[axis] as number)),
+    );
+  }, vector);
+  return rest.every((entry) => entry === 0);
+}
+
 /** `origin + Σ n_i basis_i`. */
 export function vectorOnFlat({ origin, basis }: ReflectionFlat, places: readonly number[]): number[] {
   return origin.map((entry, axis) =>
