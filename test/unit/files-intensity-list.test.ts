@@ -28,6 +28,7 @@ describe("lists of integrated intensities", () => {
       hkl: [0.5, 0, 1],
       observed: 12.5,
       uncertainty: 0.4,
+      polarization: null,
       line: 2,
     });
   });
@@ -47,5 +48,20 @@ describe("lists of integrated intensities", () => {
       ["invalid-peak", 3],
       ["invalid-peak", 4],
     ]);
+  });
+
+  test("the polarization of the beam is a column of its own, for crystals, between -1 and 1", async () => {
+    const list = parseIntensityList("h k l intensity intensity-su polarization\n0 0 1/5 9 1 -0.9\n0 0 1/5 4 1\n", {
+      file: "e.csv",
+    });
+    expect(list.intensities.map(({ polarization }) => polarization)).toEqual([-0.9, null]);
+    const powder = await problemsOf(() =>
+      parseIntensityList("q intensity polarization\n1.2 9 0.5\n", { file: "f.csv" }),
+    );
+    expect(powder.map(({ code, where }) => [code, where.line, where.column])).toEqual([["invalid-peak", 2, 7]]);
+    const beyond = await problemsOf(() =>
+      parseIntensityList("h k l intensity polarization\n1 0 0 9 1.5\n", { file: "g.csv" }),
+    );
+    expect(beyond.map(({ code, where }) => [code, where.line, where.column])).toEqual([["invalid-peak", 2, 9]]);
   });
 });

@@ -37,6 +37,12 @@ describe("a study file", () => {
             [0, 1],
           ],
           spin: [5, 2],
+          g: 2.05,
+          formFactor: {
+            j0: [0.3972, 13.2442, 0.6295, 4.9034, -0.0314, 0.3496, 0.0044],
+            j2: [1.6, 14, 1.9, 5, 0.5, 2, 0.001],
+            j2Factor: 0.03,
+          },
           occupancy: null,
         },
         {
@@ -48,6 +54,8 @@ describe("a study file", () => {
             [-3, 10],
           ],
           spin: [3, 2],
+          g: null,
+          formFactor: { constant: 0.8 },
           occupancy: null,
         },
       ],
@@ -76,6 +84,12 @@ describe("a study file", () => {
         lorentz: false,
         scale: 12.5,
         resolution: 0.02,
+        nuclear: "lines.csv",
+        includesNuclear: true,
+        displacement: 0.4,
+        scatteringAngleDeg: 90,
+        domains: "equal",
+        patternWidthDeg: 0.3,
       },
       exchange: [
         { bond: "1", between: null, j: -1 },
@@ -130,6 +144,8 @@ describe("a study file", () => {
           [1, 2],
         ],
         spin: null,
+        g: null,
+        formFactor: null,
         occupancy: null,
       },
       {
@@ -141,6 +157,8 @@ describe("a study file", () => {
           [469, 2000],
         ],
         spin: null,
+        g: null,
+        formFactor: null,
         occupancy: null,
       },
     ]);
@@ -210,6 +228,29 @@ describe("a study file", () => {
     const study = await parseStudy(fixture("every-key.yaml"), "study");
     expect(structuredClone(study)).toEqual(study);
     expect(JSON.parse(JSON.stringify(study))).toEqual(study);
+  });
+
+  it("refuses form factors and settings of intensities that mean nothing, with their places", async () => {
+    const study = `group: P n m a
+cell: {a: 8, b: 11, c: 5, alpha: 90, beta: 90, gamma: 90}
+sites:
+  - {label: Fe1, ion: Fe3+, at: [0, 0, 0], g: 0, form-factor: {j0: [1, 2, 3]}}
+  - {label: Fe2, ion: Fe3+, at: [0, 0, 1/2], form-factor: {j0: [1, 2, 3, 4, 5, 6, 7], j2: [1, 2, 3, 4, 5, 6, 7]}}
+intensities: {file: a.csv, domains: many, scattering-angle: 180, displacement: -1, pattern-width: 0}
+`;
+    const error = await parseStudy(study, "s.yaml").then(
+      () => null,
+      (reason) => reason as { problems: { where: { path: string; line: number } }[] },
+    );
+    expect(error?.problems.map(({ where: { path, line } }) => `${line} ${path}`)).toEqual([
+      "4 sites[0].g",
+      "4 sites[0].form-factor.j0",
+      "5 sites[1].form-factor.j2-factor",
+      "6 intensities.domains",
+      "6 intensities.scattering-angle",
+      "6 intensities.displacement",
+      "6 intensities.pattern-width",
+    ]);
   });
 
   it("has a fixture that names every key, so that none goes untested", () => {

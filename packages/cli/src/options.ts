@@ -53,7 +53,10 @@ export const optionSpecs = {
     about: '"NAME; GROUP; CELL": peaks on its lines are set aside',
     repeatable: true,
   },
-  nuclear: { flags: "--nuclear <FILE>", about: "list of nuclear lines with intensities, for λ/2 images" },
+  nuclear: {
+    flags: "--nuclear <FILE>",
+    about: "list of nuclear lines with intensities: for λ/2 images, in weigh for the scale",
+  },
   weighIntensities: { flags: "--weigh-intensities", about: "take weak peaks as likelier strays than strong ones" },
   arms: { flags: "--arms <ARMS>", about: "arms of the star that take part: pair, all, or 1,2,… (pair)" },
   together: {
@@ -83,6 +86,19 @@ export const optionSpecs = {
   scale: { flags: "--scale <S>", about: "intensity per |F|² of 10⁻²⁴ cm²; without it moments are relative" },
   resolution: { flags: "--resolution <DQ>", about: "lines nearer than this in Å⁻¹ are one peak (0.01)" },
   lorentz: { flags: "--lorentz <YES>", about: "whether the Lorentz factor is in the intensities: yes or no" },
+  displacement: { flags: "--displacement <B>", about: "overall displacement factor B in Å² (0)" },
+  scatteringAngle: { flags: "--scattering-angle <2THETA>", about: "of the detectors, in degrees: time of flight" },
+  domains: { flags: "--domains <HOW>", about: "fractions of the domains of a crystal: equal, or free to fit (equal)" },
+  includesNuclear: { flags: "--includes-nuclear", about: "the intensities hold nuclear lines at the same places too" },
+  pattern: {
+    flags: "--pattern <WIDTH>",
+    about: "simulate a pattern, lines this wide in degrees 2θ; for --csv and --svg",
+  },
+  formFactor: {
+    flags: "--form-factor <LABEL: F>",
+    about: "of a site: an ion such as Fe2+, or a constant",
+    repeatable: true,
+  },
   branches: { flags: "--branches <N>", about: "how many tied wave vectors are followed (3)" },
   example: { flags: "--example", about: "take the bundled example study" },
   json: { flags: "--json", about: "print the answer as JSON" },

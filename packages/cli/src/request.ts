@@ -100,6 +100,12 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
     scale: text("scale"),
     resolution: text("resolution"),
     lorentz: text("lorentz"),
+    displacement: text("displacement"),
+    scatteringAngle: text("scatteringAngle"),
+    domains: text("domains"),
+    ...(options["includesNuclear"] === true ? { includesNuclear: true } : {}),
+    pattern: text("pattern"),
+    formFactors: (options["formFactor"] as readonly string[] | undefined) ?? null,
     branches: text("branches"),
     files: spec.name === "run" && text("out") !== null,
   };

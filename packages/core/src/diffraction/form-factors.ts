@@ -13,13 +13,19 @@ export type FormFactorRequest =
       /** Spin S where it is not that of Hund's rules: the largest moment is then gS. */
       readonly spin?: number;
     }
-  | { readonly constant: number }
-  | {
+  | ({ readonly constant: number } & OwnLimit)
+  | ({
       readonly j0: IntegralCoefficients;
       readonly j2?: IntegralCoefficients;
       /** Factor of ⟨j2⟩. */
       readonly j2Factor?: number;
-    };
+    } & OwnLimit);
+
+/** What the largest moment g S is where no ion tells it; g is 2 where it is left out. */
+interface OwnLimit {
+  readonly g?: number;
+  readonly spin?: number;
+}
 
 /** `f(Q) = ⟨j0⟩ + j2Factor ⟨j2⟩`, or a constant where `j0` is null. */
 export interface MagneticFormFactor {
@@ -45,12 +51,13 @@ export function magneticFormFactor(request: FormFactorRequest): MagneticFormFact
   if ("constant" in request) {
     checkFinite([request.constant], "a constant form factor");
     const text = `constant ${roundNumber(request.constant)}`;
-    return { ion: null, j0: null, j2: null, j2Factor: 0, constant: request.constant, text, largestMoment: null };
+    const { constant } = request;
+    return { ion: null, j0: null, j2: null, j2Factor: 0, constant, text, largestMoment: ownLimit(request) };
   }
   const { j0, j2 = null, j2Factor = 0 } = request;
   checkFinite([...j0, ...(j2 ?? []), j2Factor], "coefficients of a form factor");
-  const text = j2 === null ? "own <j0>" : `own <j0> + ${roundNumber(j2Factor, 1, 4)} <j2>`;
-  return { ion: null, j0, j2, j2Factor, constant: 0, text, largestMoment: null };
+  const text = j2 === null ? "own <j0>" : `own ${factorText(j2Factor)}`;
+  return { ion: null, j0, j2, j2Factor, constant: 0, text, largestMoment: ownLimit(request) };
 }
 
 /** The form factor at Q (Å⁻¹). */
@@ -59,13 +66,18 @@ export function formFactorAt({ j0, j2, j2Factor, constant }: MagneticFormFactor,
   return radialIntegral(0, j0, q) + (j2 === null || j2Factor === 0 ? 0 : j2Factor * radialIntegral(2, j2, q));
 }
 
+function ownLimit({ g = 2, spin }: OwnLimit): number | null {
+  checkPositive(g, "g");
+  if (spin === undefined) return null;
+  checkPositive(spin, "spin");
+  return roundNumber(g * spin);
+}
+
 function factorOfIon(name: string, g: number | null, spin: number | null): MagneticFormFactor {
   const row = tabulatedIon(name);
   if (row === null) refuseIon(name);
-  if (g !== null && !(g > 0 && Number.isFinite(g)))
-    fail("invalid-argument", `g = ${g} cannot be`, { expected: "a number above 0", found: String(g) });
-  if (spin !== null && !(spin > 0 && Number.isFinite(spin)))
-    fail("invalid-argument", `a spin of ${spin} cannot be`, { expected: "a number above 0", found: String(spin) });
+  if (g !== null) checkPositive(g, "g");
+  if (spin !== null) checkPositive(spin, "spin");
   const state = ionState(name);
   const { factor, because } = j2FactorOf(state, g);
   const used = row.j2 === null ? 0 : factor;
@@ -115,6 +127,11 @@ function refuseIon(name: string): never {
         ? `did you mean ${near}? Else give a constant or coefficients`
         : "take a tabulated ion, or give a constant or coefficients of your own",
   });
+}
+
+function checkPositive(value: number, what: string): void {
+  if (!(value > 0 && Number.isFinite(value)))
+    fail("invalid-argument", `${what} = ${value} cannot be`, { expected: "a number above 0", found: String(value) });
 }
 
 function checkFinite(values: readonly number[], what: string): void {

@@ -24,6 +24,8 @@ import type { FourierComponent, MomentBasisVector, MomentSpace, ScatteringAtom }
 export interface ScatteringSite {
   readonly modes: SiteModes;
   readonly formFactor: MagneticFormFactor;
+  /** Share of the site that carries moments, 1 where it is left out: amplitudes are those of an atom that is there. */
+  readonly occupancy?: number;
 }
 
 /**
@@ -65,11 +67,12 @@ export function modeSpace(
   return { id, atoms: sites.flatMap(atomsOf), waves: [{ k, halfLattice, operator: 0 }], basis };
 }
 
-export function atomsOf({ modes, formFactor }: ScatteringSite): ScatteringAtom[] {
+export function atomsOf({ modes, formFactor, occupancy = 1 }: ScatteringSite): ScatteringAtom[] {
   return modes.orbit.positions.map((position) => ({
     site: modes.orbit.label,
     position: numbersOf(position),
     formFactor,
+    occupancy,
   }));
 }
 

@@ -8,6 +8,8 @@ export interface ScatteringAtom {
   readonly site: string;
   readonly position: Triple;
   readonly formFactor: MagneticFormFactor;
+  /** Share of the site that carries the moment, 1 where it is left out. */
+  readonly occupancy?: number;
 }
 
 /**

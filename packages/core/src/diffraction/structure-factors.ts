@@ -1,6 +1,13 @@
 import { numericWaveVector } from "../kvectors/index.js";
 import { formFactorAt, type MagneticFormFactor } from "./form-factors.js";
-import { cartesianMoment, cartesianQ, dotTriple, type ScatteringGeometry, type Triple } from "./geometry.js";
+import {
+  cartesianMoment,
+  cartesianQ,
+  dotTriple,
+  type ScatteringGeometry,
+  scaleTriple,
+  type Triple,
+} from "./geometry.js";
 import { type MomentArrangement, type MomentSpace, spaceOfArrangement } from "./moment-space.js";
 
 /**
@@ -40,12 +47,12 @@ export function prepareSpace(geometry: ScatteringGeometry, space: MomentSpace): 
     components: waves.map((_, wave) => {
       const flat = new Float64Array(basis.length * atoms.length * 6);
       basis.forEach((vector, index) => {
-        atoms.forEach((__, atom) => {
+        atoms.forEach(({ occupancy = 1 }, atom) => {
           const component = vector.components[wave]?.[atom];
           if (!component) return;
           const start = 6 * (index * atoms.length + atom);
-          flat.set(cartesianMoment(geometry, component.real), start);
-          flat.set(cartesianMoment(geometry, component.imaginary), start + 3);
+          flat.set(scaleTriple(occupancy, cartesianMoment(geometry, component.real)), start);
+          flat.set(scaleTriple(occupancy, cartesianMoment(geometry, component.imaginary)), start + 3);
         });
       });
       return flat.map((value) => value * magneticLengthPerMagneton);

@@ -55,9 +55,11 @@ export { type StudySectionName, studyKeys } from "./study-keys.js";
 export type {
   Study,
   StudyCoupling,
+  StudyFormFactor,
   StudyIntensities,
   StudyPeaks,
   StudyPlace,
+  StudyRange,
   StudySearch,
   StudySite,
 } from "./study-types.js";

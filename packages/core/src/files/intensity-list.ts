@@ -1,6 +1,6 @@
 import { defaultIntensityShare, weakIntensityShare } from "../numbers/index.js";
 import type { PeakKind } from "../search/index.js";
-import { type PeakListOptions, parsePeakList } from "./peak-list.js";
+import { type PeakListOptions, readPeakTable } from "./peak-list.js";
 import { note, problemList, throwProblems } from "./problem-list.js";
 
 /** One integrated intensity, or |F|². */
@@ -13,6 +13,8 @@ export interface ListedIntensity {
   readonly hkl: readonly [number, number, number] | null;
   readonly observed: number;
   readonly uncertainty: number;
+  /** Component along Q of the polarization of the incident beam, −1 to 1; null where the list does not say it. */
+  readonly polarization: number | null;
   /** Line of the file, from 1. */
   readonly line: number;
 }
@@ -27,14 +29,16 @@ export interface IntensityList {
 
 /**
  * Reads integrated intensities: a list of peaks (`parsePeakList`) in which every row has an intensity, by position for a
- * powder or by h k l. An intensity of 0 says that a line was looked for and not seen.
+ * powder or by h k l. An intensity of 0 says that a line was looked for and not seen. A column `polarization` tells the
+ * component along Q = k_i − k_f of the polarization of the incident beam.
  *
  * Uncertainties that are missing become 10 % of the intensity and 1 % of the strongest, added in squares, and that is told.
  *
  * Throws as `parsePeakList` does, and `invalid-peak` for every row without an intensity.
  */
 export function parseIntensityList(text: string, options: PeakListOptions): IntensityList {
-  const { peaks, kind, wavelengthAngstrom } = parsePeakList(text, options);
+  const { list, polarizations } = readPeakTable(text, options);
+  const { peaks, kind, wavelengthAngstrom } = list;
   const problems = problemList(options.file);
   for (const { intensity, line } of peaks)
     if (intensity === null)
@@ -57,6 +61,7 @@ export function parseIntensityList(text: string, options: PeakListOptions): Inte
       observed: intensity ?? 0,
       uncertainty:
         intensityUncertainty ?? Math.hypot(defaultIntensityShare * (intensity ?? 0), weakIntensityShare * strongest),
+      polarization: polarizations[index] ?? null,
       line,
     })),
     uncertaintySource: sourceText(missing, peaks.length),

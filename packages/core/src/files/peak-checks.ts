@@ -28,6 +28,7 @@ export function checkCells(
     const limit = kind === "hkl" ? 1 : (position?.value ?? Number.POSITIVE_INFINITY);
     checkUncertainty(row, uncertainty ?? brackets, given, limit, problems);
   }
+  checkPolarization(row, cells.polarization, kind, problems);
   const ofIntensity = cells["intensity uncertainty"];
   const inBrackets = intensity?.uncertainty ?? null;
   if (ofIntensity && inBrackets !== null) noteTwice(row, ofIntensity, "intensity uncertainty", problems);
@@ -112,6 +113,25 @@ function checkUncertainty(
     };
     noteWrong(row, value, "invalid-peak", wrong, problems);
   }
+}
+
+/** A powder has no chiral term: it is odd in Q, and Q and −Q are one line. */
+function checkPolarization(row: Row, value: PeakValue | undefined, kind: PeakKind, problems: ProblemList): void {
+  if (!value) return;
+  const possible = Math.abs(value.value) <= 1;
+  if (possible && kind === "hkl") return;
+  const wrong = possible
+    ? {
+        message: "the polarization of the beam counts only for reflections h k l",
+        expected: "columns h k l beside the polarization",
+        remedy: "remove the column: the intensities of a powder do not depend on it",
+      }
+    : {
+        message: `the component of a polarization cannot be ${value.value}`,
+        expected: "a number from -1 to 1, along Q = k_i - k_f",
+        remedy: "correct the value; 0 or nothing is a beam that is not polarized",
+      };
+  noteWrong(row, value, "invalid-peak", wrong, problems);
 }
 
 function noteTwice(row: Row, value: PeakValue, role: ColumnRole, problems: ProblemList): void {

@@ -6,7 +6,15 @@ import { unitFactor, unitNames } from "./peak-units.js";
 import { note, type ProblemList } from "./problem-list.js";
 
 /** What a column holds. */
-export type ColumnRole = "position" | "uncertainty" | "h" | "k" | "l" | "intensity" | "intensity uncertainty";
+export type ColumnRole =
+  | "position"
+  | "uncertainty"
+  | "h"
+  | "k"
+  | "l"
+  | "intensity"
+  | "intensity uncertainty"
+  | "polarization";
 
 export interface Column {
   readonly role: ColumnRole;
@@ -24,6 +32,7 @@ export interface Header {
 }
 
 const uncertaintyNames = ["su", "uncertainty", "sigma", "sig", "σ", "error", "esd"];
+const polarizationNames = ["polarization", "polarisation"];
 const intensityNames = ["intensity", "int", "i", "area", "counts"];
 const uncertaintyName = /^(su|uncertainty|sigma|sig|σ|error|esd)(?:\((.+)\))?$/;
 
@@ -120,6 +129,7 @@ function columnRole(name: string, previous: ColumnRole | null): ColumnRole | nul
   if (name === "h" || name === "k" || name === "l") return name;
   if (name === "position" || name === "pos" || positionKind(name)) return "position";
   if (intensityNames.includes(name)) return "intensity";
+  if (polarizationNames.includes(name)) return "polarization";
   const uncertainty = uncertaintyName.exec(name);
   if (uncertainty) {
     const of = uncertainty[2];

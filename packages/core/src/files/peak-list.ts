@@ -38,6 +38,18 @@ export interface PeakListOptions {
  * option), `invalid-peak`, `peak-out-of-range`.
  */
 export function parsePeakList(text: string, options: PeakListOptions): PeakList {
+  return readPeakTable(text, options).list;
+}
+
+/** A list of peaks with what only intensities have a use for. */
+export interface PeakTable {
+  readonly list: PeakList;
+  /** One per peak: component along Q of the polarization of the incident beam; null where the row has none. */
+  readonly polarizations: readonly (number | null)[];
+}
+
+/** As `parsePeakList`. */
+export function readPeakTable(text: string, options: PeakListOptions): PeakTable {
   const { file } = options;
   const rows = readRows(readableText(text, file));
   const problems = problemList(file);
@@ -62,21 +74,24 @@ export function parsePeakList(text: string, options: PeakListOptions): PeakList 
   const tolerance = options.tolerance === undefined ? null : options.tolerance * factor;
   const scale = kind && { kind, wavelengthAngstrom: wavelength, tolerance };
   const peaks: Peak[] = [];
+  const polarizations: (number | null)[] = [];
   let given = 0;
   for (const row of commas ? [] : data) {
     const cells = readCells(row, converted, headed, problems);
     if (!cells || !scale || !checkCells(row, cells, scale.kind, wavelength, problems)) continue;
     if (givenUncertainty(cells) !== null) given += 1;
     peaks.push(toPeak(cells, peaks.length, row.line, scale));
+    polarizations.push(cells.polarization?.value ?? null);
   }
   throwProblems(problems);
   if (!scale) fail("internal-fault", "a peak list without a kind was not refused", { where: { file } });
   const source = uncertaintySource(given, peaks.length, scale);
-  return { kind: scale.kind, wavelengthAngstrom: wavelength, peaks, uncertaintySource: source };
+  const list = { kind: scale.kind, wavelengthAngstrom: wavelength, peaks, uncertaintySource: source };
+  return { list, polarizations };
 }
 
 function isMeasure({ role }: Column): boolean {
-  return role !== "intensity" && role !== "intensity uncertainty";
+  return role !== "intensity" && role !== "intensity uncertainty" && role !== "polarization";
 }
 
 function usable(value: number | undefined): value is number {

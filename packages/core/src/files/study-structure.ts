@@ -2,6 +2,8 @@ import type { Rational, RationalVector } from "../numbers/index.js";
 import type { Cell } from "../spacegroups/index.js";
 import { ionFault } from "./ion-names.js";
 import { note, type ProblemList } from "./problem-list.js";
+import { readFormFactor } from "./study-form-factor.js";
+import { positive } from "./study-peaks.js";
 import { openSection } from "./study-section.js";
 import type { StudyAtom, StudySite } from "./study-types.js";
 import {
@@ -61,7 +63,7 @@ export function readCell(node: TreeNode, problems: ProblemList): Cell | null {
 
 const siteExample = "for example - {label: Fe1, ion: Fe3+, at: [0, 0, 0], spin: 5/2}";
 
-/** `sites: [{label, ion, at, spin}]`: labels that differ, exact coordinates. */
+/** `sites: [{label, ion, at, spin, g, form-factor, occupancy}]`: labels that differ, exact coordinates. */
 export function readSites(node: TreeNode, problems: ProblemList): StudySite[] {
   const list = asList(problems, node, "a list of sites", siteExample);
   if (!list) return [];
@@ -81,8 +83,14 @@ function readSite(node: TreeNode, lineOfLabel: Map<string, number | null>, probl
   const ionText = ion && readIon(ion, problems);
   const spin = section.get("spin");
   const spinValue = spin && readSpin(spin, problems);
+  const gNode = section.get("g");
+  const g = gNode && asNumber(problems, gNode, positive("a g factor above 0, such as 2.1"));
+  const factorNode = section.get("form-factor");
+  const formFactor = factorNode && readFormFactor(factorNode, problems);
   const occupancy = readOccupancy(section.get("occupancy"), problems);
-  return label !== null && position ? { label, ion: ionText, position, spin: spinValue, occupancy } : null;
+  return label !== null && position
+    ? { label, ion: ionText, position, spin: spinValue, g, formFactor, occupancy }
+    : null;
 }
 
 const atomExample = "for example - {label: O1, ion: O2-, at: [0.412, 1/4, 0.118], occupancy: 1}";

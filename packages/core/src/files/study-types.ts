@@ -9,6 +9,13 @@ export interface StudyPlace extends Place {
   readonly verbatim: boolean;
 }
 
+/** A magnetic form factor of one's own: `constant`, or coefficients A a B b C c D of ⟨j0⟩ and ⟨j2⟩. */
+export type StudyFormFactor =
+  | { readonly constant: number }
+  | { readonly j0: StudyCoefficients; readonly j2?: StudyCoefficients; readonly j2Factor?: number };
+
+export type StudyCoefficients = readonly [number, number, number, number, number, number, number];
+
 /** A site that carries a moment. */
 export interface StudySite extends Site {
   /** As written, e.g. `Fe3+`. */
@@ -16,6 +23,10 @@ export interface StudySite extends Site {
   readonly position: RationalVector;
   /** Spin quantum number, a multiple of 1/2. */
   readonly spin: Rational | null;
+  /** Spectroscopic g of a d ion, g_J of an f ion. */
+  readonly g: number | null;
+  /** In place of that of the ion. */
+  readonly formFactor: StudyFormFactor | null;
   /** Share of the site that the ion has; null where it is not said. */
   readonly occupancy: number | null;
 }
@@ -52,6 +63,18 @@ export interface StudyIntensities {
   readonly scale: number | null;
   /** Å⁻¹: lines nearer to each other are one peak. */
   readonly resolution: number | null;
+  /** A list of nuclear lines in the same scale, relative to the study. */
+  readonly nuclear: string | null;
+  /** Whether the intensities hold the nuclear lines at the same places too. */
+  readonly includesNuclear: boolean | null;
+  /** Overall B in Å². */
+  readonly displacement: number | null;
+  /** 2θ in degrees of the detectors of a time-of-flight measurement. */
+  readonly scatteringAngleDeg: number | null;
+  /** Fractions of the domains of a crystal: equal, or fitted. */
+  readonly domains: "equal" | "free" | null;
+  /** Full width at half maximum in degrees 2θ of a simulated pattern. */
+  readonly patternWidthDeg: number | null;
 }
 
 /** Wishes for the search; what is null is not said in the study. */
@@ -84,7 +107,18 @@ export interface StudyCoupling {
   readonly bond: string;
   /** Only bonds between sites of these labels; null for all. */
   readonly between: readonly [string, string] | null;
-  readonly j: number;
+  /** Null where the constant only runs: outside a diagram it has the first value of its range. */
+  readonly j: number | null;
+  /** The range of a phase diagram; null where the constant stays. */
+  readonly vary: StudyRange | null;
+}
+
+/** Values through which a constant runs. */
+export interface StudyRange {
+  readonly from: number;
+  readonly to: number;
+  /** How many values; null where it is not said. */
+  readonly count: number | null;
 }
 
 /** A study file as a record: values where they are given, null for sections that are left out. */

@@ -88,6 +88,18 @@ export interface Request {
   readonly resolution?: string | null;
   /** `weigh`: whether the Lorentz factor is in the intensities: yes or no. */
   readonly lorentz?: string | null;
+  /** `weigh`: overall B in Å². */
+  readonly displacement?: string | null;
+  /** `weigh`: 2θ in degrees of the detectors of a time-of-flight measurement. */
+  readonly scatteringAngle?: string | null;
+  /** `weigh`: fractions of the domains of a crystal: equal or free. */
+  readonly domains?: string | null;
+  /** `weigh`: whether the intensities hold the nuclear lines at the same places. */
+  readonly includesNuclear?: boolean;
+  /** `weigh`: full width at half maximum in degrees 2θ of a simulated pattern. */
+  readonly pattern?: string | null;
+  /** `weigh`: form factors of sites, each `LABEL: ION` or `LABEL: CONSTANT`. */
+  readonly formFactors?: readonly string[] | null;
   /** `run`: how many tied candidates are followed. */
   readonly branches?: string | null;
   /** `run`: list the names of the files of a result folder in the result. */
@@ -162,6 +174,12 @@ export const argumentNames: { readonly [field in RequestField]: string } = {
   scale: "--scale",
   resolution: "--resolution",
   lorentz: "--lorentz",
+  displacement: "--displacement",
+  scatteringAngle: "--scattering-angle",
+  domains: "--domains",
+  includesNuclear: "--includes-nuclear",
+  pattern: "--pattern",
+  formFactors: "--form-factor",
   branches: "--branches",
   files: "--out",
   code: "CODE",

@@ -113,6 +113,7 @@ export type {
   WeighedRecord,
   WeighIonRecord,
   WeighMomentRecord,
+  WeighPatternRecord,
   WeighRecord,
 } from "./records/weigh.js";
 export { type ReportForm, reportEndings, reportForm, reportIn, reportSvg } from "./report-files.js";

@@ -1,6 +1,6 @@
 import { cifCode } from "./cif-code.js";
 import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
-import { weighCsv } from "./csv/weigh-table.js";
+import { patternCsv, rankingCsv } from "./csv/weigh-table.js";
 import { type DrawnRun, figureNames } from "./document/figure-names.js";
 import { jsonText } from "./json-text.js";
 import type { Envelope } from "./records/common.js";
@@ -27,6 +27,7 @@ export function resultFileNames(record: DrawnRun): string[] {
       ...cifNames(configurations, index),
       ...(satellites ? [`branch-${index + 1}-satellites.csv`] : []),
       ...(weigh ? [`branch-${index + 1}-weights.csv`] : []),
+      ...(weigh?.pattern ? [`branch-${index + 1}-pattern.csv`] : []),
     ]),
     ...figureNames(record),
   ];
@@ -55,7 +56,8 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
         : []),
       ...cifFiles(configurations, index),
       ...(satellites ? [[`branch-${index + 1}-satellites.csv`, satellitesCsv(satellites)] as const] : []),
-      ...(weigh ? [[`branch-${index + 1}-weights.csv`, weighCsv(weigh)] as const] : []),
+      ...(weigh ? [[`branch-${index + 1}-weights.csv`, rankingCsv(weigh)] as const] : []),
+      ...(weigh?.pattern ? [[`branch-${index + 1}-pattern.csv`, patternCsv(weigh.pattern)] as const] : []),
     ]),
   ]);
   return resultFileNames(record).map((name) => {

@@ -1,4 +1,5 @@
 import {
+  cartesianQ,
   clusterLines,
   displacementFactor,
   domainForm,
@@ -7,16 +8,20 @@ import {
   lorentzFactor,
   type MomentSpace,
   matchWave,
+  nuclearSquares,
+  nuclearStructureFactor,
   type PreparedSpace,
   prepareSpace,
   rotationNumbers,
   rowTimesNumbers,
+  type ScatteringGeometry,
   scatteringGeometry,
+  type Triple,
 } from "../diffraction/index.js";
 import type { WaveVector } from "../kvectors/index.js";
 import { type SatelliteLine, satelliteLines } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
-import type { IntensityData } from "./types.js";
+import type { IntensityData, IntensityDatum } from "./types.js";
 
 /** The calculated intensities of one candidate: `s (N_i + Σ_d w_d aᵀ A_di a)`. */
 export interface FitForms {
@@ -47,18 +52,48 @@ export interface DataFrame {
  * the datum that lies on it; where several do, each line to the nearest.
  */
 export function dataFrame(group: SpaceGroup, cell: Cell, k: WaveVector, data: IntensityData): DataFrame {
-  const positions = data.data.map(({ q }) => q);
-  const constants = new Float64Array(positions.length);
-  const lines: SatelliteLine[][] = positions.map(() => []);
-  const furthest = positions.reduce<number>((most, q) => Math.max(most, q ?? 0), 0);
-  if (data.sample === "single crystal" || furthest === 0) return { group, cell, k, data, lines, constants };
-  const satellites = satelliteLines(group, cell, k, { qMax: furthest + 2 * data.resolution });
-  assigned(satellites, positions, data.resolution, (line, datum) => lines[datum]?.push(line));
-  const nuclear = data.nuclear.map(({ line, square }) => ({ q: line.q, square }));
-  assigned(nuclear, positions, data.resolution, ({ q, square }, datum) => {
+  const constants = new Float64Array(data.data.length);
+  const lines: SatelliteLine[][] = data.data.map(() => []);
+  const frame = { group, cell, k, data, lines, constants };
+  if (data.sample === "single crystal") {
+    addNuclearReflections(frame);
+    return frame;
+  }
+  const furthest = data.data.reduce((most, { q }) => Math.max(most, q ?? 0), 0);
+  if (furthest === 0) return frame;
+  const limits = { qMax: furthest + 2 * data.resolution };
+  const positions = (without: IntensityDatum["holds"]): (number | null)[] =>
+    data.data.map(({ q, holds = "satellites" }) => (holds === without ? null : q));
+  const satellites = satelliteLines(group, cell, k, limits);
+  assigned(satellites, positions("nuclear"), data.resolution, (line, datum) => lines[datum]?.push(line));
+  const ofNuclei = positions("satellites");
+  if (ofNuclei.every((q) => q === null)) return frame;
+  const nuclear = nuclearSquares(group, cell, data.nuclear, limits).map(({ line, square }) => ({ q: line.q, square }));
+  assigned(nuclear, ofNuclei, data.resolution, ({ q, square }, datum) => {
     constants[datum] = (constants[datum] as number) + square * instrumentFactor(data, q);
   });
-  return { group, cell, k, data, lines, constants };
+  return frame;
+}
+
+/** |N(H)|² of a crystal is the same for all its domains: they differ by operators of the group. */
+function addNuclearReflections({ group, cell, data, constants }: DataFrame): void {
+  const geometry = scatteringGeometry(group, cell);
+  data.data.forEach(({ hkl, holds = "satellites" }, datum) => {
+    if (hkl === null || holds === "satellites" || !isNuclear(group, hkl)) return;
+    const [real, imaginary] = nuclearStructureFactor(geometry, data.nuclear, hkl);
+    constants[datum] = (real * real + imaginary * imaginary) * crystalFactor(data, geometry, hkl);
+  });
+}
+
+/** R.l.u. An index is whole when it is no further from a whole number. */
+const wholeIndex = 1e-4;
+
+/** Whether H·T is whole for all lattice translations. */
+function isNuclear({ lattice }: SpaceGroup, hkl: Triple): boolean {
+  return lattice.vectors.every((vector) => {
+    const turns = vector.reduce((sum, entry, axis) => sum + entry * (hkl[axis] as number), 0) / lattice.denominator;
+    return Math.abs(turns - Math.round(turns)) <= wholeIndex;
+  });
 }
 
 /** Calls `take` for every line (in order of Q) that belongs to a datum. */
@@ -120,17 +155,16 @@ function powderForms({ group, k, data, lines, constants }: DataFrame, prepared: 
 /** Relative to the largest entry of all: forms of two operators that differ by less are one domain. */
 const sameForm = 1e-9;
 
+/** Lorentz and displacement factor of a reflection, 0 at the origin. */
+function crystalFactor(data: IntensityData, geometry: ScatteringGeometry, hkl: Triple): number {
+  const q = Math.hypot(...cartesianQ(geometry, hkl));
+  return q > 0 ? instrumentFactor(data, q) : 0;
+}
+
 function crystalForms({ group, data, constants }: DataFrame, prepared: PreparedSpace): FitForms {
-  const { reciprocalAxes } = prepared.geometry;
-  const factors = data.data.map(({ hkl }) => {
-    const [h = 0, k = 0, l = 0] = hkl ?? [];
-    const q = Math.hypot(
-      ...([0, 1, 2] as const).map(
-        (axis) => h * reciprocalAxes[0][axis] + k * reciprocalAxes[1][axis] + l * reciprocalAxes[2][axis],
-      ),
-    );
-    return q > 0 ? instrumentFactor(data, q) : 0;
-  });
+  const factors = data.data.map(({ hkl, holds }) =>
+    hkl === null || holds === "nuclear" ? 0 : crystalFactor(data, prepared.geometry, hkl),
+  );
   const domains: number[][] = [];
   const forms: Float64Array[][] = [];
   let largest = 0;
@@ -155,9 +189,11 @@ function crystalForms({ group, data, constants }: DataFrame, prepared: PreparedS
     }
   });
   const rotations = group.operators.map(rotationNumbers);
+  const onSatellite = (hkl: Triple): boolean =>
+    rotations.some((rotation) => matchWave(group, prepared, rowTimesNumbers(hkl, rotation)) !== null);
   const assigned = data.data.map(
-    ({ hkl }) =>
-      hkl !== null && rotations.some((rotation) => matchWave(group, prepared, rowTimesNumbers(hkl, rotation)) !== null),
+    ({ hkl, holds }, datum) =>
+      hkl !== null && ((constants[datum] as number) > 0 || (holds !== "nuclear" && onSatellite(hkl))),
   );
   return { size: prepared.size, domains, forms, constants, assigned };
 }

@@ -1,4 +1,4 @@
-import type { DiffractionGeometry, MomentSpace, NuclearSquare, Triple } from "../diffraction/index.js";
+import type { DiffractionGeometry, MomentSpace, NuclearAtom, Triple } from "../diffraction/index.js";
 
 /** One measured intensity. */
 export interface IntensityDatum {
@@ -16,6 +16,8 @@ export interface IntensityDatum {
    * not polarized.
    */
   readonly polarization?: number;
+  /** Left out: satellites alone. Nuclear lines measured with them, or peaks that hold both, fix the scale. */
+  readonly holds?: "satellites" | "nuclear" | "both";
 }
 
 /** What was measured and how. */
@@ -26,8 +28,8 @@ export interface IntensityData {
   readonly geometry: DiffractionGeometry;
   /** Observed intensity per Σ|F|² × Lorentz factor × displacement factor, |F|² in 10⁻²⁴ cm²; null where not known. */
   readonly scale: number | null;
-  /** Nuclear lines that lie on the peaks or were measured with them; they fix the scale where it is not given. Powder only. */
-  readonly nuclear: readonly NuclearSquare[];
+  /** All atoms of the primitive cell, for the data that hold nuclear lines; they fix the scale where it is not given. */
+  readonly nuclear: readonly NuclearAtom[];
   /** Overall B, Å². */
   readonly displacement: number;
   /** Å⁻¹: lines nearer to each other than this are one peak, and a peak lies this near to its lines. */
@@ -115,7 +117,7 @@ export interface WeighedCandidate {
   readonly chiSquared: number;
   /** χ² / (data − parameters); null without degrees of freedom. */
   readonly reducedChiSquared: number | null;
-  /** Σ|obs − calc| / Σ|obs|. */
+  /** Σ|obs − calc| / Σ|obs| over all data but nuclear lines alone. */
   readonly rFactor: number;
   /** Parameters that the data see: rank of the derivatives, scale and domain fractions included. */
   readonly parameters: number;
@@ -158,6 +160,8 @@ export interface StruckCandidate {
   readonly id: string;
   /** Labels of the data that it makes zero whatever its amplitudes are. */
   readonly peaks: readonly string[];
+  /** The first satellite of each of them: `(0 0 0)+k`. */
+  readonly satellites: readonly string[];
 }
 
 export interface Weighing {

@@ -59,8 +59,7 @@ export async function weighOne(
   const relative = isRelative(layout, data);
   const geometry: ScatteringGeometry = scatteringGeometry(frame.group, frame.cell);
   const moments = fittedMoments(frame.group, geometry, space, amplitudes, covariance, relative);
-  const observed = data.data.reduce((sum, one) => sum + Math.abs(one.observed), 0);
-  const residue = data.data.reduce((sum, one, index) => sum + Math.abs(one.observed - (values[index] as number)), 0);
+  const rFactor = rFactorOf(data, values);
   const chiSquared = minima.best.chiSquared;
   const largestIntensity = Math.max(...values, 0);
   return {
@@ -72,7 +71,7 @@ export async function weighOne(
       id: space.id,
       chiSquared: roundNumber(chiSquared, count),
       reducedChiSquared: count > rank ? roundNumber(chiSquared / (count - rank), 1) : null,
-      rFactor: roundNumber(observed > 0 ? residue / observed : 0, 1),
+      rFactor: roundNumber(rFactor, 1),
       parameters: rank,
       criterion: roundNumber(chiSquared + rank * Math.log(count), count),
       freePhase: commonPhaseDirection(space, parameters) !== null,
@@ -93,6 +92,16 @@ export async function weighOne(
     amplitudes: (follow) =>
       fittedAmplitudes(space, layout, parameters, covariance, model, chiSquared, { here, generic, follow }),
   };
+}
+
+function rFactorOf({ data }: IntensityData, values: Float64Array): number {
+  let [observed, residue] = [0, 0];
+  data.forEach((one, index) => {
+    if (one.holds === "nuclear") return;
+    observed += Math.abs(one.observed);
+    residue += Math.abs(one.observed - (values[index] as number));
+  });
+  return observed > 0 ? residue / observed : 0;
 }
 
 /** Relative to the largest. Minima whose amplitudes agree within this but for signs are one. */

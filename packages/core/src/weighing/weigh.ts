@@ -2,12 +2,14 @@ import { breathe, type WorkHost } from "../algorithms/index.js";
 import { fail } from "../errors/index.js";
 import type { WaveVector } from "../kvectors/index.js";
 import { clearlySeenUncertainties, tiedCriterion } from "../numbers/index.js";
+import { type SatelliteLine, satelliteLines } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { type DataFrame, dataFrame, type FitForms, fitForms } from "./fit-forms.js";
 import { type Separator, separator } from "./separations.js";
 import {
   defaultWeighOptions,
   type IntensityData,
+  type IntensityDatum,
   type WeighCandidate,
   type WeighedCandidate,
   type Weighing,
@@ -48,7 +50,7 @@ export async function weigh(
     made.push({ candidate, forms: fitForms(whole, candidate) });
   }
   const usable = data.data.map((_, index) => made.some(({ forms }) => forms.assigned[index]));
-  if (!usable.includes(true)) refuseData(data);
+  if (!usable.includes(true)) refuseData(whole);
   const frame = keepData(whole, usable);
   const zero = zeroLimit(made.map(({ forms }) => forms));
   const struckOut: Weighing["struckOut"][number][] = [];
@@ -57,7 +59,12 @@ export async function weigh(
     host.progress?.(index, made.length, candidate.id);
     const own = keepForms(forms, usable);
     const peaks = impossiblePeaks(frame.data, own, zero);
-    if (peaks.length > 0) struckOut.push({ id: candidate.id, peaks });
+    if (peaks.length > 0)
+      struckOut.push({
+        id: candidate.id,
+        peaks: peaks.map((datum) => (frame.data.data[datum] as IntensityDatum).label),
+        satellites: peaks.map((datum) => satelliteName(frame, datum)),
+      });
     else fits.push(await weighOne(frame, candidate, own, chosen, host));
   }
   // Fits that are equal but for rounding stay in the order of the candidates.
@@ -97,15 +104,39 @@ function checkData({ data }: IntensityData): void {
     );
 }
 
-function refuseData({ data }: IntensityData): never {
+/** Peaks that a message names. */
+const mostNamed = 4;
+
+function refuseData(frame: DataFrame): never {
+  const { data, resolution, sample } = frame.data;
   fail("invalid-argument", "no peak of the list lies on a satellite of this k", {
-    expected: "peaks within the resolution of satellites",
-    found: data
-      .map(({ label }) => label)
-      .slice(0, 5)
-      .join(", "),
-    remedy: "check k, the cell and the positions of the peaks",
+    expected: sample === "powder" ? `peaks within ${resolution} Å⁻¹ of satellites` : "h k l of vectors H ± k",
+    found: data.slice(0, mostNamed).map(nearestText(frame)).join("; "),
+    remedy: "check k, the cell and the positions of the peaks; `kvane satellites` lists where they should be",
   });
+}
+
+/** Writes a peak with the satellite that comes nearest to it. */
+function nearestText({ group, cell, k, data }: DataFrame): (datum: IntensityDatum) => string {
+  const furthest = data.data.reduce((most, { q }) => Math.max(most, q ?? 0), 0);
+  const lines = furthest > 0 ? satelliteLines(group, cell, k, { qMax: 1.2 * furthest }) : [];
+  return ({ label, q }) => {
+    if (q === null) return label;
+    const [first, ...others] = lines;
+    if (!first) return `${label} at ${q.toFixed(4)} Å⁻¹`;
+    const nearest = others.reduce((best, one) => (Math.abs(one.q - q) < Math.abs(best.q - q) ? one : best), first);
+    return `${label} at ${q.toFixed(4)} Å⁻¹ (nearest ${lineName(nearest)} at ${nearest.q.toFixed(4)})`;
+  };
+}
+
+/** The first satellite of a powder peak; of a crystal the label has the indices. */
+function satelliteName({ lines, data }: DataFrame, datum: number): string {
+  const line = lines[datum]?.[0];
+  return line === undefined ? (data.data[datum]?.label ?? "") : lineName(line);
+}
+
+function lineName({ h, sign }: SatelliteLine): string {
+  return `(${h.join(" ")})${sign === -1 ? "-k" : "+k"}`;
 }
 
 function keepData(frame: DataFrame, usable: readonly boolean[]): DataFrame {
@@ -135,20 +166,19 @@ function zeroLimit(all: readonly FitForms[]): number {
   return zeroShare * largest;
 }
 
-/** Clearly observed peaks on which every amplitude of the candidate gives nothing. */
-function impossiblePeaks({ data }: IntensityData, { forms, constants, size }: FitForms, zero: number): string[] {
-  return data
-    .filter(
-      ({ observed, uncertainty }, index) =>
-        observed > clearlySeenUncertainties * uncertainty &&
-        constants[index] === 0 &&
-        forms.every((domain) =>
-          Array.from({ length: size }, (_, at) => domain[index]?.[at * size + at] as number).every(
-            (entry) => entry <= zero,
-          ),
-        ),
+/** Clearly observed data on which every amplitude of the candidate gives nothing. */
+function impossiblePeaks({ data }: IntensityData, { forms, constants, size }: FitForms, zero: number): number[] {
+  return data.flatMap(({ observed, uncertainty }, index) =>
+    observed > clearlySeenUncertainties * uncertainty &&
+    constants[index] === 0 &&
+    forms.every((domain) =>
+      Array.from({ length: size }, (_, at) => domain[index]?.[at * size + at] as number).every(
+        (entry) => entry <= zero,
+      ),
     )
-    .map(({ label }) => label);
+      ? [index]
+      : [],
+  );
 }
 
 function compared(
@@ -180,6 +210,20 @@ function compared(
   };
 }
 
+/** χ² per degree of freedom above which a fit is called poor: misfits of two s.u. on average. */
+const poorFit = 4;
+
+/** Share of χ² that comes from nuclear lines alone. */
+function nuclearShare({ data }: DataFrame, { result }: OneFit): number {
+  let [nuclear, total] = [0, 0];
+  data.data.forEach(({ observed, uncertainty, holds }, index) => {
+    const own = ((observed - (result.calculated[index] as number)) / uncertainty) ** 2;
+    total += own;
+    if (holds === "nuclear") nuclear += own;
+  });
+  return total > 0 ? nuclear / total : 0;
+}
+
 function remarksOn(
   frame: DataFrame,
   fits: readonly OneFit[],
@@ -195,10 +239,12 @@ function remarksOn(
     remarks.push(
       `There are ${frame.data.data.length} intensities for ${best.result.parameters} parameters: a good fit means nothing.`,
     );
-  if (best?.result.reducedChiSquared != null && best.result.reducedChiSquared > 4)
+  if (best?.result.reducedChiSquared != null && best.result.reducedChiSquared > poorFit)
     remarks.push(
-      "Even the best fit is poor: uncertainties are understated, or the right arrangement is not in the list.",
+      nuclearShare(frame, best) > 0.5
+        ? "The nuclear lines fit poorly: look at the structure, its occupancies and displacements, before trusting the scale."
+        : "Even the best fit is poor: uncertainties are understated, or the right arrangement is not in the list.",
     );
-  if (unassigned.length > 0) remarks.push(`Left out, far from every satellite: ${unassigned.join(", ")}.`);
+  if (unassigned.length > 0) remarks.push(`Left out, near no line that they may be: ${unassigned.join(", ")}.`);
   return remarks;
 }

@@ -13,7 +13,7 @@ import { remember, together, type Work } from "../work.js";
 /** `kvane weigh`: the configurations of the study's k, ranked by how well they fit intensities. */
 export async function weighCommand(work: Work): Promise<WeighRecord> {
   // The options on positions are those of the intensities here, not of the peaks.
-  const onPeaks: Work = { ...work, request: { ...work.request, as: null, wavelength: null } };
+  const onPeaks: Work = { ...work, request: { ...work.request, as: null, wavelength: null, nuclear: null } };
   const { inputs, given, options } = await together({
     inputs: () => readStudy(onPeaks),
     given: () => intensitiesOf(work),

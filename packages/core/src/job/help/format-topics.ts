@@ -9,12 +9,12 @@ export const formatTopics: { readonly [topic: string]: HelpTopic } = {
   group: P n m a
   cell: {a: 10.21, b: 6.05, c: 4.71, alpha: 90, beta: 90, gamma: 90}
   sites:
-    - {label: Fe1, ion: Fe3+, at: [0, 0, 0], spin: 5/2, occupancy: 1}
+    - {label: Fe1, ion: Fe3+, at: [0, 0, 0], spin: 5/2, occupancy: 1}   # and g, form-factor
   atoms:                              # without moments: they go into written files
     - {label: O1, ion: O2-, at: [0.412, 1/4, 0.118]}
   k: [[0, 1/2, 0]]                    # leave out to search
   peaks: {file: satellites.csv, as: two-theta, wavelength: 2.41, tolerance: 0.08}
-  intensities: {file: integrated.csv, scale: 40}
+  intensities: {file: integrated.csv, scale: 40}   # kvane help intensities has more keys
   search: {unmatched: 1, max-dimension: 3, zero-shift: 0.05, cell-scale: 0.002}
   exclude: [[38.1, 38.6]]             # ranges of positions that are set aside
   impurities:                         # peaks on their lines are set aside

@@ -37,11 +37,27 @@ intensities: {file: integrated.csv}   and where it is needed:
                     1/(sin θ sin 2θ) (powder) or 1/sin 2θ (crystal); false: |F|². Powder lists with
                     a wavelength are taken as measured, all others as |F|², and that is listed
                     under Assumed
-  scale: 40         intensity per |F|² of 10⁻²⁴ cm² of the primitive cell, from nuclear lines;
-                    without it moments are relative
+  scale: 40         intensity per |F|² of 10⁻²⁴ cm² of the primitive cell
+  nuclear: FILE     nuclear lines in the same scale, read like the intensities: the scale is fitted
+                    with the moments. All atoms must be in the study (sites and atoms) or the CIF.
+                    Without scale and nuclear lines moments are relative
+  includes-nuclear: true   the intensities hold the nuclear lines at the same places too; else they
+                    are taken as satellites alone, with k = 0 as differences
+  displacement: 0.5 overall B in Å²: intensities fall by exp(−2B s²), s = Q/4π
   resolution: 0.01  lines nearer to each other in Å⁻¹ are one peak, which lies so near to them
+  scattering-angle: 90   time of flight: 2θ of the detectors; the Lorentz factor is d⁴ sin θ
+  domains: free     crystal: fractions of arms, orientations and chirality domains are fitted; else
+                    they are equal
+  pattern-width: 0.3   a simulated pattern of the best fits, lines of this full width at half
+                    maximum in degrees 2θ (--pattern; with --csv or --svg), for looking at
 
-Form factors follow from the ions of the sites. kvane weigh fits the free amplitudes of every
+A column \`polarization\` beside h k l is the component along Q = k_i − k_f of the polarization of
+the incident beam, −1 to 1: the chiral term counts then.
+
+Form factors follow from the ions of the sites (International Tables C, 4.4.5). In their place a
+site may have form-factor: 1 (a constant) or form-factor: {j0: [A, a, B, b, C, c, D], j2: […],
+j2-factor: 0.1}, and g: 2.1; --form-factor "Fe1: Fe2+" gives it to a site of a CIF. The occupancy
+of a site counts: moments are those of an atom that is there. kvane weigh fits the free amplitudes of every
 configuration and ranks them by χ² + parameters · ln(intensities). A ranking is no refinement.`,
   },
   scan: {

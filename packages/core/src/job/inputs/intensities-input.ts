@@ -1,21 +1,18 @@
 import { fail, KvaneError, type Place } from "../../errors/index.js";
 import { type IntensityList, parseIntensityList, readPeakKind, type StudyIntensities } from "../../files/index.js";
-import { overlapInverseAngstrom } from "../../numbers/index.js";
 import type { PeakKind } from "../../search/index.js";
 import { remember, together, type Work } from "../work.js";
 import { optionOf, studyText } from "./given.js";
+import { type IntensitySettings, settledSettings, writtenSettings } from "./intensity-settings.js";
 import { numberOption } from "./number-input.js";
 import { besideStudy, readNamed } from "./read-file.js";
 
 /** A list of intensities and how it is to be understood. */
-export interface GivenIntensities {
+export interface GivenIntensities extends IntensitySettings {
   readonly list: IntensityList;
   readonly file: string;
-  /** Whether the Lorentz factor is in the numbers. */
-  readonly lorentz: boolean;
-  readonly scale: number | null;
-  /** Å⁻¹. */
-  readonly resolution: number;
+  /** Nuclear lines in the same scale. */
+  readonly nuclear: { readonly list: IntensityList; readonly file: string } | null;
 }
 
 /** The intensities of `--intensities` or of the study; throws `missing-argument` or `missing-key` where there are none. */
@@ -39,24 +36,47 @@ export async function intensitiesIfGiven(work: Work): Promise<GivenIntensities |
   if (named === null) return null;
   const { fromStudy } = named;
   const options = work.request.command === "weigh" ? work : { ...work, request: { command: work.request.command } };
-  const { kind, wavelength, scale, resolution, asked, text } = await together({
+  const { kind, wavelength, written, text, nuclearText } = await together({
     kind: () => kindOption(options),
     wavelength: () => numberOption(options.request, "wavelength", { above: 0 }),
-    scale: () => numberOption(options.request, "scale", { above: 0 }),
-    resolution: () => numberOption(options.request, "resolution", { above: 0 }),
-    asked: () => lorentzOption(options),
+    written: () => writtenSettings(options, fromStudy),
     text: () => readNamed(work.host, named.path, named.where),
+    nuclearText: () => namedNuclear(options, named),
   });
-  const known = wavelength ?? fromStudy?.wavelengthAngstrom ?? work.study?.peaks?.wavelengthAngstrom ?? null;
-  const list = parsed(work, text, named.path, kind ?? fromStudy?.kind ?? null, known);
+  const angle = written.scatteringAngleDeg;
+  // With detectors at one angle the wavelength of the peaks is that of another measurement.
+  const usual = angle === null ? (work.study?.peaks?.wavelengthAngstrom ?? null) : null;
+  const known = wavelength ?? fromStudy?.wavelengthAngstrom ?? usual;
+  const asked = kind ?? fromStudy?.kind ?? null;
+  const list = parsed(work, text, named.path, asked, known);
   rememberUncertainties(work, list);
-  return {
-    list,
-    file: named.path,
-    lorentz: lorentzOf(work, asked ?? fromStudy?.lorentz ?? null, list, named.where),
-    scale: scale ?? fromStudy?.scale ?? null,
-    resolution: resolutionOf(work, resolution ?? fromStudy?.resolution ?? null, list),
+  const settings = settledSettings(work, written, list, named.where);
+  const nuclear = nuclearText && {
+    list: parsed(work, nuclearText.text, nuclearText.path, asked, known),
+    file: nuclearText.path,
   };
+  if (nuclear !== null && (nuclear.list.kind === "hkl") !== (list.kind === "hkl"))
+    fail("conflicting-arguments", "the nuclear lines are of another kind of sample than the satellites", {
+      where: { file: nuclear.file },
+      expected: list.kind === "hkl" ? "reflections by h k l" : "powder lines by position",
+      found: nuclear.list.kind,
+      remedy: "measure both on the same sample: only then do they have one scale",
+    });
+  return { list, file: named.path, nuclear, ...settings };
+}
+
+/** The list of nuclear lines of `--nuclear` or beside the intensities of the study, as text. */
+async function namedNuclear(
+  { request, study, host }: Work,
+  { fromStudy }: NamedList,
+): Promise<{ readonly path: string; readonly text: string } | null> {
+  const option = request.command === "weigh" ? optionOf(request, "nuclear") : null;
+  if (option !== null) return { path: option.text, text: await readNamed(host, option.text, option.where) };
+  const written = fromStudy?.nuclear ?? null;
+  if (study === null || written === null) return null;
+  const { where } = studyText(study, "intensities.nuclear", written);
+  const path = besideStudy(study.file, written);
+  return { path, text: await readNamed(host, path, where) };
 }
 
 interface NamedList {
@@ -109,61 +129,6 @@ function kindOption({ request }: Pick<Work, "request">): PeakKind | null {
       remedy: "say what the numbers are: --as two-theta",
     });
   return kind;
-}
-
-function lorentzOption({ request }: Pick<Work, "request">): boolean | null {
-  const given = optionOf(request, "lorentz");
-  if (given === null) return null;
-  if (given.text === "yes" || given.text === "no") return given.text === "yes";
-  return fail("invalid-argument", `\`${given.text}\` does not say whether the Lorentz factor is in the intensities`, {
-    where: given.where,
-    expected: "yes or no",
-    found: given.text,
-    remedy: "--lorentz yes for intensities as measured, --lorentz no for |F|²",
-  });
-}
-
-/** Powder intensities with a wavelength are taken as measured, all others as |F|². */
-function lorentzOf(
-  work: Work,
-  asked: boolean | null,
-  { kind, wavelengthAngstrom }: IntensityList,
-  where: Partial<Place>,
-): boolean {
-  if (asked !== null) {
-    if (asked && wavelengthAngstrom === null)
-      fail("missing-wavelength", "the Lorentz factor needs the wavelength", {
-        where,
-        expected: "the wavelength in Å",
-        found: "none",
-        remedy: "give it (--wavelength, or `wavelength:` under intensities), or say that the numbers are |F|²",
-      });
-    return asked;
-  }
-  const lorentz = kind !== "hkl" && wavelengthAngstrom !== null;
-  const because = lorentz
-    ? "they are powder intensities with a wavelength; `lorentz: false` or --lorentz no says otherwise"
-    : `${kind === "hkl" ? "reflections by h k l" : "no wavelength"}; \`lorentz: true\` or --lorentz yes says otherwise`;
-  const value = lorentz ? "in the intensities" : "not in the numbers: they are |F|²";
-  remember(work, [{ what: "Lorentz factor", value, because }], []);
-  return lorentz;
-}
-
-function resolutionOf(work: Work, asked: number | null, { kind }: IntensityList): number {
-  if (asked !== null) return asked;
-  if (kind !== "hkl")
-    remember(
-      work,
-      [
-        {
-          what: "resolution",
-          value: `${overlapInverseAngstrom} Å⁻¹`,
-          because: "neither `resolution` under intensities nor --resolution says within what lines are one peak",
-        },
-      ],
-      [],
-    );
-  return overlapInverseAngstrom;
 }
 
 function rememberUncertainties(work: Work, { uncertaintySource }: IntensityList): void {

@@ -12,7 +12,10 @@ export async function searchOptionsOf(work: Work): Promise<SearchOptions> {
   const wishes = study?.search ?? null;
   const unmatched = numberOption(request, "unmatched", { from: 0, whole: true }) ?? wishes?.unmatched ?? null;
   const maxDimension = numberOption(request, "maxDimension", { from: 0, to: 3, whole: true }) as 0 | 1 | 2 | 3 | null;
-  if (unmatched === null && request.command !== "index" && request.command !== "check")
+  // With k given `weigh` does not search.
+  const given = typeof request.k === "string" || (study?.k ?? []).length > 0;
+  const searches = !["index", "check"].includes(request.command) && !(request.command === "weigh" && given);
+  if (unmatched === null && searches)
     remember(
       work,
       [

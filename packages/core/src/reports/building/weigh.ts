@@ -4,7 +4,7 @@ import { waveVectorToJson } from "../../kvectors/index.js";
 import { roundNumber } from "../../numbers/index.js";
 import { type Cell, formatTriplet, type SpaceGroup } from "../../spacegroups/index.js";
 import type { IntensityDatum, WeighedCandidate, Weighing } from "../../weighing/index.js";
-import type { WeighDataRecord, WeighedRecord, WeighRecord } from "../records/weigh.js";
+import type { WeighDataRecord, WeighedRecord, WeighPatternRecord, WeighRecord } from "../records/weigh.js";
 import { cellRecord, groupRecord } from "./names.js";
 
 /** What was weighed and how, for the record. */
@@ -15,9 +15,10 @@ export interface WeighedInput {
   readonly spaces: readonly MomentSpace[];
   readonly ions: readonly { readonly label: string; readonly formFactor: MagneticFormFactor }[];
   readonly data: Omit<WeighDataRecord, "list"> & { readonly intensities: readonly IntensityDatum[] };
+  readonly pattern: WeighPatternRecord | null;
 }
 
-export function weighRecord({ set, cell, spaces, ions, data }: WeighedInput, found: Weighing): WeighRecord {
+export function weighRecord({ set, cell, spaces, ions, data, pattern }: WeighedInput, found: Weighing): WeighRecord {
   const { intensities, ...how } = data;
   const left = new Set(found.unassigned);
   const irrepsOf = (id: string) => formOf(set, id).irreps;
@@ -35,12 +36,14 @@ export function weighRecord({ set, cell, spaces, ions, data }: WeighedInput, fou
       ...how,
       list: intensities
         .filter(({ label }) => !left.has(label))
-        .map(({ label, q, hkl, observed, uncertainty }) => ({
+        .map(({ label, q, hkl, observed, uncertainty, holds = "satellites", polarization = null }) => ({
           label,
           q: q === null ? null : roundNumber(q),
           hkl,
           observed,
           su: roundNumber(uncertainty),
+          holds,
+          polarization,
         })),
     },
     ranking: found.ranking.map((one) =>
@@ -50,7 +53,8 @@ export function weighRecord({ set, cell, spaces, ions, data }: WeighedInput, fou
         spaces.find(({ id }) => id === one.id),
       ),
     ),
-    struckOut: found.struckOut.map(({ id, peaks }) => ({ id, irreps: irrepsOf(id), peaks })),
+    struckOut: found.struckOut.map(({ id, peaks, satellites }) => ({ id, irreps: irrepsOf(id), peaks, satellites })),
+    pattern,
     unassigned: found.unassigned,
     relative: found.relative,
     criterion: found.criterion,

@@ -44,6 +44,11 @@ export function weightsFigureName({ weigh }: Pick<BranchRecord, "weigh">, index:
   return weigh === null || weigh.ranking.length === 0 ? null : `branch-${index + 1}-weights.svg`;
 }
 
+/** The drawing of the simulated patterns of a branch, or null where none was asked for. */
+export function patternFigureName({ weigh }: Pick<BranchRecord, "weigh">, index: number): string | null {
+  return weigh?.pattern ? `branch-${index + 1}-pattern.svg` : null;
+}
+
 /** The drawing of the temperature scan, or null where there is none. */
 export function onsetFigureName({ onset }: Pick<DrawnRun, "onset">): string | null {
   return onset === null ? null : "onset.svg";
@@ -59,6 +64,7 @@ export function figureNames(record: DrawnRun): string[] {
       graphFigureName(branch, index),
       ...drawnConfigurations(branch.configurations).drawn.map(({ id }) => configurationFigureName(id, index)),
       weightsFigureName(branch, index),
+      patternFigureName(branch, index),
     ]),
     onsetFigureName(record),
   ].filter((name) => name !== null);

@@ -12,6 +12,16 @@ export interface WeighDataRecord {
   readonly scale: number | null;
   /** Å⁻¹. */
   readonly resolution: number;
+  /** 2θ of the detectors in degrees; null where the wavelength is fixed or not known. */
+  readonly scatteringAngleDeg: number | null;
+  /** Overall B in Å². */
+  readonly displacement: number;
+  /** The list of nuclear lines that fix the scale. */
+  readonly nuclearFile: string | null;
+  /** Whether the intensities hold nuclear lines at the same places. */
+  readonly includesNuclear: boolean;
+  /** Fractions of the domains of a crystal. */
+  readonly domains: "equal" | "free";
   readonly uncertaintySource: string;
   /** Those that lie on satellites; `calculated` of a candidate has one number for each. */
   readonly list: readonly {
@@ -20,6 +30,9 @@ export interface WeighDataRecord {
     readonly hkl: readonly number[] | null;
     readonly observed: number;
     readonly su: number;
+    readonly holds: "satellites" | "nuclear" | "both";
+    /** Component along Q of the polarization of the beam. */
+    readonly polarization: number | null;
   }[];
 }
 
@@ -88,6 +101,17 @@ export interface WeighedRecord {
   readonly hits: number;
 }
 
+/** Simulated patterns of satellites, for looking at: equal steps of 2θ from `fromDeg` on. */
+export interface WeighPatternRecord {
+  readonly wavelengthAngstrom: number;
+  /** Full width at half maximum of the Gaussian lines, degrees 2θ. */
+  readonly widthDeg: number;
+  readonly fromDeg: number;
+  readonly stepDeg: number;
+  /** Of the first configurations; intensity per degree in the unit of the data. */
+  readonly curves: readonly { readonly id: string; readonly intensities: readonly number[] }[];
+}
+
 /** Result of `kvane weigh`. */
 export interface WeighRecord {
   readonly group: GroupRecord;
@@ -102,7 +126,10 @@ export interface WeighRecord {
     readonly id: string;
     readonly irreps: readonly string[];
     readonly peaks: readonly string[];
+    /** The first satellite of each. */
+    readonly satellites: readonly string[];
   }[];
+  readonly pattern: WeighPatternRecord | null;
   /** Labels of intensities that lie on no satellite. */
   readonly unassigned: readonly string[];
   /** Whether sizes are relative. */

@@ -1,11 +1,19 @@
 import { withUncertainty } from "../../numbers/index.js";
-import type { WeighDataRecord, WeighedRecord, WeighMomentRecord, WeighRecord } from "../records/weigh.js";
+import type {
+  WeighDataRecord,
+  WeighedRecord,
+  WeighIonRecord,
+  WeighMomentRecord,
+  WeighRecord,
+} from "../records/weigh.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { cellText, counted, decimals, groupText, kText, plain } from "./names.js";
 
 /** Candidates whose moments, and whose calculated intensities, are printed; the JSON has all. */
 const shownMoments = 3;
 const shownColumns = 4;
+/** Domains of one candidate. */
+const shownDomains = 8;
 /** Rows of the ranking. */
 const shownRanks = 20;
 /** Atoms of one candidate. */
@@ -57,25 +65,64 @@ function headSection(record: WeighRecord): string[] {
       ["Numbers", numbersText(data)],
       ["Scale", scaleText(record)],
       ...(data.sample === "powder" ? [["Resolution", `${plain(data.resolution)} Å⁻¹`] as const] : []),
+      ...settingsOf(data),
       ["Uncertainties", data.uncertaintySource],
       ...record.ions.map(
-        ({ label, ion, formFactor, limit }) =>
-          [label, `${ion}, form factor ${formFactor}${limit === null ? "" : `, at most ${plain(limit)} μB`}`] as const,
+        (one) => [one.label, `${ionText(one)}${one.limit === null ? "" : `, at most ${plain(one.limit)} μB`}`] as const,
       ),
     ]),
   );
 }
 
-function numbersText({ lorentz, sample, wavelengthAngstrom }: WeighDataRecord): string {
+/** What was said beside the list, where it is not the usual. */
+export function settingsOf(data: WeighDataRecord): (readonly [string, string])[] {
+  const polarized = data.list.filter(({ polarization }) => (polarization ?? 0) !== 0).length;
+  return [
+    ...(data.nuclearFile === null ? [] : [["Nuclear lines", data.nuclearFile] as const]),
+    ...(data.includesNuclear ? [["Nuclear part", "in the intensities"] as const] : []),
+    ...(data.displacement > 0 ? [["Displacement", `B = ${plain(data.displacement)} Å² for all atoms`] as const] : []),
+    ...(data.sample === "single crystal"
+      ? [["Domains", data.domains === "free" ? "fractions fitted" : "equal fractions"] as const]
+      : []),
+    ...(polarized > 0 ? [["Polarized beam", `in ${counted(polarized, "intensity", "intensities")}`] as const] : []),
+  ];
+}
+
+export function ionText({ ion, formFactor }: WeighIonRecord): string {
+  return ion === "" ? `form factor ${formFactor}` : `${ion}, form factor ${formFactor}`;
+}
+
+/** The peaks on which a configuration gives nothing, with their satellites where the label does not say them. */
+export function struckPeaks({ peaks, satellites }: WeighRecord["struckOut"][number]): string[] {
+  return peaks.map((label, index) => {
+    const satellite = satellites[index] ?? label;
+    return satellite === label ? label : `${label} ${satellite}`;
+  });
+}
+
+/** Fractions of the domains, by the operator that makes each of the first. */
+export function domainText({ domains }: WeighedRecord): string {
+  const shares = domains.map(
+    ({ operator, fraction, su }) =>
+      `${su === null || su === 0 ? decimals(fraction, 3) : withUncertainty(fraction, su)} (${operator})`,
+  );
+  return `Domains: ${namesOf(shares, shownDomains)}.`;
+}
+
+function numbersText({ lorentz, sample, wavelengthAngstrom, scatteringAngleDeg }: WeighDataRecord): string {
   if (!lorentz) return "|F|², without Lorentz factor";
+  if (scatteringAngleDeg !== null)
+    return `integrated intensities by time of flight with the Lorentz factor d⁴ sin θ, 2θ = ${plain(scatteringAngleDeg)}°`;
   const factor = sample === "powder" ? "1/(sin θ sin 2θ)" : "1/sin 2θ";
   return `integrated intensities with the Lorentz factor ${factor}, λ = ${plain(wavelengthAngstrom ?? 0)} Å`;
 }
 
 /** What the sizes of moments rest on. */
-export function scaleText({ relative, data }: WeighRecord): string {
+export function scaleText({ relative, data, ranking }: WeighRecord): string {
   if (relative) return "not known: moments are relative";
-  return data.scale === null ? "from nuclear lines" : `${plain(data.scale)} per |F|² of 10⁻²⁴ cm²`;
+  const scale = data.scale ?? ranking[0]?.scale ?? null;
+  const text = scale === null ? "" : `${short(scale)} per |F|² of 10⁻²⁴ cm²`;
+  return data.scale === null ? `from nuclear lines${text === "" ? "" : `: ${text}`}` : text;
 }
 
 /** One line for each configuration, best first. */
@@ -141,7 +188,7 @@ function struckSection(record: WeighRecord): string[] {
       : [
           ...table(
             [{ title: "id" }, { title: "irreps" }, { title: "zero, but observed" }],
-            record.struckOut.map(({ id, irreps, peaks }) => [id, irreps.join("+"), namesOf(peaks, 6)]),
+            record.struckOut.map((one) => [one.id, one.irreps.join("+"), namesOf(struckPeaks(one), 6)]),
           ),
           "",
           ...paragraph("These give nothing on the lines named, whatever their amplitudes are."),
@@ -153,7 +200,7 @@ function struckLines({ struckOut }: WeighRecord): string[] {
   return struckOut.length === 0
     ? []
     : paragraph(
-        `Struck out: ${struckOut.map(({ id, peaks }) => `${id} (zero on ${namesOf(peaks.map(unbroken), 2)})`).join(", ")}.`,
+        `Struck out: ${struckOut.map((one) => `${one.id} (zero on ${namesOf(struckPeaks(one).map(unbroken), 2)})`).join(", ")}.`,
       );
 }
 
@@ -182,6 +229,7 @@ function momentSection({ relative }: WeighRecord, one: WeighedRecord): string[] 
       one.moments.slice(0, shownAtoms).map(momentRow),
     ),
     one.moments.length > shownAtoms ? paragraph(`and ${counted(one.moments.length - shownAtoms, "more atom")}`) : [],
+    one.domains.length > 1 ? ["", ...paragraph(domainText(one))] : [],
     notes.length === 0 ? [] : ["", ...notes.flatMap((text) => paragraph(text))],
   );
 }
@@ -207,7 +255,11 @@ export function notesOn(one: WeighedRecord, relative: boolean): string[] {
     ...(relative && one.factorToLimit !== null
       ? [`Times ${short(one.factorToLimit)} the largest moment is what its ion can have.`]
       : []),
-    ...(unknown.length > 0 ? [`Not determined by these data: ${unknown.join(", ")}.`] : []),
+    ...(unknown.length > 0
+      ? [
+          `Not determined by these data: ${unknown.join(", ")}. The moments shown are one choice of many that fit equally well.`,
+        ]
+      : []),
     ...(one.freePhase ? ["The common phase of the wave is free: no diffraction sees it."] : []),
     ...(others > 0
       ? [

@@ -1,10 +1,22 @@
 import { withUncertainty } from "../../../numbers/index.js";
 import type { WeighedRecord, WeighRecord } from "../../records/weigh.js";
 import { intensityChart } from "../../svg/intensity-chart.js";
+import { patternChart } from "../../svg/pattern-chart.js";
 import { counted, decimals, plain } from "../../text/names.js";
-import { calculatedText, namesOf, notesOn, rankingRow, remarksOn, scaleText } from "../../text/weigh-text.js";
+import {
+  calculatedText,
+  domainText,
+  ionText,
+  namesOf,
+  notesOn,
+  rankingRow,
+  remarksOn,
+  scaleText,
+  settingsOf,
+  struckPeaks,
+} from "../../text/weigh-text.js";
 import { type Block, type DocumentSection, fieldsBlock, moreBlock, paragraphBlock, tableBlock } from "../blocks.js";
-import { shownWeights, weightsFigureName } from "../figure-names.js";
+import { patternFigureName, shownWeights, weightsFigureName } from "../figure-names.js";
 import type { BranchSource } from "../run-document.js";
 
 const columns = 6;
@@ -23,10 +35,12 @@ export function weightsSection({ branch, index, prefix }: BranchSource): Documen
       ...remarksOn(weigh).map(paragraphBlock),
       ...fieldsBlock([
         ["Scale", scaleText(weigh)],
-        ...weigh.ions.map(({ label, ion, formFactor }) => [label, `${ion}, form factor ${formFactor}`] as const),
+        ...settingsOf(weigh.data),
+        ...weigh.ions.map((one) => [one.label, ionText(one)] as const),
       ]),
       ...rankingBlocks(weigh),
       ...(file === null ? [] : [figureBlock(weigh, prefix, file)]),
+      ...patternBlocks(weigh, prefix, patternFigureName(branch, index)),
       ...weigh.ranking.slice(0, shownWeights).flatMap((one) => momentBlocks(weigh, one)),
       ...(best?.separations ?? []).map(({ from, text }) => paragraphBlock(`${best?.id} and ${from}: ${text}.`)),
       ...moreBlock("Observed and calculated intensities", comparisonBlocks(weigh)),
@@ -44,7 +58,7 @@ function rankingBlocks(weigh: WeighRecord): Block[] {
     ...tableBlock(
       "Struck out: nothing on these lines, whatever the amplitudes are",
       ["id", "irreps", "zero, but observed"],
-      weigh.struckOut.map(({ id, irreps, peaks }) => [id, irreps.join("+"), namesOf(peaks, 6)]),
+      weigh.struckOut.map((one) => [one.id, one.irreps.join("+"), namesOf(struckPeaks(one), 6)]),
     ),
   ];
 }
@@ -64,6 +78,19 @@ function figureBlock(weigh: WeighRecord, prefix: string, file: string): Block {
   };
 }
 
+function patternBlocks({ pattern, data }: WeighRecord, prefix: string, file: string | null): Block[] {
+  if (pattern === null || file === null) return [];
+  const figure = {
+    id: `figure-${prefix}-pattern`,
+    caption: `Simulated patterns of the satellites, lines of full width ${plain(pattern.widthDeg)}° at half maximum; for looking at, not for refinement.`,
+    parts: [patternChart(pattern, data)],
+    legend: null,
+    file,
+    live: null,
+  };
+  return [{ kind: "figure", figure }];
+}
+
 function momentBlocks({ relative }: WeighRecord, one: WeighedRecord): Block[] {
   return moreBlock(`Moments of ${one.id} (${relative ? "relative" : "μB"})`, [
     ...tableBlock(
@@ -80,6 +107,7 @@ function momentBlocks({ relative }: WeighRecord, one: WeighedRecord): Block[] {
         moment.aboveLimit ? "above the limit" : "",
       ]),
     ),
+    ...(one.domains.length > 1 ? [paragraphBlock(domainText(one))] : []),
     ...notesOn(one, relative).map(paragraphBlock),
   ]);
 }
