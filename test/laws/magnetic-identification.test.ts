@@ -5,8 +5,16 @@ import {
   magneticGroupByNumber,
   magneticGroupTable,
 } from "@kvane/core/magneticgroups";
-import { changeBasis, groupFromSetting, standardSetting, tabulatedSettings } from "@kvane/core/spacegroups";
+import {
+  changeBasis,
+  formatTriplet,
+  groupFromSetting,
+  parseGroup,
+  standardSetting,
+  tabulatedSettings,
+} from "@kvane/core/spacegroups";
 import { describe, expect, it } from "vitest";
+import { bnsOperators } from "../support/magnetic-bns-setting.js";
 import { flatTexts, groupOfFlat } from "../support/magnetic-operators.js";
 import { magneticRowProblems } from "../support/magnetic-sweep.js";
 import { expandRow, magneticRows } from "../support/magnetic-table.js";
@@ -28,9 +36,24 @@ describe("the 1651 types from the generators of the table", () => {
     const random = seeded(602);
     const sample = rows.filter(() => random.below(12) === 0);
     const wrong = sample.filter(
-      (row) => flatTexts(magneticGroupByNumber(row.bns)).join("|") !== expandRow(row).map(String).sort().join("|"),
+      (row) => flatTexts(magneticGroupByNumber(row.bns)).join("|") !== bnsOperators(row).map(String).sort().join("|"),
     );
     expect(wrong).toEqual([]);
+  });
+
+  it("stand in the settings of their numbers, with the inversion centre at the origin where there are two", () => {
+    const wrong = rows
+      .filter(({ type }) => type === 1)
+      .filter(({ bns }) => {
+        const [number = ""] = bns.split(".");
+        const plain = (magneticGroupByNumber(bns).operators ?? []).map(({ operator }) => formatTriplet(operator));
+        return plain.sort().join() !== parseGroup(number).operators.map(formatTriplet).sort().join();
+      });
+    expect(wrong).toEqual([]);
+    // Magnetite's family: International Tables A, Fd-3m, origin 2 has -x,-y,-z.
+    expect(
+      magneticGroupByNumber("227.131").operators.some(({ operator }) => formatTriplet(operator) === "-x,-y,-z"),
+    ).toBe(true);
   });
 
   it("have a symbol each, all different", () => {

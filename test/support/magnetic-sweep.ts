@@ -1,4 +1,5 @@
 import { changeMagneticBasis, identifyMagneticGroup } from "@kvane/core/magneticgroups";
+import { bnsOperators } from "./magnetic-bns-setting.js";
 import { flatTexts, groupOfFlat } from "./magnetic-operators.js";
 import { expandRow, type MagneticRow } from "./magnetic-table.js";
 import type { Random } from "./random.js";
@@ -7,7 +8,7 @@ import { randomBasis } from "./random-bases.js";
 /** What is wrong with the identification of a row as it stands and in so many random bases; empty when nothing is. */
 export function magneticRowProblems(row: MagneticRow, random: Random, bases: number): readonly string[] {
   const plain = expandRow(row);
-  const wanted = plain.map(String).sort().join("|");
+  const wanted = bnsOperators(row).map(String).sort().join("|");
   const own = groupOfFlat(plain);
   if (own.type !== row.type) return [`${row.bns} has type ${own.type} instead of ${row.type}`];
   const groups = [own, ...Array.from({ length: bases }, () => changeMagneticBasis(own, randomBasis(random)))];

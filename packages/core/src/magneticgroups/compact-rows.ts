@@ -23,29 +23,32 @@ export type CompactData = string;
 
 let settings: ReadonlyMap<number, TabulatedSetting> | null = null;
 
-/**
- * The settings in which the table gives its groups: those that International Tables' number stands for, but origin 1
- * where there are two.
- */
+/** The BNS settings: those that International Tables' number stands for, origin 2 where there are two. */
 export function bnsSettings(): ReadonlyMap<number, TabulatedSetting> {
-  if (settings) return settings;
-  const rows = tabulatedSettings();
-  settings = new Map(rows.filter((row) => row.standard).map((row) => [row.number, row]));
-  const chosen = new Map(settings);
-  for (const row of rows) if (row.choice === "1") chosen.set(row.number, row);
-  settings = chosen;
+  settings ??= new Map(
+    tabulatedSettings()
+      .filter((row) => row.standard)
+      .map((row) => [row.number, row]),
+  );
   return settings;
 }
 
+/** The settings of the table's source: the same, but origin 1 where there are two. */
+function sourceSetting(number: number): TabulatedSetting {
+  const first = tabulatedSettings().find((row) => row.number === number && row.choice === "1");
+  return first ?? (bnsSettings().get(number) as TabulatedSetting);
+}
+
 /**
- * The compact form of a group given by generators in the BNS setting, for the maker of the table. Integer translations
- * belong to it.
+ * The compact form of a group given by generators in the setting of the table's source, for the maker of the table. Integer
+ * translations belong to it. Primes belong to rotations and anti-translations to no origin, so that nothing of it changes
+ * when the origin is moved to that of the BNS setting.
  *
  * @throws `not-a-group` when the group does not consist of the operators of its space group in that setting
  */
 export function compactData(number: number, type: MagneticGroupType, generators: readonly string[]): CompactData {
   const all = multiplyOut(generators.map((text) => parseMagneticTriplet(text)));
-  const base = groupFromSetting(bnsSettings().get(number) as TabulatedSetting);
+  const base = groupFromSetting(sourceSetting(number));
   const plain = all.filter((one) => type !== 4 || one.timeReversal === 1);
   const translations = plain.filter((one) => isTranslation(one.operator)).map((one) => translationOf(one.operator));
   const lattice = latticeFromVectors([...identityMatrix, ...translations]);
@@ -58,8 +61,12 @@ export function compactData(number: number, type: MagneticGroupType, generators:
     !primes.every((text) => wanted.includes(text)) ||
     order !== all.length
   )
-    fail("not-a-group", `${generators.join(" ")} is not in the BNS setting of number ${number}`);
-  if (type === 3) return toHexadecimal(primes.map((text) => text === "-1"));
+    fail("not-a-group", `${generators.join(" ")} is not in the setting of number ${number}`);
+  if (type === 3) {
+    const primed = new Set(base.operators.filter((_, index) => primes[index] === "-1").map(rotationText));
+    const inBns = groupFromSetting(bnsSettings().get(number) as TabulatedSetting);
+    return toHexadecimal(inBns.operators.map((operator) => primed.has(rotationText(operator))));
+  }
   if (type !== 4) return "";
   const anti = all
     .filter((one) => one.timeReversal === -1 && isTranslation(one.operator))
@@ -67,6 +74,10 @@ export function compactData(number: number, type: MagneticGroupType, generators:
   // Of the vectors that differ by centring the one with the fewest components other than 0, early axes first.
   anti.sort((a, b) => weight(a) - weight(b));
   return (anti[0] as number[]).join(" ");
+}
+
+function rotationText({ rotation }: SymmetryOperator): string {
+  return rotation.join();
 }
 
 function weight(vector: readonly number[]): number {
