@@ -1,10 +1,11 @@
-import { readFileSync } from "node:fs";
+import { readdirSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { problemCodes } from "@kvane/core/errors";
 import { describedCommands } from "@kvane/core/reports";
 import { describe, expect, test } from "vitest";
 import { root } from "../tools/paths.mjs";
 import { kvane, shellWords } from "./command.js";
+import { commandPages } from "./command-pages.mjs";
 import { schemaErrors } from "./schemas.js";
 
 const folder = join(root, "docs/examples");
@@ -31,4 +32,14 @@ test("docs/errors.md has every code with its meaning, and no other", () => {
   const page = readFileSync(join(root, "docs/errors.md"), "utf8");
   const rows = [...page.matchAll(/^\| `(.+?)` \| \d+ \| (.*) \|$/gm)].map(([, code, meaning]) => [code, meaning]);
   expect(rows).toEqual(Object.entries(problemCodes));
+});
+
+test("docs/commands and docs/schemas are what the program says of itself, nothing missing and nothing more", async () => {
+  const made = await commandPages(async (line) => (await kvane(shellWords(line).slice(1))).stdout);
+  for (const [name, pages] of Object.entries(made)) {
+    const target = join(root, "docs", name);
+    expect(readdirSync(target).sort()).toEqual(Object.keys(pages).sort());
+    for (const [file, text] of Object.entries(pages))
+      expect(readFileSync(join(target, file), "utf8"), `${name}/${file}`).toBe(text);
+  }
 });

@@ -1,3 +1,5 @@
+import { writeFileSync } from "node:fs";
+import { join } from "node:path";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "./command.js";
 
@@ -104,6 +106,15 @@ const folder = scratchFolder({
   "crystal.yaml": `${structure}${others}intensities: {file: crystal.csv, nuclear: crystal-lines.csv}\n`,
   "no-element.yaml": `${structure}atoms: [{label: X1, at: [0.305, 0.305, 0]}]\nintensities: {file: satellites.csv, nuclear: lines.csv, wavelength: 2.4}\n`,
   "half.yaml": `${structure.replace("spin: 5/2", "spin: 5/2, occupancy: 0.5")}intensities: {file: satellites.csv, wavelength: 2.4, displacement: 0.5, scale: 7}\n`,
+  "shifted.yaml": `${structure}${others}intensities: {file: shifted.csv, wavelength: 2.4, scale: 7}\n`,
+  "twice.yaml": `${structure}${others}intensities: {file: twice.csv, wavelength: 2.4, scale: 7, displacement: 0.5}\n`,
+  "plane.yaml": `${structure}${others}intensities: {file: plane.csv, wavelength: 2.4, scale: 7}\n`,
+  "gone.yaml": `${structure}${others}intensities: {file: gone.csv}\n`,
+  "no-ion.yaml": `${structure.replace("ion: Mn2+, ", "")}intensities: {file: satellites.csv, wavelength: 2.4}\n`,
+  "shifted.csv": powderList(({ magnetic }) => magnetic, powderLorentz).replace(/^1\.290\d+/m, "1.320185"),
+  "twice.csv": "q intensity intensity-su\n1.290185 1000 20\n1.296 100 10\n2.633 140 10\n2.885 210 10\n",
+  // Ferromagnetic in the plane: several directions give one pattern.
+  "plane.csv": "q intensity intensity-su\n1.824597 400 10\n1.898253 300 10\n2.295239 150 8\n2.580370 100 8\n",
   "satellites.csv": powderList(({ magnetic }) => magnetic, powderLorentz),
   "lines.csv": powderList(({ nuclear }) => nuclear, powderLorentz),
   "sums.csv": powderList(({ nuclear, magnetic }) => nuclear + magnetic, powderLorentz),
@@ -186,6 +197,59 @@ describe("kvane weigh with what was measured beside the satellites", () => {
     expect(svg).toContain("Simulated patterns");
     const bars = (await kvane(["weigh", "study.yaml", "--svg"], { cwd: folder })).stdout;
     expect(bars).toContain("Observed and calculated intensities");
+  });
+
+  test("peaks on no line, and a second row on one, are left out with the reason and a warning", async () => {
+    const { result, warnings } = await weighed("shifted.yaml");
+    expect(result.leftOutShare).toBeGreaterThan(0.5);
+    expect(result.leftOut[0]).toMatchObject({ reason: "no line near" });
+    expect(result.leftOut[0].nearest.q).toBeGreaterThan(1);
+    expect(warnings.map(({ code }: { code: string }) => code)).toContain("intensities-left-out");
+    const twice = await weighed("twice.yaml");
+    expect(twice.result.leftOut).toMatchObject([{ label: "peak 2", reason: "another datum is nearer" }]);
+    const text = (await kvane(["weigh", "shifted.yaml"], { cwd: folder })).stdout;
+    expect(text.indexOf("Left out")).toBeLessThan(text.indexOf("Ranking"));
+    expect(text).toMatch(/File .*, \d+ used/);
+    const run = (await kvane(["run", "shifted.yaml"], { cwd: folder })).stdout;
+    expect(run).toContain("Much of the intensity lies on no line");
+  });
+
+  test("lines measured apart keep theirs where the peaks hold the nuclear part too", async () => {
+    const { result } = await weighed("both.yaml", "--nuclear", "lines.csv");
+    expect(result.leftOut).toEqual([]);
+    expect(Math.abs(result.ranking[0].scale - scale)).toBeLessThan(0.02 * scale);
+    expect(result.ranking[0].scaleSu).toBeGreaterThan(0);
+  });
+
+  test("a collinear arrangement has no part that a polarized beam would see", async () => {
+    const { result } = await weighed("plane.yaml");
+    for (const { separations } of result.ranking)
+      for (const { by } of separations) expect(by).not.toBe("polarised neutrons");
+  });
+
+  test("export --fitted writes the fitted moments, and decompose finds the configuration in them", async () => {
+    const { result } = await weighed("study.yaml");
+    const [best] = result.ranking;
+    const words = ["study.yaml", "--configuration", best.id];
+    const fitted = (await kvane(["export", ...words, "--fitted"], { cwd: folder })).stdout;
+    expect(fitted).toContain("best fit of kvane weigh to satellites.csv");
+    const moments = /_atom_site_moment[\s\S]*?\nMn1\S*\s+(\S+)\s+(\S+)\s+(\S+)/.exec(fitted) ?? [];
+    expect(Math.abs(Number(moments[3]))).toBeCloseTo(best.moments[0].size, 4);
+    writeFileSync(join(folder, "fitted.mcif"), fitted);
+    const back = await kvane(["decompose", "fitted.mcif", "--parent", "study.yaml", "--json"], { cwd: folder });
+    expect(JSON.parse(back.stdout).result.recognised.id).toBe(best.id);
+    const struck = result.struckOut[0].id;
+    const refused = await kvane(["export", "study.yaml", "--configuration", struck, "--fitted"], { cwd: folder });
+    expect(refused.status).toBe(2);
+    expect(refused.stderr).toContain("makes peak");
+  });
+
+  test("check looks into the lists and asks for ions", async () => {
+    const gone = await kvane(["check", "gone.yaml"], { cwd: folder });
+    expect(gone.status).toBe(2);
+    expect(gone.stderr).toContain("gone.csv");
+    const noIon = await kvane(["check", "no-ion.yaml", "--json"], { cwd: folder });
+    expect(JSON.parse(noIon.stdout).result.missing).toEqual(["the ion of Mn1, for its form factor (ion)"]);
   });
 
   test.each([

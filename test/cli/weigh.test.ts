@@ -177,7 +177,7 @@ describe("kvane weigh", () => {
     [["odd-ion.yaml"], "invalid-argument", "odd-ion.yaml:5:23 (sites[0].ion)", "Fe2[+], Fe3[+]"],
     [["missing.yaml"], "invalid-number", "missing.yaml:6:38 (intensities.scale)", "above 0"],
     [["study.yaml", "--intensities", "gone.csv"], "file-not-found", "gone.csv", "check the name"],
-    [["bare.yaml", "--intensities", "bare.csv"], "invalid-peak", "bare.csv:2:1", "no intensity"],
+    [["bare.yaml", "--intensities", "bare.csv"], "invalid-peak", "bare.csv:2:1", "no intensities"],
     [["bare.yaml", "--intensities", "elsewhere.csv"], "invalid-argument", "", "lies on a satellite"],
     [["study.yaml", "--k", "u,0,0"], "k-needs-values", "", "letter"],
     [["study.yaml", "--lorentz", "maybe"], "invalid-argument", "--lorentz", "yes or no"],
@@ -218,7 +218,7 @@ describe("kvane run with intensities", () => {
     expect(branches[0].weigh.ranking).toEqual(ranking);
     expect(next.join(" ")).toContain(ranking[0]?.id);
     const text = (await kvane(["run", "study.yaml"], { cwd: folder })).stdout;
-    expect(text).toMatch(/^Weights$/m);
+    expect(text).toMatch(/^Fits to intensities$/m);
   });
 
   test("what stands in the way of weights is a warning, not the end of the job", async () => {
@@ -236,7 +236,7 @@ describe("kvane run with intensities", () => {
     expect(text("branch-1-weights.csv").split("\n")[0]).toContain("observed,su,calculated");
     expect(text("branch-1-weights.svg")).toContain("Observed and calculated intensities");
     expect(text("report.html")).toContain("branch-1-weights");
-    expect(text("report.md")).toContain("Weights");
+    expect(text("report.md")).toContain("Fits to intensities");
   });
 });
 

@@ -1,9 +1,13 @@
 // @ts-check
-/** Writes what is made from the program: the examples of docs/examples and the page docs/errors.md. Needs the build. */
+/**
+ * Writes what is made from the program: the examples of docs/examples, the pages of docs/commands, the schemas of
+ * docs/schemas and the page docs/errors.md. Needs the build.
+ */
 import { spawnSync } from "node:child_process";
-import { readFileSync, writeFileSync } from "node:fs";
+import { mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { root } from "../tools/paths.mjs";
+import { commandPages } from "./command-pages.mjs";
 
 const command = join(root, "packages/cli/bin/kvane.js");
 const folder = join(root, "docs/examples");
@@ -40,3 +44,10 @@ mostly helps; \`node test/cli/write-pages.mjs\` makes the page from \`packages/c
 ${codes.map(({ code, meaning, exitStatus }) => `| \`${code}\` | ${exitStatus} | ${meaning} |`).join("\n")}
 `,
 );
+
+for (const [folderName, pages] of Object.entries(await commandPages(output))) {
+  const target = join(root, "docs", folderName);
+  mkdirSync(target, { recursive: true });
+  for (const name of readdirSync(target)) if (!(name in pages)) rmSync(join(target, name));
+  for (const [name, text] of Object.entries(pages)) writeFileSync(join(target, name), text);
+}

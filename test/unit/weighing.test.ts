@@ -91,7 +91,7 @@ describe("weighing", () => {
     const data = powder("F m -3 m", rockSalt, "1/2 1/2 1/2", sheet, [3, 1], 20);
     const result = await weigh(groupOf("F m -3 m"), rockSalt, wave("1/2 1/2 1/2"), data, spaces);
     expect(result.ranking.map(({ id }) => id)).toEqual([sheet.id]);
-    expect(result.struckOut).toEqual([{ id: axial.id, peaks: ["(0 0 0)"], satellites: ["(0 0 0)+k"] }]);
+    expect(result.struckOut).toEqual([{ id: axial.id, peaks: ["(0 0 0)"], satellites: ["(0 0 0) + k"] }]);
     expect(result.relative).toBe(false);
     const [best] = result.ranking;
     // A powder of a cubic crystal does not tell the direction in the sheet: Shirane, Acta Cryst. 12 (1959) 282.

@@ -70,6 +70,7 @@ export const optionSpecs = {
   child: { flags: "--child <CHANGE>", about: '"2a,b,c;0,0,0": axes of the file in those of the parent' },
   configuration: { flags: "--configuration <ID>", about: "which one: Γ2.1, or 2.1 for short" },
   cif: { flags: "--cif <VERSION>", about: "2.0, or 1.1, which leaves list-valued items out (2.0)" },
+  fitted: { flags: "--fitted", about: "moments as fitted to the intensities of the study, not an example" },
   constants: {
     flags: "--j <CONSTANT>",
     about: '"BOND J" such as "1 1.0" or "2b -0.3", or "BOND LABEL LABEL J"; J > 0 is antiferromagnetic',

@@ -73,9 +73,9 @@ export function writeFolder(path: OutputPath, files: readonly ResultFile[], forc
 /** A table or drawing of an earlier run that this one does not have. */
 function isStale(name: string, files: readonly ResultFile[]): boolean {
   const ours =
-    /^(assignments|branch-\d+-(modes|configurations|satellites|weights|pattern))\.csv$/.test(name) ||
+    /^(assignments|branch-\d+-(modes|configurations|satellites|weights|fitted-moments|pattern))\.csv$/.test(name) ||
     /^branch-\d+-GM[\w.]*\.mcif$/.test(name) ||
-    /^(peaks|zone|onset|branch-\d+-(moments-\d+|configurations|configuration-GM[\w.]*|weights|pattern))\.svg$/.test(
+    /^(peaks|zone|phase-diagram|onset|branch-\d+-(moments-\d+|configurations|configuration-GM[\w.]*|weights|pattern))\.svg$/.test(
       name,
     );
   return ours && !files.some((file) => file.name === name);

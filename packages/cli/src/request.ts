@@ -24,23 +24,30 @@ export function hideGroups(words: readonly string[]): string[] {
   });
 }
 
+/** Whether the first word is a file: a study or a CIF. */
+function isStudy({ spec, argument }: Pick<ParsedLine, "spec" | "argument">): boolean {
+  const first = argument?.trim() ?? null;
+  return (
+    first !== null &&
+    (spec.argument === "study" ||
+      spec.argument === "cif" ||
+      /\.(ya?ml|m?cif)$/i.test(first) ||
+      (first === "-" && spec.argument !== "scan"))
+  );
+}
+
 /** The words of the command line as a request. */
 export function requestFrom({ spec, argument, options }: ParsedLine): Request {
   const text = (name: string) => (typeof options[name] === "string" ? (options[name] as string) : null);
   const example = options["example"] === true;
   const first = argument?.trim() ?? null;
-  const isFile =
-    first !== null &&
-    (spec.argument === "study" ||
-      spec.argument === "cif" ||
-      /\.(ya?ml|m?cif)$/i.test(first) ||
-      (first === "-" && spec.argument !== "scan"));
+  const isFile = isStudy({ spec, argument });
   const topical = spec.argument === "code" || spec.argument === "topic";
   if (example && isFile)
     fail("conflicting-arguments", "a study and --example are both given", {
       where: { argument: "--example" },
       expected: "one of the two",
-      found: first,
+      found: first ?? "",
       remedy: "leave one of them out",
     });
   const studyOf = () => {
@@ -91,6 +98,7 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
     limit: text("limit"),
     configuration: text("configuration"),
     cif: text("cif"),
+    ...(options["fitted"] === true ? { fitted: true } : {}),
     constants: (options["j"] as readonly string[] | undefined) ?? null,
     vary: (options["vary"] as readonly string[] | undefined) ?? null,
     shells: text("shells"),
@@ -111,7 +119,7 @@ export function requestFrom({ spec, argument, options }: ParsedLine): Request {
   };
 }
 
-export function wishesFrom({ spec, options }: ParsedLine): OutputWishes {
+export function wishesFrom({ spec, argument, options }: ParsedLine): OutputWishes {
   const wishes = {
     json: options["json"] === true,
     csv: options["csv"] === true,
@@ -128,12 +136,18 @@ export function wishesFrom({ spec, options }: ParsedLine): OutputWishes {
       found: forms.length === 2 ? "two" : "three",
       remedy: "leave one of them out",
     });
-  if (wishes.svg && spec.name === "exchange" && options["vary"] === undefined)
-    fail("missing-argument", "there is no phase diagram to draw", {
-      where: { argument: "--vary" },
-      expected: "a constant that runs, or two",
-      found: "none",
-      remedy: 'say which, for example --vary "2 0 1 21", or leave --svg out',
-    });
+  // A study may say which constants run: then that is known only behind the work.
+  const known = isStudy({ spec, argument }) || options["example"] === true;
+  if (wishes.svg && spec.name === "exchange" && options["vary"] === undefined && !known) failUndrawn(false);
   return wishes;
+}
+
+/** @param study whether there is a study, which could have named ranges */
+export function failUndrawn(study: boolean): never {
+  fail("missing-argument", "there is no phase diagram to draw", {
+    where: { argument: "--vary" },
+    expected: "a constant that runs, or two",
+    found: "none",
+    remedy: `say which, for example --vary "2 0 1 21"${study ? ", or in the study exchange: [{shell: 2, vary: [0, 1, 21]}]" : ""}, or leave --svg out`,
+  });
 }

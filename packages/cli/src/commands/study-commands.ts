@@ -77,6 +77,7 @@ export const studyCommands: readonly CommandSpec[] = [
     argument: "cif",
     options: ["block", "example", ...outputOptions],
     examples: ["kvane study --example"],
+    topics: ["study-file", "cif"],
   },
   {
     name: "check",

@@ -91,6 +91,7 @@ export const symmetryCommands: readonly CommandSpec[] = [
     options: [
       "configuration",
       "cif",
+      "fitted",
       "structure",
       "block",
       "k",

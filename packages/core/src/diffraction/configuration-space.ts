@@ -239,6 +239,7 @@ function spaceOf(
       const largest = Math.max(...sizes) || 1;
       return {
         label: letterOf(index),
+        unit: 1 / largest,
         components: scaled.map((wave) =>
           atoms.map((_, atom): FourierComponent => {
             const at = (part: number): number => (wave[6 * atom + part] as number) / largest + 0;

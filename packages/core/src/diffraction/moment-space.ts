@@ -44,6 +44,8 @@ export interface MomentBasisVector {
   readonly label: string;
   /** By wave, then by atom. */
   readonly components: readonly (readonly FourierComponent[])[];
+  /** Of a configuration: what its own amplitude (docs/conventions.md) is when this one is 1. */
+  readonly unit?: number;
 }
 
 /** The arrangements that an irrep or a configuration allows: a real linear space. Amplitudes are in μB. */

@@ -55,6 +55,7 @@ export const problemCodes = {
   "repeated-peaks": "Peaks stand where other peaks of the list stand; each position counts once.",
   "no-intensities": "Intensities were to be used, and the list has none.",
   "shared-line": "Two peaks have only one and the same line of the wave vector within their tolerance.",
+  "intensities-left-out": "Intensities that lie on no line, or on one that has another row already, were left out.",
   "search-stopped": "The search for k ended before every box was settled; what was not looked at is stated.",
   "search-saturated": "So many wave vectors fit the peaks that not all of them were weighed.",
   "half-wavelength":

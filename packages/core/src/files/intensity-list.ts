@@ -40,9 +40,11 @@ export function parseIntensityList(text: string, options: PeakListOptions): Inte
   const { list, polarizations } = readPeakTable(text, options);
   const { peaks, kind, wavelengthAngstrom } = list;
   const problems = problemList(options.file);
-  for (const { intensity, line } of peaks)
+  // A list without any intensity is one mistake, not one in every row.
+  const none = peaks.every(({ intensity }) => intensity === null);
+  for (const { intensity, line } of none ? peaks.slice(0, 1) : peaks)
     if (intensity === null)
-      note(problems, "invalid-peak", "the row has no intensity", {
+      note(problems, "invalid-peak", none ? "the list has no intensities" : "the row has no intensity", {
         where: { line, column: 1 },
         expected: "an intensity behind the position, or in a column that the header names",
         found: "none",

@@ -78,7 +78,7 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
     load: async () => (await import("./commands/decompose.js")).decomposeCommand,
   },
   export: {
-    takes: [...configurationFields, "configuration", "cif"],
+    takes: [...configurationFields, "configuration", "cif", "fitted"],
     load: async () => (await import("./commands/export.js")).exportCommand,
   },
   satellites: {

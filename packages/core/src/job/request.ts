@@ -70,6 +70,8 @@ export interface Request {
   /** `export`: id of a configuration, and the version of the standard. */
   readonly configuration?: string | null;
   readonly cif?: string | null;
+  /** `export`: take the moments from a fit to the intensities of the study. */
+  readonly fitted?: boolean;
   /** `exchange`: constants, each `BOND J` or `BOND LABEL LABEL J`. */
   readonly constants?: readonly string[] | null;
   /** `exchange`: constants that run through a range, each `BOND FROM TO COUNT`. */
@@ -165,6 +167,7 @@ export const argumentNames: { readonly [field in RequestField]: string } = {
   parent: "--parent",
   configuration: "--configuration",
   cif: "--cif",
+  fitted: "--fitted",
   constants: "--j",
   vary: "--vary",
   shells: "--shells",

@@ -37,11 +37,13 @@ export async function weighRecord(input: WeighedInput, found: Weighing): Promise
   return (await import("./building/weigh.js")).weighRecord(input, found);
 }
 
-/** One configuration as a magnetic CIF; null without a cell. */
+/** One configuration as a magnetic CIF, with the moments of its fit where `weigh` has one; null without a cell. */
 export async function configurationCif(
   record: ConfigurationsRecord,
   one: AnyConfiguration,
   version: CifVersion,
+  weigh: WeighRecord | null = null,
 ): Promise<string | null> {
-  return (await import("./magnetic-cif-of.js")).configurationCif(record, one, version);
+  const made = await import("./magnetic-cif-of.js");
+  return made.configurationCif(record, one, version, weigh && made.fittedMoments(weigh, one.id));
 }

@@ -1,6 +1,6 @@
 import { cifCode } from "./cif-code.js";
 import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
-import { patternCsv, rankingCsv } from "./csv/weigh-table.js";
+import { fittedMomentsCsv, patternCsv, rankingCsv } from "./csv/weigh-table.js";
 import { type DrawnRun, figureNames } from "./document/figure-names.js";
 import { jsonText } from "./json-text.js";
 import type { Envelope } from "./records/common.js";
@@ -27,6 +27,7 @@ export function resultFileNames(record: DrawnRun): string[] {
       ...cifNames(configurations, index),
       ...(satellites ? [`branch-${index + 1}-satellites.csv`] : []),
       ...(weigh ? [`branch-${index + 1}-weights.csv`] : []),
+      ...(weigh ? [`branch-${index + 1}-fitted-moments.csv`] : []),
       ...(weigh?.pattern ? [`branch-${index + 1}-pattern.csv`] : []),
     ]),
     ...figureNames(record),
@@ -38,27 +39,36 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
   const record = answer.result;
   if (record === null) return [];
   const { documentFiles } = await import("./made-reports.js");
-  const { configurationCif } = await import("./magnetic-cif-of.js");
-  const cifFiles = (configurations: ConfigurationsRecord | null, branch: number): (readonly [string, string])[] =>
+  const { configurationCif, fittedMoments } = await import("./magnetic-cif-of.js");
+  // With the moments of the fit where there is one.
+  const cifFiles = (
+    { configurations, weigh }: RunRecord["branches"][number],
+    branch: number,
+  ): (readonly [string, string])[] =>
     cifNames(configurations, branch).map((name, index): readonly [string, string] => {
       const all = configurations as ConfigurationsRecord;
-      return [name, configurationCif(all, all.configurations[index] as AnyConfiguration, "2.0") ?? ""];
+      const one = all.configurations[index] as AnyConfiguration;
+      return [name, configurationCif(all, one, "2.0", weigh && fittedMoments(weigh, one.id)) ?? ""];
     });
   const texts = new Map([
     ...documentFiles(answer),
     ["report.txt", reportText(answer, { full: true })],
     ["result.json", jsonText(answer)],
     ...(record.search ? [["assignments.csv", searchCsv(record.search)] as const] : []),
-    ...record.branches.flatMap(({ modes, satellites, configurations, weigh }, index) => [
-      [`branch-${index + 1}-modes.csv`, modesCsv(modes)] as const,
-      ...(configurations
-        ? [[`branch-${index + 1}-configurations.csv`, configurationsCsv(configurations)] as const]
-        : []),
-      ...cifFiles(configurations, index),
-      ...(satellites ? [[`branch-${index + 1}-satellites.csv`, satellitesCsv(satellites)] as const] : []),
-      ...(weigh ? [[`branch-${index + 1}-weights.csv`, rankingCsv(weigh)] as const] : []),
-      ...(weigh?.pattern ? [[`branch-${index + 1}-pattern.csv`, patternCsv(weigh.pattern)] as const] : []),
-    ]),
+    ...record.branches.flatMap((branch, index) => {
+      const { modes, satellites, configurations, weigh } = branch;
+      return [
+        [`branch-${index + 1}-modes.csv`, modesCsv(modes)] as const,
+        ...(configurations
+          ? [[`branch-${index + 1}-configurations.csv`, configurationsCsv(configurations)] as const]
+          : []),
+        ...cifFiles(branch, index),
+        ...(satellites ? [[`branch-${index + 1}-satellites.csv`, satellitesCsv(satellites)] as const] : []),
+        ...(weigh ? [[`branch-${index + 1}-weights.csv`, rankingCsv(weigh)] as const] : []),
+        ...(weigh ? [[`branch-${index + 1}-fitted-moments.csv`, fittedMomentsCsv(weigh)] as const] : []),
+        ...(weigh?.pattern ? [[`branch-${index + 1}-pattern.csv`, patternCsv(weigh.pattern)] as const] : []),
+      ];
+    }),
   ]);
   return resultFileNames(record).map((name) => {
     const text = texts.get(name);

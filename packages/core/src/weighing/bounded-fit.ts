@@ -22,7 +22,7 @@ export interface FitPatience {
 
 /** To look where a start leads, and to settle in a minimum. */
 export const quickPatience: FitPatience = { iterations: 60, restShare: 1e-7 };
-export const thoroughPatience: FitPatience = { iterations: 150, restShare: 1e-11 };
+export const thoroughPatience: FitPatience = { iterations: 1000, restShare: 1e-12 };
 
 const largestDamping = 1e12;
 

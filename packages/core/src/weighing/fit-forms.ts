@@ -19,7 +19,7 @@ import {
   type Triple,
 } from "../diffraction/index.js";
 import type { WaveVector } from "../kvectors/index.js";
-import { type SatelliteLine, satelliteLines } from "../reflections/index.js";
+import { type NuclearLine, type SatelliteLine, satelliteLines } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import type { IntensityData, IntensityDatum } from "./types.js";
 
@@ -44,6 +44,8 @@ export interface DataFrame {
   readonly data: IntensityData;
   /** Per datum the satellite lines of a powder that belong to it. */
   readonly lines: readonly (readonly SatelliteLine[])[];
+  /** Per datum of a powder the names of its lines, satellites and nuclear ones. */
+  readonly names: readonly (readonly string[])[];
   readonly constants: Float64Array;
 }
 
@@ -54,7 +56,8 @@ export interface DataFrame {
 export function dataFrame(group: SpaceGroup, cell: Cell, k: WaveVector, data: IntensityData): DataFrame {
   const constants = new Float64Array(data.data.length);
   const lines: SatelliteLine[][] = data.data.map(() => []);
-  const frame = { group, cell, k, data, lines, constants };
+  const names: string[][] = data.data.map(() => []);
+  const frame = { group, cell, k, data, lines, names, constants };
   if (data.sample === "single crystal") {
     addNuclearReflections(frame);
     return frame;
@@ -62,17 +65,36 @@ export function dataFrame(group: SpaceGroup, cell: Cell, k: WaveVector, data: In
   const furthest = data.data.reduce((most, { q }) => Math.max(most, q ?? 0), 0);
   if (furthest === 0) return frame;
   const limits = { qMax: furthest + 2 * data.resolution };
-  const positions = (without: IntensityDatum["holds"]): (number | null)[] =>
-    data.data.map(({ q, holds = "satellites" }) => (holds === without ? null : q));
+  const positions = (...kinds: readonly IntensityDatum["holds"][]): (number | null)[] =>
+    data.data.map(({ q, holds = "satellites" }) => (kinds.includes(holds) ? q : null));
   const satellites = satelliteLines(group, cell, k, limits);
-  assigned(satellites, positions("nuclear"), data.resolution, (line, datum) => lines[datum]?.push(line));
-  const ofNuclei = positions("satellites");
-  if (ofNuclei.every((q) => q === null)) return frame;
-  const nuclear = nuclearSquares(group, cell, data.nuclear, limits).map(({ line, square }) => ({ q: line.q, square }));
-  assigned(nuclear, ofNuclei, data.resolution, ({ q, square }, datum) => {
-    constants[datum] = (constants[datum] as number) + square * instrumentFactor(data, q);
+  assigned(satellites, positions("satellites", "both"), data.resolution, (line, datum) => {
+    lines[datum]?.push(line);
+    names[datum]?.push(satelliteName(line));
   });
+  // Lines measured apart, above the ordering temperature for example, and those below the satellites are two lists.
+  const lists = [positions("nuclear"), positions("both")].filter((list) => list.some((q) => q !== null));
+  if (lists.length === 0) return frame;
+  const nuclear = nuclearSquares(group, cell, data.nuclear, limits).map(({ line, square }) => ({
+    q: line.q,
+    name: nuclearName(line),
+    square,
+  }));
+  for (const list of lists)
+    assigned(nuclear, list, data.resolution, ({ q, name, square }, datum) => {
+      names[datum]?.push(name);
+      constants[datum] = (constants[datum] as number) + square * instrumentFactor(data, q);
+    });
   return frame;
+}
+
+/** `(1 0 0) + k`. */
+export function satelliteName({ h, sign }: SatelliteLine): string {
+  return `(${h.join(" ")}) ${sign === -1 ? "−" : "+"} k`;
+}
+
+export function nuclearName({ h }: NuclearLine): string {
+  return `(${h.join(" ")})`;
 }
 
 /** |N(H)|² of a crystal is the same for all its domains: they differ by operators of the group. */

@@ -14,6 +14,7 @@ export {
   type FittedMoment,
   type IntensityData,
   type IntensityDatum,
+  type LeftOutDatum,
   type StruckCandidate,
   type WeighCandidate,
   type WeighedCandidate,

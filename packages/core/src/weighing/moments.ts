@@ -1,6 +1,7 @@
 import {
   arrangementWith,
   cartesianMoment,
+  type FourierComponent,
   type MomentArrangement,
   type MomentSpace,
   type ScatteringGeometry,
@@ -20,13 +21,18 @@ const cellsAlong = 6;
 const sameSize = 1e-6;
 const limitUncertainties = 3;
 
-/** Moments of every atom of the primitive cell with standard uncertainties, for amplitudes that come first in the fit. */
+/**
+ * Moments of every atom of the primitive cell with standard uncertainties, for amplitudes that come first in the fit.
+ *
+ * @param unseen directions of the amplitudes that the data do not see: sizes that change along one have no uncertainty
+ */
 export function fittedMoments(
   group: SpaceGroup,
   geometry: ScatteringGeometry,
   space: MomentSpace,
   amplitudes: ArrayLike<number>,
   covariance: FitCovariance,
+  unseen: readonly Float64Array[],
   relative: boolean,
 ): FittedMoment[] {
   const phases = phasesOf(group, space);
@@ -39,35 +45,76 @@ export function fittedMoments(
   );
   const scale = Math.max(...own.map(({ largest }) => largest)) || 1;
   return space.atoms.map(({ site, position, formFactor }, atom): FittedMoment => {
-    const { first, largest, constant } = own[atom] as MomentSizes;
+    const { first, largest, halfAxes, components } = own[atom] as MomentSizes;
+    const constant = isConstant(own[atom] as MomentSizes);
     const gradient = new Float64Array(Math.sqrt(covariance.matrix.length));
     moved.forEach(([up, down], index) => {
       gradient[index] = ((up?.[atom]?.largest as number) - (down?.[atom]?.largest as number)) / (2 * step);
     });
-    const uncertainty = propagated(covariance, gradient);
+    const open = unseen.some((direction) => isAlong(gradient, direction));
+    const linear = propagated(covariance, gradient);
+    // One as large as the moment says that the derivatives do not tell it.
+    const uncertainty = open || linear > largest ? null : roundNumber(linear, scale);
     const limit = formFactor.largestMoment;
     return {
       label: site,
       position,
       momentCrystal: first.map((entry) => roundNumber(entry, scale)) as unknown as Triple,
       size: constant ? roundNumber(largest, scale) : null,
-      sizeUncertainty: constant ? roundNumber(uncertainty, scale) : null,
+      sizeUncertainty: constant ? uncertainty : null,
       largest: roundNumber(largest, scale),
+      largestUncertainty: uncertainty,
+      components: components.map(({ real, imaginary }) => ({
+        real: rounded(real, scale),
+        imaginary: rounded(imaginary, scale),
+      })),
+      halfAxes: phases.runs ? [roundNumber(halfAxes[0], scale), roundNumber(halfAxes[1], scale)] : null,
       limit,
-      aboveLimit: !relative && limit !== null && largest > limit + limitUncertainties * uncertainty,
+      aboveLimit: !relative && limit !== null && largest > limit + limitUncertainties * (uncertainty ?? 0),
     };
   });
 }
 
+/** The largest moment of every atom in any cell. */
+export function largestMoments(
+  group: SpaceGroup,
+  geometry: ScatteringGeometry,
+  space: MomentSpace,
+  amplitudes: readonly number[],
+): number[] {
+  return sizesOf(geometry, arrangementWith(space, amplitudes), phasesOf(group, space)).map(({ largest }) => largest);
+}
+
+function rounded(vector: Triple, scale: number): Triple {
+  return vector.map((entry) => roundNumber(entry, scale)) as unknown as Triple;
+}
+
+/** Share of a gradient along an unseen direction that counts: below it is rounding. */
+const gradientShare = 1e-3;
+
+function isAlong(gradient: Float64Array, direction: Float64Array): boolean {
+  const along = gradient.reduce((sum, entry, index) => sum + entry * (direction[index] as number), 0);
+  return Math.abs(along) > gradientShare * Math.hypot(...gradient) * Math.hypot(...direction);
+}
+
+function isConstant({ largest, smallest }: MomentSizes): boolean {
+  return largest - smallest <= sameSize * largest;
+}
+
 /** The phases k·T of every wave in turns, cell by cell; null for one wave that takes every phase. */
-type Phases = readonly (readonly number[])[] | null;
+interface Phases {
+  readonly cells: readonly (readonly number[])[] | null;
+  /** Whether there is one wave with 2k ∉ L*, along which the moment runs through an ellipse. */
+  readonly runs: boolean;
+}
 
 function phasesOf(group: SpaceGroup, { waves }: MomentSpace): Phases {
   const [first] = waves;
-  if (!first) return [[]];
+  if (!first) return { cells: [[]], runs: false };
   if (waves.length === 1) {
     const period = periodOf(group, first.k);
-    return period === null ? null : Array.from({ length: period }, (_, step) => [step / period]);
+    const cells = period === null ? null : Array.from({ length: period }, (_, step) => [step / period]);
+    return { cells, runs: !first.halfLattice };
   }
   const steps = waves.map(({ k }) => primitiveNumbers(group, k));
   const cells: number[][] = [];
@@ -75,7 +122,7 @@ function phasesOf(group: SpaceGroup, { waves }: MomentSpace): Phases {
     for (let b = 0; b < cellsAlong; b++)
       for (let c = 0; c < cellsAlong; c++)
         cells.push(steps.map((step) => a * (step[0] as number) + b * (step[1] as number) + c * (step[2] as number)));
-  return cells;
+  return { cells, runs: false };
 }
 
 /** Cells after which k·T is whole for all T, when they are few. */
@@ -112,8 +159,11 @@ function lettersOf(k: WaveVector): number[] {
 
 interface MomentSizes {
   readonly first: Triple;
+  readonly components: readonly FourierComponent[];
   readonly largest: number;
-  readonly constant: boolean;
+  readonly smallest: number;
+  /** Of the ellipse of the first wave. */
+  readonly halfAxes: readonly [number, number];
 }
 
 function sizesOf(geometry: ScatteringGeometry, { atoms, waves }: MomentArrangement, phases: Phases): MomentSizes[] {
@@ -129,8 +179,11 @@ function sizesOf(geometry: ScatteringGeometry, { atoms, waves }: MomentArrangeme
       re: cartesianMoment(geometry, re),
       im: cartesianMoment(geometry, im),
     }));
-    const { largest, smallest } = phases === null ? ellipse(cartesian[0]) : overCells(cartesian, phases);
-    return { first, largest, constant: largest - smallest <= sameSize * largest };
+    const whole = ellipse(cartesian[0]);
+    const { largest, smallest } = phases.cells === null ? whole : overCells(cartesian, phases.cells);
+    const components = waves.map((wave) => wave.components[atom] ?? { real: [0, 0, 0], imaginary: [0, 0, 0] });
+    const halfAxes = [whole.largest, whole.smallest] as const;
+    return { first, components: components as readonly FourierComponent[], largest, smallest, halfAxes };
   });
 }
 

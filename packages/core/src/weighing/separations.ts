@@ -37,8 +37,13 @@ interface Pattern {
   readonly at: (q: Triple) => { readonly square: number; readonly chirality: number };
 }
 
-/** Finds what would tell two arrangements apart; what is worked out for one serves for all its comparisons. */
-export type Separator = (one: FittedArrangement, other: FittedArrangement) => WeighSeparation;
+/** Compares arrangements; what is worked out for one serves for all its comparisons. */
+export interface Separator {
+  /** What would tell two apart. */
+  readonly separate: (one: FittedArrangement, other: FittedArrangement) => WeighSeparation;
+  /** Whether no powder line tells them apart; true for a crystal, of which all that can be compared was measured. */
+  readonly samePowder: (one: FittedArrangement, other: FittedArrangement) => boolean;
+}
 
 /**
  * The measurement that would tell two arrangements apart whose fits are equally good: a powder line that was not measured,
@@ -55,34 +60,33 @@ export function separator(frame: DataFrame, qMax: number): Separator {
     patterns.set(arrangement.id, known);
     return known;
   };
-  return (one, other) => {
+  const powderDifference = (one: FittedArrangement, other: FittedArrangement) => {
+    const [a, b] = [patternFor(one).powder, patternFor(other).powder];
+    return frame.data.sample === "powder" ? largestDifference(a, b, strongestOf(a, b)) : null;
+  };
+  const separate = (one: FittedArrangement, other: FittedArrangement): WeighSeparation => {
     const [a, b] = [patternFor(one), patternFor(other)];
-    if (frame.data.sample === "powder") {
-      const found = largestDifference(a.powder, b.powder);
-      const line = found && lines[found.index];
-      if (found && line)
-        return told(
-          other.id,
-          "powder line",
-          vectorOf(line, members.of(line.h, line.sign)),
-          line.q,
-          found.values,
-          frame,
-        );
+    const names = [one.id, other.id] as const;
+    const found = powderDifference(one, other);
+    const line = found && lines[found.index];
+    if (found && line) {
+      const q = vectorOf(line, members.of(line.h, line.sign));
+      return told(names, "powder line", q, line.q, found.values, frame);
     }
     const crystal = bestOverDomains(frame, a, b, vectors, "square");
-    if (crystal) return told(other.id, "single crystal", crystal.q, null, crystal.values, frame);
+    if (crystal) return told(names, "single crystal", crystal.q, null, crystal.values, frame);
     const chiral = bestOverDomains(frame, a, b, vectors, "chirality");
-    if (chiral) return told(other.id, "polarised neutrons", chiral.q, null, chiral.values, frame);
+    if (chiral) return told(names, "polarised neutrons", chiral.q, null, chiral.values, frame);
     return {
       from: other.id,
       by: "not by diffraction",
       hkl: null,
       q: null,
       values: null,
-      text: `${other.id} gives the same intensities up to domains and handedness; a field, stress or another probe is needed`,
+      text: `${one.id} and ${other.id} give the same intensities up to domains and handedness: a field, stress or another probe is needed`,
     };
   };
+  return { separate, samePowder: (one, other) => powderDifference(one, other) === null };
 }
 
 /** The vectors of the first lines on every arm, a set that the group maps onto itself. */
@@ -109,7 +113,7 @@ function vectorOf(line: SatelliteLine, members: readonly Triple[]): Triple {
 }
 
 function told(
-  from: string,
+  names: readonly [string, string],
   by: WeighSeparation["by"],
   q: Triple,
   length: number | null,
@@ -121,17 +125,18 @@ function told(
   const numbers = values.map((value) => roundNumber(value, 1, 3)) as [number, number];
   const what = {
     "powder line": "the powder line",
-    "single crystal": "a crystal of one domain at",
-    "polarised neutrons": "the polarisation-dependent part at",
+    "single crystal": "in a crystal of one domain the reflection",
+    "polarised neutrons": "in a crystal of one domain the part that depends on the polarization of the beam at",
     "not by diffraction": "",
   }[by];
+  const [own, from] = names;
   return {
     from,
     by,
     hkl,
     q: roundNumber(size),
     values: numbers,
-    text: `${what} (${hkl.join(" ")}), Q = ${size.toFixed(3)} Å⁻¹, tells it from ${from}: ${numbers[0]} against ${numbers[1]} of the strongest`,
+    text: `${what} (${hkl.join(" ")}), Q = ${size.toFixed(3)} Å⁻¹, tells them apart: ${numbers[0]} (${own}) against ${numbers[1]} (${from}) of the strongest |F⊥|²`,
   };
 }
 
@@ -184,12 +189,16 @@ function squareAndChirality(
   };
 }
 
-/** Where two lists differ most, if by a clear share of the largest. */
+function strongestOf(a: readonly number[], b: readonly number[]): number {
+  return Math.max(...a.map(Math.abs), ...b.map(Math.abs));
+}
+
+/** Where two lists differ most, if by a clear share of the strongest intensity. */
 function largestDifference(
   a: readonly number[],
   b: readonly number[],
+  scale: number,
 ): { readonly index: number; readonly values: readonly [number, number] } | null {
-  const scale = Math.max(...a.map(Math.abs), ...b.map(Math.abs));
   if (!(scale > 0)) return null;
   let best = -1;
   let most = clearDifferenceShare;
@@ -208,6 +217,11 @@ function bestOverDomains(
   part: "square" | "chirality",
 ): { readonly q: Triple; readonly values: readonly [number, number] } | null {
   const own = vectors.map((q) => a.at(q)[part]);
+  // Of the intensities, for the chiral part too: rounding errors of one that is zero are no difference.
+  const scale = strongestOf(
+    vectors.map((q) => a.at(q).square),
+    vectors.map((q) => b.at(q).square),
+  );
   let result: { readonly q: Triple; readonly values: readonly [number, number] } | null = null;
   let least = Number.POSITIVE_INFINITY;
   for (const [index, operator] of group.operators.entries()) {
@@ -217,6 +231,7 @@ function bestOverDomains(
     const found = largestDifference(
       own,
       vectors.map((q) => hand * b.at(rowTimesNumbers(q, rotation))[part]),
+      scale,
     );
     if (!found) return null;
     const share = Math.abs(found.values[0] - found.values[1]);

@@ -1,4 +1,4 @@
-import type { DiffractionGeometry, MomentSpace, NuclearAtom, Triple } from "../diffraction/index.js";
+import type { DiffractionGeometry, FourierComponent, MomentSpace, NuclearAtom, Triple } from "../diffraction/index.js";
 
 /** One measured intensity. */
 export interface IntensityDatum {
@@ -58,8 +58,9 @@ export interface FittedAmplitude {
   readonly label: string;
   /** μB, or relative where no scale is known. */
   readonly value: number;
-  /** Null where the data do not determine it. */
+  /** Null where the data do not determine it, and for candidates far from the best where it would take many more fits. */
   readonly uncertainty: number | null;
+  /** Whether the data see it at all. */
   readonly determined: boolean;
 }
 
@@ -67,6 +68,10 @@ export interface FittedAmplitude {
 export interface FittedMinimum {
   readonly chiSquared: number;
   readonly amplitudes: readonly number[];
+  /** The largest moment of each atom in any cell. */
+  readonly largest: readonly number[];
+  /** Whether one of them is above what its ion can have. */
+  readonly aboveLimit: boolean;
   /** Standard uncertainties from the derivatives there. */
   readonly uncertainties: readonly number[];
 }
@@ -79,9 +84,16 @@ export interface FittedMoment {
   readonly momentCrystal: Triple;
   /** Where it is the same in all cells, else null. */
   readonly size: number | null;
+  /** Null where the size is, and where it depends on what the data leave open. */
   readonly sizeUncertainty: number | null;
   /** The largest in any cell. */
   readonly largest: number;
+  /** Null where it depends on what the data leave open. */
+  readonly largestUncertainty: number | null;
+  /** Its Fourier components, one for each wave of the arrangement. */
+  readonly components: readonly FourierComponent[];
+  /** Half axes of the ellipse that the moment runs through from cell to cell, for one wave with 2k ∉ L*. */
+  readonly halfAxes: readonly [number, number] | null;
   /** gS or g_J J; null where the ion does not say. */
   readonly limit: number | null;
   /** `largest` above the limit by more than 3 s.u. */
@@ -114,6 +126,8 @@ export interface WeighSeparation {
 /** One candidate after its fit. */
 export interface WeighedCandidate {
   readonly id: string;
+  /** From 1; candidates whose criterions lie less than 6 above that of the first of them share its rank. */
+  readonly rank: number;
   readonly chiSquared: number;
   /** χ² / (data − parameters); null without degrees of freedom. */
   readonly reducedChiSquared: number | null;
@@ -134,12 +148,14 @@ export interface WeighedCandidate {
   readonly factorToLimit: number | null;
   /** Fitted scale, or the given one; null where sizes are relative. */
   readonly scale: number | null;
+  /** Of a fitted scale. */
+  readonly scaleUncertainty: number | null;
   readonly domains: readonly DomainFraction[];
   /** Observed and calculated, one per datum. */
   readonly calculated: readonly number[];
   /** Others that the data cannot tell from this one: criterions less than 6 apart (`tiedCriterion`). */
   readonly sameAs: readonly string[];
-  /** Others whose best fits give the very same intensities. */
+  /** Others whose best fits give the very same intensities, for a powder on every line as far as looked for. */
   readonly identicalTo: readonly string[];
   readonly separations: readonly WeighSeparation[];
   /** Covariance of the amplitudes, row by row; along directions that the data do not see it is 0. */
@@ -164,11 +180,24 @@ export interface StruckCandidate {
   readonly satellites: readonly string[];
 }
 
+/** A datum that no line belongs to. */
+export interface LeftOutDatum {
+  readonly label: string;
+  /** `no line near`, or `another datum is nearer` to the line that it lies on. */
+  readonly reason: "no line near" | "another datum is nearer";
+  /** The nearest line of its kind with Q in Å⁻¹; null for a crystal. */
+  readonly nearest: { readonly line: string; readonly q: number } | null;
+}
+
 export interface Weighing {
   readonly ranking: readonly WeighedCandidate[];
   readonly struckOut: readonly StruckCandidate[];
-  /** Labels of data that no candidate has a line near, and that were left out. */
-  readonly unassigned: readonly string[];
+  /** For each datum that was used the lines of a powder that belong to it: `(1 0 0) + k`, nuclear ones `(1 1 0)`. */
+  readonly lines: readonly (readonly string[])[];
+  /** Data that were left out. */
+  readonly leftOut: readonly LeftOutDatum[];
+  /** Their share of all observed intensity (absolute values). */
+  readonly leftOutShare: number;
   /** Whether sizes are relative. */
   readonly relative: boolean;
   readonly criterion: string;

@@ -6,7 +6,7 @@ import { commonPhaseDirection, withChosenPhase } from "./common-phase.js";
 import { type FitCovariance, fitCovariance, propagated } from "./fit-covariance.js";
 import type { DataFrame, FitForms } from "./fit-forms.js";
 import { calculated, type FitLayout, fitLayout, readParameters, residualModel } from "./fit-model.js";
-import { fittedMoments } from "./moments.js";
+import { fittedMoments, largestMoments } from "./moments.js";
 import { boundsOf, type Minima, multiStart } from "./multi-start.js";
 import { profileUncertainty } from "./profile-uncertainty.js";
 import { normalNumbers, seededNumbers } from "./random.js";
@@ -25,7 +25,7 @@ export interface OneFit {
   readonly forms: FitForms;
   readonly layout: FitLayout;
   readonly minima: Minima;
-  readonly result: Omit<WeighedCandidate, "amplitudes" | "sameAs" | "identicalTo" | "separations">;
+  readonly result: Omit<WeighedCandidate, "rank" | "amplitudes" | "sameAs" | "identicalTo" | "separations">;
   /**
    * The amplitudes with their uncertainties. With `follow` those that derivatives say nothing of are followed one by one,
    * which takes many fits and is for the candidates that matter.
@@ -58,7 +58,7 @@ export async function weighOne(
   const count = data.data.length;
   const relative = isRelative(layout, data);
   const geometry: ScatteringGeometry = scatteringGeometry(frame.group, frame.cell);
-  const moments = fittedMoments(frame.group, geometry, space, amplitudes, covariance, relative);
+  const moments = fittedMoments(frame.group, geometry, space, amplitudes, covariance, here.unseen, relative);
   const rFactor = rFactorOf(data, values);
   const chiSquared = minima.best.chiSquared;
   const largestIntensity = Math.max(...values, 0);
@@ -78,14 +78,19 @@ export async function weighOne(
       moments,
       factorToLimit: relative ? factorToLimit(moments) : null,
       scale: relative ? null : roundNumber(scale),
-      domains: domainFractions(forms, layout, fractions, parameters, covariance),
+      scaleUncertainty: layout.fitsScale
+        ? roundNumber(propagated(covariance, unitVector(layout.size, layout.size - 1)))
+        : null,
+      domains: domainFractions(forms, layout, fractions, parameters, covariance, steps),
       calculated: Array.from(values, (value) => roundNumber(value, largestIntensity)),
       covariance: Array.from({ length: layout.amplitudes }, (_, row) =>
         Array.from({ length: layout.amplitudes }, (__, column) =>
           roundNumber(covariance.matrix[row * layout.size + column] as number),
         ),
       ),
-      minima: differentMinima(space, seen.every(Boolean) ? minima.equals : [minima.best], layout, model),
+      minima: differentMinima(space, seen.every(Boolean) ? minima.equals : [minima.best], layout, model, (values) =>
+        sizesOfMinimum(frame, geometry, space, values, relative),
+      ),
       hits: minima.hits,
       starts: minima.starts,
     },
@@ -114,6 +119,7 @@ function differentMinima(
   fits: readonly BoundedFit[],
   layout: FitLayout,
   model: ReturnType<typeof residualModel>,
+  sizes: (amplitudes: readonly number[]) => Pick<FittedMinimum, "largest" | "aboveLimit">,
 ): FittedMinimum[] {
   const kept: FittedMinimum[] = [];
   for (const { parameters, chiSquared } of fits) {
@@ -132,12 +138,29 @@ function differentMinima(
     kept.push({
       chiSquared: roundNumber(chiSquared, layout.size),
       amplitudes: amplitudes.map((value) => roundNumber(value, scale)),
+      ...sizes(amplitudes),
       uncertainties: amplitudes.map((_, index) =>
         roundNumber(propagated(covariance, unitVector(layout.size, index)), scale),
       ),
     });
   }
   return kept;
+}
+
+function sizesOfMinimum(
+  { group }: DataFrame,
+  geometry: ScatteringGeometry,
+  space: MomentSpace,
+  amplitudes: readonly number[],
+  relative: boolean,
+): Pick<FittedMinimum, "largest" | "aboveLimit"> {
+  const sizes = largestMoments(group, geometry, space, amplitudes);
+  const scale = Math.max(...sizes, 0);
+  const limits = space.atoms.map(({ formFactor }) => formFactor.largestMoment);
+  return {
+    largest: sizes.map((size) => roundNumber(size, scale)),
+    aboveLimit: !relative && sizes.some((size, atom) => size > (limits[atom] ?? Number.POSITIVE_INFINITY)),
+  };
 }
 
 function unitVector(size: number, index: number): Float64Array {
@@ -227,11 +250,12 @@ function fittedAmplitudes(
       : linear <= scale && isSeen(sights.here, index)
         ? linear
         : null;
-    const determined = seen && uncertainty !== null;
+    // What was followed and has no end is not determined; what was not followed is only not known.
+    const determined = seen && !(followed && uncertainty === null);
     return {
       label,
       value: roundNumber(value, scale),
-      uncertainty: determined ? roundNumber(uncertainty, scale) : null,
+      uncertainty: determined && uncertainty !== null ? roundNumber(uncertainty, scale) : null,
       determined,
     };
   });
@@ -249,6 +273,7 @@ function domainFractions(
   fractions: Float64Array,
   parameters: Float64Array,
   covariance: FitCovariance,
+  steps: Float64Array,
 ): DomainFraction[] {
   if (forms.domains.length < 2) return [];
   const total = parameters
@@ -262,8 +287,24 @@ function domainFractions(
       operator: alike[0] as number,
       alike,
       fraction: roundNumber(fractions[domain] as number, 1),
-      uncertainty: layout.fractions === 0 ? null : roundNumber(propagated(covariance, gradient), 1),
+      uncertainty:
+        layout.fractions === 0 || isOpen(gradient, covariance, steps)
+          ? null
+          : roundNumber(propagated(covariance, gradient), 1),
     };
+  });
+}
+
+/** Share of a gradient along a direction that the data do not see, above which the quantity is not determined. */
+const openShare = 1e-3;
+
+/** Whether a quantity changes along what the data do not see. */
+function isOpen(gradient: Float64Array, { unseen }: FitCovariance, steps: Float64Array): boolean {
+  const scaled = gradient.map((entry, index) => entry * (steps[index] as number));
+  const size = Math.hypot(...scaled);
+  return unseen.some((direction) => {
+    const along = direction.reduce((sum, entry, index) => sum + entry * (scaled[index] as number), 0);
+    return Math.abs(along) > openShare * size;
   });
 }
 

@@ -1,10 +1,10 @@
 import { breathe, type WorkHost } from "../algorithms/index.js";
 import { fail } from "../errors/index.js";
 import type { WaveVector } from "../kvectors/index.js";
-import { clearlySeenUncertainties, tiedCriterion } from "../numbers/index.js";
-import { type SatelliteLine, satelliteLines } from "../reflections/index.js";
+import { clearlySeenUncertainties, roundNumber, tiedCriterion } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { type DataFrame, dataFrame, type FitForms, fitForms } from "./fit-forms.js";
+import { leftOutOf } from "./left-out.js";
 import { type Separator, separator } from "./separations.js";
 import {
   defaultWeighOptions,
@@ -63,29 +63,55 @@ export async function weigh(
       struckOut.push({
         id: candidate.id,
         peaks: peaks.map((datum) => (frame.data.data[datum] as IntensityDatum).label),
-        satellites: peaks.map((datum) => satelliteName(frame, datum)),
+        satellites: peaks.map((datum) => frame.names[datum]?.[0] ?? (frame.data.data[datum] as IntensityDatum).label),
       });
     else fits.push(await weighOne(frame, candidate, own, chosen, host));
   }
   // Fits that are equal but for rounding stay in the order of the candidates.
   const rank = (fit: OneFit): number => Math.round(1e6 * fit.result.criterion);
   fits.sort((a, b) => rank(a) - rank(b) || a.result.parameters - b.result.parameters);
+  const ranks = ranksOf(fits);
   const ranking: WeighedCandidate[] = [];
-  const separate = fits.length > 1 ? separator(frame, chosen.qMax) : null;
-  for (const fit of fits) {
+  const compare = fits.length > 1 ? separator(frame, chosen.qMax) : null;
+  for (const [index, fit] of fits.entries()) {
     await breathe(host);
-    ranking.push(compared(frame, fit, fits, separate));
+    ranking.push({ ...compared(frame, fit, fits, compare), rank: ranks[index] as number });
   }
   const relative = fits.some(({ layout }) => isRelative(layout, data));
-  const unassigned = data.data.filter((_, index) => !usable[index]).map(({ label }) => label);
+  const leftOut = leftOutOf(whole, usable);
+  const leftOutShare = roundNumber(
+    shareOf(data, (index) => !usable[index]),
+    1,
+  );
   return {
     ranking,
     struckOut,
-    unassigned,
+    lines: frame.names,
+    leftOut,
+    leftOutShare,
     relative,
     criterion: "Bayesian information criterion: chi-squared + parameters ln(data)",
-    remarks: remarksOn(frame, fits, relative, unassigned),
+    remarks: remarksOn(frame, fits, struckOut.length > 0, relative),
   };
+}
+
+/** Places shared by those whose criterions are not clearly above that of the first of them. */
+function ranksOf(fits: readonly OneFit[]): number[] {
+  let leader = 0;
+  return fits.map(({ result }, index) => {
+    if (result.criterion - (fits[leader] as OneFit).result.criterion >= tiedCriterion) leader = index;
+    return leader + 1;
+  });
+}
+
+/** Share of the data, by absolute intensity, that are chosen. */
+function shareOf({ data }: IntensityData, isChosen: (index: number) => boolean): number {
+  let [part, total] = [0, 0];
+  data.forEach(({ observed }, index) => {
+    total += Math.abs(observed);
+    if (isChosen(index)) part += Math.abs(observed);
+  });
+  return total > 0 ? part / total : 0;
 }
 
 function checkData({ data }: IntensityData): void {
@@ -109,34 +135,21 @@ const mostNamed = 4;
 
 function refuseData(frame: DataFrame): never {
   const { data, resolution, sample } = frame.data;
+  const named = leftOutOf(
+    frame,
+    data.map(() => false),
+  ).slice(0, mostNamed);
   fail("invalid-argument", "no peak of the list lies on a satellite of this k", {
     expected: sample === "powder" ? `peaks within ${resolution} Å⁻¹ of satellites` : "h k l of vectors H ± k",
-    found: data.slice(0, mostNamed).map(nearestText(frame)).join("; "),
+    found: named
+      .map(({ label, nearest }, index) => {
+        const q = data[index]?.q ?? null;
+        const at = q === null ? "" : ` at ${q.toFixed(4)} Å⁻¹`;
+        return `${label}${at}${nearest === null ? "" : ` (nearest ${nearest.line} at ${nearest.q.toFixed(4)})`}`;
+      })
+      .join("; "),
     remedy: "check k, the cell and the positions of the peaks; `kvane satellites` lists where they should be",
   });
-}
-
-/** Writes a peak with the satellite that comes nearest to it. */
-function nearestText({ group, cell, k, data }: DataFrame): (datum: IntensityDatum) => string {
-  const furthest = data.data.reduce((most, { q }) => Math.max(most, q ?? 0), 0);
-  const lines = furthest > 0 ? satelliteLines(group, cell, k, { qMax: 1.2 * furthest }) : [];
-  return ({ label, q }) => {
-    if (q === null) return label;
-    const [first, ...others] = lines;
-    if (!first) return `${label} at ${q.toFixed(4)} Å⁻¹`;
-    const nearest = others.reduce((best, one) => (Math.abs(one.q - q) < Math.abs(best.q - q) ? one : best), first);
-    return `${label} at ${q.toFixed(4)} Å⁻¹ (nearest ${lineName(nearest)} at ${nearest.q.toFixed(4)})`;
-  };
-}
-
-/** The first satellite of a powder peak; of a crystal the label has the indices. */
-function satelliteName({ lines, data }: DataFrame, datum: number): string {
-  const line = lines[datum]?.[0];
-  return line === undefined ? (data.data[datum]?.label ?? "") : lineName(line);
-}
-
-function lineName({ h, sign }: SatelliteLine): string {
-  return `(${h.join(" ")})${sign === -1 ? "-k" : "+k"}`;
 }
 
 function keepData(frame: DataFrame, usable: readonly boolean[]): DataFrame {
@@ -145,6 +158,7 @@ function keepData(frame: DataFrame, usable: readonly boolean[]): DataFrame {
     ...frame,
     data: { ...frame.data, data: kept(frame.data.data) },
     lines: kept(frame.lines),
+    names: kept(frame.names),
     constants: frame.constants.filter((_, index) => usable[index]),
   };
 }
@@ -185,18 +199,19 @@ function compared(
   frame: DataFrame,
   fit: OneFit,
   fits: readonly OneFit[],
-  separate: Separator | null,
-): WeighedCandidate {
+  compare: Separator | null,
+): Omit<WeighedCandidate, "rank"> {
   const others = fits.filter((other) => other !== fit);
   const tied = others.filter((other) => Math.abs(other.result.criterion - fit.result.criterion) < tiedCriterion);
-  const identical = others.filter((other) =>
+  const arrangement = (one: OneFit) => ({ id: one.space.id, space: one.space, amplitudes: one.minima.best.parameters });
+  const sameData = others.filter((other) =>
     frame.data.data.every(
       ({ uncertainty }, index) =>
         Math.abs((other.result.calculated[index] as number) - (fit.result.calculated[index] as number)) <
         identicalUncertainties * uncertainty,
     ),
   );
-  const arrangement = (one: OneFit) => ({ id: one.space.id, space: one.space, amplitudes: one.minima.best.parameters });
+  const identical = sameData.filter((other) => compare?.samePowder(arrangement(fit), arrangement(other)) ?? true);
   const isFirst = (fits[0]?.result.criterion ?? 0) + tiedCriterion > fit.result.criterion;
   return {
     ...fit.result,
@@ -204,8 +219,8 @@ function compared(
     sameAs: tied.map(({ space }) => space.id),
     identicalTo: identical.map(({ space }) => space.id),
     separations:
-      isFirst && separate
-        ? tied.slice(0, mostSeparations).map((other) => separate(arrangement(fit), arrangement(other)))
+      isFirst && compare
+        ? tied.slice(0, mostSeparations).map((other) => compare.separate(arrangement(fit), arrangement(other)))
         : [],
   };
 }
@@ -224,27 +239,67 @@ function nuclearShare({ data }: DataFrame, { result }: OneFit): number {
   return total > 0 ? nuclear / total : 0;
 }
 
-function remarksOn(
-  frame: DataFrame,
-  fits: readonly OneFit[],
-  relative: boolean,
-  unassigned: readonly string[],
-): string[] {
+function remarksOn(frame: DataFrame, fits: readonly OneFit[], struckOut: boolean, relative: boolean): string[] {
   const remarks = ["A ranking says which arrangements are worth a refinement; it is not a refinement."];
+  const { data } = frame.data;
   const [best] = fits;
-  if (!best) remarks.push("No candidate can give all the peaks that are clearly observed.");
+  if (!best)
+    remarks.push(
+      struckOut
+        ? "No candidate can give all the peaks that are clearly observed: the wavelength, the cell or k is wrong, a peak is not magnetic, or several irreps order together."
+        : "There was nothing to weigh.",
+    );
+  if (
+    !data.some(({ observed, uncertainty, holds }) => holds !== "nuclear" && observed > seenUncertainties * uncertainty)
+  )
+    remarks.push("No satellite is seen: all intensities are within 3 standard uncertainties of zero.");
+  const negative = data.filter(({ observed, uncertainty }) => observed < -clearlySeenUncertainties * uncertainty);
+  if (negative.length > 0)
+    remarks.push(`Far below zero: ${negative.map(({ label }) => label).join(", ")}; the background is wrong.`);
   if (relative)
     remarks.push("No nuclear scale is known: sizes of moments are relative, and scale and size cannot both be told.");
-  if (best && best.result.parameters >= frame.data.data.length)
+  if (best && best.result.parameters >= data.length)
     remarks.push(
-      `There are ${frame.data.data.length} intensities for ${best.result.parameters} parameters: a good fit means nothing.`,
+      `Intensities: ${data.length}, parameters of ${best.result.id}: ${best.result.parameters}. A good fit means nothing.`,
     );
   if (best?.result.reducedChiSquared != null && best.result.reducedChiSquared > poorFit)
     remarks.push(
       nuclearShare(frame, best) > 0.5
-        ? "The nuclear lines fit poorly: look at the structure, its occupancies and displacements, before trusting the scale."
-        : "Even the best fit is poor: uncertainties are understated, or the right arrangement is not in the list.",
+        ? `The nuclear lines fit poorly (R = ${percentOf(nuclearMisfit(frame, best))}): look at the structure, its occupancies and displacements, before trusting the scale.`
+        : "Even the best fit is poor: the Lorentz factor, the form factor or the scale may be wrong, uncertainties understated, or the right arrangement not in the list.",
+      `Largest misfits of ${best.result.id}: ${largestMisfits(frame, best)}.`,
     );
-  if (unassigned.length > 0) remarks.push(`Left out, near no line that they may be: ${unassigned.join(", ")}.`);
   return remarks;
+}
+
+/** S.u. above which an intensity is seen at all. */
+const seenUncertainties = 3;
+const mostMisfits = 3;
+
+/** The data furthest from their calculated values, in s.u. */
+function largestMisfits({ data }: DataFrame, { result }: OneFit): string {
+  const off = data.data.map(({ label, observed, uncertainty }, index) => ({
+    label,
+    off: (observed - (result.calculated[index] as number)) / uncertainty,
+  }));
+  off.sort((a, b) => Math.abs(b.off) - Math.abs(a.off));
+  return off
+    .slice(0, mostMisfits)
+    .map((one) => `${one.label} (${one.off > 0 ? "+" : ""}${one.off.toFixed(1)} s.u.)`)
+    .join(", ");
+}
+
+/** R factor of the nuclear lines alone. */
+function nuclearMisfit({ data }: DataFrame, { result }: OneFit): number {
+  let [observed, residue] = [0, 0];
+  data.data.forEach((one, index) => {
+    if (one.holds !== "nuclear") return;
+    observed += Math.abs(one.observed);
+    residue += Math.abs(one.observed - (result.calculated[index] as number));
+  });
+  return observed > 0 ? residue / observed : 0;
+}
+
+function percentOf(share: number): string {
+  return `${(100 * share).toFixed(1)} %`;
 }

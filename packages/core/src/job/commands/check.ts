@@ -4,11 +4,13 @@ import { waveVectorToJson } from "../../kvectors/index.js";
 import { type CheckRecord, cellRecord, checkedSiteRecord, groupRecord } from "../../reports/index.js";
 import { cellFor, cellIfGiven } from "../inputs/cell-input.js";
 import { groupOf } from "../inputs/group-input.js";
+import { intensitiesIfGiven } from "../inputs/intensities-input.js";
 import { placedK, writtenKs } from "../inputs/k-input.js";
 import { peaksIfGiven } from "../inputs/peaks-input.js";
 import { checkSearchFits, searchOptionsOf } from "../inputs/search-input.js";
-import { orbitsOf, sitesIfGiven } from "../inputs/site-input.js";
+import { type GivenSite, orbitsOf, sitesIfGiven } from "../inputs/site-input.js";
 import { needStudy } from "../inputs/study-input.js";
+import { onsetIfGiven } from "../study/model-and-scan.js";
 import { remember, together, type Work } from "../work.js";
 import { checkCif } from "./check-cif.js";
 
@@ -17,13 +19,15 @@ export async function checkCommand(work: Work): Promise<CheckRecord> {
   if (work.structure?.from === "argument") return checkCif(work, work.structure);
   const study = studyOrCif(work);
   remember(work, [], study.warnings);
-  const { group, written, given, peaks, sites, options } = await together({
+  const { group, written, given, peaks, sites, options, intensities } = await together({
     group: () => (study.group === null && work.structure === null ? null : groupOf(work)),
     written: () => writtenKs(work),
     given: () => cellIfGiven(work),
     peaks: () => peaksIfGiven(work),
     sites: () => sitesIfGiven(work),
     options: () => searchOptionsOf(work),
+    intensities: () => intensitiesIfGiven(work),
+    scan: () => onsetIfGiven(work),
   });
   const { cell, ks, orbits } = await together({
     cell: () => (given === null ? null : group === null ? given.cell : cellFor(group, given)),
@@ -41,7 +45,10 @@ export async function checkCommand(work: Work): Promise<CheckRecord> {
     sites: orbits.map((orbit, index) => checkedSiteRecord(orbit, sites[index]?.ion ?? null)),
     k: ks.map(waveVectorToJson),
     peaks: peaks && { file: peaks.file, kind: peaks.list.kind, count: peaks.list.peaks.length },
-    missing: missingParts(study, structure, written.length),
+    missing: [
+      ...missingParts(study, structure, written.length),
+      ...(intensities === null ? [] : missingIons(work, sites)),
+    ],
     cif: null,
   };
 }
@@ -55,6 +62,13 @@ function studyOrCif(work: Work): NonNullable<Work["study"]> {
     found: "--structure alone",
     remedy: "name the CIF without --structure to check it by itself",
   });
+}
+
+/** Form factors of intensities need to know what stands on the magnetic sites. */
+function missingIons({ study }: Work, sites: readonly GivenSite[]): string[] {
+  const own = (label: string) => study?.sites.find((site) => site.label === label)?.formFactor ?? null;
+  const without = sites.filter(({ ion, site: { label } }) => ion === null && own(label) === null);
+  return without.map(({ site: { label } }) => `the ion of ${label}, for its form factor (ion)`);
 }
 
 function missingParts(study: NonNullable<Work["study"]>, cif: CifStructure | null, ks: number): string[] {

@@ -1,17 +1,25 @@
 import { fail } from "../../errors/index.js";
 import type { CifVersion } from "../../files/index.js";
-import { type ConfigurationsRecord, configurationCif, type ExportRecord } from "../../reports/index.js";
+import {
+  type ConfigurationsRecord,
+  configurationCif,
+  type ExportRecord,
+  type WeighRecord,
+} from "../../reports/index.js";
 import { optionOf } from "../inputs/given.js";
 import { argumentNames } from "../request.js";
 import type { Work } from "../work.js";
 import { configurationsCommand } from "./configurations.js";
+import { weighCommand } from "./weigh.js";
 
-/** `kvane export`: the magnetic CIF of one configuration. */
+/** `kvane export`: the magnetic CIF of one configuration, with moments as an example or as fitted to the intensities of the study. */
 export async function exportCommand(work: Work): Promise<ExportRecord> {
   const version = versionOf(work);
   const record = await configurationsCommand(work);
   const one = chosen(work, record);
-  const cif = await configurationCif(record, one, version);
+  const weigh = work.request.fitted === true ? await weighCommand(work) : null;
+  if (weigh !== null && !weigh.ranking.some(({ id }) => id === one.id)) refuseUnfitted(weigh, one.id);
+  const cif = await configurationCif(record, one, version, weigh);
   if (cif === null)
     fail("missing-argument", "a CIF needs the unit cell", {
       where: { argument: argumentNames.cell },
@@ -20,6 +28,16 @@ export async function exportCommand(work: Work): Promise<ExportRecord> {
       remedy: "give --cell, or the cell in the study",
     });
   return { configuration: one.id, cifVersion: version, cif };
+}
+
+function refuseUnfitted({ struckOut, ranking }: WeighRecord, id: string): never {
+  const peaks = struckOut.find((struck) => struck.id === id)?.peaks ?? [];
+  fail("invalid-argument", `the intensities give no moments for ${id}`, {
+    where: { argument: argumentNames.fitted },
+    expected: ranking.map((other) => other.id).join(", ") || "a configuration that can give the intensities",
+    found: peaks.length > 0 ? `${id}, which makes ${peaks.slice(0, 4).join(", ")} zero` : id,
+    remedy: "take one of those, or leave --fitted out for an example of its moments",
+  });
 }
 
 function versionOf({ request }: Work): CifVersion {

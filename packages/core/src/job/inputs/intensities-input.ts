@@ -47,7 +47,8 @@ export async function intensitiesIfGiven(work: Work): Promise<GivenIntensities |
   // With detectors at one angle the wavelength of the peaks is that of another measurement.
   const usual = angle === null ? (work.study?.peaks?.wavelengthAngstrom ?? null) : null;
   const known = wavelength ?? fromStudy?.wavelengthAngstrom ?? usual;
-  const asked = kind ?? fromStudy?.kind ?? null;
+  // The header of a list that was named beside the study says more of it than the study does.
+  const asked = kind ?? (named.option ? null : (fromStudy?.kind ?? null));
   const list = parsed(work, text, named.path, asked, known);
   rememberUncertainties(work, list);
   const settings = settledSettings(work, written, list, named.where);
@@ -83,15 +84,18 @@ interface NamedList {
   readonly path: string;
   readonly where: Partial<Place>;
   readonly fromStudy: StudyIntensities | null;
+  /** Whether an option names it. */
+  readonly option: boolean;
 }
 
 function namedList({ request, study }: Work): NamedList | null {
   const option = request.command === "weigh" ? optionOf(request, "intensities") : null;
-  if (option !== null) return { path: option.text, where: option.where, fromStudy: null };
   const fromStudy = study?.intensities ?? null;
+  // Another list, measured in the same way: what else the study says of intensities stays.
+  if (option !== null) return { path: option.text, where: option.where, fromStudy, option: true };
   if (study === null || fromStudy === null) return null;
   const { where } = studyText(study, "intensities.file", fromStudy.file);
-  return { path: besideStudy(study.file, fromStudy.file), where, fromStudy };
+  return { path: besideStudy(study.file, fromStudy.file), where, fromStudy, option: false };
 }
 
 /** Where neither the list nor the study says what the positions are, they are what those of the peaks are. */
@@ -111,7 +115,7 @@ function parsed(
   try {
     return withKind(kind);
   } catch (error) {
-    const usual = study?.peaks?.kind ?? null;
+    const usual = study?.intensities?.kind ?? study?.peaks?.kind ?? null;
     const unknown = error instanceof KvaneError && error.problems.some(({ code }) => code === "peak-kind-unknown");
     if (!unknown || kind !== null || usual === null) throw error;
     return withKind(usual);

@@ -111,7 +111,8 @@ function checkTimeOfFlight(
 function lorentzOption({ request }: Pick<Work, "request">): boolean | null {
   const given = optionOf(request, "lorentz");
   if (given === null) return null;
-  if (given.text === "yes" || given.text === "no") return given.text === "yes";
+  if (["yes", "true"].includes(given.text)) return true;
+  if (["no", "false"].includes(given.text)) return false;
   return fail("invalid-argument", `\`${given.text}\` does not say whether the Lorentz factor is in the intensities`, {
     where: given.where,
     expected: "yes or no",

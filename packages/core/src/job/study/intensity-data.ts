@@ -22,6 +22,7 @@ export function intensityData(
   const satellites = list.intensities.map((one) => datumOf(one, one.label, holds));
   const lines = nuclear?.list.intensities.map((one) => datumOf(one, `nuclear ${one.label}`, "nuclear")) ?? [];
   if (!includesNuclear && isZero(group, k)) rememberSubtracted(work);
+  if (scale !== null && nuclear !== null) rememberGivenScale(work, scale);
   const atoms = includesNuclear || nuclear !== null ? nucleiOf(work, given, parent) : [];
   return {
     sample,
@@ -54,6 +55,12 @@ function geometryOf(
 function isZero(group: SpaceGroup, k: WaveVector): boolean {
   const exact = exactComponents(k);
   return exact !== null && toPrimitiveRow(group.lattice, exact).every(([, bottom]) => bottom === 1);
+}
+
+function rememberGivenScale(work: Work, scale: number): void {
+  const because =
+    "both a scale and nuclear lines are given: the lines are compared with it; without it they fix the scale";
+  remember(work, [{ what: "scale", value: String(scale), because }], []);
 }
 
 function rememberSubtracted(work: Work): void {

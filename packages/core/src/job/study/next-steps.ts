@@ -4,15 +4,17 @@ import { fixedNumber } from "../../numbers/index.js";
 import { qToTwoThetaDeg } from "../../reflections/index.js";
 import { type BranchRecord, physicalSets, type RunRecord } from "../../reports/index.js";
 import type { FoundKs } from "./find-k.js";
+import { physicsSteps } from "./physics-steps.js";
 import type { StudyInputs } from "./read-study.js";
 import { separatingLine } from "./separating-line.js";
+import { weightStep } from "./weight-steps.js";
 
 /** What to measure or to look at next, most useful first; drawn from the results alone. */
 export function nextSteps(
   inputs: StudyInputs,
   found: FoundKs,
   branches: readonly BranchRecord[],
-  coincidences: RunRecord["coincidences"],
+  { coincidences, exchange, onset }: Pick<RunRecord, "coincidences" | "exchange" | "onset">,
   warned: readonly ProblemCode[],
 ): string[] {
   return [
@@ -23,6 +25,7 @@ export function nextSteps(
     ...onNuclearSteps(found),
     ...coincidenceSteps(inputs, found, branches, coincidences, warned),
     ...roughStep(found),
+    ...physicsSteps(exchange, onset),
     ...weightStep(branches),
     ...irrepStep(branches),
   ];
@@ -136,20 +139,6 @@ function roughStep({ candidates }: FoundKs): string[] {
   ];
 }
 
-/** Where a refinement starts. */
-function weightStep(branches: readonly BranchRecord[]): string[] {
-  return branches.flatMap(({ weigh }, index) => {
-    const [best] = weigh?.ranking ?? [];
-    if (best === undefined) return [];
-    const whose = branches.length > 1 ? ` of branch ${index + 1}` : "";
-    const same =
-      best.sameAs.length === 0
-        ? ""
-        : ` The intensities do not tell it from ${best.sameAs.slice(0, 4).join(", ")}${best.sameAs.length > 4 ? ` and ${best.sameAs.length - 4} more` : ""}: kvane weigh says what measurement would.`;
-    return [`${best.id} fits the intensities${whose} best: start a refinement from it (kvane export).${same}`];
-  });
-}
-
 function irrepStep(branches: readonly BranchRecord[]): string[] {
   const [first] = branches;
   if (first === undefined) return [];
@@ -166,7 +155,7 @@ function irrepStep(branches: readonly BranchRecord[]): string[] {
     return [
       `No irrep alone puts moments on all of ${sites.map(({ label }) => label).join(", ")}: if they all order with this k, two irreps are at work (kvane configurations --together).`,
     ];
-  if (sets.length < 2 || (first.weigh?.ranking.length ?? 0) > 0) return [];
+  if (sets.length < 2 || first.weigh !== null) return [];
   const pairs = sets.some(({ length }) => length > 1) ? ", a conjugate pair counted once," : "";
   return [
     `${sets.length} irreps${pairs} can carry moments${branches.length > 1 ? " with the first k" : ""}: refine each one alone against the intensities before mixing them.`,

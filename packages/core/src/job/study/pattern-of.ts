@@ -10,7 +10,7 @@ const mostCurves = 3;
 /** Steps in one width: a Gaussian drawn with straight lines looks smooth. */
 const stepsInWidth = 6;
 const mostSteps = 4_000;
-/** Widths beside the first and the last line. */
+/** Widths beyond the last line. */
 const margin = 8;
 
 /** Patterns of the satellites of the best fits, as far as the data go; null where no line is in reach. */
@@ -27,11 +27,16 @@ export function patternOf(
   const { wavelengthAngstrom } = data.geometry;
   const angles = data.data.flatMap(({ q }) => (q === null ? [] : (qToTwoThetaDeg(q, wavelengthAngstrom) ?? [])));
   if (angles.length === 0) return null;
-  const fromDeg = rounded(Math.max(0, Math.min(...angles) - margin * widthDeg));
+  // From the beam on: lines below the first peak are missing for a reason.
+  const fromDeg = 0;
   const toDeg = rounded(Math.min(179, Math.max(...angles) + margin * widthDeg));
   const stepDeg = Math.max(widthDeg / stepsInWidth, (toDeg - fromDeg) / mostSteps);
   const qMax = (4 * Math.PI * Math.sin((toDeg * Math.PI) / 360)) / wavelengthAngstrom;
-  const curves = ranking.slice(0, mostCurves).flatMap(({ id, amplitudes, scale }) => {
+  // Of several with one pattern the first.
+  const different = ranking.filter(({ identicalTo }, index) =>
+    ranking.slice(0, index).every(({ id }) => !identicalTo.includes(id)),
+  );
+  const curves = different.slice(0, mostCurves).flatMap(({ id, amplitudes, scale }) => {
     const space = spaces.find((one) => one.id === id);
     if (space === undefined) return [];
     const arrangement = arrangementWith(

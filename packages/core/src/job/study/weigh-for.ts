@@ -1,11 +1,11 @@
 import { configurationSpaces, type MagneticFormFactor } from "../../diffraction/index.js";
-import { fail } from "../../errors/index.js";
+import { fail, problem } from "../../errors/index.js";
 import { type WeighRecord, weighRecord } from "../../reports/index.js";
 import type { Cell } from "../../spacegroups/index.js";
-import { weigh } from "../../weighing/index.js";
+import { type Weighing, weigh } from "../../weighing/index.js";
 import type { GivenIntensities } from "../inputs/intensities-input.js";
 import { parentSitesOf } from "../inputs/parent-sites.js";
-import type { Work } from "../work.js";
+import { remember, type Work } from "../work.js";
 import type { ConfigurationInput, MadeConfigurations } from "./configurations-for.js";
 import { formFactorsOf } from "./form-factors-of.js";
 import { intensityData } from "./intensity-data.js";
@@ -39,6 +39,7 @@ export async function weighFor(
   const data = intensityData(work, group, k, given, parent);
   const { patternWidthDeg, domains } = given;
   const found = await weigh(group, cell, k, data, spaces, { domains }, work.host);
+  warnLeftOut(work, given.file, found);
   const ions = input.orbits.map(({ label }, index) => ({
     label,
     formFactor: factors[index] as MagneticFormFactor,
@@ -60,4 +61,27 @@ export async function weighFor(
   };
   const pattern = patternWidthDeg === null ? null : patternOf(group, cell, k, data, spaces, found, patternWidthDeg);
   return weighRecord({ set, cell, spaces, ions, data: { ...how, intensities: data.data }, pattern }, found);
+}
+
+/** Share of the intensity above which leaving it out is more than an impurity line. */
+const muchLeftOut = 0.05;
+
+function warnLeftOut(work: Work, file: string, { leftOut, leftOutShare }: Weighing): void {
+  if (leftOutShare <= muchLeftOut) return;
+  remember(
+    work,
+    [],
+    [
+      problem("intensities-left-out", `${Math.round(100 * leftOutShare)} % of the intensity was left out of the fits`, {
+        where: { file },
+        expected: "every peak on a line of its own",
+        found: `${leftOut.length} without one: ${leftOut
+          .slice(0, 4)
+          .map(({ label, reason }) => `${label} (${reason})`)
+          .join(", ")}${leftOut.length > 4 ? ", …" : ""}`,
+        remedy:
+          "check the wavelength, the cell, k, the zero of the angle and the resolution before trusting the ranking",
+      }),
+    ],
+  );
 }

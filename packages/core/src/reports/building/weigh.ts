@@ -2,16 +2,17 @@ import type { ConfigurationSet } from "../../configurations/index.js";
 import type { MagneticFormFactor, MomentSpace } from "../../diffraction/index.js";
 import { waveVectorToJson } from "../../kvectors/index.js";
 import { roundNumber } from "../../numbers/index.js";
+import { qToTwoThetaDeg } from "../../reflections/index.js";
 import { type Cell, formatTriplet, type SpaceGroup } from "../../spacegroups/index.js";
 import type { IntensityDatum, WeighedCandidate, Weighing } from "../../weighing/index.js";
 import type { WeighDataRecord, WeighedRecord, WeighPatternRecord, WeighRecord } from "../records/weigh.js";
+import { fittedSites } from "./fitted-sites.js";
 import { cellRecord, groupRecord } from "./names.js";
 
 /** What was weighed and how, for the record. */
 export interface WeighedInput {
   readonly set: ConfigurationSet;
   readonly cell: Cell;
-  /** What was fitted, for which atoms an amplitude moves. */
   readonly spaces: readonly MomentSpace[];
   readonly ions: readonly { readonly label: string; readonly formFactor: MagneticFormFactor }[];
   readonly data: Omit<WeighDataRecord, "list"> & { readonly intensities: readonly IntensityDatum[] };
@@ -20,7 +21,7 @@ export interface WeighedInput {
 
 export function weighRecord({ set, cell, spaces, ions, data, pattern }: WeighedInput, found: Weighing): WeighRecord {
   const { intensities, ...how } = data;
-  const left = new Set(found.unassigned);
+  const left = new Set(found.leftOut.map(({ label }) => label));
   const irrepsOf = (id: string) => formOf(set, id).irreps;
   return {
     group: groupRecord(set.group),
@@ -36,9 +37,11 @@ export function weighRecord({ set, cell, spaces, ions, data, pattern }: WeighedI
       ...how,
       list: intensities
         .filter(({ label }) => !left.has(label))
-        .map(({ label, q, hkl, observed, uncertainty, holds = "satellites", polarization = null }) => ({
+        .map(({ label, q, hkl, observed, uncertainty, holds = "satellites", polarization = null }, index) => ({
           label,
           q: q === null ? null : roundNumber(q),
+          twoThetaDeg: q === null || how.wavelengthAngstrom === null ? null : twoTheta(q, how.wavelengthAngstrom),
+          lines: found.lines[index] ?? [],
           hkl,
           observed,
           su: roundNumber(uncertainty),
@@ -46,16 +49,11 @@ export function weighRecord({ set, cell, spaces, ions, data, pattern }: WeighedI
           polarization,
         })),
     },
-    ranking: found.ranking.map((one) =>
-      weighedRecord(
-        set,
-        one,
-        spaces.find(({ id }) => id === one.id),
-      ),
-    ),
+    ranking: found.ranking.map((one) => weighedRecord(set, cell, spaces, one)),
     struckOut: found.struckOut.map(({ id, peaks, satellites }) => ({ id, irreps: irrepsOf(id), peaks, satellites })),
     pattern,
-    unassigned: found.unassigned,
+    leftOut: found.leftOut,
+    leftOutShare: found.leftOutShare,
     relative: found.relative,
     criterion: found.criterion,
     remarks: found.remarks,
@@ -63,12 +61,15 @@ export function weighRecord({ set, cell, spaces, ions, data, pattern }: WeighedI
   };
 }
 
-function weighedRecord(set: ConfigurationSet, one: WeighedCandidate, space: MomentSpace | undefined): WeighedRecord {
-  const open = one.amplitudes.flatMap(({ determined }, index) => (determined ? [] : [index]));
-  // Along what the data do not see the covariance is 0: sizes that depend on it have no uncertainty.
-  const depends = (atom: number) => open.some((amplitude) => movesAtom(space, amplitude, atom));
+function weighedRecord(
+  set: ConfigurationSet,
+  cell: Cell,
+  spaces: readonly MomentSpace[],
+  one: WeighedCandidate,
+): WeighedRecord {
   return {
     id: one.id,
+    rank: one.rank,
     ...formOf(set, one.id),
     chiSquared: one.chiSquared,
     reducedChiSquared: one.reducedChiSquared,
@@ -82,13 +83,24 @@ function weighedRecord(set: ConfigurationSet, one: WeighedCandidate, space: Mome
       determined,
     })),
     freePhase: one.freePhase,
-    moments: one.moments.map(({ sizeUncertainty, position, ...moment }, atom) => ({
+    moments: one.moments.map(({ sizeUncertainty, largestUncertainty, components, position, ...moment }) => ({
       ...moment,
       position: position.map((entry) => roundNumber(entry)),
-      sizeSu: depends(atom) ? null : sizeUncertainty,
+      sizeSu: sizeUncertainty,
+      largestSu: largestUncertainty,
+      fourierCrystal: components.map(({ real, imaginary }) =>
+        real.map((entry, axis) => [entry, imaginary[axis as 0 | 1 | 2]] as const),
+      ),
     })),
+    sites: fittedSites(
+      set,
+      cell,
+      one,
+      spaces.find(({ id }) => id === one.id),
+    ),
     factorToLimit: one.factorToLimit,
     scale: one.scale,
+    scaleSu: one.scaleUncertainty,
     domains: one.domains.map(({ operator, fraction, uncertainty }) => ({
       operator: operatorText(set.group, operator),
       fraction,
@@ -97,18 +109,36 @@ function weighedRecord(set: ConfigurationSet, one: WeighedCandidate, space: Mome
     calculated: one.calculated,
     sameAs: one.sameAs,
     identicalTo: one.identicalTo,
-    separations: one.separations.map(({ from, by, hkl, q, text }) => ({ from, by, hkl, q, text })),
-    minima: one.minima.map(({ chiSquared, amplitudes }) => ({ chiSquared, amplitudes })),
+    separations: one.separations.map(({ from, by, hkl, q, text }) => ({
+      from,
+      relation: relationOf(set, one.id, from),
+      by,
+      hkl,
+      q,
+      text,
+    })),
+    minima: one.minima.map(({ chiSquared, amplitudes, largest, aboveLimit }) => ({
+      chiSquared,
+      amplitudes,
+      largest,
+      aboveLimit,
+    })),
     starts: one.starts,
     hits: one.hits,
   };
 }
 
-function movesAtom(space: MomentSpace | undefined, amplitude: number, atom: number): boolean {
-  return (space?.basis[amplitude]?.components ?? []).some((wave) => {
-    const { real = [], imaginary = [] } = wave[atom] ?? {};
-    return [...real, ...imaginary].some((entry) => entry !== 0);
-  });
+function twoTheta(q: number, wavelengthAngstrom: number): number | null {
+  const angle = qToTwoThetaDeg(q, wavelengthAngstrom);
+  return angle === null ? null : roundNumber(angle);
+}
+
+/** What another configuration is of one: the groups of special cases hold those of more general ones. */
+function relationOf(set: ConfigurationSet, id: string, other: string): "special case" | "more general" | null {
+  const all = [...set.configurations, ...set.modulated];
+  const groupsAbove = (one: string) => all.find((entry) => entry.id === one)?.subgroupOf ?? [];
+  if (groupsAbove(id).includes(other)) return "special case";
+  return groupsAbove(other).includes(id) ? "more general" : null;
 }
 
 function formOf(set: ConfigurationSet, id: string): { readonly irreps: string[]; readonly direction: string } {

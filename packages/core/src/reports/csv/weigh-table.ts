@@ -23,24 +23,86 @@ export function patternCsv({ fromDeg, stepDeg, curves }: WeighPatternRecord): st
 }
 
 export function rankingCsv(record: WeighRecord): string {
-  const header = ["rank", "configuration", "chi_squared", "parameters", "criterion", "label", "q_inverse_angstrom"];
+  const fit = ["rank", "configuration", "chi_squared", "reduced_chi_squared", "r_factor", "parameters", "criterion"];
+  const datum = ["label", "lines", "q_inverse_angstrom", "two_theta_deg"];
   return csvText(
-    [...header, "h", "k_index", "l", "holds", "polarization", "observed", "su", "calculated"],
-    record.ranking.flatMap((one, rank) =>
-      record.data.list.map(({ label, q, hkl, holds, polarization, observed, su }, index): CsvCell[] => [
-        rank + 1,
+    [
+      ...fit,
+      ...datum,
+      "h_satellite",
+      "k_satellite",
+      "l_satellite",
+      "holds",
+      "polarization",
+      "observed",
+      "su",
+      "calculated",
+    ],
+    record.ranking.flatMap((one) =>
+      record.data.list.map(
+        ({ label, lines, q, twoThetaDeg, hkl, holds, polarization, observed, su }, index): CsvCell[] => [
+          one.rank,
+          one.id,
+          one.chiSquared,
+          one.reducedChiSquared,
+          one.rFactor,
+          one.parameters,
+          one.criterion,
+          label,
+          lines.join("; "),
+          q,
+          twoThetaDeg,
+          ...(hkl ?? [null, null, null]),
+          holds,
+          polarization,
+          observed,
+          su,
+          one.calculated[index] ?? null,
+        ],
+      ),
+    ),
+  );
+}
+
+/** The fitted moments, one row an atom of the primitive cell and configuration: in the cell at the origin, and S of each arm. */
+export function fittedMomentsCsv({ ranking, relative }: WeighRecord): string {
+  const waves = Math.max(
+    0,
+    ...ranking.flatMap(({ moments }) => moments.map(({ fourierCrystal }) => fourierCrystal.length)),
+  );
+  const components = Array.from({ length: waves }, (_, wave) =>
+    ["a", "b", "c"].flatMap((axis) => [`S${wave + 1}_${axis}_re`, `S${wave + 1}_${axis}_im`]),
+  ).flat();
+  const unit = relative ? "relative" : "mu_B";
+  return csvText(
+    [
+      "rank",
+      "configuration",
+      "unit",
+      "atom",
+      "x",
+      "y",
+      "z",
+      "m_a",
+      "m_b",
+      "m_c",
+      "largest",
+      "largest_su",
+      "limit",
+      ...components,
+    ],
+    ranking.flatMap((one) =>
+      one.moments.map((moment): CsvCell[] => [
+        one.rank,
         one.id,
-        one.chiSquared,
-        one.parameters,
-        one.criterion,
-        label,
-        q,
-        ...(hkl ?? [null, null, null]),
-        holds,
-        polarization,
-        observed,
-        su,
-        one.calculated[index] ?? null,
+        unit,
+        moment.label,
+        ...moment.position,
+        ...moment.momentCrystal,
+        moment.largest,
+        moment.largestSu,
+        moment.limit,
+        ...moment.fourierCrystal.flat(2),
       ]),
     ),
   );

@@ -4,7 +4,7 @@ import { drawnConfigurations, hasGraph } from "../svg/drawn-configurations.js";
 import { isNamed } from "../svg/group-of-record.js";
 import { carriedSets, hasMoments } from "../svg/moment-data.js";
 
-export type DrawnRun = Pick<RunRecord, "group" | "cell" | "search" | "branches" | "onset">;
+export type DrawnRun = Pick<RunRecord, "group" | "cell" | "search" | "branches" | "exchange" | "onset">;
 
 /** The drawing of the peaks, or null where there are none. */
 export function peakFigureName({ search }: DrawnRun): string | null {
@@ -49,6 +49,11 @@ export function patternFigureName({ weigh }: Pick<BranchRecord, "weigh">, index:
   return weigh?.pattern ? `branch-${index + 1}-pattern.svg` : null;
 }
 
+/** The drawing of the phase diagram, or null where no constant runs. */
+export function diagramFigureName({ exchange }: Pick<DrawnRun, "exchange">): string | null {
+  return exchange?.diagram ? "phase-diagram.svg" : null;
+}
+
 /** The drawing of the temperature scan, or null where there is none. */
 export function onsetFigureName({ onset }: Pick<DrawnRun, "onset">): string | null {
   return onset === null ? null : "onset.svg";
@@ -66,6 +71,7 @@ export function figureNames(record: DrawnRun): string[] {
       weightsFigureName(branch, index),
       patternFigureName(branch, index),
     ]),
+    diagramFigureName(record),
     onsetFigureName(record),
   ].filter((name) => name !== null);
 }

@@ -27,7 +27,10 @@ export interface WeighDataRecord {
   readonly list: readonly {
     readonly label: string;
     readonly q: number | null;
+    readonly twoThetaDeg: number | null;
     readonly hkl: readonly number[] | null;
+    /** The lines of a powder that belong to it: `(1 0 0) + k`, nuclear ones `(1 1 0)`. */
+    readonly lines: readonly string[];
     readonly observed: number;
     readonly su: number;
     readonly holds: "satellites" | "nuclear" | "both";
@@ -54,18 +57,33 @@ export interface WeighMomentRecord {
   readonly momentCrystal: readonly number[];
   /** Null where it changes from cell to cell. */
   readonly size: number | null;
-  /** Null too where the data leave an amplitude of this atom open. */
+  /** Null too where it depends on what the data leave open. */
   readonly sizeSu: number | null;
   /** The largest in any cell. */
   readonly largest: number;
+  readonly largestSu: number | null;
+  /** Fourier components S for each arm, along unit vectors of the axes, [re, im] each. */
+  readonly fourierCrystal: readonly (readonly (readonly [number, number])[])[];
+  /** Half axes of the ellipse that the moment of one incommensurate wave runs through. */
+  readonly halfAxes: readonly [number, number] | null;
   /** gS or g_J J in μB. */
   readonly limit: number | null;
   readonly aboveLimit: boolean;
 }
 
+/** The fitted moment of a site of a configuration: of a commensurate one, or the waves of a modulated one. */
+export interface FittedSiteRecord {
+  readonly label: string;
+  readonly momentCrystal: readonly number[] | null;
+  readonly cosineCrystal: readonly number[] | null;
+  readonly sineCrystal: readonly number[] | null;
+}
+
 /** One configuration with its best fit. */
 export interface WeighedRecord {
   readonly id: string;
+  /** Shared by those that the data do not tell apart. */
+  readonly rank: number;
   readonly irreps: readonly string[];
   readonly direction: string;
   readonly chiSquared: number;
@@ -78,9 +96,12 @@ export interface WeighedRecord {
   /** Whether the common phase of the wave is free; one was chosen. */
   readonly freePhase: boolean;
   readonly moments: readonly WeighMomentRecord[];
+  /** The same moments on the sites of the configuration, along the unit axes of its own cell, as its magnetic CIF has them. */
+  readonly sites: readonly FittedSiteRecord[];
   /** What relative sizes are to be multiplied with for the largest moment to reach its limit. */
   readonly factorToLimit: number | null;
   readonly scale: number | null;
+  readonly scaleSu: number | null;
   readonly domains: readonly { readonly operator: string; readonly fraction: number; readonly su: number | null }[];
   readonly calculated: readonly number[];
   /** Configurations that the data do not tell from this one. */
@@ -90,13 +111,21 @@ export interface WeighedRecord {
   /** What would tell them apart. */
   readonly separations: readonly {
     readonly from: string;
+    /** What `from` is of this one by symmetry. */
+    readonly relation: "special case" | "more general" | null;
     readonly by: "powder line" | "single crystal" | "polarised neutrons" | "not by diffraction";
     readonly hkl: readonly number[] | null;
     readonly q: number | null;
     readonly text: string;
   }[];
   /** Arrangements that fit equally well, by their amplitudes. */
-  readonly minima: readonly { readonly chiSquared: number; readonly amplitudes: readonly number[] }[];
+  readonly minima: readonly {
+    readonly chiSquared: number;
+    readonly amplitudes: readonly number[];
+    /** Largest moments of the atoms in any cell. */
+    readonly largest: readonly number[];
+    readonly aboveLimit: boolean;
+  }[];
   readonly starts: number;
   readonly hits: number;
 }
@@ -130,8 +159,14 @@ export interface WeighRecord {
     readonly satellites: readonly string[];
   }[];
   readonly pattern: WeighPatternRecord | null;
-  /** Labels of intensities that lie on no satellite. */
-  readonly unassigned: readonly string[];
+  /** Intensities that no line belongs to. */
+  readonly leftOut: readonly {
+    readonly label: string;
+    readonly reason: "no line near" | "another datum is nearer";
+    readonly nearest: { readonly line: string; readonly q: number } | null;
+  }[];
+  /** Their share of all observed intensity. */
+  readonly leftOutShare: number;
   /** Whether sizes are relative. */
   readonly relative: boolean;
   readonly criterion: string;

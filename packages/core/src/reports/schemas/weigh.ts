@@ -16,6 +16,7 @@ const measured = { value: number, su: nullable(number) };
 
 const candidate = record({
   id: text,
+  rank: count,
   irreps: list(text),
   direction: text,
   chiSquared: number,
@@ -33,12 +34,24 @@ const candidate = record({
       size: nullable(number),
       sizeSu: nullable(number),
       largest: number,
+      largestSu: nullable(number),
+      fourierCrystal: list(tuple(3, tuple(2, number))),
+      halfAxes: nullable(tuple(2, number)),
       limit: nullable(number),
       aboveLimit: flag,
     }),
   ),
+  sites: list(
+    record({
+      label: text,
+      momentCrystal: nullable(tuple(3, number)),
+      cosineCrystal: nullable(tuple(3, number)),
+      sineCrystal: nullable(tuple(3, number)),
+    }),
+  ),
   factorToLimit: nullable(number),
   scale: nullable(number),
+  scaleSu: nullable(number),
   domains: list(record({ operator: text, fraction: number, su: nullable(number) })),
   calculated: list(number, "one for each of data.list"),
   sameAs: list(text),
@@ -46,13 +59,14 @@ const candidate = record({
   separations: list(
     record({
       from: text,
+      relation: nullable(oneOf("special case", "more general")),
       by: oneOf("powder line", "single crystal", "polarised neutrons", "not by diffraction"),
       hkl: nullable(tuple(3, number)),
       q: nullable(number),
       text,
     }),
   ),
-  minima: list(record({ chiSquared: number, amplitudes: list(number) })),
+  minima: list(record({ chiSquared: number, amplitudes: list(number), largest: list(number), aboveLimit: flag })),
   starts: count,
   hits: count,
 });
@@ -79,6 +93,8 @@ export const weighSchema: JsonSchema = record({
       record({
         label: text,
         q: nullable(number),
+        twoThetaDeg: nullable(number),
+        lines: list(text),
         hkl: nullable(tuple(3, number)),
         observed: number,
         su: number,
@@ -98,7 +114,14 @@ export const weighSchema: JsonSchema = record({
       curves: list(record({ id: text, intensities: list(number) })),
     }),
   ),
-  unassigned: list(text),
+  leftOut: list(
+    record({
+      label: text,
+      reason: oneOf("no line near", "another datum is nearer"),
+      nearest: nullable(record({ line: text, q: number })),
+    }),
+  ),
+  leftOutShare: number,
   relative: flag,
   criterion: text,
   remarks: list(text),

@@ -53,7 +53,7 @@ function panelMarks(
   const points = intensities.map((value, step) => `${coordinate(x(fromDeg + step * stepDeg))} ${coordinate(y(value))}`);
   return [
     leftAxis(y, left, width - right, 3),
-    label(id, left, top - 10, "start"),
+    label(`${id}: intensity per degree`, left, top - 10, "start"),
     element("path", {
       d: `M${points.join("L")}`,
       "stroke-width": 1.4,

@@ -37,12 +37,12 @@ export function modulatedFreeText({ freeParameters: { irreps, group }, freePhase
 }
 
 /** What fixes the phases between copies. */
-export function phasesText({ needsSecondOrderParameter, freePhases }: ModulatedRecord): string {
+export function phasesText({ needsSecondOrderParameter, freePhases, magneticGroup }: ModulatedRecord): string {
   if (needsSecondOrderParameter)
     return `${counted(freePhases, "phase")} between copies free: needs a second order parameter of the same symmetry`;
-  return freePhases > 0
-    ? `${counted(freePhases, "phase")} between amplitudes free`
-    : "locked by an operator that takes k to −k";
+  if (freePhases > 0) return `${counted(freePhases, "phase")} between amplitudes free`;
+  const reversed = magneticGroup.superspace.operators.some((operator) => (operator.split(",")[3] ?? "").includes("-x4"));
+  return reversed ? "locked by an operator that takes k to −k" : "none but the common phase of the wave";
 }
 
 /** What one modulated configuration is, but for its sites and operators: the same in text and in a document. */

@@ -8,6 +8,8 @@ import type {
 } from "../records/weigh.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
 import { cellText, counted, decimals, groupText, kText, plain } from "./names.js";
+import { familyOf, leftOutTexts, notesOn, tieTexts } from "./weigh-notes.js";
+import { namesOf, percent, short } from "./weigh-words.js";
 
 /** Candidates whose moments, and whose calculated intensities, are printed; the JSON has all. */
 const shownMoments = 3;
@@ -25,16 +27,20 @@ export function weighText(record: WeighRecord): string[] {
   return [
     ...headSection(record),
     ...section(
+      "Left out",
+      leftOutTexts(record).flatMap((text) => paragraph(text)),
+    ),
+    ...section(
       `Ranking (${counted(record.ranking.length, "configuration")})`,
       rankingTable(record, shownRanks),
       [""],
       paragraph(
-        "Criterion: χ² + parameters · ln(intensities); of two that lie less than 6 apart the data prefer neither. Parameters: those that the data see.",
+        "BIC, the Bayesian information criterion: χ² + parameters · ln(intensities); of two that lie less than 6 apart the data prefer neither. Parameters: those that the data see.",
       ),
     ),
     ...struckSection(record),
     ...family.slice(0, shownMoments).flatMap((one) => momentSection(record, one)),
-    ...separationSection(family),
+    ...tieSection(record),
     ...comparisonSection(record),
     ...section(
       "What this says",
@@ -48,6 +54,7 @@ export function weighSummary(record: WeighRecord, rows: number): string[] {
   return [
     ...rankingTable(record, rows),
     ...struckLines(record),
+    ...leftOutTexts(record).flatMap((text) => paragraph(text)),
     ...remarksOn(record).flatMap((text) => paragraph(text)),
   ];
 }
@@ -60,7 +67,7 @@ function headSection(record: WeighRecord): string[] {
       ["Group", groupText(record.group)],
       ["Cell", cellText(record.cell)],
       ["k", kText(record.k)],
-      ["File", `${data.file}: ${counted(data.list.length + record.unassigned.length, "intensity", "intensities")}`],
+      ["File", usedText(record)],
       ["Sample", data.sample],
       ["Numbers", numbersText(data)],
       ["Scale", scaleText(record)],
@@ -72,6 +79,14 @@ function headSection(record: WeighRecord): string[] {
       ),
     ]),
   );
+}
+
+/** How many intensities were read and used. */
+export function usedText({ data, leftOut }: WeighRecord): string {
+  const used = data.list.length;
+  const total = used + leftOut.length;
+  const all = counted(total, "intensity", "intensities");
+  return `${data.file}: ${all}${used === total ? "" : `, ${used} used`}`;
 }
 
 /** What was said beside the list, where it is not the usual. */
@@ -101,15 +116,17 @@ export function struckPeaks({ peaks, satellites }: WeighRecord["struckOut"][numb
 }
 
 /** Fractions of the domains, by the operator that makes each of the first. */
-export function domainText({ domains }: WeighedRecord): string {
+export function domainText({ domains }: WeighedRecord, fitted: boolean): string {
   const shares = domains.map(
     ({ operator, fraction, su }) =>
       `${su === null || su === 0 ? decimals(fraction, 3) : withUncertainty(fraction, su)} (${operator})`,
   );
-  return `Domains: ${namesOf(shares, shownDomains)}.`;
+  const open = domains.some(({ su }) => su === null);
+  return `Domains: ${namesOf(shares, shownDomains)}.${open && fitted ? " Fractions without an uncertainty are not determined by these data." : ""}`;
 }
 
-function numbersText({ lorentz, sample, wavelengthAngstrom, scatteringAngleDeg }: WeighDataRecord): string {
+/** What the numbers of the list are. */
+export function numbersText({ lorentz, sample, wavelengthAngstrom, scatteringAngleDeg }: WeighDataRecord): string {
   if (!lorentz) return "|F|², without Lorentz factor";
   if (scatteringAngleDeg !== null)
     return `integrated intensities by time of flight with the Lorentz factor d⁴ sin θ, 2θ = ${plain(scatteringAngleDeg)}°`;
@@ -120,8 +137,11 @@ function numbersText({ lorentz, sample, wavelengthAngstrom, scatteringAngleDeg }
 /** What the sizes of moments rest on. */
 export function scaleText({ relative, data, ranking }: WeighRecord): string {
   if (relative) return "not known: moments are relative";
-  const scale = data.scale ?? ranking[0]?.scale ?? null;
-  const text = scale === null ? "" : `${short(scale)} per |F|² of 10⁻²⁴ cm²`;
+  const [best] = ranking;
+  const scale = data.scale ?? best?.scale ?? null;
+  const su = best?.scaleSu ?? 0;
+  const number = scale === null ? "" : su > 0 ? withUncertainty(scale, su) : short(scale);
+  const text = scale === null ? "" : `${number} per |F|² of 10⁻²⁴ cm²`;
   return data.scale === null ? `from nuclear lines${text === "" ? "" : `: ${text}`}` : text;
 }
 
@@ -138,7 +158,7 @@ export function rankingTable({ ranking }: WeighRecord, rows: number): string[] {
       { title: "χ²/dof", align: "right" },
       { title: "R", align: "right" },
       { title: "parameters", align: "right" },
-      { title: "criterion", align: "right" },
+      { title: "BIC", align: "right" },
       { title: "not told from" },
     ],
     ranking.slice(0, rows).map((one, index) => rankingRow(one, index, ranking)),
@@ -151,10 +171,10 @@ export function rankingTable({ ranking }: WeighRecord, rows: number): string[] {
 const shownSame = 4;
 
 /** One line of the ranking; those that cannot be told from a better one share its rank. */
-export function rankingRow(one: WeighedRecord, index: number, ranking: readonly WeighedRecord[]): string[] {
-  const first = ranking.findIndex(({ id }) => id === one.id || one.sameAs.includes(id));
+export function rankingRow(one: WeighedRecord, _index: number, ranking: readonly WeighedRecord[]): string[] {
+  const shared = ranking.some(({ id, rank }) => id !== one.id && rank === one.rank);
   return [
-    `${Math.min(first, index) + 1}${one.sameAs.length > 0 ? "=" : ""}`,
+    `${one.rank}${shared ? "=" : ""}`,
     one.id,
     one.irreps.join("+"),
     short(one.chiSquared),
@@ -164,20 +184,6 @@ export function rankingRow(one: WeighedRecord, index: number, ranking: readonly 
     decimals(one.criterion, 1),
     namesOf(one.sameAs, shownSame),
   ];
-}
-
-/** Names, the first ones and how many more. */
-export function namesOf(names: readonly string[], most: number): string {
-  const more = names.length - most;
-  return `${names.slice(0, most).join(", ")}${more > 0 ? ` ${unbroken(`and ${more} more`)}` : ""}`;
-}
-
-export function short(value: number): string {
-  return value >= 1000 ? value.toFixed(0) : String(Number(value.toPrecision(4)));
-}
-
-export function percent(share: number): string {
-  return `${(100 * share).toFixed(1)} %`;
 }
 
 function struckSection(record: WeighRecord): string[] {
@@ -204,12 +210,7 @@ function struckLines({ struckOut }: WeighRecord): string[] {
       );
 }
 
-/** The best configuration and those that the data do not tell from it, best first. */
-function familyOf({ ranking }: WeighRecord, best: WeighedRecord): WeighedRecord[] {
-  return ranking.filter((one) => one === best || best.sameAs.includes(one.id));
-}
-
-function momentSection({ relative }: WeighRecord, one: WeighedRecord): string[] {
+function momentSection({ relative, data }: WeighRecord, one: WeighedRecord): string[] {
   const unit = relative ? "relative" : "μB";
   const notes = notesOn(one, relative);
   const constant = one.moments.every(({ size }) => size !== null);
@@ -229,9 +230,13 @@ function momentSection({ relative }: WeighRecord, one: WeighedRecord): string[] 
       one.moments.slice(0, shownAtoms).map(momentRow),
     ),
     one.moments.length > shownAtoms ? paragraph(`and ${counted(one.moments.length - shownAtoms, "more atom")}`) : [],
-    one.domains.length > 1 ? ["", ...paragraph(domainText(one))] : [],
+    one.domains.length > 1 ? ["", ...paragraph(domainText(one, data.domains === "free"))] : [],
     notes.length === 0 ? [] : ["", ...notes.flatMap((text) => paragraph(text))],
   );
+}
+
+export function sizeText({ largest, largestSu }: WeighMomentRecord): string {
+  return largestSu !== null && largestSu > 0 ? withUncertainty(largest, largestSu) : decimals(largest, 2);
 }
 
 function momentRow(moment: WeighMomentRecord): string[] {
@@ -239,69 +244,40 @@ function momentRow(moment: WeighMomentRecord): string[] {
     moment.label,
     moment.position.map((entry) => plain(Number(entry.toFixed(4)))).join(", "),
     ...moment.momentCrystal.map((entry) => decimals(entry, 2)),
-    moment.size !== null && moment.sizeSu !== null && moment.sizeSu > 0
-      ? withUncertainty(moment.size, moment.sizeSu)
-      : decimals(moment.largest, 2),
+    sizeText(moment),
     moment.limit === null ? "–" : plain(moment.limit),
     moment.aboveLimit ? "above the limit" : "",
   ];
 }
 
-/** What must be known beside the moments of one candidate. */
-export function notesOn(one: WeighedRecord, relative: boolean): string[] {
-  const unknown = one.amplitudes.filter(({ determined }) => !determined).map(({ label }) => label);
-  const others = one.minima.length - 1;
-  return [
-    ...(relative && one.factorToLimit !== null
-      ? [`Times ${short(one.factorToLimit)} the largest moment is what its ion can have.`]
-      : []),
-    ...(unknown.length > 0
-      ? [
-          `Not determined by these data: ${unknown.join(", ")}. The moments shown are one choice of many that fit equally well.`,
-        ]
-      : []),
-    ...(one.freePhase ? ["The common phase of the wave is free: no diffraction sees it."] : []),
-    ...(others > 0
-      ? [
-          `${counted(others, "other arrangement")} of this configuration ${others === 1 ? "fits" : "fit"} as well: one of them is shown.`,
-        ]
-      : []),
-    ...(one.moments.some(({ aboveLimit }) => aboveLimit)
-      ? ["A moment is above what its ion can have: the scale, the ion or the arrangement is wrong."]
-      : []),
-  ];
-}
-
-function separationSection(family: readonly WeighedRecord[]): string[] {
-  const [best] = family;
-  if (best === undefined || family.length === 1) return [];
+function tieSection(record: WeighRecord): string[] {
+  const [best] = record.ranking;
+  if (best === undefined || best.sameAs.length === 0) return [];
   return section(
-    `Not told apart: ${namesOf(
-      family.map(({ id }) => id),
-      8,
-    )}`,
-    best.separations.flatMap(({ from, text }) => paragraph(`${best.id} and ${from}: ${text}`, 2, 2)),
-    best.identicalTo.length === 0
-      ? []
-      : paragraph(`The very same intensities as ${best.id}: ${namesOf(best.identicalTo, 8)}.`),
+    `Not told apart: ${namesOf([best.id, ...best.sameAs], 8)}`,
+    tieTexts(record).flatMap((text) => paragraph(text, 2, 2)),
   );
 }
 
 function comparisonSection({ data, ranking }: WeighRecord): string[] {
   const shown = ranking.slice(0, shownColumns);
   if (shown.length === 0) return [];
+  const powder = data.sample === "powder";
+  const polarized = data.list.some(({ polarization }) => polarization !== null);
   return section(
     "Observed and calculated",
     table(
       [
-        { title: data.sample === "powder" ? "peak" : "h k l" },
-        ...(data.sample === "powder" ? [{ title: "Q / Å⁻¹", align: "right" as const }] : []),
+        { title: powder ? "peak" : "h k l" },
+        ...(powder ? [{ title: "lines" }, { title: "Q / Å⁻¹", align: "right" as const }] : []),
+        ...(polarized ? [{ title: "P", align: "right" as const }] : []),
         { title: "observed", align: "right" },
         ...shown.map(({ id }) => ({ title: id, align: "right" as const })),
       ],
-      data.list.map(({ label, q, observed, su }, index) => [
+      data.list.map(({ label, lines, q, observed, su, polarization }, index) => [
         label,
-        ...(data.sample === "powder" ? [decimals(q, 4)] : []),
+        ...(powder ? [linesText(lines), decimals(q, 4)] : []),
+        ...(polarized ? [polarization === null ? "–" : plain(polarization)] : []),
         withUncertainty(observed, su),
         ...shown.map(({ calculated }) => calculatedText(calculated[index] ?? 0, su)),
       ]),
@@ -309,12 +285,29 @@ function comparisonSection({ data, ranking }: WeighRecord): string[] {
   );
 }
 
+/** The first line of a peak, and how many more lie under it. */
+export function linesText(lines: readonly string[]): string {
+  const [first] = lines;
+  return first === undefined ? "–" : unbroken(`${first}${lines.length > 1 ? `, ${lines.length - 1} more` : ""}`);
+}
+
 /** As many decimals as the uncertainty of the observed value has. */
 export function calculatedText(value: number, su: number): string {
   return decimals(value, Math.max(0, Math.min(6, 1 - Math.floor(Math.log10(su)))));
 }
 
-/** The remarks of the weighing, and what was left out. */
+/** The remarks of the weighing, and what was not looked at. */
 export function remarksOn(record: WeighRecord): string[] {
-  return [...record.remarks, ...record.bounded.map((what) => `Left out because of the limit: ${what}.`)];
+  return [
+    ...record.remarks,
+    ...defaultsText(record.data),
+    ...record.bounded.map((what) => `Left out because of the limit: ${what}.`),
+  ];
+}
+
+/** What rests on uncertainties that nobody measured. */
+function defaultsText({ uncertaintySource }: WeighDataRecord): string[] {
+  return uncertaintySource.includes("by default")
+    ? ["Uncertainties are taken by default: χ², the BIC and all that rests on them are only as good as these."]
+    : [];
 }

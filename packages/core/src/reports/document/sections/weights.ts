@@ -3,18 +3,22 @@ import type { WeighedRecord, WeighRecord } from "../../records/weigh.js";
 import { intensityChart } from "../../svg/intensity-chart.js";
 import { patternChart } from "../../svg/pattern-chart.js";
 import { counted, decimals, plain } from "../../text/names.js";
+import { leftOutTexts, notesOn, tieTexts } from "../../text/weigh-notes.js";
 import {
   calculatedText,
   domainText,
   ionText,
-  namesOf,
-  notesOn,
+  linesText,
+  numbersText,
   rankingRow,
   remarksOn,
   scaleText,
   settingsOf,
+  sizeText,
   struckPeaks,
+  usedText,
 } from "../../text/weigh-text.js";
+import { namesOf } from "../../text/weigh-words.js";
 import { type Block, type DocumentSection, fieldsBlock, moreBlock, paragraphBlock, tableBlock } from "../blocks.js";
 import { patternFigureName, shownWeights, weightsFigureName } from "../figure-names.js";
 import type { BranchSource } from "../run-document.js";
@@ -25,15 +29,17 @@ const columns = 6;
 export function weightsSection({ branch, index, prefix }: BranchSource): DocumentSection | null {
   const { weigh } = branch;
   if (weigh === null) return null;
-  const [best] = weigh.ranking;
   const file = weightsFigureName(branch, index);
   return {
     id: `${prefix}-weights`,
-    title: "Weights",
+    title: "Fits to intensities",
     parts: [],
     blocks: [
-      ...remarksOn(weigh).map(paragraphBlock),
+      ...[...leftOutTexts(weigh), ...remarksOn(weigh)].map(paragraphBlock),
       ...fieldsBlock([
+        ["File", usedText(weigh)],
+        ["Numbers", numbersText(weigh.data)],
+        ["Uncertainties", weigh.data.uncertaintySource],
         ["Scale", scaleText(weigh)],
         ...settingsOf(weigh.data),
         ...weigh.ions.map((one) => [one.label, ionText(one)] as const),
@@ -42,7 +48,7 @@ export function weightsSection({ branch, index, prefix }: BranchSource): Documen
       ...(file === null ? [] : [figureBlock(weigh, prefix, file)]),
       ...patternBlocks(weigh, prefix, patternFigureName(branch, index)),
       ...weigh.ranking.slice(0, shownWeights).flatMap((one) => momentBlocks(weigh, one)),
-      ...(best?.separations ?? []).map(({ from, text }) => paragraphBlock(`${best?.id} and ${from}: ${text}.`)),
+      ...tieTexts(weigh).map(paragraphBlock),
       ...moreBlock("Observed and calculated intensities", comparisonBlocks(weigh)),
     ],
   };
@@ -51,8 +57,8 @@ export function weightsSection({ branch, index, prefix }: BranchSource): Documen
 function rankingBlocks(weigh: WeighRecord): Block[] {
   return [
     ...tableBlock(
-      "Configurations by the Bayesian information criterion, best first",
-      [">", "id", "irreps", ">χ²", ">χ²/dof", ">R", ">parameters", ">criterion", "not told from"],
+      "Configurations by the Bayesian information criterion (BIC), best first; of two less than 6 apart the data prefer neither",
+      [">", "id", "irreps", ">χ²", ">χ²/dof", ">R", ">parameters", ">BIC", "not told from"],
       weigh.ranking.map(rankingRow),
     ),
     ...tableBlock(
@@ -91,34 +97,35 @@ function patternBlocks({ pattern, data }: WeighRecord, prefix: string, file: str
   return [{ kind: "figure", figure }];
 }
 
-function momentBlocks({ relative }: WeighRecord, one: WeighedRecord): Block[] {
-  return moreBlock(`Moments of ${one.id} (${relative ? "relative" : "μB"})`, [
+/** The moments of the first stand open, those of others are folded away. */
+function momentBlocks({ relative, ranking, data }: WeighRecord, one: WeighedRecord): Block[] {
+  const blocks = [
     ...tableBlock(
-      `Moments of ${one.id}, along the axes, in the cell at the origin`,
+      `Moments of ${one.id} (${relative ? "relative" : "μB"}), along the axes, in the cell at the origin`,
       ["atom", "position", ">along a", ">along b", ">along c", ">size", ">limit / μB", ""],
       one.moments.map((moment) => [
         moment.label,
         moment.position.map((entry) => plain(Number(entry.toFixed(4)))).join(", "),
         ...moment.momentCrystal.map((entry) => decimals(entry, 2)),
-        moment.size !== null && moment.sizeSu !== null && moment.sizeSu > 0
-          ? withUncertainty(moment.size, moment.sizeSu)
-          : decimals(moment.largest, 2),
+        sizeText(moment),
         moment.limit === null ? "–" : plain(moment.limit),
         moment.aboveLimit ? "above the limit" : "",
       ]),
     ),
-    ...(one.domains.length > 1 ? [paragraphBlock(domainText(one))] : []),
+    ...(one.domains.length > 1 ? [paragraphBlock(domainText(one, data.domains === "free"))] : []),
     ...notesOn(one, relative).map(paragraphBlock),
-  ]);
+  ];
+  return one === ranking[0] ? blocks : moreBlock(`Moments of ${one.id} (${relative ? "relative" : "μB"})`, blocks);
 }
 
 function comparisonBlocks({ data, ranking }: WeighRecord): Block[] {
   const shown = ranking.slice(0, columns);
   return tableBlock(
     "Observed and calculated intensities",
-    [data.sample === "powder" ? "peak" : "h k l", ">Q / Å⁻¹", ">observed", ...shown.map(({ id }) => `>${id}`)],
-    data.list.map(({ label, q, observed, su }, index) => [
+    [data.sample === "powder" ? "peak" : "h k l", "lines", ">Q / Å⁻¹", ">observed", ...shown.map(({ id }) => `>${id}`)],
+    data.list.map(({ label, lines, q, observed, su }, index) => [
       label,
+      linesText(lines),
       decimals(q, 4),
       withUncertainty(observed, su),
       ...shown.map(({ calculated }) => calculatedText(calculated[index] ?? 0, su)),
