@@ -48,6 +48,7 @@ export interface ChildCell {
   readonly centrings: readonly CellOperator[];
 }
 
+/** An operator of a magnetic group in the axes of its own cell: fractions of these axes, time reversal +1 or −1. */
 export interface CellOperator {
   readonly operator: SymmetryOperator;
   readonly timeReversal: 1 | -1;

@@ -42,6 +42,7 @@ export interface ModulatedConfiguration {
   readonly sites: readonly ModulatedSite[];
 }
 
+/** An atom of a modulated configuration with its wave, in lattice components of the parent (docs/conventions.md, Superspace). */
 export interface ModulatedSite {
   readonly label: string;
   readonly parentSite: string;

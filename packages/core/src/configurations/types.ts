@@ -9,6 +9,7 @@ import type { Consequences } from "./consequences.js";
 import type { ConstantMoment } from "./equal-sizes.js";
 import type { ModulatedConfiguration } from "./modulated-types.js";
 
+/** Which configurations are asked for: arms of the star, irreps together, irreps on sites, and the limits of the work. */
 export interface ConfigurationOptions {
   /** Arms that may take part: the pair ±k (default), all, or those named by their number in the star. */
   readonly arms?: ArmChoice;
@@ -69,6 +70,7 @@ export interface Configuration {
   readonly consequences: Consequences | null;
 }
 
+/** An irrep of another k that may come with the order: how many free parameters the magnetic group allows it. */
 export interface SecondaryIrrep {
   readonly label: string;
   readonly k: WaveVector;
@@ -105,6 +107,7 @@ export interface ConfigurationSite {
   readonly amplitudes: readonly AmplitudeShare[];
 }
 
+/** What one free amplitude, at 1, puts on an atom: its number, from 0, and lattice components of the child cell. */
 export interface AmplitudeShare {
   readonly amplitude: number;
   readonly momentLattice: readonly [number, number, number];

@@ -95,6 +95,7 @@ export interface ExtinctionTest {
    * @param h H in a*, b*, c*, integers in a conventional setting
    */
   readonly vector: (h: readonly number[]) => readonly string[];
+  /** The same for all vectors of a powder line. */
   readonly line: (h: readonly number[], sign: 1 | -1 | 0) => readonly string[];
 }
 

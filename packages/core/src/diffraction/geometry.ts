@@ -2,6 +2,7 @@ import { cartesianAxes } from "../modes/index.js";
 import { averagedReciprocalMetric } from "../reflections/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 
+/** Three numbers: indices along a*, b*, c*, or components along axes, as the text beside it says. */
 export type Triple = readonly [number, number, number];
 
 /** Direct and reciprocal axes on Cartesian axes with x ∥ a and z ∥ c*, of the cell averaged over the point group. */

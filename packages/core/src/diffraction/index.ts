@@ -45,7 +45,7 @@ export {
 export { type LineForm, type LineSquare, lineForm, lineForms, lineSquares, quadraticForm } from "./powder-lines.js";
 export { type LineMembers, lineMembers, rotationNumbers, rowTimesNumbers } from "./satellite-members.js";
 export { type ScatteringLength, scatteringLength } from "./scattering-lengths.js";
-export { spaceExtinctions } from "./space-extinctions.js";
+export { type SpaceExtinctions, spaceExtinctions } from "./space-extinctions.js";
 export {
   addChirality,
   addSquares,

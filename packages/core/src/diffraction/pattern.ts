@@ -42,6 +42,7 @@ export function integratedIntensity(
   return square * lorentzFactor(geometry, q) * displacementFactor(displacement, q);
 }
 
+/** Range, step and width of a simulated pattern, degrees 2θ, and the wavelength in Å. */
 export interface PatternOptions {
   readonly wavelengthAngstrom: number;
   readonly fromDeg: number;

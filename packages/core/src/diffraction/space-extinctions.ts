@@ -6,6 +6,14 @@ import type { MomentSpace } from "./moment-space.js";
 import type { LineMembers } from "./satellite-members.js";
 import { basisFactors, magneticLengthPerMagneton, prepareSpace } from "./structure-factors.js";
 
+/** Whether lines or vectors vanish for every arrangement of a space. */
+export interface SpaceExtinctions {
+  /** All vectors of a powder line on all waves. */
+  readonly line: (line: SatelliteLine) => boolean;
+  /** One vector Q = H + k of a wave, in a*, b*, c*. */
+  readonly vector: (wave: number, q: Triple) => boolean;
+}
+
 /**
  * Tells of lines and single vectors whether they vanish for every arrangement of a space (of a configuration): F⊥ is
  * linear in the amplitudes, so that it does exactly when it does for each of them alone. The moments of configurations come as
@@ -16,7 +24,7 @@ export function spaceExtinctions(
   geometry: ScatteringGeometry,
   members: LineMembers,
   space: MomentSpace,
-): { readonly line: (line: SatelliteLine) => boolean; readonly vector: (wave: number, q: Triple) => boolean } {
+): SpaceExtinctions {
   const formFactor = magneticFormFactor({ constant: 1 });
   const prepared = prepareSpace(geometry, { ...space, atoms: space.atoms.map((atom) => ({ ...atom, formFactor })) });
   const sizes = space.basis.map(

@@ -162,6 +162,9 @@ export interface MagneticStructureFactor {
 }
 
 /**
+ * F(Q) and F⊥(Q) of one arrangement in 10⁻¹² cm per primitive cell, `F(Q) = Σ p f S exp(2πi Q·r)` (docs/conventions.md,
+ * Moments and phases), with |F⊥|² and the chiral term (M. Blume, Phys. Rev. 130 (1963) 1670).
+ *
  * @param q H + k of wave `wave`, in a*, b*, c*
  */
 export function magneticStructureFactor(

@@ -15,6 +15,7 @@ export class KvaneError extends Error {
     this.problems = problems;
   }
 
+  /** The code of the first problem. */
   get code(): ProblemCode {
     return this.problems[0]?.code ?? "internal-fault";
   }

@@ -21,6 +21,7 @@ export interface Problem {
   readonly remedy: string | null;
 }
 
+/** The place of a problem that has none: every part null. */
 export const nowhere: Place = { file: null, line: null, column: null, path: null, argument: null };
 
 /** What may be said about a problem beside its code and message. */

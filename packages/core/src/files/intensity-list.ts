@@ -19,6 +19,7 @@ export interface ListedIntensity {
   readonly line: number;
 }
 
+/** A list of integrated intensities or |F|² as it was read. */
 export interface IntensityList {
   readonly kind: PeakKind;
   readonly wavelengthAngstrom: number | null;

@@ -10,6 +10,7 @@ import { isPosition, noteDecimalComma, readCells } from "./peak-values.js";
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
 import { readableText } from "./readable-text.js";
 
+/** How a list of peaks is to be read; what is left out the header of the list must say. */
 export interface PeakListOptions {
   /** Name of the file, for messages. */
   readonly file: string;

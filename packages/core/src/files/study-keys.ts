@@ -42,6 +42,7 @@ export const studyKeys = {
   impurities: ["name", "group", "cell"],
 } as const;
 
+/** The name of a section of a study, `""` for the top. */
 export type StudySectionName = keyof typeof studyKeys;
 
 /** The sections that have the key, as a hint where it stands in the wrong one. */

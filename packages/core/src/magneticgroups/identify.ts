@@ -23,6 +23,7 @@ import { rowsOfNumber, type StoredRow } from "./stored-rows.js";
 import { nameOf } from "./table.js";
 import type { MagneticGroup, MagneticGroupName } from "./types.js";
 
+/** The name of a magnetic group and the way to its BNS setting. */
 export interface IdentifiedMagneticGroup {
   readonly name: MagneticGroupName;
   /** From the axes of the group to those of the BNS setting, where it has exactly the operators of the table. */

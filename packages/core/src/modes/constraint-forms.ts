@@ -17,6 +17,7 @@ export interface ConstraintTexts {
   readonly crystal: readonly string[] | null;
 }
 
+/** How constraint tables are written: with a cell also along unit vectors, in μB. */
 export interface ConstraintOptions {
   readonly convention?: FourierConvention;
   readonly cell?: Cell | null;

@@ -27,6 +27,7 @@ export interface FourierConvention {
   readonly factor: "one" | "half";
 }
 
+/** The convention of this library: M = S exp(−2πi k·T) + c.c., phases by lattice translations, no factor (docs/conventions.md). */
 export const ownConvention: FourierConvention = { exponent: "minus", phase: "lattice", factor: "one" };
 
 /** A component in kvane's convention, written in another one. Exact. */

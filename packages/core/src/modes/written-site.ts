@@ -17,6 +17,7 @@ export interface WritingConvention extends FourierConvention {
 /** kvane's own: `M = S e^{−2πi k·T} + c.c.` in lattice components. */
 export const ownWriting: WritingConvention = { ...ownConvention, components: "lattice" };
 
+/** In which convention of Fourier components modes are written, and whether on every arm. */
 export interface WritingOptions {
   readonly convention: WritingConvention;
   /** Without a cell what needs one is null; crystal and Cartesian components cannot do without. */
@@ -39,6 +40,7 @@ export interface WrittenMode {
   readonly numbers: readonly (readonly (readonly [number, number])[])[] | null;
 }
 
+/** The modes of one irrep on a site, in the convention asked for. */
 export interface WrittenIrrep {
   readonly part: IrrepModes;
   readonly modes: readonly WrittenMode[];
@@ -49,6 +51,7 @@ export interface WrittenIrrep {
   readonly sizes: MomentSizes | null;
 }
 
+/** The mode vectors of one arm of the star, in the convention asked for. */
 export interface WrittenArm {
   readonly arm: WaveVector;
   readonly operator: number;
@@ -62,6 +65,7 @@ export interface WrittenSite {
   readonly arms: readonly WrittenArm[] | null;
 }
 
+/** The modes of a site as they are printed: basis vectors and constraint tables in the convention asked for. Throws `k-needs-values` where a convention needs numbers for the letters of k. */
 export function writtenSite(group: SpaceGroup, site: SiteModes, options: WritingOptions): WrittenSite {
   const { convention, cell } = options;
   const lengths = cell && axisLengths(group, cell);

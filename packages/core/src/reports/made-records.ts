@@ -19,6 +19,7 @@ export async function configurationsRecord(
   return (await import("./building/configurations.js")).configurationsRecord(set, cell, sites);
 }
 
+/** The record of decomposed moments; its maker is loaded only when it is asked for. */
 export async function decomposeRecord(
   group: SpaceGroup,
   cell: Cell,

@@ -14,6 +14,7 @@ export async function reportSvg(answer: Envelope): Promise<string | null> {
 /** The forms that a report has, by the ending of its file. */
 const forms = { ".html": "html", ".htm": "html", ".md": "markdown", ".txt": "text", ".json": "json" } as const;
 
+/** Forms in which an answer can be written. */
 export type ReportForm = (typeof forms)[keyof typeof forms];
 
 /** The endings that `reportForm` knows. */

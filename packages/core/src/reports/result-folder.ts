@@ -1,4 +1,5 @@
 import { cifCode } from "./cif-code.js";
+import { cifObstacle } from "./cif-obstacle.js";
 import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
 import { fittedMomentsCsv, patternCsv, rankingCsv } from "./csv/weigh-table.js";
 import { type DrawnRun, figureNames } from "./document/figure-names.js";
@@ -8,6 +9,7 @@ import type { AnyConfiguration, ConfigurationsRecord } from "./records/configura
 import type { RunRecord } from "./records/run.js";
 import { reportText } from "./text/report-text.js";
 
+/** A file of the result folder. */
 export interface ResultFile {
   readonly name: string;
   readonly text: string;
@@ -24,7 +26,7 @@ export function resultFileNames(record: DrawnRun): string[] {
     ...record.branches.flatMap(({ satellites, configurations, weigh }, index) => [
       `branch-${index + 1}-modes.csv`,
       ...(configurations ? [`branch-${index + 1}-configurations.csv`] : []),
-      ...cifNames(configurations, index),
+      ...writtenOnes(configurations).map((one) => cifName(one, index)),
       ...(satellites ? [`branch-${index + 1}-satellites.csv`] : []),
       ...(weigh ? [`branch-${index + 1}-weights.csv`] : []),
       ...(weigh ? [`branch-${index + 1}-fitted-moments.csv`] : []),
@@ -45,10 +47,10 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
     { configurations, weigh }: RunRecord["branches"][number],
     branch: number,
   ): (readonly [string, string])[] =>
-    cifNames(configurations, branch).map((name, index): readonly [string, string] => {
+    writtenOnes(configurations).map((one): readonly [string, string] => {
       const all = configurations as ConfigurationsRecord;
-      const one = all.configurations[index] as AnyConfiguration;
-      return [name, configurationCif(all, one, "2.0", weigh && fittedMoments(weigh, one.id)) ?? ""];
+      const text = configurationCif(all, one, "2.0", weigh && fittedMoments(weigh, one.id));
+      return [cifName(one, branch), text ?? ""];
     });
   const texts = new Map([
     ...documentFiles(answer),
@@ -77,8 +79,13 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
   });
 }
 
-/** One magnetic CIF for each configuration, where the cell is known. */
-function cifNames(configurations: ConfigurationsRecord | null, branch: number): string[] {
-  if (configurations === null || configurations.cell === null) return [];
-  return configurations.configurations.map(({ id }) => `branch-${branch + 1}-${cifCode(id)}.mcif`);
+/** Those that a magnetic CIF can be written of. */
+function writtenOnes(configurations: ConfigurationsRecord | null): AnyConfiguration[] {
+  return (configurations?.configurations ?? []).filter(
+    (one) => cifObstacle(configurations as ConfigurationsRecord, one) === null,
+  );
+}
+
+function cifName({ id }: AnyConfiguration, branch: number): string {
+  return `branch-${branch + 1}-${cifCode(id)}.mcif`;
 }

@@ -26,6 +26,7 @@ export interface Peak {
   readonly line: number;
 }
 
+/** Peaks as they were read, and how. */
 export interface PeakList {
   readonly kind: PeakKind;
   readonly wavelengthAngstrom: number | null;
@@ -69,6 +70,7 @@ export interface SearchOptions {
   readonly severalVectors?: boolean;
 }
 
+/** Another phase in the sample: peaks on its lines are set aside. */
 export interface ImpurityPhase {
   readonly name: string;
   readonly group: SpaceGroup;
@@ -124,6 +126,7 @@ export interface EvidenceCharges {
   readonly tuning: number;
 }
 
+/** How evidence reads: above 3 `found`, above 0 `weak`, else `not informative` (docs/search.md). */
 export type EvidenceReading = "found" | "weak" | "not informative";
 
 /** Log-odds of the peaks being lines of this k against being chance: above 3 found, 0 to 3 weak, below 0 no news. */
@@ -347,6 +350,7 @@ export interface SetAside {
   readonly because: string;
 }
 
+/** All that a search for k gives: candidates, certificate, flags and what could not be told apart. */
 export interface SearchResult {
   /** By falling evidence. */
   readonly candidates: readonly Candidate[];

@@ -90,6 +90,7 @@ export function fromPrimitiveRow(lattice: Lattice, kappa: RationalVector): Ratio
   return rowTimes(kappa, invert(latticeMatrix(lattice)));
 }
 
+/** Whether a vector (fractions of the axes of the setting) is a translation of the lattice; exact. */
 export function isLatticeVector(lattice: Lattice, x: RationalVector): boolean {
   return toPrimitiveColumn(lattice, x).every(isInteger);
 }

@@ -71,6 +71,7 @@ export function firstText(reader: BlockReader, ...names: readonly string[]): Cif
 export interface CifRow {
   /** Offset of the row's first value, for its place. */
   readonly start: number;
+  /** The value of a name, null where the loop has no such column. */
   readonly value: (name: string) => CifValue | null;
 }
 

@@ -51,6 +51,7 @@ export interface CifLoop {
 /** A value that was read. Line and column count from 1. */
 export type CifValue = CifText | CifList | CifTable;
 
+/** A value of a CIF as text: what stands in the file between its delimiters, with its place. */
 export interface CifText {
   readonly shape: "text";
   /** How it was written: only a bare `?` is unknown, only a bare `.` inapplicable, only a bare word a number. */

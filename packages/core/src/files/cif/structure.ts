@@ -34,6 +34,7 @@ export interface CifStructure {
 /** `fit` is the cell held against the group. */
 export type CifPart = "symmetry" | "cell" | "fit" | "sites";
 
+/** What reading a nuclear structure noticed: what was assumed and what to be warned of. */
 export interface CifNotes {
   readonly assumed: readonly Assumption[];
   readonly warnings: readonly Problem[];

@@ -10,6 +10,20 @@ type Triple = readonly [number, number, number];
  * the magnetic dictionary: x along a, z along c*; spherical: polar angle from +z, azimuth from +x about +z.
  */
 export function momentIn(row: CifRow, cell: Cell, where: Partial<Place>, problems: Problem[]): Triple {
+  const moment = describedMoment(row, cell, where, problems);
+  if (moment.every(Number.isFinite)) return moment;
+  problems.push(
+    problem("cif-value", "the components of a moment are beyond the range of numbers", {
+      where,
+      expected: "moments in μB, angles in degrees",
+      found: "a value too large to reckon with",
+      remedy: "correct the components",
+    }),
+  );
+  return [0, 0, 0];
+}
+
+function describedMoment(row: CifRow, cell: Cell, where: Partial<Place>, problems: Problem[]): Triple {
   const read = (prefix: string, names: readonly string[]): number[] | null => {
     const values = names.map((name) => numberOf(row.value(`_atom_site_moment_${prefix}_${name}`))?.value ?? null);
     return values.every((value) => value !== null) ? (values as number[]) : null;

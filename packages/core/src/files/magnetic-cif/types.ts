@@ -21,6 +21,7 @@ export interface MagneticCif {
   readonly atoms: readonly MagneticCifAtom[];
 }
 
+/** The magnetic space group of a commensurate structure as its file has it. */
 export interface CommensurateSymmetry {
   readonly kind: "commensurate";
   readonly bns: { readonly number: string; readonly symbol: string };
@@ -33,6 +34,7 @@ export interface CommensurateSymmetry {
   readonly centrings: readonly string[];
 }
 
+/** The magnetic superspace group of a modulated structure as its file has it. */
 export interface ModulatedSymmetry {
   readonly kind: "modulated";
   readonly pointGroup: string | null;
@@ -43,6 +45,7 @@ export interface ModulatedSymmetry {
   readonly centrings: readonly string[];
 }
 
+/** An atom of a magnetic CIF: fractional coordinates of the file's axes; a moment or null. */
 export interface MagneticCifAtom {
   readonly label: string;
   /** Element symbol, with the charge where it is known: `Fe3+`. */
@@ -53,6 +56,7 @@ export interface MagneticCifAtom {
   readonly moment: MagneticCifMoment | null;
 }
 
+/** The moment of an atom in μB along the unit vectors of the axes, and the waves of a modulated one. */
 export interface MagneticCifMoment {
   /** μB along the unit vectors of the cell's axes: the moment, or the mean moment of a modulated one. */
   readonly crystal: readonly number[];

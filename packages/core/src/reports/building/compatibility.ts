@@ -6,7 +6,11 @@ import type { CompatibilityRecord, NamedIrrepRecord, PartRecord } from "../recor
 import { complexRecord } from "./complex.js";
 import { groupRecord, littleGroupRecord, operatorText } from "./names.js";
 
-/** @param from the k as it was given; `found` starts at the arm of its star that lies on the line or plane */
+/**
+ * The record of compatibility relations for JSON and text.
+ *
+ * @param from the k as it was given; `found` starts at the arm of its star that lies on the line or plane
+ */
 export function compatibilityRecord(group: SpaceGroup, from: WaveVector, found: Compatibility): CompatibilityRecord {
   const { to } = found;
   const dimensionOf = (label: string) => to.irreps.find((irrep) => irrep.label === label)?.dimension ?? 0;

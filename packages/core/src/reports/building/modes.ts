@@ -26,6 +26,7 @@ import { matrixRecords } from "./complex.js";
 import { cellRecord, groupRecord, littleGroupRecord, operatorText, positionRecord } from "./names.js";
 import { irrepNumbers } from "./symmetry.js";
 
+/** The record of the modes of all sites for JSON and text. */
 export function modesRecord(
   group: SpaceGroup,
   found: SmallIrreps,

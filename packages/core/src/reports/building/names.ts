@@ -14,6 +14,7 @@ export function groupRecord({ name }: SpaceGroup): GroupRecord {
   };
 }
 
+/** A cell for JSON: Å and degrees. */
 export function cellRecord({ a, b, c, alpha, beta, gamma }: Cell): CellRecord {
   return { a, b, c, alpha, beta, gamma };
 }

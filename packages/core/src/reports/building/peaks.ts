@@ -27,6 +27,7 @@ import type {
 } from "../records/search.js";
 import { cellRecord, groupRecord } from "./names.js";
 
+/** The record of a list of satellites for JSON, text and CSV. */
 export function satellitesRecord(
   group: SpaceGroup,
   cell: Cell,
@@ -68,6 +69,7 @@ function satelliteRecord(line: SatelliteReflection, extinctFor: readonly string[
   };
 }
 
+/** What lies on a position, for JSON. */
 export function overlapRecord(one: Overlap): OverlapRecord {
   return {
     with: one.with,
@@ -96,6 +98,7 @@ export function peaksRecord(peaks: PeakList, file: string | null): PeaksRecord {
   };
 }
 
+/** The record of a search for k for JSON, text and CSV. */
 export function searchRecord(
   group: SpaceGroup,
   cell: Cell,

@@ -17,6 +17,7 @@ import { complexRecord } from "./complex.js";
 import { groupRecord, littleGroupRecord } from "./names.js";
 import { fullIrrepsRecord, minusKRelationRecord } from "./relations.js";
 
+/** The record of the operators of a group for JSON and text. */
 export function opsRecord(group: SpaceGroup): OpsRecord {
   const operators = operatorsModuloIntegers(group);
   return {
@@ -53,7 +54,11 @@ export function starRecord(
   };
 }
 
-/** @param full the irreps of the whole space group, where they were asked for */
+/**
+ * The record of the small irreps of a k for JSON and text.
+ *
+ * @param full the irreps of the whole space group, where they were asked for
+ */
 export function irrepsRecord(
   group: SpaceGroup,
   found: SmallIrreps,

@@ -58,12 +58,14 @@ export interface ParentSiteRecord {
   readonly largestMoment: number | null;
 }
 
+/** An irrep that may come with the order. */
 export interface SecondaryIrrepRecord {
   readonly label: string;
   readonly k: KRecord;
   readonly parameters: number;
 }
 
+/** One commensurate configuration with its magnetic group, sites and consequences. */
 export interface ConfigurationRecord {
   readonly id: string;
   readonly irreps: readonly string[];
@@ -144,6 +146,7 @@ export interface ModulatedRecord {
   readonly piezomagnetic: PropertyRecord | null;
 }
 
+/** A configuration of a commensurate or of an incommensurate k. */
 export type AnyConfiguration = ConfigurationRecord | ModulatedRecord;
 
 /** Result of `kvane configurations`. */

@@ -106,6 +106,7 @@ export interface SeparationRecord {
   readonly toldApart: boolean;
 }
 
+/** One k that explains peaks: how many, how well, and what speaks for it. */
 export interface CandidateRecord {
   readonly k: KRecord;
   /** The plainest of all k + H, H a reciprocal lattice vector. */

@@ -49,6 +49,7 @@ export interface WeighIonRecord {
   readonly limit: number | null;
 }
 
+/** The fitted moment of one atom of the primitive cell; μB, or relative where no scale is known. */
 export interface WeighMomentRecord {
   readonly label: string;
   /** Of the atom in the primitive cell. */

@@ -41,7 +41,9 @@ export function phasesText({ needsSecondOrderParameter, freePhases, magneticGrou
   if (needsSecondOrderParameter)
     return `${counted(freePhases, "phase")} between copies free: needs a second order parameter of the same symmetry`;
   if (freePhases > 0) return `${counted(freePhases, "phase")} between amplitudes free`;
-  const reversed = magneticGroup.superspace.operators.some((operator) => (operator.split(",")[3] ?? "").includes("-x4"));
+  const reversed = magneticGroup.superspace.operators.some((operator) =>
+    (operator.split(",")[3] ?? "").includes("-x4"),
+  );
   return reversed ? "locked by an operator that takes k to −k" : "none but the common phase of the wave";
 }
 
