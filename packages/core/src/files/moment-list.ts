@@ -48,9 +48,10 @@ export function parseMomentList(text: string, file: string): readonly ListedMome
   if (problems.length === 0 && moments.length === 0)
     problems.push(
       problem("file-empty", "the list has no moments", {
-        where: { file },
+        where: { file, line: 1, column: 1 },
         expected: "rows of label x y z mx my mz",
-        found: "none",
+        found: "no row with numbers",
+        remedy: "write one atom a row, for example Fe1 0 0 1/2 0 0 4.1",
       }),
     );
   if (problems.length > 0) throw new KvaneError(problems.slice(0, mostProblems));
@@ -71,7 +72,10 @@ function hasDecimalComma(row: string): boolean {
 /** A decimal, or a fraction of two integers. */
 function numberOf(word: string): number | null {
   const fraction = /^([+-]?\d+)\/(\d+)$/.exec(word);
-  if (fraction) return Number(fraction[2]) === 0 ? null : Number(fraction[1]) / Number(fraction[2]);
+  if (fraction) {
+    const quotient = Number(fraction[1]) / Number(fraction[2]);
+    return Number.isFinite(quotient) ? quotient : null;
+  }
   const number = readNumber(word);
   return number === null ? null : number.value;
 }

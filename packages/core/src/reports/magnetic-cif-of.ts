@@ -1,6 +1,7 @@
 import { type CifVersion, type MagneticCif, magneticCifText } from "../files/index.js";
 import { parseRational, toNumber } from "../numbers/index.js";
 import { cifCode } from "./cif-code.js";
+import { cifObstacle } from "./cif-obstacle.js";
 import type { CellRecord } from "./records/common.js";
 import type {
   AnyConfiguration,
@@ -21,7 +22,7 @@ export interface FittedMoments {
 
 /**
  * One configuration as a magnetic CIF in its child cell. The irreps leave amplitudes free: without fitted ones the moments are
- * one generic choice of them, and the file says so. Null without a cell, which a CIF cannot do without.
+ * one generic choice of them, and the file says so. Null where something stands in the way (`cifObstacle`).
  */
 export function configurationCif(
   record: ConfigurationsRecord,
@@ -29,16 +30,14 @@ export function configurationCif(
   version: CifVersion,
   fitted: FittedMoments | null = null,
 ): string | null {
+  if (cifObstacle(record, one) !== null) return null;
   if ("superspace" in one.magneticGroup) {
     const { cell } = record;
-    const own = one as ModulatedRecord;
-    return cell === null ? null : magneticCifText(modulatedContent(record, own, cell, fitted), version);
+    return cell && magneticCifText(modulatedContent(record, one as ModulatedRecord, cell, fitted), version);
   }
   const own = one as ConfigurationRecord;
   const { cell } = own.magneticGroup;
-  return cell === null || own.notWritten !== null
-    ? null
-    : magneticCifText(contentOf(record, own, cell, fitted), version);
+  return cell && magneticCifText(contentOf(record, own, cell, fitted), version);
 }
 
 /** The fit of a configuration as its file has it; null where it was struck out, or sizes have no unit. */

@@ -1,6 +1,7 @@
 import { fail } from "../../errors/index.js";
 import type { CifVersion } from "../../files/index.js";
 import {
+  type AnyConfiguration,
   type ConfigurationsRecord,
   configurationCif,
   type ExportRecord,
@@ -20,14 +21,32 @@ export async function exportCommand(work: Work): Promise<ExportRecord> {
   const weigh = work.request.fitted === true ? await weighCommand(work) : null;
   if (weigh !== null && !weigh.ranking.some(({ id }) => id === one.id)) refuseUnfitted(weigh, one.id);
   const cif = await configurationCif(record, one, version, weigh);
-  if (cif === null)
+  if (cif === null) refuseUnwritten(record, one);
+  return { configuration: one.id, cifVersion: version, cif };
+}
+
+/** Without the cell, with letters in the k of a modulated structure, or with moments too many, there is no CIF. */
+function refuseUnwritten({ cell, k }: ConfigurationsRecord, one: AnyConfiguration): never {
+  if (cell === null)
     fail("missing-argument", "a CIF needs the unit cell", {
       where: { argument: argumentNames.cell },
       expected: '--cell "a b c alpha beta gamma" in Å and degrees',
       found: "nothing",
       remedy: "give --cell, or the cell in the study",
     });
-  return { configuration: one.id, cifVersion: version, cif };
+  if ("superspace" in one.magneticGroup)
+    fail("k-needs-values", `a CIF needs a number for every letter of ${k.components.join(",")}`, {
+      where: { argument: argumentNames.k },
+      expected: "fractions or decimals, such as 0,0.472,0",
+      found: k.components.join(","),
+      remedy: "give numbers in place of the letters",
+    });
+  fail("invalid-argument", `the moments of ${one.id} are not written out`, {
+    where: { argument: argumentNames.limit },
+    expected: "a limit that its atoms and amplitudes do not exceed",
+    found: "notWritten" in one ? (one.notWritten ?? one.id) : one.id,
+    remedy: "give a higher --limit",
+  });
 }
 
 function refuseUnfitted({ struckOut, ranking }: WeighRecord, id: string): never {

@@ -4,6 +4,7 @@ import type { WeighRecord } from "../../reports/index.js";
 import { cellFor, writtenCell } from "../inputs/cell-input.js";
 import { configurationOptionsOf } from "../inputs/configurations-input.js";
 import { intensitiesOf } from "../inputs/intensities-input.js";
+import { argumentNames } from "../request.js";
 import { madeConfigurations } from "../study/configurations-for.js";
 import { findK } from "../study/find-k.js";
 import { readStudy, type StudyInputs } from "../study/read-study.js";
@@ -30,7 +31,8 @@ async function oneK(work: Work, inputs: StudyInputs): Promise<WaveVector> {
   const { followed, notFollowed, searched } = await findK(work, inputs, 1);
   const [first] = followed;
   if (first === undefined)
-    fail("no-candidate", "no wave vector was found to weigh configurations of", {
+    fail("missing-argument", "no wave vector was found to weigh configurations of", {
+      where: { argument: argumentNames.k },
       expected: "a k in the study, or peaks that one explains",
       found: "none",
       remedy: "give --k, or look at `kvane locate` first",
@@ -39,6 +41,7 @@ async function oneK(work: Work, inputs: StudyInputs): Promise<WaveVector> {
   const text = formatWaveVector(k);
   if (numericWaveVector(k) === null)
     fail("k-needs-values", `intensities need a number for every letter of ${text}`, {
+      where: { argument: argumentNames.k },
       expected: "fractions or decimals, such as 0,0.472,0",
       found: text,
       remedy: "give numbers in place of the letters",

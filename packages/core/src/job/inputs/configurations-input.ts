@@ -15,6 +15,40 @@ export function configurationOptionsOf(request: Request): ConfigurationOptions {
   };
 }
 
+/** What can be chosen from: the irreps of k, the sites and how many arms the star has. */
+export interface ConfigurationChoices {
+  readonly irreps: readonly string[];
+  readonly sites: readonly string[];
+  readonly arms: number;
+}
+
+/** Refuses names that are none of those, with the option that they stand in. */
+export function checkChoices({ arms, together, onSites }: ConfigurationOptions, choices: ConfigurationChoices): void {
+  const noIrrep = (label: string) => `k has no irrep \`${label}\``;
+  checkNames("together", (together ?? []).flat(), choices.irreps, noIrrep);
+  checkNames("onSites", Object.keys(onSites ?? {}), choices.sites, (label) => `there is no site \`${label}\``);
+  checkNames("onSites", Object.values(onSites ?? {}).flat(), choices.irreps, noIrrep);
+  const numbers = typeof arms === "object" ? arms.map((index) => String(index + 1)) : [];
+  const known = Array.from({ length: choices.arms }, (_, index) => String(index + 1));
+  checkNames("arms", numbers, known, (number) => `the star has no arm ${number}`);
+}
+
+function checkNames(
+  field: "together" | "onSites" | "arms",
+  names: readonly string[],
+  known: readonly string[],
+  message: (name: string) => string,
+): void {
+  const wrong = names.find((name) => !known.includes(name));
+  if (wrong !== undefined)
+    fail("invalid-argument", message(wrong), {
+      where: { argument: argumentNames[field] },
+      expected: known.join(", "),
+      found: wrong,
+      remedy: "take one of those",
+    });
+}
+
 /** `pair`, `all`, or numbers of arms as the text counts them, from 1. */
 function armsOf({ arms }: Request): ArmChoice {
   const text = arms?.trim() ?? "pair";

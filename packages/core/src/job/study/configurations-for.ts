@@ -1,9 +1,10 @@
 import { type ConfigurationOptions, type ConfigurationSet, configurationsOf } from "../../configurations/index.js";
 import { smallIrreps } from "../../irreps/index.js";
-import type { WaveVector } from "../../kvectors/index.js";
+import { star, type WaveVector } from "../../kvectors/index.js";
 import { type SiteModes, siteModes } from "../../modes/index.js";
 import { type ConfigurationsRecord, configurationsRecord } from "../../reports/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../../spacegroups/index.js";
+import { checkChoices } from "../inputs/configurations-input.js";
 import { parentSitesOf } from "../inputs/parent-sites.js";
 import type { GivenSite } from "../inputs/site-input.js";
 import type { Work } from "../work.js";
@@ -30,6 +31,11 @@ export async function madeConfigurations(
   options: ConfigurationOptions,
 ): Promise<MadeConfigurations> {
   const irreps = smallIrreps(group, k);
+  checkChoices(options, {
+    irreps: irreps.irreps.map(({ label }) => label),
+    sites: orbits.map(({ label }) => label),
+    arms: star(group, k).arms.length,
+  });
   const modes = orbits.map((orbit) => siteModes(group, irreps, orbit));
   return { set: await configurationsOf(group, irreps, modes, cell, options, host), modes };
 }
