@@ -1,6 +1,11 @@
 import type { AtlasRecord } from "../records/atlas.js";
 import type { CompatibilityRecord } from "../records/compatibility.js";
-import { type ConfigurationsRecord, commensurateOnes, modulatedOnes } from "../records/configurations.js";
+import {
+  type ConfigurationsRecord,
+  commensurateOnes,
+  modulatedOnes,
+  type PropertyRecord,
+} from "../records/configurations.js";
 import type { ModesRecord } from "../records/modes.js";
 import type { OverlapRecord, SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
@@ -148,7 +153,12 @@ export function configurationsCsv(record: ConfigurationsRecord): string {
   const header = ["configuration", "irreps", "direction", "bns_number", "bns_symbol", "og_number", "cell_from_parent"];
   const site = ["site", "parent_site", "x", "y", "z", "moment_lattice", "form_lattice", "form_crystal"];
   return csvText(
-    [...header, "index", "parameters_irreps", "parameters_group", ...site, "example_a", "example_b", "example_c"],
+    [
+      ...header,
+      ...["index", "parameters_irreps", "parameters_group", "net_moment", "polarization", "magnetoelectric"],
+      ...site,
+      ...["example_a", "example_b", "example_c"],
+    ],
     commensurateOnes(record).flatMap((one) =>
       one.sites.map((atom): CsvCell[] => [
         one.id,
@@ -161,6 +171,7 @@ export function configurationsCsv(record: ConfigurationsRecord): string {
         one.index,
         one.freeParameters.irreps,
         one.freeParameters.group,
+        ...[one.netMoment, one.polarization, one.magnetoelectric].map(formOfProperty),
         atom.label,
         atom.parentSite,
         ...atom.positionLattice,
@@ -171,6 +182,12 @@ export function configurationsCsv(record: ConfigurationsRecord): string {
       ]),
     ),
   );
+}
+
+/** Cartesian components as symbols, `0` where the group forbids it, nothing where it was not worked out. */
+function formOfProperty(property: PropertyRecord | null): string {
+  if (property === null) return "";
+  return property.form.every((entry) => entry === "0") ? "0" : `(${property.form.join(", ")})`;
 }
 
 /** One row for each site of each modulated configuration. */
