@@ -1,6 +1,6 @@
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
-import { parseCif, parseMomentList, readMagneticCif } from "@kvane/core/files";
+import { parseCif, parseMomentList, readCifStructure, readMagneticCif } from "@kvane/core/files";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "../cli/command.js";
 import { places, problemsOf } from "../support/problems-of.js";
@@ -8,6 +8,13 @@ import { root } from "../tools/paths.mjs";
 
 /** Inputs that the fuzz loops found, made small: each once broke a promise. */
 describe("found by fuzzing: files", () => {
+  test("coordinates in different loops are no atoms", async () => {
+    const text =
+      "data_a\nloop_\n_atom_site_fract_x\n0\nloop_\n_atom_site_label\n_atom_site_fract_y\n_atom_site_fract_z\nFe 0 0\n";
+    const { problems } = await readCifStructure(await parseCif(text, "a.cif"));
+    expect(places(problems.sites)).toEqual(["cif-missing 7:1"]);
+  });
+
   test("a moment beyond all numbers is refused with its place", async () => {
     const text = readFileSync(join(root, "test/fixtures/magnetic-cif/doubled-spherical.cif"), "utf8");
     const broken = text.replace(/^(Fe1c [\d.]+) \d+ /m, "$1 -1e308 ");

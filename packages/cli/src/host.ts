@@ -1,8 +1,9 @@
-import { readFileSync, statSync } from "node:fs";
+import { createReadStream, readFileSync, statSync } from "node:fs";
 import { join, resolve } from "node:path";
 import { fail, KvaneError, type Place } from "@kvane/core/errors";
 import type { JobHost, Request } from "@kvane/core/job";
 import { argumentNames, type RequestField } from "@kvane/core/job";
+import { boundedBytes, largestFile } from "./bounded-bytes.js";
 import type { Surroundings } from "./surroundings.js";
 import { systemFault } from "./system-faults.js";
 
@@ -28,7 +29,7 @@ export function commandHost(surroundings: Surroundings, progress: JobHost["progr
     signal: surroundings.signal,
     ...(progress ? { progress } : {}),
     readText: async (path) => {
-      const text = decoded(path === "-" ? await surroundings.standardInput() : bytesOf(path, surroundings), path);
+      const text = decoded(path === "-" ? await surroundings.standardInput() : await bytesOf(path, surroundings), path);
       texts.set(path, text);
       return text;
     },
@@ -54,14 +55,13 @@ function argumentText(request: Request, place: Place): string | null {
   return (value as readonly string[])[index]?.trim() ?? null;
 }
 
-/** Bytes. No text that kvane reads comes near it. */
-const largestFile = 256 * 1024 * 1024;
-
-function bytesOf(path: string, { folder }: Surroundings): Uint8Array {
+async function bytesOf(path: string, { folder }: Surroundings): Promise<Uint8Array> {
   try {
     const full = located(path, folder);
-    const { size } = statSync(full);
-    if (size > largestFile) refuseSize(path, size);
+    const found = statSync(full);
+    // A pipe or a device has no size; it may make one wait, and Ctrl-C is to be heard meanwhile.
+    if (!found.isFile() && !found.isDirectory()) return await boundedBytes(createReadStream(full));
+    if (found.size > largestFile) refuseSize(path, `${Math.ceil(found.size / 1024 / 1024)} MB`);
     return readFileSync(full);
   } catch (error) {
     if (error instanceof KvaneError) throw error;
@@ -83,11 +83,11 @@ function bytesOf(path: string, { folder }: Surroundings): Uint8Array {
   }
 }
 
-function refuseSize(path: string, size: number): never {
+function refuseSize(path: string, found: string): never {
   fail("file-too-large", `\`${path}\` is too large to be read`, {
     where: { file: path },
     expected: "a file of at most 256 MB",
-    found: `${Math.round(size / 1024 / 1024)} MB`,
+    found,
     remedy: "cut out the part that is meant, and leave images and raw data away",
   });
 }
@@ -98,10 +98,10 @@ function located(path: string, folder: string): string {
 }
 
 function decoded(bytes: Uint8Array, path: string): string {
+  if (bytes.length > largestFile) refuseSize(path, "more than that");
   try {
     return new TextDecoder("utf-8", { fatal: true }).decode(bytes);
   } catch {
-    if (bytes.length > largestFile) refuseSize(path, bytes.length);
     const { offset, line, column } = firstWrongByte(bytes);
     return fail("file-unreadable", `\`${path}\` is not text in UTF-8`, {
       where: { file: path, line, column },

@@ -2,18 +2,19 @@ import { removeUnfinished } from "./output.js";
 import { runCommand } from "./run-command.js";
 import { processSurroundings } from "./surroundings.js";
 
-/** Set by Ctrl-C; long work looks at it between its steps. */
+/** Set by Ctrl-C and by batch systems whose time is over; long work looks at it between its steps. */
 const signal = { aborted: false };
 const interrupted = 130;
 
-/** Milliseconds that work has to end by itself after Ctrl-C. */
+/** Milliseconds that work has to end by itself then. */
 const grace = 300;
 
-process.once("SIGINT", () => {
-  signal.aborted = true;
-  process.once("SIGINT", stop);
-  setTimeout(stop, grace).unref();
-});
+for (const name of ["SIGINT", "SIGTERM"] as const)
+  process.once(name, () => {
+    signal.aborted = true;
+    process.once(name, stop);
+    setTimeout(stop, grace).unref();
+  });
 
 function stop(): void {
   removeUnfinished();

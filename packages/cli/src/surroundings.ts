@@ -1,6 +1,7 @@
 import { writeSync } from "node:fs";
 import { type Problem, problem } from "@kvane/core/errors";
 import { exitStatusOf } from "@kvane/core/job";
+import { boundedBytes } from "./bounded-bytes.js";
 import { problemsText } from "./errors.js";
 import { systemFault } from "./system-faults.js";
 
@@ -30,11 +31,7 @@ export function processSurroundings(signal: { readonly aborted: boolean }): Surr
     get columns() {
       return process.stdout.isTTY === true ? process.stdout.columns : null;
     },
-    standardInput: async () => {
-      const parts: Uint8Array[] = [];
-      for await (const part of process.stdin) parts.push(part as Uint8Array);
-      return Buffer.concat(parts);
-    },
+    standardInput: () => boundedBytes(process.stdin),
     folder: process.cwd(),
     signal,
   };

@@ -51,6 +51,7 @@ const others = [
  */
 export function readSites(reader: BlockReader): CifSites {
   requireCoordinates(reader);
+  requireOneLoop(reader);
   const problems: Problem[] = [];
   const types = atomTypes(reader);
   const labels = new Map<string, number>();
@@ -90,6 +91,21 @@ function requireCoordinates(reader: BlockReader): void {
       expected: `${coordinates.join(", ")} in the loop of the atoms`,
       found: cartesian ? "Cartesian coordinates alone" : `no ${missing.join(", ")}`,
       remedy: "choose another block with --block, or give the sites beside the CIF: --site, `sites:` in the study",
+    }),
+  ]);
+}
+
+/** Columns of different loops have no rows together. */
+function requireOneLoop(reader: BlockReader): void {
+  const [first, ...more] = coordinates.map((name) => locate(reader, name));
+  const apart = more.find((one) => one?.loop !== first?.loop);
+  if (!apart) return;
+  throw new KvaneError([
+    problem("cif-missing", `${apart.name} stands in another loop than ${first?.name}`, {
+      where: placeIn(reader.document, apart.start),
+      expected: `${coordinates.join(", ")} in the loop of the atoms`,
+      found: "columns of different loops",
+      remedy: "put the three coordinates into one loop",
     }),
   ]);
 }
