@@ -65,7 +65,7 @@ export const optionSpecs = {
     repeatable: true,
   },
   onSites: { flags: "--on-site <SITE: IRREPS>", about: "irreps that a site may carry", repeatable: true },
-  limit: { flags: "--limit <N>", about: "most elements of the group modulo the magnetic lattice (20000)" },
+  limit: { flags: "--limit <N>", about: "most elements of the group modulo the magnetic lattice (10000)" },
   parent: { flags: "--parent <STUDY>", about: "study or CIF of the nuclear structure: group, cell and magnetic sites" },
   child: { flags: "--child <CHANGE>", about: '"2a,b,c;0,0,0": axes of the file in those of the parent' },
   configuration: { flags: "--configuration <ID>", about: "which one: Γ2.1, or 2.1 for short" },

@@ -58,7 +58,7 @@ function rankingBlocks(weigh: WeighRecord): Block[] {
   return [
     ...tableBlock(
       "Configurations by the Bayesian information criterion (BIC), best first; of two less than 6 apart the data prefer neither",
-      [">", "id", "irreps", ">χ²", ">χ²/dof", ">R", ">parameters", ">BIC", "not told from"],
+      [">rank", "id", "irreps", ">χ²", ">χ²/dof", ">R", ">parameters", ">BIC", "not told from"],
       weigh.ranking.map(rankingRow),
     ),
     ...tableBlock(
@@ -102,7 +102,7 @@ function momentBlocks({ relative, ranking, data }: WeighRecord, one: WeighedReco
   const blocks = [
     ...tableBlock(
       `Moments of ${one.id} (${relative ? "relative" : "μB"}), along the axes, in the cell at the origin`,
-      ["atom", "position", ">along a", ">along b", ">along c", ">size", ">limit / μB", ""],
+      ["atom", "position", ">along a", ">along b", ">along c", ">size", ">limit / μB", "remark"],
       one.moments.map((moment) => [
         moment.label,
         moment.position.map((entry) => plain(Number(entry.toFixed(4)))).join(", "),
