@@ -1,8 +1,11 @@
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
-import { parseCif, parseMomentList, readCifStructure, readMagneticCif } from "@kvane/core/files";
+import { problem } from "@kvane/core/errors";
+import { parseCif, parseMomentList, parseStudy, readCifStructure, readMagneticCif } from "@kvane/core/files";
+import { version } from "@kvane/core/job";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "../cli/command.js";
+import { schemaErrors } from "../cli/schemas.js";
 import { places, problemsOf } from "../support/problems-of.js";
 import { root } from "../tools/paths.mjs";
 
@@ -35,7 +38,43 @@ describe("found by fuzzing: files", () => {
   });
 });
 
+describe("found by fuzzing: drafts and schemas", () => {
+  test("a charge that no ion has is left out of a draft, which stays a study", async () => {
+    const text = readFileSync(join(root, "test/fixtures/cif/structures/ions.cif"), "utf8");
+    const broken = text.replace(/Fe3\+/g, "Fe222222+");
+    expect(broken).not.toBe(text);
+    const folder = scratchFolder({ "ions.cif": broken });
+    const { status, stdout } = await kvane(["study", "ions.cif"], { cwd: folder });
+    expect(status).toBe(0);
+    await parseStudy(stdout, "draft.yaml");
+  });
+
+  test.each(["constructor", "a\nb", "\u001b", ""])(
+    "the schema of %j, which is no command, allows no result",
+    (command) => {
+      expect(schemaErrors(command, { ...refused, command, result: {} })).not.toEqual([]);
+      expect(schemaErrors(command, { ...refused, command })).toEqual([]);
+    },
+  );
+  const refused = {
+    kvane: version,
+    format: 1,
+    input: {},
+    result: null,
+    errors: [problem("unknown-command", "there is no such command")],
+    warnings: [],
+    assumed: [],
+  };
+});
+
 describe("found by fuzzing: commands", () => {
+  test.each(["--k\n--k", "--a'b"])("an unknown option is named whole: %j", async (word) => {
+    const { status, stdout } = await run("run", "--example", word, "--json");
+    expect(status).toBe(2);
+    const [first] = JSON.parse(stdout).errors;
+    expect(first).toMatchObject({ code: "unknown-option", where: { argument: word.replace("\n", " ") } });
+  });
+
   const folder = scratchFolder();
   const run = (...words: string[]) => kvane([...words], { cwd: folder });
   const fe = ["62", "--k", "0,0,0", "--site", "Fe 0 0 0"];

@@ -16,7 +16,9 @@ if (!program) throw new Error("expected a TypeScript file to run");
 const folder = join(root, "node_modules/.cache/kvane");
 mkdirSync(folder, { recursive: true });
 const outfile = join(folder, `${basename(program, ".ts")}-${process.pid}.mjs`);
-await build({ ...testBundle(resolve(program)), outfile, sourcemap: "inline" });
+// Packages that are not modules ask for others by name while they are loaded.
+const banner = { js: 'import { createRequire } from "node:module"; const require = createRequire(import.meta.url);' };
+await build({ ...testBundle(resolve(program)), outfile, banner, sourcemap: "inline" });
 process.once("exit", () => rmSync(outfile, { force: true }));
 process.argv = [process.execPath, resolve(program), ...rest];
 process.setSourceMapsEnabled(true);

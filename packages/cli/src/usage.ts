@@ -14,12 +14,16 @@ export function usageProblem(error: unknown, words: readonly string[]): Problem 
 }
 
 function fromParser({ code, message }: CommanderError, words: readonly string[]): Problem {
-  const [text = "", ...more] = message.replace(/^error: /, "").split("\n");
-  const suggestion = /Did you mean (.*)\?/.exec(more.join(" "))?.[1] ?? null;
+  // A word of the line may have line ends of its own, so that only the last line can be told to be a suggestion.
+  const [whole, suggestion = null] = /\n\(Did you mean (.*)\?\)$/.exec(message) ?? [""];
+  const text = message
+    .slice(0, message.length - whole.length)
+    .replace(/^error: /, "")
+    .replace(/\s+/g, " ");
   const command = /^[a-z]/.test(words[0] ?? "") ? ` ${words[0]}` : "";
   const seeHelp = `see \`kvane${code === "commander.unknownCommand" ? "" : command} --help\` for what it takes`;
   const remedy = suggestion === null ? seeHelp : `did you mean ${suggestion.replace(/^one of /, "one of: ")}?`;
-  const named = /'([^']*)'/.exec(text)?.[1] ?? null;
+  const named = /'(.*)'/.exec(text)?.[1] ?? null;
   const found = named === null ? {} : { found: named };
   switch (code) {
     case "commander.unknownOption":

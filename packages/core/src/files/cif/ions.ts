@@ -14,9 +14,12 @@ export interface Ion {
 
 const written = /^([A-Za-z]{1,2}?)(?:\(?([+-]?)(\d*(?:\.\d*)?)([+-]?)\)?)$/;
 
+/** No ion of any element comes near it; a study takes charges of two digits. */
+const largestCharge = 99;
+
 /**
- * Reads a type symbol: `Fe3+`, `O2-`, `Fe+3`, `FE`, `D`, `Al0+` (which is `Al`). A charge that is no whole number is
- * left away. Null for what is no element: `Wat`, `OH`, `X`.
+ * Reads a type symbol: `Fe3+`, `O2-`, `Fe+3`, `FE`, `D`, `Al0+` (which is `Al`). A charge that is no whole number,
+ * or that no ion has, is left away. Null for what is no element: `Wat`, `OH`, `X`.
  */
 export function ionOfSymbol(symbol: string): Ion | null {
   const found = written.exec(symbol.trim().replaceAll("\u2212", "-"));
@@ -32,8 +35,9 @@ export function ionOfSymbol(symbol: string): Ion | null {
 }
 
 export function ionOf(element: string, charge: number | null): Ion {
-  const sign = charge === null || charge === 0 ? "" : charge > 0 ? "+" : "-";
   const size = Math.abs(charge ?? 0);
+  if (size > largestCharge) return ionOf(element, null);
+  const sign = charge === null || charge === 0 ? "" : charge > 0 ? "+" : "-";
   return { element, charge, text: sign === "" ? element : `${element}${size === 1 ? "" : size}${sign}` };
 }
 

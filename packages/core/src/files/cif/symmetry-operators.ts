@@ -89,8 +89,8 @@ export function groupOfOperators(reader: BlockReader, texts: readonly CifText[])
   }
   if (problems.length > 0) throw new KvaneError(problems);
   const group = closed(reader, triplets);
-  const order = operatorsModuloIntegers(group).length;
   const [first] = texts as [CifText];
+  const order = readingValue(reader, first, () => operatorsModuloIntegers(group).length);
   return {
     group,
     first,

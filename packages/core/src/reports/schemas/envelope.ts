@@ -42,9 +42,11 @@ export const describedCommands: readonly string[] = Object.keys(resultSchemas);
  * For a command that is not built the result can only be null.
  */
 export function answerSchema(command: string): JsonSchema {
+  const resultSchema = Object.hasOwn(resultSchemas, command) ? resultSchemas[command] : undefined;
   return {
     $schema: "https://json-schema.org/draft/2020-12/schema",
-    $id: `urn:kvane:format-1:${command}`,
+    // What is no command has no name to be known by: it may have any letters.
+    ...(resultSchema === undefined ? {} : { $id: `urn:kvane:format-1:${command}` }),
     title: `answer to kvane ${command}`,
     type: "object",
     required: ["kvane", "format", "command", "input", "result", "errors", "warnings", "assumed"],
@@ -56,7 +58,7 @@ export function answerSchema(command: string): JsonSchema {
         type: "object",
         additionalProperties: { anyOf: [{ type: ["string", "number", "boolean", "null"] }, list(text)] },
       },
-      result: nullable(resultSchemas[command] ?? nothing),
+      result: nullable(resultSchema ?? nothing),
       errors: list(shared("problem")),
       warnings: list(shared("problem")),
       assumed: list(shared("assumed")),
