@@ -18,6 +18,11 @@ describe("found by fuzzing: files", () => {
     expect(places(problems.sites)).toEqual(["cif-missing 7:1"]);
   });
 
+  test("a wrong Hall symbol of a CIF is refused where it is wrong", async () => {
+    const { problems } = await readCifStructure(await parseCif("data_a\n_space_group_name_Hall 'P 4q'\n", "a.cif"));
+    expect(places(problems.symmetry)).toEqual(["syntax 2:28"]);
+  });
+
   test("a moment beyond all numbers is refused with its place", async () => {
     const text = readFileSync(join(root, "test/fixtures/magnetic-cif/doubled-spherical.cif"), "utf8");
     const broken = text.replace(/^(Fe1c [\d.]+) \d+ /m, "$1 -1e308 ");

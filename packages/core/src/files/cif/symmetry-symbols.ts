@@ -39,8 +39,7 @@ export function symbolStatements(reader: BlockReader, cell: Cell | null): Symbol
   const add = (kind: SymbolKind, value: NamedText, coded: boolean, read: (value: CifText) => ParsedGroup): void => {
     statements.push({ kind, value, coded, read: () => readingValue(reader, value, () => read(value)) });
   };
-  for (const value of differing(reader, hallNames))
-    add("Hall symbol", value, true, ({ text }) => parseGroupWithNotes(`hall:${tidy(text)}`));
+  for (const value of differing(reader, hallNames)) add("Hall symbol", value, true, ({ text }) => readHall(tidy(text)));
   // A symbol with a code says more than the same one without: it is believed first.
   const symbols = differing(reader, symbolNames);
   const withCodeFirst = [...symbols.filter(hasCode), ...symbols.filter((value) => !hasCode(value))];
@@ -51,6 +50,23 @@ export function symbolStatements(reader: BlockReader, cell: Cell | null): Symbol
   for (const value of differing(reader, numberNames))
     add("number", value, code !== null, ({ text }) => withCode(text.trim(), code, cell));
   return statements;
+}
+
+const hallPrefix = "hall:";
+
+/** The group of a Hall symbol; columns in problems count from the start of the symbol. */
+function readHall(symbol: string): ParsedGroup {
+  try {
+    return parseGroupWithNotes(hallPrefix + symbol);
+  } catch (error) {
+    if (!(error instanceof KvaneError)) throw error;
+    throw new KvaneError(
+      error.problems.map((one) => {
+        const { column } = one.where;
+        return { ...one, where: { ...one.where, column: column && Math.max(1, column - hallPrefix.length) } };
+      }),
+    );
+  }
 }
 
 const hallNames = ["_space_group_name_Hall", "_symmetry_space_group_name_Hall"];
