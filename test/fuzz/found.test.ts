@@ -18,6 +18,11 @@ describe("found by fuzzing: files", () => {
     expect(places(problems.sites)).toEqual(["cif-missing 7:1"]);
   });
 
+  test("a block whose code begins with a blank of another script is found", async () => {
+    const document = await parseCif("#\\#CIF_2.0\ndata_\u00a0two\n_cell_length_a 5\n", "a.cif");
+    expect((await readCifStructure(document, "\u00a0two")).block).toBe("\u00a0two");
+  });
+
   test("a wrong Hall symbol of a CIF is refused where it is wrong", async () => {
     const { problems } = await readCifStructure(await parseCif("data_a\n_space_group_name_Hall 'P 4q'\n", "a.cif"));
     expect(places(problems.symmetry)).toEqual(["syntax 2:28"]);

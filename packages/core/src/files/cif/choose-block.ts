@@ -50,7 +50,11 @@ export function structureBlocks(document: CifDocument): CifBlock[] {
 
 function namedBlock({ blocks }: CifDocument, wanted: string): CifBlock {
   const plain = comparable(wanted.trim());
-  const found = blocks.find(({ code }) => comparable(code) === plain || `data_${comparable(code)}` === plain);
+  // CIF 2.0 has codes that begin with blanks of other scripts; nobody types them.
+  const found = blocks.find(({ code }) => {
+    const own = comparable(code.trim());
+    return own === plain || `data_${own}` === plain;
+  });
   if (found) return found;
   return fail("cif-block", `the CIF has no data block \`${wanted.trim()}\``, {
     where: { argument: "--block" },
