@@ -28,7 +28,7 @@ export async function commandPages(output) {
   /** @type {{answerSchema: (command: string) => object, describedCommands: readonly string[]}} */
   const { answerSchema, describedCommands } = await load("reports");
   return {
-    commands: await helpPages(output, Object.keys(commandTable), describedCommands),
+    commands: await helpPages(output, [...Object.keys(commandTable), "batch"], describedCommands),
     schemas: schemaPages(answerSchema, describedCommands),
   };
 }

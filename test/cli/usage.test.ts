@@ -1,4 +1,3 @@
-import { plannedCommands } from "@kvane/core/job";
 import { describedCommands } from "@kvane/core/reports";
 import { describe, expect, test } from "vitest";
 import { kvane, shellWords } from "./command.js";
@@ -24,12 +23,6 @@ describe("usage", () => {
     // With --json among the words the problem is there as JSON too.
     if (words.includes("--json")) expect(JSON.parse(stdout).errors[0].code).toBe(code);
     else expect(stdout).toBe("");
-  });
-
-  test.each(plannedCommands)("%s is known and said to be planned, exit status 1", async (command) => {
-    const { status, stderr } = await kvane([command, "62", "--k", "0,0,0"]);
-    expect(status).toBe(1);
-    expect(stderr).toContain("error[not-built]");
   });
 
   test("a Hall symbol or triplet that begins with a minus is a GROUP, wherever it stands", async () => {
@@ -81,10 +74,10 @@ describe("usage", () => {
 });
 
 describe("help", () => {
-  test("names every command, built or planned, within 100 columns", async () => {
+  test("names every command, within 100 columns", async () => {
     const { status, stdout } = await kvane(["--help"]);
     expect(status).toBe(0);
-    for (const command of [...describedCommands, ...plannedCommands]) expect(stdout).toContain(command);
+    for (const command of [...describedCommands, "batch"]) expect(stdout).toContain(command);
     expect(widest(stdout)).toBeLessThanOrEqual(100);
   });
 

@@ -1,7 +1,16 @@
 import type { OptionName } from "./options.js";
 
 /** What the first word behind a command is. */
-export type ArgumentKind = "group or study" | "study" | "cif" | "moments" | "scan" | "code" | "topic" | "shell";
+export type ArgumentKind =
+  | "group or study"
+  | "study"
+  | "cif"
+  | "moments"
+  | "scan"
+  | "code"
+  | "topic"
+  | "shell"
+  | "requests";
 
 /** A command as the command line shows it. */
 export interface CommandSpec {

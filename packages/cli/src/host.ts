@@ -17,6 +17,9 @@ export const exampleStudy = `${examplePrefix}study.yaml`;
 export const exampleStructure = `${examplePrefix}structure.cif`;
 export const exampleMoments = `${examplePrefix}moments.mcif`;
 
+/** Bundled requests for `kvane batch`. */
+export const exampleRequests = `${examplePrefix}requests.jsonl`;
+
 /** A host that reads files, and remembers what it read so that a problem can show its line. */
 export interface CommandHost extends JobHost {
   readonly sourceLine: (request: Request | null, place: Place) => string | null;
@@ -64,23 +67,39 @@ async function bytesOf(path: string, { folder }: Surroundings): Promise<Uint8Arr
     if (found.size > largestFile) refuseSize(path, `${Math.ceil(found.size / 1024 / 1024)} MB`);
     return readFileSync(full);
   } catch (error) {
-    if (error instanceof KvaneError) throw error;
-    const code = (error as NodeJS.ErrnoException).code ?? "";
-    if (code === "ENOENT" || code === "ENOTDIR" || code === "ENAMETOOLONG")
-      fail("file-not-found", `there is no file \`${path}\``, {
-        where: { file: path },
-        expected: "a file that exists",
-        found: "none",
-        remedy: "check the name; a name in a study counts from the folder of the study",
-      });
-    const { found } = systemFault(code);
-    return fail("file-unreadable", `\`${path}\` cannot be read`, {
-      where: { file: path },
-      expected: "a text file",
-      found,
-      remedy: code === "EISDIR" ? "name a file in it" : "check the file and its permissions",
-    });
+    return refuseReading(path, error);
   }
+}
+
+/** A file, or standard input (`-`), as it comes: of any size, never whole in memory. */
+export async function* partsOf(path: string, surroundings: Surroundings): AsyncGenerator<Uint8Array> {
+  const { inputParts, standardInput, folder } = surroundings;
+  try {
+    if (path !== "-") yield* createReadStream(located(path, folder));
+    else if (inputParts) yield* inputParts();
+    else yield await standardInput();
+  } catch (error) {
+    refuseReading(path, error);
+  }
+}
+
+function refuseReading(path: string, error: unknown): never {
+  if (error instanceof KvaneError) throw error;
+  const code = (error as NodeJS.ErrnoException).code ?? "";
+  if (code === "ENOENT" || code === "ENOTDIR" || code === "ENAMETOOLONG")
+    fail("file-not-found", `there is no file \`${path}\``, {
+      where: { file: path },
+      expected: "a file that exists",
+      found: "none",
+      remedy: "check the name; a name in a study counts from the folder of the study",
+    });
+  const { found } = systemFault(code);
+  return fail("file-unreadable", `\`${path}\` cannot be read`, {
+    where: { file: path },
+    expected: "a text file",
+    found,
+    remedy: code === "EISDIR" ? "name a file in it" : "check the file and its permissions",
+  });
 }
 
 function refuseSize(path: string, found: string): never {

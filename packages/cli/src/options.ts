@@ -102,6 +102,7 @@ export const optionSpecs = {
   },
   branches: { flags: "--branches <N>", about: "how many tied wave vectors are followed (3)" },
   example: { flags: "--example", about: "take the bundled example study" },
+  exampleRequests: { flags: "--example", about: "take the bundled example requests" },
   json: { flags: "--json", about: "print the answer as JSON" },
   csv: { flags: "--csv", about: "print the table as CSV" },
   svg: { flags: "--svg", about: "print the drawing as SVG" },

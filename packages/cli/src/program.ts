@@ -21,7 +21,6 @@ export interface ParsedLine {
 export function buildProgram(
   command: string | undefined,
   version: string,
-  planned: readonly string[],
   write: (text: string) => void,
   onCommand: (line: ParsedLine) => void,
 ): Command {
@@ -35,24 +34,10 @@ export function buildProgram(
     .configureHelp({ helpWidth })
     .configureOutput({ writeOut: write, writeErr: write, outputError: () => {}, getOutHelpWidth: () => helpWidth })
     .exitOverride()
-    .addHelpText(
-      "after",
-      `\nPlanned, not part of this version:\n${lines(planned)}\n\nTo begin with:\n  kvane run --example\n  kvane help topics`,
-    );
+    .addHelpText("after", "\nTo begin with:\n  kvane run --example\n  kvane help topics");
   const named = commandSpecs.filter(({ name }) => name === command);
   for (const spec of named.length > 0 ? named : commandSpecs) addCommand(program, spec, onCommand);
   return program;
-}
-
-/** Names separated by commas, a line no longer than the help. */
-function lines(names: readonly string[]): string {
-  const shown: string[] = [];
-  for (const name of names) {
-    const last = shown.at(-1);
-    if (last !== undefined && last.length + name.length + 3 <= helpWidth) shown[shown.length - 1] = `${last}, ${name}`;
-    else shown.push(`  ${name}`);
-  }
-  return shown.join(",\n");
 }
 
 const argumentTexts = {
@@ -64,6 +49,7 @@ const argumentTexts = {
   code: ["[CODE]", "code of a problem; without it all are listed"],
   topic: ["[TOPIC]", "topic or command; without it the topics are listed"],
   shell: ["[SHELL]", "bash, zsh or fish"],
+  requests: ["[FILE]", "requests, one object of JSON a line (without it, or with -, from standard input)"],
 } as const;
 
 function addCommand(program: Command, spec: CommandSpec, onCommand: (line: ParsedLine) => void): void {

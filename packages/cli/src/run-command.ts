@@ -1,11 +1,11 @@
 import { resolve } from "node:path";
-import { KvaneError, type Problem, problem, problemCodes } from "@kvane/core/errors";
-import { answer, exitStatusOf, type JobHost, plannedCommands, type Request, version } from "@kvane/core/job";
+import { fail, KvaneError, type Problem, problem, problemCodes } from "@kvane/core/errors";
+import { answer, exitStatusOf, type JobHost, type Request, version } from "@kvane/core/job";
 import { type HelpRecord, jsonText } from "@kvane/core/reports";
 import { commandSpecs } from "./commands/index.js";
 import { checkForm, deliver, packed, type RefusedAnswer, refusedAnswer } from "./deliver.js";
 import { problemsText } from "./errors.js";
-import { type CommandHost, commandHost } from "./host.js";
+import { type CommandHost, commandHost, exampleRequests } from "./host.js";
 import { checkFree } from "./output.js";
 import { buildProgram, type ParsedLine } from "./program.js";
 import { progressLine } from "./progress.js";
@@ -17,10 +17,6 @@ import { usageProblem } from "./usage.js";
 export async function runCommand(words: readonly string[], surroundings: Surroundings): Promise<number> {
   const [command] = words;
   const asJson = words.includes("--json");
-  if (command !== undefined && plannedCommands.includes(command)) {
-    const host = commandHost(surroundings, undefined);
-    return refuse(await answer({ command }, host), { command }, asJson, host, surroundings);
-  }
   try {
     const line = parse(words, surroundings);
     return line === null ? 0 : await execute(line, surroundings);
@@ -41,7 +37,7 @@ function problemsOf(error: unknown, words: readonly string[]): readonly Problem[
 function parse(words: readonly string[], { write, writeError }: Surroundings): ParsedLine | null {
   const found: ParsedLine[] = [];
   const asked = helpOfCommand(words);
-  const program = buildProgram(asked[0], version, plannedCommands, write, (line) => found.push(line));
+  const program = buildProgram(asked[0], version, write, (line) => found.push(line));
   if (words.length === 0) {
     writeError(program.helpInformation());
     throw new KvaneError([nothingAsked]);
@@ -79,9 +75,24 @@ async function writeCompletion(shell: string | null, host: JobHost, write: Surro
   return 0;
 }
 
+/** Requests come from a file, from the bundled example or from standard input. */
+async function startBatch({ argument, options }: ParsedLine, surroundings: Surroundings): Promise<number> {
+  const example = options["example"] === true;
+  if (example && argument !== null)
+    fail("conflicting-arguments", "a file of requests and --example are both given", {
+      where: { argument: "--example" },
+      expected: "one of the two",
+      found: argument,
+      remedy: "leave one of them out",
+    });
+  const { runBatch } = await import("./batch/run-batch.js");
+  return runBatch(example ? exampleRequests : (argument?.trim() ?? "-"), surroundings, options["quiet"] === true);
+}
+
 async function execute(line: ParsedLine, surroundings: Surroundings): Promise<number> {
   if (line.spec.name === "completion")
     return writeCompletion(line.argument, commandHost(surroundings, undefined), surroundings.write);
+  if (line.spec.name === "batch") return startBatch(line, surroundings);
   const request = requestFrom(line);
   const wishes = wishesFrom(line);
   checkForm(line.spec.name, wishes);

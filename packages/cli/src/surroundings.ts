@@ -8,12 +8,16 @@ import { systemFault } from "./system-faults.js";
 /** Everything outside that the command touches, so that tests can run it without a process of its own. */
 export interface Surroundings {
   readonly write: (text: string) => void;
+  /** Resolves when what was written has been taken; without it that is at once. */
+  readonly drained?: () => Promise<void>;
   readonly writeError: (text: string) => void;
   /** Whether the error output is a terminal, where progress can be shown. */
   readonly showsProgress: boolean;
   /** Columns of the terminal that `write` goes to; null where it goes elsewhere, and pages have their usual width. */
   readonly columns?: number | null;
   readonly standardInput: () => Promise<Uint8Array>;
+  /** Standard input as it comes, of any size; without it, it comes whole. */
+  readonly inputParts?: () => AsyncIterable<Uint8Array>;
   /** Where relative file names count from. */
   readonly folder: string;
   /** Set when the user wants the work to end. */
@@ -24,6 +28,9 @@ export interface Surroundings {
 export function processSurroundings(signal: { readonly aborted: boolean }): Surroundings {
   return {
     write: writer(() => process.stdout),
+    drained: async () => {
+      if (process.stdout.writableNeedDrain) await new Promise((resolve) => process.stdout.once("drain", resolve));
+    },
     writeError: writer(() => process.stderr),
     get showsProgress() {
       return process.stderr.isTTY === true;
@@ -32,6 +39,7 @@ export function processSurroundings(signal: { readonly aborted: boolean }): Surr
       return process.stdout.isTTY === true ? process.stdout.columns : null;
     },
     standardInput: () => boundedBytes(process.stdin),
+    inputParts: () => process.stdin,
     folder: process.cwd(),
     signal,
   };

@@ -1,4 +1,5 @@
 import type { CommandSpec } from "../command-spec.js";
+import { batchCommands } from "./batch-command.js";
 import { helpCommands } from "./help-commands.js";
 import { peakCommands } from "./peak-commands.js";
 import { physicsCommands } from "./physics-commands.js";
@@ -11,5 +12,6 @@ export const commandSpecs: readonly CommandSpec[] = [
   ...symmetryCommands,
   ...peakCommands,
   ...physicsCommands,
+  ...batchCommands,
   ...helpCommands,
 ];

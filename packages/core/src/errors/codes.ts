@@ -5,6 +5,8 @@ export const problemCodes = {
   "missing-argument": "A required argument or option was not given, or an option came without its value.",
   "conflicting-arguments": "Two things were given that exclude each other.",
   "invalid-argument": "An argument is not of the expected form.",
+  "invalid-request":
+    "A line of requests is no JSON, no object, too long, or has a field that its command does not take or that is of the wrong kind.",
   "invalid-number": "A number was expected; text, NaN, an infinite or an out-of-range value was found.",
   "number-overflow": "An exact fraction or integer grew beyond the safe range of 2^53; kvane never rounds instead.",
   "syntax": "A linear form, coordinate triplet, symbol or file breaks its grammar at the place named.",

@@ -1,8 +1,9 @@
 import { fail, KvaneError, type Problem, problem } from "../errors/index.js";
 import type { Envelope, InputRecord } from "../reports/index.js";
-import { type CommandEntry, commandTable, plannedCommands } from "./commands.js";
+import { type CommandEntry, commandTable } from "./commands.js";
 import { withRemedy } from "./remedies.js";
 import type { JobHost, Request, RequestField } from "./request.js";
+import { fieldKind } from "./request-fields.js";
 import { version } from "./version.js";
 import type { Work } from "./work.js";
 
@@ -26,6 +27,11 @@ export async function answer(request: Request, host: JobHost): Promise<Envelope<
   }
 }
 
+/** The envelope of a request that could not be understood. */
+export function refusal(command: string, errors: readonly Problem[]): Envelope<object> {
+  return { kvane: version, format: 1, command, input: {}, result: null, errors, warnings: [], assumed: [] };
+}
+
 /** The study and the CIF are read once, before the command, and their readers are loaded only then. */
 async function readFiles(request: Request, host: JobHost): Promise<Pick<Work, "study" | "structure">> {
   const named = [request.study, request.structure, request.block].some((one) => typeof one === "string");
@@ -34,16 +40,16 @@ async function readFiles(request: Request, host: JobHost): Promise<Pick<Work, "s
     : { study: null, structure: null };
 }
 
-/** What was asked, tidied: blanks collapsed, null for what was not given. */
+/** What was asked, tidied: blanks collapsed, null for what was not given, false for a flag that was not. */
 function inputRecord(request: Request, entry: CommandEntry | undefined): InputRecord {
   const fields = entry?.takes ?? [];
-  return Object.fromEntries(fields.map((field) => [field, tidy(request[field])]));
+  return Object.fromEntries(fields.map((field) => [field, tidy(field, request[field])]));
 }
 
-function tidy(value: Request[RequestField]): InputRecord[string] {
+function tidy(field: RequestField, value: Request[RequestField]): InputRecord[string] {
   if (typeof value === "string") return tidyText(value);
   if (Array.isArray(value)) return value.map(tidyText);
-  return (value as boolean | null | undefined) ?? null;
+  return fieldKind(field) === "flag" ? value === true : null;
 }
 
 function tidyText(text: string): string {
@@ -51,12 +57,6 @@ function tidyText(text: string): string {
 }
 
 function refuse(command: string): never {
-  if (plannedCommands.includes(command))
-    fail("not-built", `\`kvane ${command}\` is planned but not part of version ${version}`, {
-      expected: `one of ${Object.keys(commandTable).join(", ")}`,
-      found: command,
-      remedy: "see `kvane help commands` for what this version does",
-    });
   fail("unknown-command", `there is no command \`${command}\``, {
     where: { argument: "COMMAND" },
     expected: `one of ${Object.keys(commandTable).join(", ")}`,

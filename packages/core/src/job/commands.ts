@@ -138,6 +138,3 @@ export const commandTable: { readonly [command: string]: CommandEntry } = {
     load: async () => (await import("./commands/help.js")).helpCommand,
   },
 };
-
-/** Commands of the interface that this version answers with `not-built`. */
-export const plannedCommands: readonly string[] = ["batch"];

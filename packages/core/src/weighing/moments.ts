@@ -53,8 +53,9 @@ export function fittedMoments(
     });
     const open = unseen.some((direction) => isAlong(gradient, direction));
     const linear = propagated(covariance, gradient);
-    // One as large as the moment says that the derivatives do not tell it.
-    const uncertainty = open || linear > largest ? null : roundNumber(linear, scale);
+    // One as large as the moment says that the derivatives do not tell it. The digits of differences of step 1e-5 end
+    // behind some ten, and what is beyond differs from one engine to another.
+    const uncertainty = open || linear > largest ? null : roundNumber(linear, scale, uncertaintyDigits);
     const limit = formFactor.largestMoment;
     return {
       label: site,
@@ -74,6 +75,9 @@ export function fittedMoments(
     };
   });
 }
+
+/** Significant digits of an uncertainty. */
+const uncertaintyDigits = 6;
 
 /** The largest moment of every atom in any cell. */
 export function largestMoments(

@@ -193,6 +193,12 @@ function strongestOf(a: readonly number[], b: readonly number[]): number {
   return Math.max(...a.map(Math.abs), ...b.map(Math.abs));
 }
 
+/**
+ * Share by which one difference must be larger than another. Equivalent vectors differ by rounding alone, and the last
+ * digits are not the same in every engine: of them the first is taken.
+ */
+const larger = 1 + 1e-9;
+
 /** Where two lists differ most, if by a clear share of the strongest intensity. */
 function largestDifference(
   a: readonly number[],
@@ -204,7 +210,7 @@ function largestDifference(
   let most = clearDifferenceShare;
   a.forEach((value, index) => {
     const share = Math.abs(value - (b[index] as number)) / scale;
-    if (share > most) [best, most] = [index, share];
+    if (share > larger * most) [best, most] = [index, share];
   });
   return best < 0 ? null : { index: best, values: [(a[best] as number) / scale, (b[best] as number) / scale] };
 }
@@ -235,7 +241,7 @@ function bestOverDomains(
     );
     if (!found) return null;
     const share = Math.abs(found.values[0] - found.values[1]);
-    if (share < least) {
+    if (larger * share < least) {
       least = share;
       result = { q: vectors[found.index] as Triple, values: found.values };
     }

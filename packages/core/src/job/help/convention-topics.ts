@@ -1,4 +1,4 @@
-import { commandTable, plannedCommands } from "../commands.js";
+import { commandTable } from "../commands.js";
 import type { HelpTopic } from "./topics.js";
 
 /** Longest line of a page. */
@@ -70,10 +70,8 @@ and says which configuration it is.`,
   },
   commands: {
     title: "What this version does",
-    text: `Built:
-${inLines(Object.keys(commandTable))}
-Planned:
-${inLines(plannedCommands)}
+    text: `${inLines(Object.keys(commandTable))}
+and many of them in one go: batch (kvane help requests).
 
 kvane COMMAND --help shows options and an example that works when pasted.`,
   },

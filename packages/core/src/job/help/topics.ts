@@ -2,6 +2,7 @@ import { conventionTopics } from "./convention-topics.js";
 import { formatTopics } from "./format-topics.js";
 import { inputTopics } from "./input-topics.js";
 import { physicsTopics } from "./physics-topics.js";
+import { requestTopics } from "./request-topics.js";
 
 export interface HelpTopic {
   readonly title: string;
@@ -12,6 +13,7 @@ export interface HelpTopic {
 const pages: { readonly [topic: string]: HelpTopic } = {
   ...inputTopics,
   ...formatTopics,
+  ...requestTopics,
   ...physicsTopics,
   ...conventionTopics,
 };
