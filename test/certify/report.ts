@@ -1,5 +1,7 @@
 import { existsSync, readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
+import { readResults } from "../mutation/results.js";
+import { scoreTable } from "../mutation/write-page.js";
 import { root, type State } from "./state.js";
 import { type Counts, type Subject, unitName } from "./subject.js";
 
@@ -44,7 +46,21 @@ function report(states: ReadonlyMap<Subject, State>): string {
     "",
     ...(notes.length === 0 ? [] : [...notes, ""]),
     ...(problems.length === 0 ? ["No failures."] : ["Failures:", "", ...failures, ...more]),
+    ...mutationSection(),
   ].join("\n");
+}
+
+/** What small changes of the exact rooms the unit and law tests notice, from the committed results. */
+function mutationSection(): string[] {
+  const results = readResults();
+  if (results.length === 0) return [];
+  return [
+    "",
+    "Small changes made on purpose in the exact rooms, and how many of them the unit and law tests notice; rules and",
+    "survivors: [mutation testing](mutation.md).",
+    "",
+    ...scoreTable(results),
+  ];
 }
 
 function rowOf(what: string, seed: number | null, counts: readonly Counts[]): string[] {

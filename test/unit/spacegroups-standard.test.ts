@@ -1,0 +1,226 @@
+import {
+  type BasisChange,
+  changeBasis,
+  formatBasisChange,
+  groupFromSetting,
+  invertBasisChange,
+  parseBasisChange,
+  parseGroup,
+  type SpaceGroup,
+  standardSetting,
+  tabulatedSettings,
+  waysToSettings,
+} from "@kvane/core/spacegroups";
+import fc from "fast-check";
+import { describe, expect, it } from "vitest";
+import { determinant } from "#core/numbers/index.js";
+import { diagonalForm, freeDirections, solveCongruences } from "#core/spacegroups/congruences.js";
+import { crystalSystem } from "#core/spacegroups/conventional-axes.js";
+import { seeded } from "../support/random.js";
+import { randomBasis } from "../support/random-bases.js";
+
+const seed = 20261204;
+
+type Matrix = readonly (readonly number[])[];
+
+function times(a: Matrix, b: Matrix): number[][] {
+  return a.map((row) =>
+    (b[0] ?? []).map((_, column) => row.reduce((sum, entry, at) => sum + entry * (b[at]?.[column] ?? 0), 0) + 0),
+  );
+}
+
+/** By the first row, for matrices of any size. */
+function determinantOf(matrix: Matrix): number {
+  if (matrix.length === 0) return 1;
+  return (matrix[0] ?? []).reduce(
+    (sum, entry, column) =>
+      sum +
+      (column % 2 === 0 ? entry : -entry) *
+        (entry === 0 ? 0 : determinantOf(matrix.slice(1).map((row) => row.filter((_, at) => at !== column)))),
+    0,
+  );
+}
+
+describe("integer systems", () => {
+  const rows = fc.array(fc.tuple(...[0, 1, 2].map(() => fc.integer({ min: -4, max: 4 }))), {
+    minLength: 1,
+    maxLength: 5,
+  });
+
+  it("become diagonal by unimodular changes of rows and columns", () => {
+    fc.assert(
+      fc.property(rows, (matrix) => {
+        const { left, right, diagonal } = diagonalForm(matrix);
+        expect(times(times(left, matrix), right)).toEqual(
+          matrix.map((_, row) => [0, 1, 2].map((column) => (row === column ? diagonal[column] : 0))),
+        );
+        expect(Math.abs(determinantOf(left))).toBe(1);
+        expect(Math.abs(determinantOf(right))).toBe(1);
+        expect(diagonal.every((entry) => entry >= 0)).toBe(true);
+      }),
+      { seed },
+    );
+  });
+
+  it("have all their solutions modulo 1, as many as the product of the diagonal", () => {
+    fc.assert(
+      fc.property(rows, fc.tuple(...[0, 1, 2].map(() => fc.integer({ min: 0, max: 5 }))), (matrix, start) => {
+        // b = A x₀ with x₀ in sixths, so that there is a solution.
+        const constants = matrix.map((row) => row.reduce((sum, entry, at) => sum + entry * (start[at] as number), 0));
+        const form = diagonalForm(matrix);
+        const found = solveCongruences(form, constants, 6);
+        expect(found).not.toBeNull();
+        if (found === null) return;
+        const keys = new Set(found.solutions.map((solution) => solution.join()));
+        expect(keys.size).toBe(found.solutions.length);
+        expect(keys.size).toBe(form.diagonal.reduce((product, entry) => product * Math.max(1, entry), 1));
+        for (const x of found.solutions) {
+          expect(x.every((entry) => entry >= 0 && entry < found.denominator)).toBe(true);
+          matrix.forEach((row, index) => {
+            const value = row.reduce((sum, entry, at) => sum + (entry * (x[at] as number)) / found.denominator, 0);
+            const gap = value - (constants[index] as number) / 6;
+            expect(Math.abs(gap - Math.round(gap))).toBeLessThan(1e-9);
+          });
+        }
+        const free = freeDirections(form);
+        expect(free.length).toBe(form.diagonal.filter((entry) => entry === 0).length);
+        for (const direction of free) {
+          expect(
+            times(
+              matrix,
+              direction.map((entry) => [entry]),
+            )
+              .flat()
+              .every((entry) => entry === 0),
+          ).toBe(true);
+          expect(direction.some((entry) => entry !== 0)).toBe(true);
+        }
+      }),
+      { seed },
+    );
+  });
+
+  it("have none where a combination of rows leaves a fraction", () => {
+    // x + y ≡ 1/2 and x + y ≡ 0.
+    const form = diagonalForm([
+      [1, 1, 0],
+      [1, 1, 0],
+    ]);
+    expect(solveCongruences(form, [1, 0], 2)).toBeNull();
+    expect(solveCongruences(form, [1, 1], 2)?.solutions).toHaveLength(1);
+    // 2x ≡ 1/2 has x = 1/4 and 3/4.
+    const twice = solveCongruences(diagonalForm([[2, 0, 0]]), [1], 2);
+    expect(twice?.solutions.map(([x]) => (x as number) / twice.denominator).sort()).toEqual([0.25, 0.75]);
+  });
+});
+
+const standard = tabulatedSettings().filter((row) => row.standard);
+const plainName = "a,b,c;0,0,0";
+const sameGroup = (a: SpaceGroup, b: SpaceGroup): boolean =>
+  JSON.stringify([a.lattice, a.operators]) === JSON.stringify([b.lattice, b.operators]);
+
+function filled({ shift }: BasisChange): number {
+  return shift.filter(([numerator]) => numerator !== 0).length;
+}
+
+describe("the standard setting of a group", () => {
+  it.each(standard.filter((_, row) => row % 6 === 0).map((row) => [row.short, row] as const))(
+    "of %s is itself, and is found again from random axes and origins",
+    (_name, row) => {
+      const group = groupFromSetting(row);
+      const own = standardSetting(group);
+      expect(own.setting).toMatchObject(row);
+      expect(formatBasisChange(own.change)).toBe(plainName);
+      const random = seeded(seed + row.number);
+      const change = randomBasis(random);
+      const there = changeBasis(group, change);
+      const found = standardSetting(there);
+      expect(found.setting.number).toBe(row.number);
+      expect(determinant(found.change.matrix)[0]).toBeGreaterThan(0);
+      expect(sameGroup(changeBasis(there, found.change), group)).toBe(true);
+    },
+  );
+
+  it.each(
+    tabulatedSettings()
+      .filter((_, row) => row % 37 === 5)
+      .map((row) => [row.short, row] as const),
+  )("of the tabulated %s has its operators", (_name, row) => {
+    const group = groupFromSetting(row);
+    const { setting, change } = standardSetting(group);
+    expect([setting.number, setting.standard]).toEqual([row.number, true]);
+    expect(sameGroup(changeBasis(group, change), groupFromSetting(setting))).toBe(true);
+  });
+
+  it.each([
+    ["P 4", "a,b,c;1/2,1/2,0.3", 0],
+    ["P 2", "a,b,c;0.1,0.2,0.3", 2],
+    ["P 1", "a,b,c;0.1,0.2,0.3", 0],
+    ["P n m a", "a,b,c;0,1/4,0", 1],
+    ["P n m a", "a,b,c;1/2,0,1/2", 0],
+    ["I 4/m m m", "a,b,c;1/2,1/2,1/2", 0],
+    ["P m m 2", "a,b,c;0,1/8,1/3", 1],
+    ["F m -3 m", "a,b,c;1/2,1/2,1/2", 0],
+    ["R 3:H", "a,b,c;1/3,2/3,0.4", 0],
+  ])("of %s with its axes and the origin at %s needs a shift of %i components", (name, moved, count) => {
+    const there = changeBasis(parseGroup(name), parseBasisChange(moved));
+    const { change } = standardSetting(there);
+    expect(formatBasisChange(change).split(";")[0]).toBe("a,b,c");
+    expect(filled(change)).toBe(count);
+  });
+
+  it("tells enantiomorphic types apart, and a left-handed basis", () => {
+    for (const [name, number] of [
+      ["P 41", 76],
+      ["P 43", 78],
+      ["P 61 2 2", 178],
+      ["P 65 2 2", 179],
+      ["P 43 3 2", 212],
+    ] as const) {
+      expect(standardSetting(parseGroup(name)).setting.number).toBe(number);
+      // Mirrored axes turn a screw the other way.
+      const mirrored = changeBasis(parseGroup(name), parseBasisChange("-a,-b,-c"));
+      const other = { 76: 78, 78: 76, 178: 179, 179: 178, 212: 213 }[number];
+      expect(standardSetting(mirrored).setting.number).toBe(other);
+    }
+  });
+
+  it("is reached in several ways, each with the operators of its setting, the nearest first", () => {
+    const group = parseGroup("P 21/c (a+c,b,c;0,1/3,0)");
+    const rows = tabulatedSettings().filter(({ number }) => number === 14);
+    let count = 0;
+    for (const { setting, change, target } of waysToSettings(group, rows)) {
+      expect(sameGroup(changeBasis(group, change), target)).toBe(true);
+      expect(sameGroup(target, groupFromSetting(setting))).toBe(true);
+      expect(determinant(change.matrix)[0]).toBeGreaterThan(0);
+      count += 1;
+    }
+    expect(count).toBeGreaterThan(9);
+    expect([
+      ...waysToSettings(
+        group,
+        tabulatedSettings().filter(({ number }) => number === 13),
+      ),
+    ]).toEqual([]);
+    const back = standardSetting(changeBasis(group, invertBasisChange(parseBasisChange("a+c,b,c;0,1/3,0"))));
+    expect(formatBasisChange(back.change)).toBe(plainName);
+  });
+});
+
+describe("crystal systems", () => {
+  it("are those of the numbers of International Tables A", () => {
+    // Last number of each system; trigonal (143 to 167) and hexagonal groups have hexagonal axes.
+    const last = [
+      [2, "triclinic"],
+      [15, "monoclinic"],
+      [74, "orthorhombic"],
+      [142, "tetragonal"],
+      [194, "hexagonal"],
+      [230, "cubic"],
+    ] as const;
+    for (const row of standard) {
+      const system = last.find(([number]) => row.number <= number)?.[1];
+      expect(crystalSystem(groupFromSetting(row).pointGroup), row.short).toBe(system);
+    }
+  });
+});
