@@ -34,7 +34,7 @@ describe("exchange-and-onset.md", () => {
     const section = /```yaml\n([\s\S]*?)```/.exec(page)?.[1] ?? "";
     const { parseStudy } = await import("@kvane/core/files");
     const study = await parseStudy(section, "page");
-    expect(study.exchange?.map(({ bond }) => bond)).toEqual(["1", "3b", "2"]);
+    expect(study.exchange?.map(({ bond }) => bond)).toEqual(["1", "3b", "2", "3a"]);
   });
 
   it("has a library example that runs", async () => {

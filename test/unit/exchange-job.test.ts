@@ -56,7 +56,7 @@ describe("kvane exchange", () => {
     // cos 2πu = −J1/4J2.
     const needed = stationary?.needed.find(({ name }) => name === "2");
     expect(needed?.j).toBeCloseTo(-1 / (4 * Math.cos(2 * Math.PI * 0.29)), 8);
-    expect(needed).toMatchObject({ minimum: true, lowest: true });
+    expect(needed).toMatchObject({ along: "minimum", lowest: true, oneOfMany: false });
     // The slope is that of λ = S² (2 J1 cos 2πu + 2 J2 cos 4πu).
     const u = 2 * Math.PI * 0.29;
     expect(stationary?.slopes[0]).toBeCloseTo(-Math.PI * (Math.sin(u) + 2 * 0.5 * Math.sin(2 * u)), 8);

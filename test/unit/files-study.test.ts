@@ -92,9 +92,10 @@ describe("a study file", () => {
         patternWidthDeg: 0.3,
       },
       exchange: [
-        { bond: "1", between: null, j: -1 },
-        { bond: "2b", between: null, j: 0.4 },
-        { bond: "3", between: ["Fe1", "Co1"], j: 0.1 },
+        { bond: "1", between: null, j: -1, vary: null },
+        { bond: "2b", between: null, j: 0.4, vary: null },
+        { bond: "3", between: ["Fe1", "Co1"], j: 0.1, vary: null },
+        { bond: "4", between: null, j: null, vary: { from: 0, to: 0.5, count: 11 } },
       ],
       onset: { file: "scan.csv" },
       exclude: [

@@ -20,4 +20,6 @@ export interface CommandSpec {
   readonly options: readonly OptionName[];
   /** Commands that work when pasted; a test pastes them. */
   readonly examples: readonly string[];
+  /** Pages of `kvane help` that say more. */
+  readonly topics?: readonly string[];
 }

@@ -15,7 +15,7 @@ import {
   resultFolder,
 } from "@kvane/core/reports";
 import { writeFolder, writeWhole } from "./output.js";
-import type { OutputWishes } from "./request.js";
+import { failUndrawn, type OutputWishes } from "./request.js";
 import type { Surroundings } from "./surroundings.js";
 
 /** An answer, with or without a result. */
@@ -53,6 +53,7 @@ export async function packed(
   const whole = answered as Envelope<RunRecord>;
   const drawing = wishes.svg ? await reportSvg(answered) : null;
   if (drawing !== null) return { text: drawing, files: null };
+  if (wishes.svg && command === "exchange") failUndrawn(true);
   if (wishes.out === null) return { text: textOf(answered, wishes, columns), files: null };
   if (command === "run") return { text: textOf(answered, wishes, columns), files: await resultFolder(whole) };
   const form = command === "report" && !wishes.json ? reportForm(wishes.out) : null;

@@ -61,12 +61,16 @@ function addCommand(program: Command, spec: CommandSpec, onCommand: (line: Parse
     .argument(argument, about)
     .addHelpText(
       "after",
-      `\nExample${spec.examples.length > 1 ? "s" : ""}:\n${spec.examples.map((one) => `  ${one}`).join("\n")}`,
+      `\nExample${spec.examples.length > 1 ? "s" : ""}:\n${spec.examples.map((one) => `  ${one}`).join("\n")}${moreText(spec)}`,
     )
     .action((first: string | undefined, options: { [attribute: string]: unknown }) =>
       onCommand({ spec, argument: first ?? null, options }),
     );
   for (const name of spec.options) command.addOption(buildOption(name));
+}
+
+function moreText({ topics = [] }: CommandSpec): string {
+  return topics.length === 0 ? "" : `\n\nMore:\n${topics.map((one) => `  kvane help ${one}`).join("\n")}`;
 }
 
 function buildOption(name: OptionName): Option {

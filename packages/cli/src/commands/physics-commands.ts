@@ -26,6 +26,7 @@ export const physicsCommands: readonly CommandSpec[] = [
       'kvane exchange "P 4/m m m" --cell "4 4 10 90 90 90" --site "M 0 0 0" --j "1 1" --vary "2 0 1 11"',
       "kvane exchange --example",
     ],
+    topics: ["bonds"],
   },
   {
     name: "onset",
@@ -33,5 +34,6 @@ export const physicsCommands: readonly CommandSpec[] = [
     argument: "scan",
     options: ["reduced", "example", "csv", "svg", ...outputOptions],
     examples: ["kvane onset --example", "kvane onset --example --svg"],
+    topics: ["scan"],
   },
 ];

@@ -20,6 +20,7 @@ export interface ConstantMoments {
 
 const kinds = ["collinear", "coplanar", "non-coplanar"] as const;
 const mostArms = 4;
+const mostPairs = 12;
 const starts = 6;
 /** Sum of squared deviations of |M|² from 1 below which an arrangement counts as built: rounding leaves 1e-20. */
 const built = 1e-14;
@@ -28,7 +29,7 @@ const built = 1e-14;
  * The strong condition of Luttinger and Tisza: |S| on every atom of every cell. A sum of waves of the lowest eigenvalue
  * has |M_j(T)|² = 1 in all cells exactly when all Fourier coefficients of |M_j|² but the constant vanish; these
  * quadratic equations are solved by damped least squares from seeded starts, first collinear, then in a plane, then in
- * space, first for one k, then for the star. (T. A. Kaplan & N. Menyuk, Philos. Mag. 87 (2007) 3711, section 2.)
+ * space, first for one k, then for the star, then for two stars. (T. A. Kaplan & N. Menyuk, Philos. Mag. 87 (2007) 3711, section 2.)
  */
 export function constantMoments(
   model: ExchangeModel,
@@ -49,8 +50,37 @@ export function constantMoments(
         return { answer: "reached", k: (stars[index] as WaveVector[]).slice(0, count), spins: several, short: [] };
     }
   }
+  for (const pair of pairsOf(waves)) {
+    const mixed = solved(
+      model,
+      pair.map(([star, arm]) => waves[star]?.[arm] as Wave),
+    );
+    if (mixed)
+      return {
+        answer: "reached",
+        k: pair.map(([star, arm]) => stars[star]?.[arm] as WaveVector),
+        spins: mixed,
+        short: [],
+      };
+  }
   const short = shortSites(model, waves);
   return { answer: short.length > 0 ? "only a bound" : "not found", k: [], spins: null, short };
+}
+
+/**
+ * Two k of two stars that are equally low, as cones need: the first arm of one with each of the other, as star and arm.
+ * Such stars meet at boundaries of phases, and where site potentials balance them.
+ */
+function pairsOf(waves: readonly (readonly Wave[])[]): [number, number][][] {
+  const found: [number, number][][] = [];
+  for (let a = 0; a < waves.length; a++)
+    for (let b = a + 1; b < waves.length; b++)
+      for (let arm = 0; arm < (waves[b]?.length ?? 0); arm++)
+        found.push([
+          [a, 0],
+          [b, arm],
+        ]);
+  return found.slice(0, mostPairs);
 }
 
 /** One arm of each ±k pair of the star. */

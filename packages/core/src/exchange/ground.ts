@@ -29,9 +29,13 @@ export async function groundOf(
   const interaction = interactionOf(model, options.frame);
   if (interaction.frame.rank === 0) return sameForAllK(model, interaction);
   const energyShare = options.energyShare ?? sameEnergyShare;
-  const found = await minimiseZone(model.table.group, interaction, { ...options, energyShare }, host);
+  const searched = await minimiseZone(model.table.group, interaction, { ...options, energyShare }, host);
   const tolerance = energyShare * interaction.scale;
-  const minima = minimaOf(interaction, found, tolerance);
+  const first = minimaOf(interaction, searched, tolerance);
+  // Every heap of boxes has been descended into now: what lay lower than the search had found counts.
+  const hidden = first.lowest < searched.value - tolerance;
+  const found = hidden ? { ...searched, value: first.lowest } : searched;
+  const minima = hidden ? minimaOf(interaction, found, tolerance) : first;
   return {
     energy: perSpin(found.value, interaction),
     set: minimumSet(model, interaction, minima, {
@@ -63,7 +67,12 @@ function sameForAllK(model: ExchangeModel, interaction: Interaction): Ground {
   const limit = value + sameEnergyShare * interaction.scale;
   return {
     energy: perSpin(value, interaction),
-    set: minimumSet(model, interaction, { dimension: 0, points: [[]] }, { branch, limit, withoutManifolds: false }),
+    set: minimumSet(
+      model,
+      interaction,
+      { dimension: 0, points: [[]], lowest: value },
+      { branch, limit, withoutManifolds: false },
+    ),
     certificate: {
       boxes: 1,
       smallestBox: 0,

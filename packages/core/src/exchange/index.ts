@@ -9,10 +9,21 @@
 export { type ArrangementEnergy, arrangementEnergy } from "./arrangement-energy.js";
 export { balancedModel } from "./balanced.js";
 export { type ConstantMoments, constantMoments } from "./constant-moments.js";
+export type { CosineTerm } from "./cosine-form.js";
 export { groundOf } from "./ground.js";
 export { type ExchangeLevel, type ExchangeLevels, exchangeLevels, type IrrepCount } from "./irreps-at.js";
 export type { MinimiseOptions } from "./minimise.js";
-export { classesNamed, exchangeModel, farthestShell, type GivenCoupling, withConstants } from "./model.js";
+export {
+  bondsNamed,
+  classesNamed,
+  constantName,
+  exchangeModel,
+  farthestShell,
+  type GivenCoupling,
+  namedConstants,
+  withConstants,
+} from "./model.js";
+export type { NeededConstant, NeededPotentials } from "./needed-constants.js";
 export type { DiagramBoundary } from "./phase-boundaries.js";
 export {
   type DiagramAxis,
@@ -22,13 +33,7 @@ export {
   phaseDiagram,
 } from "./phase-diagram.js";
 export { bondTable, type ShellLimits } from "./shells.js";
-export {
-  type CosineTerm,
-  type NeededConstant,
-  type StationaryAnswer,
-  type StationaryRelation,
-  stationaryConstants,
-} from "./stationary.js";
+export { type StationaryAnswer, type StationaryRelation, stationaryConstants } from "./stationary.js";
 export type {
   Bond,
   BondClass,
@@ -39,6 +44,7 @@ export type {
   ExchangeModel,
   Ground,
   MinimumSet,
+  NamedConstant,
   NeighbourShell,
   OrderingVector,
 } from "./types.js";

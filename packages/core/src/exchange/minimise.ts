@@ -80,6 +80,7 @@ export async function minimiseZone(
   while (radius > leafShare * size) {
     radius /= 2;
     const kept: Leaf[] = [];
+    let deepest = { value: Number.POSITIVE_INFINITY, centre: best.x };
     for (const root of leaves) {
       const search = boxSearch({
         centre: root.centre,
@@ -91,6 +92,7 @@ export async function minimiseZone(
           const { value } = branch(centre);
           if (value < best.value - tolerance) best = descend(branch, centre, size, interaction.scale);
           kept.push({ centre: centre.slice(), half });
+          if (value < deepest.value) deepest = { value, centre: centre.slice() };
           return true;
         },
         leavesOpen: () => {},
@@ -100,6 +102,9 @@ export async function minimiseZone(
       if (boxes > mostBoxes || kept.length > overflow * mostLeaves) break;
       await breathe(host);
     }
+    // A lower minimum may lie in a box whose centre is higher than the best k.
+    const beside = descend(branch, deepest.centre, size, interaction.scale);
+    if (beside.value < best.value) best = beside;
     if (boxes > mostBoxes) stopped = `the budget of ${mostBoxes} boxes was spent`;
     // A level that was not gone through is given up: the boxes of the one before still cover every minimum.
     if (stopped !== null || kept.length > overflow * mostLeaves) break;
@@ -111,7 +116,7 @@ export async function minimiseZone(
   return { wedge, branch, ...best, lowerBound, leaves, boxes, leafRadius, size, stopped };
 }
 
-/** Descents from a few spread points: the search prunes well from its first box on. */
+/** Descents from a few spread points and from the halves: the search prunes well from its first box on. */
 export function seededDescents(
   branch: (x: ArrayLike<number>) => LowestBranch,
   wedge: ZoneWedge,
@@ -128,7 +133,9 @@ export function seededDescents(
       return middle + (2 * share - 1) * (wedge.half[a] as number);
     }),
   );
-  const ranked = points.map((x) => ({ x, value: branch(x).value })).sort((a, b) => a.value - b.value);
+  const ranked = [...wedge.halves.map((x) => Float64Array.from(x)), ...points]
+    .map((x) => ({ x, value: branch(x).value }))
+    .sort((a, b) => a.value - b.value);
   return ranked.slice(0, ends).map(({ x }) => descend(branch, x, size, scale));
 }
 

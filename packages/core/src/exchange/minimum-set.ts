@@ -10,6 +10,8 @@ export interface ZoneMinima {
   readonly dimension: number;
   /** One of each star; some of a continuous set. */
   readonly points: readonly (readonly number[])[];
+  /** The lowest eigenvalue that was met: lower than that of the search where a box hid it. */
+  readonly lowest: number;
 }
 
 /** Share of the zone within which a heap of boxes counts as one place. */
@@ -22,15 +24,17 @@ const mostSamples = 60;
  */
 export function minimaOf(interaction: Interaction, found: ZoneMinimum, tolerance: number): ZoneMinima {
   const { frame } = interaction;
-  if (frame.rank === 0) return { dimension: 0, points: [[]] };
+  if (frame.rank === 0) return { dimension: 0, points: [[]], lowest: found.value };
   const limit = found.value + tolerance;
   const near = Math.max(placeShare * found.size, 6 * found.leafRadius);
   const points: number[][] = [];
   let dimension = 0;
+  let lowest = found.value;
   for (const heap of heaps(found.leaves)) {
     const samples = spread(heap, extentOf(heap) <= near ? 3 : mostSamples);
-    const ends = samples
-      .map(({ centre }) => descend(found.branch, centre, found.size, interaction.scale))
+    const descents = samples.map(({ centre }) => descend(found.branch, centre, found.size, interaction.scale));
+    lowest = descents.reduce((least, { value }) => Math.min(least, value), lowest);
+    const ends = descents
       .filter(({ value }) => value <= limit)
       .sort((a, b) => a.value - b.value)
       .map(({ x }) => [...x]);
@@ -42,10 +46,12 @@ export function minimaOf(interaction: Interaction, found: ZoneMinimum, tolerance
     const kept = flat ? distinct : large ? separate(ends, near / 2) : ends.slice(0, 1);
     points.push(...kept.map((x) => fromCartesian(frame, x)));
   }
-  return { dimension, points: oneOfEachStar(found, points) };
+  // The deepest point alone, where no descent from the boxes that are left over ended in its narrow hollow.
+  if (points.length === 0) points.push(fromCartesian(frame, found.x));
+  return { dimension, points: oneOfEachStar(found, points), lowest };
 }
 
-/** The deepest point alone, when no box is left over by some rounding. */
+/** Points that no operator and no vector of the reciprocal lattice makes equal. */
 export function oneOfEachStar(found: ZoneMinimum, points: readonly (readonly number[])[]): number[][] {
   const kept: { readonly q: readonly number[]; readonly star: readonly (readonly number[])[] }[] = [];
   for (const q of points)

@@ -1,5 +1,5 @@
 import { fail, KvaneError, nearMiss, type Place, type Problem, problem } from "../errors/index.js";
-import type { BondClass, BondTable, Coupling, ExchangeModel } from "./types.js";
+import type { BondClass, BondTable, Coupling, ExchangeModel, NamedConstant } from "./types.js";
 
 /** One constant as a user gives it: for a whole shell, for one class of it, or for the bonds between two sites. */
 export interface GivenCoupling {
@@ -35,8 +35,9 @@ export function exchangeModel(
     const classes = classesNamed(table, one);
     if (classes.length === 0) problems.push(noBond(table, one));
     for (const bonds of classes) {
-      if (chosen.has(bonds.name)) problems.push(twice(bonds, one));
-      chosen.set(bonds.name, { bonds, j: one.j });
+      const other = chosen.get(bonds.name);
+      if (other) problems.push(twice(table, bonds, one, other));
+      chosen.set(bonds.name, { bonds, j: one.j, constant: constantName(one, classes) });
     }
   }
   if (problems.length > 0) throw new KvaneError(problems);
@@ -59,8 +60,25 @@ export function withConstants(model: ExchangeModel, constants: Readonly<Record<s
       });
   return {
     ...model,
-    couplings: model.couplings.map(({ bonds, j }) => ({ bonds, j: constants[bonds.name] ?? j })),
+    couplings: model.couplings.map((one) => ({ ...one, j: constants[one.bonds.name] ?? one.j })),
   };
+}
+
+/** The constants as they were given, nearest bonds first. */
+export function namedConstants({ couplings }: ExchangeModel): NamedConstant[] {
+  const names = [...new Set(couplings.map(({ constant }) => constant))];
+  return names.map((name) => {
+    const own = couplings.filter(({ constant }) => constant === name);
+    return { name, classes: own.map(({ bonds }) => bonds.name), j: (own[0] as Coupling).j };
+  });
+}
+
+/** What a constant is called: as its bonds were named; those of a shell between two sites by their classes. */
+export function constantName(
+  { bond, between }: Pick<GivenCoupling, "bond" | "between">,
+  classes: readonly Pick<BondClass, "name">[],
+): string {
+  return between === null ? bond : classes.map(({ name }) => name).join("=");
 }
 
 /** The classes that a name stands for: `2` for all of the shell, `2b` for one; with labels only those between them. */
@@ -77,7 +95,24 @@ export function classesNamed(
     );
 }
 
-function noBond(table: BondTable, { bond, between, where }: GivenCoupling): Problem {
+/**
+ * The classes that a name stands for, at least one.
+ *
+ * @throws `invalid-argument` for bonds that the table has not
+ */
+export function bondsNamed(
+  table: BondTable,
+  named: Pick<GivenCoupling, "bond" | "between" | "where">,
+): readonly BondClass[] {
+  const classes = classesNamed(table, named);
+  if (classes.length === 0) throw new KvaneError([noBond(table, named)]);
+  return classes;
+}
+
+function noBond(
+  table: BondTable,
+  { bond, between, where }: Pick<GivenCoupling, "bond" | "between" | "where">,
+): Problem {
   const classes = table.shells.flatMap((shell) => shell.classes);
   const labels = [...new Set(table.atoms.map(({ label }) => label))];
   const unknown = between?.find((label) => !labels.includes(label));
@@ -93,11 +128,13 @@ function noBond(table: BondTable, { bond, between, where }: GivenCoupling): Prob
   });
 }
 
-function twice(bonds: BondClass, { bond, where }: GivenCoupling): Problem {
+function twice(table: BondTable, bonds: BondClass, { bond, where }: GivenCoupling, other: Coupling): Problem {
+  const mates = classesNamed(table, { bond: String(bonds.shell), between: null }).map(({ name }) => name);
+  const wide = [bond, other.constant].includes(String(bonds.shell)) && bond !== other.constant;
   return problem("conflicting-arguments", `the bonds ${bonds.name} are given two constants`, {
     where: where ?? {},
     expected: "one J for each bond",
-    found: bond,
-    remedy: "leave one of them out",
+    found: bond === other.constant ? `${bond} twice` : `${other.constant} and ${bond}`,
+    remedy: wide ? `instead of ${bonds.shell} name its kinds apart: ${mates.join(", ")}` : "leave one of them out",
   });
 }

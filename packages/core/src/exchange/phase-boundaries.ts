@@ -51,7 +51,8 @@ export async function phaseBoundaries(
   const between = async (low: DiagramPoint, high: DiagramPoint, depth: number): Promise<void> => {
     if (low.phase === high.phase) return;
     const degenerate = access.isDegenerate(low.phase) && access.isDegenerate(high.phase);
-    const boundary = await (degenerate ? bisected : followed)(low, high, access);
+    const within = holds(low, high, access) || holds(high, low, access);
+    const boundary = await (degenerate || within ? bisected : followed)(low, high, access);
     const span = (high.values[0] as number) - (low.values[0] as number);
     // A third phase may lie between: it shows beside the boundary.
     for (const side of [-1, 1]) {
@@ -72,6 +73,12 @@ export async function phaseBoundaries(
   return found;
 }
 
+/** Whether all k of one phase are among those of another, which has more: a descent from a shared k tells nothing. */
+function holds(many: DiagramPoint, few: DiagramPoint, { kindForm }: DiagramAccess): boolean {
+  const forms = new Set(many.k.map(kindForm));
+  return many.k.length > few.k.length && few.k.every((k) => forms.has(kindForm(k)));
+}
+
 /** A single point that has the k of both its neighbours, or more: it lies on the boundary itself. */
 function isMeeting(points: readonly DiagramPoint[], index: number): boolean {
   const [before, here, after] = [points[index - 1], points[index], points[index + 1]];
@@ -89,7 +96,9 @@ const degenerateShare = 1e-5;
 async function bisected(low: DiagramPoint, high: DiagramPoint, { pointAt }: DiagramAccess) {
   let [left, right] = [low.values[0] as number, high.values[0] as number];
   const span = right - left;
-  while (right - left > 0.1 * degenerateShare * span) {
+  // A range may run downwards.
+  const length = Math.abs(span);
+  while (Math.abs(right - left) > 0.1 * degenerateShare * length) {
     const middle = (left + right) / 2;
     if ((await pointAt([middle])).phase === low.phase) left = middle;
     else right = middle;
@@ -99,8 +108,8 @@ async function bisected(low: DiagramPoint, high: DiagramPoint, { pointAt }: Diag
     const [before, here, after] = await Promise.all([-step, 0, step].map((shift) => pointAt([value + shift])));
     return Math.abs((before?.energy ?? 0) - 2 * (here?.energy ?? 0) + (after?.energy ?? 0)) / step;
   };
-  const step = 0.01 * span;
-  return { value: rounded(value, degenerateShare * span), sudden: (await turn(step / 8)) > 0.5 * (await turn(step)) };
+  const step = 0.01 * length;
+  return { value: rounded(value, degenerateShare * length), sudden: (await turn(step / 8)) > 0.5 * (await turn(step)) };
 }
 
 /** Without the digits that are smaller than the uncertainty. */

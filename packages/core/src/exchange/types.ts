@@ -59,6 +59,16 @@ export interface BondTable {
 export interface Coupling {
   readonly bonds: BondClass;
   readonly j: number;
+  /** What gave it, such as `2` for a whole shell: classes with one name have one constant. */
+  readonly constant: string;
+}
+
+/** One constant of a model as it was given, with all classes of bonds that it stands for. */
+export interface NamedConstant {
+  /** `2` for a whole shell, `2b` for one of its classes, `2a=2c` for those between two sites. */
+  readonly name: string;
+  readonly classes: readonly string[];
+  readonly j: number;
 }
 
 /** `E = Σ J S·S`, every bond once: J > 0 is antiferromagnetic. */

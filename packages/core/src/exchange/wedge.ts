@@ -11,6 +11,8 @@ export interface ZoneWedge {
   readonly half: readonly number[];
   /** How the point group extended by −1 acts on q: r × r matrices on columns, `q' = M q`. */
   readonly actions: readonly (readonly number[])[];
+  /** The q with 2q in the lattice of q, in Cartesian x: two branches often cross in a narrow hollow about one of them. */
+  readonly halves: readonly (readonly number[])[];
 }
 
 /** A q on no element of symmetry, in the middle of nowhere. */
@@ -37,10 +39,19 @@ export function zoneWedge(group: SpaceGroup, frame: ZoneFrame): ZoneWedge {
     const bounded = active.every((index) => index >= box.length);
     if (bounded && 2 * reach <= within) {
       const kept = active.map((index) => halfSpaces[index] as HalfSpace);
-      return { walls: kept, actions, ...boundingBox(vertices, rank, reach) };
+      return { walls: kept, actions, halves: halfPoints(frame), ...boundingBox(vertices, rank, reach) };
     }
     within = bounded ? 2 * reach * (1 + 1e-9) : 1.5 * within;
   }
+}
+
+function halfPoints(frame: ZoneFrame): number[][] {
+  return Array.from({ length: 1 << frame.rank }, (_, bits) =>
+    toCartesian(
+      frame,
+      Array.from({ length: frame.rank }, (_, a) => (bits & (1 << a) ? 0.5 : 0)),
+    ),
+  );
 }
 
 /** `κ → κ R⁻¹` as seen by q; both signs, each once. */

@@ -49,7 +49,8 @@ export { magneticCifText } from "./magnetic-cif/write.js";
 export { type ListedMoment, parseMomentList } from "./moment-list.js";
 export { readPeakKind } from "./peak-kind.js";
 export { type PeakListOptions, parsePeakList } from "./peak-list.js";
-export { parseScanTable, type ScanTable } from "./scan-table.js";
+export type { ScanColumn, ScanRole } from "./scan-header.js";
+export { isUnused, parseScanTable, type ScanTable } from "./scan-table.js";
 export { parseStudy } from "./study.js";
 export { type StudySectionName, studyKeys } from "./study-keys.js";
 export type {

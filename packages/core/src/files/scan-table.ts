@@ -4,10 +4,13 @@ import { decimalCommaOf, type Field, type Row, readRows } from "./peak-rows.js";
 import { noteDecimalComma } from "./peak-values.js";
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
 import { readableText } from "./readable-text.js";
+import { holdsValues, type ScanColumn, type ScanRole, scanColumns } from "./scan-header.js";
 
 /** A temperature scan: several quantities against temperature. */
 export interface ScanTable {
   readonly file: string;
+  /** All columns, in the order of the file. */
+  readonly columns: readonly ScanColumn[];
   readonly intensities: readonly ScanSeries[];
   /** Components of the wave vector, columns called k, kx, ky, kz, u, v or w. */
   readonly k: readonly ScanSeries[];
@@ -16,19 +19,6 @@ export interface ScanTable {
   readonly rows: number;
 }
 
-type Role = "temperature" | "intensity" | "k" | "uncertainty";
-
-interface Column {
-  readonly name: string;
-  readonly role: Role;
-  /** For uncertainties: the column that they belong to. */
-  readonly of: number | null;
-}
-
-const temperatureName = /^(t|temp|temperature)(\s*[/([]\s*k\s*[)\]]?)?$/i;
-const uncertaintyName =
-  /^(su|s\.u\.|sigma|sig|σ|error|err|esd|uncertainty|±|\+-)([\s([_].*)?$|^.*[\s_-](su|s\.u\.|sigma|error|esd|uncertainty)$/i;
-const kName = /^(k|k[xyz]|[uvw])(\s*[/([].*)?$/i;
 /** Values of a scan (rows × columns besides T and s.u.) beyond which the fits take half a minute. */
 const mostValues = 10000;
 /** What stands in a cell that has no value. */
@@ -36,9 +26,9 @@ const missing = /^([-–—.]|nan)?$/i;
 
 /**
  * Reads a temperature scan: rows of a temperature in K and one or more quantities. A header names the columns: T first,
- * then a name for each peak; a column called su (or sigma, error, esd, …) holds the uncertainties of the one before it,
- * and columns called k, kx, ky, kz, u, v, w are components of the wave vector. Values may carry their uncertainty in
- * brackets, `132(4)`. Empty cells, `-` and `nan` are left out. Rows may stand in any order.
+ * then a name for each peak; columns of uncertainties are told by their names (`scanColumns`), and columns called k, kx,
+ * ky, kz, u, v, w are components of the wave vector. Values may carry their uncertainty in brackets, `132(4)`. Empty cells,
+ * `-` and `nan` are left out. Rows may stand in any order.
  *
  * Throws all problems at once with line and column: `file-empty`, `file-unreadable`, `invalid-scan`.
  */
@@ -53,7 +43,7 @@ export function parseScanTable(text: string, file: string): ScanTable {
   const headed =
     first !== undefined && readNumber(first.fields[0]?.text ?? "") === null && decimalCommaOf(first) === null;
   const data = headed ? rows.slice(1) : rows;
-  const columns = headed ? headerColumns(first as Row, problems) : plainColumns(data);
+  const columns = headed ? scanColumns(first as Row, problems) : plainColumns(data);
   if (columns.filter(({ role }) => role === "intensity" || role === "k").length === 0)
     note(problems, "invalid-scan", "there is no column besides the temperature", {
       where: { line: first?.line ?? 1, column: 1 },
@@ -79,79 +69,24 @@ export function parseScanTable(text: string, file: string): ScanTable {
   throwProblems(problems);
   const cells = data.map((row) => readRow(row, columns, problems));
   throwProblems(problems);
-  const series = (role: Role) =>
+  const series = (role: ScanRole) =>
     columns.flatMap((column, index) => (column.role === role ? [seriesOf(column.name, index, columns, cells)] : []));
-  return { file, intensities: series("intensity"), k: series("k"), headed, rows: data.length };
+  return { file, columns, intensities: series("intensity"), k: series("k"), headed, rows: data.length };
 }
 
-function plainColumns(rows: readonly Row[]): Column[] {
+/** Uncertainties of the temperature take part in nothing. */
+export function isUnused({ of }: Pick<ScanColumn, "of">, columns: readonly ScanColumn[]): boolean {
+  return of !== null && columns[of]?.role === "temperature";
+}
+
+function plainColumns(rows: readonly Row[]): ScanColumn[] {
   const width = Math.max(0, ...rows.map(({ fields }) => fields.length));
-  return Array.from({ length: width }, (_, index) =>
-    index === 0
-      ? { name: "T", role: "temperature", of: null }
-      : { name: `column ${index + 1}`, role: "intensity", of: null },
-  );
-}
-
-function headerColumns(row: Row, problems: ProblemList): Column[] {
-  const fields = row.separator === " " ? joinedBrackets(row.fields) : row.fields;
-  const columns: Column[] = [];
-  const temperature = fields.findIndex(({ text }) => temperatureName.test(text));
-  fields.forEach((field, index) => {
-    const { text } = field;
-    if (index === temperature) columns.push({ name: text, role: "temperature", of: null });
-    else if (uncertaintyName.test(text) && !columns.some(holdsValues)) {
-      note(problems, "invalid-scan", `\`${text}\` stands before any column of values`, {
-        where: { line: row.line, column: field.column },
-        expected: "uncertainties behind the column that they belong to",
-        found: text,
-        remedy: "put the column behind that of its values: T, peak1, su",
-      });
-      columns.push({ name: text, role: "uncertainty", of: null });
-    } else if (uncertaintyName.test(text)) columns.push({ name: text, role: "uncertainty", of: lastQuantity(columns) });
-    else columns.push({ name: text, role: kName.test(text) ? "k" : "intensity", of: null });
-  });
-  if (temperature < 0)
-    note(problems, "invalid-scan", "no column of the header is the temperature", {
-      where: { line: row.line, column: row.fields[0]?.column ?? 1 },
-      expected: "a column called T",
-      found: row.text.trim(),
-      remedy: "call the column of temperatures T; they are in K",
-    });
-  const names = columns.filter(({ role }) => role !== "uncertainty").map(({ name }) => name);
-  const twice = names.find((name, index) => names.indexOf(name) !== index);
-  if (twice !== undefined)
-    note(problems, "invalid-scan", `two columns are called ${twice}`, {
-      where: { line: row.line, column: fields.filter(({ text }) => text === twice).at(-1)?.column ?? 1 },
-      expected: "a name of its own for each column",
-      found: twice,
-      remedy: "number the peaks; every column of uncertainties may be called su, behind its peak",
-    });
-  return columns;
-}
-
-function holdsValues({ role }: Column): boolean {
-  return role === "intensity" || role === "k";
-}
-
-/** Index of the last column that is no uncertainty. */
-function lastQuantity(columns: readonly Column[]): number | null {
-  for (let index = columns.length - 1; index >= 0; index--) if (columns[index]?.role !== "uncertainty") return index;
-  return null;
-}
-
-/** `(0 1/2 1)` is one name though blanks separate the columns. */
-function joinedBrackets(fields: readonly Field[]): Field[] {
-  const joined: { text: string; column: number }[] = [];
-  let open = false;
-  for (const { text, column } of fields) {
-    const last = joined.at(-1);
-    if (open && last) last.text += ` ${text}`;
-    else joined.push({ text, column });
-    const whole = joined.at(-1)?.text ?? "";
-    open = (whole.match(/[([]/g) ?? []).length > (whole.match(/[)\]]/g) ?? []).length;
-  }
-  return joined;
+  return Array.from({ length: width }, (_, index) => ({
+    name: index === 0 ? "T" : `column ${index + 1}`,
+    role: index === 0 ? "temperature" : "intensity",
+    of: null,
+    guessed: false,
+  }));
 }
 
 interface Cell {
@@ -160,7 +95,7 @@ interface Cell {
 }
 
 /** The numbers of a row by column; null where a cell is empty. */
-function readRow(row: Row, columns: readonly Column[], problems: ProblemList): (Cell | null)[] {
+function readRow(row: Row, columns: readonly ScanColumn[], problems: ProblemList): (Cell | null)[] {
   const comma = decimalCommaOf(row);
   if (comma) {
     noteDecimalComma(row, comma, problems);
@@ -182,7 +117,7 @@ function readRow(row: Row, columns: readonly Column[], problems: ProblemList): (
       found: row.text.trim(),
       remedy: "write - for a value that is not there",
     });
-  return columns.map(({ name, role }, index) => {
+  return columns.map(({ name, role, of }, index) => {
     const field = row.fields[index];
     const empty = field === undefined || missing.test(field.text);
     if (empty && role !== "temperature") return null;
@@ -190,7 +125,7 @@ function readRow(row: Row, columns: readonly Column[], problems: ProblemList): (
     const wrong =
       number === null ||
       (role === "temperature" && !(number.value > 0)) ||
-      (role === "uncertainty" && !(number.value > 0));
+      (role === "uncertainty" && !(number.value > 0) && !isUnused({ of }, columns));
     if (!wrong) return number;
     note(
       problems,
@@ -215,7 +150,7 @@ function readRow(row: Row, columns: readonly Column[], problems: ProblemList): (
 function seriesOf(
   name: string,
   index: number,
-  columns: readonly Column[],
+  columns: readonly ScanColumn[],
   cells: readonly (readonly (Cell | null)[])[],
 ): ScanSeries {
   const temperature = columns.findIndex(({ role }) => role === "temperature");

@@ -1,6 +1,6 @@
 import { note, type ProblemList } from "./problem-list.js";
 import { openSection } from "./study-section.js";
-import type { StudyCoupling } from "./study-types.js";
+import type { StudyCoupling, StudyRange } from "./study-types.js";
 import { asList, asNumber, asRecord, asText, type NumberLimits } from "./study-values.js";
 import { where } from "./yaml-convert.js";
 import type { TreeNode, TreeRecord } from "./yaml-tree.js";
@@ -12,9 +12,9 @@ const shellNumber: NumberLimits = {
   allows: (value) => Number.isSafeInteger(value) && value >= 1,
 };
 
-const example = "for example - {shell: 1, j: 1.0} or - {bond: 2b, j: -0.3}";
+const example = "for example - {shell: 1, j: 1.0} or - {bond: 2b, j: -0.3} or - {shell: 2, vary: [0, 1, 41]}";
 
-/** `exchange: [{shell, j}, {bond, j}, {shell, between: [Fe1, Fe2], j}]`. */
+/** `exchange: [{shell, j}, {bond, j}, {shell, between: [Fe1, Fe2], j}, {shell, j, vary: [from, to, count]}]`. */
 export function readExchange(node: TreeNode, problems: ProblemList): StudyCoupling[] | null {
   const list = asList(problems, node, "a list of exchange constants", example);
   if (!list) return null;
@@ -25,10 +25,40 @@ export function readExchange(node: TreeNode, problems: ProblemList): StudyCoupli
     const bond = readBond(record, section.get("shell"), section.get("bond"), problems);
     const betweenNode = section.get("between");
     const between = betweenNode && readBetween(betweenNode, problems);
-    const jNode = section.need("j", finite.expected);
+    const varyNode = section.get("vary");
+    const vary = varyNode && readRange(varyNode, problems);
+    // A constant that runs need not have a value of its own.
+    const jNode = varyNode ? section.get("j") : section.need("j", finite.expected);
     const j = jNode && asNumber(problems, jNode, finite);
-    return bond === null || j === null || (betweenNode && between === null) ? [] : [{ bond, between, j }];
+    const missing = [jNode && j === null, betweenNode && between === null, varyNode && vary === null];
+    return bond === null || missing.some((one) => one === true) || (j === null && vary === null)
+      ? []
+      : [{ bond, between, j, vary }];
   });
+}
+
+const valueCount: NumberLimits = {
+  expected: "how many values, at least 2",
+  allows: (value) => Number.isSafeInteger(value) && value >= 2,
+};
+
+/** `vary: [from, to]` or `vary: [from, to, count]`. */
+function readRange(node: TreeNode, problems: ProblemList): StudyRange | null {
+  const expected = "a range [from, to] or [from, to, count]";
+  const remedy = "for example vary: [0, 1, 41]";
+  const list = asList(problems, node, expected, remedy);
+  if (!list) return null;
+  const numbers = list.items.map((item, index) => asNumber(problems, item, index < 2 ? finite : valueCount));
+  if (numbers.some((one) => one === null)) return null;
+  const [from, to, count = null] = numbers;
+  if (numbers.length <= 3 && from != null && to != null && from !== to) return { from, to, count };
+  note(problems, "wrong-type", `\`${node.place.path}\` is not a range of a constant`, {
+    where: where(node.place),
+    expected: `${expected}, from and to not equal`,
+    found: `[${numbers.join(", ")}]`,
+    remedy,
+  });
+  return null;
 }
 
 function readBond(

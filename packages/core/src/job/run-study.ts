@@ -19,7 +19,7 @@ import { numberOption } from "./inputs/number-input.js";
 import { coincidencesOf } from "./study/coincidences.js";
 import { type MadeConfigurations, madeConfigurations, recordOfConfigurations } from "./study/configurations-for.js";
 import { type FoundK, findK } from "./study/find-k.js";
-import { exchangeIfGiven, onsetIfGiven } from "./study/model-and-scan.js";
+import { exchangeIfGiven, needCellForExchange, onsetIfGiven } from "./study/model-and-scan.js";
 import { modesOf } from "./study/modes-of.js";
 import { nextSteps } from "./study/next-steps.js";
 import { readStudy, type StudyInputs, satelliteLimit } from "./study/read-study.js";
@@ -40,6 +40,7 @@ export async function runStudy(work: Work): Promise<RunRecord> {
   const { intensities, onset } = await together({
     intensities: () => intensitiesIfGiven(work),
     onset: () => onsetIfGiven(work),
+    exchangeCell: () => needCellForExchange(work, inputs.cell),
   });
   const found = await findK(work, inputs, bound);
   const branches: BranchRecord[] = [];
@@ -70,7 +71,7 @@ export async function runStudy(work: Work): Promise<RunRecord> {
       inputs,
       found,
       branches,
-      coincidences,
+      { coincidences, exchange, onset },
       work.warnings.map(({ code }) => code),
     ),
   };

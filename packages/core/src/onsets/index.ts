@@ -9,6 +9,7 @@ import { movingK } from "./moving-k.js";
 import { transitionsOf } from "./transitions.js";
 import type { OnsetAnalysis, OnsetOptions, ScanSeries } from "./types.js";
 
+export { likeUncertainties } from "./like-uncertainties.js";
 export type {
   KAgainstTemperature,
   Measured,

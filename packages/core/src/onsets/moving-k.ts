@@ -6,6 +6,8 @@ const fewestPoints = 5;
 const fewestOnPlateau = 4;
 const leastProbability = 0.01;
 const largestDenominator = 8;
+/** Of polynomials that count as one smooth curve. */
+const smoothestDegree = 4;
 /** In χ²: what a level stretch must gain over one smooth curve. */
 const leastGain = 6;
 
@@ -22,7 +24,7 @@ export function movingK(series: ScanSeries): KAgainstTemperature {
   const base = { name, uncertaintySource: given ? "given" : "scatter" } as const;
   if (values.length < fewestPoints) return { ...base, behaviour: "undecided", plateaus: [], slope: null };
   const all = run(values, su, 0, values.length);
-  if (all.probability >= leastProbability)
+  if (all.probability >= leastProbability || (!given && !movesBeyondScatter(temperatures, values)))
     return { ...base, behaviour: "constant", plateaus: [plateau(temperatures, all)], slope: null };
   const plateaus = plateausOf({ temperatures, values, su }).map((one) => plateau(temperatures, one));
   const moving = temperatures.flatMap((one, n) =>
@@ -41,6 +43,22 @@ export function movingK(series: ScanSeries): KAgainstTemperature {
             moving.map((n) => su[n] as number),
           ),
   };
+}
+
+/**
+ * Whether a smooth curve explains more than a constant where the scatter itself is unknown, by Schwarz's criterion
+ * N ln(χ²₀/χ²) − p ln N: second differences of a few points tell the scatter too roughly for a test of χ².
+ */
+function movesBeyondScatter(temperatures: readonly number[], values: readonly number[]): boolean {
+  const data = { temperatures, values, su: values.map(() => 1) };
+  const count = values.length;
+  const level = deviations(data, 0);
+  // A curve through nearly all points would explain anything.
+  const degrees = Math.min(smoothestDegree, new Set(temperatures).size - 3);
+  return Array.from({ length: degrees }, (_, n) => n + 1).some((degree) => {
+    const gain = count * Math.log(level / Math.max(deviations(data, degree), Number.MIN_VALUE));
+    return gain - degree * Math.log(count) > leastGain;
+  });
 }
 
 interface Run {
@@ -100,7 +118,7 @@ function plateausOf(data: Weighed, offset = 0): Run[] {
   const count = data.values.length;
   if (count < fewestOnPlateau + 1) return [];
   const price = Math.log(count);
-  const smooth = smoothest(data, 0, count, 4, price);
+  const smooth = smoothest(data, 0, count, smoothestDegree, price);
   const before = Array.from({ length: count + 1 }, (_, end) => smoothest(data, 0, end, 2, price));
   const behind = Array.from({ length: count + 1 }, (_, start) => smoothest(data, start, count, 2, price));
   let best: { readonly run: Run; readonly value: number } | null = null;
@@ -134,19 +152,20 @@ function part({ temperatures, values, su }: Weighed, start: number, end: number)
 
 /** The least χ² + p ln N of polynomials up to a degree; 0 for no points. */
 function smoothest(data: Weighed, start: number, end: number, degree: number, price: number): number {
-  const { temperatures, values, su } = part(data, start, end);
-  const count = values.length;
-  if (count === 0) return 0;
+  const own = part(data, start, end);
+  if (own.values.length === 0) return 0;
+  const distinct = new Set(own.temperatures).size;
+  return Math.min(
+    ...Array.from({ length: Math.min(degree, distinct - 1) + 1 }, (_, n) => deviations(own, n) + (n + 1) * price),
+  );
+}
+
+/** χ² of the polynomial of a degree. */
+function deviations({ temperatures, values, su }: Weighed, degree: number): number {
   const middle = ((temperatures[0] as number) + (temperatures.at(-1) as number)) / 2;
   const span = Math.max((temperatures.at(-1) as number) - (temperatures[0] as number), 1e-9);
   const x = temperatures.map((one) => (2 * (one - middle)) / span);
-  const distinct = new Set(temperatures).size;
-  return Math.min(
-    ...Array.from(
-      { length: Math.min(degree, distinct - 1) + 1 },
-      (_, n) => fitPolynomial(x, values, su, n).chiSquared + (n + 1) * price,
-    ),
-  );
+  return fitPolynomial(x, values, su, degree).chiSquared;
 }
 
 function slopeOf(

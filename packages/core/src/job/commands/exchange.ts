@@ -5,7 +5,10 @@ import {
   type BondTable,
   balancedModel,
   bondTable,
+  classesNamed,
   constantMoments,
+  constantName,
+  type DiagramAxis,
   type ExchangeLevels,
   type ExchangeModel,
   exchangeLevels,
@@ -29,7 +32,7 @@ import { siteModes } from "../../modes/index.js";
 import { type ConfigurationEnergyRecord, type ExchangeRecord, exchangeRecord } from "../../reports/index.js";
 import type { SiteOrbit } from "../../spacegroups/index.js";
 import { cellFor, writtenCell } from "../inputs/cell-input.js";
-import { axesOf, constantsOf, type GivenRange, rangesOf, spinsOf } from "../inputs/exchange-input.js";
+import { axesOf, constantsOf, rangesOf, runningAlone, spinsOf } from "../inputs/exchange-input.js";
 import { groupOf } from "../inputs/group-input.js";
 import { placedK, writtenKs } from "../inputs/k-input.js";
 import { numberOption } from "../inputs/number-input.js";
@@ -60,19 +63,19 @@ export async function exchangeCommand(work: Work, found: readonly WaveVector[] |
     placed: () => found ?? ks.map((one) => placedK(work, group, one)),
   });
   const orbits = orbitsOf(work, group, sites, cell);
-  const alone = runningAlone(constants, ranges);
-  for (const { bond, j } of alone)
-    remember(
-      work,
-      [{ what: `J${bond} outside the diagram`, value: String(j), because: "it only runs: --j does not give it" }],
-      [],
-    );
-  const all = [...constants, ...alone];
-  const needed = farthestShell(all);
+  const needed = farthestShell([...constants, ...ranges]);
   const table = bondTable(group, cell, orbits, {
     shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),
   });
   refuseCloseAtoms(table);
+  const { axes } = await together({
+    axes: () => axesOf(table, ranges),
+    // Both faults are told at once.
+    constants: () => exchangeModel(table, constants),
+  });
+  const alone = runningAlone(ranges, table, constants);
+  rememberRanges(work, table, { axes, alone, constants });
+  const all = [...constants, ...alone];
   const plain = exchangeModel(table, all, all.length === 0 ? {} : spinsOf(work, sites));
   if (all.length === 0) return exchangeRecord(table, plain, nothing);
   if (ranges.length === 0 && plain.couplings.every(({ j }) => j === 0)) {
@@ -81,7 +84,7 @@ export async function exchangeCommand(work: Work, found: readonly WaveVector[] |
     return exchangeRecord(table, plain, nothing);
   }
   const model = await balancedModel(plain, null, work.host);
-  return exchangeRecord(table, model, await findingsOf(work, { table, model, placed, ranges, orbits }));
+  return exchangeRecord(table, model, await findingsOf(work, { model, placed, axes, orbits }));
 }
 
 /** Å. Magnetic atoms nearer than this are one atom written twice, or split positions of one: no bond is so short. */
@@ -105,22 +108,39 @@ const nothing = {
   diagram: null,
 } as const;
 
-/** A constant that only runs need not be given: it starts where its range does. */
-function runningAlone(constants: readonly GivenCoupling[], ranges: readonly GivenRange[]): GivenCoupling[] {
-  return ranges
-    .filter(({ bond }) => !constants.some((one) => one.bond === bond))
-    .map(({ bond, from }) => ({ bond, between: null, j: from }));
+/** What runs without a constant, and which bonds run apart from the rest of a shell that has one. */
+function rememberRanges(
+  work: Work,
+  table: BondTable,
+  {
+    axes,
+    alone,
+    constants,
+  }: { axes: readonly DiagramAxis[]; alone: readonly GivenCoupling[]; constants: readonly GivenCoupling[] },
+): void {
+  for (const one of alone) {
+    const what = `J${constantName(one, classesNamed(table, one))} outside the diagram`;
+    remember(work, [{ what, value: String(one.j), because: "it only runs: no constant is given for it" }], []);
+  }
+  for (const { name, classes } of axes)
+    for (const one of constants) {
+      const others = classesNamed(table, one).filter((bonds) => !classes.includes(bonds.name));
+      const own = classesNamed(table, one).length - others.length;
+      if (own === 0 || others.length === 0) continue;
+      const value = `${classes.join(", ")} alone; ${others.map((bonds) => bonds.name).join(", ")} stays at ${one.j}`;
+      const because = `J${constantName(one, classesNamed(table, one))} = ${one.j} is given for them together`;
+      remember(work, [{ what: `what runs as J${name}`, value, because }], []);
+    }
 }
 
 interface Question {
-  readonly table: BondTable;
   readonly model: ExchangeModel;
   readonly placed: readonly WaveVector[];
-  readonly ranges: readonly GivenRange[];
+  readonly axes: readonly DiagramAxis[];
   readonly orbits: readonly SiteOrbit[];
 }
 
-async function findingsOf(work: Work, { table, model, placed, ranges, orbits }: Question) {
+async function findingsOf(work: Work, { model, placed, axes, orbits }: Question) {
   const { host } = work;
   const ground = await groundOf(model, {}, host);
   const numeric = placed.filter((k) => numericWaveVector(k) !== null);
@@ -141,7 +161,6 @@ async function findingsOf(work: Work, { table, model, placed, ranges, orbits }: 
   const shown = ground.set.vectors.slice(0, shownVectors);
   const levels = shown.map(({ k }) => ({ from: "minimum" as const, levels: exchangeLevels(model, k, tolerance) }));
   const asked = numeric.map((k) => ({ from: "given" as const, levels: exchangeLevels(model, k, tolerance) }));
-  const axes = axesOf(table, ranges);
   const given = numeric.filter(isExactWaveVector);
   const exact =
     given.length > 0
@@ -200,10 +219,7 @@ async function stationaryFor(
   const at = ks.findIndex((k) => !isExactWaveVector(k));
   const [k, levels] = [ks[at], asked[at]?.levels];
   if (!k || !levels) return null;
-  const fixedBySymmetry = isFixed(levels);
-  // Atoms that symmetry does not relate have site potentials, which other constants would change: no verdict then.
-  const searchZone = new Set(model.table.atoms.map(({ orbit }) => orbit)).size === 1;
-  return stationaryConstants(model, k, { fixedBySymmetry, searchZone }, host);
+  return stationaryConstants(model, k, { fixedBySymmetry: isFixed(levels) }, host);
 }
 
 /** The lowest level is one irrep that no other level has: then symmetry alone makes its eigenvector. */

@@ -1,6 +1,6 @@
-import { fail } from "../../errors/index.js";
-import { parseScanTable } from "../../files/index.js";
-import { analyseScan } from "../../onsets/index.js";
+import { fail, problem } from "../../errors/index.js";
+import { isUnused, parseScanTable, type ScanTable } from "../../files/index.js";
+import { analyseScan, likeUncertainties, type ScanSeries } from "../../onsets/index.js";
 import { type OnsetRecord, onsetRecord } from "../../reports/index.js";
 import { optionOf, studyText } from "../inputs/given.js";
 import { numberOption } from "../inputs/number-input.js";
@@ -25,6 +25,7 @@ export async function onsetCommand(work: Work): Promise<OnsetRecord> {
       ],
       [],
     );
+  rememberColumns(work, table);
   const bare = table.intensities.filter(({ uncertainties }) => uncertainties === null);
   if (bare.length > 0)
     remember(
@@ -39,6 +40,38 @@ export async function onsetCommand(work: Work): Promise<OnsetRecord> {
       [],
     );
   return onsetRecord(table, analyseScan(table.intensities, table.k, reduced === null ? {} : { reducedRange: reduced }));
+}
+
+/** What was told by likeness, and what looks like something else than what it was taken as. */
+function rememberColumns(work: Work, table: ScanTable): void {
+  const { columns, intensities, file } = table;
+  for (const one of columns) {
+    const owner = one.of === null ? undefined : columns[one.of];
+    if (owner === undefined) continue;
+    const what = `column ${one.name} of the scan`;
+    if (isUnused(one, columns))
+      remember(work, [{ what, value: "uncertainties of T, left out", because: "the fits take T as exact" }], []);
+    else if (one.guessed) {
+      const because = `its name follows that of ${owner.name}; call it su to say so, or otherwise to have it fitted`;
+      remember(work, [{ what, value: `uncertainties of ${owner.name}`, because }], []);
+    }
+  }
+  for (const [index, { name, uncertainties }] of intensities.entries()) {
+    const before = intensities[index - 1];
+    const bare = before !== undefined && before.uncertainties === null && uncertainties === null;
+    if (!bare || !likeUncertainties(intensities[index] as ScanSeries, before)) continue;
+    const doubt = problem(
+      "invalid-scan",
+      `${name} was fitted as a peak, but it may be the uncertainties of ${before.name}`,
+      {
+        where: { file },
+        expected: "a name such as su for a column of uncertainties",
+        found: `numbers that are as large as ${before.name} scatters`,
+        remedy: `if they are, name the columns in a header, with su behind ${before.name}`,
+      },
+    );
+    remember(work, [], [doubt]);
+  }
 }
 
 async function scanOf(work: Work) {

@@ -16,6 +16,8 @@ export const formatTopics: { readonly [topic: string]: HelpTopic } = {
   peaks: {file: satellites.csv, as: two-theta, wavelength: 2.41, tolerance: 0.08}
   intensities: {file: integrated.csv, scale: 40}   # kvane help intensities has more keys
   search: {unmatched: 1, max-dimension: 3, zero-shift: 0.05, cell-scale: 0.002}
+  exchange: [{shell: 1, j: 1.0}, {shell: 2, vary: [0, 1, 41]}]   # kvane help bonds
+  onset: {file: scan.csv}             # kvane help scan
   exclude: [[38.1, 38.6]]             # ranges of positions that are set aside
   impurities:                         # peaks on their lines are set aside
     - name: MnO

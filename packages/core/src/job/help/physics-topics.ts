@@ -15,12 +15,21 @@ symmetry does not make all bonds of a shell equal they are 2a, 2b, …; without 
   --j "2 Fe1 Fe2 0.4"                 only the bonds of the shell between these sites
   exchange: [{shell: 1, j: 1.0}, {bond: 2b, j: -0.3}, {shell: 3, between: [Fe1, Fe2], j: 0.4}]
 
+In what k asks of the constants each has one row as it was named: J2 where shell 2 was given as a
+whole, J2a and J2b where they were told apart.
+
 The lowest eigenvalue of J(k) is searched over the whole zone with proof (Luttinger and Tisza); it
 bounds the energy of any arrangement from below. It is then tried to build spins of full length
 that reach it. Sites that symmetry does not relate are balanced first (Lyons and Kaplan).
 
   --vary "2 0 1 41"                   phase diagram while J2 runs from 0 to 1; twice for a map
-  --k 0,0,0.29                        energies at this k, and which constants put the minimum there`,
+  exchange: [{shell: 1, j: 1.0}, {shell: 2, j: 0.4, vary: [0, 1, 41]}]        the same in a study
+  --k 0,0,0.29                        energies at this k, and which constants put the minimum there
+
+vary holds from, to and how many values (21 where it is left out); a constant that runs needs no j.
+One kind of bonds may run alone, --vary "2a 0 1", while the rest of its shell stays. --vary wins
+over the ranges of a study, and --j over its constants and their ranges. --csv has the points of
+the diagram, without one the energies, and without constants the bonds.`,
   },
   intensities: {
     title: "Integrated intensities",
@@ -63,10 +72,13 @@ configuration and ranks them by χ² + parameters · ln(intensities). A ranking 
   scan: {
     title: "Temperature scans",
     text: `Rows of a temperature in K and one or more quantities, in any order of the rows. The header names
-the columns: T, then a name for each peak. A column called su (or sigma, error, esd, uncertainty)
-holds the uncertainties of the one before it; a value may carry its own, 132(4). Columns called k,
-kx, ky, kz, u, v or w are components of the wave vector. -, NaN and nan
-stand for a value that is not there; rows times peaks may be up to 10000.
+the columns: T, then a name for each peak. A column called su (or sigma, err, error, esd, std,
+uncertainty) holds the uncertainties of the one before it; with a name behind it, su_I1 or err(I1),
+those of that one. Names that follow that of a peak do so too: I1 s1, I1 dI1, I1 I1err, and s or e
+alone; that is listed under Assumed. A value may carry its own, 132(4). What every column was taken
+as stands under Columns; one that looks like uncertainties and has no such name is fitted as a peak
+and warned about. Columns called k, kx, ky, kz, u, v or w are components of the wave vector. -, NaN
+and nan stand for a value that is not there; rows times peaks may be up to 10000.
 
   T      (0 0 1/2)  su   (1 0 1/2)  su
   2.0    98.1       2.0  41.7       1.1

@@ -86,27 +86,28 @@ function atKRecord({ from, levels }: ExchangeFindings["atK"][number], ground: Gr
 }
 
 function stationaryRecord(answer: StationaryAnswer): StationaryRecord {
-  const classes = answer.classes.map(({ name }) => name);
+  const names = answer.constants.map(({ name }) => name);
   return {
     k: waveVectorToJson(answer.k),
-    classes,
+    constants: answer.constants,
     relations: answer.relations.map(({ letter, slopes, curvatures, cosines }) => ({
       letter,
       slopes,
       curvatures,
-      text: cosines && relationText(cosines, classes, letter),
+      text: cosines && relationText(cosines, names, letter),
     })),
     fixedBySymmetry: answer.fixedBySymmetry,
     slopes: answer.slopes,
     needed: answer.needed,
+    potentials: answer.potentials,
   };
 }
 
 /** `J1 + 4 cos(2πu) J2 = 0`, divided by the first factor. */
-function relationText(cosines: readonly (readonly CosineTerm[])[], classes: readonly string[], letter: string): string {
+function relationText(cosines: readonly (readonly CosineTerm[])[], names: readonly string[], letter: string): string {
   const unit = Math.abs(cosines.flat()[0]?.factor ?? 1);
   const parts = cosines.flatMap((terms, index) => {
-    const name = `J${classes[index]}`;
+    const name = `J${names[index]}`;
     const scaled = terms.map(({ factor, multiple }) => ({ factor: Number((factor / unit).toPrecision(10)), multiple }));
     if (scaled.length === 0) return [];
     const [only] = scaled;

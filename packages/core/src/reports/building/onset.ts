@@ -5,6 +5,11 @@ import type { OnsetRecord, PeakOnsetRecord } from "../records/onset.js";
 export function onsetRecord(table: ScanTable, analysis: OnsetAnalysis): OnsetRecord {
   return {
     file: table.file,
+    columns: table.columns.map(({ name, role, of }) => ({
+      name,
+      as: role,
+      of: of === null ? null : (table.columns[of]?.name ?? null),
+    })),
     rows: table.rows,
     peaks: analysis.peaks.map((peak, index) => ({ ...peak, data: dataOf(table.intensities[index]) })),
     transitions: analysis.transitions.map(({ temperature, series, probability }) => ({

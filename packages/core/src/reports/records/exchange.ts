@@ -103,8 +103,8 @@ export interface ConfigurationEnergyRecord {
 
 export interface StationaryRecord {
   readonly k: KRecord;
-  /** Names of the classes that the lists below are in the order of. */
-  readonly classes: readonly string[];
+  /** The constants as they were given; the lists below are in their order. */
+  readonly constants: readonly { readonly name: string; readonly classes: readonly string[]; readonly j: number }[];
   readonly relations: readonly {
     readonly letter: string;
     readonly slopes: readonly number[];
@@ -116,10 +116,14 @@ export interface StationaryRecord {
   readonly slopes: readonly number[];
   readonly needed: readonly {
     readonly name: string;
+    readonly classes: readonly string[];
     readonly j: number | null;
-    readonly minimum: boolean;
+    readonly along: "minimum" | "maximum" | "level";
     readonly lowest: boolean | null;
+    readonly oneOfMany: boolean;
   }[];
+  /** Site potentials with which the needed constants were worked out. */
+  readonly potentials: "none" | "balanced anew" | "those of the model";
 }
 
 export interface DiagramRecord {

@@ -58,9 +58,18 @@ export interface MovingKRecord {
   readonly data: PeakOnsetRecord["data"];
 }
 
+/** What a column of the scan was taken as. */
+export interface ScanColumnRecord {
+  readonly name: string;
+  readonly as: "temperature" | "intensity" | "k" | "uncertainty";
+  /** The column that uncertainties belong to; null for other columns. */
+  readonly of: string | null;
+}
+
 /** Result of `kvane onset`. */
 export interface OnsetRecord {
   readonly file: string;
+  readonly columns: readonly ScanColumnRecord[];
   readonly rows: number;
   readonly peaks: readonly PeakOnsetRecord[];
   readonly transitions: readonly TransitionRecord[];

@@ -74,13 +74,14 @@ const configuration = record({
 
 const stationary = record({
   k: shared("k"),
-  classes: list(text),
+  constants: list(record({ name: text, classes: list(text), j: number })),
   relations: list(
     record({ letter: oneOf("u", "v", "w"), slopes: list(number), curvatures: list(number), text: nullable(text) }),
   ),
   fixedBySymmetry: flag,
   slopes: list(number),
-  needed: list(record({ name: text, j: nullable(number), minimum: flag, lowest: nullable(flag) })),
+  needed: list(record({ name: text, classes: list(text), j: nullable(number), minimum: flag, lowest: nullable(flag) })),
+  potentials: oneOf("none", "balanced anew", "those of the model"),
 });
 
 const diagram = record({
@@ -126,6 +127,7 @@ const law = record({
 
 export const onsetSchema: JsonSchema = record({
   file: text,
+  columns: list(record({ name: text, as: oneOf("temperature", "intensity", "k", "uncertainty"), of: nullable(text) })),
   rows: count,
   peaks: list(
     record({

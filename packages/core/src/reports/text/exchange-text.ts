@@ -253,49 +253,75 @@ function configurationSection({ configurations }: ExchangeRecord): string[] {
 }
 
 function stationarySection(answer: StationaryRecord): string[] {
+  const names = answer.constants.map(({ name }) => name);
   const relations = answer.relations.flatMap((one) => [
     ...(one.text === null ? [] : [[`Relation in ${one.letter}`, one.text] as const]),
-    [`Slope in ${one.letter}`, sumText(one.slopes, answer.classes)] as const,
-    ...(answer.fixedBySymmetry
-      ? [[`Curvature in ${one.letter}`, sumText(one.curvatures, answer.classes)] as const]
-      : []),
+    [`Slope in ${one.letter}`, sumText(one.slopes, names)] as const,
+    ...(answer.fixedBySymmetry ? [[`Curvature in ${one.letter}`, sumText(one.curvatures, names)] as const] : []),
   ]);
+  const shared = answer.constants.filter(({ classes }) => classes.length > 1);
   const validity = answer.fixedBySymmetry
-    ? "Symmetry fixes the eigenvector here, so the slope is linear in the constants: it must be 0, and the curvature above 0, for the minimum to lie at this k."
+    ? "Symmetry fixes the eigenvector of this level, so the slope is linear in the constants as long as the level is the lowest: it must be 0, and the curvature above 0, for the minimum to lie at this k."
     : "The eigenvector depends on the constants: the slope is that near the constants of the model.";
   return section(
     `What k = ${kText(answer.k)} asks of the constants`,
     fields(relations),
     [""],
-    paragraph(validity),
+    paragraph([validity, ...shared.map(sharedText)].join(" ")),
     answer.needed.length === 0 ? [] : [""],
-    answer.needed.length === 0
+    answer.needed.length === 0 ? [] : neededTable(answer),
+    answer.needed.length === 0 || answer.potentials === "none"
       ? []
-      : table(
-          [
-            { title: "bonds" },
-            { title: "J needed, others as they are", align: "right" },
-            { title: "along the line" },
-            { title: "in the whole zone" },
-          ],
-          answer.needed.map(({ name, j, minimum, lowest }) => [
-            name,
-            j === null ? "none" : energyText(j),
-            j === null ? "–" : minimum ? "minimum" : "maximum",
-            lowest === null ? "not decided" : lowest ? "the lowest" : "another k is lower",
-          ]),
-        ),
+      : ["", ...paragraph(potentialText[answer.potentials])],
   );
 }
 
-function sumText(factors: readonly number[], classes: readonly string[]): string {
+/** A constant that several kinds of bonds share. */
+function sharedText({ name, classes }: StationaryRecord["constants"][number]): string {
+  return name === classes.join("=")
+    ? `J${name} is one constant.`
+    : `J${name} is one constant of the bonds ${classes.join(" and ")}.`;
+}
+
+function neededTable({ needed }: StationaryRecord): string[] {
+  return table(
+    [
+      { title: "constant" },
+      { title: "J needed, others as they are", align: "right" },
+      { title: "along the line" },
+      { title: "in the whole zone" },
+    ],
+    needed.map((one) => [
+      one.name,
+      one.j === null ? "none found" : energyText(one.j),
+      one.j === null ? "–" : one.along,
+      one.j === null ? "–" : zoneText(one),
+    ]),
+  );
+}
+
+function zoneText({ lowest, oneOfMany }: StationaryRecord["needed"][number]): string {
+  if (lowest === null) return "not decided";
+  if (!lowest) return "another k is lower";
+  return oneOfMany ? "one of a continuous set of lowest k" : "the lowest";
+}
+
+const potentialText = {
+  "balanced anew":
+    "Another constant changes the site potentials: they were balanced anew for each value, and the whole zone was searched with them.",
+  "those of the model":
+    "The site potentials are those of the model above. Other constants would change them, so that neither these values nor which k is then the lowest is decided.",
+} as const;
+
+function sumText(factors: readonly number[], names: readonly string[]): string {
   return factors
     .map((factor, index) =>
-      `${factor < 0 ? "−" : index === 0 ? "" : "+"} ${unbroken(`${Number(Math.abs(factor).toPrecision(6))} J${classes[index]}`)}`.trim(),
+      `${factor < 0 ? "−" : index === 0 ? "" : "+"} ${unbroken(`${Number(Math.abs(factor).toPrecision(6))} J${names[index]}`)}`.trim(),
     )
     .join(" ");
 }
 
-function diagramSection(diagram: DiagramRecord): string[] {
+/** The phases and where they meet. */
+export function diagramSection(diagram: DiagramRecord): string[] {
   return section(`Phase diagram (${diagram.axes.map(({ name }) => `J${name}`).join(", ")})`, diagramLines(diagram));
 }

@@ -17,6 +17,7 @@ export function onsetText(record: OnsetRecord): string[] {
       "Temperature scan",
       fields([
         ["File", record.file],
+        ["Columns", columnsText(record)],
         ["Rows", String(record.rows)],
         ["Peaks", String(record.peaks.length)],
       ]),
@@ -28,6 +29,16 @@ export function onsetText(record: OnsetRecord): string[] {
     ...otherSection(record.peaks),
     ...kSections(record.k),
   ];
+}
+
+/** What each column was taken as: `T; I1 with s.u. su; I2; k: u with s.u. su2`. */
+export function columnsText({ columns }: OnsetRecord): string {
+  const texts = columns.flatMap(({ name, as }) => {
+    if (as === "uncertainty") return [];
+    const su = columns.find(({ of }) => of === name);
+    return [unbroken(`${as === "k" ? "k: " : ""}${name}${su === undefined ? "" : ` with s.u. ${su.name}`}`)];
+  });
+  return texts.join("; ");
 }
 
 /** The transitions alone, for the short report of the whole job. */

@@ -4,7 +4,7 @@ import type { BranchRecord, RunRecord } from "../records/run.js";
 import type { OverlapRecord } from "../records/satellites.js";
 import type { PeaksRecord } from "../records/search.js";
 import { configurationsText, configurationTable } from "./configurations-text.js";
-import { exchangeSummary, exchangeText } from "./exchange-text.js";
+import { diagramSection, exchangeSummary, exchangeText } from "./exchange-text.js";
 import { peaksText } from "./flag-text.js";
 import { irrepsText, irrepTable } from "./irreps-text.js";
 import { fields, paragraph, section, table, unbroken } from "./layout.js";
@@ -31,6 +31,7 @@ export function runShortText(record: RunRecord): string[] {
     ...searchSection(record),
     ...record.branches.flatMap((branch, index) => branchText(branch, record.branches.length > 1 ? index + 1 : null)),
     ...(record.exchange === null ? [] : section("Exchange model", fields(exchangeSummary(record.exchange)))),
+    ...(record.exchange?.diagram ? diagramSection(record.exchange.diagram) : []),
     ...(record.onset === null ? [] : [...transitionSection(record.onset), ...kSections(record.onset.k)]),
     ...section(
       "Next",
@@ -206,7 +207,7 @@ function configurationSummary({ configurations }: BranchRecord, name: string): s
 
 /** The ranking alone; the full report and `kvane weigh` have moments and intensities. */
 function weightSummary({ weigh }: BranchRecord, name: string): string[] {
-  return weigh === null ? [] : section(`${name}Weights`, weighSummary(weigh, shownConfigurations));
+  return weigh === null ? [] : section(`${name}Fits to intensities`, weighSummary(weigh, shownConfigurations));
 }
 
 function satelliteSummary({ satellites }: BranchRecord, name: string): string[] {
