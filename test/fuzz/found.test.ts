@@ -2,7 +2,7 @@ import { readFileSync } from "node:fs";
 import { join } from "node:path";
 import { problem } from "@kvane/core/errors";
 import { parseCif, parseMomentList, parseStudy, readCifStructure, readMagneticCif } from "@kvane/core/files";
-import { version } from "@kvane/core/job";
+import { answer, type Request, version } from "@kvane/core/job";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "../cli/command.js";
 import { schemaErrors } from "../cli/schemas.js";
@@ -78,6 +78,23 @@ describe("found by fuzzing: drafts and schemas", () => {
 });
 
 describe("found by fuzzing: commands", () => {
+  test("values of a wrong type are refused, not passed over, all at once", async () => {
+    const request = { command: "modes", group: 62, k: [0, 0, 0], sites: "Fe 0 0 0", polar: "yes", cell: null };
+    const whole = await answer(request as unknown as Request, { readText: async () => "" });
+    expect(whole.errors.map(({ code, where }) => `${code} ${where.argument}`)).toEqual([
+      "invalid-argument GROUP",
+      "invalid-argument --k",
+      "invalid-argument --site",
+      "invalid-argument --polar",
+    ]);
+    expect(schemaErrors("modes", whole)).toEqual([]);
+  });
+
+  test("a command that is no text is no command", async () => {
+    const whole = await answer({ command: 5 } as unknown as Request, { readText: async () => "" });
+    expect(whole).toMatchObject({ command: "5", errors: [{ code: "unknown-command" }] });
+  });
+
   test.each(["--k\n--k", "--a'b"])("an unknown option is named whole: %j", async (word) => {
     const { status, stdout } = await run("run", "--example", word, "--json");
     expect(status).toBe(2);

@@ -24,18 +24,19 @@ export interface LineResult {
   readonly stderr: string;
 }
 
-/** The request as words. */
+/** The request as words; values that are no texts cannot be typed. */
 function wordsOf({ command, ...fields }: Request): string[] {
-  const first = Object.keys(fields).find((field) => !argumentNames[field as RequestField]?.startsWith("--"));
-  const words = [command];
-  if (first !== undefined) words.push(...[fields[first as keyof typeof fields]].flat().map(String));
+  const first: string[] = [];
+  const options: string[] = [];
   for (const [field, value] of Object.entries(fields)) {
-    const option = argumentNames[field as RequestField];
-    if (!option?.startsWith("--") || option === "--out" || value === null || value === false) continue;
-    if (value === true) words.push(option);
-    else for (const one of [value].flat()) words.push(option, String(one));
+    const option = argumentNames[field as RequestField] ?? "";
+    if (option === "--out") continue;
+    const texts = [value].flat().filter((one) => typeof one === "string");
+    if (!option.startsWith("--")) first.push(...texts.slice(0, 1));
+    else if (value === true) options.push(option);
+    else options.push(...texts.flatMap((text) => [option, text]));
   }
-  return words;
+  return [command, ...first.slice(0, 1), ...options];
 }
 
 /** A word lost, doubled, moved, spoilt or put in; most lines stay as they are. */

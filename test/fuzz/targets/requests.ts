@@ -90,6 +90,7 @@ export function spoiltRequest(random: Random): Request {
   for (let times = random.below(4); times > 0; times -= 1) {
     const field = random.pick(random.below(8) === 0 ? fields : takes);
     if (random.below(4) === 0) delete request[field];
+    else if (random.below(20) === 0) request[field] = random.pick([0, Number.NaN, true, [], {}, [1], [[]], ""]);
     else request[field] = valueFor(field, random);
   }
   return request as unknown as Request;

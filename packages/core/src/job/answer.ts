@@ -4,6 +4,7 @@ import { type CommandEntry, commandTable } from "./commands.js";
 import { withRemedy } from "./remedies.js";
 import type { JobHost, Request, RequestField } from "./request.js";
 import { fieldKind } from "./request-fields.js";
+import { checkShape } from "./request-shape.js";
 import { version } from "./version.js";
 import type { Work } from "./work.js";
 
@@ -13,12 +14,14 @@ import type { Work } from "./work.js";
  * the same files give the same answer.
  */
 export async function answer(request: Request, host: JobHost): Promise<Envelope<object>> {
-  const entry = Object.hasOwn(commandTable, request.command) ? commandTable[request.command] : undefined;
+  const command = String(request.command);
+  const entry = Object.hasOwn(commandTable, command) ? commandTable[command] : undefined;
   const work: Work = { request, host, study: null, structure: null, assumed: [], warnings: [] };
-  const frame = { kvane: version, format: 1, command: request.command, input: {} as InputRecord } as const;
+  const frame = { kvane: version, format: 1, command, input: {} as InputRecord } as const;
   try {
+    checkShape(request);
     Object.assign(frame.input, inputRecord(request, entry));
-    if (entry === undefined) return refuse(request.command);
+    if (entry === undefined) return refuse(command);
     const files = await readFiles(request, host);
     const result = await (await entry.load())({ ...work, ...files });
     return { ...frame, result, errors: [], warnings: work.warnings, assumed: work.assumed };
