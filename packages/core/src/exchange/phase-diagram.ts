@@ -27,6 +27,7 @@ export interface DiagramPhase {
   readonly dimension: 0 | 1 | 2 | 3;
 }
 
+/** A point of a phase diagram: constants, the set of k of lowest energy and the energy. */
 export interface DiagramPoint {
   readonly values: readonly number[];
   /** Per spin. */
@@ -35,6 +36,7 @@ export interface DiagramPoint {
   readonly k: readonly WaveVector[];
 }
 
+/** Which k are preferred while one or two constants run. */
 export interface PhaseDiagram {
   /** Directions of k that no bond notices, whatever the constants. */
   readonly freeDirections: number;

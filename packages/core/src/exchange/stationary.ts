@@ -21,6 +21,7 @@ export interface StationaryRelation {
   readonly cosines: readonly (readonly CosineTerm[])[] | null;
 }
 
+/** Which constants put a stationary point at a given k. */
 export interface StationaryAnswer {
   readonly k: WaveVector;
   /** As the model was given: one for a whole shell where its classes were not told apart. */

@@ -120,6 +120,7 @@ export interface MinimumSet {
   readonly free: readonly (readonly number[])[];
 }
 
+/** The k of lowest energy of an exchange model, with the certificate of the search. */
 export interface Ground {
   /** Energy per spin, (1/2N) times the lowest eigenvalue; what the method of Luttinger and Tisza bounds. */
   readonly energy: number;

@@ -53,6 +53,7 @@ export type PeakBehaviour =
   /** Too few points for an answer. */
   | "undecided";
 
+/** The onset of one column of a scan. */
 export interface SeriesOnset {
   readonly name: string;
   readonly behaviour: PeakBehaviour;
@@ -74,6 +75,7 @@ export interface Transition {
   readonly probability: number | null;
 }
 
+/** A range of temperatures in which k does not move. */
 export interface Plateau {
   /** K. */
   readonly from: number;
@@ -94,12 +96,14 @@ export interface KAgainstTemperature {
   readonly uncertaintySource: "given" | "scatter";
 }
 
+/** What a temperature scan says: onsets, common transitions, the movement of k. */
 export interface OnsetAnalysis {
   readonly peaks: readonly SeriesOnset[];
   readonly transitions: readonly Transition[];
   readonly k: readonly KAgainstTemperature[];
 }
 
+/** How scans are fitted. */
 export interface OnsetOptions {
   /** Largest (T_N − T)/T_N used; without it the widest range that the law fits. */
   readonly reducedRange?: number;

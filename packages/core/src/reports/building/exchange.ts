@@ -30,6 +30,7 @@ export interface ExchangeFindings {
   readonly diagram: PhaseDiagram | null;
 }
 
+/** The record of an exchange model for JSON, text and CSV. */
 export function exchangeRecord(table: BondTable, model: ExchangeModel, found: ExchangeFindings): ExchangeRecord {
   const constants = new Map(model.couplings.map(({ bonds, j }) => [bonds.name, j]));
   return {

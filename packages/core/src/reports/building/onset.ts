@@ -2,6 +2,7 @@ import type { ScanTable } from "../../files/index.js";
 import type { OnsetAnalysis, ScanSeries } from "../../onsets/index.js";
 import type { OnsetRecord, PeakOnsetRecord } from "../records/onset.js";
 
+/** The record of a temperature scan for JSON, text and CSV. */
 export function onsetRecord(table: ScanTable, analysis: OnsetAnalysis): OnsetRecord {
   return {
     file: table.file,

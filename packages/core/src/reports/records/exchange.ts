@@ -25,6 +25,7 @@ export interface BondClassRecord {
   readonly j: number | null;
 }
 
+/** A shell of neighbours: distance, bonds, kinds that symmetry tells apart. */
 export interface ShellRecord {
   readonly number: number;
   /** Å. */
@@ -32,6 +33,7 @@ export interface ShellRecord {
   readonly classes: readonly BondClassRecord[];
 }
 
+/** What proves that no k lies lower. */
 export interface ExchangeCertificateRecord {
   readonly boxes: number;
   /** Half-diagonal, Å⁻¹ (without 2π). */
@@ -43,6 +45,7 @@ export interface ExchangeCertificateRecord {
   readonly stopped: string | null;
 }
 
+/** The k of lowest energy. */
 export interface GroundRecord {
   /** Per spin, in the unit of the constants. */
   readonly energy: number;
@@ -62,12 +65,14 @@ export interface GroundRecord {
   };
 }
 
+/** How often an irrep occurs. */
 export interface IrrepCountRecord {
   readonly label: string;
   readonly dimension: number;
   readonly multiplicity: number;
 }
 
+/** An eigenvalue of J(k) and the irreps of its eigenvectors. */
 export interface ExchangeLevelRecord {
   readonly energy: number;
   readonly degeneracy: number;
@@ -101,6 +106,7 @@ export interface ConfigurationEnergyRecord {
   readonly highest: number;
 }
 
+/** The relation between constants that a measured k asks for. */
 export interface StationaryRecord {
   readonly k: KRecord;
   /** The constants as they were given; the lists below are in their order. */
@@ -126,6 +132,7 @@ export interface StationaryRecord {
   readonly potentials: "none" | "balanced anew" | "those of the model";
 }
 
+/** A phase diagram along one or two constants. */
 export interface DiagramRecord {
   /** Directions of k that no bond notices, whatever the constants. */
   readonly freeDirections: number;

@@ -4,6 +4,7 @@ export interface MeasuredRecord {
   readonly su: number | null;
 }
 
+/** The fitted law I = I₀ (1 − T/T_N)^2β + background, with its range. */
 export interface PowerLawRecord {
   /** K. */
   readonly transition: MeasuredRecord;
@@ -22,6 +23,7 @@ export interface PowerLawRecord {
   readonly fits: boolean;
 }
 
+/** A peak of a scan: its data, and the fitted law or why there is none. */
 export interface PeakOnsetRecord {
   readonly name: string;
   readonly behaviour: "onset" | "loss" | "constant" | "gradual" | "absent" | "undecided";
@@ -35,6 +37,7 @@ export interface PeakOnsetRecord {
   };
 }
 
+/** Peaks that share one temperature of onset. */
 export interface TransitionRecord {
   readonly temperature: MeasuredRecord;
   /** Indices in `peaks`. */
@@ -42,6 +45,7 @@ export interface TransitionRecord {
   readonly probability: number | null;
 }
 
+/** A component of k against temperature. */
 export interface MovingKRecord {
   readonly name: string;
   readonly behaviour: "constant" | "sliding" | "lock-in" | "undecided";
