@@ -23,13 +23,13 @@ function load(room) {
  * @returns {Promise<{readonly commands: Pages, readonly schemas: Pages}>}
  */
 export async function commandPages(output) {
-  /** @type {{commandTable: object}} */
-  const { commandTable } = await load("job");
+  /** @type {{commandTable: object, requestSchema: () => object}} */
+  const { commandTable, requestSchema } = await load("job");
   /** @type {{answerSchema: (command: string) => object, describedCommands: readonly string[]}} */
   const { answerSchema, describedCommands } = await load("reports");
   return {
     commands: await helpPages(output, [...Object.keys(commandTable), "batch"], describedCommands),
-    schemas: schemaPages(answerSchema, describedCommands),
+    schemas: schemaPages(answerSchema, describedCommands, requestSchema()),
   };
 }
 
@@ -73,18 +73,20 @@ function textBlock(text) {
 /**
  * @param {(command: string) => object} answerSchema
  * @param {readonly string[]} described
+ * @param {object} request schema of a line of `kvane batch`
  * @returns {Pages}
  */
-function schemaPages(answerSchema, described) {
+function schemaPages(answerSchema, described, request) {
   const list = described.map((name) => `- [${name}](${name}.json)`).join("\n");
   return {
     ...Object.fromEntries(
       described.map((name) => [`${name}.json`, `${JSON.stringify(answerSchema(name), null, 2)}\n`]),
     ),
+    "request.json": `${JSON.stringify(request, null, 2)}\n`,
     "README.md": `# JSON schemas
 
 ${made} JSON Schema 2020-12 of what each command prints with \`--json\`; the library gives them as \`answerSchema(command)\`
-of \`@kvane/core/reports\`. \`kvane help json\` describes the envelope.
+of \`@kvane/core/reports\`. \`kvane help json\` describes the envelope. [request](request.json) is a line of \`kvane batch\`.
 
 ${list}
 `,

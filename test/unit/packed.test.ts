@@ -13,6 +13,7 @@ import { bytesIn, usePacked } from "../tools/use-packed.mjs";
 /** Both packages as a stranger gets them: packed, installed into an empty project, used from there. */
 describe("the packed packages", () => {
   const folder = mkdtempSync(join(tmpdir(), "kvane-packed-"));
+  const names = publicNames();
   let project = "";
 
   beforeAll(() => {
@@ -22,7 +23,7 @@ describe("the packed packages", () => {
   afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
   test("work from JavaScript: every public value, CommonJS, the whole job, the example of a worker", () => {
-    const { answer, printed } = usePacked(project, process.execPath, publicNames());
+    const { answer, printed } = usePacked(project, process.execPath, names);
     expect(answer === readFileSync(join(root, "docs/examples/run.json"), "utf8")).toBe(true);
     expect(printed).toBe("k = (1/2,0,0), told of its progress on the way\nthe second run was cancelled: interrupted\n");
   }, 120_000);
@@ -33,7 +34,7 @@ describe("the packed packages", () => {
       runProgram(process.execPath, [join(root, "node_modules/typescript/bin/tsc"), ...strict, ...parameters], project);
 
     function writeUse(file: string): void {
-      const entries = [...new Set(publicNames().map(({ entry }) => entry))];
+      const entries = [...new Set(names.map(({ entry }) => entry))];
       const imports = entries.map((entry, index) => `import * as room${index} from "${entry}";`);
       const uses = entries.map((_entry, index) => `export type Room${index} = keyof typeof room${index};`);
       const proof = [
@@ -51,10 +52,14 @@ describe("the packed packages", () => {
       ["nodenext", "nodenext"],
       ["node16", "node16"],
       ["esnext", "bundler"],
-    ])("module %s, resolution %s", (module, resolution) => {
-      writeUse("use.ts");
-      expect(compile("--module", module, "--moduleResolution", resolution, "use.ts")).toBe("");
-    });
+    ])(
+      "module %s, resolution %s",
+      (module, resolution) => {
+        writeUse("use.ts");
+        expect(compile("--module", module, "--moduleResolution", resolution, "use.ts")).toBe("");
+      },
+      120_000,
+    );
 
     test("in a file of CommonJS, through import()", () => {
       const program = `async function dimensions(): Promise<readonly number[]> {
@@ -68,7 +73,7 @@ export = dimensions;
 `;
       writeFileSync(join(project, "use.cts"), program);
       expect(compile("--module", "node16", "--moduleResolution", "node16", "use.cts")).toBe("");
-    });
+    }, 120_000);
   });
 
   test("the command runs, knows its version and carries the example and the licences", () => {

@@ -154,6 +154,39 @@ describe("a line that is a request", () => {
   });
 });
 
+test("a line that was spoilt anywhere has an envelope as its answer, on one line", async () => {
+  const whole =
+    '{"id": "a", "command": "ops", "group": "P n m a", "study": null, "texts": {"s.yaml": "group: P -1\\n"}}';
+  const pieces = fc.constantFrom(
+    '"',
+    "\\",
+    "{",
+    "}",
+    "[",
+    ",",
+    ":",
+    "1",
+    "null",
+    "\n",
+    "\u2028",
+    "\ud800",
+    "study",
+    "texts",
+    "é",
+  );
+  await fc.assert(
+    fc.asyncProperty(fc.nat(whole.length), fc.nat(12), pieces, async (at, cut, piece) => {
+      const { text, answer: answered } = await answerLine(whole.slice(0, at) + piece + whole.slice(at + cut), host);
+      expect(text).not.toContain("\n");
+      const { id: _id, ...parsed } = JSON.parse(text);
+      expect(parsed).toEqual(JSON.parse(JSON.stringify(answered)));
+      expect(answered.errors.map(({ code }) => code)).not.toContain("internal-fault");
+      expect(answered.result === null).toBe(answered.errors.length > 0);
+    }),
+    { seed, numRuns: 2000 },
+  );
+});
+
 describe("the schema of a request", () => {
   const validate = new Ajv2020({ strict: true, strictTypes: false, allowUnionTypes: true }).compile(requestSchema());
 

@@ -1,6 +1,5 @@
 import { resolve } from "node:path";
-import { fail, type Problem } from "@kvane/core/errors";
-import { version } from "@kvane/core/job";
+import { fail } from "@kvane/core/errors";
 import {
   type Envelope,
   jsonText,
@@ -17,14 +16,6 @@ import {
 import { writeFolder, writeWhole } from "./output.js";
 import { failUndrawn, type OutputWishes } from "./request.js";
 import type { Surroundings } from "./surroundings.js";
-
-/** An answer, with or without a result. */
-export type RefusedAnswer = Envelope<object>;
-
-/** The answer to a command line that could not be understood. */
-export function refusedAnswer(command: string, errors: readonly Problem[]): RefusedAnswer {
-  return { kvane: version, format: 1, command, input: {}, result: null, errors, warnings: [], assumed: [] };
-}
 
 /** An answer made ready: what is printed or written to one file, and the files of a folder where one was wished. */
 export interface Parcel {

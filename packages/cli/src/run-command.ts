@@ -1,9 +1,9 @@
 import { resolve } from "node:path";
 import { fail, KvaneError, type Problem, problem, problemCodes } from "@kvane/core/errors";
-import { answer, exitStatusOf, type JobHost, type Request, version } from "@kvane/core/job";
-import { type HelpRecord, jsonText } from "@kvane/core/reports";
+import { answer, exitStatusOf, type JobHost, type Request, refusal, version } from "@kvane/core/job";
+import { type Envelope, type HelpRecord, jsonText } from "@kvane/core/reports";
 import { commandSpecs } from "./commands/index.js";
-import { checkForm, deliver, packed, type RefusedAnswer, refusedAnswer } from "./deliver.js";
+import { checkForm, deliver, packed } from "./deliver.js";
 import { problemsText } from "./errors.js";
 import { type CommandHost, commandHost, exampleRequests } from "./host.js";
 import { checkFree } from "./output.js";
@@ -22,7 +22,7 @@ export async function runCommand(words: readonly string[], surroundings: Surroun
     return line === null ? 0 : await execute(line, surroundings);
   } catch (error) {
     const problems = problemsOf(error, words);
-    return problems.length === 0 ? 0 : refuse(refusedAnswer(command ?? "", problems), null, asJson, null, surroundings);
+    return problems.length === 0 ? 0 : refuse(refusal(command ?? "", problems), null, asJson, null, surroundings);
   }
 }
 
@@ -107,7 +107,7 @@ async function execute(line: ParsedLine, surroundings: Surroundings): Promise<nu
   // A cancel that came during the last step is heard only after a turn of the event loop.
   await new Promise((resolve) => setImmediate(resolve));
   if (surroundings.signal.aborted) {
-    const cancelled = refusedAnswer(line.spec.name, [interrupted]);
+    const cancelled = refusal(line.spec.name, [interrupted]);
     return refuse(cancelled, request, wishes.json, host, surroundings);
   }
   deliver(parcel, wishes, surroundings);
@@ -120,7 +120,7 @@ async function execute(line: ParsedLine, surroundings: Surroundings): Promise<nu
 
 /** Says all that is wrong; with `--json` the answer without a result goes to the output too. */
 function refuse(
-  answered: RefusedAnswer,
+  answered: Envelope<object>,
   request: Request | null,
   asJson: boolean,
   host: CommandHost | null,

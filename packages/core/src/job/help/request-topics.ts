@@ -14,10 +14,11 @@ command      as on the command line; all but batch, completion and the forms --c
 fields       texts, also for numbers ("wavelength": "2.41"), named as in "input" of --json: the
              option in one word (maxDimension), but sites, impurities, constants, formFactors and
              onSites for what may be repeated; these, exclude, together and vary are lists of texts.
-             Flags are true or false. null stands for what is not given.
-files        by name, as on the command line (a study: "study"; not -, which holds the requests), or
-             along with the request in "texts", which is looked up first, by the exact name.
-             The bundled example is "study": "example:/study.yaml".
+             The first word is group or study, in onset scan, in decompose moments (study its
+             parent), in explain code, in help topic. Flags are true or false, null is not given.
+files        by name, as on the command line (not -, which holds the requests), or along with the
+             request in "texts", which is looked up first, by the exact name. The bundled example is
+             "study": "example:/study.yaml".
 id           optional, text or number: it comes back as the first field of the answer.
 
 An answer is the JSON of --json on one line, without blanks. A line that is no request is answered
