@@ -1,7 +1,14 @@
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
 import { problem } from "@kvane/core/errors";
-import { parseCif, parseMomentList, parseStudy, readCifStructure, readMagneticCif } from "@kvane/core/files";
+import {
+  parseCif,
+  parseMomentList,
+  parsePeakList,
+  parseStudy,
+  readCifStructure,
+  readMagneticCif,
+} from "@kvane/core/files";
 import { answer, type Request, version } from "@kvane/core/job";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "../cli/command.js";
@@ -26,6 +33,11 @@ describe("found by fuzzing: files", () => {
   test("a wrong Hall symbol of a CIF is refused where it is wrong", async () => {
     const { problems } = await readCifStructure(await parseCif("data_a\n_space_group_name_Hall 'P 4q'\n", "a.cif"));
     expect(places(problems.symmetry)).toEqual(["syntax 2:28"]);
+  });
+
+  test.each(["1e-320", "1e308"])("no peak is at d = %s", async (position) => {
+    const problems = await problemsOf(() => parsePeakList(`d\n${position}\n`, { file: "p.txt" }));
+    expect(places(problems)).toEqual(["peak-out-of-range 2:1"]);
   });
 
   test("a moment beyond all numbers is refused with its place", async () => {

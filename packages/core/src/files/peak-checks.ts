@@ -69,6 +69,9 @@ function wrongIndices({ h, k, l }: PeakCells): Wrong | null {
   };
 }
 
+/** Å⁻¹. Far beyond every diffractometer on both sides; what lies outside is a slip of units or of the pen. */
+const [leastQ, mostQ] = [1e-6, 1e4];
+
 function wrongPosition(kind: PowderKind, position: number, wavelengthAngstrom: number | null): Wrong | null {
   const unit = kindUnits[kind];
   const limit = kind === "two-theta" ? 180 : Number.POSITIVE_INFINITY;
@@ -79,8 +82,14 @@ function wrongPosition(kind: PowderKind, position: number, wavelengthAngstrom: n
       remedy: "correct the position, or say another kind",
     };
   }
-  if (wavelengthAngstrom === null || kind === "two-theta") return null;
   const q = positionToQ(kind, position, wavelengthAngstrom);
+  if (q < leastQ || q > mostQ)
+    return {
+      message: `no diffractometer measures a peak at ${kind} = ${position}${unit}`,
+      expected: `a position with Q = 2π/d from ${leastQ} to ${mostQ} Å⁻¹`,
+      remedy: "correct the position, its unit or the wavelength",
+    };
+  if (wavelengthAngstrom === null || kind === "two-theta") return null;
   if (q <= largestQ(wavelengthAngstrom)) return null;
   return {
     message: `a wavelength of ${wavelengthAngstrom} Å does not reach ${kind} = ${position}${unit}`,
