@@ -153,6 +153,28 @@ describe("a boundary at the end of a range", () => {
   });
 });
 
+describe("the letters of a phase diagram", () => {
+  it("go on without a gap, whatever the search for boundaries met", async () => {
+    // Two sublattices along a chain: the ferrimagnet, then a spiral, and at J2 = 0 chains that do not know of each other.
+    const { record } = await exchange({
+      command: "exchange",
+      group: "P 4/m m m",
+      cell: "5.1 5.1 4 90 90 90",
+      sites: ["A 0 0 0", "B 1/2 1/2 1/2"],
+      constants: ["1 0.4"],
+      vary: ["2 0 1.2 4"],
+    });
+    const { phases, points, boundaries } = record.diagram ?? { phases: [], points: [], boundaries: [] };
+    const used = new Set([
+      ...points.map(({ phase }) => phase),
+      ...(boundaries ?? []).flatMap(({ from, to }) => [from, to]),
+    ]);
+    expect([...used].sort()).toEqual(phases.map((_, index) => index));
+    // E = 2 J1 cos 2πu − 8 J2 cos πu a cell for equal spins: cos πu = J2/J1, and J2 alone decides beyond.
+    expect(boundaries?.map(({ value }) => Number(value.toFixed(5)))).toEqual([0, 0.4]);
+  }, 60_000);
+});
+
 describe("the table of kvane exchange", () => {
   const model: Request = {
     command: "exchange",
@@ -186,5 +208,27 @@ describe("the table of kvane exchange", () => {
   it("has the bonds where there is no constant", async () => {
     const { envelope } = await exchange({ ...model, constants: null });
     expect(rows(reportCsv(envelope))[0]).toContain("length_angstrom");
+  });
+});
+
+describe("kvane check", () => {
+  const checked = async (section: string) => {
+    const { errors } = await askedWith({ command: "check", study: "s.yaml" }, { "s.yaml": `${square}${section}\n` });
+    return errors.map(({ code, where }) => `${code} ${where.line}`);
+  };
+
+  it("holds bonds and ranges of a study against its structure, without computing anything", async () => {
+    expect(await checked("exchange: [{shell: 1, j: 1}, {shell: 2, vary: [0, 1]}]")).toEqual([]);
+    expect(
+      await checked(
+        "exchange:\n  - {bond: 1b, j: 1}\n  - {shell: 2, between: [M, N], j: 1}\n  - {bond: 3c, vary: [0, 1]}",
+      ),
+    ).toEqual(["invalid-argument 6", "invalid-argument 7", "invalid-argument 8"]);
+  });
+
+  it("misses the cell that constants need", async () => {
+    const text = `${square.replace(/cell.*\n/, "")}exchange: [{shell: 1, j: 1}]\n`;
+    const { errors } = await askedWith({ command: "check", study: "s.yaml" }, { "s.yaml": text });
+    expect(errors.map(({ code, where }) => `${code} ${where.path}`)).toEqual(["missing-key exchange"]);
   });
 });

@@ -47,12 +47,14 @@ export async function phaseBoundaries(
   points: readonly DiagramPoint[],
   access: DiagramAccess,
 ): Promise<DiagramBoundary[]> {
-  const found: DiagramBoundary[] = [];
+  const boundaries: DiagramBoundary[] = [];
+  const range = Math.abs((points.at(-1)?.values[0] ?? 0) - (points[0]?.values[0] ?? 0));
   const between = async (low: DiagramPoint, high: DiagramPoint, depth: number): Promise<void> => {
     if (low.phase === high.phase) return;
     const degenerate = access.isDegenerate(low.phase) && access.isDegenerate(high.phase);
     const within = holds(low, high, access) || holds(high, low, access);
-    const boundary = await (degenerate || within ? bisected : followed)(low, high, access);
+    const found = await (degenerate || within ? bisected : followed)(low, high, access);
+    const boundary = await atLonePoint(found, [low, high], lonelyShare * range, access);
     const span = (high.values[0] as number) - (low.values[0] as number);
     // A third phase may lie between: it shows beside the boundary.
     for (const side of [-1, 1]) {
@@ -65,18 +67,40 @@ export async function phaseBoundaries(
       await between(beside, high, depth + 1);
       return;
     }
-    found.push({ ...boundary, from: low.phase, to: high.phase });
+    boundaries.push({ ...boundary, from: low.phase, to: high.phase });
   };
   const plain = points.filter((_, index) => !isMeeting(points, index));
   for (let index = 1; index < plain.length; index++)
     await between(plain[index - 1] as DiagramPoint, plain[index] as DiagramPoint, 0);
-  return found;
+  return boundaries;
 }
 
 /** Whether all k of one phase are among those of another, which has more: a descent from a shared k tells nothing. */
 function holds(many: DiagramPoint, few: DiagramPoint, { kindForm }: DiagramAccess): boolean {
   const forms = new Set(many.k.map(kindForm));
   return many.k.length > few.k.length && few.k.every((k) => forms.has(kindForm(k)));
+}
+
+/** Share of the whole range within which a boundary may be one of the points beside it. */
+const lonelyShare = 1e-3;
+
+/**
+ * A set of k that is degenerate at a single value, such as that at which a constant vanishes, ends there: the k beside it
+ * can be told from its own only some way off.
+ */
+async function atLonePoint(
+  found: Pick<DiagramBoundary, "value" | "sudden">,
+  ends: readonly DiagramPoint[],
+  near: number,
+  { pointAt, isDegenerate }: DiagramAccess,
+): Promise<Pick<DiagramBoundary, "value" | "sudden">> {
+  for (const end of ends) {
+    const own = end.values[0] as number;
+    const away = found.value - own;
+    if (!isDegenerate(end.phase) || away === 0 || Math.abs(away) > near) continue;
+    if ((await pointAt([own + 0.3 * away])).phase !== end.phase) return { ...found, value: own };
+  }
+  return found;
 }
 
 /** A single point that has the k of both its neighbours, or more: it lies on the boundary itself. */

@@ -108,5 +108,24 @@ export async function phaseDiagram(
     : axes.length === 1
       ? []
       : null;
-  return { freeDirections, axes, phases, points, boundaries };
+  return { freeDirections, axes, ...withoutUnused({ phases, points, boundaries }) };
+}
+
+/** Phases that the search for boundaries met without staying there have no letter. */
+function withoutUnused({
+  phases,
+  points,
+  boundaries,
+}: Pick<PhaseDiagram, "phases" | "points" | "boundaries">): Pick<PhaseDiagram, "phases" | "points" | "boundaries"> {
+  const used = new Set([
+    ...points.map(({ phase }) => phase),
+    ...(boundaries ?? []).flatMap(({ from, to }) => [from, to]),
+  ]);
+  const kept = phases.flatMap((_, index) => (used.has(index) ? [index] : []));
+  const place = (index: number) => kept.indexOf(index);
+  return {
+    phases: kept.map((index) => phases[index] as DiagramPhase),
+    points: points.map((point) => ({ ...point, phase: place(point.phase) })),
+    boundaries: boundaries?.map((one) => ({ ...one, from: place(one.from), to: place(one.to) })) ?? null,
+  };
 }

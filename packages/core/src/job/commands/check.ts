@@ -10,7 +10,7 @@ import { peaksIfGiven } from "../inputs/peaks-input.js";
 import { checkSearchFits, searchOptionsOf } from "../inputs/search-input.js";
 import { type GivenSite, orbitsOf, sitesIfGiven } from "../inputs/site-input.js";
 import { needStudy } from "../inputs/study-input.js";
-import { onsetIfGiven } from "../study/model-and-scan.js";
+import { checkExchange, onsetIfGiven } from "../study/model-and-scan.js";
 import { remember, together, type Work } from "../work.js";
 import { checkCif } from "./check-cif.js";
 
@@ -35,6 +35,7 @@ export async function checkCommand(work: Work): Promise<CheckRecord> {
     orbits: () => (group === null ? [] : orbitsOf(work, group, sites, given?.cell ?? null)),
     fits: () => peaks && checkSearchFits(work, written.length > 0 ? { ...options, unmatched: 0 } : options, peaks.list),
   });
+  await checkExchange(work, group, cell, orbits);
   const structure = work.structure?.structure ?? null;
   return {
     kind: "study",

@@ -1,10 +1,8 @@
 import { configurationsOf } from "../../configurations/index.js";
-import { fail } from "../../errors/index.js";
 import {
   arrangementEnergy,
   type BondTable,
   balancedModel,
-  bondTable,
   classesNamed,
   constantMoments,
   constantName,
@@ -13,7 +11,6 @@ import {
   type ExchangeModel,
   exchangeLevels,
   exchangeModel,
-  farthestShell,
   type GivenCoupling,
   groundOf,
   phaseDiagram,
@@ -32,15 +29,14 @@ import { siteModes } from "../../modes/index.js";
 import { type ConfigurationEnergyRecord, type ExchangeRecord, exchangeRecord } from "../../reports/index.js";
 import type { SiteOrbit } from "../../spacegroups/index.js";
 import { cellFor, writtenCell } from "../inputs/cell-input.js";
-import { axesOf, constantsOf, rangesOf, runningAlone, spinsOf } from "../inputs/exchange-input.js";
+import { bondsFor } from "../inputs/exchange-bonds.js";
+import { constantsOf, rangesOf, runningAlone, spinsOf } from "../inputs/exchange-input.js";
 import { groupOf } from "../inputs/group-input.js";
 import { placedK, writtenKs } from "../inputs/k-input.js";
 import { numberOption } from "../inputs/number-input.js";
 import { orbitsOf, writtenSites } from "../inputs/site-input.js";
 import { remember, together, type Work } from "../work.js";
 
-/** Shells that are listed where nobody says how many. */
-const usualShells = 6;
 /** k of the minimum whose eigenvectors are shown; more are told by number. */
 const shownVectors = 4;
 
@@ -63,16 +59,7 @@ export async function exchangeCommand(work: Work, found: readonly WaveVector[] |
     placed: () => found ?? ks.map((one) => placedK(work, group, one)),
   });
   const orbits = orbitsOf(work, group, sites, cell);
-  const needed = farthestShell([...constants, ...ranges]);
-  const table = bondTable(group, cell, orbits, {
-    shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),
-  });
-  refuseCloseAtoms(table);
-  const { axes } = await together({
-    axes: () => axesOf(table, ranges),
-    // Both faults are told at once.
-    constants: () => exchangeModel(table, constants),
-  });
+  const { table, axes } = await bondsFor(group, cell, orbits, { constants, ranges, shells });
   const alone = runningAlone(ranges, table, constants);
   rememberRanges(work, table, { axes, alone, constants });
   const all = [...constants, ...alone];
@@ -85,18 +72,6 @@ export async function exchangeCommand(work: Work, found: readonly WaveVector[] |
   }
   const model = await balancedModel(plain, null, work.host);
   return exchangeRecord(table, model, await findingsOf(work, { model, placed, axes, orbits }));
-}
-
-/** Å. Magnetic atoms nearer than this are one atom written twice, or split positions of one: no bond is so short. */
-const shortestBondAngstrom = 0.5;
-
-function refuseCloseAtoms({ shells }: BondTable): void {
-  const [nearest] = shells;
-  if (nearest === undefined || nearest.distance >= shortestBondAngstrom) return;
-  fail("invalid-site", `two magnetic atoms are ${nearest.distance.toPrecision(2)} Å apart`, {
-    expected: `at least ${shortestBondAngstrom} Å between magnetic atoms`,
-    remedy: "give an atom once, and of split positions only one",
-  });
 }
 
 const nothing = {

@@ -1,7 +1,7 @@
 import { fail } from "../../errors/index.js";
 import type { WaveVector } from "../../kvectors/index.js";
 import type { ExchangeRecord, OnsetRecord } from "../../reports/index.js";
-import type { Cell } from "../../spacegroups/index.js";
+import type { Cell, SiteOrbit, SpaceGroup } from "../../spacegroups/index.js";
 import { studyText } from "../inputs/given.js";
 import type { Work } from "../work.js";
 
@@ -20,6 +20,23 @@ export function needCellForExchange({ study }: Work, cell: Cell | null): void {
     found: "no `cell`",
     remedy: "add the cell to the study, or take `exchange` out",
   });
+}
+
+/** Whether the bonds and ranges of the study are there, for `kvane check`; nothing is computed from them. */
+export async function checkExchange(
+  work: Work,
+  group: SpaceGroup | null,
+  cell: Cell | null,
+  orbits: readonly SiteOrbit[],
+): Promise<void> {
+  if ((work.study?.exchange ?? []).length === 0) return;
+  if (group !== null && orbits.length > 0) needCellForExchange(work, cell);
+  if (group === null || cell === null || orbits.length === 0) return;
+  const [{ bondsFor }, { constantsOf, rangesOf }] = await Promise.all([
+    import("../inputs/exchange-bonds.js"),
+    import("../inputs/exchange-input.js"),
+  ]);
+  await bondsFor(group, cell, orbits, { constants: constantsOf(work), ranges: rangesOf(work), shells: null });
 }
 
 /** What the exchange constants of the study prefer, and the energies at the k that the job follows; null without any. */

@@ -1,6 +1,6 @@
 import { scaleLinear } from "d3-scale";
 import type { DiagramRecord } from "../records/exchange.js";
-import { occurs, phaseLetter, setText } from "../text/exchange-diagram-text.js";
+import { phaseLetter, setText } from "../text/exchange-diagram-text.js";
 import { plain } from "../text/names.js";
 import { label, leftAxis, lowerAxis } from "./axis-marks.js";
 import { type Figure, textWidth } from "./figure.js";
@@ -140,13 +140,10 @@ function cell(
   return lettered ? shape + label(phaseLetter(phase), x, y + 4, "middle", letterSize) : shape;
 }
 
-/** A line for each phase that occurs: its letter, the k, and how large the set of them is. */
+/** A line for each phase: its letter, the k, and how large the set of them is. */
 function legendMarks(diagram: DiagramRecord, from: number) {
-  const shown = diagram.phases
-    .map((phase, index) => ({ ...phase, index }))
-    .filter(({ index }) => occurs(diagram, index));
-  const marks = shown.map(({ forms, dimension, index }, line) => {
-    const y = from + line * legendStep + legendStep / 2;
+  const marks = diagram.phases.map(({ forms, dimension }, index) => {
+    const y = from + index * legendStep + legendStep / 2;
     const name = forms.join(" and ");
     return [
       cell(left + 9, y, { width: 18, height: 16 }, index, true),
@@ -158,5 +155,5 @@ function legendMarks(diagram: DiagramRecord, from: number) {
       ),
     ].join("");
   });
-  return { marks: marks.join(""), height: shown.length * legendStep };
+  return { marks: marks.join(""), height: diagram.phases.length * legendStep };
 }

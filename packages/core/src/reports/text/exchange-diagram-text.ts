@@ -7,11 +7,11 @@ export function diagramLines(diagram: DiagramRecord): string[] {
   return [
     ...table(
       [{ title: "phase" }, { title: "k" }, { title: "set" }],
-      diagram.phases.flatMap(({ forms, dimension }, index) =>
-        occurs(diagram, index)
-          ? [[phaseLetter(index), forms.join(" and "), setText(dimension, diagram.freeDirections)]]
-          : [],
-      ),
+      diagram.phases.map(({ forms, dimension }, index) => [
+        phaseLetter(index),
+        forms.join(" and "),
+        setText(dimension, diagram.freeDirections),
+      ]),
     ),
     "",
     ...(diagram.axes.length === 1 ? lineOf(diagram) : mapOf(diagram)),
@@ -22,12 +22,6 @@ export function diagramLines(diagram: DiagramRecord): string[] {
 export function setText(dimension: number, free: number): string {
   if (dimension === free) return "isolated";
   return ["isolated", "line or ring", "surface", "all k"][dimension - free] ?? "";
-}
-
-/** Whether a phase holds a point or touches a boundary. */
-export function occurs({ boundaries, points }: DiagramRecord, index: number): boolean {
-  if (points.some(({ phase }) => phase === index)) return true;
-  return (boundaries ?? []).some(({ from, to }) => from === index || to === index);
 }
 
 /** What a phase is called in tables and drawings. */

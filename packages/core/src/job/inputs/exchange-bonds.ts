@@ -1,0 +1,51 @@
+import { fail } from "../../errors/index.js";
+import {
+  type BondTable,
+  bondTable,
+  type DiagramAxis,
+  exchangeModel,
+  farthestShell,
+  type GivenCoupling,
+} from "../../exchange/index.js";
+import type { Cell, SiteOrbit, SpaceGroup } from "../../spacegroups/index.js";
+import { together } from "../work.js";
+import { axesOf, type GivenRange } from "./exchange-input.js";
+
+/** Shells that are listed where nobody says how many. */
+const usualShells = 6;
+
+/** The bonds as far as constants and ranges name them, and what runs; all that names no bonds is told at once. */
+export async function bondsFor(
+  group: SpaceGroup,
+  cell: Cell,
+  orbits: readonly SiteOrbit[],
+  given: {
+    readonly constants: readonly GivenCoupling[];
+    readonly ranges: readonly GivenRange[];
+    readonly shells: number | null;
+  },
+): Promise<{ readonly table: BondTable; readonly axes: readonly DiagramAxis[] }> {
+  const { constants, ranges, shells } = given;
+  const needed = farthestShell([...constants, ...ranges]);
+  const table = bondTable(group, cell, orbits, {
+    shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),
+  });
+  refuseCloseAtoms(table);
+  const { axes } = await together({
+    constants: () => exchangeModel(table, constants),
+    axes: () => axesOf(table, ranges),
+  });
+  return { table, axes };
+}
+
+/** Å. Magnetic atoms nearer than this are one atom written twice, or split positions of one: no bond is so short. */
+const shortestBondAngstrom = 0.5;
+
+function refuseCloseAtoms({ shells }: BondTable): void {
+  const [nearest] = shells;
+  if (nearest === undefined || nearest.distance >= shortestBondAngstrom) return;
+  fail("invalid-site", `two magnetic atoms are ${nearest.distance.toPrecision(2)} Å apart`, {
+    expected: `at least ${shortestBondAngstrom} Å between magnetic atoms`,
+    remedy: "give an atom once, and of split positions only one",
+  });
+}
