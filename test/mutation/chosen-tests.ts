@@ -6,24 +6,27 @@ import type { Room } from "./rooms.js";
 import type { KnownTest } from "./suite.js";
 
 /** Processor time that the tests of one mutant may take together when nothing is wrong. */
-export const budgetMilliseconds = 10_000;
+export const budgetMilliseconds = 5_000;
 
 /** Tests of the room itself go before others that take up to this many times less. */
 const preference = 4;
 
 /**
- * The tests that come to the mutant, the quick ones and those of its room first, until they take the time that one
- * mutant may have. What only the tests beyond that would notice counts as not noticed.
+ * The tests that come to the mutant, quick ones first, and before them those that do much in its file and in its room,
+ * until they take the time that one mutant may have. What only the tests beyond that would notice counts as not noticed.
  */
 export function chosenTests(mutant: Mutant, room: Room, tests: readonly KnownTest[], graph: ModuleGraph): KnownTest[] {
   const point = pointName(mutant.file, mutant.point);
-  const cost = ({ file, milliseconds }: KnownTest): number =>
-    milliseconds / (asksRoom(file, room, graph) ? preference : 1);
-  const reaching = tests.filter(({ reached }) => reached.has(point)).sort((a, b) => cost(a) - cost(b));
+  const cost = ({ file, milliseconds, visits }: KnownTest): number =>
+    milliseconds / (1 + (visits.get(mutant.file) ?? 0)) / (asksRoom(file, room, graph) ? preference : 1);
+  const reaching = tests
+    .filter(({ reached }) => reached.has(point))
+    .map((test) => ({ test, cost: cost(test) }))
+    .sort((a, b) => a.cost - b.cost);
   let left = budgetMilliseconds;
-  return reaching.filter(({ milliseconds }, position) => {
-    left -= milliseconds;
-    return left >= 0 || position === 0;
+  return reaching.flatMap(({ test }, position) => {
+    left -= test.milliseconds;
+    return left >= 0 || position === 0 ? [test] : [];
   });
 }
 

@@ -7,6 +7,10 @@ export function pointName(file: string, start: number): string {
   return `${file}:${start}`;
 }
 
+export function fileOfPoint(point: string): string {
+  return point.slice(0, point.lastIndexOf(":"));
+}
+
 /** The graph with notes at every reach point of the rooms, and the names of the points by number. */
 export function notedGraph(graph: ModuleGraph): { graph: ModuleGraph; points: string[] } {
   const points: string[] = [];

@@ -3,6 +3,7 @@ import { join } from "node:path";
 import { sourceFiles } from "../tools/source-files.mjs";
 import type { RecordedTest } from "./messages.js";
 import { fingerprint, type ModuleGraph, readGraph } from "./module-graph.js";
+import { fileOfPoint } from "./noted-graph.js";
 import { rooms } from "./rooms.js";
 import type { WatchedThread } from "./watched-thread.js";
 
@@ -30,6 +31,8 @@ export interface KnownTest {
   readonly name: string;
   readonly milliseconds: number;
   readonly reached: ReadonlySet<string>;
+  /** How many points it reaches in each file. */
+  readonly visits: ReadonlyMap<string, number>;
 }
 
 /** Each test alone may take this much of processor time when nothing is mutated. */
@@ -76,7 +79,9 @@ function knownTests(file: string, { points, tests }: Saved, wanted: ReadonlySet<
       process.stderr.write(`left out, fails alone: ${file}: ${name}: ${error}\n`);
       return [];
     }
-    const names = reached.map((place) => points[place] as string).filter((point) => wanted.has(point));
-    return [{ file, index, name, milliseconds, reached: new Set(names) }];
+    const names = reached.map((place) => points[place] as string);
+    const visits = new Map<string, number>();
+    for (const point of names) visits.set(fileOfPoint(point), (visits.get(fileOfPoint(point)) ?? 0) + 1);
+    return [{ file, index, name, milliseconds, reached: new Set(names.filter((point) => wanted.has(point))), visits }];
   });
 }

@@ -172,6 +172,8 @@ describe("conditions on a cell in words", () => {
     );
     expect(expectedOf("5 6 7 90 90 90", "P m m m (a,b,b/2+c)")).toContain("bc·cos(alpha) = 1/2·b²");
     expect(expectedOf("5 6 7 90 90 90", "P m m m (a,a+b,c)")).toContain("ab·cos(gamma) = 1/1·a²");
+    // Two body diagonals of a cube: 3a² long each, a² their product.
+    expect(expectedOf("5 5 5 90 90 91", "P m -3 m (a+b+c,a+b-c,a)")).toContain("ab·cos(gamma) = 1/3·a²");
     // Primitive axes of a body-centred cube: cos = −1/3.
     expect(expectedOf("5 5 5 109 109 109", "I m -3 m (-a/2+b/2+c/2,a/2-b/2+c/2,a/2+b/2-c/2)")).toContain("109.4712");
     expect(expectedOf("5 5 5 109.4712 109.4712 109.4712", "I m -3 m (-a/2+b/2+c/2,a/2-b/2+c/2,a/2+b/2-c/2)")).toBe(

@@ -52,11 +52,34 @@ describe("what is wrong with a group is placed", () => {
       ],
     ],
     ["", [["syntax", 1]]],
+    ["_", [["unknown-group", 1]]],
+    // Two mirrors whose product has no finite order.
+    ["-x,y,z; -x+y,y,z", [["not-a-group", 9]]],
     ["231", [["unknown-group", 1]]],
     ["0", [["unknown-group", 1]]],
     ["P n m a:xyz", [["unknown-group", 9]]],
   ])("%s: %j", async (text, expected) => {
     expect(await placesOf(() => parseGroup(text))).toEqual(expected);
+  });
+});
+
+describe("what is expected", () => {
+  it("is a code of a setting that there is", async () => {
+    const expectedOf = async (text: string) => (await problemsOf(() => parseGroup(text)))[0]?.expected;
+    // Pbnm is no standard symbol: its own code is the one there is.
+    expect(await expectedOf("P b n m:zz")).toContain("cab");
+    expect(await expectedOf("P n m a:zz")).toContain("cab");
+    expect(await expectedOf("P 1:zz")).toContain("no code");
+  });
+});
+
+describe("axes that are very oblique", () => {
+  it("are read as long as products of three rotations are exact integers, and refused beyond", async () => {
+    // A fourfold axis after a' = a + n b has the entries ±n, −1 and n² + 1, which may be 2¹⁷ = 131 072 at most.
+    expect(await placesOf(() => parseGroup("P 4 (a+362b,b,c)"))).toEqual([]);
+    expect((await problemsOf(() => parseGroup("P 4 (a+363b,b,c)"))).map(({ code }) => code)).toEqual([
+      "number-overflow",
+    ]);
   });
 });
 

@@ -13,7 +13,7 @@ import {
 } from "@kvane/core/spacegroups";
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { determinant } from "#core/numbers/index.js";
+import { determinant, toNumber } from "#core/numbers/index.js";
 import { diagonalForm, freeDirections, solveCongruences } from "#core/spacegroups/congruences.js";
 import { crystalSystem } from "#core/spacegroups/conventional-axes.js";
 import { seeded } from "../support/random.js";
@@ -168,6 +168,26 @@ describe("the standard setting of a group", () => {
     expect(formatBasisChange(change).split(";")[0]).toBe("a,b,c");
     expect(filled(change)).toBe(count);
   });
+
+  /** Σ (P − 1)² over the entries. */
+  const distanceOf = ({ matrix }: BasisChange): number =>
+    matrix.reduce(
+      (sum, row, at) =>
+        sum + row.reduce((part, entry, column) => part + (toNumber(entry) - (at === column ? 1 : 0)) ** 2, 0),
+      0,
+    );
+
+  it.each(["P 1 21/c 1", "C 1 2/c 1", "P 1 c 1", "P 1", "P -1"])(
+    "of %s in small other axes is reached by a change no larger than the one back",
+    (name) => {
+      const group = parseGroup(name);
+      for (const axesText of ["a+c,b,c", "a,b,c-a", "a,b,a+c", "-a,b,-c", "c,b,-a", "a-c,b,c", "-a,-b,c", "a,-b,-c"]) {
+        const change = parseBasisChange(axesText);
+        const found = standardSetting(changeBasis(group, change)).change;
+        expect(distanceOf(found), axesText).toBeLessThanOrEqual(distanceOf(invertBasisChange(change)));
+      }
+    },
+  );
 
   it("tells enantiomorphic types apart, and a left-handed basis", () => {
     for (const [name, number] of [
