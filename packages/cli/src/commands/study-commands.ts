@@ -62,7 +62,7 @@ export const studyCommands: readonly CommandSpec[] = [
       "svg",
       ...outputOptions,
     ],
-    examples: ["kvane weigh --example", "kvane weigh --example --pattern 0.4 --svg"],
+    examples: ["kvane weigh --example"],
   },
   {
     name: "report",

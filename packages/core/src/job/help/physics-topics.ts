@@ -66,8 +66,10 @@ the incident beam, −1 to 1: the chiral term counts then.
 Form factors follow from the ions of the sites (International Tables C, 4.4.5). In their place a
 site may have form-factor: 1 (a constant) or form-factor: {j0: [A, a, B, b, C, c, D], j2: […],
 j2-factor: 0.1}, and g: 2.1; --form-factor "Fe1: Fe2+" gives it to a site of a CIF. The occupancy
-of a site counts: moments are those of an atom that is there. kvane weigh fits the free amplitudes of every
-configuration and ranks them by χ² + parameters · ln(intensities). A ranking is no refinement.`,
+of a site counts: moments are those of an atom that is there.
+
+kvane weigh fits the free amplitudes of every configuration and ranks them by χ² + parameters ·
+ln(intensities). A ranking is no refinement.`,
   },
   scan: {
     title: "Temperature scans",
