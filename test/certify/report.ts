@@ -33,7 +33,7 @@ function report(states: ReadonlyMap<Subject, State>): string {
     for (const [sweep, { what, seed }] of Object.entries(subject.sweeps)) {
       const counts = units.flatMap((unit) => (unit.sweep === sweep ? (state.done.get(unitName(unit)) ?? []) : []));
       problems.push(...counts.flatMap((entry) => entry.problems));
-      notes.push(...counts.flatMap(({ note }) => (note === undefined ? [] : [`- ${note}`])));
+      notes.push(...sumNotes(counts.flatMap(({ note }) => note ?? [])).map((note) => `- ${note}`));
       rows.push(rowOf(what, seed, counts));
     }
   }
@@ -61,6 +61,19 @@ function mutationSection(): string[] {
     "",
     ...scoreTable(results),
   ];
+}
+
+/** Notes of one wording become one with the sums of their numbers. */
+function sumNotes(notes: readonly string[]): string[] {
+  const numbers = /\d+/g;
+  const wordings = new Set(notes.map((note) => note.replace(numbers, "#")));
+  if (notes.length < 20 || wordings.size > 1) return [...notes];
+  const sums = notes.reduce<number[]>(
+    (total, note) => [...note.matchAll(numbers)].map(([text], index) => (total[index] ?? 0) + Number(text)),
+    [],
+  );
+  let place = 0;
+  return [...wordings].map((wording) => wording.replaceAll("#", () => String(sums[place++])));
 }
 
 function rowOf(what: string, seed: number | null, counts: readonly Counts[]): string[] {
