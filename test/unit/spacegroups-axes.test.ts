@@ -1,5 +1,6 @@
 import { KvaneError } from "@kvane/core/errors";
 import {
+  assembleGroup,
   type Cell,
   cellVolume,
   changeCell,
@@ -8,6 +9,7 @@ import {
   formatTriplet,
   groupFromOperators,
   invertBasisChange,
+  latticeVectorsOfCell,
   lengthInMetric,
   parseBasisChange,
   parseCell,
@@ -80,6 +82,16 @@ describe("rotations of Hall symbols", () => {
     expect(count).toBe(19);
     expect(hallRotation(1, "z")).toEqual(identity);
   });
+
+  it("about face diagonals refer to the axis before them, c where there is none", () => {
+    const triplets = (symbol: string) => parseGroup(`hall:${symbol}`).operators.map((one) => formatTriplet(one));
+    for (const axis of ["x", "y", "z"]) {
+      expect(triplets(`P 4${axis} 2'`)).toEqual(triplets(`P 4${axis} 2${axis}'`));
+      expect(triplets(`P 3${axis} 2"`)).toEqual(triplets(`P 3${axis} 2${axis}"`));
+    }
+    expect(triplets("P 2'")).toEqual(triplets("P 2z'"));
+    expect(triplets("P 3* 2'")).toEqual(triplets("P 3* 2z'"));
+  });
 });
 
 /** The smallest integer vector along the axis of an operator in conventional axes, first non-zero entry positive. */
@@ -122,6 +134,65 @@ function placeInOrder(rotation: readonly number[]): readonly number[] {
   const sense = order === 2 ? 0 : Math.sign(determinantOf([...axis, ...x, ...turned]));
   return [-sign, order, u * u + v * v + w * w, -w, -v, -u, -sense].map((entry) => entry + 0);
 }
+
+describe("groups from elements", () => {
+  it("are the same over any common denominator of the translations", () => {
+    const { lattice } = parseGroup("P 1");
+    const rotation = [-1, 0, 0, 0, -1, 0, 0, 0, -1];
+    const identity = { rotation: [1, 0, 0, 0, 1, 0, 0, 0, 1], translation: [0, 0, 0] };
+    const over = (denominator: number) =>
+      assembleGroup(lattice, [{ rotation, translation: [denominator / 2, 0, 0] }, identity], denominator);
+    expect(over(12)).toEqual(over(2));
+    expect(over(12).primitive).toMatchObject({
+      denominator: 2,
+      translations: [
+        [0, 0, 0],
+        [1, 0, 0],
+      ],
+    });
+    expect(over(12).operators.map((one) => formatTriplet(one))).toEqual(["x,y,z", "-x+1/2,-y,-z"]);
+  });
+
+  it("have lattice vectors in a cell of integers where these are in the lattice", () => {
+    const vectors = (text: string) =>
+      latticeVectorsOfCell(parseGroup(text).lattice).map((row) => row.map(([top, bottom]) => top / bottom));
+    expect(vectors("F 2 2 2")).toEqual([
+      [0, 0, 0],
+      [0, 0.5, 0.5],
+      [0.5, 0, 0.5],
+      [0.5, 0.5, 0],
+    ]);
+    // Halves of a and 3/2 of b: the integers among them are (1,0,0) and (0,3,0).
+    expect(vectors("P 1 (2a,2b/3,c)")).toEqual([
+      [0, 0, 0],
+      [0, 1.5, 0],
+      [0.5, 0, 0],
+      [0.5, 1.5, 0],
+    ]);
+  });
+});
+
+describe("cells that cannot be read", () => {
+  it("have their problems in the order of the text", () => {
+    const found = (text: string) => {
+      try {
+        parseCell(text);
+      } catch (error) {
+        if (error instanceof KvaneError) return error.problems.map(({ code, where }) => [code, where.column]);
+      }
+      return [];
+    };
+    expect(found("1 x 3")).toEqual([
+      ["invalid-number", 3],
+      ["invalid-cell", 6],
+    ]);
+    expect(found("1 2 3 90 y 90 7 z")).toEqual([
+      ["invalid-number", 10],
+      ["invalid-number", 17],
+      ["invalid-cell", 15],
+    ]);
+  });
+});
 
 describe("the order of operators", () => {
   it.each(["P m m m", "P 4/m m m", "P -3 m 1", "P -3 1 m", "P 6/m m m", "P m -3 m", "P -4 2 m", "P -6 2 m"])(
@@ -172,6 +243,7 @@ describe("conditions on a cell in words", () => {
     );
     expect(expectedOf("5 6 7 90 90 90", "P m m m (a,b,b/2+c)")).toContain("bc·cos(alpha) = 1/2·b²");
     expect(expectedOf("5 6 7 90 90 90", "P m m m (a,a+b,c)")).toContain("ab·cos(gamma) = 1/1·a²");
+    expect(expectedOf("5 6 7 90 90 90", "P m m m (a,a+b,a+c)")).toContain("bc·cos(alpha) = 1/1·a²");
     // Two body diagonals of a cube: 3a² long each, a² their product.
     expect(expectedOf("5 5 5 90 90 91", "P m -3 m (a+b+c,a+b-c,a)")).toContain("ab·cos(gamma) = 1/3·a²");
     // Primitive axes of a body-centred cube: cos = −1/3.
@@ -194,5 +266,21 @@ describe("symbols that stand for several settings", () => {
     expect(noteOf("P 2/c").join()).toContain("unique axis b");
     expect(noteOf("P n m a")).toEqual([]);
     expect(parseGroup("P n n n").name.choice).toBe("2");
+  });
+
+  it("that differ by the origin alone have it at the inversion centre, also where none is the standard", () => {
+    expect(parseGroup("P n c b").name).toMatchObject({ number: 50, choice: "2cab" });
+    expect(parseGroup("P m n m").name).toMatchObject({ number: 59, choice: "2bca" });
+    expect(() => parseGroup("A e a a")).toThrowError(expect.objectContaining({ code: "ambiguous-group" }));
+  });
+
+  it("are Hermann–Mauguin symbols where they have no blanks, and Hall symbols are said to be such", () => {
+    const readings = (text: string) =>
+      parseGroupWithNotes(text).assumed.filter(({ what }) => what === "reading of the symbol");
+    expect(readings("P2")).toEqual([]);
+    expect(readings("P 2")).toHaveLength(1);
+    expect(readings("P n m a")).toEqual([]);
+    // A second order 2 behind 3 is along a − b: number 149.
+    expect(readings("P 3 2").map(({ value }) => value)).toEqual(["Hall symbol P 3 2, P 3 1 2"]);
   });
 });

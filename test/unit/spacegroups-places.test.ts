@@ -53,6 +53,9 @@ describe("what is wrong with a group is placed", () => {
     ],
     ["", [["syntax", 1]]],
     ["_", [["unknown-group", 1]]],
+    // A fourfold axis along c does not leave an A-centred lattice alone, nor does a threefold one.
+    ["x,y+1/2,z+1/2; -y,x,z", [["not-a-group", 16]]],
+    ["x,y+1/2,z+1/2; z,x,y", [["not-a-group", 16]]],
     // Two mirrors whose product has no finite order.
     ["-x,y,z; -x+y,y,z", [["not-a-group", 9]]],
     ["231", [["unknown-group", 1]]],

@@ -13,9 +13,10 @@ import {
 } from "@kvane/core/spacegroups";
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { determinant, toNumber } from "#core/numbers/index.js";
+import { determinant, integerDeterminant, toNumber } from "#core/numbers/index.js";
+import { axesChoices } from "#core/spacegroups/axes-choices.js";
 import { diagonalForm, freeDirections, solveCongruences } from "#core/spacegroups/congruences.js";
-import { crystalSystem } from "#core/spacegroups/conventional-axes.js";
+import { crystalSystem, fittingAxes } from "#core/spacegroups/conventional-axes.js";
 import { seeded } from "../support/random.js";
 import { randomBasis } from "../support/random-bases.js";
 
@@ -162,6 +163,12 @@ describe("the standard setting of a group", () => {
     ["P m m 2", "a,b,c;0,1/8,1/3", 1],
     ["F m -3 m", "a,b,c;1/2,1/2,1/2", 0],
     ["R 3:H", "a,b,c;1/3,2/3,0.4", 0],
+    ["C 2", "a,b,c;0.1,0.2,0.3", 2],
+    ["C c", "a,b,c;0.1,0.2,0.3", 1],
+    ["F d d 2", "a,b,c;0.1,0.2,0.3", 2],
+    ["I 4", "a,b,c;0.1,0.2,0.3", 2],
+    // (1/2,1/2,1/2) may be added: (1/2,0.05,0.05) would be smaller.
+    ["P 2 3", "a,b,c;0,0.45,0.45", 2],
   ])("of %s with its axes and the origin at %s needs a shift of %i components", (name, moved, count) => {
     const there = changeBasis(parseGroup(name), parseBasisChange(moved));
     const { change } = standardSetting(there);
@@ -188,6 +195,23 @@ describe("the standard setting of a group", () => {
       }
     },
   );
+
+  /** First and last number of each crystal class in International Tables A. */
+  const bounds = [
+    ...[1, 2, 3, 5, 6, 9, 10, 15, 16, 24, 25, 46, 47, 74, 75, 80, 81, 82, 83, 88, 89, 98, 99, 110, 111, 122, 123, 142],
+    ...[143, 146, 147, 148, 149, 155, 156, 161, 162, 167, 168, 173, 174, 175, 176, 177, 182, 183, 186, 187, 190],
+    ...[191, 194, 195, 199, 200, 206, 207, 214, 215, 220, 221, 230],
+  ];
+
+  it.each(bounds)("of number %i, at a bound of its class, is itself", (number) => {
+    expect(standardSetting(parseGroup(String(number))).setting.number).toBe(number);
+  });
+
+  it("is the one given where the axes are long but serve", () => {
+    // A c axis moved by an even number of a leaves the glide plane what it is.
+    const there = changeBasis(parseGroup("P 1 21/c 1"), parseBasisChange("a,b,6a+c"));
+    expect(formatBasisChange(standardSetting(there).change)).toBe(plainName);
+  });
 
   it("tells enantiomorphic types apart, and a left-handed basis", () => {
     for (const [name, number] of [
@@ -224,6 +248,56 @@ describe("the standard setting of a group", () => {
     ]).toEqual([]);
     const back = standardSetting(changeBasis(group, invertBasisChange(parseBasisChange("a+c,b,c;0,1/3,0"))));
     expect(formatBasisChange(back.change)).toBe(plainName);
+  });
+});
+
+describe("choices of axes", () => {
+  it("are the rotations of the system's lattice, or all small ones", () => {
+    for (const [system, count] of [
+      ["tetragonal", 8],
+      ["hexagonal", 12],
+      ["orthorhombic", 24],
+      ["cubic", 24],
+    ] as const) {
+      const choices = axesChoices(system);
+      expect(new Set(choices.map(String)).size).toBe(count);
+      expect(choices.every((choice) => integerDeterminant(choice) === 1)).toBe(true);
+    }
+    // b both ways; a and c any pair of vectors with entries 0, 1, −1 that span the plane's lattice.
+    const small = [-1, 0, 1];
+    const plane = small.flatMap((p) => small.flatMap((q) => small.flatMap((r) => small.map((s) => [p, q, r, s]))));
+    const spanning = plane.filter(([p = 0, q = 0, r = 0, s = 0]) => Math.abs(p * s - q * r) === 1);
+    const monoclinic = axesChoices("monoclinic");
+    expect(new Set(monoclinic.map(String)).size).toBe(spanning.length);
+    for (const choice of monoclinic) {
+      expect([choice[1], choice[3], choice[5], choice[7]]).toEqual([0, 0, 0, 0]);
+      expect(integerDeterminant(choice)).toBe(1);
+    }
+    // Any half of a lattice vector can be that of c.
+    const triclinic = axesChoices("triclinic");
+    expect(triclinic.every((choice) => integerDeterminant(choice) === 1)).toBe(true);
+    expect(new Set(triclinic.map((m) => [m[2], m[5], m[8]].map((one) => Math.abs(one ?? 0) % 2).join())).size).toBe(7);
+  });
+
+  it("start from axes that are as short as their kind allows", () => {
+    const random = seeded(seed);
+    for (let count = 0; count < 40; count++) {
+      const axes = [0, 1, 2].map(() => [0, 1, 2].map(() => random.below(9) - 4));
+      const metric = axes.flatMap((left) =>
+        axes.map((right) => left.reduce((sum, one, at) => sum + one * (right[at] ?? 0), 0)),
+      );
+      if (integerDeterminant(metric) === 0) continue;
+      const fitting = fittingAxes(parseGroup("P -1"), metric);
+      expect(integerDeterminant(fitting)).toBe(1);
+      const columns = [0, 1, 2].map((column) => [0, 3, 6].map((row) => fitting[row + column] as number));
+      const product = (a: readonly number[], b: readonly number[]): number =>
+        a.reduce(
+          (sum, x, row) => sum + b.reduce((part, y, at) => part + x * (metric[3 * row + at] as number) * y, 0),
+          0,
+        );
+      for (const a of columns)
+        for (const b of columns) if (a !== b) expect(2 * Math.abs(product(a, b))).toBeLessThanOrEqual(product(b, b));
+    }
   });
 });
 
