@@ -80,7 +80,16 @@ const stationary = record({
   ),
   fixedBySymmetry: flag,
   slopes: list(number),
-  needed: list(record({ name: text, classes: list(text), j: nullable(number), minimum: flag, lowest: nullable(flag) })),
+  needed: list(
+    record({
+      name: text,
+      classes: list(text),
+      j: nullable(number),
+      along: oneOf("minimum", "maximum", "level"),
+      lowest: nullable(flag),
+      oneOfMany: flag,
+    }),
+  ),
   potentials: oneOf("none", "balanced anew", "those of the model"),
 });
 
