@@ -16,6 +16,7 @@ import {
   placeWaveVector,
   plainestRepresentative,
   pointOnManifold,
+  reducedRepresentative,
   specialPoints,
   star,
   type WaveVector,
@@ -36,7 +37,7 @@ import {
   plus,
   turnRow,
 } from "../support/float-group.js";
-import { randomKindProblems } from "../support/kinds-in-floats.js";
+import { floatKind, randomKindProblems } from "../support/kinds-in-floats.js";
 import { distancesToKinds } from "../support/nearby-twin.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { seeded } from "../support/random.js";
@@ -91,6 +92,22 @@ describe("the kinds of k", () => {
         expect(manifold(group, kind.k, { withInversion }).dimension).toBe(dimensionOf(kind));
         expect(kind.dimension).toBe(manifold(group, kind.k, { withInversion: false }).dimension);
         expect(kind.dimensionPM).toBe(manifold(group, kind.k, { withInversion: true }).dimension);
+        const halfRows = kind.halfLattice.map((half) => componentsOf(half));
+        halfRows.slice(1).forEach((row, at) => {
+          expect(isPlainer(row, halfRows[at] as number[])).toBe(false);
+        });
+        const { base, directions } = floatKind(float, kind.k, false);
+        for (const row of halfRows) {
+          // On the form as it stands: the step from its base is made of its directions.
+          const step = minus(row, base);
+          const along = directions.map((direction) => direction.findIndex((one) => Math.abs(one) > 1e-9));
+          const rest = directions.reduce((left, direction, at) => {
+            const pivot = along[at] as number;
+            const turns = (left[pivot] as number) / (direction[pivot] as number);
+            return left.map((one, axis) => one - turns * (direction[axis] as number));
+          }, step);
+          expect(Math.max(...rest.map(Math.abs))).toBeLessThan(1e-9);
+        }
         for (const half of kind.halfLattice) {
           expect(isHalfLattice(group, half)).toBe(true);
           expect(kindOf(group, kinds, half, { withInversion })).toBe(index);
@@ -107,8 +124,10 @@ describe("the kinds of k", () => {
     const points = specialPoints(group);
     const kinds = atlas(group, { withInversion: true }).filter(({ dimensionPM }) => dimensionPM === 0);
     expect(points.map(({ k }) => formatWaveVector(k)).sort()).toEqual(kinds.map(({ k }) => formatWaveVector(k)).sort());
-    const pairs = points.map(({ armPairs }) => armPairs);
-    expect(pairs).toEqual([...pairs].sort((a, b) => a - b));
+    const places = points.map(({ armPairs, k }) => [armPairs, ...componentsOf(k)]);
+    places.slice(1).forEach((place, at) => {
+      expect(isBefore(place, places[at] as number[])).toBe(false);
+    });
     for (const { k, arms, armPairs, minusK, littleCoGroup } of points) {
       const row = componentsOf(k);
       const reversing = operatorsTaking(float, row, -1).length > 0;
@@ -161,9 +180,14 @@ describe("places of a k", () => {
       // k ≡ canonical · R⁻¹.
       const back = turnRow(componentsOf(canonical), inverse(float.operators[operator] as never).rotation);
       expect(isReciprocalVector(float, minus(back, componentsOf(k)))).toBe(true);
-      for (const arm of star(group, k).arms)
-        if (manifold(group, k, { withInversion: false }).dimension === 0)
-          expect(canonicalPlacement(group, arm).canonical).toEqual(canonical);
+      const { form, dimension } = manifold(group, canonical, { withInversion: false });
+      for (const arm of star(group, k).arms) {
+        const other = canonicalPlacement(group, arm).canonical;
+        if (dimension === 0) expect(other).toEqual(canonical);
+        // On a line or plane the places along it may be those of different arms.
+        else
+          expect(formatWaveVector(manifold(group, other, { withInversion: false }).form)).toBe(formatWaveVector(form));
+      }
       const [first] = shiftsOf(float, 1);
       const moved = shifted(k, first as number[]);
       expect(equivalentWaveVectors(group, k, moved)).toBe(true);
@@ -337,6 +361,32 @@ function isBefore(a: readonly number[], b: readonly number[]): boolean {
   const at = a.findIndex((entry, index) => Math.abs(entry - (b[index] as number)) > 1e-9);
   return at >= 0 && (a[at] as number) < (b[at] as number);
 }
+
+describe("the k + H that reads most plainly", () => {
+  test.each([
+    ["P m m m", "7,1/4,-9/2", "(0, 1/4, 1/2)"],
+    ["P m m m", "-11/3,0,13", "(1/3, 0, 0)"],
+    // (1,1,1) and (2,0,0) are in L* of an F lattice, (1,0,0) is not.
+    ["F m -3 m", "9,8,8", "(1, 0, 0)"],
+    ["F m -3 m", "7/2,-9/2,1/2", "(1/2, 1/2, -1/2)"],
+    ["I m -3 m", "5,4,-7", "(0, 0, 0)"],
+  ])("in %s of (%s) is %s", (name, text, plain) => {
+    const { k } = placeWaveVector(groupOf(name), parseWaveVector(text));
+    expect(formatWaveVector(reducedRepresentative(groupOf(name), k))).toBe(plain);
+  });
+
+  test("is k itself where it is too far out to tell, and takes an open letter for 0", () => {
+    const group = groupOf("P m m m");
+    const far = placeWaveVector(group, parseWaveVector("41,0,0")).k;
+    expect(reducedRepresentative(group, far)).toBe(far);
+    const near = placeWaveVector(group, parseWaveVector("40,0,0")).k;
+    expect(formatWaveVector(reducedRepresentative(group, near))).toBe("(0, 0, 0)");
+    const open = placeWaveVector(group, parseWaveVector("u,3,1/2")).k;
+    expect(formatWaveVector(reducedRepresentative(group, open))).toBe("(u, 0, 1/2)");
+    const plain = placeWaveVector(group, parseWaveVector("0,1/3,0")).k;
+    expect(reducedRepresentative(group, plain)).toBe(plain);
+  });
+});
 
 describe("wave vectors as they are written", () => {
   test("in the tables' form, with values where there are some", () => {
