@@ -66,6 +66,19 @@ describe("site potentials", () => {
     expect(constantMoments(model, set.vectors, 1e-8).answer).toBe("not found");
   }, 60_000);
 
+  it("make room for cones: one k along the axis, another one about it, at the energy of the bound", async () => {
+    const constants = { "1a": 0.288, "1b": 0.428, "2": 0.901, "3a": 0.305, "3b": 0.36, "4a": 0.464 };
+    const plain = await modelOf("P 4/m m m", cellOf(5.1, 5.1, 4), ["A 0 0 0", "B 1/2 1/2 1/2"], constants);
+    const model = await balancedModel(plain);
+    const { energy, set } = await groundOf(model);
+    const { answer, k, spins } = constantMoments(model, set.vectors, 1e-8);
+    expect([answer, k.length, spins]).toEqual(["reached", 2, "non-coplanar"]);
+    // The plain bound of neither k is reached: potentials and both k are needed.
+    const bare = await groundOf(plain);
+    expect(bare.energy).toBeLessThan(energy - 1e-3);
+    expect(constantMoments(plain, bare.set.vectors, 1e-8).answer).not.toBe("reached");
+  }, 60_000);
+
   // Concave in ν: a maximum is one when no small step leads up. The energies are certified minima.
   it.each([
     [[-0.69, -0.278, 0.032, 0.102]],

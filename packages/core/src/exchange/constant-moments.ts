@@ -29,7 +29,8 @@ const built = 1e-14;
  * The strong condition of Luttinger and Tisza: |S| on every atom of every cell. A sum of waves of the lowest eigenvalue
  * has |M_j(T)|² = 1 in all cells exactly when all Fourier coefficients of |M_j|² but the constant vanish; these
  * quadratic equations are solved by damped least squares from seeded starts, first collinear, then in a plane, then in
- * space, first for one k, then for the star, then for two stars. (T. A. Kaplan & N. Menyuk, Philos. Mag. 87 (2007) 3711, section 2.)
+ * space, first for one k, then for the star, then for two stars. (T. A. Kaplan & N. Menyuk, Philos. Mag. 87 (2007) 3711,
+ * section 2.)
  */
 export function constantMoments(
   model: ExchangeModel,
