@@ -3,8 +3,10 @@ import { join } from "node:path";
 import { problem } from "@kvane/core/errors";
 import {
   parseCif,
+  parseFourierComponents,
   parseMomentList,
   parsePeakList,
+  parseScanTable,
   parseStudy,
   readCifStructure,
   readMagneticCif,
@@ -57,6 +59,38 @@ describe("found by fuzzing: files", () => {
   test("a fraction beyond all numbers is no moment", async () => {
     const problems = await problemsOf(() => parseMomentList(`A 0 0 0 0 0 ${"7".repeat(400)}/3\n`, "m.txt"));
     expect(problems[0]?.code).toBe("invalid-component");
+  });
+});
+
+/** Seconds of processor time. */
+async function secondsOf(action: () => unknown): Promise<number> {
+  const before = process.cpuUsage();
+  await problemsOf(action);
+  const { user, system } = process.cpuUsage(before);
+  return (user + system) / 1e6;
+}
+
+describe("found by fuzzing: time", () => {
+  const digits = `${"7".repeat(200_000)}x`;
+
+  test("a word of many digits that is no number is soon seen to be none", async () => {
+    const file = "long";
+    expect(await secondsOf(() => parsePeakList(`${digits}\n`, { file, kind: "d" }))).toBeLessThan(5);
+    expect(await secondsOf(() => parseScanTable(`1 ${digits}\n`, file))).toBeLessThan(5);
+    expect(await secondsOf(() => parseMomentList(`A 0 0 0 0 0 ${digits}\n`, file))).toBeLessThan(5);
+    expect(await secondsOf(() => parseFourierComponents(`1 0 0 ${digits}\n`, { file, atoms: 1 }))).toBeLessThan(5);
+    const cif = await parseCif(`data_a\n_cell_length_a ${digits}\n`, file);
+    expect(await secondsOf(() => readCifStructure(cif))).toBeLessThan(5);
+  });
+
+  test("a scan of ten thousand columns is refused", async () => {
+    const problems = await problemsOf(() => parseScanTable(`T ${"save ".repeat(10_000)}\n1 2\n`, "s.txt"));
+    expect(places(problems)).toEqual(["invalid-scan 1:1"]);
+  });
+
+  test("a list of more peaks than anybody has is refused", async () => {
+    const problems = await problemsOf(() => parsePeakList("2 0.01\n".repeat(100_001), { file: "p.txt", kind: "d" }));
+    expect(places(problems)).toEqual(["file-too-large 100001:1"]);
   });
 });
 

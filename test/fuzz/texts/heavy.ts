@@ -2,12 +2,15 @@ import type { Random } from "../../support/random.js";
 import type { FileKind } from "./corpus.js";
 import { extremeNumbers, marks } from "./tokens.js";
 
-/** Texts that cost a careless reader its stack, its memory or its patience; each some ten thousand characters. */
+/** Texts that cost a careless reader its stack, its memory or its patience; of at most some hundred thousand characters. */
 export function heavyText(kind: FileKind, random: Random): string {
   const makers =
     kind === "study" ? [...anyKind, ...yamlOnly] : kind.includes("cif") ? [...anyKind, ...cifOnly] : anyKind;
-  return random.pick(makers)(random);
+  return random.pick(makers)(random).slice(0, longest);
 }
+
+/** Characters: what is larger is tried in single tests. */
+const longest = 200_000;
 
 type Maker = (random: Random) => string;
 

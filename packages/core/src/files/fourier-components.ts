@@ -59,7 +59,7 @@ function readRow(
   if (x && y && z) found.set(atom, [x, y, z]);
 }
 
-const size = "(?:\\d+\\.?\\d*|\\.\\d+)(?:e[+-]?\\d+)?";
+const size = "(?:\\d+(?:\\.\\d*)?|\\.\\d+)(?:e[+-]?\\d+)?";
 const realPart = new RegExp(`^[+-]?${size}$`, "i");
 const imaginaryPart = new RegExp(`^([+-]?)(${size})?\\*?i$`, "i");
 const bothParts = new RegExp(`^([+-]?${size})([+-](?:${size})?\\*?i)$`, "i");

@@ -5,8 +5,9 @@ export interface NumberWithUncertainty {
   readonly uncertainty: number | null;
 }
 
-const plain = /^[+-]?(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?$/i;
-const bracketed = /^([+-]?(\d+\.?\d*|\.\d+))\((\d+)\)$/;
+// One way to part the digits: with two a long row of them would be tried at every one.
+const plain = /^[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:e[+-]?\d+)?$/i;
+const bracketed = /^([+-]?(\d+(?:\.\d*)?|\.\d+))\((\d+)\)$/;
 
 /**
  * Reads a finite decimal number, with an exponent or with an uncertainty in brackets that counts units of its last

@@ -36,7 +36,7 @@ export interface PeakListOptions {
  *
  * Throws all problems of the file at once, each with line and column: `file-empty`, `file-unreadable`,
  * `peak-kind-unknown`, `conflicting-arguments` (header against option), `missing-wavelength`, `invalid-number` (an
- * option), `invalid-peak`, `peak-out-of-range`.
+ * option), `file-too-large`, `invalid-peak`, `peak-out-of-range`.
  */
 export function parsePeakList(text: string, options: PeakListOptions): PeakList {
   return readPeakTable(text, options).list;
@@ -49,6 +49,9 @@ export interface PeakTable {
   readonly polarizations: readonly (number | null)[];
 }
 
+/** Rows: more than any experiment has satellites, and so few that every step with them ends. */
+const mostPeaks = 100_000;
+
 /** As `parsePeakList`. */
 export function readPeakTable(text: string, options: PeakListOptions): PeakTable {
   const { file } = options;
@@ -56,6 +59,13 @@ export function readPeakTable(text: string, options: PeakListOptions): PeakTable
   const problems = problemList(file);
   checkOptions(options, problems);
   const [first] = rows;
+  if (rows.length > mostPeaks)
+    fail("file-too-large", `the list has ${rows.length} rows`, {
+      where: { file, line: rows[mostPeaks]?.line ?? 1, column: 1 },
+      expected: `a list of at most ${mostPeaks} peaks`,
+      found: `${rows.length} rows`,
+      remedy: "check that this is a list of peaks, not the measured points",
+    });
   const headed = first !== undefined && isHeader(first);
   const header = headed ? readHeader(first, options.kind ?? null, problems) : null;
   const data = headed ? rows.slice(1) : rows;

@@ -21,6 +21,8 @@ export interface ScanTable {
 
 /** Values of a scan (rows × columns besides T and s.u.) beyond which the fits take half a minute. */
 const mostValues = 10000;
+/** Columns of a table that is a scan; in a line of more a name is looked for among all the others. */
+const mostColumns = 1000;
 /** What stands in a cell that has no value. */
 const missing = /^([-–—.]|nan)?$/i;
 
@@ -38,6 +40,15 @@ export function parseScanTable(text: string, file: string): ScanTable {
   const [first] = rows;
   if (!first) {
     note(problems, "file-empty", "the scan holds nothing but comments", { where: { line: 1, column: 1 } });
+    throwProblems(problems);
+  }
+  if (first && first.fields.length > mostColumns) {
+    note(problems, "invalid-scan", `the first row has ${first.fields.length} columns`, {
+      where: { line: first.line, column: 1 },
+      expected: `at most ${mostColumns} columns`,
+      found: `${first.fields.length}`,
+      remedy: "check that this is the scan; a temperature has a row of its own",
+    });
     throwProblems(problems);
   }
   const headed =
@@ -80,7 +91,7 @@ export function isUnused({ of }: Pick<ScanColumn, "of">, columns: readonly ScanC
 }
 
 function plainColumns(rows: readonly Row[]): ScanColumn[] {
-  const width = Math.max(0, ...rows.map(({ fields }) => fields.length));
+  const width = rows.reduce((most, { fields }) => Math.max(most, fields.length), 0);
   return Array.from({ length: width }, (_, index) => ({
     name: index === 0 ? "T" : `column ${index + 1}`,
     role: index === 0 ? "temperature" : "intensity",

@@ -10,7 +10,7 @@ export interface CifNumber {
   readonly lastDigit: number;
 }
 
-const pattern = /^([+-]?)(\d*)(\.?)(\d*)(?:[eE]([+-]?\d+))?(?:\((\d+)\))?$/;
+const pattern = /^([+-]?)(\d*)(?:\.(\d*))?(?:[eE]([+-]?\d+))?(?:\((\d+)\))?$/;
 
 /**
  * Reads a number by the grammar of CIF: `[+-]? digits [.digits] [e±digits] [(digits)]`. The brackets count units of the
@@ -20,7 +20,7 @@ const pattern = /^([+-]?)(\d*)(\.?)(\d*)(?:[eE]([+-]?\d+))?(?:\((\d+)\))?$/;
 export function readCifNumber(text: string): CifNumber | null {
   const found = pattern.exec(text);
   if (!found) return null;
-  const [, sign = "", whole = "", , decimals = "", exponent = "0", counted] = found;
+  const [, sign = "", whole = "", decimals = "", exponent = "0", counted] = found;
   if (whole === "" && decimals === "") return null;
   const power = Number(exponent) - decimals.length;
   const value = Number(`${sign}${whole}.${decimals}e${exponent}`);

@@ -42,7 +42,7 @@ export function cifQuoted(text: string): string {
 }
 
 function isNumberLike(text: string): boolean {
-  return text === "?" || text === "." || /^[+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?(?:\(\d+\))?$/.test(text);
+  return text === "?" || text === "." || /^[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?(?:\(\d+\))?$/.test(text);
 }
 
 /** `_name value`, the values in one column. */

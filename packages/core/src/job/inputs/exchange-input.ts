@@ -13,7 +13,7 @@ import { remember, type Work } from "../work.js";
 import { studyText } from "./given.js";
 import type { GivenSite } from "./site-input.js";
 
-const number = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i;
+const number = /^[+-]?(\d+(?:\.\d*)?|\.\d+)(e[+-]?\d+)?$/i;
 const bondName = /^[1-9]\d*[a-z]*$/;
 
 /** The constants of the options, or of the study; of those that only run, their ranges speak. */

@@ -18,7 +18,7 @@ export interface NumberRange {
 export function numberOption(request: Request, field: RequestField, range: NumberRange = {}): number | null {
   const given = optionOf(request, field);
   if (given === null) return null;
-  const value = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(given.text) ? Number(given.text) : Number.NaN;
+  const value = /^[+-]?(\d+(?:\.\d*)?|\.\d+)(e[+-]?\d+)?$/i.test(given.text) ? Number(given.text) : Number.NaN;
   if (!Number.isFinite(value) || !inRange(value, range))
     fail("invalid-number", `${argumentNames[field]} is no number that can be used`, {
       where: given.where,

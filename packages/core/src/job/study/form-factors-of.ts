@@ -56,7 +56,7 @@ function askedFactors({ request }: Work, orbits: readonly SiteOrbit[]): Map<stri
         found: text,
         remedy: 'write for example --form-factor "Fe1: Fe2+"',
       });
-    const number = /^[+-]?(\d+\.?\d*|\.\d+)$/.test(what) ? Number(what) : null;
+    const number = /^[+-]?(\d+(?:\.\d*)?|\.\d+)$/.test(what) ? Number(what) : null;
     found.set(label, { request: number === null ? { ion: what } : { constant: number }, given });
   }
   return found;
