@@ -59,16 +59,16 @@ export function readPeakTable(text: string, options: PeakListOptions): PeakTable
   const problems = problemList(file);
   checkOptions(options, problems);
   const [first] = rows;
-  if (rows.length > mostPeaks)
-    fail("file-too-large", `the list has ${rows.length} rows`, {
-      where: { file, line: rows[mostPeaks]?.line ?? 1, column: 1 },
-      expected: `a list of at most ${mostPeaks} peaks`,
-      found: `${rows.length} rows`,
-      remedy: "check that this is a list of peaks, not the measured points",
-    });
   const headed = first !== undefined && isHeader(first);
   const header = headed ? readHeader(first, options.kind ?? null, problems) : null;
   const data = headed ? rows.slice(1) : rows;
+  if (data.length > mostPeaks)
+    fail("file-too-large", `the list has ${data.length} rows`, {
+      where: { file, line: data[mostPeaks]?.line ?? 1, column: 1 },
+      expected: `a list of at most ${mostPeaks} peaks`,
+      found: `${data.length} rows`,
+      remedy: "check that this is a list of peaks, not the measured points",
+    });
   if (data.length === 0) noteNoPeaks(first, problems);
   const kind = decideKind(options, first, headed, header, problems);
   const columns = header?.columns ?? defaultColumns(kind, headed ? data : []);
