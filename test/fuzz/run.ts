@@ -14,7 +14,7 @@ import type { Target } from "./target.js";
 import { targets } from "./targets.js";
 import { inputOf, tryInput } from "./try-input.js";
 
-/** Seconds by the clock without a new input after which a process counts as hung, whatever else the machine does. */
+/** Seconds without a new input after which a process counts as hung, whatever else the machine does. */
 const hung = 90;
 
 const [first = "20000", second, ...named] = process.argv.slice(2);
@@ -99,12 +99,14 @@ function oneProcess(
     { cwd: root, stdio: ["ignore", "pipe", "inherit"] },
   );
   let seen = "";
-  let since = Date.now();
+  let ticks = 0;
   let killed = false;
+  // Ticks, not the clock: a machine that was asleep had no time for the process either.
   const watch = setInterval(() => {
     const now = positionNow();
-    if (now !== seen) [seen, since] = [now, Date.now()];
-    if (Date.now() - since < hung * 1000) return;
+    if (now !== seen) [seen, ticks] = [now, 0];
+    ticks += 1;
+    if (ticks < hung) return;
     killed = true;
     child.kill("SIGKILL");
   }, 1000);
