@@ -66,7 +66,6 @@ function shiftsOf(float: FloatGroup, largest: number): number[][] {
     ),
   );
 }
-
 const parts = (group: SpaceGroup) => ({ group, float: floatGroup(group), random: seeded(group.operators.length + 5) });
 
 describe("the kinds of k", () => {
