@@ -10,6 +10,8 @@ export interface Target<Input = unknown> {
   readonly share: number;
   /** Inputs of the short loop that every test run makes. */
   readonly few: number;
+  /** Seconds of processor time that an input may take at most: the bar is there for hangs, on any machine. */
+  readonly patience: number;
   /** Makes one input, plain data that survives JSON: the same one for the same random numbers. */
   readonly make: (random: Random) => Input;
   /** Throws when kvane breaks a promise on it. */

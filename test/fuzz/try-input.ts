@@ -11,16 +11,13 @@ export interface Tried {
   readonly seconds: number;
 }
 
-/** Seconds of processor time that a small input may take at most: the bar is there for hangs, on any machine. */
-const longest = 5;
-
 /** One input of a target, made anew from the seed of the loop. */
 export function inputOf({ name, make }: Target, seed: number, number: number): unknown {
   return withoutKnownFaults(make(seeded(seedOf(seed, name, number))));
 }
 
 /** Gives an input to its target, and measures. */
-export async function tryInput({ run }: Target, input: unknown): Promise<Tried> {
+export async function tryInput({ run, patience }: Target, input: unknown): Promise<Tried> {
   const before = process.cpuUsage();
   let outcome: Tried["outcome"] = "failed";
   let fault: string | null = null;
@@ -31,6 +28,6 @@ export async function tryInput({ run }: Target, input: unknown): Promise<Tried> 
   }
   const { user, system } = process.cpuUsage(before);
   const seconds = (user + system) / 1e6;
-  if (fault === null && seconds > longest) fault = `it took ${seconds.toFixed(1)} s of processor time`;
+  if (fault === null && seconds > patience) fault = `it took ${seconds.toFixed(1)} s of processor time`;
   return { outcome: fault === null ? outcome : "failed", fault, seconds };
 }

@@ -48,6 +48,7 @@ function fileTarget(kind: FileKind, share: number, few: number, read: (input: Fi
     name: kind,
     share,
     few,
+    patience: 5,
     make: (random) => ({ text: fileText(kind, random), way: random.below(8) }),
     run: (input) =>
       readOrRefused(

@@ -8,7 +8,7 @@ import { demand } from "../properties.js";
 import { type Outcome, target } from "../target.js";
 import { damaged } from "../texts/damage.js";
 import { extremeNumbers, marks } from "../texts/tokens.js";
-import { demandAnswer, patienceSignal, type RequestInput, spoiltFiles, spoiltRequest } from "./requests.js";
+import { demandAnswer, patience, patienceSignal, type RequestInput, spoiltFiles, spoiltRequest } from "./requests.js";
 
 /** A command line with the files of its folder and what standard input has, as Latin-1 for bytes. */
 export interface LineInput {
@@ -118,6 +118,7 @@ export const lineTarget = target<LineInput>({
   name: "line",
   share: 350,
   few: 60,
+  patience: patience + 2,
   make: spoiltLine,
   run: (input) =>
     inFolder(input, async (folder) => {

@@ -8,20 +8,22 @@ import { inFolder, type LineInput, type LineResult, spoiltLine } from "./lines.j
 const command = process.env["KVANE_TEST_COMMAND"] ?? join(root, "packages/cli/bin/kvane.js");
 
 /** Milliseconds after which a process counts as hung. */
-const patience = 60_000;
+const hung = 60_000;
 
 /** A whole process for each line: what only it shows, from the first byte of standard input to the exit status. */
 export const processTarget = target<LineInput>({
   name: "process",
   share: 50,
   few: 4,
+  // Of this process; that of the other one is watched by the clock.
+  patience: 5,
   make: spoiltLine,
   run: (input) => inFolder(input, (folder) => processOf(input, folder)),
 });
 
 function processOf({ words, input }: LineInput, cwd: string): Promise<LineResult> {
   return new Promise((resolve, reject) => {
-    const child = spawn(process.execPath, [command, ...words], { cwd, timeout: patience, killSignal: "SIGKILL" });
+    const child = spawn(process.execPath, [command, ...words], { cwd, timeout: hung, killSignal: "SIGKILL" });
     let stdout = "";
     let stderr = "";
     child.stdout.setEncoding("utf8").on("data", (text: string) => {

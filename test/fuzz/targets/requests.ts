@@ -128,8 +128,11 @@ function goodText(kind: FileKind, random: Random): string {
   return kind === "study" ? (good.at(-1) as string) : random.pick(good);
 }
 
-/** Seconds of processor time after which the work is asked to end; it must then end soon. */
-const patience = 5;
+/**
+ * Seconds of processor time after which the work is asked to end. Whole jobs with fits and phase diagrams take some
+ * seconds.
+ */
+export const patience = 30;
 
 /** A signal that asks work to end when its time is over. */
 export function patienceSignal(): { readonly aborted: boolean } {
@@ -189,6 +192,8 @@ export const requestTarget = target<RequestInput>({
   name: "request",
   share: 700,
   few: 60,
+  // It is asked to end before, and must then end soon.
+  patience: patience + 2,
   make: (random) => ({ request: spoiltRequest(random), files: spoiltFiles(random) }),
   run: async (input) => {
     const whole = await answered(input);

@@ -66,6 +66,7 @@ function wordTarget(kind: WordKind, share: number, few: number, read: (text: str
     name: kind,
     share,
     few,
+    patience: 5,
     make: (random) => word(kind, random),
     run: (text) =>
       readOrRefused(
@@ -114,6 +115,7 @@ const cyclotomicTarget = target<Cyclotomic>({
   name: "cyclotomic texts",
   share: 1_000,
   few: 100,
+  patience: 5,
   make: (random) => {
     const [order, degree] = random.pick([
       [1, 1],
