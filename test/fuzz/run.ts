@@ -4,7 +4,7 @@
  * written into files; `npm run fuzz -- FILE.json` tries such an input again.
  */
 import { spawn } from "node:child_process";
-import { existsSync, mkdirSync, readFileSync } from "node:fs";
+import { existsSync, mkdirSync, readFileSync, rmSync } from "node:fs";
 import { join } from "node:path";
 import { createInterface } from "node:readline";
 import { root } from "../tools/paths.mjs";
@@ -118,8 +118,9 @@ function oneProcess(
     child.on("error", reject);
     child.on("close", (status, signal) => {
       clearInterval(watch);
-      if (status === 0) return resolve(null);
       const number = Number(positionNow() || Number.NaN);
+      rmSync(positionFile, { force: true });
+      if (status === 0) return resolve(null);
       if (!Number.isInteger(number)) return reject(new Error(`the process did not begin: exit status ${status}`));
       return resolve({ number, why: killed ? `no end within ${hung} s` : `exit status ${status ?? signal}` });
     });

@@ -42,7 +42,7 @@ function wordsOf({ command, ...fields }: Request): string[] {
 /** A word lost, doubled, moved, spoilt or put in; most lines stay as they are. */
 function garbled(words: readonly string[], random: Random): string[] {
   const result = [...words];
-  for (let times = Math.max(0, random.below(5) - 2); times > 0; times -= 1) {
+  for (let times = Math.max(0, random.below(5) - 2); times > 0 && result.length > 0; times -= 1) {
     const at = random.below(result.length);
     const change = random.below(5);
     if (change === 0) result.splice(at, 1);
