@@ -1,8 +1,9 @@
 import { compatibility, littleGroupElement, type SmallIrreps, smallIrreps } from "@kvane/core/irreps";
-import { manifold, type WaveVector } from "@kvane/core/kvectors";
+import { canonicalPlacement, manifold, type WaveVector } from "@kvane/core/kvectors";
 import type { SymmetryOperator } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
-import { phasedValue } from "../support/float-irreps.js";
+import { type FloatOperator, inner } from "../support/float-group.js";
+import { floatIrreps, phasedValue } from "../support/float-irreps.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { type CharacterCase, characterCaseProblems, readCases } from "../support/reference-cases.js";
 import { irrepProblems } from "../support/validate-irreps.js";
@@ -73,6 +74,67 @@ describe("small irreps", () => {
     },
   );
 
+  /** Characters without e^{2πi k·t}, by operator: what depends on the irrep and not on where k is on its line. */
+  const plainCharacters = (name: string, irreps: SmallIrreps): [number, number][][] => {
+    const read = floatIrreps(groupOf(name), irreps);
+    return read.characters.map((characters) =>
+      characters.map(([re, im], place) => {
+        const { translation } = read.group.operators[read.operators[place] as number] as FloatOperator;
+        const angle = -2 * Math.PI * inner(read.k, translation);
+        return [re * Math.cos(angle) - im * Math.sin(angle), re * Math.sin(angle) + im * Math.cos(angle)];
+      }),
+    );
+  };
+
+  test.each(cases)(
+    "of %s at the canonical place of %s come by dimension, then with the larger characters first",
+    (name, k) => {
+      const { canonical } = canonicalPlacement(groupOf(name), wave(k));
+      const irreps = smallIrreps(groupOf(name), canonical);
+      const keys = plainCharacters(name, irreps).map((characters, at) => [
+        -(irreps.irreps[at]?.dimension ?? 0),
+        ...characters.flat(),
+      ]);
+      keys.slice(1).forEach((key, at) => {
+        const before = keys[at] as number[];
+        const differing = key.findIndex((entry, place) => Math.abs(entry - (before[place] as number)) > 1e-6);
+        expect(differing).toBeGreaterThanOrEqual(0);
+        expect(key[differing]).toBeLessThan(before[differing] as number);
+      });
+    },
+  );
+
+  test.each([
+    ["P 63 c m", "1/3 1/3 1/5", "1/3 1/3 2/7"],
+    ["P 21 3", "1/5 1/5 1/5", "2/7 2/7 2/7"],
+    ["P n m a", "0 1/5 0", "0 3/7 0"],
+    ["I 41/a", "0 0 1/5", "0 0 2/7"],
+    ["F d d d:2", "1/5 0 0", "2/7 0 0"],
+  ])("of %s keep their numbers and matrices along a line, from %s to %s", (name, here, there) => {
+    const [first, second] = [here, there].map((k) => smallIrreps(groupOf(name), wave(k))) as [SmallIrreps, SmallIrreps];
+    const [a, b] = [plainCharacters(name, first), plainCharacters(name, second)];
+    a.forEach((characters, irrep) => {
+      characters.forEach(([re, im], place) => {
+        const [x, y] = b[irrep]?.[place] ?? [Number.NaN, Number.NaN];
+        expect(Math.hypot(re - x, im - y)).toBeLessThan(1e-9);
+      });
+    });
+    expect(second.irreps.map(({ matrices }) => matrices)).toEqual(first.irreps.map(({ matrices }) => matrices));
+  });
+
+  test.each([
+    ["P n m a", "1/2 1/2 1/2"],
+    ["P 21 3", "1/2 1/2 1/2"],
+    ["I 41/a m d:2", "1/2 1/2 1/2"],
+    ["P 63/m m c", "0 0 1/2"],
+    ["R -3 c:H", "0 0 3/2"],
+  ])("of %s at %s have short roots of unity in their matrices about any origin", (name, k) => {
+    const { irreps } = smallIrreps(groupOf(`${name} (a,b,c;1/7,2/11,-3/13)`), wave(k));
+    const orders = new Set(irreps.flatMap(({ matrices }) => matrices.flat(2).map(({ order }) => order)));
+    // The sevenths, elevenths and thirteenths of the origin stay in the phases.
+    expect([...orders].filter((order) => [7, 11, 13].some((prime) => order % prime === 0))).toEqual([]);
+  });
+
   test("begin with the unit representation at k = 0, and label the conjugate of a complex one", () => {
     const { irreps } = smallIrreps(groupOf("P 4"), wave("0 0 0"));
     expect(irreps.map(({ reality }) => reality).sort()).toEqual(["complex", "complex", "real", "real"]);
@@ -120,10 +182,16 @@ describe("compatibility", () => {
     ["P 63/m m c", "1/3 1/3 0", "1/3 1/3 1/5"],
     ["F d -3 m:2", "0 1 0", "0 1/5 0"],
     ["I 41", "0 0 0", "0 0 1/5"],
+    // Screws and glides give phases that the letters of the line take up.
+    ["P 21", "0 1/2 0", "0 1/5 0"],
+    ["P 61", "0 0 1/2", "0 0 1/5"],
+    ["P 1 c 1", "1/2 0 1/2", "1/5 0 1/7"],
+    ["P m c 21", "0 1/2 3/2", "0 1/2 1/5"],
   ])("of %s from %s to the line through %s: restricted characters are the sums that it says", (name, from, to) => {
     const group = groupOf(name);
     const { from: point, to: line, parameters, rows } = compatibility(group, wave(from), opened(name, to));
     const letters = parameters.map(([top, bottom]) => top / bottom);
+    expect(line.k.values).toBeNull();
     expect(rows.map(({ label }) => label)).toEqual(point.irreps.map(({ label }) => label));
     rows.forEach(({ multiplicities }, row) => {
       line.littleGroup.operators.forEach((operator, place) => {
@@ -135,6 +203,15 @@ describe("compatibility", () => {
         expect(Math.hypot(sum(0) - whole[0], sum(1) - whole[1])).toBeLessThan(1e-9);
       });
     });
+  });
+
+  test("of a point with itself is one to one", () => {
+    const group = groupOf("P m -3 m");
+    const { rows, to } = compatibility(group, wave("1/2 1/2 1/2"), wave("1/2 1/2 1/2"));
+    expect(to.k.values).toEqual([]);
+    expect(rows.map(({ multiplicities }) => multiplicities)).toEqual(
+      rows.map((_, row) => rows.map((_other, column) => (row === column ? 1 : 0))),
+    );
   });
 
   test("needs a line or plane through the k", () => {

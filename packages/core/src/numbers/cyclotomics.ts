@@ -196,11 +196,12 @@ function inSubfield(a: Cyclotomic, prime: number): Cyclotomic | null {
     if (coefficients.some((entry, exponent) => entry !== 0 && exponent % prime !== 0)) return null;
     return { order, coefficients: coefficients.filter((_, exponent) => exponent % prime === 0), denominator };
   }
+  if (!isFixedOver(a, order)) return null;
   const columns = Array.from(
     { length: cyclotomicField(order).degree },
     (_, exponent) => cyclotomicField(a.order).powers[exponent * prime] as number[],
   );
-  return isFixedOver(a, order) ? solveIntegerSystem(a, order, columns) : null;
+  return solveIntegerSystem(a, order, columns);
 }
 
 /** Whether every Galois map ζ → ζ^r with r ≡ 1 mod M leaves `a` alone; it is in Q(ζ_M), M = order, exactly then. */
