@@ -1,5 +1,5 @@
 import { type Rational, type RationalMatrix, roundNumber, toNumber } from "../numbers/index.js";
-import { type Cell, directMetric, type SpaceGroup } from "../spacegroups/index.js";
+import { averagedMetric, type Cell, directMetric, metricOfAxes, type SpaceGroup } from "../spacegroups/index.js";
 import { sumText } from "./form-text.js";
 import { exactTerm, type FormTerm } from "./split-sites.js";
 
@@ -17,15 +17,14 @@ const ratioDigits = 6;
 const sameLength = 1e-9;
 
 /**
- * The metric of the parent's cell averaged over the point group (`G = (1/n) Σ RᵀGR`: cells are given to four digits, and
- * vectors that symmetry makes equivalent have one length), in the axes `(a,b,c) P`. Without a cell the lengths are
+ * The metric of the parent's cell averaged over the point group, in the axes `(a,b,c) P`. Without a cell the lengths are
  * compared by what the operators alone make equal.
  */
 export function cellMetric(group: SpaceGroup, cell: Cell | null, matrix: RationalMatrix): CellMetric {
   const start = cell === null ? [1, 0, 0, 0, 1, 0, 0, 0, 1] : directMetric(cell);
-  const metric = changed(averaged(group, start), matrix);
+  const metric = changed(averagedMetric(group.operators, start), matrix);
   // A second, generic metric tells which equalities hold for every cell of the group.
-  const other = changed(averaged(group, [1, 0.13, -0.21, 0.13, 1.37, 0.29, -0.21, 0.29, 1.71]), matrix);
+  const other = changed(averagedMetric(group.operators, [1, 0.13, -0.21, 0.13, 1.37, 0.29, -0.21, 0.29, 1.71]), matrix);
   const ratio = (of: readonly number[], i: number, j: number): number =>
     Math.sqrt((of[4 * i] as number) / (of[4 * j] as number));
   return {
@@ -53,32 +52,9 @@ function decimalSum(terms: readonly FormTerm[], ratioOf: (term: FormTerm) => num
   return text === "" ? "0" : text;
 }
 
-function averaged(group: SpaceGroup, given: readonly number[]): number[] {
-  const metric = new Array<number>(9).fill(0);
-  for (const { rotation, rotationDenominator } of group.operators) {
-    const scale = rotationDenominator * rotationDenominator * group.operators.length;
-    const turned = congruent(given, rotation);
-    for (let entry = 0; entry < 9; entry++)
-      metric[entry] = (metric[entry] as number) + (turned[entry] as number) / scale;
-  }
-  return metric;
-}
-
 function changed(metric: readonly number[], matrix: RationalMatrix): number[] {
-  return congruent(
+  return metricOfAxes(
     metric,
     matrix.flatMap((row) => row.map(toNumber)),
   );
-}
-
-/** `MᵀGM`. */
-function congruent(metric: readonly number[], matrix: readonly number[]): number[] {
-  return Array.from({ length: 9 }, (_, entry) => {
-    const [left, right] = [Math.floor(entry / 3), entry % 3];
-    let sum = 0;
-    for (let i = 0; i < 3; i++)
-      for (let j = 0; j < 3; j++)
-        sum += (matrix[3 * i + left] as number) * (metric[3 * i + j] as number) * (matrix[3 * j + right] as number);
-    return sum;
-  });
 }

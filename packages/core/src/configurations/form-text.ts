@@ -14,6 +14,7 @@ import {
   type Rational,
   rational,
   reduceOrder,
+  splitSquare,
   subtract,
   toNumber,
 } from "../numbers/index.js";
@@ -114,15 +115,4 @@ function asQuadratic(value: Cyclotomic): Quadratic | null {
     radicand: inside,
     denominator,
   };
-}
-
-function splitSquare(n: number): { inside: number; outside: number } {
-  let inside = n;
-  let outside = 1;
-  for (let factor = 2; factor * factor <= inside; factor++)
-    while (inside % (factor * factor) === 0) {
-      inside /= factor * factor;
-      outside *= factor;
-    }
-  return { inside, outside };
 }

@@ -1,4 +1,4 @@
-import { type Cell, directMetric } from "../spacegroups/index.js";
+import { averagedMetric, type Cell, directMetric } from "../spacegroups/index.js";
 import { invariantTensors, type TensorKind } from "./invariant-tensors.js";
 import { symbolForms } from "./symbol-forms.js";
 import type { MagneticGroup } from "./types.js";
@@ -44,7 +44,12 @@ const voigt = [
  * @param cell of the axes in which the operators of `group` are given; its metric is averaged over the group
  */
 export function tensorForms(group: MagneticGroup, cell: Cell): TensorForms {
-  const axes = cartesianAxes(averagedMetric(group, cell));
+  const axes = cartesianAxes(
+    averagedMetric(
+      group.operators.map(({ operator }) => operator),
+      directMetric(cell),
+    ),
+  );
   const inAxes = (kind: TensorKind): number[][] =>
     invariantTensors(group, kind).map((tensor) => toCartesian(tensor, axes, kind.rank));
   return {
@@ -70,25 +75,6 @@ export function tensorForms(group: MagneticGroup, cell: Cell): TensorForms {
 /** A tensor symmetric in the last two indices as three rows of six. */
 function inVoigt(tensor: readonly number[]): number[] {
   return [0, 1, 2].flatMap((i) => voigt.map(([j, k]) => (tensor[9 * i + 3 * j + k] as number) * (j === k ? 1 : 2)));
-}
-
-/** The metric averaged over the rotations, nine numbers: a cell is given to four digits. */
-function averagedMetric({ operators }: MagneticGroup, cell: Cell): readonly number[] {
-  const given = directMetric(cell);
-  const metric = new Array<number>(9).fill(0);
-  for (const { operator } of operators) {
-    const { rotation, rotationDenominator } = operator;
-    for (let entry = 0; entry < 9; entry++)
-      for (let i = 0; i < 3; i++)
-        for (let j = 0; j < 3; j++)
-          metric[entry] =
-            (metric[entry] as number) +
-            ((rotation[3 * i + Math.floor(entry / 3)] as number) *
-              (given[3 * i + j] as number) *
-              (rotation[3 * j + (entry % 3)] as number)) /
-              (rotationDenominator * rotationDenominator * operators.length);
-  }
-  return metric;
 }
 
 /** a, b, c in Cartesian axes as columns of a matrix (nine numbers row by row): x ∥ a, y in the plane of a and b. */

@@ -2,7 +2,7 @@ import { waveTimesColumn } from "../irreps/index.js";
 import { isHalfLattice, type WaveVector } from "../kvectors/index.js";
 import { addForms, isCyclotomicZero, negateForm, zeroForm } from "../numbers/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
-import { axisLengths } from "./averaged-metric.js";
+import { axisLengths } from "./axis-lengths.js";
 import { withPlainPhase } from "./common-phase.js";
 import { constraintTerms, type Term, termTable } from "./constraint-table.js";
 import { type FourierConvention, ownConvention, toConvention } from "./fourier-conventions.js";

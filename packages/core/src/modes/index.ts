@@ -5,7 +5,7 @@
  * Moments and phases; Modes, amplitudes, real moments). Source: Bertaut, Acta Cryst. A24 (1968) 217.
  */
 
-export { axisLengths } from "./averaged-metric.js";
+export { axisLengths } from "./axis-lengths.js";
 export { cartesianAxes, convertComponents } from "./components.js";
 export {
   type ConstraintOptions,

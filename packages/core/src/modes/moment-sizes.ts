@@ -1,8 +1,7 @@
 import { choleskyFactor, choleskySolve } from "../algorithms/index.js";
 import { exactComponents, isHalfLattice, parameterValues } from "../kvectors/index.js";
 import { isInteger, multiply, phasedToComplex } from "../numbers/index.js";
-import { type Cell, type SpaceGroup, toPrimitiveRow } from "../spacegroups/index.js";
-import { averagedMetric } from "./averaged-metric.js";
+import { averagedMetric, type Cell, directMetric, type SpaceGroup, toPrimitiveRow } from "../spacegroups/index.js";
 import type { IrrepModes, SiteModes } from "./types.js";
 
 /** What a single irrep allows about the sizes of the moments on a site. */
@@ -31,7 +30,11 @@ export function momentSizes(group: SpaceGroup, cell: Cell, site: SiteModes, part
   const { k } = site.representations;
   const half = isHalfLattice(group, k);
   const real = half ? realWaves(waves) : null;
-  const problem: SizeProblem = { waves: real ?? waves, metric: averagedMetric(group, cell), realAmplitudes: half };
+  const problem: SizeProblem = {
+    waves: real ?? waves,
+    metric: averagedMetric(group.operators, directMetric(cell)),
+    realAmplitudes: half,
+  };
   const period = half ? "none" : quarterLattice(group, site) ? "real part" : "whole";
   const complete = part.vanishingAtoms.length === 0;
   const constantMoment = complete && solvable(problem, period);

@@ -1,8 +1,7 @@
 import { choleskyFactor, choleskySolve } from "../algorithms/index.js";
 import { isHalfLattice, numericWaveVector, parameterValues } from "../kvectors/index.js";
 import { phasedToComplex, toNumber } from "../numbers/index.js";
-import type { Cell, SpaceGroup } from "../spacegroups/index.js";
-import { averagedMetric } from "./averaged-metric.js";
+import { averagedMetric, type Cell, directMetric, type SpaceGroup } from "../spacegroups/index.js";
 import { convertComponents } from "./components.js";
 import type { IrrepModes, SiteModes } from "./types.js";
 import type { WritingConvention } from "./written-site.js";
@@ -55,7 +54,7 @@ export function projectComponents(
       return [factor * (re * cosine - im * sine), factor * (re * sine + im * cosine)];
     });
   });
-  const metric = averagedMetric(group, cell ?? unitCell);
+  const metric = averagedMetric(group.operators, directMetric(cell ?? unitCell));
   const total = product(components, components, metric)[0];
   const values = parameterValues(k);
   return {

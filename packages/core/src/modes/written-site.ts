@@ -1,7 +1,7 @@
 import { parameterValues, type WaveVector } from "../kvectors/index.js";
 import { type PhasedNumber, phasedToComplex } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
-import { axisLengths } from "./averaged-metric.js";
+import { axisLengths } from "./axis-lengths.js";
 import { convertComponents } from "./components.js";
 import { type ConstraintTexts, constraintTexts, leadingAxis, orderParameterTexts } from "./constraint-forms.js";
 import { type FourierConvention, type MomentComponents, ownConvention, toConvention } from "./fourier-conventions.js";

@@ -12,7 +12,7 @@ import {
   rootOfUnity,
   squareRootOf,
 } from "./cyclotomics.js";
-import { modulo } from "./integers.js";
+import { modulo, splitSquare } from "./integers.js";
 import { divide, formatRational, multiply, type Rational, rational } from "./rationals.js";
 
 /**
@@ -61,17 +61,6 @@ function formatPolar(value: Cyclotomic): string | null {
 
 function scaled(value: Cyclotomic, factor: Rational): Cyclotomic {
   return multiplyCyclotomic(value, cyclotomicFromRational(factor));
-}
-
-function splitSquare(n: number): { inside: number; outside: number } {
-  let inside = n;
-  let outside = 1;
-  for (let factor = 2; factor * factor <= inside; factor++)
-    while (inside % (factor * factor) === 0) {
-      inside /= factor * factor;
-      outside *= factor;
-    }
-  return { inside, outside };
 }
 
 /** The turns in (−1/2, 1/2] when `value` is a root of unity, else null. */

@@ -28,3 +28,15 @@ export function modulo(value: number, modulus: number): number {
   const rest = value % modulus;
   return rest < 0 ? rest + modulus : rest + 0;
 }
+
+/** `n = outside² inside` of a positive integer, with `inside` free of squares: √n is `outside √inside`. */
+export function splitSquare(n: number): { readonly inside: number; readonly outside: number } {
+  let inside = n;
+  let outside = 1;
+  for (let factor = 2; factor * factor <= inside; factor++)
+    while (inside % (factor * factor) === 0) {
+      inside /= factor * factor;
+      outside *= factor;
+    }
+  return { inside, outside };
+}

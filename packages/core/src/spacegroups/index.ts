@@ -12,6 +12,7 @@
  * spacegroup-data/SOURCES.md.
  */
 
+export { averagedMetric, metricOfAxes } from "./averaged-metric.js";
 export {
   composeBasisChanges,
   formatBasisChange,

@@ -1,5 +1,5 @@
-import { roundNumber, toNumber } from "../../numbers/index.js";
-import { type Cell, directMetric, rotationOf, type SpaceGroup } from "../../spacegroups/index.js";
+import { roundNumber } from "../../numbers/index.js";
+import { averagedMetric, type Cell, directMetric, type SpaceGroup } from "../../spacegroups/index.js";
 import { type CifCell, cellParameters } from "./cell.js";
 
 /** Corrections become this small, relative to the uncertainties, after two or three steps. */
@@ -11,7 +11,7 @@ const mostSteps = 20;
  * weighted by its s.u.; one without s.u. counts as known to half its last digit. Equal lengths so get the weighted mean.
  */
 export function weightedMean({ cell, uncertainties, lastDigits }: CifCell, group: SpaceGroup): Cell {
-  const plain = cellFromMetric(meanMetric(directMetric(cell), group));
+  const plain = cellFromMetric(averagedMetric(group.operators, directMetric(cell)));
   const near = cellParameters.every((name) => Math.abs(plain[name] - cell[name]) <= 1e-9 * cell[name]);
   if (near) return cell;
   const spread = cellParameters.map((name) => uncertainties[name] || lastDigits[name] / 2);
@@ -21,7 +21,7 @@ export function weightedMean({ cell, uncertainties, lastDigits }: CifCell, group
     return cellParameters.map((name, index) => found[name] / (spread[index] as number));
   };
   const target = cellParameters.map((name, index) => cell[name] / (spread[index] as number));
-  let metric = meanMetric(directMetric(cell), group);
+  let metric = averagedMetric(group.operators, directMetric(cell));
   for (let step = 0; step < mostSteps; step++) {
     const now = parametersOf(metric);
     const size = 1e-5 * Math.max(...metric);
@@ -62,7 +62,7 @@ function invariantDirections(group: SpaceGroup): number[][] {
     const unit = new Array<number>(9).fill(0);
     unit[3 * i + j] = 1;
     unit[3 * j + i] = 1;
-    const direction = meanMetric(unit, group);
+    const direction = averagedMetric(group.operators, unit);
     const reduced = kept.reduce((rest, one) => {
       const factor = (rest[one.lead] as number) / (one.reduced[one.lead] as number);
       return rest.map((entry, index) => entry - factor * (one.reduced[index] as number));
@@ -95,22 +95,6 @@ function dot(a: readonly number[], b: readonly number[]): number {
 function isMetric(metric: readonly number[]): boolean {
   const { a, b, c, alpha, beta, gamma } = cellFromMetric(metric);
   return [a, b, c].every((length) => length > 0) && [alpha, beta, gamma].every((angle) => angle > 0 && angle < 180);
-}
-
-/** The mean of RᵀGR over the rotations of the group. */
-function meanMetric(metric: readonly number[], group: SpaceGroup): number[] {
-  const sum = new Array<number>(9).fill(0);
-  for (const operator of group.operators) {
-    const rotation = rotationOf(operator).map((row) => row.map(toNumber));
-    for (let i = 0; i < 3; i++)
-      for (let j = 0; j < 3; j++)
-        for (let k = 0; k < 3; k++)
-          for (let l = 0; l < 3; l++)
-            sum[3 * i + j] =
-              (sum[3 * i + j] as number) +
-              (rotation[k]?.[i] ?? 0) * (metric[3 * k + l] as number) * (rotation[l]?.[j] ?? 0);
-  }
-  return sum.map((entry) => entry / group.operators.length);
 }
 
 function cellFromMetric(metric: readonly number[]): Cell {
