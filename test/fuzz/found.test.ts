@@ -12,6 +12,7 @@ import {
   readMagneticCif,
 } from "@kvane/core/files";
 import { answer, type Request, version } from "@kvane/core/job";
+import { operatorsModuloIntegers, parseGroup } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "../cli/command.js";
 import { schemaErrors } from "../cli/schemas.js";
@@ -91,6 +92,30 @@ describe("found by fuzzing: time", () => {
   test("a list of more peaks than anybody has is refused", async () => {
     const problems = await problemsOf(() => parsePeakList("2 0.01\n".repeat(100_001), { file: "p.txt", kind: "d" }));
     expect(places(problems)).toEqual(["file-too-large 100001:1"]);
+  });
+});
+
+describe("found by fuzzing: groups", () => {
+  const codeOf = (run: () => unknown): string | undefined => {
+    try {
+      run();
+    } catch (error) {
+      return (error as { problems?: readonly { code: string }[] }).problems?.[0]?.code;
+    }
+    return undefined;
+  };
+
+  test("a denominator beyond all numbers is refused", () => {
+    expect(codeOf(() => parseGroup(`x+1/${"9".repeat(400)},y,z`))).toBe("number-overflow");
+  });
+
+  test("a cell of a million lattice points is not listed", () => {
+    const group = parseGroup("x,y,z;x+1/1000000,y,z");
+    expect(codeOf(() => operatorsModuloIntegers(group))).toBe("invalid-argument");
+  });
+
+  test("a cell of 1000 lattice points is", () => {
+    expect(operatorsModuloIntegers(parseGroup("x,y,z;x+1/10,y,z;x,y+1/10,z;x,y,z+1/10"))).toHaveLength(1000);
   });
 });
 

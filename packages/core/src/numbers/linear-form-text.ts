@@ -8,7 +8,7 @@ import {
   variableForm,
   zeroForm,
 } from "./linear-forms.js";
-import { divide, multiply, one, parseRational, type Rational } from "./rationals.js";
+import { divide, multiply, one, parseRational, type Rational, rational } from "./rationals.js";
 
 /**
  * Reads a linear form such as `-x+1/2`, `1/2 + x`, `0.25`, `2u`, `2*u/3`, `X - Y`. Blanks are allowed anywhere between
@@ -89,7 +89,7 @@ function readNumber(reader: Reader): Rational | null {
   const fraction = /^\s*\/\s*(\d+)/.exec(reader.text.slice(reader.position));
   if (!fraction || Number(fraction[1]) === 0) return whole;
   reader.position += fraction[0].length;
-  return multiply(whole, [1, Number(fraction[1])]);
+  return multiply(whole, rational(1, Number(fraction[1])));
 }
 
 function refuse(reader: Reader, column: number, expected: string): never {

@@ -1,3 +1,4 @@
+import { fail } from "../errors/index.js";
 import {
   addVectors,
   determinant,
@@ -122,12 +123,23 @@ export function latticePointsPerCell(lattice: Lattice): Rational {
   return divide(rational(1), determinant(latticeMatrix(lattice)));
 }
 
+/** Lattice points of one cell that are listed: far more than any supercell of a crystal has, and listed in 0.1 s. */
+const mostLatticePoints = 10_000;
+
 /**
  * Representatives of L modulo L ∩ Z³, zero first, then by coordinates: in a conventional setting the centring vectors
  * in [0, 1). Elsewhere each is the lexicographically smallest non-negative one of its class.
+ *
+ * @throws `invalid-argument` for more than `mostLatticePoints`
  */
 export function latticeVectorsOfCell(lattice: Lattice): readonly RationalVector[] {
   const common = integerSublattice(lattice);
+  const count = toNumber(divide(determinant(latticeMatrix(common)), determinant(latticeMatrix(lattice))));
+  if (count > mostLatticePoints)
+    fail("invalid-argument", `the cell of this setting holds ${count} lattice points`, {
+      expected: `at most ${mostLatticePoints}`,
+      remedy: "check the translations and the change of basis for digits too many",
+    });
   const steps = latticeVectors(lattice);
   const found = new Map<string, RationalVector>();
   const queue: RationalVector[] = [vectorFrom([0, 0, 0])];
