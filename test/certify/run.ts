@@ -1,15 +1,16 @@
 /**
  * The full sweeps, `npm run certify`: every check of test/sweep and test/laws without sampling. A broken run goes on
- * where it was as long as the code that a subject reaches stays the same. When all units are done, docs/validation.md
- * gets the table. `npm run certify -- symmetry` runs one subject, `npm run certify -- points random` these sweeps only;
- * then nothing is written.
+ * where it was as long as the code that a subject reaches stays the same. When all units of a subject are done, docs/validation.md
+ * gets the table. `npm run certify -- symmetry` runs one subject and puts its rows into the table;
+ * `npm run certify -- points random` runs these sweeps only, and writes nothing.
  */
 import { subject as configurations } from "./configurations.js";
 import { subject as exchange } from "./exchange.js";
 import { subject as magneticGroups } from "./magnetic-groups.js";
 import { writeReport } from "./report.js";
+import { keepResults, type SubjectResult, subjectResult } from "./results.js";
 import { subject as search } from "./search.js";
-import { openState, type State } from "./state.js";
+import { openState } from "./state.js";
 import { type Subject, unitName } from "./subject.js";
 import { subject as symmetry } from "./symmetry.js";
 import { subject as weighing } from "./weighing.js";
@@ -21,7 +22,7 @@ const names = subjects.flatMap(({ name, sweeps }) => [name, ...Object.keys(sweep
 const unknown = wanted.filter((name) => !names.includes(name));
 if (unknown.length > 0) throw new Error(`no sweep is called ${unknown.join(", ")}; there are ${names.join(", ")}`);
 
-const states = new Map<Subject, State>();
+const done: SubjectResult[] = [];
 let failures = 0;
 for (const subject of subjects) {
   const chosen = subject
@@ -29,7 +30,6 @@ for (const subject of subjects) {
     .filter(({ sweep }) => wanted.length === 0 || wanted.includes(sweep) || wanted.includes(subject.name));
   if (chosen.length === 0) continue;
   const state = await openState(subject.name);
-  states.set(subject, state);
   const open = chosen.filter((unit) => !state.done.has(unitName(unit)));
   console.log(`${subject.name}: ${chosen.length - open.length} of ${chosen.length} units are done already`);
   for (const [index, unit] of open.entries()) {
@@ -39,8 +39,9 @@ for (const subject of subjects) {
     if (index % 20 === 19 || index === open.length - 1)
       console.log(`${index + 1} of ${open.length}: ${unitName(unit)}`);
   }
+  if (subject.units().every((unit) => state.done.has(unitName(unit)))) done.push(subjectResult(subject, state));
   failures += chosen.reduce((sum, unit) => sum + (state.done.get(unitName(unit))?.problems.length ?? 0), 0);
 }
 console.log(`${failures} failures`);
-if (wanted.length === 0) console.log(`written: ${writeReport(states)}`);
+if (done.length > 0) console.log(`written: ${writeReport(keepResults(done, subjects))}`);
 if (failures > 0) process.exitCode = 1;
