@@ -63,6 +63,8 @@ describe("modes", () => {
     ["P 63 c m", "1/3 1/3 1/5", "1/3 2/3 0"],
     ["I 41/a", "0 0 1/5", "0 1/4 1/8"],
     ["P b n m", "0 2/7 0", "-0.017 0.07 1/4"],
+    ["P 21 1 1", "1/5 0 0", "0.1 0.2 0.3"],
+    ["P 1 1 n", "1/5 1/7 0", "0.1 0.2 0.3"],
   ])("of %s on the line through %s, site %s obey them with open letters", (group, k, position) => {
     const { form } = manifold(groupOf(group), wave(k), { withInversion: false });
     expect(problemsOf(group, modesOf(group, { ...form, values: null, uncertainties: null }, position))).toEqual([]);
