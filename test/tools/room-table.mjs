@@ -57,12 +57,10 @@ export const packageImporters = {
   "d3-shape": "reports",
   "d3-array": "reports",
   ogl: "reports",
-  mathjs: "numbers",
-  "fraction.js": "numbers",
 };
 
 /** Packages that may be loaded only by `import()`, off the path of a start. */
-export const lazyPackages = ["mathjs", "yaml"];
+export const lazyPackages = ["yaml"];
 
 /**
  * @param {readonly string[]} rooms

@@ -71,7 +71,7 @@ describe("a peak that may be uncertainties", () => {
         { "a.txt": `${header}${rows.join("\n")}\n` },
       );
       expect((result as OnsetRecord).peaks).toHaveLength(2);
-      expect(warnings.map(({ code }) => code)).toEqual(["invalid-scan"]);
+      expect(warnings.map(({ code }) => code)).toEqual(["doubtful-column"]);
       expect(warnings[0]?.message).toContain(`${name} was fitted as a peak, but it may be the uncertainties of`);
       expect(warnings[0]?.remedy).toContain("su");
     }

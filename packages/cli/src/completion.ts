@@ -3,7 +3,7 @@ import type { CommandSpec } from "./command-spec.js";
 import { type OptionName, optionSpecs } from "./options.js";
 
 /** Shells that a completion is made for. */
-export const completionShells = ["bash", "zsh", "fish"] as const;
+const completionShells = ["bash", "zsh", "fish"] as const;
 
 type Shell = (typeof completionShells)[number];
 

@@ -48,7 +48,7 @@ function wrapped(text: string, indent: number): string[] {
 }
 
 /** `peaks.csv:4:7`, `--k, column 5`, `study.yaml:3:1 (sites[1].at)`. */
-export function placeText({ file, line, column, path, argument }: Place): string {
+function placeText({ file, line, column, path, argument }: Place): string {
   if (file !== null) {
     const position = [file === "-" ? "standard input" : file, line, column].filter((part) => part !== null).join(":");
     return path === null ? position : `${position} (${path})`;

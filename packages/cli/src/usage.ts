@@ -1,5 +1,7 @@
 import { type Problem, problem } from "@kvane/core/errors";
 import { CommanderError } from "commander";
+import type { ArgumentKind } from "./command-spec.js";
+import { commandSpecs } from "./commands/index.js";
 import { valueOptions } from "./program.js";
 
 /**
@@ -54,6 +56,11 @@ function fromParser({ code, message }: CommanderError, words: readonly string[])
   }
 }
 
+/** What the first word behind a command is; null for no command. */
+function argumentOf(command: string): ArgumentKind | null {
+  return commandSpecs.find(({ name }) => name === command)?.argument ?? null;
+}
+
 /** Words that belong to nothing: mostly a value with blanks that was not put into quotation marks. */
 function excessProblem(words: readonly string[]): Problem | null {
   const [command = ""] = words;
@@ -84,14 +91,14 @@ function excessProblem(words: readonly string[]): Problem | null {
       remedy: `put it into quotation marks: ${option} "${texts.join(" ")}"`,
     });
   const excess = { found: texts.slice(1).join(" ") || (texts[0] ?? "") };
-  if (command === "help" || command === "explain")
+  if (["topic", "code"].includes(argumentOf(command) ?? ""))
     return problem("invalid-argument", `\`kvane ${command}\` takes one word`, {
       where: { argument: command === "help" ? "TOPIC" : "CODE" },
       expected: command === "help" ? "one topic or command" : "one code",
       ...excess,
       remedy: `ask for one at a time: kvane ${command} ${texts[0] ?? ""}`,
     });
-  const files = texts.some((text) => /\.(ya?ml|cif)$/i.test(text)) || ["run", "report", "check"].includes(command);
+  const files = texts.some((text) => /\.(ya?ml|cif)$/i.test(text)) || argumentOf(command) === "study";
   return files
     ? problem("invalid-argument", `\`kvane ${command}\` takes one study`, {
         where: { argument: "STUDY" },

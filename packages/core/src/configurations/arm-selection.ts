@@ -103,7 +103,7 @@ function keyOf(row: readonly number[], denominator: number): string {
 }
 
 /** Row times matrix. */
-export function rowTimesIntegers(row: readonly number[], matrix: readonly number[]): number[] {
+function rowTimesIntegers(row: readonly number[], matrix: readonly number[]): number[] {
   return [0, 1, 2].map((column) =>
     safe(
       (row[0] as number) * (matrix[column] as number) +

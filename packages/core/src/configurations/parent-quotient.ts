@@ -58,7 +58,7 @@ export function translationNumber(quotient: ParentQuotient, translation: readonl
 }
 
 /** The full translation part t + T in the primitive basis, over the group's `primitive.denominator`. */
-export function translationPart(quotient: ParentQuotient, element: QuotientElement): number[] {
+function translationPart(quotient: ParentQuotient, element: QuotientElement): number[] {
   const { primitive } = quotient.group;
   const own = primitive.translations[operatorOf(quotient, element)] as readonly number[];
   const extra = quotient.translations[element.translation] as readonly number[];

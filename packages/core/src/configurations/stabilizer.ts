@@ -66,7 +66,7 @@ export function latticeColumns(stabilizer: Stabilizer): RationalVector[] {
   return stabilizer.lattice.map((row) => fromPrimitiveColumn(stabilizer.quotient.group.lattice, vectorFrom(row)));
 }
 
-export function magneticOperatorOf(quotient: ParentQuotient, element: QuotientElement): MagneticOperator {
+function magneticOperatorOf(quotient: ParentQuotient, element: QuotientElement): MagneticOperator {
   const own = quotient.group.operators[operatorOf(quotient, element)] as SymmetryOperator;
   return {
     operator: operatorFrom(rotationOf(own), translationColumnOf(quotient, element)),

@@ -80,7 +80,7 @@ export function allVanish(frame: ExtinctionFrame, irrep: FormalModes, q: FormalV
 }
 
 /** H + k as a formal vector, H in a*, b*, c*. */
-export function satelliteVector({ wave }: Pick<ExtinctionFrame, "wave">, h: RationalVector): FormalVector {
+function satelliteVector({ wave }: Pick<ExtinctionFrame, "wave">, h: RationalVector): FormalVector {
   return { ...wave, constant: addVectors(wave.constant, h) };
 }
 
@@ -146,7 +146,7 @@ function oppositeMaps(group: SpaceGroup, k: WaveVector): ((h: RationalVector) =>
 }
 
 /** A vector of L* from numbers, exact. Throws `invalid-argument` when it is none. */
-export function exactVector(group: SpaceGroup, h: readonly number[]): RationalVector {
+function exactVector(group: SpaceGroup, h: readonly number[]): RationalVector {
   const { vectors, denominator } = group.lattice;
   const eta = vectors.map((vector) => {
     const value = vector.reduce((sum, entry, axis) => sum + entry * (h[axis] as number), 0) / denominator;

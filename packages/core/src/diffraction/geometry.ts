@@ -83,7 +83,7 @@ export function dotTriple(a: Triple, b: Triple): number {
   return a[0] * b[0] + a[1] * b[1] + a[2] * b[2];
 }
 
-export function crossTriple(a: Triple, b: Triple): Triple {
+function crossTriple(a: Triple, b: Triple): Triple {
   return [a[1] * b[2] - a[2] * b[1], a[2] * b[0] - a[0] * b[2], a[0] * b[1] - a[1] * b[0]];
 }
 

@@ -24,7 +24,7 @@ export interface FlatCondition {
   readonly value: Rational;
 }
 
-export const wholeFlat: ReflectionFlat = {
+const wholeFlat: ReflectionFlat = {
   origin: [0, 0, 0],
   basis: [
     [1, 0, 0],
@@ -33,12 +33,12 @@ export const wholeFlat: ReflectionFlat = {
   ],
 };
 
-export function flatKey({ origin, basis }: ReflectionFlat): string {
+function flatKey({ origin, basis }: ReflectionFlat): string {
   return `${basis.join(";")}|${origin.join()}`;
 }
 
 /** The vectors of a flat that meet a condition, or null when none does. */
-export function restrictFlat(flat: ReflectionFlat, { column, value }: FlatCondition): ReflectionFlat | null {
+function restrictFlat(flat: ReflectionFlat, { column, value }: FlatCondition): ReflectionFlat | null {
   const common = [...column, value].reduce((product, [, bottom]) => (product * bottom) / greatest(product, bottom), 1);
   const whole = column.map(([top, bottom]) => safe((top * common) / bottom));
   const target = safe((value[0] * common) / value[1]) - inner(flat.origin, whole);

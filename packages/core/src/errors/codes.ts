@@ -46,6 +46,8 @@ export const problemCodes = {
   "invalid-peak": "A row of a peak list has a word in a number column, a missing value or an impossible value.",
   "invalid-scan":
     "A temperature scan has a word in a number column, a row without a temperature or too short, no rows, no column besides the temperature, uncertainties without values, or too many values.",
+  "doubtful-column":
+    "A column of a temperature scan was fitted as a peak, but looks like the uncertainties of the column before it.",
   "invalid-component":
     "A row of a list of Fourier components names no atom of the site, or one twice, or has not three complex numbers.",
   "peak-kind-unknown": "It is not said whether positions are d, Q, 2theta or hkl.",

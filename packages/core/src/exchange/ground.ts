@@ -56,7 +56,7 @@ export async function groundOf(
 }
 
 /** E/N = λ/2: the bond between two atoms is counted once, J(k) holds it twice. */
-export function perSpin(eigenvalue: number, interaction: Interaction): number {
+function perSpin(eigenvalue: number, interaction: Interaction): number {
   return roundNumber(eigenvalue / 2, interaction.scale);
 }
 

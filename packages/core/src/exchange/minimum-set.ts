@@ -52,7 +52,7 @@ export function minimaOf(interaction: Interaction, found: ZoneMinimum, tolerance
 }
 
 /** Points that no operator and no vector of the reciprocal lattice makes equal. */
-export function oneOfEachStar(found: ZoneMinimum, points: readonly (readonly number[])[]): number[][] {
+function oneOfEachStar(found: ZoneMinimum, points: readonly (readonly number[])[]): number[][] {
   const kept: { readonly q: readonly number[]; readonly star: readonly (readonly number[])[] }[] = [];
   for (const q of points)
     if (!kept.some(({ star }) => star.some((one) => sameZonePoint(one, q, 1e-5))))

@@ -1,6 +1,6 @@
-import { type Field, type Row, readRows } from "./peak-rows.js";
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
 import { readableText } from "./readable-text.js";
+import { type Field, type Row, readRows } from "./table-rows.js";
 
 /** `[re, im]`. */
 type Complex = readonly [number, number];

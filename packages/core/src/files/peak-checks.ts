@@ -2,10 +2,10 @@ import type { ProblemCode } from "../errors/index.js";
 import type { PeakKind } from "../search/index.js";
 import { largestQ, type PowderKind, positionToQ } from "./peak-conversion.js";
 import type { ColumnRole } from "./peak-header.js";
-import type { Row } from "./peak-rows.js";
 import { kindUnits } from "./peak-units.js";
 import type { PeakCells, PeakValue } from "./peak-values.js";
 import { note, type ProblemList } from "./problem-list.js";
+import type { Row } from "./table-rows.js";
 
 /** Notes everything in a row that no peak can have; true when there is nothing. */
 export function checkCells(

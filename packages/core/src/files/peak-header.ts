@@ -1,9 +1,9 @@
 import type { PeakKind } from "../search/index.js";
 import { readNumber } from "./number-text.js";
 import { plainName, readPeakKind } from "./peak-kind.js";
-import { decimalCommaOf, type Field, type Row } from "./peak-rows.js";
 import { unitFactor, unitNames } from "./peak-units.js";
 import { note, type ProblemList } from "./problem-list.js";
+import { decimalCommaOf, type Field, type Row } from "./table-rows.js";
 
 /** What a column holds. */
 export type ColumnRole =

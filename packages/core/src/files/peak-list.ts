@@ -4,11 +4,11 @@ import { checkCells } from "./peak-checks.js";
 import { type Column, type Header, isHeader, readHeader } from "./peak-header.js";
 import { peakKindWords } from "./peak-kind.js";
 import { givenUncertainty, toPeak, uncertaintySource } from "./peak-record.js";
-import { looksLikeDecimalCommas, type Row, readRows } from "./peak-rows.js";
 import { unitFactor, unitNames } from "./peak-units.js";
 import { isPosition, noteDecimalComma, readCells } from "./peak-values.js";
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
 import { readableText } from "./readable-text.js";
+import { looksLikeDecimalCommas, type Row, readRows } from "./table-rows.js";
 
 /** How a list of peaks is to be read; what is left out the header of the list must say. */
 export interface PeakListOptions {

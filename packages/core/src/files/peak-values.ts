@@ -1,8 +1,8 @@
 import { parseRational, toNumber } from "../numbers/index.js";
 import { readNumber } from "./number-text.js";
 import { type Column, type ColumnRole, hasColumnName } from "./peak-header.js";
-import { decimalCommaOf, type Field, type Row } from "./peak-rows.js";
 import { note, type ProblemList } from "./problem-list.js";
+import { decimalCommaOf, type Field, type Row } from "./table-rows.js";
 
 /** A number of a row with its place; `uncertainty` is that of the brackets in 3.214(12). */
 export interface PeakValue {

@@ -1,5 +1,5 @@
-import type { Field, Row } from "./peak-rows.js";
 import { note, type ProblemList } from "./problem-list.js";
+import type { Field, Row } from "./table-rows.js";
 
 /** What a column of a temperature scan holds. */
 export type ScanRole = "temperature" | "intensity" | "k" | "uncertainty";

@@ -1,10 +1,10 @@
 import type { ScanSeries } from "../onsets/index.js";
 import { readNumber } from "./number-text.js";
-import { decimalCommaOf, type Field, type Row, readRows } from "./peak-rows.js";
 import { noteDecimalComma } from "./peak-values.js";
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
 import { readableText } from "./readable-text.js";
 import { holdsValues, type ScanColumn, type ScanRole, scanColumns } from "./scan-header.js";
+import { decimalCommaOf, type Field, type Row, readRows } from "./table-rows.js";
 
 /** A temperature scan: several quantities against temperature. */
 export interface ScanTable {

@@ -2,10 +2,10 @@ import { note, type ProblemList, problemList, throwProblems } from "./problem-li
 import { readableText } from "./readable-text.js";
 import { readExchange, readOnset } from "./study-exchange.js";
 import { readIntensities } from "./study-intensities.js";
-import { readExclude, readImpurities } from "./study-later.js";
 import { checkMeaning } from "./study-meaning.js";
 import { emptySearch, readPeaks, readSearch } from "./study-peaks.js";
 import { openSection, type Section } from "./study-section.js";
+import { readExclude, readImpurities } from "./study-set-aside.js";
 import { readAtoms, readCell, readSites, readStructureFile } from "./study-structure.js";
 import type { Study, StudyPlace } from "./study-types.js";
 import { asRecord, asText } from "./study-values.js";

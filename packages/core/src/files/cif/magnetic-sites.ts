@@ -6,12 +6,6 @@ import { doubtful } from "./places.js";
 import type { CifSite } from "./sites.js";
 import type { CifStructure } from "./structure.js";
 
-/** A site with its orbit; null where it has no coordinates or no group is known. */
-export interface PlacedSite {
-  readonly site: CifSite;
-  readonly orbit: SiteOrbit;
-}
-
 /** Sites that may carry moments, each orbit once. */
 export interface MagneticSites {
   readonly sites: readonly CifSite[];

@@ -3,7 +3,7 @@ import { readableText } from "../readable-text.js";
 import type { CifVersion } from "./document.js";
 
 /** Characters. A larger file holds images or raw data; what is sought in it is a page. */
-export const longestCif = 256 * 1024 * 1024;
+const longestCif = 256 * 1024 * 1024;
 
 /** The text of a CIF with what is to be known before it is read. */
 export interface OpenedText {

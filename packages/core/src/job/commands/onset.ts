@@ -61,7 +61,7 @@ function rememberColumns(work: Work, table: ScanTable): void {
     const bare = before !== undefined && before.uncertainties === null && uncertainties === null;
     if (!bare || !likeUncertainties(intensities[index] as ScanSeries, before)) continue;
     const doubt = problem(
-      "invalid-scan",
+      "doubtful-column",
       `${name} was fitted as a peak, but it may be the uncertainties of ${before.name}`,
       {
         where: { file },

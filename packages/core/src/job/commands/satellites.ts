@@ -7,6 +7,7 @@ import { numericK, writtenK } from "../inputs/k-input.js";
 import { numberOption } from "../inputs/number-input.js";
 import { wavelengthOf } from "../inputs/peaks-input.js";
 import { type GivenSite, orbitsOf, sitesIfGiven } from "../inputs/site-input.js";
+import { usualQMax } from "../inputs/usual-q-max.js";
 import { satellitesOf } from "../study/satellites-of.js";
 import { remember, together, type Work } from "../work.js";
 
@@ -54,13 +55,10 @@ function withoutSites(work: Work, error: unknown): [] {
   return [];
 }
 
-/** Å⁻¹. Beyond it the form factors of 3d and 4f ions leave little to see. */
-const usualLimit = 3;
-
 /** What was asked or the usual limit; never beyond 2θ = 180°. */
 function limitOf(work: Work, asked: number | null, wavelength: number | null): number {
   const reach = wavelength === null ? Number.POSITIVE_INFINITY : (4 * Math.PI) / wavelength;
-  const limit = Math.min(asked ?? usualLimit, reach);
+  const limit = Math.min(asked ?? usualQMax, reach);
   if (asked === null || asked > reach)
     remember(
       work,

@@ -77,7 +77,7 @@ export function writtenCell(work: Work): GivenCell {
       where: { file: work.study.file, path: "cell" },
       expected: "a line such as `cell: {a: 10.21, b: 6.05, c: 4.71, alpha: 90, beta: 90, gamma: 90}`",
       found: "none",
-      remedy: `add the cell to the study${orOption(work.request, "--cell")}`,
+      remedy: `add the cell to the study${orOption(work.request, "cell")}`,
     });
   return fail("missing-argument", "no unit cell was given", {
     where: { argument: "--cell" },

@@ -1,5 +1,6 @@
 import { KvaneError, nowhere, type Place, placed } from "../../errors/index.js";
 import type { Study } from "../../files/index.js";
+import { commandTable } from "../commands.js";
 import { argumentNames, type Request, type RequestField } from "../request.js";
 
 /** A text that came from an option or from a study, with where it stands. */
@@ -10,9 +11,11 @@ export interface Given {
   readonly verbatim: boolean;
 }
 
-/** `, or give --cell`: only where the command takes the option; `run`, `report` and `check` take these things from the study. */
-export function orOption({ command }: Request, option: string): string {
-  return ["run", "report", "check"].includes(command) ? "" : `, or give ${option}`;
+/** `, or give --cell`, where the command takes that; other commands have it from the study alone. */
+export function orOption({ command }: Request, field: RequestField): string {
+  if (!commandTable[command]?.takes.includes(field)) return "";
+  const name = argumentNames[field];
+  return `, or give ${name.startsWith("--") ? name : `${name} on the command line`}`;
 }
 
 /** An option's text, trimmed, or null when it was not given. */

@@ -46,7 +46,7 @@ function groupText({ request, study }: Work): Given {
       where: { file: study.file, path: "group" },
       expected: "a line such as `group: P n m a`",
       found: "none",
-      remedy: `add the group to the study${orOption(request, "GROUP on the command line")}`,
+      remedy: `add the group to the study${orOption(request, "group")}`,
     });
   fail("missing-argument", "no space group was given", {
     where: { argument: "GROUP" },

@@ -29,7 +29,7 @@ export async function writtenSites(work: Work): Promise<GivenSite[]> {
       where: { file: work.study.file, path: "sites" },
       expected: "a list such as `sites: [{label: Fe1, ion: Fe3+, at: [0, 0, 0]}]`",
       found: "none",
-      remedy: `add the sites to the study${orOption(work.request, "--site")}`,
+      remedy: `add the sites to the study${orOption(work.request, "sites")}`,
     });
   return fail("missing-argument", "no site was given", {
     where: { argument: "--site" },

@@ -15,6 +15,7 @@ import { peaksIfGiven, wavelengthOf } from "../inputs/peaks-input.js";
 import { searchOptionsOf } from "../inputs/search-input.js";
 import { type GivenSite, orbitsOf, writtenSites } from "../inputs/site-input.js";
 import { needStudy } from "../inputs/study-input.js";
+import { usualQMax } from "../inputs/usual-q-max.js";
 import { remember, together, type Work } from "../work.js";
 import type { ReadPeaks } from "./search-of.js";
 
@@ -66,14 +67,11 @@ function refuseWithoutSource(file: string): never {
   });
 }
 
-/** Å⁻¹. Where nothing says how far the data go. */
-const usualLimit = 3;
-
 /** How far satellites are listed: a little beyond the last peak, else to the usual limit; never beyond 2θ = 180°. */
 export function satelliteLimit({ cell, peaks, options, wavelengthAngstrom }: StudyInputs): number {
   const last = Math.max(0, ...(peaks?.list.peaks ?? []).map((peak) => peak.q ?? lengthOf(cell, peak.hkl)));
   const reach = wavelengthAngstrom === null ? Number.POSITIVE_INFINITY : (4 * Math.PI) / wavelengthAngstrom;
-  return Math.min(options.qMax ?? (last > 0 ? 1.1 * last : usualLimit), reach);
+  return Math.min(options.qMax ?? (last > 0 ? 1.1 * last : usualQMax), reach);
 }
 
 /** Å⁻¹, of fractional indices. */

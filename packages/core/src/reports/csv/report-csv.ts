@@ -8,7 +8,7 @@ import type { OnsetRecord } from "../records/onset.js";
 import type { SatellitesRecord } from "../records/satellites.js";
 import type { SearchRecord } from "../records/search.js";
 import type { WeighRecord } from "../records/weigh.js";
-import { exchangeCsv, onsetCsv } from "./exchange-tables.js";
+import { exchangeCsv, onsetCsv } from "./exchange-and-onset-csv.js";
 import { atlasCsv, compatibilityCsv, configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./tables.js";
 import { weighCsv } from "./weigh-table.js";
 
