@@ -2,11 +2,14 @@ import { KvaneError } from "@kvane/core/errors";
 import {
   checkCellAgainstGroup,
   composeOperators,
+  groupFromSetting,
   parseCell,
   parseGroup,
   parseGroupWithNotes,
   reciprocalMetric,
   siteOrbit,
+  tabulatedSettings,
+  waysToSettings,
 } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { identityOperator, invertOperator } from "#core/spacegroups/operators.js";
@@ -73,6 +76,24 @@ describe("symbols", () => {
     expect(parseGroup("3").name.hermannMauguin).toBe("P 1 2 1");
     expect(parseGroup("15").name.hermannMauguin).toBe("C 1 2/c 1");
     expect(parseGroup("16").name.hermannMauguin).toBe("P 2 2 2");
+  });
+
+  test("that stand for several settings say which is taken", () => {
+    const taken = (text: string) =>
+      parseGroupWithNotes(text)
+        .assumed.map(({ because }) => because)
+        .join();
+    expect(taken("P 21/c")).toContain("unique axis b");
+    expect(taken("F d -3 m")).toContain("origin choice 2");
+    expect(taken("R -3 m")).toContain("hexagonal axes");
+    // The two settings of number 67 with this symbol differ by a shift along an axis, not by a choice of origin.
+    expect(taken("C m m e")).toContain("the standard setting");
+    expect(taken("P n m a")).toBe("");
+  });
+
+  test("of all tabulated settings with lattices A and B stand for groups that are found in their own setting", () => {
+    for (const setting of tabulatedSettings().filter(({ hall }) => /^-?[AB]/.test(hall)))
+      expect(waysToSettings(groupFromSetting(setting), [setting]).next().value?.setting).toBe(setting);
   });
 
   test("of Hall give a twofold axis behind order 1 no default", () => {
