@@ -30,7 +30,7 @@ export async function modesCommand(work: Work): Promise<ModesRecord> {
   });
   const orbits = orbitsOf(work, group, sites, cell);
   if (convention.components !== "lattice") refuseComponents(convention.components, cell, k, written);
-  const read = list && componentsFor(list, orbits, k);
+  const read = list && (await componentsFor(list, orbits, k));
   const options = { axial, cell, convention, star: work.request.star === true };
   return modesOf(group, smallIrreps(group, k), orbits, options, read);
 }

@@ -1,5 +1,4 @@
 import { fail } from "../../errors/index.js";
-import { parseFourierComponents } from "../../files/index.js";
 import { formatWaveVector, numericWaveVector, type WaveVector } from "../../kvectors/index.js";
 import type { SiteOrbit } from "../../spacegroups/index.js";
 import type { Work } from "../work.js";
@@ -13,7 +12,7 @@ export async function componentsIfGiven({ request, host }: Work): Promise<{ file
 }
 
 /** The components of every atom of the one site that there must be, at a k that has numbers. */
-export function componentsFor(
+export async function componentsFor(
   { file, text }: { readonly file: string; readonly text: string },
   orbits: readonly SiteOrbit[],
   k: WaveVector,
@@ -32,5 +31,6 @@ export function componentsFor(
       expected: "fractions or decimals, such as 0,0.472,0",
       remedy: "give numbers in place of the letters, or leave --read out",
     });
+  const { parseFourierComponents } = await import("../../files/index.js");
   return { file, components: parseFourierComponents(text, { file, atoms: orbit.positions.length }) };
 }

@@ -1,5 +1,5 @@
 import { fail, KvaneError, type Problem, problem } from "../../errors/index.js";
-import { type CifStructure, magneticSitesOf } from "../../files/index.js";
+import type { CifStructure } from "../../files/index.js";
 import { formatRational, type Rational, toNumber } from "../../numbers/index.js";
 import {
   type Cell,
@@ -86,6 +86,7 @@ async function sitesOfStructure(work: Work, structure: CifStructure): Promise<Gi
   throwPart(structure.problems.sites);
   const ownGroup = typeof work.request.group !== "string";
   const group = ownGroup ? (structure.symmetry?.group ?? null) : null;
+  const { magneticSitesOf } = await import("../../files/index.js");
   const { sites, assumed, warnings } = await magneticSitesOf(structure, group, structure.cell?.cell ?? null);
   remember(work, assumed, warnings);
   return sites.flatMap(({ label, position, ion, place }) =>

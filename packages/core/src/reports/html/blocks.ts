@@ -26,20 +26,20 @@ export function blocksHtml(blocks: readonly Block[], prefix: string): string {
 function blockHtml(block: Block, id: string): string {
   switch (block.kind) {
     case "paragraph":
-      return element("p", {}, text(block.text));
+      return element("p", {}, prose(block.text));
     case "note":
       return noteHtml(block);
     case "fields":
       return element(
         "dl",
         { class: "fields" },
-        ...block.entries.map(([name, value]) => element("dt", {}, text(name)) + element("dd", {}, text(value))),
+        ...block.entries.map(([name, value]) => element("dt", {}, text(name)) + element("dd", {}, prose(value))),
       );
     case "list":
       return element(
         block.ordered ? "ol" : "ul",
         { class: block.short ? "short" : null },
-        ...block.items.map((item) => element("li", {}, text(item))),
+        ...block.items.map((item) => element("li", {}, prose(item))),
       );
     case "table":
       return tableHtml(block, id);
@@ -67,7 +67,7 @@ function blockHtml(block: Block, id: string): string {
 
 function noteHtml({ tone, text: words }: Extract<Block, { kind: "note" }>): string {
   const head = tone === "warning" ? element("b", {}, "Note: ") : "";
-  return element("p", { class: tone === "good" ? "note good" : "note" }, head, text(words));
+  return element("p", { class: tone === "good" ? "note good" : "note" }, head, prose(words));
 }
 
 function tableHtml({ caption, columns, rows }: Extract<Block, { kind: "table" }>, id: string): string {
@@ -128,4 +128,9 @@ function figureHtml({ id, caption, parts, legend, live, scrolls }: DocumentFigur
         ),
     element("figcaption", {}, text(caption)),
   );
+}
+
+/** Text in which a line does not break inside an option such as `--json`. */
+function prose(words: string): string {
+  return text(words).replace(/--[a-z][a-z-]*/g, '<span class="option">$&</span>');
 }

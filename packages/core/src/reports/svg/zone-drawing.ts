@@ -15,6 +15,9 @@ export interface ZoneTurn {
 /** Shows three faces of a box, none of them edge on. */
 export const usualTurn: ZoneTurn = { turn: 0.42, tip: 0.3 };
 
+/** Where the name of an axis stands, over its length. */
+const axisLabelAt = 1.06;
+
 const width = 540;
 const height = 470;
 
@@ -23,7 +26,9 @@ export function zoneDrawing(data: ZoneData, { turn, tip }: ZoneTurn = usualTurn)
   const view = turnedView(turn, tip);
   const screen = onScreen(data, view);
   const labels = labelPlaces();
-  for (const { places } of [...data.points, ...data.marks]) labels.block(...screen(nearestToEye(places, view)), 5);
+  for (const { places } of data.points) labels.block(...screen(nearestToEye(places, view)), 5);
+  for (const { places } of data.marks) for (const place of places) labels.block(...screen(place), 5);
+  for (const { to } of data.axes) labels.block(...screen(times(to, axisLabelAt)), 8);
   // What matters most gets its label first, and is drawn last.
   const candidates = data.marks.map((mark, index) => candidateMarks(mark, index, view, screen, labels));
   const points = data.points.map((point) => pointMarks(point, view, screen, labels));
@@ -86,7 +91,7 @@ function axisMarks({ axes }: ZoneData, screen: Screen): string {
     "g",
     { class: "zone-axes" },
     ...axes.flatMap(({ name, to }) => {
-      const label = screen(times(to, 1.06));
+      const label = screen(times(to, axisLabelAt));
       return [
         element("path", { d: path([[0, 0, 0], to], screen), ...paint({ stroke: "faint" }) }),
         element(
