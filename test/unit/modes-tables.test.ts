@@ -126,6 +126,17 @@ describe("tables of what is allowed", () => {
     expect(compared).toBeGreaterThan(0);
   });
 
+  test("in μB are left out where symmetry alone makes the axes equally long, whatever their rounding", () => {
+    const modes = modesOf("P 3", "0 0 1/5", "0.1 0.2 0.3");
+    const random = seeded(72);
+    for (let round = 0; round < 20; round++) {
+      const a = 3 + 4 * random.next();
+      const cell = { a, b: a * (1 + 1e-5 * random.next()), c: 8, alpha: 90, beta: 90, gamma: 120 };
+      for (const part of modes.irreps)
+        expect(constraintTexts(groupOf("P 3"), modes, part, { cell }).crystal).toBeNull();
+    }
+  });
+
   test("with phases by position have plain letters on the first atom of each suborbit", () => {
     const [group, modes] = [groupOf("P b n m"), modesOf("P b n m", "0 2/7 0", "-0.017 0.07 1/4")];
     expect(modes.suborbits.length).toBeGreaterThan(1);
@@ -214,6 +225,21 @@ describe("tables of one order parameter", () => {
       }
     });
     expect(tried).toBeGreaterThan(3);
+  });
+
+  test("with phases by position has plain letters on the first atoms of each pair of suborbits", () => {
+    // The little group is that of the mirror across c; −1 exchanges its four suborbits in pairs.
+    const [group, modes] = [groupOf("P n m a"), modesOf("P n m a", "1/5 1/7 0", "0.1 0.2 0.3")];
+    for (const exponent of ["minus", "plus"] as const)
+      for (const part of modes.irreps) {
+        const convention: FourierConvention = { exponent, phase: "position", factor: "one" };
+        const { lattice } = orderParameterTexts(group, modes, part, { convention }) ?? { lattice: [] };
+        const images = part.minusK?.suborbitImages ?? [];
+        expect(images.filter((image, suborbit) => image > suborbit).length).toBe(2);
+        modes.suborbits.forEach(([first], suborbit) => {
+          if ((images[suborbit] as number) > suborbit) expect(lattice[first as number]).not.toContain("e^");
+        });
+      }
   });
 
   test("of irreps that are not real have as many parameters as order parameter and couplings, less a common factor", () => {
