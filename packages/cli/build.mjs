@@ -1,26 +1,40 @@
 // @ts-check
 /**
- * Bundles the command into bin/kvane.js: one file without runtime dependencies, because loading many small modules
- * would cost more than the command's own work. `import()` in the source stays lazy inside the one file. It is a CommonJS
- * file, since Node's loader of ES modules alone takes a tenth of the time of a bare `node`.
+ * Bundles the command into bin/: kvane.js with what every command needs, and parts beside it that `import()` in the source
+ * loads when a command wants them. Few files without runtime dependencies, because loading many small modules would cost
+ * more than the command's own work; not one file, because Node reads through all of a file's text before it runs any of it.
+ * They are CommonJS, since Node's loader of ES modules alone takes a tenth of the time of a bare `node`.
  */
-import { chmodSync, mkdirSync, readFileSync, writeFileSync } from "node:fs";
-import { dirname, join, resolve } from "node:path";
+import { chmodSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { basename, dirname, join, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
-import { build } from "esbuild";
+import { build, transform } from "esbuild";
 
 const here = dirname(fileURLToPath(import.meta.url));
 const { version } = JSON.parse(readFileSync(join(here, "package.json"), "utf8"));
 
-mkdirSync(join(here, "bin"), { recursive: true });
-const { metafile } = await build({
-  absWorkingDir: here,
-  entryPoints: ["src/main.ts"],
-  outfile: "bin/kvane.js",
-  bundle: true,
-  format: "cjs",
+const bin = join(here, "bin");
+mkdirSync(bin, { recursive: true });
+
+/** @type {import("esbuild").TransformOptions} */
+const both = {
   platform: "node",
   target: "node20.19",
+  // Less text to read at each start. The command never prints a stack, so short names cost nobody anything.
+  minify: true,
+  // Text that is ASCII throughout is read faster.
+  charset: "ascii",
+};
+// esbuild cuts bundles into parts as ES modules only; each is turned into CommonJS afterwards.
+const { metafile, outputFiles } = await build({
+  ...both,
+  absWorkingDir: here,
+  entryPoints: { kvane: "src/main.ts" },
+  outdir: bin,
+  chunkNames: "part-[hash]",
+  bundle: true,
+  splitting: true,
+  format: "esm",
   // From the source, so that a bundle never holds a stale build of core.
   conditions: ["kvane-source"],
   define: { KVANE_VERSION: JSON.stringify(version), "import.meta.dirname": "__dirname" },
@@ -28,18 +42,28 @@ const { metafile } = await build({
     // Loaded by commander for subcommands that are programs of their own, which kvane has none of; it is slow to load.
     "node:child_process": "./src/no-child-process.ts",
   },
-  // Less text to read at each start. The command never prints a stack, so short names cost nobody anything.
-  minify: true,
-  // Text that is ASCII throughout is read faster.
-  charset: "ascii",
-  banner: { js: "#!/usr/bin/env node" },
   metafile: true,
   legalComments: "none",
   logLevel: "warning",
+  write: false,
 });
-writeFileSync(join(here, "bin/package.json"), '{ "type": "commonjs" }\n');
-chmodSync(join(here, "bin/kvane.js"), 0o755);
-writeFileSync(join(here, "bin/THIRD-PARTY-LICENSES.txt"), licences(Object.keys(metafile.inputs)));
+const written = new Set(["kvane.js", "package.json", "THIRD-PARTY-LICENSES.txt"]);
+writeFileSync(join(bin, "package.json"), '{ "type": "commonjs" }\n');
+writeFileSync(join(bin, "THIRD-PARTY-LICENSES.txt"), licences(Object.keys(metafile.inputs)));
+// kvane.js comes last: it names the new parts, and a command that is running keeps its old ones until then.
+for (const { path, text } of outputFiles.toSorted((a, b) => Number(isStart(a.path)) - Number(isStart(b.path)))) {
+  const banner = isStart(path) ? "#!/usr/bin/env node" : "";
+  const { code } = await transform(text, { ...both, format: "cjs", supported: { "dynamic-import": false }, banner });
+  writeFileSync(path, code);
+  written.add(basename(path));
+}
+chmodSync(join(bin, "kvane.js"), 0o755);
+for (const file of readdirSync(bin)) if (!written.has(file)) rmSync(join(bin, file));
+
+/** @param {string} path */
+function isStart(path) {
+  return basename(path) === "kvane.js";
+}
 
 /**
  * The licence text of every package that a bundled file comes from.

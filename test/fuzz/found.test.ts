@@ -43,6 +43,14 @@ describe("found by fuzzing: files", () => {
     expect(places(problems)).toEqual(["peak-out-of-range 2:1"]);
   });
 
+  test("a tolerance as wide as the positions is refused", async () => {
+    for (const tolerance of [3, 2 ** 53]) {
+      const problems = await problemsOf(() => parsePeakList("d\n3\n2\n", { file: "p.txt", tolerance }));
+      expect(problems).toMatchObject([{ code: "invalid-number", where: { argument: "--tolerance" } }]);
+    }
+    expect(parsePeakList("d\n3\n2\n", { file: "p.txt", tolerance: 0.05 }).peaks).toHaveLength(2);
+  });
+
   test("a moment beyond all numbers is refused with its place", async () => {
     const text = readFileSync(join(root, "test/fixtures/magnetic-cif/doubled-spherical.cif"), "utf8");
     const broken = text.replace(/^(Fe1c [\d.]+) \d+ /m, "$1 -1e308 ");

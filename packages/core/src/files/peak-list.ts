@@ -87,13 +87,16 @@ export function readPeakTable(text: string, options: PeakListOptions): PeakTable
   const peaks: Peak[] = [];
   const polarizations: (number | null)[] = [];
   let given = 0;
+  let farthest = kind === "hkl" ? 1 : 0;
   for (const row of commas ? [] : data) {
     const cells = readCells(row, converted, headed, problems);
     if (!cells || !scale || !checkCells(row, cells, scale.kind, wavelength, problems)) continue;
     if (givenUncertainty(cells) !== null) given += 1;
+    farthest = Math.max(farthest, cells.position?.value ?? 0);
     peaks.push(toPeak(cells, peaks.length, row.line, scale));
     polarizations.push(cells.polarization?.value ?? null);
   }
+  if (tolerance !== null && peaks.length > 0 && tolerance >= farthest) noteTolerance(options.tolerance, problems);
   throwProblems(problems);
   if (!scale) fail("internal-fault", "a peak list without a kind was not refused", { where: { file } });
   const source = uncertaintySource(given, peaks.length, scale);
@@ -122,6 +125,16 @@ function checkOptions(options: PeakListOptions, problems: ProblemList): void {
       remedy: `give the ${name} as a number above 0`,
     });
   }
+}
+
+/** A half-width beyond every position, or above 1 in h, k, l, matches everything with everything. */
+function noteTolerance(tolerance: number | undefined, problems: ProblemList): void {
+  note(problems, "invalid-number", "the tolerance is as large as the positions themselves", {
+    where: { argument: "--tolerance" },
+    expected: "the half-width of a match, far below the positions, in their unit",
+    found: String(tolerance),
+    remedy: "give a smaller tolerance, or none: the list's own uncertainties then serve",
+  });
 }
 
 function noteNoPeaks(first: Row | undefined, problems: ProblemList): void {
