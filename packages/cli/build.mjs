@@ -41,6 +41,8 @@ const { metafile, outputFiles } = await build({
   alias: {
     // Loaded by commander for subcommands that are programs of their own, which kvane has none of; it is slow to load.
     "node:child_process": "./src/no-child-process.ts",
+    // Its modules and not its CommonJS, whose names a part of its own would not carry.
+    yaml: join(here, "../core/node_modules/yaml/browser/index.js"),
   },
   metafile: true,
   legalComments: "none",
@@ -52,7 +54,7 @@ writeFileSync(join(bin, "package.json"), '{ "type": "commonjs" }\n');
 writeFileSync(join(bin, "THIRD-PARTY-LICENSES.txt"), licences(Object.keys(metafile.inputs)));
 // kvane.js comes last: it names the new parts, and a command that is running keeps its old ones until then.
 for (const { path, text } of outputFiles.toSorted((a, b) => Number(isStart(a.path)) - Number(isStart(b.path)))) {
-  const banner = isStart(path) ? "#!/usr/bin/env node" : "";
+  const banner = `${isStart(path) ? "#!/usr/bin/env node\n" : ""}"use strict";`;
   const { code } = await transform(text, { ...both, format: "cjs", supported: { "dynamic-import": false }, banner });
   writeFileSync(path, code);
   written.add(basename(path));
