@@ -43,6 +43,7 @@ const size = ([re, im]: Complex): number => Math.hypot(re, im);
 /** 2k in L*, complex irreps among them, and not; dimensions 1 to 3; irreps that do not occur; orbits that split. */
 const cases: readonly Case[] = [
   ["P 4", "0 0 1/2", "0 0 0"],
+  ["P 2", "0 1/5 1/2", "0.1 0.2 0.3"],
   ["P 4/m m m", "0 0 1/5", "0 0 0"],
   ["P n m a", "1/2 1/5 0", "0.1 0.2 0.3"],
   ["P 63", "1/3 1/3 0", "0.1 0.2 0.3"],
@@ -83,6 +84,7 @@ describe("tables of what is allowed", () => {
   });
 
   const orthohexagonal: Cell = { a: 5, b: 5 * Math.sqrt(3), c: 8, alpha: 90, beta: 90, gamma: 90 };
+  const doubled: Cell = { ...plainCell, a: 4, b: 8 };
   const skewed: Cell = {
     a: 10.21,
     b: 6.05,
@@ -95,8 +97,8 @@ describe("tables of what is allowed", () => {
   test.each<readonly [...Case, Cell]>([
     ["P 3 (a,a+2b,c)", "0 0 1/5", "0 0 0", orthohexagonal],
     ["P 3 (a,a+2b,c)", "0 0 1/2", "0.1 0.2 0.3", orthohexagonal],
-    ["P 63/m m c (a,a+2b,c)", "0 0 1/3", "1/3 1/6 1/4", orthohexagonal],
     ["P n m a (a,b,a+c)", "0 2/7 0", "0.1 0.2 0.3", skewed],
+    ["P 4 (a,2b,c)", "0 0 1/5", "0.1 0.1 0.3", doubled],
   ])("in μB are those in lattice components times the axes: %s at %s, site %s", (name, k, site, cell) => {
     const [group, modes] = [groupOf(name), modesOf(name, k, site)];
     let compared = 0;
@@ -107,6 +109,7 @@ describe("tables of what is allowed", () => {
       ]) {
         if (written === null || written.crystal === null) continue;
         const { lattice, crystal } = written;
+        for (const text of crystal) expect(text).not.toContain("·-");
         const leading = new Map<string, number>();
         for (const letter of lettersIn(lattice).filter((one) => !one.startsWith("ξ"))) {
           const here = entriesOf(unitOf(modes, lattice, letter));
@@ -127,13 +130,19 @@ describe("tables of what is allowed", () => {
   });
 
   test("in μB are left out where symmetry alone makes the axes equally long, whatever their rounding", () => {
-    const modes = modesOf("P 3", "0 0 1/5", "0.1 0.2 0.3");
     const random = seeded(72);
-    for (let round = 0; round < 20; round++) {
-      const a = 3 + 4 * random.next();
-      const cell = { a, b: a * (1 + 1e-5 * random.next()), c: 8, alpha: 90, beta: 90, gamma: 120 };
-      for (const part of modes.irreps)
-        expect(constraintTexts(groupOf("P 3"), modes, part, { cell }).crystal).toBeNull();
+    const nearly = (): number => 1 + 1e-5 * random.next();
+    for (const [name, gamma] of [
+      ["P 3", 120],
+      ["P 2 3", 90],
+    ] as const) {
+      const modes = modesOf(name, "0 0 0", "0.1 0.2 0.3");
+      for (let round = 0; round < 20; round++) {
+        const a = 3 + 4 * random.next();
+        const cell = { a, b: a * nearly(), c: a * nearly(), alpha: 90, beta: 90, gamma };
+        for (const part of modes.irreps)
+          expect(constraintTexts(groupOf(name), modes, part, { cell }).crystal).toBeNull();
+      }
     }
   });
 
@@ -154,9 +163,9 @@ describe("tables of one order parameter", () => {
   const hard: readonly Case[] = [
     ["P 4 2 2", "1/5 1/5 0", "11/16 -5/16 0"],
     ["P 42/n b c:2", "1/2 1/5 0", "0.137 1/4 -1/2"],
-    ["P m -3 n", "0 0 1/5", "2/3 -1/3 0"],
     ["P 31 1 2", "0 0 1/5", "1/8 -7/16 1/2"],
     ["P b n m", "0 2/7 0", "-0.017 0.07 1/4"],
+    ["I 41/a m d:2", "1/2 1/5 1/2", "0.1 1/4 0.3"],
   ];
 
   test.each(hard)("obey the relation between k and −k: %s at %s, site %s", (name, k, site) => {
@@ -315,11 +324,11 @@ describe("basis vectors", () => {
   });
 
   test("along the crystal axes begin with 1, the first partner of each copy", () => {
-    // Partners of the plane across the axis begin along a + b and along b, which are of different lengths.
-    const name = "P 4/m m m (a+b,b,c)";
-    const cell: Cell = { a: 4 * Math.SQRT2, b: 4, c: 7, alpha: 90, beta: 90, gamma: 45 };
+    // Partners of the plane across the axis begin along a and along 2b.
+    const name = "P 4 2 2 (a,2b,c)";
+    const cell: Cell = { a: 4, b: 8, c: 7, alpha: 90, beta: 90, gamma: 90 };
     const convention = { ...ownWriting, components: "crystal" as const };
-    const written = writtenSite(groupOf(name), modesOf(name, "0 0 1/5", "0 0 0"), { convention, cell, star: false });
+    const written = writtenSite(groupOf(name), modesOf(name, "0 0 0", "0 0 0"), { convention, cell, star: false });
     const firsts = written.irreps.flatMap(({ modes }) => modes.filter(({ partner }) => partner === 1));
     expect(firsts.length).toBe(2);
     for (const { numbers } of firsts) {
