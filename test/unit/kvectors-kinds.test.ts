@@ -50,8 +50,6 @@ const names = [
   ...["P 1", "P -1", "P 2", "C 1 2/c 1", "P m c 21", "C 2 2 2", "A b m 2", "I m m a", "F d d 2", "F m m m"],
   ...["P 4", "I -4", "P 4/m m m", "I 41/a m d:2", "P 3", "P -3 m 1", "R 3:H", "R -3 m:R", "P 6", "P -6 2 m"],
   ...["P 63/m m c", "P 2 3", "F 4 3 2", "I 21 3", "F -4 3 m", "I m -3 m", "P 2/m (a,b,a+c)", "I 4 (a+b,b,2c)"],
-  // Axes that are no vectors of the lattice: L* is none of integers.
-  ...["C 2 2 2 (1/2a,b,c)", "P 2/m (1/2a,b,1/2a+1/3c)"],
 ];
 
 /** Small vectors of L*. */
