@@ -22,7 +22,8 @@ export default defineConfig({
     // Core has no global state, so that files of one worker may share its loaded modules.
     isolate: false,
     maxWorkers: 2,
-    testTimeout: 30_000,
+    // Idle, no test takes more than half of it; a machine with other work is several times slower.
+    testTimeout: 60_000,
     hookTimeout: 60_000,
     // A page on a busy machine redraws late; the default of a second ends before it.
     expect: { poll: { timeout: 10_000 } },

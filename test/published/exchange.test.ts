@@ -185,19 +185,13 @@ describe("honeycomb lattice J1–J2", () => {
 
   // The ring |γ| = J1/2J2, γ = 1 + exp(−ia) + exp(ib), has |γ| = 1 at the middle of an edge: there it passes from around Γ to
   // around K, at J2 = J1/2 (the same papers). It must not depend on the grid.
-  it.each([
-    [0.4, 0.62, 3],
-    [0.42, 0.6, 4],
-  ])(
-    "changes from ring to ring at J2 = J1/2, from %d to %d",
-    async (from, to, count) => {
-      const model = await latticeModel("honeycomb", { 1: 1, 2: 0 });
-      const { boundaries } = await phaseDiagram(model, [{ name: "2", classes: ["2"], from, to, count }]);
-      expect(boundaries?.map(({ sudden }) => sudden)).toEqual([false]);
-      expect(Math.abs((boundaries?.[0]?.value ?? 0) - 0.5)).toBeLessThan(2e-5);
-    },
-    120_000,
-  );
+  it("changes from ring to ring at J2 = J1/2", async () => {
+    const model = await latticeModel("honeycomb", { 1: 1, 2: 0 });
+    const range = { name: "2", classes: ["2"], from: 0.4, to: 0.62, count: 3 };
+    const { boundaries } = await phaseDiagram(model, [range]);
+    expect(boundaries?.map(({ sudden }) => sudden)).toEqual([false]);
+    expect(Math.abs((boundaries?.[0]?.value ?? 0) - 0.5)).toBeLessThan(2e-5);
+  }, 120_000);
 
   it("of small J2 is Néel with k = 0", async () => {
     const found = await ground("honeycomb", { 1: 1, 2: 0.15 });

@@ -24,7 +24,7 @@ describe("long peak lists", () => {
     const plain = parsePeakList(body, { file: "big", kind: "d" });
     const headed = parsePeakList(`# long\n${header} ! the columns\n${body}\n`, { file: "big" });
     // Half a second by itself; what grows faster than the list would take minutes.
-    expect(performance.now() - started).toBeLessThan(20_000);
+    expect(performance.now() - started).toBeLessThan(60_000);
     expect(plain.peaks).toHaveLength(count);
     expect(headed.peaks.map(({ position }) => position)).toEqual(plain.peaks.map(({ position }) => position));
     const last = plain.peaks.at(-1);
