@@ -1,14 +1,15 @@
 // @ts-check
 /**
- * Bundles the command into bin/: kvane.js with what every command needs, and parts beside it that `import()` in the source
- * loads when a command wants them. Few files without runtime dependencies, because loading many small modules would cost
- * more than the command's own work; not one file, because Node reads through all of a file's text before it runs any of it.
- * They are CommonJS, since Node's loader of ES modules alone takes a tenth of the time of a bare `node`.
+ * Bundles the command into bin/: kvane.js with what every command and the small ones need, and parts beside it that `import()`
+ * in the source loads when a command wants them. Not many small modules, because finding and opening them would cost more than
+ * a small command's own work; not one file, because Node reads through all of a file's text before it runs any of it. They
+ * are CommonJS, since Node's loader of ES modules alone takes a tenth of the time of a bare `node`.
  */
 import { chmodSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
-import { basename, dirname, join, resolve } from "node:path";
+import { dirname, join, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
-import { build, transform } from "esbuild";
+import { build } from "esbuild";
+import { packParts } from "./pack-parts.mjs";
 
 const here = dirname(fileURLToPath(import.meta.url));
 const { version } = JSON.parse(readFileSync(join(here, "package.json"), "utf8"));
@@ -16,23 +17,29 @@ const { version } = JSON.parse(readFileSync(join(here, "package.json"), "utf8"))
 const bin = join(here, "bin");
 mkdirSync(bin, { recursive: true });
 
-/** @type {import("esbuild").TransformOptions} */
-const both = {
-  platform: "node",
+/** The commands whose start is to take no longer than it must: what they load is in kvane.js from the beginning. */
+const small = ["ops", "star", "irreps", "modes"].map((name) => `../core/src/job/commands/${name}.ts`);
+
+/** @satisfies {import("esbuild").BuildOptions} */
+const options = {
+  absWorkingDir: here,
+  outdir: bin,
+  bundle: true,
+  platform: /** @type {const} */ ("node"),
   target: "node20.19",
   // Less text to read at each start. The command never prints a stack, so short names cost nobody anything.
   minify: true,
   // Text that is ASCII throughout is read faster.
-  charset: "ascii",
+  charset: /** @type {const} */ ("ascii"),
+  legalComments: /** @type {const} */ ("none"),
+  logLevel: /** @type {const} */ ("warning"),
+  write: /** @type {const} */ (false),
 };
-// esbuild cuts bundles into parts as ES modules only; each is turned into CommonJS afterwards.
+// esbuild cuts bundles into parts as ES modules only.
 const { metafile, outputFiles } = await build({
-  ...both,
-  absWorkingDir: here,
+  ...options,
   entryPoints: { kvane: "src/main.ts" },
-  outdir: bin,
   chunkNames: "part-[hash]",
-  bundle: true,
   splitting: true,
   format: "esm",
   // From the source, so that a bundle never holds a stale build of core.
@@ -45,27 +52,18 @@ const { metafile, outputFiles } = await build({
     yaml: join(here, "../core/node_modules/yaml/browser/index.js"),
   },
   metafile: true,
-  legalComments: "none",
-  logLevel: "warning",
-  write: false,
 });
 const written = new Set(["kvane.js", "package.json", "THIRD-PARTY-LICENSES.txt"]);
 writeFileSync(join(bin, "package.json"), '{ "type": "commonjs" }\n');
 writeFileSync(join(bin, "THIRD-PARTY-LICENSES.txt"), licences(Object.keys(metafile.inputs)));
-// kvane.js comes last: it names the new parts, and a command that is running keeps its old ones until then.
-for (const { path, text } of outputFiles.toSorted((a, b) => Number(isStart(a.path)) - Number(isStart(b.path)))) {
-  const banner = `${isStart(path) ? "#!/usr/bin/env node\n" : ""}"use strict";`;
-  const { code } = await transform(text, { ...both, format: "cjs", supported: { "dynamic-import": false }, banner });
-  writeFileSync(path, code);
-  written.add(basename(path));
+// kvane.js comes last: it names the new parts, and a command that starts meanwhile finds the old ones with the old.
+const packed = await packParts({ outputs: metafile.outputs, files: outputFiles, early: small, options });
+for (const { name, text } of packed) {
+  writeFileSync(join(bin, name), text);
+  written.add(name);
 }
 chmodSync(join(bin, "kvane.js"), 0o755);
 for (const file of readdirSync(bin)) if (!written.has(file)) rmSync(join(bin, file));
-
-/** @param {string} path */
-function isStart(path) {
-  return basename(path) === "kvane.js";
-}
 
 /**
  * The licence text of every package that a bundled file comes from.

@@ -29,7 +29,15 @@ export interface Column {
 
 /** Characters, not UTF-16 units; nothing that kvane writes is wider than one place. */
 export function widthOf(text: string): number {
-  return [...text].length;
+  let width = text.length;
+  for (let index = 1; index < text.length; index++)
+    if (isUnit(text, index, 0xdc00) && isUnit(text, index - 1, 0xd800)) width -= 1;
+  return width;
+}
+
+/** Whether a UTF-16 unit is the first (0xd800) or the second (0xdc00) of a pair. */
+function isUnit(text: string, index: number, kind: number): boolean {
+  return (text.charCodeAt(index) & 0xfc00) === kind;
 }
 
 function pad(text: string, width: number, align: "left" | "right" = "left"): string {
@@ -54,12 +62,18 @@ export function plainBlanks(text: string): string {
 export function wrap(text: string, width = lineWidth(), hanging = 0): string[] {
   const lines: string[] = [];
   let line = "";
+  let taken = 0;
   for (const word of text.split(" ").flatMap((one) => parts(one, width - hanging))) {
     const room = width - (lines.length > 0 ? hanging : 0);
-    if (line.trim() !== "" && widthOf(line) + 1 + widthOf(word) > room) {
+    const wide = widthOf(word);
+    if (taken + 1 + wide > room && line.trim() !== "") {
       lines.push(line.trimEnd());
       line = word;
-    } else line = line === "" ? word : `${line} ${word}`;
+      taken = wide;
+    } else {
+      taken = line === "" ? wide : taken + 1 + wide;
+      line = line === "" ? word : `${line} ${word}`;
+    }
   }
   lines.push(line);
   return lines.map((one, index) => (index === 0 ? one : " ".repeat(hanging) + one));
