@@ -21,8 +21,10 @@ import {
 import { formsToMatrix } from "./triplets.js";
 import type { BasisChange } from "./types.js";
 
+/** The change that leaves axes and origin as they are. */
 export const identityChange: BasisChange = { matrix: identityMatrix, shift: zeroVector };
 
+/** How it is written. */
 export const identityChangeText = "a,b,c;0,0,0";
 
 /**
