@@ -28,8 +28,9 @@ function ownerOf({ url, functionName }: Profiler.ProfileNode["callFrame"], prefi
   if (functionName === "(garbage collector)") return "garbage collection";
   if (url.startsWith(prefix)) return url.slice(prefix.length).split("/")[0] as string;
   if (/^node:internal\/modules\//.test(url) || functionName === "compileSourceTextModule") return "module loading";
+  // The bench itself is bundled by esbuild into a cache.
   const dependency = /.*\/node_modules\/((?:@[^/]+\/)?[^/]+)\//.exec(url)?.[1];
-  return dependency === undefined || dependency === "esbuild"
+  return dependency === undefined || dependency === ".cache" || dependency === "esbuild"
     ? "node itself"
     : `package ${dependency.replace(/^d3-.*/, "d3")}`;
 }
