@@ -67,7 +67,7 @@ describe("run --out DIR", () => {
 
   test("refuses an existing folder; --force replaces its own files and leaves others", async () => {
     writeFileSync(join(folder, "results/notes.txt"), "mine");
-    const earlier = ["branch-9-modes.csv", "branch-9-configurations.svg", "branch-9-configuration-GM1.1.svg"];
+    const earlier = ["branch-9-modes.csv", "branch-9-configurations.svg", "branch-9-configuration-Gamma1.1.svg"];
     for (const name of earlier) writeFileSync(join(folder, "results", name), "of an earlier run");
     const refused = await run("--out", "results");
     expect(refused.status).toBe(1);

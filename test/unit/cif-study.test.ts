@@ -43,6 +43,17 @@ describe("studies drafted from CIFs", () => {
     expect(await sites(text.replace("# peaks:", "peaks:"))).toEqual(["Fe1"]);
   });
 
+  test("no atom of the CIF is missing from the files that are written, a doubtful one neither", async () => {
+    const cell = "_cell_length_a 7.3\n_cell_length_b 7.3\n_cell_length_c 3.9\n";
+    const angles = "_cell_angle_alpha 90\n_cell_angle_beta 90\n_cell_angle_gamma 90\n";
+    const loop = "loop_\n_atom_site_label\n_atom_site_fract_x\n_atom_site_fract_y\n_atom_site_fract_z\n";
+    const atomLines = "Tb1 0.171 0.671 0.5\nPd1 0 0 0\nGa1 0.38 0.88 0\n";
+    const text = `data_a\n${cell}${angles}_space_group_name_H-M_alt 'P 4/m b m'\n${loop}${atomLines}`;
+    const study = await parseStudy((await draftOf(text)).text, "draft.yaml");
+    expect(study.sites.map(({ label }) => label)).toEqual(["Tb1"]);
+    expect(study.atoms.map(({ label }) => label)).toEqual(["Pd1", "Ga1"]);
+  });
+
   test("special positions are written as fractions, others as the CIF has them", async () => {
     const { text } = await draftOf(cifText("structures", "thirds.cif"));
     const study = await parseStudy(text, "draft.yaml");

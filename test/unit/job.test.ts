@@ -34,6 +34,18 @@ const peaks = [
   .join("");
 
 describe("answer", () => {
+  test("refuses a field that the command does not take, and what is no request", async () => {
+    const typo = { command: "star", group: "62", k: "0,0,0", grup: "1" } as Request;
+    expect((await answer(typo, hostOf({}))).errors).toMatchObject([
+      { code: "invalid-request", where: { path: "grup" }, remedy: "did you mean `group`?" },
+    ]);
+    for (const none of [null, undefined, "star"])
+      expect((await answer(none as unknown as Request, hostOf({}))).errors).toMatchObject([
+        { code: "invalid-request" },
+      ]);
+    expect((await answer({} as Request, hostOf({}))).errors).toMatchObject([{ code: "unknown-command" }]);
+  });
+
   test("runs on plain records and files in memory, and gives plain data", async () => {
     const host = hostOf({ "work/study.yaml": study, "work/lists/peaks.csv": peaks });
     const answered = await answer({ command: "run", study: "work/study.yaml" }, host);

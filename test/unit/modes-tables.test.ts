@@ -1,3 +1,5 @@
+import { smallIrreps } from "@kvane/core/irreps";
+import { parseWaveVector, placeWaveVector } from "@kvane/core/kvectors";
 import {
   constraintTexts,
   type FourierConvention,
@@ -10,7 +12,7 @@ import {
   starModes,
   writtenSite,
 } from "@kvane/core/modes";
-import type { Cell } from "@kvane/core/spacegroups";
+import { type Cell, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import type { Complex } from "../support/complex.js";
 import { modesOf } from "../support/decomposition.js";
@@ -21,6 +23,7 @@ import { kLetters, lettersIn, type Vector, vectorOf } from "../support/validate-
 import { floatReversal, reversedField } from "../support/validate-minus-k.js";
 import { floatModes, rankOf } from "../support/validate-modes.js";
 import { orderParameterProblems } from "../support/validate-order-parameter.js";
+import { site as writtenSiteOf } from "../support/written.js";
 
 type Case = readonly [group: string, k: string, site: string];
 
@@ -52,6 +55,20 @@ const cases: readonly Case[] = [
 ];
 
 describe("tables of what is allowed", () => {
+  // A plane of k is one set of vectors however its letters are chosen; the exponents are in kx, ky, kz.
+  test.each([
+    ["P 1 1 a", "u,v,0", "u+v,u,0"],
+    ["P 1 1 a", "u,v,0", "u-v,v,0"],
+    ["P 2a -2a", "u,v,0", "u+v,u,0"],
+    ["R -3:H", "u,v,w", "-u-v,u,w"],
+  ])("of %s are the same at %s and at %s", (name, plain, mixed) => {
+    const texts = (k: string) =>
+      siteModesAt(name, k)
+        .irreps.flatMap(({ constraint }) => constraint.join())
+        .sort();
+    expect(texts(mixed)).toEqual(texts(plain));
+  });
+
   test("of one atom on a fourfold axis are a wave along the axis and a helix of each hand", () => {
     // (x, y, z) → (−y, x, z) has the eigenvectors (0, 0, 1), (1, i, 0) and (1, −i, 0).
     const texts = (k: string) => modesOf("P 4", k, "0 0 0").irreps.map(({ constraint }) => constraint.join());
@@ -373,3 +390,9 @@ test("moments in a plane across any axis are not forced to be parallel, moments 
   const skew: Cell = { ...plainCell, c: Math.hypot(4, 7), beta: (Math.atan2(7, 4) * 180) / Math.PI };
   expect(found("P m m m (a,b,a+c)", "0 0 1/5", skew)).toEqual(["1 EL", "1 EL", "1 EL"]);
 });
+
+function siteModesAt(name: string, k: string): SiteModes {
+  const group = groupOf(name);
+  const { k: placed } = placeWaveVector(group, parseWaveVector(k));
+  return siteModes(group, smallIrreps(group, placed), siteOrbit(group, writtenSiteOf("A", "0.1 0.2 0.3"), null));
+}

@@ -349,8 +349,8 @@ describe("files and pages", () => {
     expect(page).toContain("19 further configurations not drawn.");
     const names = resultFileNames(changed);
     expect(names).not.toContain("branch-1-configurations.svg");
-    expect(names).not.toContain("branch-1-configuration-GM9.1.svg");
-    expect(names).toContain("branch-1-configuration-GM8.11.svg");
-    expect(names).not.toContain("branch-1-configuration-GM8.12.svg");
+    expect(names).not.toContain("branch-1-configuration-Gamma9.1.svg");
+    expect(names).toContain("branch-1-configuration-Gamma8.11.svg");
+    expect(names).not.toContain("branch-1-configuration-Gamma8.12.svg");
   });
 });

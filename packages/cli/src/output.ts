@@ -74,8 +74,8 @@ export function writeFolder(path: OutputPath, files: readonly ResultFile[], forc
 function isStale(name: string, files: readonly ResultFile[]): boolean {
   const ours =
     /^(assignments|branch-\d+-(modes|configurations|satellites|weights|fitted-moments|pattern))\.csv$/.test(name) ||
-    /^branch-\d+-GM[\w.]*\.mcif$/.test(name) ||
-    /^(peaks|zone|phase-diagram|onset|branch-\d+-(moments-\d+|configurations|configuration-GM[\w.]*|weights|pattern))\.svg$/.test(
+    /^branch-\d+-Gamma[\w.]*\.mcif$/.test(name) ||
+    /^(peaks|zone|phase-diagram|onset|branch-\d+-(moments-\d+|configurations|configuration-Gamma[\w.]*|weights|pattern))\.svg$/.test(
       name,
     );
   return ours && !files.some((file) => file.name === name);

@@ -14,12 +14,13 @@ import type { Work } from "./work.js";
  * the same files give the same answer.
  */
 export async function answer(request: Request, host: JobHost): Promise<Envelope<object>> {
-  const command = String(request.command);
+  if (typeof request !== "object" || request === null) return refusal("", [noRequest(request)]);
+  const command = typeof request.command === "string" ? request.command : "";
   const entry = Object.hasOwn(commandTable, command) ? commandTable[command] : undefined;
   const work: Work = { request, host, study: null, structure: null, assumed: [], warnings: [] };
   const frame = { kvane: version, format: 1, command, input: {} as InputRecord } as const;
   try {
-    checkShape(request);
+    checkShape(request, entry?.takes ?? null);
     Object.assign(frame.input, inputRecord(request, entry));
     if (entry === undefined) return refuse(command);
     const files = await readFiles(request, host);
@@ -33,6 +34,14 @@ export async function answer(request: Request, host: JobHost): Promise<Envelope<
 /** The envelope of a request that could not be understood. */
 export function refusal(command: string, errors: readonly Problem[]): Envelope<object> {
   return { kvane: version, format: 1, command, input: {}, result: null, errors, warnings: [], assumed: [] };
+}
+
+function noRequest(found: unknown): Problem {
+  return problem("invalid-request", "this is no request", {
+    expected: "an object with a `command`",
+    found: found === null ? "null" : typeof found,
+    remedy: "give the fields that stand under `input` of an answer, and the command",
+  });
 }
 
 /** The study and the CIF are read once, before the command, and their readers are loaded only then. */
@@ -60,10 +69,10 @@ function tidyText(text: string): string {
 }
 
 function refuse(command: string): never {
-  fail("unknown-command", `there is no command \`${command}\``, {
+  fail("unknown-command", command === "" ? "no command is named" : `there is no command \`${command}\``, {
     where: { argument: "COMMAND" },
     expected: `one of ${Object.keys(commandTable).join(", ")}`,
-    found: command,
+    found: command || "nothing",
     remedy: "see `kvane --help`",
   });
 }

@@ -1,4 +1,4 @@
-import { KvaneError, type Problem, problem } from "../errors/index.js";
+import { KvaneError, nearMiss, type Problem, problem } from "../errors/index.js";
 import { argumentNames, type Request, type RequestField } from "./request.js";
 
 /** Fields whose values are of a type; the compiler holds the records below against it. */
@@ -26,11 +26,24 @@ const lists: { readonly [field in FieldsOf<readonly string[]>]: true } = {
 };
 
 /**
- * Refuses values of a wrong type, all at once: a request may come from a program that no compiler checked, and a number
+ * Refuses fields that the command does not take (null for a command that there is not) and values of a wrong type, all at once: a request may come from a program that no compiler checked, and a number
  * where a text is due must not pass for something that was not given.
  */
-export function checkShape(request: Request): void {
+export function checkShape(request: Request, takes: readonly RequestField[] | null): void {
   const problems: Problem[] = [];
+  for (const [field, value] of Object.entries(request)) {
+    const given = value !== null && value !== undefined && value !== false;
+    if (!given || takes === null || field === "command" || takes.some((one) => one === field)) continue;
+    const near = nearMiss(field, takes);
+    problems.push(
+      problem("invalid-request", `\`${request.command}\` takes no field \`${field}\``, {
+        where: { path: field },
+        expected: `one of ${takes.join(", ")}`,
+        found: field,
+        remedy: near === null ? "leave it out, or set it to null" : `did you mean \`${near}\`?`,
+      }),
+    );
+  }
   for (const field of Object.keys(argumentNames) as RequestField[]) {
     const value: unknown = request[field] ?? null;
     if (value === null || fits(field, value)) continue;

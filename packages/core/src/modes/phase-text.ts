@@ -1,7 +1,5 @@
 import { usedParameters, type WaveVector } from "../kvectors/index.js";
 import {
-  add,
-  divide,
   exponentialText,
   formatForm,
   formatTurns,
@@ -9,10 +7,12 @@ import {
   isZero,
   type LinearForm,
   multiply,
-  negate,
   type Phase,
   type Rational,
+  rationalField,
+  reducedEchelon,
   reducePhase,
+  subtract,
   type VariableNames,
   vectorOf,
   zero,
@@ -33,27 +33,34 @@ export function phaseText(k: WaveVector, phase: Phase): string {
 }
 
 /**
- * Rewrites a form in the letters of k in its components: each letter is read off the first component that holds it
- * alone, which the parametric form of a kind always has.
+ * Rewrites a form in the letters of k in its components c: Σ x_c c has the coefficients of the form. Components of one
+ * letter alone go first, so that others serve only where they must, as in (u+v, u, 0).
  */
 function inComponents(k: WaveVector, phase: Phase): LinearForm {
+  const letters = usedParameters(k) as readonly (0 | 1 | 2)[];
+  const lettersIn = (axis: number) => letters.filter((letter) => !isZero(coefficientOf(k, axis, letter))).length;
+  const alone = [0, 1, 2].filter((axis) => lettersIn(axis) === 1);
+  const axes = [...alone, ...[0, 1, 2].filter((axis) => lettersIn(axis) > 1)];
+  const equations = letters.map((letter) => [
+    ...axes.map((axis) => coefficientOf(k, axis, letter)),
+    phase.coefficients[letter],
+  ]);
+  const { rows, pivots } = reducedEchelon(equations, rationalField);
+  if (pivots.includes(axes.length)) throw new Error("a phase depends on more than the components of k");
   let constant = phase.constant;
   const coefficients: Rational[] = [zero, zero, zero];
-  for (const letter of usedParameters(k)) {
-    const amount = phase.coefficients[letter as 0 | 1 | 2];
-    if (isZero(amount)) continue;
-    const axis = k.components.findIndex((component) =>
-      component.coefficients.every((entry, index) => (index === letter ? !isZero(entry) : isZero(entry))),
-    );
-    const component = k.components[axis];
-    if (!component) throw new Error("a letter of k stands in no component alone");
-    // letter = (component − constant) / coefficient
-    const factor = divide(amount, component.coefficients[letter as 0 | 1 | 2]);
-    coefficients[axis] = add(coefficients[axis] as Rational, factor);
-    constant = add(constant, negate(multiply(factor, component.constant)));
-  }
+  pivots.forEach((pivot, index) => {
+    const axis = axes[pivot] as number;
+    const factor = (rows[index] as Rational[])[axes.length] as Rational;
+    coefficients[axis] = factor;
+    constant = subtract(constant, multiply(factor, (k.components[axis] as LinearForm).constant));
+  });
   return {
     constant,
     coefficients: vectorOf(coefficients[0] ?? zero, coefficients[1] ?? zero, coefficients[2] ?? zero),
   };
+}
+
+function coefficientOf(k: WaveVector, axis: number, letter: 0 | 1 | 2): Rational {
+  return (k.components[axis] as LinearForm).coefficients[letter];
 }

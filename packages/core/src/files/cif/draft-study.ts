@@ -93,7 +93,7 @@ function siteLines(sites: readonly DraftSite[]): string[] {
   const active = sites.filter((one) => one.active);
   const shared = sites.filter((one) => !one.active && one.because.startsWith(sharedOrbit));
   const asked = sites.filter((one) => !one.active && !shared.includes(one) && momentChance(one.site.ion) !== "none");
-  const others = sites.filter((one) => !one.active && one.site.position !== null && !asked.includes(one));
+  const others = sites.filter((one) => !one.active && one.site.position !== null);
   const placeless = sites.filter((one) => !one.active && one.site.position === null && !asked.includes(one));
   const lines = (list: readonly DraftSite[], mark: string) => list.map((one) => `${mark}  - ${siteText(one)}`);
   return [
@@ -101,7 +101,7 @@ function siteLines(sites: readonly DraftSite[]): string[] {
       ? ["# Sites that mostly carry a moment, by their elements alone: a guess. `spin: 5/2` may be added.", "sites:"]
       : ["# No site is likely to carry a moment, by its element alone. Remove the # of those that do.", "# sites:"]),
     ...lines(active, ""),
-    ...(asked.length > 0 ? ["# Do these carry a moment? Remove the # if so."] : []),
+    ...(asked.length > 0 ? ["# Do these carry a moment? Remove the # if so. They stand below too."] : []),
     ...lines(asked, "#"),
     ...(shared.length > 0
       ? [

@@ -38,7 +38,7 @@ export function magneticCifText(content: MagneticCif, version: CifVersion): stri
 function plainText(text: string, version: CifVersion): string {
   if (version === "2.0") return text;
   return text
-    .replaceAll("Γ", "GM")
+    .replaceAll("Γ", "Gamma")
     .replaceAll("−", "-")
     .replaceAll("–", "-")
     .replaceAll("Å", "A")

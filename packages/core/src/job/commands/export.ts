@@ -71,7 +71,7 @@ function versionOf({ request }: Work): CifVersion {
   });
 }
 
-/** `Γ2.1`, also written `G2.1`, `GM2.1` or `2.1`; the only configuration needs no name. */
+/** `Γ2.1`, also written `Gamma2.1`, `G2.1` or `2.1`; the only configuration needs no name. */
 function chosen({ request }: Work, { configurations }: ConfigurationsRecord) {
   const given = optionOf(request, "configuration");
   const expected = configurations.map(({ id }) => id).join(", ");
@@ -96,5 +96,5 @@ function chosen({ request }: Work, { configurations }: ConfigurationsRecord) {
 }
 
 function plainId(id: string): string {
-  return id.replace(/Γ|GM|G/gi, "").trim();
+  return id.replace(/Γ|Gamma|G/gi, "").trim();
 }

@@ -12,8 +12,10 @@ import { imagesInZone, lineInZone, type ZoneFace, type ZoneShape, zoneShape } fr
 export interface ZonePoint {
   readonly number: number;
   readonly k: string;
-  /** All its places in the closed zone, Å⁻¹. */
+  /** All its places in the closed zone, Å⁻¹, those of ±k as it is written first. */
   readonly places: readonly Vector[];
+  /** How many of the places are those of ±k as it is written: one of them bears the label. */
+  readonly own: number;
 }
 
 export interface ZoneLine {
@@ -27,7 +29,9 @@ export interface ZoneMark {
   readonly name: string;
   readonly k: string;
   readonly followed: boolean;
+  /** As those of a point. */
   readonly places: readonly Vector[];
+  readonly own: number;
   /** The line of its kind through one arm; null for points, planes and the general kind. */
   readonly line: readonly [Vector, Vector] | null;
 }
@@ -59,7 +63,7 @@ export function zoneData(record: RunRecord): ZoneData | null {
     points: kinds.flatMap((kind, index): ZonePoint[] => {
       if (kind.dimensionPM !== 0) return [];
       const { base } = affine(kind);
-      return [{ number: index + 1, k: formOf(kind), places: everywhere(shape, turns, base, place) }];
+      return [{ number: index + 1, k: formOf(kind), ...everywhere(shape, turns, base, place) }];
     }),
     lines: kinds.flatMap((kind, index): ZoneLine[] => {
       if (kind.dimensionPM !== 1) return [];
@@ -95,14 +99,24 @@ function rotations(group: SpaceGroup): ((k: readonly number[]) => number[])[] {
 type Turns = ReturnType<typeof rotations>;
 type Place = (k: readonly number[]) => Vector;
 
-/** Every image of k in the closed zone, once. */
-function everywhere(shape: ZoneShape, turns: Turns, k: readonly number[], place: Place): Vector[] {
+/** Every image of k in the closed zone, once; those of ±k itself, modulo L*, first. */
+function everywhere(
+  shape: ZoneShape,
+  turns: Turns,
+  k: readonly number[],
+  place: Place,
+): Pick<ZonePoint, "places" | "own"> {
   const scale = 1e-5 * size(shape.near[0] as Vector);
   const found: Vector[] = [];
-  for (const turn of turns)
-    for (const image of imagesInZone(shape, place(turn(k))))
+  const add = (vector: readonly number[]) => {
+    for (const image of imagesInZone(shape, place(vector)))
       if (!found.some((other) => size(plus(other, image, -1)) < scale)) found.push(image);
-  return found;
+  };
+  add(k);
+  add(k.map((entry) => -entry));
+  const own = found.length;
+  for (const turn of turns) add(turn(k));
+  return { places: found, own };
 }
 
 function affine({ k }: KindOfK): { readonly base: number[]; readonly directions: readonly number[][] } {
@@ -163,11 +177,11 @@ function zoneMarks(record: RunRecord, shape: ZoneShape, turns: Turns, place: Pla
     .filter(({ reading }) => reading !== "not informative");
   return [...branches, ...others].flatMap(({ k, manifold, name, followed }) => {
     if (k.numeric === null) return [];
-    const places = everywhere(shape, turns, k.numeric, place);
+    const { places, own } = everywhere(shape, turns, k.numeric, place);
     const first = places[0] as Vector;
     const direction = lineDirection(manifold);
     const line = direction === null || !followed ? null : lineInZone(shape, first, place(direction));
-    return [{ name, k: kShort(k), followed, places, line }];
+    return [{ name, k: kShort(k), followed, places, own, line }];
   });
 }
 

@@ -26,7 +26,7 @@ export function zoneDrawing(data: ZoneData, { turn, tip }: ZoneTurn = usualTurn)
   const view = turnedView(turn, tip);
   const screen = onScreen(data, view);
   const labels = labelPlaces();
-  for (const { places } of data.points) labels.block(...screen(nearestToEye(places, view)), 5);
+  for (const point of data.points) labels.block(...screen(placeOfLabel(point, view)), 5);
   for (const { places } of data.marks) for (const place of places) labels.block(...screen(place), 5);
   for (const { to } of data.axes) labels.block(...screen(times(to, axisLabelAt)), 8);
   // What matters most gets its label first, and is drawn last.
@@ -132,13 +132,9 @@ function lineMarks({ number, ends }: ZoneData["lines"][number], screen: Screen, 
 }
 
 /** All places of a special point, the one nearest to the eye with its number. */
-function pointMarks(
-  { number, places }: ZoneData["points"][number],
-  view: View,
-  screen: Screen,
-  labels: LabelPlaces,
-): Marked {
-  const named = nearestToEye(places, view);
+function pointMarks(point: ZoneData["points"][number], view: View, screen: Screen, labels: LabelPlaces): Marked {
+  const { number, places } = point;
+  const named = placeOfLabel(point, view);
   const [x, y] = labels.place(String(number), 12, around(screen(named), String(number), 12, 6));
   return {
     mark: element(
@@ -162,7 +158,7 @@ function candidateMarks(
   labels: LabelPlaces,
 ): Marked {
   const role = seriesRole(index);
-  const named = nearestToEye(mark.places, view);
+  const named = placeOfLabel(mark, view);
   const letters = mark.followed ? 15 : 12;
   const [x, y] = labels.place(mark.name, letters, around(screen(named), mark.name, letters, 11));
   return {
@@ -202,10 +198,14 @@ function around([x, y]: readonly [number, number], text: string, letters: number
   return [...corners(gap), ...corners(2 * gap)];
 }
 
-/** The place that is most to the front; of several the one most to the right, then the lowest. */
-function nearestToEye(places: readonly Vector[], { towards, right, up }: View): Vector {
+/**
+ * Of the places of ±k as it is written, so that the label stands where the list says, the one most to the front; of
+ * several the one most to the right, then the lowest.
+ */
+function placeOfLabel({ places, own }: ZoneData["points"][number] | ZoneData["marks"][number], view: View): Vector {
+  const { towards, right, up } = view;
   const key = (place: Vector) => dot(place, towards) + 1e-3 * dot(place, right) - 1e-4 * dot(place, up);
-  return places.reduce((best, place) => (key(place) > key(best) + 1e-9 ? place : best));
+  return places.slice(0, own).reduce((best, place) => (key(place) > key(best) + 1e-9 ? place : best));
 }
 
 /** A text that stays legible on lines. */

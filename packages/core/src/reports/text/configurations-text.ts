@@ -114,7 +114,7 @@ export function configurationFields(one: ConfigurationRecord): (readonly [string
     ["Cell", `(${group.cellFromParent}) of the parent; to the BNS setting (${group.toBns})`],
     [
       "Domains",
-      `${one.domains.total} in all, ${counted(one.domains.k, "wave vector")}, ${counted(one.domains.orientation, "orientation")} apart from time reversal and translations`,
+      `${one.domains.total} in all; apart from time reversal and translations ${counted(one.domains.orientation, "orientation")}, with ${counted(one.domains.k, "wave vector")} among them`,
     ],
     ["Free parameters", parameterText(one)],
     ...(one.subgroupOf.length > 0 ? [["Subgroup of", one.subgroupOf.join(", ")] as const] : []),
