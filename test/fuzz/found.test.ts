@@ -11,7 +11,7 @@ import {
   readCifStructure,
   readMagneticCif,
 } from "@kvane/core/files";
-import { answer, type Request, version } from "@kvane/core/job";
+import { answer, exitStatusOf, type Request, version } from "@kvane/core/job";
 import { operatorsModuloIntegers, parseGroup } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "../cli/command.js";
@@ -49,6 +49,15 @@ describe("found by fuzzing: files", () => {
       expect(problems).toMatchObject([{ code: "invalid-number", where: { argument: "--tolerance" } }]);
     }
     expect(parsePeakList("d\n3\n2\n", { file: "p.txt", tolerance: 0.05 }).peaks).toHaveLength(2);
+  });
+
+  test("a moment of an atom that is not there is an error, not a warning", async () => {
+    const text = readFileSync(join(root, "test/fixtures/magnetic-cif/doubled-spherical.cif"), "utf8");
+    const broken = text.replace(/^(Fe1)c( [\d.]+ \d+ )/m, "$1lost$2");
+    expect(broken).not.toBe(text);
+    const problems = await problemsOf(async () => readMagneticCif(await parseCif(broken, "m.cif")));
+    expect(problems).toMatchObject([{ code: "cif-missing", where: { file: "m.cif" } }]);
+    expect(problems.map(({ code }) => exitStatusOf(code))).toEqual([2]);
   });
 
   test("a moment beyond all numbers is refused with its place", async () => {

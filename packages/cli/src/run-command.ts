@@ -128,5 +128,6 @@ function refuse(
 ): number {
   if (asJson) surroundings.write(jsonText(answered));
   surroundings.writeError(problemsText(answered.errors, "error", (place) => host?.sourceLine(request, place) ?? null));
-  return exitStatusOf(answered.errors[0]?.code ?? "internal-fault");
+  // A code that is mostly a warning is no success where it stands among the errors.
+  return exitStatusOf(answered.errors[0]?.code ?? "internal-fault") || 2;
 }

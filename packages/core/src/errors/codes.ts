@@ -33,7 +33,7 @@ export const problemCodes = {
   "cif-incomplete": "A data name of a CIF has no value, or the values of a loop do not make whole rows.",
   "cif-duplicate": "A data name, a block or a key stands twice where it may stand once.",
   "cif-block": "A CIF has several blocks with structures, or none of the name that was asked for.",
-  "cif-missing": "A CIF lacks something that is needed: the cell, the symmetry or the sites.",
+  "cif-missing": "A CIF lacks something that is needed: the cell, the symmetry, the sites or the atom of a moment.",
   "cif-value": "A value of a CIF is not of the kind that its data name asks for.",
   "cif-contradiction": "Two statements of a CIF contradict each other; it is said which one was taken.",
   "cif-doubtful":

@@ -15,7 +15,7 @@ import type { Work } from "./work.js";
  */
 export async function answer(request: Request, host: JobHost): Promise<Envelope<object>> {
   if (typeof request !== "object" || request === null) return refusal("", [noRequest(request)]);
-  const command = typeof request.command === "string" ? request.command : "";
+  const command = String(request.command ?? "");
   const entry = Object.hasOwn(commandTable, command) ? commandTable[command] : undefined;
   const work: Work = { request, host, study: null, structure: null, assumed: [], warnings: [] };
   const frame = { kvane: version, format: 1, command, input: {} as InputRecord } as const;

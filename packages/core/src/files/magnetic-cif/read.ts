@@ -190,7 +190,7 @@ const momentNames = [
 ];
 
 function missingSite(label: string, where: Partial<Place>): Problem {
-  return problem("cif-contradiction", `the moment of \`${label}\` belongs to no atom of the block`, {
+  return problem("cif-missing", `the moment of \`${label}\` belongs to no atom of the block`, {
     where,
     expected: "a label of _atom_site_label",
     found: label,
