@@ -35,7 +35,6 @@ function commandLine({ command, input }: Envelope): string {
       words.push(one === true ? optionName(name) : `${optionName(name)} ${quoted(String(one))}`);
   }
   if (options["files"] === true) words.push("--out results");
-  if (command === "report") words.push("--out report.html");
   return words.join(" ");
 }
 
