@@ -179,8 +179,11 @@ export async function demandAnswer(whole: Envelope<object>, text: string): Promi
   const [first] = errors;
   if (first === undefined) return "taken";
   demand(first.code !== "interrupted", () => `not done within ${patience} s of processor time`);
-  const { file, argument } = first.where;
-  demand(file !== null || argument !== null || placeless.has(first.code), () => `no place: ${JSON.stringify(first)}`);
+  const { file, argument, path } = first.where;
+  demand(
+    [file, argument, path].some((one) => one !== null) || placeless.has(first.code),
+    () => `no place: ${JSON.stringify(first)}`,
+  );
   demand([1, 2].includes(exitStatusOf(first.code)), () => `an error with exit status ${exitStatusOf(first.code)}`);
   return "refused";
 }
