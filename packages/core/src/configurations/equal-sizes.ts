@@ -93,11 +93,8 @@ function solve(atoms: readonly Float64Array[], size: number, start: number): boo
       for (let a = 0; a < size; a++) {
         if (gradient[a] === 0) continue;
         right[a] = (right[a] as number) - (gradient[a] as number) * (current.residuals[equation] as number);
-        for (
-          let b = 0;
-          b <= a;
-          b++ // the factor reads the lower half only
-        )
+        // The factor reads the lower half only.
+        for (let b = 0; b <= a; b++)
           normal[a * size + b] = (normal[a * size + b] as number) + (gradient[a] as number) * (gradient[b] as number);
       }
     });
