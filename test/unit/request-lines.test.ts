@@ -1,4 +1,4 @@
-import { answer, answerLine, commandTable, hostOfTexts, requestSchema } from "@kvane/core/job";
+import { answer, answerLine, commandTable, hostOfTexts, type Request, requestSchema } from "@kvane/core/job";
 import { Ajv2020 } from "ajv/dist/2020.js";
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
@@ -128,6 +128,31 @@ describe("a line that is no request", () => {
     expect(text.startsWith('{"id":"a","kvane":')).toBe(true);
   });
 
+  test.each([
+    ["a slip of the pen", { command: "ops", grup: "62" }],
+    ["one that another command takes", { command: "ops", group: "62", k: "0,0,0" }],
+    ["one of a wrong kind", { command: "ops", k: 1 }],
+    ["false where no flag is due", { command: "ops", k: false, grup: false }],
+    ["the command misspelt", { command: "ops", comand: "star" }],
+  ])("an untaken field is refused as in a record: %s", async (_name, fields) => {
+    const inRecord = (await answer(fields as Request, host)).errors;
+    const inLine = (await line(fields)).errors;
+    expect(inRecord.map(({ code, where }) => `${code} ${where.path}`)).toEqual(
+      Object.keys(fields)
+        .filter((field) => field !== "command" && field !== "group")
+        .map((field) => `invalid-request ${field}`),
+    );
+    expect(inRecord[0]?.expected).toBe("one of study, group, structure, block");
+    expect(inLine).toEqual(inRecord.map((one) => ({ ...one, expected: `${one.expected}, texts, id` })));
+  });
+
+  test("says where in the line a field stands, also when its place came with all its parts", async () => {
+    const place = { file: "-", line: 3, column: null, path: null, argument: null };
+    expect((await line({ command: "ops", grup: "62" }, place)).errors).toMatchObject([
+      { where: { ...place, path: "grup" } },
+    ]);
+  });
+
   test("an unknown command is the answer's to refuse, whatever stands beside it", async () => {
     for (const command of ["stra", "batch", "completion", "toString", ""])
       expect((await line({ command, anything: 1 })).errors).toMatchObject([{ code: "unknown-command" }]);
@@ -135,11 +160,12 @@ describe("a line that is no request", () => {
 });
 
 describe("a line that is a request", () => {
-  test("has the answer of the same record, and null is as good as nothing", async () => {
+  test("has the answer of the same record, and null, and false of a flag, is as good as nothing", async () => {
     const request = { command: "star", group: "62", k: "0,1/2,0" };
     const answered = await answer(request, host);
     expect(await line(request)).toEqual(answered);
     expect(await line({ ...request, cell: null, polar: null, id: null, texts: null })).toEqual(answered);
+    expect(await line({ ...request, polar: false })).toEqual(answered);
   });
 
   test("brings its files along: by the exact name, before those of the host", async () => {

@@ -1,7 +1,8 @@
-import { KvaneError, nearMiss, type Place, type Problem, problem } from "../../errors/index.js";
+import { KvaneError, type Place, type Problem, problem } from "../../errors/index.js";
 import { commandTable } from "../commands.js";
-import type { Request, RequestField } from "../request.js";
+import type { Request } from "../request.js";
 import { fieldKind } from "../request-fields.js";
+import { isGiven, untakenField } from "../untaken-field.js";
 import { jsonFault } from "./json-fault.js";
 
 /** What identifies a request to whoever sent it; given back with the answer. */
@@ -17,7 +18,8 @@ export interface ReadLine {
 }
 
 /** Fields of a line that are no fields of a request. */
-const ownFields = ["id", "command", "texts"] as const;
+const besideFields = ["texts", "id"] as const;
+const ownFields = ["command", ...besideFields] as const;
 
 const kindTexts = { text: "a text in quotation marks", flag: "true or false", list: "a list of texts" } as const;
 
@@ -63,10 +65,12 @@ function readObject(fields: Fields, place: Partial<Place>): ReadLine {
   // An unknown command is the answer's to refuse; which fields it takes cannot be said.
   const takes = Object.hasOwn(commandTable, command) ? (commandTable[command]?.takes ?? []) : null;
   for (const [field, value] of Object.entries(fields)) {
-    if (value === null || ownFields.some((one) => one === field) || takes === null) continue;
+    if (!isGiven(field, value) || ownFields.some((one) => one === field) || takes === null) continue;
     const known = takes.find((one) => one === field);
-    if (known === undefined) complainOfField(field, command, takes, complain);
-    else {
+    if (known === undefined) {
+      const untaken = untakenField(command, field, takes, besideFields);
+      problems.push({ ...untaken, where: { ...untaken.where, ...place, path: field } });
+    } else {
       const kind = fieldKind(known);
       if (fits(value, kind)) request[field] = value;
       else {
@@ -117,18 +121,6 @@ function readTexts(value: unknown, complain: Complain): ReadLine["texts"] {
     if (typeof text !== "string")
       complain(`texts.${name}`, `the text of \`${name}\` is none`, kindTexts.text, kindOf(text), remedy);
   return value as ReadLine["texts"];
-}
-
-function complainOfField(field: string, command: string, takes: readonly RequestField[], complain: Complain): void {
-  const near = nearMiss(field, [...takes, ...ownFields]);
-  const remedy = near === null ? "leave it out, or set it to null" : `did you mean \`${near}\`?`;
-  complain(
-    field,
-    `\`${command}\` takes no field \`${field}\``,
-    `one of ${[...takes, "texts", "id"].join(", ")}`,
-    field,
-    remedy,
-  );
 }
 
 function fits(value: unknown, kind: keyof typeof kindTexts): boolean {
