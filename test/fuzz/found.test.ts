@@ -178,6 +178,19 @@ describe("found by fuzzing: commands", () => {
     expect(schemaErrors("modes", whole)).toEqual([]);
   });
 
+  test("atoms on top of each other are refused where the later of them is written", async () => {
+    const cell = "{a: 9, b: 7, c: 8, alpha: 90, beta: 90, gamma: 90}";
+    const sites = "[{label: Fe1, at: [0, 0, 0]}, {label: Co1, at: [0.01, 0, 0]}]";
+    const study = `group: P 1\ncell: ${cell}\nsites: ${sites}\nexchange:\n  - {bond: 1, j: 1}\n`;
+    const host = { readText: async () => study };
+    for (const command of ["exchange", "check"])
+      expect((await answer({ command, study: "s.yaml" }, host)).errors, command).toMatchObject([
+        { code: "invalid-site", where: { file: "s.yaml", path: "sites[1]" }, found: "atoms of Co1 and Fe1" },
+      ]);
+    const own = { command: "exchange", group: "P 1", cell: "9 7 8 90 90 90", sites: ["Fe1 0 0 0", "Co1 0.01 0 0"] };
+    expect((await answer(own, host)).errors).toMatchObject([{ where: { argument: "--site", path: "sites[1]" } }]);
+  });
+
   test("a command that is no text is no command", async () => {
     const whole = await answer({ command: 5 } as unknown as Request, { readText: async () => "" });
     expect(whole).toMatchObject({ command: "5", errors: [{ code: "unknown-command" }] });

@@ -59,7 +59,7 @@ export async function exchangeCommand(work: Work, found: readonly WaveVector[] |
     placed: () => found ?? ks.map((one) => placedK(work, group, one)),
   });
   const orbits = orbitsOf(work, group, sites, cell);
-  const { table, axes } = await bondsFor(group, cell, orbits, { constants, ranges, shells });
+  const { table, axes } = await bondsFor(group, cell, orbits, { sites, constants, ranges, shells });
   const alone = runningAlone(ranges, table, constants);
   rememberRanges(work, table, { axes, alone, constants });
   const all = [...constants, ...alone];

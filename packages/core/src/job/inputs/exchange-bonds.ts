@@ -10,6 +10,7 @@ import {
 import type { Cell, SiteOrbit, SpaceGroup } from "../../spacegroups/index.js";
 import { together } from "../work.js";
 import { axesOf, type GivenRange } from "./exchange-input.js";
+import type { GivenSite } from "./site-input.js";
 
 /** Shells that are listed where nobody says how many. */
 const usualShells = 6;
@@ -20,6 +21,7 @@ export async function bondsFor(
   cell: Cell,
   orbits: readonly SiteOrbit[],
   given: {
+    readonly sites: readonly GivenSite[];
     readonly constants: readonly GivenCoupling[];
     readonly ranges: readonly GivenRange[];
     readonly shells: number | null;
@@ -30,7 +32,7 @@ export async function bondsFor(
   const table = bondTable(group, cell, orbits, {
     shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),
   });
-  refuseCloseAtoms(table);
+  refuseCloseAtoms(table, given.sites);
   const { axes } = await together({
     constants: () => exchangeModel(table, constants),
     axes: () => axesOf(table, ranges),
@@ -41,11 +43,16 @@ export async function bondsFor(
 /** Å. Magnetic atoms nearer than this are one atom written twice, or split positions of one: no bond is so short. */
 const shortestBondAngstrom = 0.5;
 
-function refuseCloseAtoms({ shells }: BondTable): void {
+function refuseCloseAtoms({ shells }: BondTable, sites: readonly GivenSite[]): void {
   const [nearest] = shells;
   if (nearest === undefined || nearest.distance >= shortestBondAngstrom) return;
+  const labels = nearest.classes[0]?.labels ?? [];
+  // The later of two sites is the one that was put on top.
+  const site = sites.findLast((one) => labels.includes(one.site.label));
   fail("invalid-site", `two magnetic atoms are ${nearest.distance.toPrecision(2)} Å apart`, {
+    where: site?.given.where ?? {},
     expected: `at least ${shortestBondAngstrom} Å between magnetic atoms`,
+    found: `atoms of ${[...new Set(labels)].join(" and ")}`,
     remedy: "give an atom once, and of split positions only one",
   });
 }

@@ -3,6 +3,7 @@ import type { WaveVector } from "../../kvectors/index.js";
 import type { ExchangeRecord, OnsetRecord } from "../../reports/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../../spacegroups/index.js";
 import { studyText } from "../inputs/given.js";
+import { sitesIfGiven } from "../inputs/site-input.js";
 import type { Work } from "../work.js";
 
 /** What the temperature scan of the study says, or null where it names none; loaded only where it does. */
@@ -36,7 +37,8 @@ export async function checkExchange(
     import("../inputs/exchange-bonds.js"),
     import("../inputs/exchange-input.js"),
   ]);
-  await bondsFor(group, cell, orbits, { constants: constantsOf(work), ranges: rangesOf(work), shells: null });
+  const [sites, constants, ranges] = [await sitesIfGiven(work), constantsOf(work), rangesOf(work)];
+  await bondsFor(group, cell, orbits, { sites, constants, ranges, shells: null });
 }
 
 /** What the exchange constants of the study prefer, and the energies at the k that the job follows; null without any. */
