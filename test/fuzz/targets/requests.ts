@@ -9,6 +9,7 @@ import {
   reportText,
   resultFolder,
 } from "@kvane/core/reports";
+import { fieldKind } from "#core/job/request-fields.js";
 import { schemaErrors } from "../../cli/schemas.js";
 import type { Random } from "../../support/random.js";
 import { demand, demandProblems } from "../properties.js";
@@ -38,62 +39,71 @@ const wordKinds: { readonly [field in RequestField]?: WordKind } = {
   child: "basis change",
 };
 
-const fields = Object.keys(argumentNames) as RequestField[];
-const flags = new Set<RequestField>([
-  "syntax",
-  "full",
-  "polar",
-  "star",
-  "weighIntensities",
-  "includesNuclear",
-  "files",
-]);
-const lists = new Set<RequestField>([
-  "sites",
-  "exclude",
-  "impurities",
-  "together",
-  "onSites",
-  "constants",
-  "vary",
-  "formFactors",
-]);
+/** Files that a field may name, so that mostly one is read that there is. */
+const filesOf: { readonly [field in RequestField]?: readonly string[] } = {
+  study: [fileNames.study, fileNames.structure],
+  structure: [fileNames.structure],
+  peaks: [fileNames.peaks],
+  nuclear: [fileNames.intensities],
+  intensities: [fileNames.intensities],
+  scan: [fileNames.scan],
+  moments: [fileNames.moments, fileNames["moment list"]],
+  read: [fileNames.components],
+};
+
+const allFields = Object.keys(argumentNames) as RequestField[];
 const texts = goodRequests.flatMap((request) => Object.values(request).flat()).filter((one) => typeof one === "string");
 
 /** A value for a field: of its kind mostly, or of any. */
 function valueFor(field: RequestField, random: Random): string | boolean | readonly string[] | null {
   if (random.below(12) === 0) return null;
-  if (flags.has(field)) return random.below(2) === 0;
-  if (lists.has(field)) return Array.from({ length: random.below(4) }, () => textFor(field, random));
+  const kind = fieldKind(field);
+  if (kind === "flag") return random.below(2) === 0;
+  if (kind === "list") return Array.from({ length: random.below(4) }, () => textFor(field, random));
   return textFor(field, random);
 }
 
 function textFor(field: RequestField, random: Random): string {
-  const kind = wordKinds[field];
-  const choice = random.below(8);
-  if (kind !== undefined && choice < 6) return word(kind, random).slice(0, longestWord);
-  if (choice === 0) return random.pick(Object.values(fileNames));
-  if (choice < 4) return random.pick(extremeNumbers);
-  if (choice < 5) return random.pick(marks);
+  const choice = random.below(12);
+  const files = filesOf[field];
+  if (files !== undefined && choice > 0) return random.pick(files);
   const good = goodRequests.flatMap((one) => one[field] ?? []).filter((one) => typeof one === "string");
-  const own = good.length > 0 && choice < 7 ? random.pick(good) : random.pick(texts);
+  // What another good request says is as good here, and often at odds with the rest.
+  if (good.length > 0 && choice < 4) return random.pick(good);
+  const kind = wordKinds[field];
+  if (kind !== undefined && choice < 10) return word(kind, random).slice(0, longestWord);
+  if (choice < 7) return random.pick(extremeNumbers);
+  if (choice < 8) return random.pick(marks);
+  const own = good.length > 0 && choice < 11 ? random.pick(good) : random.pick(texts);
   return (random.below(2) === 0 ? own : damaged(own, random, texts)).slice(0, longestWord);
 }
 
 /** Characters. What is longer is for the readers of single words, which have loops of their own. */
 const longestWord = 2_000;
 
-/** A good request with none to three fields spoilt, added or left out. */
+/**
+ * A good request with none to three of the fields spoilt, added or left out that its command takes. What would be refused
+ * before any work is done comes seldom: one in twelve has a field that the command does not take.
+ */
 export function spoiltRequest(random: Random): Request {
   const request: { [field: string]: unknown } = { ...random.pick(goodRequests) };
-  const takes = commandTable[request["command"] as string]?.takes ?? fields;
+  const takes = commandTable[request["command"] as string]?.takes ?? [];
   for (let times = random.below(4); times > 0; times -= 1) {
-    const field = random.pick(random.below(8) === 0 ? fields : takes);
-    if (random.below(4) === 0) delete request[field];
+    // A field that is not there yet is often at odds with those that are: a block without a CIF, two kinds of bonds.
+    const held = takes.filter((field) => request[field] !== undefined);
+    const field = random.pick(held.length > 0 && random.below(3) > 0 ? held : takes);
+    if (random.below(6) === 0) delete request[field];
     else if (random.below(20) === 0) request[field] = random.pick([0, Number.NaN, true, [], {}, [1], [[]], ""]);
     else request[field] = valueFor(field, random);
   }
+  if (random.below(12) === 0) addUntaken(request, takes, random);
   return request as unknown as Request;
+}
+
+/** Adds a field of other commands, or one that no command takes. */
+function addUntaken(request: { [field: string]: unknown }, takes: readonly RequestField[], random: Random): void {
+  const field = random.pick(allFields.filter((one) => !takes.includes(one)));
+  request[random.below(4) === 0 ? damaged(field, random, allFields) : field] = valueFor(field, random);
 }
 
 const kindsOfFiles: { readonly [name in keyof typeof fileNames]: FileKind } = {
@@ -122,10 +132,18 @@ export function spoiltFiles(random: Random): RequestInput["files"] {
   return files;
 }
 
-/** The study of the example rather than one that names files which nobody has; any other good file of the kind. */
+/** Where the file of the example stands in the corpus. */
+const ofExample: { readonly [kind in FileKind]?: number } = { study: -1, peaks: -1, intensities: 0 };
+
+/**
+ * The study of the example rather than one that names files which nobody has, mostly with its own lists, whose units it
+ * names; any other good file of the kind.
+ */
 function goodText(kind: FileKind, random: Random): string {
   const good = corpus[kind];
-  return kind === "study" ? (good.at(-1) as string) : random.pick(good);
+  const example = ofExample[kind];
+  const fits = example !== undefined && (kind === "study" || random.below(4) > 0);
+  return fits ? (good.at(example) as string) : random.pick(good);
 }
 
 /**
@@ -202,8 +220,8 @@ export const requestTarget = target<RequestInput>({
     const whole = await answered(input);
     const outcome = await demandAnswer(whole, jsonText(whole));
     if (outcome === "refused") return outcome;
-    demand(reportText(whole, { width: null }).trim() !== "", () => "an empty report");
-    reportCsv(whole);
+    demand((await reportText(whole, { width: null })).trim() !== "", () => "an empty report");
+    await reportCsv(whole);
     await reportSvg(whole);
     if (input.request.command === "run") await resultFolder(whole as Envelope<RunRecord>);
     return outcome;
