@@ -1,14 +1,20 @@
 import { spawnSync } from "node:child_process";
 import { createHash } from "node:crypto";
 import { join } from "node:path";
-import { resultFolder } from "@kvane/core/reports";
+import { resultFolder, type WeighDataRecord, type WeighedRecord } from "@kvane/core/reports";
 import { describe, expect, test } from "vitest";
 import { pageNotices } from "#core/reports/generated/page-script.js";
 import { htmlReport, markdownReport } from "#core/reports/made-reports.js";
+import { intensityChart } from "#core/reports/svg/intensity-chart.js";
 import { escapeMarkup } from "#core/reports/svg/mark-up.js";
 import { palette } from "#core/reports/svg/palette.js";
 import { peakChart, wholeView } from "#core/reports/svg/peak-chart.js";
-import { peakChartData } from "#core/reports/svg/peak-chart-data.js";
+import {
+  type ChartCandidate,
+  type ChartPeak,
+  type PeakChartData,
+  peakChartData,
+} from "#core/reports/svg/peak-chart-data.js";
 import { hostile, listed, listedFiles, rockSalt, runAnswer } from "../support/report-answers.js";
 import { root } from "../tools/paths.mjs";
 
@@ -79,6 +85,12 @@ describe("the page", async () => {
     expect(markdown.split("\n")[0]).toBe("# \\<img src=x onerror=alert(1)\\>\\|\\*\\_\\`\\</script\\>\\<!--\\&amp;\"'");
   });
 
+  test("says of a view to be turned that it needs scripts, and both views say where arrows are", () => {
+    expect(page).toContain("that can be turned: drawn when it comes into view, for which the page needs scripts;");
+    expect(page).toContain("Arrows begin at their atoms");
+    expect(page).toContain("Here arrows have their atoms in the middle, in the drawings below they begin at them.");
+  });
+
   test("has the licence texts of what its script is made of", () => {
     for (const name of ["ogl", "d3-scale", "d3-shape", "d3-array"])
       expect(
@@ -143,10 +155,48 @@ describe("the peak chart", async () => {
     });
   });
 
+  test("says how many peaks have no number for lack of room, and where all are", () => {
+    const [peak, candidate] = [data.peaks[0] as ChartPeak, data.candidates[0] as ChartCandidate];
+    const crowded: PeakChartData = {
+      ...data,
+      from: 0,
+      to: 40,
+      peaks: Array.from({ length: 40 }, (_, index) => ({
+        ...peak,
+        number: index + 1,
+        x: index < 39 ? index / 100 : 39,
+      })),
+      candidates: [{ ...candidate, ticks: [], assigned: Array.from({ length: 40 }, () => null) }],
+    };
+    const whole = peakChart(crowded, wholeView(crowded));
+    // The first of the crowd and the one apart.
+    expect(whole.marks).toContain(">38 of 40 numbers left out; the table has all<");
+    const closer = peakChart(crowded, { ...wholeView(crowded), to: 0.391 });
+    expect(closer.marks.match(/ font-size="11"/g)).toHaveLength(39);
+    expect(closer.marks).not.toContain("left out");
+    // Nothing below jumps when somebody looks closer.
+    expect(closer.height).toBe(whole.height);
+    expect(peakChart(data, wholeView(data)).marks).not.toContain("left out");
+  });
+
   test("a part of it shows the peaks of that part", () => {
     const { marks } = peakChart(data, { ...wholeView(data), from: 4, to: 7 });
     expect(count(marks, "peak")).toBe(2);
   });
+});
+
+test.each([
+  [10, false],
+  [300, true],
+])("of %d intensities those without a name are counted below: %s", (count, crowded) => {
+  const one = { label: "peak 1", q: 1, twoThetaDeg: null, hkl: null, lines: [], observed: 3, su: 1 };
+  const list = Array.from({ length: count }, (_, index) => ({ ...one, label: `peak ${index + 1}` }));
+  const data = { sample: "powder", list } as unknown as WeighDataRecord;
+  const shown = [{ id: "1.1", calculated: list.map(() => 3) }] as unknown as WeighedRecord[];
+  const { marks } = intensityChart(data, shown);
+  const named = marks.match(/class="fill-faint" fill="[^"]*">\d+</g)?.length ?? 0;
+  const note = ` (${count - named} of ${count} names left out; the table has all)`;
+  expect(marks).toContain(`>peak${crowded ? note : ""}<`);
 });
 
 describe("the result folder", () => {

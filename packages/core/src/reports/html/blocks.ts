@@ -56,7 +56,13 @@ function blockHtml(block: Block, id: string): string {
           "data-live": block.view.kind,
           "data-data": block.view.data,
         },
-        element("p", { class: "hint" }, text(`${block.label}: only with a script; the drawings below show the same.`)),
+        element(
+          "p",
+          { class: "hint" },
+          text(
+            `${block.label}: drawn when it comes into view, for which the page needs scripts; the drawings below show the same.`,
+          ),
+        ),
       );
     case "verbatim":
       return element("pre", { tabindex: "0" }, text(block.text));

@@ -90,7 +90,8 @@ function build(holder: HTMLElement, source: PictureSource): void {
   draw();
 }
 
-const hint = "Turn it by dragging, or with the arrow keys when it has the focus; + and − change its size.";
+const hint =
+  "Turn it by dragging, or with the arrow keys when it has the focus; + and − change its size. Here arrows have their atoms in the middle, in the drawings below they begin at them.";
 
 /** What can be done with the view. */
 interface Actions {

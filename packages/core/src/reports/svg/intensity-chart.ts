@@ -34,6 +34,8 @@ function panelMarks({ list, sample }: WeighDataRecord, one: WeighedRecord): stri
   const bar = Math.min(22, 0.7 * step);
   const base = y(0);
   const middle = (index: number): number => left + (index + 0.5) * step;
+  const named = namesWithRoom(list, middle);
+  const leftOut = list.length - named.length;
   const marks = [
     ...y.ticks(3).map((tick) =>
       element(
@@ -63,7 +65,13 @@ function panelMarks({ list, sample }: WeighDataRecord, one: WeighedRecord): stri
     ...list.map(({ observed, su }, index) =>
       observedMark(middle(index), y(observed), y(observed + su), y(observed - su)),
     ),
-    ...nameMarks(list, middle, base + 16),
+    ...named.map(({ name, x }) =>
+      element(
+        "text",
+        { x, y: base + 16, "text-anchor": "middle", "font-size": 11, ...paint({ fill: "faint" }) },
+        escapeMarkup(name),
+      ),
+    ),
     element(
       "text",
       { x: left, y: 14, ...paint({ fill: "ink" }) },
@@ -72,7 +80,7 @@ function panelMarks({ list, sample }: WeighDataRecord, one: WeighedRecord): stri
     element(
       "text",
       { x: (left + width - right) / 2, y: base + 34, "text-anchor": "middle", ...paint({ fill: "ink" }) },
-      sample === "powder" ? "peak" : "h k l",
+      `${sample === "powder" ? "peak" : "h k l"}${leftOut === 0 ? "" : ` (${leftOut} of ${list.length} names left out; the table has all)`}`,
     ),
   ];
   return marks.join("");
@@ -91,20 +99,18 @@ function observedMark(x: number, at: number, upper: number, lower: number): stri
   );
 }
 
-/** Short names below, those that have room. */
-function nameMarks(list: WeighDataRecord["list"], middle: (index: number) => number, y: number): string[] {
+/** Short names to stand below, those that have room. */
+function namesWithRoom(
+  list: WeighDataRecord["list"],
+  middle: (index: number) => number,
+): { readonly name: string; readonly x: number }[] {
   let end = Number.NEGATIVE_INFINITY;
   return list.flatMap(({ label, hkl }, index) => {
     const name = hkl === null ? label.replace(/^peak /, "") : label;
     const half = textWidth(name, 11) / 2;
-    if (middle(index) - half < end + 4) return [];
-    end = middle(index) + half;
-    return [
-      element(
-        "text",
-        { x: middle(index), y, "text-anchor": "middle", "font-size": 11, ...paint({ fill: "faint" }) },
-        escapeMarkup(name),
-      ),
-    ];
+    const x = middle(index);
+    if (x - half < end + 4) return [];
+    end = x + half;
+    return [{ name, x }];
   });
 }

@@ -24,6 +24,7 @@ const observedHeight = 104;
 const laneHeight = 32;
 const residualHeight = 112;
 const axisHeight = 44;
+const leftOutHeight = 18;
 /** Standard uncertainties: the limit of a match. */
 const limit = 3;
 
@@ -34,28 +35,39 @@ export function wholeView(data: PeakChartData, width = 940): PeakChartView {
 
 /** Observed positions, one lane of predicted lines for each candidate, and the residuals of one of them. */
 export function peakChart(data: PeakChartData, view: PeakChartView): Figure {
-  const x = scaleLinear([view.from, view.to], [left, view.width - right]);
+  const x = positionScale(view);
   const legend = legendMarks(data, view);
   const lanesTop = legend.height + observedHeight + 10;
   const residualTop = lanesTop + data.candidates.length * laneHeight + 22;
   const candidate = data.candidates[view.candidate];
   const bottom = candidate === undefined ? lanesTop + 4 : residualTop + residualHeight;
+  const shown = shownPeaks(data, view);
+  const numbered = numberedPeaks(data, shown, view);
+  const leftOut = shown.length - numbered.size;
+  // The height must not change while somebody looks closer or points at a peak.
+  const whole = shownPeaks(data, wholeView(data));
+  const someLeftOut = numberedPeaks(data, whole, wholeView(data, view.width)).size < whole.length;
   const marks = [
     legend.marks,
     gridMarks(x, legend.height, bottom, data.label, view),
-    observedMarks(data, view, x, legend.height),
+    observedMarks(data, { shown, numbered }, view, x, legend.height),
     ...data.candidates.map((one, index) => laneMarks(one, index, view, x, lanesTop + index * laneHeight)),
     candidate ? residualMarks(data.peaks, candidate, view, x, residualTop) : "",
+    leftOut === 0 ? "" : leftOutMark(leftOut, shown.length, view.width, bottom + axisHeight + 12),
   ];
   return {
     width: view.width,
-    height: bottom + axisHeight,
+    height: bottom + axisHeight + (someLeftOut ? leftOutHeight : 0),
     title: "Peaks and predicted satellites",
     description: `${data.peaks.length} observed positions above; below them the satellites of ${data.candidates.length} candidates for k${
       candidate ? `, and observed less computed for candidate ${candidate.name}` : ""
     }. The same numbers stand in the tables.`,
     marks: marks.join(""),
   };
+}
+
+function positionScale({ from, to, width }: PeakChartView): Scale {
+  return scaleLinear([from, to], [left, width - right]);
 }
 
 function visible(x: number, view: PeakChartView): boolean {
@@ -92,19 +104,46 @@ function gridMarks(x: Scale, top: number, bottom: number, label: string, view: P
   );
 }
 
-function observedMarks(data: PeakChartData, view: PeakChartView, x: Scale, top: number): string {
+/** From left to right. */
+function shownPeaks({ peaks }: PeakChartData, view: PeakChartView): number[] {
+  const place = (index: number) => (peaks[index] as ChartPeak).x;
+  return [...peaks.keys()].filter((index) => visible(place(index), view)).sort((a, b) => place(a) - place(b));
+}
+
+/** Those whose numbers have room, and the one that is pointed at. */
+function numberedPeaks({ peaks }: PeakChartData, shown: readonly number[], view: PeakChartView): ReadonlySet<number> {
+  const x = positionScale(view);
+  const numbered = new Set<number>();
+  let end = Number.NEGATIVE_INFINITY;
+  for (const index of shown) {
+    const peak = peaks[index] as ChartPeak;
+    if (x(peak.x) - end < textWidth(String(peak.number), 11) + 5 && view.peak !== index) continue;
+    end = x(peak.x);
+    numbered.add(index);
+  }
+  return numbered;
+}
+
+function leftOutMark(leftOut: number, shown: number, width: number, y: number): string {
+  return element(
+    "text",
+    { x: width - right, y, "text-anchor": "end", "font-size": 11, ...paint({ fill: "faint" }) },
+    `${leftOut} of ${shown} numbers left out; the table has all`,
+  );
+}
+
+function observedMarks(
+  data: PeakChartData,
+  { shown, numbered }: { readonly shown: readonly number[]; readonly numbered: ReadonlySet<number> },
+  view: PeakChartView,
+  x: Scale,
+  top: number,
+): string {
   const base = top + observedHeight;
   const assigned = data.candidates[view.candidate]?.assigned;
-  const shown = data.peaks.map((peak, index) => ({ peak, index })).filter(({ peak }) => visible(peak.x, view));
-  let labelled = Number.NEGATIVE_INFINITY;
-  const peaks = [...shown]
-    .sort((a, b) => a.peak.x - b.peak.x)
-    .map(({ peak, index }) => {
-      const at = x(peak.x);
-      const numbered = at - labelled >= textWidth(String(peak.number), 11) + 5 || view.peak === index;
-      if (numbered) labelled = at;
-      return observedPeak(peak, index, assigned?.[index] !== null, numbered, view, x, base);
-    });
+  const peaks = shown.map((index) =>
+    observedPeak(data.peaks[index] as ChartPeak, index, assigned?.[index] !== null, numbered.has(index), view, x, base),
+  );
   return element(
     "g",
     { class: "observed" },
