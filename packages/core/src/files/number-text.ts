@@ -24,5 +24,6 @@ export function readNumber(text: string): NumberWithUncertainty | null {
   if (!found) return null;
   const [, value = "", digits = "", counted] = found;
   const decimals = digits.includes(".") ? digits.length - digits.indexOf(".") - 1 : 0;
-  return { value: Number(value), uncertainty: Number(`${counted}e-${decimals}`) };
+  const read = { value: Number(value), uncertainty: Number(`${counted}e-${decimals}`) };
+  return Number.isFinite(read.value) && Number.isFinite(read.uncertainty) ? read : null;
 }

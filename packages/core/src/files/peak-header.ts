@@ -1,3 +1,4 @@
+import { isTooLarge } from "../numbers/index.js";
 import type { PeakKind } from "../search/index.js";
 import { readNumber } from "./number-text.js";
 import { plainName, readPeakKind } from "./peak-kind.js";
@@ -48,7 +49,9 @@ export function isHeader(row: Row): boolean {
   if (readNumber(row.fields[0]?.text ?? "")) return false;
   // `3,10;0,01` is a row with decimal commas, which are refused as such.
   if (decimalCommaOf(row) !== null && !hasColumnName(row)) return false;
-  return hasColumnName(row) || !row.fields.some((field) => readNumber(field.text) || noNumber.test(field.text));
+  return (
+    hasColumnName(row) || !row.fields.some(({ text }) => readNumber(text) || noNumber.test(text) || isTooLarge(text))
+  );
 }
 
 /** What programs print in the place of a number that they could not work out. */

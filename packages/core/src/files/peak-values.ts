@@ -1,4 +1,4 @@
-import { parseRational, toNumber } from "../numbers/index.js";
+import { isTooLarge, parseRational, toNumber, whyNoNumber } from "../numbers/index.js";
 import { readNumber } from "./number-text.js";
 import { type Column, type ColumnRole, hasColumnName } from "./peak-header.js";
 import { note, type ProblemList } from "./problem-list.js";
@@ -71,7 +71,8 @@ function readCell(row: Row, field: Field, role: ColumnRole, headed: boolean, pro
   const index = role === "h" || role === "k" || role === "l";
   const number = readNumber(field.text) ?? (index ? readFraction(field.text) : null);
   if (number) return { value: number.value, uncertainty: number.uncertainty, field };
-  note(problems, "invalid-peak", `\`${field.text}\` is no number for the ${role}`, {
+  const message = isTooLarge(field.text) ? whyNoNumber(field.text) : `is no number for the ${role}`;
+  note(problems, "invalid-peak", `\`${field.text}\` ${message}`, {
     where: { line: row.line, column: field.column },
     expected: index ? "a number or a fraction such as 1/2" : "a number such as 24.31",
     found: field.text,

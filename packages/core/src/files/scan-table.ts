@@ -1,3 +1,4 @@
+import { isTooLarge, whyNoNumber } from "../numbers/index.js";
 import type { ScanSeries } from "../onsets/index.js";
 import { readNumber } from "./number-text.js";
 import { noteDecimalComma } from "./peak-values.js";
@@ -138,22 +139,19 @@ function readRow(row: Row, columns: readonly ScanColumn[], problems: ProblemList
       (role === "temperature" && !(number.value > 0)) ||
       (role === "uncertainty" && !(number.value > 0) && !isUnused({ of }, columns));
     if (!wrong) return number;
-    note(
-      problems,
-      "invalid-scan",
-      `\`${field?.text ?? ""}\` is no ${role === "uncertainty" ? "uncertainty" : role === "temperature" ? "temperature" : `number for ${name}`}`,
-      {
-        where: { line: row.line, column: field?.column ?? 1 },
-        expected:
-          role === "temperature"
-            ? "a temperature in K, above 0"
-            : role === "uncertainty"
-              ? "a number above 0"
-              : "a number such as 132.5 or 132(4)",
-        found: field?.text ?? "nothing",
-        remedy: "correct the value; what is no data goes behind #, and - stands for a value that is not there",
-      },
-    );
+    const text = field?.text ?? "";
+    const wanted = role === "uncertainty" || role === "temperature" ? role : `number for ${name}`;
+    note(problems, "invalid-scan", `\`${text}\` ${isTooLarge(text) ? whyNoNumber(text) : `is no ${wanted}`}`, {
+      where: { line: row.line, column: field?.column ?? 1 },
+      expected:
+        role === "temperature"
+          ? "a temperature in K, above 0"
+          : role === "uncertainty"
+            ? "a number above 0"
+            : "a number such as 132.5 or 132(4)",
+      found: field?.text ?? "nothing",
+      remedy: "correct the value; what is no data goes behind #, and - stands for a value that is not there",
+    });
     return null;
   });
 }

@@ -1,5 +1,5 @@
 import { KvaneError, type ProblemCode } from "../errors/index.js";
-import { parseRational, type Rational } from "../numbers/index.js";
+import { isTooLarge, parseRational, type Rational, whyNoNumber } from "../numbers/index.js";
 import { readNumber } from "./number-text.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { where } from "./yaml-convert.js";
@@ -115,7 +115,9 @@ export function noteNumber(
       ? `write it without the uncertainty in brackets: ${node.text.replace(/\(.*/, "")}`
       : /^[+-]?\d+,\d+$/.test(node.text)
         ? `write a decimal point: ${node.text.replace(",", ".")}`
-        : "correct the number";
+        : isTooLarge(node.text)
+          ? `correct the number: it ${whyNoNumber(node.text)}`
+          : "correct the number";
   note(problems, code, `\`${node.place.path}\` cannot be ${describe(node)}`, {
     where: where(node.place),
     expected,

@@ -17,3 +17,4 @@ export * from "./matrices.js";
 export * from "./phased-numbers.js";
 export * from "./rationals.js";
 export * from "./tolerances.js";
+export * from "./too-large.js";

@@ -1,4 +1,5 @@
 import { fail, KvaneError, type Place, type Problem, problem } from "../errors/index.js";
+import { whyNoNumber } from "../numbers/index.js";
 import type { Cell } from "./types.js";
 
 const lengthNames = ["a", "b", "c"] as const;
@@ -18,7 +19,7 @@ export function parseCell(text: string): Cell {
   const problems = words
     .filter(([word]) => !Number.isFinite(Number(word)))
     .map((word) =>
-      problem("invalid-number", `\`${word[0]}\` is no number`, {
+      problem("invalid-number", `\`${word[0]}\` ${whyNoNumber(word[0])}`, {
         where: { column: word.index + 1 },
         expected: "a length in Å or an angle in degrees",
         found: word[0],

@@ -1,4 +1,5 @@
 import { type Assumption, fail, KvaneError, type Place, type Problem, problem } from "../../errors/index.js";
+import { whyNoNumber } from "../../numbers/index.js";
 import { type Cell, checkCell } from "../../spacegroups/index.js";
 import { type BlockReader, locate } from "./block-reader.js";
 import type { CifValue } from "./document.js";
@@ -113,7 +114,7 @@ export function notANumber(dataName: string, value: CifValue, where: Partial<Pla
         : /^-?\d+\/\d+$/.test(text)
           ? "write the fraction as a decimal; CIF has no fractions"
           : "correct the number";
-  return problem("cif-value", `${dataName} is no number`, {
+  return problem("cif-value", `${dataName} ${whyNoNumber(text)}`, {
     where,
     expected: "a number such as 0.25 or 5.4310(2)",
     found: value.raw.slice(0, 60),

@@ -1,5 +1,6 @@
 import { fail, KvaneError, type Place, type Problem, problem } from "../../errors/index.js";
 import { type MagneticOperator, parseMagneticTriplet } from "../../magneticgroups/index.js";
+import { whyNoNumber } from "../../numbers/index.js";
 import { type BasisChange, type Cell, parseBasisChange } from "../../spacegroups/index.js";
 import { type BlockReader, firstText, locate, openBlock, rowsOf, valuesOf } from "../cif/block-reader.js";
 import { readCell } from "../cif/cell.js";
@@ -202,7 +203,7 @@ function number(value: CifValue | null, name: string, where: Partial<Place>, pro
   const read = numberOf(value);
   if (read !== null) return read.value;
   problems.push(
-    problem("cif-value", `${name} is no number`, {
+    problem("cif-value", `${name} ${whyNoNumber(value?.raw ?? "")}`, {
       where,
       expected: "a number",
       found: value === null ? "nothing" : value.raw.slice(0, 60),
