@@ -87,6 +87,19 @@ describe.skipIf(process.platform === "win32")("docs/embedding.md", () => {
   });
 });
 
+test("the example of worker threads says what it wants, and what is wrong, in a line", () => {
+  const program = join(root, "docs/examples/embedding/worker-threads.mjs");
+  const run = (...words: string[]) => {
+    const { stderr, status } = spawnSync(process.execPath, [program, ...words], { encoding: "utf8" });
+    return { stderr, status };
+  };
+  expect(run()).toEqual({ stderr: "usage: node worker-threads.mjs STUDY.yaml\n", status: 2 });
+  const folder = scratchFolder({ "empty.yaml": "title: none\n" });
+  const { stderr, status } = run(join(folder, "empty.yaml"));
+  expect(status).toBe(1);
+  expect(stderr).toMatch(/^the study has no .*\n$/);
+});
+
 // Dimensions by the sum rule Σd² = order of the little co-group: 8 of m m m at Γ, 8 with two irreps of 2 on the face
 // (Bradley & Cracknell, 1972), 12 of -6 m 2 at K.
 test.skipIf(!has("python3"))(

@@ -28,6 +28,7 @@ function ask(worker, id, request, texts, onProgress = () => {}) {
 }
 
 async function main(path) {
+  if (path === undefined) return stop(2, "usage: node worker-threads.mjs STUDY.yaml");
   const texts = await textsBeside(path);
   const study = basename(path);
   const worker = new Worker(fileURLToPath(import.meta.url));
@@ -36,7 +37,10 @@ async function main(path) {
   const whole = await ask(worker, 1, { command: "run", study }, texts, () => {
     steps += 1;
   });
-  if (whole.errors.length > 0) throw new Error(whole.errors[0].message);
+  if (whole.errors.length > 0) {
+    await worker.terminate();
+    return stop(1, whole.errors[0].message);
+  }
   const best = whole.result.search.candidates[0].k.components.join(",");
   console.log(`k = (${best}), told of its progress ${steps > 0 ? "on the way" : "never"}`);
 
@@ -45,6 +49,11 @@ async function main(path) {
   });
   console.log(`the second run was cancelled: ${cancelled.errors[0].code}`);
   await worker.terminate();
+}
+
+function stop(status, message) {
+  console.error(message);
+  process.exitCode = status;
 }
 
 /** The files in the folder of a study, by the names that the study gives them. */
