@@ -10,6 +10,7 @@ import { dirname, join, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
 import { packParts } from "./pack-parts.mjs";
+import { pastTheDoors } from "./past-the-doors.mjs";
 
 const here = dirname(fileURLToPath(import.meta.url));
 const { version } = JSON.parse(readFileSync(join(here, "package.json"), "utf8"));
@@ -18,7 +19,10 @@ const bin = join(here, "bin");
 mkdirSync(bin, { recursive: true });
 
 /** The commands whose start is to take no longer than it must: what they load is in kvane.js from the beginning. */
-const small = ["ops", "star", "irreps", "modes"].map((name) => `../core/src/job/commands/${name}.ts`);
+const small = ["ops", "star", "irreps", "modes"].flatMap((name) => [
+  `../core/src/job/commands/${name}.ts`,
+  `../core/src/reports/text/${name}-text.ts`,
+]);
 
 /** @satisfies {import("esbuild").BuildOptions} */
 const options = {
@@ -51,6 +55,7 @@ const { metafile, outputFiles } = await build({
     // Its modules and not its CommonJS, whose names a part of its own would not carry.
     yaml: join(here, "../core/node_modules/yaml/browser/index.js"),
   },
+  plugins: [pastTheDoors(join(here, "../core/src"))],
   metafile: true,
 });
 const written = new Set(["kvane.js", "package.json", "THIRD-PARTY-LICENSES.txt"]);

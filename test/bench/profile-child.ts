@@ -34,7 +34,7 @@ async function wholeJob(): Promise<void> {
   );
   if (answered.errors.length > 0) throw new Error(JSON.stringify(answered.errors));
   const { reportText, resultFolder } = await room<Reports>("reports");
-  reportText(answered);
+  await reportText(answered);
   await resultFolder(answered as Parameters<typeof resultFolder>[0]);
 }
 

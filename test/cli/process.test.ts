@@ -1,5 +1,6 @@
 import { spawn, spawnSync } from "node:child_process";
-import { readdirSync } from "node:fs";
+import { closeSync, constants, openSync, readdirSync, readSync } from "node:fs";
+import { join } from "node:path";
 import { version } from "@kvane/core/job";
 import { describe, expect, test } from "vitest";
 import { commandFile, kvane, kvaneProcess, scratchFolder } from "./command.js";
@@ -68,6 +69,38 @@ describe("the built command", () => {
     child.kill("SIGINT");
     expect(await ended).toBe(130);
     expect(readdirSync(folder)).toEqual(before);
+  });
+
+  test.skipIf(process.platform === "win32")("Ctrl-C ends it while a full pipe takes no more", async () => {
+    const pipe = join(folder, "full-pipe");
+    spawnSync("mkfifo", [pipe]);
+    const both = openSync(pipe, "r+");
+    // As much as a pipe holds, so that nothing more fits into it until somebody reads.
+    spawnSync("dd", ["if=/dev/zero", "bs=65536", "count=1", "status=none"], { stdio: ["ignore", both, "inherit"] });
+    const child = spawn(process.execPath, [commandFile, "ops", "62"], { stdio: ["ignore", both, "ignore"] });
+    const ended = new Promise((resolve) => child.on("exit", (status, signal) => resolve(signal ?? status)));
+    await new Promise((resolve) => setTimeout(resolve, 1000));
+    expect([child.exitCode, child.signalCode], "it waits for a reader").toEqual([null, null]);
+    child.kill("SIGINT");
+    // A shell shows 130 for either.
+    expect(["SIGINT", 130]).toContain(await ended);
+    closeSync(both);
+  });
+
+  test.skipIf(process.platform === "win32")("a full pipe that refuses instead of waiting gets all of it", async () => {
+    const pipe = join(folder, "refusing-pipe");
+    spawnSync("mkfifo", [pipe]);
+    const both = openSync(pipe, constants.O_RDWR | constants.O_NONBLOCK);
+    spawnSync("dd", ["if=/dev/zero", "bs=65536", "count=1", "status=none"], { stdio: ["ignore", both, "inherit"] });
+    const child = spawn(process.execPath, [commandFile, "ops", "62"], { stdio: ["ignore", both, "inherit"] });
+    const ended = new Promise((resolve) => child.on("exit", resolve));
+    await new Promise((resolve) => setTimeout(resolve, 1000));
+    expect(child.exitCode, "it waits for a reader").toBeNull();
+    expect(readSync(both, new Uint8Array(65536))).toBe(65536);
+    expect(await ended).toBe(0);
+    const text = new Uint8Array(65536);
+    expect(new TextDecoder().decode(text.subarray(0, readSync(both, text)))).toBe((await kvane(["ops", "62"])).stdout);
+    closeSync(both);
   });
 
   test("an answer of a cancelled job is `interrupted`", async () => {

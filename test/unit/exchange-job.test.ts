@@ -45,7 +45,7 @@ describe("kvane exchange", () => {
     expect(record.ground?.vectors[0]?.k.components).toEqual(["0", "0", "u"]);
     expect(record.ground?.vectors[0]?.k.values["u"]).toBeCloseTo(1 / 3, 6);
     expect(envelope.assumed.some(({ what }) => what === "lengths of the spins")).toBe(true);
-    expect(reportText(envelope)).toContain("coplanar arrangement of full spins");
+    expect(await reportText(envelope)).toContain("coplanar arrangement of full spins");
   });
 
   it("says what a measured k asks of the constants", async () => {
@@ -79,11 +79,11 @@ describe("kvane exchange", () => {
     const envelope = await asked({ ...square, constants: ["1 1"], vary: ["2 0 1 5"] });
     const { diagram } = envelope.result as ExchangeRecord;
     expect(diagram?.boundaries?.map(({ value }) => Number(value.toFixed(6)))).toEqual([0.5]);
-    expect(reportText(envelope)).toContain("Phase diagram (J2)");
-    expect(reportCsv(envelope)?.split("\n")).toHaveLength(7);
+    expect(await reportText(envelope)).toContain("Phase diagram (J2)");
+    expect((await reportCsv(envelope))?.split("\n")).toHaveLength(7);
     const map = await asked({ ...square, constants: ["1 1"], vary: ["2 0 1 3", "3 0 0.6 3"] });
     expect((map.result as ExchangeRecord).diagram?.points).toHaveLength(9);
-    expect(reportText(map)).toContain("J3 upwards");
+    expect(await reportText(map)).toContain("J3 upwards");
   });
 
   it("gives the energies of the arrangements of a k", async () => {
@@ -126,8 +126,8 @@ describe("kvane onset", () => {
       expect(Math.abs(value - truth)).toBeLessThan(3 * (su ?? 0));
     }
     expect(record.peaks.map(({ behaviour }) => behaviour)).toEqual(["onset", "onset", "onset", "constant"]);
-    expect(reportText(envelope)).toContain("Transitions (2)");
-    expect(reportCsv(envelope)?.split("\n")).toHaveLength(6);
+    expect(await reportText(envelope)).toContain("Transitions (2)");
+    expect((await reportCsv(envelope))?.split("\n")).toHaveLength(6);
   });
 
   it("needs a scan", async () => {

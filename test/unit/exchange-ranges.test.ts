@@ -120,7 +120,7 @@ describe("ranges in a study", () => {
     const envelope = await askedWith({ command: "run", study: "s.yaml", files: true }, { "s.yaml": study });
     const record = envelope.result as RunRecord;
     expect(record.exchange?.diagram?.points).toHaveLength(5);
-    expect(reportText(envelope)).toContain("Phase diagram (J2)");
+    expect(await reportText(envelope)).toContain("Phase diagram (J2)");
     const files = new Map(
       (await resultFolder(envelope as Parameters<typeof resultFolder>[0])).map((one) => [one.name, one.text]),
     );
@@ -187,16 +187,16 @@ describe("the table of kvane exchange", () => {
 
   it("has the letters that the text has", async () => {
     const { envelope } = await exchange({ ...model, vary: ["2 0 1 5"] });
-    const letters = rows(reportCsv(envelope))
+    const letters = rows(await reportCsv(envelope))
       .slice(1)
       .map((row) => row.split(",")[2]);
-    expect(reportText(envelope)).toContain(`J2 from 0 to 1: ${letters.join("")}`);
+    expect(await reportText(envelope)).toContain(`J2 from 0 to 1: ${letters.join("")}`);
     expect(letters.join("")).toMatch(/^[A-Z]+$/);
   });
 
   it("has the energies where no constant runs, each of the arrangements with its own", async () => {
     const { envelope, record } = await exchange({ ...model, k: "1/2,1/2,0" });
-    const [header, ...lines] = rows(reportCsv(envelope));
+    const [header, ...lines] = rows(await reportCsv(envelope));
     expect(header).toBe("what,k,k_numeric,id,irreps,direction,free_amplitudes,energy_lowest,energy_highest");
     const arranged = lines.filter((line) => line.startsWith("arrangement,"));
     expect(arranged).toHaveLength(record.configurations.length);
@@ -207,7 +207,7 @@ describe("the table of kvane exchange", () => {
 
   it("has the bonds where there is no constant", async () => {
     const { envelope } = await exchange({ ...model, constants: null });
-    expect(rows(reportCsv(envelope))[0]).toContain("length_angstrom");
+    expect(rows(await reportCsv(envelope))[0]).toContain("length_angstrom");
   });
 });
 

@@ -18,7 +18,7 @@ async function asked(request: Request) {
   expect(envelope.errors).toEqual([]);
   const { stationary } = envelope.result as ExchangeRecord;
   if (!stationary) throw new Error("nothing is asked of the constants");
-  return { stationary, text: reportText(envelope).replace(/\s+/g, " ") };
+  return { stationary, text: (await reportText(envelope)).replace(/\s+/g, " ") };
 }
 
 /** Fourth neighbours (2, 0) and second ones (1, 1) of this rectangle have one length: shell 3 is of two kinds. */

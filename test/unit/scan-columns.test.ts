@@ -51,7 +51,7 @@ describe("columns of uncertainties", () => {
       { name: "I1", as: "intensity", of: null },
       { name: "s1", as: "uncertainty", of: "I1" },
     ]);
-    expect(reportText(envelope)).toContain("T; I1 with s.u. s1");
+    expect(await reportText(envelope)).toContain("T; I1 with s.u. s1");
     expect(envelope.assumed.find(({ what }) => what === "column s1 of the scan")?.value).toBe("uncertainties of I1");
   });
 });

@@ -45,20 +45,20 @@ export async function packed(
   const drawing = wishes.svg ? await reportSvg(answered) : null;
   if (drawing !== null) return { text: drawing, files: null };
   if (wishes.svg && command === "exchange") failUndrawn(true);
-  if (wishes.out === null) return { text: textOf(answered, wishes, columns), files: null };
-  if (command === "run") return { text: textOf(answered, wishes, columns), files: await resultFolder(whole) };
+  if (wishes.out === null) return { text: await textOf(answered, wishes, columns), files: null };
+  if (command === "run") return { text: await textOf(answered, wishes, columns), files: await resultFolder(whole) };
   const form = command === "report" && !wishes.json ? reportForm(wishes.out) : null;
-  return { text: form === null ? textOf(answered, wishes, null) : await reportIn(form, whole), files: null };
+  return { text: form === null ? await textOf(answered, wishes, null) : await reportIn(form, whole), files: null };
 }
 
 /** Puts it where it was wished: the terminal, a file, or for the whole job a folder. */
 export function deliver(
   { text, files }: Parcel,
   wishes: OutputWishes,
-  { write, writeError, folder }: Surroundings,
+  { write, finish = write, writeError, folder }: Surroundings,
 ): void {
   if (wishes.out === null) {
-    write(text);
+    finish(text);
     return;
   }
   const path = { shown: wishes.out, full: resolve(folder, wishes.out) };
@@ -70,7 +70,7 @@ export function deliver(
 }
 
 /** A file has the usual width, a terminal its own. */
-function textOf(answered: Envelope<object>, wishes: OutputWishes, width: number | null): string {
+async function textOf(answered: Envelope<object>, wishes: OutputWishes, width: number | null): Promise<string> {
   if (wishes.json) return jsonText(answered);
-  return (wishes.csv ? reportCsv(answered) : null) ?? reportText(answered, { width });
+  return (wishes.csv ? await reportCsv(answered) : null) ?? reportText(answered, { width });
 }

@@ -9,7 +9,9 @@ const interrupted = 130;
 /** Milliseconds that work has to end by itself then. */
 const grace = 300;
 
-for (const name of ["SIGINT", "SIGTERM"] as const)
+const signals = ["SIGINT", "SIGTERM"] as const;
+
+for (const name of signals)
   process.once(name, () => {
     signal.aborted = true;
     process.once(name, stop);
@@ -21,11 +23,15 @@ function stop(): void {
   process.exit(interrupted);
 }
 
+function release(): void {
+  for (const name of signals) process.removeAllListeners(name);
+}
+
 void main();
 
 async function main(): Promise<void> {
   try {
-    process.exitCode = await runCommand(process.argv.slice(2), processSurroundings(signal));
+    process.exitCode = await runCommand(process.argv.slice(2), processSurroundings(signal, release));
   } catch (error) {
     removeUnfinished();
     process.stderr.write(

@@ -16,7 +16,6 @@ export { overlapRecord, peaksRecord, satellitesRecord, searchRecord } from "./bu
 export { irrepsRecord, opsRecord, starRecord } from "./building/symmetry.js";
 export type { WeighedInput } from "./building/weigh.js";
 export { cifCode } from "./cif-code.js";
-export { commandsWithTable, reportCsv } from "./csv/report-csv.js";
 export { jsonText } from "./json-text.js";
 export { configurationCif, configurationsRecord, decomposeRecord, weighRecord } from "./made-records.js";
 export { physicalSets } from "./physical-sets.js";
@@ -116,8 +115,17 @@ export type {
   WeighPatternRecord,
   WeighRecord,
 } from "./records/weigh.js";
-export { type ReportForm, reportEndings, reportForm, reportIn, reportSvg } from "./report-files.js";
-export { type ResultFile, resultFileNames, resultFolder } from "./result-folder.js";
+export {
+  type ReportForm,
+  reportCsv,
+  reportEndings,
+  reportForm,
+  reportIn,
+  reportSvg,
+  resultFolder,
+} from "./report-files.js";
+export { resultFileNames } from "./result-file-names.js";
+export type { ResultFile } from "./result-folder.js";
 export type { JsonSchema } from "./schemas/building.js";
 export { answerSchema, describedCommands } from "./schemas/envelope.js";
 export { reportText } from "./text/report-text.js";

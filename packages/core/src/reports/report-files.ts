@@ -1,7 +1,13 @@
 import { jsonText } from "./json-text.js";
 import type { Envelope } from "./records/common.js";
 import type { RunRecord } from "./records/run.js";
+import type { ResultFile } from "./result-folder.js";
 import { reportText } from "./text/report-text.js";
+
+/** The answer's table as CSV, or null where the command has none or the answer no result. */
+export async function reportCsv(answer: Envelope): Promise<string | null> {
+  return (await import("./csv/report-csv.js")).csvOf(answer);
+}
 
 /**
  * The answer's drawing as an SVG file, or null where the command has none or the answer nothing to draw. What draws is
@@ -9,6 +15,11 @@ import { reportText } from "./text/report-text.js";
  */
 export async function reportSvg(answer: Envelope): Promise<string | null> {
   return (await import("./svg/report-svg.js")).svgOf(answer);
+}
+
+/** Everything that `kvane run --out` writes, as names and texts. */
+export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultFile[]> {
+  return (await import("./result-folder.js")).folderOf(answer);
 }
 
 /** The forms that a report has, by the ending of its file. */

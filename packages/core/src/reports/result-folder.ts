@@ -1,12 +1,12 @@
-import { cifCode } from "./cif-code.js";
-import { cifObstacle } from "./cif-obstacle.js";
 import { configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./csv/tables.js";
 import { fittedMomentsCsv, patternCsv, rankingCsv } from "./csv/weigh-table.js";
-import { type DrawnRun, figureNames } from "./document/figure-names.js";
 import { jsonText } from "./json-text.js";
+import { documentFiles } from "./made-reports.js";
+import { configurationCif, fittedMoments } from "./magnetic-cif-of.js";
 import type { Envelope } from "./records/common.js";
-import type { AnyConfiguration, ConfigurationsRecord } from "./records/configurations.js";
+import type { ConfigurationsRecord } from "./records/configurations.js";
 import type { RunRecord } from "./records/run.js";
+import { cifName, resultFileNames, writtenOnes } from "./result-file-names.js";
 import { reportText } from "./text/report-text.js";
 
 /** A file of the result folder. */
@@ -15,33 +15,10 @@ export interface ResultFile {
   readonly text: string;
 }
 
-/** Names of the files that `resultFolder` gives for such a result, in its order. */
-export function resultFileNames(record: DrawnRun): string[] {
-  return [
-    "report.html",
-    "report.txt",
-    "report.md",
-    "result.json",
-    ...(record.search ? ["assignments.csv"] : []),
-    ...record.branches.flatMap(({ satellites, configurations, weigh }, index) => [
-      `branch-${index + 1}-modes.csv`,
-      ...(configurations ? [`branch-${index + 1}-configurations.csv`] : []),
-      ...writtenOnes(configurations).map((one) => cifName(one, index)),
-      ...(satellites ? [`branch-${index + 1}-satellites.csv`] : []),
-      ...(weigh ? [`branch-${index + 1}-weights.csv`] : []),
-      ...(weigh ? [`branch-${index + 1}-fitted-moments.csv`] : []),
-      ...(weigh?.pattern ? [`branch-${index + 1}-pattern.csv`] : []),
-    ]),
-    ...figureNames(record),
-  ];
-}
-
-/** Everything that `kvane run --out` writes, as names and texts. The makers of pages are loaded only here. */
-export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultFile[]> {
+/** The files, in the order of `resultFileNames`. */
+export async function folderOf(answer: Envelope<RunRecord>): Promise<ResultFile[]> {
   const record = answer.result;
   if (record === null) return [];
-  const { documentFiles } = await import("./made-reports.js");
-  const { configurationCif, fittedMoments } = await import("./magnetic-cif-of.js");
   // With the moments of the fit where there is one.
   const cifFiles = (
     { configurations, weigh }: RunRecord["branches"][number],
@@ -54,7 +31,7 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
     });
   const texts = new Map([
     ...documentFiles(answer),
-    ["report.txt", reportText(answer, { full: true })],
+    ["report.txt", await reportText(answer, { full: true })],
     ["result.json", jsonText(answer)],
     ...(record.search ? [["assignments.csv", searchCsv(record.search)] as const] : []),
     ...record.branches.flatMap((branch, index) => {
@@ -77,15 +54,4 @@ export async function resultFolder(answer: Envelope<RunRecord>): Promise<ResultF
     if (text === undefined) throw new TypeError(`nothing was made for ${name}`);
     return { name, text };
   });
-}
-
-/** Those that a magnetic CIF can be written of. */
-function writtenOnes(configurations: ConfigurationsRecord | null): AnyConfiguration[] {
-  return (configurations?.configurations ?? []).filter(
-    (one) => cifObstacle(configurations as ConfigurationsRecord, one) === null,
-  );
-}
-
-function cifName({ id }: AnyConfiguration, branch: number): string {
-  return `branch-${branch + 1}-${cifCode(id)}.mcif`;
 }

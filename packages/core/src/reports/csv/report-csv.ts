@@ -12,22 +12,8 @@ import { exchangeCsv, onsetCsv } from "./exchange-and-onset-csv.js";
 import { atlasCsv, compatibilityCsv, configurationsCsv, modesCsv, satellitesCsv, searchCsv } from "./tables.js";
 import { weighCsv } from "./weigh-table.js";
 
-/** The commands whose answer has a table. */
-export const commandsWithTable: readonly string[] = [
-  "atlas",
-  "compatibility",
-  "modes",
-  "configurations",
-  "satellites",
-  "index",
-  "locate",
-  "weigh",
-  "exchange",
-  "onset",
-];
-
 /** The answer's table as CSV, or null where the command has none or the answer no result. */
-export function reportCsv({ command, result }: Envelope): string | null {
+export function csvOf({ command, result }: Envelope): string | null {
   if (result === null) return null;
   if (command === "atlas") return atlasCsv(result as AtlasRecord);
   if (command === "compatibility") return compatibilityCsv(result as CompatibilityRecord);

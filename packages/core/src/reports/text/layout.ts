@@ -29,16 +29,11 @@ export interface Column {
 
 /** Characters, not UTF-16 units; nothing that kvane writes is wider than one place. */
 export function widthOf(text: string): number {
-  let width = text.length;
-  for (let index = 1; index < text.length; index++)
-    if (isUnit(text, index, 0xdc00) && isUnit(text, index - 1, 0xd800)) width -= 1;
-  return width;
+  return text.length - (text.match(surrogatePairs)?.length ?? 0);
 }
 
-/** Whether a UTF-16 unit is the first (0xd800) or the second (0xdc00) of a pair. */
-function isUnit(text: string, index: number, kind: number): boolean {
-  return (text.charCodeAt(index) & 0xfc00) === kind;
-}
+/** Characters of two UTF-16 units. */
+const surrogatePairs = /[\ud800-\udbff][\udc00-\udfff]/g;
 
 function pad(text: string, width: number, align: "left" | "right" = "left"): string {
   const blanks = " ".repeat(Math.max(0, width - widthOf(text)));
