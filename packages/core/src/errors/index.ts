@@ -7,3 +7,4 @@ export { type ProblemCode, problemCodes } from "./codes.js";
 export { fail, KvaneError, placed } from "./kvane-error.js";
 export { editDistance, nearMiss } from "./near-miss.js";
 export { type Assumption, nowhere, type Place, type Problem, type ProblemDetails, problem } from "./problem.js";
+export { isTooLarge, whyNoNumber } from "./too-large.js";

@@ -1,4 +1,4 @@
-import { isTooLarge } from "../numbers/index.js";
+import { isTooLarge } from "../errors/index.js";
 import type { PeakKind } from "../search/index.js";
 import { readNumber } from "./number-text.js";
 import { plainName, readPeakKind } from "./peak-kind.js";

@@ -1,4 +1,5 @@
-import { isTooLarge, parseRational, toNumber, whyNoNumber } from "../numbers/index.js";
+import { isTooLarge, whyNoNumber } from "../errors/index.js";
+import { parseRational, toNumber } from "../numbers/index.js";
 import { readNumber } from "./number-text.js";
 import { type Column, type ColumnRole, hasColumnName } from "./peak-header.js";
 import { note, type ProblemList } from "./problem-list.js";

@@ -1,4 +1,4 @@
-import { isTooLarge, whyNoNumber } from "../numbers/index.js";
+import { isTooLarge, whyNoNumber } from "../errors/index.js";
 import type { ScanSeries } from "../onsets/index.js";
 import { readNumber } from "./number-text.js";
 import { noteDecimalComma } from "./peak-values.js";

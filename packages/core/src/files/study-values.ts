@@ -1,5 +1,5 @@
-import { KvaneError, type ProblemCode } from "../errors/index.js";
-import { isTooLarge, parseRational, type Rational, whyNoNumber } from "../numbers/index.js";
+import { isTooLarge, KvaneError, type ProblemCode, whyNoNumber } from "../errors/index.js";
+import { parseRational, type Rational } from "../numbers/index.js";
 import { readNumber } from "./number-text.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { where } from "./yaml-convert.js";

@@ -17,4 +17,3 @@ export * from "./matrices.js";
 export * from "./phased-numbers.js";
 export * from "./rationals.js";
 export * from "./tolerances.js";
-export * from "./too-large.js";

@@ -1,5 +1,4 @@
-import { fail, KvaneError, type Place, type Problem, problem } from "../errors/index.js";
-import { whyNoNumber } from "../numbers/index.js";
+import { fail, KvaneError, type Place, type Problem, problem, whyNoNumber } from "../errors/index.js";
 import type { Cell } from "./types.js";
 
 const lengthNames = ["a", "b", "c"] as const;

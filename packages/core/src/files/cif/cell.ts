@@ -1,5 +1,12 @@
-import { type Assumption, fail, KvaneError, type Place, type Problem, problem } from "../../errors/index.js";
-import { whyNoNumber } from "../../numbers/index.js";
+import {
+  type Assumption,
+  fail,
+  KvaneError,
+  type Place,
+  type Problem,
+  problem,
+  whyNoNumber,
+} from "../../errors/index.js";
 import { type Cell, checkCell } from "../../spacegroups/index.js";
 import { type BlockReader, locate } from "./block-reader.js";
 import type { CifValue } from "./document.js";

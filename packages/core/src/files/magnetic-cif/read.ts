@@ -1,6 +1,5 @@
-import { fail, KvaneError, type Place, type Problem, problem } from "../../errors/index.js";
+import { fail, KvaneError, type Place, type Problem, problem, whyNoNumber } from "../../errors/index.js";
 import { type MagneticOperator, parseMagneticTriplet } from "../../magneticgroups/index.js";
-import { whyNoNumber } from "../../numbers/index.js";
 import { type BasisChange, type Cell, parseBasisChange } from "../../spacegroups/index.js";
 import { type BlockReader, firstText, locate, openBlock, rowsOf, valuesOf } from "../cif/block-reader.js";
 import { readCell } from "../cif/cell.js";

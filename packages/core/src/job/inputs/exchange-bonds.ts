@@ -46,9 +46,9 @@ const shortestBondAngstrom = 0.5;
 function refuseCloseAtoms({ shells }: BondTable, sites: readonly GivenSite[]): void {
   const [nearest] = shells;
   if (nearest === undefined || nearest.distance >= shortestBondAngstrom) return;
-  const labels = nearest.classes[0]?.labels ?? [];
+  const labels: readonly string[] = nearest.classes[0]?.labels ?? [];
   // The later of two sites is the one that was put on top.
-  const site = sites.findLast((one) => labels.includes(one.site.label));
+  const site = sites.filter((one) => labels.includes(one.site.label)).at(-1);
   fail("invalid-site", `two magnetic atoms are ${nearest.distance.toPrecision(2)} Å apart`, {
     where: site?.given.where ?? {},
     expected: `at least ${shortestBondAngstrom} Å between magnetic atoms`,

@@ -1,5 +1,4 @@
-import { fail } from "../../errors/index.js";
-import { isTooLarge, whyNoNumber } from "../../numbers/index.js";
+import { fail, isTooLarge, whyNoNumber } from "../../errors/index.js";
 import { argumentNames, type Request, type RequestField } from "../request.js";
 import { optionOf } from "./given.js";
 

@@ -2,7 +2,7 @@ import { parseCif, parsePeakList, parseScanTable, readCifStructure } from "@kvan
 import { answer } from "@kvane/core/job";
 import { parseCell } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
-import { isTooLarge, whyNoNumber } from "#core/numbers/index.js";
+import { isTooLarge, whyNoNumber } from "#core/errors/index.js";
 import { places, problemsOf } from "../support/problems-of.js";
 
 const said = "is too large for a number of this kind (beyond 1.8e308)";
