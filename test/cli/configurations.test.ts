@@ -1,4 +1,7 @@
+import { writeFileSync } from "node:fs";
+import { join } from "node:path";
 import { fileURLToPath } from "node:url";
+import { reportText } from "@kvane/core/reports";
 import { describe, expect, test } from "vitest";
 import { kvane, scratchFolder } from "./command.js";
 import { schemaErrors } from "./schemas.js";
@@ -95,10 +98,21 @@ describe("kvane export", () => {
     );
     expect(new Set(texts).size).toBe(1);
     expect(texts[0]).toMatch(/^#\\#CIF_2\.0\n/);
+    expect(texts[0]?.match(/^# The numbers of irreps are kvane's own/gm)).toHaveLength(1);
     expect(texts[0]).toContain("_space_group_magn.number_BNS            '15.90'");
     const bad = await json("export", "mno.yaml", "--configuration", "9.1");
     expect(bad.errors[0]).toMatchObject({ code: "invalid-argument", where: { argument: "--configuration" } });
     expect(bad.errors[0].expected).toContain("Γ5.2");
+  });
+
+  test("an id that only the list of all arms has leads to that list", async () => {
+    const remedyOf = async (...words: string[]) =>
+      (await json("export", "mno.yaml", "--configuration", ...words)).errors[0]?.remedy;
+    expect(await remedyOf("3.2")).toBe("3.2 is one of all arms of the star together: add --arms all");
+    expect((await json("export", "mno.yaml", "--configuration", "3.2", "--arms", "all")).errors).toEqual([]);
+    const plain = "kvane configurations lists them";
+    for (const words of [["3.99"], ["9.1"], ["3.99", "--arms", "all"], ["3.2", "--limit", "100"]])
+      expect(await remedyOf(...words), words.join(" ")).toBe(plain);
   });
 
   test("without a cell there is no CIF", async () => {
@@ -149,6 +163,26 @@ describe("kvane decompose", () => {
     expect(doubled.result.recognised).not.toBeNull();
     const wrong = await json("decompose", "wrong.txt", "--parent", "lamno3.yaml");
     expect(wrong.errors.map(({ where }: { where: { line: number } }) => where.line)).toEqual([2, 3]);
+  });
+
+  test("a domain that nothing moves is the listed one itself", async () => {
+    const answer = await json("decompose", "a-type.txt", "--parent", "lamno3.yaml");
+    expect(answer.result.recognised.operator).toBe("x,y,z,+1");
+    const domainOf = async (operator: string) => {
+      const result = { ...answer.result, recognised: { ...answer.result.recognised, operator } };
+      return /Domain +(.*)/.exec(await reportText({ ...answer, result }, { width: null }))?.[1];
+    };
+    expect(await domainOf("x,y,z,+1")).toBe("the listed one itself");
+    expect(await domainOf("x,y,z,-1")).toBe("the listed one moved by x,y,z,-1");
+  });
+
+  test("a modulated file of its own is refused, as its help says", async () => {
+    const written = await kvane(["export", "--example", "--k", "0.47,0,0", "--configuration", "1.1"], { cwd: folder });
+    writeFileSync(join(folder, "modulated.mcif"), written.stdout);
+    const refused = await kvane(["decompose", "modulated.mcif", "--parent", "pnma.yaml"], { cwd: folder });
+    expect(refused.stderr).toContain("error[not-built]");
+    const help = (await kvane(["decompose", "--help"])).stdout.replace(/\s+/g, " ");
+    expect(help).toContain("Structures have to be commensurate: a modulated one");
   });
 
   test("what does not fit the parent is refused with a remedy", async () => {

@@ -10,6 +10,8 @@ const folder = scratchFolder({
   "tt.txt": "2theta su\n11.43 0.05\n17.77 0.05\n29.69 0.05\n",
   "d.txt": "d su\n12.10 0.02\n7.803 0.01\n4.703 0.01\n",
   "zero.yaml": `group: P n m a\n${cellLine}\npeaks: {file: d.txt}\nsearch:\n  unmatched: 3\n  zero-shift: 0.1\n`,
+  "no-k.yaml": `group: P n m a\n${cellLine}\nsites: [{label: A, at: [0, 0, 0]}]\npeaks: {file: d.txt}\n`,
+  "no-peaks.yaml": `group: P n m a\n${cellLine}\nsites: [{label: A, at: [0, 0, 0]}]\n`,
   "scale.yaml": `group: P n m a\nsearch: {cell-scale: 1.5}\n`,
   "ions.yaml": [
     "group: P n m a",
@@ -48,6 +50,8 @@ const cases: readonly (readonly [string, readonly string[], readonly string[]])[
     ['"10.21 6.05 4.71 90 90 90"'],
   ],
   ["a decimal comma in k", ["star", "62", "--k", "0,47,0,0"], ["decimal points"]],
+  ["no k in a study with peaks", ["export", "no-k.yaml"], ["at no-k.yaml (k)", "`kvane locate` with this study"]],
+  ["no k in a study without peaks", ["export", "no-peaks.yaml"], ["remedy:   give --k\n"]],
   ["a group for a study", ["run", "62"], ["needs a study file", "found:    62"]],
   ["no wavelength in a study", ["run", "no-wavelength.yaml"], ["at no-wavelength.yaml:5:3 (peaks)", "wavelength: …"]],
   ["one missing colon", ["check", "colon.yaml"], ["at colon.yaml:2:1", "no colon"]],

@@ -103,6 +103,7 @@ describe("the page", async () => {
   test("says each caution once, and has headings without a gap", () => {
     expect(page.match(/hypotheses until a structure is refined/g)).toHaveLength(1);
     expect(page.match(/trained staff/g)).toHaveLength(1);
+    expect(page.match(/The numbers in Γ1, Γ2, … are kvane&#39;s own/g)).toHaveLength(1);
     const levels = [...page.matchAll(/<h([1-6])[ >]/g)].map(([, level]) => Number(level));
     expect(levels[0]).toBe(1);
     levels.forEach((level, index) => {

@@ -16,6 +16,8 @@ export type ArgumentKind =
 export interface CommandSpec {
   readonly name: string;
   readonly summary: string;
+  /** What it does not do yet, a sentence behind the summary on its own help page. */
+  readonly limits?: string;
   readonly argument: ArgumentKind;
   readonly options: readonly OptionName[];
   /** Commands that work when pasted; a test pastes them. */

@@ -109,6 +109,8 @@ export const symmetryCommands: readonly CommandSpec[] = [
   {
     name: "decompose",
     summary: "moments of a magnetic CIF or a list: their irreps, amplitudes and magnetic group",
+    limits:
+      "Structures have to be commensurate: a modulated one (a magnetic superspace group, as kvane export writes it for an incommensurate k) is refused in this version.",
     argument: "moments",
     options: ["parent", "block", "child", "example", ...outputOptions],
     examples: ["kvane decompose --example"],

@@ -82,6 +82,7 @@ function commonContent(record: ConfigurationsRecord, one: AnyConfiguration, fitt
     block: `kvane_${cifCode(one.id)}`,
     remarks: [
       `Written by kvane: configuration ${one.id}, direction ${one.direction}, irreps ${one.irreps.join(" and ")}.`,
+      "The numbers of irreps are kvane's own: an irrep is identified by its characters (kvane irreps).",
       `k = (${record.k.components.join(", ")}) of the parent cell${Object.keys(record.k.values).length > 0 ? "" : ", exactly"}.`,
       ...(fitted?.remarks ?? exampleRemarks),
     ],

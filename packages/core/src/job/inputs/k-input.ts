@@ -48,7 +48,10 @@ export function writtenK(work: Work): GivenK {
       where: work.study === null ? { argument: "--k" } : { file: work.study.file, path: "k", argument: "--k" },
       expected: "three components such as --k 0,1/2,0",
       found: "nothing",
-      remedy: "give --k",
+      remedy:
+        work.study?.peaks == null
+          ? "give --k"
+          : "`kvane locate` with this study finds k from its peaks; then give --k, or write `k:` in the study",
     });
   return written;
 }

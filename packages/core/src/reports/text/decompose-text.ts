@@ -52,10 +52,15 @@ export function decomposeText(record: DecomposeRecord): string[] {
         : fields([
             ["Configuration", `${recognised.id}, direction ${recognised.direction}`],
             ["Listed for", listedFor(record.primary)],
-            ["Domain", `the listed one moved by ${recognised.operator}`],
+            ["Domain", domainText(recognised.operator)],
           ]),
     ),
   ];
+}
+
+/** An operator that moves nothing is the listed domain. */
+function domainText(operator: string): string {
+  return operator === "x,y,z,+1" ? "the listed one itself" : `the listed one moved by ${operator}`;
 }
 
 /** Ids are those of one list: of this k (another arm has the same list in other axes) and of these arms together. */
