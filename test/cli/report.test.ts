@@ -43,9 +43,12 @@ describe("kvane report", () => {
     expect(JSON.parse(own.stdout).result).toEqual(JSON.parse(whole.stdout).result);
   });
 
-  test("says how to repeat it", async () => {
-    await report("--out", "again.md");
-    expect(readFileSync(join(folder, "again.md"), "utf8")).toContain("kvane report --example --k 1/2,0,0\n");
+  test.each([
+    ["again.md", "--out again.md"],
+    ["once more.html", "--out &quot;once more.html&quot;"],
+  ])("says how to repeat it, with the name of its file: %s", async (name, option) => {
+    await report("--out", name);
+    expect(readFileSync(join(folder, name), "utf8")).toContain(`kvane report --example --k 1/2,0,0 ${option}`);
   });
 });
 

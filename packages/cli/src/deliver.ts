@@ -48,7 +48,8 @@ export async function packed(
   if (wishes.out === null) return { text: await textOf(answered, wishes, columns), files: null };
   if (command === "run") return { text: await textOf(answered, wishes, columns), files: await resultFolder(whole) };
   const form = command === "report" && !wishes.json ? reportForm(wishes.out) : null;
-  return { text: form === null ? await textOf(answered, wishes, null) : await reportIn(form, whole), files: null };
+  const text = form === null ? await textOf(answered, wishes, null) : await reportIn(form, whole, wishes.out);
+  return { text, files: null };
 }
 
 /** Puts it where it was wished: the terminal, a file, or for the whole job a folder. */

@@ -7,13 +7,17 @@ import type { RunRecord } from "./records/run.js";
 import { besideEachOther, standaloneSvg } from "./svg/figure.js";
 
 /** The whole job as one page. */
-export function htmlReport(answer: Envelope<RunRecord>): string {
-  return htmlPage(runDocument(answer));
+export function htmlReport(answer: Envelope<RunRecord>, file: string | null = null): string {
+  return htmlPage(runDocument(answer, file));
 }
 
 /** The whole job as Markdown. */
-export function markdownReport(answer: Envelope<RunRecord>, figures: "beside" | "none"): string {
-  return markdownText(runDocument(answer), { figures });
+export function markdownReport(
+  answer: Envelope<RunRecord>,
+  figures: "beside" | "none",
+  file: string | null = null,
+): string {
+  return markdownText(runDocument(answer, file), { figures });
 }
 
 /** Everything of a result folder that is made from the document: the page, the Markdown and the drawings, by name. */

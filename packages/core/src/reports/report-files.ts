@@ -40,10 +40,16 @@ export function reportForm(name: string): ReportForm | null {
 /**
  * The report of the whole job in one form. The makers of pages are loaded only when they are wanted. A Markdown file on
  * its own names no drawings.
+ *
+ * @param file the name of the file that it is for, which the report repeats with the command
  */
-export async function reportIn(form: ReportForm, answer: Envelope<RunRecord>): Promise<string> {
+export async function reportIn(
+  form: ReportForm,
+  answer: Envelope<RunRecord>,
+  file: string | null = null,
+): Promise<string> {
   if (form === "json") return jsonText(answer);
   if (form === "text") return reportText(answer, { full: true });
   const { htmlReport, markdownReport } = await import("./made-reports.js");
-  return form === "html" ? htmlReport(answer) : markdownReport(answer, "none");
+  return form === "html" ? htmlReport(answer, file) : markdownReport(answer, "none", file);
 }

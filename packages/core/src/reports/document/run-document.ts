@@ -24,6 +24,8 @@ import { zoneSection } from "./sections/zone.js";
 export interface DocumentSource {
   readonly answer: Envelope<RunRecord>;
   readonly record: RunRecord;
+  /** The file that the report is asked for; null where it is printed or is one of a result folder. */
+  readonly file: string | null;
   /** Where a section puts the data of its live views. */
   readonly data: { [key: string]: unknown };
 }
@@ -59,11 +61,14 @@ const closing: readonly SectionOf<DocumentSource>[] = [
   repeatSection,
 ];
 
-/** The report of the whole job as a document, made from the answer alone; the same answer gives the same document. */
-export function runDocument(answer: Envelope<RunRecord>): ReportDocument {
+/**
+ * The report of the whole job as a document, made from the answer and the name of its file alone: the same ones give the
+ * same document.
+ */
+export function runDocument(answer: Envelope<RunRecord>, file: string | null = null): ReportDocument {
   const record = answer.result;
   if (record === null) throw new TypeError("a report needs a result");
-  const source: DocumentSource = { answer, record, data: {} };
+  const source: DocumentSource = { answer, record, file, data: {} };
   const built = (makers: readonly SectionOf<DocumentSource>[]) =>
     makers.map((maker) => maker(source)).filter((section) => section !== null);
   const sections = [

@@ -3,14 +3,14 @@ import { type DocumentSection, fieldsBlock, listBlock, moreBlock, paragraphBlock
 import type { DocumentSource } from "../run-document.js";
 
 /** What is needed to get the same report again. */
-export function repeatSection({ answer, record }: DocumentSource): DocumentSection {
+export function repeatSection({ answer, record, file }: DocumentSource): DocumentSection {
   return {
     id: "repeat",
     title: "How to repeat this",
     parts: [],
     blocks: [
       paragraphBlock("The same version, study and peak list give the same bytes."),
-      { kind: "verbatim", text: commandLine(answer) },
+      { kind: "verbatim", text: commandLine(answer, file) },
       ...fieldsBlock([
         ["Version", `kvane ${answer.kvane}, format ${answer.format}`],
         ...inputEntries(answer.input),
@@ -25,7 +25,7 @@ export function repeatSection({ answer, record }: DocumentSource): DocumentSecti
 }
 
 /** The command as it would be typed. */
-function commandLine({ command, input }: Envelope): string {
+function commandLine({ command, input }: Envelope, file: string | null): string {
   const { study = null, ...options } = input;
   const words = ["kvane", command];
   if (typeof study === "string") words.push(study === "example:/study.yaml" ? "--example" : quoted(study));
@@ -35,6 +35,7 @@ function commandLine({ command, input }: Envelope): string {
       words.push(one === true ? optionName(name) : `${optionName(name)} ${quoted(String(one))}`);
   }
   if (options["files"] === true) words.push("--out results");
+  if (command === "report" && file !== null) words.push(`--out ${quoted(file)}`);
   return words.join(" ");
 }
 
