@@ -19,6 +19,7 @@ import type { Complex } from "../support/complex.js";
 import { modesOf } from "../support/decomposition.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { seeded } from "../support/random.js";
+import { skewedCell } from "../support/skewed-cell.js";
 import { kLetters, lettersIn, vectorOf } from "../support/validate-constraints.js";
 import { floatModes } from "../support/validate-modes.js";
 
@@ -276,16 +277,7 @@ function distanceToSpan(vector: Flat, span: readonly Flat[]): number {
   return length(rest(rest(complex(vector))));
 }
 
-/** An oblique cell, and one with three unequal axes for a group whose new c is a + c. */
 const oblique: Cell = parseCell("5.1 6.3 7.7 84 97 112");
-const skewed: Cell = {
-  a: 10.21,
-  b: 6.05,
-  c: Math.hypot(10.21, 4.71),
-  alpha: 90,
-  beta: (Math.atan2(4.71, 10.21) * 180) / Math.PI,
-  gamma: 90,
-};
 
 /** m·m from components along the unit vectors of the axes. */
 function squaredInCrystal(cell: Cell, m: readonly number[]): number {
@@ -323,7 +315,7 @@ describe("components of moments", () => {
     const group = groupOf("P n m a (a,b,a+c)");
     const written = (components: MomentComponents) => {
       const convention: WritingConvention = { ...ownWriting, components };
-      return writtenSite(group, modes, { convention, cell: skewed, star: false }).irreps.flatMap(
+      return writtenSite(group, modes, { convention, cell: skewedCell, star: false }).irreps.flatMap(
         (irrep) => irrep.modes,
       );
     };
@@ -331,7 +323,7 @@ describe("components of moments", () => {
     lattice.forEach((mode, index) => {
       const scales = new Set<string>();
       mode.numbers?.forEach((atom, number) => {
-        const edges = [skewed.a, skewed.b, skewed.c];
+        const edges = [skewedCell.a, skewedCell.b, skewedCell.c];
         const there = crystal[index]?.numbers?.[number] ?? [];
         atom.forEach(([re, im], axis) => {
           const [x, y] = there[axis] as Complex;
@@ -341,7 +333,7 @@ describe("components of moments", () => {
         for (const part of [0, 1] as const) {
           const real = there.map((entry) => entry[part]);
           const orthogonal = (cartesian[index]?.numbers?.[number] ?? []).map((entry) => entry[part]);
-          expect(dot(orthogonal, orthogonal)).toBeCloseTo(squaredInCrystal(skewed, real), 9);
+          expect(dot(orthogonal, orthogonal)).toBeCloseTo(squaredInCrystal(skewedCell, real), 9);
         }
       });
       expect(scales.size).toBe(1);
@@ -369,7 +361,7 @@ describe("tables in μB along the crystal axes", () => {
     let mixed = 0;
     for (const part of modes.irreps) {
       if (part.multiplicity === 0) continue;
-      const { lattice, crystal } = constraintTexts(groupOf(name), modes, part, { cell: skewed });
+      const { lattice, crystal } = constraintTexts(groupOf(name), modes, part, { cell: skewedCell });
       if (crystal === null) throw new Error("expected a table in μB");
       const random = seeded(seed);
       const names = lettersIn(crystal);
@@ -380,7 +372,7 @@ describe("tables in μB along the crystal axes", () => {
       );
       const sizes = lattice.map((_, atom) =>
         squaredInCrystal(
-          skewed,
+          skewedCell,
           triple(vector, atom).map(([re]) => re),
         ),
       );
@@ -390,7 +382,7 @@ describe("tables in μB along the crystal axes", () => {
       if (crystal.some((text) => text.includes("1.81607"))) mixed += 1;
     }
     // 2a/|a+c| = 2 · 10.21 / √(10.21² + 4.71²) = 1.81607…
-    expect((2 * skewed.a) / skewed.c).toBeCloseTo(1.81607, 5);
+    expect((2 * skewedCell.a) / skewedCell.c).toBeCloseTo(1.81607, 5);
     expect(mixed).toBeGreaterThan(0);
   });
 });

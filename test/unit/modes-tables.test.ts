@@ -19,6 +19,7 @@ import { modesOf } from "../support/decomposition.js";
 import { componentsOf } from "../support/float-group.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { seeded } from "../support/random.js";
+import { skewedCell, withDiagonalC } from "../support/skewed-cell.js";
 import { kLetters, lettersIn, type Vector, vectorOf } from "../support/validate-constraints.js";
 import { floatReversal, reversedField } from "../support/validate-minus-k.js";
 import { floatModes, rankOf } from "../support/validate-modes.js";
@@ -102,19 +103,11 @@ describe("tables of what is allowed", () => {
 
   const orthohexagonal: Cell = { a: 5, b: 5 * Math.sqrt(3), c: 8, alpha: 90, beta: 90, gamma: 90 };
   const doubled: Cell = { ...plainCell, a: 4, b: 8 };
-  const skewed: Cell = {
-    a: 10.21,
-    b: 6.05,
-    c: Math.hypot(10.21, 4.71),
-    alpha: 90,
-    beta: (Math.atan2(4.71, 10.21) * 180) / Math.PI,
-    gamma: 90,
-  };
 
   test.each<readonly [...Case, Cell]>([
     ["P 3 (a,a+2b,c)", "0 0 1/5", "0 0 0", orthohexagonal],
     ["P 3 (a,a+2b,c)", "0 0 1/2", "0.1 0.2 0.3", orthohexagonal],
-    ["P n m a (a,b,a+c)", "0 2/7 0", "0.1 0.2 0.3", skewed],
+    ["P n m a (a,b,a+c)", "0 2/7 0", "0.1 0.2 0.3", skewedCell],
     ["P 4 (a,2b,c)", "0 0 1/5", "0.1 0.1 0.3", doubled],
   ])("in μB are those in lattice components times the axes: %s at %s, site %s", (name, k, site, cell) => {
     const [group, modes] = [groupOf(name), modesOf(name, k, site)];
@@ -387,8 +380,7 @@ test("moments in a plane across any axis are not forced to be parallel, moments 
   expect(found("P 1 2 1", "0 1/5 0", plainCell)).toEqual(["1 EL", "2 EC"]);
   expect(found("P 1 1 2", "0 0 1/5", plainCell)).toEqual(["1 EL", "2 EC"]);
   // The old c axis is the new one less a: a wave with two components, along one line.
-  const skew: Cell = { ...plainCell, c: Math.hypot(4, 7), beta: (Math.atan2(7, 4) * 180) / Math.PI };
-  expect(found("P m m m (a,b,a+c)", "0 0 1/5", skew)).toEqual(["1 EL", "1 EL", "1 EL"]);
+  expect(found("P m m m (a,b,a+c)", "0 0 1/5", withDiagonalC(plainCell))).toEqual(["1 EL", "1 EL", "1 EL"]);
 });
 
 function siteModesAt(name: string, k: string): SiteModes {
