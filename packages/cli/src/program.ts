@@ -57,7 +57,9 @@ function addCommand(program: Command, spec: CommandSpec, onCommand: (line: Parse
   const command = program
     .command(spec.name)
     .summary(spec.summary)
-    .description([`${spec.summary[0]?.toUpperCase()}${spec.summary.slice(1)}.`, spec.limits].filter(Boolean).join("\n\n"))
+    .description(
+      [`${spec.summary[0]?.toUpperCase()}${spec.summary.slice(1)}.`, spec.limits].filter(Boolean).join("\n\n"),
+    )
     .argument(argument, about)
     .addHelpText(
       "after",
