@@ -37,7 +37,7 @@ export function wholeView(data: PeakChartData, width = 940): PeakChartView {
 export function peakChart(data: PeakChartData, view: PeakChartView): Figure {
   const x = positionScale(view);
   const legend = legendMarks(data, view);
-  const lanesTop = legend.height + observedHeight + 10;
+  const lanesTop = legend.height + observedHeight + flagsHeight(data);
   const residualTop = lanesTop + data.candidates.length * laneHeight + 22;
   const candidate = data.candidates[view.candidate];
   const bottom = candidate === undefined ? lanesTop + 4 : residualTop + residualHeight;
@@ -64,6 +64,11 @@ export function peakChart(data: PeakChartData, view: PeakChartView): Figure {
     }. The same numbers stand in the tables.`,
     marks: marks.join(""),
   };
+}
+
+/** Below the peaks, for the marks of those on nuclear lines and λ/2 images: one row, or two where a peak is on both. */
+function flagsHeight({ peaks }: PeakChartData): number {
+  return peaks.some((peak) => peak.onNuclear && peak.onHalfWavelength) ? 20 : 10;
 }
 
 function positionScale({ from, to, width }: PeakChartView): Scale {
