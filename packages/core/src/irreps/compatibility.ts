@@ -11,9 +11,11 @@ import {
   type PhasedNumber,
   type Rational,
   type RationalVector,
+  rational,
   reduceOrder,
   rootOfUnity,
   subtract,
+  zero,
 } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import { smallIrreps } from "./small-irreps.js";
@@ -53,7 +55,8 @@ export function compatibility(group: SpaceGroup, from: WaveVector, to: WaveVecto
   });
   const places = line.littleGroup.operators.map((index) => point.littleGroup.operators.indexOf(index));
   if (places.includes(-1)) throw new Error("the little group of a line is not part of that of its point");
-  const values = [0, 1, 2].map((index) => parameters[index] ?? ([0, 1] as const)) as unknown as RationalVector;
+  // Letters that do not occur take any value.
+  const values = [...parameters, zero, zero, zero] as unknown as RationalVector;
   return {
     from: point,
     to: line,
@@ -97,8 +100,8 @@ function multiplicity(point: readonly PhasedNumber[], line: readonly PhasedNumbe
     const product = multiplyCyclotomic(there.factor, conjugateCyclotomic(here.factor));
     return addCyclotomic(total, multiplyCyclotomic(rootOfUnity(turns), product));
   }, cyclotomicZero);
-  const value = cyclotomicToRational(reduceOrder(sum));
-  if (value === null || value[1] !== 1 || value[0] % line.length !== 0)
-    throw new Error("a multiplicity came out fractional");
-  return value[0] / line.length;
+  const [total, denominator] = cyclotomicToRational(reduceOrder(sum)) as Rational;
+  const [count, rest] = rational(total, denominator * line.length);
+  if (rest !== 1) throw new Error("a multiplicity came out fractional");
+  return count;
 }

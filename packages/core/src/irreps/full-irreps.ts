@@ -68,5 +68,5 @@ export function fullIrrepMatrix(
 }
 
 function rotationKey(operator: SymmetryOperator): string {
-  return `${operator.rotation.join(" ")}/${operator.rotationDenominator}`;
+  return `${operator.rotation.join()}/${operator.rotationDenominator}`;
 }

@@ -25,14 +25,13 @@ import {
 export function unitaryIntertwiner(
   pairs: readonly (readonly [CyclotomicMatrix, CyclotomicMatrix])[],
 ): CyclotomicMatrix {
-  const dimension = pairs[0]?.[0].length ?? 0;
-  for (let seed = 0; seed < dimension * dimension; seed++) {
-    const mean = pairs
-      .map(([left, right]) => outerProduct(left, right, Math.floor(seed / dimension), seed % dimension))
-      .reduce(addCyclotomicMatrices);
-    const entry = mean.flat().find((value) => !isCyclotomicZero(value));
-    if (entry) return normalizedUnitary(scaleCyclotomicMatrix(invertCyclotomic(reduceOrder(entry)), mean));
-  }
+  const [[identity]] = pairs as readonly [(typeof pairs)[number]];
+  for (const a of identity.keys())
+    for (const b of identity.keys()) {
+      const mean = pairs.map(([left, right]) => outerProduct(left, right, a, b)).reduce(addCyclotomicMatrices);
+      const entry = mean.flat().find((value) => !isCyclotomicZero(value));
+      if (entry) return normalizedUnitary(scaleCyclotomicMatrix(invertCyclotomic(reduceOrder(entry)), mean));
+    }
   throw new Error("two equivalent irreps have no intertwiner");
 }
 
@@ -44,12 +43,18 @@ function outerProduct(left: CyclotomicMatrix, right: CyclotomicMatrix, a: number
   );
 }
 
-/** Divides by √m where X X† = m·1; m is rational because one entry of X is 1 and the rest come from roots of unity. */
-function normalizedUnitary(matrix: CyclotomicMatrix): CyclotomicMatrix {
-  const norm = (matrix[0] as readonly Cyclotomic[]).reduce(
-    (sum, entry) => addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(entry))),
+/** Σ a_j b_j*. */
+export function rowProduct(a: readonly Cyclotomic[], b: readonly Cyclotomic[]): Cyclotomic {
+  return a.reduce(
+    (sum, entry, column) => addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(b[column] as Cyclotomic))),
     cyclotomicZero,
   );
+}
+
+/** Divides by √m where X X† = m·1; m is rational because one entry of X is 1 and the rest come from roots of unity. */
+function normalizedUnitary(matrix: CyclotomicMatrix): CyclotomicMatrix {
+  const [row] = matrix as readonly [readonly Cyclotomic[]];
+  const norm = rowProduct(row, row);
   const value = cyclotomicToRational(reduceOrder(norm));
   if (value === null) throw new Error("an intertwiner has no unitary form in a cyclotomic field found by this method");
   const inverseRoot = multiplyCyclotomic(

@@ -1,19 +1,17 @@
 import { star } from "../kvectors/index.js";
 import {
   addForms,
-  type Cyclotomic,
   type CyclotomicMatrix,
   conjugateCyclotomic,
-  isConstantForm,
   negateForm,
   type Phase,
-  rootOfUnity,
   scaleCyclotomicMatrix,
 } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import { littleGroupPlaces } from "./evaluate.js";
 import { unitaryIntertwiner } from "./intertwiner.js";
 import { composePrimitive, invertPrimitive, primitiveOperator } from "./primitive-operators.js";
+import { constantTurns } from "./reality.js";
 import type { SmallIrrep, SmallIrreps } from "./types.js";
 
 /**
@@ -58,7 +56,7 @@ export function minusKRelation(group: SpaceGroup, irreps: SmallIrreps): MinusKRe
         const turns = negateForm(addForms(phase, irreps.phases[index] as Phase));
         return [
           partner.matrices[index] as CyclotomicMatrix,
-          scaleCyclotomicMatrix(constantRoot(turns), conjugateMatrix(irrep.matrices[element] as CyclotomicMatrix)),
+          scaleCyclotomicMatrix(constantTurns(turns), conjugateMatrix(irrep.matrices[element] as CyclotomicMatrix)),
         ];
       });
       return { label: irrep.label, partner: partner.label, matrix: unitaryIntertwiner(pairs) };
@@ -68,10 +66,4 @@ export function minusKRelation(group: SpaceGroup, irreps: SmallIrreps): MinusKRe
 
 export function conjugateMatrix(matrix: CyclotomicMatrix): CyclotomicMatrix {
   return matrix.map((row) => row.map(conjugateCyclotomic));
-}
-
-/** The letters of k cancel wherever k meets −k. */
-function constantRoot(turns: Phase): Cyclotomic {
-  if (!isConstantForm(turns)) throw new Error("a phase between k and −k depends on a free parameter");
-  return rootOfUnity(turns.constant);
 }

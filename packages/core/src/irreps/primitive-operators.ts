@@ -24,9 +24,8 @@ export interface PrimitiveOperator {
 /** The operator of that index, its translation over the group's `primitive.denominator`. */
 export function primitiveOperator({ primitive }: SpaceGroup, index: number): PrimitiveOperator {
   const rotation = primitive.rotations[index];
-  const translation = primitive.translations[index];
-  if (!rotation || !translation) throw new RangeError(`the group has no operator ${index}`);
-  return { rotation, translation };
+  if (!rotation) throw new RangeError(`the group has no operator ${index}`);
+  return { rotation, translation: primitive.translations[index] as readonly number[] };
 }
 
 /** The product `a b`, `b` acting first; the translation is not reduced. */
@@ -43,8 +42,8 @@ export function invertPrimitive(a: PrimitiveOperator): PrimitiveOperator {
   return { rotation, translation: rotated(rotation, a.translation).map((entry) => 0 - entry) };
 }
 
-function rotated(rotation: IntegerMatrix, column: readonly number[]): number[] {
-  return [0, 3, 6].map((row) => dotIntegers(rotation.slice(row, row + 3), column));
+export function rotated(rotation: IntegerMatrix, column: readonly number[]): number[] {
+  return [0, 3, 6].map((row) => dotIntegers(rotation.slice(row), column));
 }
 
 /** The components κ = k B of k along the dual of the primitive basis: `k·t = κ·τ` with τ primitive. */

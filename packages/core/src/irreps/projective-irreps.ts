@@ -3,9 +3,7 @@ import {
   type CyclotomicMatrix,
   cyclotomicOne,
   cyclotomicZero,
-  divideCyclotomic,
   equalCyclotomic,
-  isCyclotomicZero,
   multiplyCyclotomicMatrices,
   rational,
   rootOfUnity,
@@ -14,8 +12,9 @@ import {
   traceCyclotomicMatrix,
 } from "../numbers/index.js";
 import { compositionSeries, type SeriesStep } from "./composition-series.js";
-import { unitaryIntertwiner } from "./intertwiner.js";
+import { rowProduct, unitaryIntertwiner } from "./intertwiner.js";
 import type { LittleCoGroup } from "./little-co-group.js";
+import { indexOfCharacter } from "./reality.js";
 
 /** A projective irrep Δ: unitary matrices by element number, `undefined` for elements not reached yet. */
 type Matrices = readonly (CyclotomicMatrix | undefined)[];
@@ -62,17 +61,9 @@ function charactersOn(matrices: Matrices, elements: readonly number[]): Cyclotom
   return elements.map((element) => traceCyclotomicMatrix(matrices[element] as CyclotomicMatrix));
 }
 
-function indexOfCharacter(list: readonly (readonly Cyclotomic[])[], wanted: readonly Cyclotomic[]): number {
-  const index = list.findIndex((one) =>
-    one.every((value, position) => equalCyclotomic(value, wanted[position] as Cyclotomic)),
-  );
-  if (index < 0) throw new Error("a conjugated irrep is not among the irreps of the subgroup");
-  return index;
-}
-
-/** The factor e^{2πi·n/factorOrder}. */
+/** The factor e^{2πi·n/denominator}. */
 function root(group: LittleCoGroup, exponent: number): Cyclotomic {
-  return rootOfUnity(rational(exponent, group.factorOrder));
+  return rootOfUnity(rational(exponent, group.originDenominator));
 }
 
 /** Δˢ(h) = matrix of e_s⁻¹ e_h e_s = e^{2πi[ω(h,s) − ω(s,h')]} Δ(h'), h' = s⁻¹hs. */
@@ -107,7 +98,9 @@ function generatorPower(
 
 /** The induced irrep on blocks e_s^j ⊗ v: block-diagonal Δ^{s^j} on H, a block shift for s. */
 function induced(group: LittleCoGroup, step: SeriesStep, orbit: readonly Matrices[]): Matrices {
-  const dimension = orbit[0]?.[0]?.length ?? 0;
+  const [first] = orbit as readonly [Matrices];
+  const unit = first[0] as CyclotomicMatrix;
+  const dimension = unit.length;
   const size = dimension * orbit.length;
   const blocks = (place: (row: number, column: number) => CyclotomicMatrix | null): CyclotomicMatrix =>
     Array.from({ length: size }, (_, row) =>
@@ -120,10 +113,9 @@ function induced(group: LittleCoGroup, step: SeriesStep, orbit: readonly Matrice
     );
   const base: (CyclotomicMatrix | undefined)[] = new Array(group.size);
   for (const h of step.subgroup)
-    base[h] = blocks((row, column) => (row === column ? (orbit[row]?.[h] as CyclotomicMatrix) : null));
+    base[h] = blocks((row, column) => (row === column ? ((orbit[row] as Matrices)[h] as CyclotomicMatrix) : null));
   const { element, exponent } = generatorPower(group, step);
-  const wrap = scaledMatrix(root(group, exponent), orbit[0]?.[element] as CyclotomicMatrix);
-  const unit = orbit[0]?.[0] as CyclotomicMatrix;
+  const wrap = scaledMatrix(root(group, exponent), first[element] as CyclotomicMatrix);
   const last = orbit.length - 1;
   const shift = blocks((row, column) => (row === column + 1 ? unit : row === 0 && column === last ? wrap : null));
   return completed(group, step, base, shift);
@@ -133,10 +125,11 @@ function induced(group: LittleCoGroup, step: SeriesStep, orbit: readonly Matrice
 function completed(group: LittleCoGroup, step: SeriesStep, base: Matrices, shift: CyclotomicMatrix): Matrices {
   const { product, factor, size } = group;
   const result = [...base];
-  let previous: readonly number[] = step.subgroup;
-  for (let power = 1; power < step.index; power++) {
-    previous = previous.map((element) => {
-      const image = product[step.generator * size + element] as number;
+  const next = (element: number): number => product[step.generator * size + element] as number;
+  let coset: readonly number[] = step.subgroup;
+  while (result[next(coset[0] as number)] === undefined)
+    coset = coset.map((element) => {
+      const image = next(element);
       const exponent = -(factor[step.generator * size + element] as number);
       result[image] = scaledMatrix(
         root(group, exponent),
@@ -144,7 +137,6 @@ function completed(group: LittleCoGroup, step: SeriesStep, base: Matrices, shift
       );
       return image;
     });
-  }
   return result;
 }
 
@@ -160,19 +152,12 @@ function extended(group: LittleCoGroup, step: SeriesStep, matrices: Matrices, co
     intertwiner,
   );
   const target = scaledMatrix(root(group, exponent), matrices[element] as CyclotomicMatrix);
-  const turns = rootTurns(ratio(power, target));
+  // Both are unitary, so λ is the product of any row with its counterpart.
+  const [row, counterpart] = [power[0], target[0]] as [readonly Cyclotomic[], readonly Cyclotomic[]];
+  const turns = rootTurns(rowProduct(row, counterpart));
   if (turns === null) throw new Error("an intertwiner's power is no root of unity times the matrix of the power");
   return Array.from({ length: step.index }, (_, branch) => {
     const scale = rootOfUnity(rational(branch * turns[1] - turns[0], turns[1] * step.index));
     return completed(group, step, matrices, scaledMatrix(scale, intertwiner));
   });
-}
-
-/** λ with `a = λ b` for proportional matrices. */
-function ratio(a: CyclotomicMatrix, b: CyclotomicMatrix): Cyclotomic {
-  for (const [row, entries] of b.entries())
-    for (const [column, entry] of entries.entries())
-      if (!isCyclotomicZero(entry))
-        return divideCyclotomic((a[row] as readonly Cyclotomic[])[column] as Cyclotomic, entry);
-  throw new Error("a zero matrix has no ratio");
 }

@@ -9,6 +9,7 @@ import {
   isConstantForm,
   type LinearForm,
   multiplyCyclotomic,
+  type Rational,
   reduceOrder,
   rootOfUnity,
 } from "../numbers/index.js";
@@ -29,8 +30,8 @@ interface PhasedElement {
 export interface RealityContext {
   /** h² for each reversing operator h (kR ≡ −k), one per coset, with e^{2πi k·t}; empty where −k is not in the star. */
   readonly squares: readonly PhasedElement[];
-  /** `g₀⁻¹ g g₀ = {R'|t'}` for each element `g = {R|t}`, g₀ the first reversing operator, with e^{2πi k·(t + t')}. */
-  readonly images: readonly PhasedElement[];
+  /** `g₀⁻¹ g g₀ = {R'|t'}` for each element `g = {R|t}`, g₀ the first reversing operator, with e^{2πi k·(t + t')}; else null. */
+  readonly images: readonly PhasedElement[] | null;
 }
 
 /** @param kappa primitive components of k */
@@ -50,13 +51,13 @@ export function realityContext(
   const back = reverse && invertPrimitive(reverse);
   return {
     squares: squares.map(({ rotation, translation }) => phased(rotation, translation)),
-    images: !back
-      ? []
-      : coGroup.elements.map((element) => {
+    images: back
+      ? coGroup.elements.map((element) => {
           const { rotation, translation } = composePrimitive(composePrimitive(back, element), reverse);
           const sum = translation.map((entry, axis) => entry + (element.translation[axis] as number));
           return phased(rotation, sum);
-        }),
+        })
+      : null,
   };
 }
 
@@ -71,11 +72,12 @@ export function herringReality({ squares }: RealityContext, character: readonly 
     (total, { element, phase }) => addCyclotomic(total, multiplyCyclotomic(phase, character[element] as Cyclotomic)),
     cyclotomicZero,
   );
-  const value = cyclotomicToRational(reduceOrder(sum));
+  // A fraction that is a sum of roots of unity is whole.
+  const [total] = cyclotomicToRational(reduceOrder(sum)) as Rational;
   const count = character.length;
-  if (value?.[1] === 1 && value[0] === count) return "real";
-  if (value?.[1] === 1 && value[0] === -count) return "pseudoreal";
-  if (value?.[0] === 0) return "complex";
+  if (total === count) return "real";
+  if (total === -count) return "pseudoreal";
+  if (total === 0) return "complex";
   throw new Error("Herring's sum is none of 1, -1 and 0");
 }
 
@@ -83,18 +85,23 @@ export function herringReality({ squares }: RealityContext, character: readonly 
  * Characters, by element number, of the irrep `D(g₀⁻¹ g g₀)*` of the same little group: the irrep to which the complex
  * conjugate belongs.
  */
-export function conjugateCharacter({ images }: RealityContext, character: readonly Cyclotomic[]): Cyclotomic[] {
+export function conjugateCharacter(images: readonly PhasedElement[], character: readonly Cyclotomic[]): Cyclotomic[] {
   return images.map(({ element, phase }) =>
     multiplyCyclotomic(conjugateCyclotomic(phase), conjugateCyclotomic(character[element] as Cyclotomic)),
   );
 }
 
-export function sameCharacter(a: readonly Cyclotomic[], b: readonly Cyclotomic[]): boolean {
-  return a.every((value, index) => equalCyclotomic(value, b[index] as Cyclotomic));
+/** Which irrep has a character: different irreps have different ones. */
+export function indexOfCharacter(list: readonly (readonly Cyclotomic[])[], wanted: readonly Cyclotomic[]): number {
+  const index = list.findIndex((character) =>
+    character.every((value, position) => equalCyclotomic(value, wanted[position] as Cyclotomic)),
+  );
+  if (index < 0) throw new Error("a conjugate of an irrep is not among the irreps of its group");
+  return index;
 }
 
 /** e^{2πi·form} of a form whose letters cancel, as they do wherever k meets −k. */
-function constantTurns(form: LinearForm): Cyclotomic {
+export function constantTurns(form: LinearForm): Cyclotomic {
   if (!isConstantForm(form)) throw new Error("a phase between k and −k depends on a free parameter");
   return rootOfUnity(form.constant);
 }

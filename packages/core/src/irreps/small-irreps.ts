@@ -25,7 +25,7 @@ import {
   turnsOf,
 } from "./primitive-operators.js";
 import { projectiveIrreps } from "./projective-irreps.js";
-import { conjugateCharacter, herringReality, realityContext, sameCharacter } from "./reality.js";
+import { conjugateCharacter, herringReality, indexOfCharacter, realityContext } from "./reality.js";
 import type { Reality, SmallIrreps } from "./types.js";
 
 /**
@@ -100,11 +100,7 @@ function canonicalIrreps(group: SpaceGroup, k: WaveVector): CanonicalIrreps {
   const elementByRotation = new Map(
     operators.map((operator, element) => [primitiveOperator(group, operator).rotation.join(), element]),
   );
-  const elementOf = (rotation: IntegerMatrix): number => {
-    const element = elementByRotation.get(rotation.join());
-    if (element === undefined) throw new Error("an operator is not in the little group");
-    return element;
-  };
+  const elementOf = (rotation: IntegerMatrix): number => elementByRotation.get(rotation.join()) as number;
   const gauges = shifts.map((shift) =>
     constantForm(rational(dotIntegers(shift, coGroup.origin), coGroup.originDenominator)),
   );
@@ -117,17 +113,20 @@ function canonicalIrreps(group: SpaceGroup, k: WaveVector): CanonicalIrreps {
     character: matrices.map((matrix) => reduceOrder(traceCyclotomicMatrix(matrix))),
   }));
   const sorted = sortIrreps(made, gauges);
-  const realities = sorted.map(({ character }) => herringReality(context, character));
-  const irreps = sorted.map(({ matrices, character }, position) => ({
-    dimension: (matrices[0] as CyclotomicMatrix).length,
-    reality: realities[position] as Reality,
-    conjugate:
-      realities[position] === "complex" && context.images.length > 0
-        ? findCharacter(sorted, conjugateCharacter(context, character))
-        : null,
-    matrices,
-    character,
-  }));
+  const characters = sorted.map(({ character }) => character);
+  const irreps = sorted.map(({ matrices, character }) => {
+    const reality = herringReality(context, character);
+    return {
+      dimension: (matrices[0] as CyclotomicMatrix).length,
+      reality,
+      conjugate:
+        reality === "complex" && context.images
+          ? indexOfCharacter(characters, conjugateCharacter(context.images, character))
+          : null,
+      matrices,
+      character,
+    };
+  });
   return { irreps, elementOf, phaseOf };
 }
 
@@ -153,21 +152,13 @@ function sortIrreps(irreps: readonly MadeIrrep[], gauges: readonly Phase[]): Mad
     ],
   }));
   keyed.sort((a, b) => {
-    for (let index = 0; index < a.key.length; index++) {
-      const difference = (b.key[index] as number) - (a.key[index] as number);
-      if (difference !== 0) return difference;
-    }
-    return 0;
+    // Different irreps have different characters.
+    const index = a.key.findIndex((entry, position) => entry !== b.key[position]);
+    return (b.key[index] as number) - (a.key[index] as number);
   });
   return keyed.map(({ irrep }) => irrep);
 }
 
 function rounded(value: number): number {
   return Number(value.toFixed(sortingDecimals)) + 0;
-}
-
-function findCharacter(irreps: readonly MadeIrrep[], wanted: readonly Cyclotomic[]): number {
-  const position = irreps.findIndex(({ character }) => sameCharacter(character, wanted));
-  if (position < 0) throw new Error("the conjugate of an irrep is not among the irreps of its little group");
-  return position;
 }

@@ -15,7 +15,7 @@ import {
   squareRootOf,
   subtractForms,
 } from "../numbers/index.js";
-import type { Term } from "./constraint-table.js";
+import type { Term, TermMoment } from "./constraint-table.js";
 
 /**
  * The terms with their common phase, which is free, chosen so that the first letter stands alone where it first
@@ -28,15 +28,15 @@ export function withPlainPhase(terms: readonly Term[]): Term[] {
   // One scale a letter: its terms with different components of the order parameter must keep their ratio.
   const scales = new Map<string, Cyclotomic | null>();
   for (const term of terms) if (!scales.has(term.letter)) scales.set(term.letter, plainScale(term));
-  return terms.map((term) => scaled(common === null ? term : shifted(term, common), scales.get(term.letter) ?? null));
+  return terms.map((term) =>
+    scaled(common === null ? term : shifted(term, common), scales.get(term.letter) as Cyclotomic | null),
+  );
 }
 
-function leading(term: Term): { phase: Phase; entry: Cyclotomic } | null {
-  for (const { phase, vector } of term.moments) {
-    const entry = vector.find((value) => !isCyclotomicZero(value));
-    if (entry) return { phase, entry };
-  }
-  return null;
+/** The first entry that is not zero; each term has one. */
+function leading(term: Term): { phase: Phase; entry: Cyclotomic } {
+  const { phase, vector } = term.moments.find((moment) => !moment.vector.every(isCyclotomicZero)) as TermMoment;
+  return { phase, entry: vector.find((value) => !isCyclotomicZero(value)) as Cyclotomic };
 }
 
 /** |entry| as an exact number when its square is a fraction, else null. */
@@ -53,11 +53,10 @@ interface CommonPhase {
 }
 
 function leadingPhase(term: Term): CommonPhase | null {
-  const found = leading(term);
-  const size = found && modulus(found.entry);
-  if (!found || !size) return null;
-  const turns = rootTurns(multiplyCyclotomic(found.entry, invertCyclotomic(size)));
-  return turns && { phase: found.phase, root: rootOfUnity(turns) };
+  const { phase, entry } = leading(term);
+  const size = modulus(entry);
+  const turns = size && rootTurns(multiplyCyclotomic(entry, invertCyclotomic(size)));
+  return turns && { phase, root: rootOfUnity(turns) };
 }
 
 /** A letter that meets its conjugate absorbs the phase on its own side, so the conjugate's side gets it twice. */
@@ -79,8 +78,7 @@ function shifted(term: Term, { phase, root }: CommonPhase): Term {
 
 /** |leading entry|⁻¹ of a term, the real scale that its letter takes up; null where it has no simple form. */
 function plainScale(term: Term): Cyclotomic | null {
-  const found = leading(term);
-  const size = found && modulus(found.entry);
+  const size = modulus(leading(term).entry);
   return size && invertCyclotomic(size);
 }
 

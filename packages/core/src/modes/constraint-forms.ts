@@ -1,13 +1,14 @@
 import { waveTimesColumn } from "../irreps/index.js";
 import { isHalfLattice, type WaveVector } from "../kvectors/index.js";
-import { addForms, isCyclotomicZero, negateForm, zeroForm } from "../numbers/index.js";
+import { addForms, isCyclotomicZero, negateForm, type Phase, zeroForm } from "../numbers/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../spacegroups/index.js";
 import { axisLengths } from "./axis-lengths.js";
 import { withPlainPhase } from "./common-phase.js";
-import { constraintTerms, type Term, termTable } from "./constraint-table.js";
+import { constraintTerms, type Term, type TermMoment, termTable } from "./constraint-table.js";
 import { type FourierConvention, ownConvention, toConvention } from "./fourier-conventions.js";
 import { orderParameterTerms } from "./minus-k-modes.js";
-import type { IrrepModes, SiteModes } from "./types.js";
+import { modesOf } from "./modes-of.js";
+import type { IrrepModes, ModeMoment, SiteModes } from "./types.js";
 
 /** A table of what is allowed, one text per atom. */
 export interface ConstraintTexts {
@@ -38,7 +39,7 @@ export function constraintTexts(
   const { k } = site.representations;
   if (part.modes.length === 0 || isPlain(options)) return { lattice: part.constraint, crystal: null };
   const half = isHalfLattice(group, k);
-  const conjugate = site.irreps.find(({ irrep }) => irrep.label === part.irrep.conjugateOf)?.modes ?? [];
+  const conjugate = modesOf(site.irreps, part.irrep.conjugateOf);
   const terms = constraintTerms(part.modes, half ? { conjugate } : null);
   return texts(
     group,
@@ -59,7 +60,7 @@ export function orderParameterTexts(
   if (isPlain(options)) return { lattice: part.minusK.constraint, crystal: null };
   const terms = orderParameterTerms(part.minusK, part.modes);
   // Letters that meet their conjugate are complex, the others real.
-  const isComplex = ({ moments }: Term): boolean => moments.some(({ conjugate }) => conjugate === true);
+  const isComplex = ({ moments }: Term): boolean => moments.some(({ conjugate }) => conjugate);
   const moved = inConvention(group, site.representations.k, site, terms, options.convention, isComplex);
   return texts(group, site, options.convention?.phase === "position" ? withPlainPhase(moved) : moved, options);
 }
@@ -103,18 +104,19 @@ function inConvention(
 ): Term[] {
   // Letters absorb a common factor.
   const plain: FourierConvention = { ...convention, factor: "one" };
-  return terms.map((term) => {
-    const start = suborbits[term.suborbit ?? 0]?.[0] ?? 0;
+  const firstPhase = ({ suborbit }: Term): Phase => {
+    const [start] = suborbits[suborbit as number] as readonly [number];
     const turns = waveTimesColumn(k, positions[start] as SiteOrbit["position"]);
-    const whole = convention.exponent === "plus" ? turns : negateForm(turns);
-    const taken = convention.phase === "position" && takesPhase(term) ? whole : zeroForm;
+    return convention.exponent === "plus" ? turns : negateForm(turns);
+  };
+  return terms.map((term) => {
+    const taken = convention.phase === "position" && takesPhase(term) ? firstPhase(term) : zeroForm;
     return {
       ...term,
       moments: term.moments.map((moment, atom) => {
-        const [x, y, z] = moment.vector;
-        if (!x || !y || !z || moment.vector.every(isCyclotomicZero)) return moment;
-        const position = positions[atom] as SiteOrbit["position"];
-        const { phase, vector } = toConvention(group, k, position, { phase: moment.phase, vector: [x, y, z] }, plain);
+        if (moment.vector.every(isCyclotomicZero)) return moment;
+        const own = moment as ModeMoment;
+        const { phase, vector } = toConvention(group, k, positions[atom] as SiteOrbit["position"], own, plain);
         return { ...moment, phase: addForms(phase, moment.conjugate ? negateForm(taken) : taken), vector };
       }),
     };
@@ -148,11 +150,8 @@ function copyOf({ letter }: Term): string {
 
 /** Axis of the first entry that is not zero. */
 export function leadingAxis({ moments }: Pick<Term, "moments">): 0 | 1 | 2 {
-  for (const { vector } of moments) {
-    const axis = vector.findIndex((entry) => !isCyclotomicZero(entry));
-    if (axis >= 0) return axis as 0 | 1 | 2;
-  }
-  return 0;
+  const { vector } = moments.find((moment) => !moment.vector.every(isCyclotomicZero)) as TermMoment;
+  return vector.findIndex((entry) => !isCyclotomicZero(entry)) as 0 | 1 | 2;
 }
 
 /** Lengths that symmetry makes equal differ by rounding only. */

@@ -4,7 +4,6 @@ import {
   conjugateCyclotomic,
   cyclotomicNumbers,
   cyclotomicToRational,
-  cyclotomicZero,
   equalCyclotomic,
   equalForms,
   formatCyclotomic,
@@ -12,7 +11,6 @@ import {
   multiplyCyclotomic,
   negateCyclotomic,
   type Phase,
-  type Rational,
   rational,
   reducedEchelon,
   reduceOrder,
@@ -25,6 +23,13 @@ import {
 import { phaseText } from "./phase-text.js";
 import type { Mode } from "./types.js";
 
+/** Fourier component that an amplitude, or its complex conjugate, puts on one atom. */
+export interface TermMoment {
+  readonly phase: Phase;
+  readonly vector: readonly Cyclotomic[];
+  readonly conjugate?: boolean;
+}
+
 /** One free amplitude and what it, or its complex conjugate, puts on each atom. */
 export interface Term {
   readonly letter: string;
@@ -34,11 +39,7 @@ export interface Term {
   readonly suborbit?: number;
   /** What the entries along a, b, c are multiplied with beside their exact factor: 1 each unless given. */
   readonly ratios?: readonly [number, number, number];
-  readonly moments: readonly {
-    readonly phase: Phase;
-    readonly vector: readonly Cyclotomic[];
-    readonly conjugate?: boolean;
-  }[];
+  readonly moments: readonly TermMoment[];
 }
 
 /**
@@ -52,7 +53,7 @@ export function constraintTable(
   modes: readonly Mode[],
   real: { readonly conjugate: readonly Mode[] } | null,
 ): string[] {
-  return termTable(k, constraintTerms(modes, real), modes[0]?.moments.length ?? 0);
+  return termTable(k, constraintTerms(modes, real), (modes[0] as Mode).moments.length);
 }
 
 /** The amplitudes of `constraintTable` and what each puts on the atoms. */
@@ -105,14 +106,16 @@ function realTerms(modes: readonly Mode[]): Term[] {
 }
 
 function atomText(k: WaveVector, terms: readonly Term[], atom: number): string {
-  const present = terms.filter((term) => term.moments[atom]?.vector.some((entry) => !isCyclotomicZero(entry)));
+  const present = terms
+    .map((term) => ({ term, moment: term.moments[atom] as TermMoment }))
+    .filter(({ moment }) => !moment.vector.every(isCyclotomicZero));
   if (present.length === 0) return "(0, 0, 0)";
-  const phases = present.map((term) => term.moments[atom]?.phase as Phase);
+  const phases = present.map(({ moment }) => moment.phase);
   const common = phases.every((phase) => equalForms(phase, phases[0] as Phase)) ? outer(phases[0] as Phase) : null;
   const vector = [0, 1, 2].map((axis) =>
     sumText(
-      present.flatMap((term, index) => {
-        const entry = term.moments[atom]?.vector[axis] ?? cyclotomicZero;
+      present.flatMap(({ term, moment }, index) => {
+        const entry = moment.vector[axis] as Cyclotomic;
         if (isCyclotomicZero(entry)) return [];
         const phase = common === null ? outer(phases[index] as Phase) : { negative: common.negative, rest: zeroForm };
         const ratio = term.ratios?.[axis as 0 | 1 | 2] ?? 1;
@@ -122,7 +125,7 @@ function atomText(k: WaveVector, terms: readonly Term[], atom: number): string {
             phase.negative ? negateCyclotomic(entry) : entry,
             ratio,
             phase.rest,
-            `${term.letter}${term.moments[atom]?.conjugate === true ? "*" : ""}${term.component ?? ""}`,
+            `${term.letter}${moment.conjugate ? "*" : ""}${term.component ?? ""}`,
           ),
         ];
       }),
@@ -133,15 +136,13 @@ function atomText(k: WaveVector, terms: readonly Term[], atom: number): string {
   return factor === "1" ? text : `${text}·${factor}`;
 }
 
-const half: Rational = [1, 2];
-
 /** Takes a factor −1 out of a phase whose constant is half a turn, so that it can go into the components. */
 function outer(phase: Phase): { negative: boolean; rest: Phase } {
   const reduced = reducePhase(phase);
-  const negative = reduced.constant[0] * half[1] >= reduced.constant[1] * half[0];
-  if (!negative) return { negative, rest: reduced };
   const [numerator, denominator] = reduced.constant;
-  return { negative, rest: { ...reduced, constant: rational(2 * numerator - denominator, 2 * denominator) } };
+  const beyond = 2 * numerator - denominator;
+  if (beyond < 0) return { negative: false, rest: reduced };
+  return { negative: true, rest: { ...reduced, constant: rational(beyond, 2 * denominator) } };
 }
 
 /** `u`, `-u`, `2u`, `-u/2`, `i·u`, `e^{2πi/3}·u`; with a ratio `0.8u`, `0.8·e^{2πi/3}·u`. */

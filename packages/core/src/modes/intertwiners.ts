@@ -6,16 +6,15 @@ import {
   type CyclotomicMatrix,
   cyclotomicFromRational,
   cyclotomicNumbers,
-  isConstantForm,
   type LinearForm,
   multiplyCyclotomicMatrices,
   type Phase,
   type RationalMatrix,
   reducedEchelon,
-  rootOfUnity,
   scaleCyclotomicMatrix,
   subtractForms,
 } from "../numbers/index.js";
+import { constantRoot } from "./constant-root.js";
 
 /** One operator of the little group as it acts on moments (or displacements) of one atom. */
 export interface MomentOperator {
@@ -47,10 +46,9 @@ export function siteIntertwiners(
 ): CyclotomicMatrix[] {
   const { dimension } = irrep;
   const operators = stabilizer.map(({ matrix, phase, element }) => {
-    const turns = subtractForms(phase, phases[element] as Phase);
-    if (!isConstantForm(turns)) throw new Error("a phase of the site symmetry depends on a free parameter of k");
+    const root = constantRoot(subtractForms(phase, phases[element] as Phase));
     return {
-      left: scaleCyclotomicMatrix(rootOfUnity(turns.constant), matrix),
+      left: scaleCyclotomicMatrix(root, matrix),
       right: adjointCyclotomicMatrix(irrep.matrices[element] as CyclotomicMatrix),
     };
   });

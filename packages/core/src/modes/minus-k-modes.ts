@@ -7,11 +7,10 @@ import {
   type CyclotomicMatrix,
   conjugateCyclotomic,
   cyclotomicNumbers,
+  cyclotomicOne,
   cyclotomicZero,
-  isConstantForm,
   isCyclotomicZero,
   multiplyCyclotomic,
-  negateForm,
   type Phase,
   type PhasedNumber,
   reducedEchelon,
@@ -22,9 +21,10 @@ import {
   zeroForm,
 } from "../numbers/index.js";
 import { withPlainPhase } from "./common-phase.js";
-import { letterOf, type Term, termTable } from "./constraint-table.js";
+import { constantRoot } from "./constant-root.js";
+import { letterOf, type Term, type TermMoment, termTable } from "./constraint-table.js";
 import type { OperatorAction } from "./site-action.js";
-import type { MinusKOnModes, Mode } from "./types.js";
+import type { MinusKOnModes, Mode, ModeMoment } from "./types.js";
 
 /** How g₀ acts on the atoms and on one moment. */
 export interface ReversingAction extends OperatorAction {
@@ -52,21 +52,20 @@ export function minusKOnModes(
   const partners = groupCopies(partnerModes);
   const pivots = partners.map(leadingEntry);
   const source = action.image.map((_, atom) => action.image.indexOf(atom));
+  // Modes without a moment on the atom have no phase there.
   const phaseAt = (copy: Copy, atom: number): Phase =>
     subtractForms(
       action.phase[atom] as Phase,
-      (copy.find((mode) => hasMoment(mode, atom)) ?? (copy[0] as Mode)).moments[atom]?.phase ?? zeroForm,
+      copy.map((mode) => momentOf(mode, atom)).find(hasSize)?.phase ?? zeroForm,
     );
+  const [linked] = link.matrix as readonly [readonly Cyclotomic[]];
   const matrix = pivots.map(({ atom, axis }) =>
     copies.map((copy): PhasedNumber => {
       const from = source[atom] as number;
       const factor = copy.reduce((sum, mode, partner) => {
-        const vector = mode.moments[from]?.vector ?? [];
+        const { vector } = momentOf(mode, from);
         const rotated = rowTimesConjugate(action.matrix[axis] as readonly Cyclotomic[], vector);
-        return addCyclotomic(
-          sum,
-          multiplyCyclotomic(rotated, conjugateCyclotomic(link.matrix[0]?.[partner] as Cyclotomic)),
-        );
+        return addCyclotomic(sum, multiplyCyclotomic(rotated, conjugateCyclotomic(linked[partner] as Cyclotomic)));
       }, cyclotomicZero);
       return { phase: phaseAt(copy, from), factor: reduceOrder(factor) };
     }),
@@ -80,9 +79,7 @@ export function minusKOnModes(
     suborbitImages,
     matrix,
     constraint:
-      irrep.reality === "real" && copies.length > 0
-        ? termTable(k, lockedTerms(copies, matrix, suborbitImages), modes[0]?.moments.length ?? 0)
-        : null,
+      irrep.reality === "real" ? termTable(k, lockedTerms(copies, matrix, suborbitImages), action.image.length) : null,
   };
 }
 
@@ -101,19 +98,23 @@ function groupCopies(modes: readonly Mode[]): Copy[] {
 }
 
 function leadingEntry(copy: Copy): { atom: number; axis: number } {
-  const moments = (copy[0] as Mode).moments;
-  const atom = moments.findIndex((moment) => !moment.vector.every(isCyclotomicZero));
-  return { atom, axis: (moments[atom]?.vector ?? []).findIndex((entry) => !isCyclotomicZero(entry)) };
+  const [mode] = copy as readonly [Mode];
+  const atom = mode.moments.findIndex(hasSize);
+  return { atom, axis: momentOf(mode, atom).vector.findIndex((entry) => !isCyclotomicZero(entry)) };
 }
 
-function hasMoment(mode: Mode, atom: number): boolean {
-  return !(mode.moments[atom]?.vector.every(isCyclotomicZero) ?? true);
+function momentOf(mode: Mode, atom: number): ModeMoment {
+  return mode.moments[atom] as ModeMoment;
+}
+
+function hasSize({ vector }: ModeMoment): boolean {
+  return !vector.every(isCyclotomicZero);
 }
 
 function rowTimesConjugate(row: readonly Cyclotomic[], vector: readonly Cyclotomic[]): Cyclotomic {
   return row.reduce(
     (sum, entry, index) =>
-      addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(vector[index] ?? cyclotomicZero))),
+      addCyclotomic(sum, multiplyCyclotomic(entry, conjugateCyclotomic(vector[index] as Cyclotomic))),
     cyclotomicZero,
   );
 }
@@ -139,7 +140,15 @@ function lockedTerms(
 }
 
 function numbersOn(copies: readonly Copy[], suborbit: number): number[] {
-  return copies.flatMap((copy, number) => (copy[0]?.suborbit === suborbit ? [number] : []));
+  return copies.flatMap((copy, number) => (suborbitOf(copy) === suborbit ? [number] : []));
+}
+
+function suborbitOf([mode]: Copy): number {
+  return (mode as Mode).suborbit;
+}
+
+function entryOf(matrix: readonly (readonly PhasedNumber[])[], row: number, column: number): PhasedNumber {
+  return (matrix[row] as readonly PhasedNumber[])[column] as PhasedNumber;
 }
 
 /** Real letters: the fixed space of `a → b a*`, b being B without the half phases of its diagonal. */
@@ -149,14 +158,12 @@ function selfTerms(
   here: readonly number[],
   used: number,
 ): Term[] {
-  if (here.length === 0) return [];
-  const half = new Map(here.map((number) => [number, scaleForm([1, 2], matrix[number]?.[number]?.phase ?? zeroForm)]));
+  const half = new Map(here.map((number) => [number, scaleForm([1, 2], entryOf(matrix, number, number).phase)]));
   const b = here.map((row) =>
     here.map((column) => {
-      const { phase, factor } = (matrix[row] as readonly PhasedNumber[])[column] as PhasedNumber;
+      const { phase, factor } = entryOf(matrix, row, column);
       const rest = subtractForms(phase, addForms(half.get(row) as Phase, half.get(column) as Phase));
-      if (!isConstantForm(rest)) throw new Error("a phase between copies on one suborbit depends on a free parameter");
-      return multiplyCyclotomic(rootOfUnity(rest.constant), factor);
+      return multiplyCyclotomic(constantRoot(rest), factor);
     }),
   );
   const i = rootOfUnity([1, 4]);
@@ -167,7 +174,7 @@ function selfTerms(
     ].map((v) => v.map((entry, row) => addCyclotomic(entry, rowTimesConjugate(b[row] as readonly Cyclotomic[], v)))),
   );
   return realBasis(fixed).flatMap((weights, index) =>
-    partnersOf(copies, here).map(
+    partnersOf(copies).map(
       (partner): Term => ({
         letter: letterOf(used + index),
         component: componentFor(copies, partner),
@@ -178,7 +185,7 @@ function selfTerms(
 }
 
 function cyclotomicOneAt(length: number, position: number): Cyclotomic[] {
-  return Array.from({ length }, (_, index) => (index === position ? rootOfUnity([0, 1]) : cyclotomicZero));
+  return Array.from({ length }, (_, index) => (index === position ? cyclotomicOne : cyclotomicZero));
 }
 
 /** A basis with real coefficients of the real span of complex rows: echelon form of (real part, imaginary part). */
@@ -190,12 +197,14 @@ function realBasis(rows: readonly (readonly Cyclotomic[])[]): Cyclotomic[][] {
     ...row.map(twice),
     ...row.map((entry) => twice(multiplyCyclotomic(conjugateCyclotomic(i), entry))),
   ]);
-  const width = rows[0]?.length ?? 0;
-  return reducedEchelon(split, cyclotomicNumbers).rows.map((row) =>
-    Array.from({ length: width }, (_, index) =>
-      reduceOrder(addCyclotomic(row[index] as Cyclotomic, multiplyCyclotomic(i, row[width + index] as Cyclotomic))),
-    ),
-  );
+  return reducedEchelon(split, cyclotomicNumbers).rows.map((row) => {
+    const width = row.length / 2;
+    return row
+      .slice(width)
+      .map((imaginary, index) =>
+        reduceOrder(addCyclotomic(row[index] as Cyclotomic, multiplyCyclotomic(i, imaginary))),
+      );
+  });
 }
 
 /** Complex letters on the first suborbit, their conjugates behind B on the second. */
@@ -207,27 +216,26 @@ function pairTerms(
   used: number,
 ): Term[] {
   return here.flatMap((column, index) =>
-    partnersOf(copies, here).map((partner): Term => {
-      const own = combined(copies, [column], [rootOfUnity([0, 1])], partner, new Map([[column, zeroForm]]));
-      const phases = new Map(there.map((row) => [row, matrix[row]?.[column]?.phase ?? zeroForm]));
-      const weights = there.map((row) => matrix[row]?.[column]?.factor ?? cyclotomicZero);
+    partnersOf(copies).map((partner): Term => {
+      const own = combined(copies, [column], [cyclotomicOne], partner, new Map([[column, zeroForm]]));
+      const phases = new Map(there.map((row) => [row, entryOf(matrix, row, column).phase]));
+      const weights = there.map((row) => entryOf(matrix, row, column).factor);
       const other = combined(copies, there, weights, partner, phases);
       return {
         letter: letterOf(used + index),
         component: componentFor(copies, partner),
-        suborbit: (copies[column] as Copy)[0]?.suborbit ?? 0,
+        suborbit: suborbitOf(copies[column] as Copy),
         moments: own.map((moment, atom) =>
-          moment.vector.every(isCyclotomicZero)
-            ? { ...(other[atom] as Term["moments"][number]), conjugate: true }
-            : moment,
+          moment.vector.every(isCyclotomicZero) ? { ...(other[atom] as TermMoment), conjugate: true } : moment,
         ),
       };
     }),
   );
 }
 
-function partnersOf(copies: readonly Copy[], numbers: readonly number[]): number[] {
-  return Array.from({ length: copies[numbers[0] as number]?.length ?? 0 }, (_, partner) => partner);
+/** All copies have as many partners. */
+function partnersOf([first]: readonly Copy[]): number[] {
+  return (first as Copy).map((_, partner) => partner);
 }
 
 /** Nothing for one-dimensional irreps; `ξ2` for the second component of an order parameter ξ of several. */
@@ -243,23 +251,19 @@ function combined(
   partner: number,
   phases: ReadonlyMap<number, Phase>,
 ): { phase: Phase; vector: Cyclotomic[] }[] {
-  const atoms = copies[0]?.[0]?.moments.length ?? 0;
-  return Array.from({ length: atoms }, (_, atom) => {
+  const [[{ moments }]] = copies as readonly [readonly [Mode]];
+  return moments.map((_, atom) => {
     let phase: Phase | null = null;
     const vector: Cyclotomic[] = [cyclotomicZero, cyclotomicZero, cyclotomicZero];
     numbers.forEach((number, index) => {
-      const moment = copies[number]?.[partner]?.moments[atom];
+      const moment = momentOf((copies[number] as Copy)[partner] as Mode, atom);
       const weight = weights[index] as Cyclotomic;
-      if (!moment || isCyclotomicZero(weight) || moment.vector.every(isCyclotomicZero)) return;
+      if (isCyclotomicZero(weight) || !hasSize(moment)) return;
       const total = addForms(moment.phase, phases.get(number) as Phase);
       phase ??= total;
-      const step = addForms(total, negateForm(phase));
-      if (!isConstantForm(step)) throw new Error("two copies on one suborbit differ by a phase with a free parameter");
+      const factor = multiplyCyclotomic(constantRoot(subtractForms(total, phase)), weight);
       moment.vector.forEach((entry, axis) => {
-        vector[axis] = addCyclotomic(
-          vector[axis] as Cyclotomic,
-          multiplyCyclotomic(multiplyCyclotomic(rootOfUnity(step.constant), weight), entry),
-        );
+        vector[axis] = addCyclotomic(vector[axis] as Cyclotomic, multiplyCyclotomic(factor, entry));
       });
     });
     return { phase: phase ?? zeroForm, vector: vector.map(reduceOrder) };

@@ -29,11 +29,9 @@ export function momentSizes(group: SpaceGroup, cell: Cell, site: SiteModes, part
   if (part.multiplicity === 0) return { equalAmplitude: false, constantMoment: false, collinear: false };
   const { k } = site.representations;
   const half = isHalfLattice(group, k);
-  const real = half ? realWaves(waves) : null;
   const problem: SizeProblem = {
-    waves: real ?? waves,
+    waves: half ? realWaves(waves) : waves.flatMap((atoms) => [atoms, timesI(atoms)]),
     metric: averagedMetric(group.operators, directMetric(cell)),
-    realAmplitudes: half,
   };
   const period = half ? "none" : quarterLattice(group, site) ? "real part" : "whole";
   const complete = part.vanishingAtoms.length === 0;
@@ -51,11 +49,13 @@ const residualLimit = 1e-14;
 const starts = 24;
 const mostSteps = 200;
 
+/** Per atom three complex components, flat [re, im, re, im, re, im]. */
+type Wave = readonly (readonly number[])[];
+
 interface SizeProblem {
-  /** `waves[mode][atom]` = three complex components, flat [re, im, re, im, re, im]. */
-  readonly waves: readonly (readonly (readonly number[])[])[];
+  /** Waves that real amplitudes multiply; one with a complex amplitude stands here twice, itself and i times itself. */
+  readonly waves: readonly Wave[];
   readonly metric: readonly number[];
-  readonly realAmplitudes: boolean;
 }
 
 function numericModes(site: SiteModes, part: IrrepModes): number[][][] | null {
@@ -71,8 +71,13 @@ function numericModes(site: SiteModes, part: IrrepModes): number[][][] | null {
   return result;
 }
 
+/** i times a wave. */
+function timesI(atoms: Wave): number[][] {
+  return atoms.map((atom) => [0, 2, 4].flatMap((re) => [-(atom[re + 1] as number), atom[re] as number]));
+}
+
 /** Real and imaginary parts of the modes as real modes: together they span the physically irreducible space. */
-function realWaves(waves: readonly (readonly (readonly number[])[])[]): number[][][] {
+function realWaves(waves: readonly Wave[]): number[][][] {
   const parts = waves.flatMap((atoms) =>
     [0, 1].map((part) =>
       atoms.map((atom) => atom.map((_, index) => (index % 2 === 0 ? (atom[index + part] as number) : 0))),
@@ -86,19 +91,14 @@ function quarterLattice(group: SpaceGroup, site: SiteModes): boolean {
   return row !== null && toPrimitiveRow(group.lattice, row).every((entry) => isInteger(multiply([4, 1], entry)));
 }
 
-/** S of every atom for real unknowns x: amplitudes x, or x_re + i x_im. */
-function fields({ waves, realAmplitudes }: SizeProblem, x: ArrayLike<number>): number[][] {
-  const atoms = waves[0]?.length ?? 0;
-  const sum = Array.from({ length: atoms }, () => [0, 0, 0, 0, 0, 0]);
-  waves.forEach((mode, number) => {
-    const re = x[realAmplitudes ? number : 2 * number] as number;
-    const im = realAmplitudes ? 0 : (x[2 * number + 1] as number);
-    mode.forEach((atom, index) => {
+/** S of every atom for the amplitudes x. */
+function fields({ waves }: SizeProblem, x: ArrayLike<number>): number[][] {
+  const sum = (waves[0] as Wave).map(() => [0, 0, 0, 0, 0, 0]);
+  waves.forEach((wave, number) => {
+    const amplitude = x[number] as number;
+    wave.forEach((atom, index) => {
       const target = sum[index] as number[];
-      for (let axis = 0; axis < 6; axis += 2) {
-        target[axis] = (target[axis] as number) + re * (atom[axis] as number) - im * (atom[axis + 1] as number);
-        target[axis + 1] = (target[axis + 1] as number) + re * (atom[axis + 1] as number) + im * (atom[axis] as number);
-      }
+      for (let part = 0; part < 6; part++) target[part] = (target[part] as number) + amplitude * (atom[part] as number);
     });
   });
   return sum;
@@ -126,13 +126,9 @@ function residuals(problem: SizeProblem, period: Period, x: ArrayLike<number>): 
 
 /** Levenberg–Marquardt on the quadratic equations; derivatives are exact because differences of quadratics are. */
 function solvable(problem: SizeProblem, period: Period): boolean {
-  const size = problem.waves.length * (problem.realAmplitudes ? 1 : 2);
   const scale = 1 / Math.sqrt(problem.metric[0] as number);
   for (let start = 0; start < starts; start++) {
-    let x = Float64Array.from(
-      { length: size },
-      (_, index) => scale * Math.sin(1.7 * (start + 1) * (index + 1) + start),
-    );
+    let x = Float64Array.from(problem.waves, (_, index) => scale * Math.sin(1.7 * (start + 1) * (index + 1) + start));
     let r = residuals(problem, period, x);
     let cost = sumOfSquares(r);
     let damping = 1e-3;
@@ -206,10 +202,9 @@ function sumOfSquares(values: readonly number[]): number {
 
 /** Generic amplitudes decide: parallel real and imaginary parts there means parallel everywhere (an identity of polynomials). */
 function isCollinear(problem: SizeProblem): boolean {
-  const size = problem.waves.length * (problem.realAmplitudes ? 1 : 2);
   const vectors = fields(
     problem,
-    Float64Array.from({ length: size }, (_, index) => Math.cos(2.3 * index + 0.7)),
+    problem.waves.map((_, index) => Math.cos(2.3 * index + 0.7)),
   ).flatMap((s) => [[s[0], s[2], s[4]] as number[], [s[1], s[3], s[5]] as number[]]);
   const longest = vectors.reduce(
     (best, vector) => (sumOfSquares(vector) > sumOfSquares(best) ? vector : best),

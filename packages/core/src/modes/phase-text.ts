@@ -9,12 +9,12 @@ import {
   multiply,
   type Phase,
   type Rational,
+  type RationalVector,
   rationalField,
   reducedEchelon,
   reducePhase,
   subtract,
   type VariableNames,
-  vectorOf,
   zero,
 } from "../numbers/index.js";
 
@@ -57,7 +57,7 @@ function inComponents(k: WaveVector, phase: Phase): LinearForm {
   });
   return {
     constant,
-    coefficients: vectorOf(coefficients[0] ?? zero, coefficients[1] ?? zero, coefficients[2] ?? zero),
+    coefficients: coefficients as unknown as RationalVector,
   };
 }
 

@@ -1,6 +1,6 @@
 import { choleskyFactor, choleskySolve } from "../algorithms/index.js";
 import { isHalfLattice, numericWaveVector, parameterValues } from "../kvectors/index.js";
-import { phasedToComplex, toNumber } from "../numbers/index.js";
+import { phasedToComplex, type RationalVector, toNumber } from "../numbers/index.js";
 import { averagedMetric, type Cell, directMetric, type SpaceGroup } from "../spacegroups/index.js";
 import { convertComponents } from "./components.js";
 import type { IrrepModes, SiteModes } from "./types.js";
@@ -44,9 +44,9 @@ export function projectComponents(
   if (numbers === null) return null;
   const half = isHalfLattice(group, k);
   const components = given.map((vector, atom) => {
-    const position = (site.orbit.positions[atom] ?? []).map(toNumber);
+    const position = (site.orbit.positions[atom] as RationalVector).map(toNumber);
     const turns =
-      convention.phase === "position" ? position.reduce((sum, x, axis) => sum + x * (numbers[axis] ?? 0), 0) : 0;
+      convention.phase === "position" ? position.reduce((sum, x, axis) => sum + x * (numbers[axis] as number), 0) : 0;
     const factor = convention.factor === "half" && !half ? 1 / 2 : 1;
     const [cosine, sine] = [Math.cos(2 * Math.PI * turns), -Math.sin(2 * Math.PI * turns)];
     return inLattice(vector, cell, convention).map(([re, written]): Complex => {
@@ -72,8 +72,8 @@ function inLattice(
 ): readonly Complex[] {
   if (components === "lattice" || cell === null) return vector;
   const part = (index: 0 | 1): readonly [number, number, number] => {
-    const [x = 0, y = 0, z = 0] = vector.map((entry) => entry[index]);
-    return convertComponents(cell, [x, y, z], components, "lattice");
+    const along = vector.map((entry) => entry[index]) as [number, number, number];
+    return convertComponents(cell, along, components, "lattice");
   };
   const [real, imaginary] = [part(0), part(1)];
   return ([0, 1, 2] as const).map((axis): Complex => [real[axis], imaginary[axis]]);
@@ -86,7 +86,7 @@ function product(a: Arrangement, b: Arrangement, metric: readonly number[]): Com
   let [re, im] = [0, 0];
   a.forEach((left, atom) => {
     left.forEach(([x, y], row) => {
-      b[atom]?.forEach(([u, v], column) => {
+      (b[atom] as readonly Complex[]).forEach(([u, v], column) => {
         const weight = metric[3 * row + column] as number;
         re += weight * (x * u + y * v);
         im += weight * (x * v - y * u);
@@ -108,7 +108,7 @@ function shareOf(
   if (size === 0) return { label: irrep.label, share: 0, amplitudes: [] };
   const vectors = modes.map(
     ({ moments }): Arrangement =>
-      moments.map(({ phase, vector }) => vector.map((factor) => phasedToComplex({ phase, factor }, values) ?? [0, 0])),
+      moments.map(({ phase, vector }) => vector.map((factor) => phasedToComplex({ phase, factor }, values) as Complex)),
   );
   const normal = new Float64Array(4 * size * size);
   const right = new Float64Array(2 * size);

@@ -1,6 +1,14 @@
 import { waveTimesColumn } from "../irreps/index.js";
 import type { WaveVector } from "../kvectors/index.js";
-import { type LinearForm, lcm, modulo, overCommonDenominator, rational, safe } from "../numbers/index.js";
+import {
+  type LinearForm,
+  lcm,
+  modulo,
+  overCommonDenominator,
+  type RationalVector,
+  rational,
+  safe,
+} from "../numbers/index.js";
 import { fromPrimitiveColumn, type SiteOrbit, type SpaceGroup, toPrimitiveColumn } from "../spacegroups/index.js";
 
 /** How one operator of the little group moves the atoms: `g r_j = r_{image[j]} + a_j`, `phase[j] = k·a_j` in turns. */
@@ -43,14 +51,10 @@ export function siteAction(
       );
       const target = indexOf.get(classKey(moved, denominator));
       if (target === undefined) throw new Error("an operator moves an atom off its orbit");
-      const shift = moved.map((entry, axis) => rational((entry - (atoms[target]?.[axis] as number)) / denominator));
+      const there = atoms[target] as readonly number[];
+      const shift = moved.map((entry, axis) => rational((entry - (there[axis] as number)) / denominator));
       image.push(target);
-      phase.push(
-        waveTimesColumn(
-          k,
-          fromPrimitiveColumn(group.lattice, [shift[0] ?? [0, 1], shift[1] ?? [0, 1], shift[2] ?? [0, 1]]),
-        ),
-      );
+      phase.push(waveTimesColumn(k, fromPrimitiveColumn(group.lattice, shift as unknown as RationalVector)));
     }
     return { image, phase };
   });

@@ -1,4 +1,10 @@
-import { type MinusKRelation, minusKRelation, type SmallIrrep, type SmallIrreps } from "../irreps/index.js";
+import {
+  type MinusKLink,
+  type MinusKRelation,
+  minusKRelation,
+  type SmallIrrep,
+  type SmallIrreps,
+} from "../irreps/index.js";
 import { isHalfLattice } from "../kvectors/index.js";
 import {
   adjointCyclotomicMatrix,
@@ -21,6 +27,7 @@ import type { SiteOrbit, SpaceGroup, SymmetryOperator } from "../spacegroups/ind
 import { constraintTable } from "./constraint-table.js";
 import { type MomentOperator, momentMatrix, siteIntertwiners } from "./intertwiners.js";
 import { minusKOnModes, type ReversingAction } from "./minus-k-modes.js";
+import { modesOf } from "./modes-of.js";
 import { type OperatorAction, siteAction, suborbits } from "./site-action.js";
 import type { IrrepModes, MinusKOnModes, Mode, ModeMoment, SiteModes } from "./types.js";
 
@@ -65,25 +72,22 @@ export function siteModes(
     return { irrep, modes: copies.flatMap((copy, number) => modesOfCopy(copy, number + 1)) };
   });
   const relation = irreps.minusK === "in star" ? minusKRelation(group, irreps) : null;
-  const reversing = relation === null ? null : reversingAction(group, irreps, orbit, relation, axial);
+  const reversing = relation && reversingAction(group, irreps, orbit, relation, axial);
   const onModes = (irrep: SmallIrrep, modes: readonly Mode[], number: number): MinusKOnModes | null => {
-    const link = relation?.links[number];
-    if (!relation || !reversing || !link || modes.length === 0) return null;
-    const partnerModes = plain.find((other) => other.irrep.label === link.partner)?.modes ?? [];
-    return minusKOnModes(irreps.k, irrep, link, relation, reversing, parts, modes, partnerModes);
+    if (!relation || modes.length === 0) return null;
+    const link = relation.links[number] as MinusKLink;
+    const partnerModes = modesOf(plain, link.partner);
+    return minusKOnModes(irreps.k, irrep, link, relation, reversing as ReversingAction, parts, modes, partnerModes);
   };
   return {
     orbit,
     suborbits: parts,
     axial,
     representations: irreps,
-    irreps: plain.map(({ irrep, modes }, number) => {
-      const partner = plain.find((other) => other.irrep.label === irrep.conjugateOf);
-      return {
-        ...describe(irrep, modes, real, real && partner ? partner.modes : [], irreps),
-        minusK: onModes(irrep, modes, number),
-      };
-    }),
+    irreps: plain.map(({ irrep, modes }, number) => ({
+      ...describe(irrep, modes, real, modesOf(plain, irrep.conjugateOf), irreps),
+      minusK: onModes(irrep, modes, number),
+    })),
   };
 }
 
@@ -136,7 +140,7 @@ function copiesOnSuborbit(
   const flat = rows.map((blocks) =>
     Array.from({ length: dimension }, (_, partner) =>
       blocks.flatMap((block) =>
-        [0, 1, 2].map((axis) => (block === null ? cyclotomicZero : (block[axis]?.[partner] as Cyclotomic))),
+        [0, 1, 2].map((axis) => (block === null ? cyclotomicZero : entryOf(block, axis, partner))),
       ),
     ).flat(),
   );
@@ -172,6 +176,10 @@ function carried(irrep: SmallIrrep, { matrix, element }: MomentOperator, start: 
   );
 }
 
+function entryOf(block: CyclotomicMatrix, axis: number, partner: number): Cyclotomic {
+  return (block[axis] as readonly Cyclotomic[])[partner] as Cyclotomic;
+}
+
 const zeroMoment: ModeMoment = { phase: zeroForm, vector: [cyclotomicZero, cyclotomicZero, cyclotomicZero] };
 
 function modesOfCopy(copy: Copy & { readonly suborbit: number }, number: number): Mode[] {
@@ -181,11 +189,7 @@ function modesOfCopy(copy: Copy & { readonly suborbit: number }, number: number)
     suborbit: copy.suborbit,
     moments: copy.blocks.map(({ phase, block }): ModeMoment => {
       if (block === null) return zeroMoment;
-      const vector = [0, 1, 2].map((axis) => block[axis]?.[partner] as Cyclotomic) as [
-        Cyclotomic,
-        Cyclotomic,
-        Cyclotomic,
-      ];
+      const vector = [0, 1, 2].map((axis) => entryOf(block, axis, partner)) as [Cyclotomic, Cyclotomic, Cyclotomic];
       return vector.every(isCyclotomicZero) ? zeroMoment : { phase, vector };
     }),
   }));
@@ -199,9 +203,7 @@ function describe(
   irreps: SmallIrreps,
 ): Omit<IrrepModes, "minusK"> {
   const multiplicity = modes.length / irrep.dimension;
-  const doubled = real ? irrep.reality === "complex" : true;
-  const freeParameters = modes.length * (doubled ? 2 : 1);
-  const atoms = modes[0]?.moments.length ?? 0;
+  const freeParameters = modes.length * (real && irrep.reality !== "complex" ? 1 : 2);
   return {
     irrep,
     multiplicity,
@@ -209,8 +211,8 @@ function describe(
     constraint: modes.length === 0 ? [] : constraintTable(irreps.k, modes, real ? { conjugate } : null),
     freeParameters,
     freeParametersWithMinusK: irreps.minusK === "in star" ? lockedParameters(irrep, multiplicity) : freeParameters,
-    vanishingAtoms: Array.from({ length: atoms }, (_, atom) => atom).filter((atom) =>
-      modes.every((mode) => mode.moments[atom]?.vector.every(isCyclotomicZero) ?? true),
+    vanishingAtoms: (modes[0]?.moments ?? []).flatMap((_, atom) =>
+      modes.every((mode) => (mode.moments[atom] as ModeMoment).vector.every(isCyclotomicZero)) ? [atom] : [],
     ),
   };
 }

@@ -1,8 +1,15 @@
 import { star, type WaveVector } from "../kvectors/index.js";
-import { addForms, integerDeterminant, matrixFrom, multiplyCyclotomicMatrices, reducePhase } from "../numbers/index.js";
+import {
+  addForms,
+  integerDeterminant,
+  matrixFrom,
+  multiplyCyclotomicMatrices,
+  type Phase,
+  reducePhase,
+} from "../numbers/index.js";
 import type { SpaceGroup, SymmetryOperator } from "../spacegroups/index.js";
 import { momentMatrix } from "./intertwiners.js";
-import { siteAction } from "./site-action.js";
+import { type OperatorAction, siteAction } from "./site-action.js";
 import type { Mode, ModeMoment, SiteModes } from "./types.js";
 
 /** The modes of one site carried to one arm of the star. */
@@ -22,19 +29,19 @@ export function starModes(group: SpaceGroup, modes: SiteModes): readonly ArmMode
   const { arms, representatives } = star(group, modes.representations.k);
   return arms.map((arm, index) => {
     const operator = representatives[index] as number;
-    const [action] = siteAction(group, arm, modes.orbit, [operator]);
+    const [action] = siteAction(group, arm, modes.orbit, [operator]) as [OperatorAction];
     const { rotation, rotationDenominator } = group.operators[operator] as SymmetryOperator;
     const determinant = integerDeterminant(group.primitive.rotations[operator] as readonly number[]);
     const matrix = momentMatrix(matrixFrom(rotation, rotationDenominator), modes.axial ? determinant : 1);
     const carry = (moments: readonly ModeMoment[]): ModeMoment[] => {
-      const carried = [...moments];
+      const carried = new Array<ModeMoment>(moments.length);
       moments.forEach((moment, atom) => {
         const rotated = multiplyCyclotomicMatrices(
           matrix,
           moment.vector.map((entry) => [entry]),
         );
-        carried[action?.image[atom] as number] = {
-          phase: reducePhase(addForms(moment.phase, action?.phase[atom] as ModeMoment["phase"])),
+        carried[action.image[atom] as number] = {
+          phase: reducePhase(addForms(moment.phase, action.phase[atom] as Phase)),
           vector: rotated.map((row) => row[0]) as unknown as ModeMoment["vector"],
         };
       });

@@ -1,5 +1,5 @@
 import { parameterValues, type WaveVector } from "../kvectors/index.js";
-import { type PhasedNumber, phasedToComplex } from "../numbers/index.js";
+import { type PhasedNumber, phasedToComplex, type RationalVector } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { axisLengths } from "./axis-lengths.js";
 import { convertComponents } from "./components.js";
@@ -71,8 +71,8 @@ export function writtenSite(group: SpaceGroup, site: SiteModes, options: Writing
   const lengths = cell && axisLengths(group, cell);
   const write = (arm: WaveVector, part: IrrepModes, mode: Mode): WrittenMode => {
     // The first partner of the copy on the first arm, so that the matrices of the irrep hold for what is written.
-    const leading = part.modes.find(({ copy }) => copy === mode.copy)?.moments ?? [];
-    const unit = lengths === null ? 1 : lengths[leadingAxis({ moments: leading })];
+    const leading = part.modes.find(({ copy }) => copy === mode.copy) as Mode;
+    const unit = lengths === null ? 1 : lengths[leadingAxis(leading)];
     return writtenMode(group, site, arm, mode, convention, cell && { cell, unit });
   };
   const { k } = site.representations;
@@ -107,8 +107,7 @@ function writtenMode(
   scale: { readonly cell: Cell; readonly unit: number } | null,
 ): WrittenMode {
   const moments = mode.moments.map((moment, atom): ModeMoment => {
-    const position = orbit.positions[atom];
-    if (!position) throw new RangeError(`the orbit has no atom ${atom}`);
+    const position = orbit.positions[atom] as RationalVector;
     return toConvention(group, arm, position, moment, convention);
   });
   const exact = moments.map(({ phase, vector }) => vector.map((factor): PhasedNumber => ({ phase, factor })));
@@ -121,7 +120,7 @@ function writtenMode(
     numbers:
       values &&
       exact.map((vector) => {
-        const numbers = vector.map((entry) => phasedToComplex(entry, values) ?? ([0, 0] as const));
+        const numbers = vector.map((entry) => phasedToComplex(entry, values) as [number, number]);
         return scale === null || convention.components === "lattice"
           ? numbers
           : inAxes(numbers, scale.cell, scale.unit, convention.components);
@@ -136,8 +135,8 @@ function inAxes(
   components: MomentComponents,
 ): [number, number][] {
   const part = (index: 0 | 1): readonly [number, number, number] => {
-    const [x = 0, y = 0, z = 0] = vector.map((entry) => entry[index] / unit);
-    return convertComponents(cell, [x, y, z], "lattice", components);
+    const along = vector.map((entry) => entry[index] / unit) as [number, number, number];
+    return convertComponents(cell, along, "lattice", components);
   };
   const [real, imaginary] = [part(0), part(1)];
   return ([0, 1, 2] as const).map((axis) => [real[axis], imaginary[axis]]);
