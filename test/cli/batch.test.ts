@@ -2,8 +2,9 @@ import { readFileSync } from "node:fs";
 import { join } from "node:path";
 import { describe, expect, test } from "vitest";
 import { commandSpecs } from "../../packages/cli/src/commands/index.ts";
-import { buildProgram, type ParsedLine } from "../../packages/cli/src/program.ts";
-import { hideGroups, requestFrom } from "../../packages/cli/src/request.ts";
+import { parseLine } from "../../packages/cli/src/parse-line.ts";
+import type { ParsedLine } from "../../packages/cli/src/parsed-line.ts";
+import { requestFrom } from "../../packages/cli/src/request.ts";
 import { batchLines, batchRequest } from "../support/batch-requests.js";
 import { root } from "../tools/paths.mjs";
 import { kvane, type RunOptions, scratchFolder, shellWords } from "./command.js";
@@ -14,16 +15,8 @@ const oneLine = (json: string) => JSON.stringify(JSON.parse(json));
 
 /** The request that a line of the command line makes, as other programs would write it. */
 function requestOf(words: readonly string[]): object {
-  const lines: ParsedLine[] = [];
-  buildProgram(
-    words[0],
-    "",
-    () => {},
-    (line) => lines.push(line),
-  ).parse(hideGroups(words), { from: "user" });
-  const given = Object.entries(requestFrom(lines[0] as ParsedLine)).filter(
-    ([, value]) => value !== null && value !== false,
-  );
+  const line = parseLine(words, { write: () => {}, writeError: () => {} }) as ParsedLine;
+  const given = Object.entries(requestFrom(line)).filter(([, value]) => value !== null && value !== false);
   return Object.fromEntries(given);
 }
 

@@ -3,16 +3,10 @@ import { Command, Option } from "commander";
 import type { CommandSpec } from "./command-spec.js";
 import { commandSpecs } from "./commands/index.js";
 import { type OptionName, type OptionSpec, optionSpecs } from "./options.js";
+import type { ParsedLine } from "./parsed-line.js";
 
 /** Fixed, so that help looks the same everywhere. */
 const helpWidth = 100;
-
-/** What a parsed line holds: the command, its first word and its options, by the attribute names of the options. */
-export interface ParsedLine {
-  readonly spec: CommandSpec;
-  readonly argument: string | null;
-  readonly options: { readonly [attribute: string]: unknown };
-}
 
 /**
  * The program; `onCommand` gets what was parsed, `write` all help. Where the first word is a command, the parser is not
@@ -105,11 +99,3 @@ function givenTwice(flags: string): never {
     remedy: "leave one of them out",
   });
 }
-
-/** Options that take a value, as written: what follows them is no GROUP. */
-export const valueOptions: ReadonlySet<string> = new Set(
-  Object.values(optionSpecs)
-    .map(({ flags }) => flags)
-    .filter((flags) => flags.includes("<"))
-    .map((flags) => flags.split(" ")[0] as string),
-);

@@ -1,7 +1,7 @@
 import { fail } from "@kvane/core/errors";
 import type { Request } from "@kvane/core/job";
 import { exampleMoments, exampleStructure, exampleStudy } from "./host.js";
-import { type ParsedLine, valueOptions } from "./program.js";
+import type { ParsedLine } from "./parsed-line.js";
 
 /** What the command line wants done with the answer. */
 export interface OutputWishes {
@@ -11,17 +11,6 @@ export interface OutputWishes {
   readonly out: string | null;
   readonly force: boolean;
   readonly quiet: boolean;
-}
-
-/**
- * Words that begin with `-` and go on with a letter of a Hall symbol or a coordinate are a GROUP, not an option: a blank
- * in front hides them from the parser.
- */
-export function hideGroups(words: readonly string[]): string[] {
-  return words.map((word, index) => {
-    const isValue = index > 0 && valueOptions.has(words[index - 1] as string);
-    return !isValue && /^-[PABCIRFHxyz]/.test(word) ? ` ${word}` : word;
-  });
 }
 
 /** Whether the first word is a file: a study or a CIF. */

@@ -1,70 +1,34 @@
 import { resolve } from "node:path";
-import { fail, KvaneError, type Problem, problem, problemCodes } from "@kvane/core/errors";
-import { answer, exitStatusOf, type JobHost, type Request, refusal, version } from "@kvane/core/job";
+import { fail, KvaneError, problem, problemCodes } from "@kvane/core/errors";
+import { answer, exitStatusOf, type JobHost, type Request, refusal } from "@kvane/core/job";
 import { type Envelope, type HelpRecord, jsonText } from "@kvane/core/reports";
 import { commandSpecs } from "./commands/index.js";
 import { checkForm, deliver, packed } from "./deliver.js";
 import { problemsText } from "./errors.js";
 import { type CommandHost, commandHost, exampleRequests } from "./host.js";
 import { checkFree } from "./output.js";
-import { buildProgram, type ParsedLine } from "./program.js";
+import type { ParsedLine } from "./parsed-line.js";
+import { plainLine } from "./plain-line.js";
 import { progressLine } from "./progress.js";
-import { hideGroups, requestFrom, wishesFrom } from "./request.js";
+import { requestFrom, wishesFrom } from "./request.js";
 import type { Surroundings } from "./surroundings.js";
-import { usageProblem } from "./usage.js";
 
 /** Does what the words ask and gives the exit status. */
 export async function runCommand(words: readonly string[], surroundings: Surroundings): Promise<number> {
   const [command] = words;
   const asJson = words.includes("--json");
   try {
-    const line = parse(words, surroundings);
+    const line = plainLine(words) ?? (await import("./parse-line.js")).parseLine(words, surroundings);
     return line === null ? 0 : await execute(line, surroundings);
   } catch (error) {
-    const problems = problemsOf(error, words);
-    return problems.length === 0 ? 0 : refuse(refusal(command ?? "", problems), null, asJson, null, surroundings);
+    if (!(error instanceof KvaneError)) throw error;
+    return refuse(refusal(command ?? "", error.problems), null, asJson, null, surroundings);
   }
 }
-
-/** Problems of the usage and of the output; none where the parser has only shown help. */
-function problemsOf(error: unknown, words: readonly string[]): readonly Problem[] {
-  if (error instanceof KvaneError) return error.problems;
-  const problem = usageProblem(error, words);
-  return problem === null ? [] : [problem];
-}
-
-/** The command with its first word and options; null where there is nothing to do but what the parser has printed. */
-function parse(words: readonly string[], { write, writeError }: Surroundings): ParsedLine | null {
-  const found: ParsedLine[] = [];
-  const asked = helpOfCommand(words);
-  const program = buildProgram(asked[0], version, write, (line) => found.push(line));
-  if (words.length === 0) {
-    writeError(program.helpInformation());
-    throw new KvaneError([nothingAsked]);
-  }
-  program.parse(hideGroups(asked), { from: "user" });
-  return found[0] ?? null;
-}
-
-const nothingAsked: Problem = {
-  code: "missing-argument",
-  message: "no command was given",
-  where: { file: null, line: null, column: null, path: null, argument: "COMMAND" },
-  expected: "a command of the list above",
-  found: "nothing",
-  remedy: "begin with `kvane run --example`",
-};
 
 const interrupted = problem("interrupted", "the work was cancelled before it ended", {
   remedy: "start the command again; nothing was written",
 });
-
-/** `kvane help ops` is `kvane ops --help`. */
-function helpOfCommand(words: readonly string[]): readonly string[] {
-  const [first, topic] = words;
-  const named = first === "help" && words.length === 2 && commandSpecs.some(({ name }) => name === topic);
-  return named ? [topic as string, "--help"] : words;
-}
 
 /** Prints the script of a shell, made from the table of commands. */
 async function writeCompletion(shell: string | null, host: JobHost, write: Surroundings["write"]): Promise<number> {
