@@ -3,6 +3,7 @@ import { describe, expect, test } from "vitest";
 import { littleGroupPlaces } from "#core/irreps/evaluate.js";
 import { unitaryIntertwiner } from "#core/irreps/intertwiner.js";
 import { primitiveOperator } from "#core/irreps/primitive-operators.js";
+import { constantTurns, herringReality, indexOfCharacter } from "#core/irreps/reality.js";
 import {
   addCyclotomic,
   adjointCyclotomicMatrix,
@@ -93,4 +94,27 @@ test("operators that are not in the group, or not in the little group, are refus
   const outside = group.operators.findIndex((_, at) => !irreps.littleGroup.operators.includes(at));
   const place = littleGroupPlaces(group, irreps);
   expect(() => place(primitiveOperator(group, outside))).toThrow("not in the little group");
+});
+
+test("what is no irrep of the group is refused", () => {
+  // Characters of a group of two elements.
+  const irreps = [
+    [number(1), number(1)],
+    [number(1), number(-1)],
+  ];
+  expect(irreps.map((character) => indexOfCharacter(irreps, character))).toEqual([0, 1]);
+  expect(() => indexOfCharacter(irreps, [number(2), number(0)])).toThrow("not among the irreps");
+  // Herring's sum over both squares, the identity; of the sum of the two irreps it is twice that of each.
+  const square = { element: 0, phase: number(1) };
+  const context = { squares: [square, square], images: null };
+  expect(irreps.map((character) => herringReality(context, character))).toEqual(["real", "real"]);
+  expect(() => herringReality(context, [number(2), number(0)])).toThrow("none of 1, -1 and 0");
+});
+
+test("phases between k and −k hold no letter", () => {
+  const turns = { constant: rational(1, 3), coefficients: [rational(0), rational(0), rational(0)] } as const;
+  expect(constantTurns(turns)).toEqual(rootOfUnity(rational(1, 3)));
+  expect(() => constantTurns({ ...turns, coefficients: [rational(0), rational(1), rational(0)] })).toThrow(
+    "free parameter",
+  );
 });

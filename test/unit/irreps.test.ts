@@ -1,4 +1,4 @@
-import { compatibility, littleGroupElement, type SmallIrreps, smallIrreps } from "@kvane/core/irreps";
+import { compatibility, fullIrreps, littleGroupElement, type SmallIrreps, smallIrreps } from "@kvane/core/irreps";
 import { canonicalPlacement, manifold, type WaveVector } from "@kvane/core/kvectors";
 import type { SymmetryOperator } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
@@ -168,6 +168,24 @@ describe("small irreps", () => {
   });
 });
 
+test.each([
+  // Arms times dimension, whose squares for one arm add up to the order of the little co-group (24, 24, 12, 8, 2): one
+  // arm at Γ and at A, where the screw axis and the planes leave A1, A2 of dimension 2 and A3 of dimension 4; two at K,
+  // three at M, twelve of a general k with l = 0.
+  ["0 0 0", [1, 1, 1, 1, 1, 1, 1, 1, 2, 2, 2, 2]],
+  ["0 0 1/2", [2, 2, 4]],
+  ["1/3 1/3 0", [2, 2, 2, 2, 4, 4]],
+  ["1/2 0 0", [3, 3, 3, 3, 3, 3, 3, 3]],
+  ["1/5 1/7 0", [12, 12]],
+])("full irreps of P 63/m m c at %s have the dimensions of their matrices", (k, dimensions) => {
+  const group = groupOf("P 63/m m c");
+  const full = fullIrreps(group, smallIrreps(group, wave(k)));
+  expect(full.map(({ dimension }) => dimension).sort((a, b) => a - b)).toEqual(dimensions);
+  for (const { dimension, matrices } of full)
+    for (const matrix of matrices)
+      expect([matrix.length, ...matrix.map((row) => row.length)]).toEqual(new Array(dimension + 1).fill(dimension));
+});
+
 type Character = SmallIrreps["irreps"][number]["characters"][number];
 
 function valueAt(character: Character | undefined, letters: readonly number[]): [number, number] {
@@ -212,6 +230,14 @@ describe("compatibility", () => {
     expect(rows.map(({ multiplicities }) => multiplicities)).toEqual(
       rows.map((_, row) => rows.map((_other, column) => (row === column ? 1 : 0))),
     );
+  });
+
+  test("takes the whole line of a k that is special only together with −k", () => {
+    // In a polar group the fourfold axis through Γ is one line (0,0,w), Γ and Z being like all its points.
+    const { to, parameters, rows } = compatibility(groupOf("P 4"), wave("0 0 1/2"), wave("0 0 0"));
+    expect(to.k.values).toBeNull();
+    expect(parameters).toEqual([[1, 2]]);
+    expect(rows.map(({ multiplicities }) => [...multiplicities].sort())).toEqual(rows.map(() => [0, 0, 0, 1]));
   });
 
   test("needs a line or plane through the k", () => {

@@ -1,8 +1,11 @@
 import { smallIrreps } from "@kvane/core/irreps";
 import { manifold } from "@kvane/core/kvectors";
-import { type SiteModes, siteModes } from "@kvane/core/modes";
-import { siteOrbit } from "@kvane/core/spacegroups";
+import { constraintTexts, type SiteModes, siteModes } from "@kvane/core/modes";
+import { type Cell, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
+import { constantRoot } from "#core/modes/constant-root.js";
+import { letterOf } from "#core/modes/constraint-table.js";
+import { rootOfUnity, zero } from "#core/numbers/index.js";
 import { modesOf } from "../support/decomposition.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { constraintProblems } from "../support/validate-constraints.js";
@@ -82,5 +85,72 @@ describe("modes", () => {
       );
       expect(part.vanishingAtoms).toEqual(part.multiplicity === 0 ? [] : empty);
     }
+  });
+
+  test("even at one atom and odd at the other leave one of them without a moment", () => {
+    // 4/m, two atoms on inversion centres; −1 moves that at x = 1/2 by −a, and e^{2πi k·a} = −1.
+    const modes = modesOf("P 4/m", "1/2 0 0", "0 1/2 0");
+    const { operators } = groupOf("P 4/m");
+    const inversion = modes.representations.littleGroup.operators.findIndex(
+      (index) => operators[index]?.rotation.join() === "-1,0,0,0,-1,0,0,0,-1",
+    );
+    const [first] = modes.orbit.positions;
+    const atHalf = first?.[0][0] === 0 ? 1 : 0;
+    const found = modes.irreps.map(({ irrep, vanishingAtoms }) => [
+      irrep.characters[inversion]?.factor.coefficients[0],
+      vanishingAtoms,
+    ]);
+    expect(found.length).toBe(4);
+    for (const [parity, vanishing] of found) expect(vanishing).toEqual([parity === 1 ? atHalf : 1 - atHalf]);
+  });
+
+  test("of an irrep that does not occur have no parameters", () => {
+    // mm2 about k: moments along x, y and z belong to three of the four irreps.
+    const parts = modesOf("P m m m", "0 0 1/5", "0 0 0").irreps;
+    const counts = parts.map(({ multiplicity, freeParameters, freeParametersWithMinusK, minusK }) => [
+      multiplicity,
+      freeParameters,
+      freeParametersWithMinusK,
+      minusK === null,
+    ]);
+    // One complex amplitude each; one order parameter has no more.
+    expect(counts.sort()).toEqual([
+      [0, 0, 0, true],
+      [1, 2, 2, false],
+      [1, 2, 2, false],
+      [1, 2, 2, false],
+    ]);
+  });
+
+  test("have phases without letters between operators that fix an atom", () => {
+    const turns = { constant: [1, 4], coefficients: [zero, zero, zero] } as const;
+    expect(constantRoot(turns)).toEqual(rootOfUnity([1, 4]));
+    expect(() => constantRoot({ ...turns, coefficients: [zero, zero, [1, 2]] })).toThrow("free parameter");
+  });
+});
+
+describe("tables", () => {
+  test("name amplitudes u v w first, with primes where the alphabet runs out", () => {
+    const names = Array.from({ length: 200 }, (_, index) => letterOf(index));
+    expect(names.slice(0, 3)).toEqual(["u", "v", "w"]);
+    expect(new Set(names).size).toBe(200);
+    const again = names.indexOf("u'");
+    expect(names.slice(again, 2 * again)).toEqual(names.slice(0, again).map((name) => `${name}'`));
+  });
+
+  test("in μB have a ratio of axes in front of a letter, to six digits", () => {
+    // The plane across a takes a + c to c − a, that is c' to c' − 2a: beside u stands 2w, in μB 2a/|a+c| = √2 times w.
+    const group = groupOf("P m 1 1 (a,b,a+c)");
+    const modes = modesOf("P m 1 1 (a,b,a+c)", "0 0 0", "0.1 0.2 0.3");
+    const cell: Cell = { a: 3, b: 4, c: 3 * Math.SQRT2, alpha: 90, beta: 45, gamma: 90 };
+    const tables = modes.irreps.map((part) => constraintTexts(group, modes, part, { cell }));
+    expect(tables.map(({ lattice }) => lattice.join(" ")).sort()).toEqual([
+      "(u, v, w) (-u-2w, v, w)",
+      "(u, v, w) (u+2w, -v, -w)",
+    ]);
+    expect(tables.map(({ crystal }) => crystal?.join(" ")).sort()).toEqual([
+      "(u, v, w) (-u-1.41421w, v, w)",
+      "(u, v, w) (u+1.41421w, -v, -w)",
+    ]);
   });
 });

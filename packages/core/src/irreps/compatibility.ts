@@ -53,8 +53,8 @@ export function compatibility(group: SpaceGroup, from: WaveVector, to: WaveVecto
     values: through.dimension === 0 ? [] : null,
     uncertainties: null,
   });
+  // The little group of a line leaves its points alone.
   const places = line.littleGroup.operators.map((index) => point.littleGroup.operators.indexOf(index));
-  if (places.includes(-1)) throw new Error("the little group of a line is not part of that of its point");
   // Letters that do not occur take any value.
   const values = [...parameters, zero, zero, zero] as unknown as RationalVector;
   return {

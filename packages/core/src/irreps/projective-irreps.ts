@@ -37,24 +37,19 @@ export function projectiveIrreps(group: LittleCoGroup): CyclotomicMatrix[][] {
 function ascend(group: LittleCoGroup, step: SeriesStep, irreps: readonly Matrices[]): Matrices[] {
   const done = new Set<number>();
   const characters = irreps.map((matrices) => charactersOn(matrices, step.subgroup));
-  const result: Matrices[] = [];
-  irreps.forEach((matrices, index) => {
-    if (done.has(index)) return;
+  return irreps.flatMap((matrices, index) => {
+    if (done.has(index)) return [];
     const orbit = [matrices];
     for (;;) {
       const next = conjugated(group, step, orbit[orbit.length - 1] as Matrices);
       const partner = indexOfCharacter(characters, charactersOn(next, step.subgroup));
       done.add(partner);
-      if (partner === index) {
-        // `next` is equivalent to the first of the orbit, so the orbit is complete: 1 or p irreps.
-        result.push(...(orbit.length === 1 ? extended(group, step, matrices, next) : [induced(group, step, orbit)]));
-        break;
-      }
+      // Where `next` is equivalent to the first of the orbit, the orbit is complete: 1 or p irreps.
+      if (partner === index)
+        return orbit.length === 1 ? extended(group, step, matrices, next) : [induced(group, step, orbit)];
       orbit.push(next);
     }
-    done.add(index);
   });
-  return result;
 }
 
 function charactersOn(matrices: Matrices, elements: readonly number[]): Cyclotomic[] {

@@ -160,5 +160,5 @@ function sortIrreps(irreps: readonly MadeIrrep[], gauges: readonly Phase[]): Mad
 }
 
 function rounded(value: number): number {
-  return Number(value.toFixed(sortingDecimals)) + 0;
+  return Number(value.toFixed(sortingDecimals));
 }

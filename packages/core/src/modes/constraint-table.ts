@@ -98,9 +98,9 @@ function realTerms(modes: readonly Mode[]): Term[] {
   });
   return reducedEchelon(rows, cyclotomicNumbers).rows.map((row, index) => ({
     letter: letterOf(index),
-    moments: Array.from({ length: row.length / 3 }, (_, atom) => ({
+    moments: (modes[0] as Mode).moments.map((_, atom) => ({
       phase: zeroForm,
-      vector: row.slice(3 * atom, 3 * atom + 3).map(reduceOrder),
+      vector: [0, 1, 2].map((axis) => reduceOrder(row[3 * atom + axis] as Cyclotomic)),
     })),
   }));
 }
@@ -170,7 +170,7 @@ function coefficientText(k: WaveVector, factor: Cyclotomic, ratio: number, phase
 const ratioDigits = 6;
 
 function ratioText(value: number): string {
-  return String(roundNumber(value, 1, ratioDigits));
+  return String(roundNumber(value, value, ratioDigits));
 }
 
 function sumText(parts: readonly string[]): string {

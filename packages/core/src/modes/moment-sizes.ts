@@ -131,8 +131,9 @@ function solvable(problem: SizeProblem, period: Period): boolean {
     let x = Float64Array.from(problem.waves, (_, index) => scale * Math.sin(1.7 * (start + 1) * (index + 1) + start));
     let r = residuals(problem, period, x);
     let cost = sumOfSquares(r);
+    const limit = residualLimit * r.length;
     let damping = 1e-3;
-    for (let step = 0; step < mostSteps && cost > residualLimit * r.length; step++) {
+    for (let step = 0; step < mostSteps && cost > limit; step++) {
       const jacobian = differentiate(problem, period, x, scale);
       const trial = dampedStep(jacobian, r, x, damping);
       if (trial === null) break;
@@ -144,7 +145,7 @@ function solvable(problem: SizeProblem, period: Period): boolean {
       } else damping *= 8;
       if (damping > 1e12) break;
     }
-    if (cost <= residualLimit * r.length) return true;
+    if (cost <= limit) return true;
   }
   return false;
 }
@@ -174,10 +175,9 @@ function dampedStep(
   for (let a = 0; a < size; a++) {
     const column = columns[a] as readonly number[];
     right[a] = -dotNumbers(column, r);
+    // Of the symmetric matrix the lower triangle is enough.
     for (let b = 0; b <= a; b++) {
-      const value = dotNumbers(column, columns[b] as readonly number[]);
-      normal[a * size + b] = value;
-      normal[b * size + a] = value;
+      normal[a * size + b] = dotNumbers(column, columns[b] as readonly number[]);
     }
   }
   const trace = Array.from({ length: size }, (_, index) => normal[index * size + index] as number).reduce(
@@ -204,7 +204,7 @@ function sumOfSquares(values: readonly number[]): number {
 function isCollinear(problem: SizeProblem): boolean {
   const vectors = fields(
     problem,
-    problem.waves.map((_, index) => Math.cos(2.3 * index + 0.7)),
+    problem.waves.map((_, index) => Math.cos(index)),
   ).flatMap((s) => [[s[0], s[2], s[4]] as number[], [s[1], s[3], s[5]] as number[]]);
   const longest = vectors.reduce(
     (best, vector) => (sumOfSquares(vector) > sumOfSquares(best) ? vector : best),

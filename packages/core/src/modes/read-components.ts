@@ -70,7 +70,7 @@ function inLattice(
   cell: Cell | null,
   { components }: WritingConvention,
 ): readonly Complex[] {
-  if (components === "lattice" || cell === null) return vector;
+  if (cell === null) return vector;
   const part = (index: 0 | 1): readonly [number, number, number] => {
     const along = vector.map((entry) => entry[index]) as [number, number, number];
     return convertComponents(cell, along, components, "lattice");
@@ -110,22 +110,23 @@ function shareOf(
     ({ moments }): Arrangement =>
       moments.map(({ phase, vector }) => vector.map((factor) => phasedToComplex({ phase, factor }, values) as Complex)),
   );
-  const normal = new Float64Array(4 * size * size);
-  const right = new Float64Array(2 * size);
+  const unknowns = 2 * size;
+  // Of the symmetric matrix the lower triangle is enough.
+  const normal = new Float64Array(unknowns * unknowns);
+  const right = new Float64Array(unknowns);
   vectors.forEach((left, row) => {
     const [x, y] = product(left, components, metric);
     right[row] = x;
     right[size + row] = y;
     vectors.forEach((other, column) => {
       const [re, im] = product(left, other, metric);
-      const at = (i: number, j: number): number => 2 * size * i + j;
+      const at = (i: number, j: number): number => unknowns * i + j;
       normal[at(row, column)] = re;
       normal[at(size + row, size + column)] = re;
-      normal[at(row, size + column)] = -im;
       normal[at(size + row, column)] = im;
     });
   });
-  const factor = choleskyFactor(normal, 2 * size);
+  const factor = choleskyFactor(normal, unknowns);
   if (factor === null) throw new Error("basis vectors of one irrep depend on each other");
   const solution = choleskySolve(factor, right);
   const explained = solution.reduce((sum, value, index) => sum + value * (right[index] as number), 0);
