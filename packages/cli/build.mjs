@@ -10,7 +10,7 @@ import { dirname, join, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
 import { packParts } from "./pack-parts.mjs";
-import { pastTheDoors } from "./past-the-doors.mjs";
+import { doorsGoneThrough, pastTheDoors } from "./past-the-doors.mjs";
 
 const here = dirname(fileURLToPath(import.meta.url));
 const { version } = JSON.parse(readFileSync(join(here, "package.json"), "utf8"));
@@ -58,6 +58,8 @@ const { metafile, outputFiles } = await build({
   plugins: [pastTheDoors(join(here, "../core/src"))],
   metafile: true,
 });
+const missed = doorsGoneThrough(metafile.inputs);
+if (missed.length > 0) throw new Error(`a part would hold a whole room: ${missed.join("; ")}`);
 const written = new Set(["kvane.js", "package.json", "THIRD-PARTY-LICENSES.txt"]);
 writeFileSync(join(bin, "package.json"), '{ "type": "commonjs" }\n');
 writeFileSync(join(bin, "THIRD-PARTY-LICENSES.txt"), licences(Object.keys(metafile.inputs)));

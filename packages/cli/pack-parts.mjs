@@ -19,6 +19,9 @@ export async function packParts({ outputs, files, early, options }) {
   const texts = new Map(files.map(({ path, text }) => [basename(path), text]));
   const parts = new Map(Object.entries(outputs).map(([path, output]) => [basename(path), output]));
   const sources = new Set(early);
+  const offered = new Set([...parts.values()].map(({ entryPoint = "" }) => entryPoint));
+  const gone = early.filter((source) => !offered.has(source));
+  if (gone.length > 0) throw new Error(`no \`import()\` loads ${gone.join(", ")}`);
   const inStart = closure(
     parts,
     [...parts].filter(([name, { entryPoint = "" }]) => name === start || sources.has(entryPoint)),

@@ -5,6 +5,7 @@ import { dirname, join, resolve } from "node:path";
 /**
  * A plugin of esbuild that leads what is imported through the door of a room (its `index.ts`) straight to the file that
  * has it. Without it a part of the bundle that takes one name of a room holds all that the room offers to any other part.
+ * `import()` of a door stays as it is: it takes the whole room.
  *
  * @param {string} core folder of core's source, a folder in it for each room
  * @returns {import("esbuild").Plugin}
@@ -27,6 +28,27 @@ export function pastTheDoors(core) {
       }));
     },
   };
+}
+
+/**
+ * The doors that statements of the sources still go through though they make nothing themselves: forms of import that
+ * the plugin does not know, which would bring back whole rooms without anybody noticing.
+ *
+ * @param {import("esbuild").Metafile["inputs"]} inputs
+ * @returns {string[]} who imports what
+ */
+export function doorsGoneThrough(inputs) {
+  const isDoor = (/** @type {string} */ path) => /core\/src\/\w+\/index\.ts$/.test(path);
+  return Object.entries(inputs).flatMap(([importer, { imports }]) =>
+    imports
+      .filter(({ kind, path }) => kind === "import-statement" && isDoor(path) && !makesSomething(path))
+      .map(({ path }) => `${importer} imports ${path}`),
+  );
+}
+
+/** @param {string} door path relative to this folder */
+function makesSomething(door) {
+  return /^export (?:async )?(?:function|const|class)/m.test(readFileSync(join(import.meta.dirname, door), "utf8"));
 }
 
 /** @typedef {ReadonlyMap<string, {readonly file: string, readonly name: string}>} Homes where each name of a door comes from */
@@ -75,7 +97,8 @@ function homesOf(door) {
     const made = readFileSync(file, "utf8").matchAll(/^export (?:async )?(?:function\*?|const|class) (\w+)/gm);
     return [...made].map(([, name = ""]) => /** @type {const} */ ([name, { file, name }]));
   });
-  return new Map([...named, ...starred]);
+  // A name of its own goes before those that come with a star, as in ECMAScript (ResolveExport).
+  return new Map([...starred, ...named]);
 }
 
 /**

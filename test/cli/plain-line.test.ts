@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { commandSpecs } from "../../packages/cli/src/commands/index.ts";
-import { optionSpecs } from "../../packages/cli/src/options.ts";
+import { flagOf, optionSpecs, takesValue } from "../../packages/cli/src/options.ts";
 import { parseLine } from "../../packages/cli/src/parse-line.ts";
 import { plainLine } from "../../packages/cli/src/plain-line.ts";
 import { shellWords } from "./command.js";
@@ -17,7 +17,7 @@ function parsed(words: readonly string[]) {
 }
 
 const names = commandSpecs.map(({ name }) => name);
-const flags = [...new Set(Object.values(optionSpecs).map(({ flags: text }) => text.split(" ")[0] as string))];
+const flags = [...new Set(Object.values(optionSpecs).map(flagOf))];
 const values = [
   "62",
   "study.yaml",
@@ -44,8 +44,8 @@ describe("a plain line", () => {
   /** Mostly options that the command takes, mostly with a value where one belongs. */
   const line = fc.constantFrom(...commandSpecs).chain((spec) => {
     const option = fc.constantFrom(...spec.options, "json" as const).chain((name): fc.Arbitrary<string[]> => {
-      const [flag = ""] = optionSpecs[name].flags.split(" ");
-      return optionSpecs[name].flags.includes("<")
+      const flag = flagOf(optionSpecs[name]);
+      return takesValue(optionSpecs[name])
         ? fc.constantFrom(...values).map((value) => [flag, value])
         : fc.constant([flag]);
     });

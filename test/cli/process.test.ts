@@ -1,5 +1,5 @@
-import { spawn, spawnSync } from "node:child_process";
-import { closeSync, constants, openSync, readdirSync, readSync } from "node:fs";
+import { type ChildProcess, spawn, spawnSync } from "node:child_process";
+import { closeSync, constants, openSync, readdirSync, readSync, writeSync } from "node:fs";
 import { join } from "node:path";
 import { version } from "@kvane/core/job";
 import { describe, expect, test } from "vitest";
@@ -71,36 +71,64 @@ describe("the built command", () => {
     expect(readdirSync(folder)).toEqual(before);
   });
 
-  test.skipIf(process.platform === "win32")("Ctrl-C ends it while a full pipe takes no more", async () => {
-    const pipe = join(folder, "full-pipe");
-    spawnSync("mkfifo", [pipe]);
-    const both = openSync(pipe, "r+");
-    // As much as a pipe holds, so that nothing more fits into it until somebody reads.
-    spawnSync("dd", ["if=/dev/zero", "bs=65536", "count=1", "status=none"], { stdio: ["ignore", both, "inherit"] });
-    const child = spawn(process.execPath, [commandFile, "ops", "62"], { stdio: ["ignore", both, "ignore"] });
-    const ended = new Promise((resolve) => child.on("exit", (status, signal) => resolve(signal ?? status)));
-    await new Promise((resolve) => setTimeout(resolve, 1000));
-    expect([child.exitCode, child.signalCode], "it waits for a reader").toEqual([null, null]);
-    child.kill("SIGINT");
-    // A shell shows 130 for either.
-    expect(["SIGINT", 130]).toContain(await ended);
-    closeSync(both);
-  });
+  describe.skipIf(process.platform === "win32")("while a full pipe takes no more", () => {
+    /** Runs the command with a pipe for its output in which there is no room left, for as long as `meanwhile` takes. */
+    async function withFullPipe(
+      name: string,
+      waits: boolean,
+      meanwhile: (child: ChildProcess, pipe: { readonly end: number; readonly filled: number }) => Promise<void>,
+    ): Promise<void> {
+      const path = join(folder, name);
+      spawnSync("mkfifo", [path]);
+      const end = openSync(path, constants.O_RDWR | constants.O_NONBLOCK);
+      const filled = fill(end);
+      const waiting = openSync(path, constants.O_RDWR);
+      const child = spawn(process.execPath, [commandFile, "ops", "62"], {
+        stdio: ["ignore", waits ? waiting : end, "inherit"],
+      });
+      try {
+        // It would have ended long before, were there any room.
+        await new Promise((resolve) => setTimeout(resolve, 1500));
+        expect([child.exitCode, child.signalCode], "it waits for a reader").toEqual([null, null]);
+        await meanwhile(child, { end, filled });
+      } finally {
+        child.kill("SIGKILL");
+        closeSync(end);
+        closeSync(waiting);
+      }
+    }
 
-  test.skipIf(process.platform === "win32")("a full pipe that refuses instead of waiting gets all of it", async () => {
-    const pipe = join(folder, "refusing-pipe");
-    spawnSync("mkfifo", [pipe]);
-    const both = openSync(pipe, constants.O_RDWR | constants.O_NONBLOCK);
-    spawnSync("dd", ["if=/dev/zero", "bs=65536", "count=1", "status=none"], { stdio: ["ignore", both, "inherit"] });
-    const child = spawn(process.execPath, [commandFile, "ops", "62"], { stdio: ["ignore", both, "inherit"] });
-    const ended = new Promise((resolve) => child.on("exit", resolve));
-    await new Promise((resolve) => setTimeout(resolve, 1000));
-    expect(child.exitCode, "it waits for a reader").toBeNull();
-    expect(readSync(both, new Uint8Array(65536))).toBe(65536);
-    expect(await ended).toBe(0);
-    const text = new Uint8Array(65536);
-    expect(new TextDecoder().decode(text.subarray(0, readSync(both, text)))).toBe((await kvane(["ops", "62"])).stdout);
-    closeSync(both);
+    /** Writes until the pipe refuses more; how many bytes it took. */
+    function fill(pipe: number): number {
+      let filled = 0;
+      try {
+        for (;;) filled += writeSync(pipe, new Uint8Array(4096));
+      } catch (error) {
+        if ((error as NodeJS.ErrnoException).code !== "EAGAIN") throw error;
+        return filled;
+      }
+    }
+
+    const end = (child: ChildProcess) =>
+      new Promise((resolve) => child.on("exit", (status, signal) => resolve(signal ?? status)));
+
+    test("Ctrl-C ends it", () =>
+      withFullPipe("waiting-pipe", true, async (child) => {
+        const ended = end(child);
+        child.kill("SIGINT");
+        // A shell shows 130 for either.
+        expect(["SIGINT", 130]).toContain(await ended);
+      }));
+
+    test("and refuses instead of waiting, it gets all as soon as there is room", () =>
+      withFullPipe("refusing-pipe", false, async (child, pipe) => {
+        const ended = end(child);
+        for (let emptied = 0; emptied < pipe.filled; ) emptied += readSync(pipe.end, new Uint8Array(4096));
+        expect(await ended).toBe(0);
+        const text = new Uint8Array(65536);
+        const length = readSync(pipe.end, text);
+        expect(new TextDecoder().decode(text.subarray(0, length))).toBe((await kvane(["ops", "62"])).stdout);
+      }));
   });
 
   test("an answer of a cancelled job is `interrupted`", async () => {

@@ -156,6 +156,21 @@ describe("the peak chart", async () => {
     });
   });
 
+  test("leaves room for a second row of marks where a peak is on a nuclear line and on a λ/2 image", () => {
+    const [first, ...others] = data.peaks.map((peak) => ({ ...peak, onNuclear: false })) as [ChartPeak, ...ChartPeak[]];
+    const marked = { ...first, onNuclear: true, onHalfWavelength: true };
+    const both = peakChart({ ...data, peaks: [marked, ...others] }, wholeView(data));
+    const one = peakChart({ ...data, peaks: [{ ...marked, onNuclear: false }, ...others] }, wholeView(data));
+    const base = Number(/class="observed".*?<path d="M[\d.]+ ([\d.]+)H/.exec(both.marks)?.[1]);
+    const rows = [...both.marks.matchAll(/translate\([\d.]+ ([\d.]+)\)/g)].map(([, y]) => Number(y));
+    const lowest = Math.max(...rows.filter((y) => y < base + 30));
+    const name = Number(/y="([\d.]+)"[^>]*>[^<]*k = /.exec(both.marks)?.[1]);
+    expect(lowest).toBeGreaterThan(base + 10);
+    // Letters of 12 units stand above their line; a mark reaches 4 units below its middle.
+    expect(name - 12).toBeGreaterThanOrEqual(lowest + 4);
+    expect(both.height).toBeGreaterThan(one.height);
+  });
+
   test("says how many peaks have no number for lack of room, and where all are", () => {
     const [peak, candidate] = [data.peaks[0] as ChartPeak, data.candidates[0] as ChartCandidate];
     const crowded: PeakChartData = {
@@ -171,7 +186,7 @@ describe("the peak chart", async () => {
     };
     const whole = peakChart(crowded, wholeView(crowded));
     // The first of the crowd and the one apart.
-    expect(whole.marks).toContain(">38 of 40 numbers left out; the table has all<");
+    expect(whole.marks).toContain(">38 of 40 numbers left out; the table of the report has all<");
     const closer = peakChart(crowded, { ...wholeView(crowded), to: 0.391 });
     expect(closer.marks.match(/ font-size="11"/g)).toHaveLength(39);
     expect(closer.marks).not.toContain("left out");
@@ -196,7 +211,7 @@ test.each([
   const shown = [{ id: "1.1", calculated: list.map(() => 3) }] as unknown as WeighedRecord[];
   const { marks } = intensityChart(data, shown);
   const named = marks.match(/class="fill-faint" fill="[^"]*">\d+</g)?.length ?? 0;
-  const note = ` (${count - named} of ${count} names left out; the table has all)`;
+  const note = ` (${count - named} of ${count} names left out; the table of the report has all)`;
   expect(marks).toContain(`>peak${crowded ? note : ""}<`);
 });
 

@@ -22,6 +22,7 @@ describe("numbers beyond the largest double (IEEE 754: 1.797…e308)", () => {
     ["a cell", () => parseCell("1e400 6 5 90 90 90"), "`1e400`"],
     ["a peak list, in its first row", () => parsePeakList("1e400\n", { file: "p", kind: "d" }), "`1e400`"],
     ["a peak list", () => parsePeakList("d su\n3 1e400\n", { file: "p" }), "`1e400`"],
+    ["a scan, in its first row", () => parseScanTable("1e400 5\n", "s"), "`1e400`"],
     ["a scan", () => parseScanTable("T I\n1 1e400\n", "s"), "`1e400`"],
   ])("%s says so", async (_what, read, named) => {
     expect((await problemsOf(read))[0]?.message).toBe(`${named} ${said}`);

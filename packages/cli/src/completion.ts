@@ -1,6 +1,6 @@
 import { fail } from "@kvane/core/errors";
 import type { CommandSpec } from "./command-spec.js";
-import { type OptionName, optionSpecs } from "./options.js";
+import { flagOf, type OptionName, type OptionSpec, optionSpecs, takesValue } from "./options.js";
 
 /** Shells that a completion is made for. */
 const completionShells = ["bash", "zsh", "fish"] as const;
@@ -75,12 +75,13 @@ function wordsOf(
     summary,
     first: Object.hasOwn(first, argument) ? first[argument as keyof typeof first] : null,
     options: options.map((option) => {
-      const { flags, about } = optionSpecs[option];
+      const spec: OptionSpec = optionSpecs[option];
+      const { flags, about } = spec;
       const takesFile = fileValue.test(flags);
       return {
-        flag: flags.split(" ")[0] as string,
+        flag: flagOf(spec),
         about,
-        values: valueWords[option] ?? (takesFile ? "files" : flags.includes("<") ? [] : null),
+        values: valueWords[option] ?? (takesFile ? "files" : takesValue(spec) ? [] : null),
       };
     }),
   };

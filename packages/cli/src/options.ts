@@ -114,5 +114,18 @@ export const optionSpecs = {
 
 export type OptionName = keyof typeof optionSpecs;
 
+/** `--q-max` of `--q-max <Q>`. */
+export function flagOf({ flags }: OptionSpec): string {
+  return flags.split(" ")[0] as string;
+}
+
+/** Whether a value belongs behind the option. */
+export function takesValue({ flags }: OptionSpec): boolean {
+  return flags.includes("<");
+}
+
+/** Options that take a value, as written: what follows them is no GROUP. */
+export const valueOptions: ReadonlySet<string> = new Set(Object.values(optionSpecs).filter(takesValue).map(flagOf));
+
 /** Options that shape the output of every command. */
 export const outputOptions: readonly OptionName[] = ["json", "out", "force", "quiet"];

@@ -1,5 +1,5 @@
 import { commandSpecs } from "./commands/index.js";
-import { type OptionSpec, optionSpecs } from "./options.js";
+import { flagOf, type OptionSpec, optionSpecs, takesValue } from "./options.js";
 import type { ParsedLine } from "./parsed-line.js";
 
 /**
@@ -25,7 +25,7 @@ export function plainLine([command, ...words]: readonly string[]): ParsedLine | 
     }
     const attribute = attributeOf(word);
     const before = options[attribute];
-    if (!option.flags.includes("<")) {
+    if (!takesValue(option)) {
       options[attribute] = true;
       continue;
     }
@@ -39,11 +39,6 @@ export function plainLine([command, ...words]: readonly string[]): ParsedLine | 
     else options[attribute] = [value];
   }
   return { spec, argument, options };
-}
-
-/** `--q-max` of `--q-max <Q>`. */
-function flagOf({ flags }: OptionSpec): string {
-  return flags.split(" ")[0] as string;
 }
 
 /** `qMax` of `--q-max`. */

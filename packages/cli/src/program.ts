@@ -2,7 +2,7 @@ import { fail } from "@kvane/core/errors";
 import { Command, Option } from "commander";
 import type { CommandSpec } from "./command-spec.js";
 import { commandSpecs } from "./commands/index.js";
-import { type OptionName, type OptionSpec, optionSpecs } from "./options.js";
+import { flagOf, type OptionName, type OptionSpec, optionSpecs, takesValue } from "./options.js";
 import type { ParsedLine } from "./parsed-line.js";
 
 /** Fixed, so that help looks the same everywhere. */
@@ -70,30 +70,31 @@ function moreText({ topics = [] }: CommandSpec): string {
 }
 
 function buildOption(name: OptionName): Option {
-  const { flags, about, repeatable }: OptionSpec = optionSpecs[name];
+  const spec: OptionSpec = optionSpecs[name];
+  const { flags, about, repeatable } = spec;
   const option = new Option(flags, repeatable ? `${about} (repeatable)` : about);
-  if (!flags.includes("<")) return option;
+  if (!takesValue(spec)) return option;
   return option.argParser((value: string, previous: unknown) => {
-    if (/^--[a-z]/.test(value)) swallowedOption(flags, value);
+    if (/^--[a-z]/.test(value)) swallowedOption(spec, value);
     if (repeatable) return [...((previous as readonly string[] | undefined) ?? []), value];
-    if (previous !== undefined) givenTwice(flags);
+    if (previous !== undefined) givenTwice(spec);
     return value;
   });
 }
 
 /** An option that takes the next option for its value has lost its own. */
-function swallowedOption(flags: string, found: string): never {
-  fail("missing-argument", `${flags} came without its value`, {
-    where: { argument: flags.split(" ")[0] ?? null },
-    expected: `a value: ${flags}`,
+function swallowedOption(option: OptionSpec, found: string): never {
+  fail("missing-argument", `${option.flags} came without its value`, {
+    where: { argument: flagOf(option) },
+    expected: `a value: ${option.flags}`,
     found,
     remedy: "give the value directly behind the option",
   });
 }
 
-function givenTwice(flags: string): never {
-  fail("conflicting-arguments", `${flags} was given twice`, {
-    where: { argument: flags.split(" ")[0] ?? null },
+function givenTwice(option: OptionSpec): never {
+  fail("conflicting-arguments", `${option.flags} was given twice`, {
+    where: { argument: flagOf(option) },
     expected: "the option once",
     found: "more than once",
     remedy: "leave one of them out",

@@ -2,7 +2,7 @@ import { type Problem, problem } from "@kvane/core/errors";
 import { CommanderError } from "commander";
 import type { ArgumentKind } from "./command-spec.js";
 import { commandSpecs } from "./commands/index.js";
-import { optionSpecs } from "./options.js";
+import { valueOptions } from "./options.js";
 
 /**
  * A complaint of the parser as a problem, or null when it was no complaint (help and version were asked for).
@@ -113,11 +113,3 @@ function excessProblem(words: readonly string[]): Problem | null {
         remedy: `put it into quotation marks: kvane ${command} "${texts.join(" ")}"`,
       });
 }
-
-/** Options that take a value, as written: what follows them is no GROUP. */
-export const valueOptions: ReadonlySet<string> = new Set(
-  Object.values(optionSpecs)
-    .map(({ flags }) => flags)
-    .filter((flags) => flags.includes("<"))
-    .map((flags) => flags.split(" ")[0] as string),
-);

@@ -14,7 +14,7 @@ import { schemaErrors } from "../../cli/schemas.js";
 import type { Random } from "../../support/random.js";
 import { demand, demandProblems } from "../properties.js";
 import { type Outcome, target } from "../target.js";
-import { corpus, type FileKind } from "../texts/corpus.js";
+import { corpus, exampleTexts, type FileKind } from "../texts/corpus.js";
 import { damaged } from "../texts/damage.js";
 import { fileNames, goodRequests } from "../texts/requests.js";
 import { extremeNumbers, marks } from "../texts/tokens.js";
@@ -132,18 +132,13 @@ export function spoiltFiles(random: Random): RequestInput["files"] {
   return files;
 }
 
-/** Where the file of the example stands in the corpus. */
-const ofExample: { readonly [kind in FileKind]?: number } = { study: -1, peaks: -1, intensities: 0 };
-
 /**
  * The study of the example rather than one that names files which nobody has, mostly with its own lists, whose units it
  * names; any other good file of the kind.
  */
 function goodText(kind: FileKind, random: Random): string {
-  const good = corpus[kind];
-  const example = ofExample[kind];
-  const fits = example !== undefined && (kind === "study" || random.below(4) > 0);
-  return fits ? (good.at(example) as string) : random.pick(good);
+  const example = exampleTexts[kind];
+  return example !== undefined && (kind === "study" || random.below(4) > 0) ? example : random.pick(corpus[kind]);
 }
 
 /**

@@ -32,6 +32,17 @@ export const corpus: { readonly [kind in FileKind]: readonly string[] } = {
   components: ["# S\n1 0 0.5+0.1i 0\n2 0 -0.3i 0\n3 1e-3-2e-2i i -i\n", "1, 1, 0, 0\n2, -1, 0.5*i, 0\n"],
 };
 
+/** The bundled study and the lists that it names, which are in the corpus too. */
+export const exampleTexts: { readonly [kind in FileKind]?: string } = {
+  study: exampleFile("study.yaml"),
+  peaks: exampleFile("satellites.csv"),
+  intensities: exampleFile("integrated.csv"),
+};
+
+function exampleFile(name: string): string {
+  return readFileSync(join(root, "packages/cli/example", name), "utf8");
+}
+
 function textsIn(folder: string, name: RegExp): string[] {
   return readdirSync(join(root, folder))
     .filter((one) => name.test(one) && one !== "ORIGIN.md")

@@ -6,7 +6,11 @@ export function isTooLarge(text: string): boolean {
   return Number(decimal.exec(text)?.[1] ?? 0) === Number.POSITIVE_INFINITY;
 }
 
-/** What is wrong with a text that could not be read as a number, behind the text. */
-export function whyNoNumber(text: string): string {
-  return isTooLarge(text) ? "is too large for a number of this kind (beyond 1.8e308)" : "is no number";
+/**
+ * What is wrong with a text that could not be read as a number, to be said behind the text.
+ *
+ * @param otherwise what to say where the number is not just too large
+ */
+export function whyNoNumber(text: string, otherwise = "is no number"): string {
+  return isTooLarge(text) ? "is too large for a number of this kind (beyond 1.8e308)" : otherwise;
 }

@@ -1,4 +1,4 @@
-import { isTooLarge, whyNoNumber } from "../errors/index.js";
+import { whyNoNumber } from "../errors/index.js";
 import { parseRational, toNumber } from "../numbers/index.js";
 import { readNumber } from "./number-text.js";
 import { type Column, type ColumnRole, hasColumnName } from "./peak-header.js";
@@ -72,7 +72,7 @@ function readCell(row: Row, field: Field, role: ColumnRole, headed: boolean, pro
   const index = role === "h" || role === "k" || role === "l";
   const number = readNumber(field.text) ?? (index ? readFraction(field.text) : null);
   if (number) return { value: number.value, uncertainty: number.uncertainty, field };
-  const message = isTooLarge(field.text) ? whyNoNumber(field.text) : `is no number for the ${role}`;
+  const message = whyNoNumber(field.text, `is no number for the ${role}`);
   note(problems, "invalid-peak", `\`${field.text}\` ${message}`, {
     where: { line: row.line, column: field.column },
     expected: index ? "a number or a fraction such as 1/2" : "a number such as 24.31",

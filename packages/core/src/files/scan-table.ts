@@ -53,7 +53,10 @@ export function parseScanTable(text: string, file: string): ScanTable {
     throwProblems(problems);
   }
   const headed =
-    first !== undefined && readNumber(first.fields[0]?.text ?? "") === null && decimalCommaOf(first) === null;
+    first !== undefined &&
+    readNumber(first.fields[0]?.text ?? "") === null &&
+    !isTooLarge(first.fields[0]?.text ?? "") &&
+    decimalCommaOf(first) === null;
   const data = headed ? rows.slice(1) : rows;
   const columns = headed ? scanColumns(first as Row, problems) : plainColumns(data);
   if (columns.filter(({ role }) => role === "intensity" || role === "k").length === 0)
@@ -141,7 +144,7 @@ function readRow(row: Row, columns: readonly ScanColumn[], problems: ProblemList
     if (!wrong) return number;
     const text = field?.text ?? "";
     const wanted = role === "uncertainty" || role === "temperature" ? role : `number for ${name}`;
-    note(problems, "invalid-scan", `\`${text}\` ${isTooLarge(text) ? whyNoNumber(text) : `is no ${wanted}`}`, {
+    note(problems, "invalid-scan", `\`${text}\` ${whyNoNumber(text, `is no ${wanted}`)}`, {
       where: { line: row.line, column: field?.column ?? 1 },
       expected:
         role === "temperature"

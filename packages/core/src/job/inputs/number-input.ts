@@ -1,4 +1,4 @@
-import { fail, isTooLarge, whyNoNumber } from "../../errors/index.js";
+import { fail, whyNoNumber } from "../../errors/index.js";
 import { argumentNames, type Request, type RequestField } from "../request.js";
 import { optionOf } from "./given.js";
 
@@ -20,16 +20,12 @@ export function numberOption(request: Request, field: RequestField, range: Numbe
   if (given === null) return null;
   const value = /^[+-]?(\d+(?:\.\d*)?|\.\d+)(e[+-]?\d+)?$/i.test(given.text) ? Number(given.text) : Number.NaN;
   if (!Number.isFinite(value) || !inRange(value, range))
-    fail(
-      "invalid-number",
-      `${argumentNames[field]} ${isTooLarge(given.text) ? whyNoNumber(given.text) : "is no number that can be used"}`,
-      {
-        where: given.where,
-        expected: rangeText(range),
-        found: given.text === "" ? "nothing" : given.text,
-        remedy: `give ${argumentNames[field]} ${rangeText(range)}`,
-      },
-    );
+    fail("invalid-number", `${argumentNames[field]} ${whyNoNumber(given.text, "is no number that can be used")}`, {
+      where: given.where,
+      expected: rangeText(range),
+      found: given.text === "" ? "nothing" : given.text,
+      remedy: `give ${argumentNames[field]} ${rangeText(range)}`,
+    });
   return value;
 }
 

@@ -10,7 +10,8 @@ const kindSchemas: { readonly [kind in FieldKind]: object } = {
 
 /**
  * The JSON Schema (draft 2020-12) of a line of `kvane batch`: for each command the fields that it takes. What a value
- * must say is checked by the command, as on the command line.
+ * must say is checked by the command, as on the command line. Stricter than the reader in one thing: fields that the command
+ * does not take are refused here even where they are null or a flag that is false.
  */
 export function requestSchema(): { readonly [keyword: string]: unknown } {
   return {

@@ -80,7 +80,7 @@ function panelMarks({ list, sample }: WeighDataRecord, one: WeighedRecord): stri
     element(
       "text",
       { x: (left + width - right) / 2, y: base + 34, "text-anchor": "middle", ...paint({ fill: "ink" }) },
-      `${sample === "powder" ? "peak" : "h k l"}${leftOut === 0 ? "" : ` (${leftOut} of ${list.length} names left out; the table has all)`}`,
+      `${sample === "powder" ? "peak" : "h k l"}${leftOut === 0 ? "" : ` (${leftOut} of ${list.length} names left out; the table of the report has all)`}`,
     ),
   ];
   return marks.join("");

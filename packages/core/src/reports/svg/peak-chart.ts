@@ -133,7 +133,7 @@ function leftOutMark(leftOut: number, shown: number, width: number, y: number): 
   return element(
     "text",
     { x: width - right, y, "text-anchor": "end", "font-size": 11, ...paint({ fill: "faint" }) },
-    `${leftOut} of ${shown} numbers left out; the table has all`,
+    `${leftOut} of ${shown} numbers left out; the table of the report has all`,
   );
 }
 

@@ -9,7 +9,7 @@ export function repeatSection({ answer, record, file }: DocumentSource): Documen
     title: "How to repeat this",
     parts: [],
     blocks: [
-      paragraphBlock("The same version, study and peak list give the same bytes."),
+      paragraphBlock("The same version, command, study and peak list give the same bytes."),
       { kind: "verbatim", text: commandLine(answer, file) },
       ...fieldsBlock([
         ["Version", `kvane ${answer.kvane}, format ${answer.format}`],
@@ -35,8 +35,13 @@ function commandLine({ command, input }: Envelope, file: string | null): string 
       words.push(one === true ? optionName(name) : `${optionName(name)} ${quoted(String(one))}`);
   }
   if (options["files"] === true) words.push("--out results");
-  if (command === "report" && file !== null) words.push(`--out ${quoted(file)}`);
+  if (command === "report" && file !== null) words.push(`--out ${quoted(nameOf(file))}`);
   return words.join(" ");
+}
+
+/** Without its folder: where somebody keeps files is nobody else's business, and would change the bytes. */
+function nameOf(file: string): string {
+  return file.replace(/^.*[\\/]/, "");
 }
 
 /** Fields of the request whose option is called otherwise. */
