@@ -142,6 +142,12 @@ describe("exact numbers as they are written", () => {
     ["√2·i", product(squareRootOf(2), root(1, 4))],
     ["-√2·i/2", product(fraction(-1, 2), squareRootOf(2), root(1, 4))],
     ["√3·e^{iπ/6}/2", product(fraction(1, 2), squareRootOf(3), root(1, 12))],
+    ["√5", squareRootOf(5)],
+    ["√15·e^{iπ/30}/7", product(fraction(1, 7), squareRootOf(15), root(1, 60))],
+    ["6√10·i/35", product(fraction(6, 35), squareRootOf(10), root(1, 4))],
+    ["49√6·e^{2πi/5}", product(fraction(49), squareRootOf(6), root(1, 5))],
+    // |1000 + ζ₃|² = 1000² − 1000 + 1 = 999001, whose root lies in no field that would be made in a reasonable time.
+    ["1000+e^{2πi/3}", sum(fraction(1000), root(1, 3))],
     // ζ₈ − ζ₈³ = √2, written in powers of ζ₈ because 1 + √2 has no root as its modulus.
     ["1+e^{iπ/4}-e^{3πi/4}", sum(fraction(1), squareRootOf(2))],
     ["(1+e^{iπ/4}-e^{3πi/4})/2", product(fraction(1, 2), sum(fraction(1), squareRootOf(2)))],

@@ -12,8 +12,8 @@ import {
   rootOfUnity,
   squareRootOf,
 } from "./cyclotomics.js";
-import { modulo, splitSquare } from "./integers.js";
-import { divide, formatRational, multiply, type Rational, rational } from "./rationals.js";
+import { gcd, modulo, splitSquare } from "./integers.js";
+import { formatRational, multiply, type Rational, rational } from "./rationals.js";
 
 /**
  * An exact number as people write it: `-1/2`, `i`, `(1+i)/2`, `e^{iπ/3}`, `√3·e^{iπ/6}/2`, else a sum of roots of
@@ -41,14 +41,14 @@ function formatPolar(value: Cyclotomic): string | null {
   const squared = cyclotomicToRational(multiplyCyclotomic(value, conjugateCyclotomic(value)));
   if (squared === null) return null;
   // √(p/q) = √(pq)/q keeps the denominator rational.
-  const radicand = squared[0] * squared[1];
-  const root = reduceOrder(
-    multiplyCyclotomic(value, invertCyclotomic(scaled(squareRootOf(radicand), rational(1, squared[1])))),
+  const split = squareRootWithin(squared[0] * squared[1], value.order);
+  if (split === null) return null;
+  const { inside, outside } = split;
+  const factor = rational(outside, squared[1]);
+  const turns = rootTurns(
+    reduceOrder(multiplyCyclotomic(value, invertCyclotomic(scaled(squareRootOf(inside), factor)))),
   );
-  const turns = rootTurns(root);
   if (turns === null) return null;
-  const { inside, outside } = splitSquare(radicand);
-  const factor = divide([outside, 1], [squared[1], 1]);
   const head =
     inside === 1 ? (factor[0] === 1 ? "" : String(factor[0])) : `${factor[0] === 1 ? "" : factor[0]}√${inside}`;
   const tail = factor[1] === 1 ? "" : `/${factor[1]}`;
@@ -57,6 +57,26 @@ function formatPolar(value: Cyclotomic): string | null {
   if (phase === "-1") return `-${head === "" ? "1" : head}${tail}`;
   if (phase === "i" || phase === "-i") return `${phase === "-i" ? "-" : ""}${head}${head === "" ? "" : "·"}i${tail}`;
   return `${head}${head === "" ? "" : "·"}${phase}${tail}`;
+}
+
+/**
+ * `n = outside² inside` without squares in `inside`, or null where √n times a root of unity cannot have that order: its
+ * square would hold the root of unity's, so √n would lie in the field of order 4 · `order`, and then the odd primes of
+ * `inside` divide `order` (conductor of a quadratic field; Washington, 1997, chapter 3). Fields beyond that are never made:
+ * the axes of some settings give integers of many digits here. Null also for integers beyond 2^53.
+ */
+function squareRootWithin(n: number, order: number): { readonly inside: number; readonly outside: number } | null {
+  if (!Number.isSafeInteger(n)) return null;
+  let shared = 1;
+  let rest = n;
+  for (let common = gcd(rest, 2 * order); common > 1; common = gcd(rest, common)) {
+    shared *= common;
+    rest /= common;
+  }
+  const root = Math.round(Math.sqrt(rest));
+  if (root * root !== rest) return null;
+  const { inside, outside } = splitSquare(shared);
+  return { inside, outside: outside * root };
 }
 
 function scaled(value: Cyclotomic, factor: Rational): Cyclotomic {
