@@ -170,6 +170,17 @@ describe("Fourier components that are given", () => {
     expect(lattice?.components).toEqual(given);
   });
 
+  test.each([0, 1, 2])("without a cell have axes at right angles and of one length: axis %i and the next", (axis) => {
+    // −1 exchanges the two atoms; the even and the odd part of S₁ ⊥ S₂ of one size are equally large.
+    const unit = (at: number) => [0, 1, 2].map((other): Complex => [other === at % 3 ? 1 : 0, 0]);
+    const modes = modesOf("P -1", "0 0 0", "0.1 0.2 0.3");
+    const read = projectComponents(groupOf("P -1"), modes, [unit(axis), unit(axis + 1)], {
+      convention: ownWriting,
+      cell: null,
+    });
+    expect(read?.shares.map(({ share }) => share)).toEqual([expect.closeTo(1 / 2, 12), expect.closeTo(1 / 2, 12)]);
+  });
+
   test("without moments have no shares, and with open letters of k no answer", () => {
     const group = groupOf("P n m a");
     const modes = modesOf("P n m a", "0 1/2 0", "0 0 0");

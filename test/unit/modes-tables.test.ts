@@ -60,6 +60,7 @@ describe("tables of what is allowed", () => {
   test.each([
     ["P 1 1 a", "u,v,0", "u+v,u,0"],
     ["P 1 1 a", "u,v,0", "u-v,v,0"],
+    ["P 1 1 a", "u,v,0", "u-1/5,v,0"],
     ["P 2a -2a", "u,v,0", "u+v,u,0"],
     ["R -3:H", "u,v,w", "-u-v,u,w"],
   ])("of %s are the same at %s and at %s", (name, plain, mixed) => {

@@ -1,6 +1,6 @@
 import { smallIrreps } from "@kvane/core/irreps";
 import { manifold } from "@kvane/core/kvectors";
-import { constraintTexts, type SiteModes, siteModes } from "@kvane/core/modes";
+import { constraintTexts, ownWriting, type SiteModes, siteModes, writtenSite } from "@kvane/core/modes";
 import { type Cell, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { constantRoot } from "#core/modes/constant-root.js";
@@ -102,6 +102,26 @@ describe("modes", () => {
     ]);
     expect(found.length).toBe(4);
     for (const [parity, vanishing] of found) expect(vanishing).toEqual([parity === 1 ? atHalf : 1 - atHalf]);
+  });
+
+  test.each(cases)("of %s at %s, site %s have their suborbits in rising order", (group, k, position) => {
+    const { suborbits, orbit } = modesOf(group, k, position);
+    const rising = (list: readonly number[]) => [...list].sort((a, b) => a - b);
+    for (const atoms of suborbits) expect(atoms).toEqual(rising(atoms));
+    expect(rising(suborbits.flat())).toEqual(orbit.positions.map((_, atom) => atom));
+  });
+
+  test("in lattice components are the same with a cell and without", () => {
+    const group = groupOf("P n m a");
+    const modes = modesOf("P n m a", "0 1/5 0", "0.1 0.2 0.3");
+    const cell: Cell = { a: 4, b: 5, c: 7, alpha: 90, beta: 90, gamma: 90 };
+    const numbers = (given: Cell | null) =>
+      writtenSite(group, modes, { convention: ownWriting, cell: given, star: false }).irreps.map((part) =>
+        part.modes.map((mode) => mode.numbers),
+      );
+    expect(numbers(cell)).toEqual(numbers(null));
+    // The first entry of a basis vector is 1, whatever the length of its axis.
+    expect(numbers(cell)[0]?.[0]?.[0]?.[0]).toEqual([1, 0]);
   });
 
   test("of an irrep that does not occur have no parameters", () => {

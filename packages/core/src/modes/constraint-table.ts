@@ -1,10 +1,8 @@
 import type { WaveVector } from "../kvectors/index.js";
 import {
   type Cyclotomic,
-  conjugateCyclotomic,
   cyclotomicNumbers,
   cyclotomicToRational,
-  equalCyclotomic,
   equalForms,
   formatCyclotomic,
   isCyclotomicZero,
@@ -83,19 +81,15 @@ function complexTerms(modes: readonly Mode[]): Term[] {
 }
 
 /**
- * The span of an irrep's modes together with their conjugates is closed under conjugation, so its reduced echelon form
- * is real: one real letter per row.
+ * Where 2k ∈ L* the magnetic representation is real, so the span of an irrep's modes together with those of its conjugate
+ * is closed under conjugation and its reduced echelon form is real: one real letter per row.
  */
 function realTerms(modes: readonly Mode[]): Term[] {
-  const rows = modes.flatMap((mode) => {
-    const row = mode.moments.flatMap(({ phase, vector }) =>
+  const rows = modes.map(({ moments }) =>
+    moments.flatMap(({ phase, vector }) =>
       vector.map((entry) => multiplyCyclotomic(rootOfUnity(phase.constant), entry)),
-    );
-    const conjugate = row.map(conjugateCyclotomic);
-    return row.every((entry, index) => equalCyclotomic(entry, conjugate[index] as Cyclotomic))
-      ? [row]
-      : [row, conjugate];
-  });
+    ),
+  );
   return reducedEchelon(rows, cyclotomicNumbers).rows.map((row, index) => ({
     letter: letterOf(index),
     moments: (modes[0] as Mode).moments.map((_, atom) => ({

@@ -7,6 +7,7 @@ import {
   cyclotomicFromRational,
   multiplyCyclotomic,
   negateForm,
+  type Phase,
   type Rational,
   type RationalVector,
   reducePhase,
@@ -38,7 +39,7 @@ export function toConvention(
   moment: ModeMoment,
   convention: FourierConvention,
 ): ModeMoment {
-  const shifted = convention.phase === "position" ? withPhase(moment, k, position, 1) : moment;
+  const shifted = convention.phase === "position" ? withPhase(moment, waveTimesColumn(k, position)) : moment;
   const signed = convention.exponent === "plus" ? conjugateMoment(shifted) : shifted;
   return scaledMoment(signed, factorOf(group, k, convention));
 }
@@ -54,7 +55,7 @@ export function fromConvention(
   const [numerator, denominator] = factorOf(group, k, convention);
   const plain = scaledMoment(moment, [denominator, numerator]);
   const signed = convention.exponent === "plus" ? conjugateMoment(plain) : plain;
-  return convention.phase === "position" ? withPhase(signed, k, position, -1) : signed;
+  return convention.phase === "position" ? withPhase(signed, negateForm(waveTimesColumn(k, position))) : signed;
 }
 
 /** Without a conjugate term (2k ∈ L*) there is nothing to halve. */
@@ -62,9 +63,8 @@ function factorOf(group: SpaceGroup, k: WaveVector, convention: FourierConventio
   return convention.factor === "half" && !isHalfLattice(group, k) ? [2, 1] : [1, 1];
 }
 
-function withPhase(moment: ModeMoment, k: WaveVector, position: RationalVector, sign: 1 | -1): ModeMoment {
-  const turns = waveTimesColumn(k, position);
-  return { ...moment, phase: reducePhase(addForms(moment.phase, sign === 1 ? turns : negateForm(turns))) };
+function withPhase(moment: ModeMoment, turns: Phase): ModeMoment {
+  return { ...moment, phase: reducePhase(addForms(moment.phase, turns)) };
 }
 
 function conjugateMoment({ phase, vector }: ModeMoment): ModeMoment {

@@ -70,10 +70,10 @@ function inLattice(
   cell: Cell | null,
   { components }: WritingConvention,
 ): readonly Complex[] {
-  if (cell === null) return vector;
   const part = (index: 0 | 1): readonly [number, number, number] => {
     const along = vector.map((entry) => entry[index]) as [number, number, number];
-    return convertComponents(cell, along, components, "lattice");
+    // Lattice components need no cell.
+    return convertComponents(cell as Cell, along, components, "lattice");
   };
   const [real, imaginary] = [part(0), part(1)];
   return ([0, 1, 2] as const).map((axis): Complex => [real[axis], imaginary[axis]]);
