@@ -8,18 +8,22 @@ import { root } from "../tools/paths.mjs";
  * passes names on) is said to be without effects: core's package.json names the doors for that reason.
  */
 describe("programs that bundle core into one file", () => {
-  const printed = async (program: string): Promise<string> => {
+  const printed = async (program: string, format: "esm" | "cjs" = "esm"): Promise<string> => {
     const { outputFiles } = await build({
       stdin: { contents: program, resolveDir: root },
       bundle: true,
-      format: "esm",
+      format,
       platform: "node",
       write: false,
     });
-    const { stdout, stderr } = spawnSync(process.execPath, ["--input-type=module"], {
-      input: outputFiles[0]?.text ?? "",
-      encoding: "utf8",
-    });
+    const { stdout, stderr } = spawnSync(
+      process.execPath,
+      [`--input-type=${format === "esm" ? "module" : "commonjs"}`],
+      {
+        input: outputFiles[0]?.text ?? "",
+        encoding: "utf8",
+      },
+    );
     expect(stderr).toBe("");
     return stdout;
   };
@@ -41,5 +45,13 @@ describe("programs that bundle core into one file", () => {
       const components = modes.irreps.reduce((sum, { multiplicity, irrep }) => sum + multiplicity * irrep.dimension, 0);
       console.log(irreps.irreps.map((one) => one.dimension).join(), components, errors.length);`;
     expect(await printed(program)).toBe("2,2 12 0\n");
+  });
+
+  // The reader of YAML is CommonJS for Node; docs/embedding.md says so.
+  test("read a study, as CommonJS", async () => {
+    const program = `import { answer, hostOfTexts } from "@kvane/core";
+      const host = hostOfTexts({ "s.yaml": "group: P n m a\\nk: [[0, 1/2, 0]]\\n" });
+      answer({ command: "star", study: "s.yaml" }, host).then(({ errors, result }) => console.log(errors, result.arms.length));`;
+    expect(await printed(program, "cjs")).toBe("[] 1\n");
   });
 });

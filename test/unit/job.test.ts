@@ -1,7 +1,8 @@
 import { readFileSync } from "node:fs";
+import { readFile } from "node:fs/promises";
 import { join, posix } from "node:path";
 import { KvaneError, problem } from "@kvane/core/errors";
-import { answer, type Request, version } from "@kvane/core/job";
+import { answer, type CommandResults, commandTable, type JobHost, type Request, version } from "@kvane/core/job";
 import { describe, expect, test } from "vitest";
 import { root } from "../tools/paths.mjs";
 import { readImports } from "../tools/read-imports.mjs";
@@ -44,6 +45,54 @@ describe("answer", () => {
         { code: "invalid-request" },
       ]);
     expect((await answer({} as Request, hostOf({}))).errors).toMatchObject([{ code: "unknown-command" }]);
+  });
+
+  test("knows fields by the names of their options, and the parent as the study of moments", async () => {
+    const remedyOf = async (request: object) => (await answer(request as Request, hostOf({}))).errors[0]?.remedy;
+    expect(await remedyOf({ command: "exchange", group: "1", j: ["1 1"] })).toBe("did you mean `constants`?");
+    expect(await remedyOf({ command: "weigh", "form-factor": [] })).toBe("did you mean `formFactors`?");
+    expect(await remedyOf({ command: "decompose", moments: "m", parent: "p" })).toBe("did you mean `study`?");
+  });
+
+  test("tells what is wrong with a host from what is wrong with a file", async () => {
+    const asked = { command: "star", study: "s.yaml" };
+    for (const none of [undefined, null, {}, { readText: 1 }])
+      expect((await answer(asked, none as unknown as JobHost)).errors).toMatchObject([
+        { code: "invalid-request", message: "the host cannot read files" },
+      ]);
+    const bytes = { readText: async () => new Uint8Array(4) } as unknown as JobHost;
+    expect((await answer(asked, bytes)).errors).toMatchObject([
+      { code: "file-unreadable", where: { file: "s.yaml" }, expected: "a string from `readText`" },
+    ]);
+    const { errors } = await answer(asked, { readText: (path) => readFile(join(root, "none", path), "utf8") });
+    expect(errors).toMatchObject([{ code: "file-not-found", where: { file: "s.yaml" } }]);
+  });
+
+  test("has a type for the result of every command", () => {
+    const results: { readonly [command in keyof CommandResults]: true } = {
+      run: true,
+      study: true,
+      report: true,
+      check: true,
+      ops: true,
+      atlas: true,
+      star: true,
+      irreps: true,
+      compatibility: true,
+      modes: true,
+      configurations: true,
+      decompose: true,
+      export: true,
+      satellites: true,
+      index: true,
+      locate: true,
+      weigh: true,
+      exchange: true,
+      onset: true,
+      explain: true,
+      help: true,
+    };
+    expect(Object.keys(results).sort()).toEqual(Object.keys(commandTable).sort());
   });
 
   test("runs on plain records and files in memory, and gives plain data", async () => {

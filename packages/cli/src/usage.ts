@@ -2,7 +2,7 @@ import { type Problem, problem } from "@kvane/core/errors";
 import { CommanderError } from "commander";
 import type { ArgumentKind } from "./command-spec.js";
 import { commandSpecs } from "./commands/index.js";
-import { valueOptions } from "./options.js";
+import { flagOf, type OptionSpec, optionSpecs, valueOptions } from "./options.js";
 
 /**
  * A complaint of the parser as a problem, or null when it was no complaint (help and version were asked for).
@@ -56,6 +56,13 @@ function fromParser({ code, message }: CommanderError, words: readonly string[])
   }
 }
 
+/** Options that may be given more than once. */
+const repeatable: ReadonlySet<string> = new Set(
+  Object.values<OptionSpec>(optionSpecs)
+    .filter((option) => option.repeatable === true)
+    .map(flagOf),
+);
+
 /** What the first word behind a command is; null for no command. */
 function argumentOf(command: string): ArgumentKind | null {
   return commandSpecs.find(({ name }) => name === command)?.argument ?? null;
@@ -83,6 +90,14 @@ function excessProblem(words: readonly string[]): Problem | null {
   const stray = runs.find(({ texts }) => texts.length > 1) ?? runs.filter(({ option }) => option === null)[1];
   if (stray === undefined) return null;
   const { option, texts } = stray;
+  // Values that hold blanks were in quotation marks already: there are several of them.
+  if (option !== null && repeatable.has(option) && texts.every((text) => /\s/.test(text.trim())))
+    return problem("invalid-argument", `${option} takes one value at a time`, {
+      where: { argument: option },
+      expected: "the option once for each value",
+      found: `${texts.length} values`,
+      remedy: `give ${texts.map((text) => `${option} "${text}"`).join(" ")}`,
+    });
   if (option !== null)
     return problem("invalid-argument", `the value of ${option} breaks off at a blank`, {
       where: { argument: option },
@@ -97,6 +112,13 @@ function excessProblem(words: readonly string[]): Problem | null {
       expected: command === "help" ? "one topic or command" : "one code",
       ...excess,
       remedy: `ask for one at a time: kvane ${command} ${texts[0] ?? ""}`,
+    });
+  if (argumentOf(command) === "requests")
+    return problem("invalid-argument", "`kvane batch` takes one file of requests", {
+      where: { argument: "FILE" },
+      expected: "one file, or none for standard input",
+      ...excess,
+      remedy: "give one file after the other, or all through standard input: cat FILES | kvane batch",
     });
   const files = texts.some((text) => /\.(ya?ml|cif)$/i.test(text)) || argumentOf(command) === "study";
   return files

@@ -4,7 +4,7 @@ import type { WorkHost } from "./work-host.js";
 // The one thing that core needs of its surroundings: every browser and Node have it, the language itself does not.
 declare const setTimeout: (action: () => void, milliseconds: number) => unknown;
 
-/** Longest time in ms that work keeps the thread: a cancel or a screen update waits no longer than that. */
+/** Time in ms after which work gives the thread back at its next step; a cancel or a screen update waits for that. */
 export const breathMilliseconds = 20;
 
 /** When each host last had the thread. Weak, so that nothing outlives the work it belongs to. */

@@ -4,6 +4,13 @@
  * relation to −k. `D({1|T}) = e^{+2πi k·T}` (docs/conventions.md, Moments and phases). Sources: Zak, J. Math. Phys. 1
  * (1960) 165; Bradley & Cracknell (1972), chapters 3 and 4; Herring, Phys. Rev. 52 (1937) 361.
  */
+export {
+  type Cyclotomic,
+  type CyclotomicMatrix,
+  cyclotomicToComplex,
+  formatCyclotomic,
+  type Rational,
+} from "../numbers/index.js";
 export { type Compatibility, compatibility } from "./compatibility.js";
 export { type LittleGroupElement, littleGroupElement, smallIrrepMatrix } from "./evaluate.js";
 export { type FullIrrep, fullIrrepMatrix, fullIrreps } from "./full-irreps.js";

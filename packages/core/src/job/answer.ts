@@ -5,6 +5,7 @@ import { withRemedy } from "./remedies.js";
 import type { JobHost, Request, RequestField } from "./request.js";
 import { fieldKind } from "./request-fields.js";
 import { checkShape } from "./request-shape.js";
+import type { CommandResults } from "./results.js";
 import { version } from "./version.js";
 import type { Work } from "./work.js";
 
@@ -13,8 +14,15 @@ import type { Work } from "./work.js";
  * `errors` beside a null result, a fault of kvane itself as `internal-fault`; it does not throw. The same request and
  * the same files give the same answer.
  */
+export async function answer<Command extends keyof CommandResults>(
+  request: Request & { readonly command: Command },
+  host: JobHost,
+): Promise<Envelope<CommandResults[Command]>>;
+/** The same for a command that is known only when the program runs. */
+export async function answer(request: Request, host: JobHost): Promise<Envelope<object>>;
 export async function answer(request: Request, host: JobHost): Promise<Envelope<object>> {
   if (typeof request !== "object" || request === null) return refusal("", [noRequest(request)]);
+  if (typeof host?.readText !== "function") return refusal(String(request.command ?? ""), [noHost(host)]);
   const command = String(request.command ?? "");
   const entry = Object.hasOwn(commandTable, command) ? commandTable[command] : undefined;
   const work: Work = { request, host, study: null, structure: null, assumed: [], warnings: [] };
@@ -41,6 +49,14 @@ function noRequest(found: unknown): Problem {
     expected: "an object with a `command`",
     found: found === null ? "null" : typeof found,
     remedy: "give the fields that stand under `input` of an answer, and the command",
+  });
+}
+
+function noHost(found: unknown): Problem {
+  return problem("invalid-request", "the host cannot read files", {
+    expected: "a host with a function `readText`",
+    found: found === null ? "null" : typeof found === "object" ? "an object without it" : typeof found,
+    remedy: "give a host, for example hostOfTexts({})",
   });
 }
 

@@ -10,5 +10,6 @@ export { type AnsweredLine, answerLine } from "./lines/answer-line.js";
 export { hostOfTexts } from "./lines/host-of-texts.js";
 export { requestSchema } from "./lines/request-schema.js";
 export { argumentNames, type JobHost, type Request, type RequestField } from "./request.js";
+export type { CommandResults } from "./results.js";
 export { version } from "./version.js";
 export type { Work } from "./work.js";

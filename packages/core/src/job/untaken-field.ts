@@ -1,5 +1,5 @@
 import { nearMiss, type Problem, problem } from "../errors/index.js";
-import type { RequestField } from "./request.js";
+import { argumentNames, type RequestField } from "./request.js";
 import { fieldKind } from "./request-fields.js";
 
 /**
@@ -21,11 +21,18 @@ export function untakenField(
   takes: readonly RequestField[],
   beside: readonly string[] = [],
 ): Problem {
-  const near = nearMiss(field, [...takes, "command", ...beside]);
+  const near = ofOption(field, takes) ?? nearMiss(field, [...takes, "command", ...beside]);
   return problem("invalid-request", `\`${command}\` takes no field \`${field}\``, {
     where: { path: field },
     expected: `one of ${[...takes, ...beside].join(", ")}`,
     found: field,
     remedy: near === null ? "leave it out, or set it to null" : `did you mean \`${near}\`?`,
   });
+}
+
+/** The field whose option has that name, as in `--j` for `constants`: remedies and pages of help name options. */
+function ofOption(field: string, takes: readonly RequestField[]): RequestField | null {
+  const option = `--${field.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
+  if (field === "parent" && takes.includes("moments")) return "study";
+  return takes.find((one) => argumentNames[one] === option) ?? null;
 }

@@ -5,6 +5,7 @@
  * Moments and phases; Modes, amplitudes, real moments). Source: Bertaut, Acta Cryst. A24 (1968) 217.
  */
 
+export { formatPhased, type LinearForm, type Phase, type PhasedNumber, phasedToComplex } from "../numbers/index.js";
 export { axisLengths } from "./axis-lengths.js";
 export { cartesianAxes, convertComponents } from "./components.js";
 export {

@@ -52,13 +52,13 @@ export async function locate(
   );
   const weigh = weigher(group, model);
   const searched = await searchAll(kinds, model, minimumMatched, options, host);
-  const { entries, regions } = weighAll(searched, weigh);
+  const { entries, regions } = await weighAll(searched, weigh, host);
   const kept = entries.filter(
     ({ candidate, mostMatched, dimension }) =>
       (options.belowMinimum === true && dimension === 0) || Math.max(candidate.matched, mostMatched) >= minimumMatched,
   );
   const distance = starDistance(group, model.primitiveMetric);
-  const merged = [...mergeSameFinds(kept, model, distance)]
+  const merged = [...(await mergeSameFinds(kept, model, distance, host))]
     // The sort is stable: equal evidence leaves the order of the kinds, fewest arms first.
     .sort((a, b) => b.candidate.evidence.value - a.candidate.evidence.value);
   const shown = merged.filter(({ dimension }, rank) => rank < mostCandidates || dimension === 0);
@@ -187,16 +187,18 @@ async function searchAll(
   return searched;
 }
 
-function weighAll(
+async function weighAll(
   searched: readonly SearchedKind[],
   weigh: Weigher,
-): { readonly entries: readonly Entry[]; readonly regions: readonly Region[] } {
+  host: WorkHost,
+): Promise<{ readonly entries: readonly Entry[]; readonly regions: readonly Region[] }> {
   const dimensions = Math.log(new Set(searched.map(({ kind }) => kind.dimension)).size);
   const entries: Entry[] = [];
   const regions: Region[] = [];
   for (const { kind, findings } of searched) {
     const charges = { dimensions, kinds: Math.log(kind.kindsOfDimension) };
     for (const { k, matched, region } of findings.solutions) {
+      await breathe(host);
       const weighed = weigh(k, charges);
       const index = region < 0 ? -1 : regions.length + region;
       entries.push({

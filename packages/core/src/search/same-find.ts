@@ -1,3 +1,4 @@
+import { breathe, type WorkHost } from "../algorithms/index.js";
 import type { Weighed } from "./candidate.js";
 import type { Explanation, PeakModel } from "./explanation.js";
 import type { StarDistance } from "./near-in-k.js";
@@ -29,15 +30,21 @@ export interface Entry extends Weighed {
  * where such a k predicts the same positions within the tolerance, is near, and has no better evidence to speak of, it
  * goes under the simpler one. Of two of one kind that are one k the better stays.
  */
-export function mergeSameFinds(entries: readonly Entry[], model: PeakModel, distance: StarDistance): readonly Entry[] {
+export async function mergeSameFinds(
+  entries: readonly Entry[],
+  model: PeakModel,
+  distance: StarDistance,
+  host: WorkHost,
+): Promise<readonly Entry[]> {
   const byRank = [...entries].sort(
     (a, b) => a.dimension - b.dimension || b.candidate.evidence.value - a.candidate.evidence.value,
   );
   const kept: { readonly entry: Entry; readonly merged: MergedCandidate[] }[] = [];
   for (const entry of byRank) {
-    const host = kept.find((earlier) => isSameFind(earlier.entry, entry, model, distance));
-    if (host === undefined) kept.push({ entry, merged: [] });
-    else if (host.entry.dimension < entry.dimension) host.merged.push(mergedFrom(entry));
+    await breathe(host);
+    const same = kept.find((earlier) => isSameFind(earlier.entry, entry, model, distance));
+    if (same === undefined) kept.push({ entry, merged: [] });
+    else if (same.entry.dimension < entry.dimension) same.merged.push(mergedFrom(entry));
   }
   return kept.map(({ entry, merged }) => ({
     ...entry,

@@ -1,4 +1,4 @@
-import type { WorkHost } from "../algorithms/index.js";
+import { breathe, type WorkHost } from "../algorithms/index.js";
 import {
   equivalentWaveVectors,
   exactComponents,
@@ -81,7 +81,11 @@ export async function severalVectors(input: StageInput, host: WorkHost): Promise
   const first = distinct([...candidates, ...(broad?.weighed ?? [])], input).slice(0, wider ? mostFirst : 1);
   if (first.length === 0) return null;
   const bestSingle = (first[0] as Weighed).candidate.evidence.value;
-  const harmonics = first.flatMap((one) => harmonicsOf(input, one, bestSingle));
+  const harmonics: VectorFind[] = [];
+  for (const one of first) {
+    await breathe(host);
+    harmonics.push(...harmonicsOf(input, one, bestSingle));
+  }
   const stages: VectorStage[] = [
     // Of the vectors that the searches came to: no more complete than they are.
     {
@@ -102,7 +106,11 @@ export async function severalVectors(input: StageInput, host: WorkHost): Promise
       minimumMatched: [half, ...pairs.minimumMatched],
     });
   const two = byEvidence(pairs?.found ?? []);
-  const sums = two.slice(0, mostPairs).flatMap((pair) => withSums(input, pair, bestSingle));
+  const sums: VectorFind[] = [];
+  for (const pair of two.slice(0, mostPairs)) {
+    await breathe(host);
+    sums.push(...withSums(input, pair, bestSingle));
+  }
   if (two.length > 0)
     stages.push({ stage: "sums", tried: sums.length, boxes: 0, exhaustive: true, minimumMatched: [] });
   const found: VectorFind[] = [];

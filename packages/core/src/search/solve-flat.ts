@@ -97,7 +97,7 @@ async function decideOpenRegions(
       undecided.push(centre);
       continue;
     }
-    if (index % 64 === 0) await breathe(host);
+    await breathe(host);
     const looked = decideBox(frame, wedge, intervals, wanted, centre, findings.openHalf);
     boxes += looked.boxes;
     if (looked.decision === "open") undecided.push(centre);
