@@ -1,6 +1,14 @@
 import { smallIrreps } from "@kvane/core/irreps";
-import { manifold } from "@kvane/core/kvectors";
-import { constraintTexts, ownWriting, type SiteModes, siteModes, writtenSite } from "@kvane/core/modes";
+import { manifold, parseWaveVector, placeWaveVector } from "@kvane/core/kvectors";
+import {
+  constraintTexts,
+  type Mode,
+  ownWriting,
+  type SiteModes,
+  siteModes,
+  starModes,
+  writtenSite,
+} from "@kvane/core/modes";
 import { type Cell, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { constantRoot } from "#core/modes/constant-root.js";
@@ -68,6 +76,8 @@ describe("modes", () => {
     ["P b n m", "0 2/7 0", "-0.017 0.07 1/4"],
     ["P 21 1 1", "1/5 0 0", "0.1 0.2 0.3"],
     ["P 1 1 n", "1/5 1/7 0", "0.1 0.2 0.3"],
+    ["P 42/m n m", "0 0 1/5", "0 1/2 0"],
+    ["I 4/m m m", "0 0 1/5", "0.1 0.2 0.3"],
   ])("of %s on the line through %s, site %s obey them with open letters", (group, k, position) => {
     const { form } = manifold(groupOf(group), wave(k), { withInversion: false });
     expect(problemsOf(group, modesOf(group, { ...form, values: null, uncertainties: null }, position))).toEqual([]);
@@ -149,7 +159,53 @@ describe("modes", () => {
   });
 });
 
+describe("modes on the other arms", () => {
+  const group = groupOf("P m 1 1");
+  const irreps = smallIrreps(group, wave("1/5 0 0"));
+  const orbit = siteOrbit(group, site("M", "0.1 0.2 0.3"), null);
+
+  // The plane across a takes k to −k: it turns displacements along a over, of moments those along b and c.
+  test.each([
+    ["displacements", false, [-1, 1, 1]],
+    ["moments", true, [1, -1, -1]],
+  ] as const)("are %s that the operator has turned", (_what, axial, signs) => {
+    const modes = siteModes(group, irreps, orbit, { axial });
+    expect(modes.axial).toBe(axial);
+    const vectors = (list: readonly Mode[]) =>
+      list.flatMap(({ moments }) =>
+        moments.map(({ vector }) => vector.map(({ coefficients }) => coefficients[0] as number)),
+      );
+    const [first, second] = starModes(group, modes).map((arm) => arm.irreps.flatMap((part) => vectors(part.modes)));
+    const turned = (first as number[][]).map((vector) =>
+      vector.map((entry, at) => entry * (signs[at] as number) + 0).join(),
+    );
+    // Both atoms change places.
+    expect((second as number[][]).map((vector) => vector.join()).sort()).toEqual(turned.sort());
+  });
+
+  test("are made when they are asked for", () => {
+    const arms = (star: boolean) =>
+      writtenSite(group, siteModes(group, irreps, orbit), { convention: ownWriting, cell: null, star }).arms;
+    expect(arms(false)).toBeNull();
+    expect(arms(true)?.length).toBe(2);
+  });
+});
+
 describe("tables", () => {
+  // A glide plane across c by half of a = b' or b = c'. In the axes with a' = a+b+c it takes (1,0,0) to (−1,2,2), and the
+  // components of k in the plane are (u+v,u,v).
+  test.each([
+    ["P 1 1 a", "u,v,0", "kx", "(-u, -v, w)", "(u, v, -w)"],
+    ["P 1 1 a (a+b+c,a,b)", "u+v,u,v", "ky", "(u, -2u-v, -2u-w)", "(-u, 2u+v, 2u+w)"],
+    ["P 1 1 b (a+b+c,a,b)", "u+v,u,v", "kz", "(u, -2u-v, -2u-w)", "(-u, 2u+v, 2u+w)"],
+  ])("of %s at %s have one phase behind the bracket, in %s", (name, k, component, ...turned) => {
+    // S₂ = D(g)⁻¹ det(R) R S₁ with D(g) = ± e^{2πi k·t}, as D(g)² = e^{+2πi k·2t}; no atom leaves the cell.
+    const modes = modesOf(name, placeWaveVector(groupOf(name), parseWaveVector(k)).k, "0 0.1 0.2");
+    expect(modes.irreps.map(({ constraint }) => constraint.join(" ")).sort()).toEqual(
+      turned.map((vector) => `(u, v, w) ${vector}·e^{-2πi·${component}/2}`).sort(),
+    );
+  });
+
   test("name amplitudes u v w first, with primes where the alphabet runs out", () => {
     const names = Array.from({ length: 200 }, (_, index) => letterOf(index));
     expect(names.slice(0, 3)).toEqual(["u", "v", "w"]);
