@@ -51,11 +51,11 @@ describe("mutants", () => {
   });
 
   test("are sampled once each, and the same again", () => {
-    const { all, mutants } = sampleOf("irreps");
+    const { all, mutants } = sampleOf("modes");
     const places = mutants.map(({ file, start, end, replacement }) => `${file} ${start} ${end} ${replacement}`);
     expect(new Set(places).size).toBe(300);
     expect(all).toBeGreaterThan(300);
-    expect(sampleOf("irreps").mutants).toEqual(mutants);
+    expect(sampleOf("modes").mutants).toEqual(mutants);
   });
 });
 
