@@ -69,6 +69,7 @@ describe("fractions against fraction.js", () => {
     const large: Rational = [Number.MAX_SAFE_INTEGER, 1];
     expect(() => add(large, large)).toThrowError(expect.objectContaining({ code: "number-overflow" }));
     expect(() => multiply(large, [3, 2])).toThrowError(expect.objectContaining({ code: "number-overflow" }));
+    expect(() => rational(3, 2 ** 53)).toThrowError(expect.objectContaining({ code: "number-overflow" }));
   });
 
   it("has no negative zero", () => {

@@ -95,6 +95,7 @@ describe("integer matrices", () => {
     expect(products).toEqual([0, 0, 0, 0, 0, 0, 0, 0, 0]);
     expect(invertUnimodular([-1, 0, 0, 0, -1, 0, 0, 0, -1])).toEqual([-1, 0, 0, 0, -1, 0, 0, 0, -1]);
     expect(dotIntegers([0, 0, -1], [-1, 0, 0])).toBe(0);
+    expect(dotIntegers([0, 0, 0], [-1, -1, -1])).toBe(0);
   });
 
   it("times their adjugate are the determinant", () => {

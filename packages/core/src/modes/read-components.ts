@@ -31,7 +31,7 @@ export interface ProjectedComponents {
  * up to 1. Null while a letter of k is open.
  *
  * @param given per atom of the orbit three complex components in `convention`
- * @param cell needed for crystal and Cartesian components
+ * @param cell needed for crystal and Cartesian components; a `TypeError` where those come without one
  */
 export function projectComponents(
   group: SpaceGroup,
