@@ -191,6 +191,18 @@ describe("found by fuzzing: commands", () => {
     expect((await answer(own, host)).errors).toMatchObject([{ where: { argument: "--site", path: "sites[1]" } }]);
   });
 
+  test("too many bonds are refused where the farthest of them is asked for", async () => {
+    const asked = { command: "exchange", group: "P m -3 m", cell: "4 4 4 90 90 90", sites: ["Fe 0 0 0"] };
+    const whereOf = async (more: object) =>
+      (await answer({ ...asked, ...more }, { readText: async () => "" })).errors.map(({ code, where }) => [
+        code,
+        where.argument,
+      ]);
+    const far = "9007199254740991";
+    expect(await whereOf({ vary: ["2 0 1 2", `${far} 0 1 2`] })).toEqual([["invalid-argument", "--vary"]]);
+    expect(await whereOf({ constants: ["1 1", `${far} 1`] })).toEqual([["invalid-argument", "--j"]]);
+  });
+
   test("a command that is no text is no command", async () => {
     const whole = await answer({ command: 5 } as unknown as Request, { readText: async () => "" });
     expect(whole).toMatchObject({ command: "5", errors: [{ code: "unknown-command" }] });

@@ -1,4 +1,4 @@
-import { fail } from "../../errors/index.js";
+import { fail, placed } from "../../errors/index.js";
 import {
   type BondTable,
   bondTable,
@@ -8,6 +8,7 @@ import {
   type GivenCoupling,
 } from "../../exchange/index.js";
 import type { Cell, SiteOrbit, SpaceGroup } from "../../spacegroups/index.js";
+import { argumentNames } from "../request.js";
 import { together } from "../work.js";
 import { axesOf, type GivenRange } from "./exchange-input.js";
 import type { GivenSite } from "./site-input.js";
@@ -28,10 +29,14 @@ export async function bondsFor(
   },
 ): Promise<{ readonly table: BondTable; readonly axes: readonly DiagramAxis[] }> {
   const { constants, ranges, shells } = given;
-  const needed = farthestShell([...constants, ...ranges]);
-  const table = bondTable(group, cell, orbits, {
-    shells: Math.max(shells ?? (needed > 0 ? needed : usualShells), needed),
-  });
+  const named = [...constants, ...ranges];
+  const needed = farthestShell(named);
+  const wanted = Math.max(shells ?? (needed > 0 ? needed : usualShells), needed);
+  // Too many bonds are the fault of whatever asks for the farthest.
+  const farthest = named.find((one) => farthestShell([one]) === wanted);
+  const table = placed(farthest?.where ?? { argument: argumentNames.shells }, () =>
+    bondTable(group, cell, orbits, { shells: wanted }),
+  );
   refuseCloseAtoms(table, given.sites);
   const { axes } = await together({
     constants: () => exchangeModel(table, constants),
