@@ -4,6 +4,7 @@ import { problem } from "@kvane/core/errors";
 import {
   parseCif,
   parseFourierComponents,
+  parseIntensityList,
   parseMomentList,
   parsePeakList,
   parseScanTable,
@@ -201,6 +202,29 @@ describe("found by fuzzing: commands", () => {
     const far = "9007199254740991";
     expect(await whereOf({ vary: ["2 0 1 2", `${far} 0 1 2`] })).toEqual([["invalid-argument", "--vary"]]);
     expect(await whereOf({ constants: ["1 1", `${far} 1`] })).toEqual([["invalid-argument", "--j"]]);
+  });
+
+  test("a scale that would make squares of intensities infinite is refused, as an option and in a study", async () => {
+    const example = (name: string) => readFileSync(join(root, "packages/cli/example", name), "utf8");
+    const study = example("study.yaml");
+    const huge = study.replace("scale: 40", "scale: 1e300");
+    expect(huge).not.toBe(study);
+    const host = (text: string) => ({ readText: async (path: string) => (path === "s.yaml" ? text : example(path)) });
+    const option = await answer({ command: "weigh", study: "s.yaml", k: "0,1/2,0", scale: "1e308" }, host(study));
+    expect(option.errors).toMatchObject([{ code: "invalid-number", where: { argument: "--scale" } }]);
+    const written = await answer({ command: "weigh", study: "s.yaml", k: "0,1/2,0" }, host(huge));
+    expect(written.errors).toMatchObject([{ code: "invalid-number", where: { path: "intensities.scale" } }]);
+  });
+
+  test("intensities beyond any measurement are refused in lists and scans", async () => {
+    const list = (row: string) => () => parseIntensityList(`d intensity intensity-su\n4 10 1\n${row}\n`, { file: "i" });
+    for (const row of ["3 1e200 1", "3 10 1e-200", "3 10 1e31"])
+      expect(places(await problemsOf(list(row))), row).toEqual(["invalid-peak 3:1"]);
+    const scan = (row: string) => () => parseScanTable(`T I su\n1 10 1\n${row}\n`, "s");
+    for (const row of ["2 1e200 1", "2 -1e200 1"])
+      expect(places(await problemsOf(scan(row))), row).toEqual(["invalid-scan 3:3"]);
+    expect(places(await problemsOf(scan("2 10 1e-200")))).toEqual(["invalid-scan 3:6"]);
+    expect(() => [list("3 0 1e-30")(), scan("2 -1e30 1")()]).not.toThrow();
   });
 
   test("a command that is no text is no command", async () => {

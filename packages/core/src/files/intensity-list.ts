@@ -1,5 +1,6 @@
 import { defaultIntensityShare, weakIntensityShare } from "../numbers/index.js";
 import type { PeakKind } from "../search/index.js";
+import { isMeasurable, measurableText } from "./measurable.js";
 import { type PeakListOptions, readPeakTable } from "./peak-list.js";
 import { note, problemList, throwProblems } from "./problem-list.js";
 
@@ -51,6 +52,15 @@ export function parseIntensityList(text: string, options: PeakListOptions): Inte
         found: "none",
         remedy: "fill it in, or write a header such as: d intensity intensity-su",
       });
+  for (const { intensity, intensityUncertainty, line } of peaks)
+    for (const value of [intensity ?? 0, intensityUncertainty ?? 0])
+      if (!isMeasurable(value))
+        note(problems, "invalid-peak", "the row has an intensity or uncertainty that nobody measures", {
+          where: { line, column: 1 },
+          expected: measurableText,
+          found: String(value),
+          remedy: "correct the value, or give all intensities in another unit",
+        });
   throwProblems(problems);
   const strongest = peaks.reduce((most, { intensity }) => Math.max(most, Math.abs(intensity ?? 0)), 0);
   const missing = peaks.filter(({ intensityUncertainty }) => intensityUncertainty === null).length;

@@ -1,5 +1,6 @@
 import { isTooLarge, whyNoNumber } from "../errors/index.js";
 import type { ScanSeries } from "../onsets/index.js";
+import { isMeasurable, measurableText } from "./measurable.js";
 import { readNumber } from "./number-text.js";
 import { noteDecimalComma } from "./peak-values.js";
 import { note, type ProblemList, problemList, throwProblems } from "./problem-list.js";
@@ -141,7 +142,16 @@ function readRow(row: Row, columns: readonly ScanColumn[], problems: ProblemList
       number === null ||
       (role === "temperature" && !(number.value > 0)) ||
       (role === "uncertainty" && !(number.value > 0) && !isUnused({ of }, columns));
-    if (!wrong) return number;
+    if (!wrong) {
+      if (isMeasurable(number.value) && isMeasurable(number.uncertainty ?? 0)) return number;
+      note(problems, "invalid-scan", `\`${field?.text ?? ""}\` is a number that nobody measures`, {
+        where: { line: row.line, column: field?.column ?? 1 },
+        expected: measurableText,
+        found: field?.text ?? "nothing",
+        remedy: "correct the value, or give the column in another unit",
+      });
+      return null;
+    }
     const text = field?.text ?? "";
     const wanted = role === "uncertainty" || role === "temperature" ? role : `number for ${name}`;
     note(problems, "invalid-scan", `\`${text}\` ${whyNoNumber(text, `is no ${wanted}`)}`, {

@@ -1,3 +1,4 @@
+import { largestMeasured } from "../numbers/index.js";
 import { note, type ProblemList } from "./problem-list.js";
 import { positive, readKind } from "./study-peaks.js";
 import { openSection } from "./study-section.js";
@@ -30,7 +31,10 @@ export function readIntensities(node: TreeNode, problems: ProblemList): StudyInt
   const includesNuclear = flag("includes-nuclear");
   const domainsNode = section.get("domains");
   const domains = domainsNode && readDomains(domainsNode, problems);
-  const scale = number("scale", positive("the intensity of |F|² = 1 (10⁻²⁴ cm²), above 0"));
+  const scale = number("scale", {
+    expected: `the intensity of |F|² = 1 (10⁻²⁴ cm²), above 0 and up to ${largestMeasured}`,
+    allows: (value) => value > 0 && value <= largestMeasured,
+  });
   const resolution = number("resolution", positive("a distance in 1/Å above 0"));
   const displacement = number("displacement", {
     expected: "an overall B in Å², 0 or more",

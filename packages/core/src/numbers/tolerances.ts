@@ -80,3 +80,10 @@ export const clearDifferenceShare = 0.02;
 
 /** Reciprocal lattice units per component. A measured reflection this near to H ± k is taken for it. */
 export const reflectionIndexTolerance = 0.03;
+
+/**
+ * Any unit. Sizes, besides 0, that a measured number, its uncertainty or a scale can have: no instrument gives others, and
+ * squares of their ratios stay far within what a double holds.
+ */
+export const smallestMeasured = 1e-30;
+export const largestMeasured = 1e30;

@@ -1,6 +1,6 @@
 import { fail, type Place } from "../../errors/index.js";
 import type { StudyIntensities } from "../../files/index.js";
-import { overlapInverseAngstrom } from "../../numbers/index.js";
+import { largestMeasured, overlapInverseAngstrom } from "../../numbers/index.js";
 import type { PeakKind } from "../../search/index.js";
 import { remember, type Work } from "../work.js";
 import { optionOf } from "./given.js";
@@ -41,7 +41,7 @@ export function writtenSettings(work: Work, fromStudy: StudyIntensities | null):
   const { request } = work;
   return {
     lorentz: lorentzOption(work) ?? fromStudy?.lorentz ?? null,
-    scale: numberOption(request, "scale", { above: 0 }) ?? fromStudy?.scale ?? null,
+    scale: numberOption(request, "scale", { above: 0, to: largestMeasured }) ?? fromStudy?.scale ?? null,
     resolution: numberOption(request, "resolution", { above: 0 }) ?? fromStudy?.resolution ?? null,
     displacement: numberOption(request, "displacement", { from: 0 }) ?? fromStudy?.displacement ?? null,
     scatteringAngleDeg:
