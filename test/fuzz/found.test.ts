@@ -227,6 +227,21 @@ describe("found by fuzzing: commands", () => {
     expect(() => [list("3 0 1e-30")(), scan("2 -1e30 1")()]).not.toThrow();
   });
 
+  test("a cell that nobody measures is refused in a CIF", async () => {
+    const text = "data_a\n_cell_length_a 4.40(3)\n_cell_length_b 4.45(3)\n_cell_length_c 5e-324(3)\n";
+    const { problems } = await readCifStructure(await parseCif(text, "a.cif"));
+    expect(places(problems.cell)).toEqual(["cif-value 4:16"]);
+  });
+
+  test("that no peak is left is said of the list", async () => {
+    const asked = { group: "62", cell: "10.21 6.05 4.71 90 90 90", peaks: "p", as: "q", qMax: "0.001" };
+    const host = { readText: async () => "0.5\n1.1\n" };
+    for (const own of [{ command: "index", k: "0,0.469,0" }, { command: "locate" }])
+      expect((await answer({ ...asked, ...own }, host)).errors).toMatchObject([
+        { code: "too-few-peaks", where: { file: "p" } },
+      ]);
+  });
+
   test("a command that is no text is no command", async () => {
     const whole = await answer({ command: 5 } as unknown as Request, { readText: async () => "" });
     expect(whole).toMatchObject({ command: "5", errors: [{ code: "unknown-command" }] });

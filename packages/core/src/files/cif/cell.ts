@@ -8,6 +8,7 @@ import {
   whyNoNumber,
 } from "../../errors/index.js";
 import { type Cell, checkCell } from "../../spacegroups/index.js";
+import { isMeasurable, measurableText } from "../measurable.js";
 import { type BlockReader, locate } from "./block-reader.js";
 import type { CifValue } from "./document.js";
 import { type CifNumber, numberOf } from "./numbers.js";
@@ -105,8 +106,17 @@ function readParameter(reader: BlockReader, name: keyof Cell, problems: Problem[
   }
   const number = numberOf(value);
   const place = placeIn(document, location.value);
-  if (number) return { number, written: value.raw, place, byDefault: false };
-  problems.push(notANumber(dataName, value, place));
+  if (number && isMeasurable(number.value)) return { number, written: value.raw, place, byDefault: false };
+  problems.push(
+    number
+      ? problem("cif-value", `${dataName} is a number that nobody measures`, {
+          where: place,
+          expected: measurableText,
+          found: value.raw.slice(0, 60),
+          remedy: "correct the number",
+        })
+      : notANumber(dataName, value, place),
+  );
   return null;
 }
 

@@ -1,4 +1,4 @@
-import { type Problem, problem } from "../../errors/index.js";
+import { KvaneError, type Problem, placed, problem } from "../../errors/index.js";
 import type { WaveVector } from "../../kvectors/index.js";
 import { peaksRecord, type SearchRecord, searchRecord } from "../../reports/index.js";
 import {
@@ -39,7 +39,13 @@ export interface Found {
 export function indexedBy(work: Work, input: SearchInput, ks: readonly WaveVector[]): Found {
   const { group, cell, peaks, options } = input;
   checkSearchFits(work, { ...options, unmatched: 0 }, peaks.list);
-  const candidates = ks.map((k) => indexPeaks(group, cell, k, peaks.list, options));
+  const candidates = ks.map((k) => {
+    try {
+      return indexPeaks(group, cell, k, peaks.list, options);
+    } catch (error) {
+      return inTheList(error, peaks.file);
+    }
+  });
   for (const { warnings } of candidates) remember(work, [], warnings);
   const record = searchRecord(group, cell, peaksRecord(peaks.list, peaks.file), {
     candidates,
@@ -49,6 +55,14 @@ export function indexedBy(work: Work, input: SearchInput, ks: readonly WaveVecto
     dropped: 0,
   });
   return { candidates, several: [], record };
+}
+
+/** That too few peaks are left is said of the list; every other problem has its place elsewhere. */
+function inTheList(error: unknown, file: string): never {
+  const few = error instanceof KvaneError && error.problems.some(({ code }) => code === "too-few-peaks");
+  return placed(few ? { file } : {}, () => {
+    throw error;
+  });
 }
 
 function nothingFound({ unmatched, maxDimension }: SearchOptions): Problem {
@@ -73,7 +87,9 @@ function severalOf(result: SeveralVectors | null): readonly WaveVector[] {
 export async function searchedFor(work: Work, input: SearchInput): Promise<Found> {
   const { group, cell, peaks, options } = input;
   checkSearchFits(work, options, peaks.list);
-  const found = await locate(group, cell, peaks.list, options, work.host);
+  const found = await locate(group, cell, peaks.list, options, work.host).catch((error) =>
+    inTheList(error, peaks.file),
+  );
   remember(work, [], found.warnings);
   for (const { warnings } of found.candidates.slice(0, 1)) remember(work, [], warnings);
   if (found.candidates.length === 0) remember(work, [], [nothingFound(options)]);
