@@ -26,9 +26,9 @@ export interface ProjectedComponents {
 
 /**
  * Fourier components written in some convention: what they are in kvane's own, and how they split over the irreps, each
- * part by least squares in the metric of the cell averaged over the point group (without a cell any metric that the
- * group leaves alone serves: the parts are the same). Modes of different irreps are orthogonal in it, so the shares add
- * up to 1. Null while a letter of k is open.
+ * part by least squares in the metric of the cell averaged over the point group (without a cell the
+ * parts are the same, and their shares those of axes at right angles and of one length, averaged likewise). Modes of
+ * different irreps are orthogonal in it, so the shares add up to 1. Null while a letter of k is open.
  *
  * @param given per atom of the orbit three complex components in `convention`
  * @param cell needed for crystal and Cartesian components; a `TypeError` where those come without one

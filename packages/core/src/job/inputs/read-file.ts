@@ -9,7 +9,7 @@ export async function readNamed(host: JobHost, path: string, where: Partial<Plac
   const place: Place = { ...nowhere, ...(where.file ? where : { ...where, file: path }) };
   try {
     const text: unknown = await host.readText(path);
-    return typeof text === "string" ? text : failWithout(path, text);
+    return typeof text === "string" ? text : refuseNoText(path, text);
   } catch (error) {
     if (error instanceof KvaneError)
       throw new KvaneError(
@@ -33,7 +33,7 @@ export async function readNamed(host: JobHost, path: string, where: Partial<Plac
 }
 
 /** A host that is not typed may give bytes, which is no fault of the file. */
-function failWithout(path: string, found: unknown): never {
+function refuseNoText(path: string, found: unknown): never {
   fail("file-unreadable", `\`${path}\` did not come as text`, {
     expected: "a string from `readText`",
     found: found === null ? "null" : typeof found,
