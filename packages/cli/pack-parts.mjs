@@ -26,9 +26,9 @@ export async function packParts({ outputs, files, early, options }) {
     parts,
     [...parts].filter(([name, { entryPoint = "" }]) => name === start || sources.has(entryPoint)),
   );
-  const pieces = [...inStart].filter((name) => name !== start).sort();
-  const entry = [...pieces.map((name, index) => `export * as p${index} from "./${name}";`), `import "./${start}";`];
   const rest = [...texts.keys()].filter((name) => !inStart.has(name));
+  const pieces = [...importedBy(parts, rest)].filter((name) => inStart.has(name)).sort();
+  const entry = startText(pieces.map((name) => ({ name, names: parts.get(name)?.exports ?? [] })));
 
   /** @type {import("esbuild").Plugin} */
   const arrange = {
@@ -42,11 +42,11 @@ export async function packParts({ outputs, files, early, options }) {
         return { path: name, namespace: offered ? "offered" : "part" };
       });
       bundle.onLoad({ filter: /./, namespace: "part" }, ({ path }) => ({
-        contents: path === "start" ? entry.join("\n") : (texts.get(path) ?? ""),
+        contents: path === "start" ? entry : (texts.get(path) ?? ""),
         resolveDir: options.absWorkingDir ?? "",
       }));
       bundle.onLoad({ filter: /./, namespace: "offered" }, ({ path }) => ({
-        contents: `module.exports = require("./${start}").p${pieces.indexOf(path)};`,
+        contents: `module.exports = require("./${start}").pieces[${pieces.indexOf(path)}]();`,
       }));
     },
   };
@@ -69,6 +69,32 @@ const shebang = "#!/usr/bin/env node\n";
 
 /** As in modules. */
 const strict = '"use strict";';
+
+/**
+ * The start, and what it offers: for each piece a function that gives what it exports, because few commands ask for any
+ * and a namespace, with a getter for each of hundreds of names, takes a fiftieth of a quick command's time. Nothing of
+ * the source exports what changes.
+ * @param {readonly {readonly name: string, readonly names: readonly string[]}[]} pieces
+ */
+function startText(pieces) {
+  const imports = pieces.map(
+    ({ name, names }, index) =>
+      `import { ${names.map((one) => `${one} as p${index}${one}`).join(", ")} } from "./${name}";`,
+  );
+  const offers = pieces.map(
+    ({ names }, index) => `() => ({ ${names.map((one) => `${one}: p${index}${one}`).join(", ")} })`,
+  );
+  return [...imports, `import "./${start}";`, `export const pieces = [${offers.join(", ")}];`].join("\n");
+}
+
+/**
+ * What these parts import, one way or the other.
+ * @param {Map<string, import("esbuild").Metafile["outputs"][string]>} parts
+ * @param {readonly string[]} names
+ */
+function importedBy(parts, names) {
+  return new Set(names.flatMap((name) => parts.get(name)?.imports ?? []).map(({ path }) => basename(path)));
+}
 
 /**
  * These parts and all that they import, without what `import()` loads.

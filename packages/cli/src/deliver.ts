@@ -13,7 +13,6 @@ import {
   reportText,
   resultFolder,
 } from "@kvane/core/reports";
-import { writeFolder, writeWhole } from "./output.js";
 import { failUndrawn, type OutputWishes } from "./request.js";
 import type { Surroundings } from "./surroundings.js";
 
@@ -53,15 +52,16 @@ export async function packed(
 }
 
 /** Puts it where it was wished: the terminal, a file, or for the whole job a folder. */
-export function deliver(
+export async function deliver(
   { text, files }: Parcel,
   wishes: OutputWishes,
   { write, finish = write, writeError, folder }: Surroundings,
-): void {
+): Promise<void> {
   if (wishes.out === null) {
     finish(text);
     return;
   }
+  const { writeFolder, writeWhole } = await import("./output.js");
   const path = { shown: wishes.out, full: resolve(folder, wishes.out) };
   if (files !== null) {
     writeFolder(path, files, wishes.force);

@@ -1,6 +1,6 @@
-import { removeUnfinished } from "./output.js";
 import { runCommand } from "./run-command.js";
 import { processSurroundings } from "./surroundings.js";
+import { removeUnfinished } from "./unfinished.js";
 
 /** Set by Ctrl-C and by batch systems whose time is over; long work looks at it between its steps. */
 const signal = { aborted: false };

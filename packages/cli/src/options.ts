@@ -124,8 +124,5 @@ export function takesValue({ flags }: OptionSpec): boolean {
   return flags.includes("<");
 }
 
-/** Options that take a value, as written: what follows them is no GROUP. */
-export const valueOptions: ReadonlySet<string> = new Set(Object.values(optionSpecs).filter(takesValue).map(flagOf));
-
 /** Options that shape the output of every command. */
 export const outputOptions: readonly OptionName[] = ["json", "out", "force", "quiet"];

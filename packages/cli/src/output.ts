@@ -3,25 +3,12 @@ import { basename, dirname, join } from "node:path";
 import { fail, KvaneError } from "@kvane/core/errors";
 import type { ResultFile } from "@kvane/core/reports";
 import { systemFault } from "./system-faults.js";
+import { removeUnfinished, unfinished } from "./unfinished.js";
 
 /** A place for output: as the user wrote it, and in full. */
 export interface OutputPath {
   readonly shown: string;
   readonly full: string;
-}
-
-/** Unfinished files and folders of this process; removed when it is interrupted. */
-const unfinished = new Set<string>();
-
-/** Removes what was begun and not finished. */
-export function removeUnfinished(): void {
-  for (const path of unfinished)
-    try {
-      rmSync(path, { recursive: true, force: true });
-    } catch {
-      // What could not be begun cannot be removed either.
-    }
-  unfinished.clear();
 }
 
 /** Throws `output-exists` unless the place is free or may be replaced: asked before the work, not after it. */

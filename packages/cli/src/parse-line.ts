@@ -1,11 +1,10 @@
 import { KvaneError, type Problem } from "@kvane/core/errors";
 import { version } from "@kvane/core/job";
 import { commandSpecs } from "./commands/index.js";
-import { valueOptions } from "./options.js";
 import type { ParsedLine } from "./parsed-line.js";
 import { buildProgram } from "./program.js";
 import type { Surroundings } from "./surroundings.js";
-import { usageProblem } from "./usage.js";
+import { usageProblem, valueOptions } from "./usage.js";
 
 /**
  * The command with its first word and options; null where there is nothing to do but what the parser has printed. Throws

@@ -1,6 +1,6 @@
 import { fail } from "@kvane/core/errors";
 import type { Request } from "@kvane/core/job";
-import { exampleMoments, exampleStructure, exampleStudy } from "./host.js";
+import { exampleMoments, exampleStructure, exampleStudy } from "./example-files.js";
 import type { ParsedLine } from "./parsed-line.js";
 
 /** What the command line wants done with the answer. */

@@ -5,8 +5,8 @@ import { type Envelope, type HelpRecord, jsonText } from "@kvane/core/reports";
 import { commandSpecs } from "./commands/index.js";
 import { checkForm, deliver, packed } from "./deliver.js";
 import { problemsText } from "./errors.js";
-import { type CommandHost, commandHost, exampleRequests } from "./host.js";
-import { checkFree } from "./output.js";
+import { exampleRequests } from "./example-files.js";
+import { type CommandHost, commandHost } from "./host.js";
 import type { ParsedLine } from "./parsed-line.js";
 import { plainLine } from "./plain-line.js";
 import { progressLine } from "./progress.js";
@@ -60,8 +60,10 @@ async function execute(line: ParsedLine, surroundings: Surroundings): Promise<nu
   const request = requestFrom(line);
   const wishes = wishesFrom(line);
   checkForm(line.spec.name, wishes);
-  if (wishes.out !== null)
+  if (wishes.out !== null) {
+    const { checkFree } = await import("./output.js");
     checkFree({ shown: wishes.out, full: resolve(surroundings.folder, wishes.out) }, wishes.force);
+  }
   const progress = progressLine(surroundings, wishes.quiet);
   const host = commandHost(surroundings, progress.show);
   const answered = await answer(request, host);
@@ -74,7 +76,7 @@ async function execute(line: ParsedLine, surroundings: Surroundings): Promise<nu
     const cancelled = refusal(line.spec.name, [interrupted]);
     return refuse(cancelled, request, wishes.json, host, surroundings);
   }
-  deliver(parcel, wishes, surroundings);
+  await deliver(parcel, wishes, surroundings);
   // A table or a drawing has no room for warnings, nor has a drafted study; the report and the JSON hold them.
   const bare = wishes.csv || wishes.svg || (line.spec.name === "study" && !wishes.json);
   if (bare && !wishes.quiet && answered.warnings.length > 0)

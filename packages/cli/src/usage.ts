@@ -2,7 +2,7 @@ import { type Problem, problem } from "@kvane/core/errors";
 import { CommanderError } from "commander";
 import type { ArgumentKind } from "./command-spec.js";
 import { commandSpecs } from "./commands/index.js";
-import { flagOf, type OptionSpec, optionSpecs, valueOptions } from "./options.js";
+import { flagOf, type OptionSpec, optionSpecs, takesValue } from "./options.js";
 
 /**
  * A complaint of the parser as a problem, or null when it was no complaint (help and version were asked for).
@@ -55,6 +55,9 @@ function fromParser({ code, message }: CommanderError, words: readonly string[])
       return problem("invalid-argument", text, { remedy: seeHelp });
   }
 }
+
+/** Options that take a value, as written: what follows them is no GROUP. */
+export const valueOptions: ReadonlySet<string> = new Set(Object.values(optionSpecs).filter(takesValue).map(flagOf));
 
 /** Options that may be given more than once. */
 const repeatable: ReadonlySet<string> = new Set(

@@ -1,7 +1,8 @@
 import { fail, type Place, problem } from "@kvane/core/errors";
 import { answerLine, exitStatusOf, type JobHost, refusal } from "@kvane/core/job";
 import type { Envelope } from "@kvane/core/reports";
-import { commandHost, partsOf } from "../host.js";
+import { commandHost } from "../host.js";
+import { partsOf } from "../read-text.js";
 import type { Surroundings } from "../surroundings.js";
 import { type InputLine, linesOf } from "./lines-of.js";
 
