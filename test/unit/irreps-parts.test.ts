@@ -1,9 +1,9 @@
-import { smallIrreps } from "@kvane/core/irreps";
+import { constantRoot, smallIrreps } from "@kvane/core/irreps";
 import { describe, expect, test } from "vitest";
 import { littleGroupPlaces } from "#core/irreps/evaluate.js";
 import { unitaryIntertwiner } from "#core/irreps/intertwiner.js";
 import { primitiveOperator } from "#core/irreps/primitive-operators.js";
-import { constantTurns, herringReality, indexOfCharacter } from "#core/irreps/reality.js";
+import { herringReality, indexOfCharacter } from "#core/irreps/reality.js";
 import {
   addCyclotomic,
   adjointCyclotomicMatrix,
@@ -111,10 +111,10 @@ test("what is no irrep of the group is refused", () => {
   expect(() => herringReality(context, [number(2), number(0)])).toThrow("none of 1, -1 and 0");
 });
 
-test("phases between k and −k hold no letter", () => {
+test("phases that must be numbers hold no letter", () => {
   const turns = { constant: rational(1, 3), coefficients: [rational(0), rational(0), rational(0)] } as const;
-  expect(constantTurns(turns)).toEqual(rootOfUnity(rational(1, 3)));
-  expect(() => constantTurns({ ...turns, coefficients: [rational(0), rational(1), rational(0)] })).toThrow(
+  expect(constantRoot(turns)).toEqual(rootOfUnity(rational(1, 3)));
+  expect(() => constantRoot({ ...turns, coefficients: [rational(0), rational(1), rational(0)] })).toThrow(
     "free parameter",
   );
 });

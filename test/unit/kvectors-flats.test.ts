@@ -1,15 +1,16 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import {
+  type AffineSet,
   affineForms,
   affineParameters,
-  affinePoint,
   type Condition,
   fixingConditions,
   solveConditions,
 } from "#core/kvectors/affine.js";
 import { adaptedCoordinates, crossProduct, directionTable, integerKernel, saturated } from "#core/kvectors/flats.js";
 import {
+  add,
   constantForm,
   dot,
   evaluateForm,
@@ -18,6 +19,7 @@ import {
   integerDeterminant,
   invertUnimodular,
   matrixFrom,
+  multiply,
   type Rational,
   type RationalVector,
   rational,
@@ -33,6 +35,17 @@ const rows = fc.array(triple, { minLength: 0, maxLength: 2 });
 const inner = (a: readonly number[], b: readonly number[]): number =>
   a.reduce((sum, value, at) => sum + value * (b[at] as number), 0);
 const isZero = (row: readonly number[]): boolean => row.every((value) => value === 0);
+
+/** The point of the set at these parameters. */
+function pointOf({ base, directions }: AffineSet, parameters: readonly Rational[]): RationalVector {
+  const [x, y, z] = base.map((start, axis) =>
+    directions.reduce(
+      (sum, direction, at) => add(sum, multiply(parameters[at] as Rational, direction[axis] as Rational)),
+      start,
+    ),
+  );
+  return [x, y, z] as RationalVector;
+}
 
 /** The rank of up to two rows. */
 function rankOf(some: readonly (readonly number[])[]): number {
@@ -121,7 +134,7 @@ describe("affine sets", () => {
         const set = solveConditions(given.map(asCondition));
         if (set === null) return;
         const parameters = set.directions.map((_, at) => rational(numbers[at] as number, 3));
-        const point = affinePoint(set, parameters);
+        const point = pointOf(set, parameters);
         for (const [coefficients, value] of given)
           expect(dot(vectorFrom(coefficients), point)).toEqual(rational(value, 2));
         expect(set.directions.length).toBe(set.pivots.length);
@@ -164,7 +177,7 @@ describe("affine sets", () => {
     const set = solveConditions(fixingConditions(quarter, shift));
     expect(set?.base).toEqual([rational(-1, 2), rational(1, 2), rational(0)]);
     expect(set?.directions).toEqual([vectorFrom([0, 0, 1])]);
-    const point = affinePoint(set as NonNullable<typeof set>, [rational(2, 7)]);
+    const point = pointOf(set as NonNullable<typeof set>, [rational(2, 7)]);
     expect(subtractVectors(rowTimes(point, quarter), point)).toEqual(shift);
     const reversed = solveConditions(fixingConditions(quarter, vectorFrom([0, 0, 1]), -1));
     // −k₃ − k₃ = 1.

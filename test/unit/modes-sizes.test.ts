@@ -1,6 +1,13 @@
 import type { WaveVector } from "@kvane/core/kvectors";
 import { manifold } from "@kvane/core/kvectors";
-import { type MomentSizes, momentSizes, ownWriting, projectComponents, type SiteModes } from "@kvane/core/modes";
+import {
+  type MomentSizes,
+  momentSizes,
+  ownWriting,
+  projectComponents,
+  type SiteModes,
+  writtenSite,
+} from "@kvane/core/modes";
 import { type Cell, directMetric } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { modesOf } from "../support/decomposition.js";
@@ -169,6 +176,20 @@ describe("Fourier components that are given", () => {
     const lattice = projectComponents(group, modes, given, { convention: ownWriting, cell });
     expect(lattice?.components).toEqual(given);
   });
+
+  test.each(["crystal", "cartesian"] as const)(
+    "and are not read or written in %s ones without a cell",
+    (components) => {
+      const group = groupOf("P n m a");
+      const modes = modesOf("P n m a", "0 1/2 0", "0 0 0");
+      const options = { convention: { ...ownWriting, components }, cell: null };
+      for (const work of [
+        () => projectComponents(group, modes, [], options),
+        () => writtenSite(group, modes, { ...options, star: false }),
+      ])
+        expect(work).toThrow(expect.objectContaining({ code: "missing-argument" }));
+    },
+  );
 
   test.each([0, 1, 2])("without a cell have axes at right angles and of one length: axis %i and the next", (axis) => {
     // −1 exchanges the two atoms; the even and the odd part of S₁ ⊥ S₂ of one size are equally large.

@@ -11,9 +11,7 @@ import {
 } from "@kvane/core/modes";
 import { type Cell, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
-import { constantRoot } from "#core/modes/constant-root.js";
 import { letterOf } from "#core/modes/constraint-table.js";
-import { rootOfUnity, zero } from "#core/numbers/index.js";
 import { modesOf } from "../support/decomposition.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { constraintProblems } from "../support/validate-constraints.js";
@@ -150,12 +148,6 @@ describe("modes", () => {
       [1, 2, 2, false],
       [1, 2, 2, false],
     ]);
-  });
-
-  test("have phases without letters between operators that fix an atom", () => {
-    const turns = { constant: [1, 4], coefficients: [zero, zero, zero] } as const;
-    expect(constantRoot(turns)).toEqual(rootOfUnity([1, 4]));
-    expect(() => constantRoot({ ...turns, coefficients: [zero, zero, [1, 2]] })).toThrow("free parameter");
   });
 });
 

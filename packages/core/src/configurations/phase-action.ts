@@ -1,4 +1,5 @@
 import {
+  constantRoot,
   littleGroupElement,
   type MinusKRelation,
   minusKRelation,
@@ -14,12 +15,10 @@ import {
   type Cyclotomic,
   type CyclotomicMatrix,
   cyclotomicZero,
-  isConstantForm,
   multiplyCyclotomic,
   multiplyCyclotomicMatrices,
   type Phase,
   reduceOrder,
-  rootOfUnity,
   subtractForms,
 } from "../numbers/index.js";
 import { composeOperators, invertOperator, type SpaceGroup, type SymmetryOperator } from "../spacegroups/index.js";
@@ -142,11 +141,6 @@ function reversingElements(
 
 function alongTranslation(k: WaveVector, operator: SymmetryOperator): Phase {
   return waveTimesColumn(k, translationColumn(operator));
-}
-
-export function constantRoot(turns: Phase): Cyclotomic {
-  if (!isConstantForm(turns)) throw new Error("a phase between operators depends on a free parameter of k");
-  return rootOfUnity(turns.constant);
 }
 
 function scaled(factor: Cyclotomic, matrix: CyclotomicMatrix): CyclotomicMatrix {

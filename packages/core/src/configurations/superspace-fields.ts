@@ -1,4 +1,4 @@
-import { waveTimesColumn } from "../irreps/index.js";
+import { constantRoot, waveTimesColumn } from "../irreps/index.js";
 import type { WaveVector } from "../kvectors/index.js";
 import type { SuperspaceOperator } from "../magneticgroups/index.js";
 import {
@@ -28,7 +28,6 @@ import {
 } from "../numbers/index.js";
 import { fromPrimitiveColumn, type SpaceGroup, type SymmetryOperator, translationOf } from "../spacegroups/index.js";
 import { imaginaryPart, realPart } from "./fixed-vectors.js";
-import { constantRoot } from "./phase-action.js";
 import { axialMatrix, dotCyclotomic, type SiteFrame } from "./site-frames.js";
 import { type SparseRow, sparseEchelon } from "./sparse-echelon.js";
 

@@ -12,6 +12,7 @@ export {
   type Rational,
 } from "../numbers/index.js";
 export { type Compatibility, compatibility } from "./compatibility.js";
+export { constantRoot } from "./constant-root.js";
 export { type LittleGroupElement, littleGroupElement, smallIrrepMatrix } from "./evaluate.js";
 export { type FullIrrep, fullIrrepMatrix, fullIrreps } from "./full-irreps.js";
 export { type MinusKLink, type MinusKRelation, minusKRelation } from "./minus-k.js";

@@ -8,10 +8,10 @@ import {
   scaleCyclotomicMatrix,
 } from "../numbers/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
+import { constantRoot } from "./constant-root.js";
 import { littleGroupPlaces } from "./evaluate.js";
 import { unitaryIntertwiner } from "./intertwiner.js";
 import { composePrimitive, invertPrimitive, primitiveOperator } from "./primitive-operators.js";
-import { constantTurns } from "./reality.js";
 import type { SmallIrrep, SmallIrreps } from "./types.js";
 
 /**
@@ -56,7 +56,7 @@ export function minusKRelation(group: SpaceGroup, irreps: SmallIrreps): MinusKRe
         const turns = negateForm(addForms(phase, irreps.phases[index] as Phase));
         return [
           partner.matrices[index] as CyclotomicMatrix,
-          scaleCyclotomicMatrix(constantTurns(turns), conjugateMatrix(irrep.matrices[element] as CyclotomicMatrix)),
+          scaleCyclotomicMatrix(constantRoot(turns), conjugateMatrix(irrep.matrices[element] as CyclotomicMatrix)),
         ];
       });
       return { label: irrep.label, partner: partner.label, matrix: unitaryIntertwiner(pairs) };

@@ -6,13 +6,12 @@ import {
   cyclotomicZero,
   equalCyclotomic,
   type IntegerMatrix,
-  isConstantForm,
   type LinearForm,
   multiplyCyclotomic,
   type Rational,
   reduceOrder,
-  rootOfUnity,
 } from "../numbers/index.js";
+import { constantRoot } from "./constant-root.js";
 import type { LittleCoGroup } from "./little-co-group.js";
 import { composePrimitive, invertPrimitive, turnsOf } from "./primitive-operators.js";
 import type { Reality } from "./types.js";
@@ -44,7 +43,7 @@ export function realityContext(
   const operators = reversing.map(coGroup.aboutOrigin);
   const phased = (rotation: IntegerMatrix, translation: readonly number[]): PhasedElement => ({
     element: elementOf(rotation),
-    phase: constantTurns(turnsOf(kappa, translation, coGroup.originDenominator)),
+    phase: constantRoot(turnsOf(kappa, translation, coGroup.originDenominator)),
   });
   const squares = operators.map((operator) => composePrimitive(operator, operator));
   const [reverse] = operators;
@@ -98,10 +97,4 @@ export function indexOfCharacter(list: readonly (readonly Cyclotomic[])[], wante
   );
   if (index < 0) throw new Error("a conjugate of an irrep is not among the irreps of its group");
   return index;
-}
-
-/** e^{2πi·form} of a form whose letters cancel, as they do wherever k meets −k. */
-export function constantTurns(form: LinearForm): Cyclotomic {
-  if (!isConstantForm(form)) throw new Error("a phase between k and −k depends on a free parameter");
-  return rootOfUnity(form.constant);
 }

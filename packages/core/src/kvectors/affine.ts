@@ -1,8 +1,6 @@
 import {
-  add,
   constantForm,
   gcdOf,
-  isZero,
   type LinearForm,
   multiply,
   negate,
@@ -116,15 +114,4 @@ export function affineParameters(set: AffineSet, components: readonly LinearForm
       ),
     };
   });
-}
-
-/** The point of the set at exact parameters. */
-export function affinePoint(set: AffineSet, parameters: readonly Rational[]): RationalVector {
-  const at = (axis: 0 | 1 | 2): Rational =>
-    set.directions.reduce(
-      (sum, direction, index) =>
-        isZero(direction[axis]) ? sum : add(sum, multiply(parameters[index] as Rational, direction[axis])),
-      set.base[axis],
-    );
-  return [at(0), at(1), at(2)];
 }

@@ -1,3 +1,4 @@
+import { fail } from "../errors/index.js";
 import type { Cell } from "../spacegroups/index.js";
 import type { MomentComponents } from "./fourier-conventions.js";
 
@@ -17,6 +18,16 @@ export function convertComponents(cell: Cell, vector: Triple, from: MomentCompon
   const [a, b, c] = cartesianAxes(cell);
   const at = (axis: 0 | 1 | 2): number => lattice[0] * a[axis] + lattice[1] * b[axis] + lattice[2] * c[axis];
   return [at(0), at(1), at(2)];
+}
+
+/** Throws `missing-argument` for components that come or are wanted in crystal or Cartesian axes without a cell. */
+export function checkCellGiven(components: MomentComponents, cell: Cell | null): void {
+  if (components === "lattice" || cell !== null) return;
+  fail("missing-argument", `${components} components need a unit cell`, {
+    expected: "a cell beside the convention",
+    found: "none",
+    remedy: "give the cell, or take lattice components",
+  });
 }
 
 function perLength(cell: Cell, vector: Triple): Triple {

@@ -1,4 +1,4 @@
-import type { SmallIrrep } from "../irreps/index.js";
+import { constantRoot, type SmallIrrep } from "../irreps/index.js";
 import {
   addCyclotomicMatrices,
   adjointCyclotomicMatrix,
@@ -14,7 +14,6 @@ import {
   scaleCyclotomicMatrix,
   subtractForms,
 } from "../numbers/index.js";
-import { constantRoot } from "./constant-root.js";
 
 /** One operator of the little group as it acts on moments (or displacements) of one atom. */
 export interface MomentOperator {

@@ -1,4 +1,4 @@
-import type { MinusKLink, MinusKRelation, SmallIrrep } from "../irreps/index.js";
+import { constantRoot, type MinusKLink, type MinusKRelation, type SmallIrrep } from "../irreps/index.js";
 import type { WaveVector } from "../kvectors/index.js";
 import {
   addCyclotomic,
@@ -21,7 +21,6 @@ import {
   zeroForm,
 } from "../numbers/index.js";
 import { withPlainPhase } from "./common-phase.js";
-import { constantRoot } from "./constant-root.js";
 import { letterOf, type Term, type TermMoment, termTable } from "./constraint-table.js";
 import type { OperatorAction } from "./site-action.js";
 import type { MinusKOnModes, Mode, ModeMoment } from "./types.js";

@@ -2,7 +2,7 @@ import { choleskyFactor, choleskySolve } from "../algorithms/index.js";
 import { isHalfLattice, numericWaveVector, parameterValues } from "../kvectors/index.js";
 import { phasedToComplex, type RationalVector, toNumber } from "../numbers/index.js";
 import { averagedMetric, type Cell, directMetric, type SpaceGroup } from "../spacegroups/index.js";
-import { convertComponents } from "./components.js";
+import { checkCellGiven, convertComponents } from "./components.js";
 import type { IrrepModes, SiteModes } from "./types.js";
 import type { WritingConvention } from "./written-site.js";
 
@@ -31,7 +31,8 @@ export interface ProjectedComponents {
  * different irreps are orthogonal in it, so the shares add up to 1. Null while a letter of k is open.
  *
  * @param given per atom of the orbit three complex components in `convention`
- * @param cell needed for crystal and Cartesian components; a `TypeError` where those come without one
+ * @param cell needed for crystal and Cartesian components
+ * @throws `missing-argument` where those come without one
  */
 export function projectComponents(
   group: SpaceGroup,
@@ -39,6 +40,7 @@ export function projectComponents(
   given: readonly (readonly Complex[])[],
   { convention, cell }: { readonly convention: WritingConvention; readonly cell: Cell | null },
 ): ProjectedComponents | null {
+  checkCellGiven(convention.components, cell);
   const { k } = site.representations;
   const numbers = numericWaveVector(k);
   if (numbers === null) return null;

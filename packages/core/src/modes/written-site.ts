@@ -2,7 +2,7 @@ import { parameterValues, type WaveVector } from "../kvectors/index.js";
 import { type PhasedNumber, phasedToComplex, type RationalVector } from "../numbers/index.js";
 import type { Cell, SpaceGroup } from "../spacegroups/index.js";
 import { axisLengths } from "./axis-lengths.js";
-import { convertComponents } from "./components.js";
+import { checkCellGiven, convertComponents } from "./components.js";
 import { type ConstraintTexts, constraintTexts, leadingAxis, orderParameterTexts } from "./constraint-forms.js";
 import { type FourierConvention, type MomentComponents, ownConvention, toConvention } from "./fourier-conventions.js";
 import { type MomentSizes, momentSizes } from "./moment-sizes.js";
@@ -65,9 +65,14 @@ export interface WrittenSite {
   readonly arms: readonly WrittenArm[] | null;
 }
 
-/** The modes of a site as they are printed: basis vectors and constraint tables in the convention asked for. Throws `k-needs-values` where a convention needs numbers for the letters of k. */
+/**
+ * The modes of a site as they are printed: basis vectors and constraint tables in the convention asked for.
+ *
+ * @throws `k-needs-values` where a convention needs numbers for the letters of k, `missing-argument` where it needs a cell
+ */
 export function writtenSite(group: SpaceGroup, site: SiteModes, options: WritingOptions): WrittenSite {
   const { convention, cell } = options;
+  checkCellGiven(convention.components, cell);
   const lengths = cell && axisLengths(group, cell);
   const write = (arm: WaveVector, part: IrrepModes, mode: Mode): WrittenMode => {
     // The first partner of the copy on the first arm, so that the matrices of the irrep hold for what is written.

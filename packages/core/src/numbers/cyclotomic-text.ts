@@ -2,11 +2,9 @@ import {
   type Cyclotomic,
   conjugateCyclotomic,
   cyclotomicFromRational,
-  cyclotomicOne,
   cyclotomicToRational,
   equalCyclotomic,
   invertCyclotomic,
-  isCyclotomicZero,
   multiplyCyclotomic,
   reduceOrder,
   rootOfUnity,
@@ -126,8 +124,4 @@ function formatSum(value: Cyclotomic): string {
   });
   if (value.denominator === 1) return text;
   return `(${text})/${value.denominator}`;
-}
-
-export function isCyclotomicOne(value: Cyclotomic): boolean {
-  return !isCyclotomicZero(value) && equalCyclotomic(value, cyclotomicOne);
 }

@@ -1,17 +1,6 @@
 import type { RationalVector } from "./matrices.js";
 import { dot, mapVector, zeroVector } from "./matrices.js";
-import {
-  add,
-  equal,
-  formatRational,
-  isZero,
-  multiply,
-  negate,
-  one,
-  type Rational,
-  subtract,
-  zero,
-} from "./rationals.js";
+import { add, equal, formatRational, isZero, multiply, negate, one, type Rational, zero } from "./rationals.js";
 
 /**
  * An exact linear form in three named variables, `constant + c₁·x + c₂·y + c₃·z`. The names (x y z of a coordinate,
@@ -104,10 +93,4 @@ export function variableForm(index: number): LinearForm {
 /** `-form`. */
 export function negateForm(form: LinearForm): LinearForm {
   return { constant: negate(form.constant), coefficients: mapVector(form.coefficients, negate) };
-}
-
-/** Difference of two forms' constants when their variable parts agree, else null. */
-export function constantDifference(a: LinearForm, b: LinearForm): Rational | null {
-  const difference = subtractForms(a, b);
-  return isConstantForm(difference) ? subtract(difference.constant, zero) : null;
 }

@@ -10,7 +10,6 @@ import {
 } from "./cyclotomics.js";
 import { modulo } from "./integers.js";
 import {
-  addForms,
   constantForm,
   formatForm,
   isConstantForm,
@@ -35,10 +34,6 @@ const largestFoldedOrder = 48;
 /** `e^{2πi·phase}` with the constant part reduced modulo 1. */
 export function reducePhase(phase: Phase): Phase {
   return { constant: fractionalPart(phase.constant), coefficients: phase.coefficients };
-}
-
-export function multiplyPhased(a: PhasedNumber, b: PhasedNumber): PhasedNumber {
-  return { phase: addForms(a.phase, b.phase), factor: multiplyCyclotomic(a.factor, b.factor) };
 }
 
 export function conjugatePhased(a: PhasedNumber): PhasedNumber {

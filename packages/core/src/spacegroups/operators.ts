@@ -1,7 +1,6 @@
 import {
   addVectors,
   type IntegerMatrix,
-  identityMatrix,
   invert,
   lcm,
   matrixFrom,
@@ -12,7 +11,6 @@ import {
   type RationalVector,
   timesColumn,
   vectorFrom,
-  zeroVector,
 } from "../numbers/index.js";
 import type { SymmetryOperator } from "./types.js";
 
@@ -77,11 +75,6 @@ export function invertOperator(a: SymmetryOperator): SymmetryOperator {
 /** The image `R x + t` of a position, not reduced. */
 export function applyOperator(operator: SymmetryOperator, position: RationalVector): RationalVector {
   return addVectors(timesColumn(rotationOf(operator), position), translationOf(operator));
-}
-
-/** The pure translation `{1|t}`. */
-export function translationOperator(column: RationalVector = zeroVector): SymmetryOperator {
-  return operatorFrom(identityMatrix, column);
 }
 
 /** True when the rotation part is the identity. */
