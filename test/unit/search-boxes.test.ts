@@ -1,7 +1,8 @@
 import { atlas, numericWaveVector } from "@kvane/core/kvectors";
 import { cellVolume, parseGroup } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
-import { boxSearch, polytope } from "#core/algorithms/index.js";
+import { polytope } from "#core/algorithms/half-spaces.js";
+import { boxSearch, dirichletCell } from "#core/algorithms/index.js";
 import { reciprocalFrame } from "#core/reflections/index.js";
 import { flatFrame, lettersAt, pointAt } from "#core/search/flat-frame.js";
 import { foldInto, wedgeOf } from "#core/search/wedge.js";
@@ -86,6 +87,29 @@ describe("cells cut out by half-spaces", () => {
         .vertices.flat()
         .sort(),
     ).toEqual([-1, 0.25]);
+  });
+
+  test("the cell of a point among its lattice is a hexagon about it, whatever distance is tried first", () => {
+    const origin = [0.3, -2];
+    // A hexagonal lattice of unit length: the cell has its sides at 1/2, its corners 1/√3 away.
+    const imagesWithin = (distance: number) => {
+      const steps = Array.from({ length: 61 }, (_, at) => at - 30);
+      const vectors = steps.flatMap((m) => steps.map((n) => [m - n / 2, (n * Math.sqrt(3)) / 2] as const));
+      return vectors
+        .map((vector) => ({ vector, length: Math.hypot(...vector) }))
+        .filter(({ length }) => length > 1e-9 && length <= distance)
+        .sort((a, b) => a.length - b.length)
+        .map(({ vector: [x, y], length }) => {
+          const normal = [x / length, y / length] as const;
+          return { halfSpace: { normal, offset: length / 2 + normal[0] * 0.3 - normal[1] * 2 }, length };
+        });
+    };
+    for (const first of [0.1, 1, 5]) {
+      const { images, centre, half } = dirichletCell(origin, first, imagesWithin);
+      expect(images.map(({ length }) => length)).toEqual(new Array(6).fill(expect.closeTo(1, 12)));
+      expect(centre).toEqual([expect.closeTo(0.3, 8), expect.closeTo(-2, 8)]);
+      expect(half).toEqual([expect.closeTo(1 / 2, 8), expect.closeTo(1 / Math.sqrt(3), 8)]);
+    }
   });
 });
 

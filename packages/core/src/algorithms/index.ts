@@ -7,9 +7,10 @@
 export { type BoxProblem, type BoxSearch, boxSearch, mostLevels } from "./box-search.js";
 export { breathe, breathMilliseconds } from "./breathe.js";
 export { choleskyFactor, choleskyInverse, choleskyLogDeterminant, choleskySolve } from "./cholesky.js";
+export { type DirichletCell, dirichletCell, type PointImage } from "./dirichlet-cell.js";
 export { gaussNewton, type LeastSquares, type WeightedResiduals } from "./gauss-newton.js";
 export { goldenSection } from "./golden-section.js";
-export { type HalfSpace, type Polytope, polytope } from "./half-spaces.js";
+export type { HalfSpace } from "./half-spaces.js";
 export {
   type HermitianEigen,
   type HermitianMatrix,

@@ -1,4 +1,4 @@
-import { type HalfSpace, polytope } from "../algorithms/index.js";
+import { dirichletCell, type HalfSpace, type PointImage } from "../algorithms/index.js";
 import { invertUnimodular } from "../numbers/index.js";
 import { visitBall } from "../reflections/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
@@ -18,31 +18,17 @@ export interface ZoneWedge {
 /** A q on no element of symmetry, in the middle of nowhere. */
 const generic = [0.1234567, 0.3127043, 0.2211953];
 
-/**
- * The Dirichlet cell of a generic point among its images under the point group extended by −1 and the lattice of q: every
- * k has an image in it (H. S. M. Coxeter, Regular Polytopes, 1973, section 4). It is bounded exactly: once all images
- * within twice its reach have cut it, no further one can.
- */
+/** The Dirichlet cell of a generic point among its images under the point group extended by −1 and the lattice of q. */
 export function zoneWedge(group: SpaceGroup, frame: ZoneFrame): ZoneWedge {
   const { rank } = frame;
   const actions = zoneActions(group, frame);
   const start = generic.slice(0, rank);
-  const origin = toCartesian(frame, start);
   const metric = threeDimensional(frame);
-  let within = Math.max(...Array.from({ length: rank }, (_, a) => Math.sqrt(frame.metric[a * rank + a] as number)));
-  for (;;) {
-    const box = boxAround(rank, origin, 2 * within);
-    const walls = bisectors(frame, actions, start, metric, within);
-    const halfSpaces = [...box, ...walls];
-    const { vertices, active } = polytope(halfSpaces, rank);
-    const reach = Math.max(...vertices.map((vertex) => distance(vertex, origin)));
-    const bounded = active.every((index) => index >= box.length);
-    if (bounded && 2 * reach <= within) {
-      const kept = active.map((index) => halfSpaces[index] as HalfSpace);
-      return { walls: kept, actions, halves: halfPoints(frame), ...boundingBox(vertices, rank, reach) };
-    }
-    within = bounded ? 2 * reach * (1 + 1e-9) : 1.5 * within;
-  }
+  const longest = Math.max(...Array.from({ length: rank }, (_, a) => Math.sqrt(frame.metric[a * rank + a] as number)));
+  const { images, centre, half } = dirichletCell(toCartesian(frame, start), longest, (within) =>
+    imagesOf(frame, actions, start, metric, within),
+  );
+  return { walls: images.map(({ halfSpace }) => halfSpace), actions, halves: halfPoints(frame), centre, half };
 }
 
 function halfPoints(frame: ZoneFrame): number[][] {
@@ -83,16 +69,17 @@ export function zoneActions(group: SpaceGroup, frame: ZoneFrame): number[][] {
   return [...found.values()];
 }
 
-function bisectors(
+/** The images of the point at most this far from it, nearest first. */
+function imagesOf(
   frame: ZoneFrame,
   actions: readonly (readonly number[])[],
   start: readonly number[],
   metric: readonly number[],
   within: number,
-): HalfSpace[] {
+): PointImage[] {
   const { rank } = frame;
   const origin = toCartesian(frame, start);
-  const found: (HalfSpace & { readonly distance: number })[] = [];
+  const found: (PointImage & { readonly distance: number })[] = [];
   for (const action of actions) {
     const image = start.map((_, row) =>
       start.reduce((sum, entry, b) => sum + (action[row * rank + b] as number) * entry, 0),
@@ -104,7 +91,7 @@ function bisectors(
       const q = [n1, n2, n3].slice(0, rank).map((n, a) => n + (image[a] as number));
       const normal = toCartesian(frame, q).map((entry, a) => (entry - (origin[a] as number)) / length);
       const offset = normal.reduce((sum, entry, a) => sum + entry * (origin[a] as number), length / 2);
-      found.push({ normal, offset, distance: length });
+      found.push({ halfSpace: { normal, offset }, distance: length });
     });
   }
   return found.sort((a, b) => a.distance - b.distance);
@@ -118,32 +105,6 @@ function threeDimensional({ rank, metric }: ZoneFrame): number[] {
     if (row < rank && column < rank) return metric[row * rank + column] as number;
     return row === column ? 1e12 * longest : 0;
   });
-}
-
-function boxAround(rank: number, origin: readonly number[], reach: number): HalfSpace[] {
-  return Array.from({ length: 2 * rank }, (_, index) => {
-    const [axis, sign] = [index >> 1, index % 2 === 0 ? 1 : -1];
-    return {
-      normal: Array.from({ length: rank }, (_, a) => (a === axis ? sign : 0)),
-      offset: reach + sign * (origin[axis] as number),
-    };
-  });
-}
-
-function distance(a: readonly number[], b: readonly number[]): number {
-  return Math.hypot(...a.map((entry, axis) => entry - (b[axis] as number)));
-}
-
-function boundingBox(vertices: readonly (readonly number[])[], rank: number, reach: number) {
-  const bounds = Array.from({ length: rank }, (_, axis) => {
-    const along = vertices.map((vertex) => vertex[axis] as number);
-    return [Math.min(...along), Math.max(...along)] as const;
-  });
-  return {
-    centre: bounds.map(([low, high]) => (low + high) / 2),
-    // A hair wider, so that rounding loses nothing.
-    half: bounds.map(([low, high]) => ((high - low) / 2) * (1 + 1e-9) + 1e-9 * reach),
-  };
 }
 
 /** Whether the whole box lies beyond a wall: its points have images inside, which other boxes look at. */

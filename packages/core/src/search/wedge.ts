@@ -1,4 +1,4 @@
-import { type HalfSpace, polytope } from "../algorithms/index.js";
+import { dirichletCell, type HalfSpace, type PointImage } from "../algorithms/index.js";
 import { visitBall } from "../reflections/index.js";
 import type { SpaceGroup } from "../spacegroups/index.js";
 import { alongAxes, type FlatFrame, inner, type Triple } from "./flat-frame.js";
@@ -31,68 +31,33 @@ const acrossFlat = 1e-10;
 
 /**
  * The Dirichlet cell of the frame's origin among its images under the point group extended by −1 and L*, as far as these
- * map the flat onto itself: no table of zones is needed (H. S. M. Coxeter, Regular Polytopes, 1973, section 4; used for
- * reciprocal space by International Tables B, section 1.5). Every k of the kind has an image in it.
- *
- * It is bounded exactly: with all images within a distance D the cut-out cell holds the true one, and once D is twice its
- * own reach no further image can cut it.
+ * map the flat onto itself: no table of zones is needed (used for reciprocal space by International Tables B, section 1.5).
+ * Every k of the kind has an image in it.
  */
 export function wedgeOf(group: SpaceGroup, frame: FlatFrame): Wedge {
-  const { dimension } = frame;
   const longest = Math.sqrt(Math.max(...[0, 4, 8].map((index) => frame.metric[index] as number)));
   const actions = actionsOn(group, frame);
-  let within = firstReach * longest;
-  for (;;) {
-    const box = boxAround(dimension, 2 * within);
-    const { images, fixing } = imagesOfOrigin(frame, actions, within);
-    const halfSpaces = [...box, ...images.map(({ halfSpace }) => halfSpace)];
-    const { vertices, active } = polytope(halfSpaces, dimension);
-    const reach = Math.max(...vertices.map((vertex) => Math.hypot(...vertex)));
-    const bounded = active.every((index) => index >= box.length);
-    if (bounded && 2 * reach <= within) {
-      const walls = active.map((index) => images[index - box.length] as Image);
-      return { ...boundingBox(vertices, dimension, reach), walls: walls.map(wallOf), beyond: walls.map(mapOf), fixing };
-    }
-    within = bounded ? 2 * reach * (1 + 1e-9) : 1.5 * within;
-  }
+  const origin = new Array<number>(frame.dimension).fill(0);
+  let fixing = 0;
+  const { images, centre, half } = dirichletCell(origin, firstReach * longest, (within) => {
+    const found = imagesOfOrigin(frame, actions, within);
+    fixing = found.fixing;
+    return found.images;
+  });
+  return {
+    walls: images.map(({ halfSpace }) => halfSpace),
+    beyond: images.map(({ map }) => map),
+    centre: Float64Array.from(centre),
+    half: Float64Array.from(half),
+    fixing,
+  };
 }
 
 /** Times the longest axis of L*: first distance up to which images are tried. */
 const firstReach = 1.05;
 
-const wallOf = ({ halfSpace }: Image): HalfSpace => halfSpace;
-const mapOf = ({ map }: Image): FlatMap => map;
-
-/** A hair wider than the vertices ask for, so that rounding loses nothing. */
-function boundingBox(vertices: readonly (readonly number[])[], dimension: number, reach: number) {
-  const lowest = boundOf(vertices, dimension, Math.min);
-  const highest = boundOf(vertices, dimension, Math.max);
-  return {
-    centre: lowest.map((low, axis) => (low + (highest[axis] as number)) / 2),
-    half: lowest.map((low, axis) => (((highest[axis] as number) - low) / 2) * (1 + 1e-9) + 1e-9 * reach),
-  };
-}
-
-function boxAround(dimension: number, reach: number): HalfSpace[] {
-  return Array.from({ length: 2 * dimension }, (_, index) => ({
-    normal: Array.from({ length: dimension }, (_, axis) => (axis === index >> 1 ? (index % 2 === 0 ? 1 : -1) : 0)),
-    offset: reach,
-  }));
-}
-
-function boundOf(
-  vertices: readonly (readonly number[])[],
-  dimension: number,
-  choose: (...values: number[]) => number,
-): Float64Array {
-  return Float64Array.from({ length: dimension }, (_, axis) =>
-    choose(...vertices.map((vertex) => vertex[axis] as number)),
-  );
-}
-
-interface Image {
+interface Image extends PointImage {
   readonly distance: number;
-  readonly halfSpace: HalfSpace;
   readonly map: FlatMap;
 }
 
