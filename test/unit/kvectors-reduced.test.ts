@@ -32,4 +32,11 @@ describe("the plainest of all k + H", () => {
     expect(numericWaveVector(reduced)?.[1]).toBeCloseTo(0.28, 12);
     expect(reduced.values).toEqual(k.values);
   });
+
+  test("is found where an axis is half a vector of the lattice", () => {
+    // With a' = a/2 the component of a* along a'* is a*·a' = 1/2, so 7/10 and 1/5 name one k.
+    const half = parseGroup("P m m m (1/2a,b,c)");
+    const { k } = placeWaveVector(half, parseWaveVector("7/10,0,0"));
+    expect(numericWaveVector(reducedRepresentative(half, k))).toEqual([0.2, 0, 0]);
+  });
 });
