@@ -1,5 +1,6 @@
 import {
   atlas,
+  canonicalPlacement,
   equivalentWaveVectors,
   exactWaveVector,
   firstZoneRepresentative,
@@ -101,6 +102,18 @@ describe("a k as it is written", () => {
     expect(isVector("R 3:H", [1, 0, 1])).toBe(true);
     expect(isVector("R 3:H", [1, 0, 0])).toBe(false);
   });
+});
+
+test("the canonical place of a point is the one with every primitive component in [0, 1)", () => {
+  // The threefold axis leaves the corners (1/3, 1/3, z) and (2/3, 2/3, z) of the hexagonal zone where they are modulo
+  // L*, the mirror across it every z with 2z whole: in P -6 each is a point, and the only arm of its star.
+  for (const [given, canonical] of [
+    ["-1/3 2/3 0", "2/3 2/3 0"],
+    ["2/3 -1/3 1", "2/3 2/3 0"],
+    ["5/3 -4/3 -1/2", "2/3 2/3 1/2"],
+    ["-2/3 -2/3 3/2", "1/3 1/3 1/2"],
+  ] as const)
+    expect(canonicalPlacement(groupOf("P -6"), wave(given)).canonical).toEqual(wave(canonical));
 });
 
 const identity = [1, 0, 0, 0, 1, 0, 0, 0, 1];

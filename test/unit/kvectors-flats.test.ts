@@ -9,6 +9,7 @@ import {
   solveConditions,
 } from "#core/kvectors/affine.js";
 import { adaptedCoordinates, crossProduct, directionTable, integerKernel, saturated } from "#core/kvectors/flats.js";
+import { rotateRow } from "#core/kvectors/integer-form.js";
 import {
   add,
   constantForm,
@@ -121,6 +122,26 @@ describe("lattices of integer rows", () => {
   });
 });
 
+describe("a rotated row", () => {
+  it("has zeros, never −0, which JSON does not keep", () => {
+    // Minus the permutations of the axes in turn: a sum of −0 alone at each of the three places.
+    for (const matrix of [
+      [-1, 0, 0, 0, -1, 0, 0, 0, -1],
+      [0, -1, 0, 0, 0, -1, -1, 0, 0],
+      [0, 0, -1, -1, 0, 0, 0, -1, 0],
+    ])
+      for (const [row, zeroAt] of [
+        [[0, -1, -1], 0],
+        [[-1, 0, -1], 1],
+        [[-1, -1, 0], 2],
+      ] as const) {
+        // The column whose −1 meets the zero of the row.
+        const column = [0, 1, 2].findIndex((at) => matrix[3 * zeroAt + at] === -1);
+        expect(rotateRow(row, matrix)).toEqual([0, 1, 2].map((at) => (at === column ? 0 : 1)));
+      }
+  });
+});
+
 describe("affine sets", () => {
   const conditions = fc.array(fc.tuple(triple, fc.integer({ min: -6, max: 6 })), { minLength: 0, maxLength: 3 });
   const asCondition = ([coefficients, value]: readonly [readonly number[], number]): Condition => ({
@@ -157,6 +178,24 @@ describe("affine sets", () => {
       }),
       { seed },
     );
+  });
+
+  it("have the letters themselves as parameters of their forms", () => {
+    const letters = [
+      [1, 0, 0],
+      [0, 1, 0],
+      [0, 0, 1],
+    ].map((row) => ({ constant: rational(0), coefficients: vectorFrom(row) }));
+    // Everything, the plane x + 2y = 1/2 along (2, −1, 0) and (0, 0, 1), and the line on it with z = x.
+    const plane = [[1, 2, 0], 1] as const;
+    for (const [given, dimension] of [
+      [[], 3],
+      [[plane], 2],
+      [[plane, [[1, 0, -1], 0]], 1],
+    ] as const) {
+      const set = solveConditions(given.map(asCondition)) as AffineSet;
+      expect(affineParameters(set, affineForms(set))).toEqual(letters.slice(0, dimension));
+    }
   });
 
   it("are missing where the conditions contradict each other", () => {
