@@ -218,6 +218,18 @@ describe("echelon forms", () => {
     );
   });
 
+  it("come of the first row that has an entry, which keeps a reduced basis in the safe range", () => {
+    // (1, 0) and (2^27, 1/(2^27 − 1)) are independent; divided by 2^27 the second would have a denominator near 2^54.
+    const large = [rational(2 ** 27), rational(1, 2 ** 27 - 1)];
+    expect(reducedEchelon([[rational(1), rational(0)], large], rationalField)).toEqual({
+      rows: [
+        [rational(1), rational(0)],
+        [rational(0), rational(1)],
+      ],
+      pivots: [0, 1],
+    });
+  });
+
   it("of no rows are empty, and every vector is a null vector", () => {
     expect(reducedEchelon([], rationalField)).toEqual({ rows: [], pivots: [] });
     expect(nullSpace([], 2, rationalField, [0, 1], [1, 1])).toEqual([
@@ -322,6 +334,10 @@ describe("matrices of roots of unity", () => {
     });
   };
   const half = Math.sqrt(3) / 2;
+
+  it("of sizes n × 0 and 0 × 0 have a product without columns", () => {
+    expect(multiplyCyclotomicMatrices([[], []], [])).toEqual([[], []]);
+  });
 
   it("multiply, add, scale, and have traces and adjoints", () => {
     // ζ₃·i = e^{2πi·7/12}, ζ₃² = e^{−2πi/3}; second row: i·i = −1, i·ζ₃ + i/2, (ζ₃ + i)/2.

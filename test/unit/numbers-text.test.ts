@@ -145,6 +145,10 @@ describe("exact numbers as they are written", () => {
     ["49√6·e^{2πi/5}", product(fraction(49), squareRootOf(6), root(1, 5))],
     // |1000 + ζ₃|² = 1000² − 1000 + 1 = 999001, whose root lies in no field that would be made in a reasonable time.
     ["1000+e^{2πi/3}", sum(fraction(1000), root(1, 3))],
+    // |·|² = 3 · 333667/10007², and 333667 is no square (577² = 332929, 578² = 334084): nothing comes in front of the sum.
+    ["(1001+e^{2πi/3})/10007", product(fraction(1, 10007), sum(fraction(1001), root(1, 3)))],
+    // |·|² = 9/2^52: the root of 9 · 2^52 would be asked for, an integer beyond 2^53, and the sum is written instead.
+    ["(3·e^{iπ/4})/67108864", product(fraction(3, 2 ** 26), root(1, 8))],
     // ζ₈ − ζ₈³ = √2, written in powers of ζ₈ because 1 + √2 has no root as its modulus.
     ["1+e^{iπ/4}-e^{3πi/4}", sum(fraction(1), squareRootOf(2))],
     ["(1+e^{iπ/4}-e^{3πi/4})/2", product(fraction(1, 2), sum(fraction(1), squareRootOf(2)))],
@@ -250,6 +254,24 @@ describe("roots of unity and fractions among exact numbers", () => {
       [root(1, 10), negateCyclotomic(root(3, 5))],
     ];
     for (const [value, small] of cases) expect(reduceOrder(value), formatCyclotomic(small)).toEqual(small);
+  });
+
+  it("near 2^53 are looked for in smaller fields without leaving the safe range", () => {
+    // ζ₁₅² − ζ₁₅⁷ = ζ₁₅² (1 − ζ₃) is in neither smaller field: ζ₁₅ → ζ₁₅¹¹, which leaves ζ₅ alone, exchanges both terms,
+    // and ζ₁₅ → ζ₁₅⁴, which leaves ζ₃ alone, multiplies the value by ζ₁₅⁶.
+    const value: Cyclotomic = { order: 15, denominator: 1, coefficients: [0, 0, 1, 0, 0, 0, 0, -1] };
+    expect(equalCyclotomic(value, product(root(2, 15), sum(fraction(1), negateCyclotomic(root(1, 3)))))).toBe(true);
+    const large = { ...value, coefficients: value.coefficients.map((entry) => entry * 2 ** 52 + 0) };
+    expect(reduceOrder(large)).toEqual(large);
+  });
+
+  it("stay in their own field when a 0 of another field is added or taken away", () => {
+    const nothing = subtractCyclotomic(root(1, 5), root(1, 5));
+    for (const value of [fraction(2, 3), root(1, 3), product(fraction(1, 2), root(1, 8))]) {
+      expect(addCyclotomic(value, nothing)).toEqual(value);
+      expect(addCyclotomic(nothing, value)).toEqual(value);
+      expect(subtractCyclotomic(value, nothing)).toEqual(value);
+    }
   });
 
   it("have floats that are exact at the quarters of a turn", () => {
