@@ -1,4 +1,4 @@
-import { readFileSync } from "node:fs";
+import { readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { problem } from "@kvane/core/errors";
 import {
@@ -282,5 +282,28 @@ describe("found by fuzzing: commands", () => {
     expect(status).toBe(2);
     expect(stderr).toContain(`at ${option}`);
     expect(stderr).toContain(named);
+  });
+});
+
+describe("corrections of the search", () => {
+  test.each([
+    ["zero-shift", "1e-200"],
+    ["zero-shift", "1.5"],
+    ["cell-scale", "1e-320"],
+    ["cell-scale", "0.1"],
+  ])("too small for their squares, or too wide, are refused where they were given: %s %s", async (name, value) => {
+    const folder = scratchFolder();
+    const option = await kvane(["locate", "--example", `--${name}`, value], { cwd: folder });
+    expect(option.status).toBe(2);
+    expect(option.stderr).toContain(`error[invalid-argument]: --${name} is ${value}\n  at --${name}\n`);
+    const example = join(import.meta.dirname, "../../packages/cli/example");
+    const study = readFileSync(join(example, "study.yaml"), "utf8");
+    writeFileSync(join(folder, "satellites.csv"), readFileSync(join(example, "satellites.csv")));
+    writeFileSync(join(folder, "study.yaml"), study.replace(/^search: .*$/m, `search: {${name}: ${value}}`));
+    for (const command of ["locate", "check"]) {
+      const { status, stderr } = await kvane([command, "study.yaml"], { cwd: folder });
+      expect(status).toBe(2);
+      expect(stderr).toContain(`(search.${name})`);
+    }
   });
 });

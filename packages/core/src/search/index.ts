@@ -9,7 +9,7 @@
 export { defaultMostBoxes } from "./certificate.js";
 export { indexPeaks } from "./index-peaks.js";
 export { locate } from "./locate.js";
-export { defaultSearchOptions } from "./options.js";
+export { checkSearchOptions, defaultSearchOptions } from "./options.js";
 export { setAsidePeaks } from "./set-aside.js";
 export type {
   Assignment,

@@ -1,4 +1,5 @@
 import { KvaneError, type Problem, problem } from "../errors/index.js";
+import { smallestMeasured } from "../numbers/index.js";
 import type { SearchOptions } from "./types.js";
 
 /**
@@ -18,8 +19,8 @@ export const defaultSearchOptions: SearchOptions = {
 const largestZeroShift = 1;
 const largestCellScale = 0.05;
 
-/** Throws `invalid-argument` with every option that makes no sense. */
-export function checkOptions(options: SearchOptions): void {
+/** Throws `invalid-argument` with every option of a search that makes no sense, each at the name that it has in the command. */
+export function checkSearchOptions(options: SearchOptions): void {
   const problems: Problem[] = [];
   const demand = (holds: boolean, argument: string, expected: string, value: number | null): void => {
     if (!holds)
@@ -38,18 +39,23 @@ export function checkOptions(options: SearchOptions): void {
   demand([0, 1, 2, 3].includes(maxDimension), "--max-dimension", "0, 1, 2 or 3", maxDimension);
   demand(qMax === null || qMax > 0, "--q-max", "a number above 0 in Å⁻¹", qMax);
   demand(
-    zeroShift >= 0 && zeroShift <= largestZeroShift,
+    isRange(zeroShift, largestZeroShift),
     "--zero-shift",
-    `degrees 2θ from 0 to ${largestZeroShift}`,
+    `0, or degrees 2θ from ${smallestMeasured} to ${largestZeroShift}`,
     zeroShift,
   );
   const { mostBoxes = 1 } = options;
   demand(Number.isSafeInteger(mostBoxes) && mostBoxes > 0, "mostBoxes", "an integer from 1 on", mostBoxes);
   demand(
-    cellScale >= 0 && cellScale <= largestCellScale,
+    isRange(cellScale, largestCellScale),
     "--cell-scale",
-    `a relative change from 0 to ${largestCellScale}`,
+    `0, or a relative change from ${smallestMeasured} to ${largestCellScale}`,
     cellScale,
   );
   if (problems.length > 0) throw new KvaneError(problems);
+}
+
+/** Whether a correction may go that far: not at all, or so far that the square of it is a number. */
+function isRange(value: number, largest: number): boolean {
+  return value === 0 || (value >= smallestMeasured && value <= largest);
 }

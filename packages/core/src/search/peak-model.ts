@@ -4,7 +4,7 @@ import { type Cell, cellVolume, type SpaceGroup } from "../spacegroups/index.js"
 import { latticeDensity } from "./crystal-arms.js";
 import { crystalModel } from "./crystal-model.js";
 import type { PeakModel } from "./explanation.js";
-import { checkOptions } from "./options.js";
+import { checkSearchOptions } from "./options.js";
 import { powderModel } from "./powder-model.js";
 import type { PeakList, SearchOptions, SetAside } from "./types.js";
 import { type PowderPeak, usedPeaks } from "./used-peaks.js";
@@ -20,7 +20,7 @@ export interface ModelledPeaks {
 
 /** The model of a list's peaks, and the peaks that it leaves out. Throws `invalid-argument` for impossible options. */
 export function peakModel(group: SpaceGroup, cell: Cell, list: PeakList, options: SearchOptions): ModelledPeaks {
-  checkOptions(options);
+  checkSearchOptions(options);
   if (options.zeroShift > 0 && list.kind !== "hkl" && list.wavelengthAngstrom === null)
     fail("missing-wavelength", "a zero shift of 2θ can only be refined where the wavelength is known", {
       where: { argument: "--zero-shift" },

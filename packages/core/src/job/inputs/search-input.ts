@@ -1,5 +1,5 @@
 import { KvaneError, nowhere, type Problem, problem } from "../../errors/index.js";
-import { defaultSearchOptions, type PeakList, type SearchOptions } from "../../search/index.js";
+import { checkSearchOptions, defaultSearchOptions, type PeakList, type SearchOptions } from "../../search/index.js";
 import { argumentNames, type RequestField } from "../request.js";
 import { remember, type Work } from "../work.js";
 import { asideOptionsOf } from "./aside-input.js";
@@ -30,7 +30,7 @@ export async function searchOptionsOf(work: Work): Promise<SearchOptions> {
       ],
       [],
     );
-  return {
+  const options: SearchOptions = {
     ...(await asideOptionsOf(work)),
     tolerance: wishes?.tolerance ?? defaultSearchOptions.tolerance,
     unmatched: unmatched ?? defaultSearchOptions.unmatched,
@@ -39,16 +39,31 @@ export async function searchOptionsOf(work: Work): Promise<SearchOptions> {
     zeroShift: numberOption(request, "zeroShift", { from: 0 }) ?? wishes?.zeroShift ?? 0,
     cellScale: numberOption(request, "cellScale", { from: 0, below: 1 }) ?? wishes?.cellScale ?? 0,
   };
+  try {
+    checkSearchOptions(options);
+  } catch (error) {
+    if (!(error instanceof KvaneError)) throw error;
+    throw new KvaneError(error.problems.map((one) => atItsPlace(work, one)));
+  }
+  return options;
+}
+
+/** A problem of an option, where the user gave it. */
+function atItsPlace(work: Work, found: Problem): Problem {
+  const field = fields.find((name) => argumentNames[name] === found.where.argument);
+  return field === undefined ? found : { ...found, where: { ...nowhere, ...placeOf(work, field) } };
 }
 
 /** Where a study has each of the options. */
 const studyPaths: { readonly [field in RequestField]?: string } = {
+  tolerance: "search.tolerance",
   unmatched: "search.unmatched",
   maxDimension: "search.max-dimension",
   qMax: "search.q-max",
   zeroShift: "search.zero-shift",
   cellScale: "search.cell-scale",
 };
+const fields = Object.keys(studyPaths) as RequestField[];
 
 /** Throws the problems of options that do not fit the peaks, where the user gave them. */
 export function checkSearchFits(work: Work, options: SearchOptions, peaks: PeakList): void {
