@@ -17,9 +17,14 @@ import { seeded } from "../support/random.js";
 import { floatModes } from "../support/validate-modes.js";
 import { wave } from "../support/written.js";
 
+const orthorhombic: Cell = { a: 4, b: 5, c: 7, alpha: 90, beta: 90, gamma: 90 };
+
 const cells: Readonly<Record<string, Cell>> = {
   triclinic: { a: 4, b: 5, c: 7, alpha: 82, beta: 95, gamma: 103 },
-  orthorhombic: { a: 4, b: 5, c: 7, alpha: 90, beta: 90, gamma: 90 },
+  orthorhombic,
+  "long a": { ...orthorhombic, a: 60 },
+  "long b": { ...orthorhombic, b: 300 },
+  "endless c": { ...orthorhombic, c: 1e5 },
   tetragonal: { a: 4, b: 4, c: 7, alpha: 90, beta: 90, gamma: 90 },
   hexagonal: { a: 5, b: 5, c: 8, alpha: 90, beta: 90, gamma: 120 },
   cubic: { a: 6, b: 6, c: 6, alpha: 90, beta: 90, gamma: 90 },
@@ -63,6 +68,11 @@ describe("sizes of moments that one irrep allows", () => {
     // 2 fixes an atom: along the axis both atoms are parallel or antiparallel, across it the two are free.
     ["both hands at Γ", "P 4", "tetragonal", "0 0 0", "0 1/2 0", ["1×1 ECL", "1×1 ECL", "1×2 EC", "1×2 EC"]],
     ["all three directions", "P m -3 m", "cubic", "1/2 1/2 1/2", "0 0 0", ["3×1 ECL"]],
+    // Whatever the lengths of the axes: a circle in a plane, up up down down and a wave along a direction.
+    ["a helix", "P 1", "long a", "0 0 1/5", "0 0 0", ["1×3 EC"]],
+    ["a quarter", "P 1", "long b", "0 0 1/4", "0 0 0", ["1×3 EC"]],
+    // From some starting points the equations become singular before they are solved.
+    ["a wave of one direction", "P m m m", "endless c", "0 0 1/5", "0 0 0", ["1×1 EL", "1×1 EL", "1×1 EL"]],
   ])("%s: %s in %s axes at (%s), site %s", (_what, group, cell, k, position, expected) => {
     const found = sizesOf(group, cell, k, position);
     expect(found).toEqual([...expected].sort());
@@ -196,6 +206,17 @@ describe("Fourier components that are given", () => {
     const unit = (at: number) => [0, 1, 2].map((other): Complex => [other === at % 3 ? 1 : 0, 0]);
     const modes = modesOf("P -1", "0 0 0", "0.1 0.2 0.3");
     const read = projectComponents(groupOf("P -1"), modes, [unit(axis), unit(axis + 1)], {
+      convention: ownWriting,
+      cell: null,
+    });
+    expect(read?.shares.map(({ share }) => share)).toEqual([expect.closeTo(1 / 2, 12), expect.closeTo(1 / 2, 12)]);
+  });
+
+  test.each([1e-3, 1, 1e3])("have the same shares whatever their size: %d", (size) => {
+    // −1 exchanges the two atoms; a moment on one of them is half even and half odd.
+    const modes = modesOf("P -1", "0 0 0", "0.1 0.2 0.3");
+    const along = (x: number) => [x, 0, 0].map((re): Complex => [re, 0]);
+    const read = projectComponents(groupOf("P -1"), modes, [along(size), along(0)], {
       convention: ownWriting,
       cell: null,
     });

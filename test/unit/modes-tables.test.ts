@@ -110,6 +110,8 @@ describe("tables of what is allowed", () => {
     ["P 3 (a,a+2b,c)", "0 0 1/2", "0.1 0.2 0.3", orthohexagonal],
     ["P n m a (a,b,a+c)", "0 2/7 0", "0.1 0.2 0.3", skewedCell],
     ["P 4 (a,2b,c)", "0 0 1/5", "0.1 0.1 0.3", doubled],
+    // The partners of a copy begin along a and along 2b.
+    ["P 42/m n m (a,2b,c)", "0 0 1/5", "0 0 0", doubled],
   ])("in μB are those in lattice components times the axes: %s at %s, site %s", (name, k, site, cell) => {
     const [group, modes] = [groupOf(name), modesOf(name, k, site)];
     let compared = 0;
@@ -122,7 +124,10 @@ describe("tables of what is allowed", () => {
         const { lattice, crystal } = written;
         for (const text of crystal) expect(text).not.toContain("·-");
         const leading = new Map<string, number>();
-        for (const letter of lettersIn(lattice).filter((one) => !one.startsWith("ξ"))) {
+        // The first partner of a copy first, wherever it stands in the text.
+        for (const letter of lettersIn(lattice)
+          .filter((one) => !one.startsWith("ξ"))
+          .sort()) {
           const here = entriesOf(unitOf(modes, lattice, letter));
           const there = entriesOf(unitOf(modes, crystal, letter));
           // Partners of one copy share the axis of its first letter.

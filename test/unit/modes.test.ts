@@ -4,6 +4,7 @@ import {
   constraintTexts,
   type Mode,
   ownWriting,
+  type Phase,
   type SiteModes,
   siteModes,
   starModes,
@@ -12,6 +13,7 @@ import {
 import { type Cell, siteOrbit } from "@kvane/core/spacegroups";
 import { describe, expect, test } from "vitest";
 import { letterOf } from "#core/modes/constraint-table.js";
+import { phaseText } from "#core/modes/phase-text.js";
 import { modesOf } from "../support/decomposition.js";
 import { groupOf } from "../support/parsed-groups.js";
 import { constraintProblems } from "../support/validate-constraints.js";
@@ -119,6 +121,23 @@ describe("modes", () => {
     expect(rising(suborbits.flat())).toEqual(orbit.positions.map((_, atom) => atom));
   });
 
+  test("tell atoms apart whose coordinates have the same digits in a row", () => {
+    // 1, 12, 0 and 11, 2, 0 twentieths: the glide plane across c takes one to the other, where it turns (u, v, w) into
+    // (−u, −v, w), at k = 0 with either sign.
+    const { irreps } = modesOf("P 1 1 n", "0 0 0", "1/20 12/20 0");
+    expect(irreps.map(({ constraint }) => constraint.join(" ")).sort()).toEqual([
+      "(u, v, w) (-u, -v, w)",
+      "(u, v, w) (u, v, -w)",
+    ]);
+  });
+
+  test("are not made for the orbit of another group", () => {
+    // Without an inversion the orbit has one atom, with it two.
+    const group = groupOf("P -1");
+    const orbit = siteOrbit(groupOf("P 1"), site("M", "0.1 0.2 0.3"), null);
+    expect(() => siteModes(group, smallIrreps(group, wave("0 0 0")), orbit)).toThrow("off its orbit");
+  });
+
   test("in lattice components are the same with a cell and without", () => {
     const group = groupOf("P n m a");
     const modes = modesOf("P n m a", "0 1/5 0", "0.1 0.2 0.3");
@@ -196,6 +215,14 @@ describe("tables", () => {
     expect(modes.irreps.map(({ constraint }) => constraint.join(" ")).sort()).toEqual(
       turned.map((vector) => `(u, v, w) ${vector}·e^{-2πi·${component}/2}`).sort(),
     );
+  });
+
+  test("have phases that the components of k make, and no others", () => {
+    // Of (u+v, u+v, 0) half of u+v is half of kx; half of u is no multiple of a component.
+    const k = { components: parseWaveVector("u+v,u+v,0").components, values: null, uncertainties: null };
+    const text = (...coefficients: Phase["coefficients"]) => phaseText(k, { constant: [0, 1], coefficients });
+    expect(text([1, 2], [1, 2], [0, 1])).toBe("e^{2πi·kx/2}");
+    expect(() => text([1, 2], [0, 1], [0, 1])).toThrow("more than the components");
   });
 
   test("name amplitudes u v w first, with primes where the alphabet runs out", () => {
