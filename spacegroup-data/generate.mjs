@@ -23,6 +23,11 @@ const magneticTarget = join(root, "packages/core/src/magneticgroups/generated/ma
  *   former?: string}} Entry
  */
 
+/** @param {string} symbol */
+function withoutBlanks(symbol) {
+  return symbol.replaceAll(" ", "");
+}
+
 /** @returns {Entry[]} */
 function readEntries() {
   const requireOfCore = createRequire(join(root, "packages/core/package.json"));
@@ -31,8 +36,18 @@ function readEntries() {
   for (const [index, entry] of entries.entries()) {
     const strange = Object.keys(entry).filter((key) => !known.includes(key));
     const texts = [entry.hall, entry.short, entry.full, entry.choice, entry.former ?? ""];
-    if (strange.length > 0 || !Number.isInteger(entry.number) || texts.some((text) => !/^[^|\n\\`$]*$/.test(text)))
+    const unfit = texts.some((text) => typeof text !== "string" || !/^[^|\n\\`$]*$/.test(text));
+    if (strange.length > 0 || !Number.isInteger(entry.number) || unfit)
       throw new Error(`settings.yaml, entry ${index + 1}: ${JSON.stringify(entry)} is not of the expected form`);
+  }
+  // A symbol of another row would win over it, and nobody would ever reach it.
+  const taken = new Map(
+    entries.flatMap((/** @type {Entry} */ entry) => [entry.short, entry.full].map((text) => [withoutBlanks(text), entry])),
+  );
+  for (const { former, hall } of entries) {
+    const other = former === undefined ? undefined : taken.get(withoutBlanks(former));
+    if (other !== undefined && other.hall !== hall)
+      throw new Error(`settings.yaml: the former symbol ${former} of ${hall} is a symbol of ${other.hall} today`);
   }
   for (let number = 1; number <= 230; number++) {
     const standard = entries.filter((/** @type {Entry} */ entry) => entry.number === number && entry.standard);

@@ -3,6 +3,7 @@ import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { describedCommands } from "@kvane/core/reports";
 import { describe, expect, test } from "vitest";
+import { longNumbers } from "../support/long-numbers.js";
 import { kvane, scratchFolder } from "./command.js";
 import { schemaErrors } from "./schemas.js";
 
@@ -127,6 +128,7 @@ describe("--json gives the shape of the schema", () => {
     const answer = JSON.parse(stdout);
     expect(schemaErrors(words[0] as string, answer)).toEqual([]);
     expect(answer.errors).toEqual([]);
+    expect(longNumbers(answer)).toEqual([]);
   });
 
   test.each(wrong.map((words) => [words.join(" "), words] as const))("wrong input: %s", async (_line, words) => {
@@ -138,7 +140,7 @@ describe("--json gives the shape of the schema", () => {
     expect(answer.errors.length).toBeGreaterThan(0);
   });
 
-  test("every described command is among them", () => {
+  test("every described command is among them (a line in `lines` above)", () => {
     expect(new Set(lines.map(([command]) => command))).toEqual(new Set(describedCommands));
   });
 

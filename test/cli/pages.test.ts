@@ -3,6 +3,7 @@ import { join } from "node:path";
 import { problemCodes } from "@kvane/core/errors";
 import { describedCommands } from "@kvane/core/reports";
 import { describe, expect, test } from "vitest";
+import { longNumbers } from "../support/long-numbers.js";
 import { root } from "../tools/paths.mjs";
 import { kvane, shellWords } from "./command.js";
 import { commandPages } from "./command-pages.mjs";
@@ -19,7 +20,14 @@ describe("docs/examples (change detector)", () => {
     expect((await kvane(shellWords(line).slice(1))).stdout).toBe(committed);
   });
 
-  test("there is one for every described command, and each obeys its schema", () => {
+  test("numbers have 12 digits at most (what makes a record puts floats through roundNumber)", () => {
+    for (const file of Object.keys(commands).filter((name) => name.endsWith(".json"))) {
+      const answer = JSON.parse(readFileSync(join(folder, file), "utf8"));
+      expect(longNumbers(answer), file).toEqual([]);
+    }
+  });
+
+  test("there is one for every described command (a line in docs/examples/commands.json), and each obeys its schema", () => {
     for (const command of describedCommands) expect(Object.keys(commands)).toContain(`${command}.json`);
     for (const file of Object.keys(commands).filter((name) => name.endsWith(".json"))) {
       const answer = JSON.parse(readFileSync(join(folder, file), "utf8"));
@@ -28,13 +36,13 @@ describe("docs/examples (change detector)", () => {
   });
 });
 
-test("docs/errors.md has every code with its meaning, and no other", () => {
+test("docs/errors.md has every code with its meaning, and no other (test/cli/write-pages.mjs makes it)", () => {
   const page = readFileSync(join(root, "docs/errors.md"), "utf8");
   const rows = [...page.matchAll(/^\| `(.+?)` \| \d+ \| (.*) \|$/gm)].map(([, code, meaning]) => [code, meaning]);
   expect(rows).toEqual(Object.entries(problemCodes));
 });
 
-test("docs/commands and docs/schemas are what the program says of itself, nothing missing and nothing more", async () => {
+test("docs/commands and docs/schemas are what the program says of itself (test/cli/write-pages.mjs makes them)", async () => {
   const made = await commandPages(async (line) => (await kvane(shellWords(line).slice(1))).stdout);
   for (const [name, pages] of Object.entries(made)) {
     const target = join(root, "docs", name);

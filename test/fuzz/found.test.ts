@@ -307,3 +307,10 @@ describe("corrections of the search", () => {
     }
   });
 });
+
+test("words behind `--` stand there when they are too many", async () => {
+  const { status, stderr } = await kvane(["modes", "--", "62", "--site", "Fe1 0 0 1/2"]);
+  expect(status).toBe(2);
+  expect(stderr).toContain("  at --\n");
+  expect(stderr).toContain("leave `--` out");
+});

@@ -68,7 +68,7 @@ describe("answer", () => {
     expect(errors).toMatchObject([{ code: "file-not-found", where: { file: "s.yaml" } }]);
   });
 
-  test("has a type for the result of every command", () => {
+  test("has a type for the result of every command (job/results.ts)", () => {
     const results: { readonly [command in keyof CommandResults]: true } = {
       run: true,
       study: true,

@@ -24,6 +24,7 @@ const cells: Readonly<Record<string, Cell>> = {
   orthorhombic,
   "long a": { ...orthorhombic, a: 60 },
   "long b": { ...orthorhombic, b: 300 },
+  layer: { a: 4, b: 300, c: 7, alpha: 90, beta: 90, gamma: 90 },
   "endless c": { ...orthorhombic, c: 1e5 },
   tetragonal: { a: 4, b: 4, c: 7, alpha: 90, beta: 90, gamma: 90 },
   hexagonal: { a: 5, b: 5, c: 8, alpha: 90, beta: 90, gamma: 120 },
@@ -71,6 +72,8 @@ describe("sizes of moments that one irrep allows", () => {
     // Whatever the lengths of the axes: a circle in a plane, up up down down and a wave along a direction.
     ["a helix", "P 1", "long a", "0 0 1/5", "0 0 0", ["1×3 EC"]],
     ["a quarter", "P 1", "long b", "0 0 1/4", "0 0 0", ["1×3 EC"]],
+    // Up up down down along any free direction, on both atoms, however thick the layer.
+    ["a quarter in a thick layer", "P 21", "layer", "0 0 1/4", "0.1 0.2 0.3", ["1×6 EC"]],
     // From some starting points the equations become singular before they are solved.
     ["a wave of one direction", "P m m m", "endless c", "0 0 1/5", "0 0 0", ["1×1 EL", "1×1 EL", "1×1 EL"]],
   ])("%s: %s in %s axes at (%s), site %s", (_what, group, cell, k, position, expected) => {

@@ -50,7 +50,7 @@ function fromParser({ code, message }: CommanderError, words: readonly string[])
         remedy: "give the value directly behind the option",
       });
     case "commander.excessArguments":
-      return excessProblem(words) ?? problem("invalid-argument", text, { remedy: seeHelp });
+      return excessProblem(words) ?? problem("invalid-argument", text, behindDashes(words) ?? { remedy: seeHelp });
     default:
       return problem("invalid-argument", text, { remedy: seeHelp });
   }
@@ -69,6 +69,17 @@ const repeatable: ReadonlySet<string> = new Set(
 /** What the first word behind a command is; null for no command. */
 function argumentOf(command: string): ArgumentKind | null {
   return commandSpecs.find(({ name }) => name === command)?.argument ?? null;
+}
+
+/** What is wrong where `--` stands alone, behind which options are none. */
+function behindDashes(words: readonly string[]) {
+  if (!words.includes("--")) return null;
+  return {
+    where: { argument: "--" },
+    expected: "one word behind `--`: options there count as words",
+    found: words.slice(words.indexOf("--") + 1).join(" "),
+    remedy: "leave `--` out",
+  };
 }
 
 /** Words that belong to nothing: mostly a value with blanks that was not put into quotation marks. */

@@ -11,6 +11,7 @@ import {
 } from "@kvane/core/reports";
 import { fieldKind } from "#core/job/request-fields.js";
 import { schemaErrors } from "../../cli/schemas.js";
+import { longNumbers } from "../../support/long-numbers.js";
 import type { Random } from "../../support/random.js";
 import { demand, demandProblems } from "../properties.js";
 import { type Outcome, target } from "../target.js";
@@ -188,6 +189,8 @@ export async function demandAnswer(whole: Envelope<object>, text: string): Promi
     demandProblems([one]);
     demand(one.remedy !== null && one.remedy !== "", () => `no remedy: ${JSON.stringify(one)}`);
   }
+  const long = longNumbers(result);
+  demand(long.length === 0, () => `not rounded: ${long.slice(0, 3).join(", ")}`);
   demand((result === null) === errors.length > 0, () => "a result beside errors, or neither");
   const [first] = errors;
   if (first === undefined) return "taken";

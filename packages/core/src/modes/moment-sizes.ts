@@ -29,10 +29,10 @@ export function momentSizes(group: SpaceGroup, cell: Cell, site: SiteModes, part
   if (part.multiplicity === 0) return { equalAmplitude: false, constantMoment: false, collinear: false };
   const { k } = site.representations;
   const half = isHalfLattice(group, k);
-  const problem: SizeProblem = {
+  const problem = ofUnitSize({
     waves: half ? realWaves(waves) : waves.flatMap((atoms) => [atoms, timesI(atoms)]),
     metric: averagedMetric(group.operators, directMetric(cell)),
-  };
+  });
   const period = half ? "none" : quarterLattice(group, site) ? "real part" : "whole";
   const complete = part.vanishingAtoms.length === 0;
   const constantMoment = complete && solvable(problem, period);
@@ -56,6 +56,15 @@ interface SizeProblem {
   /** Waves that real amplitudes multiply; one with a complex amplitude stands here twice, itself and i times itself. */
   readonly waves: readonly Wave[];
   readonly metric: readonly number[];
+}
+
+/** The same with waves whose largest moment has size 1: along axes of any lengths amplitudes near 1 are then near a solution. */
+function ofUnitSize(problem: SizeProblem): SizeProblem {
+  const waves = problem.waves.map((wave) => {
+    const largest = 1 + Math.max(...residuals({ ...problem, waves: [wave] }, "none", [1]));
+    return wave.map((atom) => atom.map((entry) => entry / Math.sqrt(largest)));
+  });
+  return { ...problem, waves };
 }
 
 function numericModes(site: SiteModes, part: IrrepModes): number[][][] | null {
@@ -126,15 +135,14 @@ function residuals(problem: SizeProblem, period: Period, x: ArrayLike<number>): 
 
 /** Levenberg–Marquardt on the quadratic equations; derivatives are exact because differences of quadratics are. */
 function solvable(problem: SizeProblem, period: Period): boolean {
-  const scale = 1 / Math.sqrt(problem.metric[0] as number);
   for (let start = 0; start < starts; start++) {
-    let x = Float64Array.from(problem.waves, (_, index) => scale * Math.sin(1.7 * (start + 1) * (index + 1) + start));
+    let x = Float64Array.from(problem.waves, (_, index) => Math.sin(1.7 * (start + 1) * (index + 1) + start));
     let r = residuals(problem, period, x);
     let cost = sumOfSquares(r);
     const limit = residualLimit * r.length;
     let damping = 1e-3;
     for (let step = 0; step < mostSteps && cost > limit; step++) {
-      const jacobian = differentiate(problem, period, x, scale);
+      const jacobian = differentiate(problem, period, x);
       const trial = dampedStep(jacobian, r, x, damping);
       if (trial === null) break;
       const next = residuals(problem, period, trial);
@@ -150,16 +158,16 @@ function solvable(problem: SizeProblem, period: Period): boolean {
   return false;
 }
 
-function differentiate(problem: SizeProblem, period: Period, x: Float64Array, step: number): number[][] {
+function differentiate(problem: SizeProblem, period: Period, x: Float64Array): number[][] {
   return Array.from({ length: x.length }, (_, index) => {
     const ahead = Float64Array.from(x);
     const behind = Float64Array.from(x);
-    ahead[index] = (ahead[index] as number) + step;
-    behind[index] = (behind[index] as number) - step;
+    ahead[index] = (ahead[index] as number) + 1;
+    behind[index] = (behind[index] as number) - 1;
     const a = residuals(problem, period, ahead);
     const b = residuals(problem, period, behind);
     // The central difference of a quadratic is its derivative, whatever the step.
-    return a.map((value, row) => (value - (b[row] as number)) / (2 * step));
+    return a.map((value, row) => (value - (b[row] as number)) / 2);
   });
 }
 

@@ -1,5 +1,5 @@
 import type { LittleGroup } from "../../kvectors/index.js";
-import { formatRational, type RationalVector } from "../../numbers/index.js";
+import { formatRational, type RationalVector, roundNumber } from "../../numbers/index.js";
 import { type Cell, formatTriplet, type SpaceGroup } from "../../spacegroups/index.js";
 import type { CellRecord, GroupRecord, LittleGroupRecord } from "../records/common.js";
 
@@ -16,7 +16,14 @@ export function groupRecord({ name }: SpaceGroup): GroupRecord {
 
 /** A cell for JSON: Å and degrees. */
 export function cellRecord({ a, b, c, alpha, beta, gamma }: Cell): CellRecord {
-  return { a, b, c, alpha, beta, gamma };
+  return {
+    a: roundNumber(a),
+    b: roundNumber(b),
+    c: roundNumber(c),
+    alpha: roundNumber(alpha),
+    beta: roundNumber(beta),
+    gamma: roundNumber(gamma),
+  };
 }
 
 /** The little group with one written operator per coset of L. */
