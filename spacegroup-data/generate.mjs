@@ -42,7 +42,9 @@ function readEntries() {
   }
   // A symbol of another row would win over it, and nobody would ever reach it.
   const taken = new Map(
-    entries.flatMap((/** @type {Entry} */ entry) => [entry.short, entry.full].map((text) => [withoutBlanks(text), entry])),
+    entries.flatMap((/** @type {Entry} */ entry) =>
+      [entry.short, entry.full].map((text) => [withoutBlanks(text), entry]),
+    ),
   );
   for (const { former, hall } of entries) {
     const other = former === undefined ? undefined : taken.get(withoutBlanks(former));

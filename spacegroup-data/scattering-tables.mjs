@@ -34,7 +34,8 @@ function formFactorRows(folder) {
     if (coefficients.length !== 7 || !coefficients.every((text) => decimal.test(text))) throw fault("not 7 numbers");
     // <j0>(0) = A + B + C + D = 1: the moment itself.
     const atZero = [0, 2, 4, 6].reduce((sum, at) => sum + Number(coefficients[at]), 0);
-    if (integral === "j0" && Math.abs(atZero - 1) > 0.01) throw fault(`<j0> is ${atZero.toFixed(4)} at s = 0, and not 1`);
+    if (integral === "j0" && Math.abs(atZero - 1) > 0.01)
+      throw fault(`<j0> is ${atZero.toFixed(4)} at s = 0, and not 1`);
     const known = ions.get(ion) ?? new Map();
     if (known.has(integral)) throw fault("twice");
     ions.set(ion, known.set(integral, coefficients.join(" ")));
