@@ -65,6 +65,7 @@ const lines: readonly (readonly string[])[] = [
   ["satellites", "62", ...cell, "--k", "0,0.47,0", "--wavelength", "2.41", "--q-max", "1.5"],
   ["satellites", "study.yaml", "--k", "0,1/2,0"],
   ["weigh", "study.yaml", "--k", "0,1/2,0", "--intensities", "intensities.csv"],
+  ["weigh", "study.yaml", "--k", "0,1/2,0", "--intensities", "intensities.csv", "--pattern", "0.3"],
   ["weigh", "study.yaml", "--k", "0,1/2,0", "--intensities", "crystal.csv", "--scale", "10", "--lorentz", "no"],
   ["index", "study.yaml", "--k", "0,1/2,0"],
   ["index", "62", ...cell, "--k", "0,0.469,0", "--peaks", "hkl.csv", "--as", "hkl"],

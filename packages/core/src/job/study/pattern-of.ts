@@ -1,5 +1,6 @@
 import { arrangementWith, lineSquares, type MomentSpace, simulatedPattern } from "../../diffraction/index.js";
 import type { WaveVector } from "../../kvectors/index.js";
+import { roundNumber } from "../../numbers/index.js";
 import { qToTwoThetaDeg } from "../../reflections/index.js";
 import type { WeighPatternRecord } from "../../reports/index.js";
 import type { Cell, SpaceGroup } from "../../spacegroups/index.js";
@@ -30,7 +31,7 @@ export function patternOf(
   // From the beam on: lines below the first peak are missing for a reason.
   const fromDeg = 0;
   const toDeg = rounded(Math.min(179, Math.max(...angles) + margin * widthDeg));
-  const stepDeg = Math.max(widthDeg / stepsInWidth, (toDeg - fromDeg) / mostSteps);
+  const stepDeg = roundNumber(Math.max(widthDeg / stepsInWidth, (toDeg - fromDeg) / mostSteps));
   const qMax = (4 * Math.PI * Math.sin((toDeg * Math.PI) / 360)) / wavelengthAngstrom;
   // Of several with one pattern the first.
   const different = ranking.filter(({ identicalTo }, index) =>
