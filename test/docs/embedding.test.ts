@@ -61,7 +61,8 @@ describe.skipIf(process.platform === "win32")("docs/embedding.md", () => {
   test("its requests in JSON are requests", async () => {
     const requests = blocks("json").map((text) => JSON.parse(text));
     expect(requests).toHaveLength(2);
-    const { stdout } = await kvane(["batch"], { input: requests.map((one) => `${JSON.stringify(one)}\n`).join("") });
+    const input = requests.map((one) => `${JSON.stringify(one)}\n`).join("");
+    const { stdout } = await kvane(["batch"], { input, cwd: scratchFolder() });
     // The files that they name are not here, and nothing else is wrong with them.
     const codes = stdout
       .trimEnd()
